@@ -1,0 +1,13 @@
+/** The static list of migrations: the same names under every runner. Add at the end; never edit one that has landed. */
+import type { Knex } from 'knex';
+import * as firstLight from './0001-first-light.ts';
+
+const migrations = { '0001-first-light': firstLight } satisfies Record<string, Knex.Migration>;
+
+type MigrationName = keyof typeof migrations;
+
+export const migrationSource: Knex.MigrationSource<MigrationName> = {
+  getMigrations: async () => Object.keys(migrations) as MigrationName[],
+  getMigrationName: (name) => name,
+  getMigration: async (name) => migrations[name],
+};

@@ -1,0 +1,24 @@
+/** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
+import * as accounts from './accounts.ts';
+import type { Endpoint } from './endpoint.ts';
+import * as runs from './runs.ts';
+import * as weather from './weather.ts';
+
+export const endpoints = {
+  getSession: accounts.getSession,
+  signIn: accounts.signIn,
+  signOut: accounts.signOut,
+  setUp: accounts.setUp,
+  listWeatherFiles: weather.listWeatherFiles,
+  uploadWeatherFile: weather.uploadWeatherFile,
+  getWeatherFile: weather.getWeatherFile,
+  getOriginal: weather.getOriginal,
+  acceptWeatherFile: weather.acceptWeatherFile,
+  withdrawWeatherFile: weather.withdrawWeatherFile,
+  watchTeam: weather.watchTeam,
+  getMap: runs.getMap,
+  getStationPlace: runs.getStationPlace,
+  getRunHours: runs.getRunHours,
+} satisfies Record<string, Endpoint>;
+
+export type EndpointName = keyof typeof endpoints;

@@ -1,0 +1,13 @@
+/** The closed list of policy names that an endpoint's `allow` may take; the server holds one rule for each. */
+export const policyNames = [
+  'anyone',
+  'accounts.signOut',
+  'weather.view',
+  'weather.upload',
+  'weather.accept',
+  'weather.withdraw',
+  'weather.original',
+  'runs.view',
+] as const;
+
+export type PolicyName = (typeof policyNames)[number];

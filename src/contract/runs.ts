@@ -1,0 +1,216 @@
+import * as z from 'zod/mini';
+import { empty, endpoint, file, json, none, ordinary } from './endpoint.ts';
+
+const ProgrammeParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid() });
+const PlaceParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid(), stationId: z.uuid() });
+
+export const HourClass = z.enum([
+  'closed',
+  'missing',
+  'idle',
+  'frozen',
+  'damp',
+  'air',
+  'direct',
+  'indirect',
+  'dewpoint',
+  'twostage',
+  'short',
+  'beyond',
+]);
+
+export const Grade = z.enum(['A', 'B', 'C', 'D']);
+export type Grade = z.infer<typeof Grade>;
+
+export const Verdict = z.enum(['meets the brief', 'does not', 'no tolerance set']);
+export type Verdict = z.infer<typeof Verdict>;
+
+/** Brief, weather and method that a number rests on; a number never stands without it. */
+export const BriefBasis = z.object({
+  briefId: z.uuid(),
+  briefVersionId: z.uuid(),
+  name: z.string(),
+  version: z.int(),
+  preset: z.string(),
+  /** The requirement in one sentence. */
+  sentence: z.string(),
+  methodVersion: z.string(),
+});
+export type BriefBasis = z.infer<typeof BriefBasis>;
+
+export const MapStation = z.object({
+  id: z.uuid(),
+  name: z.string(),
+  latitude: z.number(),
+  longitude: z.number(),
+  elevationM: z.number(),
+  /** null: not judged yet, excluded, or no demand; `scoreNote` says which. */
+  score: z.nullable(z.int()),
+  scoreNote: z.nullable(z.string()),
+  grade: Grade,
+  verdict: z.nullable(Verdict),
+});
+export type MapStation = z.infer<typeof MapStation>;
+
+export const ProgrammeMap = z.object({
+  programme: z.object({ id: z.uuid(), name: z.string() }),
+  invented: z.boolean(),
+  brief: BriefBasis,
+  stations: z.array(MapStation),
+  /** Runs that are still being computed. */
+  pending: z.int(),
+});
+export type ProgrammeMap = z.infer<typeof ProgrammeMap>;
+
+export const getMap = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/programmes/:programmeId/map',
+  summary: 'Every station of the team with its score under the programme’s brief.',
+  params: ProgrammeParams,
+  query: empty,
+  body: none,
+  response: json(ProgrammeMap),
+  errors: [],
+  allow: 'runs.view',
+  limits: ordinary,
+});
+
+/** One component of the score with its arithmetic: s = clamp(100 (raw - a0) / (a100 - a0)), points = s x weight / 100. */
+export const ScorePart = z.object({
+  component: z.string(),
+  label: z.string(),
+  unit: z.string(),
+  /** null: not applicable; its weight is shared over the others. */
+  raw: z.nullable(z.number()),
+  a0: z.number(),
+  a100: z.number(),
+  normalised: z.nullable(z.number()),
+  /** Weight after sharing, of 100. */
+  weight: z.number(),
+  points: z.nullable(z.number()),
+});
+export type ScorePart = z.infer<typeof ScorePart>;
+
+export const GateAnswer = z.object({
+  gate: z.string(),
+  answer: z.enum(['pass', 'fail', 'not known']),
+  note: z.string(),
+});
+export type GateAnswer = z.infer<typeof GateAnswer>;
+
+/** One tolerance of the brief against what was found. */
+export const ToleranceAnswer = z.object({
+  tolerance: z.string(),
+  found: z.number(),
+  allowed: z.number(),
+  unit: z.string(),
+  holds: z.boolean(),
+});
+export type ToleranceAnswer = z.infer<typeof ToleranceAnswer>;
+
+export const Ledger = z.object({
+  hours: z.int(),
+  classes: z.record(HourClass, z.int()),
+  /** `damp` split by reason. */
+  dampOutside: z.int(),
+  dampPlant: z.int(),
+  demand: z.int(),
+  met: z.int(),
+});
+export type Ledger = z.infer<typeof Ledger>;
+
+export const PlaceYear = z.object({
+  runId: z.uuid(),
+  weatherFileId: z.uuid(),
+  kind: z.enum(['typical', 'actual', 'derived']),
+  year: z.nullable(z.int()),
+  hours: z.int(),
+  score: z.nullable(z.int()),
+});
+
+export const GradeColumn = z.object({ column: z.string(), grade: Grade, reason: z.string() });
+
+export const Place = z.object({
+  station: z.object({
+    id: z.uuid(),
+    name: z.string(),
+    latitude: z.number(),
+    longitude: z.number(),
+    elevationM: z.number(),
+    zone: z.string(),
+  }),
+  invented: z.boolean(),
+  brief: BriefBasis,
+  /** The years that the figures rest on, and which of them the ledger and the year cloth show. */
+  years: z.array(PlaceYear),
+  shown: z.nullable(
+    z.object({
+      runId: z.uuid(),
+      ledger: Ledger,
+      verdict: Verdict,
+      tolerances: z.array(ToleranceAnswer),
+      gates: z.array(GateAnswer),
+      score: z.nullable(z.int()),
+      scoreNote: z.nullable(z.string()),
+      scoreExact: z.nullable(z.number()),
+      geometricMean: z.nullable(z.number()),
+      words: z.nullable(z.string()),
+      parts: z.array(ScorePart),
+      worstSpell: z.nullable(
+        z.object({
+          hours: z.int(),
+          start: z.string(),
+          end: z.string(),
+          severityKh: z.number(),
+          worstK: z.number(),
+          cutAtJoint: z.boolean(),
+        }),
+      ),
+      severityKh: z.number(),
+      /** Per kW of design load. */
+      water: z.object({
+        makeUpLitres: z.number(),
+        litresPerKwh: z.nullable(z.number()),
+        peakDayLitres: z.number(),
+        peakDay: z.nullable(z.string()),
+      }),
+      electricity: z.object({
+        kwh: z.number(),
+        referenceKwh: z.number(),
+        savedPct: z.nullable(z.number()),
+        peakKw: z.number(),
+        referencePeakKw: z.number(),
+      }),
+      cautions: z.array(z.string()),
+    }),
+  ),
+  grade: Grade,
+  gradeColumns: z.array(GradeColumn),
+});
+export type Place = z.infer<typeof Place>;
+
+export const getStationPlace = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/programmes/:programmeId/stations/:stationId',
+  summary: 'One station as a place: ledger, verdict, score arithmetic, grade and basis.',
+  params: PlaceParams,
+  query: empty,
+  body: none,
+  response: json(Place),
+  errors: [],
+  allow: 'runs.view',
+  limits: ordinary,
+});
+
+export const getRunHours = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/runs/:runId/hours',
+  summary: 'The hour class of every slot of a run: one byte a slot, the position of the class in the list of classes.',
+  params: z.strictObject({ teamId: z.uuid(), runId: z.uuid() }),
+  query: empty,
+  body: none,
+  response: file({ mediaType: 'application/octet-stream', attachment: false }),
+  errors: [],
+  allow: 'runs.view',
+  limits: ordinary,
+});

@@ -1,0 +1,207 @@
+import * as z from 'zod/mini';
+import { empty, endpoint, events, file, json, none, ordinary, upload } from './endpoint.ts';
+
+const TeamParams = z.strictObject({ teamId: z.uuid() });
+const FileParams = z.strictObject({ teamId: z.uuid(), fileId: z.uuid() });
+
+export const FileStatus = z.enum(['reading', 'asks', 'review', 'accepted', 'refused', 'withdrawn', 'superseded']);
+export type FileStatus = z.infer<typeof FileStatus>;
+
+/** The steps of reading, in order; null once reading has ended. */
+export const ReadingStep = z.enum(['received', 'reading', 'reducing', 'storing']);
+export type ReadingStep = z.infer<typeof ReadingStep>;
+
+export const Severity = z.enum(['note', 'repair', 'doubt', 'ask', 'refuse']);
+export type Severity = z.infer<typeof Severity>;
+
+export const Finding = z.object({
+  code: z.string(),
+  severity: Severity,
+  /** First line of the file that it concerns, counted from 1; null when it concerns the whole file. */
+  line: z.nullable(z.int()),
+  column: z.nullable(z.int()),
+  message: z.string(),
+});
+export type Finding = z.infer<typeof Finding>;
+
+/** What a file that `asks` wants to know before it can be accepted. */
+export const Ask = z.object({ what: z.string(), message: z.string(), proposal: z.nullable(z.string()) });
+export type Ask = z.infer<typeof Ask>;
+
+/** The place that the file itself declares. */
+export const DeclaredStation = z.object({
+  name: z.string(),
+  latitude: z.number(),
+  longitude: z.number(),
+  elevationM: z.nullable(z.number()),
+  utcOffsetH: z.number(),
+  wmoNumber: z.nullable(z.string()),
+});
+export type DeclaredStation = z.infer<typeof DeclaredStation>;
+
+export const WeatherFile = z.object({
+  id: z.uuid(),
+  name: z.string(),
+  bytes: z.int(),
+  /** SHA-256 of the original bytes, hexadecimal. */
+  fingerprint: z.string(),
+  format: z.nullable(z.string()),
+  status: FileStatus,
+  step: z.nullable(ReadingStep),
+  /** Why reading stopped for a fault of ours; null otherwise. */
+  failure: z.nullable(z.string()),
+  uploadedBy: z.string(),
+  uploadedAt: z.iso.datetime(),
+  station: z.nullable(DeclaredStation),
+  /** The station that accepting made or found. */
+  stationId: z.nullable(z.uuid()),
+  kind: z.nullable(z.enum(['typical', 'actual', 'derived'])),
+  year: z.nullable(z.int()),
+  /** Share of slots with dry bulb, humidity and pressure, %. */
+  completePct: z.nullable(z.number()),
+  findingCounts: z.object({ note: z.int(), repair: z.int(), doubt: z.int(), ask: z.int(), refuse: z.int() }),
+});
+export type WeatherFile = z.infer<typeof WeatherFile>;
+
+const DesignRow = z.object({ percent: z.number(), valueC: z.number(), coincidentC: z.number() });
+
+/** What the weather year was reduced to. */
+export const YearFacts = z.object({
+  hours: z.int(),
+  measured: z.int(),
+  estimated: z.int(),
+  repaired: z.int(),
+  missing: z.int(),
+  /** Hours whose pressure is the standard atmosphere at the elevation. */
+  assumedPressure: z.int(),
+  belowZero: z.enum(['water', 'ice']),
+  meanDryBulbC: z.number(),
+  meanWetBulbC: z.number(),
+  maxDepressionK: z.number(),
+  /** Hours with a depression of at least K kelvin, K = 1..25. */
+  depressionHours: z.array(z.object({ atLeastK: z.int(), hours: z.int() })),
+  /** Mean depression, K, by month (12) and hour of day (24); null where no hour is known. */
+  meanDepressionK: z.array(z.array(z.nullable(z.number()))),
+  /** Share of hours present, %, by month. */
+  monthCompletePct: z.array(z.number()),
+  design: z.object({ dryBulb: z.array(DesignRow), wetBulb: z.array(DesignRow), dewPoint: z.array(DesignRow) }),
+});
+export type YearFacts = z.infer<typeof YearFacts>;
+
+export const WeatherFileRecord = z.object({
+  file: WeatherFile,
+  findings: z.array(Finding),
+  asks: z.array(Ask),
+  acceptedBy: z.nullable(z.string()),
+  facts: z.nullable(YearFacts),
+});
+export type WeatherFileRecord = z.infer<typeof WeatherFileRecord>;
+
+export const listWeatherFiles = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/weather-files',
+  summary: "The team's weather files, newest first, a page at a time.",
+  params: TeamParams,
+  query: z.strictObject({
+    after: z.optional(z.string().check(z.maxLength(200))),
+    limit: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(200)), 100),
+  }),
+  body: none,
+  response: json(z.object({ items: z.array(WeatherFile), next: z.nullable(z.string()), total: z.int() })),
+  errors: [],
+  allow: 'weather.view',
+  limits: ordinary,
+});
+
+/** Largest plain file that is taken. */
+export const MAX_FILE_BYTES = 64 * 1024 * 1024;
+
+export const uploadWeatherFile = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/weather-files',
+  summary:
+    'Upload one hourly weather file; it is read in the background. The same bytes again answer the file that is there.',
+  params: TeamParams,
+  query: empty,
+  body: upload({ maxFiles: 1, maxBytes: MAX_FILE_BYTES }),
+  response: json(z.object({ file: WeatherFile, known: z.boolean() })),
+  errors: ['too_large', 'unreadable_body'],
+  allow: 'weather.upload',
+  limits: { bodyBytes: MAX_FILE_BYTES, perMinute: 600, seconds: 300 },
+});
+
+export const getWeatherFile = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/weather-files/:fileId',
+  summary: 'One weather file with its findings and what its year was reduced to.',
+  params: FileParams,
+  query: empty,
+  body: none,
+  response: json(WeatherFileRecord),
+  errors: [],
+  allow: 'weather.view',
+  limits: ordinary,
+});
+
+export const getOriginal = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/weather-files/:fileId/original',
+  summary: 'The original bytes as they were uploaded.',
+  params: FileParams,
+  query: empty,
+  body: none,
+  response: file({ mediaType: 'application/octet-stream', attachment: true }),
+  errors: [],
+  allow: 'weather.original',
+  limits: { ...ordinary, perMinute: 60, seconds: 120 },
+});
+
+export const acceptWeatherFile = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/weather-files/:fileId/acceptance',
+  summary: 'Accept a file that waits for review: its station appears on the map and its year is judged.',
+  params: FileParams,
+  query: empty,
+  body: none,
+  response: json(WeatherFile),
+  errors: ['wrong_state'],
+  allow: 'weather.accept',
+  limits: ordinary,
+});
+
+export const withdrawWeatherFile = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/weather-files/:fileId/withdrawal',
+  summary: 'Withdraw a file with a reason; it no longer counts, and its record stays.',
+  params: FileParams,
+  query: empty,
+  body: json(
+    z.strictObject({
+      reason: z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.')),
+    }),
+  ),
+  response: json(WeatherFile),
+  errors: ['wrong_state'],
+  allow: 'weather.withdraw',
+  limits: ordinary,
+});
+
+/** Something about a file, or about the scores that depend on it, has changed. */
+export const TeamEvent = z.discriminatedUnion('kind', [
+  z.object({ kind: z.literal('weather-file'), fileId: z.uuid(), status: FileStatus, step: z.nullable(ReadingStep) }),
+  z.object({ kind: z.literal('run'), runId: z.uuid(), stationId: z.uuid() }),
+]);
+export type TeamEvent = z.infer<typeof TeamEvent>;
+
+export const watchTeam = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/events',
+  summary: 'Progress of weather files and runs, as it happens.',
+  params: TeamParams,
+  query: empty,
+  body: none,
+  response: events(TeamEvent),
+  errors: [],
+  allow: 'weather.view',
+  limits: { ...ordinary, perMinute: 120 },
+});

@@ -1,0 +1,97 @@
+/**
+ * Properties of moist air, ASHRAE Fundamentals 2017 ch. 1, perfect-gas relations, through PsychroLib.
+ * Good from -100 to 200 °C; under 0.7 % from real gas at 101.325 kPa between -50 and 50 °C (that chapter, after Kuehn 1998).
+ */
+import { psychrolib } from './psychrolib-si.ts';
+
+/** What a humidity below 0 °C stands for: saturation over liquid water or over ice. */
+export type BelowZeroPhase = 'water' | 'ice';
+
+const ZERO_CELSIUS_K = 273.15;
+/** Dry air and vapour, kJ/(kg K), and latent heat at 0 °C, kJ/kg: ASHRAE Fundamentals 2017 ch. 1 eq. 30. */
+const DRY_AIR_KJ_PER_KG_K = 1.006;
+const VAPOUR_KJ_PER_KG_K = 1.86;
+const LATENT_HEAT_KJ_PER_KG = 2501;
+
+/** Saturation pressure, Pa, at a temperature, °C: over ice to 0.01 °C, over water above (eq. 5 and 6). */
+export function saturationPressurePa(tempC: number): number {
+  return psychrolib.GetSatVapPres(tempC);
+}
+
+/** Saturation pressure, Pa, over liquid water at any temperature, °C, supercooled too (eq. 6 continued below 0 °C). */
+export function saturationPressureOverWaterPa(tempC: number): number {
+  const k = tempC + ZERO_CELSIUS_K;
+  return Math.exp(
+    -5.8002206e3 / k +
+      1.3914993 -
+      4.8640239e-2 * k +
+      4.1764768e-5 * k ** 2 -
+      1.4452093e-8 * k ** 3 +
+      6.5459673 * Math.log(k),
+  );
+}
+
+/** Saturation pressure, Pa, in the phase that a file's humidity stands for below 0 °C. */
+export function saturationPressureInPhasePa(tempC: number, belowZero: BelowZeroPhase): number {
+  return belowZero === 'water' && tempC < 0 ? saturationPressureOverWaterPa(tempC) : saturationPressurePa(tempC);
+}
+
+/** Humidity ratio, kg/kg, of saturated air (over ice below 0 °C). */
+export function saturationHumidityRatio(tempC: number, pressurePa: number): number {
+  return psychrolib.GetSatHumRatio(tempC, pressurePa);
+}
+
+/**
+ * Humidity ratio, kg/kg, from a dew point, capped at saturation of the dry bulb.
+ * @param input.belowZero what a dew point below 0 °C stands for in this file
+ */
+export function humidityRatioFromDewPoint(input: {
+  dryBulbC: number;
+  dewPointC: number;
+  pressurePa: number;
+  belowZero: BelowZeroPhase;
+}): number {
+  const vapourPa = saturationPressureInPhasePa(input.dewPointC, input.belowZero);
+  const humidityRatio = psychrolib.GetHumRatioFromVapPres(vapourPa, input.pressurePa);
+  return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
+}
+
+/**
+ * Humidity ratio, kg/kg, from a relative humidity, %, capped at saturation of the dry bulb.
+ * @param input.belowZero what a relative humidity below 0 °C stands for in this file
+ */
+export function humidityRatioFromRelativeHumidity(input: {
+  dryBulbC: number;
+  relativeHumidityPct: number;
+  pressurePa: number;
+  belowZero: BelowZeroPhase;
+}): number {
+  const vapourPa = (input.relativeHumidityPct / 100) * saturationPressureInPhasePa(input.dryBulbC, input.belowZero);
+  const humidityRatio = psychrolib.GetHumRatioFromVapPres(vapourPa, input.pressurePa);
+  return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
+}
+
+/** Relative humidity, % (over ice below 0 °C), of a state; may pass 100 when the state is supersaturated. */
+export function relativeHumidityPct(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
+  return 100 * psychrolib.GetRelHumFromHumRatio(dryBulbC, humidityRatio, pressurePa);
+}
+
+/** Relative humidity, %, that a dew point means at a dry bulb, both saturation pressures in one phase. */
+export function relativeHumidityOfDewPointPct(dryBulbC: number, dewPointC: number, belowZero: BelowZeroPhase): number {
+  return (100 * saturationPressureInPhasePa(dewPointC, belowZero)) / saturationPressureInPhasePa(dryBulbC, belowZero);
+}
+
+/** Dew point, °C (frost point below 0 °C), of a state; at most the dry bulb. */
+export function dewPointC(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
+  return psychrolib.GetTDewPointFromHumRatio(dryBulbC, humidityRatio, pressurePa);
+}
+
+/** Enthalpy, kJ per kg of dry air, 0 for dry air at 0 °C (eq. 30). */
+export function enthalpyKJPerKg(dryBulbC: number, humidityRatio: number): number {
+  return DRY_AIR_KJ_PER_KG_K * dryBulbC + humidityRatio * (LATENT_HEAT_KJ_PER_KG + VAPOUR_KJ_PER_KG_K * dryBulbC);
+}
+
+/** Volume, m³ per kg of dry air (eq. 26). */
+export function volumeM3PerKg(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
+  return psychrolib.GetMoistAirVolume(dryBulbC, humidityRatio, pressurePa);
+}

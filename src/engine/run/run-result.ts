@@ -1,0 +1,102 @@
+import type { ScoreComponent } from '../brief/brief.ts';
+import type { HourClass } from '../hour-classes/hour-class.ts';
+
+/** Count of hours per class; the counts add up to `hours`, which is asserted on every run. */
+export interface Ledger {
+  readonly hours: number;
+  readonly classes: Readonly<Record<HourClass, number>>;
+  /** `damp` by its two reasons: outdoor moisture itself, and cold enough only by too much moisture. */
+  readonly dampOutside: number;
+  readonly dampPlant: number;
+  /** All but closed, missing and idle. */
+  readonly demand: number;
+  readonly met: number;
+}
+
+/** The longest run of unmet demand hours (method.md 5). */
+export interface WorstSpell {
+  readonly hours: number;
+  readonly startSlot: number;
+  readonly endSlot: number;
+  readonly severityKh: number;
+  readonly worstK: number;
+  readonly cutAtJoint: boolean;
+}
+
+export interface ScorePart {
+  readonly component: ScoreComponent;
+  readonly label: string;
+  readonly unit: string;
+  /** null: not applicable; its weight is shared over the others. */
+  readonly raw: number | null;
+  readonly a0: number;
+  readonly a100: number;
+  readonly normalised: number | null;
+  /** Weight after sharing, of 100. */
+  readonly weight: number;
+  readonly points: number | null;
+}
+
+export type Verdict = 'meets the brief' | 'does not' | 'no tolerance set';
+
+export interface ToleranceAnswer {
+  readonly tolerance: string;
+  readonly found: number;
+  readonly allowed: number;
+  readonly unit: string;
+  readonly holds: boolean;
+}
+
+export interface GateAnswer {
+  readonly gate: string;
+  readonly answer: 'pass' | 'fail' | 'not known';
+  readonly note: string;
+}
+
+/** One weather year judged by one brief version. Water and electricity are per kW of design load. */
+export interface RunResult {
+  readonly methodVersion: string;
+  readonly ledger: Ledger;
+  readonly severityKh: number;
+  readonly worstSpell: WorstSpell | null;
+  /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */
+  readonly aloneHours: Readonly<Partial<Record<HourClass, number>>>;
+  /** Demand and met hours by month (12) x hour of day (24). */
+  readonly demandByMonthHour: readonly (readonly number[])[];
+  readonly metByMonthHour: readonly (readonly number[])[];
+  readonly water: {
+    readonly makeUpLitres: number;
+    readonly evaporatedLitres: number;
+    readonly litresPerKwh: number | null;
+    readonly worstMonthLitres: number;
+    readonly worstMonth: number | null;
+    readonly peakDayLitres: number;
+    /** Day of the year, 0 first. */
+    readonly peakDay: number | null;
+    readonly peakHourLitres: number;
+    readonly coolingKwh: number;
+  };
+  readonly electricity: {
+    readonly kwh: number;
+    readonly referenceKwh: number;
+    readonly savedPct: number | null;
+    readonly peakKw: number;
+    readonly referencePeakKw: number;
+  };
+  readonly gates: readonly GateAnswer[];
+  readonly tolerances: readonly ToleranceAnswer[];
+  readonly verdict: Verdict;
+  /** Names of the tolerances and hard limits that fail. */
+  readonly failed: readonly string[];
+  /** The printed integer; null when not applicable (no demand) or excluded by a gate. */
+  readonly score: number | null;
+  /** Why `score` is null: "excluded: ..." or "not applicable: no demand". */
+  readonly scoreNote: string | null;
+  readonly scoreExact: number | null;
+  readonly geometricMean: number | null;
+  /** "most", "much", "some" or "little". */
+  readonly words: string | null;
+  readonly parts: readonly ScorePart[];
+  /** One position in `hourClasses` for every slot. */
+  readonly hourClassCodes: Uint8Array;
+}

@@ -1,0 +1,57 @@
+import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
+import type { YearKind } from '../reduction/weather-year.ts';
+import type { Ask, Finding } from './finding.ts';
+
+/** The formats that are recognised by their content. The others of the weather room join this list. */
+export type WeatherFormat = 'EPW';
+
+/** The place that a file declares for itself. */
+export interface DeclaredStation {
+  readonly name: string;
+  readonly latitude: number;
+  readonly longitude: number;
+  /** null when the file does not say. */
+  readonly elevationM: number | null;
+  readonly utcOffsetH: number;
+  readonly wmoNumber: string | null;
+}
+
+/**
+ * The hours of one year in slot order, after repairs and gap rule 1: every column has 8760 or 8784 values, NaN where the
+ * value is missing. `lines` is the line of the file that each slot came from, 0 where no row did.
+ */
+export interface HourColumns {
+  readonly dryBulbC: Float64Array;
+  readonly humidityRatio: Float64Array;
+  readonly pressurePa: Float64Array;
+  /** Provenance of each value, see `hour-flags.ts`. */
+  readonly flags: Uint8Array;
+  readonly lines: Uint32Array;
+}
+
+export interface RefusedReading {
+  readonly status: 'refused';
+  readonly format: WeatherFormat | null;
+  readonly station: DeclaredStation | null;
+  readonly findings: readonly Finding[];
+}
+
+export interface UsableReading {
+  /** `asks` until a person has answered; the hours are read as they stand. */
+  readonly status: 'asks' | 'review';
+  readonly format: WeatherFormat;
+  readonly station: DeclaredStation;
+  readonly kind: YearKind;
+  /** The calendar year of an `actual` year, else null. */
+  readonly year: number | null;
+  readonly hours: HourColumns;
+  /** Which column the humidity came from. */
+  readonly humidityFrom: 'dew point' | 'relative humidity';
+  readonly belowZero: BelowZeroPhase;
+  readonly findings: readonly Finding[];
+  readonly asks: readonly Ask[];
+  /** Licence or attribution text that stands in the file, as it stands; null without any. */
+  readonly comments: string | null;
+}
+
+export type WeatherFileReading = RefusedReading | UsableReading;

@@ -1,0 +1,56 @@
+import tailwindcss from '@tailwindcss/vite';
+import react from '@vitejs/plugin-react';
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  html: { cspNonce: 'CSP_NONCE' },
+  plugins: [react(), tailwindcss()],
+  build: {
+    outDir: 'dist/client',
+    emptyOutDir: true,
+    manifest: true,
+    assetsInlineLimit: 0,
+    chunkSizeWarningLimit: 1400,
+  },
+  server: {
+    host: '127.0.0.1',
+    watch: { ignored: ['**/.muslin/**'] },
+    fs: { deny: ['.muslin', '.env', '.env.*', '*.{crt,pem}', '**/.git/**', '**/.muslin/**'] },
+    proxy: { '/api': 'http://127.0.0.1:3000', '/tiles': 'http://127.0.0.1:3000' },
+  },
+  test: {
+    projects: [
+      {
+        extends: true,
+        test: {
+          name: 'unit',
+          include: ['tests/{engine,contract,checks,client,architecture}/**/*.test.{ts,tsx}'],
+          env: { TZ: 'Pacific/Chatham' },
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'server',
+          include: ['tests/server/**/*.test.ts'],
+          globalSetup: ['tests/support/database.ts'],
+          env: { TZ: 'UTC' },
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.test.ts'],
+          globalSetup: ['tests/support/database.ts'],
+          env: { TZ: 'UTC' },
+          testTimeout: 120_000,
+          hookTimeout: 180_000,
+          fileParallelism: false,
+        },
+      },
+    ],
+  },
+});
