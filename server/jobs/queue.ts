@@ -1,0 +1,26 @@
+import type { Knex } from 'knex';
+
+/** The closed list of background work, each with what it is told. */
+export interface JobPayloads {
+  'read-weather-file': { readonly teamId: string; readonly fileId: string };
+  'judge-year': { readonly teamId: string; readonly weatherYearId: string; readonly briefVersionId: string };
+}
+export type JobName = keyof JobPayloads;
+
+/** Waits before tries grow as e^n seconds, so the last of five comes about a minute and a half after the first. */
+export const MAX_ATTEMPTS = 5;
+
+/**
+ * Queues a job in the caller's transaction: it exists exactly when the transaction commits.
+ * A waiting job of the same key is replaced, one that used up its attempts is begun anew.
+ */
+export async function addJob<N extends JobName>(
+  db: Knex,
+  job: { task: N; payload: JobPayloads[N]; jobKey: string },
+): Promise<void> {
+  await db.raw(
+    `select graphile_worker.add_job(
+       identifier => ?::text, payload => ?::json, job_key => ?::text, max_attempts => ?::integer)`,
+    [job.task, JSON.stringify(job.payload), job.jobKey, MAX_ATTEMPTS],
+  );
+}

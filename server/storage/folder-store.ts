@@ -1,0 +1,72 @@
+import { randomUUID } from 'node:crypto';
+import { copyFile, mkdir, open, readFile, rename, rm, stat } from 'node:fs/promises';
+import path from 'node:path';
+import type { OriginalStore } from './original-store.ts';
+
+const KEY = /^[0-9a-f]{2}\/[0-9a-f]{2}\/[0-9a-f]{64}$/;
+const FILE_MODE = 0o600;
+const FOLDER_MODE = 0o700;
+
+/** Originals as files of one folder, readable by the server's user alone. */
+export function createFolderStore(root: string): OriginalStore {
+  const place = (key: string): string => {
+    if (!KEY.test(key)) throw new RangeError(`not a key of an original: ${key.slice(0, 80)}`);
+    return path.join(root, key);
+  };
+  return {
+    async put(key, fromPath) {
+      const target = place(key);
+      if (await exists(target)) return;
+      const folder = path.dirname(target);
+      await mkdir(folder, { recursive: true, mode: FOLDER_MODE });
+      // Written beside its place under another name, so that a crash half-way never leaves a short original.
+      const waiting = path.join(folder, `${randomUUID()}.part`);
+      try {
+        await copyFile(fromPath, waiting);
+        await settle(waiting);
+        await rename(waiting, target);
+      } catch (error) {
+        await rm(waiting, { force: true });
+        throw error;
+      }
+      await flushFolder(folder);
+    },
+    async get(key) {
+      const handle = await open(place(key), 'r');
+      return handle.createReadStream();
+    },
+    async read(key) {
+      return await readFile(place(key));
+    },
+    async remove(key) {
+      await rm(place(key), { force: true });
+    },
+  };
+}
+
+async function exists(file: string): Promise<boolean> {
+  return await stat(file).then(
+    () => true,
+    () => false,
+  );
+}
+
+async function settle(file: string): Promise<void> {
+  const handle = await open(file, 'r+');
+  try {
+    await handle.chmod(FILE_MODE);
+    await handle.sync();
+  } finally {
+    await handle.close();
+  }
+}
+
+/** The rename itself lasts only once the folder has reached the disk. */
+async function flushFolder(folder: string): Promise<void> {
+  const handle = await open(folder, 'r');
+  try {
+    await handle.sync();
+  } finally {
+    await handle.close();
+  }
+}
