@@ -1,8 +1,12 @@
 /** The static list of migrations: the same names under every runner. Add at the end; never edit one that has landed. */
 import type { Knex } from 'knex';
 import * as firstLight from './0001-first-light.ts';
+import * as workerPools from './0002-worker-pools.ts';
 
-const migrations = { '0001-first-light': firstLight } satisfies Record<string, Knex.Migration>;
+const migrations = { '0001-first-light': firstLight, '0002-worker-pools': workerPools } satisfies Record<
+  string,
+  Knex.Migration
+>;
 
 type MigrationName = keyof typeof migrations;
 

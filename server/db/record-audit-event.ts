@@ -1,0 +1,19 @@
+import type { Knex } from 'knex';
+
+export interface AuditEvent {
+  readonly teamId: string | null;
+  readonly personId: string | null;
+  /** What was done, in words: "weather file accepted". */
+  readonly act: string;
+  readonly subject: Readonly<Record<string, unknown>>;
+  readonly requestId: string | null;
+}
+
+/** Writes what was done into the trail that nobody can change, in the transaction that does it. */
+export async function recordAuditEvent(transaction: Knex.Transaction, event: AuditEvent): Promise<void> {
+  await transaction.raw(
+    `insert into audit_events (team_id, person_id, act, subject, request_id)
+     values (:teamId, :personId, :act, cast(:subject as jsonb), :requestId)`,
+    { ...event, subject: JSON.stringify(event.subject) },
+  );
+}

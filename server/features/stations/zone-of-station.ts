@@ -1,0 +1,30 @@
+import lookUpZone from '@photostructure/tz-lookup';
+
+/**
+ * IANA zone of a station. At sea and where the look-up knows no zone it is the fixed offset of the file, as Etc/GMT±h,
+ * which `isFixedOffset` tells and the place says. (The signs of Etc zones are those of POSIX: Etc/GMT-5 is five hours ahead.)
+ */
+export function zoneOfStation(station: { latitude: number; longitude: number; utcOffsetH: number }): string {
+  const zone = knownZone(station.latitude, station.longitude);
+  if (zone !== null) return zone;
+  const hours = Math.min(14, Math.max(-12, Math.round(station.utcOffsetH)));
+  if (hours === 0) return 'Etc/GMT';
+  return hours > 0 ? `Etc/GMT-${hours}` : `Etc/GMT+${-hours}`;
+}
+
+/** Whether a zone is a fixed offset, because none was found at the position. */
+export function isFixedOffset(zone: string): boolean {
+  return zone.startsWith('Etc/');
+}
+
+function knownZone(latitude: number, longitude: number): string | null {
+  try {
+    const zone = lookUpZone(latitude, longitude);
+    // Answers Etc/GMT±h from the longitude alone at sea: the file's own offset is the better guess.
+    if (isFixedOffset(zone)) return null;
+    // Throws for a zone that this machine's tables do not have.
+    return new Intl.DateTimeFormat('en', { timeZone: zone }).resolvedOptions().timeZone && zone;
+  } catch {
+    return null;
+  }
+}

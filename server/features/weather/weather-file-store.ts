@@ -1,0 +1,193 @@
+import type { Knex } from 'knex';
+import type { FileStatus, ReadingStep } from '#contract/weather.ts';
+import type { Ask, Finding } from '#engine/weather-files/finding.ts';
+import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
+import { storableText } from './storable-text.ts';
+
+/** What the verbs look at before they change a file. */
+export interface WeatherFileState {
+  readonly id: string;
+  readonly teamId: string;
+  readonly name: string;
+  readonly fingerprint: string;
+  readonly storageKey: string;
+  readonly status: FileStatus;
+  readonly step: ReadingStep | null;
+  readonly failure: string | null;
+  readonly declaredStation: DeclaredStation | null;
+  readonly asks: readonly Ask[];
+}
+
+const STATE_COLUMNS = `
+  weather_files.id, weather_files.team_id as "teamId", weather_files.name, weather_files.fingerprint,
+  weather_files.storage_key as "storageKey", weather_files.status, weather_files.step, weather_files.failure,
+  weather_files.declared_station as "declaredStation", weather_files.asks`;
+
+/** The file as it stands; `null` when the team has no such file. */
+export async function findWeatherFile(
+  db: Knex,
+  key: { teamId: string; fileId: string },
+): Promise<WeatherFileState | null> {
+  const { rows } = await db.raw<{ rows: WeatherFileState[] }>(
+    `select ${STATE_COLUMNS} from weather_files where weather_files.team_id = ? and weather_files.id = ?`,
+    [key.teamId, key.fileId],
+  );
+  return rows[0] ?? null;
+}
+
+/** The same, held until the transaction ends, so that nobody else moves the file on meanwhile. */
+export async function lockWeatherFile(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
+): Promise<WeatherFileState | null> {
+  const { rows } = await transaction.raw<{ rows: WeatherFileState[] }>(
+    `select ${STATE_COLUMNS} from weather_files
+     where weather_files.team_id = ? and weather_files.id = ? for no key update`,
+    [key.teamId, key.fileId],
+  );
+  return rows[0] ?? null;
+}
+
+/** The team's file with these bytes that still stands (withdrawn ones do not count). */
+export async function findStandingFile(
+  db: Knex,
+  key: { teamId: string; fingerprint: string },
+): Promise<WeatherFileState | null> {
+  const { rows } = await db.raw<{ rows: WeatherFileState[] }>(
+    `select ${STATE_COLUMNS} from weather_files
+     where weather_files.team_id = ? and weather_files.fingerprint = ? and weather_files.status <> 'withdrawn'`,
+    [key.teamId, key.fingerprint],
+  );
+  return rows[0] ?? null;
+}
+
+/** @returns the new file's id, or null when the team already has these bytes (also when another upload is just storing them) */
+export async function insertWeatherFile(
+  transaction: Knex.Transaction,
+  file: {
+    teamId: string;
+    name: string;
+    bytes: number;
+    fingerprint: string;
+    storageKey: string;
+    uploadedBy: string;
+    uploadedAt: Date;
+  },
+): Promise<string | null> {
+  const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
+    `insert into weather_files (team_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by, uploaded_at)
+     values (:teamId, :name, :bytes, :fingerprint, :storageKey, 'reading', 'received', :uploadedBy, :uploadedAt)
+     on conflict (team_id, fingerprint) where status <> 'withdrawn' do nothing
+     returning id`,
+    { ...file, name: storableText(file.name) },
+  );
+  return rows[0]?.id ?? null;
+}
+
+/** Begins a reading anew that stopped for a fault of ours. */
+export async function restartReading(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
+): Promise<boolean> {
+  const result = await transaction.raw<{ rowCount: number }>(
+    `update weather_files set step = 'received', failure = null
+     where team_id = ? and id = ? and status = 'reading' and failure is not null`,
+    [key.teamId, key.fileId],
+  );
+  return result.rowCount > 0;
+}
+
+/** @returns false when the file is no longer being read */
+export async function setReadingStep(
+  transaction: Knex.Transaction,
+  change: { teamId: string; fileId: string; step: ReadingStep },
+): Promise<boolean> {
+  const result = await transaction.raw<{ rowCount: number }>(
+    `update weather_files set step = :step where team_id = :teamId and id = :fileId and status = 'reading'`,
+    change,
+  );
+  return result.rowCount > 0;
+}
+
+/** Ends the reading of a file with what was read. */
+export async function setReadingResult(
+  transaction: Knex.Transaction,
+  result: {
+    teamId: string;
+    fileId: string;
+    status: 'asks' | 'review' | 'refused';
+    format: string | null;
+    declaredStation: DeclaredStation | null;
+    asks: readonly Ask[];
+    comments: string | null;
+  },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files
+     set status = :status, step = null, failure = null, format = :format, declared_station = cast(:declaredStation as jsonb),
+       asks = cast(:asks as jsonb), comments = :comments
+     where team_id = :teamId and id = :fileId`,
+    {
+      ...result,
+      declaredStation: result.declaredStation === null ? null : storableJson(result.declaredStation),
+      asks: storableJson(result.asks),
+      comments: result.comments === null ? null : storableText(result.comments),
+    },
+  );
+}
+
+/** Writes on the file why its background work stopped for good. */
+export async function setFailure(
+  db: Knex,
+  failure: { teamId: string; fileId: string; message: string },
+): Promise<void> {
+  await db.raw(
+    'update weather_files set step = null, failure = :message where team_id = :teamId and id = :fileId',
+    failure,
+  );
+}
+
+export async function setAccepted(
+  transaction: Knex.Transaction,
+  acceptance: { teamId: string; fileId: string; stationId: string; personId: string; at: Date },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files
+     set status = 'accepted', station_id = :stationId, accepted_by = :personId, accepted_at = :at
+     where team_id = :teamId and id = :fileId`,
+    acceptance,
+  );
+}
+
+export async function setWithdrawn(
+  transaction: Knex.Transaction,
+  withdrawal: { teamId: string; fileId: string; personId: string; at: Date; reason: string },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files
+     set status = 'withdrawn', step = null, withdrawn_by = :personId, withdrawn_at = :at, withdrawn_reason = :reason
+     where team_id = :teamId and id = :fileId`,
+    { ...withdrawal, reason: storableText(withdrawal.reason) },
+  );
+}
+
+/** All findings of a file in one statement, in the order in which they were found. */
+export async function insertFindings(
+  transaction: Knex.Transaction,
+  file: { teamId: string; fileId: string; findings: readonly Finding[] },
+): Promise<void> {
+  const rows = file.findings.map((finding, position) => ({ ...finding, position }));
+  await transaction.raw(
+    `insert into findings (team_id, weather_file_id, position, code, severity, line, col, last_line, hours, message)
+     select :teamId, :fileId, found.position, found.code, found.severity, found.line, found."column", found."lastLine",
+       found.count, found.message
+     from jsonb_to_recordset(cast(:rows as jsonb)) as found (
+       position integer, code text, severity text, line integer, "column" integer, "lastLine" integer, count integer,
+       message text)`,
+    { teamId: file.teamId, fileId: file.fileId, rows: storableJson(rows) },
+  );
+}
+
+function storableJson(value: unknown): string {
+  return JSON.stringify(value, (_, part: unknown) => (typeof part === 'string' ? storableText(part) : part));
+}

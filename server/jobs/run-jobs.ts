@@ -1,0 +1,164 @@
+import { EventEmitter } from 'node:events';
+import { setTimeout as sleep } from 'node:timers/promises';
+import { Logger, type Runner, run, type TaskList, type WorkerEvents } from 'graphile-worker';
+import type { Knex } from 'knex';
+import pg from 'pg';
+import type { ListenerLog } from './listener.ts';
+import type { JobName, JobPayloads } from './queue.ts';
+import { type Repeated, repeat } from './repeat.ts';
+import { beat, forgetPool, releaseSilentPools } from './worker-pool-store.ts';
+
+export interface JobTask<P> {
+  /** The work; throwing means that it is tried again later. It may run twice, so doing it again must change nothing. */
+  run(payload: P): Promise<void>;
+  /** After the last try has failed. */
+  dead(payload: P): Promise<void>;
+}
+export type JobTasks = { readonly [N in JobName]: JobTask<JobPayloads[N]> };
+
+const CONCURRENCY = 2;
+/** One connection to listen on, and one to spare. */
+const MOST_CONNECTIONS = CONCURRENCY + 2;
+const BEAT_EVERY_MS = 10_000;
+const SILENT_MS = 60_000;
+const FIRST_WAIT_MS = 500;
+const LONGEST_WAIT_MS = 10_000;
+
+/**
+ * Works off the queue until it is closed; a run that ends by itself (the database was away for long) is begun again.
+ * Signals are the caller's business. Closing waits for the jobs at hand.
+ * @throws when the first run cannot begin
+ */
+export async function runJobs(options: {
+  db: Knex;
+  databaseUrl: string;
+  tasks: JobTasks;
+  log: ListenerLog;
+}): Promise<{ close(): Promise<void> }> {
+  const closing = new AbortController();
+  let current = await startRun(options);
+  const supervised = supervise();
+
+  async function supervise(): Promise<void> {
+    let waitMs = FIRST_WAIT_MS;
+    await current.ended;
+    while (!closing.signal.aborted) {
+      options.log.error({ waitMs }, 'the job worker ended by itself; starting it again');
+      await sleep(waitMs, undefined, { signal: closing.signal }).catch(() => undefined);
+      waitMs = Math.min(waitMs * 2, LONGEST_WAIT_MS);
+      if (closing.signal.aborted) return;
+      try {
+        current = await startRun(options);
+        waitMs = FIRST_WAIT_MS;
+        await current.ended;
+      } catch (error) {
+        options.log.error({ error }, 'the job worker could not be started');
+      }
+    }
+  }
+
+  return {
+    async close() {
+      closing.abort();
+      await current.stop();
+      await supervised;
+    },
+  };
+}
+
+interface Run {
+  readonly ended: Promise<void>;
+  stop(): Promise<void>;
+}
+
+async function startRun(options: { db: Knex; databaseUrl: string; tasks: JobTasks; log: ListenerLog }): Promise<Run> {
+  const { db, log } = options;
+  const pool = new pg.Pool({ connectionString: options.databaseUrl, max: MOST_CONNECTIONS, keepAlive: true });
+  // A lost connection shows in the query that meets it; without a listener it would end the process.
+  pool.on('error', () => undefined);
+  pool.on('connect', (client) => void client.on('error', () => undefined));
+  const buried = new Set<Promise<void>>();
+  let heart: Repeated | null = null;
+  let poolId = '';
+
+  const events: WorkerEvents = new EventEmitter();
+  events.on('pool:create', ({ workerPool }) => {
+    poolId = workerPool.id;
+  });
+  events.on('job:failed', ({ job }) => {
+    const burial = bury(options.tasks, job, log).finally(() => buried.delete(burial));
+    buried.add(burial);
+  });
+
+  const end = async (): Promise<void> => {
+    await heart?.stop();
+    await Promise.all(buried);
+    await forgetPool(db, poolId).catch(() => undefined);
+    await pool.end();
+  };
+
+  let runner: Runner;
+  try {
+    runner = await run({
+      pgPool: pool,
+      taskList: taskList(options.tasks),
+      concurrency: CONCURRENCY,
+      noHandleSignals: true,
+      events,
+      logger: queueLogger(log),
+    });
+  } catch (error) {
+    await pool.end();
+    throw error;
+  }
+  heart = repeat({
+    everyMs: BEAT_EVERY_MS,
+    what: 'the heartbeat of the job worker',
+    log,
+    work: async () => {
+      await beat(db, poolId);
+      const pools = await releaseSilentPools(db, SILENT_MS);
+      if (pools.length > 0) log.error({ pools }, 'the jobs of silent workers were given back');
+    },
+  });
+  const ended = runner.promise.catch((error) => log.error({ error }, 'the job worker ended')).then(end);
+  return {
+    ended,
+    async stop() {
+      await runner.stop().catch(() => undefined);
+      await ended;
+    },
+  };
+}
+
+function taskList(tasks: JobTasks): TaskList {
+  return {
+    'read-weather-file': (payload: JobPayloads['read-weather-file']) => tasks['read-weather-file'].run(payload),
+    'judge-year': (payload: JobPayloads['judge-year']) => tasks['judge-year'].run(payload),
+  };
+}
+
+async function bury(
+  tasks: JobTasks,
+  job: { task_identifier: string; payload: unknown },
+  log: ListenerLog,
+): Promise<void> {
+  try {
+    switch (job.task_identifier) {
+      case 'read-weather-file':
+        // Payloads are written by addJob alone, which takes none of another shape.
+        return await tasks['read-weather-file'].dead(job.payload as JobPayloads['read-weather-file']);
+      case 'judge-year':
+        return await tasks['judge-year'].dead(job.payload as JobPayloads['judge-year']);
+    }
+  } catch (error) {
+    log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');
+  }
+}
+
+/** The queue's own log: only what went wrong. */
+function queueLogger(log: ListenerLog): Logger {
+  return new Logger(() => (level, message, meta) => {
+    if (level === 'error') log.error({ ...meta, job: undefined }, message);
+  });
+}
