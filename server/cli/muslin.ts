@@ -1,0 +1,27 @@
+import type { Command, CommandContext, ExitCode } from './command.ts';
+
+const USAGE = `Use: npm run -s muslin -- COMMAND
+
+  read FILE... [--strict]        read weather files: status, findings, depression hours, design values
+  ledger FILE --brief PRESET     test every hour of a file against a preset: hour classes, verdict, score
+
+One JSON line per result on standard output. Exit codes: 0 done, 1 a file was refused (or is in doubt under --strict),
+2 wrong use, 3 could not run.`;
+
+/** Each command's module is loaded when it is asked for, so that none waits for what another needs. */
+const commands: Readonly<Record<string, (context: CommandContext) => Promise<ExitCode>>> = {
+  read: async (context) => (await import('./commands/read.ts')).read(context),
+  ledger: async (context) => (await import('./commands/ledger.ts')).ledger(context),
+};
+
+/** The command line of the engine: `muslin COMMAND ...`. */
+export const run: Command = async (context) => {
+  // A reader that has seen enough closes the pipe: nothing is wrong then, and there is nobody left to tell.
+  process.stdout.on('error', () => process.exit(0));
+  const [name = '', ...args] = context.args;
+  const command = Object.hasOwn(commands, name) ? commands[name] : undefined;
+  if (command !== undefined) return command({ ...context, args });
+  if (name !== '' && name !== '--help' && name !== '-h') process.stderr.write(`There is no command "${name}".\n\n`);
+  process.stderr.write(`${USAGE}\n`);
+  return name === '--help' || name === '-h' ? 0 : 2;
+};
