@@ -1,0 +1,182 @@
+import { type KeyboardEvent, type RefObject, useEffect, useId, useMemo, useRef, useState } from 'react';
+import { dayLabel, hourLabel, monthNames, monthStarts } from '../charts/calendar.ts';
+import { daysOf, yearCloth } from '../charts/year-cloth.ts';
+import { type HourClass, hourClasses } from '../engine/hour-classes/hour-class.ts';
+
+const HOURS = 24;
+
+interface YearClothCanvasProps {
+  /** One position in `hourClasses` for every slot. */
+  readonly codes: Uint8Array;
+  readonly heightPx: number;
+  /** The same as the picture, in a sentence. */
+  readonly label: string;
+  readonly words: (hourClass: HourClass) => string;
+}
+
+interface Cell {
+  readonly day: number;
+  readonly hour: number;
+}
+
+/**
+ * The year cloth on a canvas, with its months. The pointer or the arrow keys read an hour: arrows go by the hour and the
+ * day, Page Up and Page Down by four weeks, Home and End to the year's first and last day.
+ */
+export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanvasProps) {
+  const days = daysOf(codes);
+  const frame = useRef<HTMLDivElement>(null);
+  const widthPx = useWidth(frame);
+  const [cell, setCell] = useState<Cell | null>(null);
+  const readingId = useId();
+
+  const read = (at: Cell) => {
+    const hourClass = hourClasses[codes[at.day * HOURS + at.hour] ?? -1];
+    return `${dayLabel(at.day, days)}, ${hourLabel(at.hour + 1)}: ${hourClass ? words(hourClass) : 'No data'}`;
+  };
+  const onKeyDown = (event: KeyboardEvent) => {
+    const next = moved(cell ?? { day: 0, hour: 0 }, event.key, days);
+    if (event.key === 'Escape') setCell(null);
+    else if (next) setCell(cell === null ? { day: 0, hour: 12 } : next);
+    else return;
+    event.preventDefault();
+  };
+
+  return (
+    <div className="min-w-0">
+      <div className="overflow-x-auto pb-0.5">
+        <div ref={frame} className="relative min-w-[46rem]">
+          {/* biome-ignore lint/a11y/noNoninteractiveTabindex: the picture is read hour by hour with the arrow keys */}
+          <div
+            role="application"
+            aria-roledescription="year cloth"
+            aria-label={`${label} Arrow keys read single hours.`}
+            aria-describedby={readingId}
+            tabIndex={0}
+            className="relative"
+            onKeyDown={onKeyDown}
+            onBlur={() => setCell(null)}
+            onPointerLeave={() => setCell(null)}
+            onPointerMove={(event) => {
+              const box = event.currentTarget.getBoundingClientRect();
+              const day = Math.floor(((event.clientX - box.left) / box.width) * days);
+              const hour = Math.floor(((event.clientY - box.top) / box.height) * HOURS);
+              if (day >= 0 && day < days && hour >= 0 && hour < HOURS) setCell({ day, hour });
+            }}
+          >
+            <Cloth codes={codes} widthPx={widthPx} heightPx={heightPx} />
+            {cell ? <CellMark cell={cell} days={days} /> : null}
+          </div>
+          <MonthAxis days={days} />
+        </div>
+      </div>
+      <p id={readingId} aria-live="polite" className="h-5 text-fine text-soft">
+        {cell ? read(cell) : 'Point at an hour, or use the arrow keys, to read it.'}
+      </p>
+    </div>
+  );
+}
+
+/** One pixel of the buffer for one of the screen, so that no thread is blurred. */
+function Cloth({ codes, widthPx, heightPx }: { codes: Uint8Array; widthPx: number; heightPx: number }) {
+  const canvas = useRef<HTMLCanvasElement>(null);
+  const ratio = window.devicePixelRatio;
+  const picture = useMemo(
+    () =>
+      widthPx === 0
+        ? null
+        : yearCloth({
+            codes,
+            widthPx: Math.round(widthPx * ratio),
+            heightPx: Math.round(heightPx * ratio),
+            threadPx: Math.max(1, Math.round(ratio)),
+          }),
+    [codes, widthPx, heightPx, ratio],
+  );
+  useEffect(() => {
+    const context = canvas.current?.getContext('2d');
+    if (!context || !picture) return;
+    context.putImageData(new ImageData(picture.pixels, picture.widthPx, picture.heightPx), 0, 0);
+  }, [picture]);
+  return (
+    <canvas
+      ref={canvas}
+      width={picture?.widthPx ?? 1}
+      height={picture?.heightPx ?? 1}
+      aria-hidden="true"
+      className="block w-full [image-rendering:pixelated]"
+      style={{ height: heightPx }}
+    />
+  );
+}
+
+function CellMark({ cell, days }: { cell: Cell; days: number }) {
+  return (
+    <span
+      aria-hidden="true"
+      className="pointer-events-none absolute box-content border border-ink outline outline-paper"
+      style={{
+        left: `calc(${(100 * cell.day) / days}% - 1px)`,
+        top: `calc(${(100 * cell.hour) / HOURS}% - 1px)`,
+        width: `${100 / days}%`,
+        height: `${100 / HOURS}%`,
+      }}
+    />
+  );
+}
+
+function MonthAxis({ days }: { days: number }) {
+  return (
+    <div aria-hidden="true" className="relative h-5 text-fine text-soft">
+      {monthStarts(days).map((start, month) => (
+        <span
+          key={monthNames[month]}
+          className="absolute top-0 border-l border-[#b9af9b] pl-1 leading-5"
+          style={{ left: `${(100 * start) / days}%` }}
+        >
+          {monthNames[month]}
+        </span>
+      ))}
+    </div>
+  );
+}
+
+function moved(cell: Cell, key: string, days: number): Cell | null {
+  const held = (day: number, hour: number): Cell => ({
+    day: Math.min(days - 1, Math.max(0, day)),
+    hour: Math.min(HOURS - 1, Math.max(0, hour)),
+  });
+  switch (key) {
+    case 'ArrowLeft':
+      return held(cell.day - 1, cell.hour);
+    case 'ArrowRight':
+      return held(cell.day + 1, cell.hour);
+    case 'ArrowUp':
+      return held(cell.day, cell.hour - 1);
+    case 'ArrowDown':
+      return held(cell.day, cell.hour + 1);
+    case 'PageUp':
+      return held(cell.day - 28, cell.hour);
+    case 'PageDown':
+      return held(cell.day + 28, cell.hour);
+    case 'Home':
+      return held(0, cell.hour);
+    case 'End':
+      return held(days - 1, cell.hour);
+    default:
+      return null;
+  }
+}
+
+function useWidth(element: RefObject<HTMLElement | null>): number {
+  const [widthPx, setWidthPx] = useState(0);
+  useEffect(() => {
+    const watched = element.current;
+    if (!watched) return;
+    const observer = new ResizeObserver(() => setWidthPx(watched.clientWidth));
+    observer.observe(watched);
+    setWidthPx(watched.clientWidth);
+    return () => observer.disconnect();
+  }, [element]);
+  return widthPx;
+}
