@@ -24,7 +24,7 @@ export default defineConfig({
         extends: true,
         test: {
           name: 'unit',
-          include: ['tests/{engine,contract,checks,client,architecture}/**/*.test.{ts,tsx}'],
+          include: ['tests/{engine,contract,checks,client,architecture,data}/**/*.test.{ts,tsx}'],
           env: { TZ: 'Pacific/Chatham' },
         },
       },
