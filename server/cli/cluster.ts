@@ -7,7 +7,7 @@ import path from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { clusterFolder } from './cluster-folder.ts';
 import { CouldNotRun } from './could-not-run.ts';
-import { freePort, portIsFree } from './free-port.ts';
+import { answersOn, freePort, portIsFree } from './free-port.ts';
 import { databaseServerUser, findPostgresPrograms } from './postgres-programs.ts';
 import { type ProgramOutcome, type ProgramUser, runProgram } from './run-program.ts';
 
@@ -17,6 +17,7 @@ export const SUPERUSER = 'muslin_superuser';
 /** After a crash the old backends need a moment to let go of the shared memory. */
 const START_TRIES = 12;
 const START_PAUSE_MS = 500;
+const RUNNING_LIMIT_MS = 60_000;
 
 export interface ClusterOptions {
   readonly homeDir: string;
@@ -140,10 +141,25 @@ async function startServer(place: Place, throwaway: boolean): Promise<number> {
   }
 }
 
+/**
+ * Port of the server that runs already, once it answers: it may be starting up, going down or, killed a moment ago, not yet
+ * be seen as dead.
+ */
+async function runningPort(place: Place): Promise<number | null> {
+  const until = Date.now() + RUNNING_LIMIT_MS;
+  while (isRunning(place)) {
+    const port = keptPort(place);
+    if (port !== null && (await answersOn(port))) return port;
+    if (Date.now() > until) throw new CouldNotRun(`The PostgreSQL server in ${place.folder} runs but does not answer.`);
+    await sleep(200);
+  }
+  return null;
+}
+
 /** Starts the cluster of a home, making it at first; a running one is left as it is. */
 export async function startCluster(options: ClusterOptions): Promise<StartedCluster> {
   const place = placeOf(options.homeDir);
-  const running = existsSync(path.join(place.dataDir, 'PG_VERSION')) && isRunning(place) ? keptPort(place) : null;
+  const running = await runningPort(place);
   if (running !== null) return { port: running, folder: place.folder, startedNow: false };
   if (!existsSync(path.join(place.dataDir, 'PG_VERSION'))) await makeCluster(place, options.superuserPassword);
   const port = await startServer(place, options.throwaway ?? false);

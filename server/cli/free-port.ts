@@ -23,3 +23,15 @@ export function freePort(): Promise<number> {
     });
   });
 }
+
+/** True when something on loopback takes a connection on this port. */
+export function answersOn(port: number): Promise<boolean> {
+  return new Promise((resolve) => {
+    const socket = net.connect({ port, host: '127.0.0.1' });
+    socket.once('connect', () => {
+      socket.destroy();
+      resolve(true);
+    });
+    socket.once('error', () => resolve(false));
+  });
+}
