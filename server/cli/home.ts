@@ -18,8 +18,7 @@ export interface Home {
 }
 
 /** The folder that MUSLIN_HOME names, counted from where the caller stands; without it `.muslin` in the repository. */
-export function homePath({ rootDir, callerDir }: { rootDir: string; callerDir: string }): string {
-  const named = process.env.MUSLIN_HOME ?? '';
+export function homePath({ rootDir, callerDir, named }: { rootDir: string; callerDir: string; named: string }): string {
   return named === '' ? path.join(rootDir, '.muslin') : path.resolve(callerDir, named);
 }
 

@@ -113,6 +113,9 @@ function callerDir() {
   return (throughNpm && process.env.INIT_CWD) || process.cwd();
 }
 
+// Whoever read our words may be gone, a closed terminal for one: that must not keep us from stopping in order.
+for (const stream of [process.stdout, process.stderr]) stream.on('error', () => undefined);
+
 /** @returns {Promise<number>} the exit code */
 async function main() {
   if (nodeIsOld()) {
