@@ -1,4 +1,5 @@
 import type { ScoreComponent } from '../brief/brief.ts';
+import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import type { HourClass } from '../hour-classes/hour-class.ts';
 
 /** Count of hours per class; the counts add up to `hours`, which is asserted on every run. */
@@ -53,15 +54,28 @@ export interface GateAnswer {
   readonly note: string;
 }
 
+/** Demand hours whose supply, °C, lies in [fromC, fromC + 1). */
+export interface SupplyBin {
+  readonly fromC: number;
+  readonly hours: number;
+}
+
 /** One weather year judged by one brief version. Water and electricity are per kW of design load. */
 export interface RunResult {
   readonly methodVersion: string;
+  readonly clock: ResolvedClock;
+  /** Every month in which the brief has schedule has 90 % of its hours (method 2). */
+  readonly usable: boolean;
+  /** Months in schedule, 1..12, with fewer. */
+  readonly monthsShort: readonly number[];
   readonly ledger: Ledger;
   readonly severityKh: number;
   readonly worstSpell: WorstSpell | null;
   /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */
   readonly aloneHours: Readonly<Partial<Record<HourClass, number>>>;
-  /** Demand and met hours by month (12) x hour of day (24). */
+  /** Supply temperatures in demand hours, ascending bins of 1 K without a gap. */
+  readonly supplyCurve: readonly SupplyBin[];
+  /** Demand and met hours by month (12) x hour of day (24), in the slots' standard time. */
   readonly demandByMonthHour: readonly (readonly number[])[];
   readonly metByMonthHour: readonly (readonly number[])[];
   readonly water: {
@@ -92,6 +106,7 @@ export interface RunResult {
   readonly score: number | null;
   /** Why `score` is null: "excluded: ..." or "not applicable: no demand". */
   readonly scoreNote: string | null;
+  /** The weighted sum before gates; never shown where `score` is null. */
   readonly scoreExact: number | null;
   readonly geometricMean: number | null;
   /** "most", "much", "some" or "little". */

@@ -1,0 +1,45 @@
+/**
+ * Which slots of a year a brief's schedule opens (method 3): a slot ending at h is open when h - 1 >= opening and
+ * h <= closing. Where civil time stands half an hour off the slots, the slot's end decides: opening < h <= closing, which
+ * is the same rule on whole hours.
+ */
+import type { Brief } from '../brief/brief.ts';
+import { parseHours } from '../brief/schedule-hours.ts';
+import { calendarDayMs, civilLeadMin, type ResolvedClock } from './resolved-clock.ts';
+
+const MIN_PER_DAY = 1440;
+
+/**
+ * @returns one value per slot: 1 open, 0 closed
+ * @throws RangeError when the hours are `daylight` or cannot be read
+ */
+export function openSlots(brief: Pick<Brief, 'months' | 'weekdays' | 'hours'>, clock: ResolvedClock): Uint8Array {
+  const hours = parseHours(brief.hours);
+  if (hours === null || hours === 'daylight')
+    throw new RangeError(`hours of a schedule cannot be used: ${brief.hours}`);
+  const { opening, closing } = hours;
+  const lead = civilLeadMin(clock);
+  const open = new Uint8Array(clock.slots);
+  const dayOpens = openDays(brief, clock);
+  for (let slot = 0; slot < clock.slots; slot++) {
+    const endMin = (slot + 1) * 60 + (lead[slot] ?? 0);
+    const day = Math.ceil(endMin / MIN_PER_DAY) - 1;
+    const hourEnding = (endMin - day * MIN_PER_DAY) / 60;
+    if (dayOpens(day) && hourEnding > opening && hourEnding <= closing) open[slot] = 1;
+  }
+  return open;
+}
+
+/** Answers for civil days -1 .. 366 of the calendar; standard and civil dates differ by at most one day. */
+function openDays(brief: Pick<Brief, 'months' | 'weekdays'>, clock: ResolvedClock): (day: number) => boolean {
+  const days = clock.slots / 24;
+  const answers: boolean[] = [];
+  for (let day = -1; day <= days; day++) {
+    const date = new Date(calendarDayMs(clock, day));
+    const weekday = date.getUTCDay();
+    const monthOpens = brief.months === 'all' || brief.months.includes(date.getUTCMonth() + 1);
+    const weekdayOpens = brief.weekdays === 'all' || (weekday >= 1 && weekday <= 5);
+    answers.push(monthOpens && weekdayOpens);
+  }
+  return (day) => answers[day + 1] ?? false;
+}

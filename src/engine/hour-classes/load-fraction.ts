@@ -1,0 +1,20 @@
+import type { Brief } from '../brief/brief.ts';
+
+/** The 1 % dry bulb: the value at place floor(p N), counted from 0 downwards (method 2). */
+const DESIGN_SHARE = 0.01;
+
+/**
+ * phi of an hour, 0..1 (method 3.1): 1, or linear from t_bal to the year's 1 % dry bulb.
+ * @param dryBulbsC known dry bulbs of the whole year, °C, any order
+ */
+export function loadFractionOf(
+  brief: Pick<Brief, 'phi' | 'balanceTempC'>,
+  dryBulbsC: Float64Array,
+): (dryBulbC: number) => number {
+  const fromC = brief.balanceTempC;
+  if (brief.phi === 'constant' || fromC === null) return () => 1;
+  const sorted = dryBulbsC.toSorted();
+  const designC = sorted[sorted.length - 1 - Math.floor(DESIGN_SHARE * sorted.length)] ?? Number.NaN;
+  if (!(designC > fromC)) return () => 1;
+  return (dryBulbC) => Math.min(Math.max((dryBulbC - fromC) / (designC - fromC), 0), 1);
+}

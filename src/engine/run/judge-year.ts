@@ -1,0 +1,79 @@
+import type { Brief } from '../brief/brief.ts';
+import { notBuiltYet } from '../brief/not-built-yet.ts';
+import { METHOD_VERSION, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
+import type { PackedYear, WeatherYear } from '../reduction/weather-year.ts';
+import { coverageOf } from '../score/coverage.ts';
+import { exclusionOf, gatesOf } from '../score/gates.ts';
+import { countHardLimits } from '../score/hard-limits.ts';
+import { rawComponents } from '../score/raw-components.ts';
+import { verdictOf } from '../score/verdict.ts';
+import { bandWord, weightedScore } from '../score/weighted-score.ts';
+import { tallyPlant } from '../water-energy/tally-plant.ts';
+import { type JudgedYear, judgeHours } from './judged-year.ts';
+import type { RunResult } from './run-result.ts';
+import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
+import { tallyLedger } from './tally-ledger.ts';
+
+export interface JudgeYearInput {
+  readonly year: WeatherYear;
+  readonly brief: Brief;
+  /** IANA name of the station's time zone. */
+  readonly zone: string;
+  /** The height used for the place, m. */
+  readonly heightM: number;
+}
+
+/**
+ * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
+ * @throws RangeError when the brief needs what this version cannot judge (`notBuiltYet`), the zone is not known or the
+ * columns are no year
+ */
+export function judgeYear(input: JudgeYearInput): RunResult {
+  const { year, brief, zone, heightM } = input;
+  const notBuilt = notBuiltYet(brief);
+  if (notBuilt.length > 0) throw new RangeError(notBuilt.join('; '));
+  const judged = judgeHours({ year, brief, zone });
+  const counted = countHours(judged, input);
+  const hardLimits = countHardLimits({ brief, heightM, demandHours: judged.demandHours });
+  const coverage = coverageOf({ classCodes: judged.classCodes, known: knownSlots(year.packed) });
+  const gates = gatesOf({ brief, coverage, hardLimits });
+  return {
+    methodVersion: METHOD_VERSION,
+    clock: judged.clock,
+    usable: coverage.usable,
+    monthsShort: coverage.monthsShort,
+    ...counted,
+    gates,
+    ...verdictOf({ brief, ledger: counted.ledger, worstSpell: counted.worstSpell, hardLimits }),
+    ...scoreOf(counted, { brief, exclusion: exclusionOf(gates) }),
+    hourClassCodes: judged.classCodes,
+  };
+}
+
+function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
+  return {
+    ledger: tallyLedger(judged),
+    severityKh: judged.demandHours.reduce((sum, { judgement }) => sum + judgement.shortfallK, 0),
+    worstSpell: tallyWorstSpell(judged, year),
+    aloneHours: tallyAloneHours(judged, brief),
+    supplyCurve: tallySupplyCurve(judged),
+    ...tallyMonthHours(judged),
+    ...tallyPlant(judged.slots, judged.demandHours),
+  };
+}
+
+function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; exclusion: string | null }) {
+  const { brief, exclusion } = input;
+  const indexPoints = brief.limit.kind === 'thi' || brief.limit.kind === 'shade-heat';
+  const weighted = weightedScore(brief.score, rawComponents(counted, brief), { indexPoints });
+  const noDemand = counted.ledger.demand === 0 ? 'not applicable: no demand' : null;
+  const scoreNote = exclusion ?? noDemand;
+  const score = scoreNote === null && weighted.scoreExact !== null ? Math.round(weighted.scoreExact) : null;
+  return { score, scoreNote, words: score === null ? null : bandWord(score), ...weighted };
+}
+
+function knownSlots({ dryBulb, humidityRatio, pressure }: PackedYear): Uint8Array {
+  return Uint8Array.from(dryBulb, (value, slot) =>
+    value !== MISSING_INT16 && humidityRatio[slot] !== MISSING_UINT16 && pressure[slot] !== MISSING_UINT16 ? 1 : 0,
+  );
+}
