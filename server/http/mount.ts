@@ -1,15 +1,19 @@
-import type { Readable } from 'node:stream';
-import type { Router } from 'express';
+import { Readable } from 'node:stream';
+import express, { type Request, type Response, type Router } from 'express';
 import type * as z from 'zod/mini';
 import type { Endpoint, EventsResponse, FileResponse, JsonResponse, ParsedOf } from '#contract/endpoint.ts';
 import type { Deps } from '../deps.ts';
-import type { RequestContext } from './request-context.ts';
-
-/** Bytes to send; `fileName` is what the browser is told to call them. */
-export interface FileAnswer {
-  readonly body: Uint8Array | Readable;
-  readonly fileName?: string;
-}
+import { answerEvents, HEARTBEAT_MS } from './answer-events.ts';
+import { answerFile, type FileAnswer } from './answer-file.ts';
+import { AppError } from './app-error.ts';
+import { authorise, policies } from './authorise.ts';
+import { addressBucket } from './client-address.ts';
+import { COUNTED_IN_DATABASE_UP_TO, makeLocalCounter, spendShared } from './limits.ts';
+import { parseInput } from './parse-input.ts';
+import type { Actor, RequestContext, UploadedFile } from './request-context.ts';
+import { type Identity, stateOf } from './request-state.ts';
+import { abortWhenGone, withinTime } from './time-limit.ts';
+import { withUploads } from './uploads.ts';
 
 /** What a handler returns, by the kind of answer that its endpoint declares. */
 export type HandlerAnswer<E extends Endpoint> =
@@ -23,10 +27,155 @@ export type HandlerAnswer<E extends Endpoint> =
 
 export type Handler<E extends Endpoint> = (input: ParsedOf<E>, request: RequestContext) => Promise<HandlerAnswer<E>>;
 
-/** Serves one declared endpoint: limits, authorise, parse, handle, answer; the handler sees only what is allowed and well formed. */
+/** One request on its way through an endpoint. */
+interface Passage {
+  readonly endpoint: Endpoint;
+  readonly deps: Deps;
+  readonly request: Request;
+  readonly response: Response;
+  readonly identity: Identity;
+  readonly requestId: string;
+  /** Aborted when the client has gone, the server closes (events only) or the time is over. */
+  readonly signal: AbortSignal;
+  readonly handle: (input: unknown, context: RequestContext) => Promise<unknown>;
+}
+
+/**
+ * Serves one declared endpoint: limits, authorise, parse, handle, answer. The handler sees only what is allowed and well
+ * formed; the client sees only what is declared. Refuses a declaration that no rule guards, at start.
+ */
 export function mount<E extends Endpoint>(router: Router, deps: Deps, endpoint: E, handler: Handler<E>): void {
-  void router;
-  void deps;
-  void handler;
-  throw new Error(`${endpoint.method} ${endpoint.path} has nobody to serve it yet.`);
+  if (!Object.hasOwn(policies, endpoint.allow))
+    throw new Error(`${endpoint.method} ${endpoint.path}: nothing says who may ("${endpoint.allow}" has no rule).`);
+  const spend = requestLimit(deps, endpoint);
+  const readJson = express.json({ limit: endpoint.limits.bodyBytes });
+  // The two places where what was parsed by a schema is given the type that the schema says.
+  const handle = (input: unknown, context: RequestContext) => handler(input as ParsedOf<E>, context);
+  const verb = endpoint.method.toLowerCase() as Lowercase<Endpoint['method']>;
+
+  router[verb](endpoint.path, async (request, response) => {
+    const { identity, requestId, closing } = stateOf(request);
+    if (identity === null) throw new Error('The request has not passed authentication.');
+    const over = abortWhenGone(response);
+    const streams = endpoint.response.kind === 'events';
+    const signal = streams ? AbortSignal.any([over.signal, closing]) : over.signal;
+    const passage: Passage = { endpoint, deps, request, response, identity, requestId, signal, handle };
+
+    await spend(bucketOf(endpoint, { actor: identity.actor, ip: request.ip ?? '' }));
+    authorise(endpoint.allow, { actor: identity.actor, params: textParams(request) });
+    const work = async () => {
+      if (endpoint.body.kind === 'json') await readBody(readJson, { request, response });
+      return pass(passage);
+    };
+    try {
+      if (streams) await work();
+      else await withinTime(work, { seconds: endpoint.limits.seconds, over, response });
+    } finally {
+      // Events that nobody reads any more are let go of, whyever their reading ended.
+      if (streams) over.abort();
+    }
+  });
+}
+
+async function pass(passage: Passage): Promise<void> {
+  const { endpoint, request, response, signal, deps } = passage;
+  const { body } = endpoint;
+  if (body.kind !== 'upload') return answer(passage, await passage.handle(parse(passage), contextOf(passage, [])));
+  const input = parse(passage);
+  const receiving = { request, response, limits: body, folder: deps.uploadsDir, signal };
+  const answered = await withUploads(receiving, (files) => passage.handle(input, contextOf(passage, files)));
+  return answer(passage, answered);
+}
+
+function parse({ endpoint, request }: Passage): unknown {
+  const parts = [
+    { name: 'params', schema: endpoint.params, value: { ...request.params } },
+    { name: 'query', schema: endpoint.query, value: { ...request.query } },
+  ];
+  if (endpoint.body.kind === 'json') parts.push({ name: 'body', schema: endpoint.body.schema, value: request.body });
+  const parsed = parseInput(parts);
+  // Passport reads e-mail and password from here: as the contract understands them, not as they were typed.
+  if (endpoint.body.kind === 'json') request.body = parsed.body;
+  return parsed;
+}
+
+function contextOf(passage: Passage, uploads: readonly UploadedFile[]): RequestContext {
+  const { identity, requestId, request, signal } = passage;
+  return { actor: identity.actor, session: identity.session, requestId, ip: request.ip ?? '', signal, uploads };
+}
+
+async function answer(passage: Passage, answered: unknown): Promise<void> {
+  const { endpoint, request, response, signal } = passage;
+  const declared = endpoint.response;
+  if (response.headersSent || response.destroyed) return letGo(answered);
+  response.setHeader('Cache-Control', 'no-store');
+  switch (declared.kind) {
+    case 'json': {
+      const parsed = declared.schema.safeParse(answered);
+      if (!parsed.success)
+        throw new Error(`The answer of ${endpoint.method} ${endpoint.path} is not what is declared.`, {
+          cause: parsed.error,
+        });
+      response.json(parsed.data);
+      return;
+    }
+    case 'none':
+      response.status(204).end();
+      return;
+    case 'file':
+      return answerFile({ request, response }, { declared, answer: answered as FileAnswer });
+    case 'events':
+      return answerEvents({
+        response,
+        schema: declared.schema,
+        events: answered as AsyncIterable<unknown>,
+        signal,
+        heartbeatMs: HEARTBEAT_MS,
+        mayStillWatch: () => mayStill(passage),
+      });
+  }
+}
+
+/** Closes a stream that nobody will read, as the time was over or the client had gone before it came. */
+function letGo(answered: unknown): void {
+  if (typeof answered !== 'object' || answered === null || !('body' in answered)) return;
+  if (answered.body instanceof Readable) answered.body.destroy();
+}
+
+/** Looks again at session, membership and role while a stream is open. */
+async function mayStill({ endpoint, identity, request }: Passage): Promise<boolean> {
+  const actor = await identity.lookAgain();
+  try {
+    authorise(endpoint.allow, { actor, params: textParams(request) });
+    return true;
+  } catch (error) {
+    if (error instanceof AppError) return false;
+    throw error;
+  }
+}
+
+function requestLimit(deps: Deps, endpoint: Endpoint): (bucket: string) => Promise<void> {
+  const { perMinute } = endpoint.limits;
+  if (perMinute <= COUNTED_IN_DATABASE_UP_TO) return (bucket) => spendShared(deps, { bucket, perMinute });
+  const spend = makeLocalCounter(deps.now);
+  return async (bucket) => spend({ bucket, perMinute });
+}
+
+function bucketOf(endpoint: Endpoint, { actor, ip }: { actor: Actor; ip: string }): string {
+  const who = actor.kind === 'person' ? `person ${actor.personId}` : `address ${addressBucket(ip)}`;
+  return `${endpoint.method} ${endpoint.path} ${who}`;
+}
+
+function textParams(request: Request): Record<string, string> {
+  const entries = Object.entries(request.params);
+  return Object.fromEntries(entries.map(([name, value]) => [name, Array.isArray(value) ? value.join('/') : value]));
+}
+
+function readBody(readJson: express.RequestHandler, web: { request: Request; response: Response }): Promise<void> {
+  const { request, response } = web;
+  if (request.is('application/json') === false || request.is('application/json') === null)
+    throw new AppError('unreadable_body', 'Send the body as JSON, with Content-Type: application/json.');
+  return new Promise((resolve, reject) => {
+    readJson(request, response, (error?: unknown) => (error === undefined ? resolve() : reject(error)));
+  });
 }

@@ -16,12 +16,22 @@ export interface UploadedFile {
   readonly temporaryPath: string;
 }
 
+/** Begins and ends what a browser is remembered by. */
+export interface SessionControl {
+  /** Checks e-mail and password of the parsed body; answers the person and begins a session under a new id, or null. */
+  signIn(): Promise<string | null>;
+  /** Begins a session, under a new id, for a person who has just been made. */
+  begin(personId: string): Promise<void>;
+  end(): Promise<void>;
+}
+
 /** What a route knows of its request beyond the parsed input. */
 export interface RequestContext {
   readonly actor: Actor;
   readonly requestId: string;
   readonly ip: string;
-  /** Aborted when the client goes away. */
+  /** Aborted when the client goes away, or when the time for the answer is over. */
   readonly signal: AbortSignal;
   readonly uploads: readonly UploadedFile[];
+  readonly session: SessionControl;
 }

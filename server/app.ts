@@ -1,0 +1,70 @@
+/** The web side, wired: here alone the parts of the server meet. */
+import compression from 'compression';
+import express, { type Express, Router } from 'express';
+import type { Deps } from './deps.ts';
+import { sessionStands } from './features/accounts/account-store.ts';
+import { checkPassword } from './features/accounts/check-password.ts';
+import { makeDummyHash } from './features/accounts/password-hash.ts';
+import { accountsRoutes } from './features/accounts/routes.ts';
+import { startBrief } from './features/briefs/start-brief.ts';
+import { queueRuns } from './features/runs/queue-runs.ts';
+import { runsRoutes } from './features/runs/routes.ts';
+import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
+import { makeTeam } from './features/teams/make-team.ts';
+import { findRoles } from './features/teams/team-read-model.ts';
+import { weatherRoutes } from './features/weather/routes.ts';
+import { authentication, type PeopleLookup } from './http/authenticate.ts';
+import { builtClient } from './http/built-client.ts';
+import { errorHandler, nothingHere } from './http/errors.ts';
+import { health } from './http/health.ts';
+import { originGuard } from './http/origin-guard.ts';
+import { beginRequest } from './http/request-state.ts';
+import { securityHeaders } from './http/security-headers.ts';
+import { tilesRouter } from './tiles/tiles-router.ts';
+
+/** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
+const FIRST_PROGRAMME = 'First programme';
+
+/** @param options.closing aborted when the server closes, so that open event streams end */
+export function createApp(deps: Deps, options: { closing?: AbortSignal } = {}): Express {
+  const app = express();
+  app.disable('x-powered-by');
+  app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
+  app.set('query parser', 'simple');
+  app.use(beginRequest(options.closing ?? new AbortController().signal), securityHeaders(), compression());
+
+  // What stands outside the declarations: health, base map, built client (page, code, fonts). Nothing else does.
+  app.get('/api/health', health(deps.db));
+  app.use(tilesRouter(deps.basemapPath));
+  if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
+
+  app.use('/api', originGuard, ...authentication(deps, peopleLookup(deps)));
+  app.use(declaredRoutes(deps));
+  app.use(nothingHere);
+  app.use(errorHandler(deps.log));
+  return app;
+}
+
+/** Every endpoint of src/contract/endpoints.ts, by feature. */
+function declaredRoutes(deps: Deps): Router {
+  const router = Router();
+  accountsRoutes(router, deps, {
+    makeFirstTeam: (transaction, team) =>
+      makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
+  });
+  weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
+  runsRoutes(router, deps);
+  return router;
+}
+
+function peopleLookup({ db, now }: Deps): PeopleLookup {
+  let dummyHash: Promise<string> | null = null;
+  return {
+    checkPassword: (given) => {
+      dummyHash ??= makeDummyHash();
+      return checkPassword({ db, dummyHash }, given);
+    },
+    findRoles: (personId) => findRoles(db, personId),
+    sessionStands: (id) => sessionStands(db, { id, at: now() }),
+  };
+}

@@ -1,0 +1,93 @@
+import net from 'node:net';
+import * as z from 'zod/mini';
+
+/** The whole environment that the program looks at, read once. */
+export interface Config {
+  /** MUSLIN_HOME as it was given; null: the default. */
+  readonly home: string | null;
+  readonly host: string;
+  /** 0: any free port. */
+  readonly port: number;
+  readonly seed: 'none' | 'demo';
+  readonly trustProxy: string;
+}
+
+/** Says every fault of the environment at once. */
+export class ConfigError extends Error {
+  override readonly name = 'ConfigError';
+}
+
+const PROXY_NAMES = ['none', 'loopback', 'linklocal', 'uniquelocal'];
+
+const Environment = z.object({
+  MUSLIN_HOME: z.optional(z.string()),
+  PORT: z._default(z.string().check(z.refine(isPort, 'must be a whole number from 0 to 65535')), '3000'),
+  HOST: z._default(
+    z.string().check(z.refine(isHost, 'must be an address of this machine or a host name')),
+    '127.0.0.1',
+  ),
+  SEED: z.optional(z.enum(['none', 'demo'], 'must be "none" or "demo"')),
+  TRUST_PROXY: z._default(
+    z
+      .string()
+      .check(
+        z.refine(
+          isProxyList,
+          'must be a list, parted by commas, of addresses or ranges such as 10.0.0.0/8, loopback, linklocal or uniquelocal; or none',
+        ),
+      ),
+    'loopback',
+  ),
+});
+
+/** @throws ConfigError that names every variable that is not what it should be */
+export function readConfig(environment: Readonly<Record<string, string | undefined>>): Config {
+  const read = Environment.safeParse(onlyGiven(environment));
+  if (!read.success) {
+    const faults = read.error.issues.map(({ path, message }) => {
+      const name = String(path[0]);
+      return `${name}=${JSON.stringify(environment[name])}: ${message}.`;
+    });
+    throw new ConfigError(faults.join('\n'));
+  }
+  const { MUSLIN_HOME, PORT, HOST, SEED, TRUST_PROXY } = read.data;
+  return {
+    home: MUSLIN_HOME ?? null,
+    host: HOST,
+    port: Number(PORT),
+    // Invented places with known accounts are no guests for a network, unless somebody asks for them.
+    seed: SEED ?? (isLoopback(HOST) ? 'demo' : 'none'),
+    trustProxy: TRUST_PROXY,
+  };
+}
+
+export function isLoopback(host: string): boolean {
+  return host === 'localhost' || host === '::1' || (net.isIPv4(host) && host.startsWith('127.'));
+}
+
+/** A variable that is set to nothing counts as not set. */
+function onlyGiven(environment: Readonly<Record<string, string | undefined>>): Record<string, string> {
+  const entries = Object.keys(Environment.shape).map((name) => [name, environment[name]?.trim() ?? ''] as const);
+  return Object.fromEntries(entries.filter(([, value]) => value !== ''));
+}
+
+function isPort(text: string): boolean {
+  return /^\d{1,5}$/.test(text) && Number(text) <= 65_535;
+}
+
+function isHost(text: string): boolean {
+  return net.isIP(text) !== 0 || /^[a-z0-9]([a-z0-9.-]{0,252})$/i.test(text);
+}
+
+function isProxyList(text: string): boolean {
+  const items = text.split(',').map((item) => item.trim());
+  if (items.length > 1 && items.includes('none')) return false;
+  return items.every((item) => PROXY_NAMES.includes(item) || isAddressRange(item));
+}
+
+function isAddressRange(item: string): boolean {
+  const [address = '', bits, ...rest] = item.split('/');
+  const version = net.isIP(address);
+  if (version === 0 || rest.length > 0) return false;
+  return bits === undefined || (/^\d{1,3}$/.test(bits) && Number(bits) <= (version === 4 ? 32 : 128));
+}

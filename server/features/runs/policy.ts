@@ -1,0 +1,5 @@
+import { everyRole, memberOf, type Policy } from '../../http/policy.ts';
+
+export const runsPolicy = {
+  'runs.view': memberOf(everyRole),
+} satisfies Record<string, Policy>;

@@ -1,0 +1,6 @@
+import type { Request } from 'express';
+
+/** A request of a program with a token, not of a browser with a session. */
+export function isBearer(request: Request): boolean {
+  return /^bearer(\s|$)/i.test(request.get('authorization') ?? '');
+}
