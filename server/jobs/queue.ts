@@ -24,3 +24,17 @@ export async function addJob<N extends JobName>(
     [job.task, JSON.stringify(job.payload), job.jobKey, MAX_ATTEMPTS],
   );
 }
+
+const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] } = {
+  'read-weather-file': ['teamId', 'fileId'],
+  'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
+};
+
+/** The payload of a job out of the queue. @throws TypeError when it is not one that `addJob` writes */
+export function payloadOf<N extends JobName>(task: N, payload: unknown): JobPayloads[N] {
+  const found: Record<PropertyKey, unknown> = { ...(typeof payload === 'object' ? payload : null) };
+  for (const key of payloadKeys[task]) {
+    if (typeof found[key] !== 'string') throw new TypeError(`the job ${task} has no ${String(key)}`);
+  }
+  return payload as JobPayloads[N];
+}

@@ -4,7 +4,7 @@ import { Logger, type Runner, run, type TaskList, type WorkerEvents } from 'grap
 import type { Knex } from 'knex';
 import pg from 'pg';
 import type { ListenerLog } from './listener.ts';
-import type { JobName, JobPayloads } from './queue.ts';
+import { type JobName, type JobPayloads, payloadOf } from './queue.ts';
 import { type Repeated, repeat } from './repeat.ts';
 import { beat, forgetPool, releaseSilentPools } from './worker-pool-store.ts';
 
@@ -133,8 +133,8 @@ async function startRun(options: { db: Knex; databaseUrl: string; tasks: JobTask
 
 function taskList(tasks: JobTasks): TaskList {
   return {
-    'read-weather-file': (payload: JobPayloads['read-weather-file']) => tasks['read-weather-file'].run(payload),
-    'judge-year': (payload: JobPayloads['judge-year']) => tasks['judge-year'].run(payload),
+    'read-weather-file': (payload) => tasks['read-weather-file'].run(payloadOf('read-weather-file', payload)),
+    'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
   };
 }
 
@@ -146,10 +146,9 @@ async function bury(
   try {
     switch (job.task_identifier) {
       case 'read-weather-file':
-        // Payloads are written by addJob alone, which takes none of another shape.
-        return await tasks['read-weather-file'].dead(job.payload as JobPayloads['read-weather-file']);
+        return await tasks['read-weather-file'].dead(payloadOf('read-weather-file', job.payload));
       case 'judge-year':
-        return await tasks['judge-year'].dead(job.payload as JobPayloads['judge-year']);
+        return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

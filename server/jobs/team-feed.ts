@@ -17,7 +17,7 @@ const CHANNEL = 'team_events';
 
 /** Tells the team when, and only if, the caller's transaction commits. */
 export async function notifyTeam(db: Knex, notice: { teamId: string; event: TeamEvent }): Promise<void> {
-  await db.raw('select pg_notify(?, ?)', [CHANNEL, JSON.stringify(notice)]);
+  await db.raw('select pg_notify(?, ?)', [CHANNEL, JSON.stringify({ ...notice, teamId: notice.teamId.toLowerCase() })]);
 }
 
 /** The feed of one web process. Answers when it listens, or after the first try failed (it goes on trying). */
@@ -44,7 +44,7 @@ export async function openTeamFeed(options: { databaseUrl: string; log: Listener
   return {
     watch(teamId, signal) {
       const queue = createEventQueue<TeamEvent>({ signal, onEnd: () => watchers.delete(watcher) });
-      const watcher = { teamId, queue };
+      const watcher = { teamId: teamId.toLowerCase(), queue };
       watchers.add(watcher);
       if (closed || signal.aborted) queue.end();
       return queue;

@@ -136,17 +136,6 @@ export async function setReadingResult(
   );
 }
 
-/** Writes on the file why its background work stopped for good. */
-export async function setFailure(
-  db: Knex,
-  failure: { teamId: string; fileId: string; message: string },
-): Promise<void> {
-  await db.raw(
-    'update weather_files set step = null, failure = :message where team_id = :teamId and id = :fileId',
-    failure,
-  );
-}
-
 export async function setAccepted(
   transaction: Knex.Transaction,
   acceptance: { teamId: string; fileId: string; stationId: string; personId: string; at: Date },

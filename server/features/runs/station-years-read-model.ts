@@ -1,0 +1,69 @@
+import type { Knex } from 'knex';
+import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
+import type { YearKind } from '#engine/reduction/weather-year.ts';
+import type { RunFigures } from './run-key.ts';
+
+/** An accepted weather year of a station, with its run under the brief version asked for where there is one. */
+export interface StationYear {
+  readonly stationId: string;
+  readonly stationName: string;
+  readonly latitude: number;
+  readonly longitude: number;
+  readonly elevationM: number;
+  readonly zone: string;
+  readonly weatherYearId: string;
+  readonly weatherFileId: string;
+  readonly kind: YearKind;
+  readonly year: number | null;
+  readonly hours: number;
+  /** Hours whose dry bulb and humidity are both as the source measured them. */
+  readonly measured: number;
+  readonly provenanceUniform: boolean;
+  /** Why background work on the file stopped for a fault of ours. */
+  readonly failure: string | null;
+  readonly runId: string | null;
+  readonly clock: ResolvedClock | null;
+  readonly figures: StoredFigures | null;
+}
+
+/** A run's figures without its tables by month and hour, which no screen of places needs. */
+export type StoredFigures = Omit<RunFigures, TableOfRun>;
+type TableOfRun = 'demandByMonthHour' | 'metByMonthHour' | 'supplyCurve' | 'aloneHours';
+
+/**
+ * Every accepted year of the team's stations, or of one, by station name and year; one query for a whole map. Of several
+ * runs of one year under the version (the station's zone was corrected since) the newest counts.
+ */
+export async function listStationYears(
+  db: Knex,
+  asked: { teamId: string; briefVersionId: string; methodVersion: string; stationId?: string },
+): Promise<readonly StationYear[]> {
+  const oneStation = asked.stationId === undefined ? '' : 'and stations.id = :stationId';
+  const { rows } = await db.raw<{ rows: StationYear[] }>(
+    `select stations.id as "stationId", stations.name as "stationName", stations.latitude, stations.longitude,
+       stations.elevation_m as "elevationM", stations.zone,
+       weather_years.id as "weatherYearId", weather_files.id as "weatherFileId", weather_years.kind, weather_years.year,
+       weather_years.slots as hours, (weather_years.facts ->> 'measured')::integer as measured,
+       exists (
+         select 1 from findings
+         where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'
+       ) as "provenanceUniform",
+       weather_files.failure, newest.id as "runId", newest.clock, newest.figures
+     from stations
+     join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
+     join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
+     left join lateral (
+       select runs.id, runs.clock,
+         runs.result - array['demandByMonthHour', 'metByMonthHour', 'supplyCurve', 'aloneHours'] as figures
+       from runs
+       where runs.weather_year_id = weather_years.id and runs.brief_version_id = :briefVersionId
+         and runs.method_version = :methodVersion
+       order by runs.made_at desc, runs.id
+       limit 1
+     ) as newest on true
+     where stations.team_id = :teamId ${oneStation}
+     order by stations.name, stations.id, weather_years.year nulls first, weather_years.created_at`,
+    asked,
+  );
+  return rows;
+}

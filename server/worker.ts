@@ -1,0 +1,65 @@
+import { connect } from './db/connection.ts';
+import { judgeStoredYear } from './features/runs/judge-year.ts';
+import { queueMissingRuns } from './features/runs/queue-runs.ts';
+import {
+  clearJudgingFailure,
+  noteJudgingFailure,
+  noteReadingFailure,
+  noteStrandedFiles,
+} from './features/weather/note-failure.ts';
+import { readStoredFile } from './features/weather/read-stored-file.ts';
+import { repeat } from './jobs/repeat.ts';
+import { runJobs } from './jobs/run-jobs.ts';
+import type { Log } from './log.ts';
+import type { OriginalStore } from './storage/original-store.ts';
+
+export interface WorkerOptions {
+  readonly databaseUrl: string;
+  readonly storage: OriginalStore;
+  readonly log: Log;
+}
+
+const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
+
+/** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
+export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
+  const { databaseUrl, storage, log } = options;
+  const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
+  try {
+    await queueMissingRuns(db);
+    const jobs = await runJobs({
+      db,
+      databaseUrl,
+      log,
+      tasks: {
+        'read-weather-file': {
+          run: (file) => readStoredFile({ db, storage }, file),
+          dead: (file) => noteReadingFailure(db, file),
+        },
+        'judge-year': {
+          run: async (year) => {
+            await judgeStoredYear(db, year);
+            await clearJudgingFailure(db, year);
+          },
+          dead: (year) => noteJudgingFailure(db, year),
+        },
+      },
+    });
+    const looking = repeat({
+      everyMs: LOOK_FOR_STRANDED_EVERY_MS,
+      what: 'looking for files whose reading was given up',
+      log,
+      work: () => noteStrandedFiles(db),
+    });
+    return {
+      async close() {
+        await looking.stop();
+        await jobs.close();
+        await db.destroy();
+      },
+    };
+  } catch (error) {
+    await db.destroy();
+    throw error;
+  }
+}

@@ -1,0 +1,155 @@
+import { randomUUID } from 'node:crypto';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { inTransaction } from '../../../server/db/in-transaction.ts';
+import { addJob, type JobPayloads, MAX_ATTEMPTS } from '../../../server/jobs/queue.ts';
+import { type JobTasks, runJobs } from '../../../server/jobs/run-jobs.ts';
+import { beat, releaseSilentPools } from '../../../server/jobs/worker-pool-store.ts';
+import { eventually } from '../../support/eventually.ts';
+import { type KeptLog, keepLog } from '../../support/quiet-log.ts';
+import { makeTestDatabase, type TestDatabase } from '../../support/test-database.ts';
+
+type Reading = JobPayloads['read-weather-file'];
+
+let database: TestDatabase;
+let log: KeptLog;
+let worker: { close(): Promise<void> } | null = null;
+
+beforeAll(async () => {
+  database = await makeTestDatabase();
+});
+beforeEach(() => {
+  log = keepLog();
+});
+afterEach(async () => {
+  await worker?.close();
+  worker = null;
+  await database.db.raw('select graphile_worker.complete_jobs(array(select jobs.id from graphile_worker.jobs))');
+});
+afterAll(async () => {
+  await database.drop();
+});
+
+async function startWith(reading: {
+  run: (payload: Reading) => Promise<void>;
+  dead?: (payload: Reading) => Promise<void>;
+}) {
+  const nothing = async (): Promise<void> => undefined;
+  const tasks: JobTasks = {
+    'read-weather-file': { dead: nothing, ...reading },
+    'judge-year': { run: nothing, dead: nothing },
+  };
+  worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
+}
+
+const newReading = (): Reading => ({ teamId: randomUUID(), fileId: randomUUID() });
+
+const addReading = (payload: Reading) =>
+  inTransaction(database.db, (transaction) =>
+    addJob(transaction, { task: 'read-weather-file', payload, jobKey: payload.fileId }),
+  );
+
+/** A job of our key as the queue has it. */
+async function jobOf(payload: Reading) {
+  const { rows } = await database.db.raw<{ rows: { attempts: number; lockedBy: string | null }[] }>(
+    `select jobs.attempts, jobs.locked_by as "lockedBy" from graphile_worker.jobs where jobs.key = ?`,
+    [payload.fileId],
+  );
+  return rows[0] ?? null;
+}
+
+/** Skips the waits between tries. */
+const dueNow = () => database.ownerDb.raw('update graphile_worker._private_jobs set run_at = now()');
+
+describe('the job worker', () => {
+  it('does a job once its transaction has committed, and not when it was taken back', async () => {
+    const done: Reading[] = [];
+    await startWith({ run: async (payload) => void done.push(payload) });
+    const [kept, takenBack] = [newReading(), newReading()];
+    const lost = inTransaction(database.db, async (transaction) => {
+      await addJob(transaction, { task: 'read-weather-file', payload: takenBack, jobKey: takenBack.fileId });
+      throw new Error('taken back');
+    });
+    await expect(lost).rejects.toThrow('taken back');
+    await addReading(kept);
+    await eventually('the job', async () => done.length > 0);
+    expect(done).toEqual([kept]);
+    expect(await eventually('an empty queue', async () => (await jobOf(kept)) === null)).toBe(true);
+    expect(log.errors).toEqual([]);
+  });
+
+  it('tries a job again that failed', async () => {
+    let tries = 0;
+    await startWith({
+      run: async () => {
+        tries += 1;
+        if (tries === 1) throw new Error('the disk is full');
+      },
+    });
+    const payload = newReading();
+    await addReading(payload);
+    await eventually('the failed try', async () => tries === 1 && (await jobOf(payload))?.lockedBy === null);
+    await dueNow();
+    await eventually('the second try', async () => tries === 2 && (await jobOf(payload)) === null);
+    expect(log.errors.map(({ message }) => message).join()).toContain('the disk is full');
+  });
+
+  it('gives a job up after its last try, says so once, and begins anew when it is added again', async () => {
+    let tries = 0;
+    const buried: Reading[] = [];
+    await startWith({
+      run: async () => {
+        tries += 1;
+        if (tries <= MAX_ATTEMPTS) throw new Error('always');
+      },
+      dead: async (payload) => void buried.push(payload),
+    });
+    const payload = newReading();
+    await addReading(payload);
+    for (let number = 1; number <= MAX_ATTEMPTS; number++) {
+      await eventually(`try ${number}`, async () => tries === number && (await jobOf(payload))?.lockedBy === null);
+      await dueNow();
+    }
+    await eventually('the burial', async () => buried.length > 0);
+    expect(buried).toEqual([payload]);
+    await addReading(payload);
+    await eventually('the fresh try', async () => tries === MAX_ATTEMPTS + 1);
+  });
+
+  it('waits for the job at hand when it is closed', async () => {
+    let begun = false;
+    let ended = false;
+    await startWith({
+      run: async () => {
+        begun = true;
+        await new Promise((resolve) => setTimeout(resolve, 400));
+        ended = true;
+      },
+    });
+    await addReading(newReading());
+    await eventually('the job to begin', async () => begun);
+    await worker?.close();
+    worker = null;
+    expect(ended).toBe(true);
+    const { rows } = await database.db.raw<{ rows: unknown[] }>('select 1 from worker_pools');
+    expect(rows).toEqual([]);
+  });
+
+  it('gives back the jobs of a pool that fell silent, and of none that lives', async () => {
+    const [dead, alive] = [newReading(), newReading()];
+    await addReading(dead);
+    await addReading(alive);
+    await beat(database.db, 'silent pool');
+    await beat(database.db, 'living pool');
+    const lock = `update graphile_worker._private_jobs set locked_by = ?, locked_at = now() - interval '2 minutes' where key = ?`;
+    await database.ownerDb.raw(lock, ['silent pool', dead.fileId]);
+    await database.ownerDb.raw(lock, ['living pool', alive.fileId]);
+    await database.db.raw(`update worker_pools set seen_at = now() - interval '61 seconds' where id = 'silent pool'`);
+    expect(await releaseSilentPools(database.db, 60_000)).toEqual(['silent pool']);
+    expect((await jobOf(dead))?.lockedBy).toBeNull();
+    expect((await jobOf(alive))?.lockedBy).toBe('living pool');
+    expect(await releaseSilentPools(database.db, 60_000)).toEqual([]);
+    await database.ownerDb.raw(lock, ['pool that died before its first beat', dead.fileId]);
+    expect(await releaseSilentPools(database.db, 60_000)).toEqual(['pool that died before its first beat']);
+    await database.db.raw('delete from worker_pools');
+  });
+});
