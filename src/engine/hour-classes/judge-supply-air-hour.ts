@@ -7,7 +7,7 @@ import { hundredths } from '../conventions.ts';
 import { airPath } from '../stages/air.ts';
 import type { StagePath, SupplyStage, SupplyState } from '../stages/stage-path.ts';
 import { capsHold } from './caps.ts';
-import type { DemandHour, HourJudgement } from './demand-hour.ts';
+import type { DemandClass, DemandHour, HourJudgement } from './demand-hour.ts';
 import { permittedPaths } from './permitted-paths.ts';
 
 /** Least useful cooling: `short` lowers the supply by at least this, K. */
@@ -26,25 +26,40 @@ export function judgeSupplyAirHour(hour: DemandHour, brief: Brief): HourJudgemen
   const air = airPath(hour.outdoor, brief);
   const airSupply = air.at(0);
   const frozen = hundredths(hour.outdoor.dryBulbC) <= hundredths(brief.freezeLockoutC);
-  const dampOutside = !frozen && !holds({ ...airSupply, tempC: hour.supplyAimC }, hour, brief);
-  const airMeets = !dampOutside && reaches(airSupply.tempC, hour) && holds(airSupply, hour, brief);
-  const base = { airMeets, airSupplyC: airSupply.tempC };
-  if (airMeets) {
-    const hourClass = frozen ? 'frozen' : 'air';
-    const aloneMet = ['air', ...airStages(brief)] as const;
-    return { ...base, ...MET, hourClass, running: 'air', supply: airSupply, aloneMet };
+  const dampOutside = !frozen && !holds(hour.supplyAimC, airSupply.humidityRatio, { hour, brief });
+  if (!dampOutside && meets(airSupply, hour, brief)) {
+    const onAir = { stage: air.stage, supply: airSupply };
+    return metHour({ hourClass: frozen ? 'frozen' : 'air', first: onAir, airSupply, aloneMet: stagesWithAir(brief) });
   }
   const paths = frozen ? [] : permittedPaths(hour, brief, airSupply.tempC);
   const meeting = dampOutside ? [] : paths.flatMap((path) => meetingSupply(path, hour, brief) ?? []);
-  const aloneMet = meeting.map((each) => each.stage);
   const first = meeting[0];
   if (first !== undefined) {
-    return { ...base, ...MET, hourClass: first.stage, running: first.stage, supply: first.supply, aloneMet };
+    return metHour({ hourClass: first.stage, first, airSupply, aloneMet: meeting.map(({ stage }) => stage) });
   }
-  return { ...base, aloneMet, ...unmetHour({ hour, brief, frozen, dampOutside, air, paths }) };
+  return unmetHour({ hour, brief, frozen, dampOutside, air, paths });
 }
 
-const MET = { met: true, dampBy: null, shortfallK: 0, uncappedShortfallK: 0 } as const;
+function metHour(input: {
+  hourClass: DemandClass;
+  first: StageSupply;
+  airSupply: SupplyState;
+  aloneMet: readonly SupplyStage[];
+}): HourJudgement {
+  const { hourClass, first, airSupply, aloneMet } = input;
+  return {
+    hourClass,
+    met: true,
+    dampBy: null,
+    shortfallK: 0,
+    uncappedShortfallK: 0,
+    airMeets: first.stage === 'air',
+    airSupplyC: airSupply.tempC,
+    running: first.stage,
+    supply: first.supply,
+    aloneMet,
+  };
+}
 
 interface UnmetInput {
   readonly hour: DemandHour;
@@ -56,47 +71,62 @@ interface UnmetInput {
 }
 
 /** `damp`, `short` or `beyond` (or `frozen`), with the shortfall from T*, the lowest supply within the caps. */
-function unmetHour(input: UnmetInput): Omit<HourJudgement, 'airMeets' | 'airSupplyC' | 'aloneMet'> {
+function unmetHour(input: UnmetInput): HourJudgement {
   const { hour, brief, air, paths } = input;
   const airSupply = air.at(0);
   const all = [air, ...paths];
   const lowest = lowestWithinCaps(all, hour, brief);
   const lowestUncappedC = Math.min(...all.map((path) => path.at(1).tempC));
-  const shortfalls = {
+  const hourClass = unmetClass(input, lowest);
+  const runs = hourClass === 'short' && lowest !== null ? lowest : { stage: air.stage, supply: airSupply };
+  return {
+    hourClass,
     met: false,
+    dampBy: hourClass === 'damp' ? (input.dampOutside ? 'outside' : 'plant') : null,
     shortfallK: Math.max(0, (lowest?.supply ?? airSupply).tempC - hour.supplyAimC),
     uncappedShortfallK: Math.max(0, lowestUncappedC - hour.supplyAimC),
+    airMeets: false,
+    airSupplyC: airSupply.tempC,
+    running: runs.stage,
+    supply: runs.supply,
+    aloneMet: [],
   };
-  const onAir = { ...shortfalls, running: 'air', supply: airSupply } as const;
-  if (input.frozen) return { ...onAir, hourClass: 'frozen', dampBy: null };
-  if (input.dampOutside) return { ...onAir, hourClass: 'damp', dampBy: 'outside' };
-  if (paths.some((path) => reaches(path.at(1).tempC, hour))) return { ...onAir, hourClass: 'damp', dampBy: 'plant' };
-  const gained = lowest === null ? 0 : hundredths(airSupply.tempC) - hundredths(lowest.supply.tempC);
-  if (lowest === null || gained < hundredths(SHORT_FROM_K)) return { ...onAir, hourClass: 'beyond', dampBy: null };
-  return { ...shortfalls, hourClass: 'short', dampBy: null, running: lowest.stage, supply: lowest.supply };
 }
 
-/** The brief's stages that are streams of supply air. */
-function airStages(brief: Brief): SupplyStage[] {
-  return brief.stages.flatMap((stage) => (stage === 'tower' ? [] : [stage]));
+function unmetClass(input: UnmetInput, lowest: StageSupply | null): DemandClass {
+  const { hour, frozen, dampOutside, air, paths } = input;
+  if (frozen) return 'frozen';
+  if (dampOutside || paths.some((path) => reaches(path.at(1).tempC, hour))) return 'damp';
+  const gained = lowest === null ? 0 : hundredths(air.at(0).tempC) - hundredths(lowest.supply.tempC);
+  return gained >= hundredths(SHORT_FROM_K) ? 'short' : 'beyond';
+}
+
+/** Where outdoor air meets the hour, so does every plant, run dry. */
+function stagesWithAir(brief: Brief): SupplyStage[] {
+  const stages: SupplyStage[] = ['air'];
+  for (const stage of brief.stages) if (stage !== 'tower') stages.push(stage);
+  return stages;
 }
 
 function reaches(supplyC: number, hour: DemandHour): boolean {
   return hundredths(supplyC) <= hundredths(hour.supplyAimC);
 }
 
-function holds(supply: SupplyState, hour: DemandHour, brief: Brief): boolean {
-  const { supplyAimC } = hour;
-  const { tempC, humidityRatio } = supply;
-  const roomRiseK = hour.setC - supplyAimC;
-  return capsHold({ tempC, humidityRatio, pressurePa: hour.outdoor.pressurePa, supplyAimC, roomRiseK }, brief);
+function holds(tempC: number, humidityRatio: number, { hour, brief }: { hour: DemandHour; brief: Brief }): boolean {
+  const { setC, supplyAimC } = hour;
+  const { pressurePa } = hour.outdoor;
+  return capsHold({ tempC, humidityRatio, pressurePa, supplyAimC, roomRiseK: setC - supplyAimC }, brief);
+}
+
+function meets(supply: SupplyState, hour: DemandHour, brief: Brief): boolean {
+  return reaches(supply.tempC, hour) && holds(supply.tempC, supply.humidityRatio, { hour, brief });
 }
 
 /** The supply with which a stage meets the hour: modulating, the x that just reaches t_sup; on-off, x = 1. */
 function meetingSupply(path: StagePath, hour: DemandHour, brief: Brief): StageSupply | null {
   if (!reaches(path.at(1).tempC, hour)) return null;
   const supply = path.at(brief.control === 'on-off' ? 1 : path.shareFor(hour.supplyAimC));
-  return holds(supply, hour, brief) ? { stage: path.stage, supply } : null;
+  return meets(supply, hour, brief) ? { stage: path.stage, supply } : null;
 }
 
 /** T* with its stage: the lowest supply over x in 0..1 (on-off: x = 1) at which the caps hold; null without any. */
@@ -114,14 +144,15 @@ function lowestWithinCaps(paths: readonly StagePath[], hour: DemandHour, brief: 
 /** More wetting is never drier and never warmer, so the shares within the caps begin at 0 and end at one place. */
 function lowestOfPath(path: StagePath, hour: DemandHour, brief: Brief): SupplyState | null {
   const full = path.at(1);
-  if (holds(full, hour, brief)) return full;
-  if (brief.control === 'on-off' || !holds(path.at(0), hour, brief)) return null;
-  let within = 0;
+  const within = (supply: SupplyState): boolean => holds(supply.tempC, supply.humidityRatio, { hour, brief });
+  if (within(full)) return full;
+  if (brief.control === 'on-off' || !within(path.at(0))) return null;
+  let wettest = 0;
   let over = 1;
-  while (over - within > SHARE_TOLERANCE) {
-    const middle = (within + over) / 2;
-    if (holds(path.at(middle), hour, brief)) within = middle;
+  while (over - wettest > SHARE_TOLERANCE) {
+    const middle = (wettest + over) / 2;
+    if (within(path.at(middle))) wettest = middle;
     else over = middle;
   }
-  return path.at(within);
+  return path.at(wettest);
 }

@@ -21,7 +21,9 @@ export function permittedPaths(hour: DemandHour, brief: Brief, airSupplyC: numbe
   if (brief.startRoomTempC !== null && hundredths(roomByAirC) < hundredths(brief.startRoomTempC)) return [];
   if (brief.maxOutdoorRhPct !== null && hundredths(outdoorRhPct(outdoor)) > hundredths(brief.maxOutdoorRhPct))
     return [];
-  const wet = { ...outdoor, wetBulbC: wetBulbC(outdoor.dryBulbC, outdoor.humidityRatio, outdoor.pressurePa) };
+  const { dryBulbC, humidityRatio, pressurePa, volumeM3PerKg } = outdoor;
+  const outdoorWetBulbC = wetBulbC(dryBulbC, humidityRatio, pressurePa);
+  const wet = { dryBulbC, humidityRatio, pressurePa, volumeM3PerKg, wetBulbC: outdoorWetBulbC };
   if (hundredths(wet.dryBulbC) - hundredths(wet.wetBulbC) < hundredths(brief.cutInDepressionK)) return [];
   return brief.stages.map((stage) => pathOf(stage, wet, brief));
 }

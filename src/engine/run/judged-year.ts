@@ -76,9 +76,10 @@ function demandHour(
 ): DemandHour {
   const { setC, brief } = input;
   const loadFraction = input.loadFraction(outdoor.dryBulbC);
-  const volume = volumeM3PerKg(outdoor.dryBulbC, outdoor.humidityRatio, outdoor.pressurePa);
+  const { dryBulbC, humidityRatio, pressurePa } = outdoor;
+  const volume = volumeM3PerKg(dryBulbC, humidityRatio, pressurePa);
   return {
-    outdoor: { ...outdoor, volumeM3PerKg: volume },
+    outdoor: { dryBulbC, humidityRatio, pressurePa, volumeM3PerKg: volume },
     setC,
     supplyAimC: setC - brief.dTroomK * loadFraction,
     loadFraction,
