@@ -18,6 +18,7 @@ export const SUPERUSER = 'muslin_superuser';
 const START_TRIES = 12;
 const START_PAUSE_MS = 500;
 const RUNNING_LIMIT_MS = 60_000;
+const WATCH_EVERY_MS = 2_000;
 
 export interface ClusterOptions {
   readonly homeDir: string;
@@ -28,6 +29,7 @@ export interface ClusterOptions {
 
 export interface StartedCluster {
   readonly port: number;
+  /** Where its files are: see `cluster-folder.ts`. */
   readonly folder: string;
   /** False when it was running already. */
   readonly startedNow: boolean;
@@ -72,14 +74,14 @@ function writeForServer(place: Place, file: string, text: string): void {
  * Looks at the process itself: `pg_ctl status` calls a killed server "running" while nobody has collected the dead process,
  * and its stale lock file would block the next start, so that file is removed here.
  */
-function isRunning(place: Place): boolean {
-  const lockFile = path.join(place.dataDir, 'postmaster.pid');
+function serverRuns(dataDir: string): boolean {
+  const lockFile = path.join(dataDir, 'postmaster.pid');
   if (!existsSync(lockFile)) return false;
   const pid = readFileSync(lockFile, 'utf8').split('\n')[0]?.trim() ?? '';
   try {
     const state = readFileSync(`/proc/${pid}/stat`, 'utf8').replace(/^.*\) /s, '')[0];
     const words = readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0');
-    if (state !== 'Z' && state !== 'X' && words.includes(place.dataDir)) return true;
+    if (state !== 'Z' && state !== 'X' && words.includes(dataDir)) return true;
   } catch {
     // no such process
   }
@@ -147,7 +149,7 @@ async function startServer(place: Place, throwaway: boolean): Promise<number> {
  */
 async function runningPort(place: Place): Promise<number | null> {
   const until = Date.now() + RUNNING_LIMIT_MS;
-  while (isRunning(place)) {
+  while (serverRuns(place.dataDir)) {
     const port = keptPort(place);
     if (port !== null && (await answersOn(port))) return port;
     if (Date.now() > until) throw new CouldNotRun(`The PostgreSQL server in ${place.folder} runs but does not answer.`);
@@ -169,9 +171,10 @@ export async function startCluster(options: ClusterOptions): Promise<StartedClus
 /** Stops the cluster of a home; nothing happens when it is down. */
 export async function stopCluster(homeDir: string): Promise<void> {
   const place = placeOf(homeDir);
-  if (!isRunning(place)) return;
+  if (!serverRuns(place.dataDir)) return;
   const stopped = await program(place, 'pg_ctl', ['-D', place.dataDir, '-m', 'fast', '-w', '-t', '60', 'stop']);
-  if (stopped.code !== 0 && isRunning(place)) throw new CouldNotRun(`PostgreSQL did not stop:\n${stopped.output}`);
+  if (stopped.code !== 0 && serverRuns(place.dataDir))
+    throw new CouldNotRun(`PostgreSQL did not stop:\n${stopped.output}`);
 }
 
 export type ClusterStatus = { readonly state: 'stopped' } | { readonly state: 'running'; readonly port: number };
@@ -179,5 +182,32 @@ export type ClusterStatus = { readonly state: 'stopped' } | { readonly state: 'r
 export function clusterStatus(homeDir: string): ClusterStatus {
   const place = placeOf(homeDir);
   const port = keptPort(place);
-  return port !== null && isRunning(place) ? { state: 'running', port } : { state: 'stopped' };
+  return port !== null && serverRuns(place.dataDir) ? { state: 'running', port } : { state: 'stopped' };
+}
+
+/** Starts the cluster again whenever its server is gone without our doing; nobody else would. */
+export function keepClusterRunning(
+  cluster: StartedCluster,
+  options: ClusterOptions & { readonly onTrouble: (words: string) => void },
+): { stop(): Promise<void> } {
+  let work: Promise<void> | null = null;
+  const look = async () => {
+    if (serverRuns(path.join(cluster.folder, 'data'))) return;
+    options.onTrouble('PostgreSQL is gone; starting it again');
+    const { port } = await startCluster(options);
+    if (port !== cluster.port) options.onTrouble(`Port ${cluster.port} was taken meanwhile: start Muslin anew`);
+  };
+  const timer = setInterval(() => {
+    work ??= look()
+      .catch((error: unknown) => options.onTrouble(error instanceof Error ? error.message : String(error)))
+      .finally(() => {
+        work = null;
+      });
+  }, WATCH_EVERY_MS);
+  return {
+    stop: async () => {
+      clearInterval(timer);
+      await work;
+    },
+  };
 }

@@ -1,10 +1,16 @@
 import net from 'node:net';
 
-/** True when nothing listens on this port of the address. */
+/**
+ * True when nothing listens on this port of the address.
+ * @throws the system's error when nobody could listen there: an address of another machine, a port that needs root
+ */
 export function portIsFree(port: number, address = '127.0.0.1'): Promise<boolean> {
-  return new Promise((resolve) => {
+  return new Promise((resolve, reject) => {
     const probe = net.createServer();
-    probe.once('error', () => resolve(false));
+    probe.once('error', (error: NodeJS.ErrnoException) => {
+      if (error.code === 'EADDRINUSE') resolve(false);
+      else reject(error);
+    });
     probe.listen({ port, host: address, exclusive: true }, () => probe.close(() => resolve(true)));
   });
 }

@@ -45,48 +45,66 @@ function busy(homeDir: string, holder: Holder): CouldNotRun {
   );
 }
 
-/** Takes a lock that a dead process left out of the way; false when someone else has taken its place meanwhile. */
-function removeStale(lockFile: string, staleText: string): boolean {
+/** Takes a lock that a dead process left out of the way, but puts back one that a living process has just taken in its place. */
+function removeStale(lockFile: string, staleText: string): void {
   const aside = `${lockFile}.${process.pid}.stale`;
   try {
     renameSync(lockFile, aside);
-    const same = readText(aside) === staleText;
-    if (!same) linkSync(aside, lockFile);
-    rmSync(aside, { force: true });
-    return same;
+    if (readText(aside) !== staleText) linkSync(aside, lockFile);
   } catch {
-    return false;
+    // someone else was faster; the caller looks again
+  } finally {
+    rmSync(aside, { force: true });
   }
 }
 
+export interface HomeLock {
+  /** Tells others the address once it is known. */
+  nameAddress(address: string): void;
+  giveBack(): void;
+}
+
 /**
- * Takes a home for this process; the answer gives it back.
- * @throws CouldNotRun that says where the other one runs.
+ * Takes a home for this process.
+ * @throws CouldNotRun that says where the other one runs
  */
-export function takeHome({ dir, lockFile, address }: { dir: string; lockFile: string; address: string }): () => void {
-  const own = JSON.stringify({ pid: process.pid, began: beganAt(process.pid) ?? '', address } satisfies Holder);
+export function takeHome({ dir, lockFile, address }: { dir: string; lockFile: string; address: string }): HomeLock {
   const prepared = `${lockFile}.${process.pid}`;
-  writeFileSync(prepared, own, { mode: 0o600 });
+  const began = beganAt(process.pid) ?? '';
+  const prepare = (own: string) => {
+    writeFileSync(prepared, JSON.stringify({ pid: process.pid, began, address: own } satisfies Holder), {
+      mode: 0o600,
+    });
+  };
+  prepare(address);
   try {
-    for (;;) {
+    while (!tryLink(prepared, lockFile)) {
       const found = readText(lockFile);
-      if (found !== null) {
-        const holder = holderOf(found);
-        if (holder !== null) throw busy(dir, holder);
-        removeStale(lockFile, found);
-        continue;
-      }
-      try {
-        linkSync(prepared, lockFile); // fails if someone was faster
-        break;
-      } catch {
-        // look again who it is
-      }
+      const holder = found === null ? null : holderOf(found);
+      if (holder !== null) throw busy(dir, holder);
+      if (found !== null) removeStale(lockFile, found);
     }
   } finally {
     rmSync(prepared, { force: true });
   }
-  return () => {
-    if (readText(lockFile) === own) rmSync(lockFile, { force: true });
+  return {
+    nameAddress: (known) => {
+      prepare(known);
+      renameSync(prepared, lockFile);
+    },
+    giveBack: () => {
+      if (holderOf(readText(lockFile) ?? '')?.pid === process.pid) rmSync(lockFile, { force: true });
+    },
   };
+}
+
+/** False when somebody has the name already. */
+function tryLink(from: string, to: string): boolean {
+  try {
+    linkSync(from, to);
+    return true;
+  } catch (error) {
+    if (error instanceof Error && 'code' in error && error.code === 'EEXIST') return false;
+    throw error;
+  }
 }

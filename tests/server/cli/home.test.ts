@@ -1,4 +1,4 @@
-import { chmodSync, mkdtempSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
+import { chmodSync, mkdtempSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -61,10 +61,13 @@ describe('a home', () => {
 describe('the lock of a home', () => {
   it('says where the first one runs, and is free again when that one has given it back', () => {
     const lockFile = path.join(dir, 'running.json');
-    const giveBack = takeHome({ dir, lockFile, address: 'http://127.0.0.1:4321' });
+    const lock = takeHome({ dir, lockFile, address: 'starting' });
+    expect(() => takeHome({ dir, lockFile, address: 'http://127.0.0.1:1' })).toThrow('starting');
+    lock.nameAddress('http://127.0.0.1:4321');
     expect(() => takeHome({ dir, lockFile, address: 'http://127.0.0.1:1' })).toThrow('http://127.0.0.1:4321');
-    giveBack();
-    takeHome({ dir, lockFile, address: 'http://127.0.0.1:1' })();
+    lock.giveBack();
+    takeHome({ dir, lockFile, address: 'http://127.0.0.1:1' }).giveBack();
+    expect(readdirSync(dir)).toEqual([]);
   });
 
   it('is taken over from a process that is gone, also when its number belongs to another one now', () => {
@@ -74,15 +77,15 @@ describe('the lock of a home', () => {
       { pid: 2 ** 22 + 1, began: '1', address: 'above the highest process number of Linux' },
     ]) {
       writeFileSync(lockFile, JSON.stringify(holder));
-      const giveBack = takeHome({ dir, lockFile, address: 'now' });
+      const lock = takeHome({ dir, lockFile, address: 'now' });
       expect(readFileSync(lockFile, 'utf8')).toContain('"now"');
-      giveBack();
+      lock.giveBack();
     }
   });
 
   it('is taken over when what stands there is no lock at all', () => {
     const lockFile = path.join(dir, 'running.json');
     writeFileSync(lockFile, '{"pid":');
-    takeHome({ dir, lockFile, address: 'now' })();
+    takeHome({ dir, lockFile, address: 'now' }).giveBack();
   });
 });
