@@ -6,7 +6,7 @@ import { addressBucket } from '../../http/client-address.ts';
 import { spendShared } from '../../http/limits.ts';
 import { mount } from '../../http/mount.ts';
 import { forgetRequests } from '../../http/request-counts-store.ts';
-import { readSession } from './session-read-model.ts';
+import { readSession } from './read-session.ts';
 import { type SetUpParts, setUp } from './set-up.ts';
 import { signIn } from './sign-in.ts';
 import { signOut } from './sign-out.ts';

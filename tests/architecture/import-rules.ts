@@ -1,0 +1,140 @@
+/**
+ * Who may import whom, as data. The first row whose `from` fits a file decides; a file that no row fits, and an import that
+ * its row does not list, are refused. Patterns: `*` within a folder, `**` across folders.
+ */
+export interface ImportRule {
+  readonly from: string;
+  readonly may: readonly string[];
+  /** May be imported for their types alone. */
+  readonly mayTypes?: readonly string[];
+}
+
+/** `{self}` stands for the folder of the feature that the file belongs to. */
+export const OWN_FEATURE = '{self}';
+
+const browserPackages = [
+  'react',
+  'react-dom',
+  'react-dom/client',
+  'react-router-dom',
+  '@tanstack/react-query',
+  'react-aria-components',
+  'react-hook-form',
+  '@hookform/resolvers/**',
+  'd3-*',
+];
+const shippedFonts = ['@fontsource/**', '@fontsource-variable/**'];
+const styles = ['src/**/*.css', ...shippedFonts];
+const pure = ['src/engine/**', 'src/contract/**', 'src/charts/**'];
+
+/** What any part of the server may use: an error for the caller, the log, the words of a request. */
+const serverWords = ['server/http/app-error.ts', 'server/log.ts'];
+const requestTypes = ['server/http/request-context.ts'];
+
+export const importRules: readonly ImportRule[] = [
+  { from: 'src/engine/**', may: ['src/engine/**', 'psychrolib'] },
+  { from: 'src/contract/**', may: ['src/contract/**', 'zod/mini'], mayTypes: ['src/engine/**'] },
+  { from: 'src/charts/**', may: ['src/charts/**', 'react', 'd3-*', 'src/engine/**'] },
+  {
+    from: 'src/map/**',
+    may: [
+      ...['src/map/**', 'src/ui/**', 'src/lib/**', ...pure, ...browserPackages, ...styles],
+      ...['maplibre-gl', 'maplibre-gl/**', 'react-map-gl/**', 'terra-draw', 'terra-draw-maplibre-gl-adapter'],
+    ],
+  },
+  { from: 'src/ui/**', may: ['src/ui/**', 'src/lib/**', ...pure, ...browserPackages, ...styles] },
+  { from: 'src/lib/**', may: ['src/lib/**', ...pure, ...browserPackages, 'zod/mini'] },
+  {
+    from: 'src/features/*/**',
+    may: [OWN_FEATURE, 'src/ui/**', 'src/charts/**', 'src/map/**', 'src/lib/**', ...pure, ...browserPackages],
+  },
+  { from: 'src/app/**', may: ['src/**', ...browserPackages, ...shippedFonts] },
+  { from: 'src/main.tsx', may: ['src/app/**', 'src/**/*.css', ...browserPackages, ...shippedFonts] },
+
+  { from: 'migrations/source.ts', may: ['migrations/*'], mayTypes: ['knex'] },
+  { from: 'migrations/*', may: [], mayTypes: ['knex'] },
+
+  {
+    from: 'server/db/prepare-database.ts',
+    may: ['server/db/**', 'migrations/source.ts', 'knex', 'pg', 'graphile-worker', 'node:*'],
+  },
+  { from: 'server/db/**', may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'node:*'] },
+  {
+    from: 'server/jobs/**',
+    may: ['server/jobs/**', 'server/db/**', ...serverWords, ...pure, 'graphile-worker', 'pg', 'knex', 'node:**'],
+  },
+  { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'node:**'] },
+  { from: 'server/tiles/**', may: ['server/tiles/**', ...serverWords, 'pmtiles', 'express', 'node:*'] },
+
+  {
+    from: 'server/features/*/routes.ts',
+    may: [
+      OWN_FEATURE,
+      'server/features/*/*read-model.ts',
+      'server/http/**',
+      'server/deps.ts',
+      ...pure,
+      'express',
+      'node:*',
+    ],
+  },
+  {
+    from: 'server/features/*/*store.ts',
+    may: [OWN_FEATURE, 'server/db/**', 'src/contract/**'],
+    mayTypes: ['knex', 'src/engine/**'],
+  },
+  {
+    from: 'server/features/*/*read-model.ts',
+    may: [OWN_FEATURE, 'server/db/**', 'src/contract/**'],
+    mayTypes: ['knex', 'src/engine/**'],
+  },
+  {
+    from: 'server/features/*/policy.ts',
+    may: ['server/http/policy.ts', 'src/contract/**'],
+  },
+  {
+    // Verbs, presenters and what they share within a feature.
+    from: 'server/features/*/*',
+    may: [
+      ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
+      ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
+      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json'],
+    ],
+    mayTypes: ['knex', ...requestTypes],
+  },
+  {
+    from: 'server/http/**',
+    may: [
+      ...['server/http/**', 'server/features/*/policy.ts', 'server/features/*/*read-model.ts', 'server/db/**'],
+      ...['server/deps.ts', 'server/log.ts', 'src/contract/**', 'node:**', 'zod/mini'],
+      ...['express', 'helmet', 'multer', 'express-session', 'connect-pg-simple', 'passport', 'passport-local'],
+    ],
+    mayTypes: ['knex'],
+  },
+  {
+    from: 'server/deps.ts',
+    may: [],
+    mayTypes: ['knex', 'server/log.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
+  },
+  { from: 'server/log.ts', may: [] },
+  { from: 'server/config.ts', may: ['zod/mini', 'node:*'] },
+  { from: 'server/app.ts', may: ['server/**', 'express', 'compression'] },
+  { from: 'server/web.ts', may: ['server/**', 'node:*'] },
+  { from: 'server/worker.ts', may: ['server/**', ...pure, 'node:*'] },
+  { from: 'server/builders/**', may: ['server/**', ...pure, 'node:**'], mayTypes: ['knex'] },
+  {
+    from: 'server/cli/**',
+    may: [
+      'server/**',
+      ...pure,
+      'node:**',
+      'zod/mini',
+      'tsx/esm/api',
+      'vite',
+      'vitest/node',
+      'pg',
+      'knex',
+      'data/demo/**',
+    ],
+  },
+];
