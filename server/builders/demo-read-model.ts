@@ -1,0 +1,31 @@
+import type { Knex } from 'knex';
+
+export interface StandingDemo {
+  readonly teamId: string;
+  readonly programmeId: string;
+  /** Who uploads and accepts. */
+  readonly engineerId: string;
+  /** It was seeded to the end once; what people did to it since is theirs. */
+  readonly seeded: boolean;
+}
+
+/** What the audit trail says when the demo is complete. */
+export const DEMO_SEEDED = 'demo seeded';
+
+/** The demo's team, seeded to the end or not; `null` before the first seed. */
+export async function findStandingDemo(db: Knex, teamName: string): Promise<StandingDemo | null> {
+  const { rows } = await db.raw<{ rows: StandingDemo[] }>(
+    `select teams.id as "teamId", programmes.id as "programmeId", memberships.person_id as "engineerId",
+       exists (
+         select 1 from audit_events where audit_events.team_id = teams.id and audit_events.act = :act
+       ) as seeded
+     from teams
+     join programmes on programmes.team_id = teams.id
+     join memberships on memberships.team_id = teams.id and memberships.role = 'engineer'
+     where teams.invented and teams.name = :teamName
+     order by teams.created_at, programmes.created_at, memberships.since
+     limit 1`,
+    { teamName, act: DEMO_SEEDED },
+  );
+  return rows[0] ?? null;
+}
