@@ -10,9 +10,15 @@ const HOURS: Range = { min: 0, max: 8784, unit: 'h' };
 /** The derating that the method knows (method 3.1). */
 const DERATE_RULE = '1 K per 300 m above 900 m';
 
+const KINDS = ['fixed', 'adaptive', 'inlet', 'thi', 'shade-heat', 'tower', 'turbine'] as const;
+
+/** Reads what the brief limits; of a kind that is not known, no other field is judged. */
 export function readLimit(limit: Fields): Limit {
-  if (!limit.has('kind')) limit.fault('kind', 'what the brief limits is needed: fixed, adaptive, inlet, thi …');
-  const kind = limit.choice('kind', ['fixed', 'adaptive', 'inlet', 'thi', 'shade-heat', 'tower', 'turbine']);
+  const kind = KINDS.find((each) => each === limit.raw('kind'));
+  if (kind === undefined) {
+    limit.fault('kind', `what the brief limits is needed, one of ${KINDS.join(', ')}`);
+    return { kind: 'fixed', tempC: ROOM_TEMP.min };
+  }
   const read = limitOfKind(limit, kind);
   limit.refuseOthers();
   return read;

@@ -102,7 +102,7 @@ function atLeast(value: number, limits: readonly [number, number, number]): Plac
 }
 
 function worst(grades: readonly PlaceGrade[]): PlaceGrade {
-  return grades.reduce((one, other) => (one > other ? one : other), 'A');
+  return LETTERS.findLast((letter) => grades.includes(letter)) ?? 'A';
 }
 
 function round(value: number): number {

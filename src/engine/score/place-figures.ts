@@ -3,6 +3,7 @@
  * follows from the runs of the place's usable years.
  */
 import type { Brief, ScoreComponent } from '../brief/brief.ts';
+import { monthNames } from '../reduction/calendar.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
 import type { RunResult, ScorePart, Verdict } from '../run/run-result.ts';
 import { bandWord, type RawComponents, weightedScore } from './weighted-score.ts';
@@ -12,7 +13,7 @@ export interface PlaceRun {
   readonly kind: YearKind;
   /** Calendar year of an actual year, else null. */
   readonly year: number | null;
-  readonly result: Pick<RunResult, 'usable' | 'gates' | 'parts' | 'verdict' | 'score' | 'scoreExact'>;
+  readonly result: Pick<RunResult, 'usable' | 'monthsShort' | 'gates' | 'parts' | 'verdict' | 'score' | 'scoreExact'>;
 }
 
 export interface PlaceFigures<Run extends PlaceRun> {
@@ -56,7 +57,7 @@ export function placeFigures<Run extends PlaceRun>(input: {
   const weighted = weightedScore(brief.score, medianComponents(runs), {
     indexPoints: brief.limit.kind === 'thi' || brief.limit.kind === 'shade-heat',
   });
-  const scoreNote = noteOf(runs, weighted.scoreExact);
+  const scoreNote = runs.length === 0 ? unusableNote(input.runs) : noteOf(runs, weighted.scoreExact);
   const score = scoreNote === null && weighted.scoreExact !== null ? Math.round(weighted.scoreExact) : null;
   return {
     basis,
@@ -106,7 +107,6 @@ function median(values: readonly number[]): number | null {
 }
 
 function noteOf(runs: readonly PlaceRun[], scoreExact: number | null): string | null {
-  if (runs.length === 0) return 'not applicable: no usable weather year';
   const failing = runs.flatMap(({ year, result }) =>
     result.gates
       .filter(({ answer }) => answer === 'fail')
@@ -114,6 +114,13 @@ function noteOf(runs: readonly PlaceRun[], scoreExact: number | null): string | 
   );
   if (failing.length > 0) return `excluded: ${failing.join('; ')}`;
   return scoreExact === null ? 'not applicable: no demand' : null;
+}
+
+function unusableNote(all: readonly PlaceRun[]): string {
+  const short = all.find(({ result }) => !result.usable)?.result.monthsShort ?? [];
+  const names = short.map((month) => monthNames[month - 1]).join(', ');
+  const why = names === '' ? '' : `: less than 90 % of the hours of ${names}`;
+  return `not applicable: no usable weather year${why}`;
 }
 
 function nearestRun<Run extends PlaceRun>(runs: readonly Run[], scoreExact: number | null): Run | null {
