@@ -26,6 +26,8 @@ export default defineConfig({
           name: 'unit',
           include: ['tests/{engine,contract,checks,client,architecture,data}/**/*.test.{ts,tsx}'],
           env: { TZ: 'Pacific/Chatham' },
+          // Two runs may share two cores; a test that hangs is still found.
+          testTimeout: 60_000,
         },
       },
       {

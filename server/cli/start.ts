@@ -1,5 +1,7 @@
 /** `npm start`: everything that the product needs, started in order and stopped in the opposite one. */
+import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
+import { seedDemo } from '../builders/seed-demo.ts';
 import { type Config, ConfigError, isLoopback, readConfig } from '../config.ts';
 import { connect } from '../db/connection.ts';
 import { prepareDatabase } from '../db/prepare-database.ts';
@@ -94,13 +96,18 @@ async function makeDeps(start: Start, made: { databaseUrl: string; clientDir: st
   };
 }
 
-/** Fills an empty home with the demo, or makes the link with which its first team is set up. */
-async function welcome({ config }: Start, deps: Deps): Promise<(url: string) => string[]> {
-  if (config.seed === 'none') {
-    const setUpPath = await makeSetUpKey(deps.db);
-    return (url) => (setUpPath === null ? [] : [`Set up the first team here, once: ${url}${setUpPath}`]);
+/** Fills a home with the demo, or makes the link with which its first team is set up; answers what to say when ready. */
+async function welcome({ home, config, context }: Start, deps: Deps): Promise<(url: string) => string[]> {
+  const setUpPath = config.seed === 'none' ? await makeSetUpKey(deps.db) : null;
+  if (setUpPath !== null) return (url) => [`Set up the first team here, once: ${url}${setUpPath}`];
+  const accountsWereThere = existsSync(home.demoAccountsFile);
+  if (config.seed === 'demo') {
+    await seedDemo({ deps, demoAccountsPath: home.demoAccountsFile, log: say, signal: context.signal });
   }
-  return () => [];
+  if (accountsWereThere) return () => [`The sign-ins of the demo: ${home.demoAccountsFile}`];
+  if (!existsSync(home.demoAccountsFile)) return () => [];
+  const accounts = readFileSync(home.demoAccountsFile, 'utf8').trimEnd();
+  return () => ['', accounts, `They are kept in ${home.demoAccountsFile}`, ''];
 }
 
 async function serve(start: Start, nameAddress: (address: string) => void): Promise<void> {

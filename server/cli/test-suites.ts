@@ -10,12 +10,14 @@ import { add, nothing, type Tally, tallyOf } from './test-tally.ts';
 export const suites = ['unit', 'server', 'e2e'] as const;
 export type Suite = (typeof suites)[number];
 
+const PATIENT_MS = 3_600_000;
+
 export interface SuitesOptions {
   readonly context: CommandContext;
   readonly names: readonly Suite[];
   readonly env: Readonly<Record<string, string>>;
-  /** Print what the tests say even when they pass: soak's seeds and counts. */
-  readonly aloud: boolean;
+  /** Let a test take as long as its samples need. */
+  readonly patient: boolean;
 }
 
 /** Environment of every tool: neither our caller's npm settings for colours nor a build's NODE_ENV get in. */
@@ -28,20 +30,24 @@ export function seconds(sinceMs: number): string {
   return `${((performance.now() - sinceMs) / 1000).toFixed(1)} s`;
 }
 
+function vitestArguments(name: Suite, reportFile: string): string[] {
+  return ['run', '--project', name, '--reporter=dot', '--reporter=json', `--outputFile.json=${reportFile}`];
+}
+
 async function runSuite(name: Suite, runDir: string, options: SuitesOptions): Promise<Tally> {
   const { rootDir, signal } = options.context;
   const reportFile = path.join(runDir, `${name}.json`);
   const began = performance.now();
   const outcome: ToolOutcome = await runTool({
     script: path.join(rootDir, 'node_modules/vitest/vitest.mjs'),
-    args: ['run', '--project', name, '--reporter=dot', '--reporter=json', `--outputFile.json=${reportFile}`],
+    args: [...vitestArguments(name, reportFile), ...(options.patient ? [`--testTimeout=${PATIENT_MS}`] : [])],
     cwd: rootDir,
     env: toolEnvironment({ ...options.env, TMPDIR: runDir }),
     signal,
   });
   if (signal.aborted) return nothing;
-  const tally = options.aloud ? { ...tallyOf({ ...outcome, output: '' }, reportFile) } : tallyOf(outcome, reportFile);
-  if (tally.failed > 0 || options.aloud) process.stdout.write(`${outcome.output.trim()}\n`);
+  const tally = tallyOf(outcome, reportFile);
+  if (tally.failed > 0) process.stdout.write(`${outcome.output.trim()}\n`);
   process.stdout.write(`${name.padEnd(8)}${tally.passed + tally.failed} tests in ${seconds(began)}\n`);
   return tally;
 }

@@ -51,7 +51,7 @@ export const run: Command = async (context) => {
   await requirePackages(['postgresql', 'chromium'], context.signal);
   const checked = named.length > 0 ? nothing : await runChecks(context);
   const built = chosen.includes('e2e') ? await buildForBrowser(context) : nothing;
-  const tested = await runSuites({ context, names: chosen, env: {}, aloud: false });
+  const tested = await runSuites({ context, names: chosen, env: {}, patient: false });
   if (context.signal.aborted) {
     process.stderr.write('Stopped before the end.\n');
     return 1;

@@ -1,0 +1,141 @@
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
+import { gzipSync } from 'node:zlib';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { sampleUpload } from '../../../data/demo/sample-upload.ts';
+import { type CommandOutcome, repositoryDir, runCommand, startCommand } from '../../support/run-command.ts';
+
+let folder: string;
+
+beforeAll(() => {
+  folder = mkdtempSync(path.join(os.tmpdir(), 'muslin-files-'));
+  mkdirSync(path.join(folder, 'deep'));
+  const { text } = sampleUpload();
+  writeFileSync(path.join(folder, 'station.epw'), text);
+  writeFileSync(path.join(folder, 'nothing.epw'), '\n'.repeat(8760));
+  writeFileSync(path.join(folder, 'empty.epw'), '');
+  writeFileSync(path.join(folder, 'packed.epw.gz'), gzipSync(text));
+});
+afterAll(() => rmSync(folder, { recursive: true, force: true }));
+
+function muslin(...args: string[]): Promise<CommandOutcome> {
+  return runCommand(['muslin', ...args], { cwd: folder });
+}
+
+/** Every line of standard output is one JSON value, whatever else was said. */
+function results(outcome: CommandOutcome): Record<string, unknown>[] {
+  return outcome.stdout
+    .split('\n')
+    .filter((line) => line !== '')
+    .map((line) => JSON.parse(line));
+}
+
+describe('muslin read', () => {
+  it('answers one line per file in the order given, with the keys that were promised', async () => {
+    const outcome = await muslin('read', 'station.epw', 'nothing.epw');
+    const [station, nothing, ...more] = results(outcome);
+    expect(outcome.code).toBe(1);
+    expect(more).toEqual([]);
+    expect([station?.file, nothing?.file]).toEqual(['station.epw', 'nothing.epw']);
+    expect(Object.keys(station ?? {})).toEqual([
+      ...['file', 'format', 'status', 'asks', 'station', 'hours', 'measured', 'estimated', 'repaired', 'missing'],
+      ...['assumedPressure', 'belowZero', 'meanDryBulbC', 'meanWetBulbC', 'depressionHours', 'maxDepressionK'],
+      ...['design', 'findings'],
+    ]);
+    expect(Object.keys(Object(station?.station))).toEqual([
+      ...['name', 'latitude', 'longitude', 'elevationM', 'utcOffsetH'],
+    ]);
+    expect(Object.keys(Object(station?.depressionHours))).toEqual(Array.from({ length: 25 }, (_, k) => String(k + 1)));
+    expect(nothing).toMatchObject({ status: 'refused', findings: [{ severity: 'refuse' }] });
+  });
+
+  it('counts every hour once', async () => {
+    const [station] = results(await muslin('read', 'station.epw'));
+    const { hours, measured, estimated, repaired, missing } = station ?? {};
+    expect(hours).toBe(8760);
+    expect(Number(measured) + Number(estimated) + Number(repaired) + Number(missing)).toBe(8760);
+  });
+
+  it('ends with 0 for a file in review, and with 1 under --strict when something in it is in doubt', async () => {
+    const lenient = await muslin('read', 'station.epw');
+    expect(lenient.code).toBe(0);
+    const inDoubt = results(lenient).some(({ findings }) => JSON.stringify(findings).includes('"severity":"doubt"'));
+    expect((await muslin('read', '--strict', 'station.epw')).code).toBe(inDoubt ? 1 : 0);
+  });
+
+  it('counts paths from where the caller stands, also through npm from another folder', async () => {
+    const cwd = path.join(folder, 'deep');
+    const args = ['--prefix', repositoryDir, 'run', '-s', 'muslin', '--', 'read', '../station.epw'];
+    const outcome = await startCommand(args, { program: 'npm', programArgs: [], cwd }).ended;
+    expect(outcome).toMatchObject({ code: 0, stderr: '' });
+    expect(results(outcome)).toMatchObject([{ file: '../station.epw', status: 'review' }]);
+  });
+
+  it('reads the others when one is not there, and says so with code 3', async () => {
+    const outcome = await muslin('read', 'absent.epw', 'station.epw', 'deep');
+    expect(outcome.code).toBe(3);
+    expect(outcome.stderr).toContain('absent.epw cannot be read: there is no such file.');
+    expect(outcome.stderr).toContain('deep cannot be read: it is a folder.');
+    expect(results(outcome).map(({ file }) => file)).toEqual(['station.epw']);
+  });
+
+  it('refuses an empty file, and an archive with the sentence that it is read later', async () => {
+    const outcome = await muslin('read', 'empty.epw', 'packed.epw.gz');
+    expect(outcome.code).toBe(1);
+    expect(results(outcome).map(({ status }) => status)).toEqual(['refused', 'refused']);
+    expect(outcome.stdout.split('\n')[1]).toContain('weather room');
+  });
+});
+
+describe('muslin ledger', () => {
+  it('puts every hour in one class and answers with the keys that were promised', async () => {
+    const outcome = await muslin('ledger', 'station.epw', '--brief', 'office');
+    expect(outcome.code).toBe(0);
+    const [ledger, ...more] = results(outcome);
+    expect(more).toEqual([]);
+    expect(Object.keys(ledger ?? {})).toEqual([
+      ...['file', 'brief', 'methodVersion', 'hours', 'classes', 'demand', 'met', 'verdict', 'failed', 'score'],
+      ...['scoreExact', 'grade', 'parts', 'gates'],
+    ]);
+    const classes: Record<string, number> = Object(ledger?.classes);
+    expect(Object.keys(classes)).toEqual([
+      ...['closed', 'missing', 'idle', 'frozen', 'damp', 'air', 'direct', 'indirect', 'dewpoint', 'twostage'],
+      ...['short', 'beyond'],
+    ]);
+    expect(Object.values(classes).reduce((sum, count) => sum + count, 0)).toBe(8760);
+    expect(ledger?.score).toBe(Math.round(Number(ledger?.scoreExact)));
+  });
+
+  it('says the refusing sentences of a file that cannot be used, with code 1', async () => {
+    const outcome = await muslin('ledger', 'nothing.epw', '--brief', 'office');
+    expect(outcome).toMatchObject({ code: 1, stdout: '' });
+    expect(outcome.stderr).toContain('nothing.epw');
+  });
+
+  it.each(['turbine-inlet', 'palace'])('names the presets when asked for %s', async (brief) => {
+    const outcome = await muslin('ledger', 'station.epw', '--brief', brief);
+    expect(outcome).toMatchObject({ code: 2, stdout: '' });
+    expect(outcome.stderr).toContain('office');
+  });
+});
+
+describe('wrong use', () => {
+  it.each([
+    ['no command', []],
+    ['an unknown command', ['rank']],
+    ['no file', ['read']],
+    ['an unknown option', ['read', 'station.epw', '--fast']],
+    ['an option that is not built yet', ['read', 'station.epw', '--place', '1,2,3,4']],
+    ['two files where one is read', ['ledger', 'station.epw', 'nothing.epw', '--brief', 'office']],
+    ['no brief', ['ledger', 'station.epw']],
+  ])('ends with 2 and words on standard error: %s', async (_what, args) => {
+    const outcome = await muslin(...args);
+    expect(outcome).toMatchObject({ code: 2, stdout: '' });
+    expect(outcome.stderr).not.toBe('');
+  });
+
+  it('is not what --help is', async () => {
+    expect((await muslin('--help')).code).toBe(0);
+  });
+});
