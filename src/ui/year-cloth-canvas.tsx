@@ -1,4 +1,4 @@
-import { type KeyboardEvent, type RefObject, useEffect, useId, useMemo, useRef, useState } from 'react';
+import { type KeyboardEvent, type RefObject, useEffect, useMemo, useRef, useState } from 'react';
 import { dayLabel, hourLabel, monthNames, monthStarts } from '../charts/calendar.ts';
 import { daysOf, yearCloth } from '../charts/year-cloth.ts';
 import { type HourClass, hourClasses } from '../engine/hour-classes/hour-class.ts';
@@ -26,9 +26,8 @@ interface Cell {
 export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanvasProps) {
   const days = daysOf(codes);
   const frame = useRef<HTMLDivElement>(null);
-  const widthPx = useWidth(frame);
+  const { widthPx, ratio } = useWidth(frame);
   const [cell, setCell] = useState<Cell | null>(null);
-  const readingId = useId();
 
   const read = (at: Cell) => {
     const hourClass = hourClasses[codes[at.day * HOURS + at.hour] ?? -1];
@@ -46,12 +45,14 @@ export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanv
     <div className="min-w-0">
       <div className="overflow-x-auto pb-0.5">
         <div ref={frame} className="relative min-w-[46rem]">
-          {/* biome-ignore lint/a11y/noNoninteractiveTabindex: the picture is read hour by hour with the arrow keys */}
           <div
-            role="application"
-            aria-roledescription="year cloth"
-            aria-label={`${label} Arrow keys read single hours.`}
-            aria-describedby={readingId}
+            role="slider"
+            aria-label={label}
+            aria-orientation="horizontal"
+            aria-valuemin={1}
+            aria-valuemax={days * HOURS}
+            aria-valuenow={cell ? cell.day * HOURS + cell.hour + 1 : 1}
+            aria-valuetext={cell ? read(cell) : 'Arrow keys read single hours.'}
             tabIndex={0}
             className="relative"
             onKeyDown={onKeyDown}
@@ -64,23 +65,30 @@ export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanv
               if (day >= 0 && day < days && hour >= 0 && hour < HOURS) setCell({ day, hour });
             }}
           >
-            <Cloth codes={codes} widthPx={widthPx} heightPx={heightPx} />
+            <Cloth codes={codes} widthPx={widthPx} heightPx={heightPx} ratio={ratio} />
             {cell ? <CellMark cell={cell} days={days} /> : null}
           </div>
           <MonthAxis days={days} />
         </div>
       </div>
-      <p id={readingId} aria-live="polite" className="h-5 text-fine text-soft">
+      <p aria-hidden="true" className="h-5 text-fine text-soft">
         {cell ? read(cell) : 'Point at an hour, or use the arrow keys, to read it.'}
       </p>
     </div>
   );
 }
 
+interface ClothProps {
+  readonly codes: Uint8Array;
+  readonly widthPx: number;
+  readonly heightPx: number;
+  /** Device pixels of one CSS pixel. */
+  readonly ratio: number;
+}
+
 /** One pixel of the buffer for one of the screen, so that no thread is blurred. */
-function Cloth({ codes, widthPx, heightPx }: { codes: Uint8Array; widthPx: number; heightPx: number }) {
+function Cloth({ codes, widthPx, heightPx, ratio }: ClothProps) {
   const canvas = useRef<HTMLCanvasElement>(null);
-  const ratio = window.devicePixelRatio;
   const picture = useMemo(
     () =>
       widthPx === 0
@@ -103,7 +111,6 @@ function Cloth({ codes, widthPx, heightPx }: { codes: Uint8Array; widthPx: numbe
       ref={canvas}
       width={picture?.widthPx ?? 1}
       height={picture?.heightPx ?? 1}
-      aria-hidden="true"
       className="block w-full [image-rendering:pixelated]"
       style={{ height: heightPx }}
     />
@@ -168,15 +175,16 @@ function moved(cell: Cell, key: string, days: number): Cell | null {
   }
 }
 
-function useWidth(element: RefObject<HTMLElement | null>): number {
-  const [widthPx, setWidthPx] = useState(0);
+function useWidth(element: RefObject<HTMLElement | null>): { widthPx: number; ratio: number } {
+  const [size, setSize] = useState({ widthPx: 0, ratio: 1 });
   useEffect(() => {
     const watched = element.current;
     if (!watched) return;
-    const observer = new ResizeObserver(() => setWidthPx(watched.clientWidth));
+    const measure = () => setSize({ widthPx: watched.clientWidth, ratio: window.devicePixelRatio });
+    const observer = new ResizeObserver(measure);
     observer.observe(watched);
-    setWidthPx(watched.clientWidth);
+    measure();
     return () => observer.disconnect();
   }, [element]);
-  return widthPx;
+  return size;
 }

@@ -1,0 +1,106 @@
+import { useQuery } from '@tanstack/react-query';
+import { useMemo } from 'react';
+import { Link, useParams, useSearchParams } from 'react-router-dom';
+import type { ProgrammeMap } from '../../../contract/runs.ts';
+import { rankedStations } from '../../../features/runs/ranked-stations.ts';
+import { mapQuery, type ProgrammeIds } from '../../../features/runs/run-queries.ts';
+import { errorSentence, isApiError } from '../../../lib/api-error.ts';
+import { PageTitle } from '../../../lib/page-title.tsx';
+import { PLACE_PARAM, paths } from '../../../lib/paths.ts';
+import { useTeam } from '../../../lib/team-scope.ts';
+import { useMedia, WIDE } from '../../../lib/use-media.ts';
+import { Button, buttonLook } from '../../../ui/button.tsx';
+import { Loading } from '../../../ui/loading.tsx';
+import { Notice } from '../../../ui/notice.tsx';
+import { NarrowSheet } from './narrow-sheet.tsx';
+import { WideSheet } from './wide-sheet.tsx';
+
+/** What both compositions of the sheet are made from. */
+export interface SheetProps {
+  readonly ids: ProgrammeIds;
+  readonly map: ProgrammeMap;
+  readonly chosenId: string | null;
+  readonly onChoose: (stationId: string | null) => void;
+}
+
+export function MapPage() {
+  const { teamId, role, programmes } = useTeam();
+  const { programmeId = '' } = useParams();
+  const ids = { teamId, programmeId };
+  const map = useQuery(mapQuery(ids));
+  const title = programmes.find(({ id }) => id === programmeId)?.name ?? 'Map';
+  return (
+    <>
+      <PageTitle>{title}</PageTitle>
+      {map.isPending ? <Loading what="the map" /> : null}
+      {map.isError && !map.data ? <MapProblem error={map.error} onRetry={() => map.refetch()} /> : null}
+      {map.data && map.data.stations.length === 0 ? (
+        <EmptyMap map={map.data} mayUpload={role === 'engineer' || role === 'lead'} />
+      ) : null}
+      {map.data && map.data.stations.length > 0 ? <Sheet ids={ids} map={map.data} /> : null}
+    </>
+  );
+}
+
+/** The chosen place lives in the address, so that Back, a reload and a link all come back to it. */
+function Sheet({ ids, map }: { ids: ProgrammeIds; map: ProgrammeMap }) {
+  const [search, setSearch] = useSearchParams();
+  const isWide = useMedia(WIDE);
+  const named = search.get(PLACE_PARAM);
+  // Where there is room for it, a place is always in view: the first of the ranking until one is chosen.
+  const first = useMemo(() => rankedStations(map.stations)[0]?.station.id ?? null, [map.stations]);
+  const chosenId = named ?? (isWide ? first : null);
+  const onChoose = (stationId: string | null) => {
+    if (stationId === named) return;
+    const next = new URLSearchParams(search);
+    if (stationId === null) next.delete(PLACE_PARAM);
+    else next.set(PLACE_PARAM, stationId);
+    setSearch(next);
+  };
+  const props = { ids, map, chosenId, onChoose };
+  return isWide ? <WideSheet {...props} /> : <NarrowSheet {...props} />;
+}
+
+function MapProblem({ error, onRetry }: { error: unknown; onRetry: () => void }) {
+  const isGone = isApiError(error, 'not_found') || isApiError(error, 'invalid_input');
+  return (
+    <div className="p-6">
+      <Notice
+        tone="wrong"
+        live
+        actions={
+          isGone ? (
+            <Link className={buttonLook('plain')} to={paths.home}>
+              Go to the map
+            </Link>
+          ) : (
+            <Button onClick={onRetry}>Try again</Button>
+          )
+        }
+      >
+        {isGone ? 'There is no such programme, or it belongs to a team that you are not in.' : errorSentence(error)}
+      </Notice>
+    </div>
+  );
+}
+
+function EmptyMap({ map, mayUpload }: { map: ProgrammeMap; mayUpload: boolean }) {
+  const { teamId } = useTeam();
+  return (
+    <section className="mx-auto w-full max-w-[36rem] px-6 pt-14">
+      <p className="text-fine text-soft">{map.programme.name}</p>
+      <h1 className="mb-2 text-title">No station on the map yet</h1>
+      <p className="mb-2">
+        {mayUpload
+          ? 'A station appears here once a weather file of it is accepted. Upload an hourly EPW file, look at what was found in it, and accept it.'
+          : 'A station appears here once an engineer of the team has accepted a weather file of it.'}
+      </p>
+      <p className="mb-5 text-soft">
+        Every station is tested against {map.brief.name}, version {map.brief.version}. {map.brief.sentence}
+      </p>
+      <Link className={buttonLook('primary')} to={paths.weather.to(teamId)}>
+        {mayUpload ? 'Upload a weather file' : 'See the weather files'}
+      </Link>
+    </section>
+  );
+}

@@ -1,0 +1,97 @@
+import { useQuery } from '@tanstack/react-query';
+import type { Place } from '../../../contract/runs.ts';
+import { LedgerPanel } from '../../../features/runs/ledger-panel.tsx';
+import { PlaceHeading, ScoreBlock } from '../../../features/runs/place-heading.tsx';
+import {
+  CautionsNote,
+  GradeNote,
+  SpellNote,
+  VerdictNote,
+  WaterElectricityNote,
+} from '../../../features/runs/place-notes.tsx';
+import { type ProgrammeIds, placeQuery } from '../../../features/runs/run-queries.ts';
+import { ScoreArithmetic } from '../../../features/runs/score-arithmetic.tsx';
+import { YearStrip } from '../../../features/runs/year-strip.tsx';
+import { errorSentence, isApiError } from '../../../lib/api-error.ts';
+import { Button } from '../../../ui/button.tsx';
+import { Loading } from '../../../ui/loading.tsx';
+import { Notice } from '../../../ui/notice.tsx';
+
+interface PlacePartProps {
+  readonly ids: ProgrammeIds;
+  readonly stationId: string | null;
+}
+
+/** The chosen place beside the map: name, basis, score, verdict, ledger. */
+export function PlaceMargin({ ids, stationId }: PlacePartProps) {
+  if (stationId === null) return <p className="text-soft">Choose a station on the map or in the list.</p>;
+  return <ChosenMargin ids={ids} stationId={stationId} />;
+}
+
+/** The chosen place beneath the map: its year cloth, then how its figures come about. */
+export function PlaceFoot({ ids, stationId }: PlacePartProps) {
+  return stationId === null ? null : <ChosenFoot ids={ids} stationId={stationId} />;
+}
+
+interface ChosenProps {
+  readonly ids: ProgrammeIds;
+  readonly stationId: string;
+}
+
+function ChosenMargin({ ids, stationId }: ChosenProps) {
+  const place = useQuery(placeQuery(ids, stationId));
+  if (place.data) {
+    return (
+      <section aria-label="Chosen place" className="grid content-start gap-3">
+        <PlaceHeading place={place.data} teamId={ids.teamId} />
+        <ScoreBlock place={place.data} />
+        {place.data.shown ? <LedgerPanel ledger={place.data.shown.ledger} /> : null}
+      </section>
+    );
+  }
+  if (place.isPending) return <Loading what="the place" />;
+  if (isApiError(place.error, 'not_found') || isApiError(place.error, 'invalid_input')) {
+    return <p>This station is not on the map any more. Choose another one.</p>;
+  }
+  return (
+    <Notice tone="wrong" live actions={<Button onClick={() => place.refetch()}>Try again</Button>}>
+      {errorSentence(place.error)}
+    </Notice>
+  );
+}
+
+function ChosenFoot({ ids, stationId }: ChosenProps) {
+  const { data: place } = useQuery(placeQuery(ids, stationId));
+  if (!place?.shown) return null;
+  return (
+    <>
+      <div className="border-line bg-paper lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
+        <YearStrip place={place} teamId={ids.teamId} />
+      </div>
+      <PlaceNotes place={place} shown={place.shown} />
+    </>
+  );
+}
+
+function PlaceNotes({ place, shown }: { place: Place; shown: NonNullable<Place['shown']> }) {
+  return (
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-6 lg:px-5 lg:pt-7 lg:pb-14">
+      <div className="min-w-0 lg:col-span-4">
+        <ScoreArithmetic shown={shown} />
+      </div>
+      <div className="min-w-0 lg:col-span-2">
+        <WaterElectricityNote shown={shown} />
+      </div>
+      <div className="min-w-0 lg:col-span-2">
+        <VerdictNote shown={shown} />
+      </div>
+      <div className="min-w-0 lg:col-span-2">
+        <SpellNote shown={shown} />
+      </div>
+      <div className="grid min-w-0 content-start gap-8 lg:col-span-2">
+        <GradeNote place={place} />
+        <CautionsNote shown={shown} />
+      </div>
+    </div>
+  );
+}

@@ -1,0 +1,67 @@
+import { createBrowserRouter, type RouteObject } from 'react-router-dom';
+import { paths } from '../lib/paths.ts';
+import { FailedPage } from './failed-page.tsx';
+import { HomeRedirect } from './home-redirect.tsx';
+import { NotFoundPage } from './not-found-page.tsx';
+import { SignedIn } from './signed-in.tsx';
+import { TeamPages } from './team-pages.tsx';
+
+/** Every page is fetched when it is first visited; the map brings its own engine with it. */
+const routes: RouteObject[] = [
+  {
+    errorElement: <FailedPage />,
+    children: [
+      {
+        path: paths.signIn.pattern,
+        lazy: async () => ({ Component: (await import('../features/accounts/sign-in-page.tsx')).SignInPage }),
+      },
+      {
+        path: paths.setUp.pattern,
+        lazy: async () => ({ Component: (await import('../features/accounts/set-up-page.tsx')).SetUpPage }),
+      },
+      {
+        Component: SignedIn,
+        children: [
+          { path: paths.home, Component: HomeRedirect },
+          {
+            path: paths.team.pattern,
+            Component: TeamPages,
+            children: [
+              { index: true, Component: HomeRedirect },
+              {
+                path: paths.map.pattern,
+                lazy: async () => ({ Component: (await import('./pages/map/map-page.tsx')).MapPage }),
+              },
+              {
+                path: paths.weather.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/weather/weather-library-page.tsx')).WeatherLibraryPage,
+                }),
+              },
+              {
+                path: paths.weatherFile.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/weather/weather-record-page.tsx')).WeatherRecordPage,
+                }),
+              },
+              { path: '*', Component: NotFoundPage },
+            ],
+          },
+        ],
+      },
+      ...(import.meta.env.DEV
+        ? [
+            {
+              path: paths.gallery.pattern,
+              lazy: async () => ({ Component: (await import('./gallery/gallery-page.tsx')).GalleryPage }),
+            },
+          ]
+        : []),
+      { path: '*', Component: NotFoundPage },
+    ],
+  },
+];
+
+export function makeRouter() {
+  return createBrowserRouter(routes);
+}

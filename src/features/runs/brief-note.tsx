@@ -1,0 +1,20 @@
+import type { ProgrammeMap } from '../../contract/runs.ts';
+import { plural } from '../../lib/format.ts';
+
+/** The programme and the brief that every number of the sheet rests on. */
+export function BriefNote({ map }: { map: ProgrammeMap }) {
+  return (
+    <header>
+      <p className="text-fine text-soft">{map.programme.name}</p>
+      <h1 className="text-name">{map.brief.name}</h1>
+      <p className="mt-1">
+        <span className="text-soft">Brief version {map.brief.version}.</span> {map.brief.sentence}
+      </p>
+      <p role="status" className="text-fine text-soft">
+        {map.pending > 0
+          ? `${plural(map.pending, 'weather year')} ${map.pending === 1 ? 'is' : 'are'} being tested; scores follow by themselves.`
+          : ''}
+      </p>
+    </header>
+  );
+}

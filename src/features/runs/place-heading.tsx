@@ -1,0 +1,70 @@
+import { Link } from 'react-router-dom';
+import type { Place } from '../../contract/runs.ts';
+import { metres, position } from '../../lib/format.ts';
+import { paths } from '../../lib/paths.ts';
+import { bandWords, costingColumns, noScoreWords, placeYearWords, verdictSentence } from './run-words.ts';
+
+/** Name and basis of the chosen place: a number never stands without what it rests on. */
+export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }) {
+  const { station, years, shown, brief } = place;
+  const year = years.find(({ runId }) => runId === shown?.runId) ?? years[0];
+  return (
+    <header>
+      <h2 className="text-title">{station.name}</h2>
+      <p className="mt-1 text-soft">
+        {metres(station.elevationM)}, {position(station)}.{place.invented ? ' Invented place and weather.' : ''}
+      </p>
+      <p className="text-soft">
+        {year ? (
+          <>
+            Weather of this station, 0&nbsp;km away:{' '}
+            <Link to={paths.weatherFile.to(teamId, year.weatherFileId)}>{placeYearWords(year)}</Link>.{' '}
+          </>
+        ) : (
+          'No accepted weather year. '
+        )}
+        Brief version {brief.version}, method {brief.methodVersion}.
+      </p>
+    </header>
+  );
+}
+
+/** The score, large, with verdict and grade beside it. */
+export function ScoreBlock({ place }: { place: Place }) {
+  const { shown } = place;
+  if (!shown) {
+    return (
+      <p className="border-y border-line py-3">
+        {place.years.length === 0
+          ? 'Not judged: no accepted weather year is usable for this brief.'
+          : 'Not judged yet. Its year is being tested against the brief; the score follows by itself.'}
+      </p>
+    );
+  }
+  const note = noScoreWords(shown);
+  const band = bandWords(shown.words);
+  const costs = costingColumns(place.gradeColumns);
+  return (
+    <div className="grid grid-cols-[auto_minmax(0,1fr)] items-start gap-x-4 border-y border-line py-3">
+      {note === null ? (
+        <p className="flex flex-col">
+          <span className="serif text-figure">{shown.score}</span>
+          <span className="mt-1 text-fine text-soft">of 100</span>
+        </p>
+      ) : null}
+      <div className={`grid gap-1 ${note === null ? '' : 'col-span-2'}`}>
+        {note === null ? null : <p className="serif text-name">{note}.</p>}
+        {note === null && band ? <p>{band}</p> : null}
+        <p className={shown.verdict === 'does not' ? 'font-medium text-madder' : 'font-medium'}>
+          {verdictSentence(shown)}
+        </p>
+        <p>
+          <span className="font-medium">Grade {place.grade}</span>
+          {costs.length === 0
+            ? ': nothing costs a letter.'
+            : `: ${costs.map(({ column, grade, reason }) => `${column} ${grade}, ${reason}`).join('; ')}.`}
+        </p>
+      </div>
+    </div>
+  );
+}

@@ -1,0 +1,59 @@
+import type { Ledger, MapStation, Place, ToleranceAnswer } from '../../contract/runs.ts';
+import { list, number, sensible, share as shareOf } from '../../lib/format.ts';
+
+type Shown = NonNullable<Place['shown']>;
+
+const bandSentence: Readonly<Record<string, string>> = {
+  most: 'Air and evaporation can carry most of the cooling.',
+  much: 'Air and evaporation can carry much of the cooling.',
+  some: 'Air and evaporation can carry some of the cooling.',
+  little: 'Air and evaporation can carry little of the cooling.',
+};
+
+export function bandWords(words: string | null): string | null {
+  return words === null ? null : (bandSentence[words] ?? null);
+}
+
+/** "Does not meet the brief: worst spell 61 h, 37 h over the 24 h allowed." */
+export function verdictSentence({ verdict, tolerances }: Pick<Shown, 'verdict' | 'tolerances'>): string {
+  if (verdict === 'no tolerance set') return 'The brief sets no tolerance, so there is no verdict.';
+  if (verdict === 'meets the brief') return 'Meets the brief: every tolerance holds.';
+  return `Does not meet the brief: ${list(tolerances.filter(({ holds }) => !holds).map(excessWords))}.`;
+}
+
+function excessWords({ tolerance, found, allowed, unit }: ToleranceAnswer): string {
+  return `${tolerance} ${sensible(found, unit)}, ${sensible(found - allowed, unit)} over the ${sensible(allowed, unit)} allowed`;
+}
+
+/** The columns that keep a grade from A, worst first. */
+export function costingColumns(columns: Place['gradeColumns']): Place['gradeColumns'] {
+  return columns.filter(({ grade }) => grade !== 'A').sort((a, b) => b.grade.localeCompare(a.grade));
+}
+
+export function sumOfClasses(ledger: Ledger): number {
+  return Object.values(ledger.classes).reduce((sum, count) => sum + count, 0);
+}
+
+/** Printed under every ledger; says plainly when the counts do not add up, which must never be hidden. */
+export function identitySentence(ledger: Ledger): string {
+  const sum = sumOfClasses(ledger);
+  if (sum === ledger.hours) return `The classes add up to ${number(sum)} hours.`;
+  return `The classes add up to ${number(sum)} hours, the year has ${number(ledger.hours)}: do not use this ledger.`;
+}
+
+/** Share of the hours with demand that are met; null without demand. */
+export function metWords(ledger: Ledger): string | null {
+  return ledger.demand === 0 ? null : shareOf((100 * ledger.met) / ledger.demand);
+}
+
+/** What stands in place of a number. */
+export function noScoreWords({ score, scoreNote }: Pick<MapStation, 'score' | 'scoreNote'>): string | null {
+  if (score !== null) return null;
+  const note = scoreNote ?? 'not judged yet';
+  return note.charAt(0).toUpperCase() + note.slice(1);
+}
+
+export function placeYearWords({ kind, year }: Place['years'][number]): string {
+  if (kind === 'actual' && year !== null) return `the year ${year}`;
+  return kind === 'derived' ? 'a derived year' : 'a typical year';
+}

@@ -1,0 +1,98 @@
+import { useQuery } from '@tanstack/react-query';
+import { useId } from 'react';
+import { ClassSwatch } from '../../charts/class-swatch.tsx';
+import { classMeaning, classWords, dampWords } from '../../charts/hour-class-words.ts';
+import type { Place } from '../../contract/runs.ts';
+import type { HourClass } from '../../engine/hour-classes/hour-class.ts';
+import { errorSentence } from '../../lib/api-error.ts';
+import { number } from '../../lib/format.ts';
+import { Button } from '../../ui/button.tsx';
+import { YearClothCanvas } from '../../ui/year-cloth-canvas.tsx';
+import { runHoursQuery } from './run-queries.ts';
+import { metWords } from './run-words.ts';
+
+const CLOTH_PX = 144;
+
+/** The year cloth of a place with its legend, across the sheet. */
+export function YearStrip({ place, teamId }: { place: Place; teamId: string }) {
+  const { shown, station } = place;
+  if (!shown) return null;
+  const met = metWords(shown.ledger);
+  return (
+    <section
+      aria-labelledby="year-cloth"
+      className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-2 lg:grid-cols-[13rem_minmax(0,1fr)_15.5rem]"
+    >
+      <div>
+        <h2 id="year-cloth" className="text-name">
+          The year at {station.name}
+        </h2>
+        <p className="mt-1 text-soft">
+          Each column is a day, each row an hour, midnight at the top.{' '}
+          {met === null
+            ? 'No hour with demand.'
+            : `${met} of the hours with demand are met by outdoor air or evaporation.`}
+        </p>
+      </div>
+      <Cloth teamId={teamId} runId={shown.runId} place={place} />
+      <Legend ledger={shown.ledger} />
+    </section>
+  );
+}
+
+function Cloth({ teamId, runId, place }: { teamId: string; runId: string; place: Place }) {
+  const codes = useQuery(runHoursQuery(teamId, runId));
+  if (codes.isError) {
+    return (
+      <p role="alert">
+        {errorSentence(codes.error)} <Button onClick={() => codes.refetch()}>Try again</Button>
+      </p>
+    );
+  }
+  if (codes.isPending) return <div style={{ height: CLOTH_PX + 40 }} aria-busy="true" className="bg-shade/50" />;
+  const ledger = place.shown?.ledger;
+  return (
+    <YearClothCanvas
+      codes={codes.data}
+      heightPx={CLOTH_PX}
+      label={`The year at ${place.station.name} hour by hour${ledger ? `: ${number(ledger.met)} of ${number(ledger.demand)} hours with demand are met` : ''}.`}
+      words={(hourClass) => (hourClass === 'damp' && ledger ? dampWords(ledger) : classWords[hourClass])}
+    />
+  );
+}
+
+const legendOrder: readonly HourClass[] = [
+  'air',
+  'direct',
+  'indirect',
+  'dewpoint',
+  'twostage',
+  'frozen',
+  'short',
+  'damp',
+  'beyond',
+  'idle',
+  'closed',
+  'missing',
+];
+
+/** The classes that this year holds. */
+function Legend({ ledger }: { ledger: NonNullable<Place['shown']>['ledger'] }) {
+  const id = useId();
+  const present = legendOrder.filter((hourClass) => ledger.classes[hourClass] > 0);
+  return (
+    <ul className="grid content-start gap-x-4 gap-y-0.5 text-fine max-lg:grid-cols-2">
+      {present.map((hourClass) => (
+        <li key={hourClass} className="flex items-baseline gap-2">
+          <span className="translate-y-[2px]">
+            <ClassSwatch hourClass={hourClass} id={`${id}-${hourClass}`} />
+          </span>
+          <span>
+            {hourClass === 'damp' ? dampWords(ledger) : classWords[hourClass]}
+            <span className="text-soft max-lg:hidden">, {classMeaning[hourClass]}</span>
+          </span>
+        </li>
+      ))}
+    </ul>
+  );
+}

@@ -1,0 +1,99 @@
+import { monthNames } from '../../charts/calendar.ts';
+import { inkOn } from '../../charts/ink-on.ts';
+import { RAMP_GRADIENT, rampColour } from '../../charts/ramp.ts';
+import type { YearFacts } from '../../contract/weather.ts';
+import { hours, number, share } from '../../lib/format.ts';
+
+const THRESHOLDS_K = [3, 6, 9, 12, 15] as const;
+const HOURS = Array.from({ length: 24 }, (_, hour) => hour + 1);
+/** The scale of the tint ends on a whole even kelvin, and never under this, so that a humid year does not look dry. */
+const LEAST_SCALE_K = 12;
+
+/** Mean depression by month and hour of day, as figures with a tint, and the hours over thresholds. */
+export function DepressionTable({ facts }: { facts: YearFacts }) {
+  const known = facts.meanDepressionK.flat().filter((value) => value !== null);
+  const scaleK = Math.max(LEAST_SCALE_K, 2 * Math.ceil(Math.max(0, ...known) / 2));
+  return (
+    <section aria-labelledby="depression">
+      <div className="mb-3 flex flex-wrap items-end justify-between gap-x-8 gap-y-3">
+        <h2 id="depression" className="text-name">
+          Wet-bulb depression
+        </h2>
+        <Thresholds facts={facts} />
+      </div>
+      <h3 className="mb-1">Mean depression by month and hour of day, K</h3>
+      <div className="scroll-inside">
+        <table className="w-full min-w-[58rem] border-collapse text-center text-fine">
+          <caption className="sr-only">
+            Mean wet-bulb depression in kelvin by month and hour ending in local standard time, with the share of hours
+            present in each month
+          </caption>
+          <thead>
+            <tr className="text-soft">
+              <th scope="col" className="w-10 text-left font-normal">
+                <span className="sr-only">Month</span>
+              </th>
+              {HOURS.map((hour) => (
+                <th key={hour} scope="col" className="pb-0.5 font-normal">
+                  {String(hour).padStart(2, '0')}
+                </th>
+              ))}
+              <th scope="col" className="pl-3 text-right font-normal">
+                Complete
+              </th>
+            </tr>
+          </thead>
+          <tbody>
+            {monthNames.map((name, month) => (
+              <tr key={name}>
+                <th scope="row" className="text-left font-normal text-soft">
+                  {name}
+                </th>
+                {HOURS.map((hour) => (
+                  <Figure key={hour} valueK={facts.meanDepressionK[month]?.[hour - 1] ?? null} scaleK={scaleK} />
+                ))}
+                <td className="pl-3 text-right whitespace-nowrap">{share(facts.monthCompletePct[month] ?? 0)}</td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </div>
+      <div className="mt-2 flex items-center gap-2 text-fine text-soft">
+        <span>0</span>
+        <span
+          aria-hidden="true"
+          className="h-2.5 w-40 border border-ink/40"
+          style={{ backgroundImage: RAMP_GRADIENT }}
+        />
+        <span>{number(scaleK)}&nbsp;K. Hours end at the figure above them, local standard time.</span>
+      </div>
+    </section>
+  );
+}
+
+function Figure({ valueK, scaleK }: { valueK: number | null; scaleK: number }) {
+  if (valueK === null) return <td className="text-soft">–</td>;
+  const colour = rampColour(valueK / scaleK);
+  return (
+    <td className="h-6 border border-paper" style={{ backgroundColor: colour, color: inkOn(colour) }}>
+      {number(valueK, valueK >= 9.95 ? 0 : 1)}
+    </td>
+  );
+}
+
+function Thresholds({ facts }: { facts: YearFacts }) {
+  const counts = new Map(facts.depressionHours.map(({ atLeastK, hours: count }) => [atLeastK, count]));
+  return (
+    <div>
+      <h3 className="mb-0.5">Hours with a depression of at least</h3>
+      <dl className="flex flex-wrap gap-x-6 gap-y-1">
+        {THRESHOLDS_K.map((atLeastK) => (
+          <div key={atLeastK} className="flex items-baseline gap-1.5">
+            <dt className="text-soft">{atLeastK}&nbsp;K</dt>
+            <dd className="font-semibold">{hours(counts.get(atLeastK) ?? 0)}</dd>
+          </div>
+        ))}
+      </dl>
+    </div>
+  );
+}

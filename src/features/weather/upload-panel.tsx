@@ -1,0 +1,155 @@
+import { useQueryClient } from '@tanstack/react-query';
+import { type DragEvent, type ReactNode, useRef, useState, useSyncExternalStore } from 'react';
+import { Link } from 'react-router-dom';
+import { listWeatherFiles, MAX_FILE_BYTES, type WeatherFile } from '../../contract/weather.ts';
+import { apiKey } from '../../lib/api-query.ts';
+import { fileSize, percent, plural } from '../../lib/format.ts';
+import { paths } from '../../lib/paths.ts';
+import { Button } from '../../ui/button.tsx';
+import { Progress } from '../../ui/progress.tsx';
+import { ReadingSteps } from './reading-steps.tsx';
+import { type Upload, uploadQueue } from './upload-queue.ts';
+
+/** Puts chosen or dropped files in line for a team. */
+export function useUpload(teamId: string): (files: readonly File[]) => void {
+  const client = useQueryClient();
+  return (files) =>
+    uploadQueue.add(teamId, files, () => client.invalidateQueries({ queryKey: apiKey(listWeatherFiles) }));
+}
+
+/** The button that opens the browser's choice of files. */
+export function UploadButton({ teamId, look = 'primary' }: { teamId: string; look?: 'primary' | 'plain' }) {
+  const input = useRef<HTMLInputElement>(null);
+  const upload = useUpload(teamId);
+  return (
+    <>
+      <input
+        ref={input}
+        type="file"
+        multiple
+        hidden
+        aria-label="Weather files"
+        onChange={(event) => {
+          upload([...(event.currentTarget.files ?? [])]);
+          event.currentTarget.value = '';
+        }}
+      />
+      <Button look={look} onClick={() => input.current?.click()}>
+        Upload files
+      </Button>
+    </>
+  );
+}
+
+/** Takes files that are dropped anywhere on what it holds, and says so while they hover. */
+export function DropArea({ teamId, children }: { teamId: string; children: ReactNode }) {
+  const upload = useUpload(teamId);
+  const [isOver, setIsOver] = useState(false);
+  const holdsFiles = (event: DragEvent) => event.dataTransfer.types.includes('Files');
+  return (
+    // biome-ignore lint/a11y/noStaticElementInteractions: dropping is the pointer's short cut; the button does the same
+    <div
+      className={`min-h-0 flex-1 ${isOver ? 'outline-2 -outline-offset-8 outline-indigo outline-dashed' : ''}`}
+      onDragOver={(event) => {
+        if (!holdsFiles(event)) return;
+        event.preventDefault();
+        setIsOver(true);
+      }}
+      onDragLeave={(event) => {
+        if (!event.currentTarget.contains(event.relatedTarget instanceof Node ? event.relatedTarget : null))
+          setIsOver(false);
+      }}
+      onDrop={(event) => {
+        if (!holdsFiles(event)) return;
+        event.preventDefault();
+        setIsOver(false);
+        upload([...event.dataTransfer.files]);
+      }}
+    >
+      {children}
+    </div>
+  );
+}
+
+export function DropHint() {
+  return (
+    <p className="border border-dashed border-[#b9af9b] px-4 py-3 text-center text-fine text-soft max-md:hidden">
+      Drop hourly EPW files anywhere here, one year each, up to {fileSize(MAX_FILE_BYTES)}.
+    </p>
+  );
+}
+
+/** What this page has sent or is sending, with what became of it. */
+export function UploadList({ teamId, items }: { teamId: string; items: readonly WeatherFile[] }) {
+  const uploads = useSyncExternalStore(uploadQueue.subscribe, uploadQueue.snapshot).filter(
+    (upload) => upload.teamId === teamId,
+  );
+  if (uploads.length === 0) return null;
+  const waiting = uploads.filter(({ state }) => state === 'waiting' || state === 'sending').length;
+  return (
+    <section aria-label="Uploads" className="border-y border-line bg-paper px-4 py-2.5">
+      <div className="flex items-baseline justify-between gap-4">
+        <h2 className="text-lead" role="status">
+          {waiting > 0
+            ? `Sending ${plural(waiting, 'file')}. You can leave this page.`
+            : `${plural(uploads.length, 'file')} sent`}
+        </h2>
+        <Button look="quiet" onClick={() => uploadQueue.clearEnded()}>
+          Clear the list
+        </Button>
+      </div>
+      <ul>
+        {uploads.map((upload) => (
+          <UploadRow key={upload.id} upload={upload} file={latestOf(upload, items)} />
+        ))}
+      </ul>
+    </section>
+  );
+}
+
+/** The file as the library now has it, else as the upload was answered. */
+function latestOf({ answer }: Upload, items: readonly WeatherFile[]): WeatherFile | null {
+  if (answer === null) return null;
+  return items.find((item) => item.id === answer.file.id) ?? answer.file;
+}
+
+function UploadRow({ upload, file }: { upload: Upload; file: WeatherFile | null }) {
+  return (
+    <li className="grid grid-cols-[minmax(0,16rem)_minmax(0,1fr)] items-center gap-x-4 gap-y-1 border-t border-line py-2 max-md:grid-cols-1">
+      <p className="truncate">
+        {file ? <Link to={paths.weatherFile.to(upload.teamId, file.id)}>{upload.name}</Link> : upload.name}{' '}
+        <span className="text-fine text-soft">{fileSize(upload.bytes)}</span>
+      </p>
+      <div className="text-fine">
+        {upload.state === 'waiting' ? <p className="text-soft">Waiting for its turn</p> : null}
+        {upload.state === 'sending' ? (
+          <div className="flex items-center gap-3">
+            <Progress label={`Sending ${upload.name}`} share={upload.sentShare} />
+            <span className="w-24 flex-none text-right">Sent {percent(upload.sentShare * 100, 0)}</span>
+          </div>
+        ) : null}
+        {upload.state === 'failed' ? <FailedUpload upload={upload} /> : null}
+        {file && upload.answer?.known ? (
+          <p>
+            Already here: these are the same bytes as{' '}
+            <Link to={paths.weatherFile.to(upload.teamId, file.id)}>{file.name}</Link>. Nothing was stored twice.
+          </p>
+        ) : null}
+        {file && !upload.answer?.known ? <ReadingSteps file={file} /> : null}
+      </div>
+    </li>
+  );
+}
+
+function FailedUpload({ upload }: { upload: Upload }) {
+  return (
+    <p className="font-medium text-madder" role="alert">
+      Not sent. {upload.problem}{' '}
+      {upload.bytes > 0 && upload.bytes <= MAX_FILE_BYTES ? (
+        <Button look="quiet" className="text-fine" onClick={() => uploadQueue.retry(upload.id)}>
+          Send it again
+        </Button>
+      ) : null}
+    </p>
+  );
+}

@@ -1,0 +1,73 @@
+import { useQuery } from '@tanstack/react-query';
+import { Link, useParams } from 'react-router-dom';
+import type { WeatherFileRecord } from '../../contract/weather.ts';
+import { errorSentence, isApiError } from '../../lib/api-error.ts';
+import { PageTitle } from '../../lib/page-title.tsx';
+import { paths } from '../../lib/paths.ts';
+import { useTeam } from '../../lib/team-scope.ts';
+import { Button } from '../../ui/button.tsx';
+import { Loading } from '../../ui/loading.tsx';
+import { Notice } from '../../ui/notice.tsx';
+import { DepressionTable } from './depression-table.tsx';
+import { DesignTable } from './design-table.tsx';
+import { Findings } from './findings.tsx';
+import { HoursAccount } from './hours-account.tsx';
+import { LibraryMargin } from './library-margin.tsx';
+import { RecordHeading } from './record-heading.tsx';
+import { RecordState } from './record-state.tsx';
+import { recordQuery } from './weather-queries.ts';
+import { recordTitle } from './weather-words.ts';
+
+export function WeatherRecordPage() {
+  const { teamId } = useTeam();
+  const { fileId = '' } = useParams();
+  const record = useQuery(recordQuery(teamId, fileId));
+  return (
+    <div className="grid flex-1 xl:grid-cols-[19rem_minmax(0,1fr)]">
+      <LibraryMargin teamId={teamId} fileId={fileId} />
+      <article className="min-w-0 border-line bg-paper px-8 pt-6 pb-16 max-sm:px-4 xl:border-l">
+        <Link to={paths.weather.to(teamId)} className="mb-3 inline-block text-fine xl:hidden">
+          All weather files
+        </Link>
+        {record.isPending ? <Loading what="the file's record" /> : null}
+        {record.isError ? <RecordProblem error={record.error} onRetry={() => record.refetch()} /> : null}
+        {record.data ? <Record record={record.data} /> : null}
+      </article>
+    </div>
+  );
+}
+
+function Record({ record }: { record: WeatherFileRecord }) {
+  const { file, facts } = record;
+  return (
+    <div className="grid max-w-[68rem] grid-cols-[minmax(0,1fr)] gap-8">
+      <PageTitle>{recordTitle(file)}</PageTitle>
+      <div className="grid gap-5">
+        <RecordHeading record={record} />
+        <RecordState record={record} />
+      </div>
+      <Findings findings={record.findings} asks={record.asks} isReading={file.status === 'reading'} />
+      {facts ? (
+        <>
+          <DepressionTable facts={facts} />
+          <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,20rem)_minmax(0,1fr)]">
+            <HoursAccount facts={facts} />
+            <DesignTable design={facts.design} isTypical={file.kind === 'typical'} />
+          </div>
+        </>
+      ) : null}
+    </div>
+  );
+}
+
+function RecordProblem({ error, onRetry }: { error: unknown; onRetry: () => void }) {
+  const isGone = isApiError(error, 'not_found') || isApiError(error, 'invalid_input');
+  return (
+    <>
+      <PageTitle>Weather file</PageTitle>
+      <Notice tone="wrong" live actions={isGone ? null : <Button onClick={onRetry}>Try again</Button>}>
+        {isGone ? 'There is no such weather file, or it belongs to a team that you are not in.' : errorSentence(error)}
+      </Notice>
+    </>
+  );
+}

@@ -1,0 +1,60 @@
+import type { Role } from '../../contract/accounts.ts';
+import type { FileStatus, ReadingStep, Severity, WeatherFile } from '../../contract/weather.ts';
+import { plural } from '../../lib/format.ts';
+
+/** Weather files are the engineers' to change; everyone else reads what they say. */
+export function mayChangeWeather(role: Role): boolean {
+  return role === 'engineer' || role === 'lead';
+}
+
+const statusWord: Readonly<Record<FileStatus, string>> = {
+  reading: 'Reading',
+  asks: 'Asks',
+  review: 'In review',
+  accepted: 'Accepted',
+  refused: 'Refused',
+  withdrawn: 'Withdrawn',
+  superseded: 'Superseded',
+};
+
+export const stepWord: Readonly<Record<ReadingStep, string>> = {
+  received: 'received',
+  reading: 'reading',
+  reducing: 'reducing',
+  storing: 'storing',
+};
+
+type Stated = Pick<WeatherFile, 'status' | 'step' | 'failure' | 'findingCounts'>;
+
+/** The status as it is printed, with what qualifies it: "In review, 2 doubts". */
+export function statusWords({ status, step, failure, findingCounts }: Stated): string {
+  if (failure !== null) return 'Stopped, a fault of ours';
+  if (status === 'reading' && step) return step === 'reading' ? 'Reading' : `Reading, ${stepWord[step]}`;
+  if (status === 'asks') return `Asks ${plural(Math.max(1, findingCounts.ask), 'question')}`;
+  if (status === 'review' && findingCounts.doubt > 0) return `In review, ${plural(findingCounts.doubt, 'doubt')}`;
+  return statusWord[status];
+}
+
+export function yearWords({ kind, year }: Pick<WeatherFile, 'kind' | 'year'>): string {
+  if (kind === 'typical') return 'Typical year';
+  if (kind === 'derived') return 'Derived year';
+  return kind === 'actual' && year !== null ? String(year) : '–';
+}
+
+/** "Korrel Pan, typical year", or the file's own name until a station is known. */
+export function recordTitle(file: Pick<WeatherFile, 'name' | 'station' | 'kind' | 'year'>): string {
+  if (!file.station) return file.name;
+  const year = yearWords(file);
+  return year === '–' ? file.station.name : `${file.station.name}, ${year.toLowerCase()}`;
+}
+
+/** Gravest first, as findings are listed. */
+export const severityOrder: readonly Severity[] = ['refuse', 'ask', 'doubt', 'repair', 'note'];
+
+export const severityTitle: Readonly<Record<Severity, string>> = {
+  refuse: 'Why it is refused',
+  ask: 'What it asks',
+  doubt: 'Doubts: used as they stand',
+  repair: 'Repairs: changed or filled by a rule',
+  note: 'Notes',
+};
