@@ -28,13 +28,13 @@ export type Finding = z.infer<typeof Finding>;
 export const Ask = z.object({ what: z.string(), message: z.string(), proposal: z.nullable(z.string()) });
 export type Ask = z.infer<typeof Ask>;
 
-/** The place that the file itself declares. */
+/** The place that the file itself declares; null is what it does not say (the file then asks). */
 export const DeclaredStation = z.object({
   name: z.string(),
-  latitude: z.number(),
-  longitude: z.number(),
+  latitude: z.nullable(z.number()),
+  longitude: z.nullable(z.number()),
   elevationM: z.nullable(z.number()),
-  utcOffsetH: z.number(),
+  utcOffsetH: z.nullable(z.number()),
   wmoNumber: z.nullable(z.string()),
 });
 export type DeclaredStation = z.infer<typeof DeclaredStation>;
@@ -76,8 +76,9 @@ export const YearFacts = z.object({
   assumedPressure: z.int(),
   belowZero: z.enum(['water', 'ice']),
   meanDryBulbC: z.number(),
-  meanWetBulbC: z.number(),
-  maxDepressionK: z.number(),
+  /** null while neither pressure nor elevation is known, so that no hour has a wet bulb. */
+  meanWetBulbC: z.nullable(z.number()),
+  maxDepressionK: z.nullable(z.number()),
   /** Hours with a depression of at least K kelvin, K = 1..25. */
   depressionHours: z.array(z.object({ atLeastK: z.int(), hours: z.int() })),
   /** Mean depression, K, by month (12) and hour of day (24); null where no hour is known. */

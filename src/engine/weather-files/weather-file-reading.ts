@@ -8,11 +8,13 @@ export type WeatherFormat = 'EPW';
 /** The place that a file declares for itself. */
 export interface DeclaredStation {
   readonly name: string;
-  readonly latitude: number;
-  readonly longitude: number;
+  /** Degrees, north and east positive; null when the file does not say, which it is then asked about. */
+  readonly latitude: number | null;
+  readonly longitude: number | null;
   /** null when the file does not say. */
   readonly elevationM: number | null;
-  readonly utcOffsetH: number;
+  /** Hours ahead of UTC; null when the file does not say, which it is then asked about. */
+  readonly utcOffsetH: number | null;
   readonly wmoNumber: string | null;
 }
 

@@ -1,0 +1,92 @@
+import { HOURS_PER_DAY } from '../conventions.ts';
+import { monthOfEachSlot } from './calendar.ts';
+
+const MONTHS = 12;
+const HUNDREDTHS_PER_BIN = 100;
+/** Bins of 1 K from 0; the last holds 63 K and more, which no weather reaches. */
+export const DEPRESSION_BINS = 64;
+/** Depressions for which "hours of at least so many K" are given, 1 to 25 K. */
+const HIGHEST_STEP_K = 25;
+
+export interface DepressionBin {
+  readonly month: number;
+  /** Lower edge of the bin, K: it holds depressions from binK to under binK + 1. */
+  readonly binK: number;
+  readonly hours: number;
+}
+
+/**
+ * Hours by month, hour of day and 1 K bin of depression: value at ((month - 1) x 24 + hour - 1) x 64 + bin, with month 1 to
+ * 12 and hour 1 to 24.
+ * @param depression hundredths of a kelvin in slot order, -1 where not known
+ */
+export function depressionHistogram(depression: Int32Array): Uint16Array {
+  const months = monthOfEachSlot(depression.length);
+  const histogram = new Uint16Array(MONTHS * HOURS_PER_DAY * DEPRESSION_BINS);
+  for (let slot = 0; slot < depression.length; slot++) {
+    const value = depression[slot] ?? -1;
+    if (value < 0) continue;
+    const bin = Math.min(DEPRESSION_BINS - 1, Math.floor(value / HUNDREDTHS_PER_BIN));
+    const row = ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
+    const at = row * DEPRESSION_BINS + bin;
+    histogram[at] = (histogram[at] ?? 0) + 1;
+  }
+  return histogram;
+}
+
+/** Month x bin rows of a histogram, those with hours only, in order of month and bin. */
+export function depressionBins(histogram: Uint16Array): readonly DepressionBin[] {
+  const rows: DepressionBin[] = [];
+  for (let month = 1; month <= MONTHS; month++) {
+    for (let binK = 0; binK < DEPRESSION_BINS; binK++) {
+      let hours = 0;
+      for (let hour = 0; hour < HOURS_PER_DAY; hour++) {
+        hours += histogram[((month - 1) * HOURS_PER_DAY + hour) * DEPRESSION_BINS + binK] ?? 0;
+      }
+      if (hours > 0) rows.push({ month, binK, hours });
+    }
+  }
+  return rows;
+}
+
+export interface HoursAtLeast {
+  readonly atLeastK: number;
+  /** As read: over the hours that are known. */
+  readonly hours: number;
+  /** Scaled to every hour of the year by month x hour of day; null when some month lacks an hour of day altogether. */
+  readonly scaledHours: number | null;
+}
+
+/** Hours with a depression of at least 1, 2, .. 25 K. */
+export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
+  const scale = cellScale(depression);
+  return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => {
+    const atLeastK = index + 1;
+    let hours = 0;
+    let scaled = 0;
+    for (let slot = 0; slot < depression.length; slot++) {
+      if ((depression[slot] ?? -1) < atLeastK * HUNDREDTHS_PER_BIN) continue;
+      hours++;
+      scaled += scale?.[slot] ?? 0;
+    }
+    return { atLeastK, hours, scaledHours: scale === null ? null : scaled };
+  });
+}
+
+/**
+ * What each known hour stands for: the hours of its month and hour of day over those that are known. A file that lacks only
+ * nights must not look hotter or drier. Null when some cell is wholly unknown and nothing can stand for it.
+ */
+function cellScale(depression: Int32Array): Float64Array | null {
+  const months = monthOfEachSlot(depression.length);
+  const cellOf = (slot: number) => ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
+  const all = new Float64Array(MONTHS * HOURS_PER_DAY);
+  const known = new Float64Array(MONTHS * HOURS_PER_DAY);
+  for (let slot = 0; slot < depression.length; slot++) {
+    const cell = cellOf(slot);
+    all[cell] = (all[cell] ?? 0) + 1;
+    if ((depression[slot] ?? -1) >= 0) known[cell] = (known[cell] ?? 0) + 1;
+  }
+  if (known.includes(0)) return null;
+  return Float64Array.from(depression, (_value, slot) => (all[cellOf(slot)] ?? 0) / (known[cellOf(slot)] ?? 1));
+}

@@ -1,0 +1,106 @@
+/**
+ * Layout 1 of a weather year: dry bulb int16 0.01 °C, humidity ratio uint16 2e-6 kg/kg, pressure uint16 2 Pa, flags uint8,
+ * slot order, each value rounded to the nearest step (halves upwards), missing -32768 or 65535. Serialised little-endian.
+ */
+import { MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
+import type { PackedYear } from './weather-year.ts';
+
+const HUMIDITY_RATIO_STEP = 2e-6;
+const PRESSURE_STEP_PA = 2;
+const DRY_BULB_STEP_C = 0.01;
+const MOST_INT16 = 32_767;
+
+/** The columns as numbers, NaN where missing. */
+export interface YearColumns {
+  readonly dryBulbC: Float64Array;
+  readonly humidityRatio: Float64Array;
+  readonly pressurePa: Float64Array;
+}
+
+/** Packs hourly values; those beyond the range of a column (a humidity ratio over 0.131) are set to its end. */
+export function packYear(columns: YearColumns & { readonly flags: Uint8Array }): PackedYear {
+  return {
+    dryBulb: Int16Array.from(columns.dryBulbC, (value) => packed(value / DRY_BULB_STEP_C, 'int16')),
+    humidityRatio: Uint16Array.from(columns.humidityRatio, (value) => packed(value / HUMIDITY_RATIO_STEP, 'uint16')),
+    pressure: Uint16Array.from(columns.pressurePa, (value) => packed(value / PRESSURE_STEP_PA, 'uint16')),
+    flags: Uint8Array.from(columns.flags),
+  };
+}
+
+function packed(steps: number, type: 'int16' | 'uint16'): number {
+  if (Number.isNaN(steps)) return type === 'int16' ? MISSING_INT16 : MISSING_UINT16;
+  const rounded = Math.round(steps);
+  return type === 'int16'
+    ? Math.min(MOST_INT16, Math.max(-MOST_INT16, rounded))
+    : Math.min(MISSING_UINT16 - 1, Math.max(0, rounded));
+}
+
+/** The numbers that the packed columns stand for. */
+export function unpackYear(year: PackedYear): YearColumns {
+  return {
+    dryBulbC: Float64Array.from(year.dryBulb, (value) => (value === MISSING_INT16 ? Number.NaN : value / 100)),
+    humidityRatio: Float64Array.from(year.humidityRatio, (value) =>
+      value === MISSING_UINT16 ? Number.NaN : value * HUMIDITY_RATIO_STEP,
+    ),
+    pressurePa: Float64Array.from(year.pressure, (value) =>
+      value === MISSING_UINT16 ? Number.NaN : value * PRESSURE_STEP_PA,
+    ),
+  };
+}
+
+export interface PackedBytes {
+  readonly dryBulb: Uint8Array;
+  readonly humidityRatio: Uint8Array;
+  readonly pressure: Uint8Array;
+  readonly flags: Uint8Array;
+}
+
+/** The columns as they are stored and hashed: little-endian whatever the machine. */
+export function packedBytes(year: PackedYear): PackedBytes {
+  return {
+    dryBulb: bytesOf16(year.dryBulb),
+    humidityRatio: bytesOf16(year.humidityRatio),
+    pressure: bytesOf16(year.pressure),
+    flags: Uint8Array.from(year.flags),
+  };
+}
+
+/** A 16-bit column as little-endian bytes; serves the histogram too. */
+export function bytesOf16(values: Int16Array | Uint16Array): Uint8Array {
+  const bytes = new Uint8Array(values.length * 2);
+  for (let index = 0; index < values.length; index++) {
+    const value = values[index] ?? 0;
+    bytes[2 * index] = value & 0xff;
+    bytes[2 * index + 1] = (value >> 8) & 0xff;
+  }
+  return bytes;
+}
+
+/** Little-endian bytes as unsigned 16-bit values. */
+export function uint16FromBytes(bytes: Uint8Array): Uint16Array {
+  return Uint16Array.from({ length: bytes.length >> 1 }, (_none, index) => unsigned16(bytes, index));
+}
+
+function unsigned16(bytes: Uint8Array, index: number): number {
+  return (bytes[2 * index] ?? 0) | ((bytes[2 * index + 1] ?? 0) << 8);
+}
+
+/**
+ * The inverse of `packedBytes`. @throws RangeError when the lengths are not those of one year of 8760 or 8784 slots
+ */
+export function packedFromBytes(bytes: PackedBytes): PackedYear {
+  const slots = bytes.flags.length;
+  const lengths = [bytes.dryBulb.length, bytes.humidityRatio.length, bytes.pressure.length];
+  const known = slots === SLOTS_PER_YEAR || slots === SLOTS_PER_LEAP_YEAR;
+  if (!known || lengths.some((length) => length !== 2 * slots)) {
+    throw new RangeError(
+      `packed columns of ${lengths.join(', ')} and ${slots} bytes, expected 2, 2, 2 and 1 for each of 8760 or 8784 slots`,
+    );
+  }
+  return {
+    dryBulb: Int16Array.from(uint16FromBytes(bytes.dryBulb), (value) => (value > MOST_INT16 ? value - 65_536 : value)),
+    humidityRatio: uint16FromBytes(bytes.humidityRatio),
+    pressure: uint16FromBytes(bytes.pressure),
+    flags: Uint8Array.from(bytes.flags),
+  };
+}

@@ -1,0 +1,99 @@
+import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
+import type { UsableReading } from '../weather-files/weather-file-reading.ts';
+import {
+  type DepressionBin,
+  depressionBins,
+  depressionHistogram,
+  type HoursAtLeast,
+  hoursAtLeast,
+} from './depression-hours.ts';
+import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
+import { depressionHundredths, dewPointColumn, wetBulbColumn } from './derived-columns.ts';
+import { type DesignValues, designValues } from './design-values.ts';
+import { packYear, unpackYear } from './packed-columns.ts';
+import type { WeatherYear } from './weather-year.ts';
+import {
+  countHours,
+  depressionCurve,
+  type HourCounts,
+  meanOf,
+  meansByMonthAndHour,
+  monthCompleteness,
+  monthlyMeans,
+} from './year-summary.ts';
+
+/** The figures of a weather year; every one is computed from its packed columns. */
+export interface YearFacts extends HourCounts {
+  readonly belowZero: BelowZeroPhase;
+  readonly meanDryBulbC: number;
+  /** null while neither pressure nor elevation is known, so that no hour has a wet bulb; so is `maxDepressionK`. */
+  readonly meanWetBulbC: number | null;
+  readonly maxDepressionK: number | null;
+  /** Hours with a depression of at least K kelvin, K = 1..25, as read and scaled by month x hour of day. */
+  readonly depressionHours: readonly HoursAtLeast[];
+  /** Mean depression, K, by month (12) and hour of day (24); null where no hour is known. */
+  readonly meanDepressionK: readonly (readonly (number | null)[])[];
+  /** Share of hours present, %, by month. */
+  readonly monthCompletePct: readonly number[];
+  /** Means by month, January first; null where no hour is known. */
+  readonly monthlyDryBulbC: readonly (number | null)[];
+  readonly monthlyWetBulbC: readonly (number | null)[];
+  readonly monthlyDepressionK: readonly (number | null)[];
+  /** Depression, K, reached or passed in 0, 1, .. 100 % of the known hours; empty when none is known. */
+  readonly depressionCurveK: readonly number[];
+  /** Longest run of hours with a depression under 5 K; null without such an hour. */
+  readonly lowDepressionSpell: DepressionSpell | null;
+  readonly design: DesignValues;
+}
+
+export interface ReducedYear {
+  readonly year: WeatherYear;
+  /** Hours by month x hour of day x 1 K bin; the layout is stated at `depressionHistogram`. */
+  readonly histogram: Uint16Array;
+  /** Month x bin rows with hours. */
+  readonly depressionHours: readonly DepressionBin[];
+  readonly design: DesignValues;
+  readonly facts: YearFacts;
+}
+
+/** Zone of a file that does not say, while it asks: the nearest whole hour of its longitude. */
+const DEGREES_PER_HOUR = 15;
+
+/**
+ * Reduces the hours of a reading to a weather year: packed columns, depression hours, design values and facts.
+ * Pure and deterministic: the same reading gives the same bytes.
+ */
+export function reduceYear(reading: UsableReading): ReducedYear {
+  const packed = packYear(reading.hours);
+  const { dryBulbC } = unpackYear(packed);
+  const wetBulbC = wetBulbColumn(packed);
+  const depression = depressionHundredths(packed, wetBulbC);
+  const depressionK = Float64Array.from(depression, (value) => (value < 0 ? Number.NaN : value / 100));
+  const histogram = depressionHistogram(depression);
+  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(packed) });
+  const { station } = reading;
+  const offsetH = station.utcOffsetH ?? Math.round((station.longitude ?? 0) / DEGREES_PER_HOUR);
+  const known = depressionK.filter((value) => !Number.isNaN(value));
+  return {
+    year: { kind: reading.kind, year: reading.year, utcOffsetMin: Math.round(60 * offsetH), packed },
+    histogram,
+    depressionHours: depressionBins(histogram),
+    design,
+    facts: {
+      ...countHours(packed),
+      belowZero: reading.belowZero,
+      meanDryBulbC: meanOf(dryBulbC) ?? 0,
+      meanWetBulbC: meanOf(wetBulbC),
+      maxDepressionK: known.length === 0 ? null : known.reduce((a, b) => Math.max(a, b)),
+      depressionHours: hoursAtLeast(depression),
+      meanDepressionK: meansByMonthAndHour(depressionK),
+      monthCompletePct: monthCompleteness(packed),
+      monthlyDryBulbC: monthlyMeans(dryBulbC),
+      monthlyWetBulbC: monthlyMeans(wetBulbC),
+      monthlyDepressionK: monthlyMeans(depressionK),
+      depressionCurveK: depressionCurve(depression),
+      lowDepressionSpell: longestLowDepression(depression, reading.kind),
+      design,
+    },
+  };
+}

@@ -1,0 +1,111 @@
+/** Counts and means of a weather year, from its packed columns. */
+import { HOURS_PER_DAY, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
+import { monthOfEachSlot, monthStartSlots } from './calendar.ts';
+import { dryBulbProvenance, humidityProvenance, pressureProvenance } from './hour-flags.ts';
+import type { PackedYear } from './weather-year.ts';
+
+const MONTHS = 12;
+
+export interface HourCounts {
+  /** All slots: measured + estimated + repaired + missing. */
+  readonly hours: number;
+  readonly measured: number;
+  /** Dry bulb or humidity interpolated or modelled by the source. */
+  readonly estimated: number;
+  /** Any value changed or filled by a rule of ours. */
+  readonly repaired: number;
+  /** Dry bulb, humidity or pressure not known. */
+  readonly missing: number;
+  /** Known hours whose pressure is assumed. */
+  readonly assumedPressure: number;
+}
+
+/** Counts every slot once: missing before repaired before estimated before measured. */
+export function countHours(year: PackedYear): HourCounts {
+  const counts = { hours: year.flags.length, measured: 0, estimated: 0, repaired: 0, missing: 0, assumedPressure: 0 };
+  for (let slot = 0; slot < year.flags.length; slot++) {
+    if (!isKnown(year, slot)) {
+      counts.missing++;
+      continue;
+    }
+    const flags = year.flags[slot] ?? 0;
+    const dryBulb = dryBulbProvenance(flags);
+    const humidity = humidityProvenance(flags);
+    const pressure = pressureProvenance(flags);
+    if (pressure === 'estimated') counts.assumedPressure++;
+    if (dryBulb === 'repaired' || humidity === 'repaired' || pressure === 'repaired') counts.repaired++;
+    else if (dryBulb === 'estimated' || humidity === 'estimated') counts.estimated++;
+    else counts.measured++;
+  }
+  return counts;
+}
+
+function isKnown(year: PackedYear, slot: number): boolean {
+  return (
+    year.dryBulb[slot] !== MISSING_INT16 &&
+    year.humidityRatio[slot] !== MISSING_UINT16 &&
+    year.pressure[slot] !== MISSING_UINT16
+  );
+}
+
+/** Share of hours with dry bulb, humidity and pressure, %, January first. */
+export function monthCompleteness(year: PackedYear): readonly number[] {
+  const starts = monthStartSlots(year.flags.length);
+  return Array.from({ length: MONTHS }, (_none, index) => {
+    const start = starts[index] ?? 0;
+    const end = starts[index + 1] ?? 0;
+    let known = 0;
+    for (let slot = start; slot < end; slot++) if (isKnown(year, slot)) known++;
+    return (100 * known) / (end - start);
+  });
+}
+
+/** Mean of the known values of a column, or null without any. */
+export function meanOf(column: Float64Array): number | null {
+  const known = column.filter((value) => !Number.isNaN(value));
+  return known.length === 0 ? null : known.reduce((sum, value) => sum + value, 0) / known.length;
+}
+
+/** Mean of the known values of each month, January first; null where none is known. */
+export function monthlyMeans(column: Float64Array): readonly (number | null)[] {
+  const starts = monthStartSlots(column.length);
+  return Array.from({ length: MONTHS }, (_none, index) => meanOf(column.subarray(starts[index], starts[index + 1])));
+}
+
+/** Mean of the known values by month (12) and hour of day (24); null where none is known. */
+export function meansByMonthAndHour(column: Float64Array): readonly (readonly (number | null)[])[] {
+  const months = monthOfEachSlot(column.length);
+  const sums = new Float64Array(MONTHS * HOURS_PER_DAY);
+  const counts = new Uint16Array(MONTHS * HOURS_PER_DAY);
+  for (let slot = 0; slot < column.length; slot++) {
+    const value = column[slot] ?? Number.NaN;
+    if (Number.isNaN(value)) continue;
+    const cell = ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
+    sums[cell] = (sums[cell] ?? 0) + value;
+    counts[cell] = (counts[cell] ?? 0) + 1;
+  }
+  return Array.from({ length: MONTHS }, (_month, month) =>
+    Array.from({ length: HOURS_PER_DAY }, (_hour, hour) => {
+      const cell = month * HOURS_PER_DAY + hour;
+      const count = counts[cell] ?? 0;
+      return count === 0 ? null : (sums[cell] ?? 0) / count;
+    }),
+  );
+}
+
+/**
+ * Cumulative curve of the depression: the value, K, reached or passed in 0, 1, .. 100 % of the known hours (place
+ * floor(percent x (N - 1) / 100) downwards); empty when no hour is known.
+ * @param depression hundredths of a kelvin in slot order, -1 where not known
+ */
+export function depressionCurve(depression: Int32Array): readonly number[] {
+  const downwards = depression
+    .filter((value) => value >= 0)
+    .sort()
+    .reverse();
+  if (downwards.length === 0) return [];
+  return Array.from(
+    { length: 101 },
+    (_none, percent) => (downwards[Math.floor((percent * (downwards.length - 1)) / 100)] ?? 0) / 100,
+  );
+}

@@ -1,0 +1,137 @@
+/** What is said about gaps, repairs and estimates once the hours stand. */
+import { monthNames, monthOfEachSlot } from '../../reduction/calendar.ts';
+import { dryBulbProvenance, humidityProvenance, pressureProvenance } from '../../reduction/hour-flags.ts';
+import { MONTH_COUNTS_FROM_PCT, MOST_REPAIRED_PCT } from '../../reduction/month-completeness.ts';
+import { type FindingList, hoursPhrase, whole } from '../finding-list.ts';
+import type { HourColumns } from '../weather-file-reading.ts';
+import { forEachRun, linesOfRun } from './step-columns.ts';
+
+const REPAIRED_DOUBT_PCT = 10;
+const ESTIMATED_DOUBT_PCT = 40;
+
+/**
+ * Tells every gap: hours without a row, or without a dry bulb or a humidity in it.
+ * @param gap 1 where a slot lacked one of them before it was filled
+ */
+export function tellGaps(hours: HourColumns, gap: Uint8Array, findings: FindingList): void {
+  forEachRun(
+    gap.length,
+    (slot) => gap[slot] === 1,
+    (start, end) => {
+      const own = linesOfRun(hours.lines, start, end);
+      const before = hours.lines[start - 1] ?? 0;
+      const after = hours.lines[end] ?? 0;
+      let filled = 0;
+      for (let slot = start; slot < end; slot++) if (isKnown(hours, slot)) filled++;
+      const where =
+        own.first > 0 ? `on line ${own.first}` : before > 0 ? `after line ${before}` : `before line ${after}`;
+      const what = own.first > 0 ? 'have no usable dry bulb or humidity, first' : 'are absent';
+      const done =
+        filled === 0
+          ? 'They stay missing.'
+          : filled === end - start
+            ? 'They are filled on a straight line between their neighbours.'
+            : `${hoursPhrase(filled)} of them could be filled; the rest stay missing.`;
+      findings.add({
+        code: 'time-gap',
+        severity: 'note',
+        line: own.first || before || after,
+        lastLine: own.last || before || after,
+        count: end - start,
+        message: () =>
+          end - start === 1
+            ? `1 hour ${own.first > 0 ? 'has no usable dry bulb or humidity,' : 'is absent'} ${where}. It ${filled === 1 ? 'is filled on a straight line between its neighbours' : 'stays missing'}.`
+            : `${hoursPhrase(end - start)} ${what} ${where}. ${done}`,
+      });
+    },
+  );
+}
+
+function isKnown(hours: HourColumns, slot: number): boolean {
+  return !Number.isNaN((hours.dryBulbC[slot] ?? Number.NaN) + (hours.humidityRatio[slot] ?? Number.NaN));
+}
+
+/**
+ * Tells months that do not count, a much repaired year and a much estimated one; refuses a file without one whole month.
+ * @param input.pressureKnown false while neither pressure nor elevation is known: humidity then waits for the answer
+ */
+export function tellCoverage(input: { hours: HourColumns; humidityPresent: Uint8Array }, findings: FindingList): void {
+  const { hours, humidityPresent } = input;
+  const slotCount = hours.dryBulbC.length;
+  const months = monthOfEachSlot(slotCount);
+  const present = new Float64Array(13);
+  const all = new Float64Array(13);
+  let repaired = 0;
+  let known = 0;
+  for (let slot = 0; slot < slotCount; slot++) {
+    const month = months[slot] ?? 0;
+    all[month] = (all[month] ?? 0) + 1;
+    if (Number.isNaN(hours.dryBulbC[slot]) || humidityPresent[slot] === 0) continue;
+    present[month] = (present[month] ?? 0) + 1;
+    known++;
+    const flags = hours.flags[slot] ?? 0;
+    const provenances = [dryBulbProvenance(flags), humidityProvenance(flags), pressureProvenance(flags)];
+    if (provenances.includes('repaired')) repaired++;
+  }
+  const shares = monthNames.map((_name, index) => (100 * (present[index + 1] ?? 0)) / (all[index + 1] ?? 1));
+  const short = shares.flatMap((pct, index) =>
+    pct < MONTH_COUNTS_FROM_PCT ? [`${monthNames[index]} (${Math.floor(pct)} %)`] : [],
+  );
+  if (short.length === 12) {
+    findings.add({
+      code: 'too-few-rows',
+      severity: 'refuse',
+      count: known,
+      message: () =>
+        `Only ${hoursPhrase(known)} of the year have dry bulb and humidity, and no month has 90 % of its hours: nothing can be counted. Bring a file with whole months.`,
+    });
+    return;
+  }
+  if (short.length > 0) {
+    findings.add({
+      code: 'coverage',
+      severity: 'doubt',
+      count: slotCount - known,
+      message: () =>
+        `${short.length === 1 ? 'One month has' : `${short.length} months have`} fewer than 90 % of the hours and do${short.length === 1 ? 'es' : ''} not count: ${short.join(', ')}. Annual figures are withheld; the other months are shown.`,
+    });
+  }
+  tellRepaired((100 * repaired) / slotCount, repaired, findings);
+}
+
+function tellRepaired(pct: number, repaired: number, findings: FindingList): void {
+  if (pct <= REPAIRED_DOUBT_PCT) return;
+  const withheld = pct > MOST_REPAIRED_PCT ? ' That is more than 35 %, so annual figures are withheld.' : '';
+  findings.add({
+    code: 'much-repaired',
+    severity: 'doubt',
+    count: repaired,
+    message: () => `${whole(repaired)} hours, ${pct.toFixed(0)} % of the year, hold a repaired value.${withheld}`,
+  });
+}
+
+/** Tells what the source's own flags say about the hours. */
+export function tellSourceFlags(input: { hours: HourColumns; informative: boolean }, findings: FindingList): void {
+  if (!input.informative) {
+    findings.add({
+      code: 'source-flags-uniform',
+      severity: 'note',
+      message: () =>
+        'The source flags are the same in every row or are not there: they do not tell measured values from estimated ones.',
+    });
+    return;
+  }
+  const { flags } = input.hours;
+  const estimated = flags.filter(
+    (flag) => dryBulbProvenance(flag) === 'estimated' || humidityProvenance(flag) === 'estimated',
+  ).length;
+  if (estimated === 0) return;
+  const pct = (100 * estimated) / flags.length;
+  findings.add({
+    code: 'source-estimated',
+    severity: pct >= ESTIMATED_DOUBT_PCT ? 'doubt' : 'note',
+    count: estimated,
+    message: () =>
+      `By the source's own flags dry bulb or humidity is interpolated or modelled in ${whole(estimated)} hours, ${pct.toFixed(0)} % of the year.`,
+  });
+}

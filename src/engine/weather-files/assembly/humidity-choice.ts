@@ -1,0 +1,146 @@
+/** Which humidity serves: decided for the whole file, never hour by hour. */
+import {
+  type BelowZeroPhase,
+  dewPointC as dewPointOfState,
+  humidityRatioFromDewPoint,
+  humidityRatioFromRelativeHumidity,
+  relativeHumidityOfDewPointPct,
+} from '../../psychrometrics/moist-air.ts';
+import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
+import { type FindingList, whole } from '../finding-list.ts';
+import type { StepColumns } from './step-columns.ts';
+
+export type HumiditySource = 'dew point' | 'relative humidity';
+
+const DISAGREES_POINTS = 5;
+const NORMAL_SHARE = 0.02;
+const STOP_SHARE = 0.5;
+const NEARLY_ALL = 0.98;
+
+/**
+ * Dew point where it is there and agrees with the relative humidity (5 points, 98 % of the hours). Up to half of the hours
+ * disagreeing: dew point, with both annual results said. More: a person is asked, since the column may hold the wet bulb.
+ * @returns null when the file has neither, which is told as `no-humidity`
+ */
+export function chooseHumidity(
+  input: { steps: StepColumns; belowZero: BelowZeroPhase; dewPointUnfit: boolean },
+  findings: FindingList,
+): HumiditySource | null {
+  const { belowZero, steps } = input;
+  const dry = (step: number) => steps.dryBulbC[step] ?? Number.NaN;
+  const hours = steps.dryBulbC.filter((value) => !Number.isNaN(value)).length;
+  const dewHours = steps.dewPointC.filter((value, step) => !Number.isNaN(value + dry(step))).length;
+  const rhHours = steps.relativeHumidityPct.filter((value, step) => !Number.isNaN(value + dry(step))).length;
+  if (dewHours === 0 && rhHours === 0) {
+    findings.add({
+      code: 'no-humidity',
+      severity: 'refuse',
+      message: () =>
+        'The file holds neither dew point nor relative humidity. The wet bulb needs one of them: bring a file that has it.',
+    });
+    return null;
+  }
+  if (rhHours > 0 && (input.dewPointUnfit || (dewHours < NEARLY_ALL * hours && dewHours < rhHours))) {
+    return 'relative humidity';
+  }
+  const disagreement = countDisagreement(steps, belowZero);
+  if (disagreement.share > STOP_SHARE) askWhatTheColumnHolds(steps, belowZero, findings);
+  else if (disagreement.share > NORMAL_SHARE) {
+    findings.add({
+      code: 'rh-dew-disagree',
+      severity: 'doubt',
+      line: disagreement.firstLine,
+      count: Math.round(disagreement.count / steps.stepsPerHour),
+      message: () =>
+        `Relative humidity and dew point disagree by more than 5 points in ${whole(disagreement.count / steps.stepsPerHour)} hours, ${(100 * disagreement.share).toFixed(1)} % of those with both, first on line ${disagreement.firstLine}. The dew point is used. ${bothResults(steps, belowZero)}`,
+    });
+  }
+  return 'dew point';
+}
+
+function countDisagreement(
+  steps: StepColumns,
+  belowZero: BelowZeroPhase,
+): { count: number; share: number; firstLine: number } {
+  let compared = 0;
+  let count = 0;
+  let firstLine = 0;
+  for (let step = 0; step < steps.dryBulbC.length; step++) {
+    const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
+    const dewPointC = steps.dewPointC[step] ?? Number.NaN;
+    const filePct = steps.relativeHumidityPct[step] ?? Number.NaN;
+    if (Number.isNaN(dryBulbC + dewPointC + filePct)) continue;
+    compared++;
+    if (Math.abs(filePct - relativeHumidityOfDewPointPct(dryBulbC, dewPointC, belowZero)) <= DISAGREES_POINTS) continue;
+    count++;
+    if (firstLine === 0) firstLine = steps.lines[step] ?? 0;
+  }
+  return { count, share: compared === 0 ? 0 : count / compared, firstLine };
+}
+
+/** Humidity ratio of each step from one of the two columns; NaN where something is missing. */
+export function humidityRatios(
+  input: { steps: StepColumns; dryBulbC: Float64Array; belowZero: BelowZeroPhase },
+  source: HumiditySource,
+): Float64Array {
+  const { belowZero, steps } = input;
+  return Float64Array.from(input.dryBulbC, (dryBulbC, step) => {
+    const pressurePa = steps.pressurePa[step] ?? Number.NaN;
+    const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
+    const value = column[step] ?? Number.NaN;
+    if (Number.isNaN(dryBulbC + pressurePa + value)) return Number.NaN;
+    return source === 'dew point'
+      ? humidityRatioFromDewPoint({ dryBulbC, dewPointC: value, pressurePa, belowZero })
+      : humidityRatioFromRelativeHumidity({ dryBulbC, relativeHumidityPct: value, pressurePa, belowZero });
+  });
+}
+
+/** The year's mean wet bulb by either column, over the hours that have both. */
+function bothResults(steps: StepColumns, belowZero: BelowZeroPhase): string {
+  const input = { steps, dryBulbC: steps.dryBulbC, belowZero };
+  const fromDew = humidityRatios(input, 'dew point');
+  const fromRh = humidityRatios(input, 'relative humidity');
+  const sums = { hours: 0, dew: 0, rh: 0 };
+  for (let step = 0; step < fromDew.length; step++) {
+    const dew = fromDew[step] ?? Number.NaN;
+    const rh = fromRh[step] ?? Number.NaN;
+    if (Number.isNaN(dew + rh)) continue;
+    const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
+    const pressurePa = steps.pressurePa[step] ?? Number.NaN;
+    sums.hours++;
+    sums.dew += wetBulbC(dryBulbC, dew, pressurePa);
+    sums.rh += wetBulbC(dryBulbC, rh, pressurePa);
+  }
+  if (sums.hours === 0) return 'Without a pressure the two cannot be compared.';
+  const mean = (sum: number) => (sum / sums.hours).toFixed(2);
+  return `The mean wet bulb is ${mean(sums.dew)} °C by the dew point and ${mean(sums.rh)} °C by the relative humidity.`;
+}
+
+/** Whether the dew-point column fits the wet bulb of dry bulb and relative humidity better than their dew point. */
+function askWhatTheColumnHolds(steps: StepColumns, belowZero: BelowZeroPhase, findings: FindingList): void {
+  const ratios = humidityRatios({ steps, dryBulbC: steps.dryBulbC, belowZero }, 'relative humidity');
+  let compared = 0;
+  let fromWet = 0;
+  let fromDew = 0;
+  for (let step = 0; step < ratios.length; step++) {
+    const ratio = ratios[step] ?? Number.NaN;
+    const column = steps.dewPointC[step] ?? Number.NaN;
+    if (Number.isNaN(ratio + column)) continue;
+    const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
+    const pressurePa = steps.pressurePa[step] ?? Number.NaN;
+    compared++;
+    fromWet += Math.abs(column - wetBulbC(dryBulbC, ratio, pressurePa));
+    fromDew += Math.abs(column - dewPointOfState(dryBulbC, ratio, pressurePa));
+  }
+  const isWet = compared > 0 && fromWet < fromDew;
+  const off = (sum: number) => `${(sum / Math.max(1, compared)).toFixed(1)} K`;
+  const evidence = isWet
+    ? `The column fits the wet bulb to ${off(fromWet)} and the dew point only to ${off(fromDew)}: it seems to hold the wet bulb.`
+    : `The column does not fit the wet bulb better (${off(fromWet)}) than the dew point (${off(fromDew)}).`;
+  findings.ask('dew-is-wet-bulb', {
+    count: compared,
+    message: () =>
+      `Relative humidity and dew point disagree by more than 5 points in over half of the hours. ${evidence} The dew-point column has been used as it stands meanwhile.`,
+    proposal: isWet ? 'Read the dew-point column as wet bulb.' : 'Use the relative humidity.',
+  });
+}

@@ -1,0 +1,212 @@
+/**
+ * Station pressure: the file's own; without any, the standard atmosphere at the elevation. Spikes and ramps are replaced,
+ * gaps are filled, and the mean is held against the elevation, since sea-level pressure or a wrong elevation costs up to a
+ * kelvin of wet bulb.
+ */
+import { standardPressurePa } from '../../psychrometrics/pressure.ts';
+import { type FindingList, linesPhrase, whole } from '../finding-list.ts';
+import { VALUE } from './source-rows.ts';
+import { forEachRun, linesOfRun, type StepColumns } from './step-columns.ts';
+
+const LIMITS_PA = { low: 31_000, high: 110_000 } as const;
+/** Hectopascals written into a column of pascals. */
+const HECTOPASCAL_LIMITS = { low: 310, high: 1_100 } as const;
+const FAR_FROM_MEDIAN = 0.06;
+const CONSTANT_HOURS = 8_000;
+const SEA_LEVEL_PA = 101_325;
+const NEAR_SEA_LEVEL = 0.012;
+const SEA_LEVEL_FROM_M = 150;
+const ELEVATION_NOTE = 0.015;
+const ELEVATION_ASK = 0.03;
+
+/**
+ * Fills the pressure column: afterwards it has no gap unless neither pressure nor elevation is known. Assumed values carry
+ * the bit `VALUE.pressure` in `estimated`, replaced ones in `repaired`.
+ * @param elevationM elevation of the station, m, or null when the file does not say
+ */
+export function settlePressure(steps: StepColumns, elevationM: number | null, findings: FindingList): void {
+  const column = steps.pressurePa;
+  const inHectopascals = looksLikeHectopascals(column);
+  if (inHectopascals) askAboutUnit(steps, findings);
+  const known = [...column].filter((value) => isPossible(value));
+  if (known.length === 0) {
+    assume(steps, elevationM, findings);
+    return;
+  }
+  const medianPa = medianOf(known);
+  if (!inHectopascals) replaceFarValues(steps, medianPa, findings);
+  fillGaps(steps, findings);
+  flagConstant(steps, findings);
+  const meanPa = column.reduce((sum, value) => sum + value, 0) / column.length;
+  if (elevationM === null) {
+    findings.add({
+      code: 'elevation-missing',
+      severity: 'doubt',
+      message: () =>
+        'The file gives no elevation. Its own pressure serves for the wet bulb; the elevation is needed to compare places by height.',
+    });
+    return;
+  }
+  compareWithElevation(meanPa, elevationM, findings);
+}
+
+function isPossible(pressurePa: number): boolean {
+  return pressurePa >= LIMITS_PA.low && pressurePa <= LIMITS_PA.high;
+}
+
+function medianOf(values: readonly number[]): number {
+  const sorted = Float64Array.from(values).sort();
+  const middle = sorted.length >> 1;
+  const upper = sorted[middle] ?? Number.NaN;
+  return sorted.length % 2 === 1 ? upper : (upper + (sorted[middle - 1] ?? Number.NaN)) / 2;
+}
+
+function looksLikeHectopascals(column: Float64Array): boolean {
+  const present = [...column].filter((value) => !Number.isNaN(value));
+  const inHectopascals = present.filter((value) => value >= HECTOPASCAL_LIMITS.low && value <= HECTOPASCAL_LIMITS.high);
+  return present.length > 0 && inHectopascals.length > present.length / 2;
+}
+
+function askAboutUnit(steps: StepColumns, findings: FindingList): void {
+  const present = [...steps.pressurePa].filter((value) => !Number.isNaN(value));
+  const { first, last } = linesOfRun(steps.lines, 0, steps.lines.length);
+  findings.ask('unit-guess', {
+    line: first,
+    lastLine: last,
+    count: present.length,
+    message: () =>
+      `The pressure column holds values near ${whole(medianOf(present))}. The format wants pascals; these look like hectopascals.`,
+    proposal: 'Read the pressure as hectopascals: multiply it by 100.',
+  });
+}
+
+function assume(steps: StepColumns, elevationM: number | null, findings: FindingList): void {
+  if (elevationM === null) {
+    findings.ask('elevation-missing', {
+      message: () =>
+        'The file gives neither pressure nor elevation, and the wet bulb needs one of them. Say the elevation of the station.',
+      proposal: null,
+    });
+    steps.pressurePa.fill(Number.NaN);
+    return;
+  }
+  const standardPa = standardPressurePa(elevationM);
+  for (let step = 0; step < steps.pressurePa.length; step++) {
+    steps.pressurePa[step] = standardPa;
+    steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
+  }
+  findings.add({
+    code: 'pressure-assumed',
+    severity: 'note',
+    count: steps.slotCount,
+    message: () =>
+      `The file gives no usable pressure; the standard atmosphere at ${elevationM} m, ${whole(standardPa)} Pa, is taken in every hour.`,
+  });
+}
+
+/** Impossible values, and those more than 6 % from the median: the standard atmosphere scaled to the median. */
+function replaceFarValues(steps: StepColumns, medianPa: number, findings: FindingList): void {
+  const column = steps.pressurePa;
+  const far = (step: number) => Math.abs((column[step] ?? Number.NaN) - medianPa) > FAR_FROM_MEDIAN * medianPa;
+  forEachRun(column.length, far, (start, end) => {
+    const { first, last } = linesOfRun(steps.lines, start, end);
+    const worst = column
+      .subarray(start, end)
+      .reduce((a, b) => (Math.abs(b - medianPa) > Math.abs(a - medianPa) ? b : a), medianPa);
+    findings.add({
+      code: 'pressure-range',
+      severity: 'repair',
+      line: first,
+      lastLine: last,
+      count: end - start,
+      message: () =>
+        `${linesPhrase(first, last)}: a pressure of ${whole(worst)} Pa lies more than 6 % from the median of the file, ${whole(medianPa)} Pa; the median is taken instead.`,
+    });
+  });
+  for (let step = 0; step < column.length; step++) {
+    if (!far(step)) continue;
+    column[step] = medianPa;
+    steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.pressure;
+  }
+}
+
+/** Gap rule 4: the standard atmosphere at the elevation scaled by the file's mean ratio, which is the file's mean. */
+function fillGaps(steps: StepColumns, findings: FindingList): void {
+  const column = steps.pressurePa;
+  const known = column.filter((value) => isPossible(value));
+  const meanPa = known.reduce((sum, value) => sum + value, 0) / known.length;
+  let filled = 0;
+  let first = 0;
+  for (let step = 0; step < column.length; step++) {
+    if (isPossible(column[step] ?? Number.NaN)) continue;
+    column[step] = meanPa;
+    steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.pressure;
+    const line = steps.lines[step] ?? 0;
+    if (line === 0) continue;
+    filled++;
+    if (first === 0) first = line;
+  }
+  if (filled === 0) return;
+  findings.add({
+    code: 'pressure-assumed',
+    severity: 'note',
+    line: first,
+    count: filled,
+    message: () =>
+      `The pressure is missing on ${whole(filled)} ${filled === 1 ? 'line' : 'lines'}, first on line ${first}; the mean of the file, ${whole(meanPa)} Pa, is taken there.`,
+  });
+}
+
+function flagConstant(steps: StepColumns, findings: FindingList): void {
+  const counts = new Map<number, number>();
+  const given = (step: number) => ((steps.repaired[step] ?? 0) & VALUE.pressure) === 0;
+  steps.pressurePa.forEach((value, step) => {
+    if (given(step)) counts.set(value, (counts.get(value) ?? 0) + 1);
+  });
+  const [value, count] = [...counts].reduce((most, entry) => (entry[1] > most[1] ? entry : most), [0, 0]);
+  if (count < CONSTANT_HOURS * steps.stepsPerHour) return;
+  for (let step = 0; step < steps.pressurePa.length; step++) {
+    if (given(step) && steps.pressurePa[step] === value)
+      steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
+  }
+  findings.add({
+    code: 'pressure-constant',
+    severity: 'note',
+    count: Math.round(count / steps.stepsPerHour),
+    message: () =>
+      `The pressure is ${whole(value)} Pa in ${whole(count / steps.stepsPerHour)} hours: the source filled it, and it is marked as assumed.`,
+  });
+}
+
+function compareWithElevation(meanPa: number, elevationM: number, findings: FindingList): void {
+  const standardPa = standardPressurePa(elevationM);
+  const ratio = meanPa / standardPa - 1;
+  const difference = `${Math.abs(100 * ratio).toFixed(1)} % ${ratio < 0 ? 'below' : 'above'}`;
+  if (elevationM > SEA_LEVEL_FROM_M && Math.abs(meanPa / SEA_LEVEL_PA - 1) <= NEAR_SEA_LEVEL) {
+    findings.ask('pressure-sea-level', {
+      message: () =>
+        `The mean pressure is ${whole(meanPa)} Pa at ${elevationM} m, ${difference} the standard atmosphere there: this looks like sea-level pressure in the column of station pressure.`,
+      proposal: `Convert it to station pressure at ${elevationM} m.`,
+    });
+    return;
+  }
+  const sentence = `The mean pressure, ${whole(meanPa)} Pa, is ${difference} the standard atmosphere at the elevation that the file gives, ${elevationM} m (${whole(standardPa)} Pa)`;
+  if (Math.abs(ratio) > ELEVATION_ASK) {
+    findings.ask('pressure-elevation', {
+      message: () => `${sentence}. One of the two is wrong. The pressure column has been used meanwhile.`,
+      proposal: `Keep the pressure, which belongs to about ${whole(elevationOfPressure(meanPa))} m, and correct the elevation.`,
+    });
+  } else if (Math.abs(ratio) > ELEVATION_NOTE) {
+    findings.add({
+      code: 'pressure-elevation',
+      severity: 'note',
+      message: () => `${sentence}. The pressure column is used.`,
+    });
+  }
+}
+
+/** Elevation, to 10 m, at which the standard atmosphere has a pressure (ASHRAE Fundamentals 2017 ch. 1 eq. 3 solved for z). */
+function elevationOfPressure(pressurePa: number): number {
+  const elevationM = (1 - (pressurePa / SEA_LEVEL_PA) ** (1 / 5.2559)) / 2.25577e-5;
+  return Math.round(elevationM / 10) * 10;
+}

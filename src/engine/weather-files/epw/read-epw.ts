@@ -1,0 +1,103 @@
+/** EPW: eight header records, then one comma-separated record an hour (formats: public data dictionary of the format). */
+import { assembleYear } from '../assembly/assemble-year.ts';
+import type { SourceRows } from '../assembly/source-rows.ts';
+import { type FindingList, whole } from '../finding-list.ts';
+import type { DecodedText } from '../text/decode-text.ts';
+import { LineCursor } from '../text/line-cursor.ts';
+import type { DeclaredStation, WeatherFileReading } from '../weather-file-reading.ts';
+import { type EpwHeader, readEpwHeader } from './epw-header.ts';
+import { readEpwRows } from './epw-rows.ts';
+
+/** Either a pressure or the code for none: the median of the others decides. */
+const PRESSURE_CODE_PA = 99_999;
+const CODE_WITHIN = 0.01;
+
+const NO_STATION: DeclaredStation = {
+  name: 'Unnamed station',
+  latitude: null,
+  longitude: null,
+  elevationM: null,
+  utcOffsetH: null,
+  wmoNumber: null,
+};
+
+export function readEpw(text: DecodedText, findings: FindingList): WeatherFileReading {
+  const cursor = new LineCursor(text);
+  const header = readEpwHeader(cursor, findings);
+  const { flagsInformative, rows } = readEpwRows(cursor, findings);
+  numberHours(rows, findings);
+  settlePressureCode(rows.pressurePa);
+  if (header.station === null) return { status: 'refused', format: 'EPW', station: null, findings: findings.inOrder() };
+  return assembleYear(
+    {
+      format: 'EPW',
+      station: header.station ?? NO_STATION,
+      stationLine: header.stationLine,
+      rows,
+      stepsPerHour: settleRecordsPerHour(header, rows, findings),
+      periods: header.periods,
+      leapYearObserved: header.leapYearObserved,
+      sourceFlagsInformative: flagsInformative,
+      published: header.published,
+      comments: header.comments,
+    },
+    findings,
+  );
+}
+
+/** Home-made files number the hours 0 to 23: each is then the hour that begins. */
+function numberHours(rows: SourceRows, findings: FindingList): void {
+  const first = rows.hours.indexOf(0);
+  if (first < 0 || rows.hours.includes(24)) return;
+  for (let row = 0; row < rows.hours.length; row++) rows.hours[row] = (rows.hours[row] ?? 0) + 1;
+  findings.add({
+    code: 'time-order',
+    severity: 'note',
+    line: rows.lines[first] ?? null,
+    count: rows.hours.length,
+    message: () =>
+      `The hours are numbered 0 to 23, where the format counts 1 to 24; each has been read as the hour that begins then, so 1 was added to all.`,
+  });
+}
+
+function settlePressureCode(pressurePa: number[]): void {
+  if (!pressurePa.includes(PRESSURE_CODE_PA)) return;
+  const others = Float64Array.from(
+    pressurePa.filter((value) => !Number.isNaN(value) && value !== PRESSURE_CODE_PA),
+  ).sort();
+  const medianPa = others[others.length >> 1];
+  if (medianPa !== undefined && Math.abs(PRESSURE_CODE_PA / medianPa - 1) <= CODE_WITHIN) return;
+  for (let row = 0; row < pressurePa.length; row++) {
+    if (pressurePa[row] === PRESSURE_CODE_PA) pressurePa[row] = Number.NaN;
+  }
+}
+
+/** Records an hour as the rows have them: the most frequent number of rows that share an hour at different minutes. */
+function settleRecordsPerHour(header: EpwHeader, rows: SourceRows, findings: FindingList): number {
+  const found = new Map<number, number>();
+  let run = 1;
+  for (let row = 1; row <= rows.lines.length; row++) {
+    const sameHour =
+      rows.hours[row] === rows.hours[row - 1] &&
+      rows.days[row] === rows.days[row - 1] &&
+      rows.months[row] === rows.months[row - 1];
+    if (sameHour && rows.minutes[row] !== rows.minutes[row - 1]) {
+      run++;
+      continue;
+    }
+    found.set(run, (found.get(run) ?? 0) + 1);
+    run = 1;
+  }
+  const usual = [...found].reduce((most, entry) => (entry[1] > most[1] ? entry : most), [header.recordsPerHour, 0])[0];
+  if (usual === header.recordsPerHour || 60 % usual !== 0) return header.recordsPerHour;
+  if (!findings.refused) {
+    findings.add({
+      code: 'row-count',
+      severity: 'doubt',
+      count: rows.lines.length,
+      message: () =>
+        `DATA PERIODS declares ${header.recordsPerHour} ${header.recordsPerHour === 1 ? 'record' : 'records'} an hour, but most of the ${whole(rows.lines.length)} rows come ${usual} to the hour. The rows are believed.`,
+    });
+  }
+  return usual;
+}

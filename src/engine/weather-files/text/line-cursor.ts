@@ -1,0 +1,67 @@
+import { type DecodedText, textBetween } from './decode-text.ts';
+
+const LINE_FEED = 0x0a;
+const RETURN = 0x0d;
+const SPACE = 0x20;
+
+/** Walks a file line by line: LF, CRLF, CR or any mixture. Blank lines are counted and skipped. */
+export class LineCursor {
+  readonly text: DecodedText;
+  /** Physical line, counted from 1. */
+  line = 0;
+  /** First byte of the line, and the byte after its last. */
+  start = 0;
+  end = 0;
+  /** Whether a line end follows; the last line of a file cut short has none. */
+  closed = true;
+  #next = 0;
+  #again = false;
+
+  constructor(text: DecodedText) {
+    this.text = text;
+  }
+
+  /** Moves to the next line that is not blank; false at the end of the file. */
+  next(): boolean {
+    if (this.#again) {
+      this.#again = false;
+      return true;
+    }
+    while (this.#next < this.text.bytes.length) {
+      this.#step();
+      if (!this.#blank()) return true;
+    }
+    return false;
+  }
+
+  /** Makes the next call of `next` return this line once more. */
+  putBack(): void {
+    this.#again = true;
+  }
+
+  /** The line as a string, at most `limit` bytes of it. */
+  string(limit: number): string {
+    return textBetween(this.text, this.start, Math.min(this.end, this.start + limit));
+  }
+
+  #step(): void {
+    const { bytes } = this.text;
+    let at = this.#next;
+    this.start = at;
+    while (at < bytes.length && bytes[at] !== LINE_FEED && bytes[at] !== RETURN) at++;
+    this.end = at;
+    this.closed = at < bytes.length;
+    if (bytes[at] === RETURN && bytes[at + 1] === LINE_FEED) at++;
+    this.#next = at + 1;
+    this.line++;
+  }
+
+  #blank(): boolean {
+    const { bytes } = this.text;
+    for (let at = this.start; at < this.end; at++) {
+      // Spaces, tabs and a closing Ctrl-Z make no line.
+      if ((bytes[at] ?? 0) > SPACE) return false;
+    }
+    return true;
+  }
+}
