@@ -1,13 +1,16 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { type ReactNode, useEffect, useState } from 'react';
+import { lazy, type ReactNode, Suspense, useEffect, useState } from 'react';
 import { Link, NavLink, useLocation, useNavigate } from 'react-router-dom';
 import { type Membership, type Role, type Session, signOut } from '../contract/accounts.ts';
 import { call, type StreamState } from '../lib/api-client.ts';
 import { errorSentence } from '../lib/api-error.ts';
 import { paths } from '../lib/paths.ts';
 import { sessionQuery } from '../lib/session-query.ts';
-import { Menu, type MenuGroup } from '../ui/menu.tsx';
+import type { MenuGroup } from '../ui/menu.tsx';
 import { Wordmark } from '../ui/wordmark.tsx';
+
+/** The menu's parts weigh as much as half the shell; the page does not wait for them. */
+const Menu = lazy(async () => ({ default: (await import('../ui/menu.tsx')).Menu }));
 
 const roleWords: Readonly<Record<Role, string>> = {
   viewer: 'Viewer',
@@ -117,13 +120,15 @@ function AccountMenu({ person, team, memberships }: Pick<ShellProps, 'person' | 
           {errorSentence(leave.error)}
         </p>
       ) : null}
-      <Menu
-        label={`Account of ${person.name}, ${roleWords[team.role].toLowerCase()}`}
-        groups={groups}
-        onChoose={(id) => (id === 'sign-out' ? leave.mutate() : navigate(id))}
-      >
-        <span className="max-w-40 truncate">{person.name}</span>
-      </Menu>
+      <Suspense fallback={<span className="max-w-40 truncate">{person.name}</span>}>
+        <Menu
+          label={`Account of ${person.name}, ${roleWords[team.role].toLowerCase()}`}
+          groups={groups}
+          onChoose={(id) => (id === 'sign-out' ? leave.mutate() : navigate(id))}
+        >
+          <span className="max-w-40 truncate">{person.name}</span>
+        </Menu>
+      </Suspense>
     </>
   );
 }
