@@ -14,6 +14,12 @@ export function presetBrief(id: string): Brief {
   return briefFromPreset(preset);
 }
 
+/** The presets that ship, in their own order. */
+export function presetNames(): readonly string[] {
+  presets ??= readPresets();
+  return [...presets.keys()];
+}
+
 /** What a new programme begins with. */
 export function officeBrief(): Brief {
   return presetBrief('office');

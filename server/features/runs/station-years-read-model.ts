@@ -17,21 +17,23 @@ export interface StationYear {
   readonly year: number | null;
   readonly hours: number;
   /** Hours whose dry bulb and humidity are both as the source measured them. */
-  readonly measured: number;
-  readonly provenanceUniform: boolean;
+  readonly measuredHours: number;
+  /** Every hour carries the same source flag, so the flags tell nothing. */
+  readonly flagsUniform: boolean;
   /** Why background work on the file stopped for a fault of ours. */
   readonly failure: string | null;
-  readonly runId: string | null;
-  readonly clock: ResolvedClock | null;
-  readonly figures: StoredFigures | null;
+  readonly run: RunOfYear | null;
 }
 
-/** A run's figures without its tables by month and hour, which no screen of places needs. */
-export type StoredFigures = Omit<RunFigures, TableOfRun>;
-type TableOfRun = 'demandByMonthHour' | 'metByMonthHour' | 'supplyCurve' | 'aloneHours';
+export interface RunOfYear {
+  readonly id: string;
+  readonly clock: ResolvedClock;
+  /** A run's figures without its tables, which no screen of places needs. */
+  readonly figures: Omit<RunFigures, 'demandByMonthHour' | 'metByMonthHour' | 'supplyCurve' | 'aloneHours'>;
+}
 
 /**
- * Every accepted year of the team's stations, or of one, by station name and year; one query for a whole map. Of several
+ * Every accepted year of the team's stations, or of one, by station name, newest file first; one query for a whole map. Of several
  * runs of one year under the version (the station's zone was corrected since) the newest counts.
  */
 export async function listStationYears(
@@ -43,18 +45,18 @@ export async function listStationYears(
     `select stations.id as "stationId", stations.name as "stationName", stations.latitude, stations.longitude,
        stations.elevation_m as "elevationM", stations.zone,
        weather_years.id as "weatherYearId", weather_files.id as "weatherFileId", weather_years.kind, weather_years.year,
-       weather_years.slots as hours, (weather_years.facts ->> 'measured')::integer as measured,
+       weather_years.slots as hours, (weather_years.facts ->> 'measuredHours')::integer as "measuredHours",
        exists (
          select 1 from findings
          where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'
-       ) as "provenanceUniform",
-       weather_files.failure, newest.id as "runId", newest.clock, newest.figures
+       ) as "flagsUniform",
+       weather_files.failure, newest.run
      from stations
      join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
      left join lateral (
-       select runs.id, runs.clock,
-         runs.result - array['demandByMonthHour', 'metByMonthHour', 'supplyCurve', 'aloneHours'] as figures
+       select jsonb_build_object('id', runs.id, 'clock', runs.clock, 'figures',
+         runs.result - array['demandByMonthHour', 'metByMonthHour', 'supplyCurve', 'aloneHours']) as run
        from runs
        where runs.weather_year_id = weather_years.id and runs.brief_version_id = :briefVersionId
          and runs.method_version = :methodVersion
@@ -62,8 +64,8 @@ export async function listStationYears(
        limit 1
      ) as newest on true
      where stations.team_id = :teamId ${oneStation}
-     order by stations.name, stations.id, weather_years.year nulls first, weather_years.created_at`,
-    asked,
+     order by stations.name, stations.id, weather_years.created_at desc, weather_years.id`,
+    { ...asked },
   );
   return rows;
 }

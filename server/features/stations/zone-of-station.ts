@@ -1,8 +1,8 @@
 import lookUpZone from '@photostructure/tz-lookup';
 
 /**
- * IANA zone of a station. At sea and where the look-up knows no zone it is the fixed offset of the file, as Etc/GMT±h,
- * which `isFixedOffset` tells and the place says. (The signs of Etc zones are those of POSIX: Etc/GMT-5 is five hours ahead.)
+ * IANA zone of a station. At sea and where the look-up knows no zone it is the fixed offset of the file, as Etc/GMT±h;
+ * places say so. (The signs of Etc zones are those of POSIX: Etc/GMT-5 is five hours ahead.)
  */
 export function zoneOfStation(station: { latitude: number; longitude: number; utcOffsetH: number }): string {
   const zone = knownZone(station.latitude, station.longitude);
@@ -12,16 +12,11 @@ export function zoneOfStation(station: { latitude: number; longitude: number; ut
   return hours > 0 ? `Etc/GMT-${hours}` : `Etc/GMT+${-hours}`;
 }
 
-/** Whether a zone is a fixed offset, because none was found at the position. */
-export function isFixedOffset(zone: string): boolean {
-  return zone.startsWith('Etc/');
-}
-
 function knownZone(latitude: number, longitude: number): string | null {
   try {
     const zone = lookUpZone(latitude, longitude);
     // Answers Etc/GMT±h from the longitude alone at sea: the file's own offset is the better guess.
-    if (isFixedOffset(zone)) return null;
+    if (zone.startsWith('Etc/')) return null;
     // Throws for a zone that this machine's tables do not have.
     return new Intl.DateTimeFormat('en', { timeZone: zone }).resolvedOptions().timeZone && zone;
   } catch {

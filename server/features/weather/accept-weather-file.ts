@@ -7,13 +7,20 @@ import { notifyTeam } from '../../jobs/team-feed.ts';
 import { lockWeatherFile, setAccepted, type WeatherFileState } from './weather-file-store.ts';
 import { setYearStation } from './weather-year-store.ts';
 
+/** The place that a file declares, with nothing left open. */
+export interface KnownPlace {
+  readonly name: string;
+  readonly latitude: number;
+  readonly longitude: number;
+  readonly elevationM: number;
+  readonly utcOffsetH: number;
+  readonly wmoNumber: string | null;
+}
+
 /** What accepting needs of the other features, handed in where the server is wired. */
 export interface AcceptanceParts {
   /** The id of the team's station that the file belongs to, made when there is none. */
-  findOrMakeStation(
-    transaction: Knex.Transaction,
-    declared: DeclaredStation & { teamId: string; elevationM: number },
-  ): Promise<string>;
+  findOrMakeStation(transaction: Knex.Transaction, declared: KnownPlace & { teamId: string }): Promise<string>;
   /** Queues the judging of a year by the team's briefs. */
   queueRuns(transaction: Knex.Transaction, year: { teamId: string; weatherYearId: string }): Promise<void>;
 }
@@ -52,16 +59,22 @@ export async function acceptWeatherFile(deps: { db: Knex } & AcceptanceParts, ac
 }
 
 /** @throws AppError wrong_state that says what the file is now and what would mend it */
-function placeOfAcceptable(file: WeatherFileState): DeclaredStation & { elevationM: number } {
+function placeOfAcceptable(file: WeatherFileState): KnownPlace {
   if (file.status !== 'review') throw new AppError('wrong_state', whyNotAcceptable(file));
-  const declared = file.declaredStation;
-  if (declared === null || declared.elevationM === null) {
+  const place = file.declaredStation === null ? null : knownPlace(file.declaredStation);
+  if (place === null) {
     throw new AppError(
       'wrong_state',
-      'This file does not say how high its station stands. Giving the elevation comes with the weather room.',
+      'This file does not say in full where its station stands. Giving position, elevation and UTC offset comes with the weather room.',
     );
   }
-  return { ...declared, elevationM: declared.elevationM };
+  return place;
+}
+
+function knownPlace(declared: DeclaredStation): KnownPlace | null {
+  const { latitude, longitude, elevationM, utcOffsetH } = declared;
+  if (latitude === null || longitude === null || elevationM === null || utcOffsetH === null) return null;
+  return { name: declared.name, latitude, longitude, elevationM, utcOffsetH, wmoNumber: declared.wmoNumber };
 }
 
 function whyNotAcceptable(file: WeatherFileState): string {

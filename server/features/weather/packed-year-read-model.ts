@@ -1,6 +1,6 @@
 import type { Knex } from 'knex';
+import { packedFromBytes } from '#engine/reduction/packed-columns.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
-import { fromPackedBytes } from './packed-bytes.ts';
 
 interface PackedRow {
   readonly kind: YearKind;
@@ -27,5 +27,5 @@ export async function readPackedYear(
   );
   const row = rows[0];
   if (row === undefined) return null;
-  return { kind: row.kind, year: row.year, utcOffsetMin: row.utcOffsetMin, packed: fromPackedBytes(row) };
+  return { kind: row.kind, year: row.year, utcOffsetMin: row.utcOffsetMin, packed: packedFromBytes(row) };
 }

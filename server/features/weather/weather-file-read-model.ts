@@ -1,7 +1,8 @@
 import type { Knex } from 'knex';
 import type { FileStatus, ReadingStep } from '#contract/weather.ts';
+import type { YearFacts } from '#engine/reduction/reduce-year.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
-import type { Severity } from '#engine/weather-files/finding.ts';
+import type { Ask, Severity } from '#engine/weather-files/finding.ts';
 import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
 
 /** A weather file as the library shows it. */
@@ -88,4 +89,55 @@ export async function findWeatherFileView(
     [key.teamId, key.fileId],
   );
   return rows[0] ?? null;
+}
+
+/** A weather file's own page. */
+export interface WeatherFileRecordView {
+  readonly view: WeatherFileView;
+  readonly findings: readonly FindingView[];
+  readonly asks: readonly Ask[];
+  readonly acceptedBy: string | null;
+  readonly facts: YearFacts | null;
+}
+
+export interface FindingView {
+  readonly code: string;
+  readonly severity: Severity;
+  readonly line: number | null;
+  readonly column: number | null;
+  readonly message: string;
+}
+
+interface RecordRow {
+  readonly asks: readonly Ask[];
+  readonly acceptedBy: string | null;
+  readonly facts: YearFacts | null;
+  readonly findings: readonly FindingView[];
+}
+
+/** `null` when the team has no such file. */
+export async function findWeatherFileRecord(
+  db: Knex,
+  key: { teamId: string; fileId: string },
+): Promise<WeatherFileRecordView | null> {
+  const [view, record] = await Promise.all([
+    findWeatherFileView(db, key),
+    db.raw<{ rows: RecordRow[] }>(
+      `select weather_files.asks, people.name as "acceptedBy", weather_years.facts,
+         coalesce((
+           select jsonb_agg(
+             jsonb_build_object('code', findings.code, 'severity', findings.severity, 'line', findings.line,
+               'column', findings.col, 'message', findings.message)
+             order by findings.position)
+           from findings where findings.weather_file_id = weather_files.id
+         ), '[]') as findings
+       from weather_files
+       left join people on people.id = weather_files.accepted_by
+       left join weather_years on weather_years.weather_file_id = weather_files.id
+       where weather_files.team_id = ? and weather_files.id = ?`,
+      [key.teamId, key.fileId],
+    ),
+  ]);
+  const [row] = record.rows;
+  return view === null || row === undefined ? null : { view, ...row };
 }

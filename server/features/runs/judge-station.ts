@@ -1,0 +1,82 @@
+import type { Brief } from '#engine/brief/brief.ts';
+import { type GradeAnswer, gradePlace } from '#engine/score/grade-place.ts';
+import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
+import type { RunOfYear, StationYear } from './station-years-read-model.ts';
+
+/** A station as a place: what its accepted years come to under a brief. */
+export interface JudgedStation {
+  readonly station: StationYear;
+  readonly figures: PlaceFigures<JudgedYear>;
+  /** Every judged year, newest file first where years repeat. */
+  readonly judged: readonly JudgedYear[];
+  readonly grade: GradeAnswer;
+  /** Accepted years whose run is still to come. */
+  readonly pending: number;
+  /** Why there is no score; null with one. */
+  readonly scoreNote: string | null;
+}
+
+export interface JudgedYear {
+  readonly kind: StationYear['kind'];
+  readonly year: number | null;
+  readonly result: RunOfYear['figures'];
+  readonly run: RunOfYear;
+  readonly weather: StationYear;
+}
+
+/** @param years the accepted years of one station, at least one */
+export function judgeStation(
+  brief: Brief,
+  [first, ...others]: readonly [StationYear, ...StationYear[]],
+): JudgedStation {
+  const years = [first, ...others];
+  const judged = years.flatMap((weather) => {
+    const { kind, year, run } = weather;
+    return run === null ? [] : [{ kind, year, result: run.figures, run, weather }];
+  });
+  const figures = placeFigures({ brief, runs: judged });
+  const open = years.filter(({ run }) => run === null);
+  return {
+    station: first,
+    figures,
+    judged,
+    grade: gradeOf(years),
+    pending: open.filter(({ failure }) => failure === null).length,
+    scoreNote: judged.length === 0 ? noteWithoutRun(open) : figures.scoreNote,
+  };
+}
+
+function noteWithoutRun(open: readonly StationYear[]): string {
+  return open.every(({ failure }) => failure !== null)
+    ? 'not judged: a fault of ours stopped it, its weather file says so'
+    : 'not judged yet';
+}
+
+/** A station stands for itself: no distance, no difference in height. */
+function gradeOf(years: readonly StationYear[]): GradeAnswer {
+  const usable = years.filter(({ kind, run }) => kind !== 'derived' && (run === null || run.figures.usable));
+  const slots = usable.reduce((sum, { hours }) => sum + hours, 0);
+  const measured = usable.reduce((sum, year) => sum + year.measuredHours, 0);
+  return gradePlace({
+    distanceKm: 0,
+    heightDifferenceM: 0,
+    years: {
+      actual: usable.filter(({ kind }) => kind === 'actual').length,
+      typical: usable.some(({ kind }) => kind === 'typical'),
+    },
+    measuredSharePct: slots === 0 ? null : (100 * measured) / slots,
+    flagsInformative: usable.every(({ flagsUniform }) => !flagsUniform),
+    kind: years.every(({ kind }) => kind === 'derived') ? 'derived' : 'station',
+  });
+}
+
+/** The rows of a map, one group per station; they come ordered by station. */
+export function byStation(years: readonly StationYear[]): readonly (readonly [StationYear, ...StationYear[]])[] {
+  const groups: [StationYear, ...StationYear[]][] = [];
+  for (const year of years) {
+    const last = groups.at(-1);
+    if (last?.[0].stationId === year.stationId) last.push(year);
+    else groups.push([year]);
+  }
+  return groups;
+}

@@ -1,0 +1,77 @@
+import type { BriefBasis, Place } from '#contract/runs.ts';
+import { cautionsOf } from './cautions.ts';
+import type { JudgedStation, JudgedYear } from './judge-station.ts';
+import { dayText, slotEndText, slotStartText } from './local-time-text.ts';
+
+export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; invented: boolean }): Place {
+  const { station, figures, judged, grade } = place;
+  // Without a usable year the newest one is still shown, so that one sees why: its hours without weather, no score.
+  const shown = figures.shown ?? judged[0] ?? null;
+  const restsOn = figures.runs.length > 0 ? figures.runs : judged.slice(0, 1);
+  return {
+    station: {
+      id: station.stationId,
+      name: station.stationName,
+      latitude: station.latitude,
+      longitude: station.longitude,
+      elevationM: station.elevationM,
+      zone: station.zone,
+    },
+    invented: on.invented,
+    brief: on.brief,
+    years: restsOn.map(presentYear),
+    shown: shown === null ? null : presentShown(place, shown),
+    grade: grade.grade,
+    gradeColumns: grade.columns.map((column) => ({ ...column })),
+  };
+}
+
+function presentYear({ run, weather, kind, year, result }: JudgedYear): Place['years'][number] {
+  return { runId: run.id, weatherFileId: weather.weatherFileId, kind, year, hours: weather.hours, score: result.score };
+}
+
+/** The ledger and what follows from it are of the shown year; score, parts and verdict are the place's. */
+function presentShown(
+  { station, figures, scoreNote }: JudgedStation,
+  { run, result, kind }: JudgedYear,
+): NonNullable<Place['shown']> {
+  const { score } = figures;
+  return {
+    runId: run.id,
+    ledger: { ...result.ledger, classes: { ...result.ledger.classes } },
+    verdict: figures.verdict ?? result.verdict,
+    tolerances: [...result.tolerances],
+    gates: [...result.gates],
+    score,
+    scoreNote,
+    scoreExact: score === null ? null : figures.scoreExact,
+    geometricMean: score === null ? null : figures.geometricMean,
+    words: figures.words,
+    parts: [...figures.parts],
+    worstSpell: presentSpell(run, result.worstSpell),
+    severityKh: result.severityKh,
+    water: {
+      makeUpLitres: result.water.makeUpLitres,
+      litresPerKwh: result.water.litresPerKwh,
+      peakDayLitres: result.water.peakDayLitres,
+      peakDay: result.water.peakDay === null ? null : dayText(run.clock, result.water.peakDay),
+    },
+    electricity: { ...result.electricity },
+    cautions: cautionsOf({ kind, zone: station.zone }),
+  };
+}
+
+function presentSpell(
+  { clock }: JudgedYear['run'],
+  spell: JudgedYear['result']['worstSpell'],
+): NonNullable<Place['shown']>['worstSpell'] {
+  if (spell === null) return null;
+  return {
+    hours: spell.hours,
+    start: slotStartText(clock, spell.startSlot),
+    end: slotEndText(clock, spell.endSlot),
+    severityKh: spell.severityKh,
+    worstK: spell.worstK,
+    cutAtJoint: spell.cutAtJoint,
+  };
+}

@@ -1,0 +1,45 @@
+import type { Router } from 'express';
+import { getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
+import { METHOD_VERSION } from '#engine/conventions.ts';
+import type { Deps } from '../../deps.ts';
+import { AppError } from '../../http/app-error.ts';
+import { mount } from '../../http/mount.ts';
+import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
+import { byStation, judgeStation } from './judge-station.ts';
+import { presentMapStation } from './present-map.ts';
+import { presentPlace } from './present-place.ts';
+import { readRunHours } from './run-hours-read-model.ts';
+import { listStationYears } from './station-years-read-model.ts';
+
+export function runsRoutes(router: Router, deps: Deps): void {
+  const { db } = deps;
+
+  mount(router, deps, getMap, async ({ params: { teamId, programmeId } }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId });
+    const { briefVersionId } = brief;
+    const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
+    const stations = byStation(years).map((group) => judgeStation(brief.body, group));
+    return {
+      programme: { id: programmeId, name: brief.programmeName },
+      invented: brief.invented,
+      brief: presentBriefBasis(brief),
+      stations: stations.map(presentMapStation),
+      pending: stations.reduce((sum, { pending }) => sum + pending, 0),
+    };
+  });
+
+  mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId } }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId });
+    const { briefVersionId } = brief;
+    const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION, stationId });
+    const [group] = byStation(years);
+    if (group === undefined) throw new AppError('not_found', 'There is no such station on the map of this team.');
+    return presentPlace(judgeStation(brief.body, group), { brief: presentBriefBasis(brief), invented: brief.invented });
+  });
+
+  mount(router, deps, getRunHours, async ({ params }) => {
+    const body = await readRunHours(db, params);
+    if (body === null) throw new AppError('not_found', 'There is no such run in this team.');
+    return { body };
+  });
+}

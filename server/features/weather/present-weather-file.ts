@@ -1,0 +1,62 @@
+import type { WeatherFile, WeatherFileRecord, YearFacts } from '#contract/weather.ts';
+import type { WeatherFileRecordView, WeatherFileView } from './weather-file-read-model.ts';
+
+export function presentWeatherFile(view: WeatherFileView): WeatherFile {
+  const { note = 0, repair = 0, doubt = 0, ask = 0, refuse = 0 } = view.findingCounts;
+  return {
+    id: view.id,
+    name: view.name,
+    bytes: view.bytes,
+    fingerprint: view.fingerprint,
+    format: view.format,
+    status: view.status,
+    step: view.step,
+    failure: view.failure,
+    uploadedBy: view.uploadedBy,
+    uploadedAt: view.uploadedAt.toISOString(),
+    station: view.declaredStation,
+    stationId: view.stationId,
+    kind: view.kind,
+    year: view.year,
+    completePct: completePct(view),
+    findingCounts: { note, repair, doubt, ask, refuse },
+  };
+}
+
+export function presentRecord({ view, findings, asks, acceptedBy, facts }: WeatherFileRecordView): WeatherFileRecord {
+  return {
+    file: presentWeatherFile(view),
+    findings: findings.map((finding) => ({ ...finding })),
+    asks: asks.map((ask) => ({ ...ask })),
+    acceptedBy,
+    facts: facts === null ? null : presentFacts(facts),
+  };
+}
+
+function presentFacts(facts: NonNullable<WeatherFileRecordView['facts']>): YearFacts {
+  return {
+    hours: facts.hours,
+    measured: facts.measured,
+    estimated: facts.estimated,
+    repaired: facts.repaired,
+    missing: facts.missing,
+    assumedPressure: facts.assumedPressure,
+    belowZero: facts.belowZero,
+    meanDryBulbC: facts.meanDryBulbC,
+    meanWetBulbC: facts.meanWetBulbC,
+    maxDepressionK: facts.maxDepressionK,
+    depressionHours: facts.depressionHours.map(({ atLeastK, hours }) => ({ atLeastK, hours })),
+    meanDepressionK: facts.meanDepressionK.map((hoursOfDay) => [...hoursOfDay]),
+    monthCompletePct: [...facts.monthCompletePct],
+    design: {
+      dryBulb: facts.design.dryBulb.map((row) => ({ ...row })),
+      wetBulb: facts.design.wetBulb.map((row) => ({ ...row })),
+      dewPoint: facts.design.dewPoint.map((row) => ({ ...row })),
+    },
+  };
+}
+
+/** Share of slots with dry bulb, humidity and pressure, %; null without a weather year. */
+function completePct({ hours, missing }: WeatherFileView): number | null {
+  return hours === null || missing === null ? null : (100 * (hours - missing)) / hours;
+}

@@ -1,0 +1,97 @@
+import type { Knex } from 'knex';
+import { bytesOf16, packedBytes } from '#engine/reduction/packed-columns.ts';
+import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
+import { PACKED_LAYOUT } from '#engine/reduction/weather-year.ts';
+import type { UsableReading } from '#engine/weather-files/weather-file-reading.ts';
+
+export interface NewWeatherYear {
+  readonly teamId: string;
+  readonly fileId: string;
+  readonly reading: UsableReading;
+  readonly reduced: ReducedYear;
+  /** Hours whose dry bulb and humidity are both as the source measured them. */
+  readonly measuredHours: number;
+  readonly readVersion: string;
+  readonly contentHash: string;
+}
+
+/** The year with its packed columns. @returns its id */
+export async function insertWeatherYear(transaction: Knex.Transaction, year: NewWeatherYear): Promise<string> {
+  const { reading, reduced } = year;
+  const { packed } = reduced.year;
+  const bytes = packedBytes(packed);
+  const { rows } = await transaction.raw<{ rows: [{ id: string }] }>(
+    `insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
+       humidity_ratio, pressure, flags, histogram, humidity_from, below_zero, facts, read_version, content_hash)
+     values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
+       :flags, :histogram, :humidityFrom, :belowZero, cast(:facts as jsonb), :readVersion, :contentHash)
+     returning id`,
+    {
+      teamId: year.teamId,
+      fileId: year.fileId,
+      kind: reduced.year.kind,
+      calendarYear: reduced.year.year,
+      utcOffsetMin: reduced.year.utcOffsetMin,
+      slots: packed.flags.length,
+      layout: PACKED_LAYOUT,
+      dryBulb: Buffer.from(bytes.dryBulb),
+      humidityRatio: Buffer.from(bytes.humidityRatio),
+      pressure: Buffer.from(bytes.pressure),
+      flags: Buffer.from(bytes.flags),
+      histogram: Buffer.from(bytesOf16(reduced.histogram)),
+      humidityFrom: reading.humidityFrom,
+      belowZero: reading.belowZero,
+      facts: JSON.stringify({ ...reduced.facts, measuredHours: year.measuredHours }),
+      readVersion: year.readVersion,
+      contentHash: year.contentHash,
+    },
+  );
+  return rows[0].id;
+}
+
+export async function insertDepressionHours(
+  transaction: Knex.Transaction,
+  year: { teamId: string; weatherYearId: string; bins: ReducedYear['depressionHours'] },
+): Promise<void> {
+  await transaction.raw(
+    `insert into depression_hours (team_id, weather_year_id, month, bin_k, hours)
+     select :teamId, :weatherYearId, bin.month, bin."binK", bin.hours
+     from jsonb_to_recordset(cast(:bins as jsonb)) as bin (month smallint, "binK" smallint, hours integer)`,
+    { teamId: year.teamId, weatherYearId: year.weatherYearId, bins: JSON.stringify(year.bins) },
+  );
+}
+
+export async function insertDesignValues(
+  transaction: Knex.Transaction,
+  year: { teamId: string; weatherYearId: string; design: ReducedYear['design'] },
+): Promise<void> {
+  const { dryBulb, wetBulb, dewPoint } = year.design;
+  const rows = [
+    ...dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
+    ...wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
+    ...dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
+  ];
+  await transaction.raw(
+    `insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
+     select :teamId, :weatherYearId, design.quantity, design.percent, design."valueC", design."coincidentC"
+     from jsonb_to_recordset(cast(:rows as jsonb)) as design (
+       quantity text, percent double precision, "valueC" double precision, "coincidentC" double precision)`,
+    { teamId: year.teamId, weatherYearId: year.weatherYearId, rows: JSON.stringify(rows) },
+  );
+}
+
+/** Gives the year of a file its station. @returns the year's id */
+export async function setYearStation(
+  transaction: Knex.Transaction,
+  place: { teamId: string; fileId: string; stationId: string },
+): Promise<string> {
+  const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
+    `update weather_years set station_id = :stationId
+     where team_id = :teamId and weather_file_id = :fileId
+     returning id`,
+    place,
+  );
+  const [year] = rows;
+  if (year === undefined) throw new Error(`the file ${place.fileId} waits for review without a weather year`);
+  return year.id;
+}
