@@ -1,4 +1,5 @@
 import type { Command, CommandContext, ExitCode } from './command.ts';
+import { WrongUse } from './commands/command-arguments.ts';
 
 const USAGE = `Use: npm run -s muslin -- COMMAND
 
@@ -20,7 +21,15 @@ export const run: Command = async (context) => {
   process.stdout.on('error', () => process.exit(0));
   const [name = '', ...args] = context.args;
   const command = Object.hasOwn(commands, name) ? commands[name] : undefined;
-  if (command !== undefined) return command({ ...context, args });
+  if (command !== undefined) {
+    try {
+      return await command({ ...context, args });
+    } catch (error) {
+      if (!(error instanceof WrongUse)) throw error;
+      process.stderr.write(`${error.message}\n`);
+      return 2;
+    }
+  }
   if (name !== '' && name !== '--help' && name !== '-h') process.stderr.write(`There is no command "${name}".\n\n`);
   process.stderr.write(`${USAGE}\n`);
   return name === '--help' || name === '-h' ? 0 : 2;

@@ -4,6 +4,9 @@ import path from 'node:path';
 import { gzipSync } from 'node:zlib';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { sampleUpload } from '../../../data/demo/sample-upload.ts';
+import { WrongUse } from '../../../server/cli/commands/command-arguments.ts';
+import { ledger } from '../../../server/cli/commands/ledger.ts';
+import { read } from '../../../server/cli/commands/read.ts';
 import { type CommandOutcome, repositoryDir, runCommand, startCommand } from '../../support/run-command.ts';
 
 let folder: string;
@@ -124,15 +127,23 @@ describe('wrong use', () => {
   it.each([
     ['no command', []],
     ['an unknown command', ['rank']],
-    ['no file', ['read']],
     ['an unknown option', ['read', 'station.epw', '--fast']],
-    ['an option that is not built yet', ['read', 'station.epw', '--place', '1,2,3,4']],
-    ['two files where one is read', ['ledger', 'station.epw', 'nothing.epw', '--brief', 'office']],
     ['no brief', ['ledger', 'station.epw']],
   ])('ends with 2 and words on standard error: %s', async (_what, args) => {
     const outcome = await muslin(...args);
     expect(outcome).toMatchObject({ code: 2, stdout: '' });
     expect(outcome.stderr).not.toBe('');
+  });
+
+  it.each([
+    ['an option that is not built yet', read, ['station.epw', '--place', '1,2,3,4']],
+    ['the same with its value joined', read, ['station.epw', '--columns=map.json']],
+    ['no file', read, []],
+    ['an option of the other command', read, ['station.epw', '--brief', 'office']],
+    ['two files where one is read', ledger, ['station.epw', 'nothing.epw', '--brief', 'office']],
+  ])('is told before anything is read: %s', async (_what, command, args) => {
+    const signal = new AbortController().signal;
+    await expect(command({ args, callerDir: folder, rootDir: repositoryDir, signal })).rejects.toThrow(WrongUse);
   });
 
   it('is not what --help is', async () => {
