@@ -107,7 +107,8 @@ function contextOf(passage: Passage, uploads: readonly UploadedFile[]): RequestC
 async function answer(passage: Passage, answered: unknown): Promise<void> {
   const { endpoint, request, response, signal } = passage;
   const declared = endpoint.response;
-  if (response.headersSent || response.destroyed) return letGo(answered);
+  // The time was over, or the client has gone: somebody else has answered, or nobody is there to be answered.
+  if (response.headersSent || (declared.kind !== 'events' && signal.aborted)) return letGo(answered);
   response.setHeader('Cache-Control', 'no-store');
   switch (declared.kind) {
     case 'json': {
@@ -136,7 +137,7 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
   }
 }
 
-/** Closes a stream that nobody will read, as the time was over or the client had gone before it came. */
+/** Closes a stream that nobody will read. */
 function letGo(answered: unknown): void {
   if (typeof answered !== 'object' || answered === null || !('body' in answered)) return;
   if (answered.body instanceof Readable) answered.body.destroy();
