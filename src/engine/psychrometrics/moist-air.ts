@@ -71,11 +71,6 @@ export function humidityRatioFromRelativeHumidity(input: {
   return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
 }
 
-/** Humidity ratio, kg/kg, from a wet bulb at most the dry bulb (eq. 33, below 0 °C eq. 35); never negative. */
-export function humidityRatioFromWetBulb(dryBulbC: number, wetBulbC: number, pressurePa: number): number {
-  return psychrolib.GetHumRatioFromTWetBulb(dryBulbC, Math.min(wetBulbC, dryBulbC), pressurePa);
-}
-
 /** Relative humidity, % (over ice below 0 °C), of a state; may pass 100 when the state is supersaturated. */
 export function relativeHumidityPct(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
   return 100 * psychrolib.GetRelHumFromHumRatio(dryBulbC, humidityRatio, pressurePa);

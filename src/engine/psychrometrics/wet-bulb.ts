@@ -6,8 +6,13 @@
 import { enthalpyKJPerKg, saturationHumidityRatio } from './moist-air.ts';
 import { psychrolib } from './psychrolib-si.ts';
 
-/** Within this distance of 0 °C the root is settled by our rule; the two roots are never further than 0.94 K apart. */
+/** Within this distance of 0 °C the root is always found anew: PsychroLib's may be the other one. */
 const NEAR_ZERO_K = 1;
+/**
+ * Further out than this no state has two roots. They lie 0.94 K apart at most from 55 kPa up, and further only in the
+ * thinner air that the pressure limits still allow.
+ */
+const TWO_ROOTS_WITHIN_K = 5;
 const LATENT_HEAT_KJ_PER_KG = 2501;
 const ROOT_TOLERANCE_K = 1e-5;
 /** PsychroLib's floor for a humidity ratio. */
@@ -40,19 +45,23 @@ export function wetBulbC(dryBulbC: number, humidityRatio: number, pressurePa: nu
     );
   }
   if (humidityRatio >= saturationHumidityRatio(dryBulbC, pressurePa)) return dryBulbC;
-  const anyRootC = psychrolib.GetTWetBulbFromHumRatio(dryBulbC, humidityRatio, pressurePa);
-  const rootC = Math.abs(anyRootC) < NEAR_ZERO_K ? rootNearZeroC(dryBulbC, humidityRatio, pressurePa) : anyRootC;
-  return Math.min(rootC, dryBulbC);
+  const rootC = psychrolib.GetTWetBulbFromHumRatio(dryBulbC, humidityRatio, pressurePa);
+  return Math.min(
+    Math.abs(rootC) < TWO_ROOTS_WITHIN_K ? settledRootC(rootC, dryBulbC, humidityRatio, pressurePa) : rootC,
+    dryBulbC,
+  );
 }
 
-function rootNearZeroC(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
+/** The root that the rule wants: PsychroLib's where it is that one and stands clear of 0 °C, else found here. */
+function settledRootC(anyRootC: number, dryBulbC: number, humidityRatio: number, pressurePa: number): number {
   const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
   const enthalpy = enthalpyKJPerKg(dryBulbC, ratio);
   const water = enthalpy >= LATENT_HEAT_KJ_PER_KG * saturationHumidityRatio(0, pressurePa);
+  if (Math.abs(anyRootC) >= NEAR_ZERO_K && anyRootC > 0 === water) return anyRootC;
   const surface = water ? WATER : ICE;
   const target = enthalpy + surface.fusionKJPerKg * ratio;
-  let low = water ? 0 : -2 * NEAR_ZERO_K;
-  let high = water ? Math.min(dryBulbC, 2 * NEAR_ZERO_K) : 0;
+  let low = water ? 0 : -2 * TWO_ROOTS_WITHIN_K;
+  let high = water ? Math.min(dryBulbC, 2 * TWO_ROOTS_WITHIN_K) : 0;
   while (high - low > ROOT_TOLERANCE_K) {
     const middle = (low + high) / 2;
     const heat =

@@ -1,4 +1,5 @@
 import { HOURS_PER_DAY } from '../conventions.ts';
+import { floatColumn } from '../float-column.ts';
 import { monthOfEachSlot } from './calendar.ts';
 
 const MONTHS = 12;
@@ -88,5 +89,5 @@ function cellScale(depression: Int32Array): Float64Array | null {
     if ((depression[slot] ?? -1) >= 0) known[cell] = (known[cell] ?? 0) + 1;
   }
   if (known.includes(0)) return null;
-  return Float64Array.from(depression, (_value, slot) => (all[cellOf(slot)] ?? 0) / (known[cellOf(slot)] ?? 1));
+  return floatColumn(depression.length, (slot) => (all[cellOf(slot)] ?? 0) / (known[cellOf(slot)] ?? 1));
 }

@@ -1,5 +1,6 @@
 /** Columns that follow from the packed ones: derived when they are needed, never a stored fact. */
 import { hundredths } from '../conventions.ts';
+import { floatColumn } from '../float-column.ts';
 import { dewPointC } from '../psychrometrics/moist-air.ts';
 import { wetBulbC } from '../psychrometrics/wet-bulb.ts';
 import { unpackYear, type YearColumns } from './packed-columns.ts';
@@ -19,7 +20,8 @@ function ofEachState(
   columns: YearColumns,
   property: (dryBulbC: number, humidityRatio: number, pressurePa: number) => number,
 ): Float64Array {
-  return Float64Array.from(columns.dryBulbC, (dryBulbC, slot) => {
+  return floatColumn(columns.dryBulbC.length, (slot) => {
+    const dryBulbC = columns.dryBulbC[slot] ?? Number.NaN;
     const humidityRatio = columns.humidityRatio[slot] ?? Number.NaN;
     const pressurePa = columns.pressurePa[slot] ?? Number.NaN;
     if (Number.isNaN(dryBulbC + humidityRatio + pressurePa)) return Number.NaN;

@@ -28,3 +28,8 @@ export function humidityProvenance(flags: number): Provenance {
 export function pressureProvenance(flags: number): Provenance {
   return provenanceAt(flags, 4);
 }
+
+/** Whether any of the three values was changed or filled by a rule of ours. */
+export function hasRepair(flags: number): boolean {
+  return (flags & 3) === CODE.repaired || ((flags >> 2) & 3) === CODE.repaired || ((flags >> 4) & 3) === CODE.repaired;
+}

@@ -2,12 +2,12 @@
  * Layout 1 of a weather year: dry bulb int16 0.01 °C, humidity ratio uint16 2e-6 kg/kg, pressure uint16 2 Pa, flags uint8,
  * slot order, each value rounded to the nearest step (halves upwards), missing -32768 or 65535. Serialised little-endian.
  */
-import { MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
+import { hundredths, MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
+import { floatColumn } from '../float-column.ts';
 import type { PackedYear } from './weather-year.ts';
 
 const HUMIDITY_RATIO_STEP = 2e-6;
 const PRESSURE_STEP_PA = 2;
-const DRY_BULB_STEP_C = 0.01;
 const MOST_INT16 = 32_767;
 
 /** The columns as numbers, NaN where missing. */
@@ -20,32 +20,37 @@ export interface YearColumns {
 /** Packs hourly values; those beyond the range of a column (a humidity ratio over 0.131) are set to its end. */
 export function packYear(columns: YearColumns & { readonly flags: Uint8Array }): PackedYear {
   return {
-    dryBulb: Int16Array.from(columns.dryBulbC, (value) => packed(value / DRY_BULB_STEP_C, 'int16')),
-    humidityRatio: Uint16Array.from(columns.humidityRatio, (value) => packed(value / HUMIDITY_RATIO_STEP, 'uint16')),
-    pressure: Uint16Array.from(columns.pressurePa, (value) => packed(value / PRESSURE_STEP_PA, 'uint16')),
+    dryBulb: Int16Array.from(columns.dryBulbC, (value) => packedDryBulb(value)),
+    humidityRatio: Uint16Array.from(columns.humidityRatio, (value) => packedUint16(value / HUMIDITY_RATIO_STEP)),
+    pressure: Uint16Array.from(columns.pressurePa, (value) => packedUint16(value / PRESSURE_STEP_PA)),
     flags: Uint8Array.from(columns.flags),
   };
 }
 
-function packed(steps: number, type: 'int16' | 'uint16'): number {
-  if (Number.isNaN(steps)) return type === 'int16' ? MISSING_INT16 : MISSING_UINT16;
-  const rounded = Math.round(steps);
-  return type === 'int16'
-    ? Math.min(MOST_INT16, Math.max(-MOST_INT16, rounded))
-    : Math.min(MISSING_UINT16 - 1, Math.max(0, rounded));
+function packedDryBulb(dryBulbC: number): number {
+  return Number.isNaN(dryBulbC) ? MISSING_INT16 : Math.min(MOST_INT16, Math.max(-MOST_INT16, hundredths(dryBulbC)));
+}
+
+function packedUint16(steps: number): number {
+  return Number.isNaN(steps) ? MISSING_UINT16 : Math.min(MISSING_UINT16 - 1, Math.max(0, Math.round(steps)));
 }
 
 /** The numbers that the packed columns stand for. */
 export function unpackYear(year: PackedYear): YearColumns {
+  const slots = year.flags.length;
   return {
-    dryBulbC: Float64Array.from(year.dryBulb, (value) => (value === MISSING_INT16 ? Number.NaN : value / 100)),
-    humidityRatio: Float64Array.from(year.humidityRatio, (value) =>
-      value === MISSING_UINT16 ? Number.NaN : value * HUMIDITY_RATIO_STEP,
-    ),
-    pressurePa: Float64Array.from(year.pressure, (value) =>
-      value === MISSING_UINT16 ? Number.NaN : value * PRESSURE_STEP_PA,
-    ),
+    dryBulbC: floatColumn(slots, (slot) => {
+      const value = year.dryBulb[slot] ?? MISSING_INT16;
+      return value === MISSING_INT16 ? Number.NaN : value / 100;
+    }),
+    humidityRatio: floatColumn(slots, (slot) => stepsOrMissing(year.humidityRatio, slot) * HUMIDITY_RATIO_STEP),
+    pressurePa: floatColumn(slots, (slot) => stepsOrMissing(year.pressure, slot) * PRESSURE_STEP_PA),
   };
+}
+
+function stepsOrMissing(column: Uint16Array, slot: number): number {
+  const value = column[slot] ?? MISSING_UINT16;
+  return value === MISSING_UINT16 ? Number.NaN : value;
 }
 
 export interface PackedBytes {

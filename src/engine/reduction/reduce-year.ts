@@ -1,3 +1,4 @@
+import { floatColumn } from '../float-column.ts';
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
 import {
@@ -68,7 +69,10 @@ export function reduceYear(reading: UsableReading): ReducedYear {
   const { dryBulbC } = unpackYear(packed);
   const wetBulbC = wetBulbColumn(packed);
   const depression = depressionHundredths(packed, wetBulbC);
-  const depressionK = Float64Array.from(depression, (value) => (value < 0 ? Number.NaN : value / 100));
+  const depressionK = floatColumn(depression.length, (slot) => {
+    const value = depression[slot] ?? -1;
+    return value < 0 ? Number.NaN : value / 100;
+  });
   const histogram = depressionHistogram(depression);
   const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(packed) });
   const { station } = reading;

@@ -73,10 +73,6 @@ export class FindingList {
     return this.#findings.some((finding) => finding.severity === 'refuse');
   }
 
-  has(code: FindingCode): boolean {
-    return this.#findings.some((finding) => finding.code === code);
-  }
-
   get asks(): readonly Ask[] {
     return this.#asks;
   }

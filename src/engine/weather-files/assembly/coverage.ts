@@ -1,6 +1,6 @@
 /** What is said about gaps, repairs and estimates once the hours stand. */
 import { monthNames, monthOfEachSlot } from '../../reduction/calendar.ts';
-import { dryBulbProvenance, humidityProvenance, pressureProvenance } from '../../reduction/hour-flags.ts';
+import { dryBulbProvenance, hasRepair, humidityProvenance } from '../../reduction/hour-flags.ts';
 import { MONTH_COUNTS_FROM_PCT, MOST_REPAIRED_PCT } from '../../reduction/month-completeness.ts';
 import { type FindingList, hoursPhrase, whole } from '../finding-list.ts';
 import type { HourColumns } from '../weather-file-reading.ts';
@@ -53,7 +53,7 @@ function isKnown(hours: HourColumns, slot: number): boolean {
 
 /**
  * Tells months that do not count, a much repaired year and a much estimated one; refuses a file without one whole month.
- * @param input.pressureKnown false while neither pressure nor elevation is known: humidity then waits for the answer
+ * @param input.humidityPresent 1 where an hour has a humidity, even one that waits for a pressure
  */
 export function tellCoverage(input: { hours: HourColumns; humidityPresent: Uint8Array }, findings: FindingList): void {
   const { hours, humidityPresent } = input;
@@ -70,8 +70,7 @@ export function tellCoverage(input: { hours: HourColumns; humidityPresent: Uint8
     present[month] = (present[month] ?? 0) + 1;
     known++;
     const flags = hours.flags[slot] ?? 0;
-    const provenances = [dryBulbProvenance(flags), humidityProvenance(flags), pressureProvenance(flags)];
-    if (provenances.includes('repaired')) repaired++;
+    if (hasRepair(flags)) repaired++;
   }
   const shares = monthNames.map((_name, index) => (100 * (present[index + 1] ?? 0)) / (all[index + 1] ?? 1));
   const short = shares.flatMap((pct, index) =>

@@ -1,5 +1,5 @@
-import { humidityRatioFromWetBulb } from '../../psychrometrics/moist-air.ts';
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
+import { humidityRatioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
 import { VALUE } from './source-rows.ts';
 import type { StepColumns } from './step-columns.ts';
 
@@ -64,5 +64,5 @@ function reduceHour(steps: StepColumns, humidityRatio: Float64Array, hours: Hour
   hours.dryBulbC[slot] = dryBulbC;
   if (wet.count < FEWEST_SHARE * n) return;
   const meanWetBulbC = dryBulbC - wet.depression / wet.count;
-  hours.humidityRatio[slot] = humidityRatioFromWetBulb(dryBulbC, meanWetBulbC, pressurePa);
+  hours.humidityRatio[slot] = humidityRatioOnWetBulbLine(dryBulbC, meanWetBulbC, pressurePa);
 }

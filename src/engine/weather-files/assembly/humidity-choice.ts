@@ -1,4 +1,5 @@
 /** Which humidity serves: decided for the whole file, never hour by hour. */
+import { floatColumn } from '../../float-column.ts';
 import {
   type BelowZeroPhase,
   dewPointC as dewPointOfState,
@@ -84,7 +85,8 @@ export function humidityRatios(
   source: HumiditySource,
 ): Float64Array {
   const { belowZero, steps } = input;
-  return Float64Array.from(input.dryBulbC, (dryBulbC, step) => {
+  return floatColumn(input.dryBulbC.length, (step) => {
+    const dryBulbC = input.dryBulbC[step] ?? Number.NaN;
     const pressurePa = steps.pressurePa[step] ?? Number.NaN;
     const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
     const value = column[step] ?? Number.NaN;

@@ -1,3 +1,4 @@
+import { floatColumn } from '../../float-column.ts';
 import type { SourceRows } from './source-rows.ts';
 
 /**
@@ -26,8 +27,9 @@ export function stepColumns(input: {
   stepsPerHour: number;
 }): StepColumns {
   const { rows, rowOfStep } = input;
+  // Row -1 is no row: reading it gives undefined, which is missing.
   const column = (values: readonly number[]) =>
-    Float64Array.from(rowOfStep, (row) => (row < 0 ? Number.NaN : (values[row] ?? Number.NaN)));
+    floatColumn(rowOfStep.length, (step) => values[rowOfStep[step] ?? -1] ?? Number.NaN);
   return {
     slotCount: input.slotCount,
     stepsPerHour: input.stepsPerHour,

@@ -22,6 +22,10 @@ const FIELD_NAMES = [
   'pressure',
 ];
 const YEAR = 0;
+const MONTH = 1;
+const DAY = 2;
+const HOUR = 3;
+const MINUTE = 4;
 const FLAGS = 5;
 const DRY_BULB = 6;
 const DEW_POINT = 7;
@@ -61,15 +65,11 @@ export interface EpwTime {
 
 /** The time of the row; null when it cannot be placed, with every fault told. */
 export function readTime(cursor: LineCursor, bounds: FieldBounds, findings: FindingList): EpwTime | null {
-  const number = (index: number) => numberField(cursor.text, startOf(bounds, index), endOf(bounds, index));
-  const year = number(YEAR);
-  const values = [1, 2, 3, 4].map((index) => {
-    const value = number(index);
-    if (typeof value === 'number') return value;
-    tellNotANumber(cursor, bounds, index, findings);
-    return Number.NaN;
-  });
-  const [month = Number.NaN, day = Number.NaN, hour = Number.NaN, minute = Number.NaN] = values;
+  const year = numberField(cursor.text, startOf(bounds, YEAR), endOf(bounds, YEAR));
+  const month = timePart(cursor, bounds, MONTH, findings);
+  const day = timePart(cursor, bounds, DAY, findings);
+  const hour = timePart(cursor, bounds, HOUR, findings);
+  const minute = timePart(cursor, bounds, MINUTE, findings);
   if (Number.isNaN(month + day + hour + minute)) return null;
   const wrong =
     wrongPart('month', month, 1, 12) ??
@@ -77,27 +77,45 @@ export function readTime(cursor: LineCursor, bounds: FieldBounds, findings: Find
     wrongPart('hour', hour, 0, 24) ??
     wrongPart('minute', minute, 0, 60);
   if (wrong !== null) {
-    const { line } = cursor;
-    const ofMonth = wrong.part === 'day' ? ` of ${monthNames[month - 1]}` : '';
-    findings.add({
-      code: 'time-order',
-      severity: 'refuse',
-      line,
-      column: () => columnOf(cursor, bounds, FIELD_NAMES.indexOf(wrong.part)),
-      message: () =>
-        `Line ${line}: ${wrong.part} ${wrong.value}${ofMonth} does not exist (${wrong.low} to ${wrong.high}), so the row has no place in the year. Mend the date.`,
-    });
+    tellWrongTime(cursor, bounds, { ...wrong, month }, findings);
     return null;
   }
   return { year: typeof year === 'number' && Number.isInteger(year) ? year : 0, month, day, hour, minute };
 }
 
-function wrongPart(
-  part: string,
-  value: number,
-  low: number,
-  high: number,
-): { part: string; value: number; low: number; high: number } | null {
+function timePart(cursor: LineCursor, bounds: FieldBounds, index: number, findings: FindingList): number {
+  const value = numberField(cursor.text, startOf(bounds, index), endOf(bounds, index));
+  if (typeof value === 'number') return value;
+  tellNotANumber(cursor, bounds, index, findings);
+  return Number.NaN;
+}
+
+interface WrongPart {
+  readonly part: string;
+  readonly value: number;
+  readonly low: number;
+  readonly high: number;
+}
+
+function tellWrongTime(
+  cursor: LineCursor,
+  bounds: FieldBounds,
+  wrong: WrongPart & { readonly month: number },
+  findings: FindingList,
+): void {
+  const { line } = cursor;
+  const ofMonth = wrong.part === 'day' ? ` of ${monthNames[wrong.month - 1]}` : '';
+  findings.add({
+    code: 'time-order',
+    severity: 'refuse',
+    line,
+    column: () => columnOf(cursor, bounds, FIELD_NAMES.indexOf(wrong.part)),
+    message: () =>
+      `Line ${line}: ${wrong.part} ${wrong.value}${ofMonth} does not exist (${wrong.low} to ${wrong.high}), so the row has no place in the year. Mend the date.`,
+  });
+}
+
+function wrongPart(part: string, value: number, low: number, high: number): WrongPart | null {
   return Number.isInteger(value) && value >= low && value <= high ? null : { part, value, low, high };
 }
 
@@ -107,20 +125,22 @@ export function readValues(
   bounds: FieldBounds,
   findings: FindingList,
 ): { dryBulbC: number; dewPointC: number; relativeHumidityPct: number; pressurePa: number } {
-  const temperature = (value: number) => (value >= 99.9 || TEMPERATURE_CODES.has(value) ? Number.NaN : value);
-  const value = (index: number) => readValue(cursor, bounds, index, findings);
-  const relativeHumidityPct = value(RELATIVE_HUMIDITY);
-  const pressurePa = value(PRESSURE);
+  const relativeHumidityPct = readValue(cursor, bounds, RELATIVE_HUMIDITY, findings);
+  const pressurePa = readValue(cursor, bounds, PRESSURE, findings);
   return {
-    dryBulbC: temperature(value(DRY_BULB)),
-    dewPointC: temperature(value(DEW_POINT)),
+    dryBulbC: withoutCodes(readValue(cursor, bounds, DRY_BULB, findings)),
+    dewPointC: withoutCodes(readValue(cursor, bounds, DEW_POINT, findings)),
     relativeHumidityPct: relativeHumidityPct >= 999 || relativeHumidityPct < 0 ? Number.NaN : relativeHumidityPct,
     // 99999 may be a pressure: the median of the file decides, in `read-epw.ts`.
     pressurePa: pressurePa >= 999_999 || pressurePa === 9_999 || pressurePa <= 0 ? Number.NaN : pressurePa,
   };
 }
 
-const TEMPERATURE_CODES = new Set([-99, -99.9, -999, -9999]);
+/** A temperature, °C, or NaN for the codes of a missing one: 99.9 and above, -99, -99.9, -999, -9999. */
+function withoutCodes(value: number): number {
+  const code = value >= 99.9 || value === -99 || value === -99.9 || value === -999 || value === -9999;
+  return code ? Number.NaN : value;
+}
 
 function readValue(cursor: LineCursor, bounds: FieldBounds, index: number, findings: FindingList): number {
   const value = numberField(cursor.text, startOf(bounds, index), endOf(bounds, index));

@@ -22,14 +22,11 @@ export interface EpwRows {
 const MOST_ROWS = 2 * 8784 * 60;
 /** A number of fields that so many rows share is a layout of the file; a rarer one is a damaged row. */
 const LAYOUT_SHARE = 0.01;
-/** Source letters of values that are interpolated (B, C) or modelled (E). */
-const ESTIMATED_LETTERS = new Set([...'BCE'].map((letter) => letter.charCodeAt(0)));
-
 interface Progress {
   readonly rows: SourceRows;
   readonly fieldCounts: number[];
   readonly bounds: FieldBounds;
-  firstFlags: string | null;
+  firstFlags: number | null;
   flagsVary: boolean;
   longRows: number;
   firstLongLine: number;
@@ -122,13 +119,23 @@ function keepRow(
   rows.estimated.push(row.estimated);
 }
 
+/** Keeps whether the flags vary, and answers which values they call estimated. */
 function readFlags(cursor: LineCursor, progress: Progress): number {
   const flags = flagBytes(cursor, progress.bounds);
-  const letters = String.fromCharCode(flags[0] ?? 0, flags[1] ?? 0, flags[2] ?? 0, flags[3] ?? 0);
-  if (progress.firstFlags === null) progress.firstFlags = letters;
-  else if (progress.firstFlags !== letters) progress.flagsVary = true;
-  const bit = (at: number, value: number) => (ESTIMATED_LETTERS.has(flags[at] ?? 0) ? value : 0);
-  return bit(0, VALUE.dryBulb) | bit(2, VALUE.dewPoint) | bit(4, VALUE.relativeHumidity);
+  const [dryLetter = 0, dryDigit = 0, dewLetter = 0, dewDigit = 0, humidityLetter = 0] = flags;
+  const firstFour = ((dryLetter * 256 + dryDigit) * 256 + dewLetter) * 256 + dewDigit;
+  if (progress.firstFlags === null) progress.firstFlags = firstFour;
+  else if (progress.firstFlags !== firstFour) progress.flagsVary = true;
+  let estimated = 0;
+  if (isEstimated(dryLetter)) estimated |= VALUE.dryBulb;
+  if (isEstimated(dewLetter)) estimated |= VALUE.dewPoint;
+  if (isEstimated(humidityLetter)) estimated |= VALUE.relativeHumidity;
+  return estimated;
+}
+
+/** Source letters of values that are interpolated (B, C) or modelled (E). */
+function isEstimated(letter: number): boolean {
+  return letter === 0x42 || letter === 0x43 || letter === 0x45;
 }
 
 function tellTooMany(cursor: LineCursor, findings: FindingList): void {

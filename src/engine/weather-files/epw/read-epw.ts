@@ -4,22 +4,13 @@ import type { SourceRows } from '../assembly/source-rows.ts';
 import { type FindingList, whole } from '../finding-list.ts';
 import type { DecodedText } from '../text/decode-text.ts';
 import { LineCursor } from '../text/line-cursor.ts';
-import type { DeclaredStation, WeatherFileReading } from '../weather-file-reading.ts';
+import type { WeatherFileReading } from '../weather-file-reading.ts';
 import { type EpwHeader, readEpwHeader } from './epw-header.ts';
 import { readEpwRows } from './epw-rows.ts';
 
 /** Either a pressure or the code for none: the median of the others decides. */
 const PRESSURE_CODE_PA = 99_999;
 const CODE_WITHIN = 0.01;
-
-const NO_STATION: DeclaredStation = {
-  name: 'Unnamed station',
-  latitude: null,
-  longitude: null,
-  elevationM: null,
-  utcOffsetH: null,
-  wmoNumber: null,
-};
 
 export function readEpw(text: DecodedText, findings: FindingList): WeatherFileReading {
   const cursor = new LineCursor(text);
@@ -31,7 +22,7 @@ export function readEpw(text: DecodedText, findings: FindingList): WeatherFileRe
   return assembleYear(
     {
       format: 'EPW',
-      station: header.station ?? NO_STATION,
+      station: header.station,
       stationLine: header.stationLine,
       rows,
       stepsPerHour: settleRecordsPerHour(header, rows, findings),

@@ -9,6 +9,8 @@ export interface DecodedText {
   readonly windows1252: boolean;
   /** The file was UTF-16 and has been rewritten as UTF-8. */
   readonly utf16: boolean;
+  /** Some line ends are a carriage return alone. */
+  readonly loneReturns: boolean;
 }
 
 export interface NotText {
@@ -25,6 +27,7 @@ const LINE_FEED = 0x0a;
 const FORM_FEED = 0x0c;
 const RETURN = 0x0d;
 const CTRL_Z = 0x1a;
+const SPACE = 0x20;
 const DELETE = 0x7f;
 
 /** Decodes a file, or says why it is not text. */
@@ -33,9 +36,10 @@ export function decodeText(file: Uint8Array): DecodedText | NotText {
   if (archive !== null) return { notText: archive, line: null, controlPct: 0 };
   const utf16 = utf16Order(file);
   const bytes = utf16 === null ? withoutUtf8Mark(file) : utf8FromUtf16(file.subarray(2), utf16);
-  const fault = controlFault(bytes);
-  if (fault !== null) return fault;
-  return { bytes, windows1252: !isUtf8(bytes), utf16: utf16 !== null };
+  const found = survey(bytes);
+  if ('notText' in found) return found;
+  const windows1252 = !found.ascii && !isUtf8(bytes);
+  return { bytes, windows1252, utf16: utf16 !== null, loneReturns: found.loneReturns };
 }
 
 function archiveKind(file: Uint8Array): 'gzip' | 'zip' | null {
@@ -54,18 +58,23 @@ function utf16Order(file: Uint8Array): 'little' | 'big' | null {
   return null;
 }
 
-function controlFault(bytes: Uint8Array): NotText | null {
+/** One pass over the bytes: what is not text, and whether anything beyond ASCII or a lone carriage return stands there. */
+function survey(bytes: Uint8Array): NotText | { readonly ascii: boolean; readonly loneReturns: boolean } {
   let line = 1;
   let controls = 0;
+  let ascii = true;
+  let loneReturns = false;
   for (let at = 0; at < bytes.length; at++) {
     const byte = bytes[at] ?? 0;
-    if (byte >= 0x20 && byte !== DELETE) continue;
+    if (byte >= SPACE && byte < DELETE) continue;
     if (byte === LINE_FEED) line++;
+    else if (byte > DELETE) ascii = false;
+    else if (byte === RETURN) loneReturns = loneReturns || bytes[at + 1] !== LINE_FEED;
     else if (byte === 0) return { notText: 'nul', line, controlPct: 0 };
-    else if (byte !== RETURN && byte !== TAB && byte !== FORM_FEED && byte !== CTRL_Z) controls++;
+    else if (byte !== TAB && byte !== FORM_FEED && byte !== CTRL_Z) controls++;
   }
   const controlPct = (100 * controls) / Math.max(1, bytes.length);
-  return controlPct > MOST_CONTROL_PCT ? { notText: 'control', line: null, controlPct } : null;
+  return controlPct > MOST_CONTROL_PCT ? { notText: 'control', line: null, controlPct } : { ascii, loneReturns };
 }
 
 /** Length of the UTF-8 sequence at a place, 0 when it is malformed (overlong, a surrogate, beyond U+10FFFF, cut short). */

@@ -45,14 +45,14 @@ export class LineCursor {
   }
 
   #step(): void {
-    const { bytes } = this.text;
-    let at = this.#next;
-    this.start = at;
-    while (at < bytes.length && bytes[at] !== LINE_FEED && bytes[at] !== RETURN) at++;
-    this.end = at;
-    this.closed = at < bytes.length;
-    if (bytes[at] === RETURN && bytes[at + 1] === LINE_FEED) at++;
-    this.#next = at + 1;
+    const { bytes, loneReturns } = this.text;
+    this.start = this.#next;
+    const at = loneReturns ? lineEnd(bytes, this.start) : bytes.indexOf(LINE_FEED, this.start);
+    this.closed = at >= 0;
+    this.end = this.closed ? at : bytes.length;
+    this.#next = this.end + 1;
+    if (bytes[this.end] === RETURN && bytes[this.#next] === LINE_FEED) this.#next++;
+    else if (bytes[this.end - 1] === RETURN && this.end > this.start) this.end--;
     this.line++;
   }
 
@@ -64,4 +64,11 @@ export class LineCursor {
     }
     return true;
   }
+}
+
+/** The next line feed or carriage return, or -1. */
+function lineEnd(bytes: Uint8Array, start: number): number {
+  let at = start;
+  while (at < bytes.length && bytes[at] !== LINE_FEED && bytes[at] !== RETURN) at++;
+  return at < bytes.length ? at : -1;
 }
