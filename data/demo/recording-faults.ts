@@ -1,4 +1,3 @@
-import { relativeHumidityOfDewPointPct } from '../../src/engine/psychrometrics/moist-air.ts';
 import type { InventedYear } from './invent-weather.ts';
 import { seededRandom } from './seeded-random.ts';
 import type { DemoStation } from './stations.ts';
@@ -73,25 +72,30 @@ function interpolate(year: RecordedYear, firstSlot: number, hours: number): void
 
 const STUCK_H = 54;
 
-/** The dew point stays at one value for two days and more, at the first time at which the air stays warmer than that. */
+/**
+ * The dew point stays at one value for two days and more, at the first time in autumn at which the night then cools below it
+ * for a few hours: the sensor of the relative humidity goes on as it was.
+ */
 function stickDewPoint(year: RecordedYear): void {
   for (let slot = 1500; slot < year.dryBulbC.length - STUCK_H; slot += 1) {
     const stuckC = year.dewPointC[slot] ?? Number.NaN;
-    const dryBulbs = year.dryBulbC.subarray(slot, slot + STUCK_H);
-    if (!(Math.min(...dryBulbs) > stuckC + 0.5)) continue;
+    const belowK = year.dryBulbC.subarray(slot, slot + STUCK_H).map((dryBulbC) => stuckC - dryBulbC);
+    const impossibleH = belowK.filter((kelvin) => kelvin > 0.5).length;
+    if (impossibleH < 3 || impossibleH > 8 || !(Math.max(...belowK) < 3)) continue;
     year.dewPointC.fill(stuckC, slot, slot + STUCK_H);
-    for (let at = slot; at < slot + STUCK_H; at += 1) {
-      const dryBulbC = year.dryBulbC[at] ?? Number.NaN;
-      year.relativeHumidityPct[at] = Math.round(relativeHumidityOfDewPointPct(dryBulbC, stuckC, 'water'));
-    }
     return;
   }
   throw new RangeError('no two days in which the dew point could be stuck');
 }
 
-/** In fog the humidity sensor reads a little over 100 %. */
+/** Days for which a humidity sensor reads high. */
+const HIGH_DAYS = 12;
+
+/** For some days in which there is fog the humidity sensor reads a little over 100 %. */
 function readHumidityHigh(year: RecordedYear): void {
-  for (const [slot, humidityPct] of year.relativeHumidityPct.entries()) {
+  const foggy = year.relativeHumidityPct.findIndex((humidityPct, slot) => slot > 4344 && humidityPct >= 99);
+  for (let slot = foggy; slot < foggy + HIGH_DAYS * 24; slot += 1) {
+    const humidityPct = year.relativeHumidityPct[slot] ?? Number.NaN;
     if (humidityPct >= 99) year.relativeHumidityPct[slot] = humidityPct + 2;
   }
 }

@@ -4,6 +4,8 @@ import { inventWeather } from '../../../data/demo/invent-weather.ts';
 import { sampleStation } from '../../../data/demo/sample-upload.ts';
 import { demoStations } from '../../../data/demo/stations.ts';
 import { INVENTED_NOTE } from '../../../data/demo/write-epw.ts';
+import { reduceYear } from '../../../src/engine/reduction/reduce-year.ts';
+import { readWeatherFile } from '../../../src/engine/weather-files/read-weather-file.ts';
 
 const HOURS = 8760;
 const stations = [...demoStations, sampleStation];
@@ -199,5 +201,51 @@ describe('a written file', () => {
     // Long gaps at three stations, humidity lost at one; two short gaps may meet.
     expect(longer).toBeGreaterThanOrEqual(4);
     expect(longer).toBeLessThanOrEqual(6);
+  });
+});
+
+describe('reading the written files', () => {
+  const readings = stations.map((station) => {
+    const { name, text } = demoWeatherFile(station);
+    return { station, reading: readWeatherFile(new TextEncoder().encode(text), name) };
+  });
+  /** The faults that were put in, by the gravest severity that their findings have. */
+  const REPAIRED = ['Twin Kopjes', 'Gannet Point', sampleStation.name];
+  const DOUBTED = ['Lantern Bay'];
+  const INCOMPLETE = ['Korrel Pan', 'Leadwood Halt', 'Plover Rand', sampleStation.name];
+
+  it('ends in review for each, without a doubt but where a fault was put in', () => {
+    expect(readings).toHaveLength(27);
+    for (const { station, reading } of readings) {
+      expect(reading.status, station.name).toBe('review');
+      const severities = new Set(reading.findings.map(({ severity }) => severity));
+      expect(severities.has('doubt'), station.name).toBe(DOUBTED.includes(station.name));
+      if (!DOUBTED.includes(station.name)) {
+        expect(severities.has('repair'), station.name).toBe(REPAIRED.includes(station.name));
+      }
+    }
+  });
+
+  it('finds the place, the kind of year and the note that it is invented in each', () => {
+    for (const { station, reading } of readings) {
+      if (reading.status === 'refused') throw new Error(`${station.name} was refused`);
+      const { name, latitude, longitude, elevationM, utcOffsetH } = station;
+      expect(reading.station).toMatchObject({ name, latitude, longitude, elevationM, utcOffsetH });
+      expect(reading.kind, name).toBe(station.year === null ? 'typical' : 'actual');
+      expect(reading.year, name).toBe(station.year);
+      expect(reading.comments, name).toContain(INVENTED_NOTE);
+    }
+  });
+
+  it('fills the short gaps and leaves the long ones missing', () => {
+    let missing = 0;
+    for (const { station, reading } of readings) {
+      if (reading.status === 'refused') throw new Error(`${station.name} was refused`);
+      const { facts } = reduceYear(reading);
+      expect(facts.repaired, station.name).toBeGreaterThan(0);
+      expect(facts.missing > 0, `${station.name}: ${facts.missing} h missing`).toBe(INCOMPLETE.includes(station.name));
+      missing += facts.missing;
+    }
+    expect(missing).toBeGreaterThan(60);
   });
 });
