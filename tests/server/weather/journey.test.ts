@@ -1,21 +1,20 @@
 import { createHash } from 'node:crypto';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { demoWeatherFile } from '../../../data/demo/demo-weather-file.ts';
-import { demoStations } from '../../../data/demo/stations.ts';
 import { openTeamFeed } from '../../../server/jobs/team-feed.ts';
-import type { Place, ProgrammeMap } from '../../../src/contract/runs.ts';
-import type { TeamEvent, WeatherFile, WeatherFileRecord } from '../../../src/contract/weather.ts';
+import type { TeamEvent } from '../../../src/contract/weather.ts';
+import { demoEpw } from '../../support/demo-epw.ts';
 import { eventually } from '../../support/eventually.ts';
-import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
+import { openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
+import { deskOf, type TeamDesk } from '../../support/team-desk.ts';
 
 let road: Road;
 let team: RoadTeam;
-let engineer: Member;
+let desk: TeamDesk;
 
 beforeAll(async () => {
   road = await openRoad();
   team = await road.makeTeam('Northern offices');
-  engineer = await team.join('engineer');
+  desk = deskOf(team, await team.join('engineer'));
   await road.startWorker();
 });
 afterEach(() => {
@@ -23,50 +22,11 @@ afterEach(() => {
 });
 afterAll(() => road.close());
 
-const [first, second] = demoStations.filter(({ year, faults }) => year === null && faults.length === 0);
-if (first === undefined || second === undefined) throw new Error('the demo has two clean typical years');
-const epw = demoWeatherFile(first);
-
-async function uploaded(
-  name: string,
-  bytes: Buffer,
-  by: Member = engineer,
-): Promise<{ file: WeatherFile; known: boolean }> {
-  const { body } = await by.agent
-    .post(`/api/teams/${team.teamId}/weather-files`)
-    .attach('file', bytes, name)
-    .expect(200);
-  return body;
-}
-
-async function recordOf(fileId: string): Promise<WeatherFileRecord> {
-  const { body } = await engineer.agent.get(`/api/teams/${team.teamId}/weather-files/${fileId}`).expect(200);
-  return body;
-}
-
-const readToTheEnd = (fileId: string): Promise<WeatherFileRecord> =>
-  eventually('the end of reading', async () => {
-    const record = await recordOf(fileId);
-    return record.file.status !== 'reading' && record;
-  });
-
-const accept = (fileId: string) =>
-  engineer.agent.post(`/api/teams/${team.teamId}/weather-files/${fileId}/acceptance`).send();
-
-async function mapNow(): Promise<ProgrammeMap> {
-  const { body } = await engineer.agent.get(`/api/teams/${team.teamId}/programmes/${team.programmeId}/map`).expect(200);
-  return body;
-}
-
-const mapWithoutPending = (): Promise<ProgrammeMap> =>
-  eventually('every run', async () => {
-    const map = await mapNow();
-    return map.pending === 0 && map;
-  });
+const epw = demoEpw(0);
 
 describe('the main road', () => {
   it('begins with an empty map, which is no error', async () => {
-    expect(await mapNow()).toMatchObject({
+    expect(await desk.map()).toMatchObject({
       stations: [],
       pending: 0,
       invented: true,
@@ -84,7 +44,7 @@ describe('the main road', () => {
     })();
 
     const bytes = Buffer.from(epw.text);
-    const { file, known } = await uploaded(epw.name, bytes);
+    const { file, known } = await desk.upload(epw.name, bytes);
     expect(known).toBe(false);
     expect(file).toMatchObject({
       name: epw.name,
@@ -94,21 +54,22 @@ describe('the main road', () => {
       stationId: null,
     });
 
-    const record = await readToTheEnd(file.id);
+    const record = await desk.readToTheEnd(file.id);
     expect(record.file).toMatchObject({ status: 'review', step: null, failure: null, format: 'EPW', kind: 'typical' });
     expect(record.file.station).toMatchObject({
-      name: expect.stringContaining(first.name),
-      elevationM: first.elevationM,
+      name: expect.stringContaining(epw.station.name),
+      elevationM: epw.station.elevationM,
     });
     expect(record.file.completePct).toBeGreaterThan(99);
     expect(record.facts?.hours).toBe(8760);
     const { measured = 0, estimated = 0, repaired = 0, missing = 0 } = record.facts ?? {};
     expect(measured + estimated + repaired + missing).toBe(8760);
-    expect((await mapNow()).stations).toEqual([]);
+    expect((await desk.map()).stations).toEqual([]);
 
-    const accepted = await accept(file.id).expect(200);
+    const accepted = await desk.accept(file.id);
+    expect(accepted.status).toBe(200);
     expect(accepted.body).toMatchObject({ status: 'accepted', stationId: expect.any(String) });
-    const map = await mapWithoutPending();
+    const map = await desk.mapWithoutPending();
     expect(map.stations).toHaveLength(1);
     const [station] = map.stations;
     expect(station).toMatchObject({ id: accepted.body.stationId, scoreNote: null, verdict: expect.any(String) });
@@ -124,9 +85,8 @@ describe('the main road', () => {
   });
 
   it('shows the station as a place with ledger, arithmetic, grade and cautions', async () => {
-    const [station] = (await mapWithoutPending()).stations;
-    const path = `/api/teams/${team.teamId}/programmes/${team.programmeId}/stations/${station?.id}`;
-    const { body }: { body: Place } = await engineer.agent.get(path).expect(200);
+    const [station] = (await desk.mapWithoutPending()).stations;
+    const body = await desk.place(station?.id ?? '');
     expect(body.years).toHaveLength(1);
     const { shown } = body;
     const total = Object.values(shown?.ledger.classes ?? {}).reduce((sum, hours) => sum + hours, 0);
@@ -143,36 +103,27 @@ describe('the main road', () => {
       'measured share',
       'kind',
     ]);
-    const hours = await engineer.agent
-      .get(`/api/teams/${team.teamId}/runs/${shown?.runId}/hours`)
-      .buffer()
-      .parse((response, done) => {
-        const chunks: Buffer[] = [];
-        response.on('data', (chunk: Buffer) => chunks.push(chunk));
-        response.on('end', () => done(null, Buffer.concat(chunks)));
-      })
-      .expect(200);
-    expect(hours.body).toHaveLength(8760);
+    expect(await desk.runHours(shown?.runId ?? '')).toHaveLength(8760);
   });
 
   it('knows the same bytes again, whatever their name, and stores nothing', async () => {
     const before = await road.countRows();
-    const again = await uploaded('another name.epw', Buffer.from(epw.text));
+    const again = await desk.upload('another name.epw', Buffer.from(epw.text));
     expect(again.known).toBe(true);
     expect(again.file).toMatchObject({ name: epw.name, status: 'accepted' });
     expect(await road.countRows()).toEqual(before);
   });
 
   it('stores two uploads of the same bytes at once as one file', async () => {
-    const twin = demoWeatherFile(second);
+    const twin = demoEpw(1);
     const before = await road.countRows();
     const [one, other] = await Promise.all([
-      uploaded(twin.name, Buffer.from(twin.text)),
-      uploaded(twin.name, Buffer.from(twin.text)),
+      desk.upload(twin.name, Buffer.from(twin.text)),
+      desk.upload(twin.name, Buffer.from(twin.text)),
     ]);
     expect(one.file.id).toBe(other.file.id);
     expect([one.known, other.known].toSorted()).toEqual([false, true]);
-    await readToTheEnd(one.file.id);
+    await desk.readToTheEnd(one.file.id);
     const after = await road.countRows();
     expect(after['public.weather_files']).toBe((before['public.weather_files'] ?? 0) + 1);
     expect(after['public.weather_years']).toBe((before['public.weather_years'] ?? 0) + 1);
