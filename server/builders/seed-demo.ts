@@ -153,7 +153,7 @@ async function judgedYears(
   });
   const failed = years.find(({ failure }) => failure !== null);
   if (failed !== undefined) throw new Error(`${failed.stationName} could not be judged: ${failed.failure}`);
-  const done = years.filter(({ runId }) => runId !== null).length;
+  const done = years.filter(({ run }) => run !== null).length;
   return { done, left: years.length - done };
 }
 

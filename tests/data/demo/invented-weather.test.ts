@@ -9,7 +9,14 @@ import { readWeatherFile } from '../../../src/engine/weather-files/read-weather-
 
 const HOURS = 8760;
 const stations = [...demoStations, sampleStation];
+const files = new Map(stations.map((station) => [station.name, demoWeatherFile(station)]));
 const years = new Map(stations.map((station) => [station.name, inventWeather(station)]));
+
+function fileOf(name: string) {
+  const file = files.get(name);
+  if (file === undefined) throw new RangeError(`no station ${name}`);
+  return file;
+}
 
 function yearOf(name: string) {
   const year = years.get(name);
@@ -67,7 +74,7 @@ describe('the invented weather', () => {
   it('comes out with the same bytes every time', () => {
     let bytes = 0;
     for (const station of stations) {
-      const [first, second] = [demoWeatherFile(station), demoWeatherFile(station)];
+      const [first, second] = [fileOf(station.name), demoWeatherFile(station)];
       expect(second.text === first.text, station.name).toBe(true);
       bytes += first.text.length;
     }
@@ -163,7 +170,7 @@ describe('a written file', () => {
   it('has eight header records and 8760 rows of 35 fields, ends every line with CRLF, and says that it is invented', () => {
     let rows = 0;
     for (const station of stations) {
-      const { text } = demoWeatherFile(station);
+      const { text } = fileOf(station.name);
       const lines = text.split('\r\n');
       expect(text.replaceAll('\r\n', '')).not.toMatch(/[\r\n]/);
       expect(lines.pop()).toBe('');
@@ -182,7 +189,7 @@ describe('a written file', () => {
   it('writes gaps of one to five hours at every station, and a longer one where the recorder stopped', () => {
     let longer = 0;
     for (const station of stations) {
-      const values = demoWeatherFile(station)
+      const values = fileOf(station.name)
         .text.split('\r\n')
         .slice(8, 8 + HOURS)
         .map((line) => line.split(',')[7]);
@@ -206,7 +213,7 @@ describe('a written file', () => {
 
 describe('reading the written files', () => {
   const readings = stations.map((station) => {
-    const { name, text } = demoWeatherFile(station);
+    const { name, text } = fileOf(station.name);
     return { station, reading: readWeatherFile(new TextEncoder().encode(text), name) };
   });
   /** The faults that were put in, by the gravest severity that their findings have. */
