@@ -1,6 +1,8 @@
 import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
+import { CouldNotRun } from './could-not-run.ts';
+import { runTool } from './run-tool.ts';
 
 /** What the built client is made of. */
 const SOURCES = ['src', 'public', 'index.html', 'vite.config.ts', 'package.json', 'package-lock.json'];
@@ -25,37 +27,59 @@ function stampOf(rootDir: string): string {
   return hash.digest('hex');
 }
 
-export interface BuiltClient {
+interface ClientPlace {
   readonly dir: string;
-  /** False when what was there came from the same sources. */
-  readonly builtNow: boolean;
+  readonly stampFile: string;
+  /** What the stamp says when the client is made of the sources as they are now. */
+  readonly stamp: string;
+}
+
+function placeOf(rootDir: string): ClientPlace {
+  const dist = path.join(rootDir, 'dist');
+  return { dir: path.join(dist, 'client'), stampFile: path.join(dist, 'client.stamp'), stamp: stampOf(rootDir) };
+}
+
+function isCurrent({ dir, stampFile, stamp }: ClientPlace): boolean {
+  return existsSync(path.join(dir, 'index.html')) && existsSync(stampFile) && readFileSync(stampFile, 'utf8') === stamp;
 }
 
 /**
- * Builds the client if its sources have changed. Built beside its place and moved there when complete, so that an interrupted
- * build, or a server that reads the old one, never sees half of it.
+ * Sees to it that the client is built from its sources as they are now. The building is a process of its own, as it takes half
+ * a gigabyte that a server would never give back.
+ * @returns the client's folder
+ * @throws CouldNotRun with what the build said
  */
-export async function buildClient(rootDir: string): Promise<BuiltClient> {
-  const dist = path.join(rootDir, 'dist');
-  const dir = path.join(dist, 'client');
-  const stampFile = path.join(dist, 'client.stamp');
-  const stamp = stampOf(rootDir);
-  const isCurrent = existsSync(path.join(dir, 'index.html')) && existsSync(stampFile);
-  if (isCurrent && readFileSync(stampFile, 'utf8') === stamp) return { dir, builtNow: false };
+export async function requireClient({ rootDir, signal }: { rootDir: string; signal: AbortSignal }): Promise<string> {
+  const place = placeOf(rootDir);
+  if (isCurrent(place)) return place.dir;
+  const { NODE_ENV: _none, ...env } = process.env;
+  const script = path.join(rootDir, 'server/cli/run.mjs');
+  const outcome = await runTool({ script, args: ['build'], cwd: rootDir, env, signal });
+  signal.throwIfAborted();
+  if (outcome.code !== 0) throw new CouldNotRun(`The client could not be built:\n${outcome.output.trim()}`);
+  return place.dir;
+}
 
-  const fresh = path.join(dist, `client.${process.pid}.new`);
-  const old = path.join(dist, `client.${process.pid}.old`);
-  mkdirSync(dist, { recursive: true });
+/**
+ * Builds the client, if need be. Made beside its place and moved there when complete: an interrupted build leaves what was
+ * there, and a server that reads the old one never sees half of the new.
+ */
+export async function buildClient(rootDir: string): Promise<{ readonly dir: string }> {
+  const place = placeOf(rootDir);
+  if (isCurrent(place)) return { dir: place.dir };
+  const fresh = `${place.dir}.${process.pid}.new`;
+  const old = `${place.dir}.${process.pid}.old`;
+  mkdirSync(path.dirname(place.dir), { recursive: true });
   const { build } = await import('vite');
   try {
-    await build({ root: rootDir, logLevel: 'error', build: { outDir: fresh, emptyOutDir: true } });
-    rmSync(stampFile, { force: true });
-    if (existsSync(dir)) renameSync(dir, old);
-    renameSync(fresh, dir);
-    writeFileSync(stampFile, stamp);
+    await build({ root: rootDir, logLevel: 'warn', build: { outDir: fresh, emptyOutDir: true } });
+    rmSync(place.stampFile, { force: true });
+    if (existsSync(place.dir)) renameSync(place.dir, old);
+    renameSync(fresh, place.dir);
+    writeFileSync(place.stampFile, place.stamp);
+    return { dir: place.dir };
   } finally {
     rmSync(old, { recursive: true, force: true });
     rmSync(fresh, { recursive: true, force: true });
   }
-  return { dir, builtNow: true };
 }

@@ -11,7 +11,7 @@ import { openTeamFeed } from '../jobs/team-feed.ts';
 import { jsonLinesLog, type Log } from '../log.ts';
 import { createFolderStore } from '../storage/folder-store.ts';
 import { PortTakenError, startWeb } from '../web.ts';
-import { buildClient } from './build-client.ts';
+import { requireClient } from './build-client.ts';
 import { keepClusterRunning, SUPERUSER, startCluster, stopCluster } from './cluster.ts';
 import type { Command, CommandContext } from './command.ts';
 import { CouldNotRun } from './could-not-run.ts';
@@ -60,15 +60,9 @@ async function startDatabase({ home, stops, log }: Start): Promise<string> {
   return prepared.appUrl;
 }
 
-async function startBuild({ context }: Start): Promise<string> {
-  const { dir, builtNow } = await buildClient(context.rootDir);
-  if (builtNow) say('The client is built.');
-  return dir;
-}
-
 /** Both at once, and both to their end: what fails must not leave the other one half started. */
 async function startDatabaseAndBuild(start: Start): Promise<{ databaseUrl: string; clientDir: string }> {
-  const [database, client] = await Promise.allSettled([startDatabase(start), startBuild(start)]);
+  const [database, client] = await Promise.allSettled([startDatabase(start), requireClient(start.context)]);
   if (database.status === 'rejected') throw database.reason;
   if (client.status === 'rejected') throw client.reason;
   return { databaseUrl: database.value, clientDir: client.value };

@@ -1,6 +1,7 @@
 import path from 'node:path';
-import { buildClient } from './build-client.ts';
+import { requireClient } from './build-client.ts';
 import type { Command, CommandContext } from './command.ts';
+import { CouldNotRun } from './could-not-run.ts';
 import { requirePackages } from './packages.ts';
 import { runTool } from './run-tool.ts';
 import { runSuites, type Suite, seconds, suites, toolEnvironment } from './test-suites.ts';
@@ -29,13 +30,15 @@ async function runChecks({ rootDir, signal }: CommandContext): Promise<Tally> {
 }
 
 /** The browser tests need the built client; a build that fails is told as one failed test. */
-async function buildForBrowser({ rootDir, signal }: CommandContext): Promise<Tally> {
-  if (signal.aborted) return nothing;
+async function buildForBrowser(context: CommandContext): Promise<Tally> {
+  if (context.signal.aborted) return nothing;
   try {
-    await buildClient(rootDir);
+    await requireClient(context);
     return nothing;
   } catch (error) {
-    process.stdout.write(`The client could not be built:\n${error instanceof Error ? error.message : String(error)}\n`);
+    if (context.signal.aborted) return nothing;
+    if (!(error instanceof CouldNotRun)) throw error;
+    process.stdout.write(`${error.message}\n`);
     return { ...nothing, failed: 1 };
   }
 }
