@@ -1,0 +1,34 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { expect, test } from 'vitest';
+import { publishedChecks } from '../support/published-values.ts';
+
+/** The checks that are promised so far; a later one is added here together with its data and its test. */
+const PROMISED = [
+  ...Array.from({ length: 15 }, (_none, index) => `P${String(index + 1).padStart(2, '0')}`),
+  'E01',
+  'E02',
+  'E06',
+  'D01',
+  'D02',
+  'D05',
+];
+
+const tests = readdirSync(new URL('./', import.meta.url))
+  .filter((name) => name.endsWith('.test.ts'))
+  .map((name) => readFileSync(new URL(name, import.meta.url), 'utf8'))
+  .join('\n');
+
+test('every promised check has its numbers in data/checks, with a source and a tag, and a test of its name', () => {
+  expect(PROMISED).toHaveLength(21);
+  const ids = publishedChecks.map(({ id }) => id);
+  expect(new Set(ids).size).toBe(ids.length);
+  expect(PROMISED.filter((id) => !ids.includes(id))).toEqual([]);
+  expect(ids.filter((id) => !tests.includes(`test('${id} `))).toEqual([]);
+  for (const check of publishedChecks) {
+    expect(check.source, check.id).not.toBe('');
+    expect(check.cases.length, check.id).toBeGreaterThan(0);
+    for (const each of check.cases) {
+      expect(['seen', 'computed', 'definition', 'from memory'], check.id).toContain(each.tag);
+    }
+  }
+});

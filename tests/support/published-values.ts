@@ -1,0 +1,25 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import * as z from 'zod/mini';
+
+const folder = new URL('../../data/checks/', import.meta.url);
+const CheckFile = z.object({
+  checks: z.array(z.object({ id: z.string(), source: z.string(), cases: z.array(z.record(z.string(), z.unknown())) })),
+});
+
+/** Every check of data/checks, whatever its file. */
+export const publishedChecks = readdirSync(folder)
+  .filter((name) => name.endsWith('.json'))
+  .flatMap((name) => CheckFile.parse(JSON.parse(readFileSync(new URL(name, folder), 'utf8'))).checks);
+
+/** The cases of a check, each of the shape that its test wants. */
+export function casesOf<Shape extends z.core.$ZodLooseShape>(id: string, shape: Shape) {
+  const check = publishedChecks.find((each) => each.id === id);
+  if (check === undefined) throw new Error(`no check ${id} in data/checks`);
+  return check.cases.map((each) => z.object(shape).parse(each));
+}
+
+/** Data rows of a table of data/checks, header left out. */
+export function rowsOf(file: string): readonly (readonly string[])[] {
+  const lines = readFileSync(new URL(file, folder), 'utf8').trim().split('\n');
+  return lines.slice(1).map((line) => line.split(','));
+}
