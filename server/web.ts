@@ -71,8 +71,11 @@ function urlOf(server: Server, host: string): string {
 
 async function closeServer(server: Server): Promise<void> {
   const closed = new Promise<void>((resolve) => server.close(() => resolve()));
+  // A connection that was busy when we began to close waits for another request that nobody will answer.
+  const idle = setInterval(() => server.closeIdleConnections(), 50);
   const cut = setTimeout(() => server.closeAllConnections(), FINISH_WITHIN_MS);
   await closed;
+  clearInterval(idle);
   clearTimeout(cut);
 }
 

@@ -1,5 +1,5 @@
 import { once } from 'node:events';
-import type { Response } from 'express';
+import type { ServerResponse } from 'node:http';
 import type * as z from 'zod/mini';
 
 /** Often enough for proxies that cut a silent connection after a minute (common practice). */
@@ -9,7 +9,7 @@ export const HEARTBEAT_MS = 15_000;
 const RETRY_MS = 2_000;
 
 export interface EventStream {
-  readonly response: Response;
+  readonly response: ServerResponse;
   readonly schema: z.ZodMiniType;
   readonly events: AsyncIterable<unknown>;
   /** Aborted when the client has gone or the server closes. */
