@@ -7,11 +7,12 @@ import { judgeSupplyAirHour } from '#engine/hour-classes/judge-supply-air-hour.t
 import { saturationHumidityRatio, volumeM3PerKg } from '#engine/psychrometrics/moist-air.ts';
 import { fanRiseK } from '#engine/stages/stage-path.ts';
 import { supplyAirPlantHour } from '#engine/water-energy/plant-hour.ts';
-import { sampleOf } from '../../support/soak.ts';
+import { propertySettings, samples } from '../../support/sample-size.ts';
 import { anyBrief, cooler, HOURS_PER_BRIEF, hoursOfOutdoor, hourUnder, real } from './random-hours.ts';
 
-const { count, seed } = sampleOf('random hours', 10_000);
-const run = { numRuns: Math.ceil(count / HOURS_PER_BRIEF), seed };
+/** Random hours: 10,000 in `npm test`, 1,000,000 in `npm run soak`. */
+const count = samples(10_000, 1_000_000);
+const run = propertySettings(10_000 / HOURS_PER_BRIEF, 1_000_000 / HOURS_PER_BRIEF);
 const TIMEOUT_MS = 60_000 + count;
 /** A T* found by halving is good to far less than this, K. */
 const ROUNDING_K = 1e-4;
