@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import { existsSync, mkdtempSync, readFileSync, rmSync, statSync } from 'node:fs';
+import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, statSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import pg from 'pg';
@@ -67,6 +67,25 @@ it('stops, stops again without complaint, and starts again with what was stored'
   ({ port } = await startCluster({ homeDir, superuserPassword, throwaway: true }));
   expect(await ask('select answer from kept')).toBe(42);
 });
+
+it.skipIf(process.getuid?.() !== 0)(
+  "stands outside a home that the server's user cannot reach, one place per home, and is found there again",
+  async () => {
+    const closed = mkdtempSync(path.join(os.tmpdir(), 'muslin-closed-')); // mode 0700
+    const inner = path.join(closed, 'home');
+    mkdirSync(inner);
+    const cluster = await startCluster({ homeDir: inner, superuserPassword, throwaway: true });
+    try {
+      expect(cluster.folder).toMatch(/^\/var\/lib\/muslin\/[0-9a-f]{16}$/);
+      expect(statSync(cluster.folder).mode & 0o077).toBe(0);
+      expect(clusterStatus(inner)).toEqual({ state: 'running', port: cluster.port });
+    } finally {
+      await stopCluster(inner);
+      rmSync(cluster.folder, { recursive: true, force: true });
+      rmSync(closed, { recursive: true, force: true });
+    }
+  },
+);
 
 it('starts again after its server was killed', async () => {
   process.kill(serverPid(), 'SIGKILL');
