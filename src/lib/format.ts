@@ -65,7 +65,7 @@ export function fileSize(bytes: number): string {
     step += 1;
   }
   const unit = BYTE_UNITS[step] ?? 'bytes';
-  return withUnit(value, unit, step === 0 || value >= 100 ? 0 : 1);
+  return withUnit(value, unit, step === 0 || value >= 10 ? 0 : 1);
 }
 
 /** The first 8 hexadecimal digits in two groups: enough to compare by eye. */
@@ -86,6 +86,11 @@ export function moment(iso: string, timeZone?: string): string {
 export function waitingTime(seconds: number): string {
   if (seconds < 90) return plural(Math.max(1, Math.ceil(seconds)), 'second');
   return plural(Math.ceil(seconds / 60), 'minute');
+}
+
+/** Ends a sentence that was written without its full stop. */
+export function sentence(text: string): string {
+  return /[.!?]$/.test(text) ? text : `${text}.`;
 }
 
 export function plural(count: number, noun: string, many = `${noun}s`): string {

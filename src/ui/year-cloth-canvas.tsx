@@ -44,34 +44,37 @@ export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanv
   return (
     <div className="min-w-0">
       <div className="overflow-x-auto pb-0.5">
-        <div ref={frame} className="relative min-w-[46rem]">
-          <div
-            role="slider"
-            aria-label={label}
-            aria-orientation="horizontal"
-            aria-valuemin={1}
-            aria-valuemax={days * HOURS}
-            aria-valuenow={cell ? cell.day * HOURS + cell.hour + 1 : 1}
-            aria-valuetext={cell ? read(cell) : 'Arrow keys read single hours.'}
-            tabIndex={0}
-            className="relative"
-            onKeyDown={onKeyDown}
-            onBlur={() => setCell(null)}
-            onPointerLeave={() => setCell(null)}
-            onPointerMove={(event) => {
-              const box = event.currentTarget.getBoundingClientRect();
-              const day = Math.floor(((event.clientX - box.left) / box.width) * days);
-              const hour = Math.floor(((event.clientY - box.top) / box.height) * HOURS);
-              if (day >= 0 && day < days && hour >= 0 && hour < HOURS) setCell({ day, hour });
-            }}
-          >
-            <Cloth codes={codes} widthPx={widthPx} heightPx={heightPx} ratio={ratio} />
-            {cell ? <CellMark cell={cell} days={days} /> : null}
+        <div className="grid min-w-[46rem] grid-cols-[1.5rem_minmax(0,1fr)]">
+          <HourAxis />
+          <div ref={frame} className="relative">
+            <div
+              role="slider"
+              aria-label={label}
+              aria-orientation="horizontal"
+              aria-valuemin={1}
+              aria-valuemax={days * HOURS}
+              aria-valuenow={cell ? cell.day * HOURS + cell.hour + 1 : 1}
+              aria-valuetext={cell ? read(cell) : 'Arrow keys read single hours.'}
+              tabIndex={0}
+              className="relative"
+              onKeyDown={onKeyDown}
+              onBlur={() => setCell(null)}
+              onPointerLeave={() => setCell(null)}
+              onPointerMove={(event) => {
+                const box = event.currentTarget.getBoundingClientRect();
+                const day = Math.floor(((event.clientX - box.left) / box.width) * days);
+                const hour = Math.floor(((event.clientY - box.top) / box.height) * HOURS);
+                if (day >= 0 && day < days && hour >= 0 && hour < HOURS) setCell({ day, hour });
+              }}
+            >
+              <Cloth codes={codes} widthPx={widthPx} heightPx={heightPx} ratio={ratio} />
+              {cell ? <CellMark cell={cell} days={days} /> : null}
+            </div>
+            <MonthAxis days={days} />
           </div>
-          <MonthAxis days={days} />
         </div>
       </div>
-      <p aria-hidden="true" className="h-5 text-fine text-soft">
+      <p aria-hidden="true" className="h-5 pl-6 text-fine text-soft">
         {cell ? read(cell) : 'Point at an hour, or use the arrow keys, to read it.'}
       </p>
     </div>
@@ -129,6 +132,23 @@ function CellMark({ cell, days }: { cell: Cell; days: number }) {
         height: `${100 / HOURS}%`,
       }}
     />
+  );
+}
+
+/** The clock at the left: quarters of the day. */
+function HourAxis() {
+  return (
+    <div aria-hidden="true" className="relative mb-5 text-fine text-soft">
+      {[6, 12, 18].map((hour) => (
+        <span
+          key={hour}
+          className="absolute right-1 -translate-y-1/2 leading-none"
+          style={{ top: `${(100 * hour) / HOURS}%` }}
+        >
+          {String(hour).padStart(2, '0')}
+        </span>
+      ))}
+    </div>
   );
 }
 

@@ -1,5 +1,5 @@
 import type { ProgrammeMap } from '../../contract/runs.ts';
-import { plural } from '../../lib/format.ts';
+import { plural, sentence } from '../../lib/format.ts';
 
 /** The programme and the brief that every number of the sheet rests on. */
 export function BriefNote({ map }: { map: ProgrammeMap }) {
@@ -8,7 +8,7 @@ export function BriefNote({ map }: { map: ProgrammeMap }) {
       <p className="text-fine text-soft">{map.programme.name}</p>
       <h1 className="text-name">{map.brief.name}</h1>
       <p className="mt-1">
-        <span className="text-soft">Brief version {map.brief.version}.</span> {map.brief.sentence}
+        <span className="text-soft">Brief version {map.brief.version}.</span> {sentence(map.brief.sentence)}
       </p>
       <p role="status" className="text-fine text-soft">
         {map.pending > 0

@@ -41,7 +41,7 @@ export function LedgerPanel({ ledger }: { ledger: Ledger }) {
                 .join(', ')}.`
         }
       />
-      <table className="mt-1.5 w-full">
+      <table className="mt-1 w-full">
         <caption className="sr-only">Hours of the year by class</caption>
         <thead className="sr-only">
           <tr>
@@ -51,8 +51,8 @@ export function LedgerPanel({ ledger }: { ledger: Ledger }) {
           </tr>
         </thead>
         <tbody>
-          {withDemand.map((row) => (
-            <LedgerRow key={row.words} row={row} id={`${id}-${row.words}`} demand={demand} />
+          {withDemand.map((row, index) => (
+            <LedgerRow key={row.words} row={row} id={`${id}-${index}`} demand={demand} />
           ))}
         </tbody>
         <tbody className="border-t border-line">
@@ -76,14 +76,14 @@ export function LedgerPanel({ ledger }: { ledger: Ledger }) {
 function LedgerRow({ row, id, demand }: { row: Row; id: string; demand: number | null }) {
   return (
     <tr className={row.count === 0 ? 'text-soft' : ''}>
-      <th scope="row" className="py-[3px] text-left font-normal">
+      <th scope="row" className="py-px text-left font-normal">
         <span className="flex items-center gap-2">
           <ClassSwatch hourClass={row.hourClass} id={id} />
           {row.words}
         </span>
       </th>
       <td className="pl-2 text-right whitespace-nowrap">{hours(row.count)}</td>
-      <td className="w-16 pl-2 text-right whitespace-nowrap text-soft">
+      <td className="w-14 pl-2 text-right whitespace-nowrap text-soft">
         {demand !== null && demand > 0 ? percent((100 * row.count) / demand) : ''}
       </td>
     </tr>

@@ -12,12 +12,12 @@ export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }
     <header>
       <h2 className="text-title">{station.name}</h2>
       <p className="mt-1 text-soft">
-        {metres(station.elevationM)}, {position(station)}.{place.invented ? ' Invented place and weather.' : ''}
+        {metres(station.elevationM)}, {position(station)}
       </p>
       <p className="text-soft">
         {year ? (
           <>
-            Weather of this station, 0&nbsp;km away:{' '}
+            Weather of this station, 0&nbsp;km:{' '}
             <Link to={paths.weatherFile.to(teamId, year.weatherFileId)}>{placeYearWords(year)}</Link>.{' '}
           </>
         ) : (
@@ -45,14 +45,14 @@ export function ScoreBlock({ place }: { place: Place }) {
   const band = bandWords(shown.words);
   const costs = costingColumns(place.gradeColumns);
   return (
-    <div className="grid grid-cols-[auto_minmax(0,1fr)] items-start gap-x-4 border-y border-line py-3">
+    <div className="grid grid-cols-[auto_minmax(0,1fr)] items-start gap-x-4 border-y border-line py-2.5">
       {note === null ? (
         <p className="flex flex-col">
           <span className="serif text-figure">{shown.score}</span>
           <span className="mt-1 text-fine text-soft">of 100</span>
         </p>
       ) : null}
-      <div className={`grid gap-1 ${note === null ? '' : 'col-span-2'}`}>
+      <div className={`grid gap-0.5 ${note === null ? '' : 'col-span-2'}`}>
         {note === null ? null : <p className="serif text-name">{note}.</p>}
         {note === null && band ? <p>{band}</p> : null}
         <p className={shown.verdict === 'does not' ? 'font-medium text-madder' : 'font-medium'}>

@@ -106,9 +106,9 @@ export function GradeNote({ place }: { place: Place }) {
 export function CautionsNote({ shown }: { shown: Shown }) {
   return (
     <Note title="Before anyone builds">
-      <ul>
+      <ul className="gap-x-10 lg:columns-3">
         {shown.cautions.map((caution) => (
-          <li key={caution} className="border-t border-line py-[5px]">
+          <li key={caution} className="break-inside-avoid border-t border-line py-[5px]">
             {caution}
           </li>
         ))}

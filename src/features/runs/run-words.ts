@@ -22,7 +22,7 @@ export function verdictSentence({ verdict, tolerances }: Pick<Shown, 'verdict' |
 }
 
 function excessWords({ tolerance, found, allowed, unit }: ToleranceAnswer): string {
-  return `${tolerance} ${sensible(found, unit)}, ${sensible(found - allowed, unit)} over the ${sensible(allowed, unit)} allowed`;
+  return `${tolerance} ${sensible(found, unit)}, ${sensible(found - allowed, unit === '%' ? 'points' : unit)} over the ${sensible(allowed, unit)} allowed`;
 }
 
 /** The columns that keep a grade from A, worst first. */

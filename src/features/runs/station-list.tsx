@@ -56,7 +56,7 @@ function StationRow({ entry: { station, rank } }: { entry: RankedStation }) {
     <ListBoxItem
       id={station.id}
       textValue={station.name}
-      className="mx-2 grid min-h-8 cursor-pointer grid-cols-[1.5rem_minmax(0,1fr)_auto_1.9rem_1rem] items-center gap-x-2 border-t border-line px-1 last:border-b hover:bg-paper/80 data-focus-visible:outline-2 data-focus-visible:-outline-offset-2 data-selected:bg-shade"
+      className="mx-2 grid min-h-8 cursor-pointer grid-cols-[1.25rem_minmax(0,1fr)_auto_1.5rem_0.75rem] items-center gap-x-1.5 border-t border-line px-1 last:border-b hover:bg-paper/80 data-focus-visible:outline-2 data-focus-visible:-outline-offset-2 data-selected:bg-shade"
     >
       <span className="text-fine text-soft">{rank ?? '–'}</span>
       <span className="min-w-0">

@@ -21,7 +21,7 @@ export function YearStrip({ place, teamId }: { place: Place; teamId: string }) {
   return (
     <section
       aria-labelledby="year-cloth"
-      className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-2 lg:grid-cols-[13rem_minmax(0,1fr)_15.5rem]"
+      className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-2 lg:grid-cols-[14.5rem_minmax(0,1fr)_17.5rem]"
     >
       <div>
         <h2 id="year-cloth" className="text-name">

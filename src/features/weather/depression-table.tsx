@@ -23,7 +23,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
       </div>
       <h3 className="mb-1">Mean depression by month and hour of day, K</h3>
       <div className="scroll-inside">
-        <table className="w-full min-w-[58rem] border-collapse text-center text-fine">
+        <table className="w-full min-w-[58rem] table-fixed border-collapse text-center text-fine">
           <caption className="sr-only">
             Mean wet-bulb depression in kelvin by month and hour ending in local standard time, with the share of hours
             present in each month
@@ -38,7 +38,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
                   {String(hour).padStart(2, '0')}
                 </th>
               ))}
-              <th scope="col" className="pl-3 text-right font-normal">
+              <th scope="col" className="w-18 pl-3 text-right font-normal">
                 Complete
               </th>
             </tr>
@@ -76,7 +76,7 @@ function Figure({ valueK, scaleK }: { valueK: number | null; scaleK: number }) {
   const colour = rampColour(valueK / scaleK);
   return (
     <td className="h-6 border border-paper" style={{ backgroundColor: colour, color: inkOn(colour) }}>
-      {number(valueK, valueK >= 9.95 ? 0 : 1)}
+      {number(valueK, 1)}
     </td>
   );
 }

@@ -5,6 +5,7 @@ import type { ProgrammeMap } from '../../../contract/runs.ts';
 import { rankedStations } from '../../../features/runs/ranked-stations.ts';
 import { mapQuery, type ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';
+import { sentence } from '../../../lib/format.ts';
 import { PageTitle } from '../../../lib/page-title.tsx';
 import { PLACE_PARAM, paths } from '../../../lib/paths.ts';
 import { useTeam } from '../../../lib/team-scope.ts';
@@ -96,7 +97,7 @@ function EmptyMap({ map, mayUpload }: { map: ProgrammeMap; mayUpload: boolean })
           : 'A station appears here once an engineer of the team has accepted a weather file of it.'}
       </p>
       <p className="mb-5 text-soft">
-        Every station is tested against {map.brief.name}, version {map.brief.version}. {map.brief.sentence}
+        Every station is tested against {map.brief.name}, version {map.brief.version}. {sentence(map.brief.sentence)}
       </p>
       <Link className={buttonLook('primary')} to={paths.weather.to(teamId)}>
         {mayUpload ? 'Upload a weather file' : 'See the weather files'}

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { BriefNote } from '../../../features/runs/brief-note.tsx';
 import { StationList } from '../../../features/runs/station-list.tsx';
+import { ScoreLegend } from '../../../map/score-legend.tsx';
 import { SheetMap } from '../../../map/sheet-map.tsx';
 import { BottomSheet, PEEK_PX, type SheetStep } from '../../../ui/bottom-sheet.tsx';
 import { Button } from '../../../ui/button.tsx';
@@ -17,7 +18,12 @@ export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
   return (
     <div className="relative min-h-[30rem] flex-1">
       <div className="absolute inset-x-0 top-0" style={{ bottom: PEEK_PX - 10 }}>
-        <SheetMap stations={map.stations} chosenId={chosenId} onChoose={choose} />
+        <SheetMap
+          stations={map.stations}
+          chosenId={chosenId}
+          onChoose={choose}
+          legend={<ScoreLegend stations={map.stations} />}
+        />
       </div>
       <BottomSheet label={chosenId === null ? 'Brief and stations' : 'Chosen place'} step={step} onStep={setStep}>
         {chosenId === null ? (

@@ -75,21 +75,19 @@ function ChosenFoot({ ids, stationId }: ChosenProps) {
 
 function PlaceNotes({ place, shown }: { place: Place; shown: NonNullable<Place['shown']> }) {
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-6 lg:px-5 lg:pt-7 lg:pb-14">
-      <div className="min-w-0 lg:col-span-4">
-        <ScoreArithmetic shown={shown} />
-      </div>
-      <div className="min-w-0 lg:col-span-2">
-        <WaterElectricityNote shown={shown} />
-      </div>
-      <div className="min-w-0 lg:col-span-2">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-3 lg:px-5 lg:pt-7 lg:pb-14">
+      <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] content-start gap-x-10 gap-y-8 lg:col-span-2 lg:grid-cols-2">
+        <div className="min-w-0 lg:col-span-2">
+          <ScoreArithmetic shown={shown} />
+        </div>
         <VerdictNote shown={shown} />
-      </div>
-      <div className="min-w-0 lg:col-span-2">
         <SpellNote shown={shown} />
       </div>
-      <div className="grid min-w-0 content-start gap-8 lg:col-span-2">
+      <div className="grid min-w-0 content-start gap-8">
+        <WaterElectricityNote shown={shown} />
         <GradeNote place={place} />
+      </div>
+      <div className="min-w-0 lg:col-span-3">
         <CautionsNote shown={shown} />
       </div>
     </div>

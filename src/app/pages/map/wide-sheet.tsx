@@ -1,5 +1,6 @@
 import { BriefNote } from '../../../features/runs/brief-note.tsx';
 import { StationList } from '../../../features/runs/station-list.tsx';
+import { ScoreLegend } from '../../../map/score-legend.tsx';
 import { SheetMap } from '../../../map/sheet-map.tsx';
 import type { SheetProps } from './map-page.tsx';
 import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
@@ -8,7 +9,7 @@ import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
 export function WideSheet({ ids, map, chosenId, onChoose }: SheetProps) {
   return (
     <>
-      <div className="grid min-h-[max(34rem,calc(100dvh-17.75rem))] grid-cols-[14.5rem_minmax(0,1fr)_18.5rem] border-b border-line max-xl:grid-cols-[12.5rem_minmax(0,1fr)_16.5rem]">
+      <div className="grid min-h-[max(34rem,calc(100dvh-16.75rem))] grid-cols-[17rem_minmax(0,1fr)_20rem] border-b border-line max-xl:grid-cols-[14rem_minmax(0,1fr)_17.5rem]">
         <div className="relative">
           <div className="absolute inset-0 flex flex-col gap-4 px-5 py-4 max-xl:px-4">
             <BriefNote map={map} />
@@ -16,7 +17,12 @@ export function WideSheet({ ids, map, chosenId, onChoose }: SheetProps) {
           </div>
         </div>
         <div className="relative py-3">
-          <SheetMap stations={map.stations} chosenId={chosenId} onChoose={onChoose} />
+          <SheetMap
+            stations={map.stations}
+            chosenId={chosenId}
+            onChoose={onChoose}
+            legend={<ScoreLegend stations={map.stations} />}
+          />
         </div>
         <div className="px-5 py-4 max-xl:px-4">
           <PlaceMargin ids={ids} stationId={chosenId} />
