@@ -19,7 +19,7 @@ export interface DepressionBin {
 /**
  * Hours by month, hour of day and 1 K bin of depression: value at ((month - 1) x 24 + hour - 1) x 64 + bin, with month 1 to
  * 12 and hour 1 to 24.
- * @param depression hundredths of a kelvin in slot order, -1 where not known
+ * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function depressionHistogram(depression: Int32Array): Uint16Array {
   const months = monthOfEachSlot(depression.length);

@@ -15,7 +15,7 @@ export interface DepressionSpell {
 /**
  * Longest run of hours with a depression under 5 K; the first of equals, null without such an hour. An unknown hour ends it,
  * and in a typical year so does the joint of two months, since the months come from different years.
- * @param depression hundredths of a kelvin in slot order, -1 where not known
+ * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function longestLowDepression(depression: Int32Array, kind: YearKind): DepressionSpell | null {
   const months = monthOfEachSlot(depression.length);

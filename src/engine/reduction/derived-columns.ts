@@ -1,5 +1,4 @@
 /** Columns that follow from the packed ones: derived when they are needed, never a stored fact. */
-import { hundredths } from '../conventions.ts';
 import { floatColumn } from '../float-column.ts';
 import { dewPointC } from '../psychrometrics/moist-air.ts';
 import { wetBulbC } from '../psychrometrics/wet-bulb.ts';
@@ -29,13 +28,26 @@ function ofEachState(
   });
 }
 
+/** Wet-bulb depression, K, of every slot: dry bulb less wet bulb, 0 when saturated; NaN where it is not known. */
+export function depressionColumn(year: PackedYear, wetBulb: Float64Array): Float64Array {
+  const { dryBulbC } = unpackYear(year);
+  return floatColumn(wetBulb.length, (slot) => (dryBulbC[slot] ?? Number.NaN) - (wetBulb[slot] ?? Number.NaN));
+}
+
+/** The wet bulb is found to this, in hundredths of a kelvin: so close to a limit is a tie, and a tie is met. */
+const TIE_HUNDREDTHS = 0.05;
+
 /**
- * Wet-bulb depression of every slot in whole hundredths of a kelvin: dry bulb less wet bulb, each rounded first; 0 when
- * saturated, never negative, -1 where it is not known.
- * @param wetBulb wet bulb, °C, of every slot, NaN where missing
+ * Depression of every slot in the whole hundredths of a kelvin that it reaches, -1 where it is not known. Rounded down, since
+ * depression hours count the hours that reach so many kelvin: rounded to the nearest, every count would be too high by the
+ * hours that lack up to 0.005 K (measured on real years: up to 8).
+ * @param depressionK depression, K, in slot order, NaN where not known
  */
-export function depressionHundredths(year: PackedYear, wetBulb: Float64Array): Int32Array {
-  return Int32Array.from(wetBulb, (value, slot) =>
-    Number.isNaN(value) ? -1 : Math.max(0, (year.dryBulb[slot] ?? 0) - hundredths(value)),
-  );
+export function reachedHundredths(depressionK: Float64Array): Int32Array {
+  const reached = new Int32Array(depressionK.length).fill(-1);
+  for (let slot = 0; slot < reached.length; slot++) {
+    const value = depressionK[slot] ?? Number.NaN;
+    if (!Number.isNaN(value)) reached[slot] = Math.max(0, Math.floor(100 * value + TIE_HUNDREDTHS));
+  }
+  return reached;
 }

@@ -1,4 +1,4 @@
-import { floatColumn } from '../float-column.ts';
+import { hundredths } from '../conventions.ts';
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
 import {
@@ -9,7 +9,7 @@ import {
   hoursAtLeast,
 } from './depression-hours.ts';
 import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
-import { depressionHundredths, dewPointColumn, wetBulbColumn } from './derived-columns.ts';
+import { depressionColumn, dewPointColumn, reachedHundredths, wetBulbColumn } from './derived-columns.ts';
 import { type DesignValues, designValues } from './design-values.ts';
 import { packYear, unpackYear } from './packed-columns.ts';
 import type { WeatherYear } from './weather-year.ts';
@@ -68,11 +68,8 @@ export function reduceYear(reading: UsableReading): ReducedYear {
   const packed = packYear(reading.hours);
   const { dryBulbC } = unpackYear(packed);
   const wetBulbC = wetBulbColumn(packed);
-  const depression = depressionHundredths(packed, wetBulbC);
-  const depressionK = floatColumn(depression.length, (slot) => {
-    const value = depression[slot] ?? -1;
-    return value < 0 ? Number.NaN : value / 100;
-  });
+  const depressionK = depressionColumn(packed, wetBulbC);
+  const depression = reachedHundredths(depressionK);
   const histogram = depressionHistogram(depression);
   const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(packed) });
   const { station } = reading;
@@ -88,7 +85,7 @@ export function reduceYear(reading: UsableReading): ReducedYear {
       belowZero: reading.belowZero,
       meanDryBulbC: meanOf(dryBulbC) ?? 0,
       meanWetBulbC: meanOf(wetBulbC),
-      maxDepressionK: known.length === 0 ? null : known.reduce((a, b) => Math.max(a, b)),
+      maxDepressionK: known.length === 0 ? null : hundredths(known.reduce((a, b) => Math.max(a, b))) / 100,
       depressionHours: hoursAtLeast(depression),
       meanDepressionK: meansByMonthAndHour(depressionK),
       monthCompletePct: monthCompleteness(packed),

@@ -96,7 +96,7 @@ export function meansByMonthAndHour(column: Float64Array): readonly (readonly (n
 /**
  * Cumulative curve of the depression: the value, K, reached or passed in 0, 1, .. 100 % of the known hours (place
  * floor(percent x (N - 1) / 100) downwards); empty when no hour is known.
- * @param depression hundredths of a kelvin in slot order, -1 where not known
+ * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function depressionCurve(depression: Int32Array): readonly number[] {
   const downwards = depression
