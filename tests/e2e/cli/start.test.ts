@@ -5,6 +5,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { freePort } from '../../../server/cli/free-port.ts';
 import { processesOf } from '../../../server/cli/left-running.ts';
+import { eventually } from '../../support/eventually.ts';
 import { type RunningCommand, repositoryDir, startCommand } from '../../support/run-command.ts';
 
 const READY = 'Muslin is ready';
@@ -76,6 +77,21 @@ describe('npm start', () => {
     first.child.kill('SIGTERM');
     expect((await first.ended).code).toBe(0);
     await nothingRuns();
+  });
+
+  it('brings back its job worker and its database server when they are killed', async () => {
+    const command = start({ through: 'node' });
+    await command.until(READY);
+    const workers = () => processesOf(home).filter((one) => one.command.endsWith('run.mjs worker'));
+    const [first] = workers();
+    const server = Number(readFileSync(path.join(home, 'pg/data/postmaster.pid'), 'utf8').split('\n')[0]);
+    if (first === undefined) throw new Error('no worker runs');
+    process.kill(first.pid, 'SIGKILL');
+    process.kill(server, 'SIGKILL');
+    await eventually('another worker', async () => workers().some(({ pid }) => pid !== first.pid));
+    await eventually('health', async () => (await fetch(`http://127.0.0.1:${port}/api/health`)).ok, 30_000);
+    command.child.kill('SIGTERM');
+    expect((await command.ended).code).toBe(0);
   });
 
   it('starts again on what an earlier one left, even when everything was killed', async () => {
