@@ -18,20 +18,23 @@ import { builtClient } from './http/built-client.ts';
 import { errorHandler, nothingHere } from './http/errors.ts';
 import { health } from './http/health.ts';
 import { originGuard } from './http/origin-guard.ts';
-import { beginRequest } from './http/request-state.ts';
+import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
 const FIRST_PROGRAMME = 'First programme';
 
-/** @param options.closing aborted when the server closes, so that open event streams end */
-export function createApp(deps: Deps, options: { closing?: AbortSignal } = {}): Express {
+/** Often enough for proxies that cut a silent connection after a minute (common practice). */
+const HEARTBEAT_MS = 15_000;
+
+export function createApp(deps: Deps, terms: Partial<ServerTerms> = {}): Express {
+  const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS } = terms;
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
   app.set('query parser', 'simple');
-  app.use(beginRequest(options.closing ?? new AbortController().signal), securityHeaders(), compression());
+  app.use(beginRequest({ closing, heartbeatMs }), securityHeaders(), compression());
 
   // What stands outside the declarations: health, base map, built client (page, code, fonts). Nothing else does.
   app.get('/api/health', health(deps.db));

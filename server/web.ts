@@ -5,6 +5,7 @@ import type { Config } from './config.ts';
 import type { Deps } from './deps.ts';
 import { deleteExpiredSessions } from './features/accounts/account-store.ts';
 import { deleteRequestCountsBefore } from './http/request-counts-store.ts';
+import { removeStaleUploads } from './http/stale-uploads.ts';
 
 /** Somebody else listens where we should. */
 export class PortTakenError extends Error {
@@ -32,7 +33,8 @@ const REQUEST_MS = 320_000;
 const SILENT_CONNECTION_MS = 120_000;
 const FINISH_WITHIN_MS = 10_000;
 const TIDY_EVERY_MS = 10 * 60_000;
-const COUNTS_KEPT_MS = 60 * 60_000;
+/** Counts of minutes, and uploads of requests, that are long over. */
+const KEPT_MS = 60 * 60_000;
 
 export async function startWeb({ config, deps }: { config: Config; deps: Deps }): Promise<Web> {
   const closing = new AbortController();
@@ -42,6 +44,7 @@ export async function startWeb({ config, deps }: { config: Config; deps: Deps })
   );
   server.setTimeout(SILENT_CONNECTION_MS);
   await listen(server, config);
+  await tidy(deps);
   const tidying = setInterval(() => void tidy(deps), TIDY_EVERY_MS).unref();
   return {
     url: urlOf(server, config.host),
@@ -80,11 +83,13 @@ async function closeServer(server: Server): Promise<void> {
 }
 
 /** Forgets what has run out; a database that is away now is tidied the next time. */
-async function tidy({ db, now, log }: Deps): Promise<void> {
+async function tidy({ db, now, log, uploadsDir }: Deps): Promise<void> {
+  const before = new Date(now().getTime() - KEPT_MS);
   try {
+    await removeStaleUploads(uploadsDir, before);
     await deleteExpiredSessions(db, now());
-    await deleteRequestCountsBefore(db, new Date(now().getTime() - COUNTS_KEPT_MS));
+    await deleteRequestCountsBefore(db, before);
   } catch (error) {
-    log.error({ error }, 'tidying up sessions and counts failed');
+    log.error({ error }, 'tidying up uploads, sessions and counts failed');
   }
 }

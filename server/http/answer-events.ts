@@ -2,9 +2,6 @@ import { once } from 'node:events';
 import type { ServerResponse } from 'node:http';
 import type * as z from 'zod/mini';
 
-/** Often enough for proxies that cut a silent connection after a minute (common practice). */
-export const HEARTBEAT_MS = 15_000;
-
 /** How long a browser waits before it comes back. */
 const RETRY_MS = 2_000;
 

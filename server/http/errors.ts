@@ -1,4 +1,4 @@
-import type { ErrorRequestHandler, Request, RequestHandler, Response } from 'express';
+import type { ErrorRequestHandler, RequestHandler } from 'express';
 import { type ErrorBody, errorStatus } from '#contract/errors.ts';
 import { brokenConstraint, isDatabaseAway } from '../db/database-errors.ts';
 import type { Log } from '../log.ts';
@@ -7,9 +7,6 @@ import { stateOf } from './request-state.ts';
 
 /** How long a client should wait for a database that is away. */
 const DATABASE_RETRY_S = 5;
-
-/** How long the rest of a refused body is swallowed, so that the client can read why, before the connection is cut. */
-const LINGER_MS = 5_000;
 
 /** The only place where an error becomes an answer. */
 export function errorHandler(log: Log): ErrorRequestHandler {
@@ -27,7 +24,7 @@ export function errorHandler(log: Log): ErrorRequestHandler {
     const body: ErrorBody = { code: error.code, message: error.message, problems: [...error.problems], requestId };
     if (error.retryAfterS !== null) response.setHeader('Retry-After', String(error.retryAfterS));
     response.removeHeader('Content-Disposition');
-    lingerOverRest(request, response);
+    request.resume();
     response.status(status).set('Cache-Control', 'no-store').json(body);
   };
 }
@@ -91,18 +88,4 @@ const GONE_CODES = new Set<unknown>(['ABORT_ERR', 'ECONNRESET', 'EPIPE', 'ERR_ST
 function isAbort(thrown: unknown): boolean {
   if (!(thrown instanceof Error)) return false;
   return thrown.name === 'AbortError' || ('code' in thrown && GONE_CODES.has(thrown.code));
-}
-
-/**
- * A connection that is closed over unread bytes is reset, and the answer is lost with it. So the rest is read and thrown
- * away, for a while.
- */
-function lingerOverRest(request: Request, response: Response): void {
-  if (request.complete) return;
-  request.resume();
-  response.once('finish', () => {
-    if (request.complete) return;
-    const cut = setTimeout(() => request.destroy(), LINGER_MS).unref();
-    request.once('close', () => clearTimeout(cut));
-  });
 }

@@ -8,6 +8,9 @@ import type { StorageEngine } from 'multer';
 import type { UploadedFile } from './request-context.ts';
 import { cleanUploadName } from './upload-name.ts';
 
+/** How the names of waiting uploads begin. */
+export const UPLOAD_PREFIX = 'upload-';
+
 /**
  * Streams each file of one request to `folder` and hashes it on the way. Every file that it opens is in its own books, so
  * that `removeAll` leaves none behind whatever became of the request.
@@ -31,7 +34,7 @@ export class HashingStorage implements StorageEngine {
     file: Express.Multer.File,
     done: (error?: unknown, info?: Partial<Express.Multer.File>) => void,
   ): void {
-    const temporaryPath = path.join(this.#folder, `upload-${randomUUID()}`);
+    const temporaryPath = path.join(this.#folder, `${UPLOAD_PREFIX}${randomUUID()}`);
     const hash = createHash('sha256');
     let bytes = 0;
     const measure = new Transform({

@@ -3,7 +3,7 @@ import express, { type Request, type Response, type Router } from 'express';
 import type * as z from 'zod/mini';
 import type { Endpoint, EventsResponse, FileResponse, JsonResponse, ParsedOf } from '#contract/endpoint.ts';
 import type { Deps } from '../deps.ts';
-import { answerEvents, HEARTBEAT_MS } from './answer-events.ts';
+import { answerEvents } from './answer-events.ts';
 import { answerFile, type FileAnswer } from './answer-file.ts';
 import { AppError } from './app-error.ts';
 import { authorise, policies } from './authorise.ts';
@@ -11,7 +11,7 @@ import { addressBucket } from './client-address.ts';
 import { COUNTED_IN_DATABASE_UP_TO, makeLocalCounter, spendShared } from './limits.ts';
 import { parseInput } from './parse-input.ts';
 import type { Actor, RequestContext, UploadedFile } from './request-context.ts';
-import { type Identity, stateOf } from './request-state.ts';
+import { type Identity, type ServerTerms, stateOf } from './request-state.ts';
 import { abortWhenGone, withinTime } from './time-limit.ts';
 import { withUploads } from './uploads.ts';
 
@@ -35,6 +35,7 @@ interface Passage {
   readonly response: Response;
   readonly identity: Identity;
   readonly requestId: string;
+  readonly server: ServerTerms;
   /** Aborted when the client has gone, the server closes (events only) or the time is over. */
   readonly signal: AbortSignal;
   readonly handle: (input: unknown, context: RequestContext) => Promise<unknown>;
@@ -54,12 +55,12 @@ export function mount<E extends Endpoint>(router: Router, deps: Deps, endpoint: 
   const verb = endpoint.method.toLowerCase() as Lowercase<Endpoint['method']>;
 
   router[verb](endpoint.path, async (request, response) => {
-    const { identity, requestId, closing } = stateOf(request);
+    const { identity, requestId, server } = stateOf(request);
     if (identity === null) throw new Error('The request has not passed authentication.');
     const over = abortWhenGone(response);
     const streams = endpoint.response.kind === 'events';
-    const signal = streams ? AbortSignal.any([over.signal, closing]) : over.signal;
-    const passage: Passage = { endpoint, deps, request, response, identity, requestId, signal, handle };
+    const signal = streams ? AbortSignal.any([over.signal, server.closing]) : over.signal;
+    const passage: Passage = { endpoint, deps, request, response, identity, requestId, server, signal, handle };
 
     await spend(bucketOf(endpoint, { actor: identity.actor, ip: request.ip ?? '' }));
     authorise(endpoint.allow, { actor: identity.actor, params: textParams(request) });
@@ -126,12 +127,16 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
     case 'file':
       return answerFile({ request, response }, { declared, answer: answered as FileAnswer });
     case 'events':
+      if (request.method === 'HEAD') {
+        response.type('text/event-stream').end();
+        return;
+      }
       return answerEvents({
         response,
         schema: declared.schema,
         events: answered as AsyncIterable<unknown>,
         signal,
-        heartbeatMs: HEARTBEAT_MS,
+        heartbeatMs: passage.server.heartbeatMs,
         mayStillWatch: () => mayStill(passage),
       });
   }

@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import type { RequestHandler, Response } from 'express';
+import type { RequestHandler } from 'express';
 import helmet from 'helmet';
 
 const nonces = new WeakMap<object, string>();
@@ -44,9 +44,4 @@ export function securityHeaders(): RequestHandler[] {
     xFrameOptions: { action: 'deny' },
   });
   return [giveNonce, headers];
-}
-
-/** Answers of the API hold what one person may see: no cache keeps them. */
-export function keepOutOfCaches(response: Response): void {
-  response.setHeader('Cache-Control', 'no-store');
 }

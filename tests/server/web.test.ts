@@ -1,4 +1,4 @@
-import { mkdir, mkdtemp, rm, writeFile } from 'node:fs/promises';
+import { mkdir, mkdtemp, readdir, rm, utimes, writeFile } from 'node:fs/promises';
 import net from 'node:net';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
@@ -91,6 +91,30 @@ describe('the server', () => {
     rubbish.write('\0\0\0 not http\r\n\r\n');
     await new Promise((resolve) => rubbish.once('close', resolve));
     expect((await get('/api/health')).status).toBe(200);
+  });
+
+  test('begins by forgetting what has run out: sessions, counts, and uploads of a process that was killed', async () => {
+    const { ownerDb } = web.database;
+    await ownerDb.raw(
+      "insert into sessions values ('old', '{}', now() - interval '1 minute'), ('new', '{}', now() + interval '1 day')",
+    );
+    await ownerDb.raw("insert into request_counts values ('old', now() - interval '2 hours', 1), ('new', now(), 1)");
+    const upload = (name: string) => path.join(web.deps.uploadsDir, name);
+    for (const name of ['upload-old', 'upload-new', 'other']) await writeFile(upload(name), 'x');
+    const twoHoursAgo = new Date(Date.now() - 2 * 3_600_000);
+    for (const name of ['upload-old', 'other']) await utimes(upload(name), twoHoursAgo, twoHoursAgo);
+
+    const other = await startWeb({ config, deps: web.deps });
+    await other.close();
+    const names = async (statement: string): Promise<string[]> =>
+      (await ownerDb.raw<{ rows: { name: string }[] }>(statement)).rows.map(({ name }) => name);
+    expect(await names("select sid as name from sessions where sid in ('old', 'new')")).toEqual(['new']);
+    expect(await names("select bucket as name from request_counts where bucket in ('old', 'new')")).toEqual(['new']);
+    const left = await readdir(web.deps.uploadsDir);
+    expect(left.filter((name) => ['upload-old', 'upload-new', 'other'].includes(name)).sort()).toEqual([
+      'other',
+      'upload-new',
+    ]);
   });
 
   test('ends open streams and idle connections when it closes, and is then gone', async () => {

@@ -65,7 +65,7 @@ export async function openBench({
       const router = Router();
       routes(router);
       app.set('query parser', 'simple');
-      app.use(beginRequest(closing), securityHeaders());
+      app.use(beginRequest({ closing, heartbeatMs: 60_000 }), securityHeaders());
       app.use((request, _response, next) => {
         stateOf(request).identity = { actor, session: noSession, lookAgain: async () => actor };
         next();

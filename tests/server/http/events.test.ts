@@ -1,8 +1,8 @@
 import http from 'node:http';
 import { setTimeout as sleep } from 'node:timers/promises';
-import type { Express } from 'express';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import * as z from 'zod/mini';
+import { createApp } from '../../../server/app.ts';
 import { answerEvents } from '../../../server/http/answer-events.ts';
 import { notifyTeam } from '../../../server/jobs/team-feed.ts';
 import { eventually } from '../../support/eventually.ts';
@@ -23,7 +23,7 @@ afterEach(async () => {
   for (const server of servers.splice(0)) await new Promise((resolve) => server.close(resolve));
 });
 
-async function serve(listener: http.RequestListener | Express): Promise<number> {
+async function serve(listener: http.RequestListener): Promise<number> {
   const server = http.createServer(listener).listen(0, '127.0.0.1');
   servers.push(server);
   await new Promise((resolve) => server.once('listening', resolve));
@@ -221,25 +221,32 @@ describe('watching a team', () => {
     await eventually('the connection is closed', async () => client.ended());
   });
 
-  test('looks again at session and membership: the one that answers the beat tells both apart', async () => {
-    const { sessionStands } = await import('../../../server/features/accounts/account-store.ts');
-    const { findRoles } = await import('../../../server/features/teams/team-read-model.ts');
-    const sid =
-      decodeURIComponent(cookie.split('=')[1] ?? '')
-        .replace(/^s:/, '')
-        .split('.')[0] ?? '';
-    const at = new Date();
-    expect(await sessionStands(web.deps.db, { id: sid, at })).toBe(true);
-    expect(await sessionStands(web.deps.db, { id: sid, at: new Date(at.getTime() + 8 * 24 * 3_600_000) })).toBe(false);
-    expect(await sessionStands(web.deps.db, { id: 'another', at })).toBe(false);
-    expect((await findRoles(web.deps.db, personId))?.get(teamId)).toBe('viewer');
+  const beating = async (): Promise<Listening> => {
+    const beatingPort = await serve(createApp(web.deps, { heartbeatMs: 50 }));
+    const client = await listen(beatingPort, { path: `/api/teams/${teamId}/events`, headers: { Cookie: cookie } });
+    await eventually('a beat', async () => client.text().includes(': still here'));
+    expect(client.ended()).toBe(false);
+    return client;
+  };
+
+  test('ends at the next beat when the membership is gone, and from then on the team is not there', async () => {
+    const client = await beating();
     await web.database.ownerDb.raw('delete from memberships where person_id = ?', [personId]);
-    expect((await findRoles(web.deps.db, personId))?.get(teamId)).toBeUndefined();
-    expect(await findRoles(web.deps.db, teamId)).toBeNull();
+    await eventually('the end', async () => client.ended(), 3_000);
+    await web.browser().set('Cookie', cookie).get(`/api/teams/${teamId}/events`).expect(404);
+    await web.addMember({ teamId, personId, role: 'viewer' });
   });
 
-  test('is closed to a member from the next request on when the membership is gone', async () => {
-    const browser = web.browser().set('Cookie', cookie);
-    await browser.get(`/api/teams/${teamId}/events`).expect(404);
+  test('ends at the next beat when the session is over', async () => {
+    const client = await beating();
+    await web.browser().set('Cookie', cookie).delete('/api/session').expect(204);
+    await eventually('the end', async () => client.ended(), 3_000);
+    await web.browser().set('Cookie', cookie).get(`/api/teams/${teamId}/events`).expect(401);
+  });
+
+  test('answers the question after its headers without a stream', async () => {
+    const agent = await web.signIn('viewer@example.org');
+    const response = await agent.head(`/api/teams/${teamId}/events`).expect(200);
+    expect(response.headers['content-type']).toContain('text/event-stream');
   });
 });
