@@ -1,7 +1,7 @@
 import type { Brief } from '../brief/brief.ts';
 import { notBuiltYet } from '../brief/not-built-yet.ts';
-import { METHOD_VERSION, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
-import type { PackedYear, WeatherYear } from '../reduction/weather-year.ts';
+import { METHOD_VERSION } from '../conventions.ts';
+import type { WeatherYear } from '../reduction/weather-year.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
@@ -11,6 +11,7 @@ import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
 import { type JudgedYear, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
+import { scaleForMissing } from './scale-for-missing.ts';
 import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
 
@@ -35,7 +36,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   const judged = judgeHours({ year, brief, zone });
   const counted = countHours(judged, input);
   const hardLimits = countHardLimits({ brief, heightM, demandHours: judged.demandHours });
-  const coverage = coverageOf({ classCodes: judged.classCodes, known: knownSlots(year.packed) });
+  const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
   const gates = gatesOf({ brief, coverage, hardLimits });
   return {
     methodVersion: METHOD_VERSION,
@@ -58,6 +59,7 @@ function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
     aloneHours: tallyAloneHours(judged, brief),
     supplyCurve: tallySupplyCurve(judged),
     ...tallyMonthHours(judged),
+    scaled: scaleForMissing(judged),
     ...tallyPlant(judged.slots, judged.demandHours),
   };
 }
@@ -70,10 +72,4 @@ function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; 
   const scoreNote = exclusion ?? noDemand;
   const score = scoreNote === null && weighted.scoreExact !== null ? Math.round(weighted.scoreExact) : null;
   return { score, scoreNote, words: score === null ? null : bandWord(score), ...weighted };
-}
-
-function knownSlots({ dryBulb, humidityRatio, pressure }: PackedYear): Uint8Array {
-  return Uint8Array.from(dryBulb, (value, slot) =>
-    value !== MISSING_INT16 && humidityRatio[slot] !== MISSING_UINT16 && pressure[slot] !== MISSING_UINT16 ? 1 : 0,
-  );
 }

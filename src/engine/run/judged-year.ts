@@ -1,13 +1,14 @@
 import type { Brief } from '../brief/brief.ts';
 import { openSlots } from '../clock/open-slots.ts';
 import { type ResolvedClock, resolveClock } from '../clock/resolved-clock.ts';
-import { hundredths, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
+import { hundredths } from '../conventions.ts';
 import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
 import { loadFractionOf } from '../hour-classes/load-fraction.ts';
 import { setPointsC } from '../hour-classes/set-points.ts';
 import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
-import type { PackedYear, WeatherYear } from '../reduction/weather-year.ts';
+import { unpackYear, type YearColumns } from '../reduction/packed-columns.ts';
+import type { WeatherYear } from '../reduction/weather-year.ts';
 import type { PlantHour } from '../water-energy/plant-hour.ts';
 import { findUse } from './find-use.ts';
 
@@ -23,6 +24,8 @@ export interface JudgedHour {
 export interface JudgedYear {
   readonly slots: number;
   readonly clock: ResolvedClock;
+  /** 1 where the slot's weather is known, in schedule or not. */
+  readonly known: Uint8Array;
   /** One position in `hourClasses` for every slot. */
   readonly classCodes: Uint8Array;
   /** The demand hours, in slot order. */
@@ -38,17 +41,23 @@ interface Outdoor {
 /** The class of every slot, first match wins: closed, missing, idle, then what the brief's use says (method 5). */
 export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: string }): JudgedYear {
   const { year, brief, zone } = input;
-  const slots = year.packed.dryBulb.length;
+  const columns = unpackYear(year.packed);
+  const slots = columns.dryBulbC.length;
   const { kind, utcOffsetMin } = year;
   const clock = resolveClock({ zone, kind, year: year.year, slots, utcOffsetMin, clock: brief.clock });
   const open = openSlots(brief, clock);
   const use = findUse(brief);
   const setC = setPointsC(brief, slots);
-  const loadFraction = loadFractionOf(brief, knownDryBulbsC(year.packed));
+  const loadFraction = loadFractionOf(
+    brief,
+    columns.dryBulbC.filter((dryBulbC) => !Number.isNaN(dryBulbC)),
+  );
   const classCodes = new Uint8Array(slots);
+  const known = new Uint8Array(slots);
   const demandHours: JudgedHour[] = [];
   for (let slot = 0; slot < slots; slot++) {
-    const outdoor = outdoorAt(year.packed, slot);
+    const outdoor = outdoorAt(columns, slot);
+    known[slot] = outdoor === null ? 0 : 1;
     const apart = classWithoutDemand(open[slot] === 1, outdoor, brief);
     if (apart !== null || outdoor === null) {
       classCodes[slot] = codeOf(apart ?? 'missing');
@@ -59,7 +68,7 @@ export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: strin
     classCodes[slot] = codeOf(judgement.hourClass);
     demandHours.push({ slot, hour, judgement, plant: use.plantHour(hour, judgement, brief) });
   }
-  return { slots, clock, classCodes, demandHours };
+  return { slots, clock, known, classCodes, demandHours };
 }
 
 /** `closed`, `missing` or `idle`; null for a demand hour. */
@@ -86,17 +95,12 @@ function demandHour(
   };
 }
 
-/** Weather of a slot from the packed columns; null when t, w or p is not known. */
-function outdoorAt(packed: PackedYear, slot: number): Outdoor | null {
-  const dryBulb = packed.dryBulb[slot] ?? MISSING_INT16;
-  const humidityRatio = packed.humidityRatio[slot] ?? MISSING_UINT16;
-  const pressure = packed.pressure[slot] ?? MISSING_UINT16;
-  if (dryBulb === MISSING_INT16 || humidityRatio === MISSING_UINT16 || pressure === MISSING_UINT16) return null;
-  return { dryBulbC: dryBulb / 100, humidityRatio: humidityRatio * 2e-6, pressurePa: pressure * 2 };
-}
-
-function knownDryBulbsC(packed: PackedYear): Float64Array {
-  return Float64Array.from(packed.dryBulb.filter((value) => value !== MISSING_INT16)).map((value) => value / 100);
+/** Weather of a slot; null when t, w or p is not known. */
+function outdoorAt(columns: YearColumns, slot: number): Outdoor | null {
+  const dryBulbC = columns.dryBulbC[slot] ?? Number.NaN;
+  const humidityRatio = columns.humidityRatio[slot] ?? Number.NaN;
+  const pressurePa = columns.pressurePa[slot] ?? Number.NaN;
+  return Number.isNaN(dryBulbC + humidityRatio + pressurePa) ? null : { dryBulbC, humidityRatio, pressurePa };
 }
 
 function codeOf(hourClass: HourClass): number {

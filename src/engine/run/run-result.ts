@@ -14,6 +14,14 @@ export interface Ledger {
   readonly met: number;
 }
 
+/** Counts as if no scheduled hour were missing, scaled by month x hour of day (method 2). */
+export interface ScaledCounts {
+  readonly demand: number;
+  readonly met: number;
+  /** Scheduled hours of which no hour of the same month and hour of day is known: in no scaled count. */
+  readonly unknown: number;
+}
+
 /** The longest run of unmet demand hours (method.md 5). */
 export interface WorstSpell {
   readonly hours: number;
@@ -69,6 +77,7 @@ export interface RunResult {
   /** Months in schedule, 1..12, with fewer. */
   readonly monthsShort: readonly number[];
   readonly ledger: Ledger;
+  readonly scaled: ScaledCounts;
   readonly severityKh: number;
   readonly worstSpell: WorstSpell | null;
   /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */

@@ -81,6 +81,17 @@ describe('the ledger', () => {
     expect(ledger.met).toBe(ledger.demand);
   });
 
+  test('is scaled for missing hours by month and hour of day, beside the counts as read', () => {
+    const july = (slot: number): SyntheticHour => (slot >= 4344 && slot < 4512 ? null : dryHour(slot));
+    const { ledger, scaled } = judgeYear({ year: syntheticYear({ at: july }), brief: office, ...place });
+    expect(ledger.demand).toBe(OFFICE_HOURS - 50);
+    expect(scaled.demand).toBeCloseTo(OFFICE_HOURS, 9);
+    expect(scaled.met).toBeCloseTo(OFFICE_HOURS, 9);
+    const noNine = (slot: number): SyntheticHour => (slot % 24 === 8 && slot < 744 ? null : dryHour(slot));
+    const without = judgeYear({ year: syntheticYear({ at: noNine }), brief: office, ...place });
+    expect(without.scaled).toMatchObject({ unknown: 23, demand: OFFICE_HOURS - 23 });
+  });
+
   test('agrees with its tables by month and hour and with the supply curve', () => {
     const { ledger, demandByMonthHour, metByMonthHour, supplyCurve } = judgeYear({
       year: gappy,
