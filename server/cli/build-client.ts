@@ -19,7 +19,7 @@ function sourceFiles(rootDir: string): string[] {
 }
 
 function stampOf(rootDir: string): string {
-  const hash = createHash('sha256');
+  const hash = createHash('sha256').update('production\0');
   for (const file of sourceFiles(rootDir)) {
     const bytes = readFileSync(path.join(rootDir, file));
     hash.update(`${file}\0${bytes.length}\0`).update(bytes);
@@ -52,9 +52,8 @@ function isCurrent({ dir, stampFile, stamp }: ClientPlace): boolean {
 export async function requireClient({ rootDir, signal }: { rootDir: string; signal: AbortSignal }): Promise<string> {
   const place = placeOf(rootDir);
   if (isCurrent(place)) return place.dir;
-  const { NODE_ENV: _none, ...env } = process.env;
   const script = path.join(rootDir, 'server/cli/run.mjs');
-  const outcome = await runTool({ script, args: ['build'], cwd: rootDir, env, signal });
+  const outcome = await runTool({ script, args: ['build'], cwd: rootDir, env: process.env, signal });
   signal.throwIfAborted();
   if (outcome.code !== 0) throw new CouldNotRun(`The client could not be built:\n${outcome.output.trim()}`);
   return place.dir;
@@ -71,6 +70,8 @@ export async function buildClient(rootDir: string): Promise<{ readonly dir: stri
   const old = `${place.dir}.${process.pid}.old`;
   mkdirSync(path.dirname(place.dir), { recursive: true });
   const { build } = await import('vite');
+  const callersMode = process.env.NODE_ENV;
+  process.env.NODE_ENV = 'production'; // vite would take a test runner's word and pack React's slow, talkative build
   try {
     await build({ root: rootDir, logLevel: 'warn', build: { outDir: fresh, emptyOutDir: true } });
     rmSync(place.stampFile, { force: true });
@@ -79,6 +80,8 @@ export async function buildClient(rootDir: string): Promise<{ readonly dir: stri
     writeFileSync(place.stampFile, place.stamp);
     return { dir: place.dir };
   } finally {
+    if (callersMode === undefined) delete process.env.NODE_ENV;
+    else process.env.NODE_ENV = callersMode;
     rmSync(old, { recursive: true, force: true });
     rmSync(fresh, { recursive: true, force: true });
   }
