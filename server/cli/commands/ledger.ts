@@ -9,6 +9,7 @@ import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
 import type { UsableReading } from '#engine/weather-files/weather-file-reading.ts';
 import { presetBrief, presetNames } from '../../features/briefs/presets.ts';
 import { zoneOfStation } from '../../features/stations/zone-of-station.ts';
+import { measuredHours } from '../../features/weather/measured-hours.ts';
 import type { CommandContext, ExitCode } from '../command.ts';
 import { readArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
@@ -43,7 +44,7 @@ function gradeOf(input: { reading: UsableReading; reduced: ReducedYear; result: 
     distanceKm: 0,
     heightDifferenceM: 0,
     years: { actual: counts && reading.kind === 'actual' ? 1 : 0, typical: counts && reading.kind === 'typical' },
-    measuredSharePct: counts ? (100 * reduced.facts.measured) / reduced.facts.hours : null,
+    measuredSharePct: counts ? (100 * measuredHours(reduced.year.packed.flags)) / reduced.facts.hours : null,
     flagsInformative: !reading.findings.some(({ code }) => code === 'source-flags-uniform'),
     kind: reading.kind === 'derived' ? 'derived' : 'station',
   }).grade;
