@@ -13,9 +13,8 @@ export function notBuiltYet(brief: Brief): string[] {
 function limitNotBuilt({ limit }: Brief): string | null {
   switch (limit.kind) {
     case 'fixed':
-      return null;
     case 'adaptive':
-      return 'An adaptive comfort limit is not built yet.';
+      return null;
     case 'inlet':
       return 'A limit at the inlet of a data hall is not built yet.';
     case 'thi':

@@ -13,6 +13,7 @@ const roomAtATemperature: Use = { judgeHour: judgeSupplyAirHour, plantHour: supp
 
 /** @throws RangeError for a use that is not built (`notBuiltYet` says so in words) */
 export function findUse(brief: Brief): Use {
-  if (brief.limit.kind === 'fixed' && brief.primaryAir === 'outdoor') return roomAtATemperature;
+  const heldAtATemperature = brief.limit.kind === 'fixed' || brief.limit.kind === 'adaptive';
+  if (heldAtATemperature && brief.primaryAir === 'outdoor') return roomAtATemperature;
   throw new RangeError(`no way to judge an hour with a limit of kind ${brief.limit.kind} and ${brief.primaryAir} air`);
 }

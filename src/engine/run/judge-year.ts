@@ -60,8 +60,13 @@ function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
     supplyCurve: tallySupplyCurve(judged),
     ...tallyMonthHours(judged),
     scaled: scaleForMissing(judged),
+    clampedLimitHours: countClamped(judged),
     ...tallyPlant(judged.slots, judged.demandHours),
   };
+}
+
+function countClamped({ outsideRange, demandHours }: JudgedYear): number | null {
+  return outsideRange === null ? null : demandHours.filter(({ slot }) => outsideRange[slot] === 1).length;
 }
 
 function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; exclusion: string | null }) {

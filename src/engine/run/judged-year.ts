@@ -5,7 +5,7 @@ import { hundredths } from '../conventions.ts';
 import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
 import { loadFractionOf } from '../hour-classes/load-fraction.ts';
-import { setPointsC } from '../hour-classes/set-points.ts';
+import { setPoints } from '../hour-classes/set-points.ts';
 import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
 import { unpackYear, type YearColumns } from '../reduction/packed-columns.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
@@ -28,6 +28,8 @@ export interface JudgedYear {
   readonly known: Uint8Array;
   /** One position in `hourClasses` for every slot. */
   readonly classCodes: Uint8Array;
+  /** 1 where an adaptive limit was clamped to its range; null for other limits. */
+  readonly outsideRange: Uint8Array | null;
   /** The demand hours, in slot order. */
   readonly demandHours: readonly JudgedHour[];
 }
@@ -47,7 +49,7 @@ export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: strin
   const clock = resolveClock({ zone, kind, year: year.year, slots, utcOffsetMin, clock: brief.clock });
   const open = openSlots(brief, clock);
   const use = findUse(brief);
-  const setC = setPointsC(brief, slots);
+  const { setC, outsideRange } = setPoints({ brief, dryBulbC: columns.dryBulbC, wrapped: kind !== 'actual' });
   const loadFraction = loadFractionOf(
     brief,
     columns.dryBulbC.filter((dryBulbC) => !Number.isNaN(dryBulbC)),
@@ -68,7 +70,7 @@ export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: strin
     classCodes[slot] = codeOf(judgement.hourClass);
     demandHours.push({ slot, hour, judgement, plant: use.plantHour(hour, judgement, brief) });
   }
-  return { slots, clock, known, classCodes, demandHours };
+  return { slots, clock, known, classCodes, demandHours, outsideRange };
 }
 
 /** `closed`, `missing` or `idle`; null for a demand hour. */

@@ -78,6 +78,8 @@ export interface RunResult {
   readonly monthsShort: readonly number[];
   readonly ledger: Ledger;
   readonly scaled: ScaledCounts;
+  /** Demand hours whose adaptive limit was clamped to its range; null for other limits. */
+  readonly clampedLimitHours: number | null;
   readonly severityKh: number;
   readonly worstSpell: WorstSpell | null;
   /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */

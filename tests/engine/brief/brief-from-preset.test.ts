@@ -146,8 +146,8 @@ describe('a brief from a preset', () => {
 });
 
 describe('what is not built yet', () => {
-  test('office, clinic and broiler are judged in full', () => {
-    expect(['office', 'clinic', 'broiler'].flatMap((name) => notBuiltYet(presetBrief(name)))).toEqual([]);
+  test('school, office, clinic and broiler are judged in full', () => {
+    expect(['school', 'office', 'clinic', 'broiler'].flatMap((name) => notBuiltYet(presetBrief(name)))).toEqual([]);
   });
 
   test('room exhaust as secondary air is named plainly', () => {
