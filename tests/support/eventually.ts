@@ -4,7 +4,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 export async function eventually<T>(
   what: string,
   look: () => Promise<T | null | undefined | false>,
-  withinMs = 15_000,
+  withinMs = 25_000,
 ): Promise<T> {
   const end = performance.now() + withinMs;
   while (performance.now() < end) {

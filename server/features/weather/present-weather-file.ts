@@ -23,9 +23,10 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
   };
 }
 
-export function presentRecord({ view, findings, asks, acceptedBy, facts }: WeatherFileRecordView): WeatherFileRecord {
+export function presentRecord(record: WeatherFileRecordView): WeatherFileRecord {
+  const { findings, asks, acceptedBy, facts } = record;
   return {
-    file: presentWeatherFile(view),
+    file: presentWeatherFile(record),
     findings: findings.map((finding) => ({ ...finding })),
     asks: asks.map((ask) => ({ ...ask })),
     acceptedBy,

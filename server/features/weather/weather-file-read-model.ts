@@ -28,15 +28,16 @@ export interface WeatherFileView {
   readonly uploadedAtUs: string;
 }
 
-const VIEW = `
-  select weather_files.id, weather_files.name, weather_files.bytes::double precision as bytes, weather_files.fingerprint,
+const VIEW_COLUMNS = `
+    weather_files.id, weather_files.name, weather_files.bytes::double precision as bytes, weather_files.fingerprint,
     weather_files.format, weather_files.status, weather_files.step, weather_files.failure,
     people.name as "uploadedBy", weather_files.uploaded_at as "uploadedAt",
     weather_files.declared_station as "declaredStation", weather_files.station_id as "stationId",
     weather_years.kind, weather_years.year, weather_years.slots as hours,
     (weather_years.facts ->> 'missing')::integer as missing,
     coalesce(counts.by_severity, '{}') as "findingCounts",
-    (extract(epoch from weather_files.uploaded_at) * 1000000)::bigint::text as "uploadedAtUs"
+    (extract(epoch from weather_files.uploaded_at) * 1000000)::bigint::text as "uploadedAtUs"`;
+const VIEW_ROWS = `
   from weather_files
   join people on people.id = weather_files.uploaded_by
   left join weather_years on weather_years.weather_file_id = weather_files.id
@@ -62,7 +63,7 @@ export async function listWeatherFileViews(
   const after = page.after === null ? '' : PAGE_START;
   const [listed, counted] = await Promise.all([
     db.raw<{ rows: WeatherFileView[] }>(
-      `${VIEW} where weather_files.team_id = :teamId ${after}
+      `select ${VIEW_COLUMNS} ${VIEW_ROWS} where weather_files.team_id = :teamId ${after}
        order by weather_files.uploaded_at desc, weather_files.id desc limit :rows`,
       { teamId: page.teamId, rows: page.limit + 1, ...page.after },
     ),
@@ -85,15 +86,14 @@ export async function findWeatherFileView(
   key: { teamId: string; fileId: string },
 ): Promise<WeatherFileView | null> {
   const { rows } = await db.raw<{ rows: WeatherFileView[] }>(
-    `${VIEW} where weather_files.team_id = ? and weather_files.id = ?`,
+    `select ${VIEW_COLUMNS} ${VIEW_ROWS} where weather_files.team_id = ? and weather_files.id = ?`,
     [key.teamId, key.fileId],
   );
   return rows[0] ?? null;
 }
 
 /** A weather file's own page. */
-export interface WeatherFileRecordView {
-  readonly view: WeatherFileView;
+export interface WeatherFileRecordView extends WeatherFileView {
   readonly findings: readonly FindingView[];
   readonly asks: readonly Ask[];
   readonly acceptedBy: string | null;
@@ -108,36 +108,24 @@ export interface FindingView {
   readonly message: string;
 }
 
-interface RecordRow {
-  readonly asks: readonly Ask[];
-  readonly acceptedBy: string | null;
-  readonly facts: YearFacts | null;
-  readonly findings: readonly FindingView[];
-}
-
-/** `null` when the team has no such file. */
+/** One statement, so that status, findings and facts are of one moment; `null` when the team has no such file. */
 export async function findWeatherFileRecord(
   db: Knex,
   key: { teamId: string; fileId: string },
 ): Promise<WeatherFileRecordView | null> {
-  const [view, record] = await Promise.all([
-    findWeatherFileView(db, key),
-    db.raw<{ rows: RecordRow[] }>(
-      `select weather_files.asks, people.name as "acceptedBy", weather_years.facts,
-         coalesce((
-           select jsonb_agg(
-             jsonb_build_object('code', findings.code, 'severity', findings.severity, 'line', findings.line,
-               'column', findings.col, 'message', findings.message)
-             order by findings.position)
-           from findings where findings.weather_file_id = weather_files.id
-         ), '[]') as findings
-       from weather_files
-       left join people on people.id = weather_files.accepted_by
-       left join weather_years on weather_years.weather_file_id = weather_files.id
-       where weather_files.team_id = ? and weather_files.id = ?`,
-      [key.teamId, key.fileId],
-    ),
-  ]);
-  const [row] = record.rows;
-  return view === null || row === undefined ? null : { view, ...row };
+  const { rows } = await db.raw<{ rows: WeatherFileRecordView[] }>(
+    `select ${VIEW_COLUMNS}, weather_files.asks, accepter.name as "acceptedBy", weather_years.facts,
+       coalesce((
+         select jsonb_agg(
+           jsonb_build_object('code', findings.code, 'severity', findings.severity, 'line', findings.line,
+             'column', findings.col, 'message', findings.message)
+           order by findings.position)
+         from findings where findings.weather_file_id = weather_files.id
+       ), '[]') as findings
+     ${VIEW_ROWS}
+     left join people as accepter on accepter.id = weather_files.accepted_by
+     where weather_files.team_id = ? and weather_files.id = ?`,
+    [key.teamId, key.fileId],
+  );
+  return rows[0] ?? null;
 }

@@ -5,6 +5,7 @@ import { addJob, type JobPayloads, MAX_ATTEMPTS } from '../../../server/jobs/que
 import { type JobTasks, runJobs } from '../../../server/jobs/run-jobs.ts';
 import { beat, releaseSilentPools } from '../../../server/jobs/worker-pool-store.ts';
 import { eventually } from '../../support/eventually.ts';
+import { jobsDueNow } from '../../support/jobs-due-now.ts';
 import { type KeptLog, keepLog } from '../../support/quiet-log.ts';
 import { makeTestDatabase, type TestDatabase } from '../../support/test-database.ts';
 
@@ -57,9 +58,6 @@ async function jobOf(payload: Reading) {
   return rows[0] ?? null;
 }
 
-/** Skips the waits between tries. */
-const dueNow = () => database.ownerDb.raw('update graphile_worker._private_jobs set run_at = now()');
-
 describe('the job worker', () => {
   it('does a job once its transaction has committed, and not when it was taken back', async () => {
     const done: Reading[] = [];
@@ -88,7 +86,7 @@ describe('the job worker', () => {
     const payload = newReading();
     await addReading(payload);
     await eventually('the failed try', async () => tries === 1 && (await jobOf(payload))?.lockedBy === null);
-    await dueNow();
+    await jobsDueNow(database);
     await eventually('the second try', async () => tries === 2 && (await jobOf(payload)) === null);
     expect(log.errors.map(({ message }) => message).join()).toContain('the disk is full');
   });
@@ -107,7 +105,7 @@ describe('the job worker', () => {
     await addReading(payload);
     for (let number = 1; number <= MAX_ATTEMPTS; number++) {
       await eventually(`try ${number}`, async () => tries === number && (await jobOf(payload))?.lockedBy === null);
-      await dueNow();
+      await jobsDueNow(database);
     }
     await eventually('the burial', async () => buried.length > 0);
     expect(buried).toEqual([payload]);
