@@ -1,5 +1,6 @@
+import type { Map as MapLibreMap } from 'maplibre-gl';
 import { graticule, type Tick } from './graticule.ts';
-import type { SheetView } from './sheet-view.ts';
+import { useSheetView } from './sheet-view-store.ts';
 
 /** Room that the double frame, its ticks and their figures take around the map, in pixels. */
 export const MARGIN = { top: 9, right: 9, bottom: 27, left: 27 } as const;
@@ -13,10 +14,11 @@ const TICK_PX = 4;
 /** A figure nearer to a corner than this would hang over the edge of the sheet. */
 const CORNER_PX = 20;
 
-type NeatlineProps = { readonly view: SheetView | null };
+type NeatlineProps = { readonly map: MapLibreMap | null };
 
 /** The frame of the sheet: two lines, the scale between them, and degrees of latitude and longitude in the margin. */
-export function Neatline({ view }: NeatlineProps) {
+export function Neatline({ map }: NeatlineProps) {
+  const view = useSheetView(map);
   if (view === null) return null;
   const { widthPx: width, heightPx: height } = view;
   const { meridians, parallels } = graticule(view);

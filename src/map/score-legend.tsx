@@ -18,7 +18,7 @@ export function ScoreLegend({ stations }: LegendProps) {
       <ClassRow counts={counts.classes} />
       <ul className="mt-1.5 grid gap-0.5 text-[0.6875rem] leading-snug text-soft">
         <KeyRow count={counts.gradeD} mark="hatched">
-          Grade D: weather not good enough to rely on
+          Grade D, not ranked
         </KeyRow>
         <KeyRow count={counts.noScore} mark="hollow">
           No score

@@ -1,5 +1,8 @@
+import type { Map as MapLibreMap } from 'maplibre-gl';
+import type { ReactNode } from 'react';
 import { scaleBar, type UnitSystem } from './scale-bar.ts';
 import type { SheetView } from './sheet-view.ts';
+import { useSheetView } from './sheet-view-store.ts';
 
 /** What stands inside the frame on every sheet: zoom buttons, scale bar and sources. */
 
@@ -29,7 +32,7 @@ export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
   );
 }
 
-type SheetButtonProps = { readonly label: string; readonly onPress: () => void; readonly children: React.ReactNode };
+type SheetButtonProps = { readonly label: string; readonly onPress: () => void; readonly children: ReactNode };
 
 function SheetButton({ label, onPress, children }: SheetButtonProps) {
   return (
@@ -58,7 +61,14 @@ const LONGEST_SCALE_PX = 132;
 /** Width of a digit at the size of the scale's figures, a little over. */
 const DIGIT_PX = 6.5;
 
-export function ScaleBar({ view, units }: { readonly view: SheetView; readonly units: UnitSystem }) {
+type ScaleProps = { readonly map: MapLibreMap | null; readonly units: UnitSystem };
+
+export function Scale({ map, units }: ScaleProps) {
+  const view = useSheetView(map);
+  return view === null ? null : <ScaleOf view={view} units={units} />;
+}
+
+function ScaleOf({ view, units }: { readonly view: SheetView; readonly units: UnitSystem }) {
   const { widthPx, figures, unit } = scaleBar(view, { mostPx: LONGEST_SCALE_PX, units });
   const [start, middle, end] = figures;
   const endPx = end.length * DIGIT_PX;
@@ -68,12 +78,12 @@ export function ScaleBar({ view, units }: { readonly view: SheetView; readonly u
     <svg
       role="img"
       aria-label={`Scale: the bar is ${end} ${unit} long`}
-      width={wholePx + 8}
-      height={24}
-      viewBox={`-8 0 ${wholePx + 8} 24`}
+      width={wholePx + 12}
+      height={27}
+      viewBox={`-12 -4 ${wholePx + 12} 27`}
       fontSize={11}
       textAnchor="middle"
-      className="block fill-ink"
+      className="block bg-paper/85 fill-ink"
     >
       <g stroke="#f4f0e6" strokeWidth={3} strokeLinejoin="round" paintOrder="stroke">
         <text y={10}>{start}</text>
@@ -99,7 +109,7 @@ export function ScaleBar({ view, units }: { readonly view: SheetView; readonly u
 
 export function Sources() {
   return (
-    <p className="text-right text-[0.6875rem] leading-snug text-soft [&_a]:text-soft [&_a]:underline">
+    <p className="bg-paper/85 px-2 py-0.5 text-right text-[0.6875rem] leading-snug text-soft [&_a]:text-soft [&_a]:underline">
       Made with <Away to="https://www.naturalearthdata.com/">Natural Earth</Away>. Places:{' '}
       <Away to="https://www.geonames.org/">GeoNames</Away>,{' '}
       <Away to="https://creativecommons.org/licenses/by/4.0/">CC BY 4.0</Away>

@@ -1,7 +1,7 @@
 import './sheet-map.css';
 import * as maplibregl from 'maplibre-gl';
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?url';
-import { type ReactNode, useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { type ReactNode, type RefObject, useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { type MapLayerMouseEvent, type MapRef, Map as MapView } from 'react-map-gl/maplibre';
 import type { MapStation } from '../contract/runs.ts';
 import { boxAround } from './fit-stations.ts';
@@ -9,9 +9,8 @@ import { GraticuleLayer } from './graticule-layer.tsx';
 import { ITALIC, mapFonts, ROMAN } from './map-fonts.ts';
 import { MARGIN, Neatline } from './neatline.tsx';
 import type { UnitSystem } from './scale-bar.ts';
-import { ScaleBar, Sources, ZoomButtons } from './sheet-furniture.tsx';
+import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
 import { sheetStyle } from './sheet-style.ts';
-import { useSheetView } from './sheet-view-store.ts';
 import { StationKeys } from './station-keys.tsx';
 import { STATION_MARKS, StationLayers } from './station-layers.tsx';
 import { drawMark, markNamed } from './station-mark.ts';
@@ -40,6 +39,7 @@ const ZOOM_LIMITS = { minZoom: 0.8, maxZoom: 11 };
 const FIT = { padding: 56, maxZoom: 8 };
 /** A finger or a pointer this near to a mark means it. */
 const REACH_PX = 10;
+const FADE_MS = 200;
 const WORDS = { 'Map.Title': 'Map. Arrow keys move it, plus and minus zoom.' };
 
 /** The map as a printed sheet. Fills its parent, which gives it its height. */
@@ -48,7 +48,6 @@ export function SheetMap(props: SheetMapProps) {
   const [map, setMap] = useState<maplibregl.Map | null>(null);
   const [pointedId, setPointedId] = useState<string | null>(null);
   const wrapper = useRef<HTMLDivElement>(null);
-  const view = useSheetView(map);
   const style = useSheetStyle();
   const hold = useCallback((ref: MapRef | null) => setMap(ref?.getMap() ?? null), []);
   usePictures(map);
@@ -70,7 +69,7 @@ export function SheetMap(props: SheetMapProps) {
   return (
     <div ref={wrapper} data-sheet-map="" className="@container flex size-full flex-col">
       <div className="relative min-h-0 flex-1">
-        <Neatline view={view} />
+        <Neatline map={map} />
         <div className="absolute isolate overflow-hidden bg-water" style={MARGIN}>
           <MapView
             ref={hold}
@@ -84,6 +83,7 @@ export function SheetMap(props: SheetMapProps) {
             touchPitch={false}
             pitchWithRotate={false}
             attributionControl={false}
+            fadeDuration={lessMotion() ? 0 : FADE_MS}
             locale={WORDS}
             cursor={pointedId === null ? 'grab' : 'pointer'}
             onLoad={({ target }) => target.touchZoomRotate.disableRotation()}
@@ -91,14 +91,14 @@ export function SheetMap(props: SheetMapProps) {
             onMouseMove={(event) => setPointedId(stationAt(event))}
             onMouseOut={() => setPointedId(null)}
           >
-            {view !== null && <GraticuleLayer view={view} />}
+            <GraticuleLayer map={map} />
             {children}
             <StationLayers stations={stations} chosenId={chosenId} pointedId={pointedId} />
           </MapView>
           <StationKeys stations={stations} chosenId={chosenId} onChoose={onChoose} onPoint={pointByKey} />
           <ZoomButtons onIn={() => map?.zoomIn()} onOut={() => map?.zoomOut()} onAll={fitAll} />
-          <div className="absolute right-0 bottom-0 flex flex-col items-end gap-0.5 bg-paper/85 pt-1.5 pr-2 pb-1 pl-2.5">
-            {view !== null && <ScaleBar view={view} units={units} />}
+          <div className="absolute right-0 bottom-0 flex flex-col items-end">
+            <Scale map={map} units={units} />
             <Sources />
           </div>
           {legend !== undefined && (
@@ -147,6 +147,11 @@ function useFit(map: maplibregl.Map | null, { stations, initialView }: SheetMapP
   return box === null ? null : () => map?.fitBounds(toBounds(box), FIT);
 }
 
+/** MapLibre itself turns flights into jumps for readers who want less motion; the fading of names is left to us. */
+function lessMotion(): boolean {
+  return window.matchMedia('(prefers-reduced-motion: reduce)').matches;
+}
+
 /** The station under the pointer, the nearest where several are in reach. */
 function stationAt({ target: map, point }: MapLayerMouseEvent): string | null {
   if (map.getLayer(STATION_MARKS) === undefined) return null;
@@ -181,7 +186,12 @@ function usePictures(map: maplibregl.Map | null) {
 }
 
 /** `data-idle` stands on the sheet while everything asked for is drawn: what a test waits for. */
-function useIdleMark(map: maplibregl.Map | null, wrapper: React.RefObject<HTMLDivElement | null>) {
+function useIdleMark(map: maplibregl.Map | null, wrapper: RefObject<HTMLDivElement | null>) {
+  // After every change of what is to be drawn: not idle until the map has said so again.
+  useEffect(() => {
+    wrapper.current?.removeAttribute('data-idle');
+    map?.triggerRepaint();
+  });
   useEffect(() => {
     const busy = () => wrapper.current?.removeAttribute('data-idle');
     const idle = () => wrapper.current?.setAttribute('data-idle', '');

@@ -1,4 +1,4 @@
-import { type KeyboardEvent, useId, useState } from 'react';
+import { type KeyboardEvent, useId, useMemo, useState } from 'react';
 import type { MapStation } from '../contract/runs.ts';
 import { stationSentence } from './station-features.ts';
 
@@ -20,7 +20,10 @@ type StationKeysProps = {
 export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKeysProps) {
   const [cursor, setCursor] = useState(0);
   const listId = useId();
-  const sorted = [...stations].sort((a, b) => a.name.localeCompare(b.name, 'en') || (a.id < b.id ? -1 : 1));
+  const sorted = useMemo(
+    () => [...stations].sort((a, b) => a.name.localeCompare(b.name, 'en') || (a.id < b.id ? -1 : 1)),
+    [stations],
+  );
   const at = Math.min(cursor, sorted.length - 1);
   const from = Math.max(0, at - WINDOW);
 
@@ -30,6 +33,7 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
     onPoint(sorted[held] ?? null);
   };
   const press = (event: KeyboardEvent) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
     const station = sorted[at];
     const target = targetOf(event.key, { at, sorted });
     if (target !== null) move(target);
@@ -39,38 +43,40 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
   };
   if (sorted.length === 0) return null;
   return (
-    <div
-      role="listbox"
-      tabIndex={0}
-      aria-label="Stations on the map"
-      aria-activedescendant={`${listId}-${at}`}
-      aria-describedby={`${listId}-help`}
-      onKeyDown={press}
-      onFocus={() => move(Math.max(0, chosenId === null ? at : sorted.findIndex(({ id }) => id === chosenId)))}
-      onBlur={() => onPoint(null)}
-      className="group absolute inset-0 pointer-events-none outline-none focus-visible:outline-2 focus-visible:-outline-offset-4 focus-visible:outline-indigo"
-    >
+    <>
+      <div
+        role="listbox"
+        tabIndex={0}
+        aria-label="Stations on the map"
+        aria-activedescendant={`${listId}-${at}`}
+        aria-describedby={`${listId}-help`}
+        onKeyDown={press}
+        onFocus={() => move(Math.max(0, chosenId === null ? at : sorted.findIndex(({ id }) => id === chosenId)))}
+        onBlur={() => onPoint(null)}
+        className="peer absolute inset-0 pointer-events-none focus-visible:-outline-offset-4"
+      >
+        {sorted.slice(from, at + WINDOW + 1).map((station, index) => (
+          <div
+            key={station.id}
+            id={`${listId}-${from + index}`}
+            role="option"
+            tabIndex={-1}
+            aria-selected={station.id === chosenId}
+            aria-posinset={from + index + 1}
+            aria-setsize={sorted.length}
+            className="sr-only"
+          >
+            {stationSentence(station)}
+          </div>
+        ))}
+      </div>
       <p
         id={`${listId}-help`}
-        className="absolute top-2 left-1/2 -translate-x-1/2 hidden group-focus-visible:block bg-paper border border-line px-2 py-1 text-fine whitespace-nowrap"
+        className="pointer-events-none absolute top-2 left-1/2 -translate-x-1/2 hidden peer-focus-visible:block bg-paper border border-line px-2 py-1 text-fine whitespace-nowrap"
       >
         Arrow keys go from station to station, Enter chooses
       </p>
-      {sorted.slice(from, at + WINDOW + 1).map((station, index) => (
-        <div
-          key={station.id}
-          id={`${listId}-${from + index}`}
-          role="option"
-          tabIndex={-1}
-          aria-selected={station.id === chosenId}
-          aria-posinset={from + index + 1}
-          aria-setsize={sorted.length}
-          className="sr-only"
-        >
-          {stationSentence(station)}
-        </div>
-      ))}
-    </div>
+    </>
   );
 }
 
