@@ -24,17 +24,19 @@ const SILENT_MS = 60_000;
 const FIRST_WAIT_MS = 500;
 const LONGEST_WAIT_MS = 10_000;
 
+interface JobsOptions {
+  readonly db: Knex;
+  readonly databaseUrl: string;
+  readonly tasks: JobTasks;
+  readonly log: ListenerLog;
+}
+
 /**
  * Works off the queue until it is closed; a run that ends by itself (the database was away for long) is begun again.
  * Signals are the caller's business. Closing waits for the jobs at hand.
  * @throws when the first run cannot begin
  */
-export async function runJobs(options: {
-  db: Knex;
-  databaseUrl: string;
-  tasks: JobTasks;
-  log: ListenerLog;
-}): Promise<{ close(): Promise<void> }> {
+export async function runJobs(options: JobsOptions): Promise<{ close(): Promise<void> }> {
   const closing = new AbortController();
   let current = await startRun(options);
   const supervised = supervise();
@@ -50,6 +52,7 @@ export async function runJobs(options: {
       try {
         current = await startRun(options);
         waitMs = FIRST_WAIT_MS;
+        if (closing.signal.aborted) await current.stop();
         await current.ended;
       } catch (error) {
         options.log.error({ error }, 'the job worker could not be started');
@@ -71,37 +74,14 @@ interface Run {
   stop(): Promise<void>;
 }
 
-async function startRun(options: { db: Knex; databaseUrl: string; tasks: JobTasks; log: ListenerLog }): Promise<Run> {
-  const { db, log } = options;
-  const pool = new pg.Pool({ connectionString: options.databaseUrl, max: MOST_CONNECTIONS, keepAlive: true });
-  // A lost connection shows in the query that meets it; without a listener it would end the process.
-  pool.on('error', () => undefined);
-  pool.on('connect', (client) => void client.on('error', () => undefined));
-  const buried = new Set<Promise<void>>();
-  let heart: Repeated | null = null;
-  let poolId = '';
-
-  const events: WorkerEvents = new EventEmitter();
-  events.on('pool:create', ({ workerPool }) => {
-    poolId = workerPool.id;
-  });
-  events.on('job:failed', ({ job }) => {
-    const burial = bury(options.tasks, job, log).finally(() => buried.delete(burial));
-    buried.add(burial);
-  });
-
-  const end = async (): Promise<void> => {
-    await heart?.stop();
-    await Promise.all(buried);
-    await forgetPool(db, poolId).catch(() => undefined);
-    await pool.end();
-  };
-
+async function startRun({ db, databaseUrl, tasks, log }: JobsOptions): Promise<Run> {
+  const pool = makePool(databaseUrl);
+  const { events, buried, poolId } = watchRun(tasks, log);
   let runner: Runner;
   try {
     runner = await run({
       pgPool: pool,
-      taskList: taskList(options.tasks),
+      taskList: taskList(tasks),
       concurrency: CONCURRENCY,
       noHandleSignals: true,
       events,
@@ -111,7 +91,58 @@ async function startRun(options: { db: Knex; databaseUrl: string; tasks: JobTask
     await pool.end();
     throw error;
   }
-  heart = repeat({
+  const heart = startHeart({ db, poolId: poolId(), log });
+  const ended = runner.promise
+    .catch((error) => log.error({ error }, 'the job worker ended'))
+    .then(async () => {
+      await heart.stop();
+      await buried();
+      await forgetPool(db, poolId()).catch(() => undefined);
+      await pool.end();
+    });
+  return {
+    ended,
+    async stop() {
+      await runner.stop().catch(() => undefined);
+      await ended;
+    },
+  };
+}
+
+function makePool(databaseUrl: string): pg.Pool {
+  const pool = new pg.Pool({ connectionString: databaseUrl, max: MOST_CONNECTIONS, keepAlive: true });
+  // A lost connection shows in the query that meets it; without a listener it would end the process.
+  pool.on('error', () => undefined);
+  pool.on('connect', (client) => void client.on('error', () => undefined));
+  return pool;
+}
+
+/** Learns the run's name, under which its jobs are locked, and writes down the jobs that failed for good. */
+function watchRun(
+  tasks: JobTasks,
+  log: ListenerLog,
+): { events: WorkerEvents; poolId(): string; buried(): Promise<void> } {
+  const events: WorkerEvents = new EventEmitter();
+  const burials = new Set<Promise<void>>();
+  let poolId = '';
+  events.on('pool:create', ({ workerPool }) => {
+    poolId = workerPool.id;
+  });
+  events.on('job:failed', ({ job }) => {
+    const burial = bury(tasks, job, log).finally(() => burials.delete(burial));
+    burials.add(burial);
+  });
+  return {
+    events,
+    poolId: () => poolId,
+    async buried() {
+      await Promise.all(burials);
+    },
+  };
+}
+
+function startHeart({ db, poolId, log }: { db: Knex; poolId: string; log: ListenerLog }): Repeated {
+  return repeat({
     everyMs: BEAT_EVERY_MS,
     what: 'the heartbeat of the job worker',
     log,
@@ -121,14 +152,6 @@ async function startRun(options: { db: Knex; databaseUrl: string; tasks: JobTask
       if (pools.length > 0) log.error({ pools }, 'the jobs of silent workers were given back');
     },
   });
-  const ended = runner.promise.catch((error) => log.error({ error }, 'the job worker ended')).then(end);
-  return {
-    ended,
-    async stop() {
-      await runner.stop().catch(() => undefined);
-      await ended;
-    },
-  };
 }
 
 function taskList(tasks: JobTasks): TaskList {

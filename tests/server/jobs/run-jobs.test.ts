@@ -132,6 +132,25 @@ describe('the job worker', () => {
     expect(rows).toEqual([]);
   });
 
+  it('goes on after PostgreSQL has cut every connection of it', async () => {
+    const done: Reading[] = [];
+    await startWith({ run: async (payload) => void done.push(payload) });
+    const cut = await database.db.raw<{ rowCount: number }>(
+      `select pg_terminate_backend(pid) from pg_stat_activity
+       where datname = current_database() and usename = current_user and pid <> pg_backend_pid()`,
+    );
+    expect(cut.rowCount).toBeGreaterThan(0);
+    const payload = newReading();
+    await eventually('a job that can be added', () =>
+      addReading(payload).then(
+        () => true,
+        () => false,
+      ),
+    );
+    await eventually('the job', async () => done.length > 0);
+    expect(done).toEqual([payload]);
+  });
+
   it('gives back the jobs of a pool that fell silent, and of none that lives', async () => {
     const [dead, alive] = [newReading(), newReading()];
     await addReading(dead);
