@@ -10,6 +10,8 @@ import { TeamPages } from './team-pages.tsx';
 const routes: RouteObject[] = [
   {
     errorElement: <FailedPage />,
+    // The first page's own part is on its way; it says itself when it takes long.
+    HydrateFallback: () => null,
     children: [
       {
         path: paths.signIn.pattern,
@@ -57,7 +59,7 @@ const routes: RouteObject[] = [
             },
           ]
         : []),
-      { path: '*', Component: NotFoundPage },
+      { path: '*', element: <NotFoundPage isAlone /> },
     ],
   },
 ];

@@ -18,7 +18,7 @@ export function TeamPages() {
     if (team) rememberTeam(team.teamId);
   }, [team]);
   if (!session?.person) return null;
-  if (!team) return <NotFoundPage />;
+  if (!team) return <NotFoundPage isAlone />;
   return (
     <TeamScopeProvider value={team}>
       <Shell person={session.person} team={team} memberships={session.memberships} stream={stream}>

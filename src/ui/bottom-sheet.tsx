@@ -57,7 +57,7 @@ export function BottomSheet({ label, step, onStep, children }: BottomSheetProps)
     <section
       ref={sheet}
       aria-label={label}
-      className={`absolute inset-x-0 bottom-0 z-10 flex flex-col rounded-t-[10px] border-t border-line bg-paper shadow-float ${
+      className={`absolute inset-x-0 bottom-0 z-10 flex flex-col rounded-t-md border-t border-line bg-paper shadow-float ${
         draggedPx === null ? 'transition-[height] duration-200' : ''
       }`}
       style={{ height }}

@@ -56,7 +56,7 @@ export function YearClothCanvas({ codes, heightPx, label, words }: YearClothCanv
               aria-valuenow={cell ? cell.day * HOURS + cell.hour + 1 : 1}
               aria-valuetext={cell ? read(cell) : 'Arrow keys read single hours.'}
               tabIndex={0}
-              className="relative"
+              className="relative focus-visible:-outline-offset-2"
               onKeyDown={onKeyDown}
               onBlur={() => setCell(null)}
               onPointerLeave={() => setCell(null)}

@@ -4,7 +4,7 @@ import { classWords, dampOutsideWords, dampPlantWords } from '../../charts/hour-
 import { LedgerBar } from '../../charts/ledger-bar.tsx';
 import type { Ledger } from '../../contract/runs.ts';
 import type { HourClass } from '../../engine/hour-classes/hour-class.ts';
-import { hours, number, percent } from '../../lib/format.ts';
+import { hours, number, share } from '../../lib/format.ts';
 import { identitySentence, metWords, sumOfClasses } from './run-words.ts';
 
 interface Row {
@@ -84,7 +84,7 @@ function LedgerRow({ row, id, demand }: { row: Row; id: string; demand: number |
       </th>
       <td className="pl-2 text-right whitespace-nowrap">{hours(row.count)}</td>
       <td className="w-14 pl-2 text-right whitespace-nowrap text-soft">
-        {demand !== null && demand > 0 ? percent((100 * row.count) / demand) : ''}
+        {demand !== null && demand > 0 ? share((100 * row.count) / demand) : ''}
       </td>
     </tr>
   );

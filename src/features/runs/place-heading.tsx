@@ -2,7 +2,7 @@ import { Link } from 'react-router-dom';
 import type { Place } from '../../contract/runs.ts';
 import { metres, position } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
-import { bandWords, costingColumns, noScoreWords, placeYearWords, verdictSentence } from './run-words.ts';
+import { bandWords, costingColumns, costWords, noScoreWords, placeYearWords, verdictSentence } from './run-words.ts';
 
 /** Name and basis of the chosen place: a number never stands without what it rests on. */
 export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }) {
@@ -60,9 +60,7 @@ export function ScoreBlock({ place }: { place: Place }) {
         </p>
         <p>
           <span className="font-medium">Grade {place.grade}</span>
-          {costs.length === 0
-            ? ': nothing costs a letter.'
-            : `: ${costs.map(({ column, grade, reason }) => `${column} ${grade}, ${reason}`).join('; ')}.`}
+          {costs.length === 0 ? ': nothing costs a letter.' : `: ${costWords(costs, place.grade)}.`}
         </p>
       </div>
     </div>

@@ -30,6 +30,11 @@ export function costingColumns(columns: Place['gradeColumns']): Place['gradeColu
   return columns.filter(({ grade }) => grade !== 'A').sort((a, b) => b.grade.localeCompare(a.grade));
 }
 
+/** "years C (one typical year), measured share B": the reason of those that set the grade, the rest is in the notes. */
+export function costWords(costs: Place['gradeColumns'], overall: Place['grade']): string {
+  return list(costs.map(({ column, grade, reason }) => `${column} ${grade}${grade === overall ? ` (${reason})` : ''}`));
+}
+
 export function sumOfClasses(ledger: Ledger): number {
   return Object.values(ledger.classes).reduce((sum, count) => sum + count, 0);
 }

@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { Input, ListBox, ListBoxItem, SearchField } from 'react-aria-components';
 import { rampColour } from '../../charts/ramp.ts';
 import type { MapStation } from '../../contract/runs.ts';
@@ -16,6 +16,8 @@ interface StationListProps {
 export function StationList({ stations, chosenId, onChoose }: StationListProps) {
   const [typed, setTyped] = useState('');
   const ranked = useMemo(() => rankedStations(stations), [stations]);
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => bringIntoView(box.current, chosenId), [chosenId]);
   const found = useMemo(() => filterByName(ranked, typed), [ranked, typed]);
   return (
     <section aria-labelledby="stations-by-score" className="flex min-h-0 flex-col">
@@ -32,6 +34,7 @@ export function StationList({ stations, chosenId, onChoose }: StationListProps) 
         {typed === '' ? '' : `${plural(found.length, 'station')} found`}
       </p>
       <ListBox
+        ref={box}
         aria-labelledby="stations-by-score"
         items={found.map((entry) => ({ ...entry, id: entry.station.id }))}
         selectionMode="single"
@@ -48,6 +51,16 @@ export function StationList({ stations, chosenId, onChoose }: StationListProps) 
       </ListBox>
     </section>
   );
+}
+
+/** Scrolls the list alone, never the page, so that a station chosen on the map is seen in the ranking. */
+function bringIntoView(box: HTMLElement | null, stationId: string | null): void {
+  const row = stationId === null ? null : box?.querySelector(`[data-key="${CSS.escape(stationId)}"]`);
+  if (!box || !row) return;
+  const view = box.getBoundingClientRect();
+  const place = row.getBoundingClientRect();
+  if (place.top < view.top) box.scrollTop -= view.top - place.top;
+  else if (place.bottom > view.bottom) box.scrollTop += place.bottom - view.bottom;
 }
 
 function StationRow({ entry: { station, rank } }: { entry: RankedStation }) {

@@ -21,7 +21,7 @@ export function YearStrip({ place, teamId }: { place: Place; teamId: string }) {
   return (
     <section
       aria-labelledby="year-cloth"
-      className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-2 lg:grid-cols-[14.5rem_minmax(0,1fr)_17.5rem]"
+      className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-2 xl:grid-cols-[14.5rem_minmax(0,1fr)_17.5rem]"
     >
       <div>
         <h2 id="year-cloth" className="text-name">
@@ -81,7 +81,7 @@ function Legend({ ledger }: { ledger: NonNullable<Place['shown']>['ledger'] }) {
   const id = useId();
   const present = legendOrder.filter((hourClass) => ledger.classes[hourClass] > 0);
   return (
-    <ul className="grid content-start gap-x-4 gap-y-0.5 text-fine max-lg:grid-cols-2">
+    <ul className="grid content-start gap-x-4 gap-y-0.5 text-fine max-xl:grid-cols-3 max-sm:grid-cols-2">
       {present.map((hourClass) => (
         <li key={hourClass} className="flex items-baseline gap-2">
           <span className="translate-y-[2px]">
@@ -89,7 +89,7 @@ function Legend({ ledger }: { ledger: NonNullable<Place['shown']>['ledger'] }) {
           </span>
           <span>
             {hourClass === 'damp' ? dampWords(ledger) : classWords[hourClass]}
-            <span className="text-soft max-lg:hidden">, {classMeaning[hourClass]}</span>
+            <span className="text-soft max-xl:hidden">, {classMeaning[hourClass]}</span>
           </span>
         </li>
       ))}

@@ -2,12 +2,15 @@ import type { WeatherFile } from '../../contract/weather.ts';
 import { StatusMark } from './status-mark.tsx';
 import { statusWords } from './weather-words.ts';
 
-const steps = ['received', 'reading', 'reducing', 'storing'] as const;
+const allSteps = ['received', 'reading', 'reducing', 'storing'] as const;
+/** A refused file is not reduced, and nothing of it but its findings is stored. */
+const refusedSteps = ['received', 'reading'] as const;
 
 /** The road of a file from arrival to its status, with how far it has come. */
 export function ReadingSteps({ file }: { file: WeatherFile }) {
+  const steps = file.status === 'refused' ? refusedSteps : allSteps;
   const isEnded = file.status !== 'reading';
-  const at = file.step === null ? 0 : steps.indexOf(file.step);
+  const at = file.step === null ? 0 : allSteps.indexOf(file.step);
   return (
     <ol className="flex flex-wrap items-center gap-x-2.5 text-fine" aria-label="Steps of reading">
       {steps.map((step, index) => {

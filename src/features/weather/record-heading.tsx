@@ -8,7 +8,7 @@ import { mayChangeWeather, recordTitle } from './weather-words.ts';
 
 /** Name, place and provenance of a weather file. */
 export function RecordHeading({ record }: { record: WeatherFileRecord }) {
-  const { teamId, role, invented } = useTeam();
+  const { teamId, role } = useTeam();
   const { file, acceptedBy } = record;
   const { station } = file;
   const original = urlOf(getOriginal, { params: { teamId, fileId: file.id }, query: {} });
@@ -26,7 +26,6 @@ export function RecordHeading({ record }: { record: WeatherFileRecord }) {
         <p className="mt-1.5">
           {placeWords(station)}
           {file.completePct === null ? '' : ` Complete ${share(file.completePct)}.`}
-          {invented ? ' Invented place and weather.' : ''}
         </p>
       ) : null}
       <p className="mt-1 flex flex-wrap items-center gap-x-1.5 text-fine text-soft">

@@ -86,13 +86,16 @@ export function UploadList({ teamId, items }: { teamId: string; items: readonly 
   );
   if (uploads.length === 0) return null;
   const waiting = uploads.filter(({ state }) => state === 'waiting' || state === 'sending').length;
+  const sent = uploads.filter(({ state }) => state === 'sent').length;
   return (
     <section aria-label="Uploads" className="border-y border-line bg-paper px-4 py-2.5">
       <div className="flex items-baseline justify-between gap-4">
-        <h2 className="text-lead" role="status">
-          {waiting > 0
-            ? `Sending ${plural(waiting, 'file')}. You can leave this page.`
-            : `${plural(uploads.length, 'file')} sent`}
+        <h2 className="text-lead">
+          <span role="status">
+            {waiting > 0
+              ? `Sending ${plural(waiting, 'file')}. You can leave this page.`
+              : `${plural(sent, 'file')} sent`}
+          </span>
         </h2>
         <Button look="quiet" onClick={() => uploadQueue.clearEnded()}>
           Clear the list

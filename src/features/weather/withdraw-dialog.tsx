@@ -1,5 +1,5 @@
 import { useMutation } from '@tanstack/react-query';
-import { type FormEvent, useState } from 'react';
+import { type FormEvent, useRef, useState } from 'react';
 import { type WeatherFile, withdrawWeatherFile } from '../../contract/weather.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';
@@ -20,6 +20,7 @@ interface WithdrawDialogProps {
 /** Asks why a file is withdrawn, and says what follows. */
 export function WithdrawDialog({ file, isOpen, onClose, onChanged }: WithdrawDialogProps) {
   const { teamId } = useTeam();
+  const input = useRef<HTMLInputElement>(null);
   const [reason, setReason] = useState('');
   const [problem, setProblem] = useState<string | undefined>();
   const withdraw = useMutation({
@@ -34,6 +35,7 @@ export function WithdrawDialog({ file, isOpen, onClose, onChanged }: WithdrawDia
     const parsed = withdrawWeatherFile.body.schema.safeParse({ reason });
     setProblem(parsed.success ? undefined : problemsOfIssues(parsed.error.issues).fields.reason);
     if (parsed.success) withdraw.mutate(parsed.data);
+    else input.current?.focus();
   };
   return (
     <Dialog isOpen={isOpen} onClose={onClose} title="Withdraw this weather file">
@@ -54,6 +56,7 @@ export function WithdrawDialog({ file, isOpen, onClose, onChanged }: WithdrawDia
           onChange={setReason}
           problem={problem}
           hint="Kept with the file for those who ask later."
+          inputRef={input}
           autoFocus
         />
         <div className="flex justify-end gap-2">

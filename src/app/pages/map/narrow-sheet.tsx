@@ -17,7 +17,7 @@ export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
   };
   return (
     <div className="relative min-h-[30rem] flex-1">
-      <div className="absolute inset-x-0 top-0" style={{ bottom: PEEK_PX - 10 }}>
+      <div className="absolute inset-x-0 top-0" style={{ bottom: PEEK_PX }}>
         <SheetMap
           stations={map.stations}
           chosenId={chosenId}
