@@ -21,13 +21,13 @@ export const classPaint: Readonly<Record<HourClass, ClassPaint>> = {
   missing: { base: '#fbf9f3', thread: '#5d6a66', weave: 'hatch' },
   idle: flat('#dcd8d0'),
   frozen: { base: '#cbcdce', thread: '#4c5759', weave: 'dots' },
-  damp: { base: '#65261a', thread: '#7d5420', weave: 'diagonal' },
+  damp: { base: '#6a291c', thread: '#7d5420', weave: 'diagonal' },
   air: flat('#bbcb9c'),
   direct: flat('#9cbe91'),
   indirect: flat('#92ac8d'),
   dewpoint: flat('#769f77'),
   twostage: flat('#6c8e76'),
-  short: { base: '#6f4a1c', thread: '#553715', weave: 'cross' },
+  short: { base: '#6f4a1c', thread: '#583a17', weave: 'cross' },
   beyond: flat('#8c3a26'),
 };
 
