@@ -27,3 +27,52 @@ export function stationList(page: Page): Locator {
 export function station(page: Page, name: string): Locator {
   return stationList(page).getByRole('option', { name });
 }
+
+/** Gives a file to the page as the browser's own choice of files would. */
+export async function uploadText(page: Page, file: { name: string; text: string }): Promise<void> {
+  const buffer = Buffer.from(file.text, 'utf8');
+  await page.locator('input[type="file"]').setInputFiles({ name: file.name, mimeType: 'text/plain', buffer });
+}
+
+/**
+ * From now on the page notes what the server tells it of the steps of reading, by a stream of its own, and every step that
+ * stands on the screen as the present one.
+ */
+export async function watchSteps(page: Page): Promise<{ seen(): Promise<{ told: string[]; shown: string[] }> }> {
+  const teamId = /teams\/([0-9a-f-]{36})/.exec(page.url())?.[1] ?? '';
+  await page.evaluate(async (address) => {
+    const note = (kind: 'told' | 'shown', step: unknown) => {
+      const seen = (document.body.dataset[kind] ?? '').split(' ').filter(Boolean);
+      if (typeof step === 'string' && !seen.includes(step)) document.body.dataset[kind] = [...seen, step].join(' ');
+    };
+    new MutationObserver(() => {
+      for (const step of document.querySelectorAll('[aria-label="Steps of reading"] [aria-current="step"]')) {
+        note('shown', (step.textContent ?? '').match(/\p{L}+/u)?.[0]);
+      }
+    }).observe(document.body, {
+      subtree: true,
+      childList: true,
+      characterData: true,
+      attributeFilter: ['aria-current'],
+    });
+    const events = new EventSource(address);
+    events.onmessage = ({ data }) => note('told', JSON.parse(data).step);
+    await new Promise((resolve) => {
+      events.onopen = resolve;
+    });
+  }, `/api/teams/${teamId}/events`);
+  return {
+    seen: () =>
+      page.evaluate(() => {
+        const words = (kind: 'told' | 'shown') => (document.body.dataset[kind] ?? '').split(' ').filter(Boolean);
+        return { told: words('told'), shown: words('shown') };
+      }),
+  };
+}
+
+/** The large figure of the chosen place; NaN while there is none. */
+export async function scoreShown(page: Page): Promise<number> {
+  const block = page.getByRole('region', { name: 'Chosen place' }).getByText(/^\d+\s*of 100$/);
+  if ((await block.count()) === 0) return Number.NaN;
+  return Number.parseInt((await block.first().textContent()) ?? '', 10);
+}
