@@ -42,14 +42,7 @@ const UNIFORM_FLAGS = '?9?9?9?9E0?9?9?9?9?9?9?9?9?9?9?9?9?9?9?9*9*9?9?9?9';
 const REST = '0,0,292,0,0,0,0,0,0,0,110,1.5,0,0,16.0,77777,9,999999999,150,0.0470,0,88,0.200,0.0,1.0';
 
 /** A dry, clear climate: dry bulb 9 to 41 °C, dew point 4 to 12 °C, pressure near 97,300 Pa. */
-export function plainHour({
-  slot,
-  hour,
-}: EpwDate): Required<Pick<EpwHour, 'dryBulbC' | 'dewPointC' | 'pressurePa'>> & {
-  dryBulbC: number;
-  dewPointC: number;
-  pressurePa: number;
-} {
+export function plainHour({ slot, hour }: EpwDate): { dryBulbC: number; dewPointC: number; pressurePa: number } {
   const season = Math.cos((2 * Math.PI * (slot / 24 - 200)) / 365);
   const day = Math.cos((2 * Math.PI * (hour - 15)) / 24);
   return {
@@ -87,13 +80,25 @@ export function epwLines(options: EpwOptions = {}): string[] {
     `COMMENTS 2,${options.comments?.[1] ?? ''}`,
     `DATA PERIODS,${options.dataPeriods ?? `1,${recordsPerHour},Data,Sunday, 1/ 1,12/31`}`,
   ];
+  const plain = recordsPerHour === 1 ? plainRows(slots) : null;
   for (const date of epwDates(slots)) {
+    const hour = options.hour?.(date);
     for (let record = 1; record <= recordsPerHour; record++) {
       const minute = recordsPerHour === 1 ? 0 : (60 / recordsPerHour) * record;
-      lines.push(epwRow(date, { minute, ...options.hour?.(date) }));
+      const ready = hour === undefined || Object.keys(hour).length === 0 ? plain?.[date.slot] : undefined;
+      lines.push(ready ?? epwRow(date, { minute, ...hour }));
     }
   }
   return lines;
+}
+
+const plainRowsBySlots = new Map<number, readonly string[]>();
+
+/** The rows of the default weather, made once. */
+function plainRows(slots: number): readonly string[] {
+  const rows = plainRowsBySlots.get(slots) ?? epwDates(slots).map((date) => epwRow(date));
+  plainRowsBySlots.set(slots, rows);
+  return rows;
 }
 
 /** One data record. */

@@ -15,30 +15,31 @@ export interface FindingInput {
   readonly message: () => string;
 }
 
-interface Overflow {
+/** What there is of one code and severity: how many are listed, and what came after them. */
+interface Tally {
   readonly code: FindingCode;
   readonly severity: Severity;
-  readonly line: number | null;
-  lastLine: number | null;
+  listed: number;
+  /** Places beyond the listed ones, their hours or rows, and where the first and the last stand. */
   places: number;
   count: number;
+  line: number | null;
+  lastLine: number | null;
 }
 
 /** Collects every finding and question of one file, so that all faults are told at once. */
 export class FindingList {
   readonly #findings: Finding[] = [];
   readonly #asks: Ask[] = [];
-  readonly #listed = new Map<string, number>();
-  readonly #overflows = new Map<string, Overflow>();
+  readonly #tallies = new Map<FindingCode, Tally[]>();
 
   /** Adds a finding; beyond the first 100 of a code and severity only the count grows. */
   add(input: FindingInput): void {
+    const tally = this.#tallyOf(input.code, input.severity);
     const line = input.line || null;
     const lastLine = input.lastLine || line;
-    const key = `${input.code} ${input.severity}`;
-    const listed = (this.#listed.get(key) ?? 0) + 1;
-    this.#listed.set(key, listed);
-    if (listed <= LISTED) {
+    if (tally.listed < LISTED) {
+      tally.listed++;
       const { code, severity } = input;
       const column = input.column?.() ?? null;
       this.#findings.push({
@@ -52,15 +53,18 @@ export class FindingList {
       });
       return;
     }
-    const overflow = this.#overflows.get(key);
-    if (overflow === undefined) {
-      const { code, severity } = input;
-      this.#overflows.set(key, { code, severity, line, lastLine, places: 1, count: input.count ?? 1 });
-      return;
-    }
-    overflow.lastLine = lastLine;
-    overflow.places += 1;
-    overflow.count += input.count ?? 1;
+    if (tally.places === 0) tally.line = line;
+    tally.places++;
+    tally.count += input.count ?? 1;
+    tally.lastLine = lastLine;
+  }
+
+  #tallyOf(code: FindingCode, severity: Severity): Tally {
+    const ofCode = this.#tallies.get(code) ?? [];
+    for (const tally of ofCode) if (tally.severity === severity) return tally;
+    const tally = { code, severity, listed: 0, places: 0, count: 0, line: null, lastLine: null };
+    this.#tallies.set(code, [...ofCode, tally]);
+    return tally;
   }
 
   /** Adds a question that a person must answer, with the finding that raises it. */
@@ -79,24 +83,26 @@ export class FindingList {
 
   /** Findings in the order of the file: those of the whole file first, then by line. */
   inOrder(): readonly Finding[] {
-    const rest = [...this.#overflows.values()].map((overflow) => ({
-      code: overflow.code,
-      severity: overflow.severity,
-      line: overflow.line,
-      column: null,
-      lastLine: overflow.lastLine,
-      count: overflow.count,
-      message: restSentence(overflow),
-    }));
+    const rest = [...this.#tallies.values()]
+      .flat()
+      .filter(({ places }) => places > 0)
+      .map((tally) => ({
+        code: tally.code,
+        severity: tally.severity,
+        line: tally.line,
+        column: null,
+        lastLine: tally.lastLine,
+        count: tally.count,
+        message: restSentence(tally),
+      }));
     return [...this.#findings, ...rest].sort((a, b) => (a.line ?? 0) - (b.line ?? 0));
   }
 }
 
-function restSentence(overflow: Overflow): string {
-  const places = whole(overflow.places);
-  const upTo = overflow.lastLine === null ? '' : `, the last on line ${overflow.lastLine}`;
-  const more = overflow.places === 1 ? 'place has the same fault' : 'places have the same fault';
-  return `${places} more ${more} (${overflow.code})${upTo}.`;
+function restSentence(tally: Tally): string {
+  const upTo = tally.lastLine === null ? '' : `, the last on line ${tally.lastLine}`;
+  const more = tally.places === 1 ? 'place has the same fault' : 'places have the same fault';
+  return `${whole(tally.places)} more ${more} (${tally.code})${upTo}.`;
 }
 
 /** A whole number as people read it: 8,760. */

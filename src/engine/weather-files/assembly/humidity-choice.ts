@@ -17,6 +17,8 @@ const DISAGREES_POINTS = 5;
 const NORMAL_SHARE = 0.02;
 const STOP_SHARE = 0.5;
 const NEARLY_ALL = 0.98;
+/** Ours: in the three surveyed files with such a column the mean distance from the wet bulb was 0.4 to 0.8 K. */
+const FITS_WITHIN_K = 2;
 
 /**
  * Dew point where it is there and agrees with the relative humidity (5 points, 98 % of the hours). Up to half of the hours
@@ -134,11 +136,11 @@ function askWhatTheColumnHolds(steps: StepColumns, belowZero: BelowZeroPhase, fi
     fromWet += Math.abs(column - wetBulbC(dryBulbC, ratio, pressurePa));
     fromDew += Math.abs(column - dewPointOfState(dryBulbC, ratio, pressurePa));
   }
-  const isWet = compared > 0 && fromWet < fromDew;
+  const isWet = compared > 0 && fromWet < fromDew && fromWet <= FITS_WITHIN_K * compared;
   const off = (sum: number) => `${(sum / Math.max(1, compared)).toFixed(1)} K`;
   const evidence = isWet
     ? `The column fits the wet bulb to ${off(fromWet)} and the dew point only to ${off(fromDew)}: it seems to hold the wet bulb.`
-    : `The column does not fit the wet bulb better (${off(fromWet)}) than the dew point (${off(fromDew)}).`;
+    : `The column fits neither the dew point (${off(fromDew)} off) nor the wet bulb (${off(fromWet)} off).`;
   findings.ask('dew-is-wet-bulb', {
     count: compared,
     message: () =>

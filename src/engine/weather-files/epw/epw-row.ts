@@ -3,7 +3,7 @@ import { daysInMonth, monthNames } from '../../reduction/calendar.ts';
 import type { FindingList } from '../finding-list.ts';
 import { textBetween } from '../text/decode-text.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
-import { BLANK, NOT_A_NUMBER, numberField, quoted } from '../text/number-field.ts';
+import { BLANK, numberField, quoted } from '../text/number-field.ts';
 
 const COMMA = 0x2c;
 export const NEEDED_FIELDS = 10;
@@ -34,6 +34,7 @@ const PRESSURE = 9;
 
 /** Words that stand for a missing value. */
 const MISSING_WORDS = new Set(['na', 'nan', '-', 'n/a', 'null']);
+const LONGEST_MISSING_FIELD = 12;
 
 /** Where the fields of the present line begin; the next begins one byte after the comma. */
 export interface FieldBounds {
@@ -146,11 +147,13 @@ function readValue(cursor: LineCursor, bounds: FieldBounds, index: number, findi
   const value = numberField(cursor.text, startOf(bounds, index), endOf(bounds, index));
   if (typeof value === 'number') return value;
   if (value === BLANK) return Number.NaN;
-  const word = fieldText(cursor, bounds, index);
-  if (value === NOT_A_NUMBER && !MISSING_WORDS.has(word.trim().toLowerCase())) {
-    tellNotANumber(cursor, bounds, index, findings);
-  }
+  if (!saysMissing(cursor, bounds, index)) tellNotANumber(cursor, bounds, index, findings);
   return Number.NaN;
+}
+
+function saysMissing(cursor: LineCursor, bounds: FieldBounds, index: number): boolean {
+  const short = endOf(bounds, index) - startOf(bounds, index) <= LONGEST_MISSING_FIELD;
+  return short && MISSING_WORDS.has(fieldText(cursor, bounds, index).trim().toLowerCase());
 }
 
 /** First bytes of the source flags: letter and digit of dry bulb, dew point and relative humidity. */

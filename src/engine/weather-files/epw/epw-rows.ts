@@ -43,8 +43,10 @@ export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows 
     longRows: 0,
     firstLongLine: 0,
   };
+  let records = 0;
   while (cursor.next()) {
-    if (progress.rows.lines.length >= MOST_ROWS) {
+    records++;
+    if (records > MOST_ROWS) {
       tellTooMany(cursor, findings);
       break;
     }

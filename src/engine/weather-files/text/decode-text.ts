@@ -152,7 +152,7 @@ function writeUtf8(out: Uint8Array, at: number, value: number): number {
     return at + 1;
   }
   const tail = value < 0x800 ? 1 : value < 0x10000 ? 2 : 3;
-  out[at] = ((0xf00 >> tail) & 0xff) | (value >> (6 * tail));
+  out[at] = ((0xff << (7 - tail)) & 0xff) | (value >> (6 * tail));
   for (let next = 1; next <= tail; next++) out[at + next] = 0x80 | ((value >> (6 * (tail - next))) & 0x3f);
   return at + tail + 1;
 }

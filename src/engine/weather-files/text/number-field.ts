@@ -52,7 +52,8 @@ export function numberField(
 }
 
 function uncommonNumber(text: DecodedText, from: number, to: number): number | typeof NOT_A_NUMBER {
-  if (to - from > LONGEST) return NOT_A_NUMBER;
+  const first = text.bytes[from] ?? 0;
+  if (to - from > LONGEST || first > NINE || first < PLUS) return NOT_A_NUMBER;
   const word = textBetween(text, from, to);
   const value = NUMBER.test(word) ? Number(word) : Number.NaN;
   return Number.isFinite(value) ? value : NOT_A_NUMBER;
