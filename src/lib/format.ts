@@ -88,9 +88,10 @@ export function waitingTime(seconds: number): string {
   return plural(Math.ceil(seconds / 60), 'minute');
 }
 
-/** Ends a sentence that was written without its full stop. */
+/** Ends a sentence that was written without its full stop, and keeps its figures with their units. */
 export function sentence(text: string): string {
-  return /[.!?]$/.test(text) ? text : `${text}.`;
+  const held = text.replace(/(\d) (?=%|°C)/g, `$1${NO_BREAK}`);
+  return /[.!?]$/.test(held) ? held : `${held}.`;
 }
 
 export function plural(count: number, noun: string, many = `${noun}s`): string {

@@ -22,7 +22,9 @@ export function TextField({
   ...rest
 }: TextFieldProps) {
   const id = useId();
-  const notes = [hint ? `${id}-hint` : null, problem ? `${id}-problem` : null].filter((note) => note !== null);
+  const notes = [hint && !problem ? `${id}-hint` : null, problem ? `${id}-problem` : null].filter(
+    (note) => note !== null,
+  );
   return (
     <div className={className}>
       <label htmlFor={id} className="block text-fine font-semibold text-soft mb-1">
@@ -40,7 +42,7 @@ export function TextField({
           problem ? 'border-madder' : 'border-[#918a78]'
         }`}
       />
-      {hint ? (
+      {hint && !problem ? (
         <p id={`${id}-hint`} className="mt-1 text-fine text-soft">
           {hint}
         </p>

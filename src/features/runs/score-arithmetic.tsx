@@ -1,5 +1,6 @@
 import type { Place, ScorePart } from '../../contract/runs.ts';
 import { number, sensible } from '../../lib/format.ts';
+import { ScrollInside } from '../../ui/scroll-inside.tsx';
 
 type Shown = NonNullable<Place['shown']>;
 
@@ -12,7 +13,7 @@ export function ScoreArithmetic({ shown }: { shown: Shown }) {
       <h2 id="arithmetic" className="mb-1 text-name">
         How the score is made
       </h2>
-      <div className="scroll-inside">
+      <ScrollInside label="Score arithmetic, scrolls sideways">
         <table className="ruled min-w-[36rem]">
           <caption className="sr-only">Score arithmetic: each component, its anchors, weight and points</caption>
           <thead>
@@ -53,7 +54,7 @@ export function ScoreArithmetic({ shown }: { shown: Shown }) {
             </tr>
           </tfoot>
         </table>
-      </div>
+      </ScrollInside>
       <p className="mt-1.5 max-w-[70ch] text-fine text-soft">
         Scaled = 100 × (found − 0 at) / (100 at − 0 at), held to 0 and 100. Points = scaled × weight / 100. Anchors and
         weights belong to the brief.

@@ -3,6 +3,7 @@ import { inkOn } from '../../charts/ink-on.ts';
 import { RAMP_GRADIENT, rampColour } from '../../charts/ramp.ts';
 import type { YearFacts } from '../../contract/weather.ts';
 import { hours, number, share } from '../../lib/format.ts';
+import { ScrollInside } from '../../ui/scroll-inside.tsx';
 
 const THRESHOLDS_K = [3, 6, 9, 12, 15] as const;
 const HOURS = Array.from({ length: 24 }, (_, hour) => hour + 1);
@@ -22,7 +23,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
         <Thresholds facts={facts} />
       </div>
       <h3 className="mb-1">Mean depression by month and hour of day, K</h3>
-      <div className="scroll-inside">
+      <ScrollInside label="Mean depression, scrolls sideways">
         <table className="w-full min-w-[58rem] table-fixed border-collapse text-center text-fine">
           <caption className="sr-only">
             Mean wet-bulb depression in kelvin by month and hour ending in local standard time, with the share of hours
@@ -57,7 +58,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
             ))}
           </tbody>
         </table>
-      </div>
+      </ScrollInside>
       <div className="mt-2 flex items-center gap-2 text-fine text-soft">
         <span>0</span>
         <span

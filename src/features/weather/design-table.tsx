@@ -1,5 +1,6 @@
 import type { YearFacts } from '../../contract/weather.ts';
 import { number, percent } from '../../lib/format.ts';
+import { ScrollInside } from '../../ui/scroll-inside.tsx';
 
 const columns = [
   { key: 'dryBulb', title: 'Dry bulb', coincident: 'with wet bulb' },
@@ -19,7 +20,7 @@ export function DesignTable({ design, isTypical }: DesignTableProps) {
       <h2 id="design-values" className="mb-1 text-name">
         Design values of this year
       </h2>
-      <div className="scroll-inside">
+      <ScrollInside label="Design values, scrolls sideways">
         <table className="ruled min-w-[34rem]">
           <caption className="sr-only">Temperatures in °C that are passed in a share of the hours</caption>
           <thead>
@@ -54,7 +55,7 @@ export function DesignTable({ design, isTypical }: DesignTableProps) {
             ))}
           </tbody>
         </table>
-      </div>
+      </ScrollInside>
       <p className="mt-2 max-w-[70ch] text-fine text-soft">
         {isTypical
           ? 'A typical year hides extremes. Do not size plant from these values.'

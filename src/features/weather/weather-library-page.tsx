@@ -30,7 +30,7 @@ export function WeatherLibraryPage() {
         <div>
           <h1 className="text-title">Weather files</h1>
           <p className="mt-1 text-soft">
-            {library.data
+            {library.data && !isEmpty
               ? `${plural(library.data.total, 'file')}, newest first`
               : 'Hourly years, as they were uploaded'}
           </p>

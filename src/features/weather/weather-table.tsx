@@ -2,12 +2,13 @@ import { Link } from 'react-router-dom';
 import type { WeatherFile } from '../../contract/weather.ts';
 import { moment, share } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
+import { ScrollInside } from '../../ui/scroll-inside.tsx';
 import { StatusMark } from './status-mark.tsx';
 import { statusWords, yearWords } from './weather-words.ts';
 
 export function WeatherTable({ teamId, items }: { teamId: string; items: readonly WeatherFile[] }) {
   return (
-    <div className="scroll-inside">
+    <ScrollInside label="Weather files, scrolls sideways">
       <table className="ruled min-w-[54rem]">
         <caption className="sr-only">Weather files of the team, newest first</caption>
         <thead>
@@ -50,6 +51,6 @@ export function WeatherTable({ teamId, items }: { teamId: string; items: readonl
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollInside>
   );
 }

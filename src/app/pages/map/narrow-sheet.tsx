@@ -25,7 +25,7 @@ export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
           legend={<ScoreLegend stations={map.stations} />}
         />
       </div>
-      <BottomSheet label={chosenId === null ? 'Brief and stations' : 'Chosen place'} step={step} onStep={setStep}>
+      <BottomSheet label={chosenId === null ? 'Stations panel' : 'Place panel'} step={step} onStep={setStep}>
         {chosenId === null ? (
           <div className="grid gap-4">
             <BriefNote map={map} />
@@ -34,6 +34,7 @@ export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
         ) : (
           <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
             <div>
+              <h1 className="sr-only">{map.brief.name}</h1>
               <Button look="quiet" className="-mt-1 text-fine" onClick={() => onChoose(null)}>
                 All stations
               </Button>
