@@ -71,7 +71,7 @@ export async function watchedPage(
     if (reason !== 'net::ERR_ABORTED') faults.push(`failed: ${request.method()} ${request.url()}: ${reason}`);
   });
   const page = await context.newPage();
-  page.setDefaultTimeout(20_000);
+  page.setDefaultTimeout(45_000);
 
   return {
     context,
