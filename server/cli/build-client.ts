@@ -59,6 +59,15 @@ export async function requireClient({ rootDir, signal }: { rootDir: string; sign
   return place.dir;
 }
 
+function moveAside(folder: string, to: string): void {
+  try {
+    if (existsSync(folder)) renameSync(folder, to);
+  } catch {
+    // A folder that came with a container's image cannot be renamed, only removed.
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
+
 /**
  * Builds the client, if need be. Made beside its place and moved there when complete: an interrupted build leaves what was
  * there, and a server that reads the old one never sees half of the new.
@@ -75,7 +84,7 @@ export async function buildClient(rootDir: string): Promise<{ readonly dir: stri
   try {
     await build({ root: rootDir, logLevel: 'warn', build: { outDir: fresh, emptyOutDir: true } });
     rmSync(place.stampFile, { force: true });
-    if (existsSync(place.dir)) renameSync(place.dir, old);
+    moveAside(place.dir, old);
     renameSync(fresh, place.dir);
     writeFileSync(place.stampFile, place.stamp);
     return { dir: place.dir };
