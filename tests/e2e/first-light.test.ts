@@ -1,7 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, beforeEach, expect, test } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, expect, test, vi } from 'vitest';
 import { demoWeatherFile } from '../../data/demo/demo-weather-file.ts';
 import { sampleStation, sampleUpload } from '../../data/demo/sample-upload.ts';
 import { demoStations } from '../../data/demo/stations.ts';
@@ -18,6 +18,8 @@ const STEPS = ['received', 'reading', 'reducing', 'storing'];
 const PLACE = 'Kite Hollow';
 /** Long enough for a machine that is busy with other things; nothing waits this long on an idle one. */
 const SOON = { timeout: 45_000 };
+
+vi.setConfig({ testTimeout: 300_000 });
 
 let product: RunningProduct;
 let browser: Browser;

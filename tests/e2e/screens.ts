@@ -27,7 +27,7 @@ if (engineer === undefined) throw new Error(`there is no engineer in ${accountsF
 const browser = await launchBrowser();
 try {
   for (const viewport of VIEWPORTS) {
-    const watched = await watchedPage(browser, { origin, viewport });
+    const watched = await watchedPage(browser, { origin, viewport, timeZone: 'Africa/Johannesburg' });
     const { page } = watched;
     const take = (name: string) => takePicture(page, path.join(folder, `${name}-${viewport.width}.png`));
     await page.goto('/');
@@ -62,6 +62,8 @@ async function choosePlace(page: Page, name: string): Promise<void> {
 }
 
 async function takePicture(page: Page, file: string): Promise<void> {
+  // Nothing is marked because the pointer happens to rest on it.
+  await page.mouse.move(1, 1);
   await page.evaluate(() => document.fonts.ready.then(() => undefined));
   await page.screenshot({ path: file });
   console.log(file);

@@ -46,14 +46,14 @@ export function launchBrowser(): Promise<Browser> {
  */
 export async function watchedPage(
   browser: Browser,
-  options: { origin: string; viewport: Viewport },
+  options: { origin: string; viewport: Viewport; timeZone?: string },
 ): Promise<WatchedPage> {
   const context = await browser.newContext({
     baseURL: options.origin,
     viewport: options.viewport,
     reducedMotion: 'reduce',
     locale: 'en-GB',
-    timezoneId: 'Pacific/Chatham',
+    timezoneId: options.timeZone ?? 'Pacific/Chatham',
   });
   let faults: string[] = [];
   context.on('console', (message) => {
