@@ -9,7 +9,12 @@ const CheckFile = z.object({
 /** Every check of data/checks, whatever its file. */
 export const publishedChecks = readdirSync(folder)
   .filter((name) => name.endsWith('.json'))
-  .flatMap((name) => CheckFile.parse(JSON.parse(readFileSync(new URL(name, folder), 'utf8'))).checks);
+  .flatMap((file) =>
+    CheckFile.parse(JSON.parse(readFileSync(new URL(file, folder), 'utf8'))).checks.map((check) => ({
+      ...check,
+      file,
+    })),
+  );
 
 /** The cases of a check, each of the shape that its test wants. */
 export function casesOf<Shape extends z.core.$ZodLooseShape>(id: string, shape: Shape) {

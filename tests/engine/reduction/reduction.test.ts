@@ -101,7 +101,7 @@ describe('packed columns', () => {
         }
       }
     });
-    fc.assert(property, propertySettings(40));
+    fc.assert(property, propertySettings(10));
   });
 
   const hour0 = { dryBulbC: 0, humidityRatio: 0, pressurePa: 0 };
