@@ -3,7 +3,7 @@ import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, statSync } fr
 import os from 'node:os';
 import path from 'node:path';
 import pg from 'pg';
-import { afterAll, beforeAll, expect, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { clusterStatus, SUPERUSER, startCluster, stopCluster } from '../../../server/cli/cluster.ts';
 import { databaseUrl } from '../../../server/db/prepare-database.ts';
 
@@ -68,24 +68,42 @@ it('stops, stops again without complaint, and starts again with what was stored'
   expect(await ask('select answer from kept')).toBe(42);
 });
 
-it.skipIf(process.getuid?.() !== 0)(
-  "stands outside a home that the server's user cannot reach, one place per home, and is found there again",
-  async () => {
-    const closed = mkdtempSync(path.join(os.tmpdir(), 'muslin-closed-')); // mode 0700
-    const inner = path.join(closed, 'home');
+describe.skipIf(process.getuid?.() !== 0)("a home that the server's user cannot reach", () => {
+  let closed: string;
+  let inner: string;
+  let folders: string[];
+  beforeEach(() => {
+    closed = mkdtempSync(path.join(os.tmpdir(), 'muslin-closed-')); // mode 0700
+    inner = path.join(closed, 'home');
     mkdirSync(inner);
+    folders = [];
+  });
+  afterEach(async () => {
+    await stopCluster(inner);
+    folders.push(readFileSync(path.join(inner, 'cluster'), 'utf8').trim());
+    for (const one of [...folders, closed]) rmSync(one, { recursive: true, force: true });
+  });
+
+  it('has its cluster outside, finds it again, and leaves it to no other home at the same path', async () => {
     const cluster = await startCluster({ homeDir: inner, superuserPassword, throwaway: true });
-    try {
-      expect(cluster.folder).toMatch(/^\/var\/lib\/muslin\/[0-9a-f]{16}$/);
-      expect(statSync(cluster.folder).mode & 0o077).toBe(0);
-      expect(clusterStatus(inner)).toEqual({ state: 'running', port: cluster.port });
-    } finally {
-      await stopCluster(inner);
-      rmSync(cluster.folder, { recursive: true, force: true });
-      rmSync(closed, { recursive: true, force: true });
-    }
-  },
-);
+    folders.push(cluster.folder);
+    expect(cluster.folder).toMatch(/^\/var\/lib\/muslin\/[0-9a-f]{16}-[0-9a-f]{8}$/);
+    expect(statSync(cluster.folder).mode & 0o077).toBe(0);
+    expect(clusterStatus(inner)).toEqual({ state: 'running', port: cluster.port });
+    await stopCluster(inner);
+
+    rmSync(inner, { recursive: true });
+    mkdirSync(inner);
+    expect(clusterStatus(inner)).toEqual({ state: 'stopped' });
+    expect(readFileSync(path.join(inner, 'cluster'), 'utf8').trim()).not.toBe(cluster.folder);
+  });
+
+  it('is refused, not begun anew, when its cluster stands inside', () => {
+    mkdirSync(path.join(inner, 'pg'));
+    expect(() => clusterStatus(inner)).toThrow('can no longer be reached');
+    rmSync(path.join(inner, 'pg'), { recursive: true });
+  });
+});
 
 it('starts again after its server was killed', async () => {
   process.kill(serverPid(), 'SIGKILL');
