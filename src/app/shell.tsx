@@ -38,11 +38,11 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
       >
         Skip to the page
       </a>
-      <header className="no-print flex min-h-13 flex-wrap items-stretch gap-x-6 border-b border-line px-5 max-sm:px-4">
+      <header className="no-print flex min-h-13 flex-wrap items-stretch gap-x-6 border-b border-line px-5 max-sm:gap-x-4 max-sm:px-4">
         <Link to={paths.home} className="flex items-center no-underline" aria-label="Muslin, go to the map">
           <Wordmark />
         </Link>
-        <nav aria-label="Main" className="flex items-stretch gap-5">
+        <nav aria-label="Main" className="flex items-stretch gap-5 max-sm:gap-4">
           {programme ? (
             <TopLink to={paths.map.to({ teamId: team.teamId, programmeId: programme.id })}>Map</TopLink>
           ) : null}
@@ -120,13 +120,13 @@ function AccountMenu({ person, team, memberships }: Pick<ShellProps, 'person' | 
           {errorSentence(leave.error)}
         </p>
       ) : null}
-      <Suspense fallback={<span className="max-w-40 truncate">{person.name}</span>}>
+      <Suspense fallback={<span className="max-w-40 truncate max-sm:max-w-26">{person.name}</span>}>
         <Menu
           label={`Account of ${person.name}, ${roleWords[team.role].toLowerCase()}`}
           groups={groups}
           onChoose={(id) => (id === 'sign-out' ? leave.mutate() : navigate(id))}
         >
-          <span className="max-w-40 truncate">{person.name}</span>
+          <span className="max-w-40 truncate max-sm:max-w-26">{person.name}</span>
         </Menu>
       </Suspense>
     </>

@@ -12,7 +12,7 @@ export function SignedIn() {
   const session = useQuery(sessionQuery);
   const location = useLocation();
   if (session.isPending) return <Loading what="your session" />;
-  if (session.isError) {
+  if (session.isError && !session.data) {
     return (
       <main className="mx-auto max-w-xl p-6 pt-16">
         <Notice tone="wrong" live actions={<Button onClick={() => session.refetch()}>Try again</Button>}>

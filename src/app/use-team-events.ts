@@ -3,6 +3,7 @@ import { useEffect, useState } from 'react';
 import { getMap, getStationPlace } from '../contract/runs.ts';
 import { getWeatherFile, listWeatherFiles, type TeamEvent, watchTeam } from '../contract/weather.ts';
 import { type StreamState, subscribe } from '../lib/api-client.ts';
+import { sessionQuery } from '../lib/session-query.ts';
 
 /** Many events in a row (a batch of files, its runs) cause one look at the server, not one each. */
 const GATHER_MS = 300;
@@ -44,7 +45,9 @@ export function useTeamEvents(teamId: string | undefined): StreamState {
         },
         onState: (next) => {
           setState(next);
-          if (next === 'lost') wasLost = true;
+          if (next === 'lost' || next === 'refused') wasLost = true;
+          // Perhaps the session has ended: the answer leads to signing in.
+          if (next === 'refused') client.invalidateQueries({ queryKey: sessionQuery.queryKey });
           if (next === 'open' && wasLost) {
             wasLost = false;
             gather('weather-file');

@@ -77,11 +77,14 @@ export function uploadFiles<E extends Endpoint>(
   });
 }
 
-export type StreamState = 'connecting' | 'open' | 'lost';
+export type StreamState = 'connecting' | 'open' | 'lost' | 'refused';
 
 export interface SubscribeOptions<E extends Endpoint> {
   readonly onEvent: (event: AnswerOf<E>) => void;
-  /** `lost`: the stream is down and is being tried again; events may have been missed once it is `open` again. */
+  /**
+   * `lost`: the stream is down and is being tried again; events may have been missed once it is `open` again.
+   * `refused`: the server does not give it, as when the session has ended; it is tried again all the same.
+   */
   readonly onState?: (state: StreamState) => void;
   readonly signal: AbortSignal;
 }
@@ -101,9 +104,10 @@ export function subscribe<E extends Endpoint>(endpoint: E, input: InputOf<E>, op
       if (event !== null) options.onEvent(event);
     });
     source.addEventListener('error', () => {
-      options.onState?.('lost');
       // The browser retries a stream that broke; one that the server refused it gives up, so that is opened anew here.
-      if (source?.readyState === EventSource.CLOSED) timer = setTimeout(open, REOPEN_AFTER_MS);
+      const isRefused = source?.readyState === EventSource.CLOSED;
+      options.onState?.(isRefused ? 'refused' : 'lost');
+      if (isRefused) timer = setTimeout(open, REOPEN_AFTER_MS);
     });
   };
   options.signal.addEventListener('abort', () => {

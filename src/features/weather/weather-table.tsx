@@ -9,7 +9,7 @@ import { statusWords, yearWords } from './weather-words.ts';
 export function WeatherTable({ teamId, items }: { teamId: string; items: readonly WeatherFile[] }) {
   return (
     <ScrollInside label="Weather files, scrolls sideways">
-      <table className="ruled min-w-[54rem]">
+      <table className="ruled min-w-[54rem] max-sm:min-w-[46rem]">
         <caption className="sr-only">Weather files of the team, newest first</caption>
         <thead>
           <tr>
@@ -28,7 +28,7 @@ export function WeatherTable({ teamId, items }: { teamId: string; items: readonl
         <tbody>
           {items.map((file) => (
             <tr key={file.id}>
-              <th scope="row" className="w-[34%]">
+              <th scope="row" className="w-[34%] max-sm:w-44">
                 <Link to={paths.weatherFile.to(teamId, file.id)} className="font-medium">
                   {file.station?.name ?? file.name}
                 </Link>
