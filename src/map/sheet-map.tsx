@@ -53,6 +53,7 @@ export function SheetMap(props: SheetMapProps) {
   usePictures(map);
   useIdleMark(map, wrapper);
   const fitAll = useFit(map, props);
+  useChosenInView(map, props);
 
   const click = (event: MapLayerMouseEvent) => {
     const id = stationAt(event);
@@ -145,6 +146,18 @@ function useFit(map: maplibregl.Map | null, { stations, initialView }: SheetMapP
     map.fitBounds(toBounds(box), { ...FIT, animate: false });
   }, [map, box]);
   return box === null ? null : () => map?.fitBounds(toBounds(box), FIT);
+}
+
+/** A station chosen elsewhere (in the ranking, by its address) is brought into the frame; one that is in it moves nothing. */
+function useChosenInView(map: maplibregl.Map | null, { stations, chosenId }: SheetMapProps) {
+  const shownId = useRef<string | null>(null);
+  useEffect(() => {
+    const chosen = stations.find(({ id }) => id === chosenId);
+    if (map === null || chosen === undefined || shownId.current === chosen.id) return;
+    shownId.current = chosen.id;
+    const position: [number, number] = [chosen.longitude, chosen.latitude];
+    if (!map.getBounds().contains(position)) map.easeTo({ center: position });
+  }, [map, stations, chosenId]);
 }
 
 /** MapLibre itself turns flights into jumps for readers who want less motion; the fading of names is left to us. */
