@@ -58,6 +58,9 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
           <AccountMenu person={person} team={team} memberships={memberships} />
         </div>
       </header>
+      {team.invented ? (
+        <p className="hidden text-fine print:block">{team.teamName}, invented places and weather</p>
+      ) : null}
       <StreamNote stream={stream} />
       <main id="page" tabIndex={-1} className="flex min-h-0 flex-1 flex-col outline-none">
         {children}

@@ -1,4 +1,4 @@
-import { useQuery } from '@tanstack/react-query';
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import type { Place } from '../../../contract/runs.ts';
 import { LedgerPanel } from '../../../features/runs/ledger-panel.tsx';
 import { PlaceHeading, ScoreBlock } from '../../../features/runs/place-heading.tsx';
@@ -38,11 +38,20 @@ interface ChosenProps {
   readonly stationId: string;
 }
 
+/** The place before stays in view, pale, until the next one comes: choosing along the list moves nothing on the page. */
+function usePlace({ ids, stationId }: ChosenProps) {
+  return useQuery({ ...placeQuery(ids, stationId), placeholderData: keepPreviousData });
+}
+
 function ChosenMargin({ ids, stationId }: ChosenProps) {
-  const place = useQuery(placeQuery(ids, stationId));
+  const place = usePlace({ ids, stationId });
   if (place.data) {
     return (
-      <section aria-label="Chosen place" className="grid content-start gap-3">
+      <section
+        aria-label="Chosen place"
+        aria-busy={place.isPlaceholderData}
+        className={`grid content-start gap-3 ${place.isPlaceholderData ? 'opacity-50' : ''}`}
+      >
         <PlaceHeading place={place.data} teamId={ids.teamId} />
         <ScoreBlock place={place.data} />
         {place.data.shown ? <LedgerPanel ledger={place.data.shown.ledger} /> : null}
@@ -61,15 +70,15 @@ function ChosenMargin({ ids, stationId }: ChosenProps) {
 }
 
 function ChosenFoot({ ids, stationId }: ChosenProps) {
-  const { data: place } = useQuery(placeQuery(ids, stationId));
+  const { data: place, isPlaceholderData } = usePlace({ ids, stationId });
   if (!place?.shown) return null;
   return (
-    <>
-      <div className="border-line bg-paper lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
+    <div aria-busy={isPlaceholderData} className={isPlaceholderData ? 'opacity-50' : ''}>
+      <div className="border-line bg-paper max-lg:mb-5 lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
         <YearStrip place={place} teamId={ids.teamId} />
       </div>
       <PlaceNotes place={place} shown={place.shown} />
-    </>
+    </div>
   );
 }
 
