@@ -33,6 +33,9 @@ function notEpwSentence(first: string, line: number, name: string): string {
   if (COMPANION.test(name)) {
     return 'This is a companion of a weather file and holds no hours. Bring the .epw that stands beside it.';
   }
+  if (/^\s*"?Location Title/i.test(first)) {
+    return 'This is the spreadsheet form of an EPW, with a line of titles over each record. Bring the .epw itself.';
+  }
   if (/^\s*LOCATION[\s;|\t]/i.test(first)) {
     return `Line ${line} begins with LOCATION, but a comma must follow: the file seems to be saved with other separators. Save it with commas, or bring it anew from its source.`;
   }

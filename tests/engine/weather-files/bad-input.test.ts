@@ -39,6 +39,7 @@ describe('bad input is refused with a clear sentence and never throws', () => {
     ['a page of HTML', '<!DOCTYPE html>\n<html></html>\n', 'header', '“<!DOCTYPE html>”'],
     ['a table of another format', 'date,temperature\n2020-01-01,5\n', 'header', '“date,temperature”'],
     ['an EPW saved with semicolons', 'LOCATION;Field;-;\n', 'header', 'other separators'],
+    ['the spreadsheet form of an EPW', 'Location Title,Latitude {N+/S-}\n', 'header', 'spreadsheet form'],
     ['only a first line', 'LOCATION', 'header', '“LOCATION”'],
     ['a header cut short', 'LOCATION,Field,-,-,-,-,33,-111,-7,300\nDESIGN CONDITIONS,0\n', 'header', 'DATA PERIODS'],
   ] as const)('%s', (_name, text, code, words) => {

@@ -6,7 +6,7 @@ import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conven
 import type { BelowZeroPhase } from '../../psychrometrics/moist-air.ts';
 import { dayOfWeek, isLeapYear, slotOf } from '../../reduction/calendar.ts';
 import { type FindingList, whole } from '../finding-list.ts';
-import type { DeclaredStation, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
+import type { DeclaredStation, HourColumns, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
 import { belowZeroPhase } from './below-zero-phase.ts';
 import { tellCoverage, tellGaps, tellSourceFlags } from './coverage.ts';
 import { compareDesign, type PublishedDesign } from './design-check.ts';
@@ -42,46 +42,59 @@ const TOO_HOT_HOURS = 24;
 
 /** Tests, repairs and reduces to hours. Every fault found so far stands in `findings`; a refusal there refuses the file. */
 export function assembleYear(file: FileContents, findings: FindingList): WeatherFileReading {
-  const { format, rows, station } = file;
+  const { rows, station } = file;
   checkPlace(station, file.stationLine, findings);
   if (rows.lines.length === 0) {
     if (!findings.refused) tellNoRows(findings);
-    return { status: 'refused', format, station, findings: findings.inOrder() };
+    return refused(file, findings);
   }
+  // Rows that could not be read leave holes of their own, which are not told again as missing time.
+  const everyRowRead = !findings.refused;
   const year = actualYear(file, rows.lines.length);
   const calendar = matchCalendar({ ...file, sortable: year !== null }, findings);
-  tellRowCount(file, calendar, findings);
+  if (everyRowRead) tellRowCount(file, calendar, findings);
   tellLeapDay(file, calendar, year, findings);
   const steps = stepColumns({ rows, ...calendar });
   refuseWithoutTemperature(steps, findings);
-  if (findings.refused) return { status: 'refused', format, station, findings: findings.inOrder() };
+  if (findings.refused) return refused(file, findings);
 
   leaveOutImpossible(steps, findings);
   // Place of the statistical tests, in this order: step, straight line, persistence, spike (with zero fill, saw-tooth and
   // other climate). They take `steps` and write NaN; an hour that is missing by then is not tested again.
   settlePressure(steps, station.elevationM, findings);
   const humidity = settleHumidity(steps, findings);
-  if (humidity === null || findings.refused)
-    return { status: 'refused', format, station, findings: findings.inOrder() };
+  if (humidity === null || findings.refused) return refused(file, findings);
 
   const kindYear = actualYear(file, calendar.rowsRead);
   const { hours, gap, humidityPresent } = hourColumns({ steps, ...humidity, typical: kindYear === null });
   tellGaps(hours, gap, findings);
   tellCoverage({ hours, humidityPresent }, findings);
+  if (findings.refused) return refused(file, findings);
   if (file.sourceFlagsInformative !== null) {
     tellSourceFlags({ hours, informative: file.sourceFlagsInformative }, findings);
   }
   if (file.published !== null) compareDesign(hours, file.published, findings);
-  if (findings.refused) return { status: 'refused', format, station, findings: findings.inOrder() };
+  return usable(file, { ...humidity, hours, year: kindYear }, findings);
+}
+
+function refused({ format, station }: FileContents, findings: FindingList): WeatherFileReading {
+  return { status: 'refused', format, station, findings: findings.inOrder() };
+}
+
+function usable(
+  file: FileContents,
+  read: { hours: HourColumns; source: HumiditySource; belowZero: BelowZeroPhase; year: number | null },
+  findings: FindingList,
+): WeatherFileReading {
   return {
     status: findings.asks.length > 0 ? 'asks' : 'review',
-    format,
-    station,
-    kind: kindYear === null ? 'typical' : 'actual',
-    year: kindYear,
-    hours,
-    humidityFrom: humidity.source,
-    belowZero: humidity.belowZero,
+    format: file.format,
+    station: file.station,
+    kind: read.year === null ? 'typical' : 'actual',
+    year: read.year,
+    hours: read.hours,
+    humidityFrom: read.source,
+    belowZero: read.belowZero,
     findings: findings.inOrder(),
     asks: findings.asks,
     comments: file.comments,

@@ -1,5 +1,5 @@
 /** What is said about gaps, repairs and estimates once the hours stand. */
-import { monthNames, monthOfEachSlot } from '../../reduction/calendar.ts';
+import { monthNames, monthStartSlots } from '../../reduction/calendar.ts';
 import { dryBulbProvenance, hasRepair, humidityProvenance } from '../../reduction/hour-flags.ts';
 import { MONTH_COUNTS_FROM_PCT, MOST_REPAIRED_PCT } from '../../reduction/month-completeness.ts';
 import { type FindingList, hoursPhrase, whole } from '../finding-list.ts';
@@ -52,31 +52,16 @@ function isKnown(hours: HourColumns, slot: number): boolean {
 }
 
 /**
- * Tells months that do not count, a much repaired year and a much estimated one; refuses a file without one whole month.
+ * Tells months that do not count, and a much repaired year; refuses a file without one whole month.
  * @param input.humidityPresent 1 where an hour has a humidity, even one that waits for a pressure
  */
 export function tellCoverage(input: { hours: HourColumns; humidityPresent: Uint8Array }, findings: FindingList): void {
-  const { hours, humidityPresent } = input;
-  const slotCount = hours.dryBulbC.length;
-  const months = monthOfEachSlot(slotCount);
-  const present = new Float64Array(13);
-  const all = new Float64Array(13);
-  let repaired = 0;
-  let known = 0;
-  for (let slot = 0; slot < slotCount; slot++) {
-    const month = months[slot] ?? 0;
-    all[month] = (all[month] ?? 0) + 1;
-    if (Number.isNaN(hours.dryBulbC[slot]) || humidityPresent[slot] === 0) continue;
-    present[month] = (present[month] ?? 0) + 1;
-    known++;
-    const flags = hours.flags[slot] ?? 0;
-    if (hasRepair(flags)) repaired++;
-  }
-  const shares = monthNames.map((_name, index) => (100 * (present[index + 1] ?? 0)) / (all[index + 1] ?? 1));
-  const short = shares.flatMap((pct, index) =>
+  const { known, monthPct, repaired } = countPresent(input);
+  const slotCount = input.hours.flags.length;
+  const short = monthPct.flatMap((pct, index) =>
     pct < MONTH_COUNTS_FROM_PCT ? [`${monthNames[index]} (${Math.floor(pct)} %)`] : [],
   );
-  if (short.length === 12) {
+  if (short.length === monthPct.length) {
     findings.add({
       code: 'too-few-rows',
       severity: 'refuse',
@@ -96,6 +81,30 @@ export function tellCoverage(input: { hours: HourColumns; humidityPresent: Uint8
     });
   }
   tellRepaired((100 * repaired) / slotCount, repaired, findings);
+}
+
+/** Hours with dry bulb and humidity, those of them with a repaired value, and the share of each month, %. */
+function countPresent(input: { hours: HourColumns; humidityPresent: Uint8Array }): {
+  known: number;
+  repaired: number;
+  monthPct: readonly number[];
+} {
+  const { dryBulbC, flags } = input.hours;
+  const starts = monthStartSlots(flags.length);
+  let known = 0;
+  let repaired = 0;
+  const monthPct = monthNames.map((_name, month) => {
+    const [start = 0, end = 0] = [starts[month], starts[month + 1]];
+    let present = 0;
+    for (let slot = start; slot < end; slot++) {
+      if (Number.isNaN(dryBulbC[slot]) || input.humidityPresent[slot] === 0) continue;
+      present++;
+      if (hasRepair(flags[slot] ?? 0)) repaired++;
+    }
+    known += present;
+    return (100 * present) / (end - start);
+  });
+  return { known, repaired, monthPct };
 }
 
 function tellRepaired(pct: number, repaired: number, findings: FindingList): void {

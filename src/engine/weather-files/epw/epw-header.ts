@@ -36,6 +36,8 @@ interface Draft {
 
 /** More of a header line than this is not read. */
 const LONGEST_RECORD = 20_000;
+/** Year, month, day and hour. */
+const DATA_RECORD = /^\s*[+-]?\d+\s*,\s*\d+\s*,\s*\d+\s*,\s*\d+\s*,/;
 const LICENCE = /licen[cs]e|copyright|\(c\)|©|®|all rights|terms of use|redistribut|non-?commercial|permission/i;
 
 /** Reads up to DATA PERIODS, or to the first line that can only be data. */
@@ -52,7 +54,7 @@ export function readEpwHeader(cursor: LineCursor, findings: FindingList): EpwHea
   };
   while (!draft.complete && cursor.next()) {
     const record = cursor.string(LONGEST_RECORD);
-    if (/^\s*[+-]?\d+\s*,/.test(record)) {
+    if (DATA_RECORD.test(record)) {
       cursor.putBack();
       break;
     }
