@@ -135,6 +135,8 @@ async function startServer(place: Place, throwaway: boolean): Promise<number> {
     const start = ['-D', place.dataDir, '-l', place.logFile, '-w', '-t', '60', 'start'];
     const started = await program(place, 'pg_ctl', start, true);
     if (started.code === 0) return port;
+    // pg_ctl gives up waiting before a slow server gives up starting.
+    await program(place, 'pg_ctl', ['-D', place.dataDir, '-m', 'immediate', '-w', 'stop'], true);
     if (attempt === START_TRIES) {
       const log = existsSync(place.logFile) ? readFileSync(place.logFile, 'utf8').slice(-2000) : '';
       throw new CouldNotRun(`PostgreSQL did not start. The end of its log ${place.logFile}:\n${log}`);

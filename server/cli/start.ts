@@ -51,8 +51,8 @@ async function takePlace(start: Start): Promise<(address: string) => void> {
 async function startDatabase({ home, stops, log }: Start): Promise<string> {
   const { superuserPassword, ownerPassword, appPassword } = home.secrets;
   const options = { homeDir: home.dir, superuserPassword };
-  stops.push('PostgreSQL', () => stopCluster(home.dir));
   const cluster = await startCluster(options);
+  stops.push('PostgreSQL', () => stopCluster(home.dir));
   const watch = keepClusterRunning(cluster, { ...options, onTrouble: (words) => log.error({}, words) });
   stops.push('The watch over PostgreSQL', watch.stop);
   const superuser = { name: SUPERUSER, password: superuserPassword };
