@@ -110,6 +110,11 @@ export function whole(value: number): string {
   return value.toLocaleString('en-GB', { maximumFractionDigits: 0 });
 }
 
+/** "12 %", and "under 1 %" for what would round to nothing. */
+export function wholeShare(pct: number): string {
+  return pct < 0.5 ? 'under 1 %' : `${whole(pct)} %`;
+}
+
 /** "1 hour", "24 hours". */
 export function hoursPhrase(hours: number): string {
   return hours === 1 ? '1 hour' : `${whole(hours)} hours`;

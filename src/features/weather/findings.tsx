@@ -1,5 +1,4 @@
 import type { Ask, Finding, Severity } from '../../contract/weather.ts';
-import { number } from '../../lib/format.ts';
 import { SeverityMark } from './status-mark.tsx';
 import { severityOrder, severityTitle } from './weather-words.ts';
 
@@ -78,5 +77,5 @@ function rowsOf(severity: Severity, findings: readonly Finding[], asks: readonly
 
 function whereOf({ line, column }: Finding): string {
   if (line === null) return 'Whole file';
-  return column === null ? `Line ${number(line)}` : `Line ${number(line)}, column ${number(column)}`;
+  return column === null ? `Line ${line}` : `Line ${line}, column ${column}`;
 }

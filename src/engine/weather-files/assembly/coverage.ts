@@ -2,7 +2,7 @@
 import { monthNames, monthStartSlots } from '../../reduction/calendar.ts';
 import { dryBulbProvenance, hasRepair, humidityProvenance } from '../../reduction/hour-flags.ts';
 import { MONTH_COUNTS_FROM_PCT, MOST_REPAIRED_PCT } from '../../reduction/month-completeness.ts';
-import { type FindingList, hoursPhrase, whole } from '../finding-list.ts';
+import { type FindingList, hoursPhrase, whole, wholeShare } from '../finding-list.ts';
 import type { HourColumns } from '../weather-file-reading.ts';
 import { forEachRun, linesOfRun } from './step-columns.ts';
 
@@ -114,7 +114,7 @@ function tellRepaired(pct: number, repaired: number, findings: FindingList): voi
     code: 'much-repaired',
     severity: 'doubt',
     count: repaired,
-    message: () => `${whole(repaired)} hours, ${pct.toFixed(0)} % of the year, hold a repaired value.${withheld}`,
+    message: () => `${whole(repaired)} hours, ${wholeShare(pct)} of the year, hold a repaired value.${withheld}`,
   });
 }
 
@@ -140,6 +140,6 @@ export function tellSourceFlags(input: { hours: HourColumns; informative: boolea
     severity: pct >= ESTIMATED_DOUBT_PCT ? 'doubt' : 'note',
     count: estimated,
     message: () =>
-      `By the source's own flags dry bulb or humidity is interpolated or modelled in ${whole(estimated)} hours, ${pct.toFixed(0)} % of the year.`,
+      `By the source's own flags dry bulb or humidity is interpolated or modelled in ${whole(estimated)} hours, ${wholeShare(pct)} of the year.`,
   });
 }
