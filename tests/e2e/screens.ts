@@ -2,7 +2,7 @@
  * Takes pictures of a running product that holds the demo: sign-in, map with a place, weather list and record, each at three widths.
  * `node --import tsx tests/e2e/screens.ts ADDRESS DEMO_ACCOUNTS_FILE FOLDER [PLACE]`
  */
-import { mkdirSync } from 'node:fs';
+import { mkdirSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import type { Page } from 'playwright-core';
 import { readDemoAccounts } from '../../server/builders/demo-accounts.ts';
@@ -14,6 +14,9 @@ const VIEWPORTS = [
   { width: 1024, height: 768 },
   { width: 390, height: 844 },
 ];
+
+/** The README's pictures stay under this; a larger one is kept as JPEG instead of PNG. */
+const LARGEST_BYTES = 300_000;
 
 const [origin, accountsFile, folder, place = 'Kite Hollow'] = process.argv.slice(2);
 if (origin === undefined || accountsFile === undefined || folder === undefined) {
@@ -29,7 +32,7 @@ try {
   for (const viewport of VIEWPORTS) {
     const watched = await watchedPage(browser, { origin, viewport, timeZone: 'Africa/Johannesburg' });
     const { page } = watched;
-    const take = (name: string) => takePicture(page, path.join(folder, `${name}-${viewport.width}.png`));
+    const take = (name: string) => takePicture(page, path.join(folder, `${name}-${viewport.width}`));
     await page.goto('/');
     await page.getByRole('button', { name: 'Sign in' }).waitFor();
     await take('sign-in');
@@ -61,10 +64,13 @@ async function choosePlace(page: Page, name: string): Promise<void> {
   await page.getByRole('heading', { name, exact: true }).waitFor();
 }
 
-async function takePicture(page: Page, file: string): Promise<void> {
+async function takePicture(page: Page, place: string): Promise<void> {
   // Nothing is marked because the pointer happens to rest on it.
   await page.mouse.move(1, 1);
   await page.evaluate(() => document.fonts.ready.then(() => undefined));
-  await page.screenshot({ path: file });
+  const png = await page.screenshot();
+  const isSmall = png.length <= LARGEST_BYTES;
+  const file = `${place}.${isSmall ? 'png' : 'jpg'}`;
+  writeFileSync(file, isSmall ? png : await page.screenshot({ type: 'jpeg', quality: 85 }));
   console.log(file);
 }
