@@ -40,7 +40,7 @@ export function WeatherTable({ teamId, items }: { teamId: string; items: readonl
                   {statusWords(file)}
                 </span>
               </td>
-              <td className="whitespace-nowrap">{yearWords(file)}</td>
+              <td className="min-w-14 sm:whitespace-nowrap">{yearWords(file)}</td>
               <td>{file.format ?? '–'}</td>
               <td className="figure">{file.completePct === null ? '–' : share(file.completePct)}</td>
               <td className="pl-6">

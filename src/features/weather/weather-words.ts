@@ -54,7 +54,7 @@ export const severityOrder: readonly Severity[] = ['refuse', 'ask', 'doubt', 're
 export const severityTitle: Readonly<Record<Severity, string>> = {
   refuse: 'Why it is refused',
   ask: 'What it asks',
-  doubt: 'Doubts: used as they stand',
+  doubt: 'Doubts: used as they stand, or left out',
   repair: 'Repairs: changed or filled by a rule',
   note: 'Notes',
 };
