@@ -12,7 +12,7 @@ export interface DemoAccount {
 
 const HEADING = [
   'Sign-ins of the demo (invented places and weather), one for each role.',
-  'The passwords were made at random for this home and are kept nowhere else.',
+  'The passwords were made at random for this home; this file alone keeps them.',
 ];
 
 /** Four accounts with new random passwords. The domain is one that can never receive mail (RFC 2606). */

@@ -36,5 +36,7 @@ export function builtClient(clientDir: string): RequestHandler[] {
 function asksForPage(request: express.Request): boolean {
   if (request.method !== 'GET' && request.method !== 'HEAD') return false;
   if (/^\/(api|tiles|assets)(\/|$)/.test(request.path)) return false;
-  return (request.get('accept') ?? '').includes('text/html');
+  if ((request.get('accept') ?? '').includes('text/html')) return true;
+  // A program that takes anything (curl) gets the page as well, but never in place of a file that is not there.
+  return !path.posix.basename(request.path).includes('.') && request.accepts('html') === 'html';
 }

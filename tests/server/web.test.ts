@@ -45,6 +45,12 @@ describe('the built client', () => {
     expect(nonces.size).toBe(5);
   });
 
+  test('is the page for a program that takes anything, and not for one that wants JSON', async () => {
+    expect((await get('/', { Accept: '*/*' })).status).toBe(200);
+    expect((await get('/sign-in', { Accept: '*/*' })).headers.get('content-type')).toMatch(/^text\/html/);
+    expect((await get('/', { Accept: 'application/json' })).status).toBe(404);
+  });
+
   test('has files with a hash in their names that are kept for ever, compressed on the way', async () => {
     const response = await get('/assets/app-abc123.js', { 'Accept-Encoding': 'gzip' });
     expect(response.status).toBe(200);
