@@ -174,13 +174,16 @@ export const Place = z.object({
         peakDayLitres: z.number(),
         peakDay: z.nullable(z.string()),
       }),
-      electricity: z.object({
-        kwh: z.number(),
-        referenceKwh: z.number(),
-        savedPct: z.nullable(z.number()),
-        peakKw: z.number(),
-        referencePeakKw: z.number(),
-      }),
+      /** null: not applicable, as for turbine inlets. */
+      electricity: z.nullable(
+        z.object({
+          kwh: z.number(),
+          referenceKwh: z.number(),
+          savedPct: z.nullable(z.number()),
+          peakKw: z.number(),
+          referencePeakKw: z.number(),
+        }),
+      ),
       cautions: z.array(z.string()),
     }),
   ),

@@ -13,9 +13,10 @@ import { humidityRatioOnWetBulbLine } from '#engine/psychrometrics/wet-bulb-line
 import { dewPointPath } from '#engine/stages/dew-point.ts';
 import { directPath } from '#engine/stages/direct.ts';
 import { indirectPath } from '#engine/stages/indirect.ts';
+import { outdoorSecondary } from '#engine/stages/secondary-air.ts';
 import type { StagePath, WetOutdoorState } from '#engine/stages/stage-path.ts';
 import { twoStagePath } from '#engine/stages/two-stage.ts';
-import { supplyAirPlantHour } from '#engine/water-energy/plant-hour.ts';
+import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
 import { presetBrief, rawPreset } from '../support/presets.ts';
 
 /** Values of data/checks/evaporative-cooling.json; source and tag stand there beside each number. */
@@ -121,8 +122,8 @@ describe('evaporative cooling against published values', () => {
     for (const { effIndirect, effDirect, tolerance, dryBulbC, wetBulbC: entering, pressurePa, ...expected } of cases) {
       const outdoor = airAt({ dryBulbC, wetBulbC: entering, pressurePa });
       const plant = { fanWPerLs: NO_FANS, effIndirect, effDirect, k: 1 };
-      const between = indirectPath(outdoor, plant).at(1);
-      const leaving = twoStagePath(outdoor, plant).at(1);
+      const between = indirectPath(outdoor, plant, outdoorSecondary(outdoor)).at(1);
+      const leaving = twoStagePath(outdoor, plant, outdoorSecondary(outdoor)).at(1);
       const found = {
         betweenC: between.tempC,
         betweenWetBulbC: wetBulbC(between.tempC, between.humidityRatio, pressurePa),
@@ -206,6 +207,8 @@ describe('evaporative cooling against published values', () => {
           airSupplyC: 35,
           running: 'direct',
           supply,
+          carriedShare: 1,
+          waterC: outdoor.wetBulbC,
           aloneMet: ['direct'],
         },
         brief,

@@ -1,8 +1,7 @@
 import type { Brief } from '#engine/brief/brief.ts';
-import { notBuiltYet } from '#engine/brief/not-built-yet.ts';
 import { hourClasses } from '#engine/hour-classes/hour-class.ts';
 import { type ReducedYear, reduceYear } from '#engine/reduction/reduce-year.ts';
-import { judgeYear } from '#engine/run/judge-year.ts';
+import { type JudgeYearInput, judgeYear } from '#engine/run/judge-year.ts';
 import type { RunResult } from '#engine/run/run-result.ts';
 import { gradePlace } from '#engine/score/grade-place.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
@@ -15,24 +14,20 @@ import { readArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
 import { printResult, say } from './print-result.ts';
 
-/** The brief of a preset that this version judges in full. */
-function builtBrief(name: string): Brief {
-  const built = presetNames().filter((preset) => notBuiltYet(presetBrief(preset)).length === 0);
-  const choice = `Presets that can be judged: ${built.join(', ')}.`;
-  if (!presetNames().includes(name)) throw new WrongUse(`There is no preset "${name}". ${choice}`);
-  const brief = presetBrief(name);
-  const missing = notBuiltYet(brief);
-  if (missing.length > 0) throw new WrongUse(`The preset "${name}" is not built yet: ${missing.join(' ')} ${choice}`);
-  return brief;
+/** @throws WrongUse when no preset has that name */
+function namedBrief(name: string): Brief {
+  if (presetNames().includes(name)) return presetBrief(name);
+  throw new WrongUse(`There is no preset "${name}". The presets are ${presetNames().join(', ')}.`);
 }
 
 /** Where the year is judged: the file's own place. */
-function placeOf({ station }: UsableReading): { zone: string; heightM: number } | null {
+function placeOf({ station }: UsableReading): Pick<JudgeYearInput, 'zone' | 'heightM' | 'position'> | null {
   const { latitude, longitude, elevationM, utcOffsetH } = station;
   if (latitude === null || longitude === null || elevationM === null) return null;
   return {
     zone: zoneOfStation({ latitude, longitude, utcOffsetH: utcOffsetH ?? Math.round(longitude / 15) }),
     heightM: elevationM,
+    position: { latitude, longitude },
   };
 }
 
@@ -78,7 +73,7 @@ export async function ledger({ args, callerDir }: CommandContext): Promise<ExitC
   if (file === undefined || more.length > 0) throw new WrongUse('Name one weather file.');
   if (strict) throw new WrongUse('--strict belongs to the command read.');
   if (preset === null) throw new WrongUse('Name the preset: --brief office.');
-  const brief = builtBrief(preset);
+  const brief = namedBrief(preset);
 
   const bytes = await openFile(file, callerDir);
   if (typeof bytes === 'string') {

@@ -56,7 +56,7 @@ function presentShown(
       peakDayLitres: result.water.peakDayLitres,
       peakDay: result.water.peakDay === null ? null : dayText(run.clock, result.water.peakDay),
     },
-    electricity: { ...result.electricity },
+    electricity: result.electricity === null ? null : { ...result.electricity },
     cautions: cautionsOf({ kind, zone: station.zone }),
   };
 }

@@ -5,6 +5,7 @@
 import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
 import { isLeapYear } from '../reduction/calendar.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
+import type { Position } from './daylight.ts';
 
 /** From this slot on (0 first), civil time is so many minutes ahead of UTC. */
 export interface CivilOffset {
@@ -23,6 +24,8 @@ export interface ResolvedClock {
   readonly utcOffsetMin: number;
   /** At least one, the first from slot 0. */
   readonly offsets: readonly CivilOffset[];
+  /** The place whose daylight a schedule of daylight follows; left out by every other. */
+  readonly daylightAt?: Position;
 }
 
 /** Both start on a Monday, so that places compare (method 3). */

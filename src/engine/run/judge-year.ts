@@ -1,7 +1,6 @@
 import type { Brief } from '../brief/brief.ts';
-import { notBuiltYet } from '../brief/not-built-yet.ts';
 import { METHOD_VERSION } from '../conventions.ts';
-import type { WeatherYear } from '../reduction/weather-year.ts';
+import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
@@ -9,31 +8,23 @@ import { rawComponents } from '../score/raw-components.ts';
 import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
-import { type JudgedYear, judgeHours } from './judged-year.ts';
+import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
+import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
+import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
 import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
 
-export interface JudgeYearInput {
-  readonly year: WeatherYear;
-  readonly brief: Brief;
-  /** IANA name of the station's time zone. */
-  readonly zone: string;
-  /** The height used for the place, m. */
-  readonly heightM: number;
-}
+export type { JudgeYearInput } from './judged-year.ts';
 
 /**
  * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
- * @throws RangeError when the brief needs what this version cannot judge (`notBuiltYet`), the zone is not known or the
- * columns are no year
+ * @throws RangeError when the zone is not known, the columns are no year, or a schedule of daylight hours has no position
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
-  const { year, brief, zone, heightM } = input;
-  const notBuilt = notBuiltYet(brief);
-  if (notBuilt.length > 0) throw new RangeError(notBuilt.join('; '));
-  const judged = judgeHours({ year, brief, zone });
+  const { brief, heightM } = input;
+  const judged = judgeHours(input);
   const counted = countHours(judged, input);
   const hardLimits = countHardLimits({ brief, heightM, demandHours: judged.demandHours });
   const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
@@ -61,7 +52,9 @@ function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
     ...tallyMonthHours(judged),
     scaled: scaleForMissing(judged),
     clampedLimitHours: countClamped(judged),
-    ...tallyPlant(judged.slots, judged.demandHours),
+    degreeHours: tallyDegreeHours(brief, judged.demandHours),
+    recirculatedHours: tallyRecirculatedHours(judged.demandHours),
+    ...tallyPlant(judged.slots, judged.demandHours, judged.use),
   };
 }
 
@@ -71,7 +64,7 @@ function countClamped({ outsideRange, demandHours }: JudgedYear): number | null 
 
 function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; exclusion: string | null }) {
   const { brief, exclusion } = input;
-  const indexPoints = brief.limit.kind === 'thi' || brief.limit.kind === 'shade-heat';
+  const indexPoints = isIndexLimit(brief.limit);
   const weighted = weightedScore(brief.score, rawComponents(counted, brief), { indexPoints });
   const noDemand = counted.ledger.demand === 0 ? 'not applicable: no demand' : null;
   const scoreNote = exclusion ?? noDemand;

@@ -1,6 +1,8 @@
 import type { Brief } from '../brief/brief.ts';
+import { clockOfBrief } from '../clock/clock-of-brief.ts';
+import type { Position } from '../clock/daylight.ts';
 import { openSlots } from '../clock/open-slots.ts';
-import { type ResolvedClock, resolveClock } from '../clock/resolved-clock.ts';
+import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import { hundredths } from '../conventions.ts';
 import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
@@ -10,7 +12,7 @@ import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
 import { unpackYear, type YearColumns } from '../reduction/packed-columns.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
 import type { PlantHour } from '../water-energy/plant-hour.ts';
-import { findUse } from './find-use.ts';
+import { findUse, type Use } from './find-use.ts';
 
 /** A slot with demand: what it was, what it is under the brief, and the plant in it. */
 export interface JudgedHour {
@@ -24,6 +26,7 @@ export interface JudgedHour {
 export interface JudgedYear {
   readonly slots: number;
   readonly clock: ResolvedClock;
+  readonly use: Use;
   /** 1 where the slot's weather is known, in schedule or not. */
   readonly known: Uint8Array;
   /** One position in `hourClasses` for every slot. */
@@ -40,27 +43,40 @@ interface Outdoor {
   readonly pressurePa: number;
 }
 
+/** What a year is judged by. */
+export interface JudgeYearInput {
+  readonly year: WeatherYear;
+  readonly brief: Brief;
+  /** IANA name of the station's time zone. */
+  readonly zone: string;
+  /** The height used for the place, m. */
+  readonly heightM: number;
+  /** Where the place is; a schedule of daylight hours cannot do without. */
+  readonly position?: Position | null;
+}
+
 /** The class of every slot, first match wins: closed, missing, idle, then what the brief's use says (method 5). */
-export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: string }): JudgedYear {
-  const { year, brief, zone } = input;
+export function judgeHours(input: JudgeYearInput): JudgedYear {
+  const { year, brief, zone, heightM, position = null } = input;
   const columns = unpackYear(year.packed);
   const slots = columns.dryBulbC.length;
-  const { kind, utcOffsetMin } = year;
-  const clock = resolveClock({ zone, kind, year: year.year, slots, utcOffsetMin, clock: brief.clock });
+  const clock = clockOfBrief({ year, brief, zone, position });
   const open = openSlots(brief, clock);
   const use = findUse(brief);
-  const { setC, outsideRange } = setPoints({ brief, dryBulbC: columns.dryBulbC, wrapped: kind !== 'actual' });
+  const wrapped = year.kind !== 'actual';
+  const { setC, outsideRange } = setPoints({ brief, dryBulbC: columns.dryBulbC, wrapped, heightM });
   const loadFraction = loadFractionOf(
     brief,
     columns.dryBulbC.filter((dryBulbC) => !Number.isNaN(dryBulbC)),
   );
+  const idleUpToC = use.idleUpToC(brief);
   const classCodes = new Uint8Array(slots);
   const known = new Uint8Array(slots);
   const demandHours: JudgedHour[] = [];
   for (let slot = 0; slot < slots; slot++) {
     const outdoor = outdoorAt(columns, slot);
     known[slot] = outdoor === null ? 0 : 1;
-    const apart = classWithoutDemand(open[slot] === 1, outdoor, brief);
+    const apart = classWithoutDemand(open[slot] === 1, outdoor, idleUpToC);
     if (apart !== null || outdoor === null) {
       classCodes[slot] = codeOf(apart ?? 'missing');
       continue;
@@ -70,14 +86,14 @@ export function judgeHours(input: { year: WeatherYear; brief: Brief; zone: strin
     classCodes[slot] = codeOf(judgement.hourClass);
     demandHours.push({ slot, hour, judgement, plant: use.plantHour(hour, judgement, brief) });
   }
-  return { slots, clock, known, classCodes, demandHours, outsideRange };
+  return { slots, clock, use, known, classCodes, demandHours, outsideRange };
 }
 
 /** `closed`, `missing` or `idle`; null for a demand hour. */
-function classWithoutDemand(open: boolean, outdoor: Outdoor | null, brief: Brief): HourClass | null {
+function classWithoutDemand(open: boolean, outdoor: Outdoor | null, idleUpToC: number | null): HourClass | null {
   if (!open) return 'closed';
   if (outdoor === null) return 'missing';
-  const idle = brief.balanceTempC !== null && hundredths(outdoor.dryBulbC) <= hundredths(brief.balanceTempC);
+  const idle = idleUpToC !== null && hundredths(outdoor.dryBulbC) <= hundredths(idleUpToC);
   return idle ? 'idle' : null;
 }
 

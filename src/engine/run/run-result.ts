@@ -68,6 +68,24 @@ export interface SupplyBin {
   readonly hours: number;
 }
 
+/** Electricity of the year, kWh, and its greatest hour, kW, both ways, back-up counted. */
+export interface Electricity {
+  readonly kwh: number;
+  readonly referenceKwh: number;
+  readonly savedPct: number | null;
+  readonly peakKw: number;
+  readonly referencePeakKw: number;
+  /** Heat that the back-up must be able to take, kW of cooling. */
+  readonly backUpKw: number;
+}
+
+/** Hours in which water is recirculated: an input to the water safety plan, no verdict (method 6). */
+export interface RecirculatedHours {
+  readonly all: number;
+  /** Of them those with water at 20 °C or more. */
+  readonly warm: number;
+}
+
 /** One weather year judged by one brief version. Water and electricity are per kW of design load. */
 export interface RunResult {
   readonly methodVersion: string;
@@ -80,11 +98,12 @@ export interface RunResult {
   readonly scaled: ScaledCounts;
   /** Demand hours whose adaptive limit was clamped to its range; null for other limits. */
   readonly clampedLimitHours: number | null;
+  /** K h; of an index limit, index-point hours. */
   readonly severityKh: number;
   readonly worstSpell: WorstSpell | null;
   /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */
   readonly aloneHours: Readonly<Partial<Record<HourClass, number>>>;
-  /** Supply temperatures in demand hours, ascending bins of 1 K without a gap. */
+  /** Supply temperatures (of a tower, of the water) in demand hours, ascending bins of 1 K without a gap. */
   readonly supplyCurve: readonly SupplyBin[];
   /** Demand and met hours by month (12) x hour of day (24), in the slots' standard time. */
   readonly demandByMonthHour: readonly (readonly number[])[];
@@ -101,13 +120,11 @@ export interface RunResult {
     readonly peakHourLitres: number;
     readonly coolingKwh: number;
   };
-  readonly electricity: {
-    readonly kwh: number;
-    readonly referenceKwh: number;
-    readonly savedPct: number | null;
-    readonly peakKw: number;
-    readonly referencePeakKw: number;
-  };
+  /** null: not applicable, as for turbine inlets. */
+  readonly electricity: Electricity | null;
+  /** Degree hours gained at a turbine inlet, K h; null for every other use. */
+  readonly degreeHours: number | null;
+  readonly recirculatedHours: RecirculatedHours;
   readonly gates: readonly GateAnswer[];
   readonly tolerances: readonly ToleranceAnswer[];
   readonly verdict: Verdict;

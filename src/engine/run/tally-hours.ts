@@ -22,8 +22,8 @@ export function tallyMonthHours(judged: JudgedYear): Pick<RunResult, 'demandByMo
 
 /** Demand hours that outdoor air and each permitted stage would meet as the only one installed. */
 export function tallyAloneHours(judged: JudgedYear, brief: Brief): RunResult['aloneHours'] {
-  const alone: { [hourClass in (typeof hourClasses)[number]]?: number } = { air: 0 };
-  for (const stage of brief.stages) if (stage !== 'tower') alone[stage] = 0;
+  const alone: { [hourClass in (typeof hourClasses)[number]]?: number } = {};
+  for (const stage of judged.use.aloneStages(brief)) alone[stage] = 0;
   for (const { judgement } of judged.demandHours) {
     for (const stage of judgement.aloneMet) alone[stage] = (alone[stage] ?? 0) + 1;
   }

@@ -1,6 +1,6 @@
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { monthOfEachSlot } from '../reduction/calendar.ts';
-import type { RunResult } from '../run/run-result.ts';
+import type { Electricity, RunResult } from '../run/run-result.ts';
 import type { PlantHour } from './plant-hour.ts';
 
 /** The plant's hour at a slot (0 first). */
@@ -10,8 +10,15 @@ export interface PlantSlot {
 }
 
 /** Water and electricity of the year per kW of design load (method 6); the first of equals is the peak. */
-export function tallyPlant(slots: number, plantSlots: readonly PlantSlot[]): Pick<RunResult, 'water' | 'electricity'> {
-  return { water: tallyWater(slots, plantSlots), electricity: tallyElectricity(plantSlots) };
+export function tallyPlant(
+  slots: number,
+  plantSlots: readonly PlantSlot[],
+  { countsElectricity }: { countsElectricity: boolean },
+): Pick<RunResult, 'water' | 'electricity'> {
+  return {
+    water: tallyWater(slots, plantSlots),
+    electricity: countsElectricity ? tallyElectricity(plantSlots) : null,
+  };
 }
 
 function tallyWater(slots: number, plantSlots: readonly PlantSlot[]): RunResult['water'] {
@@ -47,19 +54,21 @@ function tallyWater(slots: number, plantSlots: readonly PlantSlot[]): RunResult[
   };
 }
 
-function tallyElectricity(plantSlots: readonly PlantSlot[]): RunResult['electricity'] {
+function tallyElectricity(plantSlots: readonly PlantSlot[]): Electricity {
   let kwh = 0;
   let referenceKwh = 0;
   let peakKw = 0;
   let referencePeakKw = 0;
+  let backUpKw = 0;
   for (const { plant } of plantSlots) {
-    kwh += plant.kwh;
-    referenceKwh += plant.referenceKwh;
-    peakKw = Math.max(peakKw, plant.kwh);
-    referencePeakKw = Math.max(referencePeakKw, plant.referenceKwh);
+    kwh += plant.kwh ?? 0;
+    referenceKwh += plant.referenceKwh ?? 0;
+    peakKw = Math.max(peakKw, plant.kwh ?? 0);
+    referencePeakKw = Math.max(referencePeakKw, plant.referenceKwh ?? 0);
+    backUpKw = Math.max(backUpKw, plant.backUpKw);
   }
   const savedPct = referenceKwh > 0 ? (100 * (referenceKwh - kwh)) / referenceKwh : null;
-  return { kwh, referenceKwh, savedPct, peakKw, referencePeakKw };
+  return { kwh, referenceKwh, savedPct, peakKw, referencePeakKw, backUpKw };
 }
 
 /** The first greatest value over 0 with its place; null when none is over 0. */

@@ -81,16 +81,23 @@ export function WaterElectricityNote({ shown: { water, electricity } }: { shown:
             water.litresPerKwh === null ? 'not applicable' : sensible(water.litresPerKwh, 'L/kWh'),
           ],
           ['Peak day', water.peakDay === null ? 'none' : `${sensible(water.peakDayLitres, 'L')}, ${water.peakDay}`],
-          ['Electricity', sensible(electricity.kwh, 'kWh')],
-          ['Reference plant', sensible(electricity.referenceKwh, 'kWh')],
-          ['Saved', electricity.savedPct === null ? 'not applicable' : percent(electricity.savedPct)],
-          ['Peak, with back-up', sensible(electricity.peakKw, 'kW')],
-          ['Peak of the reference', sensible(electricity.referencePeakKw, 'kW')],
+          ...electricityRows(electricity),
         ]}
       />
       <p className="mt-1 text-fine text-soft">Not priced: the brief holds no prices.</p>
     </Note>
   );
+}
+
+function electricityRows(electricity: Shown['electricity']): readonly (readonly [label: string, value: string])[] {
+  if (electricity === null) return [['Electricity', 'not applicable']];
+  return [
+    ['Electricity', sensible(electricity.kwh, 'kWh')],
+    ['Reference plant', sensible(electricity.referenceKwh, 'kWh')],
+    ['Saved', electricity.savedPct === null ? 'not applicable' : percent(electricity.savedPct)],
+    ['Peak, with back-up', sensible(electricity.peakKw, 'kW')],
+    ['Peak of the reference', sensible(electricity.referencePeakKw, 'kW')],
+  ];
 }
 
 /** Why the weather can be trusted for this place as far as it can. */

@@ -56,6 +56,8 @@ describe('a hard limit', () => {
     airSupplyC: 40,
     running: 'air',
     supply: { tempC: 40, humidityRatio: 0.01, evaporatedKgPerKg: 0, share: 0 },
+    carriedShare: 0,
+    waterC: null,
     aloneMet: [],
   } as const;
 
