@@ -3,7 +3,7 @@
  *
  * The equations are those of ASHRAE Fundamentals 2017 ch. 1 (eq. 33 over water, eq. 35 over ice) in the common form of
  * `wet-surface.ts`; a guess from curves drawn beforehand (`wet-bulb-guess.ts`) and one step of Newton's method on tabulated
- * saturation pressure (`newton-step.ts`) solve them. Expected error against the exact root: 0.00005 K, ten times less than
+ * saturation pressure (`newton-step.ts`) solve them. Expected error against the exact root: 0.0001 K, a fifth of that of
  * PsychroLib's bisection. States outside the tables (a heat below -80 or over 200 kJ/kg, a pressure outside 30 to 112.5 kPa)
  * are found by bisection.
  *

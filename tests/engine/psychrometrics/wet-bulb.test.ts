@@ -100,16 +100,16 @@ describe('wet bulb', () => {
     expect(drops).toBe(0);
   });
 
-  test('is the exact root of the formulas to 0.00005 K, found by bisection on them, where one step finishes', () => {
+  test('satisfies the formulas between 0.0001 K below and above it, where one step finishes', () => {
     let compared = 0;
     const property = fc.property(anyState, (state) => {
       const ratio = ratioOf(state);
       const wetC = wetBulbC(state.dryBulbC, ratio, state.pressurePa);
       if (Math.abs(wetC) < 1 || enthalpyKJPerKg(state.dryBulbC, ratio) > 190) return true;
       compared++;
-      const over = humidityRatioOnWetBulbLine(state.dryBulbC, wetC + 5e-5, state.pressurePa);
-      const under = humidityRatioOnWetBulbLine(state.dryBulbC, wetC - 5e-5, state.pressurePa);
-      return under <= ratio + 1e-12 && (ratio <= over || wetC + 5e-5 >= state.dryBulbC);
+      const over = humidityRatioOnWetBulbLine(state.dryBulbC, wetC + 1e-4, state.pressurePa);
+      const under = humidityRatioOnWetBulbLine(state.dryBulbC, wetC - 1e-4, state.pressurePa);
+      return under <= ratio + 1e-12 && (ratio <= over || wetC + 1e-4 >= state.dryBulbC);
     });
     const settings = propertySettings(10_000);
     fc.assert(property, settings);
