@@ -1,7 +1,5 @@
 /** Moist air for the oracle: PsychroLib alone, with the one rule for the wet bulb near 0 °C. Slow and plain. */
-import psychrolib from 'psychrolib';
-
-psychrolib.SetUnitSystem(psychrolib.SI);
+import { psychrolib } from '#engine/psychrometrics/psychrolib-si.ts';
 
 /** Both roots can exist this close to 0 °C; PsychroLib returns either. */
 const NEAR_ZERO_K = 2;
