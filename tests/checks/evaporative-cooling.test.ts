@@ -2,8 +2,10 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import * as z from 'zod/mini';
 import { readBrief } from '#engine/brief/brief-from-preset.ts';
+import { judgeTowerHour } from '#engine/hour-classes/judge-tower-hour.ts';
 import {
   dewPointC,
+  enthalpyKJPerKg,
   humidityRatioFromRelativeHumidity,
   relativeHumidityPct,
   volumeM3PerKg,
@@ -17,6 +19,7 @@ import { outdoorSecondary } from '#engine/stages/secondary-air.ts';
 import type { StagePath, WetOutdoorState } from '#engine/stages/stage-path.ts';
 import { twoStagePath } from '#engine/stages/two-stage.ts';
 import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
+import { towerPlantHour } from '#engine/water-energy/tower-plant-hour.ts';
 import { presetBrief, rawPreset } from '../support/presets.ts';
 
 /** Values of data/checks/evaporative-cooling.json; source and tag stand there beside each number. */
@@ -57,6 +60,33 @@ function shareForHumidity(path: StagePath, input: { pct: number; pressurePa: num
     else damper = middle;
   }
   return damper;
+}
+
+interface Tower {
+  readonly waterKgPerS: number;
+  readonly hotC: number;
+  readonly coldC: number;
+  readonly enteringC: number;
+  readonly enteringRhPct: number;
+  readonly leavingC: number;
+  readonly pressurePa: number;
+}
+
+/** Energy and mass balance of a tower whose air leaves saturated; what evaporates is made up as warm as the cold water. */
+function towerBalance(tower: Tower) {
+  const at = (dryBulbC: number, relativePct: number) => {
+    const { pressurePa } = tower;
+    const state = { dryBulbC, relativeHumidityPct: relativePct, pressurePa, belowZero: 'water' } as const;
+    const humidityRatio = humidityRatioFromRelativeHumidity(state);
+    return { humidityRatio, enthalpy: enthalpyKJPerKg(dryBulbC, humidityRatio) };
+  };
+  const entering = at(tower.enteringC, tower.enteringRhPct);
+  const leaving = at(tower.leavingC, 100);
+  const rejectedKw = 4.186 * tower.waterKgPerS * (tower.hotC - tower.coldC);
+  const gained = leaving.humidityRatio - entering.humidityRatio;
+  const dryAirKgPerS = rejectedKw / (leaving.enthalpy - entering.enthalpy - gained * 4.186 * tower.coldC);
+  const makeUpKgPerS = dryAirKgPerS * gained;
+  return { rejectedKw, dryAirKgPerS, makeUpKgPerS, latentShare: (makeUpKgPerS * 2430) / rejectedKw };
 }
 
 describe('evaporative cooling against published values', () => {
@@ -146,6 +176,37 @@ describe('evaporative cooling against published values', () => {
       expect(Math.abs(leaving.tempC - leavingC), `${leaving.tempC}`).toBeLessThanOrEqual(tolerance);
       expect(leaving.humidityRatio).toBe(outdoor.humidityRatio);
       expect(leaving.tempC).toBeGreaterThan(dewPointC(outdoor.dryBulbC, outdoor.humidityRatio, outdoor.pressurePa));
+    }
+    expect(cases).toHaveLength(2);
+  });
+
+  test('E05 a tower’s air and water balance, and the engine’s water from the heat that leaves as vapour', () => {
+    const cases = casesOf('E05', {
+      quantity: z.enum(['dryAirKgPerS', 'makeUpKgPerS']),
+      waterKgPerS: z.number(),
+      hotC: z.number(),
+      coldC: z.number(),
+      enteringC: z.number(),
+      enteringRhPct: z.number(),
+      leavingC: z.number(),
+      pressurePa: z.number(),
+      expected: z.number(),
+      tolerancePct: z.number(),
+    });
+    for (const { quantity, expected, tolerancePct, ...tower } of cases) {
+      const found = towerBalance(tower);
+      const apartPct = 100 * Math.abs(found[quantity] / expected - 1);
+      expect(apartPct, `${quantity} ${found[quantity]}`).toBeLessThanOrEqual(tolerancePct);
+      const brief = presetBrief('process-water', { towerLatentShare: found.latentShare, driftPctOfCirculation: 0 });
+      const hour = {
+        outdoor: airAt({ dryBulbC: 20, wetBulbC: 15, pressurePa: 101325 }),
+        setC: 27,
+        supplyAimC: 27,
+        loadFraction: 1,
+      };
+      const perKw = towerPlantHour(hour, judgeTowerHour(hour, brief), brief);
+      expect((perKw.evaporatedLitres / 3600) * found.rejectedKw).toBeCloseTo(found.makeUpKgPerS, 6);
+      expect(perKw.coolingKwh).toBe(1);
     }
     expect(cases).toHaveLength(2);
   });

@@ -1,6 +1,7 @@
 import type { Brief } from '../brief/brief.ts';
 import { METHOD_VERSION } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
+import { yearlyMoney } from '../money/yearly-money.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
@@ -35,6 +36,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
     usable: coverage.usable,
     monthsShort: coverage.monthsShort,
     ...counted,
+    ...yearlyMoney(counted, brief),
     gates,
     ...verdictOf({ brief, ledger: counted.ledger, worstSpell: counted.worstSpell, hardLimits }),
     ...scoreOf(counted, { brief, exclusion: exclusionOf(gates) }),

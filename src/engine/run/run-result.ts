@@ -1,6 +1,7 @@
 import type { ScoreComponent } from '../brief/brief.ts';
 import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import type { HourClass } from '../hour-classes/hour-class.ts';
+import type { MoneyAnswer } from '../money/yearly-money.ts';
 
 /** Count of hours per class; the counts add up to `hours`, which is asserted on every run. */
 export interface Ledger {
@@ -86,8 +87,8 @@ export interface RecirculatedHours {
   readonly warm: number;
 }
 
-/** One weather year judged by one brief version. Water and electricity are per kW of design load. */
-export interface RunResult {
+/** One weather year judged by one brief version. Water, electricity and money are per kW of design load. */
+export interface RunResult extends MoneyAnswer {
   readonly methodVersion: string;
   readonly clock: ResolvedClock;
   /** Every month in which the brief has schedule has 90 % of its hours (method 2). */

@@ -17,6 +17,16 @@ interface AirStream {
   readonly referenceFanWPerLs: number;
 }
 
+/**
+ * Rise over which the stream of air carries the design load, K: of the room, over the equipment of a hall; of a turbine
+ * inlet 1 K, since its figures are for 1 kW per K (ours); null for a tower, which cools water.
+ */
+export function streamRiseK(brief: Pick<Brief, 'limit' | 'dTroomK' | 'dTitK'>): number | null {
+  if (brief.limit.kind === 'tower') return null;
+  if (brief.limit.kind === 'turbine') return 1;
+  return brief.limit.kind === 'inlet' ? hallRiseK(brief) : brief.dTroomK;
+}
+
 /** Rooms served by outdoor air: each stage's own fan figure, the air stage's in the reference. */
 export function supplyAirPlantHour(hour: DemandHour, judgement: HourJudgement, brief: Brief): PlantHour {
   const { running } = judgement;

@@ -11,9 +11,6 @@ import { makeUpLitres, type PlantHour, SECONDS_PER_HOUR } from './plant-hour.ts'
 
 /** kJ/(kg K) of water (method 3.1). */
 const WATER_KJ_PER_KG_K = 4.186;
-/** Share of the rejected heat that leaves as vapour, and W per kW, where a brief names none (method 3 and 3.1). */
-export const TOWER_LATENT_SHARE = 0.9;
-export const TOWER_FAN_PUMP_W_PER_KW = 25;
 
 export function towerPlantHour(hour: DemandHour, judgement: HourJudgement, brief: Brief): PlantHour {
   const { rangeK } = towerLimit(brief);
@@ -21,12 +18,12 @@ export function towerPlantHour(hour: DemandHour, judgement: HourJudgement, brief
   const { cop } = brief.reference;
   const runs = judgement.running === 'tower';
   const rejectedKw = loadFraction * judgement.carriedShare;
-  const latentShare = brief.towerLatentShare ?? TOWER_LATENT_SHARE;
-  const evaporatedLitres = ((rejectedKw * latentShare) / LATENT_HEAT_KJ_PER_KG) * SECONDS_PER_HOUR;
+  const evaporatedLitres =
+    ((rejectedKw * towerField(brief.towerLatentShare, 'towerLatentShare')) / LATENT_HEAT_KJ_PER_KG) * SECONDS_PER_HOUR;
   // The whole stream circulates whatever share of its heat it leaves.
   const circulationKgPerS = loadFraction / (WATER_KJ_PER_KG_K * rangeK);
   const driftLitres = runs ? (brief.driftPctOfCirculation / 100) * circulationKgPerS * SECONDS_PER_HOUR : 0;
-  const fanPumpKw = runs ? (brief.towerFanPumpWPerKw ?? TOWER_FAN_PUMP_W_PER_KW) / 1000 : 0;
+  const fanPumpKw = runs ? towerField(brief.towerFanPumpWPerKw, 'towerFanPumpWPerKw') / 1000 : 0;
   const backUpKw = loadFraction - rejectedKw;
   return {
     evaporatedLitres,
@@ -36,4 +33,10 @@ export function towerPlantHour(hour: DemandHour, judgement: HourJudgement, brief
     referenceKwh: loadFraction / cop,
     backUpKw,
   };
+}
+
+/** A field that the reader of briefs fills for every tower. */
+function towerField(value: number | null, name: string): number {
+  if (value === null) throw new RangeError(`the brief of a tower lacks ${name}`);
+  return value;
 }
