@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import {
+  dewPointC,
   enthalpyKJPerKg,
   humidityRatioFromRelativeHumidity,
   relativeHumidityOfDewPointPct,
@@ -9,6 +10,7 @@ import {
 } from '#engine/psychrometrics/moist-air.ts';
 import { standardPressurePa, stationPressurePa } from '#engine/psychrometrics/pressure.ts';
 import { psychrolib } from '#engine/psychrometrics/psychrolib-si.ts';
+import { tabledDewPointC } from '#engine/psychrometrics/saturation-table.ts';
 import { wetBulbC, wetBulbColumn } from '#engine/psychrometrics/wet-bulb.ts';
 import { humidityRatioOnWetBulbLine } from '#engine/psychrometrics/wet-bulb-line.ts';
 import { unpackYear } from '#engine/reduction/packed-columns.ts';
@@ -202,4 +204,22 @@ test('station pressure from sea-level pressure is the standard atmosphere for st
     expect(Math.abs(pressurePa - standardPressurePa(elevationM)), `${elevationM} m`).toBeLessThan(5);
   }
   expect(standardPressurePa(-34)).toBeGreaterThan(101_325);
+});
+
+test('the dew point is that of PsychroLib to its 0.001 K over the whole domain, and the dry bulb of saturated air', () => {
+  let worstK = 0;
+  const property = fc.property(anyState, (state) => {
+    const ratio = ratioOf(state);
+    const found = dewPointC(state.dryBulbC, ratio, state.pressurePa);
+    const theirs = psychrolib.GetTDewPointFromHumRatio(state.dryBulbC, ratio, state.pressurePa);
+    worstK = Math.max(worstK, Math.abs(found - theirs));
+    const saturated = saturationHumidityRatio(state.dryBulbC, state.pressurePa);
+    const atSaturation = dewPointC(state.dryBulbC, saturated, state.pressurePa);
+    return worstK <= 0.001 && found <= state.dryBulbC && Math.abs(atSaturation - state.dryBulbC) < 1e-4;
+  });
+  fc.assert(property, propertySettings(5_000, 300_000));
+  // Read backwards, the table gives back the pressure: an answer that needs no other program.
+  for (let tempC = -89; tempC < 69; tempC += 0.37) {
+    expect(Math.abs(tabledDewPointC(saturationPressurePa(tempC)) - tempC), `${tempC} °C`).toBeLessThan(1e-4);
+  }
 });
