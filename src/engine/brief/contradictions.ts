@@ -8,7 +8,7 @@ export function contradictions(brief: Brief): BriefFault[] {
     ...capFaults(brief),
     ...limitFaults(brief),
     ...startFaults(brief),
-    ...useFaults(brief),
+    ...faultsOfUse(brief),
   ];
 }
 
@@ -79,7 +79,7 @@ function startFaults({ limit, startRoomTempC }: Brief): BriefFault[] {
 }
 
 /** Fields that a use does not have, or cannot do with. */
-function useFaults(brief: Brief): BriefFault[] {
+function faultsOfUse(brief: Brief): BriefFault[] {
   const { limit } = brief;
   const indexed = limit.kind === 'thi' || limit.kind === 'shade-heat';
   const room = indexed || limit.kind === 'fixed' || limit.kind === 'adaptive';
