@@ -76,9 +76,8 @@ function wetBulbOfState(dryBulbC: number, humidityRatio: number, pressurePa: num
   const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
   const enthalpy = DRY_AIR_KJ_PER_KG_K * dryBulbC + ratio * (LATENT_HEAT_KJ_PER_KG + VAPOUR_KJ_PER_KG_K * dryBulbC);
   const water = enthalpy * (pressurePa - SATURATION_AT_ZERO_PA) >= HEAT_AT_ZERO;
-  const root = water
-    ? rootC(overWater, dryBulbC, ratio, pressurePa, enthalpy)
-    : rootC(overIce, Math.min(dryBulbC, 0), ratio, pressurePa, enthalpy);
+  const highC = water ? dryBulbC : Math.min(dryBulbC, 0);
+  const root = rootC(water ? overWater : overIce, highC, ratio, pressurePa, enthalpy);
   const clear = water ? Math.max(root, 0) : Math.min(root, 0);
   return clear < dryBulbC - SATURATED_WITHIN_K ? clear : dryBulbC;
 }
@@ -96,8 +95,9 @@ function rootC(
   const guess = guessC(curves, heatKJPerKg, vapourKJPerKgK, pressurePa);
   if (Number.isNaN(guess)) return bisectedWetBulbC({ surface, highC, humidityRatio, pressurePa, heatKJPerKg });
   const sensibleKJPerKgK = DRY_AIR_KJ_PER_KG_K + vapourKJPerKgK;
-  const x = newtonStepC(surface, guess, pressurePa, sensibleKJPerKgK, heatKJPerKg);
-  if (Math.abs(guess) > BEND_WITHIN_K) return x;
-  // So close to 0.01 °C the first step may have taken the slope of the other side of the bend from ice to water.
-  return newtonStepC(surface, x, pressurePa, sensibleKJPerKgK, heatKJPerKg);
+  // So close to 0.01 °C the first step may take the slope of the other side of the bend from ice to water: a second mends it.
+  const steps = Math.abs(guess) > BEND_WITHIN_K ? 1 : 2;
+  let x = guess;
+  for (let step = 0; step < steps; step++) x = newtonStepC(surface, x, pressurePa, sensibleKJPerKgK, heatKJPerKg);
+  return x;
 }
