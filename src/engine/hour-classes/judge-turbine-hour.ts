@@ -5,7 +5,7 @@
 import type { Brief, Limit } from '../brief/brief.ts';
 import { hundredths } from '../conventions.ts';
 import { humidityRatioOnWetBulbLine } from '../psychrometrics/wet-bulb-line.ts';
-import type { DemandClass, DemandHour, HourJudgement, Supplied } from './demand-hour.ts';
+import { type DemandClass, type DemandHour, type HourJudgement, type Supplied, withinShare } from './demand-hour.ts';
 import { outdoorForWetting } from './permitted-paths.ts';
 import { gainsEnough } from './short-from.ts';
 
@@ -62,7 +62,7 @@ function wettedInlet(hour: DemandHour, brief: Brief): { supply: Supplied; waterC
   const fullFallK = brief.effDirect * (dryBulbC - wetBulbC);
   const tempC = Math.max(dryBulbC - fullFallK, turbineLimit(brief).floorC);
   const leavingRatio = Math.max(humidityRatio, humidityRatioOnWetBulbLine(tempC, wetBulbC, pressurePa));
-  const share = fullFallK > 0 ? (dryBulbC - tempC) / fullFallK : 0;
+  const share = withinShare((dryBulbC - tempC) / fullFallK);
   const supply = { tempC, humidityRatio: leavingRatio, evaporatedKgPerKg: leavingRatio - humidityRatio, share };
   return { supply, waterC: wetBulbC };
 }
