@@ -11,11 +11,12 @@ import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
 import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
+import { type JudgedHour, type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
 import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
+import { type SuppliedAir, tallyReported } from './tally-reported.ts';
 
 export type { JudgeYearInput } from './judged-year.ts';
 
@@ -56,8 +57,15 @@ function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
     clampedLimitHours: countClamped(judged),
     degreeHours: tallyDegreeHours(brief, judged.demandHours),
     recirculatedHours: tallyRecirculatedHours(judged.demandHours),
+    reported: tallyReported(brief, () => judged.demandHours.map(suppliedAir)),
     ...tallyPlant(judged.slots, judged.demandHours, judged.use),
   };
+}
+
+function suppliedAir({ hour, judgement }: JudgedHour): SuppliedAir {
+  const { supplyAimC, loadFraction, outdoor } = hour;
+  const { tempC: supplyC, humidityRatio: supplyRatio } = judgement.supply;
+  return { supplyC, supplyRatio, supplyAimC, loadFraction, pressurePa: outdoor.pressurePa };
 }
 
 function countClamped({ outsideRange, demandHours }: JudgedYear): number | null {

@@ -87,6 +87,12 @@ export interface RecirculatedHours {
   readonly warm: number;
 }
 
+/** Demand hours of something that a brief asks to have reported and that makes no class; null: not counted by this program. */
+export interface ReportedHours {
+  readonly what: string;
+  readonly hours: number | null;
+}
+
 /** One weather year judged by one brief version. Water, electricity and money are per kW of design load. */
 export interface RunResult extends MoneyAnswer {
   readonly methodVersion: string;
@@ -126,6 +132,7 @@ export interface RunResult extends MoneyAnswer {
   /** Degree hours gained at a turbine inlet, K h; null for every other use. */
   readonly degreeHours: number | null;
   readonly recirculatedHours: RecirculatedHours;
+  readonly reported: readonly ReportedHours[];
   readonly gates: readonly GateAnswer[];
   readonly tolerances: readonly ToleranceAnswer[];
   readonly verdict: Verdict;
