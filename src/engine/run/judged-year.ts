@@ -46,6 +46,8 @@ export interface JudgeYearInput {
   readonly heightM: number;
   /** Where the place is; a schedule of daylight hours cannot do without. */
   readonly position?: Position | null;
+  /** The clock as it was resolved before, which the zone's rules no longer move; else it is resolved here. */
+  readonly clock?: ResolvedClock;
 }
 
 /** How hours are judged, where the caller has reason to say. */
@@ -61,7 +63,7 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   const { year, brief, zone, heightM, position = null } = input;
   const weather = unpackYear(year.packed);
   const slots = weather.dryBulbC.length;
-  const clock = clockOfBrief({ year, brief, zone, position });
+  const clock = input.clock ?? clockOfBrief({ year, brief, zone, position });
   const use = findUse(brief);
   const wrapped = year.kind !== 'actual';
   const { setC, outsideRange } = setPoints({ brief, dryBulbC: weather.dryBulbC, wrapped, heightM });
