@@ -57,6 +57,9 @@ function presentShown(
       peakDay: result.water.peakDay === null ? null : dayText(run.clock, result.water.peakDay),
     },
     electricity: result.electricity === null ? null : { ...result.electricity },
+    money: result.money === null ? null : { ...result.money, notes: [...result.money.notes] },
+    moneyNote: result.moneyNote,
+    carbon: result.carbon,
     cautions: cautionsOf({ kind, zone: station.zone, notes }),
   };
 }
