@@ -28,7 +28,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   const { brief, heightM } = input;
   const judged = judgeHours(input);
   const counted = countHours(judged, input);
-  const hardLimits = countHardLimits({ brief, heightM, demandHours: judged.demandHours });
+  const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
   const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
   const gates = gatesOf({ brief, coverage, hardLimits });
   return {
@@ -48,17 +48,17 @@ export function judgeYear(input: JudgeYearInput): RunResult {
 function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
   return {
     ledger: tallyLedger(judged),
-    severityKh: judged.demandHours.reduce((sum, { judgement }) => sum + judgement.shortfallK, 0),
+    severityKh: sumOf(judged.hours.shortfallK, judged.hours.count),
     worstSpell: tallyWorstSpell(judged, year),
     aloneHours: tallyAloneHours(judged, brief),
     supplyCurve: tallySupplyCurve(judged),
     ...tallyMonthHours(judged),
     scaled: scaleForMissing(judged),
     clampedLimitHours: countClamped(judged),
-    degreeHours: tallyDegreeHours(brief, judged.demandHours),
-    recirculatedHours: tallyRecirculatedHours(judged.demandHours),
+    degreeHours: tallyDegreeHours(brief, judged.hours),
+    recirculatedHours: tallyRecirculatedHours(judged.hours),
     reported: tallyReported(brief, () => judged.demandHours.map(suppliedAir)),
-    ...tallyPlant(judged.slots, judged.demandHours, judged.use),
+    ...tallyPlant(judged.slots, judged.hours, judged.use),
   };
 }
 
@@ -68,8 +68,17 @@ function suppliedAir({ hour, judgement }: JudgedHour): SuppliedAir {
   return { supplyC, supplyRatio, supplyAimC, loadFraction, pressurePa: outdoor.pressurePa };
 }
 
-function countClamped({ outsideRange, demandHours }: JudgedYear): number | null {
-  return outsideRange === null ? null : demandHours.filter(({ slot }) => outsideRange[slot] === 1).length;
+function sumOf(column: Float64Array, count: number): number {
+  let sum = 0;
+  for (let at = 0; at < count; at++) sum += column[at] ?? 0;
+  return sum;
+}
+
+function countClamped({ outsideRange, hours }: JudgedYear): number | null {
+  if (outsideRange === null) return null;
+  let clamped = 0;
+  for (let at = 0; at < hours.count; at++) clamped += outsideRange[hours.slot[at] ?? 0] ?? 0;
+  return clamped;
 }
 
 function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; exclusion: string | null }) {

@@ -1,7 +1,7 @@
 import type { Brief } from '../brief/brief.ts';
 import { hundredths } from '../conventions.ts';
-import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
 import { deratedC } from '../hour-classes/derating.ts';
+import type { HourColumns } from '../run/hour-columns.ts';
 
 /** A hard limit with the hours found over it. */
 export interface HardLimitCount {
@@ -19,14 +19,20 @@ export interface HardLimitCount {
 export function countHardLimits(input: {
   brief: Pick<Brief, 'hardLimits'>;
   heightM: number;
-  demandHours: readonly { hour: DemandHour; judgement: HourJudgement }[];
+  hours: Pick<HourColumns, 'count' | 'met' | 'setC' | 'uncappedShortfallK'>;
 }): HardLimitCount[] {
   return input.brief.hardLimits.map((limit) => {
     const tempC = deratedC(limit, input.heightM);
-    const over = input.demandHours.filter(
-      ({ hour, judgement }) =>
-        !judgement.met && hundredths(hour.setC + judgement.uncappedShortfallK) > hundredths(tempC),
-    );
-    return { tempC, derated: tempC !== limit.tempC, allowedHours: limit.hours, foundHours: over.length };
+    const foundHours = countOver(input.hours, hundredths(tempC));
+    return { tempC, derated: tempC !== limit.tempC, allowedHours: limit.hours, foundHours };
   });
+}
+
+function countOver(hours: Parameters<typeof countHardLimits>[0]['hours'], limitHundredths: number): number {
+  let over = 0;
+  for (let at = 0; at < hours.count; at++) {
+    if (hours.met[at] === 1) continue;
+    if (hundredths((hours.setC[at] ?? Number.NaN) + (hours.uncappedShortfallK[at] ?? 0)) > limitHundredths) over++;
+  }
+  return over;
 }

@@ -1,5 +1,5 @@
 import type { Brief } from '../brief/brief.ts';
-import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
+import type { HourColumns } from '../run/hour-columns.ts';
 
 /**
  * Degree hours that a turbine inlet gains, K h: the sum over open hours of max(0, t - max(t_s, floor)) (method 5), which is
@@ -7,12 +7,13 @@ import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
  */
 export function tallyDegreeHours(
   { limit }: Pick<Brief, 'limit'>,
-  demandHours: readonly { hour: DemandHour; judgement: HourJudgement }[],
+  hours: Pick<HourColumns, 'count' | 'dryBulbC' | 'supplyC'>,
 ): number | null {
   if (limit.kind !== 'turbine') return null;
-  return demandHours.reduce(
-    (sum, { hour, judgement }) =>
-      sum + Math.max(0, hour.outdoor.dryBulbC - Math.max(judgement.supply.tempC, limit.floorC)),
-    0,
-  );
+  let sum = 0;
+  for (let at = 0; at < hours.count; at++) {
+    const inletC = Math.max(hours.supplyC[at] ?? Number.NaN, limit.floorC);
+    sum += Math.max(0, (hours.dryBulbC[at] ?? Number.NaN) - inletC);
+  }
+  return sum;
 }

@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { tallyDegreeHours } from '#engine/water-energy/tally-turbine.ts';
 import { judgedAt } from '../../support/hour-at.ts';
+import { hoursLike } from '../../support/judged-hours.ts';
 import { presetBrief } from '../../support/presets.ts';
 
 /** Target and floor at 15 °C, effectiveness 0.9, frost lockout at 5 °C. */
@@ -63,11 +64,13 @@ describe('the inlet of a turbine', () => {
   });
 
   test('gains degree hours only by what runs', () => {
-    const hours = [
-      judgedAt(turbine, { dryBulbC: 25, wetBulbC: 12 }),
-      judgedAt(turbine, { dryBulbC: 40, wetBulbC: 22 }),
-      judgedAt(turbine, { dryBulbC: 30, wetBulbC: 29 }),
-    ].map((judgement) => ({ hour: judgement.hour, judgement }));
+    const hours = hoursLike(
+      [
+        judgedAt(turbine, { dryBulbC: 25, wetBulbC: 12 }),
+        judgedAt(turbine, { dryBulbC: 40, wetBulbC: 22 }),
+        judgedAt(turbine, { dryBulbC: 30, wetBulbC: 29 }),
+      ].map((judgement) => ({ hour: judgement.hour, judgement })),
+    );
     expect(tallyDegreeHours(turbine, hours)).toBeCloseTo(10 + 0.9 * 18, 3);
     expect(tallyDegreeHours(presetBrief('office'), hours)).toBeNull();
   });

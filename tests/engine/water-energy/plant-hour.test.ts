@@ -3,6 +3,7 @@ import type { Brief } from '#engine/brief/brief.ts';
 import { judgeSupplyAirHour } from '#engine/hour-classes/judge-supply-air-hour.ts';
 import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
 import { tallyPlant } from '#engine/water-energy/tally-plant.ts';
+import { hoursLike } from '../../support/judged-hours.ts';
 import { presetBrief } from '../../support/presets.ts';
 import { hourUnder } from '../hour-classes/random-hours.ts';
 
@@ -91,11 +92,11 @@ describe('the plant of a year', () => {
   test('adds up, and names the worst month, the peak day and the peak hour', () => {
     const { water, electricity } = tallyPlant(
       8760,
-      [
+      hoursLike([
         { slot: 0, plant: hour },
         { slot: 24 * 40, plant: { ...hour, backUpKw: 0.7 } },
         { slot: 24 * 40 + 1, plant: { ...hour, makeUpLitres: 5, kwh: 0.9, referenceKwh: 0.8 } },
-      ],
+      ]),
       COUNTED,
     );
     expect(water).toEqual({
@@ -114,14 +115,16 @@ describe('the plant of a year', () => {
   });
 
   test('without demand has no figure that would need a denominator', () => {
-    const { water, electricity } = tallyPlant(8760, [], COUNTED);
+    const { water, electricity } = tallyPlant(8760, hoursLike([]), COUNTED);
     expect(water).toMatchObject({ makeUpLitres: 0, litresPerKwh: null, worstMonth: null, peakDay: null });
     expect(electricity).toMatchObject({ kwh: 0, savedPct: null });
   });
 
   test('of a turbine inlet has water and no electricity', () => {
     const inlet = { ...hour, kwh: null, referenceKwh: null, backUpKw: 0 };
-    const { water, electricity } = tallyPlant(8760, [{ slot: 3, plant: inlet }], { countsElectricity: false });
+    const { water, electricity } = tallyPlant(8760, hoursLike([{ slot: 3, plant: inlet }]), {
+      countsElectricity: false,
+    });
     expect(electricity).toBeNull();
     expect(water.makeUpLitres).toBe(4);
   });
