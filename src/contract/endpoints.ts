@@ -19,6 +19,7 @@ export const endpoints = {
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
+  rescore: runs.rescore,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -5,6 +5,7 @@ import { demoWeatherFile } from '../../data/demo/demo-weather-file.ts';
 import { demoStations } from '../../data/demo/stations.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
 import { makePerson } from '../../server/features/accounts/make-person.ts';
+import { officeBrief } from '../../server/features/briefs/presets.ts';
 import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { addMember } from '../../server/features/teams/add-member.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
@@ -46,6 +47,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getMap: everyMember,
   getStationPlace: everyMember,
   getRunHours: everyMember,
+  rescore: everyMember,
 };
 
 const PASSWORD = 'a long pass phrase for tests';
@@ -97,6 +99,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
+  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
