@@ -7,8 +7,9 @@ import { sessionStands } from './features/accounts/account-store.ts';
 import { checkPassword } from './features/accounts/check-password.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
+import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
-import { queueRuns } from './features/runs/queue-runs.ts';
+import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
@@ -68,6 +69,7 @@ function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
   weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
+  briefsRoutes(router, deps, { queueRunsOfVersion });
   runsRoutes(router, deps, { threads });
   return router;
 }

@@ -1,5 +1,6 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
 import * as accounts from './accounts.ts';
+import * as briefs from './briefs.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as runs from './runs.ts';
 import * as weather from './weather.ts';
@@ -20,6 +21,14 @@ export const endpoints = {
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
   rescore: runs.rescore,
+  listPresets: briefs.listPresets,
+  listBriefs: briefs.listBriefs,
+  makeBrief: briefs.makeBrief,
+  listBriefVersions: briefs.listBriefVersions,
+  getBriefVersion: briefs.getBriefVersion,
+  compareBriefVersions: briefs.compareBriefVersions,
+  saveBriefVersion: briefs.saveBriefVersion,
+  previewBrief: briefs.previewBrief,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -8,6 +8,8 @@ export const policyNames = [
   'weather.withdraw',
   'weather.original',
   'runs.view',
+  'briefs.view',
+  'briefs.change',
 ] as const;
 
 export type PolicyName = (typeof policyNames)[number];

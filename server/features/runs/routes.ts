@@ -7,9 +7,9 @@ import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { byStation, judgeStation } from './judge-station.ts';
-import { makePreviewTurns } from './preview-turns.ts';
 import { presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
+import { makePreviewTurns } from './preview-turns.ts';
 import { readDraft } from './read-draft.ts';
 import { type RescoreThreads, rescore } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
@@ -25,8 +25,8 @@ export function runsRoutes(router: Router, deps: Deps, { threads }: { threads: R
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
-  mount(router, deps, getMap, async ({ params: { teamId, programmeId } }) => {
-    const brief = await briefOfProgramme(db, { teamId, programmeId });
+  mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
     const { briefVersionId } = brief;
     const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
     const stations = byStation(years).map((group) => judgeStation(brief.body, group));
@@ -39,8 +39,8 @@ export function runsRoutes(router: Router, deps: Deps, { threads }: { threads: R
     };
   });
 
-  mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId } }) => {
-    const brief = await briefOfProgramme(db, { teamId, programmeId });
+  mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId }, query }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
     const { briefVersionId } = brief;
     const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION, stationId });
     const [group] = byStation(years);
