@@ -54,7 +54,7 @@ describe('the range of a score', () => {
 
   test('moves what a limit holds by 1 K, whatever it is called, and leaves indices and adaptive limits alone', () => {
     const doubtsOf = (preset: string) => {
-      const brief = presetBrief(preset);
+      const brief = presetBrief(preset, { months: [7] });
       const { pairs } = scoreRange({ ...place, brief, humidityFrom: 'dew point' });
       return { brief, pairs };
     };
