@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import * as z from 'zod/mini';
 import { rankPlaces } from '#engine/ranking/rank-places.ts';
+import { heldCheck } from '../support/held-check.ts';
 import { casesOf } from '../support/published-values.ts';
 
 const numbers = z.array(z.number());
@@ -14,6 +15,7 @@ const placeOf = (id: string, criteria: readonly number[]) => ({
 
 describe('ranking against defined values', () => {
   test('S01 three alternatives share the weights as the areas of the weight line say', () => {
+    expect(heldCheck('S01')).toHaveLength(18);
     const cases = casesOf('S01', {
       alternative: z.string(),
       criteria: numbers,
@@ -48,6 +50,7 @@ describe('ranking against defined values', () => {
   });
 
   test('S02 scaled weights rank the same, and the first two swap where they tie', () => {
+    expect(heldCheck('S02')).toHaveLength(7);
     const cases = casesOf('S02', {
       ahead: numbers,
       behind: numbers,

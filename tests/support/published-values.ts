@@ -3,7 +3,14 @@ import * as z from 'zod/mini';
 
 const folder = new URL('../../data/checks/', import.meta.url);
 const CheckFile = z.object({
-  checks: z.array(z.object({ id: z.string(), source: z.string(), cases: z.array(z.record(z.string(), z.unknown())) })),
+  checks: z.array(
+    z.object({
+      id: z.string(),
+      what: z.string(),
+      source: z.string(),
+      cases: z.array(z.record(z.string(), z.unknown())),
+    }),
+  ),
 });
 
 /** Every check of data/checks, whatever its file. */
