@@ -44,7 +44,10 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
         </Link>
         <nav aria-label="Main" className="flex items-stretch gap-5">
           {programme ? (
-            <TopLink to={paths.map.to({ teamId: team.teamId, programmeId: programme.id })}>Map</TopLink>
+            <>
+              <TopLink to={paths.map.to({ teamId: team.teamId, programmeId: programme.id })}>Map</TopLink>
+              <TopLink to={paths.briefs.to({ teamId: team.teamId, programmeId: programme.id })}>Briefs</TopLink>
+            </>
           ) : null}
           <TopLink to={paths.weather.to(team.teamId)}>Weather</TopLink>
         </nav>
