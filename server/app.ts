@@ -9,6 +9,7 @@ import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
+import { methodRoutes } from './features/method/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
@@ -71,6 +72,7 @@ function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
   weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion });
   runsRoutes(router, deps, { threads });
+  methodRoutes(router, deps);
   return router;
 }
 

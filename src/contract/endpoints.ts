@@ -2,6 +2,7 @@
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import type { Endpoint } from './endpoint.ts';
+import * as method from './method.ts';
 import * as runs from './runs.ts';
 import * as weather from './weather.ts';
 
@@ -29,6 +30,7 @@ export const endpoints = {
   compareBriefVersions: briefs.compareBriefVersions,
   saveBriefVersion: briefs.saveBriefVersion,
   previewBrief: briefs.previewBrief,
+  getMethodChecks: method.getMethodChecks,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -10,6 +10,7 @@ export const policyNames = [
   'runs.view',
   'briefs.view',
   'briefs.change',
+  'method.view',
 ] as const;
 
 export type PolicyName = (typeof policyNames)[number];
