@@ -54,6 +54,10 @@ const routes: RouteObject[] = [
                   Component: (await import('../features/weather/weather-record-page.tsx')).WeatherRecordPage,
                 }),
               },
+              {
+                path: paths.method.pattern,
+                lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
+              },
               { path: '*', Component: NotFoundPage },
             ],
           },

@@ -50,6 +50,7 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
             </>
           ) : null}
           <TopLink to={paths.weather.to(team.teamId)}>Weather</TopLink>
+          <TopLink to={paths.method.to(team.teamId)}>Method</TopLink>
         </nav>
         <p className="ml-auto flex items-center text-body text-soft max-md:order-last max-md:ml-0 max-md:w-full max-md:pb-2 max-md:text-fine">
           <span>

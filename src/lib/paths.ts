@@ -31,6 +31,7 @@ export const paths = {
     pattern: 'weather/:fileId',
     to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}`,
   },
+  method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;
 
