@@ -10,11 +10,26 @@ import { calendarDayMs, civilLeadMin, type ResolvedClock } from './resolved-cloc
 
 const MIN_PER_DAY = 1440;
 
+type Schedule = Pick<Brief, 'months' | 'weekdays' | 'hours'>;
+
+/** Many stations share a clock: their slots are found once. */
+const remembered = new Map<string, Uint8Array>();
+const MOST_REMEMBERED = 500;
+
 /**
- * @returns one value per slot: 1 open, 0 closed
+ * @returns one value per slot: 1 open, 0 closed; read only, since years of one clock share it
  * @throws RangeError when the hours cannot be read, or are `daylight` and the clock has no place for it
  */
-export function openSlots(brief: Pick<Brief, 'months' | 'weekdays' | 'hours'>, clock: ResolvedClock): Uint8Array {
+export function openSlots(brief: Schedule, clock: ResolvedClock): Uint8Array {
+  const { months, weekdays, hours } = brief;
+  const key = JSON.stringify([months, weekdays, hours, clock]);
+  const open = remembered.get(key) ?? findOpenSlots(brief, clock);
+  if (remembered.size >= MOST_REMEMBERED) remembered.clear();
+  remembered.set(key, open);
+  return open;
+}
+
+function findOpenSlots(brief: Schedule, clock: ResolvedClock): Uint8Array {
   const hourOpens = openHours(brief, clock);
   const lead = civilLeadMin(clock);
   const open = new Uint8Array(clock.slots);

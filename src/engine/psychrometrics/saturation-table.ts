@@ -59,15 +59,18 @@ const FIRST_LOOK_PA = saturationTable[0] ?? 0;
 const LAST_LOOK_PA = saturationTable[2 * NODES - 4] ?? 0;
 
 /** Node at or before each pressure of the first look. */
-const firstLook = Uint16Array.from(
-  { length: Math.ceil(LOOKS_PER_DOUBLING * Math.log2(LAST_LOOK_PA / FIRST_LOOK_PA)) + 1 },
-  (_none, look) => {
+const firstLook = findFirstLooks();
+
+function findFirstLooks(): Uint16Array {
+  const looks = new Uint16Array(Math.ceil(LOOKS_PER_DOUBLING * Math.log2(LAST_LOOK_PA / FIRST_LOOK_PA)) + 1);
+  let node = 0;
+  for (let look = 0; look < looks.length; look++) {
     const pressurePa = FIRST_LOOK_PA * 2 ** (look / LOOKS_PER_DOUBLING);
-    let node = 0;
     while (node < NODES - 2 && (saturationTable[2 * node + 2] ?? 0) <= pressurePa) node++;
-    return node;
-  },
-);
+    looks[look] = node;
+  }
+  return looks;
+}
 
 /**
  * Temperature, °C, at which air with this vapour pressure is saturated: the table read backwards.

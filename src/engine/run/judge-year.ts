@@ -11,7 +11,8 @@ import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
 import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import { type JudgedHour, type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
+import type { HourColumns } from './hour-columns.ts';
+import { type JudgedYear, type JudgeYearInput, judgeHours, judgingWorkspace } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
 import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
@@ -20,13 +21,16 @@ import { type SuppliedAir, tallyReported } from './tally-reported.ts';
 
 export type { JudgeYearInput } from './judged-year.ts';
 
+/** Columns that every year is judged in, one after another: nothing of them is left in a result. */
+const workspace = judgingWorkspace();
+
 /**
  * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
  * @throws RangeError when the zone is not known, the columns are no year, or a schedule of daylight hours has no position
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
   const { brief, heightM } = input;
-  const judged = judgeHours(input);
+  const judged = judgeHours(input, { into: workspace });
   const counted = countHours(judged, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
   const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
@@ -57,17 +61,23 @@ function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
     clampedLimitHours: countClamped(judged),
     degreeHours: tallyDegreeHours(brief, judged.hours),
     recirculatedHours: tallyRecirculatedHours(judged.hours),
-    reported: tallyReported(brief, () => judged.demandHours.map(suppliedAir)),
+    reported: tallyReported(brief, () => suppliedAirs(judged.hours)),
     ...tallyPlant(judged.slots, judged.hours, judged.use),
   };
 }
 
-function suppliedAir({ hour, judgement }: JudgedHour): SuppliedAir {
-  const { supplyAimC, loadFraction, outdoor } = hour;
-  const { tempC: supplyC, humidityRatio: supplyRatio } = judgement.supply;
-  return { supplyC, supplyRatio, supplyAimC, loadFraction, pressurePa: outdoor.pressurePa };
+function* suppliedAirs(hours: HourColumns): Iterable<SuppliedAir> {
+  for (let at = 0; at < hours.count; at++) {
+    const ratio = hours.supplyRatio[at] ?? Number.NaN;
+    yield {
+      supplyC: hours.supplyC[at] ?? Number.NaN,
+      supplyRatio: Number.isNaN(ratio) ? null : ratio,
+      supplyAimC: hours.supplyAimC[at] ?? Number.NaN,
+      loadFraction: hours.loadFraction[at] ?? Number.NaN,
+      pressurePa: hours.pressurePa[at] ?? Number.NaN,
+    };
+  }
 }
-
 function sumOf(column: Float64Array, count: number): number {
   let sum = 0;
   for (let at = 0; at < count; at++) sum += column[at] ?? 0;

@@ -3,13 +3,13 @@ import { clockOfBrief } from '../clock/clock-of-brief.ts';
 import type { Position } from '../clock/daylight.ts';
 import { openSlots } from '../clock/open-slots.ts';
 import type { ResolvedClock } from '../clock/resolved-clock.ts';
-import { hundredths } from '../conventions.ts';
+import { hundredths, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
 import type { DemandHour } from '../hour-classes/demand-hour.ts';
 import { hourClasses } from '../hour-classes/hour-class.ts';
 import { loadFractionOf } from '../hour-classes/load-fraction.ts';
 import { setPoints } from '../hour-classes/set-points.ts';
 import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
-import { unpackYear, type YearColumns } from '../reduction/packed-columns.ts';
+import { unpackYear, type YearColumns, yearColumns } from '../reduction/packed-columns.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
 import { findUse, type Use } from './find-use.ts';
 import { type HourColumns, hourColumns } from './hour-columns.ts';
@@ -50,10 +50,20 @@ export interface JudgeYearInput {
   readonly clock?: ResolvedClock;
 }
 
+/** Columns with room for every slot of a year, used for one year after another. */
+export interface JudgingWorkspace {
+  readonly hours: HourColumns;
+  readonly weather: YearColumns;
+}
+
+export function judgingWorkspace(): JudgingWorkspace {
+  return { hours: hourColumns(SLOTS_PER_LEAP_YEAR), weather: yearColumns(SLOTS_PER_LEAP_YEAR) };
+}
+
 /** How hours are judged, where the caller has reason to say. */
 export interface JudgingWays {
-  /** Columns to write into, with room for every slot: they belong to the next year as soon as it is judged. */
-  readonly into?: HourColumns;
+  /** Columns to write into: they belong to the next year as soon as it is judged. */
+  readonly into?: JudgingWorkspace;
   /** Judge hour by hour as objects even where a whole year can be judged in one pass; the classes are the same. */
   readonly oneByOne?: boolean;
 }
@@ -61,14 +71,14 @@ export interface JudgingWays {
 /** The class of every slot, first match wins: closed, missing, idle, then what the brief's use says (method 5). */
 export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): JudgedYear {
   const { year, brief, zone, heightM, position = null } = input;
-  const weather = unpackYear(year.packed);
+  const weather = unpackYear(year.packed, ways.into?.weather);
   const slots = weather.dryBulbC.length;
   const clock = input.clock ?? clockOfBrief({ year, brief, zone, position });
   const use = findUse(brief);
   const wrapped = year.kind !== 'actual';
   const { setC, outsideRange } = setPoints({ brief, dryBulbC: weather.dryBulbC, wrapped, heightM });
   const { classCodes, known, demandSlots } = sortSlots(weather, openSlots(brief, clock), use.idleUpToC(brief));
-  const hours = ways.into ?? hourColumns(demandSlots.length);
+  const hours = ways.into?.hours ?? hourColumns(demandSlots.length);
   const asked = { ...weather, demandSlots, setC, loadFraction: loadFractionOf(brief, weather.dryBulbC) };
   const roomJudge = ways.oneByOne === true ? null : roomJudgeOf(brief);
   if (roomJudge !== null) judgeRoomHours(roomJudge, asked, hours);
