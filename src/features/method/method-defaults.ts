@@ -20,12 +20,11 @@ const NEEDED = {
   months: 'all',
   weekdays: 'all',
   hours: '0-24',
-  dTroomK: 5,
   caps: {},
   tolerance: {},
   gates: [],
 };
-const ROOM = { ...NEEDED, limit: { kind: 'fixed', tempC: 26 }, stages: ['direct'] };
+const ROOM = { ...NEEDED, dTroomK: 5, limit: { kind: 'fixed', tempC: 26 }, stages: ['direct'] };
 const TOWER = {
   ...NEEDED,
   limit: { kind: 'tower', coldC: 27, rangeK: 5, approachK: 4, exchangerK: 0 },
