@@ -13,6 +13,8 @@ import { mayChangeBriefs } from './brief-words.ts';
 import { bodyOfDraft, DraftForm, type DraftProblems, type DraftValues, draftOf, readDraftValues } from './draft.ts';
 import { DraftScopeProvider } from './draft-context.ts';
 import { DraftMargin } from './draft-margin.tsx';
+import { DraftYear } from './draft-year.tsx';
+import { useEffectOfDraft } from './use-effect-of-draft.ts';
 
 interface BriefEditorProps {
   readonly briefKey: BriefKey;
@@ -33,6 +35,7 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
   });
   const values = useWatch({ control: form.control });
   const reading = useMemo(() => readDraftValues(values), [values]);
+  const effect = useEffectOfDraft(briefKey, { record, reading });
   const save = useMutation({
     mutationFn: (draft: DraftValues) => {
       const params = { teamId: briefKey.teamId, programmeId: briefKey.programmeId, briefId: briefKey.briefId };
@@ -58,9 +61,9 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
           <div className="min-w-0 max-lg:sticky max-lg:top-0 max-lg:z-10 max-lg:row-start-1">
             <div className="grid gap-4 border-line bg-cloth max-lg:-mx-4 max-lg:border-b max-lg:px-4 max-lg:py-2 lg:sticky lg:top-4">
               <DraftMargin
-                briefKey={briefKey}
                 record={record}
                 reading={reading}
+                effect={effect}
                 mayChange={mayChange}
                 isSaving={save.isPending}
                 onUndo={() => {
@@ -79,6 +82,11 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
               ) : null}
             </div>
           </div>
+          {effect.now === undefined ? null : (
+            <div className="min-w-0 lg:col-span-2">
+              <DraftYear preview={effect.now} />
+            </div>
+          )}
         </form>
       </DraftScopeProvider>
     </FormProvider>

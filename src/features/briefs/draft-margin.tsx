@@ -1,56 +1,40 @@
-import { useState } from 'react';
 import type { BriefVersionRecord } from '../../contract/briefs.ts';
 import { briefDifference } from '../../engine/brief/brief-difference.ts';
 import { plural } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
-import type { BriefKey } from './brief-queries.ts';
 import { ChangeList } from './change-list.tsx';
 import type { DraftReading } from './draft.ts';
 import { EffectPanel } from './effect-panel.tsx';
-import { useEffectOfDraft, useRested } from './use-effect-of-draft.ts';
+import type { DraftEffect } from './use-effect-of-draft.ts';
 
 interface DraftMarginProps {
-  readonly briefKey: BriefKey;
   readonly record: BriefVersionRecord;
   readonly reading: DraftReading;
+  readonly effect: DraftEffect;
   readonly mayChange: boolean;
   readonly isSaving: boolean;
   readonly onUndo: () => void;
 }
 
 /** Beside the form: the effect on an example year, what changed against the saved version, and Save. */
-export function DraftMargin({ briefKey, record, reading, mayChange, isSaving, onUndo }: DraftMarginProps) {
-  const { stations, body: saved } = record;
-  const saveTo = record.newest + 1;
-  const [chosen, setChosen] = useState<string | null>(null);
-  const stationId = chosen ?? stations[0]?.id ?? null;
+export function DraftMargin({ record, reading, effect, mayChange, isSaving, onUndo }: DraftMarginProps) {
+  const { body: saved } = record;
   const draft = reading.ok ? reading.brief : null;
-  const rested = useRested(draft);
-  const { now, before } = useEffectOfDraft(briefKey, {
-    stationId,
-    draft: rested === null ? null : { ...rested },
-    saved,
-  });
   const changes = draft === null ? null : briefDifference(saved, draft);
   const faults = reading.ok ? 0 : Object.keys(reading.problems).length;
   return (
     <>
       <EffectPanel
-        stations={stations}
-        stationId={stationId}
-        onStation={setChosen}
+        stations={record.stations}
         savedVersion={record.version.version}
-        now={now.data}
-        before={before.data}
+        effect={effect}
         hasFaults={!reading.ok}
-        isStale={now.isPlaceholderData || (now.isFetching && now.data === undefined) || rested !== draft}
-        error={now.error}
       />
       {mayChange ? (
         <div className="grid gap-2">
           <div className="flex flex-wrap items-center gap-2">
             <Button type="submit" look="primary" busy={isSaving} disabled={changes?.length === 0}>
-              Save as version {saveTo}
+              Save as version {record.newest + 1}
             </Button>
             <Button onClick={onUndo} disabled={changes?.length === 0}>
               Undo changes

@@ -6,23 +6,18 @@ import type { BriefPreview } from '../../contract/briefs.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { hours, number, share } from '../../lib/format.ts';
 import { changeWords, exampleYearWords, previewVerdict } from './brief-words.ts';
+import type { DraftEffect } from './use-effect-of-draft.ts';
 
 interface EffectPanelProps {
   readonly stations: readonly { id: string; name: string }[];
-  readonly stationId: string | null;
-  readonly onStation: (stationId: string) => void;
   readonly savedVersion: number;
-  readonly now: BriefPreview | undefined;
-  readonly before: BriefPreview | undefined;
+  readonly effect: DraftEffect;
   readonly hasFaults: boolean;
-  /** Older than the form: the answer to it is on its way. */
-  readonly isStale: boolean;
-  readonly error: unknown;
 }
 
 /** What the draft makes of one example year, beside the form that changes it. */
-export function EffectPanel(props: EffectPanelProps) {
-  const { stations, stationId, onStation, hasFaults, isStale, now, error } = props;
+export function EffectPanel({ stations, savedVersion, effect, hasFaults }: EffectPanelProps) {
+  const { stationId, setStation, isStale, now, before, error } = effect;
   const id = useId();
   if (stationId === null) {
     return (
@@ -40,7 +35,7 @@ export function EffectPanel(props: EffectPanelProps) {
         <select
           id={id}
           value={stationId}
-          onChange={({ currentTarget }) => onStation(currentTarget.value)}
+          onChange={({ currentTarget }) => setStation(currentTarget.value)}
           className="min-h-8 min-w-0 max-w-full rounded-md border border-[#918a78] bg-paper px-2"
         >
           {stations.map((station) => (
@@ -53,7 +48,8 @@ export function EffectPanel(props: EffectPanelProps) {
       </div>
       {hasFaults ? (
         <p role="status" className="font-medium text-madder">
-          The draft has faults, said beside its fields. The effect follows once they are mended.
+          The draft has faults, said beside its fields. Until they are mended the effect is that of its last state
+          without one.
         </p>
       ) : null}
       {error === null ? null : (
@@ -61,16 +57,18 @@ export function EffectPanel(props: EffectPanelProps) {
           {errorSentence(error)}
         </p>
       )}
-      {now === undefined ? null : (
-        <div className={`grid gap-2 ${isStale || hasFaults ? 'opacity-60' : ''}`}>
-          <Effect {...props} now={now} />
-        </div>
-      )}
+      {now === undefined ? null : <Effect now={now} before={before} savedVersion={savedVersion} />}
     </section>
   );
 }
 
-function Effect({ now, before, savedVersion }: EffectPanelProps & { now: BriefPreview }) {
+interface EffectProps {
+  readonly now: BriefPreview;
+  readonly before: BriefPreview | undefined;
+  readonly savedVersion: number;
+}
+
+function Effect({ now, before, savedVersion }: EffectProps) {
   const id = useId();
   return (
     <>
@@ -111,11 +109,7 @@ function Effect({ now, before, savedVersion }: EffectPanelProps & { now: BriefPr
   );
 }
 
-function ClassTable({
-  now,
-  before,
-  savedVersion,
-}: Pick<EffectPanelProps, 'before' | 'savedVersion'> & { now: BriefPreview }) {
+function ClassTable({ now, before, savedVersion }: EffectProps) {
   const id = useId();
   const classes = barOrder.filter((each) => now.ledger.classes[each] > 0 || (before?.ledger.classes[each] ?? 0) > 0);
   return (
