@@ -108,7 +108,7 @@ export const importRules: readonly ImportRule[] = [
       ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
       ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts'],
-      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json'],
+      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
   },

@@ -1,4 +1,4 @@
-import { readFile } from 'node:fs/promises';
+import { promises } from 'node:fs';
 import { type MethodChecks, PublishedCheck } from '#contract/method.ts';
 
 const FOLDER = new URL('../../../data/checks/', import.meta.url);
@@ -29,5 +29,5 @@ export async function readPublishedChecks(): Promise<MethodChecks> {
 }
 
 function read(name: string): Promise<string> {
-  return readFile(new URL(name, FOLDER), 'utf8');
+  return promises.readFile(new URL(name, FOLDER), 'utf8');
 }
