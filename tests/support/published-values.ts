@@ -24,9 +24,3 @@ export function casesOf<Shape extends z.core.$ZodLooseShape>(id: string, shape: 
   if (check === undefined) throw new Error(`no check ${id} in data/checks`);
   return check.cases.map((each) => z.object(shape).parse(each));
 }
-
-/** Data rows of a table of data/checks, header left out. */
-export function rowsOf(file: string): readonly (readonly string[])[] {
-  const lines = readFileSync(new URL(file, folder), 'utf8').trim().split('\n');
-  return lines.slice(1).map((line) => line.split(','));
-}
