@@ -1,3 +1,4 @@
+import { Fragment, type ReactNode } from 'react';
 import { METHOD_VERSION } from '../../engine/conventions.ts';
 import { PageTitle } from '../../lib/page-title.tsx';
 import { MarkedText } from './marked-text.tsx';
@@ -5,12 +6,19 @@ import { MethodChecks } from './method-checks.tsx';
 import { ClassTable, DefaultsTable, GradeTable, ScoreTable } from './method-tables.tsx';
 import { cautions, type MethodSection, methodSections } from './method-text.ts';
 
+/** The tables that stand behind a section of the text. */
+const tables: Readonly<Record<string, { id: string; title: string; Table: () => ReactNode }>> = {
+  stages: { id: 'hour-classes', title: 'Hour classes', Table: ClassTable },
+  verdict: { id: 'score', title: 'Score', Table: ScoreTable },
+  place: { id: 'grade', title: 'Grade', Table: GradeTable },
+};
+
 const contents: readonly (readonly [id: string, title: string])[] = [
   ['cautions', 'Cautions'],
-  ...methodSections.map(({ id, title }) => [id, title] as const),
-  ['hour-classes', 'Hour classes'],
-  ['score', 'Score'],
-  ['grade', 'Grade'],
+  ...methodSections.flatMap(({ id, title }) => {
+    const table = tables[id];
+    return [[id, title] as const, ...(table === undefined ? [] : [[table.id, table.title] as const])];
+  }),
   ['defaults', 'Defaults'],
   ['checks', 'Checks'],
 ];
@@ -49,12 +57,15 @@ export function MethodPage() {
             ))}
           </ul>
         </section>
-        {methodSections.map((section) => (
-          <Section key={section.id} section={section} />
-        ))}
-        <ClassTable />
-        <ScoreTable />
-        <GradeTable />
+        {methodSections.map((section) => {
+          const Table = tables[section.id]?.Table;
+          return (
+            <Fragment key={section.id}>
+              <Section section={section} />
+              {Table === undefined ? null : <Table />}
+            </Fragment>
+          );
+        })}
         <DefaultsTable />
         <MethodChecks />
       </div>

@@ -1,6 +1,6 @@
 /**
  * What is computed, in words and plain typography: held as data so that the page and a printed method say the same.
- * In formulas `_{…}` lowers what it holds and nothing else is marked up. Long, since it is one text.
+ * In formulas `_{…}` lowers what it holds, `^{…}` raises it, and nothing else is marked up. Long, since it is one text.
  */
 export interface Formula {
   readonly name: string;
@@ -33,8 +33,8 @@ export const methodSections: readonly MethodSection[] = [
     paragraphs: [
       'From dry bulb t (°C), one of dew point, relative humidity or wet bulb, and station pressure p (Pa) come humidity ratio w (kg of water per kg of dry air), thermodynamic wet bulb and dew point, after ASHRAE Fundamentals, chapter 1.',
       'The wet bulb is found by one function, which everything calls: one Newton step from curves drawn beforehand. It is held to PsychroLib over the whole range.',
-      'Near 0 °C an ice and a water wet bulb both satisfy the equations. The water one is taken whenever the enthalpy is at least that of air saturated over water at 0 °C.',
-      'Below 0 °C a file’s humidity may stand for water or for ice. Each file is tested for it, and its record says which was found.',
+      'Near 0 °C an ice and a water wet bulb both satisfy the equations. The water one is taken whenever the enthalpy is at least that of air saturated over water at 0 °C.',
+      'Below 0 °C a file’s humidity may stand for water or for ice. Each file is tested for it, and its record says which was found.',
       'Temperatures, humidities and index points are compared on whole hundredths; a tie is met.',
     ],
     formulas: [
@@ -53,7 +53,7 @@ export const methodSections: readonly MethodSection[] = [
       { name: 'Depression', formula: 'd = t − t_{wb}', where: 'never negative' },
       {
         name: 'Pressure, where a file has none',
-        formula: 'p = 101325 (1 − 2.25577 · 10⁻⁵ z)^5.2559',
+        formula: 'p = 101325 (1 − 2.25577 · 10^{−5} z)^{5.2559}',
         where: 'z elevation of the station, m',
       },
     ],
