@@ -1,5 +1,5 @@
 /**
- * Re-scoring of many station-years with the round trip over HTTP, as a browser sees it: `npx tsx tests/bench/rescore.ts [STATIONS]`.
+ * Re-scoring of many station-years with the round trip over HTTP, as a browser sees it: `npx tsx tests/bench/rescore.ts [STATIONS [PRESET…]]`.
  * A cluster, a web server and threads of its own; clones of ten invented typical years. Times on standard error, one JSON line
  * on standard output. Nothing is asserted: what a busy machine takes proves nothing.
  */
@@ -29,8 +29,9 @@ const ACCOUNT = { email: 'bench@example.org', password: 'a long pass phrase for 
 const DATABASE = 'rescore_bench';
 const CLIMATES = 6;
 const WARM_ROUNDS = 3;
-const PRESETS = ['office', 'school', 'hall-recommended', 'process-water'];
-const stations = Number(process.argv[2] ?? 3000);
+const [, , stationsAsked = '3000', ...presetsAsked] = process.argv;
+const PRESETS = presetsAsked.length > 0 ? presetsAsked : ['office'];
+const stations = Number(stationsAsked);
 const say = (words: string) => process.stderr.write(`${words}\n`);
 
 const home = await mkdtemp(path.join(tmpdir(), 'muslin-bench-'));
@@ -98,6 +99,7 @@ async function measure(): Promise<void> {
     delay.reset();
     delay.enable();
     const begun = performance.now();
+    const cpuBefore = process.cpuUsage();
     const response = await fetch(`${web.url}/api/teams/${teamId}/programmes/${programmeId}/rescore`, {
       method: 'POST',
       headers: { ...headers, Cookie: cookie },
@@ -107,6 +109,8 @@ async function measure(): Promise<void> {
     const answer: { totalMs: number; loadMs: number; judged: unknown[] } = JSON.parse(text);
     const roundTripMs = performance.now() - begun;
     delay.disable();
+    const cpu = process.cpuUsage(cpuBefore);
+    const cpuMs = (cpu.user + cpu.system) / 1000;
     if (!response.ok) throw new Error(text.slice(0, 500));
     const { totalMs, loadMs, judged } = answer;
     return {
@@ -116,16 +120,17 @@ async function measure(): Promise<void> {
       judged: judged.length,
       megabytes: text.length / 1e6,
       stillMs: delay.max / 1e6,
+      cpuMs,
     };
   }
 
   const rounds: Record<string, unknown>[] = [];
   const tell = (what: string, round: Awaited<ReturnType<typeof ask>>) => {
-    const { judged, roundTripMs, loadMs, totalMs, stillMs, megabytes } = round;
+    const { judged, roundTripMs, loadMs, totalMs, stillMs, megabytes, cpuMs } = round;
     const wireMs = roundTripMs - totalMs;
     say(
       `${what.padEnd(26)} ${judged} years: round trip ${roundTripMs.toFixed(0)} ms = weather ${loadMs.toFixed(0)} + judging ${(totalMs - loadMs).toFixed(0)} + wire ${wireMs.toFixed(0)}; ` +
-        `${(((totalMs - loadMs) * 1000) / judged).toFixed(0)} us a year; web stood still ${stillMs.toFixed(0)} ms at most; ${megabytes.toFixed(1)} MB`,
+        `${(((totalMs - loadMs) * 1000) / judged).toFixed(0)} us a year; CPU of all threads ${((cpuMs * 1000) / judged).toFixed(0)} us a year; web stood still ${stillMs.toFixed(0)} ms at most; ${megabytes.toFixed(1)} MB`,
     );
     rounds.push({ what, ...round });
   };
