@@ -59,7 +59,7 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
             <BriefFieldsForm mayChange={mayChange} />
           </div>
           <div className="min-w-0 max-lg:sticky max-lg:top-0 max-lg:z-10 max-lg:row-start-1">
-            <div className="grid gap-4 border-line bg-cloth max-lg:-mx-4 max-lg:border-b max-lg:px-4 max-lg:py-2 lg:sticky lg:top-4">
+            <div className="grid gap-4 border-line max-lg:-mx-4 max-lg:bg-cloth max-lg:border-b max-lg:px-4 max-lg:py-2 lg:sticky lg:top-4">
               <DraftMargin
                 record={record}
                 reading={reading}
