@@ -108,3 +108,12 @@ export type BriefBody = z.infer<typeof BriefBody>;
  */
 export const BriefDraft = z.record(z.string(), z.unknown());
 export type BriefDraft = z.infer<typeof BriefDraft>;
+
+/** The schema of a form that holds a draft; `problemsOf` answers a message for each path that is at fault, dots throughout. */
+export function checkedDraft(problemsOf: (draft: BriefDraft) => Readonly<Record<string, string>>) {
+  return BriefDraft.check((context) => {
+    for (const [path, message] of Object.entries(problemsOf(context.value))) {
+      context.issues.push({ code: 'custom', input: context.value, path: path.split('.'), message });
+    }
+  });
+}

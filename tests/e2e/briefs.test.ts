@@ -87,7 +87,7 @@ test('a planner makes a brief from the clinic preset, sees what a cooler room do
   expect(draft).toBeLessThan(before);
   await page.getByText('1 field changed against version 1.').waitFor();
 
-  await page.getByRole('button', { name: 'Save as version 2' }).click();
+  await page.getByRole('button', { name: 'Save version 2' }).click();
   await page.getByText('Version 2 is saved.').waitFor(SOON);
   const versions = page.getByRole('table', { name: 'Versions of the brief, newest first' });
   await versions.getByRole('row', { name: /^Version 2/ }).waitFor();

@@ -68,7 +68,7 @@ function Brief({ briefKey, versions, newest }: BriefProps) {
         </p>
       </header>
       {saved === newest.version ? (
-        <Notice live>Version {saved} is saved. Its scores follow on the map as they are computed.</Notice>
+        <Notice live>Version {saved} is saved. Its scores follow on the map by themselves.</Notice>
       ) : null}
       {newest.version > base ? (
         <Notice

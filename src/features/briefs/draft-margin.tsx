@@ -34,7 +34,7 @@ export function DraftMargin({ record, reading, effect, mayChange, isSaving, onUn
         <div className="grid gap-2">
           <div className="flex flex-wrap items-center gap-2">
             <Button type="submit" look="primary" busy={isSaving} disabled={changes?.length === 0}>
-              Save as version {record.newest + 1}
+              Save version {record.newest + 1}
             </Button>
             <Button onClick={onUndo} disabled={changes?.length === 0}>
               Undo changes

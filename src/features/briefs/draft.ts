@@ -1,6 +1,5 @@
 /** A brief as it stands in the form, and how it becomes a body and back. Pure; the engine alone says what is wrong. */
-import * as z from 'zod/mini';
-import type { BriefDraft } from '../../contract/brief-body.ts';
+import { type BriefDraft, checkedDraft } from '../../contract/brief-body.ts';
 import type { Brief } from '../../engine/brief/brief.ts';
 import { type BriefField, fieldsOfLimit } from '../../engine/brief/brief-fields.ts';
 import { readBrief } from '../../engine/brief/brief-from-preset.ts';
@@ -86,12 +85,9 @@ export function readDraftValues(values: DraftValues): DraftReading {
 const dotted = (path: string): string => path.replaceAll(/\[(\d+)\]/g, '.$1');
 
 /** The form's schema: it holds what the engine holds, so that nothing is sent that would be refused. */
-export const DraftForm = z.record(z.string(), z.unknown()).check((context) => {
-  const reading = readDraftValues(context.value);
-  if (reading.ok) return;
-  for (const [path, message] of Object.entries(reading.problems)) {
-    context.issues.push({ code: 'custom', input: context.value, path: path.split('.'), message });
-  }
+export const DraftForm = checkedDraft((values) => {
+  const reading = readDraftValues(values);
+  return reading.ok ? {} : reading.problems;
 });
 
 /** The value at a path such as `caps.roomRhPct`. */

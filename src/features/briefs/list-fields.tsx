@@ -120,7 +120,7 @@ export function HardLimitsField() {
   );
   return (
     <fieldset className="min-w-0 border-t border-line py-2">
-      <legend className="float-left w-full font-medium">Hard limits, as gates</legend>
+      <legend className="float-left w-full font-medium">Hard limits, each a gate</legend>
       <ul className="clear-both grid gap-2 pt-1">
         {limits.map((entry, index) => {
           const path = `hardLimits.${index}`;
