@@ -15,6 +15,10 @@ const VAPOUR_KJ_PER_KG_K = 1.86;
 const LATENT_HEAT_KJ_PER_KG = 2501;
 /** Ratio of the molar masses of water and dry air (eq. 20). */
 const MASS_RATIO = 0.621945;
+/** Factor of the humidity ratio in the volume (eq. 26). */
+const VOLUME_FACTOR = 1.607858;
+/** Gas constant of dry air, J/(kg K) (eq. 1). */
+const DRY_AIR_J_PER_KG_K = 287.042;
 /** PsychroLib's floor. */
 const DRIEST_HUMIDITY_RATIO = 1e-7;
 
@@ -109,5 +113,6 @@ export function enthalpyKJPerKg(dryBulbC: number, humidityRatio: number): number
 
 /** Volume, m³ per kg of dry air (eq. 26). */
 export function volumeM3PerKg(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
-  return psychrolib.GetMoistAirVolume(dryBulbC, humidityRatio, pressurePa);
+  const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
+  return (DRY_AIR_J_PER_KG_K * (dryBulbC + ZERO_CELSIUS_K) * (1 + VOLUME_FACTOR * ratio)) / pressurePa;
 }

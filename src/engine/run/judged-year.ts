@@ -16,6 +16,7 @@ import { type HourColumns, hourColumns } from './hour-columns.ts';
 import { addHour, hourAt, type JudgedHour } from './judged-hour.ts';
 import { judgeRoomHours } from './room/judge-room-hours.ts';
 import { roomJudgeOf } from './room/room-judge-of.ts';
+import { wetBulbsOfYear } from './room/wet-bulbs-of-year.ts';
 
 export type { JudgedHour } from './judged-hour.ts';
 
@@ -81,8 +82,10 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   const hours = ways.into?.hours ?? hourColumns(demandSlots.length);
   const asked = { ...weather, demandSlots, setC, loadFraction: loadFractionOf(brief, weather.dryBulbC) };
   const roomJudge = ways.oneByOne === true ? null : roomJudgeOf(brief);
-  if (roomJudge !== null) judgeRoomHours(roomJudge, asked, hours);
-  else judgeOneByOne(asked, { brief, use }, hours);
+  if (roomJudge !== null) {
+    const wetBulbs = wetBulbsOfYear({ packed: year.packed, weather }, brief.effIndirect);
+    judgeRoomHours(roomJudge, { ...asked, ...wetBulbs }, hours);
+  } else judgeOneByOne(asked, { brief, use }, hours);
   for (let at = 0; at < hours.count; at++) classCodes[hours.slot[at] ?? 0] = hours.classCode[at] ?? 0;
   let asObjects: readonly JudgedHour[] | null = null;
   return {

@@ -9,11 +9,8 @@ import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { gainsEnough } from '../../hour-classes/short-from.ts';
 import { vapourPressurePa, volumeM3PerKg } from '../../psychrometrics/moist-air.ts';
 import { tabledSaturationPa } from '../../psychrometrics/saturation-table.ts';
-import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
-import { DRY_AIR_KJ_PER_KG_K, fanRiseK } from '../../stages/stage-path.ts';
-import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { dampReasons, type HourColumns, runningStages } from '../hour-columns.ts';
-import { capsHold, type RoomHour, roomHour, roomVapourPa, supplyVapourPa } from './room-hour.ts';
+import { capsHold, meetCaps, type RoomHour, roomHour } from './room-hour.ts';
 import type { RoomPlan } from './room-plan.ts';
 import {
   evaporatedAt,
@@ -58,6 +55,9 @@ export interface RoomYear {
   readonly pressurePa: Float64Array;
   readonly setC: Float64Array;
   readonly loadFraction: (dryBulbC: number) => number;
+  /** Wet bulb of each slot, °C, and the one after an indirect stage at full effect. */
+  readonly wetBulbC: Float32Array;
+  readonly secondWetBulbC: Float32Array;
 }
 
 /** Judges every demand hour of a year and writes it into the columns, from their beginning. */
@@ -78,17 +78,18 @@ function meetHour({ plan, hour }: RoomJudge, year: RoomYear, slot: number): void
   hour.dryBulbC = year.dryBulbC[slot] ?? Number.NaN;
   hour.humidityRatio = year.humidityRatio[slot] ?? Number.NaN;
   hour.pressurePa = year.pressurePa[slot] ?? Number.NaN;
+  hour.wetBulbC = year.wetBulbC[slot] ?? Number.NaN;
+  hour.secondWetBulbC = year.secondWetBulbC[slot] ?? Number.NaN;
   hour.volumeM3PerKg = volumeM3PerKg(hour.dryBulbC, hour.humidityRatio, hour.pressurePa);
   hour.setC = year.setC[slot] ?? Number.NaN;
   hour.loadFraction = year.loadFraction(hour.dryBulbC);
   hour.supplyAimC = hour.setC - plan.dTroomK * hour.loadFraction;
   hour.roomRiseK = hour.setC - hour.supplyAimC;
-  hour.airC = hour.dryBulbC + fanRiseK(plan.fanWPerLs[AIR] ?? 0, hour.volumeM3PerKg);
+  hour.airC = hour.dryBulbC + (plan.riseKPerVolume[AIR] ?? 0) * hour.volumeM3PerKg;
   hour.aimHundredths = hundredths(hour.supplyAimC);
-  hour.roomVapourAtAimPa = roomVapourPa(plan, hour, hour.supplyAimC);
-  hour.supplyVapourAtAimPa = supplyVapourPa(plan, hour.supplyAimC);
+  meetCaps(plan, hour);
   hour.frozen = hundredths(hour.dryBulbC) <= plan.freezeHundredths;
-  hour.dampOutside = !hour.frozen && !capsHold(plan, hour, hour.supplyAimC, hour.humidityRatio);
+  hour.dampOutside = !hour.frozen && !(hour.humidityRatio < hour.ratioUnderCaps);
   hour.wet = false;
 }
 
@@ -114,7 +115,7 @@ function lineAt(lines: readonly SupplyLine[], nth: number): SupplyLine {
   return line;
 }
 
-/** Cut-in, start temperature and the ceiling of outdoor humidity (method 4); the wet bulb is found here, once. */
+/** Cut-in, start temperature and the ceiling of outdoor humidity (method 4). */
 function waterMayRun(plan: RoomPlan, hour: RoomHour): boolean {
   const roomByAirC = hour.airC + plan.dTroomK * hour.loadFraction;
   if (hundredths(roomByAirC) < plan.startHundredths) return false;
@@ -122,7 +123,6 @@ function waterMayRun(plan: RoomPlan, hour: RoomHour): boolean {
     const vapourPa = vapourPressurePa(hour.humidityRatio, hour.pressurePa);
     if (!(vapourPa < plan.outdoorShare * tabledSaturationPa(hour.dryBulbC))) return false;
   }
-  hour.wetBulbC = wetBulbC(hour.dryBulbC, hour.humidityRatio, hour.pressurePa);
   return hundredths(hour.dryBulbC) - hundredths(hour.wetBulbC) >= plan.cutInHundredths;
 }
 
@@ -225,18 +225,17 @@ function writeStage(
 
 /** Water and electricity of the hour, method 6, per kW of design load: `supplyAirPlantHour` on columns. */
 function writePlant({ plan, hour }: RoomJudge, into: HourColumns, at: number): void {
-  const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * plan.dTroomK);
-  const airflowM3PerS = airflowKgPerS * hour.volumeM3PerKg;
-  const evaporatedLitres = airflowKgPerS * (into.evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
+  const volume = hour.volumeM3PerKg;
+  const evaporatedLitres = plan.litresPerRatio * (into.evaporatedKgPerKg[at] ?? 0);
   const carried = into.carriedShare[at] ?? 0;
   const backUpKw = hour.loadFraction * (1 - carried);
   const running = into.running[at] ?? 0;
   const pumpKw = running === AIR ? 0 : plan.pumpKwPerKw * hour.loadFraction;
   const rests = plan.economy && into.airMeets[at] === 1;
   into.evaporatedLitres[at] = evaporatedLitres;
-  into.makeUpLitres[at] = evaporatedLitres + evaporatedLitres / (plan.cycles - 1);
+  into.makeUpLitres[at] = evaporatedLitres * plan.makeUpPerEvaporated;
   into.coolingKwh[at] = hour.loadFraction * carried;
-  into.kwh[at] = (plan.fanWPerLs[running] ?? 0) * airflowM3PerS + pumpKw + backUpKw / plan.cop;
-  into.referenceKwh[at] = (plan.fanWPerLs[AIR] ?? 0) * airflowM3PerS + (rests ? 0 : hour.loadFraction / plan.cop);
+  into.kwh[at] = (plan.fanKwhPerVolume[running] ?? 0) * volume + pumpKw + backUpKw * plan.kwhPerKwh;
+  into.referenceKwh[at] = (plan.fanKwhPerVolume[AIR] ?? 0) * volume + (rests ? 0 : hour.loadFraction * plan.kwhPerKwh);
   into.backUpKw[at] = backUpKw;
 }

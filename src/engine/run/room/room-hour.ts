@@ -6,6 +6,9 @@ import { vapourPressurePa } from '../../psychrometrics/moist-air.ts';
 import { tabledSaturationPa } from '../../psychrometrics/saturation-table.ts';
 import type { RoomPlan } from './room-plan.ts';
 
+/** Ratio of the molar masses of water and dry air. */
+const MASS_RATIO = 0.621945;
+
 export interface RoomHour {
   dryBulbC: number;
   humidityRatio: number;
@@ -26,9 +29,15 @@ export interface RoomHour {
   dampOutside: boolean;
   /** The wet stages may run, and their lines are laid. */
   wet: boolean;
-  /** Most vapour that the caps allow where the supply is no colder than it need be, Pa: in the room, in the supply. */
+  /** Wet bulb after an indirect stage at full effect. */
+  secondWetBulbC: number;
+  /** Supplies with less moisture than this keep the caps where they are no colder than they need be, kg/kg. */
+  ratioUnderCaps: number;
+  /** Most vapour that the caps allow there, Pa, in the room and in the supply, and the temperatures that they are for. */
   roomVapourAtAimPa: number;
   supplyVapourAtAimPa: number;
+  capsOfSetC: number;
+  capsOfAimC: number;
 }
 
 export function roomHour(): RoomHour {
@@ -48,8 +57,12 @@ export function roomHour(): RoomHour {
     frozen: false,
     dampOutside: false,
     wet: false,
+    secondWetBulbC: none,
+    ratioUnderCaps: none,
     roomVapourAtAimPa: none,
     supplyVapourAtAimPa: none,
+    capsOfSetC: none,
+    capsOfAimC: none,
   };
 }
 
@@ -65,11 +78,32 @@ export function supplyVapourPa(plan: RoomPlan, supplyC: number): number {
   return Math.min(plan.supplyVapourPa, plan.supplyShare * tabledSaturationPa(supplyC));
 }
 
+/** Works out what the caps allow where the supply is no colder than it need be; the same temperatures keep what they had. */
+export function meetCaps(plan: RoomPlan, hour: RoomHour): void {
+  if (hour.setC !== hour.capsOfSetC || hour.supplyAimC !== hour.capsOfAimC) {
+    hour.capsOfSetC = hour.setC;
+    hour.capsOfAimC = hour.supplyAimC;
+    hour.roomVapourAtAimPa = roomVapourPa(plan, hour, hour.supplyAimC);
+    hour.supplyVapourAtAimPa = supplyVapourPa(plan, hour.supplyAimC);
+  }
+  const inRoom = ratioOf(hour.roomVapourAtAimPa, hour.pressurePa) - plan.dwRoomKgKg;
+  if (hour.supplyVapourAtAimPa === Number.POSITIVE_INFINITY) hour.ratioUnderCaps = inRoom;
+  else hour.ratioUnderCaps = Math.min(inRoom, ratioOf(hour.supplyVapourAtAimPa, hour.pressurePa));
+}
+
+/** Humidity ratio of a pressure of vapour; without end where that passes the pressure of the air. */
+function ratioOf(vapourPa: number, pressurePa: number): number {
+  return vapourPa < pressurePa ? (MASS_RATIO * vapourPa) / (pressurePa - vapourPa) : Number.POSITIVE_INFINITY;
+}
+
+/** A stage run at just the share that it needs ends here or a rounding error above. */
+const ROUNDING_K = 1e-9;
+
 /** Whether the caps hold on a supply: on the supply itself and on the room, the supply no colder than it need be (method 4). */
 export function capsHold(plan: RoomPlan, hour: RoomHour, supplyC: number, supplyRatio: number): boolean {
-  const colder = supplyC <= hour.supplyAimC;
+  if (supplyC <= hour.supplyAimC + ROUNDING_K) return supplyRatio < hour.ratioUnderCaps;
   const roomPa = vapourPressurePa(supplyRatio + plan.dwRoomKgKg, hour.pressurePa);
-  if (!(roomPa < (colder ? hour.roomVapourAtAimPa : roomVapourPa(plan, hour, supplyC)))) return false;
-  const supplyPa = vapourPressurePa(supplyRatio, hour.pressurePa);
-  return supplyPa < (colder ? hour.supplyVapourAtAimPa : supplyVapourPa(plan, supplyC));
+  if (!(roomPa < roomVapourPa(plan, hour, supplyC))) return false;
+  if (hour.supplyVapourAtAimPa === Number.POSITIVE_INFINITY) return true;
+  return vapourPressurePa(supplyRatio, hour.pressurePa) < supplyVapourPa(plan, supplyC);
 }

@@ -6,6 +6,8 @@
 import type { Brief, Stage } from '../../brief/brief.ts';
 import { hundredths } from '../../conventions.ts';
 import { saturationPressurePa } from '../../psychrometrics/moist-air.ts';
+import { DRY_AIR_KJ_PER_KG_K, fanRiseK } from '../../stages/stage-path.ts';
+import { makeUpLitres, SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { runningStages } from '../hour-columns.ts';
 
 export interface RoomPlan {
@@ -25,17 +27,21 @@ export interface RoomPlan {
   readonly stages: readonly number[];
   /** All of them and air, as bits. */
   readonly allAlone: number;
-  /** W per L/s by position in `runningStages`. */
-  readonly fanWPerLs: Float64Array;
+  /** Fan rise, K per m³ of air and kg of dry air, and fan electricity, kWh per m³/kg of the hour: by position in `runningStages`. */
+  readonly riseKPerVolume: Float64Array;
+  readonly fanKwhPerVolume: Float64Array;
   readonly effDirect: number;
   readonly effIndirect: number;
   readonly effDewPoint: number;
   readonly k: number;
   readonly dTroomK: number;
   readonly dwRoomKgKg: number;
-  readonly cycles: number;
+  /** Litres in an hour per kg evaporated and kg of dry air, with a design load of 1 kW. */
+  readonly litresPerRatio: number;
+  /** Make-up per litre evaporated: 1 + 1 / (C - 1). */
+  readonly makeUpPerEvaporated: number;
   readonly pumpKwPerKw: number;
-  readonly cop: number;
+  readonly kwhPerKwh: number;
   readonly economy: boolean;
 }
 
@@ -43,6 +49,8 @@ export interface RoomPlan {
 export function roomPlan(brief: Brief): RoomPlan {
   const { caps, fanWPerLs: fan } = brief;
   const stages = brief.stages.map(positionOf);
+  const fans = Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0);
+  const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * brief.dTroomK);
   return {
     freezeHundredths: hundredths(brief.freezeLockoutC),
     cutInHundredths: hundredths(brief.cutInDepressionK),
@@ -57,16 +65,18 @@ export function roomPlan(brief: Brief): RoomPlan {
     onOff: brief.control === 'on-off',
     stages,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),
-    fanWPerLs: Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0),
+    riseKPerVolume: fans.map((wattPerLs) => fanRiseK(wattPerLs, 1)),
+    fanKwhPerVolume: fans.map((wattPerLs) => wattPerLs * airflowKgPerS),
     effDirect: brief.effDirect,
     effIndirect: brief.effIndirect,
     effDewPoint: brief.effDewPoint,
     k: brief.k,
     dTroomK: brief.dTroomK,
     dwRoomKgKg: brief.dwRoomKgKg,
-    cycles: brief.cycles,
+    litresPerRatio: airflowKgPerS * SECONDS_PER_HOUR,
+    makeUpPerEvaporated: makeUpLitres(1, brief),
     pumpKwPerKw: brief.pumpKwPerKw,
-    cop: brief.reference.cop,
+    kwhPerKwh: 1 / brief.reference.cop,
     economy: brief.reference.economy,
   };
 }

@@ -5,15 +5,14 @@
  *   t_s = dry - x fall,   w_s = w   or   w_s = (top - 1.006 t') / (bottom + 1.86 t'),  t' = t_s - fan rise
  *
  * with top = L(x) Ws(x) + 1.006 x and bottom = 2501 - c x (2830 over ice) of the wet bulb x: ASHRAE Fundamentals 2017 ch. 1
- * eq. 33 and 35, as in `wet-bulb-line.ts`.
+ * eq. 33 and 35, as in `wet-bulb-line.ts`. By the balance that the wet bulb solves (`wet-surface.ts`) top is h + fusion w - c w x of
+ * the air that enters, so that no saturation pressure is looked up.
  */
 
 import { dewPointC, vapourPressurePa } from '../../psychrometrics/moist-air.ts';
 import { tabledDewPointC, tabledSaturationPa, tabledSlopePaPerK } from '../../psychrometrics/saturation-table.ts';
-import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { ICE, WATER } from '../../psychrometrics/wet-surface.ts';
 import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
-import { fanRiseK } from '../../stages/stage-path.ts';
 import { runningStages } from '../hour-columns.ts';
 import { capsHold, type RoomHour } from './room-hour.ts';
 import type { RoomPlan } from './room-plan.ts';
@@ -21,6 +20,7 @@ import type { RoomPlan } from './room-plan.ts';
 const MASS_RATIO = 0.621945;
 const AIR_KJ_PER_KG_K = 1.006;
 const VAPOUR_KJ_PER_KG_K = 1.86;
+const LATENT_KJ_PER_KG = 2501;
 
 const DIRECT = runningStages.indexOf('direct');
 const INDIRECT = runningStages.indexOf('indirect');
@@ -60,14 +60,14 @@ export function supplyLine(stage: number): SupplyLine {
 /** Fills in a line for an hour whose wet bulb is known. */
 export function layLine(line: SupplyLine, plan: RoomPlan, hour: RoomHour): void {
   const { dryBulbC, wetBulbC: wetC } = hour;
-  line.riseK = fanRiseK(plan.fanWPerLs[line.stage] ?? 0, hour.volumeM3PerKg);
+  line.riseK = (plan.riseKPerVolume[line.stage] ?? 0) * hour.volumeM3PerKg;
   line.dryC = dryBulbC + line.riseK;
   line.waterC = wetC;
   line.moist = false;
   line.firstWater = 0;
   if (line.stage === DIRECT) {
     line.fallK = plan.effDirect * (dryBulbC - wetC);
-    wetLine(line, wetC, hour.pressurePa);
+    wetLine(line, hour, dryBulbC, wetC);
   } else if (line.stage === INDIRECT) {
     line.fallK = indirectFallK(plan, hour);
   } else if (line.stage === DEWPOINT) {
@@ -77,7 +77,7 @@ export function layLine(line: SupplyLine, plan: RoomPlan, hour: RoomHour): void 
   }
 }
 
-function indirectFallK(plan: RoomPlan, hour: RoomHour): number {
+export function indirectFallK(plan: RoomPlan, hour: RoomHour): number {
   return Math.max(0, plan.effIndirect * (hour.dryBulbC - hour.wetBulbC));
 }
 
@@ -85,20 +85,20 @@ function indirectFallK(plan: RoomPlan, hour: RoomHour): number {
 function layTwoStage(line: SupplyLine, plan: RoomPlan, hour: RoomHour): void {
   const firstFallK = indirectFallK(plan, hour);
   const betweenC = hour.dryBulbC - firstFallK;
-  const betweenWetC = wetBulbC(betweenC, hour.humidityRatio, hour.pressurePa);
+  const betweenWetC = hour.secondWetBulbC;
   line.dryC = betweenC + line.riseK;
   line.fallK = plan.effDirect * (betweenC - betweenWetC);
   line.firstWater = secondaryWaterKgPerKg(firstFallK, plan.k);
   line.waterC = Math.max(hour.wetBulbC, betweenWetC);
-  wetLine(line, betweenWetC, hour.pressurePa);
+  wetLine(line, hour, betweenC, betweenWetC);
 }
 
-function wetLine(line: SupplyLine, wetC: number, pressurePa: number): void {
-  const saturationPa = tabledSaturationPa(wetC);
-  const saturated = (MASS_RATIO * saturationPa) / (pressurePa - saturationPa);
+function wetLine(line: SupplyLine, hour: RoomHour, entersC: number, wetC: number): void {
+  const { humidityRatio: w } = hour;
   const surface = wetC >= 0 ? WATER : ICE;
+  const enthalpy = AIR_KJ_PER_KG_K * entersC + w * (LATENT_KJ_PER_KG + VAPOUR_KJ_PER_KG_K * entersC);
   line.moist = true;
-  line.top = (surface.latentKJPerKg + surface.latentSlopeKJPerKgK * wetC) * saturated + AIR_KJ_PER_KG_K * wetC;
+  line.top = enthalpy + w * (surface.fusionKJPerKg - surface.surfaceKJPerKgK * wetC);
   line.bottom = surface.latentKJPerKg - surface.surfaceKJPerKgK * wetC;
 }
 
@@ -147,7 +147,8 @@ interface RhCap {
   readonly addedRatio: number;
 }
 
-const NEWTON_STEPS = 3;
+/** The chord lands within a kelvin; two steps leave some 0.00001 K. */
+const NEWTON_STEPS = 2;
 
 /**
  * The supply temperature at which a cap on relative humidity is just reached; -Infinity when full wetting keeps it. Vapour less
@@ -165,9 +166,7 @@ function edgeC(line: SupplyLine, hour: RoomHour, cap: RhCap): number {
   if (wetExcess < 0) return Number.NEGATIVE_INFINITY;
   const dryExcess = excessPa(line, hour, cap, line.dryC);
   let x = wetC + ((line.dryC - wetC) * wetExcess) / (wetExcess - dryExcess);
-  for (let step = 0; step < NEWTON_STEPS; step++) {
-    x -= excessPa(line, hour, cap, x) / excessSlope(line, hour, cap, x);
-  }
+  for (let step = 0; step < NEWTON_STEPS; step++) x = nearerEdgeC(line, hour, cap, x);
   return x;
 }
 
@@ -175,19 +174,22 @@ function edgeC(line: SupplyLine, hour: RoomHour, cap: RhCap): number {
 function excessPa(line: SupplyLine, hour: RoomHour, cap: RhCap, supplyC: number): number {
   const leavingC = supplyC - line.riseK;
   const ratio = (line.top - AIR_KJ_PER_KG_K * leavingC) / (line.bottom + VAPOUR_KJ_PER_KG_K * leavingC);
-  const vapourPa = vapourPressurePa(Math.max(ratio, hour.humidityRatio) + cap.addedRatio, hour.pressurePa);
-  return vapourPa - cap.share * tabledSaturationPa(supplyC + cap.riseK);
+  return (
+    vapourPressurePa(ratio + cap.addedRatio, hour.pressurePa) - cap.share * tabledSaturationPa(supplyC + cap.riseK)
+  );
 }
 
-/** Its slope, Pa/K. */
-function excessSlope(line: SupplyLine, hour: RoomHour, cap: RhCap, supplyC: number): number {
+/** One step of Newton's method towards no excess. */
+function nearerEdgeC(line: SupplyLine, hour: RoomHour, cap: RhCap, supplyC: number): number {
   const leavingC = supplyC - line.riseK;
-  const bottom = line.bottom + VAPOUR_KJ_PER_KG_K * leavingC;
-  const ratio = (line.top - AIR_KJ_PER_KG_K * leavingC) / bottom;
-  const ratioSlope = -(AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) / bottom;
-  const total = MASS_RATIO + ratio + cap.addedRatio;
-  const vapourSlope = (hour.pressurePa * MASS_RATIO * ratioSlope) / (total * total);
-  return vapourSlope - cap.share * tabledSlopePaPerK(supplyC + cap.riseK);
+  const perBottom = 1 / (line.bottom + VAPOUR_KJ_PER_KG_K * leavingC);
+  const ratio = (line.top - AIR_KJ_PER_KG_K * leavingC) * perBottom;
+  const ratioSlope = -(AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) * perBottom;
+  const perTotal = 1 / (MASS_RATIO + ratio + cap.addedRatio);
+  const roomC = supplyC + cap.riseK;
+  const excess = hour.pressurePa * (ratio + cap.addedRatio) * perTotal - cap.share * tabledSaturationPa(roomC);
+  const vapourSlope = hour.pressurePa * MASS_RATIO * ratioSlope * perTotal * perTotal;
+  return supplyC - excess / (vapourSlope - cap.share * tabledSlopePaPerK(roomC));
 }
 
 /** The supply temperature at which the cap on the dew point is just reached; -Infinity when full wetting keeps it. */
