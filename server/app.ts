@@ -1,4 +1,5 @@
 /** The web side, wired: here alone the parts of the server meet. */
+import { availableParallelism } from 'node:os';
 import compression from 'compression';
 import express, { type Express, Router } from 'express';
 import type { Deps } from './deps.ts';
@@ -6,8 +7,11 @@ import { sessionStands } from './features/accounts/account-store.ts';
 import { checkPassword } from './features/accounts/check-password.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
+import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
-import { queueRuns } from './features/runs/queue-runs.ts';
+import { methodRoutes } from './features/method/routes.ts';
+import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
+import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
 import { makeTeam } from './features/teams/make-team.ts';
@@ -20,6 +24,7 @@ import { health } from './http/health.ts';
 import { originGuard } from './http/origin-guard.ts';
 import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
+import { makeThreadPool } from './jobs/thread-pool.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
@@ -28,8 +33,17 @@ const FIRST_PROGRAMME = 'First programme';
 /** Often enough for proxies that cut a silent connection after a minute (common practice). */
 const HEARTBEAT_MS = 15_000;
 
-export function createApp(deps: Deps, terms: Partial<ServerTerms> = {}): Express {
-  const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS } = terms;
+const MOST_THREADS = 8;
+
+/** Threads that judge for the web process, which itself never does; the caller closes them. */
+export function makeWebThreads(): RescoreThreads {
+  const threads = Math.min(availableParallelism(), MOST_THREADS);
+  return makeThreadPool({ entry: new URL('./web-thread.ts', import.meta.url), threads });
+}
+
+/** @param terms.threads by default some that start with their first task and end with the process */
+export function createApp(deps: Deps, terms: Partial<ServerTerms> & { threads?: RescoreThreads } = {}): Express {
+  const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS, threads = makeWebThreads() } = terms;
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
@@ -42,21 +56,23 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms> = {}): Express
   if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
 
   app.use('/api', originGuard, ...authentication(deps, peopleLookup(deps)));
-  app.use(declaredRoutes(deps));
+  app.use(declaredRoutes(deps, threads));
   app.use(nothingHere);
   app.use(errorHandler(deps.log));
   return app;
 }
 
 /** Every endpoint of src/contract/endpoints.ts, by feature. */
-function declaredRoutes(deps: Deps): Router {
+function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
   const router = Router();
   accountsRoutes(router, deps, {
     makeFirstTeam: (transaction, team) =>
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
   weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
-  runsRoutes(router, deps);
+  briefsRoutes(router, deps, { queueRunsOfVersion });
+  runsRoutes(router, deps, { threads });
+  methodRoutes(router, deps);
   return router;
 }
 

@@ -5,14 +5,20 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
 
   read FILE... [--strict]        read weather files: status, findings, depression hours, design values
   ledger FILE --brief PRESET     test every hour of a file against a preset: hour classes, verdict, score
+  hours FILE --brief PRESET      the same hour by hour, as CSV: weather, class, stage, supply, room, water, reason, line
+  rerun ID                       judge a stored run of MUSLIN_HOME again: the same to the byte or not
+  bench NAMES                    time the product against the plain way of doing the same
 
-One JSON line per result on standard output. Exit codes: 0 done, 1 a file was refused (or is in doubt under --strict),
-2 wrong use, 3 could not run.`;
+One JSON line per result on standard output, of hours a table. Exit codes: 0 done, 1 a file was refused (or is in doubt
+under --strict) or a run is not the same, 2 wrong use, 3 could not run.`;
 
 /** Each command's module is loaded when it is asked for, so that none waits for what another needs. */
 const commands: Readonly<Record<string, (context: CommandContext) => Promise<ExitCode>>> = {
   read: async (context) => (await import('./commands/read.ts')).read(context),
   ledger: async (context) => (await import('./commands/ledger.ts')).ledger(context),
+  hours: async (context) => (await import('./commands/hours.ts')).hours(context),
+  rerun: async (context) => (await import('./commands/rerun.ts')).rerun(context),
+  bench: async (context) => (await import('./commands/bench.ts')).bench(context),
 };
 
 /** The command line of the engine: `muslin COMMAND ...`. */

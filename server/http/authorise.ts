@@ -1,5 +1,7 @@
 import type { PolicyName } from '#contract/policies.ts';
 import { accountsPolicy } from '../features/accounts/policy.ts';
+import { briefsPolicy } from '../features/briefs/policy.ts';
+import { methodPolicy } from '../features/method/policy.ts';
 import { runsPolicy } from '../features/runs/policy.ts';
 import { weatherPolicy } from '../features/weather/policy.ts';
 import { AppError } from './app-error.ts';
@@ -11,6 +13,8 @@ export const policies: Readonly<Record<PolicyName, Policy>> = {
   ...accountsPolicy,
   ...weatherPolicy,
   ...runsPolicy,
+  ...methodPolicy,
+  ...briefsPolicy,
 };
 
 const refusals = {

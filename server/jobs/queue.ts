@@ -25,6 +25,20 @@ export async function addJob<N extends JobName>(
   );
 }
 
+/** Queues many jobs of one task as `addJob` does, in one statement. */
+export async function addJobs<N extends JobName>(
+  db: Knex,
+  task: N,
+  jobs: readonly { payload: JobPayloads[N]; jobKey: string }[],
+): Promise<void> {
+  await db.raw(
+    `select graphile_worker.add_job(
+       identifier => ?::text, payload => job.payload::json, job_key => job.key, max_attempts => ?::integer)
+     from unnest(?::text[], ?::text[]) as job (payload, key)`,
+    [task, MAX_ATTEMPTS, jobs.map(({ payload }) => JSON.stringify(payload)), jobs.map(({ jobKey }) => jobKey)],
+  );
+}
+
 const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] } = {
   'read-weather-file': ['teamId', 'fileId'],
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],

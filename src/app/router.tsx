@@ -35,6 +35,14 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('./pages/map/map-page.tsx')).MapPage }),
               },
               {
+                path: paths.briefs.pattern,
+                lazy: async () => ({ Component: (await import('../features/briefs/briefs-page.tsx')).BriefsPage }),
+              },
+              {
+                path: paths.brief.pattern,
+                lazy: async () => ({ Component: (await import('../features/briefs/brief-page.tsx')).BriefPage }),
+              },
+              {
                 path: paths.weather.pattern,
                 lazy: async () => ({
                   Component: (await import('../features/weather/weather-library-page.tsx')).WeatherLibraryPage,
@@ -45,6 +53,10 @@ const routes: RouteObject[] = [
                 lazy: async () => ({
                   Component: (await import('../features/weather/weather-record-page.tsx')).WeatherRecordPage,
                 }),
+              },
+              {
+                path: paths.method.pattern,
+                lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },
               { path: '*', Component: NotFoundPage },
             ],

@@ -44,9 +44,13 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
         </Link>
         <nav aria-label="Main" className="flex items-stretch gap-5 max-sm:gap-4">
           {programme ? (
-            <TopLink to={paths.map.to({ teamId: team.teamId, programmeId: programme.id })}>Map</TopLink>
+            <>
+              <TopLink to={paths.map.to({ teamId: team.teamId, programmeId: programme.id })}>Map</TopLink>
+              <TopLink to={paths.briefs.to({ teamId: team.teamId, programmeId: programme.id })}>Briefs</TopLink>
+            </>
           ) : null}
           <TopLink to={paths.weather.to(team.teamId)}>Weather</TopLink>
+          <TopLink to={paths.method.to(team.teamId)}>Method</TopLink>
         </nav>
         <p className="ml-auto flex items-center text-body text-soft max-md:order-last max-md:ml-0 max-md:w-full max-md:pb-2 max-md:text-fine">
           <span>

@@ -1,5 +1,6 @@
 import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
+import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
 import { getMap, getStationPlace } from '../contract/runs.ts';
 import { getWeatherFile, listWeatherFiles, type TeamEvent, watchTeam } from '../contract/weather.ts';
 import { type StreamState, subscribe } from '../lib/api-client.ts';
@@ -10,7 +11,8 @@ const GATHER_MS = 300;
 
 const affected = {
   'weather-file': [listWeatherFiles, getWeatherFile],
-  run: [getMap, getStationPlace],
+  run: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
+  brief: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
 } as const satisfies Record<TeamEvent['kind'], readonly { path: string }[]>;
 
 /** Follows what happens in a team and marks the answers that it makes stale. `lost`: what is shown may be behind. */

@@ -1,6 +1,8 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
 import * as accounts from './accounts.ts';
+import * as briefs from './briefs.ts';
 import type { Endpoint } from './endpoint.ts';
+import * as method from './method.ts';
 import * as runs from './runs.ts';
 import * as weather from './weather.ts';
 
@@ -19,6 +21,16 @@ export const endpoints = {
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
+  rescore: runs.rescore,
+  listPresets: briefs.listPresets,
+  listBriefs: briefs.listBriefs,
+  makeBrief: briefs.makeBrief,
+  listBriefVersions: briefs.listBriefVersions,
+  getBriefVersion: briefs.getBriefVersion,
+  compareBriefVersions: briefs.compareBriefVersions,
+  saveBriefVersion: briefs.saveBriefVersion,
+  previewBrief: briefs.previewBrief,
+  getMethodChecks: method.getMethodChecks,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -8,6 +8,9 @@ export const policyNames = [
   'weather.withdraw',
   'weather.original',
   'runs.view',
+  'briefs.view',
+  'briefs.change',
+  'method.view',
 ] as const;
 
 export type PolicyName = (typeof policyNames)[number];

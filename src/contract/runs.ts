@@ -4,6 +4,9 @@ import { empty, endpoint, file, json, none, ordinary } from './endpoint.ts';
 const ProgrammeParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid() });
 const PlaceParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid(), stationId: z.uuid() });
 
+/** Which of the programme's briefs; without one, the brief that was saved last. */
+const OfBrief = z.strictObject({ brief: z.optional(z.uuid()) });
+
 export const HourClass = z.enum([
   'closed',
   'missing',
@@ -67,7 +70,7 @@ export const getMap = endpoint({
   path: '/api/teams/:teamId/programmes/:programmeId/map',
   summary: 'Every station of the team with its score under the programme’s brief.',
   params: ProgrammeParams,
-  query: empty,
+  query: OfBrief,
   body: none,
   response: json(ProgrammeMap),
   errors: [],
@@ -130,6 +133,25 @@ export const PlaceYear = z.object({
 
 export const GradeColumn = z.object({ column: z.string(), grade: Grade, reason: z.string() });
 
+export const YearlyMoney = z.object({
+  currency: z.string(),
+  plant: z.number(),
+  reference: z.number(),
+  saving: z.number(),
+  /** Years; null where the brief gives no extra capital. */
+  payback: z.nullable(z.union([z.number(), z.enum(['never', 'at once'])])),
+  notes: z.array(z.string()),
+});
+export type YearlyMoney = z.infer<typeof YearlyMoney>;
+
+export const YearlyCarbon = z.object({
+  plantKg: z.number(),
+  referenceKg: z.number(),
+  savedKg: z.number(),
+  /** Where the grid factor comes from. */
+  source: z.string(),
+});
+
 export const Place = z.object({
   station: z.object({
     id: z.uuid(),
@@ -174,13 +196,20 @@ export const Place = z.object({
         peakDayLitres: z.number(),
         peakDay: z.nullable(z.string()),
       }),
-      electricity: z.object({
-        kwh: z.number(),
-        referenceKwh: z.number(),
-        savedPct: z.nullable(z.number()),
-        peakKw: z.number(),
-        referencePeakKw: z.number(),
-      }),
+      /** null: not applicable, as for turbine inlets. */
+      electricity: z.nullable(
+        z.object({
+          kwh: z.number(),
+          referenceKwh: z.number(),
+          savedPct: z.nullable(z.number()),
+          peakKw: z.number(),
+          referencePeakKw: z.number(),
+        }),
+      ),
+      /** Of a year, per kW of design load; null with the reason in `moneyNote`. */
+      money: z.nullable(YearlyMoney),
+      moneyNote: z.nullable(z.string()),
+      carbon: z.nullable(YearlyCarbon),
       cautions: z.array(z.string()),
     }),
   ),
@@ -194,7 +223,7 @@ export const getStationPlace = endpoint({
   path: '/api/teams/:teamId/programmes/:programmeId/stations/:stationId',
   summary: 'One station as a place: ledger, verdict, score arithmetic, grade and basis.',
   params: PlaceParams,
-  query: empty,
+  query: OfBrief,
   body: none,
   response: json(Place),
   errors: [],
@@ -213,4 +242,66 @@ export const getRunHours = endpoint({
   errors: [],
   allow: 'runs.view',
   limits: ordinary,
+});
+
+/** A station under a draft brief; its figures are a place's, its ledger that of the year that stands for it. */
+export const RescoredStation = z.object({
+  stationId: z.uuid(),
+  score: z.nullable(z.int()),
+  /** Why `score` is null. */
+  scoreNote: z.nullable(z.string()),
+  words: z.nullable(z.string()),
+  verdict: z.nullable(Verdict),
+  yearsMeeting: z.int(),
+  range: z.nullable(z.object({ low: z.int(), high: z.int() })),
+  /** null without a usable year. */
+  ledger: z.nullable(Ledger),
+  shownWeatherYearId: z.nullable(z.uuid()),
+  /** The weather years that the figures rest on. */
+  restsOn: z.array(z.uuid()),
+});
+export type RescoredStation = z.infer<typeof RescoredStation>;
+
+export const RescoreAnswer = z.object({
+  methodVersion: z.string(),
+  stations: z.array(RescoredStation),
+  /** Every weather year that was judged, in the order of the map. */
+  judged: z.array(
+    z.object({
+      weatherYearId: z.uuid(),
+      stationId: z.uuid(),
+      kind: z.enum(['typical', 'actual', 'derived']),
+      year: z.nullable(z.int()),
+      contentHash: z.string(),
+      /** SHA-256 of the whole result, the one that a saved run carries; null unless asked for. */
+      resultHash: z.nullable(z.string()),
+    }),
+  ),
+  /** Of the answer, and of it the fetching of weather that was not in memory, ms. */
+  totalMs: z.number(),
+  loadMs: z.number(),
+});
+export type RescoreAnswer = z.infer<typeof RescoreAnswer>;
+
+/** As many as a view holds. */
+const MOST_STATIONS_NAMED = 2000;
+
+export const rescore = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/programmes/:programmeId/rescore',
+  summary: 'Judge every usable weather year of the team, or of some stations, by a draft brief. Nothing is stored.',
+  params: ProgrammeParams,
+  query: z.strictObject({ hashes: z.optional(z.literal('yes')) }),
+  body: json(
+    z.strictObject({
+      /** The draft; the engine reads it whole and answers every fault at once, each at its path. */
+      body: z.record(z.string(), z.unknown()),
+      /** Left out: every station. */
+      stationIds: z.optional(z.array(z.uuid()).check(z.minLength(1), z.maxLength(MOST_STATIONS_NAMED))),
+    }),
+  ),
+  response: json(RescoreAnswer),
+  errors: [],
+  allow: 'runs.view',
+  limits: { bodyBytes: 192 * 1024, perMinute: 600, seconds: 60 },
 });

@@ -191,13 +191,14 @@ export const withdrawWeatherFile = endpoint({
 export const TeamEvent = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('weather-file'), fileId: z.uuid(), status: FileStatus, step: z.nullable(ReadingStep) }),
   z.object({ kind: z.literal('run'), runId: z.uuid(), stationId: z.uuid() }),
+  z.object({ kind: z.literal('brief'), briefId: z.uuid(), version: z.int() }),
 ]);
 export type TeamEvent = z.infer<typeof TeamEvent>;
 
 export const watchTeam = endpoint({
   method: 'GET',
   path: '/api/teams/:teamId/events',
-  summary: 'Progress of weather files and runs, as it happens.',
+  summary: 'Progress of weather files, briefs and runs, as it happens.',
   params: TeamParams,
   query: empty,
   body: none,

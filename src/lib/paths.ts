@@ -10,19 +10,36 @@ export const paths = {
   team: { pattern: '/teams/:teamId' },
   map: {
     pattern: 'programmes/:programmeId/map',
-    to: (ids: { teamId: string; programmeId: string }, stationId?: string) =>
-      `/teams/${ids.teamId}/programmes/${ids.programmeId}/map${stationId ? `?${PLACE_PARAM}=${stationId}` : ''}`,
+    to: (ids: { teamId: string; programmeId: string }, stationId?: string, briefId?: string) => {
+      const asked = new URLSearchParams();
+      if (briefId) asked.set(BRIEF_PARAM, briefId);
+      if (stationId) asked.set(PLACE_PARAM, stationId);
+      return `/teams/${ids.teamId}/programmes/${ids.programmeId}/map${asked.size > 0 ? `?${asked}` : ''}`;
+    },
+  },
+  briefs: {
+    pattern: 'programmes/:programmeId/briefs',
+    to: (ids: { teamId: string; programmeId: string }) => `/teams/${ids.teamId}/programmes/${ids.programmeId}/briefs`,
+  },
+  brief: {
+    pattern: 'programmes/:programmeId/briefs/:briefId',
+    to: (ids: { teamId: string; programmeId: string; briefId: string }) =>
+      `/teams/${ids.teamId}/programmes/${ids.programmeId}/briefs/${ids.briefId}`,
   },
   weather: { pattern: 'weather', to: (teamId: string) => `/teams/${teamId}/weather` },
   weatherFile: {
     pattern: 'weather/:fileId',
     to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}`,
   },
+  method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;
 
 /** The chosen place of the map page, in the query of its address. */
 export const PLACE_PARAM = 'place';
+
+/** The brief that the map is drawn under, in the query of its address; without it the one saved last. */
+export const BRIEF_PARAM = 'brief';
 
 /** Where to go after signing in: only a path of this application, never another host. */
 export function safeReturn(from: string | null): string {

@@ -61,10 +61,16 @@ export const importRules: readonly ImportRule[] = [
     from: 'server/db/prepare-database.ts',
     may: ['server/db/**', 'migrations/source.ts', 'knex', 'pg', 'graphile-worker', 'node:*'],
   },
-  { from: 'server/db/**', may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'node:*'] },
+  {
+    from: 'server/db/**',
+    may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'pg-copy-streams', 'node:*'],
+  },
   {
     from: 'server/jobs/**',
-    may: ['server/jobs/**', 'server/db/**', ...serverWords, ...pure, 'graphile-worker', 'pg', 'knex', 'node:**'],
+    may: [
+      ...['server/jobs/**', 'server/db/**', ...serverWords, ...pure],
+      ...['graphile-worker', 'pg', 'knex', 'tsx/esm/api', 'node:**'],
+    ],
   },
   { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'node:**'] },
   { from: 'server/tiles/**', may: ['server/tiles/**', ...serverWords, 'pmtiles', 'express', 'node:*'] },
@@ -101,7 +107,8 @@ export const importRules: readonly ImportRule[] = [
     may: [
       ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
-      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json'],
+      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts'],
+      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
   },
@@ -121,8 +128,9 @@ export const importRules: readonly ImportRule[] = [
   },
   { from: 'server/log.ts', may: [] },
   { from: 'server/config.ts', may: ['zod/mini', 'node:*'] },
-  { from: 'server/app.ts', may: ['server/**', 'express', 'compression'] },
+  { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
+  { from: 'server/web-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
   { from: 'server/worker.ts', may: ['server/**', ...pure, 'node:*'] },
   { from: 'server/builders/**', may: ['server/**', ...pure, 'node:**'], mayTypes: ['knex'] },
   {

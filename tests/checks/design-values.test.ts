@@ -5,54 +5,28 @@ import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
 import { epwBytes } from '../support/epw-text.ts';
+import { heldCheck } from '../support/held-check.ts';
 import { presetBrief } from '../support/presets.ts';
 import { casesOf } from '../support/published-values.ts';
 
 /** Numbers, sources and tags stand in data/checks/design-values.json. */
 describe('design values and counting against published values', () => {
   test('D01 n-year extremes from mean and deviation are the published ones to 0.2 K', () => {
-    const cases = casesOf('D01', {
-      station: z.string(),
-      meanC: z.number(),
-      deviationK: z.number(),
-      extreme: z.enum(['maximum', 'minimum']),
-      years: z.array(z.number()),
-      expectedC: z.array(z.number()),
-      tolerance: z.number(),
-    });
-    let compared = 0;
-    for (const each of cases) {
-      for (const [index, years] of each.years.entries()) {
-        const sign = each.extreme === 'maximum' ? 1 : -1;
-        const extremeC = each.meanC + sign * extremeFactor(years) * each.deviationK;
-        const expectedC = each.expectedC[index] ?? Number.NaN;
-        expect(Math.abs(extremeC - expectedC), `${each.station}, ${years} years`).toBeLessThan(each.tolerance);
-        compared++;
-      }
-    }
-    expect(compared).toBe(16);
+    expect(heldCheck('D01')).toHaveLength(16);
   });
 
   test('D02 of the values 1 to 8760 at most 0.4, 1 and 2 % of the hours lie above the design value', () => {
-    const cases = casesOf('D02', { percent: z.number(), mostHoursAbove: z.number() });
-    expect(cases).toHaveLength(3);
-    const downwards = Int32Array.from({ length: 8760 }, (_none, index) => 8760 - index);
-    const values = cases.map(({ mostHoursAbove, percent }) => {
-      const value = valueAtPercent(downwards, percent);
-      const above = downwards.filter((each) => each > value).length;
-      expect(above).toBeLessThanOrEqual(mostHoursAbove);
-      expect(above + 1).toBeGreaterThan(mostHoursAbove);
-      return value;
-    });
-    expect(values).toEqual([...values].sort((a, b) => b - a));
-    expect(new Set(values).size).toBe(3);
+    expect(heldCheck('D02')).toHaveLength(3);
     // The same rule in the design values of a year: 0.00 to 87.59 °C in steps of 0.01 K, in any order.
+    const downwards = Int32Array.from({ length: 8760 }, (_none, index) => 8760 - index);
+    const values = casesOf('D02', { percent: z.number() }).map(({ percent }) => valueAtPercent(downwards, percent));
     const column = Float64Array.from({ length: 8760 }, (_none, slot) => ((slot * 7919) % 8760) / 100);
     const rows = designValues({ dryBulbC: column, wetBulbC: column, dewPointC: column }).dryBulb;
     expect(rows.slice(0, 3).map(({ valueC }) => Math.round(100 * valueC) + 1)).toEqual(values);
   });
 
   test('D05 hours by provenance, by depression and by hour class each add up to the hours of the year', () => {
+    expect(heldCheck('D05')).toHaveLength(2);
     const cases = casesOf('D05', { slots: z.number(), expected: z.number() });
     expect(cases).toHaveLength(2);
     for (const { expected, slots } of cases) {
@@ -78,8 +52,3 @@ describe('design values and counting against published values', () => {
     }
   });
 });
-
-/** F = -(sqrt(6)/pi) (0.5772 + ln(ln(n/(n - 1)))), a formula that the product does not compute. */
-function extremeFactor(years: number): number {
-  return -(Math.sqrt(6) / Math.PI) * (0.5772 + Math.log(Math.log(years / (years - 1))));
-}

@@ -59,9 +59,9 @@ describe('the list of declarations', () => {
     },
   );
 
-  test.each(declared)('%s carries a team in its path unless it is about an account', (name, { path }) => {
-    const accounts = ['getSession', 'signIn', 'signOut', 'setUp'];
-    expect(path.startsWith('/api/teams/:teamId/') || accounts.includes(name)).toBe(true);
+  test.each(declared)('%s carries a team in its path unless it is about an account or the method', (name, { path }) => {
+    const ofNoTeam = ['getSession', 'signIn', 'signOut', 'setUp', 'getMethodChecks'];
+    expect(path.startsWith('/api/teams/:teamId/') || ofNoTeam.includes(name)).toBe(true);
   });
 });
 

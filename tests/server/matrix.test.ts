@@ -5,6 +5,7 @@ import { demoWeatherFile } from '../../data/demo/demo-weather-file.ts';
 import { demoStations } from '../../data/demo/stations.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
 import { makePerson } from '../../server/features/accounts/make-person.ts';
+import { officeBrief } from '../../server/features/briefs/presets.ts';
 import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { addMember } from '../../server/features/teams/add-member.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
@@ -29,6 +30,7 @@ const signedInCallers: readonly Caller[] = callers.slice(0, 5);
 
 /** Statuses in the order of `callers`. A guest has no share link to open yet, so is a stranger everywhere. */
 const everyMember = [200, 200, 200, 200, 404, 401, 401, 401];
+const plannersToo = [403, 200, 200, 200, 404, 401, 401, 401];
 const changersOnly = [403, 403, 200, 200, 404, 401, 401, 401];
 const matrix: Record<EndpointName, readonly number[]> = {
   getSession: [200, 200, 200, 200, 200, 200, 401, 200],
@@ -46,6 +48,17 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getMap: everyMember,
   getStationPlace: everyMember,
   getRunHours: everyMember,
+  rescore: everyMember,
+  listPresets: everyMember,
+  listBriefs: everyMember,
+  makeBrief: plannersToo,
+  listBriefVersions: everyMember,
+  getBriefVersion: everyMember,
+  compareBriefVersions: everyMember,
+  saveBriefVersion: plannersToo,
+  previewBrief: everyMember,
+  // About no team: every person who is signed in.
+  getMethodChecks: [200, 200, 200, 200, 200, 401, 401, 401],
 };
 
 const PASSWORD = 'a long pass phrase for tests';
@@ -97,6 +110,10 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
+  if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
+  if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
+  if (name === 'previewBrief') return JSON.stringify({ stationId: ids.stationId, body: officeBrief() });
+  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
@@ -110,10 +127,11 @@ async function statusOf(
   const endpoint: Endpoint = endpoints[name];
   const path = endpoint.path.replace(/:(\w+)/g, (_all, parameter: string) => values[parameter] ?? 'missing');
   expect(path).not.toContain('missing');
+  const query = name === 'compareBriefVersions' ? '?from=1&to=1' : '';
   const body = bodyOf(name, caller);
   const headers = await headersOf(caller, name);
   const ending = new AbortController();
-  const response = await fetch(`${origin}${path}`, {
+  const response = await fetch(`${origin}${path}${query}`, {
     method: endpoint.method,
     headers: typeof body === 'string' ? { ...headers, 'Content-Type': 'application/json' } : headers,
     body,
@@ -172,10 +190,13 @@ beforeAll(async () => {
     ).json();
     return map.pending === 0 && map.stations[0]?.id;
   });
+  const briefs: { items: { briefId: string }[] } = await (
+    await fetch(`${team}/programmes/${ours.programmeId}/briefs`, { headers })
+  ).json();
   const place: { shown: { runId: string } } = await (
     await fetch(`${team}/programmes/${ours.programmeId}/stations/${stationId}`, { headers })
   ).json();
-  ids = { ...ids, fileId, stationId, runId: place.shown.runId };
+  ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });
 

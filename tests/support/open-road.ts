@@ -55,8 +55,9 @@ export interface Road {
 const PASSWORD = 'a long pass phrase for tests';
 const BASEMAP = path.resolve(import.meta.dirname, '../../data/basemap/basemap.pmtiles');
 
-export async function openRoad(): Promise<Road> {
-  const database = await makeTestDatabase();
+/** @param options.database one that is there already instead of a new one; it is dropped with the road all the same */
+export async function openRoad(options: { database?: TestDatabase } = {}): Promise<Road> {
+  const database = options.database ?? (await makeTestDatabase());
   const { db, databaseUrl } = database;
   const home = await mkdtemp(path.join(tmpdir(), 'muslin-road-'));
   const originalsDir = path.join(home, 'originals');

@@ -3,7 +3,14 @@ import * as z from 'zod/mini';
 
 const folder = new URL('../../data/checks/', import.meta.url);
 const CheckFile = z.object({
-  checks: z.array(z.object({ id: z.string(), source: z.string(), cases: z.array(z.record(z.string(), z.unknown())) })),
+  checks: z.array(
+    z.object({
+      id: z.string(),
+      what: z.string(),
+      source: z.string(),
+      cases: z.array(z.record(z.string(), z.unknown())),
+    }),
+  ),
 });
 
 /** Every check of data/checks, whatever its file. */
@@ -21,10 +28,4 @@ export function casesOf<Shape extends z.core.$ZodLooseShape>(id: string, shape: 
   const check = publishedChecks.find((each) => each.id === id);
   if (check === undefined) throw new Error(`no check ${id} in data/checks`);
   return check.cases.map((each) => z.object(shape).parse(each));
-}
-
-/** Data rows of a table of data/checks, header left out. */
-export function rowsOf(file: string): readonly (readonly string[])[] {
-  const lines = readFileSync(new URL(file, folder), 'utf8').trim().split('\n');
-  return lines.slice(1).map((line) => line.split(','));
 }

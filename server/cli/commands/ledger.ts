@@ -1,40 +1,13 @@
-import type { Brief } from '#engine/brief/brief.ts';
-import { notBuiltYet } from '#engine/brief/not-built-yet.ts';
 import { hourClasses } from '#engine/hour-classes/hour-class.ts';
 import { type ReducedYear, reduceYear } from '#engine/reduction/reduce-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import type { RunResult } from '#engine/run/run-result.ts';
 import { gradePlace } from '#engine/score/grade-place.ts';
-import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
 import type { UsableReading } from '#engine/weather-files/weather-file-reading.ts';
-import { presetBrief, presetNames } from '../../features/briefs/presets.ts';
-import { zoneOfStation } from '../../features/stations/zone-of-station.ts';
 import { measuredHours } from '../../features/weather/measured-hours.ts';
 import type { CommandContext, ExitCode } from '../command.ts';
-import { readArguments, WrongUse } from './command-arguments.ts';
-import { openFile } from './open-file.ts';
-import { printResult, say } from './print-result.ts';
-
-/** The brief of a preset that this version judges in full. */
-function builtBrief(name: string): Brief {
-  const built = presetNames().filter((preset) => notBuiltYet(presetBrief(preset)).length === 0);
-  const choice = `Presets that can be judged: ${built.join(', ')}.`;
-  if (!presetNames().includes(name)) throw new WrongUse(`There is no preset "${name}". ${choice}`);
-  const brief = presetBrief(name);
-  const missing = notBuiltYet(brief);
-  if (missing.length > 0) throw new WrongUse(`The preset "${name}" is not built yet: ${missing.join(' ')} ${choice}`);
-  return brief;
-}
-
-/** Where the year is judged: the file's own place. */
-function placeOf({ station }: UsableReading): { zone: string; heightM: number } | null {
-  const { latitude, longitude, elevationM, utcOffsetH } = station;
-  if (latitude === null || longitude === null || elevationM === null) return null;
-  return {
-    zone: zoneOfStation({ latitude, longitude, utcOffsetH: utcOffsetH ?? Math.round(longitude / 15) }),
-    heightM: elevationM,
-  };
-}
+import { openJudgeableFile } from './judgeable-file.ts';
+import { printResult } from './print-result.ts';
 
 /** The station stands for itself, by this one year. */
 function gradeOf(input: { reading: UsableReading; reduced: ReducedYear; result: RunResult }): string {
@@ -72,31 +45,10 @@ function ledgerResult(file: string, input: { preset: string; grade: string; resu
 }
 
 /** `muslin ledger FILE --brief PRESET`: every hour of the file's year under the preset. */
-export async function ledger({ args, callerDir }: CommandContext): Promise<ExitCode> {
-  const { files, strict, brief: preset } = readArguments(args);
-  const [file, ...more] = files;
-  if (file === undefined || more.length > 0) throw new WrongUse('Name one weather file.');
-  if (strict) throw new WrongUse('--strict belongs to the command read.');
-  if (preset === null) throw new WrongUse('Name the preset: --brief office.');
-  const brief = builtBrief(preset);
-
-  const bytes = await openFile(file, callerDir);
-  if (typeof bytes === 'string') {
-    say(bytes);
-    return 3;
-  }
-  const reading = readWeatherFile(bytes, file);
-  if (reading.status === 'refused') {
-    const reasons = reading.findings.filter(({ severity }) => severity === 'refuse');
-    say([`${file} is refused:`, ...reasons.map(({ message }) => message)].join('\n'));
-    return 1;
-  }
-  for (const { message } of reading.asks) say(`${file} asks: ${message}`);
-  const place = placeOf(reading);
-  if (place === null) {
-    say(`${file} does not say where and how high it was recorded, so its hours cannot be judged.`);
-    return 1;
-  }
+export async function ledger(context: CommandContext): Promise<ExitCode> {
+  const opened = await openJudgeableFile(context);
+  if (typeof opened === 'number') return opened;
+  const { file, preset, brief, reading, place } = opened;
   const reduced = reduceYear(reading);
   const result = judgeYear({ year: reduced.year, brief, ...place });
   printResult(ledgerResult(file, { preset, grade: gradeOf({ reading, reduced, result }), result }));

@@ -12,3 +12,10 @@ export function printResult(result: Readonly<Record<string, unknown>>): void {
 export function say(words: string): void {
   process.stderr.write(`${words}\n`);
 }
+
+/** A table of many lines on standard output; resolves when all of it is written, since a pipe takes it in parts. */
+export function printTable(text: string): Promise<void> {
+  return new Promise((resolve, reject) => {
+    process.stdout.write(text, (error) => (error ? reject(error) : resolve()));
+  });
+}

@@ -23,10 +23,13 @@ export interface ProgrammeBrief {
   readonly body: Brief;
 }
 
-/** The newest brief version of a programme, with what every screen under it names; `null` without the programme or a brief. */
+/**
+ * The newest version of a brief of a programme, with what every screen under it names; without an id, of the brief that was
+ * saved last. `null` without the programme or such a brief.
+ */
 export async function findProgrammeBrief(
   db: Knex,
-  key: { teamId: string; programmeId: string },
+  key: { teamId: string; programmeId: string; briefId?: string | undefined },
 ): Promise<ProgrammeBrief | null> {
   const { rows } = await db.raw<{ rows: ProgrammeBrief[] }>(
     `select programmes.name as "programmeName", teams.invented, briefs.id as "briefId",
@@ -35,10 +38,10 @@ export async function findProgrammeBrief(
      join teams on teams.id = programmes.team_id
      join briefs on briefs.team_id = programmes.team_id and briefs.programme_id = programmes.id
      join brief_versions on brief_versions.team_id = briefs.team_id and brief_versions.brief_id = briefs.id
-     where programmes.team_id = ? and programmes.id = ?
+     where programmes.team_id = ? and programmes.id = ? and (?::uuid is null or briefs.id = ?)
      order by brief_versions.made_at desc, brief_versions.version desc, brief_versions.id
      limit 1`,
-    [key.teamId, key.programmeId],
+    [key.teamId, key.programmeId, key.briefId ?? null, key.briefId ?? null],
   );
   return rows[0] ?? null;
 }

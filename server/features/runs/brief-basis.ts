@@ -8,7 +8,7 @@ import { findProgrammeBrief, type ProgrammeBrief } from '../briefs/brief-read-mo
 /** The brief that a programme's screens are drawn under. @throws AppError not_found without the programme or a brief of it */
 export async function briefOfProgramme(
   db: Knex,
-  programme: { teamId: string; programmeId: string },
+  programme: { teamId: string; programmeId: string; briefId?: string | undefined },
 ): Promise<ProgrammeBrief> {
   const brief = await findProgrammeBrief(db, programme);
   if (brief === null)

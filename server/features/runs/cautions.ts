@@ -13,10 +13,10 @@ const FIXED_OFFSET = /^Etc\//;
 const TYPICAL = 'Typical years hide extremes: do not size plant from them.';
 
 /** What must be read with a result. */
-export function cautionsOf(shown: { kind: YearKind; zone: string }): string[] {
+export function cautionsOf(shown: { kind: YearKind; zone: string; notes: readonly string[] }): string[] {
   const typical = shown.kind === 'typical' ? [TYPICAL] : [];
   const zone = FIXED_OFFSET.test(shown.zone)
     ? [`No time zone is known at this position: the schedule is read in the fixed offset of the file, ${shown.zone}.`]
     : [];
-  return [...typical, ...zone, ...ON_EVERY_RESULT];
+  return [...typical, ...zone, ...shown.notes, ...ON_EVERY_RESULT];
 }

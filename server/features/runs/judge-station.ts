@@ -1,4 +1,5 @@
 import type { Brief } from '#engine/brief/brief.ts';
+import { briefNotes } from '#engine/brief/brief-notes.ts';
 import { type GradeAnswer, gradePlace } from '#engine/score/grade-place.ts';
 import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
 import type { RunOfYear, StationYear } from './station-years-read-model.ts';
@@ -10,6 +11,8 @@ export interface JudgedStation {
   /** Every judged year, newest file first where years repeat. */
   readonly judged: readonly JudgedYear[];
   readonly grade: GradeAnswer;
+  /** What the brief says with every result. */
+  readonly notes: readonly string[];
   /** Accepted years whose run is still to come. */
   readonly pending: number;
   /** Why there is no score; null with one. */
@@ -41,6 +44,7 @@ export function judgeStation(
     figures,
     judged,
     grade: gradeOf(years),
+    notes: briefNotes(brief),
     pending: open.filter(({ failure }) => failure === null).length,
     scoreNote: judged.length === 0 ? noteWithoutRun(open) : figures.scoreNote,
   };

@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import { resolveClock } from '#engine/clock/resolved-clock.ts';
+import { clockOfBrief } from '#engine/clock/clock-of-brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
@@ -25,16 +25,9 @@ export async function judgeStoredYear(db: Knex, key: YearAndBrief): Promise<void
   const year = await readPackedYear(db, key);
   if (year === null) return;
 
-  const { brief, zone, elevationM: heightM } = inputs;
-  const slots = year.packed.flags.length;
-  const clock = resolveClock({
-    zone,
-    kind: year.kind,
-    year: year.year,
-    slots,
-    utcOffsetMin: year.utcOffsetMin,
-    clock: brief.clock,
-  });
+  const { brief, zone, elevationM: heightM, latitude, longitude } = inputs;
+  const position = { latitude, longitude };
+  const clock = clockOfBrief({ year, brief, zone, position });
   const keyHash = runKey({
     contentHash: inputs.contentHash,
     heightM,
@@ -44,7 +37,7 @@ export async function judgeStoredYear(db: Knex, key: YearAndBrief): Promise<void
   });
   if (await hasRun(db, { ...key, keyHash })) return;
 
-  const { hourClassCodes, ...figures } = judgeYear({ year, brief, zone, heightM });
+  const { hourClassCodes, ...figures } = judgeYear({ year, brief, zone, heightM, position });
   await inTransaction(db, async (transaction) => {
     const runId = await insertRun(transaction, {
       ...key,

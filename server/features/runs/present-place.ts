@@ -32,7 +32,7 @@ function presentYear({ run, weather, kind, year, result }: JudgedYear): Place['y
 
 /** The ledger and what follows from it are of the shown year; score, parts and verdict are the place's. */
 function presentShown(
-  { station, figures, scoreNote }: JudgedStation,
+  { station, figures, notes, scoreNote }: JudgedStation,
   { run, result, kind }: JudgedYear,
 ): NonNullable<Place['shown']> {
   const { score } = figures;
@@ -56,8 +56,11 @@ function presentShown(
       peakDayLitres: result.water.peakDayLitres,
       peakDay: result.water.peakDay === null ? null : dayText(run.clock, result.water.peakDay),
     },
-    electricity: { ...result.electricity },
-    cautions: cautionsOf({ kind, zone: station.zone }),
+    electricity: result.electricity === null ? null : { ...result.electricity },
+    money: result.money === null ? null : { ...result.money, notes: [...result.money.notes] },
+    moneyNote: result.moneyNote,
+    carbon: result.carbon,
+    cautions: cautionsOf({ kind, zone: station.zone, notes }),
   };
 }
 

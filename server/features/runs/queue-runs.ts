@@ -1,7 +1,8 @@
 import type { Knex } from 'knex';
 import { METHOD_VERSION } from '#engine/conventions.ts';
-import { addJob } from '../../jobs/queue.ts';
+import { addJob, addJobs } from '../../jobs/queue.ts';
 import { newestBriefVersionIds } from '../briefs/brief-read-model.ts';
+import { listAcceptedYearIds } from '../weather/accepted-years-read-model.ts';
 import { findMissingRuns } from './missing-runs-read-model.ts';
 
 /** Queues the judging of a weather year by the newest version of every brief of its team. */
@@ -14,15 +15,33 @@ export async function queueRuns(
   }
 }
 
+/** Queues the judging of every accepted year of the team by a new brief version. */
+export async function queueRunsOfVersion(
+  transaction: Knex.Transaction,
+  version: { teamId: string; briefVersionId: string },
+): Promise<void> {
+  const yearIds = await listAcceptedYearIds(transaction, version.teamId);
+  const jobs = yearIds.map((weatherYearId) => jobOf({ ...version, weatherYearId }));
+  if (jobs.length > 0) await addJobs(transaction, 'judge-year', jobs);
+}
+
 export async function queueRun(
   db: Knex,
   run: { teamId: string; weatherYearId: string; briefVersionId: string },
 ): Promise<void> {
-  await addJob(db, {
-    task: 'judge-year',
-    payload: { teamId: run.teamId, weatherYearId: run.weatherYearId, briefVersionId: run.briefVersionId },
-    jobKey: `${run.weatherYearId} ${run.briefVersionId}`,
-  });
+  await addJob(db, { task: 'judge-year', ...jobOf(run) });
+}
+
+function jobOf({
+  teamId,
+  weatherYearId,
+  briefVersionId,
+}: {
+  teamId: string;
+  weatherYearId: string;
+  briefVersionId: string;
+}) {
+  return { payload: { teamId, weatherYearId, briefVersionId }, jobKey: `${weatherYearId} ${briefVersionId}` };
 }
 
 /**

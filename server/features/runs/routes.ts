@@ -1,21 +1,32 @@
 import type { Router } from 'express';
-import { getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
+import { getMap, getRunHours, getStationPlace, rescore as rescoreEndpoint } from '#contract/runs.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
+import { makeColumnCache } from './column-cache.ts';
 import { byStation, judgeStation } from './judge-station.ts';
 import { presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
+import { makePreviewTurns } from './preview-turns.ts';
+import { readDraft } from './read-draft.ts';
+import { type RescoreThreads, rescore } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import { listStationYears } from './station-years-read-model.ts';
 
-export function runsRoutes(router: Router, deps: Deps): void {
-  const { db } = deps;
+/** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
+const CACHED_BYTES = 512 * 1024 * 1024;
+/** Previews at once, over all people: each may keep every thread for a while. */
+const MOST_PREVIEWS = 16;
 
-  mount(router, deps, getMap, async ({ params: { teamId, programmeId } }) => {
-    const brief = await briefOfProgramme(db, { teamId, programmeId });
+export function runsRoutes(router: Router, deps: Deps, { threads }: { threads: RescoreThreads }): void {
+  const { db } = deps;
+  const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
+  const inTurn = makePreviewTurns(MOST_PREVIEWS);
+
+  mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
     const { briefVersionId } = brief;
     const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
     const stations = byStation(years).map((group) => judgeStation(brief.body, group));
@@ -28,13 +39,20 @@ export function runsRoutes(router: Router, deps: Deps): void {
     };
   });
 
-  mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId } }) => {
-    const brief = await briefOfProgramme(db, { teamId, programmeId });
+  mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId }, query }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
     const { briefVersionId } = brief;
     const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION, stationId });
     const [group] = byStation(years);
     if (group === undefined) throw new AppError('not_found', 'There is no such station on the map of this team.');
     return presentPlace(judgeStation(brief.body, group), { brief: presentBriefBasis(brief), invented: brief.invented });
+  });
+
+  mount(router, deps, rescoreEndpoint, async ({ params: { teamId, programmeId }, query, body }, { signal }) => {
+    const brief = readDraft(body.body);
+    await briefOfProgramme(db, { teamId, programmeId });
+    const asked = { teamId, brief, stationIds: body.stationIds ?? null, withHashes: query.hashes === 'yes', signal };
+    return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 
   mount(router, deps, getRunHours, async ({ params }) => {

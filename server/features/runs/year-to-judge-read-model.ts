@@ -6,6 +6,8 @@ export interface YearToJudge {
   readonly contentHash: string;
   readonly stationId: string;
   readonly zone: string;
+  readonly latitude: number;
+  readonly longitude: number;
   readonly elevationM: number;
   readonly briefHash: string;
   readonly brief: Brief;
@@ -18,7 +20,7 @@ export async function findYearToJudge(
 ): Promise<YearToJudge | null> {
   const { rows } = await db.raw<{ rows: YearToJudge[] }>(
     `select weather_years.content_hash as "contentHash", stations.id as "stationId", stations.zone,
-       stations.elevation_m as "elevationM", brief_versions.hash as "briefHash", brief_versions.body as brief
+       stations.latitude, stations.longitude, stations.elevation_m as "elevationM", brief_versions.hash as "briefHash", brief_versions.body as brief
      from weather_years
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
      join stations on stations.team_id = weather_years.team_id and stations.id = weather_years.station_id

@@ -183,6 +183,9 @@ export function fixturePlace(station: MapStation): Place {
       severityKh: 201,
       water: { makeUpLitres: 2120, litresPerKwh: 1.62, peakDayLitres: 24.1, peakDay: '14 Jan' },
       electricity: { kwh: 312, referenceKwh: 641, savedPct: 51.3, peakKw: 0.38, referencePeakKw: 0.46 },
+      money: null,
+      moneyNote: 'not priced: the brief holds no prices',
+      carbon: null,
       cautions: [
         'A screening result is not a design.',
         'Wetted equipment needs a water safety plan against legionella under local codes and standards.',

@@ -7,6 +7,7 @@ import { type BriefFault, BriefFaultsError } from './brief-fault.ts';
 import { contradictions } from './contradictions.ts';
 import { Fields } from './fields.ts';
 import { ROOM_TEMP, readCaps, readHardLimit, readLimit, readTolerance } from './read-limit.ts';
+import { readMoney } from './read-money.ts';
 import { readSchedule } from './read-schedule.ts';
 import { readScore } from './read-score.ts';
 
@@ -36,9 +37,11 @@ export function readBrief(raw: unknown): BriefReading {
   const brief: Brief = {
     ...readNames(fields),
     ...readAirSide(fields, limit),
-    ...readEquipment(fields),
+    ...readEquipment(fields, limit),
     ...readSchedule(fields),
     ...readRequirement(fields),
+    ...readMoney(fields),
+    ...(fields.has('stagesReason') ? { stagesReason: fields.text('stagesReason') } : {}),
     limit,
   };
   fields.refuseOthers();
@@ -72,14 +75,20 @@ function readAirSide(fields: Fields, limit: Limit) {
     maxOutdoorRhPct: fields.numberOrNull('maxOutdoorRhPct', PERCENT),
     freezeLockoutC: fields.number('freezeLockoutC', { min: -50, max: 30, unit: '°C' }, 2),
     basinHeat: fields.flag('basinHeat', false),
-    balanceTempC: fields.raw('balanceTempC') === null ? null : fields.number('balanceTempC', ROOM_TEMP, 14),
+    balanceTempC: roomHeated ? readRoomBalance(fields) : fields.numberOrNull('balanceTempC', ROOM_TEMP),
     dwRoomKgKg: fields.number('dwRoomKgKg', { min: 0, max: 0.02, unit: 'kg/kg' }, 0),
     dTroomK: fields.number('dTroomK', rise, roomHeated ? undefined : 0),
     dTitK: limit.kind === 'inlet' ? fields.number('dTitK', itRise) : fields.numberOrNull('dTitK', itRise),
   };
 }
 
-function readEquipment(fields: Fields) {
+/** A room without a balance temperature, said as null, has demand in every hour of its schedule. */
+function readRoomBalance(fields: Fields): number | null {
+  return fields.raw('balanceTempC') === null ? null : fields.number('balanceTempC', ROOM_TEMP, 14);
+}
+
+function readEquipment(fields: Fields, limit: Limit) {
+  const tower = limit.kind === 'tower';
   const fans = fields.group('fanWPerLs');
   const reference = fields.group('reference');
   const read = {
@@ -94,13 +103,14 @@ function readEquipment(fields: Fields) {
     pumpKwPerKw: fields.number('pumpKwPerKw', { min: 0, max: 1, unit: 'kW per kW' }, 0.02),
     k: fields.number('k', { min: 0.5, max: 2 }, 1.05),
     cycles: fields.number('cycles', { min: 1, max: 20, over: true, unit: 'cycles of concentration' }, 4),
-    driftPctOfCirculation: fields.number('driftPctOfCirculation', { min: 0, max: 1, unit: '%' }, 0),
+    driftPctOfCirculation: fields.number('driftPctOfCirculation', { min: 0, max: 1, unit: '%' }, tower ? 0.005 : 0),
     reference: {
       cop: reference.number('cop', { min: 0, max: 20, over: true }, 3),
       economy: reference.flag('economy', true),
     },
-    towerFanPumpWPerKw: fields.numberOrNull('towerFanPumpWPerKw', { min: 0, max: 500, unit: 'W per kW' }),
-    towerLatentShare: fields.numberOrNull('towerLatentShare', { min: 0, max: 1 }),
+    towerFanPumpWPerKw:
+      fields.numberOrNull('towerFanPumpWPerKw', { min: 0, max: 500, unit: 'W per kW' }) ?? (tower ? 25 : null),
+    towerLatentShare: fields.numberOrNull('towerLatentShare', { min: 0, max: 1 }) ?? (tower ? 0.9 : null),
   };
   fans.refuseOthers();
   reference.refuseOthers();

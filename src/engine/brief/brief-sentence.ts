@@ -21,7 +21,7 @@ const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', '
 export function briefSentence(brief: Brief): string {
   return [
     limitWords(brief.limit),
-    ...capWords(brief.caps),
+    ...capWords(brief),
     scheduleWords(brief),
     stageWords(brief.stages),
     ...toleranceWords(brief.tolerance),
@@ -48,7 +48,15 @@ function limitWords(limit: Limit): string {
   }
 }
 
-function capWords({ roomRhPct, supplyRhPct, supplyDewPointC }: HumidityCaps): string[] {
+/** A hall's caps are named as what they are: tested by no hour. */
+function capWords({ caps, limit }: Pick<Brief, 'caps' | 'limit'>): string[] {
+  const words = testedCapWords(caps);
+  const last = words.pop();
+  if (last === undefined) return [];
+  return [...words, limit.kind === 'inlet' ? `${last} (to be held by the hall’s own humidity control)` : last];
+}
+
+function testedCapWords({ roomRhPct, supplyRhPct, supplyDewPointC }: HumidityCaps): string[] {
   return [
     ...(roomRhPct === undefined ? [] : [`at most ${roomRhPct} % relative humidity`]),
     ...(supplyRhPct === undefined ? [] : [`supply at most ${supplyRhPct} % relative humidity`]),

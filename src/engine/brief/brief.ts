@@ -44,6 +44,24 @@ export interface HardLimit {
   readonly derate?: string;
 }
 
+/** Prices of a site; one that is left out is not known. What depends on the size of plant is per kW of design load. */
+export interface Prices {
+  /** What the prices are in, such as EUR. */
+  readonly currency: string;
+  readonly electricityPerKwh?: number;
+  readonly waterPerM3?: number;
+  /** What the plant costs more than the reference; negative when it costs less. */
+  readonly extraCapitalPerKw?: number;
+  /** What its upkeep costs more in a year. */
+  readonly extraUpkeepPerKwYear?: number;
+}
+
+/** Carbon dioxide of the grid, with where the number comes from and of which year. */
+export interface GridFactor {
+  readonly kgCo2PerKwh: number;
+  readonly source: string;
+}
+
 export type ScoreComponent = 'served' | 'severity' | 'spell' | 'damp' | 'water' | 'electricity' | 'worst-year';
 
 export interface ScoreAnchor {
@@ -98,4 +116,8 @@ export interface Brief {
   /** Gates that a person answers, such as an infection-control sign-off. */
   readonly gates: readonly string[];
   readonly score: readonly ScoreAnchor[];
+  readonly prices?: Prices;
+  readonly grid?: GridFactor;
+  /** Why stages are on that the use does not have by itself; printed on every sheet. */
+  readonly stagesReason?: string;
 }

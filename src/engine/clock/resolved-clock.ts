@@ -5,6 +5,7 @@
 import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
 import { isLeapYear } from '../reduction/calendar.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
+import type { Position } from './daylight.ts';
 
 /** From this slot on (0 first), civil time is so many minutes ahead of UTC. */
 export interface CivilOffset {
@@ -23,6 +24,8 @@ export interface ResolvedClock {
   readonly utcOffsetMin: number;
   /** At least one, the first from slot 0. */
   readonly offsets: readonly CivilOffset[];
+  /** The place whose daylight a schedule of daylight follows; left out by every other. */
+  readonly daylightAt?: Position;
 }
 
 /** Both start on a Monday, so that places compare (method 3). */
@@ -57,8 +60,20 @@ export function resolveClock(input: {
   const calendarYear = input.kind === 'actual' ? (input.year ?? laidOn) : laidOn;
   const unresolved: ResolvedClock = { clock, calendarYear, slots, utcOffsetMin, offsets: [] };
   const offsets =
-    clock === 'standard' ? [{ fromSlot: 0, offsetMin: utcOffsetMin }] : civilOffsets(unresolved, input.zone);
+    clock === 'standard' ? [{ fromSlot: 0, offsetMin: utcOffsetMin }] : rememberedOffsets(unresolved, input.zone);
   return { ...unresolved, offsets };
+}
+
+/** A zone's rules are looked up day by day, which takes longer than judging the year: so once for each zone and calendar. */
+const remembered = new Map<string, readonly CivilOffset[]>();
+const MOST_REMEMBERED = 2000;
+
+function rememberedOffsets(clock: ResolvedClock, zone: string): readonly CivilOffset[] {
+  const key = `${zone} ${clock.calendarYear} ${clock.slots} ${clock.utcOffsetMin}`;
+  const offsets = remembered.get(key) ?? civilOffsets(clock, zone);
+  if (remembered.size >= MOST_REMEMBERED) remembered.clear();
+  remembered.set(key, offsets);
+  return offsets;
 }
 
 /** Midnight UTC, ms, that begins a day of the slots' calendar (0 first; one before or after the year is allowed). */

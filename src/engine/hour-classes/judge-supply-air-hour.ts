@@ -7,17 +7,17 @@ import { hundredths } from '../conventions.ts';
 import { airPath } from '../stages/air.ts';
 import type { StagePath, SupplyStage, SupplyState } from '../stages/stage-path.ts';
 import { capsHold } from './caps.ts';
-import type { DemandClass, DemandHour, HourJudgement } from './demand-hour.ts';
+import { type DemandClass, type DemandHour, type HourJudgement, withinShare } from './demand-hour.ts';
 import { permittedPaths } from './permitted-paths.ts';
+import { gainsEnough } from './short-from.ts';
 
-/** Least useful cooling: `short` lowers the supply by at least this, K. */
-const SHORT_FROM_K = 1;
 /** The share of wetting at which a cap just holds is found to this. */
 const SHARE_TOLERANCE = 1e-7;
 
 /** A stage's supply in this hour. */
 interface StageSupply {
   readonly stage: SupplyStage;
+  readonly waterC: number | null;
   readonly supply: SupplyState;
 }
 
@@ -28,7 +28,7 @@ export function judgeSupplyAirHour(hour: DemandHour, brief: Brief): HourJudgemen
   const frozen = hundredths(hour.outdoor.dryBulbC) <= hundredths(brief.freezeLockoutC);
   const dampOutside = !frozen && !holds(hour.supplyAimC, airSupply.humidityRatio, { hour, brief });
   if (!dampOutside && meets(airSupply, hour, brief)) {
-    const onAir = { stage: air.stage, supply: airSupply };
+    const onAir = { stage: air.stage, waterC: air.waterC, supply: airSupply };
     return metHour({ hourClass: frozen ? 'frozen' : 'air', first: onAir, airSupply, aloneMet: stagesWithAir(brief) });
   }
   const paths = frozen ? [] : permittedPaths(hour, brief, airSupply.tempC);
@@ -57,6 +57,8 @@ function metHour(input: {
     airSupplyC: airSupply.tempC,
     running: first.stage,
     supply: first.supply,
+    carriedShare: 1,
+    waterC: first.waterC,
     aloneMet,
   };
 }
@@ -78,7 +80,8 @@ function unmetHour(input: UnmetInput): HourJudgement {
   const lowest = lowestWithinCaps(all, hour, brief);
   const lowestUncappedC = Math.min(...all.map((path) => path.at(1).tempC));
   const hourClass = unmetClass(input, lowest);
-  const runs = hourClass === 'short' && lowest !== null ? lowest : { stage: air.stage, supply: airSupply };
+  const runs =
+    hourClass === 'short' && lowest !== null ? lowest : { stage: air.stage, waterC: air.waterC, supply: airSupply };
   return {
     hourClass,
     met: false,
@@ -89,16 +92,22 @@ function unmetHour(input: UnmetInput): HourJudgement {
     airSupplyC: airSupply.tempC,
     running: runs.stage,
     supply: runs.supply,
+    carriedShare: hourClass === 'damp' ? 0 : carriedShare(runs.supply.tempC, hour),
+    waterC: runs.waterC,
     aloneMet: [],
   };
+}
+
+/** (t_set - t_s) / (dT_room phi), within 0..1 (method 6). */
+function carriedShare(supplyC: number, { setC, supplyAimC }: DemandHour): number {
+  return withinShare((setC - supplyC) / (setC - supplyAimC));
 }
 
 function unmetClass(input: UnmetInput, lowest: StageSupply | null): DemandClass {
   const { hour, frozen, dampOutside, air, paths } = input;
   if (frozen) return 'frozen';
   if (dampOutside || paths.some((path) => reaches(path.at(1).tempC, hour))) return 'damp';
-  const gained = lowest === null ? 0 : hundredths(air.at(0).tempC) - hundredths(lowest.supply.tempC);
-  return gained >= hundredths(SHORT_FROM_K) ? 'short' : 'beyond';
+  return lowest !== null && gainsEnough(air.at(0).tempC, lowest.supply.tempC) ? 'short' : 'beyond';
 }
 
 /** Where outdoor air meets the hour, so does every plant, run dry. */
@@ -126,7 +135,7 @@ function meets(supply: SupplyState, hour: DemandHour, brief: Brief): boolean {
 function meetingSupply(path: StagePath, hour: DemandHour, brief: Brief): StageSupply | null {
   if (!reaches(path.at(1).tempC, hour)) return null;
   const supply = path.at(brief.control === 'on-off' ? 1 : path.shareFor(hour.supplyAimC));
-  return meets(supply, hour, brief) ? { stage: path.stage, supply } : null;
+  return meets(supply, hour, brief) ? { stage: path.stage, waterC: path.waterC, supply } : null;
 }
 
 /** T* with its stage: the lowest supply over x in 0..1 (on-off: x = 1) at which the caps hold; null without any. */
@@ -135,7 +144,7 @@ function lowestWithinCaps(paths: readonly StagePath[], hour: DemandHour, brief: 
   for (const path of paths) {
     const supply = lowestOfPath(path, hour, brief);
     if (supply !== null && (lowest === null || supply.tempC < lowest.supply.tempC)) {
-      lowest = { stage: path.stage, supply };
+      lowest = { stage: path.stage, waterC: path.waterC, supply };
     }
   }
   return lowest;

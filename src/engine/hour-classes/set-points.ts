@@ -1,6 +1,7 @@
 import type { Brief } from '../brief/brief.ts';
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { adaptiveLimit } from './adaptive-limit.ts';
+import { deratedC } from './derating.ts';
 import { runningMeansC } from './running-mean.ts';
 
 /** What the room is to be held at, slot by slot. */
@@ -12,17 +13,23 @@ export interface SetPoints {
 }
 
 /**
- * t_set of every slot (method 3 and 4). A limit that moves with the weather answers here too; index, tower and turbine
- * limits have none.
+ * t_set of every slot (method 3 and 4). A limit that moves with the weather answers here too; an index limit sets no
+ * temperature and answers NaN. A hall is held at the lower of its limit and its hard limits, after derating (method 3.1).
  * @param input.dryBulbC one value per slot, NaN where missing
  * @param input.wrapped the days before the first are the year's last (typical and derived years)
- * @throws RangeError for a limit that has no set-point
+ * @param input.heightM the height used for the place, m, by which limits are derated
  */
-export function setPoints(input: { brief: Pick<Brief, 'limit'>; dryBulbC: Float64Array; wrapped: boolean }): SetPoints {
+export function setPoints(input: {
+  brief: Pick<Brief, 'limit' | 'hardLimits'>;
+  dryBulbC: Float64Array;
+  wrapped: boolean;
+  heightM: number;
+}): SetPoints {
   const { limit } = input.brief;
   const slots = input.dryBulbC.length;
-  if (limit.kind === 'fixed') return { setC: new Float64Array(slots).fill(limit.tempC), outsideRange: null };
-  if (limit.kind !== 'adaptive') throw new RangeError(`a limit of kind ${limit.kind} has no set-point`);
+  if (limit.kind !== 'adaptive') {
+    return { setC: new Float64Array(slots).fill(steadySetC(input.brief, input.heightM)), outsideRange: null };
+  }
   const setC = new Float64Array(slots);
   const outsideRange = new Uint8Array(slots);
   for (const [day, meanC] of runningMeansC(input.dryBulbC, input.wrapped).entries()) {
@@ -32,4 +39,20 @@ export function setPoints(input: { brief: Pick<Brief, 'limit'>; dryBulbC: Float6
     outsideRange.fill(outside ? 1 : 0, from, to);
   }
   return { setC, outsideRange };
+}
+
+/** The set-point of a limit that holds all year, °C. */
+function steadySetC({ limit, hardLimits }: Pick<Brief, 'limit' | 'hardLimits'>, heightM: number): number {
+  switch (limit.kind) {
+    case 'fixed':
+      return limit.tempC;
+    case 'inlet':
+      return Math.min(deratedC(limit, heightM), ...hardLimits.map((hard) => deratedC(hard, heightM)));
+    case 'tower':
+      return limit.coldC;
+    case 'turbine':
+      return limit.targetC;
+    default:
+      return Number.NaN;
+  }
 }

@@ -3,6 +3,7 @@
  * Good from -100 to 200 °C; under 0.7 % from real gas at 101.325 kPa between -50 and 50 °C (that chapter, after Kuehn 1998).
  */
 import { psychrolib } from './psychrolib-si.ts';
+import { tabledDewPointC } from './saturation-table.ts';
 
 /** What a humidity below 0 °C stands for: saturation over liquid water or over ice. */
 export type BelowZeroPhase = 'water' | 'ice';
@@ -12,6 +13,14 @@ const ZERO_CELSIUS_K = 273.15;
 const DRY_AIR_KJ_PER_KG_K = 1.006;
 const VAPOUR_KJ_PER_KG_K = 1.86;
 const LATENT_HEAT_KJ_PER_KG = 2501;
+/** Ratio of the molar masses of water and dry air (eq. 20). */
+const MASS_RATIO = 0.621945;
+/** Factor of the humidity ratio in the volume (eq. 26). */
+const VOLUME_FACTOR = 1.607858;
+/** Gas constant of dry air, J/(kg K) (eq. 1). */
+const DRY_AIR_J_PER_KG_K = 287.042;
+/** PsychroLib's floor. */
+const DRIEST_HUMIDITY_RATIO = 1e-7;
 
 /** Saturation pressure, Pa, at a temperature, °C: over ice to 0.01 °C, over water above (eq. 5 and 6). */
 export function saturationPressurePa(tempC: number): number {
@@ -81,8 +90,19 @@ export function relativeHumidityOfDewPointPct(dryBulbC: number, dewPointC: numbe
   return (100 * saturationPressureInPhasePa(dewPointC, belowZero)) / saturationPressureInPhasePa(dryBulbC, belowZero);
 }
 
-/** Dew point, °C (frost point below 0 °C), of a state; at most the dry bulb. */
+/** Pressure of the vapour in air, Pa (eq. 20), with PsychroLib's floor for a humidity ratio. */
+export function vapourPressurePa(humidityRatio: number, pressurePa: number): number {
+  const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
+  return (pressurePa * ratio) / (MASS_RATIO + ratio);
+}
+
+/**
+ * Dew point, °C (frost point below 0 °C), of a state; at most the dry bulb. From tabulated saturation pressure, good to
+ * 0.0001 K; outside the table PsychroLib's, good to 0.001 K.
+ */
 export function dewPointC(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
+  const tabledC = tabledDewPointC(vapourPressurePa(humidityRatio, pressurePa));
+  if (!Number.isNaN(tabledC)) return Math.min(tabledC, dryBulbC);
   return psychrolib.GetTDewPointFromHumRatio(dryBulbC, humidityRatio, pressurePa);
 }
 
@@ -93,5 +113,6 @@ export function enthalpyKJPerKg(dryBulbC: number, humidityRatio: number): number
 
 /** Volume, m³ per kg of dry air (eq. 26). */
 export function volumeM3PerKg(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
-  return psychrolib.GetMoistAirVolume(dryBulbC, humidityRatio, pressurePa);
+  const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
+  return (DRY_AIR_J_PER_KG_K * (dryBulbC + ZERO_CELSIUS_K) * (1 + VOLUME_FACTOR * ratio)) / pressurePa;
 }

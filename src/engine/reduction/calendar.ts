@@ -54,8 +54,16 @@ export function monthStartSlots(slotCount: number): readonly number[] {
   return starts;
 }
 
-/** Month, 1 to 12, of every slot. */
+const monthsOfYears = new Map<number, Uint8Array>();
+
+/** Month, 1 to 12, of every slot. There are two such columns, each made once: they are read only. */
 export function monthOfEachSlot(slotCount: number): Uint8Array {
+  const made = monthsOfYears.get(slotCount) ?? makeMonths(slotCount);
+  monthsOfYears.set(slotCount, made);
+  return made;
+}
+
+function makeMonths(slotCount: number): Uint8Array {
   const starts = monthStartSlots(slotCount);
   const months = new Uint8Array(slotCount);
   for (let month = 1; month <= MONTHS; month++) months.fill(month, starts[month - 1], starts[month]);

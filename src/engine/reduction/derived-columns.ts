@@ -1,13 +1,14 @@
 /** Columns that follow from the packed ones: derived when they are needed, never a stored fact. */
 import { floatColumn } from '../float-column.ts';
 import { dewPointC } from '../psychrometrics/moist-air.ts';
-import { wetBulbC } from '../psychrometrics/wet-bulb.ts';
+import { wetBulbColumn as wetBulbOfColumns } from '../psychrometrics/wet-bulb.ts';
 import { unpackYear, type YearColumns } from './packed-columns.ts';
 import type { PackedYear } from './weather-year.ts';
 
 /** Wet bulb, °C, of every slot; NaN where dry bulb, humidity or pressure is missing. */
 export function wetBulbColumn(year: PackedYear): Float64Array {
-  return ofEachState(unpackYear(year), wetBulbC);
+  const { dryBulbC, humidityRatio, pressurePa } = unpackYear(year);
+  return wetBulbOfColumns(dryBulbC, humidityRatio, pressurePa);
 }
 
 /** Dew point, °C (frost point below 0 °C), of every slot; NaN where something is missing. */

@@ -3,7 +3,6 @@
  * slot order, each value rounded to the nearest step (halves upwards), missing -32768 or 65535. Serialised little-endian.
  */
 import { hundredths, MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
-import { floatColumn } from '../float-column.ts';
 import type { PackedYear } from './weather-year.ts';
 
 const HUMIDITY_RATIO_STEP = 2e-6;
@@ -35,22 +34,37 @@ function packedUint16(steps: number): number {
   return Number.isNaN(steps) ? MISSING_UINT16 : Math.min(MISSING_UINT16 - 1, Math.max(0, Math.round(steps)));
 }
 
-/** The numbers that the packed columns stand for. */
-export function unpackYear(year: PackedYear): YearColumns {
-  const slots = year.flags.length;
+/** Columns for so many slots, not filled in. */
+export function yearColumns(slots: number): YearColumns {
   return {
-    dryBulbC: floatColumn(slots, (slot) => {
-      const value = year.dryBulb[slot] ?? MISSING_INT16;
-      return value === MISSING_INT16 ? Number.NaN : value / 100;
-    }),
-    humidityRatio: floatColumn(slots, (slot) => stepsOrMissing(year.humidityRatio, slot) * HUMIDITY_RATIO_STEP),
-    pressurePa: floatColumn(slots, (slot) => stepsOrMissing(year.pressure, slot) * PRESSURE_STEP_PA),
+    dryBulbC: new Float64Array(slots),
+    humidityRatio: new Float64Array(slots),
+    pressurePa: new Float64Array(slots),
   };
 }
 
-function stepsOrMissing(column: Uint16Array, slot: number): number {
-  const value = column[slot] ?? MISSING_UINT16;
-  return value === MISSING_UINT16 ? Number.NaN : value;
+/**
+ * The numbers that the packed columns stand for.
+ * @param into columns of at least as many slots to write them into; the answer is their beginning
+ */
+export function unpackYear(year: PackedYear, into?: YearColumns): YearColumns {
+  const slots = year.flags.length;
+  const room = into ?? yearColumns(slots);
+  const { dryBulbC, humidityRatio, pressurePa } = room;
+  for (let slot = 0; slot < slots; slot++) {
+    const packedC = year.dryBulb[slot] ?? MISSING_INT16;
+    const packedRatio = year.humidityRatio[slot] ?? MISSING_UINT16;
+    const packedPa = year.pressure[slot] ?? MISSING_UINT16;
+    dryBulbC[slot] = packedC === MISSING_INT16 ? Number.NaN : packedC / 100;
+    humidityRatio[slot] = packedRatio === MISSING_UINT16 ? Number.NaN : packedRatio * HUMIDITY_RATIO_STEP;
+    pressurePa[slot] = packedPa === MISSING_UINT16 ? Number.NaN : packedPa * PRESSURE_STEP_PA;
+  }
+  if (dryBulbC.length === slots) return room;
+  return {
+    dryBulbC: dryBulbC.subarray(0, slots),
+    humidityRatio: humidityRatio.subarray(0, slots),
+    pressurePa: pressurePa.subarray(0, slots),
+  };
 }
 
 export interface PackedBytes {

@@ -1,7 +1,7 @@
 import type { Brief } from '../brief/brief.ts';
-import { notBuiltYet } from '../brief/not-built-yet.ts';
 import { METHOD_VERSION } from '../conventions.ts';
-import type { WeatherYear } from '../reduction/weather-year.ts';
+import { isIndexLimit } from '../hour-classes/index-limit.ts';
+import { yearlyMoney } from '../money/yearly-money.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
@@ -9,33 +9,30 @@ import { rawComponents } from '../score/raw-components.ts';
 import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
-import { type JudgedYear, judgeHours } from './judged-year.ts';
+import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
+import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
+import type { HourColumns } from './hour-columns.ts';
+import { type JudgedYear, type JudgeYearInput, judgeHours, judgingWorkspace } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
 import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
+import { type SuppliedAir, tallyReported } from './tally-reported.ts';
 
-export interface JudgeYearInput {
-  readonly year: WeatherYear;
-  readonly brief: Brief;
-  /** IANA name of the station's time zone. */
-  readonly zone: string;
-  /** The height used for the place, m. */
-  readonly heightM: number;
-}
+export type { JudgeYearInput } from './judged-year.ts';
+
+/** Columns that every year is judged in, one after another: nothing of them is left in a result. */
+const workspace = judgingWorkspace();
 
 /**
  * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
- * @throws RangeError when the brief needs what this version cannot judge (`notBuiltYet`), the zone is not known or the
- * columns are no year
+ * @throws RangeError when the zone is not known, the columns are no year, or a schedule of daylight hours has no position
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
-  const { year, brief, zone, heightM } = input;
-  const notBuilt = notBuiltYet(brief);
-  if (notBuilt.length > 0) throw new RangeError(notBuilt.join('; '));
-  const judged = judgeHours({ year, brief, zone });
+  const { brief, heightM } = input;
+  const judged = judgeHours(input, { into: workspace });
   const counted = countHours(judged, input);
-  const hardLimits = countHardLimits({ brief, heightM, demandHours: judged.demandHours });
+  const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
   const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
   const gates = gatesOf({ brief, coverage, hardLimits });
   return {
@@ -44,6 +41,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
     usable: coverage.usable,
     monthsShort: coverage.monthsShort,
     ...counted,
+    ...yearlyMoney(counted, brief),
     gates,
     ...verdictOf({ brief, ledger: counted.ledger, worstSpell: counted.worstSpell, hardLimits }),
     ...scoreOf(counted, { brief, exclusion: exclusionOf(gates) }),
@@ -54,24 +52,48 @@ export function judgeYear(input: JudgeYearInput): RunResult {
 function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
   return {
     ledger: tallyLedger(judged),
-    severityKh: judged.demandHours.reduce((sum, { judgement }) => sum + judgement.shortfallK, 0),
+    severityKh: sumOf(judged.hours.shortfallK, judged.hours.count),
     worstSpell: tallyWorstSpell(judged, year),
     aloneHours: tallyAloneHours(judged, brief),
     supplyCurve: tallySupplyCurve(judged),
     ...tallyMonthHours(judged),
     scaled: scaleForMissing(judged),
     clampedLimitHours: countClamped(judged),
-    ...tallyPlant(judged.slots, judged.demandHours),
+    degreeHours: tallyDegreeHours(brief, judged.hours),
+    recirculatedHours: tallyRecirculatedHours(judged.hours),
+    reported: tallyReported(brief, () => suppliedAirs(judged.hours)),
+    ...tallyPlant(judged.slots, judged.hours, judged.use),
   };
 }
 
-function countClamped({ outsideRange, demandHours }: JudgedYear): number | null {
-  return outsideRange === null ? null : demandHours.filter(({ slot }) => outsideRange[slot] === 1).length;
+function* suppliedAirs(hours: HourColumns): Iterable<SuppliedAir> {
+  for (let at = 0; at < hours.count; at++) {
+    const ratio = hours.supplyRatio[at] ?? Number.NaN;
+    yield {
+      supplyC: hours.supplyC[at] ?? Number.NaN,
+      supplyRatio: Number.isNaN(ratio) ? null : ratio,
+      supplyAimC: hours.supplyAimC[at] ?? Number.NaN,
+      loadFraction: hours.loadFraction[at] ?? Number.NaN,
+      pressurePa: hours.pressurePa[at] ?? Number.NaN,
+    };
+  }
+}
+function sumOf(column: Float64Array, count: number): number {
+  let sum = 0;
+  for (let at = 0; at < count; at++) sum += column[at] ?? 0;
+  return sum;
+}
+
+function countClamped({ outsideRange, hours }: JudgedYear): number | null {
+  if (outsideRange === null) return null;
+  let clamped = 0;
+  for (let at = 0; at < hours.count; at++) clamped += outsideRange[hours.slot[at] ?? 0] ?? 0;
+  return clamped;
 }
 
 function scoreOf(counted: ReturnType<typeof countHours>, input: { brief: Brief; exclusion: string | null }) {
   const { brief, exclusion } = input;
-  const indexPoints = brief.limit.kind === 'thi' || brief.limit.kind === 'shade-heat';
+  const indexPoints = isIndexLimit(brief.limit);
   const weighted = weightedScore(brief.score, rawComponents(counted, brief), { indexPoints });
   const noDemand = counted.ledger.demand === 0 ? 'not applicable: no demand' : null;
   const scoreNote = exclusion ?? noDemand;

@@ -1,6 +1,7 @@
 import type { ScoreComponent } from '../brief/brief.ts';
 import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import type { HourClass } from '../hour-classes/hour-class.ts';
+import type { MoneyAnswer } from '../money/yearly-money.ts';
 
 /** Count of hours per class; the counts add up to `hours`, which is asserted on every run. */
 export interface Ledger {
@@ -68,8 +69,32 @@ export interface SupplyBin {
   readonly hours: number;
 }
 
-/** One weather year judged by one brief version. Water and electricity are per kW of design load. */
-export interface RunResult {
+/** Electricity of the year, kWh, and its greatest hour, kW, both ways, back-up counted. */
+export interface Electricity {
+  readonly kwh: number;
+  readonly referenceKwh: number;
+  readonly savedPct: number | null;
+  readonly peakKw: number;
+  readonly referencePeakKw: number;
+  /** Heat that the back-up must be able to take, kW of cooling. */
+  readonly backUpKw: number;
+}
+
+/** Hours in which water is recirculated: an input to the water safety plan, no verdict (method 6). */
+export interface RecirculatedHours {
+  readonly all: number;
+  /** Of them those with water at 20 °C or more. */
+  readonly warm: number;
+}
+
+/** Demand hours of something that a brief asks to have reported and that makes no class; null: not counted by this program. */
+export interface ReportedHours {
+  readonly what: string;
+  readonly hours: number | null;
+}
+
+/** One weather year judged by one brief version. Water, electricity and money are per kW of design load. */
+export interface RunResult extends MoneyAnswer {
   readonly methodVersion: string;
   readonly clock: ResolvedClock;
   /** Every month in which the brief has schedule has 90 % of its hours (method 2). */
@@ -80,11 +105,12 @@ export interface RunResult {
   readonly scaled: ScaledCounts;
   /** Demand hours whose adaptive limit was clamped to its range; null for other limits. */
   readonly clampedLimitHours: number | null;
+  /** K h; of an index limit, index-point hours. */
   readonly severityKh: number;
   readonly worstSpell: WorstSpell | null;
   /** Demand hours that each permitted stage (and outdoor air) would meet alone; not exclusive, never stacked. */
   readonly aloneHours: Readonly<Partial<Record<HourClass, number>>>;
-  /** Supply temperatures in demand hours, ascending bins of 1 K without a gap. */
+  /** Supply temperatures (of a tower, of the water) in demand hours, ascending bins of 1 K without a gap. */
   readonly supplyCurve: readonly SupplyBin[];
   /** Demand and met hours by month (12) x hour of day (24), in the slots' standard time. */
   readonly demandByMonthHour: readonly (readonly number[])[];
@@ -101,13 +127,12 @@ export interface RunResult {
     readonly peakHourLitres: number;
     readonly coolingKwh: number;
   };
-  readonly electricity: {
-    readonly kwh: number;
-    readonly referenceKwh: number;
-    readonly savedPct: number | null;
-    readonly peakKw: number;
-    readonly referencePeakKw: number;
-  };
+  /** null: not applicable, as for turbine inlets. */
+  readonly electricity: Electricity | null;
+  /** Degree hours gained at a turbine inlet, K h; null for every other use. */
+  readonly degreeHours: number | null;
+  readonly recirculatedHours: RecirculatedHours;
+  readonly reported: readonly ReportedHours[];
   readonly gates: readonly GateAnswer[];
   readonly tolerances: readonly ToleranceAnswer[];
   readonly verdict: Verdict;

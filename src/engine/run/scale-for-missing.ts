@@ -4,50 +4,55 @@ import { monthOfEachSlot } from '../reduction/calendar.ts';
 import type { JudgedYear } from './judged-year.ts';
 import type { ScaledCounts } from './run-result.ts';
 
-interface Cell {
-  scheduled: number;
-  present: number;
-  demand: number;
-  met: number;
-}
+/** Month (12) x hour of day (24), in the slots' standard time. */
+const CELLS = 12 * HOURS_PER_DAY;
+const CLOSED = hourClasses.indexOf('closed');
+const MISSING = hourClasses.indexOf('missing');
 
 /**
  * Demand and met hours scaled by month x hour of day: each cell's counts times its scheduled over its present hours. A
  * missing hour is never counted as not met (method 2).
  */
 export function scaleForMissing(judged: JudgedYear): ScaledCounts {
+  const cells = countCells(judged);
   let demand = 0;
   let met = 0;
   let unknown = 0;
-  for (const cell of cellsOf(judged)) {
-    if (cell.present === 0) unknown += cell.scheduled;
+  for (let cell = 0; cell < CELLS; cell++) {
+    const scheduled = cells.scheduled[cell] ?? 0;
+    const present = cells.present[cell] ?? 0;
+    if (present === 0) unknown += scheduled;
     else {
-      demand += (cell.demand * cell.scheduled) / cell.present;
-      met += (cell.met * cell.scheduled) / cell.present;
+      demand += ((cells.demand[cell] ?? 0) * scheduled) / present;
+      met += ((cells.met[cell] ?? 0) * scheduled) / present;
     }
   }
   return { demand, met, unknown };
 }
 
-/** 288 cells: month (12) x hour of day (24), in the slots' standard time. */
-function cellsOf(judged: JudgedYear): Cell[] {
-  const months = monthOfEachSlot(judged.slots);
-  const cells = Array.from({ length: 12 * HOURS_PER_DAY }, () => ({ scheduled: 0, present: 0, demand: 0, met: 0 }));
-  const cellAt = (slot: number): Cell | undefined =>
-    cells[((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY)];
-  const closed = hourClasses.indexOf('closed');
-  const missing = hourClasses.indexOf('missing');
-  for (const [slot, code] of judged.classCodes.entries()) {
-    const cell = cellAt(slot);
-    if (code === closed || cell === undefined) continue;
-    cell.scheduled += 1;
-    if (code !== missing) cell.present += 1;
+interface Cells {
+  readonly scheduled: Uint32Array;
+  readonly present: Uint32Array;
+  readonly demand: Uint32Array;
+  readonly met: Uint32Array;
+}
+
+function countCells({ slots, classCodes, hours }: JudgedYear): Cells {
+  const months = monthOfEachSlot(slots);
+  const numbers = () => new Uint32Array(CELLS);
+  const cells = { scheduled: numbers(), present: numbers(), demand: numbers(), met: numbers() };
+  const cellOf = (slot: number) => ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
+  for (let slot = 0; slot < slots; slot++) {
+    const code = classCodes[slot];
+    if (code === CLOSED) continue;
+    const cell = cellOf(slot);
+    cells.scheduled[cell] = (cells.scheduled[cell] ?? 0) + 1;
+    if (code !== MISSING) cells.present[cell] = (cells.present[cell] ?? 0) + 1;
   }
-  for (const { slot, judgement } of judged.demandHours) {
-    const cell = cellAt(slot);
-    if (cell === undefined) continue;
-    cell.demand += 1;
-    if (judgement.met) cell.met += 1;
+  for (let at = 0; at < hours.count; at++) {
+    const cell = cellOf(hours.slot[at] ?? 0);
+    cells.demand[cell] = (cells.demand[cell] ?? 0) + 1;
+    cells.met[cell] = (cells.met[cell] ?? 0) + (hours.met[at] ?? 0);
   }
   return cells;
 }

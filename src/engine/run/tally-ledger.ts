@@ -1,4 +1,5 @@
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
+import { dampReasons } from './hour-columns.ts';
 import type { JudgedYear } from './judged-year.ts';
 import type { Ledger } from './run-result.ts';
 
@@ -7,24 +8,34 @@ import type { Ledger } from './run-result.ts';
  * @throws RangeError when the classes do not add up to the hours of the year
  */
 export function tallyLedger(judged: JudgedYear): Ledger {
-  const { demandHours, classCodes, slots } = judged;
+  const { hours, classCodes, slots } = judged;
   const classes = countClasses(classCodes);
   const ledger = {
     hours: slots,
     classes,
-    dampOutside: demandHours.filter(({ judgement }) => judgement.dampBy === 'outside').length,
-    dampPlant: demandHours.filter(({ judgement }) => judgement.dampBy === 'plant').length,
+    dampOutside: countOf(hours.damp, hours.count, dampReasons.indexOf('outside')),
+    dampPlant: countOf(hours.damp, hours.count, dampReasons.indexOf('plant')),
     demand: slots - classes.closed - classes.missing - classes.idle,
-    met: demandHours.filter(({ judgement }) => judgement.met).length,
+    met: countOf(hours.met, hours.count, 1),
   };
-  assertAddsUp(ledger, demandHours.length);
+  assertAddsUp(ledger, hours.count);
   return ledger;
+}
+
+/** How often a value stands among the first so many of a column. */
+function countOf(column: Uint8Array, count: number, value: number): number {
+  let found = 0;
+  for (let at = 0; at < count; at++) if (column[at] === value) found++;
+  return found;
 }
 
 /** Every class with its count, 0 where there is none. */
 function countClasses(classCodes: Uint8Array): Record<HourClass, number> {
   const counts = hourClasses.map(() => 0);
-  for (const code of classCodes) counts[code] = (counts[code] ?? 0) + 1;
+  for (let slot = 0; slot < classCodes.length; slot++) {
+    const code = classCodes[slot] ?? 0;
+    counts[code] = (counts[code] ?? 0) + 1;
+  }
   const of = (hourClass: HourClass): number => counts[hourClasses.indexOf(hourClass)] ?? 0;
   return {
     closed: of('closed'),

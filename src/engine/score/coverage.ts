@@ -47,10 +47,10 @@ export function coverageOf(input: { classCodes: Uint8Array; known: Uint8Array })
 function countMonths({ classCodes, known }: { classCodes: Uint8Array; known: Uint8Array }): MonthCount[] {
   const monthOf = monthOfEachSlot(classCodes.length);
   const months = Array.from({ length: 12 }, () => ({ slots: 0, known: 0, scheduled: 0, present: 0, demand: 0 }));
-  for (const [slot, code] of classCodes.entries()) {
+  for (let slot = 0; slot < classCodes.length; slot++) {
     const month = months[(monthOf[slot] ?? 1) - 1];
     if (month === undefined) continue;
-    const hourClass = hourClasses[code];
+    const hourClass = hourClasses[classCodes[slot] ?? 0];
     month.slots += 1;
     month.known += known[slot] ?? 0;
     if (hourClass === 'closed') continue;

@@ -1,6 +1,7 @@
-import type { Brief, HardLimit } from '../brief/brief.ts';
+import type { Brief } from '../brief/brief.ts';
 import { hundredths } from '../conventions.ts';
-import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
+import { deratedC } from '../hour-classes/derating.ts';
+import type { HourColumns } from '../run/hour-columns.ts';
 
 /** A hard limit with the hours found over it. */
 export interface HardLimitCount {
@@ -11,15 +12,6 @@ export interface HardLimitCount {
   readonly foundHours: number;
 }
 
-/** Thermal guidelines for data halls lower their limits by 1 K per 300 m above 900 m (method 3.1, after practice P4, P5). */
-const DERATE_FROM_M = 900;
-const DERATE_M_PER_K = 300;
-
-/** Kelvin that a derated limit is lowered at a height, m; continuous. */
-export function deratingK(heightM: number): number {
-  return Math.max(0, heightM - DERATE_FROM_M) / DERATE_M_PER_K;
-}
-
 /**
  * Unmet demand hours with t_set + S over each hard limit, S from the lowest supply without caps (method 3.1).
  * @param input.heightM the height used for the place, m
@@ -27,18 +19,20 @@ export function deratingK(heightM: number): number {
 export function countHardLimits(input: {
   brief: Pick<Brief, 'hardLimits'>;
   heightM: number;
-  demandHours: readonly { hour: DemandHour; judgement: HourJudgement }[];
+  hours: Pick<HourColumns, 'count' | 'met' | 'setC' | 'uncappedShortfallK'>;
 }): HardLimitCount[] {
   return input.brief.hardLimits.map((limit) => {
-    const tempC = hardLimitC(limit, input.heightM);
-    const over = input.demandHours.filter(
-      ({ hour, judgement }) =>
-        !judgement.met && hundredths(hour.setC + judgement.uncappedShortfallK) > hundredths(tempC),
-    );
-    return { tempC, derated: tempC !== limit.tempC, allowedHours: limit.hours, foundHours: over.length };
+    const tempC = deratedC(limit, input.heightM);
+    const foundHours = countOver(input.hours, hundredths(tempC));
+    return { tempC, derated: tempC !== limit.tempC, allowedHours: limit.hours, foundHours };
   });
 }
 
-function hardLimitC(limit: HardLimit, heightM: number): number {
-  return limit.derate === undefined ? limit.tempC : limit.tempC - deratingK(heightM);
+function countOver(hours: Parameters<typeof countHardLimits>[0]['hours'], limitHundredths: number): number {
+  let over = 0;
+  for (let at = 0; at < hours.count; at++) {
+    if (hours.met[at] === 1) continue;
+    if (hundredths((hours.setC[at] ?? Number.NaN) + (hours.uncappedShortfallK[at] ?? 0)) > limitHundredths) over++;
+  }
+  return over;
 }

@@ -15,7 +15,7 @@ export function rawComponents(run: Counted, brief: Brief): RawComponents {
     spell: run.worstSpell?.hours ?? 0,
     damp: dampApplies(brief) ? (100 * classes.damp) / demand : null,
     water: run.water.litresPerKwh,
-    electricity: run.electricity.savedPct,
+    electricity: run.electricity?.savedPct ?? null,
     'worst-year': servedPct,
   };
 }

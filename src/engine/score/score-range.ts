@@ -15,14 +15,24 @@ import { type JudgeYearInput, judgeYear } from '../run/judge-year.ts';
 
 export type RangeDoubt = 'humidity reading' | 'plant tolerance' | 'set-point' | 'humidity cap';
 
-/** Weighted sums before gates at both ends of one doubt; null when no component applies. */
+/** One end of a doubt. */
+export interface RangeEnd {
+  readonly label: string;
+  /** Weighted sum before gates; null when no component applies. */
+  readonly scoreExact: number | null;
+  /** Normalised components in the order of the brief's score; null where one does not apply. */
+  readonly normalised: readonly (number | null)[];
+}
+
 export interface RangePair {
   readonly doubt: RangeDoubt;
-  readonly minus: { readonly label: string; readonly scoreExact: number | null };
-  readonly plus: { readonly label: string; readonly scoreExact: number | null };
+  readonly minus: RangeEnd;
+  readonly plus: RangeEnd;
 }
 
 export interface ScoreRange {
+  /** The year as it stands, which the ends are compared with. */
+  readonly normalised: readonly (number | null)[];
   readonly pairs: readonly RangePair[];
   /** The doubt whose two ends lie furthest apart; null without any pair that has two scores. */
   readonly largest: RangeDoubt | null;
@@ -45,7 +55,7 @@ export function scoreRange(input: JudgeYearInput & { humidityFrom: 'dew point' |
   const pair = (doubt: RangeDoubt, label: string, change: (sign: 1 | -1) => Partial<JudgeYearInput>): RangePair => {
     const end = (sign: 1 | -1) => ({
       label: `${sign === 1 ? '+' : '-'}${label}`,
-      scoreExact: judgeYear({ ...input, ...change(sign) }).scoreExact,
+      ...figuresOf({ ...input, ...change(sign) }),
     });
     return { doubt, minus: end(-1), plus: end(1) };
   };
@@ -56,14 +66,19 @@ export function scoreRange(input: JudgeYearInput & { humidityFrom: 'dew point' |
     ...(brief.stages.length === 0
       ? []
       : [pair('plant tolerance', plant, (sign) => ({ brief: otherPlant(brief, sign) }))]),
-    ...(brief.limit.kind === 'fixed'
+    ...(hasSetPoint(brief)
       ? [pair('set-point', `${SET_POINT_K} K`, (sign) => ({ brief: otherSetPoint(brief, sign) }))]
       : []),
     ...(brief.caps.roomRhPct === undefined && brief.caps.supplyRhPct === undefined
       ? []
       : [pair('humidity cap', `${CAP_POINTS} %`, (sign) => ({ brief: otherCaps(brief, sign) }))]),
   ];
-  return { pairs, largest: largestOf(pairs) };
+  return { normalised: figuresOf(input).normalised, pairs, largest: largestOf(pairs) };
+}
+
+function figuresOf(input: JudgeYearInput): Omit<RangeEnd, 'label'> {
+  const { scoreExact, parts } = judgeYear(input);
+  return { scoreExact, normalised: parts.map(({ normalised }) => normalised) };
 }
 
 function largestOf(pairs: readonly RangePair[]): RangeDoubt | null {
@@ -81,9 +96,25 @@ function otherPlant(brief: Brief, sign: 1 | -1): Brief {
   };
 }
 
+/** Adaptive limits follow the weather and index limits are no temperatures, so neither has a set-point to doubt. */
+function hasSetPoint({ limit }: Brief): boolean {
+  return limit.kind === 'fixed' || limit.kind === 'inlet' || limit.kind === 'tower' || limit.kind === 'turbine';
+}
+
 function otherSetPoint(brief: Brief, sign: 1 | -1): Brief {
   const { limit } = brief;
-  return limit.kind === 'fixed' ? { ...brief, limit: { ...limit, tempC: limit.tempC + sign * SET_POINT_K } } : brief;
+  const moveK = sign * SET_POINT_K;
+  switch (limit.kind) {
+    case 'fixed':
+    case 'inlet':
+      return { ...brief, limit: { ...limit, tempC: limit.tempC + moveK } };
+    case 'tower':
+      return { ...brief, limit: { ...limit, coldC: limit.coldC + moveK } };
+    case 'turbine':
+      return { ...brief, limit: { ...limit, targetC: limit.targetC + moveK } };
+    default:
+      return brief;
+  }
 }
 
 function otherCaps(brief: Brief, sign: 1 | -1): Brief {

@@ -9,5 +9,5 @@ export function airPath(outdoor: OutdoorState, brief: Pick<Brief, 'fanWPerLs'>):
     evaporatedKgPerKg: 0,
     share: 0,
   };
-  return { stage: 'air', at: () => state, shareFor: (supplyC) => (state.tempC <= supplyC ? 0 : 1) };
+  return { stage: 'air', waterC: null, at: () => state, shareFor: (supplyC) => (state.tempC <= supplyC ? 0 : 1) };
 }

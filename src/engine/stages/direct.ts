@@ -11,6 +11,7 @@ export function directPath(outdoor: WetOutdoorState, brief: Pick<Brief, 'fanWPer
   const fullFallK = brief.effDirect * (outdoor.dryBulbC - outdoor.wetBulbC);
   return {
     stage: 'direct',
+    waterC: outdoor.wetBulbC,
     at: (share) => {
       const leavingC = outdoor.dryBulbC - share * fullFallK;
       const humidityRatio =

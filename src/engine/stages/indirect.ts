@@ -1,33 +1,41 @@
 import type { Brief } from '../brief/brief.ts';
+import type { SecondaryAir } from './secondary-air.ts';
 import {
   DRY_AIR_KJ_PER_KG_K,
   fanRiseK,
   LATENT_HEAT_KJ_PER_KG,
+  type OutdoorState,
   type StagePath,
   shareOnLine,
-  type WetOutdoorState,
 } from './stage-path.ts';
 
-/**
- * Indirect evaporation with outdoor secondary air: t_s = t - x e (t - t_wb,secondary) + f, w_s = w (method 4). The floor
- * at the dew point cannot bind here, since an outdoor wet bulb is never under the dew point.
- */
+/** Indirect evaporation: t_s = t - x e (t - t_wb,secondary) + f, not below the dew point, w_s = w (method 4). */
 export function indirectPath(
-  outdoor: WetOutdoorState,
+  outdoor: OutdoorState,
   brief: Pick<Brief, 'fanWPerLs' | 'effIndirect' | 'k'>,
+  secondary: SecondaryAir,
 ): StagePath {
   const riseK = fanRiseK(brief.fanWPerLs.indirect, outdoor.volumeM3PerKg);
-  const fullFallK = brief.effIndirect * (outdoor.dryBulbC - outdoor.wetBulbC);
+  const fullFallK = secondaryFallK(outdoor.dryBulbC, brief.effIndirect, secondary);
   return {
     stage: 'indirect',
-    at: (share) => ({
-      tempC: outdoor.dryBulbC - share * fullFallK + riseK,
-      humidityRatio: outdoor.humidityRatio,
-      evaporatedKgPerKg: secondaryWaterKgPerKg(share * fullFallK, brief.k),
-      share,
-    }),
+    waterC: secondary.wetBulbC,
+    at: (share) => {
+      const fallK = Math.min(share * fullFallK, secondary.mostFallK);
+      return {
+        tempC: outdoor.dryBulbC - fallK + riseK,
+        humidityRatio: outdoor.humidityRatio,
+        evaporatedKgPerKg: secondaryWaterKgPerKg(fallK, brief.k),
+        share,
+      };
+    },
     shareFor: (supplyC) => shareOnLine({ dryC: outdoor.dryBulbC + riseK, fullFallK, supplyC }),
   };
+}
+
+/** e (t - t_wb,secondary), K: what full wetting takes off; secondary air that is warmer cools nothing. */
+export function secondaryFallK(dryBulbC: number, effIndirect: number, { wetBulbC }: SecondaryAir): number {
+  return Math.max(0, effIndirect * (dryBulbC - wetBulbC));
 }
 
 /**

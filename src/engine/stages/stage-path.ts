@@ -31,6 +31,8 @@ export interface SupplyState {
 
 export interface StagePath {
   readonly stage: SupplyStage;
+  /** Temperature of the water that it recirculates, °C: the wet bulb of the air that meets it; null without water. */
+  readonly waterC: number | null;
   /** Supply air at a share x, 0..1; the temperature never rises and the humidity never falls with x. */
   readonly at: (share: number) => SupplyState;
   /** The least share at which the supply is at most this, °C; 1 when it never is. */

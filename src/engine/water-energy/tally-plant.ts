@@ -1,20 +1,27 @@
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { monthOfEachSlot } from '../reduction/calendar.ts';
-import type { RunResult } from '../run/run-result.ts';
-import type { PlantHour } from './plant-hour.ts';
+import type { HourColumns } from '../run/hour-columns.ts';
+import type { Electricity, RunResult } from '../run/run-result.ts';
 
-/** The plant's hour at a slot (0 first). */
-export interface PlantSlot {
-  readonly slot: number;
-  readonly plant: PlantHour;
-}
+/** The plant of each demand hour. */
+export type PlantColumns = Pick<
+  HourColumns,
+  'count' | 'slot' | 'evaporatedLitres' | 'makeUpLitres' | 'coolingKwh' | 'kwh' | 'referenceKwh' | 'backUpKw'
+>;
 
 /** Water and electricity of the year per kW of design load (method 6); the first of equals is the peak. */
-export function tallyPlant(slots: number, plantSlots: readonly PlantSlot[]): Pick<RunResult, 'water' | 'electricity'> {
-  return { water: tallyWater(slots, plantSlots), electricity: tallyElectricity(plantSlots) };
+export function tallyPlant(
+  slots: number,
+  hours: PlantColumns,
+  { countsElectricity }: { countsElectricity: boolean },
+): Pick<RunResult, 'water' | 'electricity'> {
+  return {
+    water: tallyWater(slots, hours),
+    electricity: countsElectricity ? tallyElectricity(hours) : null,
+  };
 }
 
-function tallyWater(slots: number, plantSlots: readonly PlantSlot[]): RunResult['water'] {
+function tallyWater(slots: number, hours: PlantColumns): RunResult['water'] {
   const months = monthOfEachSlot(slots);
   const byMonth = new Float64Array(12);
   const byDay = new Float64Array(slots / HOURS_PER_DAY);
@@ -22,15 +29,17 @@ function tallyWater(slots: number, plantSlots: readonly PlantSlot[]): RunResult[
   let makeUpLitres = 0;
   let coolingKwh = 0;
   let peakHourLitres = 0;
-  for (const { slot, plant } of plantSlots) {
-    evaporatedLitres += plant.evaporatedLitres;
-    makeUpLitres += plant.makeUpLitres;
-    coolingKwh += plant.coolingKwh;
-    peakHourLitres = Math.max(peakHourLitres, plant.makeUpLitres);
+  for (let at = 0; at < hours.count; at++) {
+    const slot = hours.slot[at] ?? 0;
+    const madeUp = hours.makeUpLitres[at] ?? 0;
+    evaporatedLitres += hours.evaporatedLitres[at] ?? 0;
+    makeUpLitres += madeUp;
+    coolingKwh += hours.coolingKwh[at] ?? 0;
+    peakHourLitres = Math.max(peakHourLitres, madeUp);
     const month = (months[slot] ?? 1) - 1;
     const day = Math.floor(slot / HOURS_PER_DAY);
-    byMonth[month] = (byMonth[month] ?? 0) + plant.makeUpLitres;
-    byDay[day] = (byDay[day] ?? 0) + plant.makeUpLitres;
+    byMonth[month] = (byMonth[month] ?? 0) + madeUp;
+    byDay[day] = (byDay[day] ?? 0) + madeUp;
   }
   const worstMonth = peakOf(byMonth);
   const peakDay = peakOf(byDay);
@@ -47,19 +56,23 @@ function tallyWater(slots: number, plantSlots: readonly PlantSlot[]): RunResult[
   };
 }
 
-function tallyElectricity(plantSlots: readonly PlantSlot[]): RunResult['electricity'] {
+function tallyElectricity(hours: PlantColumns): Electricity {
   let kwh = 0;
   let referenceKwh = 0;
   let peakKw = 0;
   let referencePeakKw = 0;
-  for (const { plant } of plantSlots) {
-    kwh += plant.kwh;
-    referenceKwh += plant.referenceKwh;
-    peakKw = Math.max(peakKw, plant.kwh);
-    referencePeakKw = Math.max(referencePeakKw, plant.referenceKwh);
+  let backUpKw = 0;
+  for (let at = 0; at < hours.count; at++) {
+    const drawn = hours.kwh[at] ?? 0;
+    const reference = hours.referenceKwh[at] ?? 0;
+    kwh += drawn;
+    referenceKwh += reference;
+    peakKw = Math.max(peakKw, drawn);
+    referencePeakKw = Math.max(referencePeakKw, reference);
+    backUpKw = Math.max(backUpKw, hours.backUpKw[at] ?? 0);
   }
   const savedPct = referenceKwh > 0 ? (100 * (referenceKwh - kwh)) / referenceKwh : null;
-  return { kwh, referenceKwh, savedPct, peakKw, referencePeakKw };
+  return { kwh, referenceKwh, savedPct, peakKw, referencePeakKw, backUpKw };
 }
 
 /** The first greatest value over 0 with its place; null when none is over 0. */

@@ -69,7 +69,7 @@ export function SpellNote({ shown }: { shown: Shown }) {
 }
 
 /** Water and electricity of the year, for each kilowatt of design load. */
-export function WaterElectricityNote({ shown: { water, electricity } }: { shown: Shown }) {
+export function WaterElectricityNote({ shown: { water, electricity, money, moneyNote, carbon } }: { shown: Shown }) {
   return (
     <Note title="Water and electricity">
       <p className="text-fine text-soft">Of the year, for each kilowatt of design load.</p>
@@ -81,16 +81,47 @@ export function WaterElectricityNote({ shown: { water, electricity } }: { shown:
             water.litresPerKwh === null ? 'not applicable' : sensible(water.litresPerKwh, 'L/kWh'),
           ],
           ['Peak day', water.peakDay === null ? 'none' : `${sensible(water.peakDayLitres, 'L')}, ${water.peakDay}`],
-          ['Electricity', sensible(electricity.kwh, 'kWh')],
-          ['Reference plant', sensible(electricity.referenceKwh, 'kWh')],
-          ['Saved', electricity.savedPct === null ? 'not applicable' : percent(electricity.savedPct)],
-          ['Peak, with back-up', sensible(electricity.peakKw, 'kW')],
-          ['Peak of the reference', sensible(electricity.referencePeakKw, 'kW')],
+          ...electricityRows(electricity),
+          ...moneyRows(money),
+          ...carbonRows(carbon),
         ]}
       />
-      <p className="mt-1 text-fine text-soft">Not priced: the brief holds no prices.</p>
+      {[...(moneyNote === null ? [] : [moneyNote]), ...(money?.notes ?? [])].map((note) => (
+        <p key={note} className="mt-1 text-fine text-soft">
+          {capital(note)}.
+        </p>
+      ))}
     </Note>
   );
+}
+
+function electricityRows(electricity: Shown['electricity']): readonly (readonly [label: string, value: string])[] {
+  if (electricity === null) return [['Electricity', 'not applicable']];
+  return [
+    ['Electricity', sensible(electricity.kwh, 'kWh')],
+    ['Reference plant', sensible(electricity.referenceKwh, 'kWh')],
+    ['Saved', electricity.savedPct === null ? 'not applicable' : percent(electricity.savedPct)],
+    ['Peak, with back-up', sensible(electricity.peakKw, 'kW')],
+    ['Peak of the reference', sensible(electricity.referencePeakKw, 'kW')],
+  ];
+}
+
+function moneyRows(money: Shown['money']): readonly (readonly [label: string, value: string])[] {
+  if (money === null) return [];
+  const { currency, plant, reference, saving, payback } = money;
+  return [
+    ['Cost of a year', sensible(plant, currency)],
+    ['Cost of a year, reference plant', sensible(reference, currency)],
+    ['Saved in a year', sensible(saving, currency)],
+    ...(payback === null
+      ? []
+      : [['Simple payback', typeof payback === 'number' ? sensible(payback, 'years') : payback] as const]),
+  ];
+}
+
+function carbonRows(carbon: Shown['carbon']): readonly (readonly [label: string, value: string])[] {
+  if (carbon === null) return [];
+  return [[`Carbon dioxide saved, by ${carbon.source}`, sensible(carbon.savedKg, 'kg')]];
 }
 
 /** Why the weather can be trusted for this place as far as it can. */

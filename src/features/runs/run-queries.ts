@@ -6,14 +6,20 @@ import { apiKey, apiQuery } from '../../lib/api-query.ts';
 export interface ProgrammeIds {
   readonly teamId: string;
   readonly programmeId: string;
+  /** Of several briefs the one in view; null: the one that was saved last. */
+  readonly briefId: string | null;
 }
 
-export function mapQuery(ids: ProgrammeIds) {
-  return apiQuery(getMap, { params: { ...ids }, query: {} });
+export function mapQuery({ teamId, programmeId, briefId }: ProgrammeIds) {
+  return apiQuery(getMap, { params: { teamId, programmeId }, query: ofBrief(briefId) });
 }
 
-export function placeQuery(ids: ProgrammeIds, stationId: string) {
-  return apiQuery(getStationPlace, { params: { ...ids, stationId }, query: {} });
+export function placeQuery({ teamId, programmeId, briefId }: ProgrammeIds, stationId: string) {
+  return apiQuery(getStationPlace, { params: { teamId, programmeId, stationId }, query: ofBrief(briefId) });
+}
+
+function ofBrief(briefId: string | null): { brief?: string } {
+  return briefId === null ? {} : { brief: briefId };
 }
 
 /** The hour classes of a run; a run never changes, so they are fetched once. */

@@ -1,7 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { BriefFaultsError } from '#engine/brief/brief-fault.ts';
 import { briefFromPreset, readBrief } from '#engine/brief/brief-from-preset.ts';
-import { notBuiltYet } from '#engine/brief/not-built-yet.ts';
 import { presetBrief, presetNames, rawPreset } from '../../support/presets.ts';
 
 function faultPaths(raw: unknown): string[] {
@@ -142,17 +141,5 @@ describe('a brief from a preset', () => {
 
   test.each([[null], [undefined], ['office'], [[]], [42]])('%j is no brief and says so', (raw) => {
     expect(() => briefFromPreset(raw)).toThrow(BriefFaultsError);
-  });
-});
-
-describe('what is not built yet', () => {
-  test('school, office, clinic and broiler are judged in full', () => {
-    expect(['school', 'office', 'clinic', 'broiler'].flatMap((name) => notBuiltYet(presetBrief(name)))).toEqual([]);
-  });
-
-  test('room exhaust as secondary air is named plainly', () => {
-    expect(notBuiltYet(presetBrief('office', { secondaryAir: 'exhaust' }))).toEqual([
-      'Room exhaust as secondary air is not built yet.',
-    ]);
   });
 });

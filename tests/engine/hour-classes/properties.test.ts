@@ -6,7 +6,7 @@ import type { DemandHour, HourJudgement } from '#engine/hour-classes/demand-hour
 import { judgeSupplyAirHour } from '#engine/hour-classes/judge-supply-air-hour.ts';
 import { saturationHumidityRatio, volumeM3PerKg } from '#engine/psychrometrics/moist-air.ts';
 import { fanRiseK } from '#engine/stages/stage-path.ts';
-import { supplyAirPlantHour } from '#engine/water-energy/plant-hour.ts';
+import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
 import { propertySettings, samples } from '../../support/sample-size.ts';
 import { anyBrief, cooler, HOURS_PER_BRIEF, hoursOfOutdoor, hourUnder, real } from './random-hours.ts';
 
@@ -57,7 +57,7 @@ describe('every hour', () => {
             check(met === judgement.aloneMet.length > 0, `met ${met} alone ${judgement.aloneMet.join()}`);
             const plant = supplyAirPlantHour(hour, judgement, brief);
             check(
-              Object.values(plant).every((figure) => figure >= 0),
+              Object.values(plant).every((figure) => figure !== null && figure >= 0),
               `plant ${JSON.stringify(plant)}`,
             );
             check(plant.coolingKwh <= load + 1e-12, `cooling ${plant.coolingKwh} of ${load}`);

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import type { Brief } from '#engine/brief/brief.ts';
 import { runningMeansC } from '#engine/hour-classes/running-mean.ts';
 import { setPoints } from '#engine/hour-classes/set-points.ts';
 
@@ -47,27 +48,38 @@ describe('the running mean of the outdoor temperature', () => {
 
 describe('set-points', () => {
   const limit = { kind: 'adaptive', model: 'ashrae55-80', ceilingC: 32 } as const;
+  const derate = '1 K per 300 m above 900 m';
+
+  function setPointsOf(brief: Pick<Brief, 'limit'> & Partial<Pick<Brief, 'hardLimits'>>, dayC = 40, heightM = 0) {
+    return setPoints({ brief: { hardLimits: [], ...brief }, dryBulbC: yearOf(() => dayC), wrapped: true, heightM });
+  }
 
   test('of an adaptive limit follow the running mean, clamped to its range and to the ceiling', () => {
-    const warm = setPoints({ brief: { limit }, dryBulbC: yearOf(() => 20), wrapped: true });
+    const warm = setPointsOf({ limit }, 20);
     expect(warm.setC[0]).toBeCloseTo(27.5, 9);
     expect(warm.outsideRange?.[0]).toBe(0);
-    const hot = setPoints({ brief: { limit }, dryBulbC: yearOf(() => 40), wrapped: true });
+    const hot = setPointsOf({ limit });
     expect(hot.setC[5000]).toBeCloseTo(0.31 * 33.5 + 21.3, 9);
     expect(hot.outsideRange?.[5000]).toBe(1);
-    const low = setPoints({ brief: { limit: { ...limit, ceilingC: 28 } }, dryBulbC: yearOf(() => 30), wrapped: true });
+    const low = setPointsOf({ limit: { ...limit, ceilingC: 28 } }, 30);
     expect(low.setC[5000]).toBe(28);
   });
 
   test('of a fixed limit are that temperature, and an index limit has none', () => {
-    const fixed = setPoints({
-      brief: { limit: { kind: 'fixed', tempC: 26 } },
-      dryBulbC: yearOf(() => 40),
-      wrapped: true,
-    });
+    const fixed = setPointsOf({ limit: { kind: 'fixed', tempC: 26 } });
     expect([fixed.setC[0], fixed.outsideRange]).toEqual([26, null]);
-    expect(() =>
-      setPoints({ brief: { limit: { kind: 'thi', value: 72 } }, dryBulbC: yearOf(() => 40), wrapped: true }),
-    ).toThrow(/thi/);
+    expect(setPointsOf({ limit: { kind: 'thi', value: 72 } }).setC[0]).toBeNaN();
+  });
+
+  test('of a hall are the lower of its limit and its hard limit, each derated where it says so', () => {
+    const hall = {
+      limit: { kind: 'inlet', tempC: 27 },
+      hardLimits: [{ tempC: 32, hours: 0, derate }],
+    } as const;
+    expect(setPointsOf(hall, 20, 900).setC[0]).toBe(27);
+    expect(setPointsOf(hall, 20, 2355).setC[0]).toBe(27);
+    expect(setPointsOf(hall, 20, 3026).setC[8759]).toBeCloseTo(32 - 2126 / 300, 9);
+    const allowable = { limit: { kind: 'inlet', tempC: 32, derate } } as const;
+    expect(setPointsOf(allowable, 20, 1200).setC[0]).toBe(31);
   });
 });

@@ -58,7 +58,7 @@ describe('a year with one kind of weather', () => {
       scoreNote: 'not applicable: no demand',
       words: null,
     });
-    expect(result.electricity.savedPct).toBeNull();
+    expect(result.electricity?.savedPct).toBeNull();
     expect(result.parts.every(({ raw, points }) => raw === null && points === null)).toBe(true);
   });
 });
@@ -182,10 +182,12 @@ describe('a run', () => {
     expect(JSON.parse(canonicalJson(figures))).toEqual(figures);
   });
 
-  test('of a brief that is not built yet is refused in words', () => {
-    const brief = presetBrief('office', { secondaryAir: 'exhaust' });
-    expect(() => judgeYear({ year: syntheticYear({ at: dryHour }), brief, ...place })).toThrow(
-      'Room exhaust as secondary air is not built yet.',
+  test('of a schedule of daylight hours is refused in words where the position is not known', () => {
+    const input = { year: syntheticYear({ at: dryHour }), brief: presetBrief('glasshouse'), ...place };
+    expect(() => judgeYear(input)).toThrow(
+      'a schedule of daylight hours needs the position of the place, its latitude and longitude',
     );
+    const { clock } = judgeYear({ ...input, position: { latitude: 45, longitude: 0 } });
+    expect(clock.daylightAt).toEqual({ latitude: 45, longitude: 0 });
   });
 });

@@ -5,7 +5,6 @@
  */
 import { readFileSync } from 'node:fs';
 import { beforeAll, describe, expect, test } from 'vitest';
-import { notBuiltYet } from '#engine/brief/not-built-yet.ts';
 import { type HourClass, hourClasses } from '#engine/hour-classes/hour-class.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
@@ -46,12 +45,16 @@ function publishedRows(): Row[] {
 interface RealYear {
   readonly year: WeatherYear;
   readonly heightM: number;
+  readonly position: { readonly latitude: number; readonly longitude: number };
 }
 
 function readRealYear(file: string): RealYear {
   const reading = readWeatherFile(realFile(file), file);
   if (reading.status === 'refused') throw new Error(`${file} was refused`);
-  return { year: reduceYear(reading).year, heightM: reading.station.elevationM ?? 0 };
+  const { latitude, longitude, elevationM } = reading.station;
+  if (latitude === null || longitude === null || elevationM === null)
+    throw new Error(`${file} does not say where it is`);
+  return { year: reduceYear(reading).year, heightM: elevationM, position: { latitude, longitude } };
 }
 
 /** Hours that would have to move for the two ledgers to agree. */
@@ -60,8 +63,24 @@ function hoursApart(result: RunResult, row: Row): number {
   return hourClasses.reduce((sum, hourClass) => sum + apart(hourClass), 0) / 2;
 }
 
-const judgedPresets = presetNames.filter((name) => notBuiltYet(presetBrief(name)).length === 0);
-const rows = publishedRows().filter(({ preset = '' }) => judgedPresets.includes(preset));
+const rows = publishedRows();
+
+/** What differs in the digits that the row prints, as "found (row)"; a figure that a row leaves out is not looked at. */
+function differencesOf(result: RunResult, row: Row): string[] {
+  const found: readonly (readonly [column: string, value: string])[] = [
+    ...hourClasses.map((hourClass) => [hourClass, String(result.ledger.classes[hourClass])] as const),
+    ['demand', String(result.ledger.demand)],
+    ['met', String(result.ledger.met)],
+    ['worst_spell_h', String(result.worstSpell?.hours ?? 0)],
+    ['severity', result.severityKh.toFixed(2)],
+    ['water_L_per_kWh', (result.water.litresPerKwh ?? 0).toFixed(3)],
+    ['saved_pct', (result.electricity?.savedPct ?? 0).toFixed(2)],
+    ['score_exact', (result.scoreExact ?? 0).toFixed(2)],
+  ];
+  return found.flatMap(([column, value]) =>
+    row[column] === '' || row[column] === value ? [] : [`${column} ${value} (${row[column]})`],
+  );
+}
 
 describe.skipIf(sharedFolder === null)(`published ledgers (skipped where ${WITHOUT_SHARED})`, () => {
   const years = new Map<string, RealYear>();
@@ -70,10 +89,10 @@ describe.skipIf(sharedFolder === null)(`published ledgers (skipped where ${WITHO
     for (const { file = '' } of rows) if (!years.has(file)) years.set(file, readRealYear(file));
   }, 60_000);
 
-  test('cover nine files under every preset that is judged', () => {
+  test('cover nine files under every preset that ships', () => {
     expect(years.size).toBe(9);
-    expect(rows).toHaveLength(9 * judgedPresets.length);
-    expect(judgedPresets).toEqual(expect.arrayContaining(['school', 'office', 'clinic', 'broiler']));
+    expect(rows).toHaveLength(9 * presetNames.length);
+    expect(new Set(rows.map(({ preset }) => preset))).toEqual(new Set(presetNames));
   });
 
   test.each(rows)('$file under $preset', (row) => {
@@ -84,9 +103,8 @@ describe.skipIf(sharedFolder === null)(`published ledgers (skipped where ${WITHO
     const result = judgeYear({ ...real, zone, brief: presetBrief(preset) });
     const apart = hoursApart(result, row);
     const scoreApart = Math.abs((result.scoreExact ?? 0) - Number(row.score_exact));
-    if (apart > 0 || scoreApart > 0.01) {
-      console.log(`${file} ${preset}: ${apart} h in another class, score ${result.scoreExact} (${row.score_exact})`);
-    }
+    const differences = differencesOf(result, row);
+    if (differences.length > 0) console.log(`${file} ${preset}: ${differences.join(', ')}`);
     expect(apart).toBeLessThanOrEqual(HOURS_APART_SHARE * result.ledger.hours);
     expect(scoreApart).toBeLessThanOrEqual(SCORE_POINTS);
     expect(result.verdict).toBe(row.verdict);
@@ -94,7 +112,7 @@ describe.skipIf(sharedFolder === null)(`published ledgers (skipped where ${WITHO
     expect(Math.abs((result.water.litresPerKwh ?? 0) - Number(row.water_L_per_kWh))).toBeLessThanOrEqual(
       WATER_L_PER_KWH,
     );
-    expect(Math.abs((result.electricity.savedPct ?? 0) - Number(row.saved_pct))).toBeLessThanOrEqual(SAVED_PCT);
+    expect(Math.abs((result.electricity?.savedPct ?? 0) - Number(row.saved_pct))).toBeLessThanOrEqual(SAVED_PCT);
     expect(result.gates.filter(({ answer }) => answer === 'fail')).toHaveLength(row.gates_failed === '' ? 0 : 1);
   });
 });

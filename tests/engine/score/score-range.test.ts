@@ -51,4 +51,49 @@ describe('the range of a score', () => {
     });
     expect(pairs.map(({ doubt }) => doubt)).toEqual(['humidity reading', 'set-point']);
   });
+
+  test('moves what a limit holds by 1 K, whatever it is called, and leaves indices and adaptive limits alone', () => {
+    const doubtsOf = (preset: string) => {
+      const brief = presetBrief(preset, { months: [7] });
+      const { pairs } = scoreRange({ ...place, brief, humidityFrom: 'dew point' });
+      return { brief, pairs };
+    };
+    for (const preset of ['hall-recommended', 'process-water', 'turbine-inlet']) {
+      const { brief, pairs } = doubtsOf(preset);
+      const setPoint = pairs.find(({ doubt }) => doubt === 'set-point');
+      for (const [end, moveK] of [
+        [setPoint?.minus, -1],
+        [setPoint?.plus, 1],
+      ] as const) {
+        const { limit } = brief;
+        const moved =
+          limit.kind === 'inlet'
+            ? { ...limit, tempC: limit.tempC + moveK }
+            : limit.kind === 'tower'
+              ? { ...limit, coldC: limit.coldC + moveK }
+              : limit.kind === 'turbine'
+                ? { ...limit, targetC: limit.targetC + moveK }
+                : limit;
+        expect(moved).not.toEqual(limit);
+        expect(end?.scoreExact).toBe(judgeYear({ ...place, brief: { ...brief, limit: moved } }).scoreExact);
+      }
+    }
+    for (const preset of ['dairy', 'warehouse', 'school']) {
+      expect(doubtsOf(preset).pairs.map(({ doubt }) => doubt)).not.toContain('set-point');
+    }
+  });
+
+  test('says at each end what the score is made of, beside the year as it stands', () => {
+    const range = scoreRange({ ...place, brief: office, humidityFrom: 'relative humidity' });
+    const { parts } = judgeYear({ ...place, brief: office });
+    expect(range.normalised).toEqual(parts.map(({ normalised }) => normalised));
+    const total = office.score.reduce((sum, { weight }) => sum + weight, 0);
+    for (const { scoreExact, normalised } of range.pairs.flatMap(({ minus, plus }) => [minus, plus])) {
+      const sum = office.score.reduce(
+        (all, { weight }, at) => all + (weight / total) * (normalised[at] ?? Number.NaN),
+        0,
+      );
+      expect(sum).toBeCloseTo(scoreExact ?? Number.NaN, 9);
+    }
+  });
 });

@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { countHardLimits } from '#engine/score/hard-limits.ts';
 import { verdictOf } from '#engine/score/verdict.ts';
+import { hoursLike } from '../../support/judged-hours.ts';
 import { presetBrief } from '../../support/presets.ts';
 
 const spell = { hours: 17, startSlot: 0, endSlot: 20, severityKh: 1, worstK: 1, cutAtJoint: false };
@@ -56,13 +57,15 @@ describe('a hard limit', () => {
     airSupplyC: 40,
     running: 'air',
     supply: { tempC: 40, humidityRatio: 0.01, evaporatedKgPerKg: 0, share: 0 },
+    carriedShare: 0,
+    waterC: null,
     aloneMet: [],
   } as const;
 
   function count(tempC: number, heightM: number, derated = true) {
     const limit = derated ? { tempC, hours: 0, derate } : { tempC, hours: 0 };
     const brief = presetBrief('office', { hardLimits: [limit] });
-    return countHardLimits({ brief, heightM, demandHours: [{ hour, judgement }] })[0];
+    return countHardLimits({ brief, heightM, hours: hoursLike([{ hour, judgement }]) })[0];
   }
 
   test('counts unmet hours whose room passes it without regard to caps, a tie not', () => {

@@ -1,8 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import type { Brief } from '#engine/brief/brief.ts';
 import { judgeSupplyAirHour } from '#engine/hour-classes/judge-supply-air-hour.ts';
-import { supplyAirPlantHour } from '#engine/water-energy/plant-hour.ts';
+import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
 import { tallyPlant } from '#engine/water-energy/tally-plant.ts';
+import { hoursLike } from '../../support/judged-hours.ts';
 import { presetBrief } from '../../support/presets.ts';
 import { hourUnder } from '../hour-classes/random-hours.ts';
 
@@ -27,14 +28,14 @@ describe('the plant of one hour, per kW of design load', () => {
     expect(plant.kwh).toBeCloseTo((0.6 * AIRFLOW_L_PER_S) / 1000, 6);
     expect(plant.referenceKwh).toBeCloseTo((0.6 * AIRFLOW_L_PER_S) / 1000, 6);
     const without = plantOf({ dryBulbC: 18, changes: { reference: { cop: 3, economy: false } } }).plant;
-    expect(without.referenceKwh - plant.referenceKwh).toBeCloseTo(1 / 3, 9);
+    expect((without.referenceKwh ?? 0) - (plant.referenceKwh ?? 0)).toBeCloseTo(1 / 3, 9);
   });
 
   test('in a direct hour: fan 0.8, pump 0.02, water as the air gains it, a third more by bleed at 4 cycles', () => {
     const { judgement, plant } = plantOf({});
     expect(judgement.hourClass).toBe('direct');
     expect(plant.kwh).toBeCloseTo((0.8 * AIRFLOW_L_PER_S) / 1000 + 0.02, 6);
-    const gained = judgement.supply.humidityRatio - 0.006;
+    const gained = (judgement.supply.humidityRatio ?? Number.NaN) - 0.006;
     expect(plant.evaporatedLitres).toBeCloseTo((gained / (1.006 * 5)) * 3600, 9);
     expect(plant.makeUpLitres).toBeCloseTo((plant.evaporatedLitres * 4) / 3, 9);
     expect(plant.referenceKwh).toBeCloseTo((0.6 * AIRFLOW_L_PER_S) / 1000 + 1 / 3, 6);
@@ -61,7 +62,7 @@ describe('the plant of one hour, per kW of design load', () => {
     expect(judgement.hourClass).toBe('damp');
     expect(plant).toMatchObject({ makeUpLitres: 0, coolingKwh: 0 });
     expect(plant.kwh).toBeCloseTo((0.6 * AIRFLOW_L_PER_S) / 1000 + 1 / 3, 6);
-    expect(plant.kwh).toBeCloseTo(plant.referenceKwh, 9);
+    expect(plant.kwh).toBeCloseTo(plant.referenceKwh ?? Number.NaN, 9);
   });
 
   test('beyond: outdoor air carries what it can, the back-up at most the load', () => {
@@ -83,15 +84,21 @@ describe('the plant of one hour, per kW of design load', () => {
   });
 });
 
+const COUNTED = { countsElectricity: true };
+
 describe('the plant of a year', () => {
-  const hour = { evaporatedLitres: 3, makeUpLitres: 4, coolingKwh: 2, kwh: 0.5, referenceKwh: 1 };
+  const hour = { evaporatedLitres: 3, makeUpLitres: 4, coolingKwh: 2, kwh: 0.5, referenceKwh: 1, backUpKw: 0.2 };
 
   test('adds up, and names the worst month, the peak day and the peak hour', () => {
-    const { water, electricity } = tallyPlant(8760, [
-      { slot: 0, plant: hour },
-      { slot: 24 * 40, plant: hour },
-      { slot: 24 * 40 + 1, plant: { ...hour, makeUpLitres: 5, kwh: 0.9, referenceKwh: 0.8 } },
-    ]);
+    const { water, electricity } = tallyPlant(
+      8760,
+      hoursLike([
+        { slot: 0, plant: hour },
+        { slot: 24 * 40, plant: { ...hour, backUpKw: 0.7 } },
+        { slot: 24 * 40 + 1, plant: { ...hour, makeUpLitres: 5, kwh: 0.9, referenceKwh: 0.8 } },
+      ]),
+      COUNTED,
+    );
     expect(water).toEqual({
       makeUpLitres: 13,
       evaporatedLitres: 9,
@@ -103,13 +110,22 @@ describe('the plant of a year', () => {
       peakDayLitres: 9,
       peakHourLitres: 5,
     });
-    expect(electricity).toMatchObject({ peakKw: 0.9, referencePeakKw: 1 });
-    expect(electricity.savedPct).toBeCloseTo((100 * (2.8 - 1.9)) / 2.8, 9);
+    expect(electricity).toMatchObject({ peakKw: 0.9, referencePeakKw: 1, backUpKw: 0.7 });
+    expect(electricity?.savedPct).toBeCloseTo((100 * (2.8 - 1.9)) / 2.8, 9);
   });
 
   test('without demand has no figure that would need a denominator', () => {
-    const { water, electricity } = tallyPlant(8760, []);
+    const { water, electricity } = tallyPlant(8760, hoursLike([]), COUNTED);
     expect(water).toMatchObject({ makeUpLitres: 0, litresPerKwh: null, worstMonth: null, peakDay: null });
     expect(electricity).toMatchObject({ kwh: 0, savedPct: null });
+  });
+
+  test('of a turbine inlet has water and no electricity', () => {
+    const inlet = { ...hour, kwh: null, referenceKwh: null, backUpKw: 0 };
+    const { water, electricity } = tallyPlant(8760, hoursLike([{ slot: 3, plant: inlet }]), {
+      countsElectricity: false,
+    });
+    expect(electricity).toBeNull();
+    expect(water.makeUpLitres).toBe(4);
   });
 });

@@ -7,7 +7,8 @@ import { sampleUpload } from '../../../data/demo/sample-upload.ts';
 import { WrongUse } from '../../../server/cli/commands/command-arguments.ts';
 import { ledger } from '../../../server/cli/commands/ledger.ts';
 import { read } from '../../../server/cli/commands/read.ts';
-import { type CommandOutcome, repositoryDir, runCommand, startCommand } from '../../support/run-command.ts';
+import { csvRecords } from '../../support/csv-rows.ts';
+import { type CommandOutcome, repositoryDir, runCommand, runProgram, startCommand } from '../../support/run-command.ts';
 
 let folder: string;
 
@@ -124,10 +125,48 @@ describe('muslin ledger', () => {
     expect(outcome.stderr).toContain('nothing.epw');
   });
 
-  it.each(['turbine-inlet', 'palace'])('names the presets when asked for %s', async (brief) => {
+  it.each(['Office', 'palace'])('names the presets when asked for %s', async (brief) => {
     const outcome = await muslin('ledger', 'station.epw', '--brief', brief);
     expect(outcome).toMatchObject({ code: 2, stdout: '' });
     expect(outcome.stderr).toContain('office');
+  });
+});
+
+describe('muslin hours', () => {
+  it('writes a table whose classes add up to those of the ledger, under its units and its sources', async () => {
+    const outcome = await muslin('hours', 'station.epw', '--brief', 'office');
+    expect(outcome).toMatchObject({ code: 0, stderr: '' });
+    const rows = csvRecords(outcome.stdout);
+    expect(rows).toHaveLength(8760);
+    const [ledger] = results(await muslin('ledger', 'station.epw', '--brief', 'office'));
+    for (const [hourClass, hours] of Object.entries(Object(ledger?.classes))) {
+      expect(rows.filter((row) => row.class === hourClass).length, hourClass).toBe(hours);
+    }
+    expect(outcome.stdout).toContain(`# method version,${String(ledger?.methodVersion)}\n# brief,office\n`);
+    expect(outcome.stdout).toContain('# file,station.epw\n');
+    // An EPW has eight header lines.
+    expect([rows[0]?.file_line, rows.at(-1)?.file_line]).toEqual(['9', '8768']);
+  });
+
+  it('is one whole table through a pipe', async () => {
+    const through = ['-c', 'node "$0" muslin hours station.epw --brief office | tail -n 1', runProgram];
+    const outcome = await startCommand(through, { program: 'sh', programArgs: [], cwd: folder }).ended;
+    expect(outcome.stdout).toMatch(/^2030-01-01 00:00,.*,8768\n$/);
+  });
+
+  it('guards a station that is named like a formula', async () => {
+    const { text } = sampleUpload();
+    writeFileSync(path.join(folder, 'formula.epw'), text.replace(/^LOCATION,[^,]*/, 'LOCATION,=1+cmd()'));
+    const outcome = await muslin('hours', 'formula.epw', '--brief', 'office');
+    expect(outcome.stdout).toContain("\n# station,'=1+cmd()\n");
+  });
+
+  it('says the refusing sentences with code 1, a missing file with 3 and wrong use with 2, and writes no table', async () => {
+    const refused = await muslin('hours', 'nothing.epw', '--brief', 'office');
+    expect(refused).toMatchObject({ code: 1, stdout: '' });
+    expect(refused.stderr).toContain('nothing.epw is refused');
+    expect(await muslin('hours', 'absent.epw', '--brief', 'office')).toMatchObject({ code: 3, stdout: '' });
+    expect(await muslin('hours', 'station.epw', '--brief', 'palace')).toMatchObject({ code: 2, stdout: '' });
   });
 });
 

@@ -80,7 +80,7 @@ describe('the main road', () => {
     watching.abort();
     await ended;
     await feed.close();
-    const words = told.map((event) => (event.kind === 'run' ? 'run' : (event.step ?? event.status)));
+    const words = told.map((event) => (event.kind === 'weather-file' ? (event.step ?? event.status) : event.kind));
     expect(words).toEqual(['received', 'reading', 'reducing', 'storing', 'review', 'accepted', 'run']);
   });
 

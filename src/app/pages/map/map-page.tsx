@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useMemo } from 'react';
+import { type ReactNode, useMemo } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import type { ProgrammeMap } from '../../../contract/runs.ts';
 import { rankedStations } from '../../../features/runs/ranked-stations.ts';
@@ -7,12 +7,13 @@ import { mapQuery, type ProgrammeIds } from '../../../features/runs/run-queries.
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';
 import { sentence } from '../../../lib/format.ts';
 import { PageTitle } from '../../../lib/page-title.tsx';
-import { PLACE_PARAM, paths } from '../../../lib/paths.ts';
+import { BRIEF_PARAM, PLACE_PARAM, paths } from '../../../lib/paths.ts';
 import { useTeam } from '../../../lib/team-scope.ts';
 import { useMedia, WIDE } from '../../../lib/use-media.ts';
 import { Button, buttonLook } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
+import { BriefChoice } from './brief-choice.tsx';
 import { NarrowSheet } from './narrow-sheet.tsx';
 import { WideSheet } from './wide-sheet.tsx';
 
@@ -20,6 +21,8 @@ import { WideSheet } from './wide-sheet.tsx';
 export interface SheetProps {
   readonly ids: ProgrammeIds;
   readonly map: ProgrammeMap;
+  /** Where another brief is taken. */
+  readonly choice: ReactNode;
   readonly chosenId: string | null;
   readonly onChoose: (stationId: string | null) => void;
 }
@@ -27,7 +30,8 @@ export interface SheetProps {
 export function MapPage() {
   const { teamId, role, programmes } = useTeam();
   const { programmeId = '' } = useParams();
-  const ids = { teamId, programmeId };
+  const [search] = useSearchParams();
+  const ids = { teamId, programmeId, briefId: search.get(BRIEF_PARAM) };
   const map = useQuery(mapQuery(ids));
   const title = programmes.find(({ id }) => id === programmeId)?.name ?? 'Map';
   return (
@@ -44,7 +48,7 @@ export function MapPage() {
 }
 
 /** The chosen place lives in the address, so that Back, a reload and a link all come back to it. */
-function Sheet({ ids, map }: { ids: ProgrammeIds; map: ProgrammeMap }) {
+function Sheet({ ids, map }: Pick<SheetProps, 'ids' | 'map'>) {
   const [search, setSearch] = useSearchParams();
   const isWide = useMedia(WIDE);
   const named = search.get(PLACE_PARAM);
@@ -58,7 +62,13 @@ function Sheet({ ids, map }: { ids: ProgrammeIds; map: ProgrammeMap }) {
     else next.set(PLACE_PARAM, stationId);
     setSearch(next);
   };
-  const props = { ids, map, chosenId, onChoose };
+  const onBrief = (briefId: string) => {
+    const next = new URLSearchParams(search);
+    next.set(BRIEF_PARAM, briefId);
+    setSearch(next);
+  };
+  const choice = <BriefChoice ids={ids} briefId={map.brief.briefId} onChoose={onBrief} />;
+  const props = { ids, map, choice, chosenId, onChoose };
   return isWide ? <WideSheet {...props} /> : <NarrowSheet {...props} />;
 }
 

@@ -9,7 +9,7 @@ import type { SheetProps } from './map-page.tsx';
 import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
 
 /** The map first, everything of its margins in a sheet at the foot of the screen. */
-export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
+export function NarrowSheet({ ids, map, choice, chosenId, onChoose }: SheetProps) {
   const [step, setStep] = useState<SheetStep>(chosenId === null ? 'peek' : 'half');
   const choose = (stationId: string) => {
     onChoose(stationId);
@@ -28,7 +28,7 @@ export function NarrowSheet({ ids, map, chosenId, onChoose }: SheetProps) {
       <BottomSheet label={chosenId === null ? 'Stations panel' : 'Place panel'} step={step} onStep={setStep}>
         {chosenId === null ? (
           <div className="grid gap-4">
-            <BriefNote map={map} />
+            <BriefNote map={map} choice={choice} />
             <StationList stations={map.stations} chosenId={chosenId} onChoose={choose} />
           </div>
         ) : (

@@ -1,0 +1,39 @@
+import type { Brief } from '#engine/brief/brief.ts';
+import type { WeatherYear } from '#engine/reduction/weather-year.ts';
+import { judgeYear } from '#engine/run/judge-year.ts';
+import { placeFigures } from '#engine/score/place-figures.ts';
+import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';
+import { runResultHash } from './run-key.ts';
+import { packedOver } from './shared-columns.ts';
+
+/** Judges every year of some stations by a draft brief: the function and the columns that a saved run is made with. */
+export function rescoreStations({ brief, stations, withHashes }: RescoreTask): readonly RescoredStation[] {
+  return stations.map((station) => rescoreStation(station, { brief, withHashes }));
+}
+
+function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashes: boolean }): RescoredStation {
+  const { brief } = on;
+  const { stationId, zone, heightM, position } = station;
+  const runs = station.years.map(({ weatherYearId, columns, ...facts }) => {
+    const year: WeatherYear = { ...facts, packed: packedOver(columns) };
+    const { hourClassCodes, ...result } = judgeYear({ year, brief, zone, heightM, position });
+    const resultHash = on.withHashes ? runResultHash(result, hourClassCodes) : null;
+    return { weatherYearId, kind: facts.kind, year: facts.year, result, resultHash };
+  });
+  const { score, scoreNote, words, verdict, yearsMeeting, range, shown, ...figures } = placeFigures({ brief, runs });
+  return {
+    stationId,
+    score,
+    scoreNote,
+    words,
+    verdict,
+    yearsMeeting,
+    range,
+    ledger: shown?.result.ledger ?? null,
+    shownWeatherYearId: shown?.weatherYearId ?? null,
+    restsOn: figures.runs.map(({ weatherYearId }) => weatherYearId),
+    resultHashes: runs.flatMap(({ weatherYearId, resultHash }) =>
+      resultHash === null ? [] : [{ weatherYearId, resultHash }],
+    ),
+  };
+}

@@ -1,0 +1,94 @@
+import type { Knex } from 'knex';
+import type { RescoreAnswer } from '#contract/runs.ts';
+import type { Brief } from '#engine/brief/brief.ts';
+import { METHOD_VERSION } from '#engine/conventions.ts';
+import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';
+import type { ThreadPool } from '../../jobs/thread-pool.ts';
+import type { ColumnCache } from './column-cache.ts';
+import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
+import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
+
+export type RescoreThreads = ThreadPool<RescoreTask, readonly RescoredStation[]>;
+
+export interface RescoreParts {
+  readonly db: Knex;
+  readonly threads: RescoreThreads;
+  readonly cache: ColumnCache;
+}
+
+export interface RescoreAsked {
+  readonly teamId: string;
+  readonly brief: Brief;
+  /** Null: every station of the team. */
+  readonly stationIds: readonly string[] | null;
+  readonly withHashes: boolean;
+  readonly signal: AbortSignal;
+}
+
+/**
+ * What every station of a team comes to under a draft brief, judged anew from the packed columns of its accepted years.
+ * @throws the reason of `signal`; threads then take no further portion
+ */
+export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise<RescoreAnswer> {
+  const begun = performance.now();
+  const all = await listYearsToRescore(parts.db, asked.teamId);
+  const wanted = asked.stationIds === null ? null : new Set(asked.stationIds);
+  const years = wanted === null ? all : all.filter(({ stationId }) => wanted.has(stationId));
+  const accepted = new Map(all.map(({ weatherYearId, contentHash }) => [weatherYearId, contentHash]));
+  const stations: RescoredStation[] = [];
+  let loadMs = 0;
+  for (const batch of inBatches(years, parts.cache.maxBytes)) {
+    const loading = performance.now();
+    const { teamId, signal } = asked;
+    const columns = await parts.cache.take({ teamId, years: batch, accepted, signal });
+    loadMs += performance.now() - loading;
+    stations.push(...(await judgeBatch(parts.threads, { ...asked, stations: stationsOf(batch, columns) })));
+  }
+  return {
+    methodVersion: METHOD_VERSION,
+    stations: stations.map(({ resultHashes, ...station }) => ({ ...station, restsOn: [...station.restsOn] })),
+    judged: judgedYears(years, stations),
+    loadMs,
+    totalMs: performance.now() - begun,
+  };
+}
+
+/** Every thread takes portions until none is left; the first fault ends it for all. */
+async function judgeBatch(
+  threads: RescoreThreads,
+  asked: RescoreAsked & { readonly stations: readonly StationToRescore[] },
+): Promise<readonly RescoredStation[]> {
+  const { brief, withHashes } = asked;
+  const chunks = inChunks(asked.stations, threads.threads);
+  const answers: (readonly RescoredStation[])[] = chunks.map(() => []);
+  const failed = new AbortController();
+  const signal = AbortSignal.any([asked.signal, failed.signal]);
+  let next = 0;
+  const takePortions = async (): Promise<void> => {
+    for (let mine = next++; mine < chunks.length; mine = next++) {
+      const stations = chunks[mine] ?? [];
+      answers[mine] = await threads.run({ brief, stations, withHashes }, signal);
+    }
+  };
+  try {
+    await Promise.all(Array.from({ length: threads.threads }, takePortions));
+  } catch (error) {
+    failed.abort(error);
+    throw error;
+  }
+  return answers.flat();
+}
+
+function judgedYears(years: readonly YearToRescore[], stations: readonly RescoredStation[]): RescoreAnswer['judged'] {
+  const hashes = new Map(
+    stations.flatMap(({ resultHashes }) => resultHashes.map((each) => [each.weatherYearId, each.resultHash])),
+  );
+  return years.map(({ weatherYearId, stationId, kind, year, contentHash }) => ({
+    weatherYearId,
+    stationId,
+    kind,
+    year,
+    contentHash,
+    resultHash: hashes.get(weatherYearId) ?? null,
+  }));
+}

@@ -1,0 +1,46 @@
+/** What the web's threads are asked and answer. */
+import type { Brief } from '#engine/brief/brief.ts';
+import type { YearKind } from '#engine/reduction/weather-year.ts';
+import type { Ledger, Verdict } from '#engine/run/run-result.ts';
+
+/** Some stations judged by one draft brief. */
+export interface RescoreTask {
+  readonly brief: Brief;
+  readonly stations: readonly StationToRescore[];
+  /** Whether the hash of every year's whole result is asked for, as a saved run carries it. */
+  readonly withHashes: boolean;
+}
+
+export interface StationToRescore {
+  readonly stationId: string;
+  readonly zone: string;
+  readonly heightM: number;
+  readonly position: { readonly latitude: number; readonly longitude: number };
+  /** Newest file first. */
+  readonly years: readonly {
+    readonly weatherYearId: string;
+    readonly kind: YearKind;
+    readonly year: number | null;
+    readonly utcOffsetMin: number;
+    /** Packed columns in memory that the thread shares. */
+    readonly columns: SharedArrayBuffer;
+  }[];
+}
+
+/** The figures of a station as a place, and of each of its years. */
+export interface RescoredStation {
+  readonly stationId: string;
+  readonly score: number | null;
+  readonly scoreNote: string | null;
+  readonly words: string | null;
+  readonly verdict: Verdict | null;
+  readonly yearsMeeting: number;
+  readonly range: { readonly low: number; readonly high: number } | null;
+  /** Of the year that stands for the station; null without a usable year. */
+  readonly ledger: Ledger | null;
+  readonly shownWeatherYearId: string | null;
+  /** The years that the figures rest on. */
+  readonly restsOn: readonly string[];
+  /** By weather year; empty unless asked for. */
+  readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
+}

@@ -1,0 +1,238 @@
+/**
+ * The export of hours, checked by itself: every class is found again from the cells of a row, the brief and the calendar alone,
+ * by the oracle (written apart from the engine, PsychroLib for all moist air).
+ */
+import { describe, expect, test } from 'vitest';
+import type { Brief } from '#engine/brief/brief.ts';
+import { briefSentence } from '#engine/brief/brief-sentence.ts';
+import { METHOD_VERSION } from '#engine/conventions.ts';
+import { hourClasses } from '#engine/hour-classes/hour-class.ts';
+import { hoursCsv, textCell } from '#engine/run/hours-csv.ts';
+import { hoursTable } from '#engine/run/hours-table.ts';
+import { judgeHours } from '#engine/run/judged-year.ts';
+import { csvRecords, csvRows } from '../../support/csv-rows.ts';
+import { presetBrief } from '../../support/presets.ts';
+import { samples } from '../../support/sample-size.ts';
+import { climateHeightM, climates, climateYear } from '../../support/synthetic-climates.ts';
+import { judgeByOracle, type OracleHour, type Threshold } from './oracle/oracle.ts';
+import { rhPct, wetBulbC } from './oracle/oracle-air.ts';
+
+/** A prime, so that every hour of the day is looked at. */
+const EVERY_ROWS = samples(31, 1);
+const ORIGIN = { file: 'here.epw', station: 'Here', brief: 'a brief', briefSentence: 'a sentence', zone: 'UTC' };
+
+/** As the numbers are rounded in the export: a hundredth of a kelvin, 0.01 % RH; twice that for what follows from them. */
+const NEAR: readonly { threshold: Threshold; by: number }[] = [
+  { threshold: 'temperature', by: 0.02 },
+  { threshold: 'cut-in', by: 0.02 },
+  { threshold: 'gain', by: 0.02 },
+  { threshold: 'dew-point', by: 0.02 },
+  { threshold: 'rh', by: 0.1 },
+  { threshold: 'index', by: 0.03 },
+];
+
+const PRESETS = [
+  'office',
+  'school',
+  'clinic',
+  'hall-recommended',
+  'dairy',
+  'warehouse',
+  'process-water',
+  'turbine-inlet',
+];
+
+/** The schedule from the row's own clock: a slot ending at h is open when h - 1 >= opening and h <= closing. */
+function isOpen(brief: Brief, row: Readonly<Record<string, string>>): boolean {
+  const time = (brief.clock === 'civil' ? row.civil_time : row.standard_time) ?? '';
+  const ends = new Date(`${time.replace(' ', 'T')}:00Z`);
+  // The hour that ends at midnight belongs to the day before.
+  const middle = new Date(ends.getTime() - 30 * 60_000);
+  const hourEnding = middle.getUTCHours() + 1;
+  const [opening = 0, closing = 24] = brief.hours.split('-').map(Number);
+  const weekday = middle.getUTCDay();
+  const dayOpens = brief.weekdays === 'all' || (weekday >= 1 && weekday <= 5);
+  return dayOpens && hourEnding - 1 >= opening && hourEnding <= closing;
+}
+
+const numberOf = (cell: string | undefined): number => (cell === undefined || cell === '' ? Number.NaN : Number(cell));
+
+function oracleHour(brief: Brief, row: Readonly<Record<string, string>>): OracleHour {
+  return {
+    brief,
+    open: isOpen(brief, row),
+    dryBulbC: numberOf(row.dry_bulb_C),
+    humidityRatio: numberOf(row.humidity_ratio_kg_kg),
+    pressurePa: numberOf(row.pressure_Pa),
+    limitC: numberOf(row.limit_C),
+    moved: null,
+  };
+}
+
+function agrees(hour: OracleHour, row: Readonly<Record<string, string>>): boolean {
+  const { hourClass, met } = judgeByOracle(hour);
+  return hourClass === row.class && (met === null ? '' : met ? 'yes' : 'no') === row.met;
+}
+
+function nearThreshold(hour: OracleHour, row: Readonly<Record<string, string>>): boolean {
+  return NEAR.some(({ threshold, by }) =>
+    [by, -by].some((moved) => agrees({ ...hour, moved: { threshold, by: moved } }, row)),
+  );
+}
+
+describe('the hours of a year as a table', () => {
+  test.each(PRESETS)(
+    'says enough that every class under %s can be found again from it',
+    (preset) => {
+      const brief = presetBrief(preset);
+      const classes = new Set<string>();
+      const wrong: string[] = [];
+      let compared = 0;
+      let near = 0;
+      // A third of the climates for each preset, all of them in the soak: the oracle's own test has every pair.
+      const ofPreset = climates.filter((_climate, at) => (at + PRESETS.indexOf(preset)) % samples(3, 1) === 0);
+      for (const climate of ofPreset) {
+        const table = hoursTable({
+          year: climateYear(climate),
+          brief,
+          zone: climate.zone,
+          heightM: climateHeightM(climate),
+        });
+        const rows = csvRecords(hoursCsv(table, ORIGIN));
+        if (rows.length < 8760) wrong.push(`${climate.name}: ${rows.length} rows`);
+        for (let at = climates.indexOf(climate); at < rows.length; at += EVERY_ROWS) {
+          const row = rows[at] ?? {};
+          const hour = oracleHour(brief, row);
+          compared += 1;
+          classes.add(row.class ?? '');
+          if (agrees(hour, row)) continue;
+          if (nearThreshold(hour, row)) near += 1;
+          else wrong.push(`${climate.name} ${row.standard_time}: ${row.class}, not ${judgeByOracle(hour).hourClass}`);
+        }
+      }
+      expect(wrong.slice(0, 10)).toEqual([]);
+      expect(compared).toBeGreaterThan((ofPreset.length * 8700) / EVERY_ROWS);
+      expect(near).toBeLessThanOrEqual(compared / 500);
+      expect(classes.size).toBeGreaterThan(2);
+    },
+    120_000,
+  );
+
+  test('gives wet bulb, humidities and rooms that PsychroLib gives for the cells beside them', () => {
+    const brief = presetBrief('office');
+    let rooms = 0;
+    let wetBulbs = 0;
+    for (const climate of climates.filter((_climate, at) => at % samples(3, 1) === 0)) {
+      const place = { year: climateYear(climate), brief, zone: climate.zone, heightM: climateHeightM(climate) };
+      for (const row of csvRecords(hoursCsv(hoursTable(place), ORIGIN)).filter((_row, at) => at % 53 === 11)) {
+        const [t, w, p] = [row.dry_bulb_C, row.humidity_ratio_kg_kg, row.pressure_Pa].map(numberOf);
+        if (t === undefined || w === undefined || p === undefined || Number.isNaN(t + w + p)) {
+          expect([row.wet_bulb_C, row.relative_humidity_pct]).toEqual(['', '']);
+          continue;
+        }
+        expect(Math.abs(numberOf(row.relative_humidity_pct) - rhPct(t, w, p))).toBeLessThan(0.006);
+        const wet = wetBulbC(t, w, p);
+        // Two roots near 0 °C (the method's section 1): compared outside.
+        if (Math.abs(wet) >= 1) {
+          wetBulbs += 1;
+          expect(Math.abs(numberOf(row.wet_bulb_C) - wet)).toBeLessThan(0.003);
+        }
+        if (row.met === '' || row.room_C === '') continue;
+        rooms += 1;
+        const supplyC = numberOf(row.supply_C);
+        const roomC = Math.max(supplyC, numberOf(row.limit_C) - brief.dTroomK) + brief.dTroomK;
+        expect(Math.abs(numberOf(row.room_C) - roomC)).toBeLessThan(0.002);
+        const roomPct = rhPct(roomC, numberOf(row.supply_humidity_ratio_kg_kg) + brief.dwRoomKgKg, p);
+        expect(Math.abs(numberOf(row.room_relative_humidity_pct) - roomPct)).toBeLessThan(0.02);
+      }
+    }
+    expect(wetBulbs).toBeGreaterThan(500);
+    expect(rooms).toBeGreaterThan(80);
+  });
+
+  test('has one row for every slot in order, with the run’s classes, the file’s lines and a reason in words', () => {
+    for (const [index, preset] of PRESETS.entries()) {
+      const climate = climates[(index + 3) % climates.length];
+      if (climate === undefined) throw new Error('ten climates');
+      const input = {
+        year: climateYear(climate),
+        brief: presetBrief(preset),
+        zone: climate.zone,
+        heightM: climateHeightM(climate),
+      };
+      const judged = judgeHours(input);
+      const lines = Uint32Array.from({ length: judged.slots }, (_none, slot) => (slot % 7 === 0 ? 0 : slot + 9));
+      const { rows } = hoursTable({ ...input, lines });
+      expect(rows.map(({ hourClass }) => hourClasses.indexOf(hourClass))).toEqual([...judged.classCodes]);
+      expect(rows.map(({ slot }) => slot)).toEqual(rows.map((_row, at) => at));
+      expect([rows[0]?.line, rows[1]?.line, rows[8]?.line]).toEqual([null, 10, 17]);
+      const total = judged.demandHours.reduce((sum, { plant }) => sum + plant.makeUpLitres, 0);
+      expect(rows.reduce((sum, { waterLitres }) => sum + (waterLitres ?? 0), 0)).toBeCloseTo(total, 6);
+      const odd = rows.filter(({ reason }) => !/^\p{Lu}.*\.$/u.test(reason) || /NaN|undefined|null/.test(reason));
+      expect(odd.map(({ reason }) => reason).slice(0, 5)).toEqual([]);
+    }
+  });
+
+  test('carries civil time beside standard time, also where the schedule is in standard time', () => {
+    const [desert] = climates;
+    if (desert === undefined) throw new Error('ten climates');
+    const input = { year: { ...climateYear(desert), utcOffsetMin: 60 }, zone: 'Europe/Madrid', heightM: 0 };
+    for (const preset of ['office', 'dairy']) {
+      const rows = csvRecords(hoursCsv(hoursTable({ ...input, brief: presetBrief(preset) }), ORIGIN));
+      // 2029: summer time from Sunday 25 March 02:00 to Sunday 28 October 03:00 (rule of the European Union).
+      const at = (standard: string) => rows.find((row) => row.standard_time === standard)?.civil_time;
+      expect(at('2029-01-01 01:00')).toBe('2029-01-01 01:00');
+      expect(at('2029-03-25 02:00')).toBe('2029-03-25 02:00');
+      expect(at('2029-03-25 03:00')).toBe('2029-03-25 04:00');
+      expect(at('2029-07-01 00:00')).toBe('2029-07-01 01:00');
+      expect(at('2029-10-28 03:00')).toBe('2029-10-28 03:00');
+      expect(rows.at(-1)?.standard_time).toBe('2030-01-01 00:00');
+    }
+  });
+});
+
+describe('the table as CSV', () => {
+  test('says above its columns what it is, with names from files that cannot act as formulas', () => {
+    const [desert] = climates;
+    if (desert === undefined) throw new Error('ten climates');
+    const brief = presetBrief('office');
+    const table = hoursTable({ year: climateYear(desert), brief, zone: desert.zone, heightM: 0 });
+    const text = hoursCsv(table, {
+      ...ORIGIN,
+      file: '-a,"b".epw',
+      station: '=HYPERLINK("x")',
+      briefSentence: briefSentence(brief),
+      zone: desert.zone,
+    });
+    const rows = csvRows(text);
+    const about = new Map(rows.filter(([name = '']) => name.startsWith('# ')).map(([name, value]) => [name, value]));
+    expect(about.get('# method version')).toBe(METHOD_VERSION);
+    expect(about.get('# brief')).toBe('a brief');
+    expect(about.get('# requirement')).toBe(briefSentence(brief));
+    expect(about.get('# file')).toBe(`'-a,"b".epw`);
+    expect(about.get('# station')).toBe(`'=HYPERLINK("x")`);
+    expect(about.get('# units')).toContain('per kW of design load');
+    const width = rows[about.size]?.length;
+    expect(new Set(rows.slice(about.size).map(({ length }) => length))).toEqual(new Set([width]));
+    // What begins like a formula is a number: no cell of text does.
+    const formulas = rows.flat().filter((cell) => /^[=+\-@\t\r]/.test(cell) && !/^-\d+(\.\d+)?$/.test(cell));
+    expect(formulas).toEqual([]);
+    expect(text).not.toMatch(/NaN|undefined|null|Infinity|(^|,)-0\.?0*(,|$)/m);
+  });
+
+  test.each([
+    ['=1+1', "'=1+1"],
+    ['+1', "'+1"],
+    ['-1', "'-1"],
+    ['@name', "'@name"],
+    ['  =1', "'  =1"],
+    ['\ttab', "'\ttab"],
+    ['\r=1', '"\'\r=1"'],
+    ['A, "B"', '"A, ""B"""'],
+    ['two\nlines', '"two\nlines"'],
+    ['plain = text', 'plain = text'],
+    ['', ''],
+  ])('writes the text %j as %j', (text, cell) => {
+    expect(textCell(text)).toBe(cell);
+  });
+});
