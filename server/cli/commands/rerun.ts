@@ -1,6 +1,8 @@
 import { parseArgs } from 'node:util';
 import { METHOD_VERSION } from '#engine/conventions.ts';
+import { briefHash } from '../../features/briefs/brief-hash.ts';
 import { repeatRun } from '../../features/runs/repeat-run.ts';
+import { contentHash } from '../../features/weather/content-hash.ts';
 import type { CommandContext, ExitCode } from '../command.ts';
 import { CouldNotRun } from '../could-not-run.ts';
 import { withHomeDatabase } from '../home-database.ts';
@@ -12,7 +14,9 @@ const RUN_ID = /^[0-9a-f]{8}-([0-9a-f]{4}-){3}[0-9a-f]{12}$/i;
 /** `muslin rerun ID`: judges a stored run again and says whether it is the same to the byte. */
 export async function rerun(context: CommandContext): Promise<ExitCode> {
   const run = readRunId(context.args);
-  const answer = await withHomeDatabase(context, (db) => repeatRun(db, run)).catch(sayWhyNot);
+  const answer = await withHomeDatabase(context, (db) => repeatRun(db, { briefHash, contentHash }, run)).catch(
+    sayWhyNot,
+  );
   if (answer.outcome === 'no such run') throw new CouldNotRun(`There is no run ${run} in this database.`);
   if (answer.outcome === 'another method') {
     throw new CouldNotRun(

@@ -1,8 +1,8 @@
 import type { Knex } from 'knex';
+import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION, READ_VERSION } from '#engine/conventions.ts';
+import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
-import { briefHash } from '../briefs/brief-hash.ts';
-import { contentHash } from '../weather/content-hash.ts';
 import { readPackedYear } from '../weather/packed-year-read-model.ts';
 import { runKey, runResultHash } from './run-key.ts';
 import { findRunToRepeat, type RunToRepeat } from './run-to-repeat-read-model.ts';
@@ -25,8 +25,14 @@ export type RepeatedRun =
 /** What a run can be found to differ in: what it was made from, its record, or what the same inputs give now. */
 export type RunPart = 'weather year' | 'brief version' | 'key' | 'stored result' | 'repeated result';
 
+/** The hashes that name what a run was made from, handed in by the features that own them. */
+export interface RunHashes {
+  readonly briefHash: (brief: Brief) => string;
+  readonly contentHash: (year: WeatherYear) => string;
+}
+
 /** Judges the weather year of a stored run again, by the run's own brief version, height and clock, and compares bytes. */
-export async function repeatRun(db: Knex, runId: string): Promise<RepeatedRun> {
+export async function repeatRun(db: Knex, hashes: RunHashes, runId: string): Promise<RepeatedRun> {
   const run = await findRunToRepeat(db, runId);
   if (run === null) return { outcome: 'no such run' };
   const { methodVersion, keyHash, resultHash } = run;
@@ -38,7 +44,7 @@ export async function repeatRun(db: Knex, runId: string): Promise<RepeatedRun> {
   const { hourClassCodes, ...figures } = judgeYear({ year, brief, heightM, clock, zone: 'UTC' });
   const repeatedHash = runResultHash(figures, hourClassCodes);
   // The hash of a year names the version of the reading, so that an older one cannot be formed anew.
-  const weatherHolds = run.readVersion !== READ_VERSION || contentHash(year) === run.contentHash;
+  const weatherHolds = run.readVersion !== READ_VERSION || hashes.contentHash(year) === run.contentHash;
   return {
     outcome: 'repeated',
     methodVersion,
@@ -47,7 +53,7 @@ export async function repeatRun(db: Knex, runId: string): Promise<RepeatedRun> {
     repeatedHash,
     differs: [
       ...(weatherHolds ? [] : (['weather year'] as const)),
-      ...(briefHash(brief) === run.briefHash ? [] : (['brief version'] as const)),
+      ...(hashes.briefHash(brief) === run.briefHash ? [] : (['brief version'] as const)),
       ...(keyOf(run) === keyHash ? [] : (['key'] as const)),
       ...(runResultHash(run.figures, run.hourClassCodes) === resultHash ? [] : (['stored result'] as const)),
       ...(repeatedHash === resultHash ? [] : (['repeated result'] as const)),

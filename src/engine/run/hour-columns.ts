@@ -88,5 +88,5 @@ export function hourColumns(hours: number): HourColumns {
   };
 }
 
-export type Running = HourJudgement['running'];
-export type AloneClass = Extract<HourClass, 'air' | 'direct' | 'indirect' | 'dewpoint' | 'twostage'>;
+type Running = HourJudgement['running'];
+type AloneClass = Extract<HourClass, 'air' | 'direct' | 'indirect' | 'dewpoint' | 'twostage'>;
