@@ -87,6 +87,3 @@ export function hourColumns(hours: number): HourColumns {
     backUpKw: numbers(),
   };
 }
-
-type Running = HourJudgement['running'];
-type AloneClass = Extract<HourClass, 'air' | 'direct' | 'indirect' | 'dewpoint' | 'twostage'>;
