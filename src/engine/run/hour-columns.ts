@@ -4,9 +4,6 @@
  * not apply.
  */
 
-import type { HourJudgement } from '../hour-classes/demand-hour.ts';
-import type { HourClass } from '../hour-classes/hour-class.ts';
-
 /** What runs, as a position in this list; 0: nothing does. */
 export const runningStages = [null, 'air', 'direct', 'indirect', 'dewpoint', 'twostage', 'tower'] as const;
 
@@ -93,6 +90,3 @@ export function hourColumns(hours: number): HourColumns {
     backUpKw: numbers(),
   };
 }
-
-export type Running = HourJudgement['running'];
-export type AloneClass = Extract<HourClass, 'air' | 'direct' | 'indirect' | 'dewpoint' | 'twostage'>;
