@@ -19,6 +19,7 @@ export interface StationToRescore {
   /** Newest file first. */
   readonly years: readonly {
     readonly weatherYearId: string;
+    readonly contentHash: string;
     readonly kind: YearKind;
     readonly year: number | null;
     readonly utcOffsetMin: number;

@@ -59,9 +59,9 @@ export function stationsOf(
       zone,
       heightM: elevationM,
       position: { latitude, longitude },
-      years: group.flatMap(({ weatherYearId, kind, year, utcOffsetMin }) => {
+      years: group.flatMap(({ weatherYearId, contentHash, kind, year, utcOffsetMin }) => {
         const found = columns.get(weatherYearId);
-        return found === undefined ? [] : [{ weatherYearId, kind, year, utcOffsetMin, columns: found }];
+        return found === undefined ? [] : [{ weatherYearId, contentHash, kind, year, utcOffsetMin, columns: found }];
       }),
     };
   });

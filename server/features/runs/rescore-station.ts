@@ -3,8 +3,8 @@ import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { placeFigures } from '#engine/score/place-figures.ts';
 import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';
+import { keptYear } from './kept-years.ts';
 import { runResultHash } from './run-key.ts';
-import { packedOver } from './shared-columns.ts';
 
 /** Judges every year of some stations by a draft brief: the function and the columns that a saved run is made with. */
 export function rescoreStations({ brief, stations, withHashes }: RescoreTask): readonly RescoredStation[] {
@@ -14,8 +14,8 @@ export function rescoreStations({ brief, stations, withHashes }: RescoreTask): r
 function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashes: boolean }): RescoredStation {
   const { brief } = on;
   const { stationId, zone, heightM, position } = station;
-  const runs = station.years.map(({ weatherYearId, columns, ...facts }) => {
-    const year: WeatherYear = { ...facts, packed: packedOver(columns) };
+  const runs = station.years.map(({ weatherYearId, contentHash, columns, ...facts }) => {
+    const year: WeatherYear = { ...facts, packed: keptYear({ weatherYearId, contentHash, columns }) };
     const { hourClassCodes, ...result } = judgeYear({ year, brief, zone, heightM, position });
     const resultHash = on.withHashes ? runResultHash(result, hourClassCodes) : null;
     return { weatherYearId, kind: facts.kind, year: facts.year, result, resultHash };

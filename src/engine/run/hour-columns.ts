@@ -13,6 +13,11 @@ export const dampReasons = [null, 'outside', 'plant'] as const;
 export interface HourColumns {
   /** How many demand hours there are; the columns may be longer. */
   count: number;
+  /**
+   * Whether the state of each hour is wanted too: outdoor air, limit, load and air supply. Where years are only counted it is left
+   * out, since writing it takes a third of the time.
+   */
+  detail: boolean;
   readonly slot: Uint16Array;
   /** Position in `hourClasses`. */
   readonly classCode: Uint8Array;
@@ -53,6 +58,7 @@ export function hourColumns(hours: number): HourColumns {
   const numbers = () => new Float64Array(hours);
   return {
     count: 0,
+    detail: true,
     slot: new Uint16Array(hours),
     classCode: bytes(),
     met: bytes(),

@@ -30,7 +30,7 @@ const workspace = judgingWorkspace();
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
   const { brief, heightM } = input;
-  const judged = judgeHours(input, { into: workspace });
+  const judged = judgeHours(input, { into: workspace, countedOnly: !needsDetail(brief) });
   const counted = countHours(judged, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
   const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
@@ -47,6 +47,11 @@ export function judgeYear(input: JudgeYearInput): RunResult {
     ...scoreOf(counted, { brief, exclusion: exclusionOf(gates) }),
     hourClassCodes: judged.classCodes,
   };
+}
+
+/** Hard limits and reported hours are counted from the state of each hour. */
+function needsDetail({ hardLimits, reported, lowerLimits }: Brief): boolean {
+  return hardLimits.length > 0 || reported.length > 0 || Object.keys(lowerLimits).length > 0;
 }
 
 function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {

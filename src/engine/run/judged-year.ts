@@ -65,6 +65,8 @@ export function judgingWorkspace(): JudgingWorkspace {
 export interface JudgingWays {
   /** Columns to write into: they belong to the next year as soon as it is judged. */
   readonly into?: JudgingWorkspace;
+  /** The hours are only counted: leave out what `HourColumns.detail` names, where that is quicker. */
+  readonly countedOnly?: boolean;
   /** Judge hour by hour as objects even where a whole year can be judged in one pass; the classes are the same. */
   readonly oneByOne?: boolean;
 }
@@ -80,6 +82,7 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   const { setC, outsideRange } = setPoints({ brief, dryBulbC: weather.dryBulbC, wrapped, heightM });
   const { classCodes, known, demandSlots } = sortSlots(weather, openSlots(brief, clock), use.idleUpToC(brief));
   const hours = ways.into?.hours ?? hourColumns(demandSlots.length);
+  hours.detail = ways.countedOnly !== true;
   const asked = { ...weather, demandSlots, setC, loadFraction: loadFractionOf(brief, weather.dryBulbC) };
   const roomJudge = ways.oneByOne === true ? null : roomJudgeOf(brief);
   if (roomJudge !== null) {

@@ -1,7 +1,8 @@
 /**
  * Method 5 and 6 for every demand hour of a year in one pass: rooms held at a temperature by a stream of outdoor air whose
  * indirect stages take outdoor air as secondary air. The same decisions as `judgeSupplyAirHour`, which judges one hour for any
- * brief, made on numbers alone; a test holds the two together. Comparisons on whole hundredths, a tie is met.
+ * brief, made on numbers alone; a test holds the two together. Comparisons on whole hundredths, a tie is met. Arguments are plain:
+ * an object for every hour would cost as much as judging it.
  */
 import { hundredths } from '../../conventions.ts';
 import { withinShare } from '../../hour-classes/demand-hour.ts';
@@ -95,7 +96,9 @@ function meetHour({ plan, hour }: RoomJudge, year: RoomYear, slot: number): void
 
 function judgeHour(judge: RoomJudge, into: HourColumns, at: number): void {
   const { plan, hour, lines } = judge;
-  writeDemand(into, at, hour);
+  if (into.detail) writeDemand(into, at, hour);
+  into.airMeets[at] = 0;
+  into.aloneMet[at] = 0;
   const reachedByAir = hundredths(hour.airC) <= hour.aimHundredths;
   if (reachedByAir && !hour.dampOutside && capsHold(plan, hour, hour.airC, hour.humidityRatio)) {
     writeMet(into, at, hour.frozen ? FROZEN : CLASS_OF_AIR);
@@ -136,7 +139,7 @@ function metByStage({ plan, hour, lines }: RoomJudge, into: HourColumns, at: num
     if (!capsHold(plan, hour, supplyAt(line, share), ratioAt(line, hour, share))) continue;
     if (alone === 0) {
       writeMet(into, at, CLASS_OF_STAGE[line.stage] ?? 0);
-      writeStage(into, at, { plan, hour, line, share });
+      writeStage(into, at, plan, hour, line, share);
     }
     alone |= 1 << line.stage;
   }
@@ -173,7 +176,7 @@ function writeUnmet({ plan, hour, lines }: RoomJudge, into: HourColumns, at: num
   into.shortfallK[at] = Math.max(0, (lowestC === Number.POSITIVE_INFINITY ? hour.airC : lowestC) - hour.supplyAimC);
   into.uncappedShortfallK[at] = Math.max(0, uncappedC - hour.supplyAimC);
   if (into.classCode[at] === SHORT && lowestLine !== null) {
-    writeStage(into, at, { plan, hour, line: lowestLine, share: lowestShare });
+    writeStage(into, at, plan, hour, lowestLine, lowestShare);
   } else writeAir(into, at, hour);
   const carried = (hour.setC - (into.supplyC[at] ?? 0)) / (hour.setC - hour.supplyAimC);
   into.carriedShare[at] = damp ? 0 : withinShare(carried);
@@ -188,8 +191,6 @@ function writeDemand(into: HourColumns, at: number, hour: RoomHour): void {
   into.supplyAimC[at] = hour.supplyAimC;
   into.loadFraction[at] = hour.loadFraction;
   into.airSupplyC[at] = hour.airC;
-  into.airMeets[at] = 0;
-  into.aloneMet[at] = 0;
 }
 
 function writeMet(into: HourColumns, at: number, classCode: number): void {
@@ -213,7 +214,10 @@ function writeAir(into: HourColumns, at: number, hour: RoomHour): void {
 function writeStage(
   into: HourColumns,
   at: number,
-  { plan, hour, line, share }: { plan: RoomPlan; hour: RoomHour; line: SupplyLine; share: number },
+  plan: RoomPlan,
+  hour: RoomHour,
+  line: SupplyLine,
+  share: number,
 ): void {
   into.running[at] = line.stage;
   into.supplyC[at] = supplyAt(line, share);

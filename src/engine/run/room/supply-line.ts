@@ -132,71 +132,84 @@ export function shareFor(line: SupplyLine, supplyC: number): number {
  * where they hold at no share. More wetting is never drier and never warmer, so the shares within the caps end at one place.
  */
 export function shareWithinCaps(line: SupplyLine, plan: RoomPlan, hour: RoomHour): number {
-  if (capsHold(plan, hour, supplyAt(line, 1), ratioAt(line, hour, 1))) return 1;
-  if (plan.onOff || !capsHold(plan, hour, line.dryC, hour.humidityRatio)) return Number.NaN;
-  const roomC = edgeC(line, hour, { share: plan.roomShare, riseK: hour.roomRiseK, addedRatio: plan.dwRoomKgKg });
-  const supplyC = edgeC(line, hour, { share: plan.supplyShare, riseK: 0, addedRatio: 0 });
-  const dewC = dewPointEdgeC(line, plan, hour);
-  return shareFor(line, Math.max(roomC, supplyC, dewC));
-}
-
-/** How a cap on relative humidity sees the supply. */
-interface RhCap {
-  readonly share: number;
-  readonly riseK: number;
-  readonly addedRatio: number;
+  if (plan.onOff) return capsHold(plan, hour, supplyAt(line, 1), ratioAt(line, hour, 1)) ? 1 : Number.NaN;
+  const roomC = edgeC(line, hour, plan.roomShare, hour.roomRiseK, plan.dwRoomKgKg);
+  const supplyC = edgeC(line, hour, plan.supplyShare, 0, 0);
+  const coldestC = Math.max(roomC, supplyC, dewPointEdgeC(line, plan, hour));
+  return coldestC <= line.dryC ? shareFor(line, coldestC) : Number.NaN;
 }
 
 /** The chord lands within a kelvin; two steps leave some 0.00001 K. */
 const NEWTON_STEPS = 2;
 
 /**
- * The supply temperature at which a cap on relative humidity is just reached; -Infinity when full wetting keeps it. Vapour less
+ * The supply temperature at which a cap on relative humidity is just reached; -Infinity when full wetting keeps it, Infinity when
+ * no share does. Vapour less
  * the share of saturation is a concave function that falls with temperature: the chord between full wetting and none lands on
- * its wet side, and steps of Newton's method come back from the dry side, within the cap.
+ * its wet side, and steps of Newton's method come back from the dry side, within the cap. Plain arguments here and below: an object
+ * for every hour would cost as much as the answer.
+ * @param share of saturation that the cap allows
+ * @param riseK by which the air that is capped is warmer than the supply, and
+ * @param addedRatio the moisture that it has taken up: 0 and 0 for the supply itself
  */
-function edgeC(line: SupplyLine, hour: RoomHour, cap: RhCap): number {
-  if (cap.share === Number.POSITIVE_INFINITY) return Number.NEGATIVE_INFINITY;
+function edgeC(line: SupplyLine, hour: RoomHour, share: number, riseK: number, addedRatio: number): number {
+  if (share === Number.POSITIVE_INFINITY) return Number.NEGATIVE_INFINITY;
   if (!line.moist) {
-    const vapourPa = vapourPressurePa(hour.humidityRatio + cap.addedRatio, hour.pressurePa);
-    return tabledDewPointC(vapourPa / cap.share) - cap.riseK;
+    const vapourPa = vapourPressurePa(hour.humidityRatio + addedRatio, hour.pressurePa);
+    return tabledDewPointC(vapourPa / share) - riseK;
   }
   const wetC = supplyAt(line, 1);
-  const wetExcess = excessPa(line, hour, cap, wetC);
+  const wetExcess = excessPa(line, hour, wetC, share, riseK, addedRatio);
   if (wetExcess < 0) return Number.NEGATIVE_INFINITY;
-  const dryExcess = excessPa(line, hour, cap, line.dryC);
+  const dryExcess = excessPa(line, hour, line.dryC, share, riseK, addedRatio);
+  if (dryExcess >= 0) return Number.POSITIVE_INFINITY;
   let x = wetC + ((line.dryC - wetC) * wetExcess) / (wetExcess - dryExcess);
-  for (let step = 0; step < NEWTON_STEPS; step++) x = nearerEdgeC(line, hour, cap, x);
+  for (let step = 0; step < NEWTON_STEPS; step++) {
+    x = nearerEdgeC(line, hour, x, share, riseK, addedRatio);
+  }
   return x;
 }
 
 /** Vapour over what the cap allows, Pa, with a supply at this temperature on a moist line. */
-function excessPa(line: SupplyLine, hour: RoomHour, cap: RhCap, supplyC: number): number {
+function excessPa(
+  line: SupplyLine,
+  hour: RoomHour,
+  supplyC: number,
+  share: number,
+  riseK: number,
+  addedRatio: number,
+): number {
   const leavingC = supplyC - line.riseK;
   const ratio = (line.top - AIR_KJ_PER_KG_K * leavingC) / (line.bottom + VAPOUR_KJ_PER_KG_K * leavingC);
-  return (
-    vapourPressurePa(ratio + cap.addedRatio, hour.pressurePa) - cap.share * tabledSaturationPa(supplyC + cap.riseK)
-  );
+  return vapourPressurePa(ratio + addedRatio, hour.pressurePa) - share * tabledSaturationPa(supplyC + riseK);
 }
 
 /** One step of Newton's method towards no excess. */
-function nearerEdgeC(line: SupplyLine, hour: RoomHour, cap: RhCap, supplyC: number): number {
+function nearerEdgeC(
+  line: SupplyLine,
+  hour: RoomHour,
+  supplyC: number,
+  share: number,
+  riseK: number,
+  addedRatio: number,
+): number {
   const leavingC = supplyC - line.riseK;
   const perBottom = 1 / (line.bottom + VAPOUR_KJ_PER_KG_K * leavingC);
   const ratio = (line.top - AIR_KJ_PER_KG_K * leavingC) * perBottom;
   const ratioSlope = -(AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) * perBottom;
-  const perTotal = 1 / (MASS_RATIO + ratio + cap.addedRatio);
-  const roomC = supplyC + cap.riseK;
-  const excess = hour.pressurePa * (ratio + cap.addedRatio) * perTotal - cap.share * tabledSaturationPa(roomC);
+  const perTotal = 1 / (MASS_RATIO + ratio + addedRatio);
+  const roomC = supplyC + riseK;
+  const excess = hour.pressurePa * (ratio + addedRatio) * perTotal - share * tabledSaturationPa(roomC);
   const vapourSlope = hour.pressurePa * MASS_RATIO * ratioSlope * perTotal * perTotal;
-  return supplyC - excess / (vapourSlope - cap.share * tabledSlopePaPerK(roomC));
+  return supplyC - excess / (vapourSlope - share * tabledSlopePaPerK(roomC));
 }
 
-/** The supply temperature at which the cap on the dew point is just reached; -Infinity when full wetting keeps it. */
+/** The same of the cap on the supply's dew point. */
 function dewPointEdgeC(line: SupplyLine, plan: RoomPlan, hour: RoomHour): number {
   const capPa = plan.supplyVapourPa;
-  if (capPa === Number.POSITIVE_INFINITY || !line.moist) return Number.NEGATIVE_INFINITY;
+  if (capPa === Number.POSITIVE_INFINITY) return Number.NEGATIVE_INFINITY;
   const ratio = (MASS_RATIO * capPa) / (hour.pressurePa - capPa);
-  const leavingC = (line.top - ratio * line.bottom) / (AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio);
-  return leavingC + line.riseK;
+  if (hour.humidityRatio >= ratio) return Number.POSITIVE_INFINITY;
+  if (!line.moist) return Number.NEGATIVE_INFINITY;
+  return (line.top - ratio * line.bottom) / (AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) + line.riseK;
 }
