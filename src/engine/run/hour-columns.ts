@@ -15,7 +15,7 @@ export interface HourColumns {
   count: number;
   /**
    * Whether the state of each hour is wanted too: outdoor air, limit, load and air supply. Where years are only counted it is left
-   * out, since writing it takes a third of the time.
+   * out, which saves ten of the columns.
    */
   detail: boolean;
   readonly slot: Uint16Array;
