@@ -81,7 +81,7 @@ const brief = {
   version: 1,
   preset: 'office',
   sentence: '26 °C room, at most 65 % relative humidity, open 8 to 18 on weekdays.',
-  methodVersion: '2026.1',
+  methodVersion: '2026.2',
 };
 
 export function fixtureMap(): ProgrammeMap {
