@@ -103,11 +103,10 @@ describe.skipIf(sharedFolder === null)(`published ledgers (skipped where ${WITHO
     const result = judgeYear({ ...real, zone, brief: presetBrief(preset) });
     const apart = hoursApart(result, row);
     const scoreApart = Math.abs((result.scoreExact ?? 0) - Number(row.score_exact));
-    const differences = differencesOf(result, row);
-    if (differences.length > 0) console.log(`${file} ${preset}: ${differences.join(', ')}`);
-    expect(apart).toBeLessThanOrEqual(HOURS_APART_SHARE * result.ledger.hours);
-    expect(scoreApart).toBeLessThanOrEqual(SCORE_POINTS);
-    expect(result.verdict).toBe(row.verdict);
+    const differences = differencesOf(result, row).join(', ');
+    expect(apart, differences).toBeLessThanOrEqual(HOURS_APART_SHARE * result.ledger.hours);
+    expect(scoreApart, differences).toBeLessThanOrEqual(SCORE_POINTS);
+    expect(result.verdict, differences).toBe(row.verdict);
     expect(Math.abs((result.worstSpell?.hours ?? 0) - Number(row.worst_spell_h))).toBeLessThanOrEqual(SPELL_H);
     expect(Math.abs((result.water.litresPerKwh ?? 0) - Number(row.water_L_per_kWh))).toBeLessThanOrEqual(
       WATER_L_PER_KWH,
