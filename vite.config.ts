@@ -19,6 +19,8 @@ export default defineConfig({
     proxy: { '/api': 'http://127.0.0.1:3000', '/tiles': 'http://127.0.0.1:3000' },
   },
   test: {
+    // Vitest leaves a core for itself; on two cores that would leave one to the tests.
+    maxWorkers: 2,
     projects: [
       {
         extends: true,
