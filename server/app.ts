@@ -7,6 +7,7 @@ import { sessionStands } from './features/accounts/account-store.ts';
 import { checkPassword } from './features/accounts/check-password.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
+import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
@@ -71,7 +72,7 @@ function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
   });
   weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion });
-  runsRoutes(router, deps, { threads });
+  runsRoutes(router, deps, { threads, readDraft });
   methodRoutes(router, deps);
   return router;
 }

@@ -3,6 +3,7 @@ import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
+import * as rescoring from './rescore.ts';
 import * as runs from './runs.ts';
 import * as weather from './weather.ts';
 
@@ -21,7 +22,7 @@ export const endpoints = {
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
-  rescore: runs.rescore,
+  rescore: rescoring.rescore,
   listPresets: briefs.listPresets,
   listBriefs: briefs.listBriefs,
   makeBrief: briefs.makeBrief,

@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { RescoreAnswer } from '#contract/runs.ts';
+import type { RescoreAnswer } from '#contract/rescore.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';

@@ -1,5 +1,7 @@
 import type { Router } from 'express';
-import { getMap, getRunHours, getStationPlace, rescore as rescoreEndpoint } from '#contract/runs.ts';
+import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
+import { getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
+import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
@@ -10,7 +12,6 @@ import { byStation, judgeStation } from './judge-station.ts';
 import { presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
-import { readDraft } from './read-draft.ts';
 import { type RescoreThreads, rescore } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import { listStationYears } from './station-years-read-model.ts';
@@ -20,7 +21,14 @@ const CACHED_BYTES = 512 * 1024 * 1024;
 /** Previews at once, over all people: each may keep every thread for a while. */
 const MOST_PREVIEWS = 16;
 
-export function runsRoutes(router: Router, deps: Deps, { threads }: { threads: RescoreThreads }): void {
+/** What runs need of the other parts, handed in where the server is wired. */
+export interface RunsParts {
+  readonly threads: RescoreThreads;
+  /** The brief in a request's body, or every fault of it at its path. */
+  readonly readDraft: (draft: unknown) => Brief;
+}
+
+export function runsRoutes(router: Router, deps: Deps, { threads, readDraft }: RunsParts): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const inTurn = makePreviewTurns(MOST_PREVIEWS);

@@ -1,4 +1,4 @@
-/** Invented data for the gallery: each state that a component has to show, in shapes of the contract. */
+/** Invented data for the gallery: each state that a component has to show, in shapes of the contract. One list, and long for it. */
 import type { Membership } from '../../contract/accounts.ts';
 import type { Ledger, MapStation, Place, ProgrammeMap } from '../../contract/runs.ts';
 import type { FileStatus, WeatherFile, WeatherFileRecord } from '../../contract/weather.ts';

@@ -1,4 +1,4 @@
-/** P01 to P15: moist air. */
+/** P01 to P15: moist air. One entry per check, kept in one place though it is a long one. */
 import {
   dewPointC,
   enthalpyKJPerKg,

@@ -6,7 +6,7 @@ import { type RescoreThreads, rescore } from '../../../server/features/runs/resc
 import { bytesOfYear, listYearsToRescore } from '../../../server/features/runs/rescore-read-model.ts';
 import { packedOver } from '../../../server/features/runs/shared-columns.ts';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
-import type { RescoreAnswer } from '../../../src/contract/runs.ts';
+import type { RescoreAnswer } from '../../../src/contract/rescore.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
 import { METHOD_VERSION } from '../../../src/engine/conventions.ts';
 import { judgeYear } from '../../../src/engine/run/judge-year.ts';
