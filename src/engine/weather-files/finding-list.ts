@@ -1,4 +1,4 @@
-import type { Ask, Finding, FindingCode, Severity } from './finding.ts';
+import type { Ask, Finding, FindingCode, FindingVariable, Severity } from './finding.ts';
 
 /** Of one fault this many lines are listed; the rest are counted. */
 const LISTED = 100;
@@ -12,6 +12,8 @@ export interface FindingInput {
   readonly column?: () => number;
   readonly lastLine?: number | null;
   readonly count?: number;
+  readonly variable?: FindingVariable;
+  readonly done?: string;
   readonly message: () => string;
 }
 
@@ -49,6 +51,8 @@ export class FindingList {
         column,
         lastLine,
         count: input.count ?? 1,
+        variable: input.variable ?? null,
+        done: input.done ?? null,
         message: input.message(),
       });
       return;
@@ -93,6 +97,8 @@ export class FindingList {
         column: null,
         lastLine: tally.lastLine,
         count: tally.count,
+        variable: null,
+        done: null,
         message: restSentence(tally),
       }));
     return [...this.#findings, ...rest].sort((a, b) => (a.line ?? 0) - (b.line ?? 0));

@@ -54,6 +54,17 @@ export type FindingCode = (typeof findingCodes)[number];
 export const severities = ['note', 'repair', 'doubt', 'ask', 'refuse'] as const;
 export type Severity = (typeof severities)[number];
 
+/** What of an hour a finding concerns. */
+export const findingVariables = [
+  'dry bulb',
+  'dew point',
+  'relative humidity',
+  'humidity',
+  'pressure',
+  'every value',
+] as const;
+export type FindingVariable = (typeof findingVariables)[number];
+
 export interface Finding {
   readonly code: FindingCode;
   readonly severity: Severity;
@@ -65,6 +76,10 @@ export interface Finding {
   readonly lastLine: number | null;
   /** Hours or rows concerned. */
   readonly count: number;
+  /** null when it concerns no one variable: a place, a header, a time. */
+  readonly variable: FindingVariable | null;
+  /** What was done, in a few words: "left out", "kept"; null where the message alone says it. */
+  readonly done: string | null;
   /** A whole sentence: what was found, where, what was done or what would mend it. */
   readonly message: string;
 }
