@@ -1,0 +1,48 @@
+import { MISSING_INT16 } from '../../conventions.ts';
+import { monthNames } from '../../reduction/calendar.ts';
+import { VALUE } from '../assembly/source-rows.ts';
+import { type FindingList, whole } from '../finding-list.ts';
+import { tellSpan } from './tell-span.ts';
+import { leaveOut, type StepSpan, type TestedHours } from './tested-hours.ts';
+
+const JUMP = 1_000;
+const MOST_SHARE = 0.02;
+
+/** A month whose dew point jumps by more than 10 K from one hour to the next in over 2 % of its hours loses its humidity. */
+export function sawTooth(hours: TestedHours, findings: FindingList): void {
+  const { values } = hours.dewPoint;
+  hours.months.forEach((month, index) => {
+    let jumps = 0;
+    for (let step = month.start + 1; step < month.end; step++) {
+      const change = (values[step] ?? 0) - (values[step - 1] ?? 0);
+      if (change <= JUMP && change >= -JUMP) continue;
+      if (values[step] !== MISSING_INT16 && values[step - 1] !== MISSING_INT16) jumps++;
+    }
+    if (jumps <= MOST_SHARE * (month.end - month.start)) return;
+    tell(hours, { month, jumps, name: monthNames[index] ?? '' }, findings);
+    for (let step = month.start; step < month.end; step++) {
+      leaveOut(hours, step, VALUE.dewPoint);
+      hours.steps.relativeHumidityPct[step] = Number.NaN;
+    }
+  });
+}
+
+function tell(
+  hours: TestedHours,
+  { jumps, month, name }: { month: StepSpan; jumps: number; name: string },
+  findings: FindingList,
+): void {
+  tellSpan(
+    hours,
+    {
+      ...month,
+      code: 'saw-tooth',
+      severity: 'doubt',
+      variable: 'humidity',
+      done: 'left out',
+      sentence: () =>
+        `in ${name} the dew point jumps by more than 10 K from one value to the next ${whole(jumps)} times, over 2 % of the month; the humidity of the month is left out.`,
+    },
+    findings,
+  );
+}

@@ -1,0 +1,86 @@
+import { MISSING_INT16 } from '../../conventions.ts';
+import type { FindingList } from '../finding-list.ts';
+import { quartilesOf } from './month-quartiles.ts';
+import { tellSpan } from './tell-span.ts';
+import { degrees, leaveOut, type StepSpan, type TestedColumn, type TestedHours } from './tested-hours.ts';
+
+const WIDEST_H = 3;
+const LEAST_JUMP = 600;
+const RANGES = 6;
+const NEIGHBOURS_WITHIN = 300;
+
+/**
+ * Up to 3 hours between two that agree within 3 K, reached and left by opposite jumps of more than 6 K and of more than 6 times
+ * the range of the middle half of the month's hourly changes: left out, and filled as a short gap.
+ */
+export function spikes(hours: TestedHours, findings: FindingList): void {
+  for (const column of [hours.dryBulb, hours.dewPoint]) {
+    const { values } = column;
+    for (const span of hours.unbroken) {
+      for (let step = span.start + 1; step < span.end - 1; step++) {
+        const jump = (values[step] ?? 0) - (values[step - 1] ?? 0);
+        if (jump <= LEAST_JUMP && jump >= -LEAST_JUMP) continue;
+        const end = endOfSpike(hours, { values, step, span });
+        if (end === null) continue;
+        leaveOutSpike(hours, { column, start: step, end }, findings);
+        step = end;
+      }
+    }
+  }
+}
+
+/** The step after the spike; null where none begins. */
+function endOfSpike(hours: TestedHours, at: { values: Int16Array; step: number; span: StepSpan }): number | null {
+  const { span, step, values } = at;
+  const before = values[step - 1] ?? MISSING_INT16;
+  const top = values[step] ?? MISSING_INT16;
+  if (before === MISSING_INT16 || top === MISSING_INT16) return null;
+  const widest = Math.min(span.end - 1, step + WIDEST_H * hours.steps.stepsPerHour);
+  for (let end = step + 1; end <= widest; end++) {
+    const last = values[end - 1] ?? MISSING_INT16;
+    const after = values[end] ?? MISSING_INT16;
+    if (last === MISSING_INT16 || after === MISSING_INT16) return null;
+    const inwards = top - before;
+    const outwards = after - last;
+    if (Math.sign(outwards) === Math.sign(inwards) || Math.abs(after - before) > NEIGHBOURS_WITHIN) continue;
+    const least = Math.min(Math.abs(inwards), Math.abs(outwards));
+    if (least > LEAST_JUMP && least > RANGES * rangeOfChanges(hours, values, step)) return end;
+  }
+  return null;
+}
+
+/** Range of the middle half of the changes from step to step in the month that holds a step, 0.01 K. */
+function rangeOfChanges({ months }: TestedHours, values: Int16Array, step: number): number {
+  const month = months.find(({ end }) => step < end);
+  if (month === undefined) return 0;
+  const changes = new Int16Array(month.end - month.start).fill(MISSING_INT16);
+  for (let at = month.start + 1; at < month.end; at++) {
+    const value = values[at] ?? MISSING_INT16;
+    const before = values[at - 1] ?? MISSING_INT16;
+    if (value === MISSING_INT16 || before === MISSING_INT16) continue;
+    changes[at - month.start] = Math.max(-32_767, Math.min(32_767, value - before));
+  }
+  const quartiles = quartilesOf(changes, 0, changes.length);
+  return quartiles === null ? 0 : quartiles.upper - quartiles.lower;
+}
+
+function leaveOutSpike(hours: TestedHours, spike: StepSpan & { column: TestedColumn }, findings: FindingList): void {
+  const { column, end, start } = spike;
+  const top = column.values[start] ?? 0;
+  const before = column.values[start - 1] ?? 0;
+  tellSpan(
+    hours,
+    {
+      start,
+      end,
+      code: 'spike',
+      severity: 'repair',
+      variable: column.variable,
+      done: 'left out and filled',
+      sentence: () =>
+        `the ${column.variable} jumps from ${degrees(before)} to ${degrees(top)} °C and back; ${end - start === 1 ? 'the value is' : 'the values are'} left out and filled as a short gap.`,
+    },
+    findings,
+  );
+  for (let step = start; step < end; step++) leaveOut(hours, step, column.bit);
+}

@@ -1,0 +1,114 @@
+/** Values that stay the same hour after hour: persistence by the resolution of the file. */
+import { MISSING_INT16 } from '../../conventions.ts';
+import { type FindingList, hoursPhrase } from '../finding-list.ts';
+import { tellSpan } from './tell-span.ts';
+import { degrees, leaveOut, leaveOutHour, type TestedColumn, type TestedHours } from './tested-hours.ts';
+
+/** Hours in a row by resolution, 0.01 K (HadISD). Its limits in days are for sparser reports than are read here. */
+const LONGEST_H = {
+  'dry bulb': { 100: 40, 50: 30, 10: 24 },
+  'dew point': { 100: 80, 50: 60, 10: 48 },
+} as const;
+/** A dew point that stays so long is a doubt at any resolution, but on coasts it happens: it is kept. */
+const DEW_DOUBT_H = 48;
+const TOGETHER_H = { 100: 24, 50: 12, 10: 12 } as const;
+
+/** Dry bulb, dew point and relative humidity together for 12 hours (24 in files of whole degrees): every value is left out. */
+export function stuckTogether(hours: TestedHours, findings: FindingList): void {
+  const { dewPoint, dryBulb } = hours;
+  const humidity = hours.steps.relativeHumidityPct;
+  const shortest = TOGETHER_H[dryBulb.resolution.usual] * hours.steps.stepsPerHour;
+  const dry = dryBulb.values;
+  const dew = dewPoint.values;
+  for (const { start, end } of hours.unbroken) {
+    let first = start;
+    for (let step = start + 1; step <= end; step++) {
+      const goesOn =
+        step < end &&
+        dry[step] === dry[first] &&
+        dew[step] === dew[first] &&
+        Object.is(humidity[step], humidity[first]);
+      if (goesOn) continue;
+      if (step - first >= shortest && dry[first] !== MISSING_INT16 && dew[first] !== MISSING_INT16) {
+        tellTogether(hours, [first, step], findings);
+        for (let each = first; each < step; each++) leaveOutHour(hours, each);
+      }
+      first = step;
+    }
+  }
+}
+
+function tellTogether(hours: TestedHours, [start, end]: readonly [number, number], findings: FindingList): void {
+  const dry = degrees(hours.dryBulb.values[start] ?? 0);
+  const dew = degrees(hours.dewPoint.values[start] ?? 0);
+  const length = Math.round((end - start) / hours.steps.stepsPerHour);
+  tellSpan(
+    hours,
+    {
+      start,
+      end,
+      code: 'stuck',
+      severity: 'doubt',
+      variable: 'every value',
+      done: 'left out',
+      sentence: () =>
+        `dry bulb (${dry} °C), dew point (${dew} °C) and relative humidity stay the same together for ${hoursPhrase(length)}; these hours are left out.`,
+    },
+    findings,
+  );
+}
+
+/** One temperature for as many hours as its resolution allows: left out; a dew point for 48 hours is told at any resolution. */
+export function stuckAlone(hours: TestedHours, findings: FindingList): void {
+  for (const column of [hours.dryBulb, hours.dewPoint]) {
+    const { values } = column;
+    for (const { start, end } of hours.unbroken) {
+      let first = start;
+      let last = start;
+      let count = 0;
+      for (let step = start; step < end; step++) {
+        const value = values[step] ?? MISSING_INT16;
+        if (value === MISSING_INT16) continue;
+        if (count > 0 && value === values[first]) {
+          count++;
+          last = step;
+          continue;
+        }
+        if (count > 0) judgeRun(hours, { column, first, last, count }, findings);
+        first = step;
+        last = step;
+        count = 1;
+      }
+      if (count > 0) judgeRun(hours, { column, first, last, count }, findings);
+    }
+  }
+}
+
+function judgeRun(
+  hours: TestedHours,
+  run: { column: TestedColumn; first: number; last: number; count: number },
+  findings: FindingList,
+): void {
+  const { column, count, first, last } = run;
+  const perHour = hours.steps.stepsPerHour;
+  const fails = count >= LONGEST_H[column.variable][column.resolution.usual] * perHour;
+  if (!fails && (column.variable !== 'dew point' || count < DEW_DOUBT_H * perHour)) return;
+  const value = degrees(column.values[first] ?? 0);
+  tellSpan(
+    hours,
+    {
+      start: first,
+      end: last + 1,
+      steps: count,
+      code: 'stuck',
+      severity: 'doubt',
+      variable: column.variable,
+      done: fails ? 'left out' : 'kept',
+      sentence: () =>
+        `the ${column.variable} stays at ${value} °C for ${hoursPhrase(Math.round(count / perHour))}; ${fails ? 'it is left out' : 'it is used as it stands'}.`,
+    },
+    findings,
+  );
+  if (!fails) return;
+  for (let step = first; step <= last; step++) leaveOut(hours, step, column.bit);
+}
