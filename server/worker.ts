@@ -4,9 +4,11 @@ import { queueMissingRuns } from './features/runs/queue-runs.ts';
 import {
   clearJudgingFailure,
   noteJudgingFailure,
+  noteOpeningFailure,
   noteReadingFailure,
   noteStrandedFiles,
 } from './features/weather/note-failure.ts';
+import { openArchive } from './features/weather/open-archive.ts';
 import { readStoredFile } from './features/weather/read-stored-file.ts';
 import { repeat } from './jobs/repeat.ts';
 import { runJobs } from './jobs/run-jobs.ts';
@@ -35,6 +37,10 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
         'read-weather-file': {
           run: (file) => readStoredFile({ db, storage }, file),
           dead: (file) => noteReadingFailure(db, file),
+        },
+        'open-weather-archive': {
+          run: (archive) => openArchive({ db, storage }, archive),
+          dead: (archive) => noteOpeningFailure(db, archive),
         },
         'judge-year': {
           run: async (year) => {

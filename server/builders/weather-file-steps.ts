@@ -22,6 +22,7 @@ export async function receiveFromDisk(deps: FileDeps, from: OwnFile & { readonly
     personId: from.personId,
     requestId: null,
     at: deps.now(),
+    batchId: null,
     upload: {
       name: path.basename(from.file),
       bytes: bytes.length,

@@ -3,6 +3,7 @@ import type { Knex } from 'knex';
 /** The closed list of background work, each with what it is told. */
 export interface JobPayloads {
   'read-weather-file': { readonly teamId: string; readonly fileId: string };
+  'open-weather-archive': { readonly teamId: string; readonly archiveId: string };
   'judge-year': { readonly teamId: string; readonly weatherYearId: string; readonly briefVersionId: string };
 }
 export type JobName = keyof JobPayloads;
@@ -41,6 +42,7 @@ export async function addJobs<N extends JobName>(
 
 const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] } = {
   'read-weather-file': ['teamId', 'fileId'],
+  'open-weather-archive': ['teamId', 'archiveId'],
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
 };
 

@@ -1,6 +1,6 @@
 import { EventEmitter } from 'node:events';
 import { setTimeout as sleep } from 'node:timers/promises';
-import { Logger, type Runner, run, type TaskList, type WorkerEvents } from 'graphile-worker';
+import { Logger, type Runner, run, type Task, type TaskList, type WorkerEvents } from 'graphile-worker';
 import type { Knex } from 'knex';
 import pg from 'pg';
 import type { ListenerLog } from './listener.ts';
@@ -155,10 +155,12 @@ function startHeart({ db, poolId, log }: { db: Knex; poolId: string; log: Listen
 }
 
 function taskList(tasks: JobTasks): TaskList {
-  return {
+  const list: Record<JobName, Task> = {
     'read-weather-file': (payload) => tasks['read-weather-file'].run(payloadOf('read-weather-file', payload)),
+    'open-weather-archive': (payload) => tasks['open-weather-archive'].run(payloadOf('open-weather-archive', payload)),
     'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
   };
+  return list;
 }
 
 async function bury(
@@ -170,6 +172,8 @@ async function bury(
     switch (job.task_identifier) {
       case 'read-weather-file':
         return await tasks['read-weather-file'].dead(payloadOf('read-weather-file', job.payload));
+      case 'open-weather-archive':
+        return await tasks['open-weather-archive'].dead(payloadOf('open-weather-archive', job.payload));
       case 'judge-year':
         return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
     }

@@ -3,6 +3,7 @@ import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
 import { getMap, getStationPlace } from '../contract/runs.ts';
 import { getWeatherFile, listWeatherFiles, type TeamEvent, watchTeam } from '../contract/weather.ts';
+import { getWeatherBatch, listWeatherBatches } from '../contract/weather-batches.ts';
 import { type StreamState, subscribe } from '../lib/api-client.ts';
 import { sessionQuery } from '../lib/session-query.ts';
 
@@ -10,7 +11,8 @@ import { sessionQuery } from '../lib/session-query.ts';
 const GATHER_MS = 300;
 
 const affected = {
-  'weather-file': [listWeatherFiles, getWeatherFile],
+  'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch],
+  'weather-batch': [listWeatherBatches, getWeatherBatch, listWeatherFiles],
   run: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
   brief: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
 } as const satisfies Record<TeamEvent['kind'], readonly { path: string }[]>;

@@ -6,6 +6,7 @@ import * as method from './method.ts';
 import * as rescoring from './rescore.ts';
 import * as runs from './runs.ts';
 import * as weather from './weather.ts';
+import * as batches from './weather-batches.ts';
 
 export const endpoints = {
   getSession: accounts.getSession,
@@ -18,6 +19,15 @@ export const endpoints = {
   getOriginal: weather.getOriginal,
   acceptWeatherFile: weather.acceptWeatherFile,
   withdrawWeatherFile: weather.withdrawWeatherFile,
+  actOnWeatherFiles: weather.actOnWeatherFiles,
+  retryWeatherFile: weather.retryWeatherFile,
+  listWeatherBatches: batches.listWeatherBatches,
+  getWeatherBatch: batches.getWeatherBatch,
+  startWeatherBatch: batches.startWeatherBatch,
+  changeWeatherBatch: batches.changeWeatherBatch,
+  uploadWeatherFiles: batches.uploadWeatherFiles,
+  uploadWeatherArchive: batches.uploadWeatherArchive,
+  retryWeatherArchive: batches.retryWeatherArchive,
   watchTeam: weather.watchTeam,
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,

@@ -52,6 +52,9 @@ export const WeatherFile = z.object({
   failure: z.nullable(z.string()),
   uploadedBy: z.string(),
   uploadedAt: z.iso.datetime(),
+  batchId: z.nullable(z.uuid()),
+  /** Which year or station of a file that holds several; empty when it holds one. */
+  part: z.string(),
   station: z.nullable(DeclaredStation),
   /** The station that accepting made or found. */
   stationId: z.nullable(z.uuid()),
@@ -98,17 +101,47 @@ export const WeatherFileRecord = z.object({
 });
 export type WeatherFileRecord = z.infer<typeof WeatherFileRecord>;
 
+/** What the library can be narrowed to: a status, or files that stopped for a fault of ours. */
+export const LibraryStatus = z.enum([...FileStatus.options, 'stopped']);
+export type LibraryStatus = z.infer<typeof LibraryStatus>;
+
+export const LibrarySort = z.enum(['uploaded', 'name', 'station', 'complete']);
+export type LibrarySort = z.infer<typeof LibrarySort>;
+
+export const LibraryQuery = z.strictObject({
+  status: z.optional(LibraryStatus),
+  /** Part of the file's or the station's name, or of its WMO number. */
+  text: z.optional(z.string().check(z.trim(), z.maxLength(100))),
+  format: z.optional(z.string().check(z.maxLength(40))),
+  kind: z.optional(z.enum(['typical', 'actual', 'derived'])),
+  batchId: z.optional(z.uuid()),
+  stationId: z.optional(z.uuid()),
+  sort: z._default(LibrarySort, 'uploaded'),
+  order: z._default(z.enum(['asc', 'desc']), 'desc'),
+  page: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(100_000)), 1),
+  limit: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(200)), 100),
+});
+
 export const listWeatherFiles = endpoint({
   method: 'GET',
   path: '/api/teams/:teamId/weather-files',
-  summary: "The team's weather files, newest first, a page at a time.",
+  summary: "The team's weather files, filtered, sorted, a page at a time; by default newest first.",
   params: TeamParams,
-  query: z.strictObject({
-    after: z.optional(z.string().check(z.maxLength(200))),
-    limit: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(200)), 100),
-  }),
+  query: LibraryQuery,
   body: none,
-  response: json(z.object({ items: z.array(WeatherFile), next: z.nullable(z.string()), total: z.int() })),
+  response: json(
+    z.object({
+      items: z.array(WeatherFile),
+      /** Files that the filter leaves. */
+      total: z.int(),
+      page: z.int(),
+      pages: z.int(),
+      /** Files of the whole team by status, and how many stopped. */
+      counts: z.record(LibraryStatus, z.int()),
+      /** Formats that occur in the team. */
+      formats: z.array(z.string()),
+    }),
+  ),
   errors: [],
   allow: 'weather.view',
   limits: ordinary,
@@ -121,12 +154,12 @@ export const uploadWeatherFile = endpoint({
   method: 'POST',
   path: '/api/teams/:teamId/weather-files',
   summary:
-    'Upload one hourly weather file; it is read in the background. The same bytes again answer the file that is there.',
+    'Upload one hourly weather file, into a batch or by itself; it is read in the background. The same bytes again answer the file that is there.',
   params: TeamParams,
-  query: empty,
+  query: z.strictObject({ batchId: z.optional(z.uuid()) }),
   body: upload({ maxFiles: 1, maxBytes: MAX_FILE_BYTES }),
   response: json(z.object({ file: WeatherFile, known: z.boolean() })),
-  errors: ['too_large', 'unreadable_body'],
+  errors: ['too_large', 'unreadable_body', 'unsupported_format', 'wrong_state'],
   allow: 'weather.upload',
   limits: { bodyBytes: MAX_FILE_BYTES, perMinute: 600, seconds: 300 },
 });
@@ -157,6 +190,8 @@ export const getOriginal = endpoint({
   limits: { ...ordinary, perMinute: 60, seconds: 120 },
 });
 
+const Reason = z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.'));
+
 export const acceptWeatherFile = endpoint({
   method: 'POST',
   path: '/api/teams/:teamId/weather-files/:fileId/acceptance',
@@ -176,20 +211,59 @@ export const withdrawWeatherFile = endpoint({
   summary: 'Withdraw a file with a reason; it no longer counts, and its record stays.',
   params: FileParams,
   query: empty,
-  body: json(
-    z.strictObject({
-      reason: z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.')),
-    }),
-  ),
+  body: json(z.strictObject({ reason: Reason })),
   response: json(WeatherFile),
   errors: ['wrong_state'],
   allow: 'weather.withdraw',
   limits: ordinary,
 });
 
+/** How many files one act may concern. */
+export const MAX_FILES_PER_ACT = 500;
+const fileIds = z.array(z.uuid()).check(z.minLength(1, 'Choose a file.'), z.maxLength(MAX_FILES_PER_ACT));
+
+export const actOnWeatherFiles = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/weather-files/acts',
+  summary: 'Accept, refuse, withdraw or supersede many files; each by itself, and each that could not be says why.',
+  params: TeamParams,
+  query: empty,
+  body: json(
+    z.discriminatedUnion('act', [
+      z.strictObject({ act: z.literal('accept'), fileIds }),
+      z.strictObject({ act: z.literal('refuse'), fileIds, reason: Reason }),
+      z.strictObject({ act: z.literal('withdraw'), fileIds, reason: Reason }),
+      z.strictObject({ act: z.literal('supersede'), fileIds, byFileId: z.uuid() }),
+    ]),
+  ),
+  response: json(
+    z.object({
+      done: z.array(z.uuid()),
+      problems: z.array(z.object({ fileId: z.uuid(), name: z.string(), message: z.string() })),
+    }),
+  ),
+  errors: [],
+  allow: 'weather.accept',
+  limits: { ...ordinary, seconds: 120 },
+});
+
+export const retryWeatherFile = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/weather-files/:fileId/retry',
+  summary: 'Read a file again, or judge its year again, that stopped for a fault of ours.',
+  params: FileParams,
+  query: empty,
+  body: none,
+  response: json(WeatherFile),
+  errors: ['wrong_state'],
+  allow: 'weather.upload',
+  limits: ordinary,
+});
+
 /** Something about a file, or about the scores that depend on it, has changed. */
 export const TeamEvent = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('weather-file'), fileId: z.uuid(), status: FileStatus, step: z.nullable(ReadingStep) }),
+  z.object({ kind: z.literal('weather-batch'), batchId: z.uuid() }),
   z.object({ kind: z.literal('run'), runId: z.uuid(), stationId: z.uuid() }),
   z.object({ kind: z.literal('brief'), briefId: z.uuid(), version: z.int() }),
 ]);

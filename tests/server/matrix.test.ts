@@ -14,6 +14,7 @@ import type { Endpoint } from '../../src/contract/endpoint.ts';
 import { type EndpointName, endpoints } from '../../src/contract/endpoints.ts';
 import { eventually } from '../support/eventually.ts';
 import { openRoad, type Road } from '../support/open-road.ts';
+import { zipBytes } from '../support/zip-bytes.ts';
 
 const callers = [
   'viewer',
@@ -44,6 +45,17 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getOriginal: changersOnly,
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
+  actOnWeatherFiles: changersOnly,
+  // Nothing of the file has stopped: who may, is told so.
+  retryWeatherFile: [403, 403, 409, 409, 404, 401, 401, 401],
+  listWeatherBatches: everyMember,
+  getWeatherBatch: everyMember,
+  startWeatherBatch: changersOnly,
+  changeWeatherBatch: changersOnly,
+  uploadWeatherFiles: changersOnly,
+  uploadWeatherArchive: changersOnly,
+  // Its opening has not stopped.
+  retryWeatherArchive: [403, 403, 409, 409, 404, 401, 401, 401],
   watchTeam: everyMember,
   getMap: everyMember,
   getStationPlace: everyMember,
@@ -68,6 +80,7 @@ let road: Road;
 let server: http.Server;
 let origin: string;
 let ids: Readonly<Record<string, string>>;
+let archive: Buffer;
 /** A file of each caller's own, so that one caller's act does not stand in the way of the next. */
 const ownFiles = new Map<Caller, string>();
 const cookies = new Map<Caller, string>();
@@ -107,6 +120,21 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     const form = new FormData();
     form.append('file', epwOf(`uploaded by ${caller}`), `${caller}.epw`);
     return form;
+  }
+  if (name === 'uploadWeatherFiles') {
+    const form = new FormData();
+    form.append('file', epwOf(`one of several by ${caller}`), `${caller}.epw`);
+    return form;
+  }
+  if (name === 'uploadWeatherArchive') {
+    const form = new FormData();
+    form.append('file', new Blob([new Uint8Array(archive)]), `${caller}.zip`);
+    return form;
+  }
+  if (name === 'startWeatherBatch') return JSON.stringify({ name: `Batch of ${caller}` });
+  if (name === 'changeWeatherBatch') return JSON.stringify({ state: 'running' });
+  if (name === 'actOnWeatherFiles') {
+    return JSON.stringify({ act: 'refuse', fileIds: [ids.fileId], reason: 'Not of use.' });
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
@@ -196,6 +224,17 @@ beforeAll(async () => {
   const place: { shown: { runId: string } } = await (
     await fetch(`${team}/programmes/${ours.programmeId}/stations/${stationId}`, { headers })
   ).json();
+  const json = { ...headers, 'Content-Type': 'application/json' };
+  const batch: { id: string } = await (
+    await fetch(`${team}/weather-batches`, { method: 'POST', headers: json, body: JSON.stringify({ name: 'Ours' }) })
+  ).json();
+  archive = await zipBytes({ 'note.md': 'nothing to read' });
+  const form = new FormData();
+  form.append('file', new Blob([new Uint8Array(archive)]), 'first.zip');
+  const sent: { archive: { id: string } } = await (
+    await fetch(`${team}/weather-batches/${batch.id}/archives`, { method: 'POST', headers, body: form })
+  ).json();
+  ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });

@@ -14,6 +14,8 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
     failure: view.failure,
     uploadedBy: view.uploadedBy,
     uploadedAt: view.uploadedAt.toISOString(),
+    batchId: view.batchId,
+    part: view.part,
     station: view.declaredStation,
     stationId: view.stationId,
     kind: view.kind,

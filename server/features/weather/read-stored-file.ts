@@ -3,9 +3,12 @@ import type { Knex } from 'knex';
 import type { ReadingStep } from '#contract/weather.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
+import type { RefusedReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
+import { GzipProblem, inflateGzip, isGzip } from '../../storage/inflate-gzip.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
+import { findBatchState } from './batch-store.ts';
 import { storeReading } from './store-reading.ts';
 import { findWeatherFile, setReadingStep, type WeatherFileState } from './weather-file-store.ts';
 
@@ -20,10 +23,12 @@ export async function readStoredFile(
 ): Promise<void> {
   const file = await findWeatherFile(deps.db, key);
   if (file === null || file.status !== 'reading') return;
+  if (file.batchId !== null && (await findBatchState(deps.db, { ...key, batchId: file.batchId })) === 'paused') return;
 
   await enterStep(deps.db, file, 'reading');
-  const bytes = await originalOf(deps.storage, file);
-  const reading = readWeatherFile(bytes, file.name);
+  const content = await contentOf(await originalOf(deps.storage, file));
+  const reading =
+    content instanceof GzipProblem ? unreadable(content) : readWeatherFile(content, file.name.replace(/\.gz$/i, ''));
   if (reading.status === 'refused') return await storeReading(deps.db, file, { reading, reduced: null });
 
   await enterStep(deps.db, file, 'reducing');
@@ -40,6 +45,23 @@ async function enterStep(db: Knex, file: WeatherFileState, step: ReadingStep): P
       event: { kind: 'weather-file', fileId: file.id, status: 'reading', step },
     });
   });
+}
+
+/** What is inside a gzip file, whatever its name; any other file is its own content. */
+async function contentOf(original: Uint8Array): Promise<Uint8Array | GzipProblem> {
+  if (!isGzip(original)) return original;
+  try {
+    return await inflateGzip(original);
+  } catch (error) {
+    if (error instanceof GzipProblem) return error;
+    throw error;
+  }
+}
+
+function unreadable({ message }: GzipProblem): RefusedReading {
+  const finding = { code: 'binary', severity: 'refuse', line: null, column: null, lastLine: null, count: 1 } as const;
+  const whole = { variable: null, done: null };
+  return { status: 'refused', format: null, station: null, findings: [{ ...finding, ...whole, message }] };
 }
 
 /** @throws Error when the stored bytes are not those that were uploaded */

@@ -1,10 +1,12 @@
 import type { Knex } from 'knex';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
+import { AppError } from '../../http/app-error.ts';
 import type { UploadedFile } from '../../http/request-context.ts';
 import { addJob } from '../../jobs/queue.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { type OriginalStore, originalKey } from '../../storage/original-store.ts';
+import { type BatchKey, shareBatch } from './batch-store.ts';
 import { findStandingFile, insertWeatherFile, restartReading } from './weather-file-store.ts';
 
 export interface ReceivedFile {
@@ -19,6 +21,8 @@ export interface Receiving {
   readonly requestId: string | null;
   readonly at: Date;
   readonly upload: UploadedFile;
+  /** The batch that it came with; null when it came by itself. */
+  readonly batchId: string | null;
 }
 
 /**
@@ -29,7 +33,7 @@ export async function receiveWeatherFile(
   deps: { db: Knex; storage: OriginalStore },
   receiving: Receiving,
 ): Promise<ReceivedFile> {
-  const { teamId, upload } = receiving;
+  const { teamId, upload, batchId } = receiving;
   const known = await answerKnown(deps.db, receiving);
   if (known !== null) return known;
 
@@ -38,8 +42,10 @@ export async function receiveWeatherFile(
   const storageKey = originalKey(upload.fingerprint);
   await deps.storage.put(storageKey, upload.temporaryPath);
   const fileId = await inTransaction(deps.db, async (transaction) => {
+    const batchState = batchId === null ? 'running' : await openBatch(transaction, { teamId, batchId });
     const id = await insertWeatherFile(transaction, {
       teamId,
+      batchId,
       name: upload.name,
       bytes: upload.bytes,
       fingerprint: upload.fingerprint,
@@ -55,7 +61,8 @@ export async function receiveWeatherFile(
       subject: { fileId: id, name: upload.name, fingerprint: upload.fingerprint },
       requestId: receiving.requestId,
     });
-    await queueReading(transaction, { teamId, fileId: id });
+    if (batchState === 'running') await queueReading(transaction, { teamId, fileId: id });
+    if (batchId !== null) await notifyTeam(transaction, { teamId, event: { kind: 'weather-batch', batchId } });
     return id;
   });
   if (fileId !== null) return { fileId, known: false };
@@ -75,7 +82,19 @@ async function answerKnown(db: Knex, { teamId, upload }: Receiving): Promise<Rec
   return { fileId: file.id, known: true };
 }
 
-async function queueReading(transaction: Knex.Transaction, key: { teamId: string; fileId: string }): Promise<void> {
+/** @throws AppError when there is no such batch, or it takes nothing in any more */
+async function openBatch(transaction: Knex.Transaction, key: BatchKey): Promise<'running' | 'paused'> {
+  const state = await shareBatch(transaction, key);
+  if (state === null) throw new AppError('not_found', 'There is no such batch in this team.');
+  if (state === 'cancelled') throw new AppError('wrong_state', 'This batch was cancelled. Begin another one.');
+  return state;
+}
+
+/** Puts the reading of a file in line. */
+export async function queueReading(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
+): Promise<void> {
   await addJob(transaction, { task: 'read-weather-file', payload: key, jobKey: key.fileId });
   await notifyTeam(transaction, {
     teamId: key.teamId,

@@ -1,22 +1,42 @@
 import type { Router } from 'express';
 import {
   acceptWeatherFile as acceptEndpoint,
+  actOnWeatherFiles as actEndpoint,
   getOriginal,
   getWeatherFile,
   listWeatherFiles,
+  retryWeatherFile as retryWeatherFileEndpoint,
   uploadWeatherFile,
   watchTeam,
   withdrawWeatherFile as withdrawEndpoint,
 } from '#contract/weather.ts';
+import {
+  changeWeatherBatch,
+  getWeatherBatch,
+  listWeatherBatches,
+  retryWeatherArchive,
+  startWeatherBatch,
+  uploadWeatherArchive,
+  uploadWeatherFiles,
+} from '#contract/weather-batches.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
-import type { RequestContext } from '../../http/request-context.ts';
+import type { RequestContext, UploadedFile } from '../../http/request-context.ts';
+import { isZip } from '../../storage/zip-members.ts';
 import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.ts';
-import { readCursor, writeCursor } from './page-cursor.ts';
+import { actOnWeatherFiles } from './act-on-weather-files.ts';
+import { findArchiveView, findBatchView, listBatchViews } from './batch-read-model.ts';
+import { changeBatch } from './change-batch.ts';
+import { countLibrary, listWeatherFileViews } from './library-read-model.ts';
+import { presentArchive, presentBatch } from './present-batch.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
+import { receiveArchive } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
-import { findWeatherFileRecord, findWeatherFileView, listWeatherFileViews } from './weather-file-read-model.ts';
+import { retryArchive } from './retry-archive.ts';
+import { retryWeatherFile } from './retry-weather-file.ts';
+import { startBatch } from './start-batch.ts';
+import { findWeatherFileRecord, findWeatherFileView } from './weather-file-read-model.ts';
 import { findWeatherFile } from './weather-file-store.ts';
 import { withdrawWeatherFile } from './withdraw-weather-file.ts';
 
@@ -32,16 +52,24 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   const presented = async (key: FileKey) => presentWeatherFile(found(await findWeatherFileView(db, key)));
 
   mount(router, deps, listWeatherFiles, async ({ params, query }) => {
-    const page = { teamId: params.teamId, after: readCursor(query.after), limit: query.limit };
-    const { views, total, more } = await listWeatherFileViews(db, page);
-    const last = views.at(-1);
-    return { items: views.map(presentWeatherFile), total, next: more && last !== undefined ? writeCursor(last) : null };
+    const [{ views, total }, { counts, formats }] = await Promise.all([
+      listWeatherFileViews(db, { ...params, ...query }),
+      countLibrary(db, params.teamId),
+    ]);
+    return {
+      items: views.map(presentWeatherFile),
+      total,
+      page: query.page,
+      pages: Math.max(1, Math.ceil(total / query.limit)),
+      counts,
+      formats: [...formats],
+    };
   });
 
-  mount(router, deps, uploadWeatherFile, async ({ params: { teamId } }, request) => {
-    const [upload] = request.uploads;
-    if (upload === undefined) throw new AppError('invalid_input', 'Choose a file to upload.');
-    const { fileId, known } = await receiveWeatherFile(deps, { teamId, upload, ...act(request) });
+  mount(router, deps, uploadWeatherFile, async ({ params: { teamId }, query: { batchId = null } }, request) => {
+    const upload = onlyUpload(request);
+    await refuseArchive(upload);
+    const { fileId, known } = await receiveWeatherFile(deps, { teamId, batchId, upload, ...act(request) });
     return { file: await presented({ teamId, fileId }), known };
   });
 
@@ -64,7 +92,78 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
     return await presented(params);
   });
 
+  mount(router, deps, actEndpoint, async ({ params: { teamId }, body }, request) =>
+    actOnWeatherFiles({ db, ...parts }, { teamId, fileIds: body.fileIds, act: body, by: act(request) }),
+  );
+
+  mount(router, deps, retryWeatherFileEndpoint, async ({ params }, request) => {
+    await retryWeatherFile({ db, ...parts }, { ...params, ...act(request) });
+    return await presented(params);
+  });
+
+  batchRoutes(router, deps, act);
+
   mount(router, deps, watchTeam, async ({ params }, request) => deps.feed.watch(params.teamId, request.signal));
+}
+
+type Act = (request: RequestContext) => { personId: string; requestId: string; at: Date };
+
+function batchRoutes(router: Router, deps: Deps, act: Act): void {
+  const { db } = deps;
+  const presented = async (key: { teamId: string; batchId: string }) =>
+    presentBatch(foundBatch(await findBatchView(db, key)));
+
+  mount(router, deps, listWeatherBatches, async ({ params: { teamId }, query: { limit } }) => ({
+    items: (await listBatchViews(db, { teamId, limit })).map(presentBatch),
+  }));
+  mount(router, deps, getWeatherBatch, async ({ params }) => await presented(params));
+  mount(router, deps, startWeatherBatch, async ({ params: { teamId }, body }, request) => {
+    const batchId = await startBatch(db, { teamId, name: body.name, ...act(request) });
+    return await presented({ teamId, batchId });
+  });
+  mount(router, deps, changeWeatherBatch, async ({ params, body }, request) => {
+    await changeBatch(db, { ...params, state: body.state, ...act(request) });
+    return await presented(params);
+  });
+
+  mount(router, deps, uploadWeatherFiles, async ({ params: { teamId, batchId } }, request) => {
+    for (const upload of request.uploads) await refuseArchive(upload);
+    const files = [];
+    for (const upload of request.uploads) {
+      const { fileId, known } = await receiveWeatherFile(deps, { teamId, batchId, upload, ...act(request) });
+      const view = found(await findWeatherFileView(db, { teamId, fileId }));
+      files.push({ file: presentWeatherFile(view), known });
+    }
+    return { files };
+  });
+  mount(router, deps, uploadWeatherArchive, async ({ params }, request) => {
+    const archiveId = await receiveArchive(deps, { ...params, upload: onlyUpload(request), ...act(request) });
+    const view = foundBatch(await findArchiveView(db, { teamId: params.teamId, archiveId }));
+    return { archive: presentArchive(view) };
+  });
+  mount(router, deps, retryWeatherArchive, async ({ params }, request) => {
+    await retryArchive(db, { ...params, ...act(request) });
+    return presentArchive(foundBatch(await findArchiveView(db, params)));
+  });
+}
+
+function onlyUpload({ uploads: [upload] }: RequestContext): UploadedFile {
+  if (upload === undefined) throw new AppError('invalid_input', 'Choose a file to upload.');
+  return upload;
+}
+
+/** An archive has its own way in, where its files become weather files. */
+async function refuseArchive({ temporaryPath, name }: UploadedFile): Promise<void> {
+  if (!(await isZip(temporaryPath))) return;
+  throw new AppError(
+    'unsupported_format',
+    `“${name}” is a zip archive. Upload it as an archive of a batch: POST …/weather-batches/BATCH/archives.`,
+  );
+}
+
+function foundBatch<T>(thing: T | null): T {
+  if (thing === null) throw new AppError('not_found', 'There is no such batch or archive in this team.');
+  return thing;
 }
 
 function found<T>(thing: T | null): T {

@@ -23,21 +23,22 @@ export interface WeatherFileView {
   readonly year: number | null;
   readonly hours: number | null;
   readonly missing: number | null;
+  readonly batchId: string | null;
+  readonly part: string;
   readonly findingCounts: Readonly<Partial<Record<Severity, number>>>;
-  /** Place in the list: microseconds of the upload, as text. */
-  readonly uploadedAtUs: string;
 }
 
-const VIEW_COLUMNS = `
+/** Columns and rows of a view; statements of this feature alone build on them. */
+export const VIEW_COLUMNS = `
     weather_files.id, weather_files.name, weather_files.bytes::double precision as bytes, weather_files.fingerprint,
     weather_files.format, weather_files.status, weather_files.step, weather_files.failure,
     people.name as "uploadedBy", weather_files.uploaded_at as "uploadedAt",
     weather_files.declared_station as "declaredStation", weather_files.station_id as "stationId",
     weather_years.kind, weather_years.year, weather_years.slots as hours,
     (weather_years.facts ->> 'missing')::integer as missing,
-    coalesce(counts.by_severity, '{}') as "findingCounts",
-    (extract(epoch from weather_files.uploaded_at) * 1000000)::bigint::text as "uploadedAtUs"`;
-const VIEW_ROWS = `
+    weather_files.batch_id as "batchId", weather_files.part,
+    coalesce(counts.by_severity, '{}') as "findingCounts"`;
+export const VIEW_ROWS = `
   from weather_files
   join people on people.id = weather_files.uploaded_by
   left join weather_years on weather_years.weather_file_id = weather_files.id
@@ -49,36 +50,6 @@ const VIEW_ROWS = `
       group by findings.severity
     ) as each
   ) as counts on true`;
-
-export interface PageStart {
-  readonly uploadedAtUs: string;
-  readonly fileId: string;
-}
-
-/** Newest first; one more than `limit` tells that there is a next page. */
-export async function listWeatherFileViews(
-  db: Knex,
-  page: { teamId: string; after: PageStart | null; limit: number },
-): Promise<{ views: readonly WeatherFileView[]; total: number; more: boolean }> {
-  const after = page.after === null ? '' : PAGE_START;
-  const [listed, counted] = await Promise.all([
-    db.raw<{ rows: WeatherFileView[] }>(
-      `select ${VIEW_COLUMNS} ${VIEW_ROWS} where weather_files.team_id = :teamId ${after}
-       order by weather_files.uploaded_at desc, weather_files.id desc limit :rows`,
-      { teamId: page.teamId, rows: page.limit + 1, ...page.after },
-    ),
-    db.raw<{ rows: [{ total: number }] }>(
-      'select count(*)::integer as total from weather_files where weather_files.team_id = ?',
-      [page.teamId],
-    ),
-  ]);
-  const views = listed.rows.slice(0, page.limit);
-  return { views, total: counted.rows[0].total, more: listed.rows.length > page.limit };
-}
-
-const PAGE_START = `
-  and (weather_files.uploaded_at, weather_files.id) <
-    (timestamptz 'epoch' + cast(:uploadedAtUs as bigint) * interval '1 microsecond', cast(:fileId as uuid))`;
 
 /** `null` when the team has no such file. */
 export async function findWeatherFileView(

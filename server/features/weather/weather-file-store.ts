@@ -11,17 +11,19 @@ export interface WeatherFileState {
   readonly name: string;
   readonly fingerprint: string;
   readonly storageKey: string;
+  readonly batchId: string | null;
   readonly status: FileStatus;
   readonly step: ReadingStep | null;
   readonly failure: string | null;
+  readonly stationId: string | null;
   readonly declaredStation: DeclaredStation | null;
   readonly asks: readonly Ask[];
 }
 
 const STATE_COLUMNS = `
   weather_files.id, weather_files.team_id as "teamId", weather_files.name, weather_files.fingerprint,
-  weather_files.storage_key as "storageKey", weather_files.status, weather_files.step, weather_files.failure,
-  weather_files.declared_station as "declaredStation", weather_files.asks`;
+  weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId", weather_files.status, weather_files.step, weather_files.failure,
+  weather_files.station_id as "stationId", weather_files.declared_station as "declaredStation", weather_files.asks`;
 
 /** The file as it stands; `null` when the team has no such file. */
 export async function findWeatherFile(
@@ -55,7 +57,8 @@ export async function findStandingFile(
 ): Promise<WeatherFileState | null> {
   const { rows } = await db.raw<{ rows: WeatherFileState[] }>(
     `select ${STATE_COLUMNS} from weather_files
-     where weather_files.team_id = ? and weather_files.fingerprint = ? and weather_files.status <> 'withdrawn'`,
+     where weather_files.team_id = ? and weather_files.fingerprint = ? and weather_files.part = ''
+       and weather_files.status <> 'withdrawn'`,
     [key.teamId, key.fingerprint],
   );
   return rows[0] ?? null;
@@ -66,6 +69,7 @@ export async function insertWeatherFile(
   transaction: Knex.Transaction,
   file: {
     teamId: string;
+    batchId: string | null;
     name: string;
     bytes: number;
     fingerprint: string;
@@ -75,9 +79,10 @@ export async function insertWeatherFile(
   },
 ): Promise<string | null> {
   const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
-    `insert into weather_files (team_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by, uploaded_at)
-     values (:teamId, :name, :bytes, :fingerprint, :storageKey, 'reading', 'received', :uploadedBy, :uploadedAt)
-     on conflict (team_id, fingerprint) where status <> 'withdrawn' do nothing
+    `insert into weather_files (team_id, batch_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by,
+       uploaded_at)
+     values (:teamId, :batchId, :name, :bytes, :fingerprint, :storageKey, 'reading', 'received', :uploadedBy, :uploadedAt)
+     on conflict (team_id, fingerprint, part) where status <> 'withdrawn' do nothing
      returning id`,
     { ...file, name: storableText(file.name) },
   );
@@ -157,6 +162,30 @@ export async function setWithdrawn(
      set status = 'withdrawn', step = null, withdrawn_by = :personId, withdrawn_at = :at, withdrawn_reason = :reason
      where team_id = :teamId and id = :fileId`,
     { ...withdrawal, reason: storableText(withdrawal.reason) },
+  );
+}
+
+export async function setRefused(
+  transaction: Knex.Transaction,
+  refusal: { teamId: string; fileId: string; personId: string; at: Date; reason: string },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files
+     set status = 'refused', refused_by = :personId, refused_at = :at, refused_reason = :reason
+     where team_id = :teamId and id = :fileId`,
+    { ...refusal, reason: storableText(refusal.reason) },
+  );
+}
+
+export async function setSuperseded(
+  transaction: Knex.Transaction,
+  change: { teamId: string; fileId: string; byFileId: string; personId: string; at: Date },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files
+     set status = 'superseded', superseded_by = :byFileId, superseded_by_person = :personId, superseded_at = :at
+     where team_id = :teamId and id = :fileId`,
+    change,
   );
 }
 

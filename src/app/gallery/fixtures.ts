@@ -218,6 +218,8 @@ export function fixtureFiles(): WeatherFile[] {
       failure: null,
       uploadedBy: 'Ines Mabaso',
       uploadedAt: '2026-11-12T12:05:00.000Z',
+      batchId: null,
+      part: '',
       station: isKnown
         ? { name, latitude: -26.6, longitude: 20.6, elevationM: 1042, utcOffsetH: 2, wmoNumber: '684240' }
         : null,

@@ -13,17 +13,17 @@ import { libraryQuery } from './weather-queries.ts';
 import { WeatherTable } from './weather-table.tsx';
 import { mayChangeWeather } from './weather-words.ts';
 
-/** The page of the library that starts after a given file, in the query of its address. */
-const AFTER_PARAM = 'after';
+/** The page of the library, counted from 1, in the query of its address. */
+const PAGE_PARAM = 'page';
 
 export function WeatherLibraryPage() {
   const { teamId, role } = useTeam();
   const mayUpload = mayChangeWeather(role);
   const [search] = useSearchParams();
-  const after = search.get(AFTER_PARAM) ?? undefined;
-  const library = useQuery({ ...libraryQuery(teamId, after), placeholderData: keepPreviousData });
+  const page = Math.max(1, Number.parseInt(search.get(PAGE_PARAM) ?? '1', 10) || 1);
+  const library = useQuery({ ...libraryQuery(teamId, page), placeholderData: keepPreviousData });
   const isEmpty = library.data?.items.length === 0;
-  const page = (
+  const content = (
     <div className="mx-auto w-full max-w-[76rem] px-5 pt-6 pb-16 max-sm:px-4">
       <PageTitle>Weather</PageTitle>
       <header className="mb-5 flex flex-wrap items-end justify-between gap-4">
@@ -49,39 +49,39 @@ export function WeatherLibraryPage() {
           {errorSentence(library.error)}
         </Notice>
       ) : null}
-      {isEmpty ? <EmptyLibrary teamId={teamId} mayUpload={mayUpload} isFirstPage={after === undefined} /> : null}
+      {isEmpty ? <EmptyLibrary teamId={teamId} mayUpload={mayUpload} isFirstPage={page === 1} /> : null}
       {library.data && library.data.items.length > 0 ? (
         <div className={library.isPlaceholderData ? 'opacity-60' : ''} aria-busy={library.isPlaceholderData}>
           <WeatherTable teamId={teamId} items={library.data.items} />
-          <Paging shown={library.data.items.length} total={library.data.total} next={library.data.next} after={after} />
+          <Paging shown={library.data.items.length} total={library.data.total} page={page} pages={library.data.pages} />
         </div>
       ) : null}
     </div>
   );
-  return mayUpload ? <DropArea teamId={teamId}>{page}</DropArea> : page;
+  return mayUpload ? <DropArea teamId={teamId}>{content}</DropArea> : content;
 }
 
 interface PagingProps {
   readonly shown: number;
   readonly total: number;
-  readonly next: string | null;
-  readonly after: string | undefined;
+  readonly page: number;
+  readonly pages: number;
 }
 
-function Paging({ shown, total, next, after }: PagingProps) {
-  if (next === null && after === undefined) return null;
+function Paging({ shown, total, page, pages }: PagingProps) {
+  if (pages === 1) return null;
   return (
     <nav aria-label="Pages of the library" className="mt-4 flex items-center gap-3">
       <p className="mr-auto text-fine text-soft">
         {number(shown)} of {plural(total, 'file')} on this page
       </p>
-      {after === undefined ? null : (
-        <Link to="?" className={buttonLook('plain')}>
-          Newest files
+      {page === 1 ? null : (
+        <Link to={page === 2 ? '?' : `?${PAGE_PARAM}=${page - 1}`} className={buttonLook('plain')}>
+          Newer files
         </Link>
       )}
-      {next === null ? null : (
-        <Link to={`?${AFTER_PARAM}=${encodeURIComponent(next)}`} className={buttonLook('plain')}>
+      {page >= pages ? null : (
+        <Link to={`?${PAGE_PARAM}=${page + 1}`} className={buttonLook('plain')}>
           Older files
         </Link>
       )}

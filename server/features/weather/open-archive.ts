@@ -1,0 +1,97 @@
+import { randomUUID } from 'node:crypto';
+import { createWriteStream } from 'node:fs';
+import { mkdtemp, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
+import { pipeline } from 'node:stream/promises';
+import type { Knex } from 'knex';
+import { cleanUploadName } from '../../http/upload-name.ts';
+import { notifyTeam } from '../../jobs/team-feed.ts';
+import type { OriginalStore } from '../../storage/original-store.ts';
+import { countZipMembers, ZipProblem, zipMembers } from '../../storage/zip-members.ts';
+import {
+  type ArchiveState,
+  endArchive,
+  findArchive,
+  findBatchState,
+  setArchiveOpening,
+  setArchiveProgress,
+} from './batch-store.ts';
+import { whyNoWeatherFile } from './no-weather-file.ts';
+import { receiveWeatherFile } from './receive-weather-file.ts';
+
+type Deps = { readonly db: Knex; readonly storage: OriginalStore };
+
+/**
+ * The work of the job `open-weather-archive`: every file that may be weather is received as if it had been uploaded by itself. Done
+ * again after a crash it finds what it has received already by its fingerprint, so that nothing is doubled.
+ */
+export async function openArchive(deps: Deps, key: { teamId: string; archiveId: string }): Promise<void> {
+  const archive = await findArchive(deps.db, key);
+  if (archive === null || archive.batchState !== 'running') return;
+  if (archive.status !== 'waiting' && archive.status !== 'opening') return;
+  const folder = await mkdtemp(path.join(tmpdir(), 'muslin-archive-'));
+  try {
+    const file = path.join(folder, `archive-${randomUUID()}`);
+    await pipeline(await deps.storage.get(archive.storageKey), createWriteStream(file, { flags: 'wx', mode: 0o600 }));
+    await receiveMembers(deps, archive, { file, folder });
+  } catch (error) {
+    if (!(error instanceof ZipProblem)) throw error;
+    await endArchive(deps.db, { ...keyOf(archive), status: 'refused', problem: error.message });
+    await tell(deps.db, archive);
+  } finally {
+    await rm(folder, { recursive: true, force: true });
+  }
+}
+
+async function receiveMembers(
+  deps: Deps,
+  archive: ArchiveState,
+  { file, folder }: { file: string; folder: string },
+): Promise<void> {
+  const members = await countZipMembers(file);
+  if (!(await setArchiveOpening(deps.db, { ...keyOf(archive), members }))) return;
+  const leftOut: { path: string; why: string }[] = [];
+  let opened = 0;
+  for await (const member of zipMembers({ file, folder, unwanted: whyNoWeatherFile })) {
+    // Somebody may pause or cancel the batch while a large archive is being opened.
+    const state = await findBatchState(deps.db, archive);
+    if (state !== 'running') {
+      if (state === 'paused') await endArchive(deps.db, { ...keyOf(archive), status: 'waiting', problem: null });
+      return;
+    }
+    if (member.kind === 'left out') leftOut.push({ path: member.path, why: member.why });
+    else {
+      opened++;
+      await receiveMember(deps, archive, member);
+    }
+    if (!(await setArchiveProgress(deps.db, { ...keyOf(archive), opened, leftOut }))) return;
+    await tell(deps.db, archive);
+  }
+  await endArchive(deps.db, { ...keyOf(archive), status: 'opened', problem: null });
+  await tell(deps.db, archive);
+}
+
+async function receiveMember(
+  deps: Deps,
+  archive: ArchiveState,
+  member: { path: string; bytes: number; fingerprint: string; temporaryPath: string },
+): Promise<void> {
+  const { bytes, fingerprint, temporaryPath } = member;
+  await receiveWeatherFile(deps, {
+    teamId: archive.teamId,
+    batchId: archive.batchId,
+    personId: archive.madeBy,
+    requestId: null,
+    at: new Date(),
+    upload: { name: cleanUploadName(member.path), bytes, fingerprint, temporaryPath },
+  });
+}
+
+function keyOf({ teamId, id }: ArchiveState): { teamId: string; archiveId: string } {
+  return { teamId, archiveId: id };
+}
+
+async function tell(db: Knex, { teamId, batchId }: ArchiveState): Promise<void> {
+  await notifyTeam(db, { teamId, event: { kind: 'weather-batch', batchId } });
+}
