@@ -59,9 +59,10 @@ export function continentalRecord(hours: TestedHours, station: DeclaredStation, 
   const { values } = hours.dryBulb;
   const isBeyond = (value: number) => value > high || (value < low && value !== MISSING_INT16);
   for (let step = 0; step < values.length; step++) {
-    if (!isBeyond(values[step] ?? 0)) continue;
+    const value = values[step] ?? MISSING_INT16;
+    if ((value <= high && value >= low) || value === MISSING_INT16) continue;
     const start = step;
-    let worst = values[step] ?? 0;
+    let worst = value;
     for (; step < values.length && isBeyond(values[step] ?? 0); step++) {
       if (Math.abs(values[step] ?? 0) > Math.abs(worst)) worst = values[step] ?? 0;
     }

@@ -1,48 +1,53 @@
 import { MISSING_INT16 } from '../../conventions.ts';
 
-/** Counting by tenths of a kelvin from -110 to 110 °C and beyond is enough for what no weather reaches. */
-const LOW = -11_000;
+/** Counting by tenths of a kelvin is enough for what no weather reaches. */
 const GRAIN = 10;
-const BINS = 2_200;
+const counts = new Uint32Array(Math.ceil(65_536 / GRAIN) + 1);
 
 export interface Quartiles {
   readonly lower: number;
   readonly median: number;
   readonly upper: number;
-  /** The least and the greatest value. */
-  readonly least: number;
-  readonly most: number;
 }
 
-const counts = new Uint32Array(BINS);
+/** The least and the greatest of some values in hundredths from `start` to the one before `end`; null when none is there. */
+export function extremesOf(values: Int16Array, start: number, end: number): { least: number; most: number } | null {
+  let least = 32_767;
+  let most = MISSING_INT16;
+  for (let at = start; at < end; at++) {
+    const value = values[at] ?? MISSING_INT16;
+    if (value === MISSING_INT16) continue;
+    if (value < least) least = value;
+    if (value > most) most = value;
+  }
+  return most === MISSING_INT16 ? null : { least, most };
+}
 
 /** Quartiles, to 0.1 K, of values in hundredths from `start` to the one before `end`; null when none is there. */
 export function quartilesOf(values: Int16Array, start: number, end: number): Quartiles | null {
-  counts.fill(0);
+  const extremes = extremesOf(values, start, end);
+  if (extremes === null) return null;
+  const { least, most } = extremes;
+  const bins = Math.floor((most - least) / GRAIN) + 1;
+  counts.fill(0, 0, bins);
   let present = 0;
-  let least = 32_767;
-  let most = -32_767;
   for (let at = start; at < end; at++) {
     const value = values[at] ?? MISSING_INT16;
     if (value === MISSING_INT16) continue;
     present++;
-    if (value < least) least = value;
-    if (value > most) most = value;
-    const bin = Math.max(0, Math.min(BINS - 1, Math.round((value - LOW) / GRAIN)));
+    const bin = ((value - least) / GRAIN) | 0;
     counts[bin] = (counts[bin] ?? 0) + 1;
   }
-  if (present === 0) return null;
-  let bin = 0;
+  const at = (rank: number) => least + GRAIN * binOfRank(rank, bins);
+  return { lower: at(present >> 2), median: at(present >> 1), upper: at((3 * present) >> 2) };
+}
+
+/** The bin that holds the value with so many before it. */
+function binOfRank(rank: number, bins: number): number {
   let below = 0;
-  // The bin that holds the value with so many before it.
-  const reach = (rank: number) => {
-    while (below + (counts[bin] ?? 0) <= rank && bin < BINS - 1) {
-      below += counts[bin] ?? 0;
-      bin++;
-    }
-    return LOW + bin * GRAIN;
-  };
-  const lower = reach(Math.floor(present / 4));
-  const median = reach(Math.floor(present / 2));
-  return { lower, median, upper: reach(Math.floor((3 * present) / 4)), least, most };
+  for (let bin = 0; bin < bins; bin++) {
+    below += counts[bin] ?? 0;
+    if (below > rank) return bin;
+  }
+  return bins - 1;
 }

@@ -1,6 +1,6 @@
 import { MISSING_INT16 } from '../../conventions.ts';
 import type { FindingList } from '../finding-list.ts';
-import { type Quartiles, quartilesOf } from './month-quartiles.ts';
+import { extremesOf, type Quartiles, quartilesOf } from './month-quartiles.ts';
 import { tellSpan } from './tell-span.ts';
 import { degrees, leaveOut, type StepSpan, type TestedColumn, type TestedHours } from './tested-hours.ts';
 
@@ -18,10 +18,12 @@ const AT_LEAST = { 'dry bulb': 1_500, 'dew point': 3_000 } as const;
 export function otherClimate(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
     for (const month of hours.months) {
+      const extremes = extremesOf(column.values, month.start, month.end);
+      if (extremes === null || extremes.most - extremes.least < AT_LEAST[column.variable]) continue;
       const quartiles = quartilesOf(column.values, month.start, month.end);
       if (quartiles === null) continue;
       const far = Math.max(RANGES * (quartiles.upper - quartiles.lower), AT_LEAST[column.variable]);
-      if (quartiles.median - quartiles.least < far && quartiles.most - quartiles.median < far) continue;
+      if (quartiles.median - extremes.least < far && extremes.most - quartiles.median < far) continue;
       leaveOutFar(hours, { column, month, quartiles, far }, findings);
     }
   }

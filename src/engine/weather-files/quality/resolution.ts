@@ -1,5 +1,3 @@
-import { MISSING_INT16 } from '../../conventions.ts';
-
 /** The grain of a column of temperatures, 0.01 K. */
 export interface Resolution {
   /** The coarsest of 1, 0.5 and 0.1 K on which 95 % of the values lie, else 0.1 K. */
@@ -10,19 +8,12 @@ export interface Resolution {
 
 const NEARLY_ALL = 0.95;
 
-/** Grain of a column in hundredths; the choice of grains and the share are those of HadISD's persistence tests. */
-export function resolutionOf(values: Int16Array): Resolution {
-  let present = 0;
-  let whole = 0;
-  let half = 0;
-  for (let step = 0; step < values.length; step++) {
-    const value = values[step] ?? MISSING_INT16;
-    if (value === MISSING_INT16) continue;
-    present++;
-    if (value % 50 !== 0) continue;
-    half++;
-    if (value % 100 === 0) whole++;
-  }
+/**
+ * Grain of a column from the number of its values, of those on halves and of those on whole degrees; the choice of grains is that
+ * of HadISD's persistence tests.
+ */
+export function resolutionOf(values: { present: number; half: number; whole: number }): Resolution {
+  const { half, present, whole } = values;
   const grain = (share: number) => (whole >= share * present ? 100 : half >= share * present ? 50 : 10);
   return { usual: grain(NEARLY_ALL), finest: grain(1) };
 }

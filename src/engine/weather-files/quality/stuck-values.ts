@@ -2,7 +2,7 @@
 import { MISSING_INT16 } from '../../conventions.ts';
 import { type FindingList, hoursPhrase } from '../finding-list.ts';
 import { tellSpan } from './tell-span.ts';
-import { degrees, leaveOut, leaveOutHour, type TestedColumn, type TestedHours } from './tested-hours.ts';
+import { degrees, leaveOut, leaveOutHour, type StepSpan, type TestedColumn, type TestedHours } from './tested-hours.ts';
 
 /** Hours in a row by resolution, 0.01 K (HadISD). Its limits in days are for sparser reports than are read here. */
 const LONGEST_H = {
@@ -11,6 +11,8 @@ const LONGEST_H = {
 } as const;
 /** A dew point that stays so long is a doubt at any resolution, but on coasts it happens: it is kept. */
 const DEW_DOUBT_H = 48;
+/** No limit is shorter. */
+const FEWEST_H = 24;
 const TOGETHER_H = { 100: 24, 50: 12, 10: 12 } as const;
 
 /** Dry bulb, dew point and relative humidity together for 12 hours (24 in files of whole degrees): every value is left out. */
@@ -61,27 +63,31 @@ function tellTogether(hours: TestedHours, [start, end]: readonly [number, number
 /** One temperature for as many hours as its resolution allows: left out; a dew point for 48 hours is told at any resolution. */
 export function stuckAlone(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
-    const { values } = column;
-    for (const { start, end } of hours.unbroken) {
-      let first = start;
-      let last = start;
-      let count = 0;
-      for (let step = start; step < end; step++) {
-        const value = values[step] ?? MISSING_INT16;
-        if (value === MISSING_INT16) continue;
-        if (count > 0 && value === values[first]) {
-          count++;
-          last = step;
-          continue;
-        }
-        if (count > 0) judgeRun(hours, { column, first, last, count }, findings);
-        first = step;
-        last = step;
-        count = 1;
-      }
-      if (count > 0) judgeRun(hours, { column, first, last, count }, findings);
-    }
+    for (const { start, end } of hours.unbroken) runsOf(hours, { column, start, end }, findings);
   }
+}
+
+function runsOf(hours: TestedHours, span: StepSpan & { column: TestedColumn }, findings: FindingList): void {
+  const { column, end, start } = span;
+  const { values } = column;
+  const fewest = FEWEST_H * hours.steps.stepsPerHour;
+  let value = MISSING_INT16;
+  let first = start;
+  let last = start;
+  let count = 0;
+  for (let step = start; step < end; step++) {
+    const next = values[step] ?? MISSING_INT16;
+    if (next === MISSING_INT16) continue;
+    if (next !== value) {
+      if (count >= fewest) judgeRun(hours, { column, first, last, count }, findings);
+      value = next;
+      first = step;
+      count = 0;
+    }
+    last = step;
+    count++;
+  }
+  if (count >= fewest) judgeRun(hours, { column, first, last, count }, findings);
 }
 
 function judgeRun(

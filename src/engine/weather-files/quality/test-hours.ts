@@ -1,5 +1,5 @@
 import { MISSING_INT16 } from '../../conventions.ts';
-import { leaveOutImpossible } from '../assembly/range-limits.ts';
+import { DEW_POINT_LIMITS_C, DRY_BULB_LIMITS_C, leaveOutImpossible } from '../assembly/range-limits.ts';
 import type { StepColumns } from '../assembly/step-columns.ts';
 import type { FindingList } from '../finding-list.ts';
 import type { DeclaredStation } from '../weather-file-reading.ts';
@@ -43,10 +43,23 @@ export function testHours(
 ): void {
   const { options, station, steps, typical } = input;
   const hours = testedHours(steps, typical);
-  leaveOutImpossible(steps, findings);
-  noteImpossible(hours, hours.dryBulb, steps.dryBulbC);
-  noteImpossible(hours, hours.dewPoint, steps.dewPointC);
+  if (reaches(hours.dryBulb, DRY_BULB_LIMITS_C) || reaches(hours.dewPoint, DEW_POINT_LIMITS_C)) {
+    leaveOutImpossible(steps, findings);
+    noteImpossible(hours, hours.dryBulb, steps.dryBulbC);
+    noteImpossible(hours, hours.dewPoint, steps.dewPointC);
+  }
   for (const [rule, test] of TESTS) if (!isOff(rule, options)) test(hours, station, findings);
+}
+
+/** Whether any value reaches a limit: nearly no file has one, and the range is then not looked at closely. */
+function reaches({ values }: TestedColumn, limits: { low: number; high: number }): boolean {
+  const low = 100 * limits.low;
+  const high = 100 * limits.high;
+  for (let step = 0; step < values.length; step++) {
+    const value = values[step] ?? MISSING_INT16;
+    if ((value <= low || value >= high) && value !== MISSING_INT16) return true;
+  }
+  return false;
 }
 
 /** What the range has left out is missing for the tests as well. */

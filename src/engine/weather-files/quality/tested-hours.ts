@@ -1,5 +1,5 @@
 /** The hours of a file as the tests see them: whole hundredths in small integers, so that a test is a cheap pass. */
-import { HOURS_PER_DAY, hundredths, MISSING_INT16 } from '../../conventions.ts';
+import { HOURS_PER_DAY, MISSING_INT16 } from '../../conventions.ts';
 import { monthStartSlots } from '../../reduction/calendar.ts';
 import { VALUE } from '../assembly/source-rows.ts';
 import type { StepColumns } from '../assembly/step-columns.ts';
@@ -49,6 +49,9 @@ export interface TestedHours {
   readonly unbroken: readonly StepSpan[];
 }
 
+/** Hundredths of a degree that an integer of the column can hold. */
+const FARTHEST = 32_767;
+
 export function testedHours(steps: StepColumns, typical: boolean): TestedHours {
   const { slotCount, stepsPerHour } = steps;
   const starts = monthStartSlots(slotCount);
@@ -70,13 +73,24 @@ export function testedHours(steps: StepColumns, typical: boolean): TestedHours {
   };
 }
 
+// One pass for both, since every file goes through it.
 function testedColumn(variable: TestedColumn['variable'], bit: number, column: Float64Array): TestedColumn {
   const asRead = new Int16Array(column.length);
+  const grains = { present: 0, half: 0, whole: 0 };
   for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    asRead[step] = Number.isNaN(value) ? MISSING_INT16 : Math.max(-32_767, Math.min(32_767, hundredths(value)));
+    const exact = (column[step] ?? Number.NaN) * 100;
+    // A value beyond the integers of the column is beyond every limit as well; NaN is neither above nor below.
+    const value =
+      exact > FARTHEST ? FARTHEST : exact >= -FARTHEST ? Math.round(exact) : exact < 0 ? -FARTHEST : MISSING_INT16;
+    asRead[step] = value;
+    if (value === MISSING_INT16) continue;
+    grains.present++;
+    const halves = (value / 50) | 0;
+    if (halves * 50 !== value) continue;
+    grains.half++;
+    if ((halves & 1) === 0) grains.whole++;
   }
-  return { variable, bit, asRead, values: asRead.slice(), resolution: resolutionOf(asRead) };
+  return { variable, bit, asRead, values: asRead.slice(), resolution: resolutionOf(grains) };
 }
 
 /** Leaves out temperatures of one step: bits of `VALUE`, dry bulb and dew point. */

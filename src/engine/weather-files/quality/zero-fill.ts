@@ -16,8 +16,11 @@ const FOG_WITHIN = 300;
  */
 export function zeroFill(hours: TestedHours, findings: FindingList): void {
   const shortest = SHORTEST_H * hours.steps.stepsPerHour;
-  const length = hours.steps.lines.length;
+  const { relativeHumidityPct } = hours.steps;
+  const { values } = hours.dryBulb;
+  const { length } = values;
   for (let step = 0; step < length; step++) {
+    if (values[step] !== 0 && relativeHumidityPct[step] !== 0) continue;
     if (!isZero(hours, step)) continue;
     const start = step;
     while (step < length && isZero(hours, step)) step++;
