@@ -1,7 +1,7 @@
 /**
  * The weather room: batches of uploads with their archives, files of several years or stations as parts, answers to what a file
  * asks, mappings of tables by shape, rules switched off at a station, superseding and refusing by a person, licence classes,
- * stations that were merged.
+ * stations that were merged, tokens of programs.
  */
 import type { Knex } from 'knex';
 
@@ -93,7 +93,22 @@ export async function up(knex: Knex): Promise<void> {
       add foreign key (team_id, merged_into) references stations (team_id, id),
       add check (merged_into <> id);
 
-    grant select, insert, update on weather_batches, weather_archives, table_mappings to muslin_app;
+    create table api_tokens (
+      id uuid primary key default gen_random_uuid(),
+      team_id uuid not null references teams (id),
+      name text not null check (name <> ''),
+      token_hash text not null unique check (token_hash ~ '^[0-9a-f]{64}$'),
+      scopes text[] not null check (cardinality(scopes) > 0),
+      made_by uuid not null references people (id),
+      made_at timestamptz not null default now(),
+      expires_at timestamptz not null check (expires_at > made_at),
+      last_used_at timestamptz,
+      revoked_by uuid references people (id),
+      revoked_at timestamptz,
+      unique (team_id, id)
+    );
+
+    grant select, insert, update on api_tokens, weather_batches, weather_archives, table_mappings to muslin_app;
     grant select, insert, update, delete on rules_off to muslin_app;
   `);
 }
@@ -101,7 +116,7 @@ export async function up(knex: Knex): Promise<void> {
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
     alter table stations drop column merged_into;
-    drop table rules_off, table_mappings;
+    drop table api_tokens, rules_off, table_mappings;
     alter table findings drop column variable, drop column done;
     drop index weather_files_fingerprint, weather_files_batch, weather_files_station;
     alter table weather_files

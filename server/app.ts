@@ -15,7 +15,9 @@ import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
+import { findToken } from './features/teams/find-token.ts';
 import { makeTeam } from './features/teams/make-team.ts';
+import { teamsRoutes } from './features/teams/routes.ts';
 import { findRoles } from './features/teams/team-read-model.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
@@ -74,6 +76,7 @@ function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
   briefsRoutes(router, deps, { queueRunsOfVersion });
   runsRoutes(router, deps, { threads, readDraft });
   methodRoutes(router, deps);
+  teamsRoutes(router, deps);
   return router;
 }
 
@@ -85,6 +88,7 @@ function peopleLookup({ db, now }: Deps): PeopleLookup {
       return checkPassword({ db, dummyHash }, given);
     },
     findRoles: (personId) => findRoles(db, personId),
+    findToken: (token) => findToken(db, { token, at: now() }),
     sessionStands: (id) => sessionStands(db, { id, at: now() }),
   };
 }

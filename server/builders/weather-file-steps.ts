@@ -20,6 +20,7 @@ export async function receiveFromDisk(deps: FileDeps, from: OwnFile & { readonly
   const { fileId } = await receiveWeatherFile(deps, {
     teamId: from.teamId,
     personId: from.personId,
+    tokenId: null,
     requestId: null,
     at: deps.now(),
     batchId: null,

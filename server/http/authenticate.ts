@@ -1,6 +1,6 @@
 /**
- * Who asks: passport with e-mail and password, remembered by a session in PostgreSQL. Requests with a bearer token never
- * touch the session; tokens come with a later feature, so until then each is turned away.
+ * Who asks: passport with e-mail and password, remembered by a session in PostgreSQL; or a program with an API token, whose
+ * requests never touch the session.
  */
 import type { Request, RequestHandler, Response } from 'express';
 import passportPkg from 'passport';
@@ -8,8 +8,8 @@ import { Strategy as LocalStrategy } from 'passport-local';
 import type { Role } from '#contract/accounts.ts';
 import type { Deps } from '../deps.ts';
 import { AppError } from './app-error.ts';
-import { isBearer } from './bearer.ts';
-import type { Actor, SessionControl } from './request-context.ts';
+import { bearerToken, isBearer } from './bearer.ts';
+import type { Actor, SessionControl, TokenActor } from './request-context.ts';
 import { stateOf } from './request-state.ts';
 import { SESSION_COOKIE, sessions } from './session.ts';
 
@@ -27,6 +27,8 @@ export interface PeopleLookup {
   checkPassword(given: { email: string; password: string }): Promise<string | null>;
   /** The person's teams with the role in each; null when there is no such person (any more). */
   findRoles(personId: string): Promise<ReadonlyMap<string, Role> | null>;
+  /** Whom a token stands for; null when it is not known, expired, revoked, or its maker may no longer give it. */
+  findToken(token: string): Promise<TokenActor | null>;
   /** Whether the session has neither ended nor expired. */
   sessionStands(sessionId: string): Promise<boolean>;
 }
@@ -51,7 +53,24 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     return personId === undefined || roles === null ? signedOut : { kind: 'person', personId, roles };
   };
 
+  const identifyToken: RequestHandler = async (request, response, next) => {
+    if (!isBearer(request)) return next();
+    refuseTwoIdentities(request);
+    const token = bearerToken(request);
+    const find = async (): Promise<Actor> => (await people.findToken(token)) ?? signedOut;
+    const actor = await find();
+    if (actor.kind === 'signed-out')
+      throw new AppError('not_signed_in', 'The token is not known, has expired or was revoked.');
+    stateOf(request).identity = {
+      actor,
+      session: noSession,
+      lookAgain: find,
+    };
+    next();
+  };
+
   const identify: RequestHandler = async (request, response, next) => {
+    if (isBearer(request)) return next();
     const personId = request.user?.personId;
     const sessionId = request.sessionID;
     stateOf(request).identity = {
@@ -62,17 +81,32 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     next();
   };
 
-  return [refuseBearer, sessions(deps), passport.session(), identify];
+  const ofBrowsers = [sessions(deps), passport.session()].map(unlessBearer);
+  return [identifyToken, ...ofBrowsers, identify];
 }
 
-const refuseBearer: RequestHandler = (request, _response, next) => {
-  if (!isBearer(request)) return next();
-  if (hasSessionCookie(request)) {
-    const message = 'The request carries both a session and a token. Send one of them.';
-    return next(new AppError('two_identities', message));
-  }
-  next(new AppError('not_signed_in', 'The token is not known.'));
+/** A program is known by its token on every request. */
+const noSession: SessionControl = {
+  signIn: () => Promise.reject(tokenDoesNotSignIn()),
+  begin: () => Promise.reject(tokenDoesNotSignIn()),
+  end: () => Promise.resolve(),
 };
+
+function tokenDoesNotSignIn(): AppError {
+  return new AppError(
+    'two_identities',
+    'A request with a token cannot begin a session. Leave the token out to sign in.',
+  );
+}
+
+function unlessBearer(handler: RequestHandler): RequestHandler {
+  return (request, response, next) => (isBearer(request) ? next() : handler(request, response, next));
+}
+
+function refuseTwoIdentities(request: Request): void {
+  if (!hasSessionCookie(request)) return;
+  throw new AppError('two_identities', 'The request carries both a session and a token. Send one of them.');
+}
 
 function hasSessionCookie(request: Request): boolean {
   const cookies = (request.get('cookie') ?? '').split(';');

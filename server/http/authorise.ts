@@ -3,6 +3,7 @@ import { accountsPolicy } from '../features/accounts/policy.ts';
 import { briefsPolicy } from '../features/briefs/policy.ts';
 import { methodPolicy } from '../features/method/policy.ts';
 import { runsPolicy } from '../features/runs/policy.ts';
+import { teamsPolicy } from '../features/teams/policy.ts';
 import { weatherPolicy } from '../features/weather/policy.ts';
 import { AppError } from './app-error.ts';
 import { type Asked, anyone, type Decision, type Policy } from './policy.ts';
@@ -15,6 +16,7 @@ export const policies: Readonly<Record<PolicyName, Policy>> = {
   ...runsPolicy,
   ...methodPolicy,
   ...briefsPolicy,
+  ...teamsPolicy,
 };
 
 const refusals = {
@@ -27,5 +29,10 @@ const refusals = {
 export function authorise(name: PolicyName, asked: Asked): void {
   const rule = Object.hasOwn(policies, name) ? policies[name] : undefined;
   const decision = rule === undefined ? 'not_allowed' : rule(asked);
-  if (decision !== 'allowed') throw new AppError(decision, refusals[decision]);
+  if (decision === 'allowed') return;
+  const scope = decision === 'not_allowed' && asked.actor.kind === 'token';
+  throw new AppError(
+    decision,
+    scope ? 'This token was not made for that. Its scopes do not allow it.' : refusals[decision],
+  );
 }

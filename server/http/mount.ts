@@ -168,8 +168,12 @@ function requestLimit(deps: Deps, endpoint: Endpoint): (bucket: string) => Promi
 }
 
 function bucketOf(endpoint: Endpoint, { actor, ip }: { actor: Actor; ip: string }): string {
-  const who = actor.kind === 'person' ? `person ${actor.personId}` : `address ${addressBucket(ip)}`;
-  return `${endpoint.method} ${endpoint.path} ${who}`;
+  return `${endpoint.method} ${endpoint.path} ${whoOf(actor, ip)}`;
+}
+
+function whoOf(actor: Actor, ip: string): string {
+  if (actor.kind === 'person') return `person ${actor.personId}`;
+  return actor.kind === 'token' ? `token ${actor.tokenId}` : `address ${addressBucket(ip)}`;
 }
 
 function textParams(request: Request): Record<string, string> {

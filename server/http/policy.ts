@@ -1,4 +1,5 @@
 import type { Role } from '#contract/accounts.ts';
+import type { TokenScope } from '#contract/tokens.ts';
 import type { Actor } from './request-context.ts';
 
 /** What a policy looks at: who asks, and the path's parameters as they came. */
@@ -15,16 +16,25 @@ export type Policy = (asked: Asked) => Decision;
 export const anyone: Policy = () => 'allowed';
 
 /** Any person who is signed in, whatever the teams. */
-export const signedIn: Policy = ({ actor }) => (actor.kind === 'person' ? 'allowed' : 'not_signed_in');
+export const signedIn: Policy = ({ actor }) => {
+  if (actor.kind === 'token') return 'not_allowed';
+  return actor.kind === 'person' ? 'allowed' : 'not_signed_in';
+};
 
 /**
- * A member, in one of these roles, of the team that the path names in `:teamId`. To everyone else who is signed in the team
- * does not exist, so that nobody learns which teams there are.
+ * A member, in one of these roles, of the team that the path names in `:teamId`, or a token of that team with this scope. To
+ * everyone else who is known the team does not exist, so that nobody learns which teams there are.
+ * @param scope left out, no token may
  */
-export function memberOf(roles: readonly Role[]): Policy {
+export function memberOf(roles: readonly Role[], scope?: TokenScope): Policy {
   return ({ actor, params }) => {
-    if (actor.kind !== 'person') return 'not_signed_in';
-    const role = actor.roles.get((params.teamId ?? '').toLowerCase());
+    const teamId = (params.teamId ?? '').toLowerCase();
+    if (actor.kind === 'signed-out') return 'not_signed_in';
+    if (actor.kind === 'token') {
+      if (actor.teamId !== teamId) return 'not_found';
+      return scope !== undefined && actor.scopes.includes(scope) ? 'allowed' : 'not_allowed';
+    }
+    const role = actor.roles.get(teamId);
     if (role === undefined) return 'not_found';
     return roles.includes(role) ? 'allowed' : 'not_allowed';
   };

@@ -1,9 +1,20 @@
 import type { Role } from '#contract/accounts.ts';
+import type { TokenScope } from '#contract/tokens.ts';
 
-/** Who asks. Guests and tokens join this list with the features that make them. */
+/** Who asks. Guests join this list with the feature that makes them. */
 export type Actor =
   | { readonly kind: 'signed-out' }
+  | TokenActor
   | { readonly kind: 'person'; readonly personId: string; readonly roles: ReadonlyMap<string, Role> };
+
+/** A program with an API token: it acts for the person who made the token, within one team and the token's scopes. */
+export interface TokenActor {
+  readonly kind: 'token';
+  readonly tokenId: string;
+  readonly teamId: string;
+  readonly personId: string;
+  readonly scopes: readonly TokenScope[];
+}
 
 /** One file of an upload: already on the server's disk, hashed, not yet in the store of originals. */
 export interface UploadedFile {

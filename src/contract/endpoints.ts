@@ -5,6 +5,7 @@ import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
 import * as rescoring from './rescore.ts';
 import * as runs from './runs.ts';
+import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
 import * as batches from './weather-batches.ts';
 
@@ -41,6 +42,9 @@ export const endpoints = {
   compareBriefVersions: briefs.compareBriefVersions,
   saveBriefVersion: briefs.saveBriefVersion,
   previewBrief: briefs.previewBrief,
+  listTokens: tokens.listTokens,
+  makeToken: tokens.makeToken,
+  revokeToken: tokens.revokeToken,
   getMethodChecks: method.getMethodChecks,
 } satisfies Record<string, Endpoint>;
 

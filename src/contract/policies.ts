@@ -10,6 +10,7 @@ export const policyNames = [
   'runs.view',
   'briefs.view',
   'briefs.change',
+  'teams.tokens',
   'method.view',
 ] as const;
 

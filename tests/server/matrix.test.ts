@@ -23,44 +23,55 @@ const callers = [
   'lead',
   'foreign lead',
   'guest',
-  'bearer token',
+  'unknown token',
   'signed out',
+  'uploading token',
+  'reading token',
 ] as const;
 type Caller = (typeof callers)[number];
 const signedInCallers: readonly Caller[] = callers.slice(0, 5);
 
-/** Statuses in the order of `callers`. A guest has no share link to open yet, so is a stranger everywhere. */
-const everyMember = [200, 200, 200, 200, 404, 401, 401, 401];
-const plannersToo = [403, 200, 200, 200, 404, 401, 401, 401];
-const changersOnly = [403, 403, 200, 200, 404, 401, 401, 401];
+/**
+ * Statuses in the order of `callers`. A guest has no share link to open yet, so is a stranger everywhere. The tokens are of
+ * the team: one with the scope `weather:upload`, one with the scopes `weather:read` and `results:read`.
+ */
+const strangers = [404, 401, 401, 401];
+const everyMember = [200, 200, 200, 200, ...strangers, 403, 403];
+const readersToo = [200, 200, 200, 200, ...strangers, 403, 200];
+const plannersToo = [403, 200, 200, 200, ...strangers, 403, 403];
+const changersOnly = [403, 403, 200, 200, ...strangers, 403, 403];
+const uploadersOnly = [403, 403, 200, 200, ...strangers, 200, 403];
+/** The same where nothing has stopped that could be tried again, so that who may is told that. */
+const uploadersInVain = [403, 403, 409, 409, ...strangers, 409, 403];
+const leadOnly = [403, 403, 403, 200, ...strangers, 403, 403];
+const signedInOnly = [200, 200, 200, 200, 200, 401, 401, 401, 403, 403];
 const matrix: Record<EndpointName, readonly number[]> = {
-  getSession: [200, 200, 200, 200, 200, 200, 401, 200],
-  signIn: [200, 200, 200, 200, 200, 200, 401, 200],
-  signOut: [204, 204, 204, 204, 204, 401, 401, 401],
+  getSession: [200, 200, 200, 200, 200, 200, 401, 200, 200, 200],
+  // A program has its token, and cannot begin a session beside it.
+  signIn: [200, 200, 200, 200, 200, 200, 401, 200, 400, 400],
+  signOut: [204, 204, 204, 204, 204, 401, 401, 401, 403, 403],
   // With a key that was never made: nobody sets up a second team.
-  setUp: [410, 410, 410, 410, 410, 410, 401, 410],
-  listWeatherFiles: everyMember,
-  uploadWeatherFile: changersOnly,
-  getWeatherFile: everyMember,
+  setUp: [410, 410, 410, 410, 410, 410, 401, 410, 410, 410],
+  listWeatherFiles: readersToo,
+  uploadWeatherFile: uploadersOnly,
+  getWeatherFile: readersToo,
   getOriginal: changersOnly,
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
   actOnWeatherFiles: changersOnly,
-  // Nothing of the file has stopped: who may, is told so.
-  retryWeatherFile: [403, 403, 409, 409, 404, 401, 401, 401],
-  listWeatherBatches: everyMember,
-  getWeatherBatch: everyMember,
-  startWeatherBatch: changersOnly,
-  changeWeatherBatch: changersOnly,
-  uploadWeatherFiles: changersOnly,
-  uploadWeatherArchive: changersOnly,
-  // Its opening has not stopped.
-  retryWeatherArchive: [403, 403, 409, 409, 404, 401, 401, 401],
-  watchTeam: everyMember,
-  getMap: everyMember,
-  getStationPlace: everyMember,
-  getRunHours: everyMember,
-  rescore: everyMember,
+  retryWeatherFile: uploadersInVain,
+  listWeatherBatches: readersToo,
+  getWeatherBatch: readersToo,
+  startWeatherBatch: uploadersOnly,
+  changeWeatherBatch: uploadersOnly,
+  uploadWeatherFiles: uploadersOnly,
+  uploadWeatherArchive: uploadersOnly,
+  retryWeatherArchive: uploadersInVain,
+  watchTeam: readersToo,
+  getMap: readersToo,
+  getStationPlace: readersToo,
+  getRunHours: readersToo,
+  rescore: readersToo,
   listPresets: everyMember,
   listBriefs: everyMember,
   makeBrief: plannersToo,
@@ -69,8 +80,11 @@ const matrix: Record<EndpointName, readonly number[]> = {
   compareBriefVersions: everyMember,
   saveBriefVersion: plannersToo,
   previewBrief: everyMember,
+  listTokens: leadOnly,
+  makeToken: leadOnly,
+  revokeToken: leadOnly,
   // About no team: every person who is signed in.
-  getMethodChecks: [200, 200, 200, 200, 200, 401, 401, 401],
+  getMethodChecks: signedInOnly,
 };
 
 const PASSWORD = 'a long pass phrase for tests';
@@ -84,6 +98,7 @@ let archive: Buffer;
 /** A file of each caller's own, so that one caller's act does not stand in the way of the next. */
 const ownFiles = new Map<Caller, string>();
 const cookies = new Map<Caller, string>();
+const tokens = new Map<Caller, string>();
 
 const emailOf = (caller: Caller): string => `${caller.replace(' ', '-')}@example.org`;
 const [station] = demoStations.filter(({ year, faults }) => year === null && faults.length === 0);
@@ -107,7 +122,10 @@ async function signIn(caller: Caller): Promise<string> {
 
 async function headersOf(caller: Caller, name?: EndpointName): Promise<Record<string, string>> {
   const base = { 'Sec-Fetch-Site': 'same-origin' };
-  if (caller === 'bearer token') return { ...base, Authorization: 'Bearer muslin_0123456789' };
+  if (caller === 'uploading token' || caller === 'reading token') {
+    return { Authorization: `Bearer ${tokens.get(caller) ?? ''}` };
+  }
+  if (caller === 'unknown token') return { ...base, Authorization: 'Bearer muslin_0123456789' };
   if (caller === 'guest') return { ...base, Cookie: 'muslin_share=unknown' };
   if (caller === 'signed out') return base;
   // These two end the session that they come with.
@@ -131,6 +149,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     form.append('file', new Blob([new Uint8Array(archive)]), `${caller}.zip`);
     return form;
   }
+  if (name === 'makeToken') return JSON.stringify({ name: 'A program', scopes: ['weather:read'], days: 1 });
   if (name === 'startWeatherBatch') return JSON.stringify({ name: `Batch of ${caller}` });
   if (name === 'changeWeatherBatch') return JSON.stringify({ state: 'running' });
   if (name === 'actOnWeatherFiles') {
@@ -234,6 +253,18 @@ beforeAll(async () => {
   const sent: { archive: { id: string } } = await (
     await fetch(`${team}/weather-batches/${batch.id}/archives`, { method: 'POST', headers, body: form })
   ).json();
+  const order = async (name: Caller, scopes: readonly string[]): Promise<string> => {
+    const lead = { ...(await headersOf('lead')), 'Content-Type': 'application/json' };
+    const body = JSON.stringify({ name, scopes, days: 1 });
+    const made: { token: string; made: { id: string } } = await (
+      await fetch(`${team}/tokens`, { method: 'POST', headers: lead, body })
+    ).json();
+    tokens.set(name, made.token);
+    return made.made.id;
+  };
+  await order('uploading token', ['weather:upload']);
+  await order('reading token', ['weather:read', 'results:read']);
+  ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));

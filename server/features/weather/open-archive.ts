@@ -82,6 +82,7 @@ async function receiveMember(
     teamId: archive.teamId,
     batchId: archive.batchId,
     personId: archive.madeBy,
+    tokenId: null,
     requestId: null,
     at: new Date(),
     upload: { name: cleanUploadName(member.path), bytes, fingerprint, temporaryPath },

@@ -11,6 +11,8 @@ import { type BatchKey, insertArchive, shareBatch } from './batch-store.ts';
 
 export interface ArchiveReceiving extends BatchKey {
   readonly personId: string;
+  /** The token of a program that brings it; null when the person does. */
+  readonly tokenId: string | null;
   readonly requestId: string | null;
   readonly at: Date;
   readonly upload: UploadedFile;
@@ -40,7 +42,7 @@ export async function receiveArchive(
       teamId,
       personId,
       act: 'weather archive uploaded',
-      subject: { archiveId, batchId, name, fingerprint },
+      subject: { archiveId, batchId, name, fingerprint, tokenId: receiving.tokenId },
       requestId,
     });
     if (state === 'running') await queueOpening(transaction, { teamId, archiveId });

@@ -18,6 +18,8 @@ export interface ReceivedFile {
 export interface Receiving {
   readonly teamId: string;
   readonly personId: string;
+  /** The token of a program that brings it; null when the person does. */
+  readonly tokenId: string | null;
   readonly requestId: string | null;
   readonly at: Date;
   readonly upload: UploadedFile;
@@ -58,7 +60,7 @@ export async function receiveWeatherFile(
       teamId,
       personId: receiving.personId,
       act: 'weather file uploaded',
-      subject: { fileId: id, name: upload.name, fingerprint: upload.fingerprint },
+      subject: { fileId: id, name: upload.name, fingerprint: upload.fingerprint, tokenId: receiving.tokenId },
       requestId: receiving.requestId,
     });
     if (batchState === 'running') await queueReading(transaction, { teamId, fileId: id });

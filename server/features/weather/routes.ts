@@ -46,6 +46,7 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   const { db } = deps;
   const act = (request: RequestContext) => ({
     personId: personOf(request),
+    tokenId: request.actor.kind === 'token' ? request.actor.tokenId : null,
     requestId: request.requestId,
     at: deps.now(),
   });
@@ -106,7 +107,7 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   mount(router, deps, watchTeam, async ({ params }, request) => deps.feed.watch(params.teamId, request.signal));
 }
 
-type Act = (request: RequestContext) => { personId: string; requestId: string; at: Date };
+type Act = (request: RequestContext) => { personId: string; tokenId: string | null; requestId: string; at: Date };
 
 function batchRoutes(router: Router, deps: Deps, act: Act): void {
   const { db } = deps;
@@ -171,8 +172,8 @@ function found<T>(thing: T | null): T {
   return thing;
 }
 
-/** Every rule of this feature lets only people through. */
+/** The person who acts, or for whom a program does. */
 function personOf({ actor }: RequestContext): string {
-  if (actor.kind !== 'person') throw new AppError('not_signed_in', 'Sign in first.');
+  if (actor.kind === 'signed-out') throw new AppError('not_signed_in', 'Sign in first.');
   return actor.personId;
 }

@@ -25,7 +25,7 @@ async function receiving(content: string, personId = engineer.personId): Promise
   await writeFile(temporaryPath, content);
   const fingerprint = createHash('sha256').update(content).digest('hex');
   const upload = { name: 'x.epw', bytes: content.length, fingerprint, temporaryPath };
-  return { teamId: team.teamId, personId, requestId: null, at: new Date(), upload };
+  return { teamId: team.teamId, personId, tokenId: null, batchId: null, requestId: null, at: new Date(), upload };
 }
 
 describe('receiving a weather file', () => {
