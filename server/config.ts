@@ -1,5 +1,6 @@
 import net from 'node:net';
 import * as z from 'zod/mini';
+import type { ObjectStoreSettings } from './storage/s3-store.ts';
 
 /** The whole environment that the program looks at, read once. */
 export interface Config {
@@ -10,6 +11,8 @@ export interface Config {
   readonly port: number;
   readonly seed: 'none' | 'demo';
   readonly trustProxy: string;
+  /** Where originals are kept; null: in a folder of the home. */
+  readonly objectStore: ObjectStoreSettings | null;
 }
 
 /** Says every fault of the environment at once. */
@@ -38,18 +41,35 @@ const Environment = z.object({
       ),
     'loopback',
   ),
+  S3_ENDPOINT: z.optional(
+    z.string().check(z.refine(isWebAddress, 'must be an address such as https://objects.example.org')),
+  ),
+  S3_BUCKET: z.optional(z.string()),
+  S3_REGION: z._default(z.string(), 'us-east-1'),
+  S3_ACCESS_KEY_ID: z.optional(z.string()),
+  S3_SECRET_ACCESS_KEY: z.optional(z.string()),
 });
+
+/** An object store is named whole or not at all. */
+const OBJECT_STORE = ['S3_ENDPOINT', 'S3_BUCKET', 'S3_ACCESS_KEY_ID', 'S3_SECRET_ACCESS_KEY'] as const;
 
 /** @throws ConfigError that names every variable that is not what it should be */
 export function readConfig(environment: Readonly<Record<string, string | undefined>>): Config {
-  const read = Environment.safeParse(onlyGiven(environment));
-  if (!read.success) {
-    const faults = read.error.issues.map(({ path, message }) => {
-      const name = String(path[0]);
-      return `${name}=${JSON.stringify(environment[name])}: ${message}.`;
-    });
-    throw new ConfigError(faults.join('\n'));
+  const given = onlyGiven(environment);
+  const read = Environment.safeParse(given);
+  const faults = (read.error?.issues ?? []).map(({ path, message }) => {
+    const name = String(path[0]);
+    return name.includes('SECRET')
+      ? `${name}: ${message}.`
+      : `${name}=${JSON.stringify(environment[name])}: ${message}.`;
+  });
+  const missing = OBJECT_STORE.filter((name) => given[name] === undefined);
+  if (missing.length > 0 && missing.length < OBJECT_STORE.length) {
+    faults.push(
+      `The object store is named in part only: ${missing.join(', ')} ${missing.length === 1 ? 'is' : 'are'} missing.`,
+    );
   }
+  if (!read.success || faults.length > 0) throw new ConfigError(faults.join('\n'));
   const { MUSLIN_HOME, PORT, HOST, SEED, TRUST_PROXY } = read.data;
   return {
     home: MUSLIN_HOME ?? null,
@@ -58,6 +78,19 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     // Invented places with known accounts are no guests for a network, unless somebody asks for them.
     seed: SEED ?? (isLoopback(HOST) ? 'demo' : 'none'),
     trustProxy: TRUST_PROXY,
+    objectStore: objectStoreOf(read.data),
+  };
+}
+
+function objectStoreOf(read: z.infer<typeof Environment>): ObjectStoreSettings | null {
+  const { S3_ENDPOINT, S3_BUCKET, S3_REGION, S3_ACCESS_KEY_ID, S3_SECRET_ACCESS_KEY } = read;
+  if (!(S3_ENDPOINT && S3_BUCKET && S3_ACCESS_KEY_ID && S3_SECRET_ACCESS_KEY)) return null;
+  return {
+    endpoint: S3_ENDPOINT,
+    region: S3_REGION,
+    bucket: S3_BUCKET,
+    accessKeyId: S3_ACCESS_KEY_ID,
+    secretAccessKey: S3_SECRET_ACCESS_KEY,
   };
 }
 
@@ -77,6 +110,10 @@ function isPort(text: string): boolean {
 
 function isHost(text: string): boolean {
   return net.isIP(text) !== 0 || /^[a-z0-9]([a-z0-9.-]{0,252})$/i.test(text);
+}
+
+function isWebAddress(text: string): boolean {
+  return URL.canParse(text) && /^https?:$/.test(new URL(text).protocol);
 }
 
 function isProxyList(text: string): boolean {

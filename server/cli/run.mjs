@@ -14,7 +14,7 @@ const PARENT_LOOK_MS = 500;
 /** A command that has not stopped by then is ended hard, so that nobody has to kill it. */
 const STOP_LIMIT_MS = 90_000;
 const SIGNALS = { SIGINT: 2, SIGTERM: 15, SIGHUP: 1 };
-/** `worker` and `build` are started by the others. */
+/** `build` is started by the others. */
 const COMMANDS = ['start', 'test', 'soak', 'muslin', 'worker', 'build'];
 
 const rootDir = path.dirname(path.dirname(path.dirname(fileURLToPath(import.meta.url))));

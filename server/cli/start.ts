@@ -9,7 +9,7 @@ import type { Deps } from '../deps.ts';
 import { makeSetUpKey } from '../features/accounts/set-up-key.ts';
 import { openTeamFeed } from '../jobs/team-feed.ts';
 import { jsonLinesLog, type Log } from '../log.ts';
-import { createFolderStore } from '../storage/folder-store.ts';
+import { openStore } from '../storage/open-store.ts';
 import { PortTakenError, startWeb } from '../web.ts';
 import { requireClient } from './build-client.ts';
 import { keepClusterRunning, SUPERUSER, startCluster, stopCluster } from './cluster.ts';
@@ -79,7 +79,7 @@ async function makeDeps(start: Start, made: { databaseUrl: string; clientDir: st
     db,
     databaseUrl,
     now: () => new Date(),
-    storage: createFolderStore(home.originalsDir),
+    storage: await openStore({ objectStore: start.config.objectStore, originalsDir: home.originalsDir }),
     uploadsDir: home.uploadsDir,
     sessionSecrets: home.secrets.sessionSecrets,
     trustProxy: start.config.trustProxy,

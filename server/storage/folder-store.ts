@@ -1,16 +1,15 @@
 import { randomUUID } from 'node:crypto';
 import { copyFile, mkdir, open, readFile, rename, rm, stat } from 'node:fs/promises';
 import path from 'node:path';
-import type { OriginalStore } from './original-store.ts';
+import { isOriginalKey, type OriginalStore } from './original-store.ts';
 
-const KEY = /^[0-9a-f]{2}\/[0-9a-f]{2}\/[0-9a-f]{64}$/;
 const FILE_MODE = 0o600;
 const FOLDER_MODE = 0o700;
 
 /** Originals as files of one folder, readable by the server's user alone. */
 export function createFolderStore(root: string): OriginalStore {
   const place = (key: string): string => {
-    if (!KEY.test(key)) throw new RangeError(`not a key of an original: ${key.slice(0, 80)}`);
+    if (!isOriginalKey(key)) throw new RangeError(`not a key of an original: ${key.slice(0, 80)}`);
     return path.join(root, key);
   };
   return {

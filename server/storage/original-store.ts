@@ -22,3 +22,9 @@ export function originalKey(fingerprint: string): string {
   if (!FINGERPRINT.test(fingerprint)) throw new RangeError(`not a SHA-256 fingerprint: ${fingerprint.slice(0, 80)}`);
   return `${fingerprint.slice(0, 2)}/${fingerprint.slice(2, 4)}/${fingerprint}`;
 }
+
+const KEY = /^[0-9a-f]{2}\/[0-9a-f]{2}\/[0-9a-f]{64}$/;
+
+export function isOriginalKey(key: string): boolean {
+  return KEY.test(key);
+}

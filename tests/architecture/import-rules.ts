@@ -72,7 +72,7 @@ export const importRules: readonly ImportRule[] = [
       ...['graphile-worker', 'pg', 'knex', 'tsx/esm/api', 'node:**'],
     ],
   },
-  { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', 'node:**'] },
+  { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', '@aws-sdk/client-s3', 'node:**'] },
   { from: 'server/tiles/**', may: ['server/tiles/**', ...serverWords, 'pmtiles', 'express', 'node:*'] },
 
   {
@@ -130,7 +130,7 @@ export const importRules: readonly ImportRule[] = [
     mayTypes: ['knex', 'server/log.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
   },
   { from: 'server/log.ts', may: [] },
-  { from: 'server/config.ts', may: ['zod/mini', 'node:*'] },
+  { from: 'server/config.ts', may: ['zod/mini', 'node:*'], mayTypes: ['server/storage/s3-store.ts'] },
   { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
   { from: 'server/web-thread.ts', may: ['server/features/**', 'server/jobs/**'] },

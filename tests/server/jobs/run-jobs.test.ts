@@ -37,6 +37,7 @@ async function startWith(reading: {
   const nothing = async (): Promise<void> => undefined;
   const tasks: JobTasks = {
     'read-weather-file': { dead: nothing, ...reading },
+    'open-weather-archive': { run: nothing, dead: nothing },
     'judge-year': { run: nothing, dead: nothing },
   };
   worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
