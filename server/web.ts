@@ -36,7 +36,7 @@ const TIDY_EVERY_MS = 10 * 60_000;
 /** Counts of minutes, and uploads of requests, that are long over. */
 const KEPT_MS = 60 * 60_000;
 
-export async function startWeb({ config, deps }: { config: Pick<Config, 'host' | 'port'>; deps: Deps }): Promise<Web> {
+export async function startWeb({ config, deps }: { config: Omit<Config, 'objectStore'>; deps: Deps }): Promise<Web> {
   const closing = new AbortController();
   const threads = makeWebThreads();
   const server = createServer(
@@ -59,7 +59,7 @@ export async function startWeb({ config, deps }: { config: Pick<Config, 'host' |
   };
 }
 
-function listen(server: Server, { host, port }: Config): Promise<void> {
+function listen(server: Server, { host, port }: Pick<Config, 'host' | 'port'>): Promise<void> {
   return new Promise((resolve, reject) => {
     server.once('error', (error: NodeJS.ErrnoException) =>
       reject(error.code === 'EADDRINUSE' ? new PortTakenError({ host, port }) : error),

@@ -14,11 +14,8 @@ export const run: Command = async ({ rootDir, callerDir, signal }) => {
     (line) => void process.stderr.write(line),
     () => new Date(),
   );
-  const worker = await startWorker({
-    databaseUrl,
-    storage: openStore({ objectStore: objectStore(), originalsDir }),
-    log,
-  });
+  const storage = await openStore({ objectStore: objectStore(), originalsDir });
+  const worker = await startWorker({ databaseUrl, storage, log });
   await untilAborted(signal);
   await worker.close();
   return 0;
