@@ -27,8 +27,8 @@ export interface Web {
 
 /** Headers that take longer than this to arrive come from nobody who wants an answer. */
 const HEADERS_MS = 15_000;
-/** Beyond the longest `seconds` of any endpoint (300 s for an upload), which answers first. */
-const REQUEST_MS = 320_000;
+/** Beyond the longest `seconds` of any endpoint (1,800 s for an archive), which answers first. */
+const REQUEST_MS = 1_820_000;
 /** A connection on which nothing moves for this long is cut; event streams beat more often. */
 const SILENT_CONNECTION_MS = 120_000;
 const FINISH_WITHIN_MS = 10_000;
