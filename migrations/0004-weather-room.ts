@@ -42,9 +42,10 @@ export async function up(knex: Knex): Promise<void> {
 
     alter table weather_files
       add column batch_id uuid,
-      add column part text not null default '' check (length(part) <= 80),
+      add column part_index integer not null default 0 check (part_index >= 0),
+      add column part text not null default '',
       add column answers jsonb not null default '{}',
-      add column questions jsonb,
+      add column table_guess jsonb,
       add column shape_key text,
       add column gaps jsonb,
       add column licence text not null default 'unknown'
@@ -60,7 +61,7 @@ export async function up(knex: Knex): Promise<void> {
       add foreign key (team_id, superseded_by) references weather_files (team_id, id),
       add check ((status <> 'superseded') or (superseded_by is not null and superseded_by_person is not null));
     drop index weather_files_fingerprint;
-    create unique index weather_files_fingerprint on weather_files (team_id, fingerprint, part) where status <> 'withdrawn';
+    create unique index weather_files_fingerprint on weather_files (team_id, fingerprint, part_index) where status <> 'withdrawn';
     create index weather_files_batch on weather_files (batch_id) where batch_id is not null;
     create index weather_files_station on weather_files (team_id, station_id) where station_id is not null;
 
@@ -120,7 +121,7 @@ export async function down(knex: Knex): Promise<void> {
     alter table findings drop column variable, drop column done;
     drop index weather_files_fingerprint, weather_files_batch, weather_files_station;
     alter table weather_files
-      drop column batch_id, drop column part, drop column answers, drop column questions, drop column shape_key,
+      drop column batch_id, drop column part_index, drop column part, drop column answers, drop column table_guess, drop column shape_key,
       drop column gaps, drop column licence, drop column attribution, drop column refused_by, drop column refused_at,
       drop column refused_reason, drop column superseded_by, drop column superseded_at, drop column superseded_by_person;
     create unique index weather_files_fingerprint on weather_files (team_id, fingerprint) where status <> 'withdrawn';

@@ -15,10 +15,13 @@ import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
+import { stationsRoutes } from './features/stations/routes.ts';
+import { switchRuleOff } from './features/stations/switch-rule.ts';
 import { findToken } from './features/teams/find-token.ts';
 import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
 import { findRoles } from './features/teams/team-read-model.ts';
+import { filesOfStation } from './features/weather/files-of-station.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
@@ -72,7 +75,8 @@ function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
     makeFirstTeam: (transaction, team) =>
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
-  weatherRoutes(router, deps, { findOrMakeStation, queueRuns });
+  weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns });
+  stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   briefsRoutes(router, deps, { queueRunsOfVersion });
   runsRoutes(router, deps, { threads, readDraft });
   methodRoutes(router, deps);

@@ -4,6 +4,7 @@ import path from 'node:path';
 import type { Deps } from '../deps.ts';
 import { queueRuns } from '../features/runs/queue-runs.ts';
 import { findOrMakeStation } from '../features/stations/find-or-make-station.ts';
+import { switchRuleOff } from '../features/stations/switch-rule.ts';
 import { acceptWeatherFile } from '../features/weather/accept-weather-file.ts';
 import { receiveWeatherFile } from '../features/weather/receive-weather-file.ts';
 
@@ -37,5 +38,5 @@ export async function receiveFromDisk(deps: FileDeps, from: OwnFile & { readonly
 /** Accepts a file that waits for review, as a person would. */
 export async function acceptAs(deps: FileDeps, file: OwnFile & { readonly fileId: string }): Promise<void> {
   const { db, now } = deps;
-  await acceptWeatherFile({ db, findOrMakeStation, queueRuns }, { ...file, requestId: null, at: now() });
+  await acceptWeatherFile({ db, findOrMakeStation, switchRuleOff, queueRuns }, { ...file, requestId: null, at: now() });
 }

@@ -3,6 +3,7 @@ import { accountsPolicy } from '../features/accounts/policy.ts';
 import { briefsPolicy } from '../features/briefs/policy.ts';
 import { methodPolicy } from '../features/method/policy.ts';
 import { runsPolicy } from '../features/runs/policy.ts';
+import { stationsPolicy } from '../features/stations/policy.ts';
 import { teamsPolicy } from '../features/teams/policy.ts';
 import { weatherPolicy } from '../features/weather/policy.ts';
 import { AppError } from './app-error.ts';
@@ -16,6 +17,7 @@ export const policies: Readonly<Record<PolicyName, Policy>> = {
   ...runsPolicy,
   ...methodPolicy,
   ...briefsPolicy,
+  ...stationsPolicy,
   ...teamsPolicy,
 };
 

@@ -5,9 +5,11 @@ import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
 import * as rescoring from './rescore.ts';
 import * as runs from './runs.ts';
+import * as stations from './stations.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
 import * as batches from './weather-batches.ts';
+import * as reading from './weather-reading.ts';
 
 export const endpoints = {
   getSession: accounts.getSession,
@@ -22,6 +24,16 @@ export const endpoints = {
   withdrawWeatherFile: weather.withdrawWeatherFile,
   actOnWeatherFiles: weather.actOnWeatherFiles,
   retryWeatherFile: weather.retryWeatherFile,
+  answerWeatherFile: reading.answerWeatherFile,
+  getWeatherFileLines: reading.getWeatherFileLines,
+  getWeatherYearColumns: reading.getWeatherYearColumns,
+  setLicence: reading.setLicence,
+  listStations: stations.listStations,
+  getStation: stations.getStation,
+  moveStation: stations.moveStation,
+  mergeStations: stations.mergeStations,
+  setRuleOff: stations.setRuleOff,
+  setRuleOn: stations.setRuleOn,
   listWeatherBatches: batches.listWeatherBatches,
   getWeatherBatch: batches.getWeatherBatch,
   startWeatherBatch: batches.startWeatherBatch,

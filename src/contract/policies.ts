@@ -7,6 +7,8 @@ export const policyNames = [
   'weather.accept',
   'weather.withdraw',
   'weather.original',
+  'stations.view',
+  'stations.change',
   'runs.view',
   'briefs.view',
   'briefs.change',

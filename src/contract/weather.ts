@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { empty, endpoint, events, file, json, none, ordinary, upload } from './endpoint.ts';
+import { AnswersBody, StatedPlaceBody, TableMappingBody } from './weather-answers.ts';
 
 const TeamParams = z.strictObject({ teamId: z.uuid() });
 const FileParams = z.strictObject({ teamId: z.uuid(), fileId: z.uuid() });
@@ -20,6 +21,14 @@ export const Finding = z.object({
   /** First line of the file that it concerns, counted from 1; null when it concerns the whole file. */
   line: z.nullable(z.int()),
   column: z.nullable(z.int()),
+  /** Last line that it concerns. */
+  lastLine: z.nullable(z.int()),
+  /** Hours or rows concerned. */
+  count: z.int(),
+  /** What of an hour it concerns; null when no one variable. */
+  variable: z.nullable(z.string()),
+  /** What was done, in a few words; null where the message alone says it. */
+  done: z.nullable(z.string()),
   message: z.string(),
 });
 export type Finding = z.infer<typeof Finding>;
@@ -62,6 +71,8 @@ export const WeatherFile = z.object({
   year: z.nullable(z.int()),
   /** Share of slots with dry bulb, humidity and pressure, %. */
   completePct: z.nullable(z.number()),
+  licence: z.enum(['open', 'attribution', 'non-commercial', 'no redistribution', 'unknown']),
+  attribution: z.nullable(z.string()),
   findingCounts: z.object({ note: z.int(), repair: z.int(), doubt: z.int(), ask: z.int(), refuse: z.int() }),
 });
 export type WeatherFile = z.infer<typeof WeatherFile>;
@@ -92,10 +103,58 @@ export const YearFacts = z.object({
 });
 export type YearFacts = z.infer<typeof YearFacts>;
 
+const SampleRow = z.object({
+  line: z.int(),
+  time: z.nullable(z.string()),
+  dryBulbC: z.nullable(z.number()),
+  dewPointC: z.nullable(z.number()),
+  relativeHumidityPct: z.nullable(z.number()),
+  wetBulbC: z.nullable(z.number()),
+  pressurePa: z.nullable(z.number()),
+});
+
+/** A guess at what a table holds, for a person to confirm or correct. */
+export const TableGuess = z.object({
+  shapeKey: z.string(),
+  mapping: z.nullable(TableMappingBody),
+  questions: z.array(z.object({ about: z.string(), message: z.string() })),
+  columns: z.array(z.object({ name: z.string(), unit: z.string(), cells: z.array(z.string()) })),
+  sample: z.array(SampleRow),
+  stepMin: z.nullable(z.number()),
+});
+export type TableGuess = z.infer<typeof TableGuess>;
+
+/** As `FileAnswers`, which a person sends: the parts that a form shows again. */
+const FileAnswersAsKept = z.object({
+  place: z.exactOptional(StatedPlaceBody),
+  mapping: z.exactOptional(TableMappingBody),
+  answers: z.exactOptional(AnswersBody),
+  keepSuspect: z.exactOptional(z.boolean()),
+  fillLongGaps: z.exactOptional(z.boolean()),
+  rulesOff: z.exactOptional(z.array(z.object({ rule: z.string(), reason: z.string() }))),
+});
+
 export const WeatherFileRecord = z.object({
   file: WeatherFile,
   findings: z.array(Finding),
   asks: z.array(Ask),
+  /** What a table seems to hold, until somebody confirms it; null for every other file. */
+  table: z.nullable(TableGuess),
+  /** What people have answered of the file. */
+  answers: FileAnswersAsKept,
+  /** Text of the file about its licence or source, as it stands. */
+  comments: z.nullable(z.string()),
+  /** Why a person refused it, withdrew it, or which file took its place; null otherwise. */
+  decision: z.nullable(
+    z.object({
+      by: z.string(),
+      at: z.iso.datetime(),
+      reason: z.nullable(z.string()),
+      otherFileId: z.nullable(z.uuid()),
+    }),
+  ),
+  /** Other station-years of the same upload. */
+  parts: z.array(z.object({ fileId: z.uuid(), part: z.string(), status: FileStatus })),
   acceptedBy: z.nullable(z.string()),
   facts: z.nullable(YearFacts),
 });

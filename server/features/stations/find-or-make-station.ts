@@ -1,10 +1,8 @@
 import type { Knex } from 'knex';
+import { STATION_WITHIN } from './same-station.ts';
 import { findStationLike, insertStation, lockStationsOfTeam } from './station-store.ts';
 import { zoneOfStation } from './zone-of-station.ts';
 
-/** A file whose place lies this near to a station of the same number or name was recorded there. */
-const WITHIN_DEG = 0.02;
-const WITHIN_M = 50;
 /** WMO numbers that stand for "none" in files of common practice. */
 const NO_NUMBER = /^(0*|9+|-|unknown|n\/?a)$/i;
 
@@ -23,7 +21,11 @@ export async function findOrMakeStation(transaction: Knex.Transaction, declared:
   const number = declared.wmoNumber?.trim() ?? '';
   const station = { ...declared, wmoNumber: NO_NUMBER.test(number) ? null : number };
   await lockStationsOfTeam(transaction, station.teamId);
-  const found = await findStationLike(transaction, { ...station, withinDeg: WITHIN_DEG, withinM: WITHIN_M });
+  const found = await findStationLike(transaction, {
+    ...station,
+    withinDeg: STATION_WITHIN.deg,
+    withinM: STATION_WITHIN.heightM,
+  });
   if (found !== null) return found;
   return await insertStation(transaction, {
     ...station,

@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { RuleName } from '#engine/weather-files/quality/quality-options.ts';
 import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
@@ -21,6 +22,11 @@ export interface KnownPlace {
 export interface AcceptanceParts {
   /** The id of the team's station that the file belongs to, made when there is none. */
   findOrMakeStation(transaction: Knex.Transaction, declared: KnownPlace & { teamId: string }): Promise<string>;
+  /** Switches a rule off for the files of a station that are read from now on. */
+  switchRuleOff(
+    transaction: Knex.Transaction,
+    off: { teamId: string; stationId: string; rule: RuleName; reason: string; personId: string; at: Date },
+  ): Promise<void>;
   /** Queues the judging of a year by the team's briefs. */
   queueRuns(transaction: Knex.Transaction, year: { teamId: string; weatherYearId: string }): Promise<void>;
 }
@@ -41,6 +47,9 @@ export async function acceptWeatherFile(deps: { db: Knex } & AcceptanceParts, ac
     if (file === null) throw new AppError('not_found', 'There is no such weather file in this team.');
     const declared = placeOfAcceptable(file);
     const stationId = await deps.findOrMakeStation(transaction, { ...declared, teamId });
+    for (const { rule, reason } of file.answers.rulesOff ?? []) {
+      await deps.switchRuleOff(transaction, { teamId, stationId, rule, reason, personId, at });
+    }
     await setAccepted(transaction, { teamId, fileId, stationId, personId, at });
     const weatherYearId = await setYearStation(transaction, { teamId, fileId, stationId });
     await deps.queueRuns(transaction, { teamId, weatherYearId });
@@ -65,7 +74,7 @@ function placeOfAcceptable(file: WeatherFileState): KnownPlace {
   if (place === null) {
     throw new AppError(
       'wrong_state',
-      'This file does not say in full where its station stands. Giving position, elevation and UTC offset comes with the weather room.',
+      'This file does not say in full where its station stands. Give its position, elevation and UTC offset.',
     );
   }
   return place;
@@ -82,13 +91,9 @@ function whyNotAcceptable(file: WeatherFileState): string {
     case 'reading':
       return file.failure === null
         ? 'This file is still being read.'
-        : 'Reading this file stopped for a fault of ours. Upload it again to try once more.';
+        : 'Reading this file stopped for a fault of ours. Let it be read once more.';
     case 'asks':
-      return [
-        'This file asks before it can be accepted:',
-        ...file.asks.map((ask) => ask.message),
-        'Answering comes with the weather room.',
-      ].join(' ');
+      return ['This file asks before it can be accepted:', ...file.asks.map((ask) => ask.message)].join(' ');
     case 'accepted':
       return 'This file was already accepted.';
     case 'refused':

@@ -1,4 +1,4 @@
-import type { WeatherFile, WeatherFileRecord, YearFacts } from '#contract/weather.ts';
+import type { TableGuess, WeatherFile, WeatherFileRecord, YearFacts } from '#contract/weather.ts';
 import type { WeatherFileRecordView, WeatherFileView } from './weather-file-read-model.ts';
 
 export function presentWeatherFile(view: WeatherFileView): WeatherFile {
@@ -16,6 +16,8 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
     uploadedAt: view.uploadedAt.toISOString(),
     batchId: view.batchId,
     part: view.part,
+    licence: view.licence,
+    attribution: view.attribution,
     station: view.declaredStation,
     stationId: view.stationId,
     kind: view.kind,
@@ -26,17 +28,35 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
 }
 
 export function presentRecord(record: WeatherFileRecordView): WeatherFileRecord {
-  const { findings, asks, acceptedBy, facts } = record;
+  const { findings, asks, table, answers, comments, decision, parts, acceptedBy, facts } = record;
   return {
     file: presentWeatherFile(record),
     findings: findings.map((finding) => ({ ...finding })),
     asks: asks.map((ask) => ({ ...ask })),
+    table: table === null ? null : presentTable(table),
+    answers: presentAnswers(answers),
+    comments,
+    decision: decision === null ? null : { ...decision, at: decision.at.toISOString() },
+    parts: parts.map((part) => ({ ...part })),
     acceptedBy,
     facts: facts === null ? null : presentFacts(facts),
   };
 }
 
-function presentFacts(facts: NonNullable<WeatherFileRecordView['facts']>): YearFacts {
+function presentTable(table: NonNullable<WeatherFileRecordView['table']>): TableGuess {
+  return {
+    ...table,
+    questions: table.questions.map((question) => ({ ...question })),
+    columns: table.columns.map((column) => ({ ...column, cells: [...column.cells] })),
+    sample: table.sample.map((row) => ({ ...row })),
+  };
+}
+
+function presentAnswers({ rulesOff, ...answers }: WeatherFileRecordView['answers']): WeatherFileRecord['answers'] {
+  return rulesOff === undefined ? answers : { ...answers, rulesOff: rulesOff.map((off) => ({ ...off })) };
+}
+
+export function presentFacts(facts: NonNullable<WeatherFileRecordView['facts']>): YearFacts {
   return {
     hours: facts.hours,
     measured: facts.measured,

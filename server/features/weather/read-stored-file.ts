@@ -2,39 +2,64 @@ import { createHash } from 'node:crypto';
 import type { Knex } from 'knex';
 import type { ReadingStep } from '#contract/weather.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
-import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
-import type { RefusedReading } from '#engine/weather-files/weather-file-reading.ts';
+import { readWeatherFileParts } from '#engine/weather-files/read-weather-file-parts.ts';
+import type { RefusedReading, WeatherFileReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
-import { GzipProblem, inflateGzip, isGzip } from '../../storage/inflate-gzip.ts';
+import { GzipProblem } from '../../storage/inflate-gzip.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
 import { findBatchState } from './batch-store.ts';
-import { storeReading } from './store-reading.ts';
+import { findMapping } from './mapping-store.ts';
+import { contentOf } from './original-content.ts';
+import { type ReadingKnowledge, readOptions } from './read-options.ts';
+import { type FileOutcome, storeReadings } from './store-reading.ts';
 import { findWeatherFile, setReadingStep, type WeatherFileState } from './weather-file-store.ts';
 
+export type ReadingDeps = { readonly db: Knex; readonly storage: OriginalStore } & ReadingKnowledge;
+
 /**
- * The work of the job `read-weather-file`: original bytes to findings and, where the file can be used, to a weather year.
+ * The work of the job `read-weather-file`: original bytes to findings and, where the file can be used, to weather years.
  * Everything that is read is stored in one transaction at the end, so a crash on the way leaves the file as it was, and a
  * file that is no longer being read is left alone.
  */
-export async function readStoredFile(
-  deps: { db: Knex; storage: OriginalStore },
-  key: { teamId: string; fileId: string },
-): Promise<void> {
+export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; fileId: string }): Promise<void> {
   const file = await findWeatherFile(deps.db, key);
   if (file === null || file.status !== 'reading') return;
   if (file.batchId !== null && (await findBatchState(deps.db, { ...key, batchId: file.batchId })) === 'paused') return;
 
   await enterStep(deps.db, file, 'reading');
-  const content = await contentOf(await originalOf(deps.storage, file));
-  const reading =
-    content instanceof GzipProblem ? unreadable(content) : readWeatherFile(content, file.name.replace(/\.gz$/i, ''));
-  if (reading.status === 'refused') return await storeReading(deps.db, file, { reading, reduced: null });
-
+  const readings = await readParts(deps, file);
   await enterStep(deps.db, file, 'reducing');
-  const reduced = reduceYear(reading);
+  const outcomes = readings.map(reduced);
   await enterStep(deps.db, file, 'storing');
-  await storeReading(deps.db, file, { reading, reduced });
+  await storeReadings(deps.db, file, outcomes);
+}
+
+async function readParts(deps: ReadingDeps, file: WeatherFileState): Promise<readonly WeatherFileReading[]> {
+  const content = await contentOf(await originalOf(deps.storage, file));
+  if (content instanceof GzipProblem) return [unreadable(content)];
+  const name = file.name.replace(/\.gz$/i, '');
+  const first = readWeatherFileParts(content, name, await readOptions(deps, { file, station: null }));
+  const [reading] = first;
+  if (reading === undefined) throw new Error(`nothing was read of ${file.id}`);
+  if ('table' in reading) {
+    // Somebody has said before what tables of this shape hold.
+    const mapping = file.answers.mapping ?? (await findMapping(deps.db, { ...file, shapeKey: reading.table.shapeKey }));
+    if (mapping === null || file.answers.mapping !== undefined) return first;
+    const answered = { ...file, answers: { ...file.answers, mapping } };
+    return readWeatherFileParts(content, name, await readOptions(deps, { file: answered, station: null }));
+  }
+  if (reading.station === null) return first;
+  // Its station may have rules that do not hold there; which station it is shows only now.
+  const options = await readOptions(deps, { file, station: reading.station });
+  return options.rulesOff.length > (file.answers.rulesOff?.length ?? 0)
+    ? readWeatherFileParts(content, name, options)
+    : first;
+}
+
+function reduced(reading: WeatherFileReading): FileOutcome {
+  if (reading.status === 'refused' || reading.hours === null) return { reading, reduced: null };
+  return { reading, reduced: reduceYear(reading) };
 }
 
 async function enterStep(db: Knex, file: WeatherFileState, step: ReadingStep): Promise<void> {
@@ -47,21 +72,10 @@ async function enterStep(db: Knex, file: WeatherFileState, step: ReadingStep): P
   });
 }
 
-/** What is inside a gzip file, whatever its name; any other file is its own content. */
-async function contentOf(original: Uint8Array): Promise<Uint8Array | GzipProblem> {
-  if (!isGzip(original)) return original;
-  try {
-    return await inflateGzip(original);
-  } catch (error) {
-    if (error instanceof GzipProblem) return error;
-    throw error;
-  }
-}
-
 function unreadable({ message }: GzipProblem): RefusedReading {
   const finding = { code: 'binary', severity: 'refuse', line: null, column: null, lastLine: null, count: 1 } as const;
   const whole = { variable: null, done: null };
-  return { status: 'refused', format: null, station: null, findings: [{ ...finding, ...whole, message }] };
+  return { status: 'refused', part: '', format: null, station: null, findings: [{ ...finding, ...whole, message }] };
 }
 
 /** @throws Error when the stored bytes are not those that were uploaded */

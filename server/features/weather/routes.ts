@@ -19,6 +19,12 @@ import {
   uploadWeatherArchive,
   uploadWeatherFiles,
 } from '#contract/weather-batches.ts';
+import {
+  answerWeatherFile as answerEndpoint,
+  getWeatherFileLines,
+  getWeatherYearColumns,
+  setLicence as setLicenceEndpoint,
+} from '#contract/weather-reading.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
@@ -26,15 +32,19 @@ import type { RequestContext, UploadedFile } from '../../http/request-context.ts
 import { isZip } from '../../storage/zip-members.ts';
 import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.ts';
 import { actOnWeatherFiles } from './act-on-weather-files.ts';
+import { answerWeatherFile } from './answer-weather-file.ts';
 import { findArchiveView, findBatchView, listBatchViews } from './batch-read-model.ts';
 import { changeBatch } from './change-batch.ts';
+import { findFileColumns } from './file-columns-read-model.ts';
 import { countLibrary, listWeatherFileViews } from './library-read-model.ts';
+import { originalLines } from './original-lines.ts';
 import { presentArchive, presentBatch } from './present-batch.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
 import { receiveArchive } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 import { retryArchive } from './retry-archive.ts';
 import { retryWeatherFile } from './retry-weather-file.ts';
+import { setLicence } from './set-licence.ts';
 import { startBatch } from './start-batch.ts';
 import { findWeatherFileRecord, findWeatherFileView } from './weather-file-read-model.ts';
 import { findWeatherFile } from './weather-file-store.ts';
@@ -100,6 +110,27 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   mount(router, deps, retryWeatherFileEndpoint, async ({ params }, request) => {
     await retryWeatherFile({ db, ...parts }, { ...params, ...act(request) });
     return await presented(params);
+  });
+
+  mount(router, deps, answerEndpoint, async ({ params, body }, request) => {
+    await answerWeatherFile(db, { ...params, answers: body, ...act(request) });
+    return await presented(params);
+  });
+
+  mount(router, deps, setLicenceEndpoint, async ({ params, body }, request) => {
+    await setLicence(db, { ...params, ...body, ...act(request) });
+    return await presented(params);
+  });
+
+  mount(router, deps, getWeatherFileLines, async ({ params, query }) => {
+    const { storageKey } = found(await findWeatherFile(db, params));
+    const { lines, total } = await originalLines(deps.storage, { storageKey, ...query });
+    return { lines: lines.map((line) => ({ ...line })), total };
+  });
+
+  mount(router, deps, getWeatherYearColumns, async ({ params }) => {
+    const columns = found(await findFileColumns(db, params));
+    return { body: Buffer.concat(columns) };
   });
 
   batchRoutes(router, deps, act);

@@ -1,44 +1,62 @@
 import type { Knex } from 'knex';
 import { READ_VERSION } from '#engine/conventions.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
-import type { RefusedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
+import type { RefusedReading, UnmappedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
-import { insertFindings, lockWeatherFile, setReadingResult } from './weather-file-store.ts';
+import { insertFindings, insertPart, lockWeatherFile, setReadingResult } from './weather-file-store.ts';
 import { insertDepressionHours, insertDesignValues, insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
-  | { readonly reading: RefusedReading; readonly reduced: null }
+  | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
   | { readonly reading: UsableReading; readonly reduced: ReducedYear };
 
-/** Stores everything that was read of a file, and its new status, in one transaction; leaves alone a file that has moved on. */
-export async function storeReading(
+/**
+ * Stores everything that was read of a file, and its new status, in one transaction; leaves alone a file that has moved on. A file
+ * of several station-years keeps the first, and each further one becomes a file of its own with the same original.
+ */
+export async function storeReadings(
   db: Knex,
   file: { teamId: string; id: string },
+  outcomes: readonly FileOutcome[],
+): Promise<void> {
+  const { teamId, id } = file;
+  await inTransaction(db, async (transaction) => {
+    const now = await lockWeatherFile(transaction, { teamId, fileId: id });
+    if (now === null || now.status !== 'reading') return;
+    for (const [place, outcome] of outcomes.entries()) {
+      const fileId = place === 0 ? id : await insertPart(transaction, { file: now, partIndex: now.partIndex + place });
+      if (fileId !== null) await storeOutcome(transaction, { teamId, fileId }, outcome);
+    }
+    if (now.batchId !== null) {
+      await notifyTeam(transaction, { teamId, event: { kind: 'weather-batch', batchId: now.batchId } });
+    }
+  });
+}
+
+async function storeOutcome(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
   outcome: FileOutcome,
 ): Promise<void> {
-  const { teamId, id: fileId } = file;
   const { reading } = outcome;
-  await inTransaction(db, async (transaction) => {
-    const now = await lockWeatherFile(transaction, { teamId, fileId });
-    if (now === null || now.status !== 'reading') return;
-    await insertFindings(transaction, { teamId, fileId, findings: reading.findings });
-    if (outcome.reduced !== null) await storeYear(transaction, { teamId, fileId }, outcome);
-    await setReadingResult(transaction, {
-      teamId,
-      fileId,
-      status: reading.status,
-      format: reading.format,
-      declaredStation: reading.station,
-      asks: reading.status === 'refused' ? [] : reading.asks,
-      comments: reading.status === 'refused' ? null : reading.comments,
-    });
-    await notifyTeam(transaction, {
-      teamId,
-      event: { kind: 'weather-file', fileId, status: reading.status, step: null },
-    });
+  await insertFindings(transaction, { ...key, findings: reading.findings });
+  if (outcome.reduced !== null) await storeYear(transaction, key, outcome);
+  await setReadingResult(transaction, {
+    ...key,
+    status: reading.status,
+    part: reading.part,
+    format: reading.format,
+    declaredStation: reading.station,
+    asks: reading.status === 'refused' ? [] : reading.asks,
+    comments: reading.status === 'refused' ? null : reading.comments,
+    table: 'table' in reading ? reading.table : null,
+  });
+  await notifyTeam(transaction, {
+    teamId: key.teamId,
+    event: { kind: 'weather-file', fileId: key.fileId, status: reading.status, step: null },
   });
 }
 

@@ -1,9 +1,12 @@
 import type { Knex } from 'knex';
 import type { FileStatus, ReadingStep } from '#contract/weather.ts';
+import type { Licence } from '#contract/weather-reading.ts';
 import type { YearFacts } from '#engine/reduction/reduce-year.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
 import type { Ask, Severity } from '#engine/weather-files/finding.ts';
+import type { TableGuess } from '#engine/weather-files/table/table-guess.ts';
 import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
+import type { FileAnswers } from './file-answers.ts';
 
 /** A weather file as the library shows it. */
 export interface WeatherFileView {
@@ -25,6 +28,8 @@ export interface WeatherFileView {
   readonly missing: number | null;
   readonly batchId: string | null;
   readonly part: string;
+  readonly licence: Licence;
+  readonly attribution: string | null;
   readonly findingCounts: Readonly<Partial<Record<Severity, number>>>;
 }
 
@@ -36,7 +41,7 @@ export const VIEW_COLUMNS = `
     weather_files.declared_station as "declaredStation", weather_files.station_id as "stationId",
     weather_years.kind, weather_years.year, weather_years.slots as hours,
     (weather_years.facts ->> 'missing')::integer as missing,
-    weather_files.batch_id as "batchId", weather_files.part,
+    weather_files.batch_id as "batchId", weather_files.part, weather_files.licence, weather_files.attribution,
     coalesce(counts.by_severity, '{}') as "findingCounts"`;
 export const VIEW_ROWS = `
   from weather_files
@@ -63,10 +68,31 @@ export async function findWeatherFileView(
   return rows[0] ?? null;
 }
 
+/** The files of a station, newest first, each with its year. */
+export async function listFilesOfStation(
+  db: Knex,
+  key: { teamId: string; stationId: string },
+): Promise<readonly (WeatherFileView & { readonly weatherYearId: string | null; readonly facts: YearFacts | null })[]> {
+  const { rows } = await db.raw<{
+    rows: (WeatherFileView & { weatherYearId: string | null; facts: YearFacts | null })[];
+  }>(
+    `select ${VIEW_COLUMNS}, weather_years.id as "weatherYearId", weather_years.facts ${VIEW_ROWS}
+     where weather_files.team_id = :teamId and weather_files.station_id = :stationId
+     order by weather_files.uploaded_at desc, weather_files.id desc limit 200`,
+    key,
+  );
+  return rows;
+}
+
 /** A weather file's own page. */
 export interface WeatherFileRecordView extends WeatherFileView {
   readonly findings: readonly FindingView[];
   readonly asks: readonly Ask[];
+  readonly table: TableGuess | null;
+  readonly answers: FileAnswers;
+  readonly comments: string | null;
+  readonly decision: DecisionView | null;
+  readonly parts: readonly { readonly fileId: string; readonly part: string; readonly status: FileStatus }[];
   readonly acceptedBy: string | null;
   readonly facts: YearFacts | null;
 }
@@ -76,27 +102,72 @@ export interface FindingView {
   readonly severity: Severity;
   readonly line: number | null;
   readonly column: number | null;
+  readonly lastLine: number | null;
+  readonly count: number;
+  readonly variable: string | null;
+  readonly done: string | null;
   readonly message: string;
 }
+
+/** Who refused, withdrew or superseded a file, and why. */
+export interface DecisionView {
+  readonly by: string;
+  readonly at: Date;
+  readonly reason: string | null;
+  readonly otherFileId: string | null;
+}
+
+const FINDINGS = `
+  coalesce((
+    select jsonb_agg(
+      jsonb_build_object('code', findings.code, 'severity', findings.severity, 'line', findings.line,
+        'column', findings.col, 'lastLine', findings.last_line, 'count', findings.hours, 'variable', findings.variable,
+        'done', findings.done, 'message', findings.message)
+      order by findings.position)
+    from findings where findings.weather_file_id = weather_files.id
+  ), '[]') as findings`;
+
+const PARTS = `
+  coalesce((
+    select jsonb_agg(jsonb_build_object('fileId', others.id, 'part', others.part, 'status', others.status)
+      order by others.part_index)
+    from weather_files as others
+    where others.team_id = weather_files.team_id and others.fingerprint = weather_files.fingerprint
+      and others.uploaded_at = weather_files.uploaded_at and others.id <> weather_files.id
+  ), '[]') as parts`;
+
+const DECISION = `
+  decider.name as "decidedBy",
+  coalesce(weather_files.withdrawn_at, weather_files.superseded_at, weather_files.refused_at) as "decidedAt",
+  coalesce(weather_files.withdrawn_reason, weather_files.refused_reason) as "decisionReason",
+  weather_files.superseded_by as "otherFileId"`;
+
+type Row = Omit<WeatherFileRecordView, 'decision'> & {
+  readonly decidedBy: string | null;
+  readonly decidedAt: Date | null;
+  readonly decisionReason: string | null;
+  readonly otherFileId: string | null;
+};
 
 /** One statement, so that status, findings and facts are of one moment; `null` when the team has no such file. */
 export async function findWeatherFileRecord(
   db: Knex,
   key: { teamId: string; fileId: string },
 ): Promise<WeatherFileRecordView | null> {
-  const { rows } = await db.raw<{ rows: WeatherFileRecordView[] }>(
-    `select ${VIEW_COLUMNS}, weather_files.asks, accepter.name as "acceptedBy", weather_years.facts,
-       coalesce((
-         select jsonb_agg(
-           jsonb_build_object('code', findings.code, 'severity', findings.severity, 'line', findings.line,
-             'column', findings.col, 'message', findings.message)
-           order by findings.position)
-         from findings where findings.weather_file_id = weather_files.id
-       ), '[]') as findings
+  const { rows } = await db.raw<{ rows: Row[] }>(
+    `select ${VIEW_COLUMNS}, weather_files.asks, weather_files.table_guess as "table", weather_files.answers,
+       weather_files.comments, accepter.name as "acceptedBy", weather_years.facts, ${FINDINGS}, ${PARTS}, ${DECISION}
      ${VIEW_ROWS}
      left join people as accepter on accepter.id = weather_files.accepted_by
+     left join people as decider on decider.id =
+       coalesce(weather_files.withdrawn_by, weather_files.superseded_by_person, weather_files.refused_by)
      where weather_files.team_id = ? and weather_files.id = ?`,
     [key.teamId, key.fileId],
   );
-  return rows[0] ?? null;
+  const [row] = rows;
+  return row === undefined ? null : { ...row, decision: decisionOf(row) };
+}
+
+function decisionOf({ decidedBy: by, decidedAt: at, decisionReason: reason, otherFileId }: Row): DecisionView | null {
+  return by === null || at === null ? null : { by, at, reason, otherFileId };
 }

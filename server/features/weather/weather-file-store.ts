@@ -1,7 +1,9 @@
 import type { Knex } from 'knex';
 import type { FileStatus, ReadingStep } from '#contract/weather.ts';
 import type { Ask, Finding } from '#engine/weather-files/finding.ts';
+import type { TableGuess } from '#engine/weather-files/table/table-guess.ts';
 import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
+import type { FileAnswers } from './file-answers.ts';
 import { storableText } from './storable-text.ts';
 
 /** What the verbs look at before they change a file. */
@@ -12,18 +14,30 @@ export interface WeatherFileState {
   readonly fingerprint: string;
   readonly storageKey: string;
   readonly batchId: string | null;
+  readonly bytes: number;
+  readonly uploadedBy: string;
+  readonly uploadedAt: Date;
+  /** Which of the years of one upload it is, counted from 0, and its name; empty when the upload holds one. */
+  readonly partIndex: number;
+  readonly part: string;
+  readonly answers: FileAnswers;
   readonly status: FileStatus;
   readonly step: ReadingStep | null;
   readonly failure: string | null;
   readonly stationId: string | null;
   readonly declaredStation: DeclaredStation | null;
   readonly asks: readonly Ask[];
+  readonly shapeKey: string | null;
 }
 
 const STATE_COLUMNS = `
   weather_files.id, weather_files.team_id as "teamId", weather_files.name, weather_files.fingerprint,
-  weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId", weather_files.status, weather_files.step, weather_files.failure,
-  weather_files.station_id as "stationId", weather_files.declared_station as "declaredStation", weather_files.asks`;
+  weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId",
+  weather_files.bytes::double precision as bytes, weather_files.uploaded_by as "uploadedBy",
+  weather_files.uploaded_at as "uploadedAt", weather_files.part_index as "partIndex", weather_files.part,
+  weather_files.answers, weather_files.status, weather_files.step, weather_files.failure,
+  weather_files.station_id as "stationId", weather_files.declared_station as "declaredStation", weather_files.asks,
+  weather_files.shape_key as "shapeKey"`;
 
 /** The file as it stands; `null` when the team has no such file. */
 export async function findWeatherFile(
@@ -57,8 +71,8 @@ export async function findStandingFile(
 ): Promise<WeatherFileState | null> {
   const { rows } = await db.raw<{ rows: WeatherFileState[] }>(
     `select ${STATE_COLUMNS} from weather_files
-     where weather_files.team_id = ? and weather_files.fingerprint = ? and weather_files.part = ''
-       and weather_files.status <> 'withdrawn'`,
+     where weather_files.team_id = ? and weather_files.fingerprint = ? and weather_files.status <> 'withdrawn'
+     order by weather_files.part_index limit 1`,
     [key.teamId, key.fingerprint],
   );
   return rows[0] ?? null;
@@ -82,7 +96,7 @@ export async function insertWeatherFile(
     `insert into weather_files (team_id, batch_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by,
        uploaded_at)
      values (:teamId, :batchId, :name, :bytes, :fingerprint, :storageKey, 'reading', 'received', :uploadedBy, :uploadedAt)
-     on conflict (team_id, fingerprint, part) where status <> 'withdrawn' do nothing
+     on conflict (team_id, fingerprint, part_index) where status <> 'withdrawn' do nothing
      returning id`,
     { ...file, name: storableText(file.name) },
   );
@@ -114,31 +128,91 @@ export async function setReadingStep(
   return result.rowCount > 0;
 }
 
+/** What reading found out about a file. */
+export interface ReadingResult {
+  readonly teamId: string;
+  readonly fileId: string;
+  readonly status: 'asks' | 'review' | 'refused';
+  readonly part: string;
+  readonly format: string | null;
+  readonly declaredStation: DeclaredStation | null;
+  readonly asks: readonly Ask[];
+  readonly comments: string | null;
+  /** Of a table whose columns nobody has confirmed. */
+  readonly table: TableGuess | null;
+}
+
 /** Ends the reading of a file with what was read. */
-export async function setReadingResult(
-  transaction: Knex.Transaction,
-  result: {
-    teamId: string;
-    fileId: string;
-    status: 'asks' | 'review' | 'refused';
-    format: string | null;
-    declaredStation: DeclaredStation | null;
-    asks: readonly Ask[];
-    comments: string | null;
-  },
-): Promise<void> {
+export async function setReadingResult(transaction: Knex.Transaction, result: ReadingResult): Promise<void> {
+  const { table, declaredStation, asks, comments } = result;
   await transaction.raw(
     `update weather_files
-     set status = :status, step = null, failure = null, format = :format, declared_station = cast(:declaredStation as jsonb),
-       asks = cast(:asks as jsonb), comments = :comments
+     set status = :status, step = null, failure = null, part = :part, format = :format,
+       declared_station = cast(:declaredStation as jsonb), asks = cast(:asks as jsonb), comments = :comments,
+       table_guess = cast(:table as jsonb), shape_key = :shapeKey
      where team_id = :teamId and id = :fileId`,
     {
       ...result,
-      declaredStation: result.declaredStation === null ? null : storableJson(result.declaredStation),
-      asks: storableJson(result.asks),
-      comments: result.comments === null ? null : storableText(result.comments),
+      part: storableText(result.part),
+      declaredStation: declaredStation === null ? null : storableJson(declaredStation),
+      asks: storableJson(asks),
+      comments: comments === null ? null : storableText(comments),
+      table: table === null ? null : storableJson(table),
+      shapeKey: table?.shapeKey ?? null,
     },
   );
+}
+
+/**
+ * A further station-year of the same upload, about to be given what was read of it. @returns null when it stands already
+ */
+export async function insertPart(
+  transaction: Knex.Transaction,
+  part: { file: WeatherFileState; partIndex: number },
+): Promise<string | null> {
+  const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
+    `insert into weather_files (team_id, batch_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by,
+       uploaded_at, part_index, answers)
+     select team_id, batch_id, name, bytes, fingerprint, storage_key, 'reading', 'storing', uploaded_by, uploaded_at,
+       :partIndex, jsonb_strip_nulls(jsonb_build_object('mapping', answers -> 'mapping', 'keepSuspect', answers -> 'keepSuspect'))
+     from weather_files where team_id = :teamId and id = :fileId
+     on conflict (team_id, fingerprint, part_index) where status <> 'withdrawn' do nothing
+     returning id`,
+    { teamId: part.file.teamId, fileId: part.file.id, partIndex: part.partIndex },
+  );
+  return rows[0]?.id ?? null;
+}
+
+/** Notes what a person has answered, and puts the file back to be read. */
+export async function setAnswers(
+  transaction: Knex.Transaction,
+  change: { teamId: string; fileId: string; answers: FileAnswers },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files set answers = cast(:answers as jsonb), status = 'reading', step = 'received', failure = null,
+       refused_by = null, refused_at = null, refused_reason = null
+     where team_id = :teamId and id = :fileId`,
+    { ...change, answers: storableJson(change.answers) },
+  );
+}
+
+/** Takes away what was read of a file that has not been accepted, before it is read anew. */
+export async function clearReading(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
+): Promise<void> {
+  await transaction.raw(
+    `with years as (
+       select id from weather_years where team_id = :teamId and weather_file_id = :fileId
+     ), depressions as (
+       delete from depression_hours where weather_year_id in (select id from years)
+     ), designs as (
+       delete from design_values where weather_year_id in (select id from years)
+     )
+     delete from findings where team_id = :teamId and weather_file_id = :fileId`,
+    key,
+  );
+  await transaction.raw('delete from weather_years where team_id = :teamId and weather_file_id = :fileId', key);
 }
 
 export async function setAccepted(
@@ -162,6 +236,18 @@ export async function setWithdrawn(
      set status = 'withdrawn', step = null, withdrawn_by = :personId, withdrawn_at = :at, withdrawn_reason = :reason
      where team_id = :teamId and id = :fileId`,
     { ...withdrawal, reason: storableText(withdrawal.reason) },
+  );
+}
+
+/** Every file of the same bytes is under the same licence. */
+export async function setFileLicence(
+  transaction: Knex.Transaction,
+  change: { teamId: string; fingerprint: string; licence: string; attribution: string | null },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files set licence = :licence, attribution = :attribution
+     where team_id = :teamId and fingerprint = :fingerprint`,
+    { ...change, attribution: change.attribution === null ? null : storableText(change.attribution) },
   );
 }
 
@@ -196,12 +282,13 @@ export async function insertFindings(
 ): Promise<void> {
   const rows = file.findings.map((finding, position) => ({ ...finding, position }));
   await transaction.raw(
-    `insert into findings (team_id, weather_file_id, position, code, severity, line, col, last_line, hours, message)
+    `insert into findings (team_id, weather_file_id, position, code, severity, line, col, last_line, hours, variable,
+       done, message)
      select :teamId, :fileId, found.position, found.code, found.severity, found.line, found."column", found."lastLine",
-       found.count, found.message
+       found.count, found.variable, found.done, found.message
      from jsonb_to_recordset(cast(:rows as jsonb)) as found (
        position integer, code text, severity text, line integer, "column" integer, "lastLine" integer, count integer,
-       message text)`,
+       variable text, done text, message text)`,
     { teamId: file.teamId, fileId: file.fileId, rows: storableJson(rows) },
   );
 }
