@@ -29,7 +29,9 @@ export async function readStoredFile(
   const content = await contentOf(await originalOf(deps.storage, file));
   const reading =
     content instanceof GzipProblem ? unreadable(content) : readWeatherFile(content, file.name.replace(/\.gz$/i, ''));
-  if (reading.status === 'refused') return await storeReading(deps.db, file, { reading, reduced: null });
+  if (reading.status === 'refused' || reading.hours === null) {
+    return await storeReading(deps.db, file, { reading, reduced: null });
+  }
 
   await enterStep(deps.db, file, 'reducing');
   const reduced = reduceYear(reading);
@@ -61,7 +63,7 @@ async function contentOf(original: Uint8Array): Promise<Uint8Array | GzipProblem
 function unreadable({ message }: GzipProblem): RefusedReading {
   const finding = { code: 'binary', severity: 'refuse', line: null, column: null, lastLine: null, count: 1 } as const;
   const whole = { variable: null, done: null };
-  return { status: 'refused', format: null, station: null, findings: [{ ...finding, ...whole, message }] };
+  return { status: 'refused', part: '', format: null, station: null, findings: [{ ...finding, ...whole, message }] };
 }
 
 /** @throws Error when the stored bytes are not those that were uploaded */

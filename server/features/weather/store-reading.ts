@@ -1,7 +1,7 @@
 import type { Knex } from 'knex';
 import { READ_VERSION } from '#engine/conventions.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
-import type { RefusedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
+import type { RefusedReading, UnmappedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
@@ -10,7 +10,7 @@ import { insertFindings, lockWeatherFile, setReadingResult } from './weather-fil
 import { insertDepressionHours, insertDesignValues, insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
-  | { readonly reading: RefusedReading; readonly reduced: null }
+  | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
   | { readonly reading: UsableReading; readonly reduced: ReducedYear };
 
 /** Stores everything that was read of a file, and its new status, in one transaction; leaves alone a file that has moved on. */

@@ -77,6 +77,20 @@ export class FindingList {
     this.#asks.push({ what, message: input.message(), proposal: input.proposal });
   }
 
+  /** A list that begins with all that has been found so far: what concerns a whole file stands with each of its parts. */
+  copy(): FindingList {
+    const copy = new FindingList();
+    copy.#findings.push(...this.#findings);
+    copy.#asks.push(...this.#asks);
+    for (const [code, tallies] of this.#tallies) {
+      copy.#tallies.set(
+        code,
+        tallies.map((tally) => ({ ...tally })),
+      );
+    }
+    return copy;
+  }
+
   get refused(): boolean {
     return this.#findings.some((finding) => finding.severity === 'refuse');
   }

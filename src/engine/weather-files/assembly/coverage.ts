@@ -11,14 +11,21 @@ const ESTIMATED_DOUBT_PCT = 40;
 
 /**
  * Tells every gap: hours without a row, or without a dry bulb or a humidity in it.
- * @param gap 1 where a slot lacked one of them before it was filled
+ * @param input.gap 1 where a slot lacked one of them before it was filled
+ * @param input.quietEdgeHours so many absent hours at the beginning or the end of the year are not told
  */
-export function tellGaps(hours: HourColumns, gap: Uint8Array, findings: FindingList): void {
+export function tellGaps(
+  input: { hours: HourColumns; gap: Uint8Array; quietEdgeHours: number },
+  findings: FindingList,
+): void {
+  const { gap, hours, quietEdgeHours } = input;
   forEachRun(
     gap.length,
     (slot) => gap[slot] === 1,
     (start, end) => {
+      const atEdge = start === 0 || end === gap.length;
       const own = linesOfRun(hours.lines, start, end);
+      if (atEdge && own.first === 0 && end - start <= quietEdgeHours) return;
       const before = hours.lines[start - 1] ?? 0;
       const after = hours.lines[end] ?? 0;
       let filled = 0;

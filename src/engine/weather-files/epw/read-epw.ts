@@ -2,6 +2,8 @@
 import { assembleYear } from '../assembly/assemble-year.ts';
 import type { SourceRows } from '../assembly/source-rows.ts';
 import { type FindingList, whole } from '../finding-list.ts';
+import { withStatedPlace } from '../place/settle-place.ts';
+import type { ReadOptions } from '../read-options.ts';
 import type { DecodedText } from '../text/decode-text.ts';
 import { LineCursor } from '../text/line-cursor.ts';
 import type { WeatherFileReading } from '../weather-file-reading.ts';
@@ -12,17 +14,22 @@ import { readEpwRows } from './epw-rows.ts';
 const PRESSURE_CODE_PA = 99_999;
 const CODE_WITHIN = 0.01;
 
-export function readEpw(text: DecodedText, findings: FindingList): WeatherFileReading {
+export function readEpw(text: DecodedText, findings: FindingList, options: ReadOptions = {}): WeatherFileReading {
   const cursor = new LineCursor(text);
   const header = readEpwHeader(cursor, findings);
   const { flagsInformative, rows } = readEpwRows(cursor, findings);
   numberHours(rows, findings);
   settlePressureCode(rows.pressurePa);
-  if (header.station === null) return { status: 'refused', format: 'EPW', station: null, findings: findings.inOrder() };
+  if (header.station === null) {
+    return { status: 'refused', part: '', format: 'EPW', station: null, findings: findings.inOrder() };
+  }
   return assembleYear(
     {
       format: 'EPW',
-      station: header.station,
+      part: '',
+      yearFrom: 'weekday',
+      cutByUtc: false,
+      station: withStatedPlace(header.station, options.place),
       stationLine: header.stationLine,
       rows,
       stepsPerHour: settleRecordsPerHour(header, rows, findings),
@@ -33,6 +40,7 @@ export function readEpw(text: DecodedText, findings: FindingList): WeatherFileRe
       comments: header.comments,
     },
     findings,
+    options,
   );
 }
 
