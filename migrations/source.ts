@@ -2,11 +2,13 @@
 import type { Knex } from 'knex';
 import * as firstLight from './0001-first-light.ts';
 import * as workerPools from './0002-worker-pools.ts';
+import * as derivedYears from './0003-derived-years.ts';
 
-const migrations = { '0001-first-light': firstLight, '0002-worker-pools': workerPools } satisfies Record<
-  string,
-  Knex.Migration
->;
+const migrations = {
+  '0001-first-light': firstLight,
+  '0002-worker-pools': workerPools,
+  '0003-derived-years': derivedYears,
+} satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;
 

@@ -1,6 +1,7 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
+import * as climate from './climate.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
 import * as rescoring from './rescore.ts';
@@ -18,10 +19,13 @@ export const endpoints = {
   getOriginal: weather.getOriginal,
   acceptWeatherFile: weather.acceptWeatherFile,
   withdrawWeatherFile: weather.withdrawWeatherFile,
+  previewDerivedYear: climate.previewDerivedYear,
+  deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: weather.watchTeam,
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
+  exportRunHours: runs.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,
   listBriefs: briefs.listBriefs,

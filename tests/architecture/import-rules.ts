@@ -107,7 +107,7 @@ export const importRules: readonly ImportRule[] = [
     may: [
       ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
-      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts'],
+      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts', 'server/jobs/year-*.ts'],
       ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
@@ -130,7 +130,7 @@ export const importRules: readonly ImportRule[] = [
   { from: 'server/config.ts', may: ['zod/mini', 'node:*'] },
   { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
-  { from: 'server/web-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
+  { from: 'server/*-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
   { from: 'server/worker.ts', may: ['server/**', ...pure, 'node:*'] },
   { from: 'server/builders/**', may: ['server/**', ...pure, 'node:**'], mayTypes: ['knex'] },
   {

@@ -42,12 +42,16 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherFile: changersOnly,
   getWeatherFile: everyMember,
   getOriginal: changersOnly,
+  previewDerivedYear: changersOnly,
+  // The engineer saves the change first: to the lead the same change of the same year stands already.
+  deriveWeatherYear: [403, 403, 200, 409, 404, 401, 401, 401],
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
   watchTeam: everyMember,
   getMap: everyMember,
   getStationPlace: everyMember,
   getRunHours: everyMember,
+  exportRunHours: plannersToo,
   rescore: everyMember,
   listPresets: everyMember,
   listBriefs: everyMember,
@@ -109,6 +113,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     return form;
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
+  if (name === 'previewDerivedYear' || name === 'deriveWeatherYear') return changeOf(name);
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
@@ -117,6 +122,13 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
+}
+
+/** An example of a change: two kelvin in every month. */
+function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
+  const monthly = Array.from({ length: 12 }, () => ({ shiftK: 2, maxShiftK: 2, minShiftK: 2, ratioChangePct: 0 }));
+  const change = { humidityRule: 'ratio-kept', monthly };
+  return JSON.stringify(name === 'deriveWeatherYear' ? { ...change, name: 'Warmer by 2 K' } : change);
 }
 
 /** Sends the request and looks at its status alone; an event stream is let go of at once. */

@@ -1,4 +1,5 @@
 import type { Router } from 'express';
+import { deriveWeatherYear as deriveEndpoint, previewDerivedYear as previewEndpoint } from '#contract/climate.ts';
 import {
   acceptWeatherFile as acceptEndpoint,
   getOriginal,
@@ -13,8 +14,11 @@ import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import type { RequestContext } from '../../http/request-context.ts';
 import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.ts';
+import type { DerivingParts } from './derive-from-parent.ts';
+import { deriveWeatherYear } from './derive-weather-year.ts';
 import { readCursor, writeCursor } from './page-cursor.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
+import { previewDerivedYear } from './preview-derived-year.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 import { findWeatherFileRecord, findWeatherFileView, listWeatherFileViews } from './weather-file-read-model.ts';
 import { findWeatherFile } from './weather-file-store.ts';
@@ -22,7 +26,10 @@ import { withdrawWeatherFile } from './withdraw-weather-file.ts';
 
 type FileKey = { readonly teamId: string; readonly fileId: string };
 
-export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts): void {
+/** What the weather's routes need of the other parts, handed in where the server is wired. */
+export type WeatherParts = AcceptanceParts & Pick<DerivingParts, 'yearThread'>;
+
+export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): void {
   const { db } = deps;
   const act = (request: RequestContext) => ({
     personId: personOf(request),
@@ -62,6 +69,17 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   mount(router, deps, withdrawEndpoint, async ({ params, body }, request) => {
     await withdrawWeatherFile(db, { ...params, ...act(request), reason: body.reason });
     return await presented(params);
+  });
+
+  mount(router, deps, previewEndpoint, async ({ params, body }, { signal }) =>
+    previewDerivedYear({ db, ...parts }, { ...params, change: body, signal }),
+  );
+
+  mount(router, deps, deriveEndpoint, async ({ params, body }, request) => {
+    const { name, ...change } = body;
+    const derivation = { ...params, ...act(request), name, change, signal: request.signal };
+    const fileId = await deriveWeatherYear({ ...deps, ...parts }, derivation);
+    return await presented({ teamId: params.teamId, fileId });
   });
 
   mount(router, deps, watchTeam, async ({ params }, request) => deps.feed.watch(params.teamId, request.signal));
