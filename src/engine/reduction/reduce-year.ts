@@ -1,5 +1,6 @@
 import { hundredths } from '../conventions.ts';
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
+import { wetBulbColumn } from '../psychrometrics/wet-bulb.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
 import {
   type DepressionBin,
@@ -9,7 +10,7 @@ import {
   hoursAtLeast,
 } from './depression-hours.ts';
 import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
-import { depressionColumn, dewPointColumn, reachedHundredths, wetBulbColumn } from './derived-columns.ts';
+import { depressionColumn, dewPointColumn, reachedHundredths } from './derived-columns.ts';
 import { type DesignValues, designValues } from './design-values.ts';
 import { packYear, unpackYear } from './packed-columns.ts';
 import type { WeatherYear } from './weather-year.ts';
@@ -17,6 +18,7 @@ import {
   countHours,
   depressionCurve,
   type HourCounts,
+  highestOf,
   meanOf,
   meansByMonthAndHour,
   monthCompleteness,
@@ -74,13 +76,14 @@ export function reduceYear(reading: UsableReading): ReducedYear {
 /** The same from columns that are packed already. */
 export function reducePackedYear(year: WeatherYear, belowZero: BelowZeroPhase): ReducedYear {
   const { packed } = year;
-  const { dryBulbC } = unpackYear(packed);
-  const wetBulbC = wetBulbColumn(packed);
-  const depressionK = depressionColumn(packed, wetBulbC);
+  const columns = unpackYear(packed);
+  const { dryBulbC } = columns;
+  const wetBulbC = wetBulbColumn(dryBulbC, columns.humidityRatio, columns.pressurePa);
+  const depressionK = depressionColumn(dryBulbC, wetBulbC);
   const depression = reachedHundredths(depressionK);
   const histogram = depressionHistogram(depression);
-  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(packed) });
-  const known = depressionK.filter((value) => !Number.isNaN(value));
+  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(columns) });
+  const highestK = highestOf(depressionK);
   return {
     year,
     histogram,
@@ -91,7 +94,7 @@ export function reducePackedYear(year: WeatherYear, belowZero: BelowZeroPhase): 
       belowZero,
       meanDryBulbC: meanOf(dryBulbC) ?? 0,
       meanWetBulbC: meanOf(wetBulbC),
-      maxDepressionK: known.length === 0 ? null : hundredths(known.reduce((a, b) => Math.max(a, b))) / 100,
+      maxDepressionK: highestK === null ? null : hundredths(highestK) / 100,
       depressionHours: hoursAtLeast(depression),
       meanDepressionK: meansByMonthAndHour(depressionK),
       monthCompletePct: monthCompleteness(packed),

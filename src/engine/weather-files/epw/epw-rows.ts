@@ -121,15 +121,23 @@ function keepRow(cursor: LineCursor, progress: Progress, read: ReadRow): void {
 
 /** Keeps whether the flags of dry bulb and dew point, letter and digit of each, vary, and answers which values they call estimated. */
 function readFlags(bytes: Uint8Array, progress: Progress, { flagsStart, flagsEnd }: ReadRow): number {
-  const at = (place: number) => (flagsStart + place < flagsEnd ? (bytes[flagsStart + place] ?? 0) : 0);
-  const firstFour = ((at(0) * 256 + at(1)) * 256 + at(2)) * 256 + at(3);
+  const dryLetter = byteBefore(flagsEnd, bytes, flagsStart);
+  const dryDigit = byteBefore(flagsEnd, bytes, flagsStart + 1);
+  const dewLetter = byteBefore(flagsEnd, bytes, flagsStart + 2);
+  const dewDigit = byteBefore(flagsEnd, bytes, flagsStart + 3);
+  const firstFour = ((dryLetter * 256 + dryDigit) * 256 + dewLetter) * 256 + dewDigit;
   if (progress.firstFlags === null) progress.firstFlags = firstFour;
   else if (progress.firstFlags !== firstFour) progress.flagsVary = true;
   let estimated = 0;
-  if (isEstimated(at(0))) estimated |= VALUE.dryBulb;
-  if (isEstimated(at(2))) estimated |= VALUE.dewPoint;
-  if (isEstimated(at(4))) estimated |= VALUE.relativeHumidity;
+  if (isEstimated(dryLetter)) estimated |= VALUE.dryBulb;
+  if (isEstimated(dewLetter)) estimated |= VALUE.dewPoint;
+  if (isEstimated(byteBefore(flagsEnd, bytes, flagsStart + 4))) estimated |= VALUE.relativeHumidity;
   return estimated;
+}
+
+/** The byte at a place before the end of a field, else 0. */
+function byteBefore(end: number, bytes: Uint8Array, at: number): number {
+  return at < end ? (bytes[at] ?? 0) : 0;
 }
 
 /** Source letters of values that are interpolated (B, C) or modelled (E). */
