@@ -1,6 +1,4 @@
-import { createHash, randomUUID } from 'node:crypto';
-import { rm, writeFile } from 'node:fs/promises';
-import path from 'node:path';
+import { createHash } from 'node:crypto';
 import type { Knex } from 'knex';
 import { changeWords } from '#engine/climate/change-words.ts';
 import { READ_VERSION } from '#engine/conventions.ts';
@@ -34,8 +32,6 @@ export interface Derivation extends AskedDerivation {
 
 interface Parts extends DerivingParts, Pick<AcceptanceParts, 'queueRuns'> {
   readonly storage: OriginalStore;
-  /** Where the derivation waits on its way into the store. */
-  readonly uploadsDir: string;
 }
 
 interface OwnBytes {
@@ -65,17 +61,11 @@ export async function deriveWeatherYear(parts: Parts, derivation: Derivation): P
 }
 
 /** As with an upload the bytes go first, so that a row never stands without them. */
-async function keepText({ storage, uploadsDir }: Parts, text: string): Promise<OwnBytes> {
+async function keepText({ storage }: Parts, text: string): Promise<OwnBytes> {
   const bytes = Buffer.from(text, 'utf8');
   const fingerprint = createHash('sha256').update(bytes).digest('hex');
   const storageKey = originalKey(fingerprint);
-  const waiting = path.join(uploadsDir, `derivation-${randomUUID()}`);
-  try {
-    await writeFile(waiting, bytes, { mode: 0o600 });
-    await storage.put(storageKey, waiting);
-  } finally {
-    await rm(waiting, { force: true });
-  }
+  await storage.put(storageKey, bytes);
   return { bytes: bytes.length, fingerprint, storageKey };
 }
 

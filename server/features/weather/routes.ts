@@ -78,7 +78,7 @@ export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): 
   mount(router, deps, deriveEndpoint, async ({ params, body }, request) => {
     const { name, ...change } = body;
     const derivation = { ...params, ...act(request), name, change, signal: request.signal };
-    const fileId = await deriveWeatherYear({ ...deps, ...parts }, derivation);
+    const fileId = await deriveWeatherYear({ db, storage: deps.storage, ...parts }, derivation);
     return await presented({ teamId: params.teamId, fileId });
   });
 
