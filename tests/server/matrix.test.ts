@@ -56,6 +56,9 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherFile: uploadersOnly,
   getWeatherFile: readersToo,
   getOriginal: changersOnly,
+  previewDerivedYear: changersOnly,
+  // The engineer saves the change first: to the lead the same change of the same year stands already.
+  deriveWeatherYear: [403, 403, 200, 409, ...strangers, 403, 403],
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
   actOnWeatherFiles: changersOnly,
@@ -71,6 +74,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getMap: readersToo,
   getStationPlace: readersToo,
   getRunHours: readersToo,
+  exportRunHours: plannersToo,
   rescore: readersToo,
   listPresets: everyMember,
   listBriefs: everyMember,
@@ -156,6 +160,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     return JSON.stringify({ act: 'refuse', fileIds: [ids.fileId], reason: 'Not of use.' });
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
+  if (name === 'previewDerivedYear' || name === 'deriveWeatherYear') return changeOf(name);
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
@@ -164,6 +169,13 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
+}
+
+/** An example of a change: two kelvin in every month. */
+function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
+  const monthly = Array.from({ length: 12 }, () => ({ shiftK: 2, maxShiftK: 2, minShiftK: 2, ratioChangePct: 0 }));
+  const change = { humidityRule: 'ratio-kept', monthly };
+  return JSON.stringify(name === 'deriveWeatherYear' ? { ...change, name: 'Warmer by 2 K' } : change);
 }
 
 /** Sends the request and looks at its status alone; an event stream is let go of at once. */

@@ -1,4 +1,5 @@
 import type { WeatherFile, WeatherFileRecord, YearFacts } from '#contract/weather.ts';
+import { presentDifference } from './present-derivation.ts';
 import type { WeatherFileRecordView, WeatherFileView } from './weather-file-read-model.ts';
 
 export function presentWeatherFile(view: WeatherFileView): WeatherFile {
@@ -22,17 +23,32 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
     year: view.year,
     completePct: completePct(view),
     findingCounts: { note, repair, doubt, ask, refuse },
+    parent: view.parent,
   };
 }
 
 export function presentRecord(record: WeatherFileRecordView): WeatherFileRecord {
-  const { findings, asks, acceptedBy, facts } = record;
+  const { findings, asks, acceptedBy, facts, derivation, children } = record;
   return {
     file: presentWeatherFile(record),
     findings: findings.map((finding) => ({ ...finding })),
     asks: asks.map((ask) => ({ ...ask })),
     acceptedBy,
     facts: facts === null ? null : presentFacts(facts),
+    derivation: derivation === null ? null : presentDerivation(derivation),
+    children: children.map((child) => ({ ...child })),
+  };
+}
+
+function presentDerivation(
+  derivation: NonNullable<WeatherFileRecordView['derivation']>,
+): NonNullable<WeatherFileRecord['derivation']> {
+  const { humidityRule, monthly, cappedHours, difference } = derivation;
+  return {
+    humidityRule,
+    monthly: monthly.map((change) => ({ ...change })),
+    cappedHours,
+    difference: presentDifference(difference),
   };
 }
 

@@ -1,5 +1,7 @@
 import type { Knex } from 'knex';
-import type { FileStatus, ReadingStep } from '#contract/weather.ts';
+import type { FileStatus, ParentYear, ReadingStep } from '#contract/weather.ts';
+import type { ClimateDifference } from '#engine/climate/climate-difference.ts';
+import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import type { YearFacts } from '#engine/reduction/reduce-year.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
 import type { Ask, Severity } from '#engine/weather-files/finding.ts';
@@ -26,6 +28,8 @@ export interface WeatherFileView {
   readonly batchId: string | null;
   readonly part: string;
   readonly findingCounts: Readonly<Partial<Record<Severity, number>>>;
+  /** Of a derived year. */
+  readonly parent: ParentYear | null;
 }
 
 /** Columns and rows of a view; statements of this feature alone build on them. */
@@ -37,11 +41,19 @@ export const VIEW_COLUMNS = `
     weather_years.kind, weather_years.year, weather_years.slots as hours,
     (weather_years.facts ->> 'missing')::integer as missing,
     weather_files.batch_id as "batchId", weather_files.part,
-    coalesce(counts.by_severity, '{}') as "findingCounts"`;
+    coalesce(counts.by_severity, '{}') as "findingCounts", parents.parent`;
 export const VIEW_ROWS = `
   from weather_files
   join people on people.id = weather_files.uploaded_by
   left join weather_years on weather_years.weather_file_id = weather_files.id
+  left join derived_years on derived_years.weather_year_id = weather_years.id
+  left join lateral (
+    select jsonb_build_object('fileId', files.id, 'name', files.name, 'status', files.status,
+      'kind', years.kind, 'year', years.year) as parent
+    from weather_years as years
+    join weather_files as files on files.id = years.weather_file_id
+    where years.id = derived_years.parent_year_id
+  ) as parents on true
   left join lateral (
     select jsonb_object_agg(each.severity, each.number) as by_severity
     from (
@@ -69,6 +81,14 @@ export interface WeatherFileRecordView extends WeatherFileView {
   readonly asks: readonly Ask[];
   readonly acceptedBy: string | null;
   readonly facts: YearFacts | null;
+  readonly derivation: {
+    readonly humidityRule: HumidityRule;
+    readonly monthly: readonly MonthlyChange[];
+    readonly cappedHours: number;
+    readonly difference: ClimateDifference;
+  } | null;
+  /** Years derived from this one, newest first. */
+  readonly children: readonly { readonly fileId: string; readonly name: string; readonly status: FileStatus }[];
 }
 
 export interface FindingView {
@@ -92,7 +112,20 @@ export async function findWeatherFileRecord(
              'column', findings.col, 'message', findings.message)
            order by findings.position)
          from findings where findings.weather_file_id = weather_files.id
-       ), '[]') as findings
+       ), '[]') as findings,
+       case when derived_years.weather_year_id is not null then
+         jsonb_build_object('humidityRule', derived_years.humidity_rule, 'monthly', derived_years.monthly,
+           'cappedHours', derived_years.capped_hours, 'difference', derived_years.difference)
+       end as derivation,
+       coalesce((
+         select jsonb_agg(
+           jsonb_build_object('fileId', files.id, 'name', files.name, 'status', files.status)
+           order by files.uploaded_at desc, files.id)
+         from derived_years as made
+         join weather_years as years on years.id = made.weather_year_id
+         join weather_files as files on files.id = years.weather_file_id
+         where made.team_id = weather_files.team_id and made.parent_year_id = weather_years.id
+       ), '[]') as children
      ${VIEW_ROWS}
      left join people as accepter on accepter.id = weather_files.accepted_by
      where weather_files.team_id = ? and weather_files.id = ?`,

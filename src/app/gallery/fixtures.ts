@@ -107,6 +107,7 @@ export function fixturePlace(station: MapStation): Place {
         score,
       },
     ],
+    derived: [],
     shown: {
       runId: fixtureId(5),
       ledger: fixtureLedger(codes),
@@ -228,6 +229,7 @@ export function fixtureFiles(): WeatherFile[] {
       year: isKnown && index % 3 === 2 ? 2024 : null,
       completePct: isKnown ? 100 - index * 0.37 : null,
       findingCounts: { note: 2, repair: 1, doubt: index === 0 ? 2 : 0, ask: status === 'asks' ? 1 : 0, refuse: 0 },
+      parent: null,
     };
   });
 }
@@ -318,5 +320,7 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
             monthCompletePct: Array.from({ length: 12 }, (_, month) => (month === 4 ? 97.8 : 100)),
             design: { dryBulb: rows, wetBulb: rows, dewPoint: rows },
           },
+    derivation: null,
+    children: [],
   };
 }

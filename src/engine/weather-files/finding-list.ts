@@ -125,9 +125,11 @@ function restSentence(tally: Tally): string {
   return `${whole(tally.places)} more ${more} (${tally.code})${upTo}.`;
 }
 
+const wholeFormat = new Intl.NumberFormat('en-GB', { maximumFractionDigits: 0 });
+
 /** A whole number as people read it: 8,760. */
 export function whole(value: number): string {
-  return value.toLocaleString('en-GB', { maximumFractionDigits: 0 });
+  return wholeFormat.format(value);
 }
 
 /** "12 %", and "under 1 %" for what would round to nothing. */

@@ -192,8 +192,15 @@ function tellLeapDay(file: FileContents, calendar: MatchedCalendar, year: number
 
 /** No dry bulb at all, or one that can only be Fahrenheit. */
 function refuseWithoutTemperature(steps: StepColumns, findings: FindingList): void {
-  const known = steps.dryBulbC.filter((value) => !Number.isNaN(value));
-  if (known.length === 0) {
+  const { dryBulbC } = steps;
+  let known = 0;
+  let hotSteps = 0;
+  for (let step = 0; step < dryBulbC.length; step++) {
+    const value = dryBulbC[step] ?? Number.NaN;
+    if (!Number.isNaN(value)) known++;
+    if (value > TOO_HOT_C) hotSteps++;
+  }
+  if (known === 0) {
     findings.add({
       code: 'no-temperature',
       severity: 'refuse',
@@ -203,7 +210,7 @@ function refuseWithoutTemperature(steps: StepColumns, findings: FindingList): vo
     });
     return;
   }
-  const hot = known.filter((value) => value > TOO_HOT_C).length / steps.stepsPerHour;
+  const hot = hotSteps / steps.stepsPerHour;
   if (hot <= TOO_HOT_HOURS) return;
   const step = steps.dryBulbC.findIndex((value) => value > TOO_HOT_C);
   findings.add({
