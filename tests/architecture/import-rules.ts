@@ -73,7 +73,10 @@ export const importRules: readonly ImportRule[] = [
     ],
   },
   { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', 'node:**'] },
-  { from: 'server/tiles/**', may: ['server/tiles/**', ...serverWords, 'pmtiles', 'express', 'node:*'] },
+  {
+    from: 'server/tiles/**',
+    may: ['server/tiles/**', ...serverWords, 'src/engine/weather-files/relief.ts', 'pmtiles', 'express', 'node:*'],
+  },
 
   {
     from: 'server/features/*/routes.ts',
