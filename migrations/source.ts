@@ -2,11 +2,13 @@
 import type { Knex } from 'knex';
 import * as firstLight from './0001-first-light.ts';
 import * as workerPools from './0002-worker-pools.ts';
+import * as derivedYears from './0003-derived-years.ts';
 import * as weatherRoom from './0004-weather-room.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
   '0002-worker-pools': workerPools,
+  '0003-derived-years': derivedYears,
   '0004-weather-room': weatherRoom,
 } satisfies Record<string, Knex.Migration>;
 

@@ -31,6 +31,7 @@ import { originGuard } from './http/origin-guard.ts';
 import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { makeThreadPool } from './jobs/thread-pool.ts';
+import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
@@ -47,9 +48,20 @@ export function makeWebThreads(): RescoreThreads {
   return makeThreadPool({ entry: new URL('./web-thread.ts', import.meta.url), threads });
 }
 
-/** @param terms.threads by default some that start with their first task and end with the process */
-export function createApp(deps: Deps, terms: Partial<ServerTerms> & { threads?: RescoreThreads } = {}): Express {
-  const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS, threads = makeWebThreads() } = terms;
+/** One thread more for what concerns a single year, so that no slider waits for a table of hours; the caller closes it. */
+export function makeWebYearThread(): YearThread {
+  return makeYearThread(new URL('./year-thread.ts', import.meta.url));
+}
+
+export interface AppThreads {
+  readonly threads: RescoreThreads;
+  readonly yearThread: YearThread;
+}
+
+/** @param terms.threads by default some that start with their first task and end with the process; so `yearThread` */
+export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> = {}): Express {
+  const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS } = terms;
+  const { threads = makeWebThreads(), yearThread = makeWebYearThread() } = terms;
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
@@ -62,23 +74,23 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms> & { threads?: 
   if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
 
   app.use('/api', originGuard, ...authentication(deps, peopleLookup(deps)));
-  app.use(declaredRoutes(deps, threads));
+  app.use(declaredRoutes(deps, { threads, yearThread }));
   app.use(nothingHere);
   app.use(errorHandler(deps.log));
   return app;
 }
 
 /** Every endpoint of src/contract/endpoints.ts, by feature. */
-function declaredRoutes(deps: Deps, threads: RescoreThreads): Router {
+function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router {
   const router = Router();
   accountsRoutes(router, deps, {
     makeFirstTeam: (transaction, team) =>
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
-  weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns });
+  weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   briefsRoutes(router, deps, { queueRunsOfVersion });
-  runsRoutes(router, deps, { threads, readDraft });
+  runsRoutes(router, deps, { threads, yearThread, readDraft });
   methodRoutes(router, deps);
   teamsRoutes(router, deps);
   return router;

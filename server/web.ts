@@ -1,6 +1,6 @@
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
-import { createApp, makeWebThreads } from './app.ts';
+import { createApp, makeWebThreads, makeWebYearThread } from './app.ts';
 import type { Config } from './config.ts';
 import type { Deps } from './deps.ts';
 import { deleteExpiredSessions } from './features/accounts/account-store.ts';
@@ -39,9 +39,10 @@ const KEPT_MS = 60 * 60_000;
 export async function startWeb({ config, deps }: { config: Omit<Config, 'objectStore'>; deps: Deps }): Promise<Web> {
   const closing = new AbortController();
   const threads = makeWebThreads();
+  const yearThread = makeWebYearThread();
   const server = createServer(
     { headersTimeout: HEADERS_MS, requestTimeout: REQUEST_MS, keepAliveTimeout: 10_000 },
-    createApp(deps, { closing: closing.signal, threads }),
+    createApp(deps, { closing: closing.signal, threads, yearThread }),
   );
   server.setTimeout(SILENT_CONNECTION_MS);
   await listen(server, config);
@@ -54,7 +55,7 @@ export async function startWeb({ config, deps }: { config: Omit<Config, 'objectS
       clearInterval(tidying);
       closing.abort();
       await closeServer(server);
-      await threads.close();
+      await Promise.all([threads.close(), yearThread.close()]);
     },
   };
 }

@@ -9,6 +9,9 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
   rerun ID                       judge a stored run of MUSLIN_HOME again: the same to the byte or not
   bench NAMES                    time the product against the plain way of doing the same
 
+Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H for a file that does not say where it was recorded,
+and --columns MAP.json, the confirmed mapping of a table ("table.mapping" in what read prints of it).
+
 One JSON line per result on standard output, of hours a table. Exit codes: 0 done, 1 a file was refused (or is in doubt
 under --strict) or a run is not the same, 2 wrong use, 3 could not run.`;
 

@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { copyFile, mkdir, open, readFile, rename, rm, stat } from 'node:fs/promises';
+import { copyFile, mkdir, open, readFile, rename, rm, stat, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import { isOriginalKey, type OriginalStore } from './original-store.ts';
 
@@ -13,7 +13,7 @@ export function createFolderStore(root: string): OriginalStore {
     return path.join(root, key);
   };
   return {
-    async put(key, fromPath) {
+    async put(key, from) {
       const target = place(key);
       if (await exists(target)) return;
       const folder = path.dirname(target);
@@ -21,7 +21,7 @@ export function createFolderStore(root: string): OriginalStore {
       // Written beside its place under another name, so that a crash half-way never leaves a short original.
       const waiting = path.join(folder, `${randomUUID()}.part`);
       try {
-        await copyFile(fromPath, waiting);
+        await (typeof from === 'string' ? copyFile(from, waiting) : writeFile(waiting, from));
         await settle(waiting);
         await rename(waiting, target);
       } catch (error) {

@@ -5,8 +5,8 @@ import type { Readable } from 'node:stream';
  * A key stands for its bytes: putting the same key again leaves what is there.
  */
 export interface OriginalStore {
-  /** Takes a copy of the file at `fromPath`; whole and on disk when it answers, else nothing of it stays. */
-  put(key: string, fromPath: string): Promise<void>;
+  /** Takes a copy of the file at a path, or bytes; whole and on disk when it answers, else nothing of it stays. */
+  put(key: string, from: string | Uint8Array): Promise<void>;
   /** @throws when there is no such original */
   get(key: string): Promise<Readable>;
   /** @throws when there is no such original */

@@ -45,11 +45,12 @@ export function createS3Store(settings: ObjectStoreSettings): OriginalStore & { 
   };
 
   return {
-    async put(key, fromPath) {
-      const { size } = await stat(fromPath);
+    async put(key, from) {
+      const size = typeof from === 'string' ? (await stat(from)).size : from.length;
       // A whole object of this size is there already: a key stands for its bytes.
       if ((await sizeOf(client, place(key))) === size) return;
-      await client.send(new PutObjectCommand({ ...place(key), Body: createReadStream(fromPath), ContentLength: size }));
+      const Body = typeof from === 'string' ? createReadStream(from) : from;
+      await client.send(new PutObjectCommand({ ...place(key), Body, ContentLength: size }));
       const kept = await sizeOf(client, place(key));
       if (kept !== size) throw new Error(`the object store kept ${kept} of ${size} bytes of ${key}`);
     },

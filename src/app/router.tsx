@@ -55,6 +55,10 @@ const routes: RouteObject[] = [
                 }),
               },
               {
+                path: paths.climate.pattern,
+                lazy: async () => ({ Component: (await import('../features/weather/climate-page.tsx')).ClimatePage }),
+              },
+              {
                 path: paths.method.pattern,
                 lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },

@@ -1,6 +1,7 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
+import * as climate from './climate.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
 import * as rescoring from './rescore.ts';
@@ -41,10 +42,13 @@ export const endpoints = {
   uploadWeatherFiles: batches.uploadWeatherFiles,
   uploadWeatherArchive: batches.uploadWeatherArchive,
   retryWeatherArchive: batches.retryWeatherArchive,
+  previewDerivedYear: climate.previewDerivedYear,
+  deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: weather.watchTeam,
   getMap: runs.getMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: runs.getRunHours,
+  exportRunHours: runs.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,
   listBriefs: briefs.listBriefs,

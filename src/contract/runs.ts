@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { empty, endpoint, file, json, none, ordinary } from './endpoint.ts';
+import { FileStatus } from './weather.ts';
 
 export const ProgrammeParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid() });
 const PlaceParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid(), stationId: z.uuid() });
@@ -131,6 +132,38 @@ export const PlaceYear = z.object({
   score: z.nullable(z.int()),
 });
 
+/** What a run came to, for years beside one another. */
+export const YearFigures = z.object({
+  runId: z.uuid(),
+  demand: z.int(),
+  met: z.int(),
+  /** Of the year by itself; null: excluded or without demand. */
+  score: z.nullable(z.int()),
+  verdict: Verdict,
+  severityKh: z.number(),
+  worstSpellHours: z.int(),
+  makeUpLitres: z.number(),
+});
+export type YearFigures = z.infer<typeof YearFigures>;
+
+/** A derived year beside the year that it was made of; in no figure of the place. */
+export const DerivedPlaceYear = z.object({
+  weatherFileId: z.uuid(),
+  name: z.string(),
+  /** The change in a phrase. */
+  words: z.string(),
+  figures: YearFigures,
+  parent: z.object({
+    weatherFileId: z.uuid(),
+    kind: z.enum(['typical', 'actual']),
+    year: z.nullable(z.int()),
+    /** Another than `accepted`: it no longer counts, and has no figures here. */
+    status: FileStatus,
+    figures: z.nullable(YearFigures),
+  }),
+});
+export type DerivedPlaceYear = z.infer<typeof DerivedPlaceYear>;
+
 export const GradeColumn = z.object({ column: z.string(), grade: Grade, reason: z.string() });
 
 export const YearlyMoney = z.object({
@@ -165,6 +198,8 @@ export const Place = z.object({
   brief: BriefBasis,
   /** The years that the figures rest on, and which of them the ledger and the year cloth show. */
   years: z.array(PlaceYear),
+  /** Years of other climates, newest first. */
+  derived: z.array(DerivedPlaceYear),
   shown: z.nullable(
     z.object({
       runId: z.uuid(),
@@ -229,6 +264,19 @@ export const getStationPlace = endpoint({
   errors: [],
   allow: 'runs.view',
   limits: ordinary,
+});
+
+export const exportRunHours = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/runs/:runId/hours.csv',
+  summary: 'Every hour of a run as a table: its weather, what was asked, what the plant gave, its class and why.',
+  params: z.strictObject({ teamId: z.uuid(), runId: z.uuid() }),
+  query: empty,
+  body: none,
+  response: file({ mediaType: 'text/csv; charset=utf-8', attachment: true }),
+  errors: ['wrong_state'],
+  allow: 'runs.export',
+  limits: { ...ordinary, perMinute: 60, seconds: 120 },
 });
 
 export const getRunHours = endpoint({

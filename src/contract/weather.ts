@@ -1,6 +1,7 @@
 import * as z from 'zod/mini';
 import { empty, endpoint, events, file, json, none, ordinary, upload } from './endpoint.ts';
 import { AnswersBody, StatedPlaceBody, TableMappingBody } from './weather-answers.ts';
+import { ClimateDifference, HumidityRule, MonthlyChange } from './weather-change.ts';
 
 const TeamParams = z.strictObject({ teamId: z.uuid() });
 const FileParams = z.strictObject({ teamId: z.uuid(), fileId: z.uuid() });
@@ -48,6 +49,17 @@ export const DeclaredStation = z.object({
 });
 export type DeclaredStation = z.infer<typeof DeclaredStation>;
 
+/** The measured year that a derived one was made of. */
+const ParentYear = z.object({
+  fileId: z.uuid(),
+  name: z.string(),
+  kind: z.enum(['typical', 'actual']),
+  year: z.nullable(z.int()),
+  /** Another than `accepted`: the parent no longer counts. */
+  status: FileStatus,
+});
+export type ParentYear = z.infer<typeof ParentYear>;
+
 export const WeatherFile = z.object({
   id: z.uuid(),
   name: z.string(),
@@ -74,6 +86,8 @@ export const WeatherFile = z.object({
   licence: z.enum(['open', 'attribution', 'non-commercial', 'no redistribution', 'unknown']),
   attribution: z.nullable(z.string()),
   findingCounts: z.object({ note: z.int(), repair: z.int(), doubt: z.int(), ask: z.int(), refuse: z.int() }),
+  /** Of a derived year, which is always shown with its parent; else null. */
+  parent: z.nullable(ParentYear),
 });
 export type WeatherFile = z.infer<typeof WeatherFile>;
 
@@ -157,6 +171,19 @@ export const WeatherFileRecord = z.object({
   parts: z.array(z.object({ fileId: z.uuid(), part: z.string(), status: FileStatus })),
   acceptedBy: z.nullable(z.string()),
   facts: z.nullable(YearFacts),
+  /** How a derived year was made of its parent, and what became of it; else null. */
+  derivation: z.nullable(
+    z.object({
+      humidityRule: HumidityRule,
+      /** January first. */
+      monthly: z.array(MonthlyChange),
+      /** Hours whose humidity would have passed saturation and was held there. */
+      cappedHours: z.int(),
+      difference: ClimateDifference,
+    }),
+  ),
+  /** Derived years that were made of this one, newest first. */
+  children: z.array(z.object({ fileId: z.uuid(), name: z.string(), status: FileStatus })),
 });
 export type WeatherFileRecord = z.infer<typeof WeatherFileRecord>;
 

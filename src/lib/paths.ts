@@ -31,6 +31,10 @@ export const paths = {
     pattern: 'weather/:fileId',
     to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}`,
   },
+  climate: {
+    pattern: 'weather/:fileId/climate',
+    to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}/climate`,
+  },
   method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;

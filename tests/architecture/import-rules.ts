@@ -78,7 +78,10 @@ export const importRules: readonly ImportRule[] = [
     ],
   },
   { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', '@aws-sdk/client-s3', 'node:**'] },
-  { from: 'server/tiles/**', may: ['server/tiles/**', ...serverWords, 'pmtiles', 'express', 'node:*'] },
+  {
+    from: 'server/tiles/**',
+    may: ['server/tiles/**', ...serverWords, 'src/engine/weather-files/relief.ts', 'pmtiles', 'express', 'node:*'],
+  },
 
   {
     from: 'server/features/*/routes.ts',
@@ -115,7 +118,7 @@ export const importRules: readonly ImportRule[] = [
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/http/upload-name.ts'],
       // The wrappers of zip and gzip: verbs say what becomes of what is inside.
       ...['server/storage/original-store.ts', 'server/storage/zip-members.ts', 'server/storage/inflate-gzip.ts'],
-      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts'],
+      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts', 'server/jobs/year-*.ts'],
       ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
@@ -138,7 +141,7 @@ export const importRules: readonly ImportRule[] = [
   { from: 'server/config.ts', may: ['zod/mini', 'node:*'], mayTypes: ['server/storage/s3-store.ts'] },
   { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
-  { from: 'server/web-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
+  { from: 'server/*-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
   { from: 'server/worker.ts', may: ['server/**', ...pure, 'node:*'] },
   { from: 'server/builders/**', may: ['server/**', ...pure, 'node:**'], mayTypes: ['knex'] },
   {

@@ -80,7 +80,10 @@ async function fill(): Promise<{ teamId: string; programmeId: string }> {
     await writeFile(file, text);
     const from = { teamId: team.teamId, personId };
     const fileId = await receiveFromDisk(deps, { ...from, file });
-    await readStoredFile(deps, { teamId: team.teamId, fileId });
+    await readStoredFile(
+      { ...deps, zoneAt: () => null, relief: { heightM: () => 0, kmFromLand: () => 0 } },
+      { teamId: team.teamId, fileId },
+    );
     await acceptAs(deps, { ...from, fileId });
   }
   await cloneStationYears(ownerDb, { teamId: team.teamId, stations: stations - CLIMATES });

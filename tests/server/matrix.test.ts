@@ -56,10 +56,25 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherFile: uploadersOnly,
   getWeatherFile: readersToo,
   getOriginal: changersOnly,
+  previewDerivedYear: changersOnly,
+  // The engineer saves the change first: to the lead the same change of the same year stands already.
+  deriveWeatherYear: [403, 403, 200, 409, ...strangers, 403, 403],
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
   actOnWeatherFiles: changersOnly,
   retryWeatherFile: uploadersInVain,
+  // The file is accepted, and stands as it was read.
+  answerWeatherFile: [403, 403, 409, 409, ...strangers, 403, 403],
+  getWeatherFileLines: changersOnly,
+  getWeatherYearColumns: readersToo,
+  setLicence: changersOnly,
+  listStations: readersToo,
+  getStation: readersToo,
+  moveStation: changersOnly,
+  // Merging a station into itself is refused.
+  mergeStations: [403, 403, 409, 409, ...strangers, 403, 403],
+  setRuleOff: changersOnly,
+  setRuleOn: changersOnly,
   listWeatherBatches: readersToo,
   getWeatherBatch: readersToo,
   startWeatherBatch: uploadersOnly,
@@ -71,6 +86,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getMap: readersToo,
   getStationPlace: readersToo,
   getRunHours: readersToo,
+  exportRunHours: plannersToo,
   rescore: readersToo,
   listPresets: everyMember,
   listBriefs: everyMember,
@@ -149,6 +165,14 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     form.append('file', new Blob([new Uint8Array(archive)]), `${caller}.zip`);
     return form;
   }
+  if (name === 'answerWeatherFile') return JSON.stringify({ keepSuspect: true });
+  if (name === 'setLicence') return JSON.stringify({ licence: 'open', attribution: null });
+  if (name === 'moveStation') {
+    const place = { latitude: 10, longitude: 20, elevationM: 300, zone: 'Africa/Ndjamena' };
+    return JSON.stringify({ name: 'Moved', ...place, reason: 'A test.' });
+  }
+  if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
+  if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
   if (name === 'makeToken') return JSON.stringify({ name: 'A program', scopes: ['weather:read'], days: 1 });
   if (name === 'startWeatherBatch') return JSON.stringify({ name: `Batch of ${caller}` });
   if (name === 'changeWeatherBatch') return JSON.stringify({ state: 'running' });
@@ -156,6 +180,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
     return JSON.stringify({ act: 'refuse', fileIds: [ids.fileId], reason: 'Not of use.' });
   }
   if (name === 'signIn') return JSON.stringify({ email: emailOf('viewer'), password: PASSWORD });
+  if (name === 'previewDerivedYear' || name === 'deriveWeatherYear') return changeOf(name);
   if (name === 'withdrawWeatherFile') return JSON.stringify({ reason: 'Not needed.' });
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
@@ -166,6 +191,18 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   return JSON.stringify({ key: 'never-made', ...team });
 }
 
+/** An example of a change: two kelvin in every month. */
+function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
+  const monthly = Array.from({ length: 12 }, () => ({ shiftK: 2, maxShiftK: 2, minShiftK: 2, ratioChangePct: 0 }));
+  const change = { humidityRule: 'ratio-kept', monthly };
+  return JSON.stringify(name === 'deriveWeatherYear' ? { ...change, name: 'Warmer by 2 K' } : change);
+}
+
+function queryOf(name: EndpointName): string {
+  if (name === 'compareBriefVersions') return '?from=1&to=1';
+  return name === 'getWeatherFileLines' ? '?from=1' : '';
+}
+
 /** Sends the request and looks at its status alone; an event stream is let go of at once. */
 async function statusOf(
   name: EndpointName,
@@ -174,7 +211,7 @@ async function statusOf(
   const endpoint: Endpoint = endpoints[name];
   const path = endpoint.path.replace(/:(\w+)/g, (_all, parameter: string) => values[parameter] ?? 'missing');
   expect(path).not.toContain('missing');
-  const query = name === 'compareBriefVersions' ? '?from=1&to=1' : '';
+  const query = queryOf(name);
   const body = bodyOf(name, caller);
   const headers = await headersOf(caller, name);
   const ending = new AbortController();
@@ -266,6 +303,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
+  ids = { ...ids, rule: 'step' };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });

@@ -12,8 +12,8 @@ export function readMadeUp(file: EpwOptions | readonly string[] | Uint8Array): W
 /** The reading of a file that must not be refused. */
 export function readUsable(file: EpwOptions | readonly string[] | Uint8Array): UsableReading {
   const reading = readMadeUp(file);
-  if (reading.status !== 'refused') return reading;
-  throw new Error(`refused: ${reading.findings.map(({ message }) => message).join(' ')}`);
+  if (reading.status !== 'refused' && reading.hours !== null) return reading;
+  throw new Error(`refused or not mapped: ${reading.findings.map(({ message }) => message).join(' ')}`);
 }
 
 /** The reading of a file that must be refused. */

@@ -1,6 +1,6 @@
 import { briefSentence } from '#engine/brief/brief-sentence.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
-import { hoursCsv } from '#engine/run/hours-csv.ts';
+import { hoursCsv, weatherYearText } from '#engine/run/hours-csv.ts';
 import { hoursTable } from '#engine/run/hours-table.ts';
 import type { CommandContext, ExitCode } from '../command.ts';
 import { openJudgeableFile } from './judgeable-file.ts';
@@ -16,6 +16,7 @@ export async function hours(context: CommandContext): Promise<ExitCode> {
     hoursCsv(table, {
       file,
       station: reading.station.name,
+      weatherYear: weatherYearText(reading),
       brief: preset,
       briefSentence: briefSentence(brief),
       zone: place.zone,

@@ -8,6 +8,7 @@ import type { CommandContext, ExitCode } from '../command.ts';
 import { readArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
 import { say } from './print-result.ts';
+import { statedOptions } from './stated-options.ts';
 
 /** A file with the preset that its year is to be judged by. */
 export interface JudgeableFile {
@@ -25,7 +26,8 @@ export interface JudgeableFile {
  * @throws WrongUse
  */
 export async function openJudgeableFile({ args, callerDir }: CommandContext): Promise<JudgeableFile | ExitCode> {
-  const { files, strict, brief: preset } = readArguments(args);
+  const stated = readArguments(args);
+  const { files, strict, brief: preset } = stated;
   const [file, ...more] = files;
   if (file === undefined || more.length > 0) throw new WrongUse('Name one weather file.');
   if (strict) throw new WrongUse('--strict belongs to the command read.');
@@ -37,13 +39,14 @@ export async function openJudgeableFile({ args, callerDir }: CommandContext): Pr
     say(bytes);
     return 3;
   }
-  const reading = readWeatherFile(bytes, file);
+  const reading = readWeatherFile(bytes, file, await statedOptions(stated, callerDir));
   if (reading.status === 'refused') {
     const reasons = reading.findings.filter(({ severity }) => severity === 'refuse');
     say([`${file} is refused:`, ...reasons.map(({ message }) => message)].join('\n'));
     return 1;
   }
   for (const { message } of reading.asks) say(`${file} asks: ${message}`);
+  if (reading.hours === null) return 1;
   const place = placeOf(reading);
   if (place === null) {
     say(`${file} does not say where and how high it was recorded, so its hours cannot be judged.`);

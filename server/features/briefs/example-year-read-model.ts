@@ -11,7 +11,7 @@ export interface ExampleYear {
   readonly elevationM: number;
 }
 
-/** The newest typical year, else the latest actual one, else a derived one; `null` when no accepted year is there. */
+/** The newest typical year, else the latest actual one, never a derived one; `null` when no such year is accepted. */
 export async function findExampleYear(
   db: Knex,
   key: { teamId: string; programmeId: string; stationId: string },
@@ -23,8 +23,8 @@ export async function findExampleYear(
      join stations on stations.team_id = programmes.team_id and stations.id = :stationId
      join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
-     where programmes.team_id = :teamId and programmes.id = :programmeId
-     order by case weather_years.kind when 'typical' then 0 when 'actual' then 1 else 2 end,
+     where programmes.team_id = :teamId and programmes.id = :programmeId and weather_years.kind <> 'derived'
+     order by case weather_years.kind when 'typical' then 0 else 1 end,
        weather_years.year desc nulls last, weather_years.created_at desc, weather_years.id
      limit 1`,
     key,

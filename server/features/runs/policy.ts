@@ -2,4 +2,5 @@ import { everyRole, memberOf, type Policy } from '../../http/policy.ts';
 
 export const runsPolicy = {
   'runs.view': memberOf(everyRole, 'results:read'),
+  'runs.export': memberOf(['planner', 'engineer', 'lead']),
 } satisfies Record<string, Policy>;

@@ -2,12 +2,14 @@ import type { BriefBasis, Place } from '#contract/runs.ts';
 import { cautionsOf } from './cautions.ts';
 import type { JudgedStation, JudgedYear } from './judge-station.ts';
 import { dayText, slotEndText, slotStartText } from './local-time-text.ts';
+import { presentDerivedYears } from './present-derived-years.ts';
 
 export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; invented: boolean }): Place {
   const { station, figures, judged, grade } = place;
   // Without a usable year the newest one is still shown, so that one sees why: its hours without weather, no score.
-  const shown = figures.shown ?? judged[0] ?? null;
-  const restsOn = figures.runs.length > 0 ? figures.runs : judged.slice(0, 1);
+  const newest = judged.filter(({ kind }) => kind !== 'derived').slice(0, 1);
+  const shown = figures.shown ?? newest[0] ?? null;
+  const restsOn = figures.runs.length > 0 ? figures.runs : newest;
   return {
     station: {
       id: station.stationId,
@@ -20,6 +22,7 @@ export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; inve
     invented: on.invented,
     brief: on.brief,
     years: restsOn.map(presentYear),
+    derived: presentDerivedYears(judged),
     shown: shown === null ? null : presentShown(place, shown),
     grade: grade.grade,
     gradeColumns: grade.columns.map((column) => ({ ...column })),

@@ -1,6 +1,6 @@
 import type { Router } from 'express';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
-import { getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
+import { exportRunHours as exportEndpoint, getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
@@ -8,6 +8,7 @@ import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
+import { type ExportParts, exportRunHours } from './export-run-hours.ts';
 import { byStation, judgeStation } from './judge-station.ts';
 import { presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
@@ -24,11 +25,12 @@ const MOST_PREVIEWS = 16;
 /** What runs need of the other parts, handed in where the server is wired. */
 export interface RunsParts {
   readonly threads: RescoreThreads;
+  readonly yearThread: ExportParts['yearThread'];
   /** The brief in a request's body, or every fault of it at its path. */
   readonly readDraft: (draft: unknown) => Brief;
 }
 
-export function runsRoutes(router: Router, deps: Deps, { threads, readDraft }: RunsParts): void {
+export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, readDraft }: RunsParts): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
@@ -62,6 +64,10 @@ export function runsRoutes(router: Router, deps: Deps, { threads, readDraft }: R
     const asked = { teamId, brief, stationIds: body.stationIds ?? null, withHashes: query.hashes === 'yes', signal };
     return inTurn(() => rescore({ db, threads, cache }, asked));
   });
+
+  mount(router, deps, exportEndpoint, async ({ params }, { signal }) =>
+    exportRunHours({ db, yearThread }, { ...params, signal }),
+  );
 
   mount(router, deps, getRunHours, async ({ params }) => {
     const body = await readRunHours(db, params);

@@ -1,4 +1,6 @@
 import type { Knex } from 'knex';
+import type { FileStatus } from '#contract/weather.ts';
+import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
 import type { RunFigures } from './run-key.ts';
@@ -23,6 +25,19 @@ export interface StationYear {
   /** Why background work on the file stopped for a fault of ours. */
   readonly failure: string | null;
   readonly run: RunOfYear | null;
+  /** Of a derived year: its own name and the year that it was made of, which may no longer be accepted. */
+  readonly derivedFrom: DerivedFrom | null;
+}
+
+export interface DerivedFrom {
+  readonly name: string;
+  readonly weatherYearId: string;
+  readonly weatherFileId: string;
+  readonly kind: Exclude<YearKind, 'derived'>;
+  readonly year: number | null;
+  readonly status: FileStatus;
+  readonly humidityRule: HumidityRule;
+  readonly monthly: readonly MonthlyChange[];
 }
 
 export interface RunOfYear {
@@ -50,10 +65,18 @@ export async function listStationYears(
          select 1 from findings
          where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'
        ) as "flagsUniform",
-       weather_files.failure, newest.run
+       weather_files.failure, newest.run,
+       case when derived_years.weather_year_id is not null then
+         jsonb_build_object('name', weather_files.name, 'weatherYearId', parents.id, 'weatherFileId', parent_files.id,
+           'kind', parents.kind, 'year', parents.year, 'status', parent_files.status,
+           'humidityRule', derived_years.humidity_rule, 'monthly', derived_years.monthly)
+       end as "derivedFrom"
      from stations
      join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
+     left join derived_years on derived_years.weather_year_id = weather_years.id
+     left join weather_years as parents on parents.id = derived_years.parent_year_id
+     left join weather_files as parent_files on parent_files.id = parents.weather_file_id
      left join lateral (
        select jsonb_build_object('id', runs.id, 'clock', runs.clock, 'figures',
          runs.result - array['demandByMonthHour', 'metByMonthHour', 'supplyCurve', 'aloneHours']) as run

@@ -1,4 +1,4 @@
-import lookUpZone from '@photostructure/tz-lookup';
+import { knownZone } from './known-zone.ts';
 
 /**
  * IANA zone of a station. At sea and where the look-up knows no zone it is the fixed offset of the file, as Etc/GMT±h;
@@ -10,16 +10,4 @@ export function zoneOfStation(station: { latitude: number; longitude: number; ut
   const hours = Math.min(14, Math.max(-12, Math.round(station.utcOffsetH)));
   if (hours === 0) return 'Etc/GMT';
   return hours > 0 ? `Etc/GMT-${hours}` : `Etc/GMT+${-hours}`;
-}
-
-function knownZone(latitude: number, longitude: number): string | null {
-  try {
-    const zone = lookUpZone(latitude, longitude);
-    // Answers Etc/GMT±h from the longitude alone at sea: the file's own offset is the better guess.
-    if (zone.startsWith('Etc/')) return null;
-    // Throws for a zone that this machine's tables do not have.
-    return new Intl.DateTimeFormat('en', { timeZone: zone }).resolvedOptions().timeZone && zone;
-  } catch {
-    return null;
-  }
 }

@@ -11,4 +11,5 @@ export const weatherPolicy = {
   'weather.accept': changers,
   'weather.withdraw': changers,
   'weather.original': changers,
+  'weather.derive': changers,
 } satisfies Record<string, Policy>;

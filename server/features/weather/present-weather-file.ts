@@ -1,4 +1,5 @@
 import type { TableGuess, WeatherFile, WeatherFileRecord, YearFacts } from '#contract/weather.ts';
+import { presentDifference } from './present-derivation.ts';
 import type { WeatherFileRecordView, WeatherFileView } from './weather-file-read-model.ts';
 
 export function presentWeatherFile(view: WeatherFileView): WeatherFile {
@@ -24,11 +25,12 @@ export function presentWeatherFile(view: WeatherFileView): WeatherFile {
     year: view.year,
     completePct: completePct(view),
     findingCounts: { note, repair, doubt, ask, refuse },
+    parent: view.parent,
   };
 }
 
 export function presentRecord(record: WeatherFileRecordView): WeatherFileRecord {
-  const { findings, asks, table, answers, comments, decision, parts, acceptedBy, facts } = record;
+  const { findings, asks, table, answers, comments, decision, parts, acceptedBy, facts, derivation, children } = record;
   return {
     file: presentWeatherFile(record),
     findings: findings.map((finding) => ({ ...finding })),
@@ -40,6 +42,20 @@ export function presentRecord(record: WeatherFileRecordView): WeatherFileRecord 
     parts: parts.map((part) => ({ ...part })),
     acceptedBy,
     facts: facts === null ? null : presentFacts(facts),
+    derivation: derivation === null ? null : presentDerivation(derivation),
+    children: children.map((child) => ({ ...child })),
+  };
+}
+
+function presentDerivation(
+  derivation: NonNullable<WeatherFileRecordView['derivation']>,
+): NonNullable<WeatherFileRecord['derivation']> {
+  const { humidityRule, monthly, cappedHours, difference } = derivation;
+  return {
+    humidityRule,
+    monthly: monthly.map((change) => ({ ...change })),
+    cappedHours,
+    difference: presentDifference(difference),
   };
 }
 

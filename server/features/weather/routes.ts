@@ -1,4 +1,5 @@
 import type { Router } from 'express';
+import { deriveWeatherYear as deriveEndpoint, previewDerivedYear as previewEndpoint } from '#contract/climate.ts';
 import {
   acceptWeatherFile as acceptEndpoint,
   actOnWeatherFiles as actEndpoint,
@@ -35,11 +36,14 @@ import { actOnWeatherFiles } from './act-on-weather-files.ts';
 import { answerWeatherFile } from './answer-weather-file.ts';
 import { findArchiveView, findBatchView, listBatchViews } from './batch-read-model.ts';
 import { changeBatch } from './change-batch.ts';
+import type { DerivingParts } from './derive-from-parent.ts';
+import { deriveWeatherYear } from './derive-weather-year.ts';
 import { findFileColumns } from './file-columns-read-model.ts';
 import { countLibrary, listWeatherFileViews } from './library-read-model.ts';
 import { originalLines } from './original-lines.ts';
 import { presentArchive, presentBatch } from './present-batch.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
+import { previewDerivedYear } from './preview-derived-year.ts';
 import { receiveArchive } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 import { retryArchive } from './retry-archive.ts';
@@ -52,7 +56,10 @@ import { withdrawWeatherFile } from './withdraw-weather-file.ts';
 
 type FileKey = { readonly teamId: string; readonly fileId: string };
 
-export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts): void {
+/** What the weather's routes need of the other parts, handed in where the server is wired. */
+export type WeatherParts = AcceptanceParts & Pick<DerivingParts, 'yearThread'>;
+
+export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): void {
   const { db } = deps;
   const act = (request: RequestContext) => ({
     personId: personOf(request),
@@ -134,6 +141,17 @@ export function weatherRoutes(router: Router, deps: Deps, parts: AcceptanceParts
   });
 
   batchRoutes(router, deps, act);
+
+  mount(router, deps, previewEndpoint, async ({ params, body }, { signal }) =>
+    previewDerivedYear({ db, ...parts }, { ...params, change: body, signal }),
+  );
+
+  mount(router, deps, deriveEndpoint, async ({ params, body }, request) => {
+    const { name, ...change } = body;
+    const derivation = { ...params, ...act(request), name, change, signal: request.signal };
+    const fileId = await deriveWeatherYear({ db, storage: deps.storage, ...parts }, derivation);
+    return await presented({ teamId: params.teamId, fileId });
+  });
 
   mount(router, deps, watchTeam, async ({ params }, request) => deps.feed.watch(params.teamId, request.signal));
 }

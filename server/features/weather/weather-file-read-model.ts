@@ -1,6 +1,8 @@
 import type { Knex } from 'knex';
-import type { FileStatus, ReadingStep } from '#contract/weather.ts';
+import type { FileStatus, ParentYear, ReadingStep } from '#contract/weather.ts';
 import type { Licence } from '#contract/weather-reading.ts';
+import type { ClimateDifference } from '#engine/climate/climate-difference.ts';
+import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import type { YearFacts } from '#engine/reduction/reduce-year.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
 import type { Ask, Severity } from '#engine/weather-files/finding.ts';
@@ -31,6 +33,8 @@ export interface WeatherFileView {
   readonly licence: Licence;
   readonly attribution: string | null;
   readonly findingCounts: Readonly<Partial<Record<Severity, number>>>;
+  /** Of a derived year. */
+  readonly parent: ParentYear | null;
 }
 
 /** Columns and rows of a view; statements of this feature alone build on them. */
@@ -42,11 +46,19 @@ export const VIEW_COLUMNS = `
     weather_years.kind, weather_years.year, weather_years.slots as hours,
     (weather_years.facts ->> 'missing')::integer as missing,
     weather_files.batch_id as "batchId", weather_files.part, weather_files.licence, weather_files.attribution,
-    coalesce(counts.by_severity, '{}') as "findingCounts"`;
+    coalesce(counts.by_severity, '{}') as "findingCounts", parents.parent`;
 export const VIEW_ROWS = `
   from weather_files
   join people on people.id = weather_files.uploaded_by
   left join weather_years on weather_years.weather_file_id = weather_files.id
+  left join derived_years on derived_years.weather_year_id = weather_years.id
+  left join lateral (
+    select jsonb_build_object('fileId', files.id, 'name', files.name, 'status', files.status,
+      'kind', years.kind, 'year', years.year) as parent
+    from weather_years as years
+    join weather_files as files on files.id = years.weather_file_id
+    where years.id = derived_years.parent_year_id
+  ) as parents on true
   left join lateral (
     select jsonb_object_agg(each.severity, each.number) as by_severity
     from (
@@ -95,6 +107,14 @@ export interface WeatherFileRecordView extends WeatherFileView {
   readonly parts: readonly { readonly fileId: string; readonly part: string; readonly status: FileStatus }[];
   readonly acceptedBy: string | null;
   readonly facts: YearFacts | null;
+  readonly derivation: {
+    readonly humidityRule: HumidityRule;
+    readonly monthly: readonly MonthlyChange[];
+    readonly cappedHours: number;
+    readonly difference: ClimateDifference;
+  } | null;
+  /** Years derived from this one, newest first. */
+  readonly children: readonly { readonly fileId: string; readonly name: string; readonly status: FileStatus }[];
 }
 
 export interface FindingView {
@@ -136,6 +156,21 @@ const PARTS = `
       and others.uploaded_at = weather_files.uploaded_at and others.id <> weather_files.id
   ), '[]') as parts`;
 
+const DERIVATION = `
+  case when derived_years.weather_year_id is not null then
+    jsonb_build_object('humidityRule', derived_years.humidity_rule, 'monthly', derived_years.monthly,
+      'cappedHours', derived_years.capped_hours, 'difference', derived_years.difference)
+  end as derivation,
+  coalesce((
+    select jsonb_agg(
+      jsonb_build_object('fileId', files.id, 'name', files.name, 'status', files.status)
+      order by files.uploaded_at desc, files.id)
+    from derived_years as made
+    join weather_years as years on years.id = made.weather_year_id
+    join weather_files as files on files.id = years.weather_file_id
+    where made.team_id = weather_files.team_id and made.parent_year_id = weather_years.id
+  ), '[]') as children`;
+
 const DECISION = `
   decider.name as "decidedBy",
   coalesce(weather_files.withdrawn_at, weather_files.superseded_at, weather_files.refused_at) as "decidedAt",
@@ -156,7 +191,8 @@ export async function findWeatherFileRecord(
 ): Promise<WeatherFileRecordView | null> {
   const { rows } = await db.raw<{ rows: Row[] }>(
     `select ${VIEW_COLUMNS}, weather_files.asks, weather_files.table_guess as "table", weather_files.answers,
-       weather_files.comments, accepter.name as "acceptedBy", weather_years.facts, ${FINDINGS}, ${PARTS}, ${DECISION}
+       weather_files.comments, accepter.name as "acceptedBy", weather_years.facts, ${FINDINGS}, ${PARTS}, ${DECISION},
+       ${DERIVATION}
      ${VIEW_ROWS}
      left join people as accepter on accepter.id = weather_files.accepted_by
      left join people as decider on decider.id =

@@ -7,7 +7,7 @@ import type { UsableReading } from '#engine/weather-files/weather-file-reading.t
 export interface NewWeatherYear {
   readonly teamId: string;
   readonly fileId: string;
-  readonly reading: UsableReading;
+  readonly reading: Pick<UsableReading, 'humidityFrom' | 'belowZero'>;
   readonly reduced: ReducedYear;
   /** Hours whose dry bulb and humidity are both as the source measured them. */
   readonly measuredHours: number;

@@ -107,6 +107,7 @@ export function fixturePlace(station: MapStation): Place {
         score,
       },
     ],
+    derived: [],
     shown: {
       runId: fixtureId(5),
       ledger: fixtureLedger(codes),
@@ -220,6 +221,8 @@ export function fixtureFiles(): WeatherFile[] {
       uploadedAt: '2026-11-12T12:05:00.000Z',
       batchId: null,
       part: '',
+      licence: 'unknown',
+      attribution: null,
       station: isKnown
         ? { name, latitude: -26.6, longitude: 20.6, elevationM: 1042, utcOffsetH: 2, wmoNumber: '684240' }
         : null,
@@ -228,6 +231,7 @@ export function fixtureFiles(): WeatherFile[] {
       year: isKnown && index % 3 === 2 ? 2024 : null,
       completePct: isKnown ? 100 - index * 0.37 : null,
       findingCounts: { note: 2, repair: 1, doubt: index === 0 ? 2 : 0, ask: status === 'asks' ? 1 : 0, refuse: 0 },
+      parent: null,
     };
   });
 }
@@ -248,6 +252,10 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
         severity: 'doubt',
         line: 2314,
         column: 7,
+        lastLine: null,
+        count: 1,
+        variable: null,
+        done: null,
         message: 'Dry bulb falls by 21.4 K from line 2,313 to line 2,314; used as it stands.',
       },
       {
@@ -255,6 +263,10 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
         severity: 'doubt',
         line: 3661,
         column: null,
+        lastLine: null,
+        count: 1,
+        variable: null,
+        done: null,
         message: 'Dew point stays at 4.1 °C for 38 hours from line 3,661 on; used as it stands.',
       },
       {
@@ -262,6 +274,10 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
         severity: 'repair',
         line: 871,
         column: 9,
+        lastLine: null,
+        count: 1,
+        variable: null,
+        done: null,
         message: 'Relative humidity is 101 % in 3 hours from line 871 on; set to saturation.',
       },
       {
@@ -269,6 +285,10 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
         severity: 'note',
         line: null,
         column: null,
+        lastLine: null,
+        count: 1,
+        variable: null,
+        done: null,
         message: 'Humidity below 0 °C stands for water, found from 214 hours.',
       },
       ...(file.status === 'asks'
@@ -278,6 +298,10 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
               severity: 'ask',
               line: 9,
               column: 10,
+              lastLine: null,
+              count: 1,
+              variable: null,
+              done: null,
               message: 'Pressure is near 101 kPa at 1,042 m: it seems to be reduced to sea level.',
             } as const,
           ]
@@ -293,6 +317,11 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
             },
           ]
         : [],
+    table: null,
+    answers: {},
+    comments: null,
+    decision: null,
+    parts: [],
     acceptedBy: file.status === 'accepted' ? 'Ines Mabaso' : null,
     facts:
       file.status === 'reading' || file.status === 'refused'
@@ -318,5 +347,7 @@ export function fixtureRecord(file: WeatherFile): WeatherFileRecord {
             monthCompletePct: Array.from({ length: 12 }, (_, month) => (month === 4 ? 97.8 : 100)),
             design: { dryBulb: rows, wetBulb: rows, dewPoint: rows },
           },
+    derivation: null,
+    children: [],
   };
 }

@@ -132,7 +132,7 @@ function RunParts() {
           {place.shown ? <LedgerPanel ledger={place.shown.ledger} /> : null}
         </div>
       </div>
-      <YearStrip place={place} teamId={fixtureTeam.teamId} />
+      <YearStrip place={place} teamId={fixtureTeam.teamId} mayExport />
       <div className="mt-8 grid gap-8">
         {place.shown ? (
           <>

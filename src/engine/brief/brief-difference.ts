@@ -1,4 +1,4 @@
-import type { Brief, HardLimit, ScoreAnchor } from './brief.ts';
+import type { Brief, HardLimit, Limit, ScoreAnchor } from './brief.ts';
 import { type BriefField, briefFields, fieldsOfLimit } from './brief-fields.ts';
 import { canonicalJson } from './canonical-json.ts';
 import { componentWords, limitKindWords, monthWords, stageWords } from './field-words.ts';
@@ -76,11 +76,10 @@ const lists: Readonly<Record<string, Named>> = {
   months: { label: 'Months', words: (value) => (value === 'all' ? 'all' : listWords(value, monthWords)) },
   hardLimits: { label: 'Hard limits', words: (value) => listWords(value, (entry) => hardLimitWords(entry)) },
   score: { label: 'Score, components in order', words: (value) => listWords(value, componentWords) },
-  gates: { label: 'Gates', words: (value) => listWords(value, String) },
+  gates: { label: 'Site questions', words: (value) => listWords(value, String) },
   reported: { label: 'Reported', words: (value) => listWords(value, String) },
   primaryAir: { label: 'Primary air', words: plainWords },
   preset: { label: 'Preset', words: plainWords },
-  source: { label: 'Source', words: plainWords },
 };
 
 function wordsOfList(path: string): Named {
@@ -113,4 +112,18 @@ function isHardLimit(value: unknown): value is HardLimit {
 
 function isAnchor(value: unknown): value is ScoreAnchor {
   return isRecord(value) && 'weight' in value && 'a0' in value;
+}
+
+/**
+ * What the field at a path of a draft is called, for a message that stands away from it; entries of lists by the name of their
+ * list, with dots throughout.
+ */
+export function labelOfPath(path: string, kind: Limit['kind'] | null): string {
+  const fields = kind === null ? briefFields : fieldsOfLimit({ kind });
+  const label = fields.find((field) => field.path === path)?.label;
+  if (label !== undefined) return label;
+  const [name = path, index] = path.split('.');
+  const group = name === 'score' ? 'Score' : (lists[path] ?? lists[name])?.label;
+  if (group === undefined) return path;
+  return index === undefined || !/^\d+$/.test(index) ? group : `${group}, row ${Number(index) + 1}`;
 }

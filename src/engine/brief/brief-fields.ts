@@ -18,6 +18,8 @@ export type FieldGroup =
   | 'reference'
   | 'prices'
   | 'tolerance'
+  | 'gates'
+  | 'reported'
   | 'score';
 
 export interface BriefField {
@@ -61,7 +63,8 @@ export function fieldsOfLimit(limit: Pick<Limit, 'kind'>): readonly BriefField[]
 const OURS = 'ours';
 const OF_PRESET = 'the preset, ours';
 const NO_DEFAULT = 'no default: a price that is not typed is not known';
-const DERATE = '1 K per 300 m above 900 m';
+/** The derating that the method knows (method 3.1). */
+export const DERATE_RULE = '1 K per 300 m above 900 m';
 const ALL: readonly UseKind[] = ['room', 'index', 'hall', 'tower', 'turbine'];
 const SERVED: readonly UseKind[] = ['room', 'index'];
 const AIR_SIDE: readonly UseKind[] = ['room', 'index', 'hall'];
@@ -119,7 +122,7 @@ export const briefFields: readonly BriefField[] = [
     source: 'ASHRAE TC 9.9',
     uses: ['hall'],
     limit: 'inlet',
-    words: { '': 'none', [DERATE]: DERATE },
+    words: { '': 'none', [DERATE_RULE]: DERATE_RULE },
   }),
   limit('limit.value', ['Temperature-humidity index', '', 'number'], {
     source: 'index: NRC 1971; 72 as the alarm: Brouk, Smith and Harner, Kansas State',
@@ -156,6 +159,10 @@ export const briefFields: readonly BriefField[] = [
     source: OURS,
     uses: SERVED,
     words: { constant: 'constant', linear: 'grows to the 1 % dry bulb of the year' },
+  }),
+  limit('source', ['Where the requirement comes from', '', 'text'], {
+    source: 'the preset; name the standard, the contract or who agreed',
+    uses: ALL,
   }),
 
   caps('caps.roomRhPct', ['Room humidity, at most', '% RH', 'optional'], { source: OF_PRESET, uses: SERVED }),
@@ -229,10 +236,7 @@ export const briefFields: readonly BriefField[] = [
   ),
   plant('fanWPerLs.returnAir', ['Fan, return air', 'W per L/s', 'number'], { source: OURS, uses: ['hall'] }),
   plant('pumpKwPerKw', ['Pump', 'kW per kW', 'number'], { source: OURS, uses: AIR_SIDE }),
-  plant('towerFanPumpWPerKw', ['Fans and pumps of the tower', 'W per kW', 'optional'], {
-    source: OURS,
-    uses: ['tower'],
-  }),
+  plant('towerFanPumpWPerKw', ['Fans and pumps of the tower', 'W per kW', 'number'], { source: OURS, uses: ['tower'] }),
 
   schedule('clock', ['Clock', '', 'choice'], {
     source: OF_PRESET,
@@ -249,7 +253,7 @@ export const briefFields: readonly BriefField[] = [
   water('cycles', ['Cycles of concentration', '', 'number'], { source: 'ours, 4; over 1', uses: ALL }),
   water('k', ['Water over what evaporates indirectly', 'times', 'number'], { source: OURS, uses: AIR_SIDE }),
   water('driftPctOfCirculation', ['Drift', '% of circulation', 'number'], { source: OURS, uses: ['tower'] }),
-  water('towerLatentShare', ['Share of heat that evaporates', '', 'optional'], { source: OURS, uses: ['tower'] }),
+  water('towerLatentShare', ['Share of heat that evaporates', '', 'number'], { source: OURS, uses: ['tower'] }),
 
   reference('reference.cop', ['COP of the compressor', '', 'number'], {
     source: 'ours, 3.0; code minima near COP 2.8 to 3.2 (Washington WAC 51-11C-403329)',

@@ -5,11 +5,12 @@
 import type { Brief, Limit } from './brief.ts';
 import { type BriefFault, BriefFaultsError } from './brief-fault.ts';
 import { contradictions } from './contradictions.ts';
-import { Fields } from './fields.ts';
+import { Fields, type Range } from './fields.ts';
 import { ROOM_TEMP, readCaps, readHardLimit, readLimit, readTolerance } from './read-limit.ts';
 import { readMoney } from './read-money.ts';
 import { readSchedule } from './read-schedule.ts';
 import { readScore } from './read-score.ts';
+import { faultOfReported } from './reported.ts';
 
 export type BriefReading =
   | { readonly ok: true; readonly brief: Brief }
@@ -18,6 +19,11 @@ export type BriefReading =
 const EFFECTIVENESS = { min: 0, max: 1 };
 const FAN = { min: 0, max: 10, unit: 'W per L/s' };
 const PERCENT = { min: 0, max: 100, unit: '%' };
+/** Air that warms up by less would be without end. */
+const LEAST_RISE_K = 0.1;
+/** More heat than this for each part of work and the figures of the reference say nothing. */
+const LEAST_COP = 0.1;
+const LONGEST_ENTRY = 120;
 
 /**
  * Reads a brief.
@@ -45,7 +51,7 @@ export function readBrief(raw: unknown): BriefReading {
     limit,
   };
   fields.refuseOthers();
-  if (faults.length === 0) faults.push(...contradictions(brief));
+  faults.push(...contradictions(brief, faults));
   return faults.length === 0 ? { ok: true, brief } : { ok: false, faults };
 }
 
@@ -53,14 +59,14 @@ export function readBrief(raw: unknown): BriefReading {
 function readNames(fields: Fields): Pick<Brief, 'preset' | 'source'> {
   return {
     preset: fields.has('preset') ? fields.text('preset') : fields.text('id'),
-    source: fields.text('source', ''),
+    source: fields.raw('source') === '' ? '' : fields.text('source', ''),
   };
 }
 
 function readAirSide(fields: Fields, limit: Limit) {
   const roomHeated = limit.kind !== 'inlet' && limit.kind !== 'tower' && limit.kind !== 'turbine';
-  const rise = { min: 0, max: 40, over: roomHeated, unit: 'K' };
-  const itRise = { min: 0, max: 60, over: true, unit: 'K' };
+  const rise = { min: roomHeated ? LEAST_RISE_K : 0, max: 40, unit: 'K' };
+  const itRise = { min: LEAST_RISE_K, max: 60, unit: 'K' };
   return {
     phi: fields.choice('phi', ['constant', 'linear']),
     control: fields.choice('control', ['modulating', 'on-off']),
@@ -91,6 +97,8 @@ function readEquipment(fields: Fields, limit: Limit) {
   const tower = limit.kind === 'tower';
   const fans = fields.group('fanWPerLs');
   const reference = fields.group('reference');
+  const ofTower = (name: string, range: Range, byDefault: number): number | null =>
+    tower ? fields.number(name, range, byDefault) : fields.numberOrNull(name, range);
   const read = {
     fanWPerLs: {
       air: fans.number('air', FAN, 0.6),
@@ -105,12 +113,11 @@ function readEquipment(fields: Fields, limit: Limit) {
     cycles: fields.number('cycles', { min: 1, max: 20, over: true, unit: 'cycles of concentration' }, 4),
     driftPctOfCirculation: fields.number('driftPctOfCirculation', { min: 0, max: 1, unit: '%' }, tower ? 0.005 : 0),
     reference: {
-      cop: reference.number('cop', { min: 0, max: 20, over: true }, 3),
+      cop: reference.number('cop', { min: LEAST_COP, max: 20 }, 3),
       economy: reference.flag('economy', true),
     },
-    towerFanPumpWPerKw:
-      fields.numberOrNull('towerFanPumpWPerKw', { min: 0, max: 500, unit: 'W per kW' }) ?? (tower ? 25 : null),
-    towerLatentShare: fields.numberOrNull('towerLatentShare', { min: 0, max: 1 }) ?? (tower ? 0.9 : null),
+    towerFanPumpWPerKw: ofTower('towerFanPumpWPerKw', { min: 0, max: 500, unit: 'W per kW' }, 25),
+    towerLatentShare: ofTower('towerLatentShare', { min: 0, max: 1 }, 0.9),
   };
   fans.refuseOthers();
   reference.refuseOthers();
@@ -119,16 +126,22 @@ function readEquipment(fields: Fields, limit: Limit) {
 
 function readRequirement(fields: Fields) {
   const text = (entry: unknown, path: string): string => {
-    if (typeof entry === 'string' && entry.trim() !== '') return entry;
-    fields.fault(path, 'a text is needed');
+    if (typeof entry === 'string' && entry.trim() !== '' && entry.length <= LONGEST_ENTRY) return entry;
+    fields.fault(path, `a text of at most ${LONGEST_ENTRY} characters is needed`);
     return '';
+  };
+  const reported = (entry: unknown, path: string): string => {
+    const read = text(entry, path);
+    const fault = faultOfReported(read);
+    if (fault !== null) fields.fault(path, fault);
+    return read;
   };
   const stages = fields.list('stages', (stage) => stageOf(stage, fields));
   return {
     caps: readCaps(fields.group('caps')),
     lowerLimits: readCaps(fields.group('lowerLimits')),
     hardLimits: fields.list('hardLimits', (hard, path) => readHardLimit(fields.entry(hard, path))),
-    reported: fields.list('reported', text),
+    reported: fields.list('reported', reported),
     stages,
     tolerance: readTolerance(fields.group('tolerance')),
     gates: fields.list('gates', text),

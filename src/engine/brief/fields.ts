@@ -10,6 +10,9 @@ export interface Range {
   readonly unit?: string;
 }
 
+/** Long enough for a written reason, short enough to print. */
+const LONGEST_TEXT = 400;
+
 /**
  * Reads the fields of an unknown value one by one. A field that is wrong adds a fault and answers its fallback, so that
  * reading goes on and every fault is reported at once; a field that is never asked for is a fault too.
@@ -51,7 +54,7 @@ export class Fields {
     const value = this.raw(name);
     if (value === undefined && fallback !== undefined) return fallback;
     if (typeof value !== 'number' || !inRange(value, range)) {
-      this.fault(name, `a ${describeRange(range)} is needed${value === undefined ? '' : `, not ${show(value)}`}`);
+      this.fault(name, `a ${describeRange(range)} is needed${isAbsent(value) ? '' : `, not ${show(value)}`}`);
       return fallback ?? range.min;
     }
     return value;
@@ -64,8 +67,11 @@ export class Fields {
   text(name: string, fallback?: string): string {
     const value = this.raw(name);
     if (value === undefined && fallback !== undefined) return fallback;
-    if (typeof value === 'string' && value.trim() !== '') return value;
-    this.fault(name, `a text is needed${value === undefined ? '' : `, not ${show(value)}`}`);
+    if (typeof value === 'string' && value.trim() !== '' && value.length <= LONGEST_TEXT) return value;
+    this.fault(
+      name,
+      `a text of at most ${LONGEST_TEXT} characters is needed${isAbsent(value) ? '' : `, not ${show(value)}`}`,
+    );
     return fallback ?? '';
   }
 
@@ -112,6 +118,11 @@ export class Fields {
       if (!this.#asked.has(name)) this.fault(name, 'no such field');
     }
   }
+}
+
+/** Nothing was written there: a message has nothing to repeat. */
+function isAbsent(value: unknown): boolean {
+  return value === undefined || value === null || value === '';
 }
 
 export function isRecord(value: unknown): value is Readonly<Record<string, unknown>> {

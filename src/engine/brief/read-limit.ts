@@ -1,14 +1,12 @@
 import type { HardLimit, HumidityCaps, Limit, Tolerance } from './brief.ts';
+import { DERATE_RULE } from './brief-fields.ts';
 import type { Fields, Range } from './fields.ts';
 
 export const ROOM_TEMP: Range = { min: -50, max: 60, unit: '°C' };
 const PERCENT: Range = { min: 0, max: 100, over: true, unit: '%' };
 const INDEX: Range = { min: 0, max: 120, unit: 'index points' };
-const KELVIN: Range = { min: 0, max: 30, over: true, unit: 'K' };
+const KELVIN: Range = { min: 0.1, max: 30, unit: 'K' };
 const HOURS: Range = { min: 0, max: 8784, unit: 'h' };
-
-/** The derating that the method knows (method 3.1). */
-const DERATE_RULE = '1 K per 300 m above 900 m';
 
 const KINDS = ['fixed', 'adaptive', 'inlet', 'thi', 'shade-heat', 'tower', 'turbine'] as const;
 
@@ -48,15 +46,8 @@ function limitOfKind(limit: Fields, kind: Limit['kind']): Limit {
         exchangerK: limit.number('exchangerK', { min: 0, max: 30, unit: 'K' }, 0),
       };
     case 'turbine':
-      return readTurbine(limit);
+      return { kind, targetC: limit.number('targetC', ROOM_TEMP), floorC: limit.number('floorC', ROOM_TEMP) };
   }
-}
-
-function readTurbine(limit: Fields): Limit {
-  const targetC = limit.number('targetC', ROOM_TEMP);
-  const floorC = limit.number('floorC', ROOM_TEMP);
-  if (floorC > targetC) limit.fault('floorC', `the floor, ${floorC} °C, lies over the target, ${targetC} °C`);
-  return { kind: 'turbine', targetC, floorC };
 }
 
 export function readCaps(caps: Fields): HumidityCaps {

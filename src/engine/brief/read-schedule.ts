@@ -5,9 +5,11 @@ import { parseHours } from './schedule-hours.ts';
 type Schedule = Pick<Brief, 'clock' | 'months' | 'weekdays' | 'hours'>;
 
 export function readSchedule(fields: Fields): Schedule {
-  const hours = fields.text('hours', '0-24');
-  if (parseHours(hours) === null) {
-    fields.fault('hours', `opening and closing such as 8-18, at most 0-24, or daylight are needed, not "${hours}"`);
+  const written = fields.raw('hours') ?? '';
+  const hours = fields.has('hours') ? String(written) : '0-24';
+  if (typeof written !== 'string' || parseHours(hours) === null) {
+    const shown = written === '' ? '' : `, not "${hours.slice(0, 40)}"`;
+    fields.fault('hours', `opening and closing such as 8-18, at most 0-24, or daylight are needed${shown}`);
   }
   const dates = fields.list('dates', (date) => date);
   if (dates.length > 0) fields.fault('dates', 'single dates are not part of a schedule yet; leave the list empty');

@@ -18,8 +18,8 @@ import { type HumidityRule, type MonthlyChange, shiftedAndStretchedC, stretchOf 
 const MONTHS = 12;
 /** Steps in which a humidity ratio is packed. */
 const RATIO_STEPS_PER_UNIT = 500_000;
-/** A whole number of steps may come out of the arithmetic a little under itself. */
-const ROUNDING_STEPS = 1e-6;
+/** A whole number of steps may come out of the arithmetic under itself, by less than this; saturation may not be passed by more. */
+const ROUNDING_STEPS = 1e-9;
 
 export interface DeriveYearInput {
   readonly parent: WeatherYear;
@@ -28,26 +28,47 @@ export interface DeriveYearInput {
   readonly humidityRule: HumidityRule;
 }
 
+export interface DerivedYear {
+  readonly year: WeatherYear;
+  /** Hours whose humidity would have passed saturation and was held there. */
+  readonly cappedHours: number;
+}
+
+/** A change that makes no weather; the message names the months. */
+export class ImpossibleChange extends RangeError {
+  override readonly name = 'ImpossibleChange';
+  /** `month` 0 is January. */
+  readonly faults: readonly { readonly month: number; readonly message: string }[];
+
+  constructor(faults: ImpossibleChange['faults']) {
+    super(faults.map(({ month, message }) => `${monthNames[month]}: ${message}`).join('; '));
+    this.faults = faults;
+  }
+}
+
 /**
  * Same parent and changes, same packed columns. Missing stays missing and provenance is kept; an hour whose dry bulb and
  * humidity do not change keeps its very values; the dew point never lies above the dry bulb of an hour that does.
- * @throws RangeError unless there are twelve changes of finite numbers, on a parent that is derived itself, and where a
- * change would turn a month's day over or leave the range of weather; the message names the months
+ * @throws RangeError unless there are twelve changes of finite numbers, and on a parent that is derived itself;
+ * ImpossibleChange where a change would turn a month's day over or leave the range of weather
  */
-export function deriveYear({ parent, monthly, humidityRule }: DeriveYearInput): WeatherYear {
+export function deriveYear({ parent, monthly, humidityRule }: DeriveYearInput): DerivedYear {
   if (parent.kind === 'derived') throw new RangeError('a derived year has a measured parent: derive from that one');
   checkChanges(monthly);
   const before = unpackYear(parent.packed);
   const months = monthOfEachSlot(before.dryBulbC.length);
   const dryBulbC = changedDryBulbs(before.dryBulbC, months, monthly);
+  let cappedHours = 0;
   const humidityRatio = before.humidityRatio.map((ratio, slot) => {
     const { ratioChangePct = 0 } = monthly[(months[slot] ?? 1) - 1] ?? {};
     const factor = humidityRule === 'ratio-scaled' ? 1 + ratioChangePct / 100 : 1;
-    return changedRatio({ before, slot, ratio, toC: dryBulbC[slot] ?? Number.NaN, factor, humidityRule });
+    const changed = changedRatio({ before, slot, ratio, toC: dryBulbC[slot] ?? Number.NaN, factor, humidityRule });
+    if (changed.capped) cappedHours += 1;
+    return changed.ratio;
   });
   const { pressurePa } = before;
   const packed = packYear({ dryBulbC, humidityRatio, pressurePa, flags: parent.packed.flags });
-  return { kind: 'derived', year: null, utcOffsetMin: parent.utcOffsetMin, packed };
+  return { year: { kind: 'derived', year: null, utcOffsetMin: parent.utcOffsetMin, packed }, cappedHours };
 }
 
 function checkChanges(monthly: readonly MonthlyChange[]): void {
@@ -63,11 +84,11 @@ function checkChanges(monthly: readonly MonthlyChange[]): void {
 /** In whole hundredths, as they are packed, so that humidity is held to the dry bulb that is kept. */
 function changedDryBulbs(dryBulbC: Float64Array, months: Uint8Array, monthly: readonly MonthlyChange[]): Float64Array {
   const climates = monthClimates(dryBulbC);
-  const faults: string[] = [];
+  const faults: { month: number; message: string }[] = [];
   const moves = monthly.map((change, month) => {
     const climate = climates[month] ?? null;
     const stretch = climate === null ? 0 : stretchOf(climate, change);
-    if (stretch <= -1) faults.push(`${monthNames[month]}: the swing of its days would vanish or turn over`);
+    if (stretch <= -1) faults.push({ month, message: 'the swing of its days would vanish or turn over' });
     return { meanC: climate?.meanC ?? 0, shiftK: change.shiftK, stretch };
   });
   const changed = dryBulbC.map((value, slot) => {
@@ -76,11 +97,11 @@ function changedDryBulbs(dryBulbC: Float64Array, months: Uint8Array, monthly: re
     return hundredths(shiftedAndStretchedC(value, move)) / 100;
   });
   faults.push(...beyondWeather(changed, months));
-  if (faults.length > 0) throw new RangeError(faults.join('; '));
+  if (faults.length > 0) throw new ImpossibleChange(faults);
   return changed;
 }
 
-function beyondWeather(changed: Float64Array, months: Uint8Array): readonly string[] {
+function beyondWeather(changed: Float64Array, months: Uint8Array): ImpossibleChange['faults'] {
   const furthest = new Map<number, number>();
   for (const [slot, value] of changed.entries()) {
     const month = months[slot] ?? 1;
@@ -88,7 +109,10 @@ function beyondWeather(changed: Float64Array, months: Uint8Array): readonly stri
       furthest.set(month, Math.abs(value) > Math.abs(furthest.get(month) ?? 0) ? value : (furthest.get(month) ?? 0));
     }
   }
-  return [...furthest].map(([month, value]) => `${monthNames[month - 1]}: an hour would reach ${value.toFixed(1)} °C`);
+  return [...furthest].map(([month, value]) => ({
+    month: month - 1,
+    message: `an hour would reach ${value.toFixed(1)} °C`,
+  }));
 }
 
 function changedRatio(hour: {
@@ -98,13 +122,13 @@ function changedRatio(hour: {
   toC: number;
   factor: number;
   humidityRule: HumidityRule;
-}): number {
+}): { readonly ratio: number; readonly capped: boolean } {
   const { before, slot, ratio, toC, factor } = hour;
   const fromC = before.dryBulbC[slot] ?? Number.NaN;
   const pressurePa = before.pressurePa[slot] ?? Number.NaN;
   const same = hundredths(fromC) === hundredths(toC) && factor === 1;
   // Without a dry bulb or a pressure the hour is missing whatever its humidity.
-  if (same || Number.isNaN(ratio + fromC + pressurePa)) return ratio;
+  if (same || Number.isNaN(ratio + fromC + pressurePa)) return { ratio, capped: false };
   const wanted =
     hour.humidityRule === 'rh-kept'
       ? humidityRatioFromRelativeHumidity({
@@ -117,6 +141,8 @@ function changedRatio(hour: {
   const wantedSteps = wanted * RATIO_STEPS_PER_UNIT;
   const saturatedSteps = saturationHumidityRatio(toC, pressurePa) * RATIO_STEPS_PER_UNIT;
   // Packed to the nearest step it could pass saturation again, so near it the ratio goes down to a whole step.
-  if (wantedSteps + 0.5 < saturatedSteps) return wanted;
-  return Math.floor(Math.min(wantedSteps, saturatedSteps) + ROUNDING_STEPS) / RATIO_STEPS_PER_UNIT;
+  if (wantedSteps + 0.5 < saturatedSteps) return { ratio: wanted, capped: false };
+  const keptSteps = Math.floor(Math.min(wantedSteps, saturatedSteps) + ROUNDING_STEPS);
+  // Less than a step is what packing takes anyway.
+  return { ratio: keptSteps / RATIO_STEPS_PER_UNIT, capped: wantedSteps >= saturatedSteps + 1 };
 }

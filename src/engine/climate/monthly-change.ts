@@ -9,6 +9,14 @@ export interface MonthlyChange {
   readonly ratioChangePct: number;
 }
 
+/** What a change may come to. */
+export const monthlyChangeLimits = {
+  shiftK: { low: -20, high: 20, unit: 'K' },
+  maxShiftK: { low: -25, high: 25, unit: 'K' },
+  minShiftK: { low: -25, high: 25, unit: 'K' },
+  ratioChangePct: { low: -90, high: 200, unit: '%' },
+} as const satisfies Readonly<Record<keyof MonthlyChange, { low: number; high: number; unit: string }>>;
+
 /** What becomes of the humidity: w kept, relative humidity kept, or w scaled by the month's change. */
 export const humidityRules = ['ratio-kept', 'rh-kept', 'ratio-scaled'] as const;
 export type HumidityRule = (typeof humidityRules)[number];
@@ -39,4 +47,34 @@ export function shiftedAndStretchedC(
   month: { readonly meanC: number; readonly shiftK: number; readonly stretch: number },
 ): number {
   return dryBulbC + month.shiftK + month.stretch * (dryBulbC - month.meanC);
+}
+
+/** Whether a month's days are drawn apart or together: its daily highest and lowest rise by different amounts. */
+export function stretches({ maxShiftK, minShiftK }: MonthlyChange): boolean {
+  return maxShiftK !== minShiftK;
+}
+
+/** One value of twelve changes that cannot be used. */
+export interface MonthlyChangeValueFault {
+  /** 0 is January. */
+  readonly month: number;
+  readonly field: keyof MonthlyChange;
+  readonly message: string;
+}
+
+const CHANGE_FIELDS = ['shiftK', 'maxShiftK', 'minShiftK', 'ratioChangePct'] as const;
+
+/** Every value that is no number or lies beyond its limits. */
+export function monthlyChangeFaults(monthly: readonly MonthlyChange[]): readonly MonthlyChangeValueFault[] {
+  return monthly.flatMap((change, month) =>
+    CHANGE_FIELDS.flatMap((field) => {
+      const { low, high, unit } = monthlyChangeLimits[field];
+      const value = change[field];
+      if (value >= low && value <= high) return [];
+      const message = Number.isNaN(value)
+        ? 'This is no number.'
+        : `${value} ${unit} lies outside ${low} to ${high} ${unit}.`;
+      return [{ month, field, message }];
+    }),
+  );
 }

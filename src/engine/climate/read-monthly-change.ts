@@ -9,7 +9,7 @@
  */
 import { monthNames } from '../reduction/calendar.ts';
 import { quoted } from '../weather-files/text/number-field.ts';
-import type { MonthlyChange } from './monthly-change.ts';
+import { type MonthlyChange, monthlyChangeLimits } from './monthly-change.ts';
 
 /** One thing wrong with a table, by line and column, both from 1; null where it concerns no one place. */
 export interface MonthlyChangeFault {
@@ -33,10 +33,10 @@ type ColumnName = (typeof COLUMNS)[number];
 type ValueColumn = Exclude<ColumnName, 'month'>;
 
 const LIMITS: Readonly<Record<ValueColumn, { low: number; high: number; unit: string }>> = {
-  shift_k: { low: -20, high: 20, unit: 'K' },
-  max_shift_k: { low: -25, high: 25, unit: 'K' },
-  min_shift_k: { low: -25, high: 25, unit: 'K' },
-  ratio_change_pct: { low: -90, high: 200, unit: '%' },
+  shift_k: monthlyChangeLimits.shiftK,
+  max_shift_k: monthlyChangeLimits.maxShiftK,
+  min_shift_k: monthlyChangeLimits.minShiftK,
+  ratio_change_pct: monthlyChangeLimits.ratioChangePct,
 };
 const MONTHS = 12;
 /** Twelve lines are a few hundred characters; a weather file brought by mistake is not read to its end. */

@@ -6,6 +6,7 @@ import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventio
 import { isLeapYear } from '../reduction/calendar.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
 import type { Position } from './daylight.ts';
+import { zoneOffset } from './zone-offset.ts';
 
 /** From this slot on (0 first), civil time is so many minutes ahead of UTC. */
 export interface CivilOffset {
@@ -113,33 +114,4 @@ function civilOffsets(clock: ResolvedClock, zone: string): CivilOffset[] {
     current = next;
   }
   return offsets;
-}
-
-/** A function from an instant, ms since 1970 UTC, to the zone's lead on UTC, min. */
-function zoneOffset(zone: string): (instantMs: number) => number {
-  const format = zoneFormat(zone);
-  return (instantMs) => {
-    const field: Record<string, number> = {};
-    for (const part of format.formatToParts(instantMs)) field[part.type] = Number(part.value);
-    const { year = 0, month = 1, day = 1, hour = 0, minute = 0, second = 0 } = field;
-    const wallMs = Date.UTC(year, month - 1, day, hour, minute, second);
-    return Math.round((wallMs - instantMs) / MS_PER_MIN);
-  };
-}
-
-function zoneFormat(zone: string): Intl.DateTimeFormat {
-  try {
-    return new Intl.DateTimeFormat('en-US', {
-      timeZone: zone,
-      hourCycle: 'h23',
-      year: 'numeric',
-      month: 'numeric',
-      day: 'numeric',
-      hour: 'numeric',
-      minute: 'numeric',
-      second: 'numeric',
-    });
-  } catch (cause) {
-    throw new RangeError(`time zone not known: ${zone}`, { cause });
-  }
 }

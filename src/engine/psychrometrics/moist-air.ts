@@ -3,6 +3,7 @@
  * Good from -100 to 200 °C; under 0.7 % from real gas at 101.325 kPa between -50 and 50 °C (that chapter, after Kuehn 1998).
  */
 import { psychrolib } from './psychrolib-si.ts';
+import { rememberedPressures } from './remembered-pressures.ts';
 import { tabledDewPointC } from './saturation-table.ts';
 
 /** What a humidity below 0 °C stands for: saturation over liquid water or over ice. */
@@ -22,13 +23,14 @@ const DRY_AIR_J_PER_KG_K = 287.042;
 /** PsychroLib's floor. */
 const DRIEST_HUMIDITY_RATIO = 1e-7;
 
-/** Saturation pressure, Pa, at a temperature, °C: over ice to 0.01 °C, over water above (eq. 5 and 6). */
-export function saturationPressurePa(tempC: number): number {
-  return psychrolib.GetSatVapPres(tempC);
-}
+/**
+ * Saturation pressure, Pa, at a temperature, °C: over ice to 0.01 °C, over water above (eq. 5 and 6).
+ * @throws Error outside -100 to 200 °C
+ */
+export const saturationPressurePa = rememberedPressures((tempC) => psychrolib.GetSatVapPres(tempC));
 
 /** Saturation pressure, Pa, over liquid water at any temperature, °C, supercooled too (eq. 6 continued below 0 °C). */
-export function saturationPressureOverWaterPa(tempC: number): number {
+export const saturationPressureOverWaterPa = rememberedPressures((tempC) => {
   const k = tempC + ZERO_CELSIUS_K;
   return Math.exp(
     -5.8002206e3 / k +
@@ -38,16 +40,21 @@ export function saturationPressureOverWaterPa(tempC: number): number {
       1.4452093e-8 * k ** 3 +
       6.5459673 * Math.log(k),
   );
-}
+});
 
 /** Saturation pressure, Pa, in the phase that a file's humidity stands for below 0 °C. */
 export function saturationPressureInPhasePa(tempC: number, belowZero: BelowZeroPhase): number {
   return belowZero === 'water' && tempC < 0 ? saturationPressureOverWaterPa(tempC) : saturationPressurePa(tempC);
 }
 
-/** Humidity ratio, kg/kg, of saturated air (over ice below 0 °C). */
+/** Humidity ratio, kg/kg, of saturated air (over ice below 0 °C; eq. 36). */
 export function saturationHumidityRatio(tempC: number, pressurePa: number): number {
-  return psychrolib.GetSatHumRatio(tempC, pressurePa);
+  return humidityRatioOfVapour(saturationPressurePa(tempC), pressurePa);
+}
+
+/** Humidity ratio, kg/kg, of air whose vapour has a pressure, Pa (eq. 20), with PsychroLib's floor and its order of steps. */
+function humidityRatioOfVapour(vapourPa: number, pressurePa: number): number {
+  return Math.max((MASS_RATIO * vapourPa) / (pressurePa - vapourPa), DRIEST_HUMIDITY_RATIO);
 }
 
 /**
@@ -61,7 +68,7 @@ export function humidityRatioFromDewPoint(input: {
   belowZero: BelowZeroPhase;
 }): number {
   const vapourPa = saturationPressureInPhasePa(input.dewPointC, input.belowZero);
-  const humidityRatio = psychrolib.GetHumRatioFromVapPres(vapourPa, input.pressurePa);
+  const humidityRatio = humidityRatioOfVapour(vapourPa, input.pressurePa);
   return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
 }
 
@@ -76,13 +83,13 @@ export function humidityRatioFromRelativeHumidity(input: {
   belowZero: BelowZeroPhase;
 }): number {
   const vapourPa = (input.relativeHumidityPct / 100) * saturationPressureInPhasePa(input.dryBulbC, input.belowZero);
-  const humidityRatio = psychrolib.GetHumRatioFromVapPres(vapourPa, input.pressurePa);
+  const humidityRatio = humidityRatioOfVapour(vapourPa, input.pressurePa);
   return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
 }
 
 /** Relative humidity, % (over ice below 0 °C), of a state; may pass 100 when the state is supersaturated. */
 export function relativeHumidityPct(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
-  return 100 * psychrolib.GetRelHumFromHumRatio(dryBulbC, humidityRatio, pressurePa);
+  return 100 * (vapourPressurePa(humidityRatio, pressurePa) / saturationPressurePa(dryBulbC));
 }
 
 /** Relative humidity, %, that a dew point means at a dry bulb, both saturation pressures in one phase. */

@@ -1,6 +1,10 @@
-import { SLOPE_PER_DIFFERENCE, saturationPlace, saturationTable } from './saturation-table.ts';
+import { FIRST_NODE_C, SLOPE_PER_DIFFERENCE, saturationTable } from './saturation-table.ts';
 import type { WetSurface } from './wet-surface.ts';
 
+/** Constants of this module, so that the compiler knows them: what is imported it would load at every step. */
+const table = saturationTable;
+const firstNodeC = FIRST_NODE_C;
+const slopePerDifference = SLOPE_PER_DIFFERENCE;
 /** Ratio of the molar masses of water and dry air (ASHRAE Fundamentals 2017 ch. 1 eq. 20). */
 const MASS_RATIO = 0.621945;
 
@@ -23,16 +27,16 @@ export function newtonStepC(
   sensibleKJPerKgK: number,
   heatKJPerKg: number,
 ): number {
-  const place = saturationPlace(guessC);
+  const place = (guessC - firstNodeC) * slopePerDifference;
   const node = place | 0;
-  const difference = saturationTable[2 * node + 1] ?? 0;
-  const saturationPa = (saturationTable[2 * node] ?? 0) + (place - node) * difference;
+  const difference = table[2 * node + 1] ?? 0;
+  const saturationPa = (table[2 * node] ?? 0) + (place - node) * difference;
   const airPa = pressurePa - saturationPa;
   const latent = surface.latentKJPerKg + surface.latentSlopeKJPerKgK * guessC;
   const vapour = MASS_RATIO * saturationPa;
   const balance = airPa * (latent * vapour + (sensibleKJPerKgK * guessC - heatKJPerKg) * airPa);
   const slope =
     airPa * (surface.latentSlopeKJPerKgK * vapour + sensibleKJPerKgK * airPa) +
-    latent * MASS_RATIO * SLOPE_PER_DIFFERENCE * difference * pressurePa;
+    latent * MASS_RATIO * slopePerDifference * difference * pressurePa;
   return guessC - balance / slope;
 }

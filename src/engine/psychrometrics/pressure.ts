@@ -4,6 +4,7 @@ import { psychrolib } from './psychrolib-si.ts';
 const LAPSE_K_PER_M = 0.0065;
 const ZERO_CELSIUS_K = 273.15;
 const SEA_LEVEL_EXPONENT = 5.2559;
+const STANDARD_SEA_LEVEL_K = 288.15;
 
 /**
  * Pressure of the standard atmosphere, Pa, at an elevation, m (negative below sea level).
@@ -21,4 +22,14 @@ export function standardPressurePa(elevationM: number): number {
 export function stationPressurePa(input: { seaLevelPressurePa: number; dryBulbC: number; elevationM: number }): number {
   const dryBulbK = input.dryBulbC + ZERO_CELSIUS_K;
   return input.seaLevelPressurePa * (dryBulbK / (dryBulbK + LAPSE_K_PER_M * input.elevationM)) ** SEA_LEVEL_EXPONENT;
+}
+
+/**
+ * Station pressure, Pa, from an altimeter setting (QNH), Pa: the setting is the pressure at sea level of a standard atmosphere
+ * that has the station's pressure at its elevation, so (QNH / p0)^a - (p / p0)^a = L z / T0 with a = 1 / 5.2559.
+ */
+export function stationPressureOfAltimeterPa(altimeterPa: number, elevationM: number): number {
+  const standardPa = standardPressurePa(0);
+  const drop = (LAPSE_K_PER_M * elevationM) / STANDARD_SEA_LEVEL_K;
+  return standardPa * ((altimeterPa / standardPa) ** (1 / SEA_LEVEL_EXPONENT) - drop) ** SEA_LEVEL_EXPONENT;
 }

@@ -14,8 +14,8 @@ const TRIPLE_POINT_C = 0.01;
 const COLDEST_K_BELOW = 90;
 const WARMEST_K_ABOVE = 70;
 
-/** Temperature of the table's first node and the number of nodes per kelvin, for `saturationPlace`. */
-const FIRST_NODE_C = TRIPLE_POINT_C - COLDEST_K_BELOW;
+/** Temperature of the table's first node, °C. */
+export const FIRST_NODE_C = TRIPLE_POINT_C - COLDEST_K_BELOW;
 const NODES = (COLDEST_K_BELOW + WARMEST_K_ABOVE) * NODES_PER_K;
 
 /**
@@ -29,11 +29,11 @@ export const saturationTable = floatColumn(2 * NODES, (index) => {
 });
 
 /** Where a temperature, °C, -89.9 to 69.9, falls in the table: nodes from the first one on, with a fraction. */
-export function saturationPlace(tempC: number): number {
+function saturationPlace(tempC: number): number {
   return (tempC - FIRST_NODE_C) * NODES_PER_K;
 }
 
-/** From the difference of two nodes, Pa, to a slope, Pa/K. */
+/** From the difference of two nodes, Pa, to a slope, Pa/K: nodes per kelvin. */
 export const SLOPE_PER_DIFFERENCE = NODES_PER_K;
 
 const COLDEST_TABLED_C = FIRST_NODE_C;

@@ -15,9 +15,10 @@
 import { bisectedWetBulbC } from './bisected-wet-bulb.ts';
 import { saturationPressurePa } from './moist-air.ts';
 import { newtonStepC } from './newton-step.ts';
-import { type GuessCurves, guessC, guessCurves } from './wet-bulb-guess.ts';
-import { DRY_AIR_KJ_PER_KG_K, ICE, WATER } from './wet-surface.ts';
+import { drawCurve, GUESSED_ICE, GUESSED_WATER, type GuessedSurface, guessC } from './wet-bulb-guess.ts';
 
+/** ASHRAE Fundamentals 2017 ch. 1 eq. 30. */
+const DRY_AIR_KJ_PER_KG_K = 1.006;
 const VAPOUR_KJ_PER_KG_K = 1.86;
 const LATENT_HEAT_KJ_PER_KG = 2501;
 /** 2501 times the humidity ratio of saturated air at 0 °C is this over (p - 611 Pa). */
@@ -31,8 +32,9 @@ const SATURATED_WITHIN_K = 5e-5;
 /** Further from 0 °C than this, guess and root lie on one side of the bend in saturation pressure. */
 const BEND_WITHIN_K = 0.05;
 
-const overWater = guessCurves(WATER);
-const overIce = guessCurves(ICE);
+/** Constants of this module, so that the compiler knows them: what is imported it would load at every state. */
+const overWater = GUESSED_WATER;
+const overIce = GUESSED_ICE;
 
 /**
  * Thermodynamic wet bulb, °C, of a state; never above the dry bulb.
@@ -72,32 +74,47 @@ export function wetBulbColumn(
   return into;
 }
 
+/** Kept short: V8 compiles this, the guess and the step into the loop over a year only while they are few instructions in all. */
 function wetBulbOfState(dryBulbC: number, humidityRatio: number, pressurePa: number): number {
   const ratio = Math.max(humidityRatio, DRIEST_HUMIDITY_RATIO);
   const enthalpy = DRY_AIR_KJ_PER_KG_K * dryBulbC + ratio * (LATENT_HEAT_KJ_PER_KG + VAPOUR_KJ_PER_KG_K * dryBulbC);
   const water = enthalpy * (pressurePa - SATURATION_AT_ZERO_PA) >= HEAT_AT_ZERO;
-  const highC = water ? dryBulbC : Math.min(dryBulbC, 0);
-  const root = rootC(water ? overWater : overIce, highC, ratio, pressurePa, enthalpy);
-  const clear = water ? Math.max(root, 0) : Math.min(root, 0);
+  const surface = water ? overWater : overIce;
+  const heatKJPerKg = enthalpy + surface.fusionKJPerKg * ratio;
+  const vapourKJPerKgK = surface.surfaceKJPerKgK * ratio;
+  const guess = guessC(surface, heatKJPerKg, vapourKJPerKgK, pressurePa);
+  const root =
+    Math.abs(guess) > BEND_WITHIN_K
+      ? newtonStepC(surface, guess, pressurePa, DRY_AIR_KJ_PER_KG_K + vapourKJPerKgK, heatKJPerKg)
+      : rareRootC({ surface, guess, dryBulbC, humidityRatio: ratio, pressurePa, heatKJPerKg });
+  // Over water no root lies below 0 °C, over ice none above.
+  const clear = root > 0 === water ? root : 0;
   return clear < dryBulbC - SATURATED_WITHIN_K ? clear : dryBulbC;
 }
 
-function rootC(
-  curves: GuessCurves,
-  highC: number,
-  humidityRatio: number,
-  pressurePa: number,
-  enthalpyKJPerKg: number,
-): number {
-  const { surface } = curves;
-  const heatKJPerKg = enthalpyKJPerKg + surface.fusionKJPerKg * humidityRatio;
+/** The root when the guess lies by the bend in saturation pressure, or there is none: NaN. */
+function rareRootC(state: {
+  surface: GuessedSurface;
+  guess: number;
+  dryBulbC: number;
+  humidityRatio: number;
+  pressurePa: number;
+  heatKJPerKg: number;
+}): number {
+  const { surface, dryBulbC, humidityRatio, pressurePa, heatKJPerKg } = state;
   const vapourKJPerKgK = surface.surfaceKJPerKgK * humidityRatio;
-  const guess = guessC(curves, heatKJPerKg, vapourKJPerKgK, pressurePa);
-  if (Number.isNaN(guess)) return bisectedWetBulbC({ surface, highC, humidityRatio, pressurePa, heatKJPerKg });
-  const sensibleKJPerKgK = DRY_AIR_KJ_PER_KG_K + vapourKJPerKgK;
+  let x = state.guess;
+  if (Number.isNaN(x) && drawCurve(surface, heatKJPerKg, pressurePa)) {
+    x = guessC(surface, heatKJPerKg, vapourKJPerKgK, pressurePa);
+  }
+  if (Number.isNaN(x)) {
+    const highC = surface === overWater ? dryBulbC : Math.min(dryBulbC, 0);
+    return bisectedWetBulbC({ surface, highC, humidityRatio, pressurePa, heatKJPerKg });
+  }
   // So close to 0.01 °C the first step may take the slope of the other side of the bend from ice to water: a second mends it.
-  const steps = Math.abs(guess) > BEND_WITHIN_K ? 1 : 2;
-  let x = guess;
-  for (let step = 0; step < steps; step++) x = newtonStepC(surface, x, pressurePa, sensibleKJPerKgK, heatKJPerKg);
+  const steps = Math.abs(x) > BEND_WITHIN_K ? 1 : 2;
+  for (let step = 0; step < steps; step++) {
+    x = newtonStepC(surface, x, pressurePa, DRY_AIR_KJ_PER_KG_K + vapourKJPerKgK, heatKJPerKg);
+  }
   return x;
 }

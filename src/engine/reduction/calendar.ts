@@ -46,7 +46,13 @@ export function daysInMonth(month: number, leap: boolean): number {
 
 /** First slot of each month and, last, the number of slots: 13 values. */
 export function monthStartSlots(slotCount: number): readonly number[] {
-  const leap = hasLeapDay(slotCount);
+  return hasLeapDay(slotCount) ? startsWithLeapDay : startsWithout;
+}
+
+const startsWithout = makeStarts(false);
+const startsWithLeapDay = makeStarts(true);
+
+function makeStarts(leap: boolean): readonly number[] {
   const starts = [0];
   for (let month = 1; month <= MONTHS; month++) {
     starts.push((starts[month - 1] ?? 0) + daysInMonth(month, leap) * HOURS_PER_DAY);

@@ -28,8 +28,7 @@ export function depressionHistogram(depression: Int32Array): Uint16Array {
     const value = depression[slot] ?? -1;
     if (value < 0) continue;
     const bin = Math.min(DEPRESSION_BINS - 1, Math.floor(value / HUNDREDTHS_PER_BIN));
-    const row = ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
-    const at = row * DEPRESSION_BINS + bin;
+    const at = cellOf(months, slot) * DEPRESSION_BINS + bin;
     histogram[at] = (histogram[at] ?? 0) + 1;
   }
   return histogram;
@@ -61,33 +60,42 @@ export interface HoursAtLeast {
 /** Hours with a depression of at least 1, 2, .. 25 K. */
 export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
   const scale = cellScale(depression);
-  return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => {
-    const atLeastK = index + 1;
-    let hours = 0;
-    let scaled = 0;
-    for (let slot = 0; slot < depression.length; slot++) {
-      if ((depression[slot] ?? -1) < atLeastK * HUNDREDTHS_PER_BIN) continue;
-      hours++;
-      scaled += scale?.[slot] ?? 0;
+  const months = monthOfEachSlot(depression.length);
+  const hours = new Int32Array(HIGHEST_STEP_K + 1);
+  const scaled = new Float64Array(HIGHEST_STEP_K + 1);
+  for (let slot = 0; slot < depression.length; slot++) {
+    const reachedK = Math.min(HIGHEST_STEP_K, Math.floor((depression[slot] ?? -1) / HUNDREDTHS_PER_BIN));
+    const weight = scale?.[cellOf(months, slot)] ?? 0;
+    for (let atLeastK = 1; atLeastK <= reachedK; atLeastK++) {
+      hours[atLeastK] = (hours[atLeastK] ?? 0) + 1;
+      scaled[atLeastK] = (scaled[atLeastK] ?? 0) + weight;
     }
-    return { atLeastK, hours, scaledHours: scale === null ? null : scaled };
-  });
+  }
+  return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => ({
+    atLeastK: index + 1,
+    hours: hours[index + 1] ?? 0,
+    scaledHours: scale === null ? null : (scaled[index + 1] ?? 0),
+  }));
+}
+
+/** Place of a slot among the cells of month and hour of day. */
+function cellOf(months: Uint8Array, slot: number): number {
+  return ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
 }
 
 /**
- * What each known hour stands for: the hours of its month and hour of day over those that are known. A file that lacks only
- * nights must not look hotter or drier. Null when some cell is wholly unknown and nothing can stand for it.
+ * What each known hour stands for, by month and hour of day: the hours of the cell over those that are known. A file that lacks
+ * only nights must not look hotter or drier. Null when some cell is wholly unknown and nothing can stand for it.
  */
 function cellScale(depression: Int32Array): Float64Array | null {
   const months = monthOfEachSlot(depression.length);
-  const cellOf = (slot: number) => ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
   const all = new Float64Array(MONTHS * HOURS_PER_DAY);
   const known = new Float64Array(MONTHS * HOURS_PER_DAY);
   for (let slot = 0; slot < depression.length; slot++) {
-    const cell = cellOf(slot);
+    const cell = cellOf(months, slot);
     all[cell] = (all[cell] ?? 0) + 1;
     if ((depression[slot] ?? -1) >= 0) known[cell] = (known[cell] ?? 0) + 1;
   }
   if (known.includes(0)) return null;
-  return floatColumn(depression.length, (slot) => (all[cellOf(slot)] ?? 0) / (known[cellOf(slot)] ?? 1));
+  return floatColumn(all.length, (cell) => (all[cell] ?? 0) / (known[cell] ?? 1));
 }

@@ -1,5 +1,4 @@
 /** Columns that follow from the packed ones: derived when they are needed, never a stored fact. */
-import { floatColumn } from '../float-column.ts';
 import { dewPointC } from '../psychrometrics/moist-air.ts';
 import { wetBulbColumn as wetBulbOfColumns } from '../psychrometrics/wet-bulb.ts';
 import { unpackYear, type YearColumns } from './packed-columns.ts';
@@ -12,27 +11,25 @@ export function wetBulbColumn(year: PackedYear): Float64Array {
 }
 
 /** Dew point, °C (frost point below 0 °C), of every slot; NaN where something is missing. */
-export function dewPointColumn(year: PackedYear): Float64Array {
-  return ofEachState(unpackYear(year), dewPointC);
-}
-
-function ofEachState(
-  columns: YearColumns,
-  property: (dryBulbC: number, humidityRatio: number, pressurePa: number) => number,
-): Float64Array {
-  return floatColumn(columns.dryBulbC.length, (slot) => {
+export function dewPointColumn(columns: YearColumns): Float64Array {
+  const column = new Float64Array(columns.dryBulbC.length).fill(Number.NaN);
+  for (let slot = 0; slot < column.length; slot++) {
     const dryBulbC = columns.dryBulbC[slot] ?? Number.NaN;
     const humidityRatio = columns.humidityRatio[slot] ?? Number.NaN;
     const pressurePa = columns.pressurePa[slot] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + humidityRatio + pressurePa)) return Number.NaN;
-    return property(dryBulbC, humidityRatio, pressurePa);
-  });
+    if (Number.isNaN(dryBulbC + humidityRatio + pressurePa)) continue;
+    column[slot] = dewPointC(dryBulbC, humidityRatio, pressurePa);
+  }
+  return column;
 }
 
-/** Wet-bulb depression, K, of every slot: dry bulb less wet bulb, 0 when saturated; NaN where it is not known. */
-export function depressionColumn(year: PackedYear, wetBulb: Float64Array): Float64Array {
-  const { dryBulbC } = unpackYear(year);
-  return floatColumn(wetBulb.length, (slot) => (dryBulbC[slot] ?? Number.NaN) - (wetBulb[slot] ?? Number.NaN));
+/** Wet-bulb depression, K, of every slot: dry bulb less wet bulb, both in °C, 0 when saturated; NaN where it is not known. */
+export function depressionColumn(dryBulbC: Float64Array, wetBulbC: Float64Array): Float64Array {
+  const column = new Float64Array(wetBulbC.length);
+  for (let slot = 0; slot < column.length; slot++) {
+    column[slot] = (dryBulbC[slot] ?? Number.NaN) - (wetBulbC[slot] ?? Number.NaN);
+  }
+  return column;
 }
 
 /** The wet bulb is found to this, in hundredths of a kelvin: so close to a limit is a tie, and a tie is met. */

@@ -1,4 +1,5 @@
 import { hundredths } from '../conventions.ts';
+import { ValueCounts } from './value-counts.ts';
 
 /** Shares of the hours of a year, %. */
 export const DESIGN_PERCENTS = [0.4, 1, 2, 5, 10] as const;
@@ -19,6 +20,8 @@ export interface DesignValues {
 }
 
 const COINCIDENT_WITHIN_HUNDREDTHS = 50;
+/** Stands for a value that is not known. */
+const UNKNOWN = -(2 ** 31);
 
 /**
  * The value at place floor(percent x N / 100), counted from 0 downwards, of the N known values: at most so many percent of
@@ -27,11 +30,14 @@ const COINCIDENT_WITHIN_HUNDREDTHS = 50;
  * @throws RangeError without values
  */
 export function valueAtPercent(downwards: ArrayLike<number>, percent: number): number {
-  // Tenths of a percent, since 0.4 x 8760 / 100 in floating point may fall short of a whole number.
-  const place = Math.floor((Math.round(percent * 10) * downwards.length) / 1000);
-  const value = downwards[place];
+  const value = downwards[placeAtPercent(percent, downwards.length)];
   if (value === undefined) throw new RangeError(`no value at ${percent} % of ${downwards.length} hours`);
   return value;
+}
+
+function placeAtPercent(percent: number, hours: number): number {
+  // Tenths of a percent, since 0.4 x 8760 / 100 in floating point may fall short of a whole number.
+  return Math.floor((Math.round(percent * 10) * hours) / 1000);
 }
 
 /** Design values of a year; no rows for a quantity that is nowhere known. Columns are in °C, slot order, NaN where missing. */
@@ -49,25 +55,20 @@ export function designValues(columns: {
 }
 
 function designRows(quantity: Float64Array, coincident: Float64Array): readonly DesignRow[] {
-  const known: { value: number; other: number }[] = [];
-  for (let slot = 0; slot < quantity.length; slot++) {
+  const values = new Int32Array(quantity.length).fill(UNKNOWN);
+  const others = new Int32Array(quantity.length);
+  for (let slot = 0; slot < values.length; slot++) {
     const value = quantity[slot] ?? Number.NaN;
     const other = coincident[slot] ?? Number.NaN;
-    if (!Number.isNaN(value + other)) known.push({ value: hundredths(value), other: hundredths(other) });
+    if (Number.isNaN(value + other)) continue;
+    values[slot] = hundredths(value);
+    others[slot] = hundredths(other);
   }
-  if (known.length === 0) return [];
-  const downwards = Int32Array.from(known, ({ value }) => value)
-    .sort()
-    .reverse();
+  const counts = new ValueCounts(values, UNKNOWN + 1, others);
+  if (counts.known === 0) return [];
   return DESIGN_PERCENTS.map((percent) => {
-    const value = valueAtPercent(downwards, percent);
-    let hours = 0;
-    let sum = 0;
-    for (const hour of known) {
-      if (Math.abs(hour.value - value) > COINCIDENT_WITHIN_HUNDREDTHS) continue;
-      hours++;
-      sum += hour.other;
-    }
-    return { percent, valueC: value / 100, coincidentC: Math.round(sum / hours) / 100 };
+    const value = counts.downwards(placeAtPercent(percent, counts.known));
+    const coincidentMean = counts.meanCompanion(value, COINCIDENT_WITHIN_HUNDREDTHS);
+    return { percent, valueC: value / 100, coincidentC: Math.round(coincidentMean) / 100 };
   });
 }

@@ -18,12 +18,20 @@ export interface YearColumns {
 
 /** Packs hourly values; those beyond the range of a column (a humidity ratio over 0.131) are set to its end. */
 export function packYear(columns: YearColumns & { readonly flags: Uint8Array }): PackedYear {
+  const dryBulb = new Int16Array(columns.dryBulbC.length);
+  for (let slot = 0; slot < dryBulb.length; slot++) dryBulb[slot] = packedDryBulb(columns.dryBulbC[slot] ?? Number.NaN);
   return {
-    dryBulb: Int16Array.from(columns.dryBulbC, (value) => packedDryBulb(value)),
-    humidityRatio: Uint16Array.from(columns.humidityRatio, (value) => packedUint16(value / HUMIDITY_RATIO_STEP)),
-    pressure: Uint16Array.from(columns.pressurePa, (value) => packedUint16(value / PRESSURE_STEP_PA)),
-    flags: Uint8Array.from(columns.flags),
+    dryBulb,
+    humidityRatio: packedColumn(columns.humidityRatio, HUMIDITY_RATIO_STEP),
+    pressure: packedColumn(columns.pressurePa, PRESSURE_STEP_PA),
+    flags: columns.flags.slice(),
   };
+}
+
+function packedColumn(values: Float64Array, step: number): Uint16Array {
+  const packed = new Uint16Array(values.length);
+  for (let slot = 0; slot < packed.length; slot++) packed[slot] = packedUint16((values[slot] ?? Number.NaN) / step);
+  return packed;
 }
 
 function packedDryBulb(dryBulbC: number): number {
@@ -67,6 +75,31 @@ export function unpackYear(year: PackedYear, into?: YearColumns): YearColumns {
   };
 }
 
+/**
+ * The numbers of some slots, of which everything is known, side by side.
+ * @param slots the slots, of which the first `count` are asked for
+ * @param into columns of at least `count` values
+ */
+export function unpackSlots(year: PackedYear, slots: Uint16Array, count: number, into: YearColumns): void {
+  const { dryBulb, humidityRatio, pressure } = year;
+  for (let at = 0; at < count; at++) {
+    const slot = slots[at] ?? 0;
+    into.dryBulbC[at] = (dryBulb[slot] ?? 0) / 100;
+    into.humidityRatio[at] = (humidityRatio[slot] ?? 0) * HUMIDITY_RATIO_STEP;
+    into.pressurePa[at] = (pressure[slot] ?? 0) * PRESSURE_STEP_PA;
+  }
+}
+
+/** Dry bulb of every slot, °C, NaN where missing. */
+export function unpackDryBulb({ dryBulb }: PackedYear): Float64Array {
+  const dryBulbC = new Float64Array(dryBulb.length);
+  for (let slot = 0; slot < dryBulbC.length; slot++) {
+    const packedC = dryBulb[slot] ?? MISSING_INT16;
+    dryBulbC[slot] = packedC === MISSING_INT16 ? Number.NaN : packedC / 100;
+  }
+  return dryBulbC;
+}
+
 export interface PackedBytes {
   readonly dryBulb: Uint8Array;
   readonly humidityRatio: Uint8Array;
@@ -80,7 +113,7 @@ export function packedBytes(year: PackedYear): PackedBytes {
     dryBulb: bytesOf16(year.dryBulb),
     humidityRatio: bytesOf16(year.humidityRatio),
     pressure: bytesOf16(year.pressure),
-    flags: Uint8Array.from(year.flags),
+    flags: year.flags.slice(),
   };
 }
 

@@ -1,5 +1,6 @@
 import { hundredths } from '../conventions.ts';
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
+import { wetBulbColumn } from '../psychrometrics/wet-bulb.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
 import {
   type DepressionBin,
@@ -9,7 +10,7 @@ import {
   hoursAtLeast,
 } from './depression-hours.ts';
 import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
-import { depressionColumn, dewPointColumn, reachedHundredths, wetBulbColumn } from './derived-columns.ts';
+import { depressionColumn, dewPointColumn, reachedHundredths } from './derived-columns.ts';
 import { type DesignValues, designValues } from './design-values.ts';
 import { packYear, unpackYear } from './packed-columns.ts';
 import type { WeatherYear } from './weather-year.ts';
@@ -17,6 +18,7 @@ import {
   countHours,
   depressionCurve,
   type HourCounts,
+  highestOf,
   meanOf,
   meansByMonthAndHour,
   monthCompleteness,
@@ -65,27 +67,34 @@ const DEGREES_PER_HOUR = 15;
  * Pure and deterministic: the same reading gives the same bytes.
  */
 export function reduceYear(reading: UsableReading): ReducedYear {
+  const { station, kind, year, belowZero } = reading;
+  const offsetH = station.utcOffsetH ?? Math.round((station.longitude ?? 0) / DEGREES_PER_HOUR);
   const packed = packYear(reading.hours);
-  const { dryBulbC } = unpackYear(packed);
-  const wetBulbC = wetBulbColumn(packed);
-  const depressionK = depressionColumn(packed, wetBulbC);
+  return reducePackedYear({ kind, year, utcOffsetMin: Math.round(60 * offsetH), packed }, belowZero);
+}
+
+/** The same from columns that are packed already. */
+export function reducePackedYear(year: WeatherYear, belowZero: BelowZeroPhase): ReducedYear {
+  const { packed } = year;
+  const columns = unpackYear(packed);
+  const { dryBulbC } = columns;
+  const wetBulbC = wetBulbColumn(dryBulbC, columns.humidityRatio, columns.pressurePa);
+  const depressionK = depressionColumn(dryBulbC, wetBulbC);
   const depression = reachedHundredths(depressionK);
   const histogram = depressionHistogram(depression);
-  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(packed) });
-  const { station } = reading;
-  const offsetH = station.utcOffsetH ?? Math.round((station.longitude ?? 0) / DEGREES_PER_HOUR);
-  const known = depressionK.filter((value) => !Number.isNaN(value));
+  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(columns) });
+  const highestK = highestOf(depressionK);
   return {
-    year: { kind: reading.kind, year: reading.year, utcOffsetMin: Math.round(60 * offsetH), packed },
+    year,
     histogram,
     depressionHours: depressionBins(histogram),
     design,
     facts: {
       ...countHours(packed),
-      belowZero: reading.belowZero,
+      belowZero,
       meanDryBulbC: meanOf(dryBulbC) ?? 0,
       meanWetBulbC: meanOf(wetBulbC),
-      maxDepressionK: known.length === 0 ? null : hundredths(known.reduce((a, b) => Math.max(a, b))) / 100,
+      maxDepressionK: highestK === null ? null : hundredths(highestK) / 100,
       depressionHours: hoursAtLeast(depression),
       meanDepressionK: meansByMonthAndHour(depressionK),
       monthCompletePct: monthCompleteness(packed),
@@ -93,7 +102,7 @@ export function reduceYear(reading: UsableReading): ReducedYear {
       monthlyWetBulbC: monthlyMeans(wetBulbC),
       monthlyDepressionK: monthlyMeans(depressionK),
       depressionCurveK: depressionCurve(depression),
-      lowDepressionSpell: longestLowDepression(depression, reading.kind),
+      lowDepressionSpell: longestLowDepression(depression, year.kind),
       design,
     },
   };

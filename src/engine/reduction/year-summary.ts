@@ -1,7 +1,8 @@
 /** Counts and means of a weather year, from its packed columns. */
 import { HOURS_PER_DAY, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
 import { monthOfEachSlot, monthStartSlots } from './calendar.ts';
-import { dryBulbProvenance, humidityProvenance, pressureProvenance } from './hour-flags.ts';
+import { dryBulbProvenance, hasRepair, humidityProvenance, pressureProvenance } from './hour-flags.ts';
+import { ValueCounts } from './value-counts.ts';
 import type { PackedYear } from './weather-year.ts';
 
 const MONTHS = 12;
@@ -29,12 +30,9 @@ export function countHours(year: PackedYear): HourCounts {
       continue;
     }
     const flags = year.flags[slot] ?? 0;
-    const dryBulb = dryBulbProvenance(flags);
-    const humidity = humidityProvenance(flags);
-    const pressure = pressureProvenance(flags);
-    if (pressure === 'estimated') counts.assumedPressure++;
-    if (dryBulb === 'repaired' || humidity === 'repaired' || pressure === 'repaired') counts.repaired++;
-    else if (dryBulb === 'estimated' || humidity === 'estimated') counts.estimated++;
+    if (pressureProvenance(flags) === 'estimated') counts.assumedPressure++;
+    if (hasRepair(flags)) counts.repaired++;
+    else if (dryBulbProvenance(flags) === 'estimated' || humidityProvenance(flags) === 'estimated') counts.estimated++;
     else counts.measured++;
   }
   return counts;
@@ -62,8 +60,25 @@ export function monthCompleteness(year: PackedYear): readonly number[] {
 
 /** Mean of the known values of a column, or null without any. */
 export function meanOf(column: Float64Array): number | null {
-  const known = column.filter((value) => !Number.isNaN(value));
-  return known.length === 0 ? null : known.reduce((sum, value) => sum + value, 0) / known.length;
+  let known = 0;
+  let sum = 0;
+  for (let slot = 0; slot < column.length; slot++) {
+    const value = column[slot] ?? Number.NaN;
+    if (Number.isNaN(value)) continue;
+    known++;
+    sum += value;
+  }
+  return known === 0 ? null : sum / known;
+}
+
+/** The highest of the known values of a column, or null without any. */
+export function highestOf(column: Float64Array): number | null {
+  let highest = Number.NEGATIVE_INFINITY;
+  for (let slot = 0; slot < column.length; slot++) {
+    const value = column[slot] ?? Number.NaN;
+    if (value > highest) highest = value;
+  }
+  return highest === Number.NEGATIVE_INFINITY ? null : highest;
 }
 
 /** Mean of the known values of each month, January first; null where none is known. */
@@ -99,13 +114,10 @@ export function meansByMonthAndHour(column: Float64Array): readonly (readonly (n
  * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function depressionCurve(depression: Int32Array): readonly number[] {
-  const downwards = depression
-    .filter((value) => value >= 0)
-    .sort()
-    .reverse();
-  if (downwards.length === 0) return [];
+  const values = new ValueCounts(depression, 0);
+  if (values.known === 0) return [];
   return Array.from(
     { length: 101 },
-    (_none, percent) => (downwards[Math.floor((percent * (downwards.length - 1)) / 100)] ?? 0) / 100,
+    (_none, percent) => values.downwards(Math.floor((percent * (values.known - 1)) / 100)) / 100,
   );
 }

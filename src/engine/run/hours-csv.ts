@@ -3,17 +3,25 @@
  * column names with their units, then one row per slot. A blank cell is not known or has no meaning for such an hour.
  */
 import { METHOD_VERSION } from '../conventions.ts';
+import type { YearKind } from '../reduction/weather-year.ts';
 import type { HourRow, HoursTable } from './hours-table.ts';
 
 export interface HoursTableOrigin {
   /** Names as a person gave them or a file holds them: guarded before they stand in a cell. */
   readonly file: string;
   readonly station: string;
+  /** What kind of year it is, of a derived one also how it was made: "typical year". */
+  readonly weatherYear: string;
   readonly brief: string;
   /** The brief in one sentence. */
   readonly briefSentence: string;
   /** IANA name of the civil time. */
   readonly zone: string;
+}
+
+/** "typical year", "actual year 2019". */
+export function weatherYearText({ kind, year }: { readonly kind: YearKind; readonly year: number | null }): string {
+  return kind === 'actual' ? `actual year ${year}` : `${kind} year`;
 }
 
 interface Column {
@@ -41,6 +49,7 @@ function aboutLines({ clock, limitUnit }: HoursTable, origin: HoursTableOrigin):
     ['requirement', origin.briefSentence],
     ['file', origin.file],
     ['station', origin.station],
+    ['weather year', origin.weatherYear],
     ['units', units],
     [
       'times',

@@ -4,6 +4,7 @@
  * mixed up to t_sup, as for the caps.
  */
 import type { Brief } from '../brief/brief.ts';
+import { reportedOf } from '../brief/reported.ts';
 import { hundredths } from '../conventions.ts';
 import { isIndexLimit, temperatureHumidityIndex } from '../hour-classes/index-limit.ts';
 import { dewPointC, relativeHumidityPct, saturationPressurePa } from '../psychrometrics/moist-air.ts';
@@ -94,14 +95,12 @@ function lowerLimits({ lowerLimits: { roomRhPct, supplyRhPct, supplyDewPointC } 
 
 /** The texts of the presets; of another this program says that it is not counted. */
 function namedReports(text: string): Report[] {
-  const thi = /^THI over (\d+(?:\.\d+)?)$/.exec(text);
-  if (thi !== null) {
-    const limit = Number(thi[1]);
-    return [{ what: text, counts: ({ room }) => hundredths(thiOf(room)) > hundredths(limit) }];
+  const asked = reportedOf(text);
+  if (asked.kind === 'other') return [{ what: text, counts: null }];
+  if (asked.kind === 'thi') {
+    return [{ what: text, counts: ({ room }) => hundredths(thiOf(room)) > hundredths(asked.over) }];
   }
-  const deficit = /^vapour pressure deficit below (\d+(?:\.\d+)?) and above (\d+(?:\.\d+)?) kPa$/.exec(text);
-  if (deficit === null) return [{ what: text, counts: null }];
-  const [least, most] = [Number(deficit[1]), Number(deficit[2])];
+  const { belowKpa: least, aboveKpa: most } = asked;
   return [
     {
       what: `vapour pressure deficit below ${least} kPa`,

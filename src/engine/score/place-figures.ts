@@ -117,6 +117,8 @@ function noteOf(runs: readonly PlaceRun[], scoreExact: number | null): string | 
 }
 
 function unusableNote(all: readonly PlaceRun[]): string {
+  if (all.length > 0 && all.every(({ kind }) => kind === 'derived'))
+    return 'not applicable: only derived years, whose measured year no longer counts';
   const short = all.find(({ result }) => !result.usable)?.result.monthsShort ?? [];
   const names = short.map((month) => monthNames[month - 1]).join(', ');
   const why = names === '' ? '' : `: less than 90 % of the hours of ${names}`;

@@ -77,6 +77,20 @@ export class FindingList {
     this.#asks.push({ what, message: input.message(), proposal: input.proposal });
   }
 
+  /** A list that begins with all that has been found so far: what concerns a whole file stands with each of its parts. */
+  copy(): FindingList {
+    const copy = new FindingList();
+    copy.#findings.push(...this.#findings);
+    copy.#asks.push(...this.#asks);
+    for (const [code, tallies] of this.#tallies) {
+      copy.#tallies.set(
+        code,
+        tallies.map((tally) => ({ ...tally })),
+      );
+    }
+    return copy;
+  }
+
   get refused(): boolean {
     return this.#findings.some((finding) => finding.severity === 'refuse');
   }
@@ -111,9 +125,11 @@ function restSentence(tally: Tally): string {
   return `${whole(tally.places)} more ${more} (${tally.code})${upTo}.`;
 }
 
+const wholeFormat = new Intl.NumberFormat('en-GB', { maximumFractionDigits: 0 });
+
 /** A whole number as people read it: 8,760. */
 export function whole(value: number): string {
-  return value.toLocaleString('en-GB', { maximumFractionDigits: 0 });
+  return wholeFormat.format(value);
 }
 
 /** "12 %", and "under 1 %" for what would round to nothing. */

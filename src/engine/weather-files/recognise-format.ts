@@ -1,43 +1,35 @@
-import type { FindingCode } from './finding.ts';
+import { namesGlobalHourly } from './global-hourly/read-global-hourly.ts';
+import { ISD_RECORD, SHORTEST_RECORD } from './isd/isd-record.ts';
+import { ISD_LITE_RECORD } from './isd-lite/read-isd-lite.ts';
 import type { DecodedText } from './text/decode-text.ts';
 import { LineCursor } from './text/line-cursor.ts';
-import { quoted } from './text/number-field.ts';
+import { TMY2_HEADER } from './tmy2/read-tmy2.ts';
+import { TMY3_NAMES } from './tmy3/tmy3-columns.ts';
 import type { WeatherFormat } from './weather-file-reading.ts';
 
-export interface NotRecognised {
-  readonly code: Extract<FindingCode, 'header' | 'too-few-rows'>;
-  readonly line: number | null;
-  readonly sentence: (name: string) => string;
-}
+/** So many lines that are not blank show what a file is; of records without a header most must be alike. */
+const LOOKED_AT = 40;
+const LONGEST = 2_000;
+const MOST = 0.8;
+const TMY2_RECORD = /^\s\d{8}.{133}/;
 
-const SHOWN = 200;
-const COMPANION = /\.(ddy|stat|rain|wea|clm)$/i;
-
-/** The format by content; names and suffixes only help to word a refusal. Tested in order, first match wins. */
-export function recogniseFormat(text: DecodedText): WeatherFormat | NotRecognised {
+/** The first lines of a text, without blank ones. */
+export function firstLines(text: DecodedText): readonly { readonly line: number; readonly text: string }[] {
   const cursor = new LineCursor(text);
-  if (!cursor.next()) {
-    return {
-      code: 'too-few-rows',
-      line: null,
-      sentence: () => 'The file is empty: it has 0 rows. Bring the file anew from its source.',
-    };
-  }
-  const first = cursor.string(SHOWN);
-  if (/^\s*"?LOCATION"?\s*,/i.test(first)) return 'EPW';
-  const { line } = cursor;
-  return { code: 'header', line, sentence: (name) => notEpwSentence(first, line, name) };
+  const lines: { line: number; text: string }[] = [];
+  while (lines.length < LOOKED_AT && cursor.next()) lines.push({ line: cursor.line, text: cursor.string(LONGEST) });
+  return lines;
 }
 
-function notEpwSentence(first: string, line: number, name: string): string {
-  if (COMPANION.test(name)) {
-    return 'This is a companion of a weather file and holds no hours. Bring the .epw that stands beside it.';
-  }
-  if (/^\s*"?Location Title/i.test(first)) {
-    return 'This is the spreadsheet form of an EPW, with a line of titles over each record. Bring the .epw itself.';
-  }
-  if (/^\s*LOCATION[\s;|\t]/i.test(first)) {
-    return `Line ${line} begins with LOCATION, but a comma must follow: the file seems to be saved with other separators. Save it with commas, or bring it anew from its source.`;
-  }
-  return `No known format: line ${line} begins with ${quoted(first)}, where an EPW begins with “LOCATION,”. Only EPW files are read so far; bring the .epw of this place.`;
+/** The format by content; names and suffixes decide nothing. Tested in order, first match wins; null for none of them. */
+export function recogniseFormat(lines: readonly { readonly text: string }[]): Exclude<WeatherFormat, 'table'> | null {
+  const [first = '', second = ''] = lines.map(({ text }) => text);
+  const mostAre = (holds: (text: string) => boolean) =>
+    lines.length > 0 && lines.filter(({ text }) => holds(text)).length >= MOST * lines.length;
+  if (/^\s*"?LOCATION"?\s*,/i.test(first)) return 'EPW';
+  if (TMY3_NAMES.test(second)) return 'TMY3';
+  if (TMY2_HEADER.test(first) && TMY2_RECORD.test(second)) return 'TMY2';
+  if (namesGlobalHourly(first)) return 'Global Hourly';
+  if (mostAre((text) => ISD_LITE_RECORD.test(text.trimEnd()))) return 'ISD-Lite';
+  return mostAre((text) => text.length >= SHORTEST_RECORD && ISD_RECORD.test(text)) ? 'ISD' : null;
 }

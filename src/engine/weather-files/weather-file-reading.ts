@@ -1,9 +1,10 @@
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
 import type { Ask, Finding } from './finding.ts';
+import type { TableGuess } from './table/table-guess.ts';
 
-/** The formats that are recognised by their content. The others of the weather room join this list. */
-export type WeatherFormat = 'EPW';
+/** The formats that are recognised by their content; a delimited table is what is left. */
+export type WeatherFormat = 'EPW' | 'TMY3' | 'TMY2' | 'ISD-Lite' | 'ISD' | 'Global Hourly' | 'table';
 
 /** The place that a file declares for itself. */
 export interface DeclaredStation {
@@ -33,6 +34,8 @@ export interface HourColumns {
 
 export interface RefusedReading {
   readonly status: 'refused';
+  /** Which station-year of the file: empty when it holds one, else its station, its year or both. */
+  readonly part: string;
   readonly format: WeatherFormat | null;
   readonly station: DeclaredStation | null;
   readonly findings: readonly Finding[];
@@ -41,6 +44,8 @@ export interface RefusedReading {
 export interface UsableReading {
   /** `asks` until a person has answered; the hours are read as they stand. */
   readonly status: 'asks' | 'review';
+  /** Which station-year of the file: empty when it holds one, else its station, its year or both. */
+  readonly part: string;
   readonly format: WeatherFormat;
   readonly station: DeclaredStation;
   readonly kind: YearKind;
@@ -48,7 +53,7 @@ export interface UsableReading {
   readonly year: number | null;
   readonly hours: HourColumns;
   /** Which column the humidity came from. */
-  readonly humidityFrom: 'dew point' | 'relative humidity';
+  readonly humidityFrom: 'dew point' | 'relative humidity' | 'wet bulb';
   readonly belowZero: BelowZeroPhase;
   readonly findings: readonly Finding[];
   readonly asks: readonly Ask[];
@@ -56,4 +61,18 @@ export interface UsableReading {
   readonly comments: string | null;
 }
 
-export type WeatherFileReading = RefusedReading | UsableReading;
+/** A table whose columns nobody has confirmed yet: it has no hours, only a guess and questions. */
+export interface UnmappedReading {
+  readonly status: 'asks';
+  readonly part: '';
+  readonly format: 'table';
+  /** What the lines above the table say of the place. */
+  readonly station: DeclaredStation;
+  readonly hours: null;
+  readonly table: TableGuess;
+  readonly findings: readonly Finding[];
+  readonly asks: readonly Ask[];
+  readonly comments: string | null;
+}
+
+export type WeatherFileReading = RefusedReading | UnmappedReading | UsableReading;

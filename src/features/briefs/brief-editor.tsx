@@ -1,40 +1,67 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMutation, useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useMemo, useState } from 'react';
 import { FormProvider, useForm, useWatch } from 'react-hook-form';
 import { type BriefVersionRecord, saveBriefVersion } from '../../contract/briefs.ts';
+import { briefDifference } from '../../engine/brief/brief-difference.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
+import { moment } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
+import { useMedia, WIDE } from '../../lib/use-media.ts';
+import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { BriefFieldsForm } from './brief-fields-form.tsx';
 import { type BriefKey, presetsQuery } from './brief-queries.ts';
 import { mayChangeBriefs } from './brief-words.ts';
-import { bodyOfDraft, DraftForm, type DraftProblems, type DraftValues, draftOf, readDraftValues } from './draft.ts';
+import {
+  bodyOfDraft,
+  DraftForm,
+  type DraftProblems,
+  type DraftValues,
+  draftOf,
+  readDraftValues,
+  restoredDraft,
+} from './draft.ts';
 import { DraftScopeProvider } from './draft-context.ts';
 import { DraftMargin } from './draft-margin.tsx';
 import { DraftYear } from './draft-year.tsx';
+import { EffectDetails } from './effect-details.tsx';
+import type { DraftKey, KeptDraft } from './kept-draft.ts';
 import { useEffectOfDraft } from './use-effect-of-draft.ts';
+import { useKeptDraft } from './use-kept-draft.ts';
 
 interface BriefEditorProps {
   readonly briefKey: BriefKey;
   /** The version that the draft begins from. */
   readonly record: BriefVersionRecord;
+  readonly draftKey: DraftKey;
+  /** A draft that was left here; null where none was. */
+  readonly kept: KeptDraft | null;
   readonly onSaved: (version: number) => void;
 }
 
 /** The brief as a form, with what it makes of an example year beside it. */
-export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
+export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: BriefEditorProps) {
   const { role } = useTeam();
   const mayChange = mayChangeBriefs(role);
+  const isWide = useMedia(WIDE);
   const presets = useQuery(presetsQuery(briefKey.teamId));
   const form = useForm<DraftValues>({
-    defaultValues: draftOf(record.body),
+    defaultValues: kept === null ? draftOf(record.body) : restoredDraft(kept.values, record.body),
     resolver: zodResolver(DraftForm),
     shouldFocusError: true,
   });
   const values = useWatch({ control: form.control });
   const reading = useMemo(() => readDraftValues(values), [values]);
+  const changes = useMemo(() => (reading.ok ? briefDifference(record.body, reading.brief) : null), [reading, record]);
+  const isChanged = changes === null || changes.length > 0;
+  const forget = useKeptDraft({
+    key: draftKey,
+    basedOn: record.version.version,
+    values,
+    isChanged: mayChange && isChanged,
+  });
   const effect = useEffectOfDraft(briefKey, { record, reading });
   const save = useMutation({
     mutationFn: (draft: DraftValues) => {
@@ -42,34 +69,40 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
       const body = { basedOn: record.version.version, body: bodyOfDraft(draft) };
       return call(saveBriefVersion, { params, query: {}, body });
     },
-    onSuccess: ({ version }) => onSaved(version.version),
+    onSuccess: ({ version }) => {
+      forget();
+      onSaved(version.version);
+    },
   });
   const problems: DraftProblems = { ...problemsOfSaving(save.error), ...(reading.ok ? {} : reading.problems) };
-  useWarningBeforeLeaving(mayChange && form.formState.isDirty && !save.isSuccess);
   const preset = presets.data?.items.find(({ id }) => id === record.body.preset)?.body ?? null;
+  const undo = () => {
+    save.reset();
+    form.reset(draftOf(record.body));
+  };
+  const savedVersion = record.version.version;
   return (
     <FormProvider {...form}>
       <DraftScopeProvider value={{ problems, preset }}>
         <form
           noValidate
           onSubmit={form.handleSubmit((draft) => save.mutate(draft))}
-          className="grid grid-cols-[minmax(0,1fr)] gap-x-12 gap-y-5 lg:grid-cols-[minmax(0,1fr)_23rem]"
+          className="grid grid-cols-[minmax(0,1fr)] gap-x-12 gap-y-5 lg:grid-cols-[minmax(0,1fr)_26rem]"
         >
-          <div className="min-w-0 max-lg:row-start-2">
+          <div className="grid min-w-0 content-start gap-5 max-lg:row-start-2">
+            {kept === null ? null : <KeptNotice kept={kept} isChanged={isChanged} onDrop={undo} />}
             <BriefFieldsForm mayChange={mayChange} />
           </div>
           <div className="min-w-0 max-lg:sticky max-lg:top-0 max-lg:z-10 max-lg:row-start-1">
-            <div className="grid gap-4 border-line max-lg:-mx-4 max-lg:bg-cloth max-lg:border-b max-lg:px-4 max-lg:py-2 lg:sticky lg:top-4">
+            <div className="grid gap-3 border-line max-lg:-mx-4 max-lg:border-b max-lg:bg-cloth max-lg:px-4 max-lg:py-2 lg:sticky lg:top-4 lg:max-h-[calc(100dvh-2rem)] lg:overflow-y-auto lg:pb-2">
               <DraftMargin
                 record={record}
-                reading={reading}
+                changes={changes}
+                problems={problems}
                 effect={effect}
                 mayChange={mayChange}
                 isSaving={save.isPending}
-                onUndo={() => {
-                  save.reset();
-                  form.reset(draftOf(record.body));
-                }}
+                onUndo={undo}
               />
               {save.isError ? (
                 <Notice
@@ -80,8 +113,10 @@ export function BriefEditor({ briefKey, record, onSaved }: BriefEditorProps) {
                   {errorSentence(save.error)}
                 </Notice>
               ) : null}
+              {isWide ? <EffectDetails effect={effect} changes={changes} savedVersion={savedVersion} /> : null}
             </div>
           </div>
+          {isWide ? null : <EffectDetails effect={effect} changes={changes} savedVersion={savedVersion} />}
           {effect.now === undefined ? null : (
             <div className="min-w-0 lg:col-span-2">
               <DraftYear preview={effect.now} />
@@ -101,11 +136,17 @@ function problemsOfSaving(error: unknown): DraftProblems {
   );
 }
 
-function useWarningBeforeLeaving(isDirty: boolean): void {
-  const [armed] = useState(() => (event: BeforeUnloadEvent) => event.preventDefault());
-  useEffect(() => {
-    if (!isDirty) return;
-    window.addEventListener('beforeunload', armed);
-    return () => window.removeEventListener('beforeunload', armed);
-  }, [isDirty, armed]);
+/** Says that the form shows a draft that was left here, until it is dropped or nothing of it is left. */
+function KeptNotice({ kept, isChanged, onDrop }: { kept: KeptDraft; isChanged: boolean; onDrop: () => void }) {
+  const [isDropped, setDropped] = useState(false);
+  if (isDropped || !isChanged) return null;
+  const drop = () => {
+    setDropped(true);
+    onDrop();
+  };
+  return (
+    <Notice live actions={<Button onClick={drop}>Drop the draft, show version {kept.basedOn}</Button>}>
+      This is your draft of {moment(kept.keptAt)}, kept on this device and not saved.
+    </Notice>
+  );
 }

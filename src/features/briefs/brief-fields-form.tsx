@@ -8,7 +8,10 @@ import { groupTitle } from './brief-words.ts';
 import { type DraftValues, fieldsOfGroup, limitKindOf } from './draft.ts';
 import { useDraftScope } from './draft-context.ts';
 import { FieldRow, inputLook, ProblemNote } from './field-row.tsx';
-import { HardLimitsField, MonthsField, StagesField } from './list-fields.tsx';
+import { GatesField } from './gates-field.tsx';
+import { HardLimitsField } from './hard-limits-field.tsx';
+import { MonthsField, StagesField } from './list-fields.tsx';
+import { ReportedField } from './reported-field.tsx';
 import { ScoreFields } from './score-fields.tsx';
 
 const GROUPS: readonly FieldGroup[] = [
@@ -21,6 +24,8 @@ const GROUPS: readonly FieldGroup[] = [
   'reference',
   'prices',
   'tolerance',
+  'gates',
+  'reported',
   'score',
 ];
 
@@ -66,7 +71,9 @@ function extraOf(group: FieldGroup, kind: Limit['kind']): ReactNode {
   if (group === 'air') return <StagesField use={use} />;
   if (group === 'schedule') return <MonthsField />;
   if (group === 'score') return <ScoreFields />;
-  if (group === 'tolerance' && use !== 'index') return <HardLimitsField />;
+  if (group === 'tolerance' && use !== 'index') return <HardLimitsField use={use} />;
+  if (group === 'gates') return <GatesField />;
+  if (group === 'reported') return <ReportedField use={use} />;
   return null;
 }
 
@@ -74,7 +81,7 @@ function extraOf(group: FieldGroup, kind: Limit['kind']): ReactNode {
 function GroupProblems({ group }: { group: FieldGroup }) {
   const { problems } = useDraftScope();
   if (group !== 'limit') return null;
-  const hidden = ['preset', 'primaryAir', 'source', 'gates', 'reported', 'basinHeat', 'secondaryAir', 'phi'];
+  const hidden = ['preset', 'primaryAir', 'basinHeat', 'secondaryAir', 'phi', 'dates'];
   const said = hidden.flatMap((path) => (problems[path] === undefined ? [] : [problems[path]]));
   return <ProblemNote id="limit-problem">{said.length === 0 ? undefined : said.join(' ')}</ProblemNote>;
 }

@@ -1,4 +1,4 @@
-import { useQuery, useQueryClient } from '@tanstack/react-query';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { type BriefVersionView, listBriefs, listBriefVersions } from '../../contract/briefs.ts';
@@ -6,12 +6,16 @@ import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { moment, sentence } from '../../lib/format.ts';
 import { PageTitle } from '../../lib/page-title.tsx';
 import { paths } from '../../lib/paths.ts';
+import { sessionQuery } from '../../lib/session-query.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Button, buttonLook } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { BriefEditor } from './brief-editor.tsx';
 import { type BriefKey, versionQuery, versionsQuery } from './brief-queries.ts';
+import { mayChangeBriefs } from './brief-words.ts';
+import { carriedOver } from './draft.ts';
+import { dropDraft, findDraft, type KeptDraft } from './kept-draft.ts';
 import { UsedPanel } from './used-panel.tsx';
 import { VersionsPanel } from './versions-panel.tsx';
 
@@ -44,15 +48,39 @@ interface BriefProps {
 
 function Brief({ briefKey, versions, newest }: BriefProps) {
   const client = useQueryClient();
+  const { data: session } = useQuery(sessionQuery);
+  const draftKey = { personId: session?.person?.id ?? '', briefId: briefKey.briefId };
+  const mayChange = mayChangeBriefs(useTeam().role);
+  const [kept, setKept] = useState(() => (mayChange ? findDraft(draftKey) : null));
   // The draft stays on the version that it began from, also when somebody saves another meanwhile.
-  const [base, setBase] = useState(newest.version);
+  const [base, setBase] = useState(() => baseOf(kept, { versions, newest }));
   const [saved, setSaved] = useState<number | null>(null);
   const record = useQuery(versionQuery(briefKey, base));
-  const onSaved = (version: number) => {
+  const begin = (version: number, draft: KeptDraft | null) => {
+    setKept(draft);
     setBase(version);
+  };
+  const onSaved = (version: number) => {
+    begin(version, null);
     setSaved(version);
     for (const { path } of [listBriefs, listBriefVersions]) client.invalidateQueries({ queryKey: [path] });
   };
+  const leaveDraft = () => {
+    dropDraft(draftKey);
+    begin(newest.version, null);
+  };
+  const carry = useMutation({
+    mutationFn: async () => {
+      const held = findDraft(draftKey);
+      const [from, to] = await Promise.all(
+        [base, newest.version].map((version) => client.ensureQueryData(versionQuery(briefKey, version))),
+      );
+      if (held === null || from === undefined || to === undefined) return null;
+      const values = carriedOver(held.values, { from: from.body, to: to.body });
+      return { values, basedOn: newest.version, keptAt: new Date().toISOString() };
+    },
+    onSuccess: (draft) => begin(newest.version, draft),
+  });
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-8">
       <header>
@@ -75,22 +103,41 @@ function Brief({ briefKey, versions, newest }: BriefProps) {
           tone="attention"
           live
           actions={
-            <Button onClick={() => setBase(newest.version)}>Leave the draft, take version {newest.version}</Button>
+            <>
+              <Button busy={carry.isPending} onClick={() => carry.mutate()}>
+                Carry the changes over to version {newest.version}
+              </Button>
+              <Button onClick={leaveDraft}>Leave the draft, take version {newest.version}</Button>
+            </>
           }
         >
           {newest.madeBy} saved version {newest.version} meanwhile. This draft began from version {base}.
+          {carry.isError ? ` ${errorSentence(carry.error)}` : ''}
         </Notice>
       ) : null}
       {record.isError ? <Notice tone="wrong">{errorSentence(record.error)}</Notice> : null}
       {record.data ? (
         <>
-          <BriefEditor key={base} briefKey={briefKey} record={record.data} onSaved={onSaved} />
+          <BriefEditor
+            key={`${base} ${kept?.keptAt}`}
+            briefKey={briefKey}
+            record={record.data}
+            draftKey={draftKey}
+            kept={kept}
+            onSaved={onSaved}
+          />
           <VersionsPanel briefKey={briefKey} versions={versions} />
           <UsedPanel briefKey={briefKey} record={record.data} />
         </>
       ) : null}
     </div>
   );
+}
+
+/** A kept draft is taken up on its own version, unless nobody may know of that version any more. */
+function baseOf(kept: KeptDraft | null, { versions, newest }: Pick<BriefProps, 'versions' | 'newest'>): number {
+  const isThere = versions.some(({ version }) => version === kept?.basedOn);
+  return kept !== null && isThere ? kept.basedOn : newest.version;
 }
 
 function BriefProblem({ briefKey, error, onRetry }: { briefKey: BriefKey; error: unknown; onRetry: () => void }) {

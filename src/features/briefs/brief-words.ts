@@ -1,7 +1,7 @@
 import type { Role } from '../../contract/accounts.ts';
 import type { BriefPreview, BriefVersionView } from '../../contract/briefs.ts';
 import type { FieldGroup, UseKind } from '../../engine/brief/brief-fields.ts';
-import { list, number, plural, sensible } from '../../lib/format.ts';
+import { number, plural, sensible } from '../../lib/format.ts';
 
 export function mayChangeBriefs(role: Role): boolean {
   return role !== 'viewer';
@@ -28,6 +28,10 @@ export function groupTitle(group: FieldGroup, use: UseKind): string {
       return 'Prices and grid';
     case 'tolerance':
       return 'Tolerances';
+    case 'gates':
+      return 'Gates: questions for each site';
+    case 'reported':
+      return 'Reported beside the classes';
     case 'score':
       return 'Score weights and anchors';
   }
@@ -40,26 +44,18 @@ export function usedWords({ stationsJudged, stationsPending }: BriefVersionView)
   return `${plural(stationsJudged, 'station')} judged${pending}`;
 }
 
-/** "+3", "−12", "the same". */
-export function changeWords(change: number, unit = ''): string {
-  if (change === 0) return 'the same';
+/** "+3", "−12", "0". */
+export function signed(change: number, unit = ''): string {
   return `${change > 0 ? '+' : ''}${sensible(change, unit)}`;
+}
+
+/** "Does not meet the brief", for the line over the tolerances. */
+export function verdictWords(verdict: BriefPreview['verdict']): string {
+  if (verdict === 'no tolerance set') return 'No tolerance set, so no verdict';
+  return verdict === 'meets the brief' ? 'Meets the brief' : 'Does not meet the brief';
 }
 
 export function exampleYearWords({ kind, year }: Pick<BriefPreview, 'kind' | 'year'>): string {
   if (kind === 'actual' && year !== null) return `the year ${year}`;
   return kind === 'derived' ? 'a derived year' : 'a typical year';
-}
-
-/** The verdict on the example year, with what fails. */
-export function previewVerdict({ verdict, tolerances }: Pick<BriefPreview, 'verdict' | 'tolerances'>): string {
-  if (verdict === 'no tolerance set') return 'The draft sets no tolerance, so there is no verdict.';
-  if (verdict === 'meets the brief') return 'Meets the brief: every tolerance holds.';
-  const failing = tolerances.filter(({ holds }) => !holds);
-  return `Does not meet the brief: ${list(
-    failing.map(
-      ({ tolerance, found, allowed, unit }) =>
-        `${tolerance} ${sensible(found, unit)}, ${sensible(allowed, unit)} allowed`,
-    ),
-  )}.`;
 }

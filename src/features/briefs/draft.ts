@@ -23,6 +23,24 @@ export function draftOf(brief: Brief): DraftValues {
   };
 }
 
+/** A kept draft as values of today's form: fields that it does not have take those of the saved brief, others are left behind. */
+export function restoredDraft(kept: DraftValues, brief: Brief): DraftValues {
+  const saved = draftOf(brief);
+  return Object.fromEntries(Object.entries(saved).map(([name, value]) => [name, name in kept ? kept[name] : value]));
+}
+
+/** The draft on top of another version: what it left alone follows that version, what it changed stays changed. */
+export function carriedOver(draft: DraftValues, { from, to }: { from: Brief; to: Brief }): DraftValues {
+  const carry = (mine: unknown, before: unknown, after: unknown): unknown => {
+    if (JSON.stringify(mine ?? null) === JSON.stringify(before ?? null)) return after;
+    if (!isRecord(mine) || !isRecord(before) || !isRecord(after)) return mine;
+    const names = [...new Set([...Object.keys(after), ...Object.keys(mine)])];
+    return Object.fromEntries(names.map((name) => [name, carry(mine[name], before[name], after[name])]));
+  };
+  const carried = carry(restoredDraft(draft, from), draftOf(from), draftOf(to));
+  return isRecord(carried) ? { ...carried } : draftOf(to);
+}
+
 /** What is typed into a number's field: a number, `null` for nothing, else the text itself for the engine to refuse. */
 export function typedNumber(text: string): number | string | null {
   const trimmed = text

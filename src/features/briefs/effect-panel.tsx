@@ -1,22 +1,19 @@
 import { useId } from 'react';
-import { ClassSwatch } from '../../charts/class-swatch.tsx';
-import { classWords } from '../../charts/hour-class-words.ts';
-import { barOrder, LedgerBar } from '../../charts/ledger-bar.tsx';
+import { LedgerBar } from '../../charts/ledger-bar.tsx';
 import type { BriefPreview } from '../../contract/briefs.ts';
 import { errorSentence } from '../../lib/api-error.ts';
-import { hours, number, share } from '../../lib/format.ts';
-import { changeWords, exampleYearWords, previewVerdict } from './brief-words.ts';
+import { number, share } from '../../lib/format.ts';
+import { exampleYearWords, signed, verdictWords } from './brief-words.ts';
 import type { DraftEffect } from './use-effect-of-draft.ts';
 
 interface EffectPanelProps {
   readonly stations: readonly { id: string; name: string }[];
   readonly savedVersion: number;
   readonly effect: DraftEffect;
-  readonly hasFaults: boolean;
 }
 
-/** What the draft makes of one example year, beside the form that changes it. */
-export function EffectPanel({ stations, savedVersion, effect, hasFaults }: EffectPanelProps) {
+/** What the draft makes of one example year, beside the form that changes it: score, hours and verdict. */
+export function EffectPanel({ stations, savedVersion, effect }: EffectPanelProps) {
   const { stationId, setStation, isStale, now, before, error } = effect;
   const id = useId();
   if (stationId === null) {
@@ -27,9 +24,9 @@ export function EffectPanel({ stations, savedVersion, effect, hasFaults }: Effec
     );
   }
   return (
-    <section aria-label="Effect of the draft" aria-busy={isStale} className="grid gap-2">
+    <section aria-label="Effect of the draft" aria-busy={isStale} className="grid gap-1.5">
       <div className="flex flex-wrap items-center gap-x-2">
-        <label htmlFor={id} className="text-fine text-soft">
+        <label htmlFor={id} className="text-fine text-soft max-lg:sr-only">
           Effect at
         </label>
         <select
@@ -46,12 +43,6 @@ export function EffectPanel({ stations, savedVersion, effect, hasFaults }: Effec
         </select>
         {now === undefined ? null : <span className="text-fine text-soft">{exampleYearWords(now)}</span>}
       </div>
-      {hasFaults ? (
-        <p role="status" className="font-medium text-madder">
-          The draft has faults, said beside its fields. Until they are mended the effect is that of its last state
-          without one.
-        </p>
-      ) : null}
       {error === null ? null : (
         <p role="alert" className="font-medium text-madder">
           {errorSentence(error)}
@@ -80,6 +71,13 @@ function Effect({ now, before, savedVersion }: EffectProps) {
           {now.score === null ? now.scoreNote : 'of 100'}
           {before === undefined ? '' : `, ${scoreChange(now, before, savedVersion)}`}
         </span>
+        <span>
+          {verdictWords(now.verdict)}
+          {before !== undefined && before.verdict !== now.verdict
+            ? `; version ${savedVersion}: ${verdictWords(before.verdict).toLowerCase()}`
+            : ''}
+          .
+        </span>
       </p>
       <LedgerBar
         id={`now${id}`}
@@ -88,7 +86,7 @@ function Effect({ now, before, savedVersion }: EffectProps) {
         label={barLabel(now, 'draft')}
       />
       {before === undefined ? null : (
-        <div className="opacity-75">
+        <div className="opacity-75 max-lg:hidden">
           <LedgerBar
             id={`before${id}`}
             classes={before.ledger.classes}
@@ -98,53 +96,7 @@ function Effect({ now, before, savedVersion }: EffectProps) {
           />
         </div>
       )}
-      <p>
-        {previewVerdict(now)}
-        {before !== undefined && before.verdict !== now.verdict ? ` Version ${savedVersion}: ${before.verdict}.` : ''}
-      </p>
-      <div className="max-lg:hidden">
-        <ClassTable now={now} before={before} savedVersion={savedVersion} />
-      </div>
     </>
-  );
-}
-
-function ClassTable({ now, before, savedVersion }: EffectProps) {
-  const id = useId();
-  const classes = barOrder.filter((each) => now.ledger.classes[each] > 0 || (before?.ledger.classes[each] ?? 0) > 0);
-  return (
-    <table className="w-full">
-      <caption className="sr-only">Hours with demand by class, and the change from version {savedVersion}</caption>
-      <thead className="text-fine text-soft">
-        <tr>
-          <th scope="col" className="text-left font-normal">
-            {number(now.ledger.demand)} hours with demand
-          </th>
-          <th scope="col" className="pl-2 text-right font-normal">
-            Hours
-          </th>
-          <th scope="col" className="pl-2 text-right font-normal">
-            Change
-          </th>
-        </tr>
-      </thead>
-      <tbody>
-        {classes.map((each) => (
-          <tr key={each}>
-            <th scope="row" className="py-px text-left font-normal">
-              <span className="flex items-center gap-2">
-                <ClassSwatch hourClass={each} id={`${id}-${each}`} />
-                {classWords[each]}
-              </span>
-            </th>
-            <td className="pl-2 text-right whitespace-nowrap">{hours(now.ledger.classes[each])}</td>
-            <td className="pl-2 text-right whitespace-nowrap text-soft">
-              {before === undefined ? '' : changeWords(now.ledger.classes[each] - before.ledger.classes[each], 'h')}
-            </td>
-          </tr>
-        ))}
-      </tbody>
-    </table>
   );
 }
 
@@ -152,8 +104,8 @@ function scoreChange(now: BriefPreview, before: BriefPreview, version: number): 
   if (now.score === null || before.score === null) {
     return before.score === now.score ? `as in version ${version}` : `version ${version} had ${before.score ?? 'none'}`;
   }
-  const change = changeWords(now.score - before.score);
-  return change === 'the same' ? `the same as version ${version}` : `${change} against version ${version}`;
+  const change = now.score - before.score;
+  return change === 0 ? `the same as version ${version}` : `${signed(change)} against version ${version}`;
 }
 
 function barLabel({ ledger }: BriefPreview, whose: string): string {

@@ -1,4 +1,4 @@
-import { type ReactNode, useId } from 'react';
+import type { ReactNode } from 'react';
 import { useFormContext } from 'react-hook-form';
 import { fieldWords } from '../../engine/brief/brief-difference.ts';
 import type { BriefField } from '../../engine/brief/brief-fields.ts';
@@ -22,9 +22,14 @@ export function ProblemNote({ id, children }: { id: string; children: string | u
   );
 }
 
+/** What a message that stands away from a field leads to. */
+export function fieldId(path: string): string {
+  return `field-${path}`;
+}
+
 /** One field: its words, its value with the unit, what the preset says and where that comes from. */
 export function FieldRow({ field }: { field: BriefField }) {
-  const id = useId();
+  const id = fieldId(field.path);
   const { problems, preset } = useDraftScope();
   const problem = problems[field.path];
   const byDefault = preset === null ? '' : `Preset: ${fieldWords(field, valueAt(preset, field.path))}. `;

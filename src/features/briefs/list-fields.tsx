@@ -2,11 +2,10 @@ import { useId } from 'react';
 import { useFormContext, useWatch } from 'react-hook-form';
 import type { UseKind } from '../../engine/brief/brief-fields.ts';
 import { monthWords, stageWords } from '../../engine/brief/field-words.ts';
-import { isRecord } from '../../engine/brief/fields.ts';
 import { Button } from '../../ui/button.tsx';
 import type { DraftValues } from './draft.ts';
 import { useDraftScope } from './draft-context.ts';
-import { inputLook, numberOf, ProblemNote } from './field-row.tsx';
+import { fieldId, ProblemNote } from './field-row.tsx';
 
 const dirty = { shouldDirty: true } as const;
 const stagesOfUse: Readonly<Record<UseKind, readonly string[]>> = {
@@ -17,7 +16,8 @@ const stagesOfUse: Readonly<Record<UseKind, readonly string[]>> = {
   turbine: ['direct'],
 };
 
-function useListValue(path: string): readonly unknown[] {
+/** The entries of a list of the form as they stand. */
+export function useListValue(path: string): readonly unknown[] {
   const value: unknown = useWatch<DraftValues>({ name: path });
   return Array.isArray(value) ? value : [];
 }
@@ -31,7 +31,12 @@ export function StagesField({ use }: { use: UseKind }) {
   const rows = [...chosen, ...stagesOfUse[use].filter((stage) => !chosen.includes(stage))];
   const set = (stages: readonly string[]) => setValue('stages', stages, dirty);
   return (
-    <fieldset className="min-w-0 border-t border-line py-2" aria-describedby={`${id}-problem`}>
+    <fieldset
+      id={fieldId('stages')}
+      tabIndex={-1}
+      className="min-w-0 border-t border-line py-2"
+      aria-describedby={`${id}-problem`}
+    >
       <legend className="float-left w-full font-medium">Stages, in the order in which they are tried</legend>
       <ol className="clear-both grid gap-1 pt-1">
         {rows.map((stage) => {
@@ -79,7 +84,12 @@ export function MonthsField() {
       dirty,
     );
   return (
-    <fieldset className="min-w-0 border-t border-line py-2" aria-describedby={`${id}-problem`}>
+    <fieldset
+      id={fieldId('months')}
+      tabIndex={-1}
+      className="min-w-0 border-t border-line py-2"
+      aria-describedby={`${id}-problem`}
+    >
       <legend className="float-left w-full font-medium">Months</legend>
       <div className="clear-both grid grid-cols-4 gap-x-3 gap-y-1 pt-1 sm:grid-cols-6">
         {MONTHS.map((month) => (
@@ -97,53 +107,6 @@ export function MonthsField() {
         ))}
       </div>
       <ProblemNote id={`${id}-problem`}>{problems.months}</ProblemNote>
-    </fieldset>
-  );
-}
-
-/** Temperatures that only so many hours may pass, each a gate. */
-export function HardLimitsField() {
-  const { register, setValue } = useFormContext<DraftValues>();
-  const { problems } = useDraftScope();
-  const limits = useListValue('hardLimits');
-  const set = (next: readonly unknown[]) => setValue('hardLimits', next, dirty);
-  const number = (path: string, label: string) => (
-    <input
-      {...register(path, { setValueAs: numberOf })}
-      aria-label={label}
-      aria-invalid={problems[path] === undefined ? undefined : true}
-      type="text"
-      inputMode="decimal"
-      autoComplete="off"
-      className={`${inputLook(problems[path] !== undefined)} w-16 text-right`}
-    />
-  );
-  return (
-    <fieldset className="min-w-0 border-t border-line py-2">
-      <legend className="float-left w-full font-medium">Hard limits, each a gate</legend>
-      <ul className="clear-both grid gap-2 pt-1">
-        {limits.map((entry, index) => {
-          const path = `hardLimits.${index}`;
-          const derate = isRecord(entry) && typeof entry.derate === 'string' ? `, derated ${entry.derate}` : '';
-          const found = [problems[`${path}.tempC`], problems[`${path}.hours`]].filter((each) => each !== undefined);
-          return (
-            <li key={path}>
-              <span className="flex flex-wrap items-center gap-2">
-                at most {number(`${path}.hours`, `Hard limit ${index + 1}, hours`)} h over
-                {number(`${path}.tempC`, `Hard limit ${index + 1}, temperature in °C`)} °C{derate}
-                <Button look="quiet" onClick={() => set(limits.toSpliced(index, 1))}>
-                  Remove
-                </Button>
-              </span>
-              <ProblemNote id={`${path}-problem`}>{found.length === 0 ? undefined : found.join(' ')}</ProblemNote>
-            </li>
-          );
-        })}
-      </ul>
-      <Button look="quiet" onClick={() => set([...limits, { tempC: null, hours: 0 }])}>
-        Add a hard limit
-      </Button>
-      <ProblemNote id="hard-limits-problem">{problems.hardLimits}</ProblemNote>
     </fieldset>
   );
 }

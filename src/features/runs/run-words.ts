@@ -1,3 +1,4 @@
+import type { Role } from '../../contract/accounts.ts';
 import type { Ledger, MapStation, Place, ToleranceAnswer } from '../../contract/runs.ts';
 import { list, number, sensible, share as shareOf } from '../../lib/format.ts';
 
@@ -47,7 +48,7 @@ export function identitySentence(ledger: Ledger): string {
 }
 
 /** Share of the hours with demand that are met; null without demand. */
-export function metWords(ledger: Ledger): string | null {
+export function metWords(ledger: Pick<Ledger, 'demand' | 'met'>): string | null {
   return ledger.demand === 0 ? null : shareOf((100 * ledger.met) / ledger.demand);
 }
 
@@ -61,4 +62,9 @@ export function noScoreWords({ score, scoreNote }: Pick<MapStation, 'score' | 's
 export function placeYearWords({ kind, year }: Place['years'][number]): string {
   if (kind === 'actual' && year !== null) return `the year ${year}`;
   return kind === 'derived' ? 'a derived year' : 'a typical year';
+}
+
+/** Results may be taken along by everyone but those who only look. */
+export function mayExportRuns(role: Role): boolean {
+  return role !== 'viewer';
 }

@@ -8,13 +8,14 @@ import { errorSentence } from '../../lib/api-error.ts';
 import { number } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
 import { YearClothCanvas } from '../../ui/year-cloth-canvas.tsx';
+import { HoursLink } from './hours-link.tsx';
 import { runHoursQuery } from './run-queries.ts';
 import { metWords } from './run-words.ts';
 
 const CLOTH_PX = 144;
 
 /** The year cloth of a place with its legend, across the sheet. */
-export function YearStrip({ place, teamId }: { place: Place; teamId: string }) {
+export function YearStrip({ place, teamId, mayExport }: { place: Place; teamId: string; mayExport: boolean }) {
   const { shown, station } = place;
   if (!shown) return null;
   const met = metWords(shown.ledger);
@@ -33,6 +34,13 @@ export function YearStrip({ place, teamId }: { place: Place; teamId: string }) {
             ? 'No hour with demand.'
             : `${met} of the hours with demand are met by outdoor air or evaporation.`}
         </p>
+        {mayExport ? (
+          <p className="mt-1">
+            <HoursLink teamId={teamId} runId={shown.runId}>
+              Every hour as a table, CSV
+            </HoursLink>
+          </p>
+        ) : null}
       </div>
       <Cloth teamId={teamId} runId={shown.runId} place={place} />
       <Legend ledger={shown.ledger} />

@@ -2,7 +2,7 @@ import type { YearFacts } from '../../contract/weather.ts';
 import { differenceK, hours, temperatureC } from '../../lib/format.ts';
 
 /** Where the hours come from, adding up to the year, and what kind of year it is. */
-export function HoursAccount({ facts }: { facts: YearFacts }) {
+export function HoursAccount({ facts, isDerived = false }: { facts: YearFacts; isDerived?: boolean }) {
   const sources = [
     ['Measured', facts.measured],
     ['Estimated by the source', facts.estimated],
@@ -31,6 +31,11 @@ export function HoursAccount({ facts }: { facts: YearFacts }) {
           </tr>
         </tfoot>
       </table>
+      {isDerived ? (
+        <p className="mt-1 text-fine text-soft">
+          Where the hours of the parent come from. Nobody measured the hours of a derived year.
+        </p>
+      ) : null}
       <table className="ruled mt-4">
         <caption className="sr-only">The air of the year</caption>
         <tbody>

@@ -33,6 +33,7 @@ export function LibraryMargin({ teamId, fileId }: { teamId: string; fileId: stri
                 <span className="col-span-2 flex items-center gap-1.5 text-fine text-soft">
                   <StatusMark status={file.status} failed={file.failure !== null} />
                   {statusWords(file)}
+                  {file.parent ? <span className="truncate">{file.name}</span> : null}
                 </span>
               </Link>
             </li>

@@ -17,8 +17,8 @@ export function RecordHeading({ record }: { record: WeatherFileRecord }) {
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h1 className="text-title break-words">{recordTitle(file)}</h1>
         {mayChangeWeather(role) ? (
-          <a className={buttonLook('plain')} href={original} download={file.name}>
-            Download original
+          <a className={buttonLook('plain')} href={original} download={file.parent ? `${file.name}.json` : file.name}>
+            {file.parent ? 'Download what it was made of' : 'Download original'}
           </a>
         ) : null}
       </div>
@@ -31,12 +31,18 @@ export function RecordHeading({ record }: { record: WeatherFileRecord }) {
       <p className="mt-1 flex flex-wrap items-center gap-x-1.5 text-fine text-soft">
         <span className="break-all">
           {file.name}, {fileSize(file.bytes)}
-          {file.format ? `, ${file.format}` : ''}.
+          {file.format && !file.parent ? `, ${file.format}` : ''}.
         </span>
-        <span>
-          Uploaded {moment(file.uploadedAt)} by {file.uploadedBy}
-          {acceptedBy ? `, accepted by ${acceptedBy}` : ''}.
-        </span>
+        {file.parent ? (
+          <span>
+            Derived {moment(file.uploadedAt)} by {file.uploadedBy}.
+          </span>
+        ) : (
+          <span>
+            Uploaded {moment(file.uploadedAt)} by {file.uploadedBy}
+            {acceptedBy ? `, accepted by ${acceptedBy}` : ''}.
+          </span>
+        )}
         <span className="inline-flex items-center gap-1.5">
           Fingerprint <span title={file.fingerprint}>{shortFingerprint(file.fingerprint)}</span>
           <CopyButton text={file.fingerprint} what="the whole fingerprint, SHA-256" />

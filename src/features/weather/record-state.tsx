@@ -51,6 +51,11 @@ export function RecordState({ record }: { record: WeatherFileRecord }) {
               Show on the map
             </Link>
           ) : null}
+          {mayChange && file.status === 'accepted' && file.parent === null ? (
+            <Link className={buttonLook('plain')} to={paths.climate.to(teamId, file.id)}>
+              Change the climate
+            </Link>
+          ) : null}
           {mayChange && isWithdrawable(file) ? <WithdrawButton file={file} /> : null}
         </>
       }
@@ -84,10 +89,14 @@ function stateSentence({ file, findings }: WeatherFileRecord, mayChange: boolean
     case 'asks':
       return 'It cannot be accepted as it stands. Put right in the file what it asks below, then upload it again.';
     case 'accepted':
+      if (file.parent !== null)
+        return 'Tested against the briefs of the team, beside its parent. It is in no score of the station.';
       return `${name} stands on the map, and this year is tested against the briefs of the team.`;
     case 'refused':
       return 'Nothing of it is used. Put right what is listed below, then upload the file again.';
     case 'withdrawn':
+      if (file.parent !== null)
+        return 'It no longer stands beside its parent. Its record and the results made from it are kept.';
       return 'It no longer counts. Its record and its original are kept.';
     case 'superseded':
       return 'A better file stands in its place. Results that rest on this one are kept.';

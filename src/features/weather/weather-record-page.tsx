@@ -9,6 +9,7 @@ import { Button } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { DepressionTable } from './depression-table.tsx';
+import { DerivedChildren, DerivedFrom } from './derived-from.tsx';
 import { DesignTable } from './design-table.tsx';
 import { Findings } from './findings.tsx';
 import { HoursAccount } from './hours-account.tsx';
@@ -46,13 +47,17 @@ function Record({ record }: { record: WeatherFileRecord }) {
         <RecordHeading record={record} />
         <RecordState record={record} />
       </div>
-      <Findings findings={record.findings} asks={record.asks} isReading={file.status === 'reading'} />
+      <DerivedFrom record={record} />
+      {file.parent === null ? (
+        <Findings findings={record.findings} asks={record.asks} isReading={file.status === 'reading'} />
+      ) : null}
+      <DerivedChildren items={record.children} />
       {facts ? (
         <>
           <DepressionTable facts={facts} />
           <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,20rem)_minmax(0,1fr)]">
-            <HoursAccount facts={facts} />
-            <DesignTable design={facts.design} isTypical={file.kind === 'typical'} />
+            <HoursAccount facts={facts} isDerived={file.parent !== null} />
+            <DesignTable design={facts.design} isTypical={(file.parent?.kind ?? file.kind) === 'typical'} />
           </div>
         </>
       ) : null}

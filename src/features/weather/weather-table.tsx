@@ -4,7 +4,7 @@ import { moment, share } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
 import { StatusMark } from './status-mark.tsx';
-import { statusWords, yearWords } from './weather-words.ts';
+import { parentWords, statusWords, yearWords } from './weather-words.ts';
 
 export function WeatherTable({ teamId, items }: { teamId: string; items: readonly WeatherFile[] }) {
   return (
@@ -40,7 +40,15 @@ export function WeatherTable({ teamId, items }: { teamId: string; items: readonl
                   {statusWords(file)}
                 </span>
               </td>
-              <td className="min-w-14 sm:whitespace-nowrap">{yearWords(file)}</td>
+              <td className="min-w-14 sm:whitespace-nowrap">
+                {yearWords(file)}
+                {file.parent ? (
+                  <span className="block text-fine text-soft">
+                    <Link to={paths.weatherFile.to(teamId, file.parent.fileId)}>{parentWords(file.parent)}</Link>
+                    {file.parent.status === 'accepted' ? '' : `, ${file.parent.status}`}
+                  </span>
+                ) : null}
+              </td>
               <td>{file.format ?? '–'}</td>
               <td className="figure">{file.completePct === null ? '–' : share(file.completePct)}</td>
               <td className="pl-6">

@@ -7,7 +7,7 @@ export function mayChangeWeather(role: Role): boolean {
   return role === 'engineer' || role === 'lead';
 }
 
-const statusWord: Readonly<Record<FileStatus, string>> = {
+export const statusWord: Readonly<Record<FileStatus, string>> = {
   reading: 'Reading',
   asks: 'Asks',
   review: 'In review',
@@ -39,6 +39,12 @@ export function yearWords({ kind, year }: Pick<WeatherFile, 'kind' | 'year'>): s
   if (kind === 'typical') return 'Typical year';
   if (kind === 'derived') return 'Derived year';
   return kind === 'actual' && year !== null ? String(year) : '–';
+}
+
+/** What a derived year came from: "from the typical year", "from the year 2019"; null of a measured one. */
+export function parentWords(parent: WeatherFile['parent']): string | null {
+  if (parent === null) return null;
+  return parent.kind === 'actual' && parent.year !== null ? `from the year ${parent.year}` : 'from the typical year';
 }
 
 /** "Korrel Pan, typical year", or the file's own name until a station is known. */

@@ -41,9 +41,11 @@ export function WithdrawDialog({ file, isOpen, onClose, onChanged }: WithdrawDia
     <Dialog isOpen={isOpen} onClose={onClose} title="Withdraw this weather file">
       <form noValidate onSubmit={submit} className="grid gap-4">
         <p>
-          {file.status === 'accepted'
-            ? 'Its year no longer counts in any score of the team. Its record, its original and the results made from it are kept.'
-            : 'It leaves the review and is not used. Its record and its original are kept.'}
+          {file.parent !== null
+            ? 'It no longer stands beside its parent. Its record and the results made from it are kept.'
+            : file.status === 'accepted'
+              ? 'Its year no longer counts in any score of the team. Its record, its original and the results made from it are kept.'
+              : 'It leaves the review and is not used. Its record and its original are kept.'}
         </p>
         {withdraw.isError && !problem ? (
           <Notice tone="wrong" live>

@@ -33,7 +33,7 @@ function plainFile(bytes: Uint8Array): number {
 
 function storedBytes(bytes: Uint8Array): number {
   const reading = readWeatherFile(bytes, 'made-up.epw');
-  if (reading.status === 'refused') throw new Error('the made-up file was refused');
+  if (reading.status === 'refused' || reading.hours === null) throw new Error('the made-up file was refused');
   const reduced = reduceYear(reading);
   const { dryBulb, humidityRatio, pressure, flags } = packedBytes(reduced.year.packed);
   return dryBulb.length + humidityRatio.length + pressure.length + flags.length + bytesOf16(reduced.histogram).length;

@@ -49,11 +49,16 @@ const anyChange = fc.record({ shiftK: tenths(-5, 8), swing: tenths(-3, 3), ratio
 const anyChanges = fc.array(anyChange, { minLength: 12, maxLength: 12 });
 const anyRule = fc.constantFrom(...humidityRules);
 
+/** Leaves an hour with a saturation that lies less than a millionth of a packed step under a whole one. */
+const nearWholeStep = twelve({}).map((change, month) =>
+  month === 2 ? { ...change, shiftK: -5, maxShiftK: -5.9, minShiftK: -4.1 } : change,
+);
+
 describe('a derived year', () => {
   test('has monthly means that rise by exactly the shift, and days stretched by what was asked', () => {
     fc.assert(
       fc.property(anyChanges, anyRule, (monthly, humidityRule) => {
-        const derived = deriveYear({ parent, monthly, humidityRule });
+        const { year: derived } = deriveYear({ parent, monthly, humidityRule });
         const before = monthClimates(unpackYear(parent.packed).dryBulbC);
         const after = monthClimates(unpackYear(derived.packed).dryBulbC);
         for (const [month, change] of monthly.entries()) {
@@ -72,7 +77,7 @@ describe('a derived year', () => {
   test('is the parent, column by column, when nothing changes', () => {
     for (const each of [parent, parentYear(8784)]) {
       for (const humidityRule of humidityRules) {
-        const derived = deriveYear({ parent: each, monthly: twelve({}), humidityRule });
+        const { year: derived } = deriveYear({ parent: each, monthly: twelve({}), humidityRule });
         expect(derived.packed).toEqual(each.packed);
         expect(derived).toMatchObject({ kind: 'derived', year: null, utcOffsetMin: 60 });
       }
@@ -83,7 +88,7 @@ describe('a derived year', () => {
     let changedHours = 0;
     fc.assert(
       fc.property(anyChanges, anyRule, (monthly, humidityRule) => {
-        const derived = deriveYear({ parent, monthly, humidityRule });
+        const { year: derived } = deriveYear({ parent, monthly, humidityRule });
         expect(derived.packed.flags).toEqual(parent.packed.flags);
         expect(derived.packed.pressure).toEqual(parent.packed.pressure);
         const { dryBulbC, humidityRatio, pressurePa } = unpackYear(derived.packed);
@@ -98,13 +103,13 @@ describe('a derived year', () => {
           if (w > saturationHumidityRatio(t, p) + 1e-12) expect.fail(`slot ${slot}: ${w} kg/kg at ${t} °C`);
         }
       }),
-      propertySettings(25),
+      { ...propertySettings(25), examples: [[nearWholeStep, 'ratio-kept']] },
     );
     expect(changedHours).toBeGreaterThan(25 * 8000);
   });
 
   test('with w kept and warmer hours keeps every w, and its wet bulb rises less than its dry bulb', () => {
-    const derived = deriveYear({ parent, monthly: warmer(2.5), humidityRule: 'ratio-kept' });
+    const { year: derived } = deriveYear({ parent, monthly: warmer(2.5), humidityRule: 'ratio-kept' });
     expect(derived.packed.humidityRatio).toEqual(parent.packed.humidityRatio);
     const before = unpackYear(parent.packed);
     const after = unpackYear(derived.packed);
@@ -120,7 +125,7 @@ describe('a derived year', () => {
   });
 
   test('with relative humidity kept has that of the parent, within the steps of the columns', () => {
-    const derived = deriveYear({ parent, monthly: warmer(3), humidityRule: 'rh-kept' });
+    const { year: derived } = deriveYear({ parent, monthly: warmer(3), humidityRule: 'rh-kept' });
     const before = unpackYear(parent.packed);
     const after = unpackYear(derived.packed);
     let compared = 0;
@@ -139,16 +144,29 @@ describe('a derived year', () => {
   test('with w scaled changes w by the share of its month and no other month', () => {
     const monthly = twelve({}).map((change, month) => ({ ...change, ratioChangePct: month === 6 ? 10 : 0 }));
     const dry = syntheticYear({ at: () => ({ dryBulbC: 30, humidityRatio: 0.01 }) });
-    const { humidityRatio } = deriveYear({ parent: dry, monthly, humidityRule: 'ratio-scaled' }).packed;
+    const { humidityRatio } = deriveYear({ parent: dry, monthly, humidityRule: 'ratio-scaled' }).year.packed;
     expect([...new Set(humidityRatio.filter((_ratio, slot) => months[slot] === 7))]).toEqual([5500]);
     expect([...new Set(humidityRatio.filter((_ratio, slot) => months[slot] !== 7))]).toEqual([5000]);
-    const kept = deriveYear({ parent: dry, monthly, humidityRule: 'ratio-kept' });
+    const { year: kept } = deriveYear({ parent: dry, monthly, humidityRule: 'ratio-kept' });
     expect(kept.packed.humidityRatio).toEqual(dry.packed.humidityRatio);
+  });
+
+  test('counts the hours whose humidity would have passed saturation', () => {
+    const halfSaturated = syntheticYear({ at: (slot) => ({ dryBulbC: 20, saturation: slot < 100 ? 1 : 0.5 }) });
+    const cappedHours = (input: { monthly: MonthlyChange[]; humidityRule: (typeof humidityRules)[number] }) =>
+      deriveYear({ parent: halfSaturated, ...input }).cappedHours;
+    // Saturation halves within 12 K: the dry hours pass it only in a much colder air.
+    expect(cappedHours({ monthly: warmer(-5), humidityRule: 'ratio-kept' })).toBe(100);
+    expect(cappedHours({ monthly: warmer(-15), humidityRule: 'ratio-kept' })).toBe(8760);
+    expect(cappedHours({ monthly: warmer(5), humidityRule: 'ratio-kept' })).toBe(0);
+    expect(cappedHours({ monthly: warmer(-5), humidityRule: 'rh-kept' })).toBe(0);
+    expect(cappedHours({ monthly: twelve({ ratioChangePct: 10 }), humidityRule: 'ratio-scaled' })).toBe(100);
+    expect(cappedHours({ monthly: twelve({ ratioChangePct: 110 }), humidityRule: 'ratio-scaled' })).toBe(8760);
   });
 
   test('is refused on a derived parent and on changes that make no weather, with the months named', () => {
     const input = { parent, monthly: warmer(1), humidityRule: 'ratio-kept' as const };
-    const derived = deriveYear(input);
+    const { year: derived } = deriveYear(input);
     expect(() => deriveYear({ ...input, parent: derived })).toThrow('measured parent');
     expect(() => deriveYear({ ...input, monthly: warmer(1).slice(1) })).toThrow('not 11');
     const unknown = warmer(1).map((change, month) =>

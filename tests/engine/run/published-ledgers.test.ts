@@ -50,7 +50,7 @@ interface RealYear {
 
 function readRealYear(file: string): RealYear {
   const reading = readWeatherFile(realFile(file), file);
-  if (reading.status === 'refused') throw new Error(`${file} was refused`);
+  if (reading.status === 'refused' || reading.hours === null) throw new Error(`${file} was refused`);
   const { latitude, longitude, elevationM } = reading.station;
   if (latitude === null || longitude === null || elevationM === null)
     throw new Error(`${file} does not say where it is`);

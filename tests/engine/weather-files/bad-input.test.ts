@@ -20,6 +20,7 @@ function problemsOf(reading: WeatherFileReading): readonly string[] {
     return problems;
   }
   if ((reading.status === 'asks') !== reading.asks.length > 0) problems.push('status and questions disagree');
+  if (reading.hours === null) return problems;
   const { dryBulbC, humidityRatio, pressurePa } = reading.hours;
   const outside = (column: Float64Array, low: number, high: number) =>
     column.some((value) => value < low || value > high);

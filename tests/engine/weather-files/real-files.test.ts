@@ -42,7 +42,9 @@ function truthOf(file: string, column: string): number {
 
 function readUsable(file: string): { reading: UsableReading; reduced: ReducedYear } {
   const reading = readWeatherFile(realFile(file), file);
-  if (reading.status === 'refused') throw new Error(`${file} is refused: ${reading.findings[0]?.message}`);
+  if (reading.status === 'refused' || reading.hours === null) {
+    throw new Error(`${file} is not read: ${reading.findings[0]?.message}`);
+  }
   return { reading, reduced: reduceYear(reading) };
 }
 

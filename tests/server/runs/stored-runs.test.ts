@@ -68,7 +68,7 @@ async function onlyRun(): Promise<StoredRun> {
 
 function readOfFile() {
   const reading = readWeatherFile(Buffer.from(epw.text), epw.name);
-  if (reading.status === 'refused') throw new Error('the demo file is read');
+  if (reading.status === 'refused' || reading.hours === null) throw new Error('the demo file is read');
   return reduceYear(reading);
 }
 
@@ -84,7 +84,7 @@ describe('a weather year in the store', () => {
 
   it('holds each value within half a step of what was read', async () => {
     const reading = readWeatherFile(Buffer.from(epw.text), epw.name);
-    if (reading.status === 'refused') throw new Error('the demo file is read');
+    if (reading.status === 'refused' || reading.hours === null) throw new Error('the demo file is read');
     const columns = unpackYear(reduceYear(reading).year.packed);
     // Half of 0.01 K, 2e-6 kg/kg and 2 Pa (layout 1), and the last bit of a double.
     const halves = { dryBulbC: 0.005, humidityRatio: 1e-6, pressurePa: 1 };

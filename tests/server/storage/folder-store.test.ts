@@ -32,6 +32,14 @@ describe('the store of originals', () => {
     expect(Buffer.compare(await store.read(key), bytes)).toBe(0);
   });
 
+  it('takes bytes as it takes a file', async () => {
+    const root = path.join(folder, 'bytes');
+    const store = createFolderStore(root);
+    await store.put(key, bytes);
+    expect(Buffer.compare(await store.read(key), bytes)).toBe(0);
+    expect((await stat(path.join(root, key))).mode & 0o777).toBe(0o600);
+  });
+
   it('keeps an original readable by the server alone, and leaves nothing beside it', async () => {
     const root = path.join(folder, 'modes');
     await createFolderStore(root).put(key, await upload('b.epw', bytes));

@@ -1,5 +1,7 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
+import type { ReactNode } from 'react';
 import type { Place } from '../../../contract/runs.ts';
+import { DerivedYears } from '../../../features/runs/derived-years.tsx';
 import { LedgerPanel } from '../../../features/runs/ledger-panel.tsx';
 import { PlaceHeading, ScoreBlock } from '../../../features/runs/place-heading.tsx';
 import {
@@ -10,9 +12,11 @@ import {
   WaterElectricityNote,
 } from '../../../features/runs/place-notes.tsx';
 import { type ProgrammeIds, placeQuery } from '../../../features/runs/run-queries.ts';
+import { mayExportRuns } from '../../../features/runs/run-words.ts';
 import { ScoreArithmetic } from '../../../features/runs/score-arithmetic.tsx';
 import { YearStrip } from '../../../features/runs/year-strip.tsx';
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';
+import { useTeam } from '../../../lib/team-scope.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
@@ -70,19 +74,33 @@ function ChosenMargin({ ids, stationId }: ChosenProps) {
 }
 
 function ChosenFoot({ ids, stationId }: ChosenProps) {
+  const { role } = useTeam();
   const { data: place, isPlaceholderData } = usePlace({ ids, stationId });
-  if (!place?.shown) return null;
+  if (!place || (place.shown === null && place.derived.length === 0)) return null;
+  const { teamId } = ids;
+  const mayExport = mayExportRuns(role);
+  const derived = <DerivedYears derived={place.derived} teamId={teamId} mayExport={mayExport} />;
   return (
     <div aria-busy={isPlaceholderData} className={isPlaceholderData ? 'opacity-50' : ''}>
       <div className="border-line bg-paper max-lg:mb-5 lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
-        <YearStrip place={place} teamId={ids.teamId} />
+        <YearStrip place={place} teamId={teamId} mayExport={mayExport} />
       </div>
-      <PlaceNotes place={place} shown={place.shown} />
+      {place.shown === null ? (
+        <div className="lg:px-5 lg:pt-7 lg:pb-14">{derived}</div>
+      ) : (
+        <PlaceNotes place={place} shown={place.shown} derived={derived} />
+      )}
     </div>
   );
 }
 
-function PlaceNotes({ place, shown }: { place: Place; shown: NonNullable<Place['shown']> }) {
+interface PlaceNotesProps {
+  readonly place: Place;
+  readonly shown: NonNullable<Place['shown']>;
+  readonly derived: ReactNode;
+}
+
+function PlaceNotes({ place, shown, derived }: PlaceNotesProps) {
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-3 lg:px-5 lg:pt-7 lg:pb-14">
       <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] content-start gap-x-10 gap-y-8 lg:col-span-2 lg:grid-cols-2">
@@ -96,6 +114,7 @@ function PlaceNotes({ place, shown }: { place: Place; shown: NonNullable<Place['
         <WaterElectricityNote shown={shown} />
         <GradeNote place={place} />
       </div>
+      {place.derived.length > 0 ? <div className="min-w-0 lg:col-span-3">{derived}</div> : null}
       <div className="min-w-0 lg:col-span-3">
         <CautionsNote shown={shown} />
       </div>

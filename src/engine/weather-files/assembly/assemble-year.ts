@@ -6,6 +6,8 @@ import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conven
 import type { BelowZeroPhase } from '../../psychrometrics/moist-air.ts';
 import { dayOfWeek, isLeapYear, slotOf } from '../../reduction/calendar.ts';
 import { type FindingList, whole } from '../finding-list.ts';
+import type { QualityOptions } from '../quality/quality-options.ts';
+import { testHours } from '../quality/test-hours.ts';
 import type { DeclaredStation, HourColumns, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
 import { belowZeroPhase } from './below-zero-phase.ts';
 import { tellCoverage, tellGaps, tellSourceFlags } from './coverage.ts';
@@ -16,18 +18,26 @@ import { limitDewPoint, limitRelativeHumidity } from './humidity-limits.ts';
 import { type DeclaredPeriod, type MatchedCalendar, matchCalendar } from './match-calendar.ts';
 import { checkPlace } from './place-checks.ts';
 import { settlePressure } from './pressure-rule.ts';
-import { leaveOutImpossible } from './range-limits.ts';
 import type { SourceRows } from './source-rows.ts';
 import { type StepColumns, stepColumns } from './step-columns.ts';
 
 /** What a reader has found in a file, before anything is tested. */
 export interface FileContents {
   readonly format: WeatherFormat;
+  /** Which station-year of the file; empty when it holds one. */
+  readonly part: string;
   readonly station: DeclaredStation;
   /** Line on which the place stands. */
   readonly stationLine: number | null;
   readonly rows: SourceRows;
   readonly stepsPerHour: number;
+  /**
+   * What makes a year an actual one: real dates in its rows, or a period that starts on the weekday of its year. A `typical` one
+   * never is.
+   */
+  readonly yearFrom: 'dates' | 'weekday' | 'typical';
+  /** A year in UTC lacks up to 14 hours at one end when it is laid on local time, which is not told. */
+  readonly cutByUtc: boolean;
   readonly periods: readonly DeclaredPeriod[];
   /** Whether the file says that it observes leap years; null when it does not say. */
   readonly leapYearObserved: boolean | null;
@@ -37,11 +47,17 @@ export interface FileContents {
   readonly comments: string | null;
 }
 
+/** The zones of the world reach from UTC−12 to UTC+14. */
+const UTC_EDGE_HOURS = 14;
 const TOO_HOT_C = 60;
 const TOO_HOT_HOURS = 24;
 
 /** Tests, repairs and reduces to hours. Every fault found so far stands in `findings`; a refusal there refuses the file. */
-export function assembleYear(file: FileContents, findings: FindingList): WeatherFileReading {
+export function assembleYear(
+  file: FileContents,
+  findings: FindingList,
+  options: QualityOptions = {},
+): WeatherFileReading {
   const { rows, station } = file;
   checkPlace(station, file.stationLine, findings);
   if (rows.lines.length === 0) {
@@ -52,22 +68,20 @@ export function assembleYear(file: FileContents, findings: FindingList): Weather
   const everyRowRead = !findings.refused;
   const year = actualYear(file, rows.lines.length);
   const calendar = matchCalendar({ ...file, sortable: year !== null }, findings);
-  if (everyRowRead) tellRowCount(file, calendar, findings);
+  if (everyRowRead && file.yearFrom !== 'dates') tellRowCount(file, calendar, findings);
   tellLeapDay(file, calendar, year, findings);
   const steps = stepColumns({ rows, ...calendar });
   refuseWithoutTemperature(steps, findings);
   if (findings.refused) return refused(file, findings);
 
-  leaveOutImpossible(steps, findings);
-  // Place of the statistical tests, in this order: step, straight line, persistence, spike (with zero fill, saw-tooth and
-  // other climate). They take `steps` and write NaN; an hour that is missing by then is not tested again.
+  const kindYear = actualYear(file, calendar.rowsRead);
+  testHours({ steps, station, typical: kindYear === null, options }, findings);
   settlePressure(steps, station.elevationM, findings);
   const humidity = settleHumidity(steps, findings);
   if (humidity === null || findings.refused) return refused(file, findings);
 
-  const kindYear = actualYear(file, calendar.rowsRead);
   const { hours, gap, humidityPresent } = hourColumns({ steps, ...humidity, typical: kindYear === null });
-  tellGaps(hours, gap, findings);
+  tellGaps({ hours, gap, quietEdgeHours: file.cutByUtc ? UTC_EDGE_HOURS : 0 }, findings);
   tellCoverage({ hours, humidityPresent }, findings);
   if (findings.refused) return refused(file, findings);
   if (file.sourceFlagsInformative !== null) {
@@ -77,8 +91,8 @@ export function assembleYear(file: FileContents, findings: FindingList): Weather
   return usable(file, { ...humidity, hours, year: kindYear }, findings);
 }
 
-function refused({ format, station }: FileContents, findings: FindingList): WeatherFileReading {
-  return { status: 'refused', format, station, findings: findings.inOrder() };
+function refused({ format, part, station }: FileContents, findings: FindingList): WeatherFileReading {
+  return { status: 'refused', part, format, station, findings: findings.inOrder() };
 }
 
 function usable(
@@ -88,6 +102,7 @@ function usable(
 ): WeatherFileReading {
   return {
     status: findings.asks.length > 0 ? 'asks' : 'review',
+    part: file.part,
     format: file.format,
     station: file.station,
     kind: read.year === null ? 'typical' : 'actual',
@@ -124,6 +139,7 @@ function tellNoRows(findings: FindingList): void {
 /** The year of a file whose rows hold one year that begins on the declared weekday; null for every other file. */
 function actualYear(file: FileContents, rowsRead: number): number | null {
   const year = file.rows.years[0] ?? 0;
+  if (file.yearFrom !== 'weekday') return file.yearFrom === 'dates' ? year : null;
   const period = file.periods[0];
   if (year < 1800 || year > 2200 || period?.startWeekday == null) return null;
   for (let row = 1; row < rowsRead; row++) if (file.rows.years[row] !== year) return null;
@@ -176,8 +192,15 @@ function tellLeapDay(file: FileContents, calendar: MatchedCalendar, year: number
 
 /** No dry bulb at all, or one that can only be Fahrenheit. */
 function refuseWithoutTemperature(steps: StepColumns, findings: FindingList): void {
-  const known = steps.dryBulbC.filter((value) => !Number.isNaN(value));
-  if (known.length === 0) {
+  const { dryBulbC } = steps;
+  let known = 0;
+  let hotSteps = 0;
+  for (let step = 0; step < dryBulbC.length; step++) {
+    const value = dryBulbC[step] ?? Number.NaN;
+    if (!Number.isNaN(value)) known++;
+    if (value > TOO_HOT_C) hotSteps++;
+  }
+  if (known === 0) {
     findings.add({
       code: 'no-temperature',
       severity: 'refuse',
@@ -187,7 +210,7 @@ function refuseWithoutTemperature(steps: StepColumns, findings: FindingList): vo
     });
     return;
   }
-  const hot = known.filter((value) => value > TOO_HOT_C).length / steps.stepsPerHour;
+  const hot = hotSteps / steps.stepsPerHour;
   if (hot <= TOO_HOT_HOURS) return;
   const step = steps.dryBulbC.findIndex((value) => value > TOO_HOT_C);
   findings.add({

@@ -11,9 +11,12 @@ const WITHIN_POINTS = 1;
  * computed with both; the nearer to the file's own holds, if it comes within 1 point on average. Else water, with a note.
  */
 export function belowZeroPhase(steps: StepColumns, findings: FindingList): BelowZeroPhase {
-  const warm = compare(steps, (dryBulbC, dewPointC) => dryBulbC > 3 && dewPointC < -5);
+  const warm = compare(steps, { overC: 3, dewUnderC: -5, underC: Number.POSITIVE_INFINITY });
   const enough = FEWEST_HOURS * steps.stepsPerHour;
-  const test = warm.count >= enough ? warm : compare(steps, (dryBulbC) => dryBulbC < -3);
+  const test =
+    warm.count >= enough
+      ? warm
+      : compare(steps, { overC: Number.NEGATIVE_INFINITY, dewUnderC: Number.POSITIVE_INFINITY, underC: -3 });
   if (test.count < enough) {
     note(findings, 'fewer than 20 hours with both humidities are cold enough to tell');
     return 'water';
@@ -41,14 +44,16 @@ function note(findings: FindingList, reason: string): void {
 
 function compare(
   steps: StepColumns,
-  takes: (dryBulbC: number, dewPointC: number) => boolean,
+  hours: { overC: number; underC: number; dewUnderC: number },
 ): { count: number; water: number; ice: number } {
+  const { dewUnderC, overC, underC } = hours;
   const sums = { count: 0, water: 0, ice: 0 };
   for (let step = 0; step < steps.dryBulbC.length; step++) {
     const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
     const dewPointC = steps.dewPointC[step] ?? Number.NaN;
     const filePct = steps.relativeHumidityPct[step] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + dewPointC + filePct) || dewPointC > dryBulbC || !takes(dryBulbC, dewPointC)) continue;
+    const taken = dryBulbC > overC && dryBulbC < underC && dewPointC < dewUnderC && dewPointC <= dryBulbC;
+    if (!taken || Number.isNaN(filePct)) continue;
     sums.count++;
     sums.water += Math.abs(filePct - relativeHumidityOfDewPointPct(dryBulbC, dewPointC, 'water'));
     sums.ice += Math.abs(filePct - relativeHumidityOfDewPointPct(dryBulbC, dewPointC, 'ice'));

@@ -11,40 +11,42 @@ const ESTIMATED_DOUBT_PCT = 40;
 
 /**
  * Tells every gap: hours without a row, or without a dry bulb or a humidity in it.
- * @param gap 1 where a slot lacked one of them before it was filled
+ * @param input.gap 1 where a slot lacked one of them before it was filled
+ * @param input.quietEdgeHours so many absent hours at the beginning or the end of the year are not told
  */
-export function tellGaps(hours: HourColumns, gap: Uint8Array, findings: FindingList): void {
-  forEachRun(
-    gap.length,
-    (slot) => gap[slot] === 1,
-    (start, end) => {
-      const own = linesOfRun(hours.lines, start, end);
-      const before = hours.lines[start - 1] ?? 0;
-      const after = hours.lines[end] ?? 0;
-      let filled = 0;
-      for (let slot = start; slot < end; slot++) if (isKnown(hours, slot)) filled++;
-      const where =
-        own.first > 0 ? `on line ${own.first}` : before > 0 ? `after line ${before}` : `before line ${after}`;
-      const what = own.first > 0 ? 'have no usable dry bulb or humidity, first' : 'are absent';
-      const done =
-        filled === 0
-          ? 'They stay missing.'
-          : filled === end - start
-            ? 'They are filled on a straight line between their neighbours.'
-            : `${hoursPhrase(filled)} of them could be filled; the rest stay missing.`;
-      findings.add({
-        code: 'time-gap',
-        severity: 'note',
-        line: own.first || before || after,
-        lastLine: own.last || before || after,
-        count: end - start,
-        message: () =>
-          end - start === 1
-            ? `1 hour ${own.first > 0 ? 'has no usable dry bulb or humidity,' : 'is absent'} ${where}. It ${filled === 1 ? 'is filled on a straight line between its neighbours' : 'stays missing'}.`
-            : `${hoursPhrase(end - start)} ${what} ${where}. ${done}`,
-      });
-    },
-  );
+export function tellGaps(
+  input: { hours: HourColumns; gap: Uint8Array; quietEdgeHours: number },
+  findings: FindingList,
+): void {
+  const { gap, hours, quietEdgeHours } = input;
+  forEachRun(gap, (start, end) => {
+    const atEdge = start === 0 || end === gap.length;
+    const own = linesOfRun(hours.lines, start, end);
+    if (atEdge && own.first === 0 && end - start <= quietEdgeHours) return;
+    const before = hours.lines[start - 1] ?? 0;
+    const after = hours.lines[end] ?? 0;
+    let filled = 0;
+    for (let slot = start; slot < end; slot++) if (isKnown(hours, slot)) filled++;
+    const where = own.first > 0 ? `on line ${own.first}` : before > 0 ? `after line ${before}` : `before line ${after}`;
+    const what = own.first > 0 ? 'have no usable dry bulb or humidity, first' : 'are absent';
+    const done =
+      filled === 0
+        ? 'They stay missing.'
+        : filled === end - start
+          ? 'They are filled on a straight line between their neighbours.'
+          : `${hoursPhrase(filled)} of them could be filled; the rest stay missing.`;
+    findings.add({
+      code: 'time-gap',
+      severity: 'note',
+      line: own.first || before || after,
+      lastLine: own.last || before || after,
+      count: end - start,
+      message: () =>
+        end - start === 1
+          ? `1 hour ${own.first > 0 ? 'has no usable dry bulb or humidity,' : 'is absent'} ${where}. It ${filled === 1 ? 'is filled on a straight line between its neighbours' : 'stays missing'}.`
+          : `${hoursPhrase(end - start)} ${what} ${where}. ${done}`,
+    });
+  });
 }
 
 function isKnown(hours: HourColumns, slot: number): boolean {
@@ -130,9 +132,11 @@ export function tellSourceFlags(input: { hours: HourColumns; informative: boolea
     return;
   }
   const { flags } = input.hours;
-  const estimated = flags.filter(
-    (flag) => dryBulbProvenance(flag) === 'estimated' || humidityProvenance(flag) === 'estimated',
-  ).length;
+  let estimated = 0;
+  for (let slot = 0; slot < flags.length; slot++) {
+    const flag = flags[slot] ?? 0;
+    if (dryBulbProvenance(flag) === 'estimated' || humidityProvenance(flag) === 'estimated') estimated++;
+  }
   if (estimated === 0) return;
   const pct = (100 * estimated) / flags.length;
   findings.add({

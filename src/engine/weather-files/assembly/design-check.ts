@@ -1,4 +1,5 @@
 /** A free check: design values that a file publishes for its place, beside those of its own hours. */
+import { valueAtPlace } from '../../order-statistic.ts';
 import { enthalpyKJPerKg } from '../../psychrometrics/moist-air.ts';
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import type { FindingList } from '../finding-list.ts';
@@ -17,11 +18,11 @@ const FAR_K = { dryBulb: 3, wetBulb: 2.5 } as const;
 const HOTTEST_SHARE = 0.1;
 
 export function compareDesign(hours: HourColumns, published: PublishedDesign, findings: FindingList): void {
-  const dry = [...hours.dryBulbC].filter((value) => !Number.isNaN(value)).sort((a, b) => b - a);
+  const dry = hours.dryBulbC.filter((value) => !Number.isNaN(value));
   const wet = highestWetBulbs(hours);
   const differences = PER_MILLE.flatMap((perMille, index) => [
-    difference('dry bulb', perMille, published.dryBulbC[index], dry[Math.floor((perMille * dry.length) / 1000)]),
-    difference('wet bulb', perMille, published.wetBulbC[index], wet.values[Math.floor((perMille * wet.hours) / 1000)]),
+    difference('dry bulb', perMille, published.dryBulbC[index], highest(dry, dry.length, perMille)),
+    difference('wet bulb', perMille, published.wetBulbC[index], highest(wet.values, wet.hours, perMille)),
   ]).filter((text) => text !== null);
   if (differences.length === 0) return;
   findings.add({
@@ -45,19 +46,32 @@ function difference(
   return `${perMille / 10} % ${quantity} ${publishedC.toFixed(1)} °C published, ${computedC.toFixed(1)} °C here`;
 }
 
-/** The highest wet bulbs, downwards, and the number of hours that have one. */
-function highestWetBulbs(hours: HourColumns): { values: readonly number[]; hours: number } {
-  const known: { slot: number; heat: number }[] = [];
-  for (let slot = 0; slot < hours.dryBulbC.length; slot++) {
-    const dryBulbC = hours.dryBulbC[slot] ?? Number.NaN;
-    const ratio = hours.humidityRatio[slot] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + ratio + (hours.pressurePa[slot] ?? Number.NaN))) continue;
-    known.push({ slot, heat: enthalpyKJPerKg(dryBulbC, ratio) });
+/** The value that so many in a thousand of the hours reach or pass. @param values all of the hours, or the highest; rearranged */
+function highest(values: Float64Array, hours: number, perMille: number): number | undefined {
+  const place = values.length - 1 - Math.floor((perMille * hours) / 1000);
+  return place < 0 ? undefined : valueAtPlace(values, place);
+}
+
+/** The highest wet bulbs, in any order, and the number of hours that have one. */
+function highestWetBulbs({ dryBulbC, humidityRatio, pressurePa }: HourColumns): {
+  values: Float64Array;
+  hours: number;
+} {
+  const heat = new Float64Array(dryBulbC.length).fill(Number.NaN);
+  for (let slot = 0; slot < heat.length; slot++) {
+    if (Number.isNaN(pressurePa[slot])) continue;
+    heat[slot] = enthalpyKJPerKg(dryBulbC[slot] ?? Number.NaN, humidityRatio[slot] ?? Number.NaN);
   }
-  known.sort((a, b) => b.heat - a.heat);
-  const values = known.slice(0, Math.ceil(HOTTEST_SHARE * known.length)).map(({ slot }) => {
-    const dryBulbC = hours.dryBulbC[slot] ?? Number.NaN;
-    return wetBulbC(dryBulbC, hours.humidityRatio[slot] ?? Number.NaN, hours.pressurePa[slot] ?? Number.NaN);
-  });
-  return { values: values.sort((a, b) => b - a), hours: known.length };
+  const known = heat.filter((value) => !Number.isNaN(value));
+  const values = new Float64Array(Math.ceil(HOTTEST_SHARE * known.length));
+  const least = valueAtPlace(known, known.length - values.length);
+  let taken = 0;
+  // Of the hours with just the least heat only as many as there is room for, the first of them.
+  let spare = values.length - known.subarray(known.length - values.length).filter((value) => value > least).length;
+  for (let slot = 0; slot < heat.length && taken < values.length; slot++) {
+    const value = heat[slot] ?? Number.NaN;
+    if (!(value > least || (value === least && spare-- > 0))) continue;
+    values[taken++] = wetBulbC(dryBulbC[slot] ?? 0, humidityRatio[slot] ?? 0, pressurePa[slot] ?? 0);
+  }
+  return { values, hours: known.length };
 }

@@ -1,5 +1,5 @@
 import { monthOfEachSlot } from '../../reduction/calendar.ts';
-import { forEachRun } from './step-columns.ts';
+import { forEachRun, markMissing } from './step-columns.ts';
 
 const LONGEST_FILLED_HOURS = 5;
 
@@ -12,19 +12,15 @@ const LONGEST_FILLED_HOURS = 5;
 export function fillShortGaps(column: Float64Array, typical: boolean): Uint8Array {
   const months = monthOfEachSlot(column.length);
   const filled = new Uint8Array(column.length);
-  forEachRun(
-    column.length,
-    (slot) => Number.isNaN(column[slot]),
-    (start, end) => {
-      const before = column[start - 1];
-      const after = column[end];
-      if (end - start > LONGEST_FILLED_HOURS || before === undefined || after === undefined) return;
-      if (typical && months[start - 1] !== months[end]) return;
-      for (let slot = start; slot < end; slot++) {
-        column[slot] = before + ((after - before) * (slot - start + 1)) / (end - start + 1);
-        filled[slot] = 1;
-      }
-    },
-  );
+  forEachRun(markMissing(column), (start, end) => {
+    const before = column[start - 1];
+    const after = column[end];
+    if (end - start > LONGEST_FILLED_HOURS || before === undefined || after === undefined) return;
+    if (typical && months[start - 1] !== months[end]) return;
+    for (let slot = start; slot < end; slot++) {
+      column[slot] = before + ((after - before) * (slot - start + 1)) / (end - start + 1);
+      filled[slot] = 1;
+    }
+  });
   return filled;
 }

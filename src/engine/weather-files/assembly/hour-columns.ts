@@ -26,9 +26,7 @@ export function hourColumns(input: {
   const values = hourValues(input);
   const { dryBulbC, humidityRatio, pressurePa, lines } = values;
   const waiting = waitingForPressure(steps, source);
-  const lacked = (slot: number) =>
-    Number.isNaN(dryBulbC[slot]) || (Number.isNaN(humidityRatio[slot]) && waiting[slot] === 0);
-  const gap = Uint8Array.from(dryBulbC, (_value, slot) => (lacked(slot) ? 1 : 0));
+  const gap = markGaps(values, waiting);
   const filledDry = fillShortGaps(dryBulbC, typical);
   if (steps.stepsPerHour === 1 && source === 'dew point') restoreHumidity(input, values, filledDry);
   const filledHumidity = fillShortGaps(humidityRatio, typical);
@@ -37,19 +35,52 @@ export function hourColumns(input: {
     const most = saturation(dryBulbC[slot], pressurePa[slot]);
     humidityRatio[slot] = Math.min(humidityRatio[slot] ?? Number.NaN, most);
   }
-  const humidityBit = source === 'dew point' ? VALUE.dewPoint : VALUE.relativeHumidity;
-  const flags = Uint8Array.from(dryBulbC, (value, slot) => {
-    const of = provenanceOf(values, slot);
-    return hourFlags({
-      dryBulb: of({ value, bit: VALUE.dryBulb, filled: filledDry[slot] === 1 }),
-      humidity: of({ value: humidityRatio[slot], bit: humidityBit, filled: filledHumidity[slot] === 1 }),
-      pressure: of({ value: pressurePa[slot], bit: VALUE.pressure, filled: false }),
-    });
-  });
-  const humidityPresent = Uint8Array.from(humidityRatio, (ratio, slot) =>
-    Number.isNaN(ratio) && waiting[slot] === 0 ? 0 : 1,
-  );
+  const flags = flagColumn({ values, source, filledDry, filledHumidity });
+  const humidityPresent = new Uint8Array(flags.length);
+  for (let slot = 0; slot < flags.length; slot++) {
+    humidityPresent[slot] = Number.isNaN(humidityRatio[slot]) && waiting[slot] === 0 ? 0 : 1;
+  }
   return { hours: { dryBulbC, humidityRatio, pressurePa, flags, lines }, gap, humidityPresent };
+}
+
+/** Marks the slots without dry bulb or humidity; a humidity that waits for a pressure is there. */
+function markGaps({ dryBulbC, humidityRatio }: HourValues, waiting: Uint8Array): Uint8Array {
+  const gap = new Uint8Array(dryBulbC.length);
+  for (let slot = 0; slot < gap.length; slot++) {
+    const humidityLacks = Number.isNaN(humidityRatio[slot]) && waiting[slot] === 0;
+    if (humidityLacks || Number.isNaN(dryBulbC[slot])) gap[slot] = 1;
+  }
+  return gap;
+}
+
+function flagColumn(input: {
+  values: HourValues;
+  source: HumiditySource;
+  filledDry: Uint8Array;
+  filledHumidity: Uint8Array;
+}): Uint8Array {
+  const { filledDry, filledHumidity, source, values } = input;
+  const { dryBulbC, estimated, humidityRatio, pressurePa, repaired } = values;
+  const humidityBit = source === 'dew point' ? VALUE.dewPoint : VALUE.relativeHumidity;
+  const flags = new Uint8Array(dryBulbC.length);
+  for (let slot = 0; slot < flags.length; slot++) {
+    const ours = repaired[slot] ?? 0;
+    const theirs = estimated[slot] ?? 0;
+    flags[slot] = hourFlags({
+      dryBulb: provenance(
+        dryBulbC[slot],
+        filledDry[slot] === 1 || (ours & VALUE.dryBulb) !== 0,
+        theirs & VALUE.dryBulb,
+      ),
+      humidity: provenance(
+        humidityRatio[slot],
+        filledHumidity[slot] === 1 || (ours & humidityBit) !== 0,
+        theirs & humidityBit,
+      ),
+      pressure: provenance(pressurePa[slot], (ours & VALUE.pressure) !== 0, theirs & VALUE.pressure),
+    });
+  }
+  return flags;
 }
 
 function hourValues(input: { steps: StepColumns; source: HumiditySource; belowZero: BelowZeroPhase }): HourValues {
@@ -88,15 +119,9 @@ function saturation(dryBulbC: number | undefined, pressurePa: number | undefined
   return saturationHumidityRatio(dryBulbC, pressurePa);
 }
 
-function provenanceOf(
-  values: HourValues,
-  slot: number,
-): (input: { value: number | undefined; bit: number; filled: boolean }) => Provenance {
-  const repaired = values.repaired[slot] ?? 0;
-  const estimated = values.estimated[slot] ?? 0;
-  return ({ bit, filled, value }) => {
-    if (value === undefined || Number.isNaN(value)) return 'missing';
-    if (filled || (repaired & bit) !== 0) return 'repaired';
-    return (estimated & bit) !== 0 ? 'estimated' : 'measured';
-  };
+/** @param estimated the bit of the value where the source calls it interpolated or modelled, else 0 */
+function provenance(value: number | undefined, repaired: boolean, estimated: number): Provenance {
+  if (value === undefined || Number.isNaN(value)) return 'missing';
+  if (repaired) return 'repaired';
+  return estimated !== 0 ? 'estimated' : 'measured';
 }

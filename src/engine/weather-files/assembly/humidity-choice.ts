@@ -1,5 +1,4 @@
 /** Which humidity serves: decided for the whole file, never hour by hour. */
-import { floatColumn } from '../../float-column.ts';
 import {
   type BelowZeroPhase,
   dewPointC as dewPointOfState,
@@ -30,10 +29,9 @@ export function chooseHumidity(
   findings: FindingList,
 ): HumiditySource | null {
   const { belowZero, steps } = input;
-  const dry = (step: number) => steps.dryBulbC[step] ?? Number.NaN;
-  const hours = steps.dryBulbC.filter((value) => !Number.isNaN(value)).length;
-  const dewHours = steps.dewPointC.filter((value, step) => !Number.isNaN(value + dry(step))).length;
-  const rhHours = steps.relativeHumidityPct.filter((value, step) => !Number.isNaN(value + dry(step))).length;
+  const hours = countKnown(steps.dryBulbC, steps.dryBulbC);
+  const dewHours = countKnown(steps.dewPointC, steps.dryBulbC);
+  const rhHours = countKnown(steps.relativeHumidityPct, steps.dryBulbC);
   if (dewHours === 0 && rhHours === 0) {
     findings.add({
       code: 'no-humidity',
@@ -59,6 +57,15 @@ export function chooseHumidity(
     });
   }
   return 'dew point';
+}
+
+/** Steps in which both columns hold a value. */
+function countKnown(one: Float64Array, other: Float64Array): number {
+  let known = 0;
+  for (let step = 0; step < one.length; step++) {
+    if (!Number.isNaN((one[step] ?? Number.NaN) + (other[step] ?? Number.NaN))) known++;
+  }
+  return known;
 }
 
 function countDisagreement(
@@ -87,16 +94,19 @@ export function humidityRatios(
   source: HumiditySource,
 ): Float64Array {
   const { belowZero, steps } = input;
-  return floatColumn(input.dryBulbC.length, (step) => {
+  const ratios = new Float64Array(input.dryBulbC.length).fill(Number.NaN);
+  const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
+  for (let step = 0; step < ratios.length; step++) {
     const dryBulbC = input.dryBulbC[step] ?? Number.NaN;
     const pressurePa = steps.pressurePa[step] ?? Number.NaN;
-    const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
     const value = column[step] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + pressurePa + value)) return Number.NaN;
-    return source === 'dew point'
-      ? humidityRatioFromDewPoint({ dryBulbC, dewPointC: value, pressurePa, belowZero })
-      : humidityRatioFromRelativeHumidity({ dryBulbC, relativeHumidityPct: value, pressurePa, belowZero });
-  });
+    if (Number.isNaN(dryBulbC + pressurePa + value)) continue;
+    ratios[step] =
+      source === 'dew point'
+        ? humidityRatioFromDewPoint({ dryBulbC, dewPointC: value, pressurePa, belowZero })
+        : humidityRatioFromRelativeHumidity({ dryBulbC, relativeHumidityPct: value, pressurePa, belowZero });
+  }
+  return ratios;
 }
 
 /** The year's mean wet bulb by either column, over the hours that have both. */

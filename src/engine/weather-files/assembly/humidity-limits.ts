@@ -16,23 +16,19 @@ const AGREED_SHARE = 0.98;
 /** RH over 100 to 105 % is taken as 100; more, and 0 or less, is left out. */
 export function limitRelativeHumidity(steps: StepColumns, findings: FindingList): void {
   const column = steps.relativeHumidityPct;
-  forEachRun(
-    column.length,
-    (step) => (column[step] ?? 0) > 100,
-    (start, end) => {
-      const most = column.subarray(start, end).reduce((a, b) => Math.max(a, b), 0);
-      const { first, last } = linesOfRun(steps.lines, start, end);
-      const done = most <= ROUNDING_RH_PCT ? 'taken as 100 %' : 'up to 105 % taken as 100 %, more left out';
-      findings.add({
-        code: 'rh-over-100',
-        severity: 'repair',
-        line: first,
-        lastLine: last,
-        count: end - start,
-        message: () => `${linesPhrase(first, last)}: a relative humidity of ${most} %; ${done}.`,
-      });
-    },
-  );
+  forEachRun(markAbove(column, 100), (start, end) => {
+    const most = column.subarray(start, end).reduce((a, b) => Math.max(a, b), 0);
+    const { first, last } = linesOfRun(steps.lines, start, end);
+    const done = most <= ROUNDING_RH_PCT ? 'taken as 100 %' : 'up to 105 % taken as 100 %, more left out';
+    findings.add({
+      code: 'rh-over-100',
+      severity: 'repair',
+      line: first,
+      lastLine: last,
+      count: end - start,
+      message: () => `${linesPhrase(first, last)}: a relative humidity of ${most} %; ${done}.`,
+    });
+  });
   for (let step = 0; step < column.length; step++) {
     const value = column[step] ?? Number.NaN;
     if (value > ROUNDING_RH_PCT || value <= 0) column[step] = Number.NaN;
@@ -49,21 +45,22 @@ export function limitRelativeHumidity(steps: StepColumns, findings: FindingList)
  * @returns whether the dew-point column is too poor to be used, so that the relative humidity must serve
  */
 export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, findings: FindingList): boolean {
-  const excess = Int32Array.from(steps.dewPointC, (dewPointC, step) => {
-    const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
-    return Number.isNaN(dewPointC + dryBulbC) ? 0 : Math.max(0, hundredths(dewPointC) - hundredths(dryBulbC));
-  });
-  const far = (step: number) => (excess[step] ?? 0) > ROUNDING_DEW_HUNDREDTHS;
-  const farSteps = excess.reduce((count, _value, step) => count + (far(step) ? 1 : 0), 0);
-  tellExcess({ steps, excess, far }, findings);
-  for (let step = 0; step < excess.length; step++) {
-    if (far(step)) steps.dewPointC[step] = Number.NaN;
-    else if ((excess[step] ?? 0) > 0) {
-      steps.dewPointC[step] = steps.dryBulbC[step] ?? Number.NaN;
-      steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.dewPoint;
-    }
+  const excess = dewPointExcess(steps);
+  const far = markAbove(excess, ROUNDING_DEW_HUNDREDTHS);
+  const near = markAbove(excess, 0);
+  let farSteps = 0;
+  for (let step = far.indexOf(1); step >= 0; step = far.indexOf(1, step + 1)) {
+    farSteps++;
+    near[step] = 0;
   }
-  dropPoorMonths(steps, far, findings);
+  tellExcess({ steps, excess, marks: near, large: false }, findings);
+  tellExcess({ steps, excess, marks: far, large: true }, findings);
+  for (let step = near.indexOf(1); step >= 0; step = near.indexOf(1, step + 1)) {
+    steps.dewPointC[step] = steps.dryBulbC[step] ?? Number.NaN;
+    steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.dewPoint;
+  }
+  for (let step = far.indexOf(1); step >= 0; step = far.indexOf(1, step + 1)) steps.dewPointC[step] = Number.NaN;
+  if (farSteps > 0) dropPoorMonths(steps, far, findings);
   if (farSteps <= YEAR_SHARE * excess.length) return false;
   if (relativeHumidityAgrees(steps, belowZero)) return true;
   findings.add({
@@ -76,41 +73,52 @@ export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, fin
   return true;
 }
 
-function tellExcess(
-  input: { steps: StepColumns; excess: Int32Array; far: (step: number) => boolean },
-  findings: FindingList,
-): void {
-  const { excess, far, steps } = input;
-  for (const large of [false, true]) {
-    forEachRun(
-      excess.length,
-      (step) => (excess[step] ?? 0) > 0 && far(step) === large,
-      (start, end) => {
-        const most = excess.subarray(start, end).reduce((a, b) => Math.max(a, b), 0) / 100;
-        const { first, last } = linesOfRun(steps.lines, start, end);
-        const done = large ? 'the humidity is left out' : 'the dry bulb is taken as the dew point';
-        findings.add({
-          code: 'dew-above-dry',
-          severity: large ? 'doubt' : 'repair',
-          line: first,
-          lastLine: last,
-          count: end - start,
-          message: () =>
-            `${linesPhrase(first, last)}: the dew point lies ${end - start === 1 ? '' : 'up to '}${most.toFixed(1)} K above the dry bulb; ${done}.`,
-        });
-      },
-    );
+/** How far each dew point lies above its dry bulb, hundredths of a kelvin; 0 where it does not. */
+function dewPointExcess(steps: StepColumns): Int32Array {
+  const excess = new Int32Array(steps.dewPointC.length);
+  for (let step = 0; step < excess.length; step++) {
+    const dewPointC = steps.dewPointC[step] ?? Number.NaN;
+    const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
+    if (dewPointC > dryBulbC) excess[step] = hundredths(dewPointC) - hundredths(dryBulbC);
   }
+  return excess;
 }
 
-function dropPoorMonths(steps: StepColumns, far: (step: number) => boolean, findings: FindingList): void {
+function markAbove(column: Float64Array | Int32Array, limit: number): Uint8Array {
+  const marks = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) if ((column[step] ?? limit) > limit) marks[step] = 1;
+  return marks;
+}
+
+function tellExcess(
+  input: { steps: StepColumns; excess: Int32Array; marks: Uint8Array; large: boolean },
+  findings: FindingList,
+): void {
+  const { excess, large, marks, steps } = input;
+  forEachRun(marks, (start, end) => {
+    const most = excess.subarray(start, end).reduce((a, b) => Math.max(a, b), 0) / 100;
+    const { first, last } = linesOfRun(steps.lines, start, end);
+    const done = large ? 'the humidity is left out' : 'the dry bulb is taken as the dew point';
+    findings.add({
+      code: 'dew-above-dry',
+      severity: large ? 'doubt' : 'repair',
+      line: first,
+      lastLine: last,
+      count: end - start,
+      message: () =>
+        `${linesPhrase(first, last)}: the dew point lies ${end - start === 1 ? '' : 'up to '}${most.toFixed(1)} K above the dry bulb; ${done}.`,
+    });
+  });
+}
+
+function dropPoorMonths(steps: StepColumns, far: Uint8Array, findings: FindingList): void {
   const months = monthOfEachSlot(steps.slotCount);
   const poor = new Float64Array(13);
   const all = new Float64Array(13);
   for (let step = 0; step < steps.dewPointC.length; step++) {
     const month = months[Math.floor(step / steps.stepsPerHour)] ?? 0;
     all[month] = (all[month] ?? 0) + 1;
-    if (far(step)) poor[month] = (poor[month] ?? 0) + 1;
+    if (far[step] === 1) poor[month] = (poor[month] ?? 0) + 1;
   }
   for (let month = 1; month <= 12; month++) {
     if ((poor[month] ?? 0) < MONTH_SHARE * (all[month] ?? 0)) continue;

@@ -40,9 +40,7 @@ export function matchCalendar(
   findings: FindingList,
 ): MatchedCalendar {
   const { rows, stepsPerHour } = input;
-  const slotCount = rows.months.some((month, row) => month === 2 && rows.days[row] === 29)
-    ? SLOTS_PER_LEAP_YEAR
-    : SLOTS_PER_YEAR;
+  const slotCount = holdsLeapDay(rows) ? SLOTS_PER_LEAP_YEAR : SLOTS_PER_YEAR;
   const steps = stepOfEachRow(rows, stepsPerHour, slotCount);
   const walk = placeRows(input, steps, slotCount);
   if (walk.rowsRead < rows.lines.length) askAboutPeriods(input, walk.rowsRead, findings);
@@ -54,17 +52,25 @@ export function matchCalendar(
 
 /** The step of each row. Minutes run 60/n .. 60, or 0 .. 60 - 60/n in files that never write 60. */
 function stepOfEachRow(rows: SourceRows, stepsPerHour: number, slotCount: number): Int32Array {
-  const writes60 = rows.minutes.includes(60);
+  const { days, hours, minutes, months } = rows;
+  const writes60 = minutes.includes(60);
   const stepMinutes = 60 / stepsPerHour;
-  return Int32Array.from(rows.lines, (_line, row) => {
-    const hour = rows.hours[row] ?? 0;
-    const date = { month: rows.months[row] ?? 0, day: rows.days[row] ?? 0, hour: Math.max(hour, 1) };
+  const steps = new Int32Array(rows.lines.length);
+  for (let row = 0; row < steps.length; row++) {
+    const hour = hours[row] ?? 0;
+    const date = { month: months[row] ?? 0, day: days[row] ?? 0, hour: Math.max(hour, 1) };
     const slot = (slotOf(date, slotCount) ?? 0) - (hour === 0 ? 1 : 0);
-    const minute = rows.minutes[row] ?? 0;
+    const minute = minutes[row] ?? 0;
     const within = writes60 ? Math.ceil(minute / stepMinutes) - 1 : Math.floor(minute / stepMinutes);
     const step = stepsPerHour === 1 ? 0 : Math.min(stepsPerHour - 1, Math.max(0, within));
-    return Math.max(0, slot) * stepsPerHour + step;
-  });
+    steps[row] = Math.max(0, slot) * stepsPerHour + step;
+  }
+  return steps;
+}
+
+function holdsLeapDay({ days, months }: SourceRows): boolean {
+  for (let row = days.indexOf(29); row >= 0; row = days.indexOf(29, row + 1)) if (months[row] === 2) return true;
+  return false;
 }
 
 function placeRows(
@@ -150,6 +156,7 @@ function tellRepeats(
   findings: FindingList,
 ): void {
   const { lines } = input.rows;
+  if (walk.repeats.length === 0) return;
   const absent = walk.rowOfStep.reduce((count, row) => count + (row < 0 ? 1 : 0), 0);
   for (let at = 0; at < walk.repeats.length; ) {
     const first = walk.repeats[at];

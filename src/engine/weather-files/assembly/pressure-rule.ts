@@ -3,6 +3,7 @@
  * gaps are filled, and the mean is held against the elevation, since sea-level pressure or a wrong elevation costs up to a
  * kelvin of wet bulb.
  */
+import { medianOf } from '../../order-statistic.ts';
 import { standardPressurePa } from '../../psychrometrics/pressure.ts';
 import { type FindingList, linesPhrase, whole } from '../finding-list.ts';
 import { VALUE } from './source-rows.ts';
@@ -28,7 +29,7 @@ export function settlePressure(steps: StepColumns, elevationM: number | null, fi
   const column = steps.pressurePa;
   const inHectopascals = looksLikeHectopascals(column);
   if (inHectopascals) askAboutUnit(steps, findings);
-  const known = [...column].filter((value) => isPossible(value));
+  const known = possibleValues(column);
   if (known.length === 0) {
     assume(steps, elevationM, findings);
     return;
@@ -37,7 +38,7 @@ export function settlePressure(steps: StepColumns, elevationM: number | null, fi
   if (!inHectopascals) replaceFarValues(steps, medianPa, findings);
   fillGaps(steps, findings);
   flagConstant(steps, findings);
-  const meanPa = column.reduce((sum, value) => sum + value, 0) / column.length;
+  const meanPa = meanOf(column);
   if (elevationM === null) {
     findings.add({
       code: 'elevation-missing',
@@ -54,21 +55,35 @@ function isPossible(pressurePa: number): boolean {
   return pressurePa >= LIMITS_PA.low && pressurePa <= LIMITS_PA.high;
 }
 
-function medianOf(values: readonly number[]): number {
-  const sorted = Float64Array.from(values).sort();
-  const middle = sorted.length >> 1;
-  const upper = sorted[middle] ?? Number.NaN;
-  return sorted.length % 2 === 1 ? upper : (upper + (sorted[middle - 1] ?? Number.NaN)) / 2;
+function possibleValues(column: Float64Array): Float64Array {
+  const known = new Float64Array(column.length);
+  let count = 0;
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (isPossible(value)) known[count++] = value;
+  }
+  return known.subarray(0, count);
+}
+
+function meanOf(values: Float64Array): number {
+  let sum = 0;
+  for (let step = 0; step < values.length; step++) sum += values[step] ?? Number.NaN;
+  return sum / values.length;
 }
 
 function looksLikeHectopascals(column: Float64Array): boolean {
-  const present = [...column].filter((value) => !Number.isNaN(value));
-  const inHectopascals = present.filter((value) => value >= HECTOPASCAL_LIMITS.low && value <= HECTOPASCAL_LIMITS.high);
-  return present.length > 0 && inHectopascals.length > present.length / 2;
+  let present = 0;
+  let inHectopascals = 0;
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (!Number.isNaN(value)) present++;
+    if (value >= HECTOPASCAL_LIMITS.low && value <= HECTOPASCAL_LIMITS.high) inHectopascals++;
+  }
+  return present > 0 && inHectopascals > present / 2;
 }
 
 function askAboutUnit(steps: StepColumns, findings: FindingList): void {
-  const present = [...steps.pressurePa].filter((value) => !Number.isNaN(value));
+  const present = steps.pressurePa.filter((value) => !Number.isNaN(value));
   const { first, last } = linesOfRun(steps.lines, 0, steps.lines.length);
   findings.ask('unit-guess', {
     line: first,
@@ -107,8 +122,11 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
 /** Impossible values, and those more than 6 % from the median: the standard atmosphere scaled to the median. */
 function replaceFarValues(steps: StepColumns, medianPa: number, findings: FindingList): void {
   const column = steps.pressurePa;
-  const far = (step: number) => Math.abs((column[step] ?? Number.NaN) - medianPa) > FAR_FROM_MEDIAN * medianPa;
-  forEachRun(column.length, far, (start, end) => {
+  const far = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
+    if (Math.abs((column[step] ?? Number.NaN) - medianPa) > FAR_FROM_MEDIAN * medianPa) far[step] = 1;
+  }
+  forEachRun(far, (start, end) => {
     const { first, last } = linesOfRun(steps.lines, start, end);
     const worst = column
       .subarray(start, end)
@@ -123,8 +141,7 @@ function replaceFarValues(steps: StepColumns, medianPa: number, findings: Findin
         `${linesPhrase(first, last)}: a pressure of ${whole(worst)} Pa lies more than 6 % from the median of the file, ${whole(medianPa)} Pa; the median is taken instead.`,
     });
   });
-  for (let step = 0; step < column.length; step++) {
-    if (!far(step)) continue;
+  for (let step = far.indexOf(1); step >= 0; step = far.indexOf(1, step + 1)) {
     column[step] = medianPa;
     steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.pressure;
   }
@@ -133,8 +150,7 @@ function replaceFarValues(steps: StepColumns, medianPa: number, findings: Findin
 /** Gap rule 4: the standard atmosphere at the elevation scaled by the file's mean ratio, which is the file's mean. */
 function fillGaps(steps: StepColumns, findings: FindingList): void {
   const column = steps.pressurePa;
-  const known = column.filter((value) => isPossible(value));
-  const meanPa = known.reduce((sum, value) => sum + value, 0) / known.length;
+  const meanPa = meanOf(possibleValues(column));
   let filled = 0;
   let first = 0;
   for (let step = 0; step < column.length; step++) {
@@ -158,12 +174,12 @@ function fillGaps(steps: StepColumns, findings: FindingList): void {
 }
 
 function flagConstant(steps: StepColumns, findings: FindingList): void {
-  const counts = new Map<number, number>();
   const given = (step: number) => ((steps.repaired[step] ?? 0) & VALUE.pressure) === 0;
-  steps.pressurePa.forEach((value, step) => {
-    if (given(step)) counts.set(value, (counts.get(value) ?? 0) + 1);
-  });
-  const [value, count] = [...counts].reduce((most, entry) => (entry[1] > most[1] ? entry : most), [0, 0]);
+  const value = candidateForMost(steps.pressurePa, given);
+  let count = 0;
+  for (let step = 0; step < steps.pressurePa.length; step++) {
+    if (steps.pressurePa[step] === value && given(step)) count++;
+  }
   if (count < CONSTANT_HOURS * steps.stepsPerHour) return;
   for (let step = 0; step < steps.pressurePa.length; step++) {
     if (given(step) && steps.pressurePa[step] === value)
@@ -176,6 +192,19 @@ function flagConstant(steps: StepColumns, findings: FindingList): void {
     message: () =>
       `The pressure is ${whole(value)} Pa in ${whole(count / steps.stepsPerHour)} hours: the source filled it, and it is marked as assumed.`,
   });
+}
+
+/** The only value that can stand in more than half of the steps (the vote of R. S. Boyer and J. S. Moore). */
+function candidateForMost(column: Float64Array, given: (step: number) => boolean): number {
+  let candidate = Number.NaN;
+  let lead = 0;
+  for (let step = 0; step < column.length; step++) {
+    if (!given(step)) continue;
+    const value = column[step] ?? Number.NaN;
+    if (lead === 0) candidate = value;
+    lead += value === candidate ? 1 : -1;
+  }
+  return candidate;
 }
 
 function compareWithElevation(meanPa: number, elevationM: number, findings: FindingList): void {

@@ -17,11 +17,12 @@ function leaveOut(
   findings: FindingList,
 ): void {
   const { column, name, limits, steps } = input;
-  const outside = (step: number) => {
+  const outside = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
     const value = column[step] ?? Number.NaN;
-    return value < limits.low || value > limits.high;
-  };
-  forEachRun(column.length, outside, (start, end) => {
+    if (value < limits.low || value > limits.high) outside[step] = 1;
+  }
+  forEachRun(outside, (start, end) => {
     const values = column.subarray(start, end);
     const worst = values.reduce((far, value) => (Math.abs(value) > Math.abs(far) ? value : far), 0);
     const { first, last } = linesOfRun(steps.lines, start, end);
@@ -34,6 +35,6 @@ function leaveOut(
       message: () =>
         `${linesPhrase(first, last)}: a ${name} of ${worst} °C lies outside ${limits.low} to ${limits.high} °C; ${end - start === 1 ? 'the value is' : 'the values are'} left out.`,
     });
+    values.fill(Number.NaN);
   });
-  for (let step = 0; step < column.length; step++) if (outside(step)) column[step] = Number.NaN;
 }

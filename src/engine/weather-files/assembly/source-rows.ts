@@ -4,38 +4,37 @@
  */
 export interface SourceRows {
   /** Line of the file, counted from 1. */
-  readonly lines: number[];
+  readonly lines: Uint32Array;
   /** Calendar year, or 0 when the file does not say. */
-  readonly years: number[];
-  readonly months: number[];
-  readonly days: number[];
+  readonly years: Int32Array;
+  readonly months: Uint8Array;
+  readonly days: Uint8Array;
   /** Hour that ends, 1 to 24; 0 is 24:00 of the day before. */
-  readonly hours: number[];
+  readonly hours: Uint8Array;
   /** Minute as written; it only orders the rows of an hour. */
-  readonly minutes: number[];
-  readonly dryBulbC: number[];
-  readonly dewPointC: number[];
-  readonly relativeHumidityPct: number[];
-  readonly pressurePa: number[];
+  readonly minutes: Uint8Array;
+  readonly dryBulbC: Float64Array;
+  readonly dewPointC: Float64Array;
+  readonly relativeHumidityPct: Float64Array;
+  readonly pressurePa: Float64Array;
   /** Which values the source itself calls interpolated or modelled: bits of `VALUE`. */
-  readonly estimated: number[];
+  readonly estimated: Uint8Array;
+}
+
+/** One row, as `RowCollector` takes it: whole numbers for the time, all fields as in `SourceRows`. */
+export interface SourceRow {
+  line: number;
+  year: number;
+  month: number;
+  day: number;
+  hour: number;
+  minute: number;
+  dryBulbC: number;
+  dewPointC: number;
+  relativeHumidityPct: number;
+  pressurePa: number;
+  estimated: number;
 }
 
 /** One bit for each value of a row. */
 export const VALUE = { dryBulb: 1, dewPoint: 2, relativeHumidity: 4, pressure: 8 } as const;
-
-export function emptyRows(): SourceRows {
-  return {
-    lines: [],
-    years: [],
-    months: [],
-    days: [],
-    hours: [],
-    minutes: [],
-    dryBulbC: [],
-    dewPointC: [],
-    relativeHumidityPct: [],
-    pressurePa: [],
-    estimated: [],
-  };
-}

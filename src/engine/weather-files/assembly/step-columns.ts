@@ -1,4 +1,3 @@
-import { floatColumn } from '../../float-column.ts';
 import type { SourceRows } from './source-rows.ts';
 
 /**
@@ -27,34 +26,52 @@ export function stepColumns(input: {
   stepsPerHour: number;
 }): StepColumns {
   const { rows, rowOfStep } = input;
-  // Row -1 is no row: reading it gives undefined, which is missing.
-  const column = (values: readonly number[]) =>
-    floatColumn(rowOfStep.length, (step) => values[rowOfStep[step] ?? -1] ?? Number.NaN);
+  const lines = new Uint32Array(rowOfStep.length);
+  const estimated = new Uint8Array(rowOfStep.length);
+  for (let step = 0; step < rowOfStep.length; step++) {
+    const row = rowOfStep[step] ?? -1;
+    if (row < 0) continue;
+    lines[step] = rows.lines[row] ?? 0;
+    estimated[step] = rows.estimated[row] ?? 0;
+  }
   return {
     slotCount: input.slotCount,
     stepsPerHour: input.stepsPerHour,
-    lines: Uint32Array.from(rowOfStep, (row) => (row < 0 ? 0 : (rows.lines[row] ?? 0))),
-    dryBulbC: column(rows.dryBulbC),
-    dewPointC: column(rows.dewPointC),
-    relativeHumidityPct: column(rows.relativeHumidityPct),
-    pressurePa: column(rows.pressurePa),
-    estimated: Uint8Array.from(rowOfStep, (row) => (row < 0 ? 0 : (rows.estimated[row] ?? 0))),
+    lines,
+    dryBulbC: onSteps(rows.dryBulbC, rowOfStep),
+    dewPointC: onSteps(rows.dewPointC, rowOfStep),
+    relativeHumidityPct: onSteps(rows.relativeHumidityPct, rowOfStep),
+    pressurePa: onSteps(rows.pressurePa, rowOfStep),
+    estimated,
     repaired: new Uint8Array(rowOfStep.length),
   };
 }
 
-/** Calls `each` for every unbroken run of steps that hold; `end` is the step after the last. */
-export function forEachRun(
-  length: number,
-  holds: (step: number) => boolean,
-  each: (start: number, end: number) => void,
-): void {
-  for (let step = 0; step < length; step++) {
-    if (!holds(step)) continue;
-    const start = step;
-    while (step < length && holds(step)) step++;
-    each(start, step);
+function onSteps(values: Float64Array, rowOfStep: Int32Array): Float64Array {
+  const column = new Float64Array(rowOfStep.length);
+  for (let step = 0; step < rowOfStep.length; step++) {
+    const row = rowOfStep[step] ?? -1;
+    column[step] = row < 0 ? Number.NaN : (values[row] ?? Number.NaN);
   }
+  return column;
+}
+
+/** Calls `each` for every unbroken run of steps that are marked with 1; `end` is the step after the last. */
+export function forEachRun(marks: Uint8Array, each: (start: number, end: number) => void): void {
+  // The search of the language looks at bytes by the dozen, and in most files nothing is marked.
+  for (let start = marks.indexOf(1); start >= 0; ) {
+    let end = start + 1;
+    while (marks[end] === 1) end++;
+    each(start, end);
+    start = marks.indexOf(1, end);
+  }
+}
+
+/** Marks with 1 the steps whose value is missing. */
+export function markMissing(column: Float64Array): Uint8Array {
+  const marks = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) if (Number.isNaN(column[step])) marks[step] = 1;
+  return marks;
 }
 
 /** First and last line of the file within a run of steps; zeros when no row stands there. */

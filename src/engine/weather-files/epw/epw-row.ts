@@ -1,9 +1,11 @@
 /** One data record of an EPW: the ten fields that are needed, by position. */
 import { daysInMonth, monthNames } from '../../reduction/calendar.ts';
+import type { SourceRow } from '../assembly/source-rows.ts';
 import type { FindingList } from '../finding-list.ts';
 import { textBetween } from '../text/decode-text.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
 import { BLANK, numberField, quoted } from '../text/number-field.ts';
+import { humidityWithoutCodes, pressureWithoutCodes, temperatureWithoutCodes } from './missing-codes.ts';
 
 const COMMA = 0x2c;
 export const NEEDED_FIELDS = 10;
@@ -35,6 +37,8 @@ const PRESSURE = 9;
 /** Words that stand for a missing value. */
 const MISSING_WORDS = new Set(['na', 'nan', '-', 'n/a', 'null']);
 const LONGEST_MISSING_FIELD = 12;
+/** A number beyond this is no year. */
+const LAST_YEAR = 999_999_999;
 
 /** Where the fields of the present line begin; the next begins one byte after the comma. */
 export interface FieldBounds {
@@ -56,22 +60,14 @@ export function findFields(cursor: LineCursor, bounds: FieldBounds): void {
   bounds.count = count;
 }
 
-export interface EpwTime {
-  year: number;
-  month: number;
-  day: number;
-  hour: number;
-  minute: number;
-}
-
-/** The time of the row; null when it cannot be placed, with every fault told. */
-export function readTime(cursor: LineCursor, bounds: FieldBounds, findings: FindingList): EpwTime | null {
+/** Reads the time of the line into a row; false when it cannot be placed, with every fault told. */
+export function readTime(cursor: LineCursor, bounds: FieldBounds, row: SourceRow, findings: FindingList): boolean {
   const year = numberField(cursor.text, startOf(bounds, YEAR), endOf(bounds, YEAR));
   const month = timePart(cursor, bounds, MONTH, findings);
   const day = timePart(cursor, bounds, DAY, findings);
   const hour = timePart(cursor, bounds, HOUR, findings);
   const minute = timePart(cursor, bounds, MINUTE, findings);
-  if (Number.isNaN(month + day + hour + minute)) return null;
+  if (Number.isNaN(month + day + hour + minute)) return false;
   const wrong =
     wrongPart('month', month, 1, 12) ??
     wrongPart('day', day, 1, daysInMonth(month, true)) ??
@@ -79,9 +75,14 @@ export function readTime(cursor: LineCursor, bounds: FieldBounds, findings: Find
     wrongPart('minute', minute, 0, 60);
   if (wrong !== null) {
     tellWrongTime(cursor, bounds, { ...wrong, month }, findings);
-    return null;
+    return false;
   }
-  return { year: typeof year === 'number' && Number.isInteger(year) ? year : 0, month, day, hour, minute };
+  row.year = typeof year === 'number' && Number.isInteger(year) && Math.abs(year) <= LAST_YEAR ? year : 0;
+  row.month = month;
+  row.day = day;
+  row.hour = hour;
+  row.minute = minute;
+  return true;
 }
 
 function timePart(cursor: LineCursor, bounds: FieldBounds, index: number, findings: FindingList): number {
@@ -120,27 +121,12 @@ function wrongPart(part: string, value: number, low: number, high: number): Wron
   return Number.isInteger(value) && value >= low && value <= high ? null : { part, value, low, high };
 }
 
-/** Dry bulb and dew point, °C, relative humidity, %, and pressure, Pa; NaN for a missing code. Letters are told. */
-export function readValues(
-  cursor: LineCursor,
-  bounds: FieldBounds,
-  findings: FindingList,
-): { dryBulbC: number; dewPointC: number; relativeHumidityPct: number; pressurePa: number } {
-  const relativeHumidityPct = readValue(cursor, bounds, RELATIVE_HUMIDITY, findings);
-  const pressurePa = readValue(cursor, bounds, PRESSURE, findings);
-  return {
-    dryBulbC: withoutCodes(readValue(cursor, bounds, DRY_BULB, findings)),
-    dewPointC: withoutCodes(readValue(cursor, bounds, DEW_POINT, findings)),
-    relativeHumidityPct: relativeHumidityPct >= 999 || relativeHumidityPct < 0 ? Number.NaN : relativeHumidityPct,
-    // 99999 may be a pressure: the median of the file decides, in `read-epw.ts`.
-    pressurePa: pressurePa >= 999_999 || pressurePa === 9_999 || pressurePa <= 0 ? Number.NaN : pressurePa,
-  };
-}
-
-/** A temperature, °C, or NaN for the codes of a missing one: 99.9 and above, -99, -99.9, -999, -9999. */
-function withoutCodes(value: number): number {
-  const code = value >= 99.9 || value === -99 || value === -99.9 || value === -999 || value === -9999;
-  return code ? Number.NaN : value;
+/** Reads the four values of the line into a row; NaN for what is missing. Letters are told. */
+export function readValues(cursor: LineCursor, bounds: FieldBounds, row: SourceRow, findings: FindingList): void {
+  row.relativeHumidityPct = humidityWithoutCodes(readValue(cursor, bounds, RELATIVE_HUMIDITY, findings));
+  row.pressurePa = pressureWithoutCodes(readValue(cursor, bounds, PRESSURE, findings));
+  row.dryBulbC = temperatureWithoutCodes(readValue(cursor, bounds, DRY_BULB, findings));
+  row.dewPointC = temperatureWithoutCodes(readValue(cursor, bounds, DEW_POINT, findings));
 }
 
 function readValue(cursor: LineCursor, bounds: FieldBounds, index: number, findings: FindingList): number {
@@ -156,10 +142,9 @@ function saysMissing(cursor: LineCursor, bounds: FieldBounds, index: number): bo
   return short && MISSING_WORDS.has(fieldText(cursor, bounds, index).trim().toLowerCase());
 }
 
-/** First bytes of the source flags: letter and digit of dry bulb, dew point and relative humidity. */
-export function flagBytes(cursor: LineCursor, bounds: FieldBounds): Uint8Array {
-  const start = startOf(bounds, FLAGS);
-  return cursor.text.bytes.subarray(start, Math.min(start + 6, endOf(bounds, FLAGS)));
+/** Where the source flags of the line begin, and the byte after them. */
+export function flagsOf(bounds: FieldBounds): { start: number; end: number } {
+  return { start: startOf(bounds, FLAGS), end: endOf(bounds, FLAGS) };
 }
 
 function tellNotANumber(cursor: LineCursor, bounds: FieldBounds, index: number, findings: FindingList): void {

@@ -1,16 +1,10 @@
-import { emptyRows, type SourceRows, VALUE } from '../assembly/source-rows.ts';
+import { RowCollector } from '../assembly/row-collector.ts';
+import { type SourceRow, type SourceRows, VALUE } from '../assembly/source-rows.ts';
 import { type FindingList, whole } from '../finding-list.ts';
+import { Frequencies } from '../frequencies.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
-import {
-  type EpwTime,
-  type FieldBounds,
-  FULL_FIELDS,
-  findFields,
-  flagBytes,
-  NEEDED_FIELDS,
-  readTime,
-  readValues,
-} from './epw-row.ts';
+import { type FieldBounds, FULL_FIELDS, findFields, flagsOf, NEEDED_FIELDS, readTime, readValues } from './epw-row.ts';
+import { PlainRowReader } from './plain-row.ts';
 
 export interface EpwRows {
   readonly rows: SourceRows;
@@ -23,7 +17,8 @@ const MOST_ROWS = 2 * 8784 * 60;
 /** A number of fields that so many rows share is a layout of the file; a rarer one is a damaged row. */
 const LAYOUT_SHARE = 0.01;
 interface Progress {
-  readonly rows: SourceRows;
+  readonly rows: RowCollector;
+  /** Fields of each row kept, at most `FULL_FIELDS`. */
   readonly fieldCounts: number[];
   readonly bounds: FieldBounds;
   firstFlags: number | null;
@@ -35,7 +30,7 @@ interface Progress {
 /** Reads every data record; every fault in it is told. */
 export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows {
   const progress: Progress = {
-    rows: emptyRows(),
+    rows: new RowCollector(),
     fieldCounts: [],
     bounds: { starts: new Int32Array(NEEDED_FIELDS + 2), count: 0 },
     firstFlags: null,
@@ -43,22 +38,29 @@ export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows 
     longRows: 0,
     firstLongLine: 0,
   };
-  let records = 0;
-  while (cursor.next()) {
-    records++;
+  const plain = new PlainRowReader(cursor.text.bytes);
+  for (let records = 1; ; records++) {
+    if (records <= MOST_ROWS && plain.read(cursor.ahead)) {
+      cursor.pass(plain.end, plain.next);
+      noteLength(progress, plain.fieldCount, cursor.line);
+      keepRow(cursor, progress, plain);
+      continue;
+    }
+    if (!cursor.next()) break;
     if (records > MOST_ROWS) {
       tellTooMany(cursor, findings);
       break;
     }
     findFields(cursor, progress.bounds);
     if (cutShort(cursor, progress)) tellTruncated(cursor, progress, findings);
-    else readRow(cursor, progress, findings);
+    else readRow(cursor, progress, plain.row, findings);
   }
   tellLongRows(progress, findings);
-  leaveOutDamagedRows(progress, findings);
+  const rows = progress.rows.finish();
+  leaveOutDamagedRows(progress.fieldCounts, rows, findings);
   // Flags that say the same of every row tell nothing of any of them.
-  if (!progress.flagsVary) progress.rows.estimated.fill(0);
-  return { rows: progress.rows, flagsInformative: progress.flagsVary };
+  if (!progress.flagsVary) rows.estimated.fill(0);
+  return { rows, flagsInformative: progress.flagsVary };
 }
 
 /** A last line without its end and with fewer fields than the others. */
@@ -79,7 +81,7 @@ function tellTruncated(cursor: LineCursor, progress: Progress, findings: Finding
   });
 }
 
-function readRow(cursor: LineCursor, progress: Progress, findings: FindingList): void {
+function readRow(cursor: LineCursor, progress: Progress, row: SourceRow, findings: FindingList): void {
   const { bounds } = progress;
   const { line } = cursor;
   if (bounds.count < NEEDED_FIELDS) {
@@ -93,46 +95,49 @@ function readRow(cursor: LineCursor, progress: Progress, findings: FindingList):
     });
     return;
   }
-  if (bounds.count > FULL_FIELDS) {
-    progress.longRows++;
-    if (progress.firstLongLine === 0) progress.firstLongLine = line;
-  }
-  const time = readTime(cursor, bounds, findings);
-  const values = readValues(cursor, bounds, findings);
-  if (time === null) return;
-  progress.fieldCounts.push(Math.min(bounds.count, FULL_FIELDS));
-  keepRow(progress.rows, { line, time, values, estimated: readFlags(cursor, progress) });
+  noteLength(progress, bounds.count, line);
+  const placed = readTime(cursor, bounds, row, findings);
+  readValues(cursor, bounds, row, findings);
+  if (!placed) return;
+  const { start, end } = flagsOf(bounds);
+  keepRow(cursor, progress, { row, fieldCount: bounds.count, flagsStart: start, flagsEnd: end });
 }
 
-function keepRow(
-  rows: SourceRows,
-  row: { line: number; time: EpwTime; values: ReturnType<typeof readValues>; estimated: number },
-): void {
-  rows.lines.push(row.line);
-  rows.years.push(row.time.year);
-  rows.months.push(row.time.month);
-  rows.days.push(row.time.day);
-  rows.hours.push(row.time.hour);
-  rows.minutes.push(row.time.minute);
-  rows.dryBulbC.push(row.values.dryBulbC);
-  rows.dewPointC.push(row.values.dewPointC);
-  rows.relativeHumidityPct.push(row.values.relativeHumidityPct);
-  rows.pressurePa.push(row.values.pressurePa);
-  rows.estimated.push(row.estimated);
+function noteLength(progress: Progress, fieldCount: number, line: number): void {
+  if (fieldCount <= FULL_FIELDS) return;
+  progress.longRows++;
+  if (progress.firstLongLine === 0) progress.firstLongLine = line;
 }
 
-/** Keeps whether the flags vary, and answers which values they call estimated. */
-function readFlags(cursor: LineCursor, progress: Progress): number {
-  const flags = flagBytes(cursor, progress.bounds);
-  const [dryLetter = 0, dryDigit = 0, dewLetter = 0, dewDigit = 0, humidityLetter = 0] = flags;
+type ReadRow = Pick<PlainRowReader, 'row' | 'fieldCount' | 'flagsStart' | 'flagsEnd'>;
+
+function keepRow(cursor: LineCursor, progress: Progress, read: ReadRow): void {
+  const { row } = read;
+  row.line = cursor.line;
+  row.estimated = readFlags(cursor.text.bytes, progress, read);
+  progress.fieldCounts.push(Math.min(read.fieldCount, FULL_FIELDS));
+  progress.rows.add(row);
+}
+
+/** Keeps whether the flags of dry bulb and dew point, letter and digit of each, vary, and answers which values they call estimated. */
+function readFlags(bytes: Uint8Array, progress: Progress, { flagsStart, flagsEnd }: ReadRow): number {
+  const dryLetter = byteBefore(flagsEnd, bytes, flagsStart);
+  const dryDigit = byteBefore(flagsEnd, bytes, flagsStart + 1);
+  const dewLetter = byteBefore(flagsEnd, bytes, flagsStart + 2);
+  const dewDigit = byteBefore(flagsEnd, bytes, flagsStart + 3);
   const firstFour = ((dryLetter * 256 + dryDigit) * 256 + dewLetter) * 256 + dewDigit;
   if (progress.firstFlags === null) progress.firstFlags = firstFour;
   else if (progress.firstFlags !== firstFour) progress.flagsVary = true;
   let estimated = 0;
   if (isEstimated(dryLetter)) estimated |= VALUE.dryBulb;
   if (isEstimated(dewLetter)) estimated |= VALUE.dewPoint;
-  if (isEstimated(humidityLetter)) estimated |= VALUE.relativeHumidity;
+  if (isEstimated(byteBefore(flagsEnd, bytes, flagsStart + 4))) estimated |= VALUE.relativeHumidity;
   return estimated;
+}
+
+/** The byte at a place before the end of a field, else 0. */
+function byteBefore(end: number, bytes: Uint8Array, at: number): number {
+  return at < end ? (bytes[at] ?? 0) : 0;
 }
 
 /** Source letters of values that are interpolated (B, C) or modelled (E). */
@@ -164,14 +169,14 @@ function tellLongRows(progress: Progress, findings: FindingList): void {
 }
 
 /** A row that is shorter than the file's layout may have lost any of its fields, so its values are not trusted. */
-function leaveOutDamagedRows(progress: Progress, findings: FindingList): void {
-  const { fieldCounts, rows } = progress;
-  const rowsWith = new Map<number, number>();
-  for (const count of fieldCounts) rowsWith.set(count, (rowsWith.get(count) ?? 0) + 1);
-  const usual = [...rowsWith].reduce((most, entry) => (entry[1] > most[1] ? entry : most), [0, 0])[0];
+function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, findings: FindingList): void {
+  const rowsWith = new Frequencies();
+  for (const count of fieldCounts) rowsWith.add(count);
+  const usual = rowsWith.mostFrequent(0);
+  if (rowsWith.size === 1) return;
   for (let row = 0; row < fieldCounts.length; row++) {
     const count = fieldCounts[row] ?? 0;
-    if (count >= usual || (rowsWith.get(count) ?? 0) >= LAYOUT_SHARE * fieldCounts.length) continue;
+    if (count >= usual || rowsWith.of(count) >= LAYOUT_SHARE * fieldCounts.length) continue;
     for (const column of [rows.dryBulbC, rows.dewPointC, rows.relativeHumidityPct, rows.pressurePa]) {
       column[row] = Number.NaN;
     }

@@ -2,6 +2,9 @@
 import { assembleYear } from '../assembly/assemble-year.ts';
 import type { SourceRows } from '../assembly/source-rows.ts';
 import { type FindingList, whole } from '../finding-list.ts';
+import { Frequencies } from '../frequencies.ts';
+import { withStatedPlace } from '../place/settle-place.ts';
+import type { ReadOptions } from '../read-options.ts';
 import type { DecodedText } from '../text/decode-text.ts';
 import { LineCursor } from '../text/line-cursor.ts';
 import type { WeatherFileReading } from '../weather-file-reading.ts';
@@ -12,17 +15,22 @@ import { readEpwRows } from './epw-rows.ts';
 const PRESSURE_CODE_PA = 99_999;
 const CODE_WITHIN = 0.01;
 
-export function readEpw(text: DecodedText, findings: FindingList): WeatherFileReading {
+export function readEpw(text: DecodedText, findings: FindingList, options: ReadOptions = {}): WeatherFileReading {
   const cursor = new LineCursor(text);
   const header = readEpwHeader(cursor, findings);
   const { flagsInformative, rows } = readEpwRows(cursor, findings);
   numberHours(rows, findings);
   settlePressureCode(rows.pressurePa);
-  if (header.station === null) return { status: 'refused', format: 'EPW', station: null, findings: findings.inOrder() };
+  if (header.station === null) {
+    return { status: 'refused', part: '', format: 'EPW', station: null, findings: findings.inOrder() };
+  }
   return assembleYear(
     {
       format: 'EPW',
-      station: header.station,
+      part: '',
+      yearFrom: 'weekday',
+      cutByUtc: false,
+      station: withStatedPlace(header.station, options.place),
       stationLine: header.stationLine,
       rows,
       stepsPerHour: settleRecordsPerHour(header, rows, findings),
@@ -33,6 +41,7 @@ export function readEpw(text: DecodedText, findings: FindingList): WeatherFileRe
       comments: header.comments,
     },
     findings,
+    options,
   );
 }
 
@@ -51,11 +60,9 @@ function numberHours(rows: SourceRows, findings: FindingList): void {
   });
 }
 
-function settlePressureCode(pressurePa: number[]): void {
+function settlePressureCode(pressurePa: Float64Array): void {
   if (!pressurePa.includes(PRESSURE_CODE_PA)) return;
-  const others = Float64Array.from(
-    pressurePa.filter((value) => !Number.isNaN(value) && value !== PRESSURE_CODE_PA),
-  ).sort();
+  const others = pressurePa.filter((value) => !Number.isNaN(value) && value !== PRESSURE_CODE_PA).sort();
   const medianPa = others[others.length >> 1];
   if (medianPa !== undefined && Math.abs(PRESSURE_CODE_PA / medianPa - 1) <= CODE_WITHIN) return;
   for (let row = 0; row < pressurePa.length; row++) {
@@ -65,21 +72,19 @@ function settlePressureCode(pressurePa: number[]): void {
 
 /** Records an hour as the rows have them: the most frequent number of rows that share an hour at different minutes. */
 function settleRecordsPerHour(header: EpwHeader, rows: SourceRows, findings: FindingList): number {
-  const found = new Map<number, number>();
+  const { days, hours, lines, minutes, months } = rows;
+  const found = new Frequencies();
   let run = 1;
-  for (let row = 1; row <= rows.lines.length; row++) {
-    const sameHour =
-      rows.hours[row] === rows.hours[row - 1] &&
-      rows.days[row] === rows.days[row - 1] &&
-      rows.months[row] === rows.months[row - 1];
-    if (sameHour && rows.minutes[row] !== rows.minutes[row - 1]) {
+  for (let row = 1; row <= lines.length; row++) {
+    const sameHour = hours[row] === hours[row - 1] && days[row] === days[row - 1] && months[row] === months[row - 1];
+    if (sameHour && minutes[row] !== minutes[row - 1]) {
       run++;
       continue;
     }
-    found.set(run, (found.get(run) ?? 0) + 1);
+    found.add(run);
     run = 1;
   }
-  const usual = [...found].reduce((most, entry) => (entry[1] > most[1] ? entry : most), [header.recordsPerHour, 0])[0];
+  const usual = found.mostFrequent(header.recordsPerHour);
   if (usual === header.recordsPerHour || 60 % usual !== 0) return header.recordsPerHour;
   if (!findings.refused) {
     findings.add({

@@ -2,6 +2,7 @@
  * Bytes to text. Strict UTF-8 first, else Windows-1252; a byte order mark of UTF-8 or UTF-16 decides by itself. Both
  * encodings agree with ASCII, so readers scan bytes and turn only names and comments into strings.
  */
+import { surveyText, type TextSurvey } from './survey-text.ts';
 
 export interface DecodedText {
   /** UTF-8 or Windows-1252 bytes without a byte order mark. */
@@ -22,13 +23,6 @@ export interface NotText {
 }
 
 const MOST_CONTROL_PCT = 1;
-const TAB = 0x09;
-const LINE_FEED = 0x0a;
-const FORM_FEED = 0x0c;
-const RETURN = 0x0d;
-const CTRL_Z = 0x1a;
-const SPACE = 0x20;
-const DELETE = 0x7f;
 
 /** Decodes a file, or says why it is not text. */
 export function decodeText(file: Uint8Array): DecodedText | NotText {
@@ -36,9 +30,10 @@ export function decodeText(file: Uint8Array): DecodedText | NotText {
   if (archive !== null) return { notText: archive, line: null, controlPct: 0 };
   const utf16 = utf16Order(file);
   const bytes = utf16 === null ? withoutUtf8Mark(file) : utf8FromUtf16(file.subarray(2), utf16);
-  const found = survey(bytes);
-  if ('notText' in found) return found;
-  const windows1252 = !found.ascii && !isUtf8(bytes);
+  const found = surveyText(bytes);
+  const refusal = notText(found, bytes);
+  if (refusal !== null) return refusal;
+  const windows1252 = found.firstBeyondAscii >= 0 && !isUtf8(bytes, found);
   return { bytes, windows1252, utf16: utf16 !== null, loneReturns: found.loneReturns };
 }
 
@@ -58,23 +53,10 @@ function utf16Order(file: Uint8Array): 'little' | 'big' | null {
   return null;
 }
 
-/** One pass over the bytes: what is not text, and whether anything beyond ASCII or a lone carriage return stands there. */
-function survey(bytes: Uint8Array): NotText | { readonly ascii: boolean; readonly loneReturns: boolean } {
-  let line = 1;
-  let controls = 0;
-  let ascii = true;
-  let loneReturns = false;
-  for (let at = 0; at < bytes.length; at++) {
-    const byte = bytes[at] ?? 0;
-    if (byte >= SPACE && byte < DELETE) continue;
-    if (byte === LINE_FEED) line++;
-    else if (byte > DELETE) ascii = false;
-    else if (byte === RETURN) loneReturns = loneReturns || bytes[at + 1] !== LINE_FEED;
-    else if (byte === 0) return { notText: 'nul', line, controlPct: 0 };
-    else if (byte !== TAB && byte !== FORM_FEED && byte !== CTRL_Z) controls++;
-  }
-  const controlPct = (100 * controls) / Math.max(1, bytes.length);
-  return controlPct > MOST_CONTROL_PCT ? { notText: 'control', line: null, controlPct } : { ascii, loneReturns };
+function notText(found: TextSurvey, bytes: Uint8Array): NotText | null {
+  if (found.nulLine !== null) return { notText: 'nul', line: found.nulLine, controlPct: 0 };
+  const controlPct = (100 * found.controls) / Math.max(1, bytes.length);
+  return controlPct > MOST_CONTROL_PCT ? { notText: 'control', line: null, controlPct } : null;
 }
 
 /** Length of the UTF-8 sequence at a place, 0 when it is malformed (overlong, a surrogate, beyond U+10FFFF, cut short). */
@@ -93,8 +75,8 @@ function sequenceLength(bytes: Uint8Array, at: number): number {
   return outside ? 0 : length;
 }
 
-function isUtf8(bytes: Uint8Array): boolean {
-  for (let at = 0; at < bytes.length; ) {
+function isUtf8(bytes: Uint8Array, { firstBeyondAscii, lastBeyondAscii }: TextSurvey): boolean {
+  for (let at = firstBeyondAscii; at <= lastBeyondAscii; ) {
     const length = (bytes[at] ?? 0) < 0x80 ? 1 : sequenceLength(bytes, at);
     if (length === 0) return false;
     at += length;

@@ -34,6 +34,25 @@ export class LineCursor {
     return false;
   }
 
+  /** First byte of the line that `next` would look at. */
+  get ahead(): number {
+    return this.#again ? this.start : this.#next;
+  }
+
+  /**
+   * Moves over the next line for a reader that has found its end itself.
+   * @param end the byte after the last of the line, without its line end
+   * @param next first byte of the line after it
+   */
+  pass(end: number, next: number): void {
+    this.start = this.ahead;
+    if (!this.#again) this.line++;
+    this.#again = false;
+    this.end = end;
+    this.closed = true;
+    this.#next = next;
+  }
+
   /** Makes the next call of `next` return this line once more. */
   putBack(): void {
     this.#again = true;

@@ -1,0 +1,53 @@
+/** What the thread is asked that works on one weather year at a time, and what it answers. */
+import type { Brief } from '#engine/brief/brief.ts';
+import type { ClimateDifference } from '#engine/climate/climate-difference.ts';
+import type { ImpossibleChange } from '#engine/climate/derive-year.ts';
+import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
+import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
+import type { BelowZeroPhase } from '#engine/psychrometrics/moist-air.ts';
+import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
+import type { WeatherYear } from '#engine/reduction/weather-year.ts';
+import type { HoursTableOrigin } from '#engine/run/hours-csv.ts';
+
+/** A change of climate to be made of a weather year. */
+export interface DeriveTask {
+  readonly parent: WeatherYear;
+  readonly belowZero: BelowZeroPhase;
+  /** January first. */
+  readonly monthly: readonly MonthlyChange[];
+  readonly humidityRule: HumidityRule;
+}
+
+export type Derived =
+  | {
+      readonly ok: true;
+      readonly reduced: ReducedYear;
+      readonly cappedHours: number;
+      readonly difference: ClimateDifference;
+    }
+  | { readonly ok: false; readonly faults: ImpossibleChange['faults'] };
+
+/** The hours of a run to be written as a table. */
+export interface HoursTask {
+  readonly year: WeatherYear;
+  readonly brief: Brief;
+  readonly heightM: number;
+  /** The run's own, and the zone that its civil times are told in. */
+  readonly clock: ResolvedClock;
+  readonly zone: string;
+  readonly origin: HoursTableOrigin;
+}
+
+export interface WrittenHours {
+  /** CSV in UTF-8. */
+  readonly bytes: Uint8Array;
+  /** As a run keeps them: the position of each slot's class in the list of classes. */
+  readonly hourClassCodes: Uint8Array;
+}
+
+export type YearTask =
+  | { readonly kind: 'derive'; readonly task: DeriveTask }
+  | { readonly kind: 'hours'; readonly task: HoursTask };
+export type YearAnswer =
+  | { readonly kind: 'derive'; readonly answer: Derived }
+  | { readonly kind: 'hours'; readonly answer: WrittenHours };
