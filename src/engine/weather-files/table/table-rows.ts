@@ -34,7 +34,7 @@ export function tableRows(
   const minutes = standardMinutes(records.minutes, table);
   const taken = stepsPerHour === 1 ? nearestOfEachHour(minutes) : null;
   const years = typicalYears(records, mapping);
-  const rows = new RowCollector();
+  const rows = new RowCollector(minutes.length);
   let converted = 0;
   for (let record = 0; record < minutes.length; record++) {
     const at = minutes[record] ?? 0;
