@@ -5,15 +5,17 @@
 import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conventions.ts';
 import type { BelowZeroPhase } from '../../psychrometrics/moist-air.ts';
 import { dayOfWeek, isLeapYear, slotOf } from '../../reduction/calendar.ts';
+import { gapCalendar } from '../../reduction/gap-calendar.ts';
 import { type FindingList, whole } from '../finding-list.ts';
-import type { QualityOptions } from '../quality/quality-options.ts';
+import { checkGround } from '../quality/check-ground.ts';
+import { isOff, type QualityOptions } from '../quality/quality-options.ts';
 import { testHours } from '../quality/test-hours.ts';
 import type { DeclaredStation, HourColumns, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
 import { belowZeroPhase } from './below-zero-phase.ts';
 import { tellCoverage, tellGaps, tellSourceFlags } from './coverage.ts';
 import { compareDesign, type PublishedDesign } from './design-check.ts';
 import { hourColumns } from './hour-columns.ts';
-import { chooseHumidity, type HumiditySource } from './humidity-choice.ts';
+import { chooseHumidity, type GivenHumidity, givenHumidity, type HumiditySource } from './humidity-choice.ts';
 import { limitDewPoint, limitRelativeHumidity } from './humidity-limits.ts';
 import { type DeclaredPeriod, type MatchedCalendar, matchCalendar } from './match-calendar.ts';
 import { checkPlace } from './place-checks.ts';
@@ -59,7 +61,8 @@ export function assembleYear(
   options: QualityOptions = {},
 ): WeatherFileReading {
   const { rows, station } = file;
-  checkPlace(station, file.stationLine, findings);
+  checkPlace({ station, line: file.stationLine, options }, findings);
+  checkGround({ station, line: file.stationLine, options }, findings);
   if (rows.lines.length === 0) {
     if (!findings.refused) tellNoRows(findings);
     return refused(file, findings);
@@ -75,13 +78,16 @@ export function assembleYear(
   if (findings.refused) return refused(file, findings);
 
   const kindYear = actualYear(file, calendar.rowsRead);
-  testHours({ steps, station, typical: kindYear === null, options }, findings);
-  settlePressure(steps, station.elevationM, findings);
-  const humidity = settleHumidity(steps, findings);
+  const typical = kindYear === null;
+  const given = givenHumidity(steps);
+  testHours({ steps, station, typical, options }, findings);
+  settlePressure({ steps, elevationM: station.elevationM, keepFar: isOff('pressure-range', options) }, findings);
+  const humidity = settleHumidity(steps, given, findings);
   if (humidity === null || findings.refused) return refused(file, findings);
 
-  const { hours, gap, humidityPresent } = hourColumns({ steps, ...humidity, typical: kindYear === null });
-  tellGaps({ hours, gap, quietEdgeHours: file.cutByUtc ? UTC_EDGE_HOURS : 0 }, findings);
+  const longGaps = options.fillLongGaps ?? false;
+  const { hours, gap, longFilled, humidityPresent } = hourColumns({ steps, ...humidity, typical, longGaps });
+  tellGaps({ hours, gap, longFilled, quietEdgeHours: file.cutByUtc ? UTC_EDGE_HOURS : 0 }, findings);
   tellCoverage({ hours, humidityPresent }, findings);
   if (findings.refused) return refused(file, findings);
   if (file.sourceFlagsInformative !== null) {
@@ -110,6 +116,7 @@ function usable(
     hours: read.hours,
     humidityFrom: read.source,
     belowZero: read.belowZero,
+    gaps: gapCalendar(read.hours.flags),
     findings: findings.inOrder(),
     asks: findings.asks,
     comments: file.comments,
@@ -118,12 +125,13 @@ function usable(
 
 function settleHumidity(
   steps: StepColumns,
+  given: GivenHumidity,
   findings: FindingList,
 ): { source: HumiditySource; belowZero: BelowZeroPhase } | null {
   limitRelativeHumidity(steps, findings);
   const belowZero = belowZeroPhase(steps, findings);
   const dewPointUnfit = limitDewPoint(steps, belowZero, findings);
-  const source = chooseHumidity({ steps, belowZero, dewPointUnfit }, findings);
+  const source = chooseHumidity({ steps, given, belowZero, dewPointUnfit }, findings);
   return source === null ? null : { source, belowZero };
 }
 

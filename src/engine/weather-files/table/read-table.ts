@@ -163,7 +163,7 @@ function askForMapping(
       `This is a table of ${layout.fieldCount} columns${mapping === null ? ', of which none could be told to hold times and temperatures' : ''}. Say what its columns hold, in which units, and what its times mean.`,
     proposal: mapping === null ? null : mappingWords(mapping),
   });
-  checkPlace(station, null, findings);
+  checkPlace({ station, line: null, options: {} }, findings);
   const needsElevation = mapping === null || mapping.pressure === null || mapping.pressure.level !== 'station';
   if (station.elevationM === null && needsElevation) {
     findings.ask('elevation-missing', {
