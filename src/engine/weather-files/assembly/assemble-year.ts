@@ -11,6 +11,7 @@ import { checkGround } from '../quality/check-ground.ts';
 import { isOff, type QualityOptions } from '../quality/quality-options.ts';
 import { testHours } from '../quality/test-hours.ts';
 import type { DeclaredStation, HourColumns, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
+import { answerHumidity, answerPeriod, answerPressure } from './apply-answers.ts';
 import { belowZeroPhase } from './below-zero-phase.ts';
 import { tellCoverage, tellGaps, tellSourceFlags } from './coverage.ts';
 import { compareDesign, type PublishedDesign } from './design-check.ts';
@@ -56,10 +57,12 @@ const TOO_HOT_HOURS = 24;
 
 /** Tests, repairs and reduces to hours. Every fault found so far stands in `findings`; a refusal there refuses the file. */
 export function assembleYear(
-  file: FileContents,
+  contents: FileContents,
   findings: FindingList,
   options: QualityOptions = {},
 ): WeatherFileReading {
+  const { answers } = findings;
+  const file = answerPeriod(contents, answers);
   const { rows, station } = file;
   checkPlace({ station, line: file.stationLine, options }, findings);
   checkGround({ station, line: file.stationLine, options }, findings);
@@ -79,9 +82,12 @@ export function assembleYear(
 
   const kindYear = actualYear(file, calendar.rowsRead);
   const typical = kindYear === null;
-  const given = givenHumidity(steps);
+  answerPressure(steps, station.elevationM, answers);
+  const asGiven = givenHumidity(steps);
   testHours({ steps, station, typical, options }, findings);
   settlePressure({ steps, elevationM: station.elevationM, keepFar: isOff('pressure-range', options) }, findings);
+  answerHumidity(steps, answers);
+  const given = answers['dew-is-wet-bulb'] === undefined ? asGiven : givenHumidity(steps);
   const humidity = settleHumidity(steps, given, findings);
   if (humidity === null || findings.refused) return refused(file, findings);
 
@@ -114,7 +120,7 @@ function usable(
     kind: read.year === null ? 'typical' : 'actual',
     year: read.year,
     hours: read.hours,
-    humidityFrom: read.source,
+    humidityFrom: findings.answers['dew-is-wet-bulb'] === 'wet bulb' ? 'wet bulb' : read.source,
     belowZero: read.belowZero,
     gaps: gapCalendar(read.hours.flags),
     findings: findings.inOrder(),

@@ -47,6 +47,7 @@ function askAboutSign(station: DeclaredStation, line: number | null, findings: F
   const swapped = Math.abs(longitude) <= 90 && Math.abs(latitude) <= 180;
   const around = Math.abs(latitude) <= 90 && longitude > 180 && longitude <= 360;
   findings.ask('place-sign', {
+    asAlways: true,
     line,
     message: () => `Latitude ${latitude}, longitude ${longitude} is not a place on Earth. Say where the station is.`,
     proposal: swapped
