@@ -1,4 +1,5 @@
 import type { Ask, Finding, FindingCode, FindingVariable, Severity } from './finding.ts';
+import type { Answers } from './read-options.ts';
 
 /** Of one fault this many lines are listed; the rest are counted. */
 const LISTED = 100;
@@ -17,6 +18,13 @@ export interface FindingInput {
   readonly message: () => string;
 }
 
+/** A finding that a person must answer. */
+interface Question extends Omit<FindingInput, 'code' | 'severity'> {
+  readonly proposal: string | null;
+  /** Asked whatever has been answered: what stands in the file is impossible. */
+  readonly asAlways?: boolean;
+}
+
 /** What there is of one code and severity: how many are listed, and what came after them. */
 interface Tally {
   readonly code: FindingCode;
@@ -31,9 +39,15 @@ interface Tally {
 
 /** Collects every finding and question of one file, so that all faults are told at once. */
 export class FindingList {
+  /** What a person has answered already: such a question is told as a doubt. */
+  readonly answers: Answers;
   readonly #findings: Finding[] = [];
   readonly #asks: Ask[] = [];
   readonly #tallies = new Map<FindingCode, Tally[]>();
+
+  constructor(answers: Answers = {}) {
+    this.answers = answers;
+  }
 
   /** Adds a finding; beyond the first 100 of a code and severity only the count grows. */
   add(input: FindingInput): void {
@@ -72,14 +86,19 @@ export class FindingList {
   }
 
   /** Adds a question that a person must answer, with the finding that raises it. */
-  ask(what: Ask['what'], input: Omit<FindingInput, 'code' | 'severity'> & { proposal: string | null }): void {
+  ask(what: Ask['what'], input: Question): void {
+    const answer = Object.entries(this.answers).find(([code]) => code === what)?.[1];
+    if (answer !== undefined && !input.asAlways) {
+      this.add({ ...input, code: what, severity: 'doubt', done: `Answered: ${answer}.` });
+      return;
+    }
     this.add({ ...input, code: what, severity: 'ask' });
     this.#asks.push({ what, message: input.message(), proposal: input.proposal });
   }
 
   /** A list that begins with all that has been found so far: what concerns a whole file stands with each of its parts. */
   copy(): FindingList {
-    const copy = new FindingList();
+    const copy = new FindingList(this.answers);
     copy.#findings.push(...this.#findings);
     copy.#asks.push(...this.#asks);
     for (const [code, tallies] of this.#tallies) {

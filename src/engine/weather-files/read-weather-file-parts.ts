@@ -29,7 +29,7 @@ export function readWeatherFileParts(
   name: string,
   options: ReadOptions = {},
 ): readonly WeatherFileReading[] {
-  const findings = new FindingList();
+  const findings = new FindingList(options.answers);
   const text = decodeText(bytes);
   if ('notText' in text) return [refuseNotText(text, findings)];
   const lines = firstLines(text);

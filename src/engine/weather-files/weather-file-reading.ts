@@ -1,4 +1,5 @@
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
+import type { GapCalendar } from '../reduction/gap-calendar.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
 import type { Ask, Finding } from './finding.ts';
 import type { TableGuess } from './table/table-guess.ts';
@@ -55,6 +56,7 @@ export interface UsableReading {
   /** Which column the humidity came from. */
   readonly humidityFrom: 'dew point' | 'relative humidity' | 'wet bulb';
   readonly belowZero: BelowZeroPhase;
+  readonly gaps: GapCalendar;
   readonly findings: readonly Finding[];
   readonly asks: readonly Ask[];
   /** Licence or attribution text that stands in the file, as it stands; null without any. */

@@ -5,15 +5,18 @@
 import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conventions.ts';
 import type { BelowZeroPhase } from '../../psychrometrics/moist-air.ts';
 import { dayOfWeek, isLeapYear, slotOf } from '../../reduction/calendar.ts';
+import { gapCalendar } from '../../reduction/gap-calendar.ts';
 import { type FindingList, whole } from '../finding-list.ts';
-import type { QualityOptions } from '../quality/quality-options.ts';
+import { checkGround } from '../quality/check-ground.ts';
+import { isOff, type QualityOptions } from '../quality/quality-options.ts';
 import { testHours } from '../quality/test-hours.ts';
 import type { DeclaredStation, HourColumns, WeatherFileReading, WeatherFormat } from '../weather-file-reading.ts';
+import { answerHumidity, answerPeriod, answerPressure } from './apply-answers.ts';
 import { belowZeroPhase } from './below-zero-phase.ts';
 import { tellCoverage, tellGaps, tellSourceFlags } from './coverage.ts';
 import { compareDesign, type PublishedDesign } from './design-check.ts';
 import { hourColumns } from './hour-columns.ts';
-import { chooseHumidity, type HumiditySource } from './humidity-choice.ts';
+import { chooseHumidity, type GivenHumidity, givenHumidity, type HumiditySource } from './humidity-choice.ts';
 import { limitDewPoint, limitRelativeHumidity } from './humidity-limits.ts';
 import { type DeclaredPeriod, type MatchedCalendar, matchCalendar } from './match-calendar.ts';
 import { checkPlace } from './place-checks.ts';
@@ -54,12 +57,15 @@ const TOO_HOT_HOURS = 24;
 
 /** Tests, repairs and reduces to hours. Every fault found so far stands in `findings`; a refusal there refuses the file. */
 export function assembleYear(
-  file: FileContents,
+  contents: FileContents,
   findings: FindingList,
   options: QualityOptions = {},
 ): WeatherFileReading {
+  const { answers } = findings;
+  const file = answerPeriod(contents, answers);
   const { rows, station } = file;
-  checkPlace(station, file.stationLine, findings);
+  checkPlace({ station, line: file.stationLine, options }, findings);
+  checkGround({ station, line: file.stationLine, options }, findings);
   if (rows.lines.length === 0) {
     if (!findings.refused) tellNoRows(findings);
     return refused(file, findings);
@@ -75,13 +81,19 @@ export function assembleYear(
   if (findings.refused) return refused(file, findings);
 
   const kindYear = actualYear(file, calendar.rowsRead);
-  testHours({ steps, station, typical: kindYear === null, options }, findings);
-  settlePressure(steps, station.elevationM, findings);
-  const humidity = settleHumidity(steps, findings);
+  const typical = kindYear === null;
+  answerPressure(steps, station.elevationM, answers);
+  const asGiven = givenHumidity(steps);
+  testHours({ steps, station, typical, options }, findings);
+  settlePressure({ steps, elevationM: station.elevationM, keepFar: isOff('pressure-range', options) }, findings);
+  answerHumidity(steps, answers);
+  const given = answers['dew-is-wet-bulb'] === undefined ? asGiven : givenHumidity(steps);
+  const humidity = settleHumidity(steps, given, findings);
   if (humidity === null || findings.refused) return refused(file, findings);
 
-  const { hours, gap, humidityPresent } = hourColumns({ steps, ...humidity, typical: kindYear === null });
-  tellGaps({ hours, gap, quietEdgeHours: file.cutByUtc ? UTC_EDGE_HOURS : 0 }, findings);
+  const longGaps = options.fillLongGaps ?? false;
+  const { hours, gap, longFilled, humidityPresent } = hourColumns({ steps, ...humidity, typical, longGaps });
+  tellGaps({ hours, gap, longFilled, quietEdgeHours: file.cutByUtc ? UTC_EDGE_HOURS : 0 }, findings);
   tellCoverage({ hours, humidityPresent }, findings);
   if (findings.refused) return refused(file, findings);
   if (file.sourceFlagsInformative !== null) {
@@ -108,8 +120,9 @@ function usable(
     kind: read.year === null ? 'typical' : 'actual',
     year: read.year,
     hours: read.hours,
-    humidityFrom: read.source,
+    humidityFrom: findings.answers['dew-is-wet-bulb'] === 'wet bulb' ? 'wet bulb' : read.source,
     belowZero: read.belowZero,
+    gaps: gapCalendar(read.hours.flags),
     findings: findings.inOrder(),
     asks: findings.asks,
     comments: file.comments,
@@ -118,12 +131,13 @@ function usable(
 
 function settleHumidity(
   steps: StepColumns,
+  given: GivenHumidity,
   findings: FindingList,
 ): { source: HumiditySource; belowZero: BelowZeroPhase } | null {
   limitRelativeHumidity(steps, findings);
   const belowZero = belowZeroPhase(steps, findings);
   const dewPointUnfit = limitDewPoint(steps, belowZero, findings);
-  const source = chooseHumidity({ steps, belowZero, dewPointUnfit }, findings);
+  const source = chooseHumidity({ steps, given, belowZero, dewPointUnfit }, findings);
   return source === null ? null : { source, belowZero };
 }
 

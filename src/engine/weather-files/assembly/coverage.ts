@@ -12,13 +12,14 @@ const ESTIMATED_DOUBT_PCT = 40;
 /**
  * Tells every gap: hours without a row, or without a dry bulb or a humidity in it.
  * @param input.gap 1 where a slot lacked one of them before it was filled
+ * @param input.longFilled 1 where a slot was filled from the days around
  * @param input.quietEdgeHours so many absent hours at the beginning or the end of the year are not told
  */
 export function tellGaps(
-  input: { hours: HourColumns; gap: Uint8Array; quietEdgeHours: number },
+  input: { hours: HourColumns; gap: Uint8Array; longFilled: Uint8Array; quietEdgeHours: number },
   findings: FindingList,
 ): void {
-  const { gap, hours, quietEdgeHours } = input;
+  const { gap, hours, longFilled, quietEdgeHours } = input;
   forEachRun(gap, (start, end) => {
     const atEdge = start === 0 || end === gap.length;
     const own = linesOfRun(hours.lines, start, end);
@@ -33,7 +34,7 @@ export function tellGaps(
       filled === 0
         ? 'They stay missing.'
         : filled === end - start
-          ? 'They are filled on a straight line between their neighbours.'
+          ? `They are filled ${longFilled.subarray(start, end).includes(1) ? 'from the days before and after' : 'on a straight line between their neighbours'}.`
           : `${hoursPhrase(filled)} of them could be filled; the rest stay missing.`;
     findings.add({
       code: 'time-gap',

@@ -1,7 +1,7 @@
 import { monthOfEachSlot } from '../../reduction/calendar.ts';
 import { forEachRun, markMissing } from './step-columns.ts';
 
-const LONGEST_FILLED_HOURS = 5;
+export const LONGEST_SHORT_GAP_HOURS = 5;
 
 /**
  * Gap rule 1: at most 5 missing hours are filled on a straight line in time between the hours before and after; never from
@@ -15,7 +15,7 @@ export function fillShortGaps(column: Float64Array, typical: boolean): Uint8Arra
   forEachRun(markMissing(column), (start, end) => {
     const before = column[start - 1];
     const after = column[end];
-    if (end - start > LONGEST_FILLED_HOURS || before === undefined || after === undefined) return;
+    if (end - start > LONGEST_SHORT_GAP_HOURS || before === undefined || after === undefined) return;
     if (typical && months[start - 1] !== months[end]) return;
     for (let slot = start; slot < end; slot++) {
       column[slot] = before + ((after - before) * (slot - start + 1)) / (end - start + 1);

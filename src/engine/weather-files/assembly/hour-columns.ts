@@ -2,15 +2,21 @@ import { type BelowZeroPhase, saturationHumidityRatio } from '../../psychrometri
 import { hourFlags, type Provenance } from '../../reduction/hour-flags.ts';
 import type { HourColumns } from '../weather-file-reading.ts';
 import { fillShortGaps } from './fill-gaps.ts';
+import { fillLongGaps } from './fill-long-gaps.ts';
 import { type HourValues, hoursFromSteps } from './hours-from-steps.ts';
 import { type HumiditySource, humidityRatios } from './humidity-choice.ts';
 import { VALUE } from './source-rows.ts';
 import type { StepColumns } from './step-columns.ts';
 
+/** Ours: a shift cannot make air drier than this, kg/kg, a dew point near -60 °C. */
+const LEAST_RATIO = 5e-6;
+
 export interface FilledHours {
   readonly hours: HourColumns;
   /** 1 where a slot lacked dry bulb or humidity before gaps were filled. */
   readonly gap: Uint8Array;
+  /** 1 where dry bulb or humidity was filled from the days around. */
+  readonly longFilled: Uint8Array;
   /** 1 where a slot has a humidity, even one that waits for a pressure. */
   readonly humidityPresent: Uint8Array;
 }
@@ -21,26 +27,48 @@ export function hourColumns(input: {
   source: HumiditySource;
   belowZero: BelowZeroPhase;
   typical: boolean;
+  /** Whether gaps of 6 to 47 hours are filled as well. */
+  longGaps: boolean;
 }): FilledHours {
-  const { source, steps, typical } = input;
+  const { source, steps } = input;
   const values = hourValues(input);
   const { dryBulbC, humidityRatio, pressurePa, lines } = values;
   const waiting = waitingForPressure(steps, source);
   const gap = markGaps(values, waiting);
-  const filledDry = fillShortGaps(dryBulbC, typical);
+  const longFilled = new Uint8Array(dryBulbC.length);
+  const filledDry = fillColumn(dryBulbC, input, longFilled);
   if (steps.stepsPerHour === 1 && source === 'dew point') restoreHumidity(input, values, filledDry);
-  const filledHumidity = fillShortGaps(humidityRatio, typical);
+  const filledHumidity = fillColumn(humidityRatio, input, longFilled);
   for (let slot = 0; slot < humidityRatio.length; slot++) {
     if (filledDry[slot] === 0 && filledHumidity[slot] === 0) continue;
     const most = saturation(dryBulbC[slot], pressurePa[slot]);
-    humidityRatio[slot] = Math.min(humidityRatio[slot] ?? Number.NaN, most);
+    humidityRatio[slot] = Math.max(LEAST_RATIO, Math.min(humidityRatio[slot] ?? Number.NaN, most));
   }
   const flags = flagColumn({ values, source, filledDry, filledHumidity });
+  const toBeFilled = willBeFilled(waiting, input.typical);
   const humidityPresent = new Uint8Array(flags.length);
   for (let slot = 0; slot < flags.length; slot++) {
-    humidityPresent[slot] = Number.isNaN(humidityRatio[slot]) && waiting[slot] === 0 ? 0 : 1;
+    const waits = waiting[slot] === 1 || toBeFilled[slot] === 1;
+    humidityPresent[slot] = Number.isNaN(humidityRatio[slot]) && !waits ? 0 : 1;
   }
-  return { hours: { dryBulbC, humidityRatio, pressurePa, flags, lines }, gap, humidityPresent };
+  return { hours: { dryBulbC, humidityRatio, pressurePa, flags, lines }, gap, longFilled, humidityPresent };
+}
+
+/** Fills a column in place, short gaps and, where asked, long ones. @returns 1 where a slot was filled */
+function fillColumn(
+  column: Float64Array,
+  { longGaps, typical }: { longGaps: boolean; typical: boolean },
+  longFilled: Uint8Array,
+): Uint8Array {
+  const filled = fillShortGaps(column, typical);
+  if (!longGaps) return filled;
+  const long = fillLongGaps(column, typical);
+  for (let slot = 0; slot < filled.length; slot++) {
+    if (long[slot] === 0) continue;
+    filled[slot] = 1;
+    longFilled[slot] = 1;
+  }
+  return filled;
 }
 
 /** Marks the slots without dry bulb or humidity; a humidity that waits for a pressure is there. */
@@ -112,6 +140,14 @@ function waitingForPressure(steps: StepColumns, source: HumiditySource): Uint8Ar
     if (waits) waiting[Math.floor(step / steps.stepsPerHour)] = 1;
   }
   return waiting;
+}
+
+/** Short gaps between humidities that wait are filled like any other once the pressure is known. */
+function willBeFilled(waiting: Uint8Array, typical: boolean): Uint8Array {
+  if (!waiting.includes(1)) return waiting;
+  const column = new Float64Array(waiting.length);
+  for (let slot = 0; slot < column.length; slot++) column[slot] = waiting[slot] === 1 ? 0 : Number.NaN;
+  return fillShortGaps(column, typical);
 }
 
 function saturation(dryBulbC: number | undefined, pressurePa: number | undefined): number {

@@ -25,13 +25,11 @@ const FITS_WITHIN_K = 2;
  * @returns null when the file has neither, which is told as `no-humidity`
  */
 export function chooseHumidity(
-  input: { steps: StepColumns; belowZero: BelowZeroPhase; dewPointUnfit: boolean },
+  input: { steps: StepColumns; given: GivenHumidity; belowZero: BelowZeroPhase; dewPointUnfit: boolean },
   findings: FindingList,
 ): HumiditySource | null {
-  const { belowZero, steps } = input;
-  const hours = countKnown(steps.dryBulbC, steps.dryBulbC);
-  const dewHours = countKnown(steps.dewPointC, steps.dryBulbC);
-  const rhHours = countKnown(steps.relativeHumidityPct, steps.dryBulbC);
+  const { belowZero, given, steps } = input;
+  const { dewHours, hours, rhHours } = given;
   if (dewHours === 0 && rhHours === 0) {
     findings.add({
       code: 'no-humidity',
@@ -57,6 +55,25 @@ export function chooseHumidity(
     });
   }
   return 'dew point';
+}
+
+/** Steps with a dry bulb, and those of them with a dew point and with a relative humidity. */
+export interface GivenHumidity {
+  readonly hours: number;
+  readonly dewHours: number;
+  readonly rhHours: number;
+}
+
+/**
+ * What a file gives, counted before any test: hours that fail are missing, and no reason to read the whole file from the other
+ * column, which was mostly computed from the same values.
+ */
+export function givenHumidity(steps: StepColumns): GivenHumidity {
+  return {
+    hours: countKnown(steps.dryBulbC, steps.dryBulbC),
+    dewHours: countKnown(steps.dewPointC, steps.dryBulbC),
+    rhHours: countKnown(steps.relativeHumidityPct, steps.dryBulbC),
+  };
 }
 
 /** Steps in which both columns hold a value. */

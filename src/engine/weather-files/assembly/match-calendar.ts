@@ -182,8 +182,17 @@ function tellRepeats(
       const proposal =
         day === null ? 'Keep the first.' : `The second copy is ${day}, which is absent: its date is wrong.`;
       findings.ask('time-repeat', { ...where, message, proposal });
+      if (day !== null && findings.answers['time-repeat'] === 'absent day') moveToAbsentDay(walk, first.row);
     }
     at = end;
+  }
+}
+
+/** Lays the second copy of a day on the day that is absent. */
+function moveToAbsentDay({ rowOfStep }: Walk, firstRow: number): void {
+  const start = rowOfStep.indexOf(-1);
+  for (let step = start; step < rowOfStep.length && rowOfStep[step] === -1; step++) {
+    rowOfStep[step] = firstRow + step - start;
   }
 }
 

@@ -1,4 +1,5 @@
 import type { FindingList } from '../finding-list.ts';
+import { isOff, type QualityOptions } from '../quality/quality-options.ts';
 import type { DeclaredStation } from '../weather-file-reading.ts';
 
 const DEGREES_PER_HOUR = 15;
@@ -7,7 +8,11 @@ const USUAL_ZONE_H = { low: -0.9, high: 1.6 } as const;
 const FLIP_FROM_H = 3;
 
 /** Latitude and longitude exist, and the zone fits the longitude; what does not is asked or told, never refused. */
-export function checkPlace(station: DeclaredStation, line: number | null, findings: FindingList): void {
+export function checkPlace(
+  place: { station: DeclaredStation; line: number | null; options: QualityOptions },
+  findings: FindingList,
+): void {
+  const { line, options, station } = place;
   const { latitude, longitude, utcOffsetH } = station;
   if (latitude === null || longitude === null || utcOffsetH === null) {
     const missing = [
@@ -33,7 +38,7 @@ export function checkPlace(station: DeclaredStation, line: number | null, findin
     return;
   }
   if (Math.abs(latitude) > 90 || Math.abs(longitude) > 180) askAboutSign(station, line, findings);
-  else checkZone({ latitude, longitude, utcOffsetH }, line, findings);
+  else if (!isOff('place-zone', options)) checkZone({ latitude, longitude, utcOffsetH }, line, findings);
 }
 
 function askAboutSign(station: DeclaredStation, line: number | null, findings: FindingList): void {
@@ -42,6 +47,7 @@ function askAboutSign(station: DeclaredStation, line: number | null, findings: F
   const swapped = Math.abs(longitude) <= 90 && Math.abs(latitude) <= 180;
   const around = Math.abs(latitude) <= 90 && longitude > 180 && longitude <= 360;
   findings.ask('place-sign', {
+    asAlways: true,
     line,
     message: () => `Latitude ${latitude}, longitude ${longitude} is not a place on Earth. Say where the station is.`,
     proposal: swapped

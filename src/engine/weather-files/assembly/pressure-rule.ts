@@ -23,9 +23,14 @@ const ELEVATION_ASK = 0.03;
 /**
  * Fills the pressure column: afterwards it has no gap unless neither pressure nor elevation is known. Assumed values carry
  * the bit `VALUE.pressure` in `estimated`, replaced ones in `repaired`.
- * @param elevationM elevation of the station, m, or null when the file does not say
+ * @param input.elevationM elevation of the station, m, or null when the file does not say
+ * @param input.keepFar whether values far from the median of the file are kept, as long as they are possible
  */
-export function settlePressure(steps: StepColumns, elevationM: number | null, findings: FindingList): void {
+export function settlePressure(
+  input: { steps: StepColumns; elevationM: number | null; keepFar: boolean },
+  findings: FindingList,
+): void {
+  const { elevationM, keepFar, steps } = input;
   const column = steps.pressurePa;
   const inHectopascals = looksLikeHectopascals(column);
   if (inHectopascals) askAboutUnit(steps, findings);
@@ -35,7 +40,7 @@ export function settlePressure(steps: StepColumns, elevationM: number | null, fi
     return;
   }
   const medianPa = medianOf(known);
-  if (!inHectopascals) replaceFarValues(steps, medianPa, findings);
+  if (!inHectopascals && !keepFar) replaceFarValues(steps, medianPa, findings);
   fillGaps(steps, findings);
   flagConstant(steps, findings);
   const meanPa = meanOf(column);
@@ -99,7 +104,7 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
   if (elevationM === null) {
     findings.ask('elevation-missing', {
       message: () =>
-        'The file gives neither pressure nor elevation, and the wet bulb needs one of them. Say the elevation of the station.',
+        'The file gives neither station pressure nor elevation, and the wet bulb needs one of them. Say the elevation of the station.',
       proposal: null,
     });
     steps.pressurePa.fill(Number.NaN);

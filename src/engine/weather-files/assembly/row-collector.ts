@@ -3,8 +3,13 @@ import type { SourceRow, SourceRows } from './source-rows.ts';
 
 /** Takes the rows of a file one by one into columns that grow: a year of hours fits at once. */
 export class RowCollector {
-  #columns = columnsFor(SLOTS_PER_LEAP_YEAR);
+  #columns: SourceRows;
   #count = 0;
+
+  /** @param room rows that fit at once */
+  constructor(room = SLOTS_PER_LEAP_YEAR) {
+    this.#columns = columnsFor(Math.max(1, room));
+  }
 
   /** Rows so far. */
   get count(): number {

@@ -21,7 +21,7 @@ export function splitYears(rows: SourceRows, edgeRows: number): readonly YearRow
     .filter(([, count]) => count > edgeRows || count === most)
     .map(([year]) => year)
     .sort((a, b) => a - b);
-  const collectors = new Map(kept.map((year) => [year, new RowCollector()]));
+  const collectors = new Map(kept.map((year) => [year, new RowCollector(counts.get(year))]));
   for (let row = 0; row < rows.lines.length; row++) {
     collectors.get(rows.years[row] ?? 0)?.add(rowAt(rows, row));
   }

@@ -51,7 +51,7 @@ function rowsOf(
     readonly hour: (index: number) => number;
   },
 ): HourlyRows {
-  const rows = new RowCollector();
+  const rows = new RowCollector(chosen.count);
   let fromSeaLevel = 0;
   for (let index = 0; index < chosen.count; index++) {
     const report = chosen.report(index);

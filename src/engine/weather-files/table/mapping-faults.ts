@@ -2,15 +2,17 @@ import { zoneIsKnown } from '../../clock/zone-offset.ts';
 import type { TableLayout } from './table-layout.ts';
 import type { TableMapping, TimeColumns } from './table-mapping.ts';
 
+/** Whether any humidity is mapped; without one there is no wet bulb. */
+export function hasHumidity({ dewPoint, relativeHumidity, wetBulb }: TableMapping): boolean {
+  return dewPoint !== null || relativeHumidity !== null || wetBulb !== null;
+}
+
 /** Why a mapping does not serve a table, as sentences; empty when it does. */
 export function mappingFaults(mapping: TableMapping, layout: TableLayout): readonly string[] {
   const faults: string[] = [];
   for (const name of mappedColumns(mapping)) {
     if (!layout.names.includes(name))
       faults.push(`The mapping names a column “${name}”, which the table does not have.`);
-  }
-  if (mapping.dewPoint === null && mapping.relativeHumidity === null && mapping.wetBulb === null) {
-    faults.push('The mapping names no dew point, relative humidity or wet bulb.');
   }
   const { scale, zone } = mapping.time;
   if (scale === 'clock' && (zone === null || !zoneIsKnown(zone))) {

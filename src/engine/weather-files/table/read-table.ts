@@ -13,7 +13,7 @@ import type { DecodedText } from '../text/decode-text.ts';
 import type { DeclaredStation, UnmappedReading, WeatherFileReading } from '../weather-file-reading.ts';
 import { mappingWords } from './guess-questions.ts';
 import { guessTable } from './guess-table.ts';
-import { mappingFaults } from './mapping-faults.ts';
+import { hasHumidity, mappingFaults } from './mapping-faults.ts';
 import { readPreamble } from './preamble.ts';
 import { stepMinutes } from './step-minutes.ts';
 import type { TableLayout } from './table-layout.ts';
@@ -39,9 +39,14 @@ export function readTable(
     findings.add({ code: 'header', severity: 'doubt', line: layout.headerLine, message: () => fault });
   if (mapping === undefined || faults.length > 0) {
     return [
-      askForMapping(text, { layout, station: settlePlace(declared, { options, inUtc: false }, findings) }, findings),
+      askForMapping(
+        text,
+        { layout, station: settlePlace(declared, { options, inUtc: false }, findings), options },
+        findings,
+      ),
     ];
   }
+  if (!hasHumidity(mapping)) return [refuseNoHumidity(declared, findings)];
   const station = settlePlace(declared, { options, inUtc: mapping.time.scale !== 'standard' }, findings);
   const { after, stations: records } = readRecords(text, { layout, mapping }, findings);
   const comments = licenceLines([...layout.preamble, ...after]);
@@ -51,6 +56,16 @@ export function readTable(
     contentsOf(ofStation, { key, mapping, station, comments, several: records.size > 1 }, findings),
   );
   return named(assembleStationYears(stations, findings, options), mapping);
+}
+
+function refuseNoHumidity(station: DeclaredStation, findings: FindingList): WeatherFileReading {
+  findings.add({
+    code: 'no-humidity',
+    severity: 'refuse',
+    message: () =>
+      'No column of the table holds a dew point, a relative humidity or a wet bulb. The wet bulb needs one of them: bring a file that has it.',
+  });
+  return { status: 'refused', part: '', format: 'table', station, findings: findings.inOrder() };
 }
 
 function typicalYears(
@@ -149,21 +164,26 @@ function named(readings: readonly WeatherFileReading[], mapping: TableMapping): 
   );
 }
 
+function unknownWords(mapping: TableMapping | null): string {
+  if (mapping === null) return ', of which none could be told to hold times and temperatures';
+  return hasHumidity(mapping) ? '' : ', of which none could be told to hold a humidity';
+}
+
 function askForMapping(
   text: DecodedText,
-  table: { layout: TableLayout; station: DeclaredStation },
+  table: { layout: TableLayout; station: DeclaredStation; options: ReadOptions },
   findings: FindingList,
 ): UnmappedReading {
-  const { layout, station } = table;
+  const { layout, options, station } = table;
   const guess = guessTable(text, layout);
   const { mapping } = guess;
   findings.ask('unit-guess', {
     line: layout.headerLine,
     message: () =>
-      `This is a table of ${layout.fieldCount} columns${mapping === null ? ', of which none could be told to hold times and temperatures' : ''}. Say what its columns hold, in which units, and what its times mean.`,
+      `This is a table of ${layout.fieldCount} columns${unknownWords(mapping)}. Say what its columns hold, in which units, and what its times mean.`,
     proposal: mapping === null ? null : mappingWords(mapping),
   });
-  checkPlace(station, null, findings);
+  checkPlace({ station, line: null, options }, findings);
   const needsElevation = mapping === null || mapping.pressure === null || mapping.pressure.level !== 'station';
   if (station.elevationM === null && needsElevation) {
     findings.ask('elevation-missing', {

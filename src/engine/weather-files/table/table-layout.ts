@@ -15,6 +15,7 @@ const DELIMITERS = [',', ';', '\t', '|'] as const;
 /** Of lines 5 to 200; a preamble may take the others. */
 const SAME_COUNT_SHARE = 0.9;
 const DECIMAL_SHARE = 0.9;
+const COMMA = 0x2c;
 const DECIMAL_COMMA = /^[+-]?\d+,\d+$/;
 const DECIMAL_POINT = /^[+-]?\d+\.\d+$/;
 const NUMBER = /^[+-]?(\d+\.?\d*|\.\d+|\d+,\d+)(e[+-]?\d+)?$/i;
@@ -56,11 +57,12 @@ export function findLayout(text: DecodedText): TableLayout | NoLayout {
     const share = sameCountShare(lines);
     if (share > (best?.share ?? 0)) best = { delimiter, share, lines };
   }
+  const commas = commasBetweenCommas(linesBy(text, COMMA));
+  if (commas !== null && (best === null || best.delimiter === ',')) return commas;
   if (best === null || best.share < SAME_COUNT_SHARE) return { reason: 'no table', line: 1 };
   const { delimiter, lines } = best;
   const header = headerIndex(lines);
-  if (header < 0) return commasBetweenCommas(delimiter, lines) ?? { reason: 'no table', line: 1 };
-  return layoutFrom(delimiter, lines, header);
+  return header < 0 ? { reason: 'no table', line: 1 } : layoutFrom(delimiter, lines, header);
 }
 
 function linesBy(text: DecodedText, separator: number): readonly LookedAt[] {
@@ -104,14 +106,21 @@ function fits(cells: readonly string[], count: number): boolean {
   return cells.length === count || (cells.length === count + 1 && cells.at(-1) === '');
 }
 
-/** Rows that have more fields than the header, all of them numbers: each decimal comma was taken for a delimiter. */
-function commasBetweenCommas(delimiter: string, lines: readonly LookedAt[]): NoLayout | null {
-  if (delimiter !== ',') return null;
-  const rows = lines.slice(-Math.min(lines.length, ROWS_AFTER_HEADER));
-  const count = rows[0]?.cells.length ?? 0;
-  const header = lines.findLast(({ cells }) => cells.length >= 2 && cells.length < count && !cells.some(isNumber));
-  if (header === undefined || header.cells.length * 2 < count) return null;
-  return { reason: 'decimal commas', line: header.line + 1 };
+/**
+ * Rows with more fields than the line of names right above them, up to twice as many: each decimal comma was taken for a
+ * separator. Unnamed trailing fields are empty and no such rows.
+ */
+function commasBetweenCommas(lines: readonly LookedAt[]): NoLayout | null {
+  const at = lines.findIndex(({ cells }, index) => {
+    const below = lines[index + 1]?.cells ?? [];
+    return cells.length >= FEWEST_COLUMNS && !cells.some(isNumber) && below.some(isNumber);
+  });
+  const header = lines[at];
+  if (header === undefined) return null;
+  const rows = lines.slice(at + 1, at + 1 + ROWS_AFTER_HEADER);
+  const count = header.cells.length;
+  const broken = rows.filter(({ cells }) => cells.length > count && cells.length < 2 * count && cells.at(-1) !== '');
+  return broken.length < SAME_COUNT_SHARE * rows.length ? null : { reason: 'decimal commas', line: header.line + 1 };
 }
 
 function isNumber(cell: string): boolean {

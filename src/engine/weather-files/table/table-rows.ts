@@ -1,7 +1,6 @@
 /** From the records of one station to rows on the slots of local standard time. */
-import { saturationPressureOverWaterPa, vapourPressurePa } from '../../psychrometrics/moist-air.ts';
+import { relativeHumidityOfWetBulbPct } from '../../psychrometrics/humidity-of-wet-bulb.ts';
 import { standardPressurePa, stationPressureOfAltimeterPa, stationPressurePa } from '../../psychrometrics/pressure.ts';
-import { humidityRatioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
 import { RowCollector } from '../assembly/row-collector.ts';
 import type { SourceRows } from '../assembly/source-rows.ts';
 import { type CivilTime, civilMinutes, civilTime } from '../time/civil-minutes.ts';
@@ -11,7 +10,6 @@ import type { TableMapping } from './table-mapping.ts';
 import type { TableRecords } from './table-records.ts';
 
 const MINUTES_PER_HOUR = 60;
-const ROUNDING_K = 0.5;
 /** Calendars on which the dates of a typical year are laid, without and with 29 February. */
 const COMMON_YEAR = 2001;
 const LEAP_YEAR = 2004;
@@ -34,7 +32,7 @@ export function tableRows(
   const minutes = standardMinutes(records.minutes, table);
   const taken = stepsPerHour === 1 ? nearestOfEachHour(minutes) : null;
   const years = typicalYears(records, mapping);
-  const rows = new RowCollector();
+  const rows = new RowCollector(minutes.length);
   let converted = 0;
   for (let record = 0; record < minutes.length; record++) {
     const at = minutes[record] ?? 0;
@@ -125,19 +123,18 @@ function atStation(
   return stationPressurePa({ seaLevelPressurePa: pressurePa, dryBulbC: at.dryBulbC, elevationM });
 }
 
-/** Relative humidity, % over water, of a dry bulb and a wet bulb; the standard atmosphere where the row has no pressure. */
+/** Relative humidity, % over water, of dry and wet bulb; in the standard atmosphere where the row has no pressure. */
 function humidityOfWetBulbPct(at: {
   readonly dryBulbC: number;
   readonly wetBulbC: number;
   readonly pressurePa: number;
   readonly place: PlaceOfTable;
 }): number {
-  const { dryBulbC, place } = at;
-  // A wet bulb a little above the dry bulb is rounding, as with dew points.
-  const wetBulbC = at.wetBulbC - dryBulbC <= ROUNDING_K ? Math.min(at.wetBulbC, dryBulbC) : Number.NaN;
-  const standardPa = place.elevationM === null ? Number.NaN : standardPressurePa(place.elevationM);
-  const pressurePa = Number.isNaN(at.pressurePa) ? standardPa : at.pressurePa;
-  if (Number.isNaN(dryBulbC + wetBulbC + pressurePa)) return Number.NaN;
-  const ratio = humidityRatioOnWetBulbLine(dryBulbC, wetBulbC, pressurePa);
-  return (100 * vapourPressurePa(ratio, pressurePa)) / saturationPressureOverWaterPa(dryBulbC);
+  const { elevationM } = at.place;
+  const standardPa = elevationM === null ? Number.NaN : standardPressurePa(elevationM);
+  return relativeHumidityOfWetBulbPct(
+    at.dryBulbC,
+    at.wetBulbC,
+    Number.isNaN(at.pressurePa) ? standardPa : at.pressurePa,
+  );
 }
