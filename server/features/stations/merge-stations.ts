@@ -18,13 +18,13 @@ export async function mergeStations(
   },
 ): Promise<void> {
   const { teamId, stationId, otherStationId, personId, requestId, reason } = merge;
-  if (stationId === otherStationId) throw new AppError('wrong_state', 'A station cannot be merged into itself.');
   await inTransaction(deps.db, async (transaction) => {
     // No file finds its station meanwhile.
     await lockStationsOfTeam(transaction, teamId);
     const kept = await lockStation(transaction, { teamId, stationId });
     const other = await lockStation(transaction, { teamId, stationId: otherStationId });
     if (kept === null || other === null) throw new AppError('not_found', 'There is no such station in this team.');
+    if (stationId === otherStationId) throw new AppError('wrong_state', 'A station cannot be merged into itself.');
     const moved = await listYearsOfStation(transaction, { teamId, stationId: otherStationId });
     await setMergedInto(transaction, { teamId, stationId: otherStationId, intoId: stationId });
     for (const weatherYearId of moved) await deps.queueRuns(transaction, { teamId, weatherYearId });

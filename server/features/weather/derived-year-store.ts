@@ -27,7 +27,7 @@ export async function insertDerivedFile(
        parent.station_id, :personId, :at, :personId, :at
      from weather_files as parent
      where parent.team_id = :teamId and parent.id = :parentFileId
-     on conflict (team_id, fingerprint) where status <> 'withdrawn' do nothing
+     on conflict (team_id, fingerprint, part_index) where status <> 'withdrawn' do nothing
      returning id`,
     { ...file, name: storableText(file.name) },
   );

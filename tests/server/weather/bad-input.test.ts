@@ -1,4 +1,4 @@
-import { deflateRawSync, gzipSync } from 'node:zlib';
+import { gzipSync } from 'node:zlib';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import type { WeatherFileRecord } from '../../../src/contract/weather.ts';
 import { demoEpw } from '../../support/demo-epw.ts';
@@ -41,21 +41,6 @@ function withField(line: number, field: number, value: string): string {
   );
 }
 
-/** A zip of one member that unpacks to so many zero bytes. */
-function zipOfZeros(bytes: number): Buffer {
-  const packed = deflateRawSync(Buffer.alloc(bytes));
-  const name = Buffer.from('member.epw');
-  const local = Buffer.alloc(30);
-  local.writeUInt32LE(0x04034b50, 0);
-  local.writeUInt16LE(8, 8);
-  local.writeUInt32LE(packed.length, 18);
-  local.writeUInt32LE(bytes, 22);
-  local.writeUInt16LE(name.length, 26);
-  const end = Buffer.alloc(22);
-  end.writeUInt32LE(0x06054b50, 0);
-  return Buffer.concat([local, name, packed, end]);
-}
-
 interface Bad {
   readonly what: string;
   readonly content: string | Buffer;
@@ -78,8 +63,7 @@ const cases: readonly Bad[] = [
     code: 'field-count',
     line: 600,
   },
-  { what: 'a gzip bomb', content: gzipSync(Buffer.alloc(200 * MIB)), code: 'binary', says: /gzip archive/ },
-  { what: 'a zip bomb', content: zipOfZeros(200 * MIB), code: 'binary', says: /zip archive/ },
+  { what: 'a gzip bomb', content: gzipSync(Buffer.alloc(200 * MIB)), code: 'binary', says: /200 times/ },
   { what: 'a picture', content: Buffer.from('89504e470d0a1a0a0000000d49484452', 'hex'), code: 'binary' },
 ];
 
