@@ -41,12 +41,12 @@ const LOCATION = 'Made-up Field,-,Nowhere,Invented,-,33.45,-111.98,-7.0,337.0';
 const UNIFORM_FLAGS = '?9?9?9?9E0?9?9?9?9?9?9?9?9?9?9?9?9?9?9?9*9*9?9?9?9';
 const REST = '0,0,292,0,0,0,0,0,0,0,110,1.5,0,0,16.0,77777,9,999999999,150,0.0470,0,88,0.200,0.0,1.0';
 
-/** A dry, clear climate: dry bulb 9 to 41 °C, dew point 4 to 12 °C, pressure near 97,300 Pa. */
+/** A dry, clear climate: dry bulb 9 to 43 °C, dew point 4 to 12 °C, pressure near 97,300 Pa; no day is that before. */
 export function plainHour({ slot, hour }: EpwDate): { dryBulbC: number; dewPointC: number; pressurePa: number } {
   const season = Math.cos((2 * Math.PI * (slot / 24 - 200)) / 365);
   const day = Math.cos((2 * Math.PI * (hour - 15)) / 24);
   return {
-    dryBulbC: tenths(25 + 10 * season + 6 * day),
+    dryBulbC: tenths(25 + 10 * season + 6 * day + 1 + Math.sin(slot / 17)),
     dewPointC: tenths(8 + 3 * season + Math.sin(slot / 37)),
     pressurePa: 97_300 + 10 * Math.round(30 * Math.sin(slot / 61)),
   };

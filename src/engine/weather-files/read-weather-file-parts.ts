@@ -87,7 +87,7 @@ function refuseNotText(text: NotText, findings: FindingList): RefusedReading {
 
 function notTextSentence(text: NotText): string {
   if (text.notText === 'gzip' || text.notText === 'zip') {
-    return `This is a ${text.notText} archive. Archives are read from the weather room on; until then unpack it and bring the weather file inside.`;
+    return `This is a ${text.notText} archive, not a weather file. Unpack it and bring what is inside.`;
   }
   const what =
     text.notText === 'nul'

@@ -219,7 +219,7 @@ describe('reading the written files', () => {
   /** The faults that were put in, by the gravest severity that their findings have. */
   const REPAIRED = ['Twin Kopjes', 'Gannet Point', sampleStation.name];
   const DOUBTED = ['Lantern Bay'];
-  const INCOMPLETE = ['Korrel Pan', 'Leadwood Halt', 'Plover Rand', sampleStation.name];
+  const INCOMPLETE = ['Korrel Pan', 'Lantern Bay', 'Leadwood Halt', 'Plover Rand', sampleStation.name];
 
   it('ends in review for each, without a doubt but where a fault was put in', () => {
     expect(readings).toHaveLength(27);

@@ -1,44 +1,21 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { reduceYear } from '#engine/reduction/reduce-year.ts';
-import { DEW_POINT_LIMITS_C, DRY_BULB_LIMITS_C } from '#engine/weather-files/assembly/range-limits.ts';
+import { DEW_POINT_LIMITS_C } from '#engine/weather-files/assembly/range-limits.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
-import type { WeatherFileReading } from '#engine/weather-files/weather-file-reading.ts';
+import { damagedBytes } from '../../support/damaged-bytes.ts';
 import { bytesOf, epwBytes, epwLines } from '../../support/epw-text.ts';
-import { faultyFindings, findingsOf, readMadeUp, readRefused } from '../../support/readings.ts';
+import { problemsOf } from '../../support/reading-problems.ts';
+import { findingsOf, readMadeUp, readRefused } from '../../support/readings.ts';
 import { propertySettings } from '../../support/sample-size.ts';
 
 const LONGEST_MS = 2_000;
-
-/** Whatever the bytes: no throw, whole sentences, and no hour outside what weather can be. */
-function problemsOf(reading: WeatherFileReading): readonly string[] {
-  const problems: string[] = [];
-  const sentences = faultyFindings(reading);
-  if (sentences.length > 0) problems.push(`finding: ${sentences[0]?.message}`);
-  if (reading.status === 'refused') {
-    if (!reading.findings.some(({ severity }) => severity === 'refuse')) problems.push('refused without a reason');
-    return problems;
-  }
-  if ((reading.status === 'asks') !== reading.asks.length > 0) problems.push('status and questions disagree');
-  if (reading.hours === null) return problems;
-  const { dryBulbC, humidityRatio, pressurePa } = reading.hours;
-  const outside = (column: Float64Array, low: number, high: number) =>
-    column.some((value) => value < low || value > high);
-  if (outside(dryBulbC, DRY_BULB_LIMITS_C.low, DRY_BULB_LIMITS_C.high)) problems.push('dry bulb');
-  if (outside(humidityRatio, 0, 0.2)) problems.push('humidity ratio');
-  if (outside(pressurePa, 31_000, 110_000)) problems.push('pressure');
-  const { facts } = reduceYear(reading);
-  if (facts.measured + facts.estimated + facts.repaired + facts.missing !== facts.hours) problems.push('counts');
-  if ((facts.maxDepressionK ?? 0) > 100) problems.push('depression');
-  return problems;
-}
 
 describe('bad input is refused with a clear sentence and never throws', () => {
   test.each([
     ['an empty file', '', 'too-few-rows', 'empty'],
     ['blank lines', '\n \n\t\r\n', 'too-few-rows', 'empty'],
     ['a page of HTML', '<!DOCTYPE html>\n<html></html>\n', 'header', '“<!DOCTYPE html>”'],
-    ['a table of another format', 'date,temperature\n2020-01-01,5\n', 'header', '“date,temperature”'],
+    ['two columns', 'date,temperature\n2020-01-01,5\n', 'header', '“date,temperature”'],
     ['an EPW saved with semicolons', 'LOCATION;Field;-;\n', 'header', 'other separators'],
     ['the spreadsheet form of an EPW', 'Location Title,Latitude {N+/S-}\n', 'header', 'spreadsheet form'],
     ['only a first line', 'LOCATION', 'header', '“LOCATION”'],
@@ -65,12 +42,12 @@ describe('bad input is refused with a clear sentence and never throws', () => {
     expect(findingsOf(codes, 'no-temperature')).toHaveLength(1);
   });
 
-  test('archives wait for the weather room, and other binary files are refused as such', () => {
+  test('archives are to be unpacked first, and other binary files are refused as such', () => {
     const gzip = readWeatherFile(Uint8Array.of(0x1f, 0x8b, 8, 0), 'weather.epw.gz');
     const zip = readWeatherFile(Uint8Array.of(0x50, 0x4b, 3, 4, 20, 0), 'weather.zip');
     for (const reading of [gzip, zip]) {
       expect(reading.findings).toEqual([expect.objectContaining({ code: 'binary', severity: 'refuse' })]);
-      expect(reading.findings[0]?.message).toContain('Archives are read from the weather room on');
+      expect(reading.findings[0]?.message).toContain('Unpack it and bring what is inside');
     }
     const png = readWeatherFile(Uint8Array.of(0x89, 0x50, 0x4e, 0x47, 13, 10, 26, 10, 0, 0), 'map.png');
     expect(png.findings[0]).toMatchObject({ code: 'binary', severity: 'refuse', line: 3 });
@@ -146,7 +123,7 @@ describe('an EPW that is damaged at random', { timeout: 600_000 }, () => {
       fc.array(change, { minLength: 1, maxLength: 12 }),
       fc.constantFrom('change', 'lose', 'double'),
       (changes, how) => {
-        const damaged = damage(bytes, changes, how);
+        const damaged = damagedBytes(bytes, changes, how);
         const started = process.cpuUsage().user;
         const problems = problemsOf(readWeatherFile(damaged, 'damaged.epw'));
         return problems.length === 0 && (process.cpuUsage().user - started) / 1000 < LONGEST_MS;
@@ -189,27 +166,6 @@ describe('an EPW that is damaged at random', { timeout: 600_000 }, () => {
     fc.assert(property, propertySettings(40));
   });
 });
-
-function damage(
-  bytes: Uint8Array,
-  changes: readonly { at: number; byte: number }[],
-  how: 'change' | 'lose' | 'double',
-): Uint8Array {
-  if (how === 'change') {
-    const changed = Uint8Array.from(bytes);
-    for (const { at, byte } of changes) changed[at] = byte;
-    return changed;
-  }
-  const [first] = changes;
-  const from = first?.at ?? 0;
-  const to = Math.min(bytes.length, from + (first?.byte ?? 0) * (changes.length * changes.length));
-  const head = bytes.subarray(0, how === 'lose' ? from : to);
-  const tail = bytes.subarray(how === 'lose' ? to : from);
-  const joined = new Uint8Array(head.length + tail.length);
-  joined.set(head);
-  joined.set(tail, head.length);
-  return joined;
-}
 
 test('a faultless file has no problem by the same measure', () => {
   expect(problemsOf(readWeatherFile(epwBytes(), 'plain.epw'))).toEqual([]);

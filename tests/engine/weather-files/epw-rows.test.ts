@@ -175,9 +175,9 @@ describe('data records of an EPW', () => {
 
   test('numbers may carry signs, blanks, exponents and bare points', () => {
     const lines = withField(10, 7, ' +1.25e1 ');
-    lines[at(11)] = (lines[at(11)] ?? '').split(',').with(6, '.5').with(7, '-0').join(',');
+    lines[at(11)] = (lines[at(11)] ?? '').split(',').with(6, '.135e2').with(7, '-0').join(',');
     const { dryBulbC } = readUsable(lines).hours;
-    expect([dryBulbC[10], dryBulbC[11]]).toEqual([12.5, 0.5]);
+    expect([dryBulbC[10], dryBulbC[11]]).toEqual([12.5, 13.5]);
   });
 
   test('a last line cut short is left out and told, and the hour is told as absent', () => {

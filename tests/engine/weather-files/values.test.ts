@@ -168,9 +168,9 @@ describe('humidity', () => {
   test('dew points above the dry bulb in a fifth of a month take the month with them; in over 1 % of the year they refuse', () => {
     const start = 31 * 24;
     const february = (hours: number) => ({
-      hour: ({ slot }: EpwDate) =>
-        slot >= start && slot < start + hours
-          ? { dryBulbC: 2, dewPointC: 9, relativeHumidityPct: '' }
+      hour: (date: EpwDate) =>
+        date.slot >= start && date.slot < start + hours
+          ? { dewPointC: plainHour(date).dryBulbC + 7, relativeHumidityPct: '' }
           : { relativeHumidityPct: '' },
     });
     expect(findingsOf(readRefused(february(88)), 'dew-above-dry').some(({ severity }) => severity === 'refuse')).toBe(
@@ -179,8 +179,12 @@ describe('humidity', () => {
     const few = readUsable(february(87));
     expect(findingsOf(few, 'dew-above-dry').every(({ severity }) => severity === 'doubt')).toBe(true);
     // Relative humidity that is there and agrees elsewhere serves in place of a dew point that is unfit.
-    const month = only(span(31 * 24, 31 * 24 + 140), { dryBulbC: 2, dewPointC: 9, relativeHumidityPct: 60 });
-    const rescued = readUsable(month);
+    const rescued = readUsable({
+      hour: (date) =>
+        date.slot >= start && date.slot < start + 140
+          ? { dewPointC: plainHour(date).dryBulbC + 7, relativeHumidityPct: 60 }
+          : {},
+    });
     expect(rescued.humidityFrom).toBe('relative humidity');
     expect(findingsOf(rescued, 'dew-above-dry').some(({ message }) => message.includes('In February'))).toBe(true);
   });
