@@ -34,8 +34,17 @@ const NEXT_FIELD = 11;
 export class PlainRowReader {
   /** What the last row held; its line and its estimated values are the caller's to set. */
   readonly row: SourceRow = {
-    ...{ line: 0, year: 0, month: 0, day: 0, hour: 0, minute: 0, estimated: 0 },
-    ...{ dryBulbC: Number.NaN, dewPointC: Number.NaN, relativeHumidityPct: Number.NaN, pressurePa: Number.NaN },
+    line: 0,
+    year: 0,
+    month: 0,
+    day: 0,
+    hour: 0,
+    minute: 0,
+    dryBulbC: Number.NaN,
+    dewPointC: Number.NaN,
+    relativeHumidityPct: Number.NaN,
+    pressurePa: Number.NaN,
+    estimated: 0,
   };
   fieldCount = 0;
   /** Where the source flags begin, and the byte after them. */
@@ -47,6 +56,8 @@ export class PlainRowReader {
 
   readonly #bytes: Uint8Array;
   readonly #words: DataView;
+  /** Dry bulb, dew point, relative humidity and pressure as they stand. */
+  readonly #values = new Float64Array(4);
   #at = 0;
   #plain = true;
 
@@ -67,10 +78,13 @@ export class PlainRowReader {
     row.minute = this.#wholeNumber();
     if (!this.#plain || !exists(row)) return false;
     this.#passFlags();
-    row.dryBulbC = temperatureWithoutCodes(this.#number());
-    row.dewPointC = temperatureWithoutCodes(this.#number());
-    row.relativeHumidityPct = humidityWithoutCodes(this.#number());
-    row.pressurePa = pressureWithoutCodes(this.#number());
+    // Into a column and not from hand to hand, which would make an object of each number.
+    const values = this.#values;
+    for (let place = 0; place < values.length; place++) values[place] = this.#number();
+    row.dryBulbC = temperatureWithoutCodes(values[0] ?? 0);
+    row.dewPointC = temperatureWithoutCodes(values[1] ?? 0);
+    row.relativeHumidityPct = humidityWithoutCodes(values[2] ?? 0);
+    row.pressurePa = pressureWithoutCodes(values[3] ?? 0);
     return this.#plain && this.#countFields();
   }
 
