@@ -2,6 +2,7 @@ import type { Bench, BenchFinding } from './bench.ts';
 import { ingestBench } from './definitions/ingest.ts';
 import { rankBench } from './definitions/rank.ts';
 import { growthBench, rescoreBench } from './definitions/rescore.ts';
+import { loadBench, sizeBench } from './definitions/station-years.ts';
 import { secondWetBulbBench, wetBulbBench } from './definitions/wet-bulb.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
 
@@ -12,6 +13,8 @@ export const benches: readonly Bench[] = [
   rescoreBench,
   growthBench,
   rankBench,
+  loadBench,
+  sizeBench,
 ];
 
 /** Less of the machine left idle by others than this, and a gate that is missed says nothing. */
