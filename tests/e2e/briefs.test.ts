@@ -19,8 +19,7 @@ let watched: WatchedPage;
 let page: Page;
 
 beforeAll(async () => {
-  product = await startProduct();
-  await product.seed();
+  product = await startProduct('demo');
   browser = await launchBrowser();
 }, 300_000);
 

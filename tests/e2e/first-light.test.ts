@@ -28,8 +28,7 @@ let watched: WatchedPage;
 let page: Page;
 
 beforeAll(async () => {
-  product = await startProduct();
-  await product.seed();
+  product = await startProduct('demo');
   accounts = await readDemoAccounts(product.demoAccountsPath);
   browser = await launchBrowser();
 }, 300_000);
