@@ -67,8 +67,9 @@ function hundredthsColumn(column: Float64Array): Int32Array {
 function designRows(quantity: Int32Array, coincident: Int32Array): readonly DesignRow[] {
   const counts = new ValueCounts(quantity, UNKNOWN + 1, coincident);
   if (counts.known === 0) return [];
-  return DESIGN_PERCENTS.map((percent) => {
-    const value = counts.downwards(placeAtPercent(percent, counts.known));
+  const values = counts.downwards(DESIGN_PERCENTS.map((percent) => placeAtPercent(percent, counts.known)));
+  return DESIGN_PERCENTS.map((percent, index) => {
+    const value = values[index] ?? Number.NaN;
     const coincidentMean = counts.meanCompanion(value, COINCIDENT_WITHIN_HUNDREDTHS);
     return { percent, valueC: value / 100, coincidentC: Math.round(coincidentMean) / 100 };
   });

@@ -41,15 +41,17 @@ export class ValueCounts {
     this.#sums = sums;
   }
 
-  /** The value at a place, counted from 0 downwards. */
-  downwards(place: number): number {
+  /** The values at some places, counted from 0 downwards; the places in ascending order. */
+  downwards(places: readonly number[]): readonly number[] {
     let bin = this.#counts.length - 1;
     let upTo = this.#counts[bin] ?? 0;
-    while (upTo <= place && bin > 0) {
-      bin--;
-      upTo += this.#counts[bin] ?? 0;
-    }
-    return this.#least + bin;
+    return places.map((place) => {
+      while (upTo <= place && bin > 0) {
+        bin--;
+        upTo += this.#counts[bin] ?? 0;
+      }
+      return this.#least + bin;
+    });
   }
 
   /** Mean companion of the values no further than so much from a value. */

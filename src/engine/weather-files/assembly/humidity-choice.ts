@@ -29,9 +29,7 @@ export function chooseHumidity(
   findings: FindingList,
 ): HumiditySource | null {
   const { belowZero, steps } = input;
-  const hours = countKnown(steps.dryBulbC, steps.dryBulbC);
-  const dewHours = countKnown(steps.dewPointC, steps.dryBulbC);
-  const rhHours = countKnown(steps.relativeHumidityPct, steps.dryBulbC);
+  const { dewHours, hours, rhHours } = countKnown(steps);
   if (dewHours === 0 && rhHours === 0) {
     findings.add({
       code: 'no-humidity',
@@ -59,11 +57,15 @@ export function chooseHumidity(
   return 'dew point';
 }
 
-/** Steps in which both columns hold a value. */
-function countKnown(one: Float64Array, other: Float64Array): number {
-  let known = 0;
-  for (let step = 0; step < one.length; step++) {
-    if (!Number.isNaN((one[step] ?? Number.NaN) + (other[step] ?? Number.NaN))) known++;
+/** Steps with a dry bulb, and those of them with a dew point and with a relative humidity. */
+function countKnown(steps: StepColumns): { hours: number; dewHours: number; rhHours: number } {
+  const { dewPointC, dryBulbC, relativeHumidityPct } = steps;
+  const known = { hours: 0, dewHours: 0, rhHours: 0 };
+  for (let step = 0; step < dryBulbC.length; step++) {
+    if (Number.isNaN(dryBulbC[step])) continue;
+    known.hours++;
+    if (!Number.isNaN(dewPointC[step])) known.dewHours++;
+    if (!Number.isNaN(relativeHumidityPct[step])) known.rhHours++;
   }
   return known;
 }
