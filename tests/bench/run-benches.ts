@@ -1,5 +1,5 @@
 import type { Bench, BenchFinding } from './bench.ts';
-import { ingestBench } from './definitions/ingest.ts';
+import { growthReadBench, ingestBench } from './definitions/ingest.ts';
 import { rankBench } from './definitions/rank.ts';
 import { growthBench, rescoreBench } from './definitions/rescore.ts';
 import { loadBench, sizeBench } from './definitions/station-years.ts';
@@ -10,6 +10,7 @@ export const benches: readonly Bench[] = [
   wetBulbBench,
   secondWetBulbBench,
   ingestBench,
+  growthReadBench,
   rescoreBench,
   growthBench,
   rankBench,
