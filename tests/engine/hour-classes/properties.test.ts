@@ -22,8 +22,8 @@ const metClasses = ['air', 'direct', 'indirect', 'dewpoint', 'twostage'];
 const demandClasses = [...metClasses, 'frozen', 'damp', 'short', 'beyond'];
 
 /** Thrown with what broke; `expect` a million times over would take longer than the engine. */
-function check(holds: boolean, what: string): void {
-  if (!holds) throw new Error(what);
+function check(holds: boolean, what: () => string): void {
+  if (!holds) throw new Error(what());
 }
 
 /** S of outdoor air alone, K: what S falls back to without any state within the caps. */
@@ -55,19 +55,22 @@ describe('every hour', () => {
             const judgement = judgeSupplyAirHour(hour, brief);
             const { hourClass, met, shortfallK, uncappedShortfallK, dampBy } = judgement;
             seen.set(hourClass, (seen.get(hourClass) ?? 0) + 1);
-            check(demandClasses.includes(hourClass), `class ${hourClass}`);
-            check(hourClass === 'frozen' || met === metClasses.includes(hourClass), `${hourClass} met ${met}`);
-            check(shortfallK >= 0 && (!met || shortfallK === 0), `shortfall ${shortfallK}`);
-            check(uncappedShortfallK <= shortfallK + ROUNDING_K, `uncapped ${uncappedShortfallK} over ${shortfallK}`);
-            check((dampBy !== null) === (hourClass === 'damp'), `damp by ${dampBy}`);
-            check(met === judgement.aloneMet.length > 0, `met ${met} alone ${judgement.aloneMet.join()}`);
+            check(demandClasses.includes(hourClass), () => `class ${hourClass}`);
+            check(hourClass === 'frozen' || met === metClasses.includes(hourClass), () => `${hourClass} met ${met}`);
+            check(shortfallK >= 0 && (!met || shortfallK === 0), () => `shortfall ${shortfallK}`);
+            check(
+              uncappedShortfallK <= shortfallK + ROUNDING_K,
+              () => `uncapped ${uncappedShortfallK} over ${shortfallK}`,
+            );
+            check((dampBy !== null) === (hourClass === 'damp'), () => `damp by ${dampBy}`);
+            check(met === judgement.aloneMet.length > 0, () => `met ${met} alone ${judgement.aloneMet.join()}`);
             const plant = supplyAirPlantHour(hour, judgement, brief);
             check(
               Object.values(plant).every((figure) => figure !== null && figure >= 0),
-              `plant ${JSON.stringify(plant)}`,
+              () => `plant ${JSON.stringify(plant)}`,
             );
-            check(plant.coolingKwh <= load + 1e-12, `cooling ${plant.coolingKwh} of ${load}`);
-            check(judgement.running !== 'air' || plant.makeUpLitres === 0, 'water while outdoor air runs');
+            check(plant.coolingKwh <= load + 1e-12, () => `cooling ${plant.coolingKwh} of ${load}`);
+            check(judgement.running !== 'air' || plant.makeUpLitres === 0, () => 'water while outdoor air runs');
           }
         }),
         run,
@@ -88,7 +91,7 @@ describe('every hour', () => {
             const volume = volumeM3PerKg(dryBulbC, humidityRatio, pressurePa);
             const outdoor = { dryBulbC, humidityRatio, pressurePa, volumeM3PerKg: volume };
             const { met, airMeets } = judgeSupplyAirHour(hourUnder(brief, outdoor), brief);
-            check(met === airMeets, `met ${met}, by air ${airMeets}`);
+            check(met === airMeets, () => `met ${met}, by air ${airMeets}`);
             judged += 1;
           }
         }),
@@ -116,12 +119,12 @@ describe('with modulating control', () => {
             for (const name of ['effDirect', 'effIndirect', 'effDewPoint'] as const) {
               const better = { ...brief, [name]: Math.min(brief[name] + by, 1) };
               const more = judgeSupplyAirHour(hour, better);
-              check(more.met || !less.met, `unmet with ${name} ${better[name]}`);
+              check(more.met || !less.met, () => `unmet with ${name} ${better[name]}`);
               // What a better first exchanger saturates may break a supply cap that a lesser one kept: S then falls back.
               if (name === 'effIndirect' && more.hourClass === 'damp') continue;
               check(
                 more.shortfallK <= shortfallAllowedK(less, hour, brief),
-                `S ${more.shortfallK} from ${less.shortfallK}`,
+                () => `S ${more.shortfallK} from ${less.shortfallK}`,
               );
             }
           }
@@ -143,10 +146,10 @@ describe('with modulating control', () => {
             const hour = hourUnder(brief, outdoor);
             const fewer = judgeSupplyAirHour(hour, { ...brief, stages: brief.stages.slice(0, -1) });
             const all = judgeSupplyAirHour(hour, brief);
-            check(all.met || !fewer.met, 'met with one stage less');
+            check(all.met || !fewer.met, () => 'met with one stage less');
             check(
               all.shortfallK <= shortfallAllowedK(fewer, hour, brief),
-              `S ${all.shortfallK} from ${fewer.shortfallK}`,
+              () => `S ${all.shortfallK} from ${fewer.shortfallK}`,
             );
             if (all.met && !fewer.met) helped += 1;
           }
@@ -161,10 +164,10 @@ describe('with modulating control', () => {
 
 describe('a stricter brief', () => {
   function neverImproves(looser: HourJudgement, tighter: HourJudgement, tighterHour: DemandHour): void {
-    check(looser.met || !tighter.met, `${looser.hourClass} became ${tighter.hourClass}`);
+    check(looser.met || !tighter.met, () => `${looser.hourClass} became ${tighter.hourClass}`);
     const fellBack = tighter.shortfallK === airShortfallK(tighter, tighterHour);
     const least = looser.shortfallK - ROUNDING_K;
-    check(fellBack || tighter.shortfallK >= least, `S ${tighter.shortfallK} from ${looser.shortfallK}`);
+    check(fellBack || tighter.shortfallK >= least, () => `S ${tighter.shortfallK} from ${looser.shortfallK}`);
   }
 
   test(
