@@ -137,9 +137,14 @@ describe.each(['halls', 'towers', 'turbines', 'index limits'] as const)('every h
 });
 
 describe('saturated air', () => {
+  // A fan that heats more than the air stage's dries the supply, which may then keep a cap on its relative humidity.
+  const { air } = presetBrief('office').fanWPerLs;
+  const fanWPerLs = { air, direct: air, indirect: air, dewpoint: air, twostage: air, returnAir: air };
+  const equalFans = anyIndexed.map((brief): Brief => ({ ...brief, fanWPerLs }));
+
   test.each([
     ['turbines', anyTurbine],
-    ['index limits', anyIndexed],
+    ['index limits', equalFans],
   ] as const)(
     'meets no hour of %s by a stage that outdoor air does not meet',
     (_name, briefs) => {
