@@ -1,6 +1,7 @@
 import type { Bench, BenchFinding } from './bench.ts';
 import { growthReadBench, ingestBench } from './definitions/ingest.ts';
 import { rankBench } from './definitions/rank.ts';
+import { readBench } from './definitions/read.ts';
 import { growthBench, rescoreBench } from './definitions/rescore.ts';
 import { loadBench, sizeBench } from './definitions/station-years.ts';
 import { secondWetBulbBench, wetBulbBench } from './definitions/wet-bulb.ts';
@@ -11,6 +12,7 @@ export const benches: readonly Bench[] = [
   secondWetBulbBench,
   ingestBench,
   growthReadBench,
+  readBench,
   rescoreBench,
   growthBench,
   rankBench,
