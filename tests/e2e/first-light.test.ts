@@ -28,8 +28,7 @@ let watched: WatchedPage;
 let page: Page;
 
 beforeAll(async () => {
-  product = await startProduct();
-  await product.seed();
+  product = await startProduct('demo');
   accounts = await readDemoAccounts(product.demoAccountsPath);
   browser = await launchBrowser();
 }, 300_000);
@@ -68,7 +67,14 @@ async function enterAs(role: Role): Promise<void> {
   await signIn(page, account(role));
 }
 
+/** By the top bar, where the pages of a narrow screen stand behind a menu. */
 async function openWeather(): Promise<void> {
+  const menu = page.getByRole('button', { name: 'Menu', exact: true });
+  if (await menu.isVisible()) {
+    await menu.focus();
+    await page.keyboard.press('Enter');
+    await expectAccessible('menu');
+  }
   await page.getByRole('link', { name: 'Weather', exact: true }).click();
   await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
 }
@@ -316,6 +322,7 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
   await signIn(page, account('viewer'));
   await mapIsDrawn(page);
   await expectNoSidewaysScroll('map');
+  expect((await page.getByRole('banner').boundingBox())?.height).toBeLessThanOrEqual(56);
 
   const sheet = page.getByRole('region', { name: 'Stations panel' });
   const low = await sheet.boundingBox();

@@ -8,6 +8,8 @@ import type { PackedYear } from './weather-year.ts';
 const HUMIDITY_RATIO_STEP = 2e-6;
 const PRESSURE_STEP_PA = 2;
 const MOST_INT16 = 32_767;
+/** Whether the machine itself writes the low byte first, as nearly all do. */
+const LITTLE_ENDIAN = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;
 
 /** The columns as numbers, NaN where missing. */
 export interface YearColumns {
@@ -119,6 +121,7 @@ export function packedBytes(year: PackedYear): PackedBytes {
 
 /** A 16-bit column as little-endian bytes; serves the histogram too. */
 export function bytesOf16(values: Int16Array | Uint16Array): Uint8Array {
+  if (LITTLE_ENDIAN) return new Uint8Array(values.buffer, values.byteOffset, values.byteLength).slice();
   const bytes = new Uint8Array(values.length * 2);
   for (let index = 0; index < values.length; index++) {
     const value = values[index] ?? 0;

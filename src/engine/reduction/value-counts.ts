@@ -12,7 +12,7 @@ export class ValueCounts {
 
   /**
    * @param values whole numbers
-   * @param from lesser values stand for unknown ones and are not counted
+   * @param from lesser values and companions stand for unknown ones, and neither of the two is counted
    * @param companions whole numbers beside the values, of which means are asked for
    */
   constructor(values: Int32Array, from: number, companions: Int32Array = values) {
@@ -20,7 +20,7 @@ export class ValueCounts {
     let most = from;
     for (let at = 0; at < values.length; at++) {
       const value = values[at] ?? 0;
-      if (value < from) continue;
+      if (value < from || (companions[at] ?? 0) < from) continue;
       if (value < least) least = value;
       if (value > most) most = value;
     }
@@ -30,25 +30,28 @@ export class ValueCounts {
     const sums = new Float64Array(bins);
     for (let at = 0; at < values.length; at++) {
       const value = values[at] ?? 0;
-      if (value < from) continue;
+      const companion = companions[at] ?? 0;
+      if (value < from || companion < from) continue;
       const bin = value - least;
       counts[bin] = (counts[bin] ?? 0) + 1;
-      sums[bin] = (sums[bin] ?? 0) + (companions[at] ?? 0);
+      sums[bin] = (sums[bin] ?? 0) + companion;
       this.known++;
     }
     this.#counts = counts;
     this.#sums = sums;
   }
 
-  /** The value at a place, counted from 0 downwards. */
-  downwards(place: number): number {
+  /** The values at some places, counted from 0 downwards; the places in ascending order. */
+  downwards(places: readonly number[]): readonly number[] {
     let bin = this.#counts.length - 1;
     let upTo = this.#counts[bin] ?? 0;
-    while (upTo <= place && bin > 0) {
-      bin--;
-      upTo += this.#counts[bin] ?? 0;
-    }
-    return this.#least + bin;
+    return places.map((place) => {
+      while (upTo <= place && bin > 0) {
+        bin--;
+        upTo += this.#counts[bin] ?? 0;
+      }
+      return this.#least + bin;
+    });
   }
 
   /** Mean companion of the values no further than so much from a value. */

@@ -116,8 +116,6 @@ export function meansByMonthAndHour(column: Float64Array): readonly (readonly (n
 export function depressionCurve(depression: Int32Array): readonly number[] {
   const values = new ValueCounts(depression, 0);
   if (values.known === 0) return [];
-  return Array.from(
-    { length: 101 },
-    (_none, percent) => values.downwards(Math.floor((percent * (values.known - 1)) / 100)) / 100,
-  );
+  const places = Array.from({ length: 101 }, (_none, percent) => Math.floor((percent * (values.known - 1)) / 100));
+  return values.downwards(places).map((value) => value / 100);
 }

@@ -69,18 +69,13 @@ export interface GivenHumidity {
  * column, which was mostly computed from the same values.
  */
 export function givenHumidity(steps: StepColumns): GivenHumidity {
-  return {
-    hours: countKnown(steps.dryBulbC, steps.dryBulbC),
-    dewHours: countKnown(steps.dewPointC, steps.dryBulbC),
-    rhHours: countKnown(steps.relativeHumidityPct, steps.dryBulbC),
-  };
-}
-
-/** Steps in which both columns hold a value. */
-function countKnown(one: Float64Array, other: Float64Array): number {
-  let known = 0;
-  for (let step = 0; step < one.length; step++) {
-    if (!Number.isNaN((one[step] ?? Number.NaN) + (other[step] ?? Number.NaN))) known++;
+  const { dewPointC, dryBulbC, relativeHumidityPct } = steps;
+  const known = { hours: 0, dewHours: 0, rhHours: 0 };
+  for (let step = 0; step < dryBulbC.length; step++) {
+    if (Number.isNaN(dryBulbC[step])) continue;
+    known.hours++;
+    if (!Number.isNaN(dewPointC[step])) known.dewHours++;
+    if (!Number.isNaN(relativeHumidityPct[step])) known.rhHours++;
   }
   return known;
 }

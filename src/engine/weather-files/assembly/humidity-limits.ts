@@ -16,7 +16,13 @@ const AGREED_SHARE = 0.98;
 /** RH over 100 to 105 % is taken as 100; more, and 0 or less, is left out. */
 export function limitRelativeHumidity(steps: StepColumns, findings: FindingList): void {
   const column = steps.relativeHumidityPct;
-  forEachRun(markAbove(column, 100), (start, end) => {
+  const over = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (value > 100) over[step] = 1;
+    else if (value <= 0) column[step] = Number.NaN;
+  }
+  forEachRun(over, (start, end) => {
     const most = column.subarray(start, end).reduce((a, b) => Math.max(a, b), 0);
     const { first, last } = linesOfRun(steps.lines, start, end);
     const done = most <= ROUNDING_RH_PCT ? 'taken as 100 %' : 'up to 105 % taken as 100 %, more left out';
@@ -29,13 +35,10 @@ export function limitRelativeHumidity(steps: StepColumns, findings: FindingList)
       message: () => `${linesPhrase(first, last)}: a relative humidity of ${most} %; ${done}.`,
     });
   });
-  for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    if (value > ROUNDING_RH_PCT || value <= 0) column[step] = Number.NaN;
-    else if (value > 100) {
-      column[step] = 100;
-      steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.relativeHumidity;
-    }
+  for (let step = over.indexOf(1); step >= 0; step = over.indexOf(1, step + 1)) {
+    const mended = (column[step] ?? Number.NaN) <= ROUNDING_RH_PCT;
+    column[step] = mended ? 100 : Number.NaN;
+    if (mended) steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.relativeHumidity;
   }
 }
 
@@ -45,14 +48,7 @@ export function limitRelativeHumidity(steps: StepColumns, findings: FindingList)
  * @returns whether the dew-point column is too poor to be used, so that the relative humidity must serve
  */
 export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, findings: FindingList): boolean {
-  const excess = dewPointExcess(steps);
-  const far = markAbove(excess, ROUNDING_DEW_HUNDREDTHS);
-  const near = markAbove(excess, 0);
-  let farSteps = 0;
-  for (let step = far.indexOf(1); step >= 0; step = far.indexOf(1, step + 1)) {
-    farSteps++;
-    near[step] = 0;
-  }
+  const { excess, far, farSteps, near } = dewPointExcess(steps);
   tellExcess({ steps, excess, marks: near, large: false }, findings);
   tellExcess({ steps, excess, marks: far, large: true }, findings);
   for (let step = near.indexOf(1); step >= 0; step = near.indexOf(1, step + 1)) {
@@ -73,21 +69,32 @@ export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, fin
   return true;
 }
 
-/** How far each dew point lies above its dry bulb, hundredths of a kelvin; 0 where it does not. */
-function dewPointExcess(steps: StepColumns): Int32Array {
+/**
+ * How far each dew point lies above its dry bulb, hundredths of a kelvin, 0 where it does not; marks where that may be rounding and
+ * where it is more.
+ */
+function dewPointExcess(steps: StepColumns): {
+  excess: Int32Array;
+  near: Uint8Array;
+  far: Uint8Array;
+  farSteps: number;
+} {
   const excess = new Int32Array(steps.dewPointC.length);
+  const near = new Uint8Array(excess.length);
+  const far = new Uint8Array(excess.length);
+  let farSteps = 0;
   for (let step = 0; step < excess.length; step++) {
     const dewPointC = steps.dewPointC[step] ?? Number.NaN;
     const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
-    if (dewPointC > dryBulbC) excess[step] = hundredths(dewPointC) - hundredths(dryBulbC);
+    if (!(dewPointC > dryBulbC)) continue;
+    const over = hundredths(dewPointC) - hundredths(dryBulbC);
+    excess[step] = over;
+    if (over > ROUNDING_DEW_HUNDREDTHS) {
+      far[step] = 1;
+      farSteps++;
+    } else if (over > 0) near[step] = 1;
   }
-  return excess;
-}
-
-function markAbove(column: Float64Array | Int32Array, limit: number): Uint8Array {
-  const marks = new Uint8Array(column.length);
-  for (let step = 0; step < column.length; step++) if ((column[step] ?? limit) > limit) marks[step] = 1;
-  return marks;
+  return { excess, near, far, farSteps };
 }
 
 function tellExcess(

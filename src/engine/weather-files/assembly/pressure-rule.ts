@@ -41,7 +41,7 @@ export function settlePressure(
   }
   const medianPa = medianOf(known);
   if (!inHectopascals && !keepFar) replaceFarValues(steps, medianPa, findings);
-  fillGaps(steps, findings);
+  if (known.length < column.length) fillGaps(steps, findings);
   flagConstant(steps, findings);
   const meanPa = meanOf(column);
   if (elevationM === null) {
@@ -179,16 +179,18 @@ function fillGaps(steps: StepColumns, findings: FindingList): void {
 }
 
 function flagConstant(steps: StepColumns, findings: FindingList): void {
-  const given = (step: number) => ((steps.repaired[step] ?? 0) & VALUE.pressure) === 0;
-  const value = candidateForMost(steps.pressurePa, given);
+  const { candidate: value, most } = candidateForMost(steps);
+  if (most < CONSTANT_HOURS * steps.stepsPerHour) return;
+  const constant = new Uint8Array(steps.pressurePa.length);
   let count = 0;
-  for (let step = 0; step < steps.pressurePa.length; step++) {
-    if (steps.pressurePa[step] === value && given(step)) count++;
+  for (let step = 0; step < constant.length; step++) {
+    if (steps.pressurePa[step] !== value || isRepaired(steps, step)) continue;
+    constant[step] = 1;
+    count++;
   }
   if (count < CONSTANT_HOURS * steps.stepsPerHour) return;
-  for (let step = 0; step < steps.pressurePa.length; step++) {
-    if (given(step) && steps.pressurePa[step] === value)
-      steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
+  for (let step = 0; step < constant.length; step++) {
+    if (constant[step] === 1) steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
   }
   findings.add({
     code: 'pressure-constant',
@@ -199,17 +201,26 @@ function flagConstant(steps: StepColumns, findings: FindingList): void {
   });
 }
 
-/** The only value that can stand in more than half of the steps (the vote of R. S. Boyer and J. S. Moore). */
-function candidateForMost(column: Float64Array, given: (step: number) => boolean): number {
+function isRepaired(steps: StepColumns, step: number): boolean {
+  return ((steps.repaired[step] ?? 0) & VALUE.pressure) !== 0;
+}
+
+/**
+ * The only value of the file that can stand in more than half of the steps, and in how many it can (the vote of R. S. Boyer and
+ * J. S. Moore).
+ */
+function candidateForMost(steps: StepColumns): { candidate: number; most: number } {
+  let voters = 0;
   let candidate = Number.NaN;
   let lead = 0;
-  for (let step = 0; step < column.length; step++) {
-    if (!given(step)) continue;
-    const value = column[step] ?? Number.NaN;
+  for (let step = 0; step < steps.pressurePa.length; step++) {
+    if (isRepaired(steps, step)) continue;
+    const value = steps.pressurePa[step] ?? Number.NaN;
+    voters++;
     if (lead === 0) candidate = value;
     lead += value === candidate ? 1 : -1;
   }
-  return candidate;
+  return { candidate, most: (voters + lead) / 2 };
 }
 
 function compareWithElevation(meanPa: number, elevationM: number, findings: FindingList): void {
