@@ -47,7 +47,6 @@ export async function up(knex: Knex): Promise<void> {
       add column answers jsonb not null default '{}',
       add column table_guess jsonb,
       add column shape_key text,
-      add column gaps jsonb,
       add column licence text not null default 'unknown'
         check (licence in ('open', 'attribution', 'non-commercial', 'no redistribution', 'unknown')),
       add column attribution text,
@@ -122,7 +121,7 @@ export async function down(knex: Knex): Promise<void> {
     drop index weather_files_fingerprint, weather_files_batch, weather_files_station;
     alter table weather_files
       drop column batch_id, drop column part_index, drop column part, drop column answers, drop column table_guess, drop column shape_key,
-      drop column gaps, drop column licence, drop column attribution, drop column refused_by, drop column refused_at,
+      drop column licence, drop column attribution, drop column refused_by, drop column refused_at,
       drop column refused_reason, drop column superseded_by, drop column superseded_at, drop column superseded_by_person;
     create unique index weather_files_fingerprint on weather_files (team_id, fingerprint) where status <> 'withdrawn';
     drop table weather_archives, weather_batches;

@@ -1,8 +1,7 @@
-import path from 'node:path';
+import { readingKnowledge } from './builders/reading-knowledge.ts';
 import { connect } from './db/connection.ts';
 import { judgeStoredYear } from './features/runs/judge-year.ts';
 import { queueMissingRuns } from './features/runs/queue-runs.ts';
-import { standardZoneAt } from './features/stations/standard-zone-at.ts';
 import {
   clearJudgingFailure,
   noteJudgingFailure,
@@ -16,7 +15,6 @@ import { repeat } from './jobs/repeat.ts';
 import { runJobs } from './jobs/run-jobs.ts';
 import type { Log } from './log.ts';
 import type { OriginalStore } from './storage/original-store.ts';
-import { openRelief } from './tiles/relief.ts';
 
 export interface WorkerOptions {
   readonly databaseUrl: string;
@@ -24,15 +22,12 @@ export interface WorkerOptions {
   readonly log: Log;
 }
 
-/** What data/relief/build.ts makes. */
-const RELIEF = path.resolve(import.meta.dirname, '../data/relief/relief.bin');
-
 const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
   const { databaseUrl, storage, log } = options;
-  const relief = openRelief(RELIEF);
+  const knowledge = readingKnowledge();
   const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
   try {
     await queueMissingRuns(db);
@@ -42,7 +37,7 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       log,
       tasks: {
         'read-weather-file': {
-          run: (file) => readStoredFile({ db, storage, relief, zoneAt: standardZoneAt }, file),
+          run: (file) => readStoredFile({ db, storage, ...knowledge }, file),
           dead: (file) => noteReadingFailure(db, file),
         },
         'open-weather-archive': {

@@ -2,6 +2,7 @@ import { mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import knexPkg, { type Knex } from 'knex';
+import { readingKnowledge } from '../../server/builders/reading-knowledge.ts';
 import { acceptAs, receiveFromDisk } from '../../server/builders/weather-file-steps.ts';
 import { connect } from '../../server/db/connection.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
@@ -66,7 +67,7 @@ async function fill({ db, home }: { db: Knex; home: string }): Promise<string> {
     const file = path.join(home, name);
     await writeFile(file, text);
     const fileId = await receiveFromDisk(deps, { teamId, personId, file });
-    await readStoredFile(deps, { teamId, fileId });
+    await readStoredFile({ ...deps, ...readingKnowledge() }, { teamId, fileId });
     await acceptAs(deps, { teamId, personId, fileId });
   }
   return teamId;
