@@ -32,6 +32,7 @@ export async function up(knex: Knex): Promise<void> {
       problem text,
       failure text,
       members integer check (members >= 0),
+      next_entry integer not null default 0 check (next_entry >= 0),
       members_opened integer not null default 0 check (members_opened >= 0),
       left_out jsonb not null default '[]',
       unique (team_id, id),

@@ -21,6 +21,8 @@ const RATIO_FROM_BYTES = 1024 * 1024;
 /** A file that was taken out; it is removed when the next one is asked for. */
 export interface ZipMember {
   readonly kind: 'member';
+  /** Which of the archive's own entries it is or stands in, counted from 0. */
+  readonly entry: number;
   /** Its path in the archive, for messages; never a place on our disk. */
   readonly path: string;
   readonly bytes: number;
@@ -31,6 +33,7 @@ export interface ZipMember {
 /** A file that was not taken out, and why. */
 export interface LeftOutMember {
   readonly kind: 'left out';
+  readonly entry: number;
   readonly path: string;
   readonly why: string;
 }
@@ -44,6 +47,8 @@ interface Opening {
   readonly folder: string;
   /** Why a file of this name is not wanted; null when it is. */
   readonly unwanted: (memberPath: string) => string | null;
+  /** The first entry that is asked for, counted from 0; those before it are not touched. */
+  readonly from?: number;
   readonly signal?: AbortSignal;
 }
 
@@ -58,15 +63,23 @@ export async function countZipMembers(file: string): Promise<number> {
  * Takes the files out one by one; an archive inside the archive is opened too, one inside that is not.
  * @throws ZipProblem when the archive is damaged or too large, before anything is taken out
  */
-export async function* zipMembers(opening: Opening, inside = ''): AsyncGenerator<ZipMember | LeftOutMember> {
+export async function* zipMembers(opening: Opening): AsyncGenerator<ZipMember | LeftOutMember> {
+  yield* membersOf(opening, null);
+}
+
+/** @param outer the entry of the archive that this one stands in; null for the archive itself */
+async function* membersOf(
+  opening: Opening,
+  outer: { path: string; entry: number } | null,
+): AsyncGenerator<ZipMember | LeftOutMember> {
   const zip = await openZip(opening.file);
   try {
-    for (const { entry, name } of await listEntries(zip)) {
-      const shown = `${inside}${name}`;
-      if (name.endsWith('/')) continue;
-      const why = entryProblem(entry) ?? opening.unwanted(shown);
-      if (why === null) yield* takeOut({ zip, entry, shown, nested: inside !== '' }, opening);
-      else yield { kind: 'left out', path: shown, why };
+    for (const [index, { entry, name }] of (await listEntries(zip)).entries()) {
+      if (name.endsWith('/') || (outer === null && index < (opening.from ?? 0))) continue;
+      const place = { entry: outer?.entry ?? index, path: outer === null ? name : `${outer.path}/${name}` };
+      const why = entryProblem(entry) ?? opening.unwanted(place.path);
+      if (why === null) yield* takeOut({ zip, entry, place, nested: outer !== null }, opening);
+      else yield { kind: 'left out', ...place, why };
     }
   } finally {
     zip.close();
@@ -128,32 +141,36 @@ function entryProblem(entry: Entry): string | null {
   return null;
 }
 
+interface Place {
+  readonly entry: number;
+  readonly path: string;
+}
+
 async function* takeOut(
-  { zip, entry, shown, nested }: { zip: ZipFile; entry: Entry; shown: string; nested: boolean },
+  { zip, entry, place, nested }: { zip: ZipFile; entry: Entry; place: Place; nested: boolean },
   opening: Opening,
 ): AsyncGenerator<ZipMember | LeftOutMember> {
   const temporaryPath = path.join(opening.folder, `member-${randomUUID()}`);
   try {
     const taken = await extract({ zip, entry, temporaryPath }, opening.signal);
-    if (typeof taken === 'string') yield { kind: 'left out', path: shown, why: taken };
-    else if (!(await isZip(temporaryPath))) yield { kind: 'member', path: shown, temporaryPath, ...taken };
-    else if (nested)
-      yield { kind: 'left out', path: shown, why: 'It is an archive inside an archive inside an archive.' };
-    else yield* openInside({ temporaryPath, shown }, opening);
+    if (typeof taken === 'string') yield { kind: 'left out', ...place, why: taken };
+    else if (!(await isZip(temporaryPath))) yield { kind: 'member', ...place, temporaryPath, ...taken };
+    else if (nested) yield { kind: 'left out', ...place, why: 'It is an archive inside an archive inside an archive.' };
+    else yield* openInside({ temporaryPath, place }, opening);
   } finally {
     await rm(temporaryPath, { force: true });
   }
 }
 
 async function* openInside(
-  { temporaryPath, shown }: { temporaryPath: string; shown: string },
+  { temporaryPath, place }: { temporaryPath: string; place: Place },
   opening: Opening,
 ): AsyncGenerator<ZipMember | LeftOutMember> {
   try {
-    yield* zipMembers({ ...opening, file: temporaryPath }, `${shown}/`);
+    yield* membersOf({ ...opening, file: temporaryPath }, place);
   } catch (error) {
     if (!(error instanceof ZipProblem)) throw error;
-    yield { kind: 'left out', path: shown, why: error.message };
+    yield { kind: 'left out', ...place, why: error.message };
   }
 }
 

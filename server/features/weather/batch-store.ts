@@ -80,6 +80,11 @@ export async function withdrawUnreadFiles(
   return rows.map(({ id }) => id);
 }
 
+export interface LeftOut {
+  readonly path: string;
+  readonly why: string;
+}
+
 export interface ArchiveState {
   readonly id: string;
   readonly teamId: string;
@@ -89,6 +94,10 @@ export interface ArchiveState {
   readonly fingerprint: string;
   readonly storageKey: string;
   readonly status: ArchiveStatus;
+  /** Where opening goes on: the entries before it are done. */
+  readonly nextEntry: number;
+  readonly opened: number;
+  readonly leftOut: readonly LeftOut[];
   readonly failure: string | null;
   /** Who uploaded it, in whose name its files are received. */
   readonly madeBy: string;
@@ -97,7 +106,9 @@ export interface ArchiveState {
 const ARCHIVE = `
   select weather_archives.id, weather_archives.team_id as "teamId", weather_archives.batch_id as "batchId",
     weather_batches.state as "batchState", weather_archives.name, weather_archives.fingerprint,
-    weather_archives.storage_key as "storageKey", weather_archives.status, weather_archives.failure,
+    weather_archives.storage_key as "storageKey", weather_archives.status,
+    weather_archives.next_entry as "nextEntry", weather_archives.members_opened as opened,
+    weather_archives.left_out as "leftOut", weather_archives.failure,
     weather_batches.made_by as "madeBy"
   from weather_archives join weather_batches on weather_batches.id = weather_archives.batch_id`;
 
@@ -137,25 +148,26 @@ export async function setArchiveOpening(
   archive: { teamId: string; archiveId: string; members: number },
 ): Promise<boolean> {
   const result = await db.raw<{ rowCount: number }>(
-    `update weather_archives set status = 'opening', members = :members, members_opened = 0, left_out = '[]'
+    `update weather_archives set status = 'opening', members = :members
      where team_id = :teamId and id = :archiveId and status in ('waiting', 'opening')`,
     archive,
   );
   return result.rowCount > 0;
 }
 
-/** One file further. @returns false when the archive is not being opened any more */
+/** Some entries further. @returns false when the archive is not being opened any more */
 export async function setArchiveProgress(
   db: Knex,
   progress: {
     teamId: string;
     archiveId: string;
+    nextEntry: number;
     opened: number;
-    leftOut: readonly { path: string; why: string }[];
+    leftOut: readonly LeftOut[];
   },
 ): Promise<boolean> {
   const result = await db.raw<{ rowCount: number }>(
-    `update weather_archives set members_opened = :opened, left_out = cast(:leftOut as jsonb)
+    `update weather_archives set next_entry = :nextEntry, members_opened = :opened, left_out = cast(:leftOut as jsonb)
      where team_id = :teamId and id = :archiveId and status = 'opening'`,
     {
       ...progress,

@@ -5,6 +5,7 @@ import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { pipeline } from 'node:stream/promises';
 import type { Knex } from 'knex';
+import { inTransaction } from '../../db/in-transaction.ts';
 import { cleanUploadName } from '../../http/upload-name.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
@@ -14,10 +15,12 @@ import {
   endArchive,
   findArchive,
   findBatchState,
+  type LeftOut,
   setArchiveOpening,
   setArchiveProgress,
 } from './batch-store.ts';
 import { whyNoWeatherFile } from './no-weather-file.ts';
+import { queueOpening } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 
 type Deps = { readonly db: Knex; readonly storage: OriginalStore };
@@ -44,6 +47,9 @@ export async function openArchive(deps: Deps, key: { teamId: string; archiveId: 
   }
 }
 
+/** So many entries are opened by one job; the next begins with all its tries, so that a large archive does not use them up. */
+const ENTRIES_PER_JOB = 20;
+
 async function receiveMembers(
   deps: Deps,
   archive: ArchiveState,
@@ -51,25 +57,41 @@ async function receiveMembers(
 ): Promise<void> {
   const members = await countZipMembers(file);
   if (!(await setArchiveOpening(deps.db, { ...keyOf(archive), members }))) return;
-  const leftOut: { path: string; why: string }[] = [];
-  let opened = 0;
-  for await (const member of zipMembers({ file, folder, unwanted: whyNoWeatherFile })) {
-    // Somebody may pause or cancel the batch while a large archive is being opened.
-    const state = await findBatchState(deps.db, archive);
-    if (state !== 'running') {
-      if (state === 'paused') await endArchive(deps.db, { ...keyOf(archive), status: 'waiting', problem: null });
-      return;
+  const { nextEntry: from, opened } = archive;
+  const done = { nextEntry: from, opened, leftOut: [...archive.leftOut] };
+  for await (const member of zipMembers({ file, folder, unwanted: whyNoWeatherFile, from })) {
+    if (member.entry > done.nextEntry) {
+      done.nextEntry = member.entry;
+      if (!(await goesOn(deps, archive, done))) return;
+      if (member.entry - from >= ENTRIES_PER_JOB) return await handOn(deps, archive);
     }
-    if (member.kind === 'left out') leftOut.push({ path: member.path, why: member.why });
+    if (member.kind === 'left out') done.leftOut.push({ path: member.path, why: member.why });
     else {
-      opened++;
       await receiveMember(deps, archive, member);
+      done.opened++;
     }
-    if (!(await setArchiveProgress(deps.db, { ...keyOf(archive), opened, leftOut }))) return;
-    await tell(deps.db, archive);
   }
+  done.nextEntry = members;
+  if (!(await goesOn(deps, archive, done))) return;
   await endArchive(deps.db, { ...keyOf(archive), status: 'opened', problem: null });
   await tell(deps.db, archive);
+}
+
+/** Writes down how far the opening is. @returns false when somebody has paused or cancelled it meanwhile */
+async function goesOn(
+  { db }: Deps,
+  archive: ArchiveState,
+  done: { nextEntry: number; opened: number; leftOut: readonly LeftOut[] },
+): Promise<boolean> {
+  const stands = await setArchiveProgress(db, { ...keyOf(archive), ...done });
+  await tell(db, archive);
+  const state = await findBatchState(db, archive);
+  if (state === 'paused') await endArchive(db, { ...keyOf(archive), status: 'waiting', problem: null });
+  return stands && state === 'running';
+}
+
+async function handOn({ db }: Deps, archive: ArchiveState): Promise<void> {
+  await inTransaction(db, (transaction) => queueOpening(transaction, keyOf(archive)));
 }
 
 async function receiveMember(

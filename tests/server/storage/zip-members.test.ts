@@ -64,6 +64,15 @@ describe('a zip archive', () => {
     ]);
   });
 
+  it('is taken up again at any of its entries, without touching those before', async () => {
+    await writeFile(archive(), await zipBytes({ 'a.epw': 'LOCATION,A', 'b.epw': 'LOCATION,B', 'c.epw': 'LOCATION,C' }));
+    const seen: (string | number)[] = [];
+    for await (const { path: name, entry } of zipMembers({ file: archive(), folder, unwanted: () => null, from: 1 })) {
+      seen.push(name, entry);
+    }
+    expect(seen).toEqual(['b.epw', 1, 'c.epw', 2]);
+  });
+
   it('never lays a file outside its folder, whatever the archive calls it', async () => {
     const bytes = await zipBytes({ 'aaaaaaaaa/evil.epw': 'LOCATION' });
     const evil = Buffer.from(bytes.toString('latin1').replaceAll('aaaaaaaaa/', '../../../x'), 'latin1');
