@@ -31,7 +31,7 @@ const epw = demoEpw(0).text;
 /** Files that each read another way: to review, with a question, refused. */
 function contentOf(nth: number): string {
   const own = epw.replace('COMMENTS 1,', `COMMENTS 1,Copy ${nth}. `);
-  if (nth % 3 === 1) return own.replace(/^LOCATION,([^,]*),/, 'LOCATION,$1 without an end,').slice(0, own.length / 2);
+  if (nth % 3 === 1) return own.replace(/(\r\n\d{4},\d+,\d+,\d+,\d+,[^,]*),[^,]*/, '$1,warm');
   return nth % 3 === 2 ? own.replace(/^(LOCATION(?:,[^,]*){8}),[^\r\n]*/, '$1,') : own;
 }
 

@@ -15,10 +15,10 @@ import {
   temperatureUnitOfWords,
 } from './guess-units.ts';
 import { timeReader } from './row-time.ts';
-import { valuesReader } from './row-values.ts';
+import { sampleRows } from './sample-rows.ts';
 import { shapeKey } from './shape-key.ts';
 import { stepMinutes } from './step-minutes.ts';
-import type { SampleRow, TableGuess } from './table-guess.ts';
+import type { TableGuess } from './table-guess.ts';
 import type { TableLayout } from './table-layout.ts';
 import type { TableMapping, TemperatureUnit, TimeScale } from './table-mapping.ts';
 import { isRow, scanTable } from './table-scan.ts';
@@ -27,7 +27,6 @@ import { isRow, scanTable } from './table-scan.ts';
 const FIRST_ROWS = 200;
 const ONE_IN = 37;
 const MOST_SAMPLED = 4_000;
-const SHOWN_ROWS = 10;
 const SHOWN_CELLS = 3;
 
 export function guessTable(text: DecodedText, layout: TableLayout): TableGuess {
@@ -164,30 +163,4 @@ function numberOf(cell: string): number {
 
 function severalIn(cells: readonly (readonly string[])[], index: number): boolean {
   return index >= 0 && new Set(cells.map((row) => row[index])).size > 1;
-}
-
-function sampleRows(text: DecodedText, layout: TableLayout, mapping: TableMapping): readonly SampleRow[] {
-  const [readTime, readValues] = [timeReader(mapping.time.columns, layout), valuesReader(mapping, layout)];
-  const rows: SampleRow[] = [];
-  scanTable(text, layout, (cursor, fields) => {
-    if (rows.length >= SHOWN_ROWS || !isRow(cursor, fields, layout)) return;
-    const stamp = readTime(cursor, fields);
-    const values = readValues(cursor, fields, () => undefined);
-    const known = (value: number) => (Number.isFinite(value) ? value : null);
-    rows.push({
-      line: cursor.line,
-      time: stamp === null ? null : isoTime(stamp.time),
-      dryBulbC: known(values.dryBulbC),
-      dewPointC: known(values.dewPointC),
-      relativeHumidityPct: known(values.relativeHumidityPct),
-      wetBulbC: known(values.wetBulbC),
-      pressurePa: known(values.pressurePa),
-    });
-  });
-  return rows;
-}
-
-function isoTime({ day, hour, minute, month, year }: CivilTime): string {
-  const two = (value: number) => String(value).padStart(2, '0');
-  return `${year}-${two(month)}-${two(day)}T${two(hour)}:${two(minute)}`;
 }

@@ -24,8 +24,18 @@ export function temperatureUnitOfWords(words: string): TemperatureUnit | null {
   return /\b(deg(rees?)?)?[ _]?(c|celsius|centigrade)\b|°\s*c/.test(plain) ? 'C' : null;
 }
 
+/** Codes for a missing temperature that stand among its values; no weather of any unit is so warm by accident. */
+const MISSING_CODES: readonly number[] = [99.9, 999, 999.9, 9999, 9999.9, 99_999];
+
+function withoutCodes(sorted: Float64Array): Float64Array {
+  let end = sorted.length;
+  while (end > 0 && MISSING_CODES.includes(sorted[end - 1] ?? Number.NaN)) end--;
+  return sorted.subarray(0, end);
+}
+
 /** 0.1 to 99.9 % of the values within -60 to 55: °C; a median of 200 to 330: K; over 45, or a maximum of 60 to 135: °F. */
-export function temperatureUnitOfValues(sorted: Float64Array): UnitGuess<TemperatureUnit> {
+export function temperatureUnitOfValues(values: Float64Array): UnitGuess<TemperatureUnit> {
+  const sorted = withoutCodes(values);
   const median = quantile(sorted, 0.5);
   const most = sorted.at(-1) ?? Number.NaN;
   if (median >= 200 && median <= 330) return { unit: 'K', sure: true };

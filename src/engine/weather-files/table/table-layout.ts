@@ -62,7 +62,8 @@ export function findLayout(text: DecodedText): TableLayout | NoLayout {
   if (best === null || best.share < SAME_COUNT_SHARE) return { reason: 'no table', line: 1 };
   const { delimiter, lines } = best;
   const header = headerIndex(lines);
-  return header < 0 ? { reason: 'no table', line: 1 } : layoutFrom(delimiter, lines, header);
+  if (header < 0 || !holdsNumbers(lines)) return { reason: 'no table', line: 1 };
+  return layoutFrom(delimiter, lines, header);
 }
 
 function linesBy(text: DecodedText, separator: number): readonly LookedAt[] {
@@ -100,6 +101,11 @@ function headerIndex(lines: readonly LookedAt[]): number {
     if (after.every((row) => fits(row.cells, cells.length))) return index;
   }
   return -1;
+}
+
+/** A table of hours has numbers; delimiters alone make none. */
+function holdsNumbers(lines: readonly LookedAt[]): boolean {
+  return lines.some(({ cells }) => cells.some(isNumber));
 }
 
 function fits(cells: readonly string[], count: number): boolean {
