@@ -107,7 +107,7 @@ export const importRules: readonly ImportRule[] = [
     may: [
       ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
-      ...['server/jobs/thread-pool.ts', 'server/jobs/rescore-task.ts', 'server/jobs/year-*.ts'],
+      ...['server/jobs/thread-pool.ts', 'server/jobs/web-*.ts', 'server/jobs/year-*.ts'],
       ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
