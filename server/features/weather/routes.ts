@@ -16,6 +16,7 @@ import type { RequestContext } from '../../http/request-context.ts';
 import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.ts';
 import type { DerivingParts } from './derive-from-parent.ts';
 import { deriveWeatherYear } from './derive-weather-year.ts';
+import { DERIVED_FORMAT } from './derived-year-store.ts';
 import { readCursor, writeCursor } from './page-cursor.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
 import { previewDerivedYear } from './preview-derived-year.ts';
@@ -58,7 +59,8 @@ export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): 
 
   mount(router, deps, getOriginal, async ({ params }) => {
     const file = found(await findWeatherFile(db, params));
-    return { body: await deps.storage.get(file.storageKey), fileName: file.name };
+    const fileName = file.format === DERIVED_FORMAT ? `${file.name}.json` : file.name;
+    return { body: await deps.storage.get(file.storageKey), fileName };
   });
 
   mount(router, deps, acceptEndpoint, async ({ params }, request) => {
