@@ -2,7 +2,7 @@ import type { Bench, BenchFinding } from './bench.ts';
 import { growthReadBench, ingestBench } from './definitions/ingest.ts';
 import { rankBench } from './definitions/rank.ts';
 import { readBench } from './definitions/read.ts';
-import { growthBench, rescoreBench } from './definitions/rescore.ts';
+import { growthBench, rescoreBench, rescoreThreadsBench } from './definitions/rescore.ts';
 import { loadBench, sizeBench } from './definitions/station-years.ts';
 import { secondWetBulbBench, wetBulbBench } from './definitions/wet-bulb.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
@@ -14,6 +14,7 @@ export const benches: readonly Bench[] = [
   growthReadBench,
   readBench,
   rescoreBench,
+  rescoreThreadsBench,
   growthBench,
   rankBench,
   loadBench,

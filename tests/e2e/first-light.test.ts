@@ -110,7 +110,7 @@ test('a wrong password is refused without saying which of the two was wrong', as
   expect(watched.forgive(/status of 401.*\/api\/session/)).toBe(1);
 });
 
-test('the whole road: an engineer uploads a file, sees each step, accepts it, and finds its station with a score on the map', async () => {
+test('the whole road: an engineer uploads a file, sees each step, accepts it, derives a warmer year, and finds the station with a score on the map', async () => {
   await enterAs('engineer');
   await mapIsDrawn(page);
   expect(await stationList(page).getByRole('option').count()).toBe(demoStations.length);
@@ -143,12 +143,28 @@ test('the whole road: an engineer uploads a file, sees each step, accepts it, an
   await expectAccessible('weather record in review');
 
   await page.getByRole('button', { name: 'Accept' }).click();
+  await deriveExample('Two kelvin warmer');
   await page.getByRole('link', { name: 'Show on the map' }).click();
   await page.getByRole('heading', { name: SAMPLE, exact: true }).waitFor();
   await expect.poll(() => stationList(page).getByRole('option').count(), SOON).toBe(demoStations.length + 1);
   await expect.poll(() => scoreShown(page), SOON).toBeGreaterThan(0);
   await mapIsDrawn(page);
+  const climates = page.getByRole('region', { name: 'Other climates' });
+  await climates.getByRole('row', { name: /^Derived: Two kelvin warmer/ }).waitFor(SOON);
 });
+
+/** From the record of an accepted year to that of the derived one. */
+async function deriveExample(name: string): Promise<void> {
+  await page.getByRole('link', { name: 'Change the climate' }).click();
+  await page.getByRole('button', { name: /^Example/ }).click();
+  await page.getByText('Dry bulb +2.0 K in every month, days not stretched, humidity ratio kept.').waitFor(SOON);
+  await expectAccessible('change of climate');
+  await page.getByRole('textbox', { name: 'Name of the derived year' }).fill(name);
+  await page.getByRole('button', { name: 'Save as a derived year' }).click();
+  await page.getByRole('heading', { name: `${SAMPLE}, derived year`, level: 1 }).waitFor();
+  await page.getByRole('heading', { name: 'Derived, beside its parent' }).waitFor();
+  await expectAccessible('derived year');
+}
 
 test('a file that is there already is recognised and not stored again', async () => {
   await enterAs('engineer');

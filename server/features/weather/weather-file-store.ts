@@ -21,6 +21,7 @@ export interface WeatherFileState {
   readonly partIndex: number;
   readonly part: string;
   readonly answers: FileAnswers;
+  readonly format: string | null;
   readonly status: FileStatus;
   readonly step: ReadingStep | null;
   readonly failure: string | null;
@@ -35,7 +36,7 @@ const STATE_COLUMNS = `
   weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId",
   weather_files.bytes::double precision as bytes, weather_files.uploaded_by as "uploadedBy",
   weather_files.uploaded_at as "uploadedAt", weather_files.part_index as "partIndex", weather_files.part,
-  weather_files.answers, weather_files.status, weather_files.step, weather_files.failure,
+  weather_files.answers, weather_files.format, weather_files.status, weather_files.step, weather_files.failure,
   weather_files.station_id as "stationId", weather_files.declared_station as "declaredStation", weather_files.asks,
   weather_files.shape_key as "shapeKey"`;
 

@@ -1,5 +1,5 @@
 import { hundredths } from '../conventions.ts';
-import { ValueCounts } from './value-counts.ts';
+import { countValues, meanCompanion, valuesDownwards } from './value-counts.ts';
 
 /** Shares of the hours of a year, %. */
 export const DESIGN_PERCENTS = [0.4, 1, 2, 5, 10] as const;
@@ -65,12 +65,13 @@ function hundredthsColumn(column: Float64Array): Int32Array {
 }
 
 function designRows(quantity: Int32Array, coincident: Int32Array): readonly DesignRow[] {
-  const counts = new ValueCounts(quantity, UNKNOWN + 1, coincident);
+  const counts = countValues(quantity, UNKNOWN + 1, coincident);
   if (counts.known === 0) return [];
-  const values = counts.downwards(DESIGN_PERCENTS.map((percent) => placeAtPercent(percent, counts.known)));
+  const places = DESIGN_PERCENTS.map((percent) => placeAtPercent(percent, counts.known));
+  const values = valuesDownwards(counts, places);
   return DESIGN_PERCENTS.map((percent, index) => {
     const value = values[index] ?? Number.NaN;
-    const coincidentMean = counts.meanCompanion(value, COINCIDENT_WITHIN_HUNDREDTHS);
+    const coincidentMean = meanCompanion(counts, value, COINCIDENT_WITHIN_HUNDREDTHS);
     return { percent, valueC: value / 100, coincidentC: Math.round(coincidentMean) / 100 };
   });
 }

@@ -133,7 +133,9 @@ export function bytesOf16(values: Int16Array | Uint16Array): Uint8Array {
 
 /** Little-endian bytes as unsigned 16-bit values. */
 export function uint16FromBytes(bytes: Uint8Array): Uint16Array {
-  return Uint16Array.from({ length: bytes.length >> 1 }, (_none, index) => unsigned16(bytes, index));
+  const values = new Uint16Array(bytes.length >> 1);
+  for (let index = 0; index < values.length; index++) values[index] = unsigned16(bytes, index);
+  return values;
 }
 
 function unsigned16(bytes: Uint8Array, index: number): number {
@@ -153,7 +155,8 @@ export function packedFromBytes(bytes: PackedBytes): PackedYear {
     );
   }
   return {
-    dryBulb: Int16Array.from(uint16FromBytes(bytes.dryBulb), (value) => (value > MOST_INT16 ? value - 65_536 : value)),
+    // The same 16 bits, with a sign.
+    dryBulb: new Int16Array(uint16FromBytes(bytes.dryBulb).buffer),
     humidityRatio: uint16FromBytes(bytes.humidityRatio),
     pressure: uint16FromBytes(bytes.pressure),
     flags: Uint8Array.from(bytes.flags),

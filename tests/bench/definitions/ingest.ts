@@ -12,7 +12,7 @@ import { epwBytes, plainHour } from '../../support/epw-text.ts';
 import type { Bench } from '../bench.ts';
 import { growthExponent, processorMs, sideBySide } from '../side-by-side.ts';
 
-const OUR_FILES = 8;
+const OUR_FILES = 20;
 const PLAIN_FILES = 1;
 const HEADER_LINES = 8;
 const DRY_BULB = 6;

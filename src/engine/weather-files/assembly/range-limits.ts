@@ -17,12 +17,7 @@ function leaveOut(
   findings: FindingList,
 ): void {
   const { column, name, limits, steps } = input;
-  const outside = new Uint8Array(column.length);
-  for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    if (value < limits.low || value > limits.high) outside[step] = 1;
-  }
-  forEachRun(outside, (start, end) => {
+  forEachRun(markOutside(column, limits), (start, end) => {
     const values = column.subarray(start, end);
     const worst = values.reduce((far, value) => (Math.abs(value) > Math.abs(far) ? value : far), 0);
     const { first, last } = linesOfRun(steps.lines, start, end);
@@ -37,4 +32,13 @@ function leaveOut(
     });
     values.fill(Number.NaN);
   });
+}
+
+function markOutside(column: Float64Array, limits: { low: number; high: number }): Uint8Array {
+  const marks = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (value < limits.low || value > limits.high) marks[step] = 1;
+  }
+  return marks;
 }
