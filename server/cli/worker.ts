@@ -1,5 +1,6 @@
 import { jsonLinesLog } from '../log.ts';
 import { createFolderStore } from '../storage/folder-store.ts';
+import { shippedRelief } from '../tiles/relief.ts';
 import { startWorker } from '../worker.ts';
 import type { Command } from './command.ts';
 import { untilAborted } from './until-aborted.ts';
@@ -12,7 +13,7 @@ export const run: Command = async ({ signal }) => {
     (line) => void process.stderr.write(line),
     () => new Date(),
   );
-  const worker = await startWorker({ databaseUrl, storage: createFolderStore(originalsDir), log });
+  const worker = await startWorker({ databaseUrl, storage: createFolderStore(originalsDir), relief: shippedRelief(), log });
   await untilAborted(signal);
   await worker.close();
   return 0;
