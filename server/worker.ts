@@ -1,3 +1,4 @@
+import type { Relief } from '#engine/weather-files/relief.ts';
 import { connect } from './db/connection.ts';
 import { judgeStoredYear } from './features/runs/judge-year.ts';
 import { queueMissingRuns } from './features/runs/queue-runs.ts';
@@ -18,6 +19,7 @@ import type { OriginalStore } from './storage/original-store.ts';
 export interface WorkerOptions {
   readonly databaseUrl: string;
   readonly storage: OriginalStore;
+  readonly relief: Relief;
   readonly log: Log;
 }
 
@@ -25,7 +27,7 @@ const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
-  const { databaseUrl, storage, log } = options;
+  const { databaseUrl, storage, relief, log } = options;
   const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
   try {
     await queueMissingRuns(db);
@@ -35,7 +37,7 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       log,
       tasks: {
         'read-weather-file': {
-          run: (file) => readStoredFile({ db, storage }, file),
+          run: (file) => readStoredFile({ db, storage, relief }, file),
           dead: (file) => noteReadingFailure(db, file),
         },
         'open-weather-archive': {

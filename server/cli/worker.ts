@@ -13,7 +13,12 @@ export const run: Command = async ({ signal }) => {
     (line) => void process.stderr.write(line),
     () => new Date(),
   );
-  const worker = await startWorker({ databaseUrl, storage: createFolderStore(originalsDir), relief: shippedRelief(), log });
+  const worker = await startWorker({
+    databaseUrl,
+    storage: createFolderStore(originalsDir),
+    relief: shippedRelief(),
+    log,
+  });
   await untilAborted(signal);
   await worker.close();
   return 0;

@@ -19,6 +19,7 @@ import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { readStoredFile } from '../../server/features/weather/read-stored-file.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
+import { shippedRelief } from '../../server/tiles/relief.ts';
 import { startWeb } from '../../server/web.ts';
 import { demoEpw } from '../support/demo-epw.ts';
 import { keepLog } from '../support/quiet-log.ts';
@@ -80,7 +81,7 @@ async function fill(): Promise<{ teamId: string; programmeId: string }> {
     await writeFile(file, text);
     const from = { teamId: team.teamId, personId };
     const fileId = await receiveFromDisk(deps, { ...from, file });
-    await readStoredFile(deps, { teamId: team.teamId, fileId });
+    await readStoredFile({ ...deps, relief: shippedRelief() }, { teamId: team.teamId, fileId });
     await acceptAs(deps, { ...from, fileId });
   }
   await cloneStationYears(ownerDb, { teamId: team.teamId, stations: stations - CLIMATES });

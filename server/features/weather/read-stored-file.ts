@@ -3,6 +3,7 @@ import type { Knex } from 'knex';
 import type { ReadingStep } from '#contract/weather.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
+import type { Relief } from '#engine/weather-files/relief.ts';
 import type { RefusedReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
@@ -18,7 +19,7 @@ import { findWeatherFile, setReadingStep, type WeatherFileState } from './weathe
  * file that is no longer being read is left alone.
  */
 export async function readStoredFile(
-  deps: { db: Knex; storage: OriginalStore },
+  deps: { db: Knex; storage: OriginalStore; relief: Relief },
   key: { teamId: string; fileId: string },
 ): Promise<void> {
   const file = await findWeatherFile(deps.db, key);
@@ -28,7 +29,9 @@ export async function readStoredFile(
   await enterStep(deps.db, file, 'reading');
   const content = await contentOf(await originalOf(deps.storage, file));
   const reading =
-    content instanceof GzipProblem ? unreadable(content) : readWeatherFile(content, file.name.replace(/\.gz$/i, ''));
+    content instanceof GzipProblem
+      ? unreadable(content)
+      : readWeatherFile(content, file.name.replace(/\.gz$/i, ''), { relief: deps.relief });
   if (reading.status === 'refused' || reading.hours === null) {
     return await storeReading(deps.db, file, { reading, reduced: null });
   }

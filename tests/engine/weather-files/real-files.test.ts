@@ -1,11 +1,10 @@
-import { fileURLToPath } from 'node:url';
 import { describe, expect, test } from 'vitest';
 import { type ReducedYear, reduceYear } from '#engine/reduction/reduce-year.ts';
 import type { FindingCode } from '#engine/weather-files/finding.ts';
 import { ruleNames } from '#engine/weather-files/quality/quality-options.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
 import type { UsableReading } from '#engine/weather-files/weather-file-reading.ts';
-import { openRelief } from '../../../server/tiles/relief.ts';
+import { shippedRelief } from '../../../server/tiles/relief.ts';
 import { readTruth, truthOf } from '../../support/ground-truth.ts';
 import { realFile, sharedFolder, WITHOUT_SHARED } from '../../support/shared.ts';
 
@@ -24,7 +23,7 @@ const columns = ['WB_mean', 'h_dep_ge4', 'h_dep_ge8', 'h_dep_ge11', 'WB_0.4pct',
 
 const truth = readTruth();
 
-const relief = openRelief(fileURLToPath(new URL('../../../data/relief/relief.bin', import.meta.url)));
+const relief = shippedRelief();
 
 /** The year of a file without any test of its hours but the range and the pressure. */
 function asItStands(file: string): ReducedYear {
