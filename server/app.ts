@@ -12,7 +12,6 @@ import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
-import type { RescoreThreads } from './features/runs/rescore.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
 import { findToken } from './features/teams/find-token.ts';
@@ -27,7 +26,7 @@ import { health } from './http/health.ts';
 import { originGuard } from './http/origin-guard.ts';
 import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
-import { makeThreadPool } from './jobs/thread-pool.ts';
+import { makeWebThreadsOf, type WebThreads } from './jobs/web-threads.ts';
 import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
@@ -40,9 +39,9 @@ const HEARTBEAT_MS = 15_000;
 const MOST_THREADS = 8;
 
 /** Threads that judge for the web process, which itself never does; the caller closes them. */
-export function makeWebThreads(): RescoreThreads {
+export function makeWebThreads(): WebThreads {
   const threads = Math.min(availableParallelism(), MOST_THREADS);
-  return makeThreadPool({ entry: new URL('./web-thread.ts', import.meta.url), threads });
+  return makeWebThreadsOf({ entry: new URL('./web-thread.ts', import.meta.url), threads });
 }
 
 /** One thread more for what concerns a single year, so that no slider waits for a table of hours; the caller closes it. */
@@ -51,7 +50,7 @@ export function makeWebYearThread(): YearThread {
 }
 
 export interface AppThreads {
-  readonly threads: RescoreThreads;
+  readonly threads: WebThreads;
   readonly yearThread: YearThread;
 }
 
@@ -85,7 +84,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
   weatherRoutes(router, deps, { findOrMakeStation, queueRuns, yearThread });
-  briefsRoutes(router, deps, { queueRunsOfVersion });
+  briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, { threads, yearThread, readDraft });
   methodRoutes(router, deps);
   teamsRoutes(router, deps);

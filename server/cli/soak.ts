@@ -1,7 +1,7 @@
 import { randomInt } from 'node:crypto';
 import type { Command } from './command.ts';
 import { requirePackages } from './packages.ts';
-import { runSuites } from './test-suites.ts';
+import { runLanes, suiteStep } from './test-suites.ts';
 import { closingLine } from './test-tally.ts';
 
 const LARGEST_SEED = 2 ** 31 - 1;
@@ -15,7 +15,8 @@ export const run: Command = async (context) => {
   const seed = process.env.SOAK_SEED ?? String(randomInt(LARGEST_SEED));
   process.stdout.write(`seed ${seed}: SOAK_SEED=${seed} npm run soak tries the same samples again\n`);
   const env = { SOAK: '1', SOAK_SEED: seed };
-  const total = await runSuites({ context, names: ['unit', 'server'], env, patient: true });
+  const lane = (['unit', 'server'] as const).map((name) => suiteStep(name, { context, env, patient: true }));
+  const total = await runLanes([lane], context.signal);
   if (context.signal.aborted) return 1;
   process.stdout.write(`${closingLine(total)}\n`);
   return total.failed === 0 ? 0 : 1;

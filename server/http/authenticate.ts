@@ -53,7 +53,7 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     return personId === undefined || roles === null ? signedOut : { kind: 'person', personId, roles };
   };
 
-  const identifyToken: RequestHandler = async (request, response, next) => {
+  const identifyToken: RequestHandler = async (request, _response, next) => {
     if (!isBearer(request)) return next();
     refuseTwoIdentities(request);
     const token = bearerToken(request);

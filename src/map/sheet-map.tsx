@@ -8,7 +8,10 @@ import { boxAround } from './fit-stations.ts';
 import { GraticuleLayer } from './graticule-layer.tsx';
 import { ITALIC, mapFonts, ROMAN } from './map-fonts.ts';
 import { MARGIN, Neatline } from './neatline.tsx';
+import { NOTHING, type Pixels, paintPixels } from './paint-pixels.ts';
 import type { UnitSystem } from './scale-bar.ts';
+import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
+import { SHEET_EDGE } from './sheet-edges.ts';
 import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
 import { sheetStyle } from './sheet-style.ts';
 import { StationKeys } from './station-keys.tsx';
@@ -95,6 +98,7 @@ export function SheetMap(props: SheetMapProps) {
             <GraticuleLayer map={map} />
             {children}
             <StationLayers stations={stations} chosenId={chosenId} pointedId={pointedId} />
+            <SheetEdgeLayer map={map} />
           </MapView>
           <StationKeys stations={stations} chosenId={chosenId} onChoose={onChoose} onPoint={pointByKey} />
           <ZoomButtons onIn={() => map?.zoomIn()} onOut={() => map?.zoomOut()} onAll={fitAll} />
@@ -188,14 +192,19 @@ function usePictures(map: maplibregl.Map | null) {
     if (map === null) return;
     const pixelRatio = Math.max(2, window.devicePixelRatio);
     map.setMissingStyleImageResolver(async (name) => {
-      const mark = markNamed(name);
-      const picture = mark === null ? drawTownDot(name, pixelRatio) : drawMark(mark, pixelRatio);
+      const picture = pictureOf(name, pixelRatio);
       if (picture !== null && !map.hasImage(name)) map.addImage(name, picture, { pixelRatio });
     });
     return () => {
       map.setMissingStyleImageResolver(null);
     };
   }, [map]);
+}
+
+function pictureOf(name: string, pixelRatio: number): Pixels | null {
+  if (name === SHEET_EDGE) return paintPixels({ sizePx: 1, pixelRatio }, () => NOTHING);
+  const mark = markNamed(name);
+  return mark === null ? drawTownDot(name, pixelRatio) : drawMark(mark, pixelRatio);
 }
 
 /** `data-idle` stands on the sheet while everything asked for is drawn: what a test waits for. */

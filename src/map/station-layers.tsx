@@ -1,4 +1,4 @@
-import type { ExpressionSpecification, FilterSpecification } from 'maplibre-gl';
+import type { ExpressionSpecification, FilterSpecification, SymbolLayerSpecification } from 'maplibre-gl';
 import { useMemo } from 'react';
 import { Layer, Source } from 'react-map-gl/maplibre';
 import type { MapStation } from '../contract/runs.ts';
@@ -14,6 +14,18 @@ const NOBODY = '';
 /** With more stations than this, names wait until the map is near enough to have room for them. */
 const MOST_NAMED = 300;
 const NAMES_FROM_ZOOM = 5;
+
+/** Where a name may stand beside its mark, the best first; the corners find room at the frame and in a crowd. */
+const SIDES: NonNullable<NonNullable<SymbolLayerSpecification['layout']>['text-variable-anchor']> = [
+  'left',
+  'right',
+  'top',
+  'bottom',
+  'bottom-left',
+  'top-left',
+  'bottom-right',
+  'top-right',
+];
 
 type StationLayersProps = {
   readonly stations: readonly MapStation[];
@@ -65,7 +77,7 @@ export function StationLayers({ stations, chosenId, pointedId }: StationLayersPr
           'text-field': nameAndFigure,
           'text-font': [ROMAN],
           'text-size': 12.5,
-          'text-variable-anchor': ['left', 'right', 'top', 'bottom'],
+          'text-variable-anchor': SIDES,
           'text-radial-offset': 1.15,
           'text-justify': 'auto',
           'text-line-height': 1.1,
@@ -93,7 +105,7 @@ export function StationLayers({ stations, chosenId, pointedId }: StationLayersPr
           'text-field': nameAndFigure,
           'text-font': [MEDIUM],
           'text-size': 14,
-          'text-variable-anchor': ['left', 'right', 'top', 'bottom'],
+          'text-variable-anchor': SIDES,
           'text-radial-offset': 1.2,
           'text-justify': 'auto',
           'text-line-height': 1.1,

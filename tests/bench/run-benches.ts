@@ -1,10 +1,25 @@
 import type { Bench, BenchFinding } from './bench.ts';
-import { ingestBench } from './definitions/ingest.ts';
-import { growthBench, rescoreBench } from './definitions/rescore.ts';
+import { growthReadBench, ingestBench } from './definitions/ingest.ts';
+import { rankBench } from './definitions/rank.ts';
+import { readBench } from './definitions/read.ts';
+import { growthBench, rescoreBench, rescoreThreadsBench } from './definitions/rescore.ts';
+import { loadBench, sizeBench } from './definitions/station-years.ts';
 import { secondWetBulbBench, wetBulbBench } from './definitions/wet-bulb.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
 
-export const benches: readonly Bench[] = [wetBulbBench, secondWetBulbBench, ingestBench, rescoreBench, growthBench];
+export const benches: readonly Bench[] = [
+  wetBulbBench,
+  secondWetBulbBench,
+  ingestBench,
+  growthReadBench,
+  readBench,
+  rescoreBench,
+  rescoreThreadsBench,
+  growthBench,
+  rankBench,
+  loadBench,
+  sizeBench,
+];
 
 /** Less of the machine left idle by others than this, and a gate that is missed says nothing. */
 const QUIET_SHARE = 0.9;

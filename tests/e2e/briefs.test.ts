@@ -19,8 +19,7 @@ let watched: WatchedPage;
 let page: Page;
 
 beforeAll(async () => {
-  product = await startProduct();
-  await product.seed();
+  product = await startProduct('demo');
   browser = await launchBrowser();
 }, 300_000);
 
@@ -76,6 +75,13 @@ test('a planner makes a brief from the clinic preset, sees what a cooler room do
   expect(await temperature.inputValue()).toBe('26');
   await temperature.fill('99');
   await page.getByText('A number from -50 to 60 °C is needed, not 99.').waitFor();
+  await page.getByRole('button', { name: 'Add a site question' }).click();
+  await page.getByText('2 faults to mend before it can be saved.').waitFor();
+  await page
+    .getByRole('list', { name: 'Fields at fault' })
+    .getByRole('button', { name: 'Site questions, row 2' })
+    .click();
+  await page.keyboard.type('a quiet fan for the neighbours');
   await page.getByText('1 fault to mend before it can be saved.').waitFor();
   await expectAccessible('brief editor with a fault');
 
@@ -85,14 +91,29 @@ test('a planner makes a brief from the clinic preset, sees what a cooler room do
     .waitFor(SOON);
   const draft = await effectScore();
   expect(draft).toBeLessThan(before);
-  await page.getByText('1 field changed against version 1.').waitFor();
+  await page.getByText('2 fields changed against version 1.').waitFor();
+  const parts = page.getByRole('table', { name: /^Score arithmetic/ });
+  await expect
+    .poll(async () => await parts.getByRole('row').last().textContent(), SOON)
+    .toContain(`printed as ${draft}`);
+
+  // Left by a link, by Back and by loading anew, the draft is there again; nothing is asked.
+  await page.getByRole('link', { name: 'Method', exact: true }).click();
+  await page.getByRole('heading', { name: 'Method', level: 1 }).waitFor();
+  await page.goBack();
+  await page.getByText(/^This is your draft of .*, kept on this device and not saved\.$/).waitFor();
+  await page.reload();
+  await page.getByText('2 fields changed against version 1.').waitFor();
+  expect(await temperature.inputValue()).toBe('23.5');
 
   await page.getByRole('button', { name: 'Save version 2' }).click();
   await page.getByText('Version 2 is saved.').waitFor(SOON);
   const versions = page.getByRole('table', { name: 'Versions of the brief, newest first' });
   await versions.getByRole('row', { name: /^Version 2/ }).waitFor();
   const difference = page.getByRole('table', { name: 'From version 1 to version 2' });
-  expect(await difference.getByRole('row').last().textContent()).toMatch(/Room temperature\s*26 °C\s*23\.5 °C/);
+  const changed = difference.getByRole('row', { name: /Room temperature\s*26 °C\s*23\.5 °C/ });
+  await changed.waitFor(SOON);
+  expect(await page.getByText('kept on this device').count()).toBe(0);
   await expectAccessible('saved brief');
 
   const name = (await effect().getByLabel('Effect at').locator('option:checked').textContent()) ?? '';

@@ -28,8 +28,7 @@ let watched: WatchedPage;
 let page: Page;
 
 beforeAll(async () => {
-  product = await startProduct();
-  await product.seed();
+  product = await startProduct('demo');
   accounts = await readDemoAccounts(product.demoAccountsPath);
   browser = await launchBrowser();
 }, 300_000);
@@ -68,7 +67,14 @@ async function enterAs(role: Role): Promise<void> {
   await signIn(page, account(role));
 }
 
+/** By the top bar, where the pages of a narrow screen stand behind a menu. */
 async function openWeather(): Promise<void> {
+  const menu = page.getByRole('button', { name: 'Menu', exact: true });
+  if (await menu.isVisible()) {
+    await menu.focus();
+    await page.keyboard.press('Enter');
+    await expectAccessible('menu');
+  }
   await page.getByRole('link', { name: 'Weather', exact: true }).click();
   await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
 }
@@ -104,7 +110,7 @@ test('a wrong password is refused without saying which of the two was wrong', as
   expect(watched.forgive(/status of 401.*\/api\/session/)).toBe(1);
 });
 
-test('the whole road: an engineer uploads a file, sees each step, accepts it, and finds its station with a score on the map', async () => {
+test('the whole road: an engineer uploads a file, sees each step, accepts it, derives a warmer year, and finds the station with a score on the map', async () => {
   await enterAs('engineer');
   await mapIsDrawn(page);
   expect(await stationList(page).getByRole('option').count()).toBe(demoStations.length);
@@ -137,12 +143,28 @@ test('the whole road: an engineer uploads a file, sees each step, accepts it, an
   await expectAccessible('weather record in review');
 
   await page.getByRole('button', { name: 'Accept' }).click();
+  await deriveExample('Two kelvin warmer');
   await page.getByRole('link', { name: 'Show on the map' }).click();
   await page.getByRole('heading', { name: SAMPLE, exact: true }).waitFor();
   await expect.poll(() => stationList(page).getByRole('option').count(), SOON).toBe(demoStations.length + 1);
   await expect.poll(() => scoreShown(page), SOON).toBeGreaterThan(0);
   await mapIsDrawn(page);
+  const climates = page.getByRole('region', { name: 'Other climates' });
+  await climates.getByRole('row', { name: /^Derived: Two kelvin warmer/ }).waitFor(SOON);
 });
+
+/** From the record of an accepted year to that of the derived one. */
+async function deriveExample(name: string): Promise<void> {
+  await page.getByRole('link', { name: 'Change the climate' }).click();
+  await page.getByRole('button', { name: /^Example/ }).click();
+  await page.getByText('Dry bulb +2.0 K in every month, days not stretched, humidity ratio kept.').waitFor(SOON);
+  await expectAccessible('change of climate');
+  await page.getByRole('textbox', { name: 'Name of the derived year' }).fill(name);
+  await page.getByRole('button', { name: 'Save as a derived year' }).click();
+  await page.getByRole('heading', { name: `${SAMPLE}, derived year`, level: 1 }).waitFor();
+  await page.getByRole('heading', { name: 'Derived, beside its parent' }).waitFor();
+  await expectAccessible('derived year');
+}
 
 test('a file that is there already is recognised and not stored again', async () => {
   await enterAs('engineer');
@@ -316,6 +338,7 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
   await signIn(page, account('viewer'));
   await mapIsDrawn(page);
   await expectNoSidewaysScroll('map');
+  expect((await page.getByRole('banner').boundingBox())?.height).toBeLessThanOrEqual(56);
 
   const sheet = page.getByRole('region', { name: 'Stations panel' });
   const low = await sheet.boundingBox();

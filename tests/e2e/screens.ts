@@ -42,6 +42,8 @@ try {
     await choosePlace(page, place);
     await mapIsDrawn(page);
     await take('place');
+    const menu = page.getByRole('button', { name: 'Menu', exact: true });
+    if (await menu.isVisible()) await menu.click();
     await page.getByRole('link', { name: 'Weather', exact: true }).click();
     await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
     await page.getByRole('table').first().waitFor();

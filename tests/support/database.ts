@@ -1,4 +1,8 @@
 /** Vitest's global set-up of the suites that need PostgreSQL: one cluster, one migrated template that each test clones. */
+import { mkdtempSync } from 'node:fs';
+import { rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
 import pg from 'pg';
 import type { TestProject } from 'vitest/node';
 import { type DatabaseServer, databaseUrl, prepareDatabase } from '../../server/db/prepare-database.ts';
@@ -9,6 +13,8 @@ export const TEMPLATE_DATABASE = 'muslin_template';
 declare module 'vitest' {
   interface ProvidedContext {
     databaseServer: DatabaseServer;
+    /** A folder of this run, for what its files make once and share. */
+    sharedDir: string;
   }
 }
 
@@ -26,6 +32,11 @@ export default async function setUp(project: TestProject): Promise<() => Promise
     await cluster.stop();
     throw error;
   }
+  const sharedDir = mkdtempSync(path.join(tmpdir(), 'muslin-shared-'));
   project.provide('databaseServer', cluster.server);
-  return () => cluster.stop();
+  project.provide('sharedDir', sharedDir);
+  return async () => {
+    await cluster.stop();
+    await rm(sharedDir, { recursive: true, force: true });
+  };
 }

@@ -3,7 +3,6 @@ import { mkdirSync, mkdtempSync } from 'node:fs';
 import { rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
-import { seedDemo } from '../../server/builders/seed-demo.ts';
 import { buildClient } from '../../server/cli/build-client.ts';
 import { keepWorkerRunning } from '../../server/cli/worker-process.ts';
 import { connect } from '../../server/db/connection.ts';
@@ -12,6 +11,7 @@ import { openTeamFeed } from '../../server/jobs/team-feed.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
 import { startWeb } from '../../server/web.ts';
 import { type KeptLog, keepLog } from './quiet-log.ts';
+import { demoHomeIn, makeDemoDatabase } from './seeded-demo.ts';
 import { makeTestDatabase } from './test-database.ts';
 
 const ROOT = path.resolve(import.meta.dirname, '../..');
@@ -22,20 +22,19 @@ export interface RunningProduct {
   readonly demoAccountsPath: string;
   /** What the server wrote about itself. */
   readonly log: KeptLog;
-  /** The demo, through the main road. */
-  seed(): Promise<void>;
   close(): Promise<void>;
 }
 
-export async function startProduct(): Promise<RunningProduct> {
+/** @param holding 'demo' for a product that has been seeded, through the main road, once for all files of the run */
+export async function startProduct(holding: 'nothing' | 'demo' = 'nothing'): Promise<RunningProduct> {
   const { dir: clientDir } = await buildClient(ROOT);
-  const database = await makeTestDatabase();
   const home = mkdtempSync(path.join(tmpdir(), 'muslin-e2e-'));
+  const database = holding === 'demo' ? await makeDemoDatabase(home) : await makeTestDatabase();
   const uploadsDir = path.join(home, 'uploads');
-  mkdirSync(uploadsDir);
+  mkdirSync(uploadsDir, { recursive: true });
   const log = keepLog();
   const { databaseUrl } = database;
-  const originalsDir = path.join(home, 'originals');
+  const { originalsDir, demoAccountsPath } = demoHomeIn(home);
   const db = connect({ databaseUrl });
   const feed = await openTeamFeed({ databaseUrl, log });
   const deps: Deps = {
@@ -56,13 +55,11 @@ export async function startProduct(): Promise<RunningProduct> {
     config: { home: null, host: '127.0.0.1', port: 0, seed: 'none', trustProxy: 'loopback' },
     deps,
   });
-  const demoAccountsPath = path.join(home, 'demo-accounts.txt');
   return {
     origin: web.url,
     deps,
     demoAccountsPath,
     log,
-    seed: () => seedDemo({ deps, demoAccountsPath, log: () => undefined }),
     async close() {
       await web.close();
       await worker.stop();

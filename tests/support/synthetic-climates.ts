@@ -187,8 +187,21 @@ function startWeather(seed: number): (slot: number) => Weather {
   };
 }
 
-/** A year of a climate, packed as a read one would be: the same seed, the same year. */
-export function climateYear(climate: Climate, seed = 20_291): WeatherYear {
+const SEED = 20_291;
+const made = new Map<Climate, WeatherYear>();
+
+/**
+ * A year of a climate, packed as a read one would be: the same seed, the same year. Without a seed it is the very same object,
+ * which nobody may change, so that the wet bulbs that the engine keeps beside a year are found once for all briefs.
+ */
+export function climateYear(climate: Climate, seed?: number): WeatherYear {
+  if (seed !== undefined) return makeYear(climate, seed);
+  const year = made.get(climate) ?? makeYear(climate, SEED);
+  made.set(climate, year);
+  return year;
+}
+
+function makeYear(climate: Climate, seed: number): WeatherYear {
   const weatherAt = startWeather(seed + climates.indexOf(climate));
   return syntheticYear({
     at: (slot) => hourOf(climate, slot, weatherAt(slot)),

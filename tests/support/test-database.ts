@@ -20,7 +20,8 @@ export interface TestDatabase {
   drop(): Promise<void>;
 }
 
-async function asSuperuser(statement: string): Promise<void> {
+/** Runs one statement as the superuser, outside every database of a test. */
+export async function asSuperuser(statement: string): Promise<void> {
   const { superuser, port } = inject('databaseServer');
   const admin = new pg.Client({ connectionString: databaseUrl({ login: superuser, port, database: 'postgres' }) });
   await admin.connect();
@@ -31,11 +32,11 @@ async function asSuperuser(statement: string): Promise<void> {
   }
 }
 
-/** A database of its own for a test file: a clone of the migrated template, empty of rows. */
-export async function makeTestDatabase(): Promise<TestDatabase> {
+/** A database of its own for a test file: a clone of the migrated template, empty of rows, or of another template. */
+export async function makeTestDatabase(template = TEMPLATE_DATABASE): Promise<TestDatabase> {
   const { port, ownerPassword, appPassword } = inject('databaseServer');
   const database = `test_${randomBytes(6).toString('hex')}`;
-  await asSuperuser(`create database ${database} template ${TEMPLATE_DATABASE} owner ${OWNER_LOGIN}`);
+  await asSuperuser(`create database ${database} template ${template} owner ${OWNER_LOGIN}`);
   const appUrl = databaseUrl({ login: { name: APP_LOGIN, password: appPassword }, port, database });
   const ownerUrl = databaseUrl({ login: { name: OWNER_LOGIN, password: ownerPassword }, port, database });
   const db = knex({ client: 'pg', connection: appUrl, pool: { min: 0, max: 6 } });

@@ -1,15 +1,20 @@
 import type { Knex } from 'knex';
 import type { BriefPreview } from '#contract/briefs.ts';
-import { judgeYear } from '#engine/run/judge-year.ts';
 import { AppError } from '../../http/app-error.ts';
+import type { WebThreads } from '../../jobs/web-threads.ts';
 import { readPackedYear } from '../weather/packed-year-read-model.ts';
 import { findExampleYear } from './example-year-read-model.ts';
 import { readDraft } from './read-draft.ts';
 
+export interface PreviewParts {
+  readonly db: Knex;
+  readonly threads: Pick<WebThreads, 'preview'>;
+}
+
 /** Judges one year of a station by a draft, by the same function that a saved run is made by; stores nothing. */
 export async function previewBrief(
-  db: Knex,
-  asked: { teamId: string; programmeId: string; stationId: string; draft: unknown },
+  { db, threads }: PreviewParts,
+  asked: { teamId: string; programmeId: string; stationId: string; draft: unknown; signal: AbortSignal },
 ): Promise<BriefPreview> {
   const { teamId, programmeId, stationId } = asked;
   const example = await findExampleYear(db, { teamId, programmeId, stationId });
@@ -19,7 +24,8 @@ export async function previewBrief(
     throw new AppError('not_found', 'There is no such station with an accepted weather year in this team.');
   const brief = readDraft(asked.draft);
   const { zone, elevationM: heightM, latitude, longitude } = example;
-  const result = judgeYear({ year, brief, zone, heightM, position: { latitude, longitude } });
+  const task = { year, brief, zone, heightM, position: { latitude, longitude } };
+  const result = await threads.preview(task, asked.signal);
   return {
     station: { id: example.stationId, name: example.stationName },
     kind: year.kind,

@@ -18,7 +18,7 @@ import type { RequestContext } from '../../http/request-context.ts';
 import { type BriefAct, type BriefParts, makeBrief } from './make-brief.ts';
 import { presentPreset, presentVersion, presentVersionRecord } from './present-brief.ts';
 import { presetBrief, presetNames } from './presets.ts';
-import { previewBrief } from './preview-brief.ts';
+import { type PreviewParts, previewBrief } from './preview-brief.ts';
 import { saveBriefVersion } from './save-brief-version.ts';
 import {
   findVersion,
@@ -32,7 +32,7 @@ const methodVersion = METHOD_VERSION;
 
 type VersionKey = { teamId: string; programmeId: string; briefId: string; version: number };
 
-export function briefsRoutes(router: Router, deps: Deps, parts: BriefParts): void {
+export function briefsRoutes(router: Router, deps: Deps, parts: BriefParts & Pick<PreviewParts, 'threads'>): void {
   const { db } = deps;
   const versionOf = async (key: VersionKey) => found(await findVersion(db, { ...key, methodVersion }));
 
@@ -76,8 +76,8 @@ export function briefsRoutes(router: Router, deps: Deps, parts: BriefParts): voi
     return { version: presentVersion(await versionOf({ ...params, version: saved.version })), made: saved.made };
   });
 
-  mount(router, deps, previewEndpoint, async ({ params, body: { stationId, body: draft } }) =>
-    previewBrief(db, { ...params, stationId, draft }),
+  mount(router, deps, previewEndpoint, async ({ params, body: { stationId, body: draft } }, { signal }) =>
+    previewBrief({ db, threads: parts.threads }, { ...params, stationId, draft, signal }),
   );
 }
 

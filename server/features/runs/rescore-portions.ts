@@ -1,5 +1,5 @@
 /** How the years of a team are parted: batches that fit into memory, then portions that threads take one after another. */
-import type { StationToRescore } from '../../jobs/rescore-task.ts';
+import type { StationToRescore } from '../../jobs/web-task.ts';
 import { bytesOfYear, type YearToRescore } from './rescore-read-model.ts';
 
 /** More would make the last thread wait long for the others, and a client that has gone be worked for in vain. */

@@ -2,7 +2,7 @@ import type { Brief } from '#engine/brief/brief.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { placeFigures } from '#engine/score/place-figures.ts';
-import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';
+import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/web-task.ts';
 import { keptYear } from './kept-years.ts';
 import { runResultHash } from './run-key.ts';
 

@@ -2,13 +2,13 @@ import type { Knex } from 'knex';
 import type { RescoreAnswer } from '#contract/rescore.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
-import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/rescore-task.ts';
-import type { ThreadPool } from '../../jobs/thread-pool.ts';
+import type { RescoredStation, StationToRescore } from '../../jobs/web-task.ts';
+import type { WebThreads } from '../../jobs/web-threads.ts';
 import type { ColumnCache } from './column-cache.ts';
 import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
 
-export type RescoreThreads = ThreadPool<RescoreTask, readonly RescoredStation[]>;
+export type RescoreThreads = Pick<WebThreads, 'threads' | 'rescore'>;
 
 export interface RescoreParts {
   readonly db: Knex;
@@ -67,7 +67,7 @@ async function judgeBatch(
   const takePortions = async (): Promise<void> => {
     for (let mine = next++; mine < chunks.length; mine = next++) {
       const stations = chunks[mine] ?? [];
-      answers[mine] = await threads.run({ brief, stations, withHashes }, signal);
+      answers[mine] = await threads.rescore({ brief, stations, withHashes }, signal);
     }
   };
   try {

@@ -3,6 +3,9 @@ import type { ClimateDifference } from '#engine/climate/climate-difference.ts';
 import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import { storableText } from './storable-text.ts';
 
+/** Format of a file that was not read but derived: its bytes are JSON. */
+export const DERIVED_FORMAT = 'derived';
+
 /**
  * The file of a derived year, accepted as it is saved, at its parent's station. @returns its id, or null when the team has the
  * same change of the same weather already
@@ -23,13 +26,13 @@ export async function insertDerivedFile(
   const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
     `insert into weather_files (team_id, name, bytes, fingerprint, storage_key, format, status, declared_station, station_id,
        uploaded_by, uploaded_at, accepted_by, accepted_at)
-     select parent.team_id, :name, :bytes, :fingerprint, :storageKey, 'derived', 'accepted', parent.declared_station,
+     select parent.team_id, :name, :bytes, :fingerprint, :storageKey, :format, 'accepted', parent.declared_station,
        parent.station_id, :personId, :at, :personId, :at
      from weather_files as parent
      where parent.team_id = :teamId and parent.id = :parentFileId
      on conflict (team_id, fingerprint) where status <> 'withdrawn' do nothing
      returning id`,
-    { ...file, name: storableText(file.name) },
+    { ...file, name: storableText(file.name), format: DERIVED_FORMAT },
   );
   return rows[0]?.id ?? null;
 }

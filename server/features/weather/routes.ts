@@ -31,6 +31,7 @@ import { findArchiveView, findBatchView, listBatchViews } from './batch-read-mod
 import { changeBatch } from './change-batch.ts';
 import type { DerivingParts } from './derive-from-parent.ts';
 import { deriveWeatherYear } from './derive-weather-year.ts';
+import { DERIVED_FORMAT } from './derived-year-store.ts';
 import { countLibrary, listWeatherFileViews } from './library-read-model.ts';
 import { presentArchive, presentBatch } from './present-batch.ts';
 import { presentRecord, presentWeatherFile } from './present-weather-file.ts';
@@ -87,7 +88,8 @@ export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): 
 
   mount(router, deps, getOriginal, async ({ params }) => {
     const file = found(await findWeatherFile(db, params));
-    return { body: await deps.storage.get(file.storageKey), fileName: file.name };
+    const fileName = file.format === DERIVED_FORMAT ? `${file.name}.json` : file.name;
+    return { body: await deps.storage.get(file.storageKey), fileName };
   });
 
   mount(router, deps, acceptEndpoint, async ({ params }, request) => {

@@ -12,6 +12,7 @@ export interface WeatherFileState {
   readonly fingerprint: string;
   readonly storageKey: string;
   readonly batchId: string | null;
+  readonly format: string | null;
   readonly status: FileStatus;
   readonly step: ReadingStep | null;
   readonly failure: string | null;
@@ -22,8 +23,9 @@ export interface WeatherFileState {
 
 const STATE_COLUMNS = `
   weather_files.id, weather_files.team_id as "teamId", weather_files.name, weather_files.fingerprint,
-  weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId", weather_files.status, weather_files.step, weather_files.failure,
-  weather_files.station_id as "stationId", weather_files.declared_station as "declaredStation", weather_files.asks`;
+  weather_files.storage_key as "storageKey", weather_files.batch_id as "batchId", weather_files.format, weather_files.status,
+  weather_files.step, weather_files.failure, weather_files.station_id as "stationId",
+  weather_files.declared_station as "declaredStation", weather_files.asks`;
 
 /** The file as it stands; `null` when the team has no such file. */
 export async function findWeatherFile(

@@ -1,7 +1,10 @@
 import { HOURS_PER_DAY } from '../conventions.ts';
+import { floatColumn } from '../float-column.ts';
 
 const DAYS_BACK = 30;
 const ALPHA = 0.8;
+/** Weight of each day before, yesterday's first. */
+const WEIGHTS = Float64Array.from({ length: DAYS_BACK }, (_, back) => (1 - ALPHA) * ALPHA ** back);
 
 /**
  * Running mean of the outdoor temperature, °C, of every day: sum over k = 1..30 of 0.2 x 0.8^(k-1) x Td(-k), divided by the
@@ -12,16 +15,16 @@ const ALPHA = 0.8;
  */
 export function runningMeansC(dryBulbC: Float64Array, wrapped: boolean): Float64Array {
   const days = dryBulbC.length / HOURS_PER_DAY;
-  const dailyC = Float64Array.from({ length: days }, (_, day) => meanOfDay(dryBulbC, day));
+  const dailyC = floatColumn(days, (day) => meanOfDay(dryBulbC, day));
   const first = dailyC.find((mean) => !Number.isNaN(mean)) ?? Number.NaN;
-  return Float64Array.from({ length: days }, (_, day) => {
+  return floatColumn(days, (day) => {
     let sum = 0;
     let weights = 0;
     for (let back = 1; back <= DAYS_BACK; back++) {
       const before = wrapped ? (day - back + days) % days : day - back;
-      const mean = dailyC[before] ?? Number.NaN;
+      const mean = before < 0 ? Number.NaN : (dailyC[before] ?? Number.NaN);
       if (Number.isNaN(mean)) continue;
-      const weight = (1 - ALPHA) * ALPHA ** (back - 1);
+      const weight = WEIGHTS[back - 1] ?? 0;
       sum += weight * mean;
       weights += weight;
     }
@@ -30,8 +33,13 @@ export function runningMeansC(dryBulbC: Float64Array, wrapped: boolean): Float64
 }
 
 function meanOfDay(dryBulbC: Float64Array, day: number): number {
-  const known = dryBulbC
-    .subarray(day * HOURS_PER_DAY, (day + 1) * HOURS_PER_DAY)
-    .filter((value) => !Number.isNaN(value));
-  return known.length === 0 ? Number.NaN : known.reduce((sum, value) => sum + value, 0) / known.length;
+  let sum = 0;
+  let known = 0;
+  for (let slot = day * HOURS_PER_DAY; slot < (day + 1) * HOURS_PER_DAY; slot++) {
+    const value = dryBulbC[slot] ?? Number.NaN;
+    if (Number.isNaN(value)) continue;
+    sum += value;
+    known += 1;
+  }
+  return known === 0 ? Number.NaN : sum / known;
 }

@@ -41,8 +41,8 @@ export function setPoints(input: {
   return { setC, outsideRange };
 }
 
-/** The set-point of a limit that holds all year, °C. */
-function steadySetC({ limit, hardLimits }: Pick<Brief, 'limit' | 'hardLimits'>, heightM: number): number {
+/** The set-point of a limit that holds all year, °C; NaN of an adaptive limit, which moves, and of an index, which sets none. */
+export function steadySetC({ limit, hardLimits }: Pick<Brief, 'limit' | 'hardLimits'>, heightM: number): number {
   switch (limit.kind) {
     case 'fixed':
       return limit.tempC;

@@ -1,15 +1,12 @@
+import type { HourColumns } from '../run/hour-columns.ts';
 import type { WorstSpell } from '../run/run-result.ts';
 
-/** Hours of a year that a spell can run over, slot order. */
-export interface SpellInput {
-  /** 1 where the schedule is closed; closed hours are removed before runs are formed. */
-  readonly closed: Uint8Array;
-  /** 1 where demand is unmet. */
-  readonly unmet: Uint8Array;
-  /** S of each slot, K. */
-  readonly shortfallK: Float64Array;
-  /** Slots at which a new month of a typical year begins; no run crosses one. */
-  readonly joints: ReadonlySet<number>;
+/** The slots that a spell runs over. */
+export interface SpellSlots {
+  /** How many slots before each one are in schedule: closed hours are removed before runs are formed. */
+  readonly openBefore: Uint16Array;
+  /** The month of each slot of a typical year, over whose joints no run goes; null for a year in one piece. */
+  readonly periodOf: Uint8Array | null;
 }
 
 /** Open hours other than unmet ones that a run bridges, uncounted. */
@@ -27,38 +24,37 @@ interface Run {
 /**
  * The longest run of unmet demand hours (method 5), the first of equals; null when every demand hour is met. `cutAtJoint`
  * says that the run would go on, or began earlier, across a month joint.
+ * @param hours demand hours, in slot order
  */
-export function worstSpell(input: SpellInput): WorstSpell | null {
-  const runs = unmetRuns(input);
-  return runs.reduce<Run | null>((best, run) => (best === null || run.hours > best.hours ? run : best), null);
-}
-
-function unmetRuns(input: SpellInput): Run[] {
-  const runs: Run[] = [];
+export function worstSpell(
+  hours: Pick<HourColumns, 'count' | 'slot' | 'met' | 'shortfallK'>,
+  { openBefore, periodOf }: SpellSlots,
+): WorstSpell | null {
+  let longest: Run | null = null;
   let run: Run | null = null;
-  let bridged = 0;
-  let jointPassed = false;
-  for (let slot = 0; slot < input.closed.length; slot++) {
-    if (input.joints.has(slot)) jointPassed = true;
-    if (input.closed[slot] === 1) continue;
-    if (input.unmet[slot] !== 1) {
-      bridged += 1;
-      continue;
-    }
-    const goesOn: boolean = run !== null && bridged <= BRIDGE_H;
-    if (run === null || !goesOn || jointPassed) {
-      const cut: boolean = goesOn && jointPassed;
+  for (let at = 0; at < hours.count; at++) {
+    if (hours.met[at] === 1) continue;
+    const slot = hours.slot[at] ?? 0;
+    if (run === null || !goesOn(run, slot, openBefore) || isJoint(run, slot, periodOf)) {
+      const cut: boolean = run !== null && goesOn(run, slot, openBefore);
       if (run !== null && cut) run.cutAtJoint = true;
+      if (run !== null && (longest === null || run.hours > longest.hours)) longest = run;
       run = { hours: 0, startSlot: slot, endSlot: slot, severityKh: 0, worstK: 0, cutAtJoint: cut };
-      runs.push(run);
     }
-    const shortfallK = input.shortfallK[slot] ?? 0;
+    const shortfallK = hours.shortfallK[at] ?? 0;
     run.hours += 1;
     run.endSlot = slot;
     run.severityKh += shortfallK;
     run.worstK = Math.max(run.worstK, shortfallK);
-    bridged = 0;
-    jointPassed = false;
   }
-  return runs;
+  return run !== null && (longest === null || run.hours > longest.hours) ? run : longest;
+}
+
+/** Whether an unmet hour is near enough to the run's last one to belong to it. */
+function goesOn({ endSlot }: Run, slot: number, openBefore: Uint16Array): boolean {
+  return (openBefore[slot] ?? 0) - (openBefore[endSlot] ?? 0) - 1 <= BRIDGE_H;
+}
+
+function isJoint({ endSlot }: Run, slot: number, periodOf: Uint8Array | null): boolean {
+  return periodOf !== null && periodOf[slot] !== periodOf[endSlot];
 }

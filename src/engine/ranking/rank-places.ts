@@ -79,7 +79,7 @@ export function rankPlaces(input: RankPlacesInput): Ranking {
       id: places[at]?.id ?? '',
       scoreExact: scores[at] ?? Number.NaN,
       ...rankOf(order, scores, place),
-      rankShares: [...drawn.counts.subarray(at * places.length, (at + 1) * places.length)].map((n) => n / draws),
+      rankShares: sharesOf(drawn.counts.subarray(at * places.length, (at + 1) * places.length), draws),
       centralWeights: firsts === 0 ? null : drawn.firstWeights.map((column) => (column[at] ?? 0) / firsts),
     };
   });
@@ -133,6 +133,12 @@ function rankOf(order: readonly number[], scores: readonly number[], place: numb
   return { rank: first + 1, tied: first < place || scoreAt(place + 1) === scoreAt(place) };
 }
 
+function sharesOf(counts: Float64Array, draws: number): readonly number[] {
+  const shares: number[] = [];
+  for (let rank = 0; rank < counts.length; rank++) shares.push((counts[rank] ?? 0) / draws);
+  return shares;
+}
+
 interface Drawn {
   readonly counts: Float64Array;
   /** Draws in which each place is first, ties in equal parts. */
@@ -146,7 +152,8 @@ interface Drawn {
 function runDraws(
   input: RankPlacesInput & { draws: number; shares: readonly number[]; order: readonly number[] },
 ): Drawn {
-  const { places, shares, view, seed, draws, order } = input;
+  const { places, shares, view, seed, draws } = input;
+  const order = Int32Array.from(input.order);
   const states = placeStates({ places, criteria: shares.length, seed });
   const nextWeights = weightDraws({ view, weights: shares, random: seededRandom(seed, 'weights') });
   const weights = new Float64Array(shares.length);
@@ -213,9 +220,11 @@ function addFirsts(
   }
 }
 
-function addNeighbours(steps: Float64Array, { order, ahead }: { order: readonly number[]; ahead: Float64Array }): void {
+function addNeighbours(steps: Float64Array, { order, ahead }: { order: Int32Array; ahead: Float64Array }): void {
+  let one = steps[order[0] ?? 0] ?? 0;
   for (let pair = 0; pair < ahead.length; pair++) {
-    const difference = (steps[order[pair] ?? 0] ?? 0) - (steps[order[pair + 1] ?? 0] ?? 0);
-    if (difference >= 0) ahead[pair] = (ahead[pair] ?? 0) + (difference > 0 ? 1 : 0.5);
+    const next = steps[order[pair + 1] ?? 0] ?? 0;
+    if (one >= next) ahead[pair] = (ahead[pair] ?? 0) + (one > next ? 1 : 0.5);
+    one = next;
   }
 }

@@ -60,22 +60,40 @@ export interface HoursAtLeast {
 /** Hours with a depression of at least 1, 2, .. 25 K. */
 export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
   const scale = cellScale(depression);
-  const months = monthOfEachSlot(depression.length);
-  const hours = new Int32Array(HIGHEST_STEP_K + 1);
-  const scaled = new Float64Array(HIGHEST_STEP_K + 1);
-  for (let slot = 0; slot < depression.length; slot++) {
-    const reachedK = Math.min(HIGHEST_STEP_K, Math.floor((depression[slot] ?? -1) / HUNDREDTHS_PER_BIN));
-    const weight = scale?.[cellOf(months, slot)] ?? 0;
-    for (let atLeastK = 1; atLeastK <= reachedK; atLeastK++) {
-      hours[atLeastK] = (hours[atLeastK] ?? 0) + 1;
-      scaled[atLeastK] = (scaled[atLeastK] ?? 0) + weight;
-    }
-  }
+  const hours = countAtLeast(depression);
+  const scaled = scale === null ? null : scale.every((weight) => weight === 1) ? hours : addAtLeast(depression, scale);
   return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => ({
     atLeastK: index + 1,
     hours: hours[index + 1] ?? 0,
-    scaledHours: scale === null ? null : (scaled[index + 1] ?? 0),
+    scaledHours: scaled === null ? null : (scaled[index + 1] ?? 0),
   }));
+}
+
+/** Whole kelvin reached, at most the last that is asked for; -1 where not known. */
+function reachedK(hundredths: number): number {
+  return Math.min(HIGHEST_STEP_K, Math.floor(hundredths / HUNDREDTHS_PER_BIN));
+}
+
+function countAtLeast(depression: Int32Array): Int32Array {
+  const hours = new Int32Array(HIGHEST_STEP_K + 1);
+  for (let slot = 0; slot < depression.length; slot++) {
+    const step = reachedK(depression[slot] ?? -1);
+    if (step >= 0) hours[step] = (hours[step] ?? 0) + 1;
+  }
+  for (let step = HIGHEST_STEP_K - 1; step >= 0; step--) hours[step] = (hours[step] ?? 0) + (hours[step + 1] ?? 0);
+  return hours;
+}
+
+/** The same with each hour counted as what it stands for. */
+function addAtLeast(depression: Int32Array, scale: Float64Array): Float64Array {
+  const months = monthOfEachSlot(depression.length);
+  const scaled = new Float64Array(HIGHEST_STEP_K + 1);
+  for (let slot = 0; slot < depression.length; slot++) {
+    const weight = scale[cellOf(months, slot)] ?? 0;
+    const most = reachedK(depression[slot] ?? -1);
+    for (let step = 1; step <= most; step++) scaled[step] = (scaled[step] ?? 0) + weight;
+  }
+  return scaled;
 }
 
 /** Place of a slot among the cells of month and hour of day. */

@@ -1,5 +1,5 @@
 import { hundredths } from '../conventions.ts';
-import { ValueCounts } from './value-counts.ts';
+import { countValues, meanCompanion, valuesDownwards } from './value-counts.ts';
 
 /** Shares of the hours of a year, %. */
 export const DESIGN_PERCENTS = [0.4, 1, 2, 5, 10] as const;
@@ -46,29 +46,32 @@ export function designValues(columns: {
   wetBulbC: Float64Array;
   dewPointC: Float64Array;
 }): DesignValues {
-  const { dewPointC, dryBulbC, wetBulbC } = columns;
+  const dryBulb = hundredthsColumn(columns.dryBulbC);
+  const wetBulb = hundredthsColumn(columns.wetBulbC);
   return {
-    dryBulb: designRows(dryBulbC, wetBulbC),
-    wetBulb: designRows(wetBulbC, dryBulbC),
-    dewPoint: designRows(dewPointC, dryBulbC),
+    dryBulb: designRows(dryBulb, wetBulb),
+    wetBulb: designRows(wetBulb, dryBulb),
+    dewPoint: designRows(hundredthsColumn(columns.dewPointC), dryBulb),
   };
 }
 
-function designRows(quantity: Float64Array, coincident: Float64Array): readonly DesignRow[] {
-  const values = new Int32Array(quantity.length).fill(UNKNOWN);
-  const others = new Int32Array(quantity.length);
+function hundredthsColumn(column: Float64Array): Int32Array {
+  const values = new Int32Array(column.length).fill(UNKNOWN);
   for (let slot = 0; slot < values.length; slot++) {
-    const value = quantity[slot] ?? Number.NaN;
-    const other = coincident[slot] ?? Number.NaN;
-    if (Number.isNaN(value + other)) continue;
-    values[slot] = hundredths(value);
-    others[slot] = hundredths(other);
+    const value = column[slot] ?? Number.NaN;
+    if (!Number.isNaN(value)) values[slot] = hundredths(value);
   }
-  const counts = new ValueCounts(values, UNKNOWN + 1, others);
+  return values;
+}
+
+function designRows(quantity: Int32Array, coincident: Int32Array): readonly DesignRow[] {
+  const counts = countValues(quantity, UNKNOWN + 1, coincident);
   if (counts.known === 0) return [];
-  return DESIGN_PERCENTS.map((percent) => {
-    const value = counts.downwards(placeAtPercent(percent, counts.known));
-    const coincidentMean = counts.meanCompanion(value, COINCIDENT_WITHIN_HUNDREDTHS);
+  const places = DESIGN_PERCENTS.map((percent) => placeAtPercent(percent, counts.known));
+  const values = valuesDownwards(counts, places);
+  return DESIGN_PERCENTS.map((percent, index) => {
+    const value = values[index] ?? Number.NaN;
+    const coincidentMean = meanCompanion(counts, value, COINCIDENT_WITHIN_HUNDREDTHS);
     return { percent, valueC: value / 100, coincidentC: Math.round(coincidentMean) / 100 };
   });
 }

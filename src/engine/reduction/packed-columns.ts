@@ -8,6 +8,8 @@ import type { PackedYear } from './weather-year.ts';
 const HUMIDITY_RATIO_STEP = 2e-6;
 const PRESSURE_STEP_PA = 2;
 const MOST_INT16 = 32_767;
+/** Whether the machine itself writes the low byte first, as nearly all do. */
+const LITTLE_ENDIAN = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;
 
 /** The columns as numbers, NaN where missing. */
 export interface YearColumns {
@@ -119,6 +121,7 @@ export function packedBytes(year: PackedYear): PackedBytes {
 
 /** A 16-bit column as little-endian bytes; serves the histogram too. */
 export function bytesOf16(values: Int16Array | Uint16Array): Uint8Array {
+  if (LITTLE_ENDIAN) return new Uint8Array(values.buffer, values.byteOffset, values.byteLength).slice();
   const bytes = new Uint8Array(values.length * 2);
   for (let index = 0; index < values.length; index++) {
     const value = values[index] ?? 0;
@@ -130,7 +133,9 @@ export function bytesOf16(values: Int16Array | Uint16Array): Uint8Array {
 
 /** Little-endian bytes as unsigned 16-bit values. */
 export function uint16FromBytes(bytes: Uint8Array): Uint16Array {
-  return Uint16Array.from({ length: bytes.length >> 1 }, (_none, index) => unsigned16(bytes, index));
+  const values = new Uint16Array(bytes.length >> 1);
+  for (let index = 0; index < values.length; index++) values[index] = unsigned16(bytes, index);
+  return values;
 }
 
 function unsigned16(bytes: Uint8Array, index: number): number {
@@ -150,7 +155,8 @@ export function packedFromBytes(bytes: PackedBytes): PackedYear {
     );
   }
   return {
-    dryBulb: Int16Array.from(uint16FromBytes(bytes.dryBulb), (value) => (value > MOST_INT16 ? value - 65_536 : value)),
+    // The same 16 bits, with a sign.
+    dryBulb: new Int16Array(uint16FromBytes(bytes.dryBulb).buffer),
     humidityRatio: uint16FromBytes(bytes.humidityRatio),
     pressure: uint16FromBytes(bytes.pressure),
     flags: Uint8Array.from(bytes.flags),

@@ -1,66 +1,67 @@
-/**
- * How often each whole number occurs in a column: places in order and means over a range follow from it without sorting. Made for
- * values within some thousands of each other, as hundredths of a kelvin are.
- */
-export class ValueCounts {
+/** How often each whole number of a range occurs, and the sum of what stands beside them. */
+export interface ValueCounts {
   /** Values counted. */
-  known = 0;
-  readonly #least: number;
-  readonly #counts: Int32Array;
-  /** Sum of the companions of each value. */
-  readonly #sums: Float64Array;
+  readonly known: number;
+  /** The least of them, to which the first count belongs. */
+  readonly least: number;
+  readonly counts: Int32Array;
+  readonly sums: Float64Array;
+}
 
-  /**
-   * @param values whole numbers
-   * @param from lesser values stand for unknown ones and are not counted
-   * @param companions whole numbers beside the values, of which means are asked for
-   */
-  constructor(values: Int32Array, from: number, companions: Int32Array = values) {
-    let least = Number.MAX_SAFE_INTEGER;
-    let most = from;
-    for (let at = 0; at < values.length; at++) {
-      const value = values[at] ?? 0;
-      if (value < from) continue;
-      if (value < least) least = value;
-      if (value > most) most = value;
-    }
-    this.#least = least;
-    const bins = Math.max(0, most - least + 1);
-    const counts = new Int32Array(bins);
-    const sums = new Float64Array(bins);
-    for (let at = 0; at < values.length; at++) {
-      const value = values[at] ?? 0;
-      if (value < from) continue;
-      const bin = value - least;
-      counts[bin] = (counts[bin] ?? 0) + 1;
-      sums[bin] = (sums[bin] ?? 0) + (companions[at] ?? 0);
-      this.known++;
-    }
-    this.#counts = counts;
-    this.#sums = sums;
+/**
+ * Counts the whole numbers of a column: places in order and means over a range follow from the counts without sorting. Made for
+ * values within some thousands of each other, as hundredths of a kelvin are.
+ * @param values whole numbers
+ * @param from lesser values and companions stand for unknown ones, and neither of the two is counted
+ * @param companions whole numbers beside the values, of which means are asked for
+ */
+export function countValues(values: Int32Array, from: number, companions: Int32Array = values): ValueCounts {
+  let least = Number.MAX_SAFE_INTEGER;
+  let most = from;
+  let known = 0;
+  for (let at = 0; at < values.length; at++) {
+    const value = values[at] ?? 0;
+    if (value < from || (companions[at] ?? 0) < from) continue;
+    known++;
+    if (value < least) least = value;
+    if (value > most) most = value;
   }
+  const bins = known === 0 ? 0 : most - least + 1;
+  const counts = new Int32Array(bins);
+  const sums = new Float64Array(bins);
+  for (let at = 0; at < values.length; at++) {
+    const value = values[at] ?? 0;
+    const companion = companions[at] ?? 0;
+    if (value < from || companion < from) continue;
+    const bin = value - least;
+    counts[bin] = (counts[bin] ?? 0) + 1;
+    sums[bin] = (sums[bin] ?? 0) + companion;
+  }
+  return { known, least, counts, sums };
+}
 
-  /** The value at a place, counted from 0 downwards. */
-  downwards(place: number): number {
-    let bin = this.#counts.length - 1;
-    let upTo = this.#counts[bin] ?? 0;
+/** The values at some places, counted from 0 downwards; the places in ascending order. */
+export function valuesDownwards({ counts, least }: ValueCounts, places: readonly number[]): readonly number[] {
+  let bin = counts.length - 1;
+  let upTo = counts[bin] ?? 0;
+  return places.map((place) => {
     while (upTo <= place && bin > 0) {
       bin--;
-      upTo += this.#counts[bin] ?? 0;
+      upTo += counts[bin] ?? 0;
     }
-    return this.#least + bin;
-  }
+    return least + bin;
+  });
+}
 
-  /** Mean companion of the values no further than so much from a value. */
-  meanCompanion(value: number, within: number): number {
-    const first = Math.max(0, value - within - this.#least);
-    const last = Math.min(this.#counts.length - 1, value + within - this.#least);
-    let count = 0;
-    let sum = 0;
-    for (let bin = first; bin <= last; bin++) {
-      count += this.#counts[bin] ?? 0;
-      sum += this.#sums[bin] ?? 0;
-    }
-    return sum / count;
+/** Mean companion of the values no further than so much from a value. */
+export function meanCompanion({ counts, least, sums }: ValueCounts, value: number, within: number): number {
+  const first = Math.max(0, value - within - least);
+  const last = Math.min(counts.length - 1, value + within - least);
+  let count = 0;
+  let sum = 0;
+  for (let bin = first; bin <= last; bin++) {
+    count += counts[bin] ?? 0;
+    sum += sums[bin] ?? 0;
   }
+  return sum / count;
 }

@@ -2,7 +2,7 @@
 import { HOURS_PER_DAY, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
 import { monthOfEachSlot, monthStartSlots } from './calendar.ts';
 import { dryBulbProvenance, hasRepair, humidityProvenance, pressureProvenance } from './hour-flags.ts';
-import { ValueCounts } from './value-counts.ts';
+import { countValues, valuesDownwards } from './value-counts.ts';
 import type { PackedYear } from './weather-year.ts';
 
 const MONTHS = 12;
@@ -114,10 +114,8 @@ export function meansByMonthAndHour(column: Float64Array): readonly (readonly (n
  * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function depressionCurve(depression: Int32Array): readonly number[] {
-  const values = new ValueCounts(depression, 0);
+  const values = countValues(depression, 0);
   if (values.known === 0) return [];
-  return Array.from(
-    { length: 101 },
-    (_none, percent) => values.downwards(Math.floor((percent * (values.known - 1)) / 100)) / 100,
-  );
+  const places = Array.from({ length: 101 }, (_none, percent) => Math.floor((percent * (values.known - 1)) / 100));
+  return valuesDownwards(values, places).map((value) => value / 100);
 }

@@ -5,15 +5,22 @@ import { judgeReturnAirHour } from '../hour-classes/judge-return-air-hour.ts';
 import { judgeSupplyAirHour } from '../hour-classes/judge-supply-air-hour.ts';
 import { judgeTowerHour } from '../hour-classes/judge-tower-hour.ts';
 import { judgeTurbineHour } from '../hour-classes/judge-turbine-hour.ts';
+import type { PackedYear } from '../reduction/weather-year.ts';
 import type { SupplyStage } from '../stages/stage-path.ts';
 import { returnAirPlantHour, supplyAirPlantHour } from '../water-energy/air-plant-hour.ts';
 import type { PlantHour } from '../water-energy/plant-hour.ts';
 import { towerPlantHour } from '../water-energy/tower-plant-hour.ts';
 import { turbinePlantHour } from '../water-energy/turbine-plant-hour.ts';
+import type { HourColumns } from './hour-columns.ts';
+import { judgeRoomHours } from './room/judge-room-hours.ts';
+import { roomPlan } from './room/room-plan.ts';
+import { wetBulbsOfYear } from './room/wet-bulbs-of-year.ts';
 
 /** A use: a way of judging one hour, and the water and electricity of the plant that serves it. */
 export interface Use {
   readonly judgeHour: (hour: DemandHour, brief: Brief) => HourJudgement;
+  /** The same of every demand hour of a year at once, in the columns that `meetDemandHours` leaves; null: one by one, as objects. */
+  readonly judgeHours: ((brief: Brief, year: PackedYear, hours: HourColumns) => void) | null;
   readonly plantHour: (hour: DemandHour, judgement: HourJudgement, brief: Brief) => PlantHour;
   /** Outdoor air and the permitted stages that could meet an hour alone, by the class that it would have. */
   readonly aloneStages: (brief: Brief) => readonly SupplyStage[];
@@ -31,18 +38,28 @@ const balanceTempC = (brief: Brief): number | null => brief.balanceTempC;
 
 const roomAtATemperature: Use = {
   judgeHour: judgeSupplyAirHour,
+  judgeHours: (brief, year, hours) => judgeRoomHours(roomPlan(brief), hours, wetBulbsOfYear(year, brief.effIndirect)),
   plantHour: supplyAirPlantHour,
   aloneStages: airAndStages,
   idleUpToC: balanceTempC,
   countsElectricity: true,
 };
 
-const roomUnderAnIndex: Use = { ...roomAtATemperature, judgeHour: judgeIndexHour };
+/** The room's exhaust feeds the indirect stages, so that moisture has to be settled hour by hour. */
+const roomFedByExhaust: Use = { ...roomAtATemperature, judgeHours: null };
 
-const dataHall: Use = { ...roomAtATemperature, judgeHour: judgeReturnAirHour, plantHour: returnAirPlantHour };
+const roomUnderAnIndex: Use = { ...roomAtATemperature, judgeHour: judgeIndexHour, judgeHours: null };
+
+const dataHall: Use = {
+  ...roomAtATemperature,
+  judgeHour: judgeReturnAirHour,
+  judgeHours: null,
+  plantHour: returnAirPlantHour,
+};
 
 const processWater: Use = {
   judgeHour: judgeTowerHour,
+  judgeHours: null,
   plantHour: towerPlantHour,
   aloneStages: () => ['direct'],
   idleUpToC: balanceTempC,
@@ -51,17 +68,18 @@ const processWater: Use = {
 
 const turbineInlet: Use = {
   judgeHour: judgeTurbineHour,
+  judgeHours: null,
   plantHour: turbinePlantHour,
   aloneStages: airAndStages,
   idleUpToC: ({ limit }) => (limit.kind === 'turbine' ? limit.floorC : null),
   countsElectricity: false,
 };
 
-export function findUse({ limit }: Pick<Brief, 'limit'>): Use {
+export function findUse({ limit, secondaryAir }: Pick<Brief, 'limit' | 'secondaryAir'>): Use {
   switch (limit.kind) {
     case 'fixed':
     case 'adaptive':
-      return roomAtATemperature;
+      return secondaryAir === 'outdoor' ? roomAtATemperature : roomFedByExhaust;
     case 'thi':
     case 'shade-heat':
       return roomUnderAnIndex;

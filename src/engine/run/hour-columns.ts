@@ -13,11 +13,6 @@ export const dampReasons = [null, 'outside', 'plant'] as const;
 export interface HourColumns {
   /** How many demand hours there are; the columns may be longer. */
   count: number;
-  /**
-   * Whether the state of each hour is wanted too: outdoor air, limit, load and air supply. Where years are only counted it is left
-   * out, which saves ten of the columns.
-   */
-  detail: boolean;
   readonly slot: Uint16Array;
   /** Position in `hourClasses`. */
   readonly classCode: Uint8Array;
@@ -58,7 +53,6 @@ export function hourColumns(hours: number): HourColumns {
   const numbers = () => new Float64Array(hours);
   return {
     count: 0,
-    detail: true,
     slot: new Uint16Array(hours),
     classCode: bytes(),
     met: bytes(),
@@ -89,4 +83,46 @@ export function hourColumns(hours: number): HourColumns {
     referenceKwh: numbers(),
     backUpKw: numbers(),
   };
+}
+
+/**
+ * Every hour as if outdoor air served it whole: t_s = t + f, no water, nothing lacking. What is found to be otherwise is written over
+ * it; the class, what air meets and which stages meet alone are left to the use.
+ * @param riseKPerVolume fan rise of the air stage, K per m³ of air and kg of dry air
+ */
+export function fillWithAir(hours: HourColumns, riseKPerVolume: number): void {
+  const { count, dryBulbC, volumeM3PerKg, airSupplyC } = hours;
+  for (let at = 0; at < count; at++) {
+    airSupplyC[at] = (dryBulbC[at] ?? 0) + riseKPerVolume * (volumeM3PerKg[at] ?? 0);
+  }
+  hours.supplyC.set(airSupplyC.subarray(0, count));
+  hours.supplyRatio.set(hours.humidityRatio.subarray(0, count));
+  hours.met.fill(1, 0, count);
+  hours.damp.fill(0, 0, count);
+  hours.running.fill(runningStages.indexOf('air'), 0, count);
+  hours.shortfallK.fill(0, 0, count);
+  hours.uncappedShortfallK.fill(0, 0, count);
+  hours.evaporatedKgPerKg.fill(0, 0, count);
+  hours.share.fill(0, 0, count);
+  hours.carriedShare.fill(1, 0, count);
+  hours.waterC.fill(Number.NaN, 0, count);
+}
+
+const HOURS_PER_BLOCK = 512;
+
+/**
+ * Works through so many hours a block at a time. A loop over a whole year is compiled while it runs, and what stands behind it is then
+ * met unprepared at every call, which costs more than the loop; short loops that are called often are compiled whole. Blocks also stay
+ * in the nearest memory from one step to the next.
+ */
+export function inBlocks(count: number, work: (from: number, to: number) => void): void {
+  for (let from = 0; from < count; from += HOURS_PER_BLOCK) work(from, Math.min(from + HOURS_PER_BLOCK, count));
+}
+
+/** Adds up how often each code stands in a part of a column. */
+export function countCodes(counts: Uint16Array, column: Uint8Array, from: number, to: number): void {
+  for (let at = from; at < to; at++) {
+    const code = column[at] ?? 0;
+    counts[code] = (counts[code] ?? 0) + 1;
+  }
 }

@@ -1,5 +1,5 @@
 import type { Brief } from '../brief/brief.ts';
-import { METHOD_VERSION } from '../conventions.ts';
+import { METHOD_VERSION, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { yearlyMoney } from '../money/yearly-money.ts';
 import { coverageOf } from '../score/coverage.ts';
@@ -11,18 +11,19 @@ import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { tallyPlant } from '../water-energy/tally-plant.ts';
 import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import type { HourColumns } from './hour-columns.ts';
-import { type JudgedYear, type JudgeYearInput, judgeHours, judgingWorkspace } from './judged-year.ts';
+import { countCells, type HourCells, monthRows } from './hour-cells.ts';
+import { type HourColumns, hourColumns } from './hour-columns.ts';
+import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
-import { tallyAloneHours, tallyMonthHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
+import { tallyAloneHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
 import { type SuppliedAir, tallyReported } from './tally-reported.ts';
 
 export type { JudgeYearInput } from './judged-year.ts';
 
 /** Columns that every year is judged in, one after another: nothing of them is left in a result. */
-const workspace = judgingWorkspace();
+const workspace = hourColumns(SLOTS_PER_LEAP_YEAR);
 
 /**
  * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
@@ -30,10 +31,11 @@ const workspace = judgingWorkspace();
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
   const { brief, heightM } = input;
-  const judged = judgeHours(input, { into: workspace, countedOnly: !needsDetail(brief) });
-  const counted = countHours(judged, input);
+  const judged = judgeHours(input, { into: workspace });
+  const cells = countCells(judged);
+  const counted = countHours(judged, cells, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
-  const coverage = coverageOf({ classCodes: judged.classCodes, known: judged.known });
+  const coverage = coverageOf({ slots: judged.slots, missing: judged.missing, cells });
   const gates = gatesOf({ brief, coverage, hardLimits });
   return {
     methodVersion: METHOD_VERSION,
@@ -49,20 +51,16 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   };
 }
 
-/** Hard limits and reported hours are counted from the state of each hour. */
-function needsDetail({ hardLimits, reported, lowerLimits }: Brief): boolean {
-  return hardLimits.length > 0 || reported.length > 0 || Object.keys(lowerLimits).length > 0;
-}
-
-function countHours(judged: JudgedYear, { year, brief }: JudgeYearInput) {
+function countHours(judged: JudgedYear, cells: HourCells, { year, brief }: JudgeYearInput) {
   return {
     ledger: tallyLedger(judged),
     severityKh: sumOf(judged.hours.shortfallK, judged.hours.count),
     worstSpell: tallyWorstSpell(judged, year),
     aloneHours: tallyAloneHours(judged, brief),
     supplyCurve: tallySupplyCurve(judged),
-    ...tallyMonthHours(judged),
-    scaled: scaleForMissing(judged),
+    demandByMonthHour: monthRows(cells.demand),
+    metByMonthHour: monthRows(cells.met),
+    scaled: scaleForMissing(cells),
     clampedLimitHours: countClamped(judged),
     degreeHours: tallyDegreeHours(brief, judged.hours),
     recirculatedHours: tallyRecirculatedHours(judged.hours),

@@ -13,9 +13,8 @@ export interface JudgedHour {
   readonly plant: PlantHour;
 }
 
-/** Adds an hour behind the last one. @throws RangeError for a class that no demand hour has */
-export function addHour(columns: HourColumns, { slot, hour, judgement, plant }: JudgedHour): void {
-  const at = columns.count++;
+/** Writes an hour into its place in the columns. */
+export function writeHour(columns: HourColumns, at: number, { slot, hour, judgement, plant }: JudgedHour): void {
   const { outdoor } = hour;
   columns.slot[at] = slot;
   columns.classCode[at] = hourClasses.indexOf(judgement.hourClass);
@@ -51,7 +50,8 @@ export function addHour(columns: HourColumns, { slot, hour, judgement, plant }: 
 /** Hours given one by one, as columns. */
 export function columnsOf(hours: readonly JudgedHour[]): HourColumns {
   const columns = hourColumns(hours.length);
-  for (const hour of hours) addHour(columns, hour);
+  for (const [at, hour] of hours.entries()) writeHour(columns, at, hour);
+  columns.count = hours.length;
   return columns;
 }
 
@@ -65,7 +65,8 @@ export function hourAt(columns: HourColumns, at: number): JudgedHour {
   };
 }
 
-function demandAt(columns: HourColumns, at: number): DemandHour {
+/** What the hour at a place is before it is judged. */
+export function demandAt(columns: HourColumns, at: number): DemandHour {
   return {
     outdoor: {
       dryBulbC: columns.dryBulbC[at] ?? Number.NaN,

@@ -1,7 +1,10 @@
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
-import { dampReasons } from './hour-columns.ts';
+import { countCodes, dampReasons, inBlocks } from './hour-columns.ts';
 import type { JudgedYear } from './judged-year.ts';
 import type { Ledger } from './run-result.ts';
+
+const OUTSIDE = dampReasons.indexOf('outside');
+const PLANT = dampReasons.indexOf('plant');
 
 /**
  * Counts the classes of a judged year.
@@ -10,32 +13,29 @@ import type { Ledger } from './run-result.ts';
 export function tallyLedger(judged: JudgedYear): Ledger {
   const { hours, classCodes, slots } = judged;
   const classes = countClasses(classCodes);
+  const byReason = countsOf(hours.damp, hours.count, dampReasons.length);
   const ledger = {
     hours: slots,
     classes,
-    dampOutside: countOf(hours.damp, hours.count, dampReasons.indexOf('outside')),
-    dampPlant: countOf(hours.damp, hours.count, dampReasons.indexOf('plant')),
+    dampOutside: byReason[OUTSIDE] ?? 0,
+    dampPlant: byReason[PLANT] ?? 0,
     demand: slots - classes.closed - classes.missing - classes.idle,
-    met: countOf(hours.met, hours.count, 1),
+    met: countsOf(hours.met, hours.count, 2)[1] ?? 0,
   };
   assertAddsUp(ledger, hours.count);
   return ledger;
 }
 
-/** How often a value stands among the first so many of a column. */
-function countOf(column: Uint8Array, count: number, value: number): number {
-  let found = 0;
-  for (let at = 0; at < count; at++) if (column[at] === value) found++;
-  return found;
+/** How often each code below `codes` stands among the first so many of a column. */
+function countsOf(column: Uint8Array, count: number, codes: number): Uint16Array {
+  const counts = new Uint16Array(codes);
+  inBlocks(count, (from, to) => countCodes(counts, column, from, to));
+  return counts;
 }
 
 /** Every class with its count, 0 where there is none. */
 function countClasses(classCodes: Uint8Array): Record<HourClass, number> {
-  const counts = hourClasses.map(() => 0);
-  for (let slot = 0; slot < classCodes.length; slot++) {
-    const code = classCodes[slot] ?? 0;
-    counts[code] = (counts[code] ?? 0) + 1;
-  }
+  const counts = countsOf(classCodes, classCodes.length, hourClasses.length);
   const of = (hourClass: HourClass): number => counts[hourClasses.indexOf(hourClass)] ?? 0;
   return {
     closed: of('closed'),

@@ -1,5 +1,5 @@
-import { hourClasses } from '../hour-classes/hour-class.ts';
-import { monthOfEachSlot } from '../reduction/calendar.ts';
+import { monthOfEachSlot, monthStartSlots } from '../reduction/calendar.ts';
+import { type HourCells, sumOfMonth } from '../run/hour-cells.ts';
 
 /** How much of the schedule the weather covers, and whether the year may be used for the brief (method 2 and 7.1). */
 export interface Coverage {
@@ -15,18 +15,18 @@ export interface Coverage {
 export const LEAST_COVERED_PCT = 90;
 
 interface MonthCount {
-  slots: number;
-  known: number;
-  scheduled: number;
-  present: number;
-  demand: number;
+  readonly slots: number;
+  readonly known: number;
+  readonly scheduled: number;
+  readonly present: number;
+  readonly demand: number;
 }
 
 /**
  * Months whose hours were looked at and showed no demand are left out of the share; a month with no known hour is not.
- * @param input.known 1 where the slot's weather is known, in schedule or not
+ * @param input.missing slots whose weather is not known, in schedule or not
  */
-export function coverageOf(input: { classCodes: Uint8Array; known: Uint8Array }): Coverage {
+export function coverageOf(input: { slots: number; missing: Uint16Array; cells: HourCells }): Coverage {
   const months = countMonths(input);
   const inSchedule = months.filter((month) => month.scheduled > 0);
   const counted = inSchedule.filter((month) => month.present === 0 || month.demand > 0);
@@ -44,20 +44,22 @@ export function coverageOf(input: { classCodes: Uint8Array; known: Uint8Array })
   };
 }
 
-function countMonths({ classCodes, known }: { classCodes: Uint8Array; known: Uint8Array }): MonthCount[] {
-  const monthOf = monthOfEachSlot(classCodes.length);
-  const months = Array.from({ length: 12 }, () => ({ slots: 0, known: 0, scheduled: 0, present: 0, demand: 0 }));
-  for (let slot = 0; slot < classCodes.length; slot++) {
-    const month = months[(monthOf[slot] ?? 1) - 1];
-    if (month === undefined) continue;
-    const hourClass = hourClasses[classCodes[slot] ?? 0];
-    month.slots += 1;
-    month.known += known[slot] ?? 0;
-    if (hourClass === 'closed') continue;
-    month.scheduled += 1;
-    if (hourClass === 'missing') continue;
-    month.present += 1;
-    if (hourClass !== 'idle') month.demand += 1;
+function countMonths({ slots, missing, cells }: Parameters<typeof coverageOf>[0]): MonthCount[] {
+  const monthOf = monthOfEachSlot(slots);
+  const unknown = new Uint16Array(12);
+  for (const slot of missing) {
+    const month = (monthOf[slot] ?? 1) - 1;
+    unknown[month] = (unknown[month] ?? 0) + 1;
   }
-  return months;
+  const starts = monthStartSlots(slots);
+  return Array.from({ length: 12 }, (_none, month) => {
+    const slotsOfMonth = (starts[month + 1] ?? 0) - (starts[month] ?? 0);
+    return {
+      slots: slotsOfMonth,
+      known: slotsOfMonth - (unknown[month] ?? 0),
+      scheduled: sumOfMonth(cells.scheduled, month),
+      present: sumOfMonth(cells.present, month),
+      demand: sumOfMonth(cells.demand, month),
+    };
+  });
 }

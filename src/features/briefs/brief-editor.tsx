@@ -1,10 +1,9 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useMutation, useQuery } from '@tanstack/react-query';
+import { useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { FormProvider, useForm, useWatch } from 'react-hook-form';
-import { type BriefVersionRecord, saveBriefVersion } from '../../contract/briefs.ts';
+import type { BriefVersionRecord } from '../../contract/briefs.ts';
 import { briefDifference } from '../../engine/brief/brief-difference.ts';
-import { call } from '../../lib/api-client.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { moment } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
@@ -14,15 +13,7 @@ import { Notice } from '../../ui/notice.tsx';
 import { BriefFieldsForm } from './brief-fields-form.tsx';
 import { type BriefKey, presetsQuery } from './brief-queries.ts';
 import { mayChangeBriefs } from './brief-words.ts';
-import {
-  bodyOfDraft,
-  DraftForm,
-  type DraftProblems,
-  type DraftValues,
-  draftOf,
-  readDraftValues,
-  restoredDraft,
-} from './draft.ts';
+import { DraftForm, type DraftProblems, type DraftValues, draftOf, readDraftValues, restoredDraft } from './draft.ts';
 import { DraftScopeProvider } from './draft-context.ts';
 import { DraftMargin } from './draft-margin.tsx';
 import { DraftYear } from './draft-year.tsx';
@@ -30,6 +21,7 @@ import { EffectDetails } from './effect-details.tsx';
 import type { DraftKey, KeptDraft } from './kept-draft.ts';
 import { useEffectOfDraft } from './use-effect-of-draft.ts';
 import { useKeptDraft } from './use-kept-draft.ts';
+import { problemsOfSaving, useSaveDraft } from './use-save-draft.ts';
 
 interface BriefEditorProps {
   readonly briefKey: BriefKey;
@@ -45,6 +37,7 @@ interface BriefEditorProps {
 export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: BriefEditorProps) {
   const { role } = useTeam();
   const mayChange = mayChangeBriefs(role);
+  const savedVersion = record.version.version;
   const isWide = useMedia(WIDE);
   const presets = useQuery(presetsQuery(briefKey.teamId));
   const form = useForm<DraftValues>({
@@ -58,20 +51,16 @@ export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: Brief
   const isChanged = changes === null || changes.length > 0;
   const forget = useKeptDraft({
     key: draftKey,
-    basedOn: record.version.version,
+    basedOn: savedVersion,
     values,
     isChanged: mayChange && isChanged,
   });
   const effect = useEffectOfDraft(briefKey, { record, reading });
-  const save = useMutation({
-    mutationFn: (draft: DraftValues) => {
-      const params = { teamId: briefKey.teamId, programmeId: briefKey.programmeId, briefId: briefKey.briefId };
-      const body = { basedOn: record.version.version, body: bodyOfDraft(draft) };
-      return call(saveBriefVersion, { params, query: {}, body });
-    },
-    onSuccess: ({ version }) => {
+  const save = useSaveDraft(briefKey, {
+    basedOn: savedVersion,
+    onSaved: (version) => {
       forget();
-      onSaved(version.version);
+      onSaved(version);
     },
   });
   const problems: DraftProblems = { ...problemsOfSaving(save.error), ...(reading.ok ? {} : reading.problems) };
@@ -80,7 +69,6 @@ export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: Brief
     save.reset();
     form.reset(draftOf(record.body));
   };
-  const savedVersion = record.version.version;
   return (
     <FormProvider {...form}>
       <DraftScopeProvider value={{ problems, preset }}>
@@ -104,15 +92,7 @@ export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: Brief
                 isSaving={save.isPending}
                 onUndo={undo}
               />
-              {save.isError ? (
-                <Notice
-                  tone="wrong"
-                  live
-                  title={isApiError(save.error, 'wrong_state') ? 'Saved by somebody else' : 'Not saved'}
-                >
-                  {errorSentence(save.error)}
-                </Notice>
-              ) : null}
+              <SaveProblem error={save.error} />
               {isWide ? <EffectDetails effect={effect} changes={changes} savedVersion={savedVersion} /> : null}
             </div>
           </div>
@@ -128,11 +108,12 @@ export function BriefEditor({ briefKey, record, draftKey, kept, onSaved }: Brief
   );
 }
 
-/** What the server found where this page did not, by field. */
-function problemsOfSaving(error: unknown): DraftProblems {
-  if (!isApiError(error)) return {};
-  return Object.fromEntries(
-    error.problems.map(({ path, message }) => [(path ?? '').replace(/^body\.body\.?/, ''), message]),
+function SaveProblem({ error }: { error: unknown }) {
+  if (error === null) return null;
+  return (
+    <Notice tone="wrong" live title={isApiError(error, 'wrong_state') ? 'Saved by somebody else' : 'Not saved'}>
+      {errorSentence(error)}
+    </Notice>
   );
 }
 

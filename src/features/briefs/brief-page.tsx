@@ -1,21 +1,17 @@
-import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
-import { type BriefVersionView, listBriefs, listBriefVersions } from '../../contract/briefs.ts';
+import type { BriefVersionView } from '../../contract/briefs.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { moment, sentence } from '../../lib/format.ts';
 import { PageTitle } from '../../lib/page-title.tsx';
 import { paths } from '../../lib/paths.ts';
-import { sessionQuery } from '../../lib/session-query.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Button, buttonLook } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { BriefEditor } from './brief-editor.tsx';
 import { type BriefKey, versionQuery, versionsQuery } from './brief-queries.ts';
-import { mayChangeBriefs } from './brief-words.ts';
-import { carriedOver } from './draft.ts';
-import { dropDraft, findDraft, type KeptDraft } from './kept-draft.ts';
+import { useDraftBase } from './use-draft-base.ts';
 import { UsedPanel } from './used-panel.tsx';
 import { VersionsPanel } from './versions-panel.tsx';
 
@@ -47,54 +43,11 @@ interface BriefProps {
 }
 
 function Brief({ briefKey, versions, newest }: BriefProps) {
-  const client = useQueryClient();
-  const { data: session } = useQuery(sessionQuery);
-  const draftKey = { personId: session?.person?.id ?? '', briefId: briefKey.briefId };
-  const mayChange = mayChangeBriefs(useTeam().role);
-  const [kept, setKept] = useState(() => (mayChange ? findDraft(draftKey) : null));
-  // The draft stays on the version that it began from, also when somebody saves another meanwhile.
-  const [base, setBase] = useState(() => baseOf(kept, { versions, newest }));
-  const [saved, setSaved] = useState<number | null>(null);
+  const { draftKey, kept, base, saved, onSaved, leave, carry } = useDraftBase(briefKey, { versions, newest });
   const record = useQuery(versionQuery(briefKey, base));
-  const begin = (version: number, draft: KeptDraft | null) => {
-    setKept(draft);
-    setBase(version);
-  };
-  const onSaved = (version: number) => {
-    begin(version, null);
-    setSaved(version);
-    for (const { path } of [listBriefs, listBriefVersions]) client.invalidateQueries({ queryKey: [path] });
-  };
-  const leaveDraft = () => {
-    dropDraft(draftKey);
-    begin(newest.version, null);
-  };
-  const carry = useMutation({
-    mutationFn: async () => {
-      const held = findDraft(draftKey);
-      const [from, to] = await Promise.all(
-        [base, newest.version].map((version) => client.ensureQueryData(versionQuery(briefKey, version))),
-      );
-      if (held === null || from === undefined || to === undefined) return null;
-      const values = carriedOver(held.values, { from: from.body, to: to.body });
-      return { values, basedOn: newest.version, keptAt: new Date().toISOString() };
-    },
-    onSuccess: (draft) => begin(newest.version, draft),
-  });
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-8">
-      <header>
-        <p className="text-fine text-soft">
-          <Link to={paths.briefs.to(briefKey)}>Briefs</Link>
-        </p>
-        <h1 className="text-title">{newest.name}</h1>
-        <p className="mt-1 max-w-[70ch]">
-          <span className="text-soft">
-            Version {newest.version}, {newest.presetName}, saved by {newest.madeBy} on {moment(newest.madeAt)}.
-          </span>{' '}
-          {sentence(newest.sentence)}
-        </p>
-      </header>
+      <Heading briefKey={briefKey} newest={newest} />
       {saved === newest.version ? (
         <Notice live>Version {saved} is saved. Its scores follow on the map by themselves.</Notice>
       ) : null}
@@ -107,7 +60,7 @@ function Brief({ briefKey, versions, newest }: BriefProps) {
               <Button busy={carry.isPending} onClick={() => carry.mutate()}>
                 Carry the changes over to version {newest.version}
               </Button>
-              <Button onClick={leaveDraft}>Leave the draft, take version {newest.version}</Button>
+              <Button onClick={leave}>Leave the draft, take version {newest.version}</Button>
             </>
           }
         >
@@ -134,10 +87,21 @@ function Brief({ briefKey, versions, newest }: BriefProps) {
   );
 }
 
-/** A kept draft is taken up on its own version, unless nobody may know of that version any more. */
-function baseOf(kept: KeptDraft | null, { versions, newest }: Pick<BriefProps, 'versions' | 'newest'>): number {
-  const isThere = versions.some(({ version }) => version === kept?.basedOn);
-  return kept !== null && isThere ? kept.basedOn : newest.version;
+function Heading({ briefKey, newest }: Pick<BriefProps, 'briefKey' | 'newest'>) {
+  return (
+    <header>
+      <p className="text-fine text-soft">
+        <Link to={paths.briefs.to(briefKey)}>Briefs</Link>
+      </p>
+      <h1 className="text-title">{newest.name}</h1>
+      <p className="mt-1 max-w-[70ch]">
+        <span className="text-soft">
+          Version {newest.version}, {newest.presetName}, saved by {newest.madeBy} on {moment(newest.madeAt)}.
+        </span>{' '}
+        {sentence(newest.sentence)}
+      </p>
+    </header>
+  );
 }
 
 function BriefProblem({ briefKey, error, onRetry }: { briefKey: BriefKey; error: unknown; onRetry: () => void }) {

@@ -25,7 +25,7 @@ export function DerivedYears({ derived, teamId, mayExport }: DerivedYearsProps) 
         Derived years beside the years that they were made of. They are in no score, range or grade of this place.
       </p>
       <ScrollInside label="Other climates, scrolls sideways">
-        <table className="ruled min-w-[52rem]">
+        <table className="ruled min-w-[50rem] max-sm:min-w-[44rem]">
           <caption className="sr-only">Derived years and their parents under this brief</caption>
           <thead>
             <tr>
@@ -48,7 +48,7 @@ export function DerivedYears({ derived, teamId, mayExport }: DerivedYearsProps) 
                 <ParentRow parent={group[0].parent} teamId={teamId} mayExport={mayExport} />
                 {group.map((year) => (
                   <tr key={year.weatherFileId}>
-                    <th scope="row" className="max-w-[24rem]">
+                    <th scope="row" className="max-w-[24rem] max-sm:max-w-44">
                       <span className="block pl-4">
                         Derived: <Link to={paths.weatherFile.to(teamId, year.weatherFileId)}>{year.name}</Link>
                         <span className="block text-fine text-soft">{year.words}</span>

@@ -2,7 +2,15 @@ import { Link } from 'react-router-dom';
 import type { Place } from '../../contract/runs.ts';
 import { metres, position } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
-import { bandWords, costingColumns, costWords, noScoreWords, placeYearWords, verdictSentence } from './run-words.ts';
+import {
+  bandWords,
+  costingColumns,
+  costWords,
+  noScoreWords,
+  notJudgedWords,
+  placeYearWords,
+  verdictSentence,
+} from './run-words.ts';
 
 /** Name and basis of the chosen place: a number never stands without what it rests on. */
 export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }) {
@@ -21,7 +29,7 @@ export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }
             <Link to={paths.weatherFile.to(teamId, year.weatherFileId)}>{placeYearWords(year)}</Link>.{' '}
           </>
         ) : (
-          'No accepted weather year. '
+          'No accepted measured year. '
         )}
         Brief version {brief.version}, method {brief.methodVersion}.
       </p>
@@ -33,13 +41,7 @@ export function PlaceHeading({ place, teamId }: { place: Place; teamId: string }
 export function ScoreBlock({ place }: { place: Place }) {
   const { shown } = place;
   if (!shown) {
-    return (
-      <p className="border-y border-line py-3">
-        {place.years.length === 0
-          ? 'Not judged: no accepted weather year is usable for this brief.'
-          : 'Not judged yet. Its year is being tested against the brief; the score follows by itself.'}
-      </p>
-    );
+    return <p className="border-y border-line py-3">{notJudgedWords(place)}</p>;
   }
   const note = noScoreWords(shown);
   const band = bandWords(shown.words);

@@ -59,6 +59,15 @@ export function noScoreWords({ score, scoreNote }: Pick<MapStation, 'score' | 's
   return note.charAt(0).toUpperCase() + note.slice(1);
 }
 
+/** Why a place shows no year at all. */
+export function notJudgedWords({ years, derived }: Pick<Place, 'years' | 'derived'>): string {
+  if (years.length > 0)
+    return 'Not judged yet. Its year is being tested against the brief; the score follows by itself.';
+  return derived.length > 0
+    ? 'Not judged: only derived years stand here. The year that they were made of counts no longer.'
+    : 'Not judged: no accepted weather year is usable for this brief.';
+}
+
 export function placeYearWords({ kind, year }: Place['years'][number]): string {
   if (kind === 'actual' && year !== null) return `the year ${year}`;
   return kind === 'derived' ? 'a derived year' : 'a typical year';

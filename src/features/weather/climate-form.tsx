@@ -23,19 +23,19 @@ interface ClimateFormProps {
 /** The change of climate, typed: the rule for humidity, then twelve months. */
 export function ClimateForm({ draft, onChange, problems, sources }: ClimateFormProps) {
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
+    <div className="grid grid-cols-[minmax(0,1fr)] content-start gap-6">
       <RuleChoice draft={draft} onChange={onChange} />
       <section aria-labelledby="monthly-changes">
         <h2 id="monthly-changes" className="mb-2 text-name">
           By how much each month changes
         </h2>
         {sources}
-        <label className="my-3 flex items-center gap-2">
+        <label className="my-3 flex items-start gap-2">
           <input
             type="checkbox"
             checked={draft.stretched}
             onChange={(event) => onChange(withStretch(draft, event.currentTarget.checked))}
-            className="size-4 accent-indigo"
+            className="mt-0.5 size-4 flex-none accent-indigo"
           />
           Stretch the days: highest and lowest change apart from the mean
         </label>
@@ -74,7 +74,7 @@ function MonthTable({ draft, onChange, problems }: Omit<ClimateFormProps, 'sourc
   const fields = shownFields(draft);
   return (
     <>
-      <table className="w-full max-w-[30rem] border-collapse">
+      <table className="w-full border-collapse" style={{ maxWidth: `${3 + 6 * fields.length}rem` }}>
         <caption className="sr-only">Change of each month</caption>
         <thead>
           <tr className="text-left text-fine text-soft">
@@ -118,7 +118,7 @@ function MonthTable({ draft, onChange, problems }: Omit<ClimateFormProps, 'sourc
                   aria-label={`January in every month, ${fieldTitle[field].spoken}`}
                   onClick={() => onChange(filledDown(draft, field))}
                 >
-                  January in all
+                  Fill down
                 </Button>
               </td>
             ))}

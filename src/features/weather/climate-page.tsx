@@ -47,9 +47,8 @@ function Climate({ record }: { record: WeatherFileRecord }) {
       </Link>
       <h1 className="text-title">Change the climate of this year</h1>
       <p className="mt-1.5 mb-6 max-w-[70ch] text-soft">
-        The hours of {recordTitle(file)} are shifted and stretched month by month (Belcher, Hacker and Powell, 2005).
-        What you save is a derived year: tested against every brief, always shown beside this one, in no score of the
-        station.
+        Its hours are shifted and stretched month by month (Belcher, Hacker and Powell, 2005). What you save is a
+        derived year: tested against every brief, always shown beside this one, in no score of the station.
       </p>
       {why === null ? <Editor fileId={file.id} /> : <Notice tone="attention">{why}</Notice>}
     </>

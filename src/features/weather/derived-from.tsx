@@ -5,6 +5,7 @@ import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Notice } from '../../ui/notice.tsx';
 import { DifferenceTables } from './climate-difference.tsx';
+import { MonthlyChanges } from './monthly-changes.tsx';
 import { StatusMark } from './status-mark.tsx';
 import { statusWord, yearWords } from './weather-words.ts';
 
@@ -32,7 +33,8 @@ export function DerivedFrom({ record: { file, derivation } }: { record: WeatherF
           </Notice>
         </div>
       )}
-      <div className="mt-5">
+      <div className="mt-5 grid grid-cols-[minmax(0,1fr)] gap-6">
+        <MonthlyChanges monthly={monthly} humidityRule={humidityRule} />
         <DifferenceTables difference={difference} cappedHours={cappedHours} />
       </div>
     </section>

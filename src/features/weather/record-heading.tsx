@@ -17,7 +17,7 @@ export function RecordHeading({ record }: { record: WeatherFileRecord }) {
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h1 className="text-title break-words">{recordTitle(file)}</h1>
         {mayChangeWeather(role) ? (
-          <a className={buttonLook('plain')} href={original} download={file.parent ? `${file.name}.json` : file.name}>
+          <a className={buttonLook('plain')} href={original} download>
             {file.parent ? 'Download what it was made of' : 'Download original'}
           </a>
         ) : null}

@@ -4,6 +4,7 @@ import { briefDifference } from '../../../src/engine/brief/brief-difference.ts';
 import { fieldsOfLimit } from '../../../src/engine/brief/brief-fields.ts';
 import {
   bodyOfDraft,
+  carriedOver,
   DraftForm,
   type DraftValues,
   draftOf,
@@ -88,5 +89,35 @@ describe('faults of a draft', () => {
     const wet = { ...draft, stages: ['direct', 'indirect'] };
     expect(problemsOf(wet).stages).toMatch(/written reason/);
     expect(readDraftValues({ ...wet, stagesReason: 'Waiting hall' }).ok).toBe(true);
+  });
+});
+
+describe('a draft carried over to a version that somebody else saved', () => {
+  const from = presetBrief('office');
+  const to = {
+    ...from,
+    cycles: 6,
+    caps: { roomRhPct: 60, supplyRhPct: 90 },
+    limit: { kind: 'fixed' as const, tempC: 27 },
+  };
+
+  test('keeps what it changed and takes the rest from that version, field by field', () => {
+    const left = { ...draftOf(from), effDirect: 0.8, caps: { roomRhPct: 70, supplyRhPct: null, supplyDewPointC: 15 } };
+    const reading = readDraftValues(carriedOver(left, { from, to }));
+    expect(reading.ok && reading.brief).toEqual({
+      ...to,
+      effDirect: 0.8,
+      caps: { roomRhPct: 70, supplyRhPct: 90, supplyDewPointC: 15 },
+    });
+  });
+
+  test('keeps what is at fault as it was typed', () => {
+    const carried = carriedOver({ ...draftOf(from), cycles: 'six' }, { from, to });
+    expect(Object.keys(problemsOf(carried))).toEqual(['cycles']);
+  });
+
+  test('is that version when it changed nothing', () => {
+    const reading = readDraftValues(carriedOver(draftOf(from), { from, to }));
+    expect(reading.ok && briefDifference(to, reading.brief)).toEqual([]);
   });
 });

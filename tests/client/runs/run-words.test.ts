@@ -8,6 +8,7 @@ import {
   identitySentence,
   metWords,
   noScoreWords,
+  notJudgedWords,
   verdictSentence,
 } from '../../../src/features/runs/run-words.ts';
 
@@ -54,6 +55,19 @@ describe('what stands beside or in place of a score', () => {
     expect(noScoreWords({ score: null, scoreNote: 'excluded: no water' })).toBe('Excluded: no water');
     expect(noScoreWords({ score: null, scoreNote: null })).toBe('Not judged yet');
     expect(noScoreWords({ score: 0, scoreNote: null })).toBeNull();
+  });
+
+  it('is why no year is shown, where a derived year is no stand-in for the measured one', () => {
+    const year = { runId: '', weatherFileId: '', kind: 'typical', year: null, hours: 8760, score: null } as const;
+    const figures = { runId: '', demand: 1, met: 1, score: 1, verdict: 'meets the brief' } as const;
+    const derived = {
+      ...{ weatherFileId: '', name: 'Warmer', words: '' },
+      figures: { ...figures, severityKh: 0, worstSpellHours: 0, makeUpLitres: 0 },
+      parent: { weatherFileId: '', kind: 'typical', year: null, status: 'withdrawn', figures: null },
+    } as const;
+    expect(notJudgedWords({ years: [{ ...year }], derived: [] })).toContain('Not judged yet');
+    expect(notJudgedWords({ years: [], derived: [] })).toContain('no accepted weather year');
+    expect(notJudgedWords({ years: [], derived: [derived] })).toContain('only derived years');
   });
 
   it('is the grade with the columns that cost a letter, the reason of those that set it', () => {

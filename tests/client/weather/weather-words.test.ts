@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest';
-import { mayChangeWeather, recordTitle, statusWords, yearWords } from '../../../src/features/weather/weather-words.ts';
+import {
+  mayChangeWeather,
+  parentWords,
+  recordTitle,
+  statusWords,
+  yearWords,
+} from '../../../src/features/weather/weather-words.ts';
 
 const counts = { note: 0, repair: 0, doubt: 0, ask: 0, refuse: 0 };
 const file = { status: 'review', step: null, failure: null, findingCounts: counts } as const;
@@ -34,6 +40,11 @@ describe('a weather file is named', () => {
     expect(recordTitle({ name: 'a.epw', station, kind: 'actual', year: 2024 })).toBe('Korrel Pan, 2024');
     expect(recordTitle({ name: 'a.epw', station: null, kind: null, year: null })).toBe('a.epw');
     expect(yearWords({ kind: null, year: null })).toBe('–');
+    expect(yearWords({ kind: 'derived', year: null })).toBe('Derived year');
+    const parent = { fileId: '', name: '', status: 'accepted' } as const;
+    expect(parentWords({ ...parent, kind: 'actual', year: 2019 })).toBe('from the year 2019');
+    expect(parentWords({ ...parent, kind: 'typical', year: null })).toBe('from the typical year');
+    expect(parentWords(null)).toBeNull();
   });
 
   it('and changed by engineers and leads alone', () => {

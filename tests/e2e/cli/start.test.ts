@@ -2,7 +2,7 @@ import { existsSync, mkdtempSync, readFileSync, rmSync, statSync } from 'node:fs
 import os from 'node:os';
 import path from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { freePort } from '../../../server/cli/free-port.ts';
 import { processesOf } from '../../../server/cli/left-running.ts';
 import { eventually } from '../../support/eventually.ts';
@@ -12,19 +12,22 @@ const READY = 'Muslin is ready';
 /** Longer than stopping takes: the web has 10 s for requests at hand, and there are none. */
 const STOP_LIMIT_MS = 15_000;
 
+/** One for all tests: whichever comes first makes its cluster, which takes longer than all else, and the others start on it. */
 let home: string;
 let port: number;
 let started: RunningCommand[];
 
-beforeEach(async () => {
+beforeAll(() => {
   home = mkdtempSync(path.join(os.tmpdir(), 'muslin-start-'));
+});
+afterAll(() => rmSync(home, { recursive: true, force: true }));
+beforeEach(async () => {
   port = await freePort();
   started = [];
 });
 afterEach(async () => {
   for (const { child } of started) child.kill('SIGTERM');
   await nothingRuns();
-  rmSync(home, { recursive: true, force: true });
 });
 
 function start(options: { through: 'npm' | 'node'; env?: Readonly<Record<string, string>> }): RunningCommand {
@@ -115,10 +118,11 @@ describe('npm start', () => {
   });
 
   it('names everything that is wrong with its settings, and starts nothing', async () => {
-    const outcome = await start({ through: 'node', env: { PORT: 'many', SEED: 'some' } }).ended;
+    const newHome = path.join(home, 'new');
+    const outcome = await start({ through: 'node', env: { MUSLIN_HOME: newHome, PORT: 'many', SEED: 'some' } }).ended;
     expect(outcome.code).toBe(3);
     expect(outcome.stderr).toContain('PORT="many"');
     expect(outcome.stderr).toContain('SEED="some"');
-    expect(existsSync(path.join(home, 'secrets.json'))).toBe(false);
+    expect(existsSync(newHome)).toBe(false);
   });
 });

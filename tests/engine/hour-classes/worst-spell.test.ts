@@ -1,21 +1,26 @@
 import { describe, expect, test } from 'vitest';
+import { countOpen } from '#engine/clock/open-schedule.ts';
 import { worstSpell } from '#engine/hour-classes/worst-spell.ts';
 
 /** One letter a slot: u unmet, m met or idle, c closed; a bar is a month joint. */
 function spellOf(text: string) {
   const letters = [...text].filter((letter) => letter !== '|');
-  const joints = new Set<number>();
-  let slot = 0;
-  for (const letter of text) {
-    if (letter === '|') joints.add(slot);
-    else slot += 1;
-  }
-  return worstSpell({
-    closed: Uint8Array.from(letters, (letter) => (letter === 'c' ? 1 : 0)),
-    unmet: Uint8Array.from(letters, (letter) => (letter === 'u' ? 1 : 0)),
-    shortfallK: Float64Array.from(letters, (letter, index) => (letter === 'u' ? index + 1 : 0)),
-    joints,
-  });
+  const periods = [...text].flatMap((letter, place) =>
+    letter === '|' ? [] : [text.slice(0, place).split('|').length],
+  );
+  const open = Uint8Array.from(letters, (letter) => (letter === 'c' ? 0 : 1));
+  const hours = letters.flatMap((letter, slot) =>
+    letter === 'c' ? [] : [{ slot, met: letter === 'm', lackK: slot + 1 }],
+  );
+  return worstSpell(
+    {
+      count: hours.length,
+      slot: Uint16Array.from(hours, ({ slot }) => slot),
+      met: Uint8Array.from(hours, ({ met }) => (met ? 1 : 0)),
+      shortfallK: Float64Array.from(hours, ({ met, lackK }) => (met ? 0 : lackK)),
+    },
+    { openBefore: countOpen(open).openBefore, periodOf: Uint8Array.from(periods) },
+  );
 }
 
 describe('the worst spell', () => {

@@ -1,7 +1,11 @@
+import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { bytesOf, epwLines, epwText, FIRST_DATA_LINE } from '../../support/epw-text.ts';
 import { faultyFindings, findingsOf, readRefused, readUsable, remarkable } from '../../support/readings.ts';
+import { propertySettings } from '../../support/sample-size.ts';
 
+/** Place of the source flags among the fields. */
+const FLAGS = 5;
 /** Index in the lines of a row whose slot is given. */
 const at = (slot: number) => FIRST_DATA_LINE - 1 + slot;
 
@@ -178,6 +182,55 @@ describe('data records of an EPW', () => {
     lines[at(11)] = (lines[at(11)] ?? '').split(',').with(6, '.135e2').with(7, '-0').join(',');
     const { dryBulbC } = readUsable(lines).hours;
     expect([dryBulbC[10], dryBulbC[11]]).toEqual([12.5, 13.5]);
+  });
+
+  test('a row with blanks around its numbers says the same as one without, to the bit and whatever stands in it', () => {
+    const decimals = (digits: number) =>
+      fc
+        .integer({ min: -60 * 10 ** digits, max: 60 * 10 ** digits })
+        .map((whole) => (whole / 10 ** digits).toFixed(digits));
+    const odd = [
+      '',
+      '-0',
+      '-0.0',
+      '007.50',
+      '.5',
+      '5.',
+      '1e1',
+      '99.9',
+      '-99',
+      '12345678901234567890',
+      '0.1234567890123',
+    ];
+    const word = fc.oneof(decimals(0), decimals(1), decimals(2), decimals(7), fc.constantFrom(...odd));
+    const row = fc.record({
+      flags: fc.constantFrom('', 'A', '?9?9', 'B8E8É'),
+      values: fc.tuple(word, word, word, word),
+    });
+    const property = fc.property(
+      fc.array(row, { minLength: 60, maxLength: 60 }),
+      fc.constantFrom('\n', '\r\n'),
+      (rows, end) => {
+        const lines = epwLines();
+        const padded = epwLines();
+        for (const [nth, { flags, values }] of rows.entries()) {
+          const fields = (lines[at(100 * nth)] ?? '').split(',').toSpliced(FLAGS, 5, flags, ...values);
+          lines[at(100 * nth)] = fields.join(',');
+          padded[at(100 * nth)] = fields.map((field, index) => (index === FLAGS ? field : ` ${field}\t`)).join(',');
+        }
+        const plain = readUsable(bytesOf(lines.join(end) + end));
+        const blanks = readUsable(bytesOf(padded.join(end) + end));
+        expect(plain.findings).toEqual(blanks.findings);
+        for (const name of ['dryBulbC', 'humidityRatio', 'pressurePa', 'flags', 'lines'] as const) {
+          const [one, other] = [plain.hours[name], blanks.hours[name]];
+          expect(
+            one.every((value, slot) => Object.is(value, other[slot])),
+            name,
+          ).toBe(true);
+        }
+      },
+    );
+    fc.assert(property, propertySettings(4));
   });
 
   test('a last line cut short is left out and told, and the hour is told as absent', () => {

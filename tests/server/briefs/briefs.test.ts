@@ -4,6 +4,7 @@ import type { BriefPreview, BriefVersionRecord, BriefVersionView } from '../../.
 import type { ErrorBody } from '../../../src/contract/errors.ts';
 import type { Place, ProgrammeMap } from '../../../src/contract/runs.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
+import { numberRanges, pricedPreset, withValue } from '../../support/brief-ranges.ts';
 import { epwText } from '../../support/epw-text.ts';
 import { eventually } from '../../support/eventually.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
@@ -136,16 +137,39 @@ describe('saving a version', () => {
     expect(await road.countRows()).toEqual(before);
   });
 
-  it('says what contradicts itself across fields', async () => {
+  it('refuses every number out of its range, of every use, all in one answer, and no text or blank in its place', async () => {
+    const { briefId } = await newBrief('office');
+    let refused = 0;
+    for (const preset of new Set(numberRanges.map((range) => range.preset))) {
+      const ranges = numberRanges.filter((range) => range.preset === preset);
+      for (const wrong of ['below', 'above', 'text'] as const) {
+        const body = ranges.reduce(
+          (held, range) => withValue(held, range.path, wrong === 'text' ? 'warm' : range[wrong]),
+          pricedPreset(preset),
+        );
+        const { body: error }: { body: ErrorBody } = await save(briefId, { basedOn: 1, body }).expect(400);
+        const paths = error.problems.map(({ path }) => path);
+        for (const { path } of ranges) expect(paths, `${preset}, ${wrong}`).toContain(`body.body.${path}`);
+        for (const { message } of error.problems) expect(message).not.toMatch(/NaN|undefined|null/);
+        refused += ranges.length;
+      }
+    }
+    expect(refused).toBe(3 * numberRanges.length);
+    expect(await versionsOf(briefId)).toHaveLength(1);
+  });
+
+  it('says what contradicts itself across fields, beside what is out of range', async () => {
     const { briefId } = await newBrief('office');
     const body = {
       ...presetBrief('office'),
       caps: { roomRhPct: 40 },
       lowerLimits: { roomRhPct: 50 },
       balanceTempC: 40,
+      cycles: 1,
     };
     const { body: error }: { body: ErrorBody } = await save(briefId, { basedOn: 1, body }).expect(400);
     expect(error.problems.map(({ path }) => path)).toEqual([
+      'body.body.cycles',
       'body.body.lowerLimits.roomRhPct',
       'body.body.balanceTempC',
     ]);
@@ -293,6 +317,20 @@ describe('a draft beside the form', () => {
       ).toBe(8760);
     }
     expect(await road.countRows()).toEqual(before);
+  });
+
+  it('that no hour can fulfil is answered honestly: nothing met, no demand, no price', async () => {
+    const cold = { ...fixedAt(presetBrief('office'), 2), balanceTempC: -10 };
+    const { body: hopeless }: { body: BriefPreview } = await preview(cold).expect(200);
+    expect(hopeless.ledger).toMatchObject({ met: 0 });
+    expect(hopeless.verdict).toBe('does not');
+    const { body: idle }: { body: BriefPreview } = await preview({
+      ...presetBrief('office'),
+      limit: { kind: 'fixed', tempC: 60 },
+      balanceTempC: 60,
+    }).expect(200);
+    expect(idle).toMatchObject({ score: null, scoreNote: 'not applicable: no demand' });
+    expect(idle.parts.map(({ points }) => points)).toEqual(idle.parts.map(() => null));
   });
 
   it('with faults is answered by them, and for a station of another team by not found', async () => {

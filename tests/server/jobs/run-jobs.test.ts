@@ -38,6 +38,7 @@ async function startWith(reading: {
   const tasks: JobTasks = {
     'read-weather-file': { dead: nothing, ...reading },
     'judge-year': { run: nothing, dead: nothing },
+    'open-weather-archive': { run: nothing, dead: nothing },
   };
   worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
 }

@@ -6,6 +6,7 @@ import { type RescoreThreads, rescore } from '../../../server/features/runs/resc
 import { bytesOfYear, listYearsToRescore } from '../../../server/features/runs/rescore-read-model.ts';
 import { packedOver } from '../../../server/features/runs/shared-columns.ts';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
+import type { WebThreads } from '../../../server/jobs/web-threads.ts';
 import type { RescoreAnswer } from '../../../src/contract/rescore.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
 import { METHOD_VERSION } from '../../../src/engine/conventions.ts';
@@ -19,7 +20,7 @@ let road: Road;
 let team: RoadTeam;
 let viewer: Member;
 let desk: TeamDesk;
-let threads: RescoreThreads;
+let threads: WebThreads;
 const goesOn = new AbortController().signal;
 const drierBrief: Brief = { ...officeBrief(), effDirect: 0.7, caps: { roomRhPct: 55 } };
 
@@ -146,10 +147,10 @@ describe('many station-years', () => {
     let taken = 0;
     const counting: RescoreThreads = {
       ...threads,
-      run: (task, signal) => {
+      rescore: (task, signal) => {
         taken += 1;
         if (taken === 3) gone.abort(new Error('the client has gone'));
-        return threads.run(task, signal);
+        return threads.rescore(task, signal);
       },
     };
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });

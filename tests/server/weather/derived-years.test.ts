@@ -189,11 +189,12 @@ describe('a derived year', () => {
   });
 
   it('keeps what it was made of as its original, and says who made it in the audit trail', async () => {
-    const { body: text } = await engineer.agent
+    const { body: text, headers } = await engineer.agent
       .get(`${filePath(file.id)}/original`)
       .buffer()
       .parse(toBuffer)
       .expect(200);
+    expect(headers['content-disposition']).toContain('Two kelvin warmer.json');
     expect(createHash('sha256').update(text).digest('hex')).toBe(file.fingerprint);
     const { fingerprint } = (await desk.record(parentId)).file;
     expect(JSON.parse(text.toString('utf8'))).toMatchObject({ humidityRule: 'ratio-kept', parent: { fingerprint } });

@@ -82,13 +82,15 @@ function ChosenFoot({ ids, stationId }: ChosenProps) {
   const derived = <DerivedYears derived={place.derived} teamId={teamId} mayExport={mayExport} />;
   return (
     <div aria-busy={isPlaceholderData} className={isPlaceholderData ? 'opacity-50' : ''}>
-      <div className="border-line bg-paper max-lg:mb-5 lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
-        <YearStrip place={place} teamId={teamId} mayExport={mayExport} />
-      </div>
       {place.shown === null ? (
         <div className="lg:px-5 lg:pt-7 lg:pb-14">{derived}</div>
       ) : (
-        <PlaceNotes place={place} shown={place.shown} derived={derived} />
+        <>
+          <div className="border-line bg-paper max-lg:mb-5 lg:border-b lg:px-5 lg:pt-4 lg:pb-2">
+            <YearStrip place={place} teamId={teamId} mayExport={mayExport} />
+          </div>
+          <PlaceNotes place={place} shown={place.shown} derived={derived} />
+        </>
       )}
     </div>
   );

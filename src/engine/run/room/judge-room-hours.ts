@@ -1,28 +1,33 @@
 /**
- * Method 5 and 6 for every demand hour of a year in one pass: rooms held at a temperature by a stream of outdoor air whose
- * indirect stages take outdoor air as secondary air. The same decisions as `judgeSupplyAirHour`, which judges one hour for any
- * brief, made on numbers alone; a test holds the two together. Comparisons on whole hundredths, a tie is met. Arguments are plain:
- * an object for every hour would cost as much as judging it.
+ * Method 5 and 6 for every demand hour of a year: rooms held at a temperature by a stream of outdoor air whose indirect stages
+ * take outdoor air as secondary air. The same decisions as `judgeSupplyAirHour`, which judges one hour for any brief; a test holds
+ * the two together. Comparisons on whole hundredths, a tie is met.
+ *
+ * One step after another over all hours, cheapest first, each over the hours that the last one left:
+ *
+ *   1. outdoor air     `meetByAir`      most hours end here, and no stage is looked at
+ *   2. may water run?  `findWetHours`
+ *   3. the stages      `meetByStage`, in the brief's order
+ *   4. what is left    `findLowestSupplies` within the caps, then `judgeUnmet`: `damp`, `short` or `beyond`
+ *   5. the plant       `roomPlant`
+ *
+ * Figures stand in columns by the place of the hour, and functions are told the place: an object or a boxed number for every hour
+ * would cost as much as judging it.
  */
 import { hundredths } from '../../conventions.ts';
 import { withinShare } from '../../hour-classes/demand-hour.ts';
 import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { gainsEnough } from '../../hour-classes/short-from.ts';
-import { vapourPressurePa, volumeM3PerKg } from '../../psychrometrics/moist-air.ts';
+import { vapourPressurePa } from '../../psychrometrics/moist-air.ts';
 import { tabledSaturationPa } from '../../psychrometrics/saturation-table.ts';
-import { dampReasons, type HourColumns, runningStages } from '../hour-columns.ts';
-import { capsHold, meetCaps, type RoomHour, roomHour } from './room-hour.ts';
-import type { RoomPlan } from './room-plan.ts';
-import {
-  evaporatedAt,
-  layLine,
-  ratioAt,
-  type SupplyLine,
-  shareFor,
-  shareWithinCaps,
-  supplyAt,
-  supplyLine,
-} from './supply-line.ts';
+import { dampReasons, fillWithAir, type HourColumns, inBlocks, runningStages } from '../hour-columns.ts';
+import { findLowestSupplies, runLowest } from './lowest-supply.ts';
+import { meetByStage, prepareStage } from './meet-by-stage.ts';
+import { capsHold, ratioOfVapour, roomVapourPa, supplyVapourPa } from './room-caps.ts';
+import { type RoomHours, roomHours } from './room-hours.ts';
+import { type RoomPlan, UNDECIDED } from './room-plan.ts';
+import { roomPlant } from './room-plant.ts';
+import { type WetBulbs, wetBulbAt } from './wet-bulbs-of-year.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const CLASS_OF_AIR = hourClasses.indexOf('air');
@@ -32,214 +37,139 @@ const BEYOND = hourClasses.indexOf('beyond');
 const AIR = runningStages.indexOf('air');
 const OUTSIDE = dampReasons.indexOf('outside');
 const PLANT = dampReasons.indexOf('plant');
-/** Class of an hour that a stage meets, by the stage's position in `runningStages`. */
-const CLASS_OF_STAGE = Uint8Array.from(runningStages, (stage) =>
-  stage === null || stage === 'tower' ? 0 : hourClasses.indexOf(stage),
-);
 
-/** A brief made ready, with the places that its hours are worked out in; used for any number of years, one after another. */
-export interface RoomJudge {
-  readonly plan: RoomPlan;
-  readonly hour: RoomHour;
-  readonly lines: readonly SupplyLine[];
+const workspace = roomHours();
+
+/**
+ * Judges every demand hour of a year.
+ * @param hours the demand hours as `meetDemandHours` leaves them; the rest is filled in
+ * @param wetBulbs of the same year
+ */
+export function judgeRoomHours(plan: RoomPlan, hours: HourColumns, wetBulbs: WetBulbs): void {
+  fillWithAir(hours, plan.riseKPerVolume[AIR] ?? 0);
+  inBlocks(hours.count, (from, to) => judgeBlock(plan, hours, wetBulbs, from, to));
 }
 
-export function roomJudge(plan: RoomPlan): RoomJudge {
-  return { plan, hour: roomHour(), lines: plan.stages.map(supplyLine) };
-}
-
-/** Slots of a year that have demand, with the weather and the limit of every slot. */
-export interface RoomYear {
-  readonly demandSlots: Uint16Array;
-  readonly dryBulbC: Float64Array;
-  readonly humidityRatio: Float64Array;
-  readonly pressurePa: Float64Array;
-  readonly setC: Float64Array;
-  readonly loadFraction: (dryBulbC: number) => number;
-  /** Wet bulb of each slot, °C, and the one after an indirect stage at full effect. */
-  readonly wetBulbC: Float32Array;
-  readonly secondWetBulbC: Float32Array;
-}
-
-/** Judges every demand hour of a year and writes it into the columns, from their beginning. */
-export function judgeRoomHours(judge: RoomJudge, year: RoomYear, into: HourColumns): void {
-  into.count = 0;
-  for (let index = 0; index < year.demandSlots.length; index++) {
-    const slot = year.demandSlots[index] ?? 0;
-    meetHour(judge, year, slot);
-    into.slot[into.count] = slot;
-    judgeHour(judge, into, into.count);
-    writePlant(judge, into, into.count);
-    into.count++;
+function judgeBlock(plan: RoomPlan, hours: HourColumns, wetBulbs: WetBulbs, from: number, to: number): void {
+  const room = workspace;
+  meetByAir(plan, hours, room, from, to);
+  findWetHours(plan, hours, room, wetBulbs);
+  for (const stage of plan.stages) {
+    prepareStage(stage, plan, hours, room, wetBulbs);
+    meetByStage(stage, plan, hours, room);
   }
+  findUnmet(hours, room);
+  findLowestSupplies(plan, hours, room);
+  judgeUnmet(plan, hours, room);
+  roomPlant(plan, hours, from, to);
 }
 
-/** Takes in a slot: its air, what is asked of the supply, and what the caps allow there. */
-function meetHour({ plan, hour }: RoomJudge, year: RoomYear, slot: number): void {
-  hour.dryBulbC = year.dryBulbC[slot] ?? Number.NaN;
-  hour.humidityRatio = year.humidityRatio[slot] ?? Number.NaN;
-  hour.pressurePa = year.pressurePa[slot] ?? Number.NaN;
-  hour.wetBulbC = year.wetBulbC[slot] ?? Number.NaN;
-  hour.secondWetBulbC = year.secondWetBulbC[slot] ?? Number.NaN;
-  hour.volumeM3PerKg = volumeM3PerKg(hour.dryBulbC, hour.humidityRatio, hour.pressurePa);
-  hour.setC = year.setC[slot] ?? Number.NaN;
-  hour.loadFraction = year.loadFraction(hour.dryBulbC);
-  hour.supplyAimC = hour.setC - plan.dTroomK * hour.loadFraction;
-  hour.roomRiseK = hour.setC - hour.supplyAimC;
-  hour.airC = hour.dryBulbC + (plan.riseKPerVolume[AIR] ?? 0) * hour.volumeM3PerKg;
-  hour.aimHundredths = hundredths(hour.supplyAimC);
-  meetCaps(plan, hour);
-  hour.frozen = hundredths(hour.dryBulbC) <= plan.freezeHundredths;
-  hour.dampOutside = !hour.frozen && !(hour.humidityRatio < hour.ratioUnderCaps);
-  hour.wet = false;
-}
-
-function judgeHour(judge: RoomJudge, into: HourColumns, at: number): void {
-  const { plan, hour, lines } = judge;
-  if (into.detail) writeDemand(into, at, hour);
-  into.airMeets[at] = 0;
-  into.aloneMet[at] = 0;
-  const reachedByAir = hundredths(hour.airC) <= hour.aimHundredths;
-  if (reachedByAir && !hour.dampOutside && capsHold(plan, hour, hour.airC, hour.humidityRatio)) {
-    writeMet(into, at, hour.frozen ? FROZEN : CLASS_OF_AIR);
-    writeAir(into, at, hour);
-    into.airMeets[at] = 1;
-    into.aloneMet[at] = plan.allAlone;
-    return;
-  }
-  hour.wet = !hour.frozen && waterMayRun(plan, hour);
-  if (hour.wet) for (let nth = 0; nth < lines.length; nth++) layLine(lineAt(lines, nth), plan, hour);
-  if (!hour.wet || hour.dampOutside || !metByStage(judge, into, at)) writeUnmet(judge, into, at);
-}
-
-function lineAt(lines: readonly SupplyLine[], nth: number): SupplyLine {
-  const line = lines[nth];
-  if (line === undefined) throw new RangeError(`no stage of the number ${nth}`);
-  return line;
-}
-
-/** Cut-in, start temperature and the ceiling of outdoor humidity (method 4). */
-function waterMayRun(plan: RoomPlan, hour: RoomHour): boolean {
-  const roomByAirC = hour.airC + plan.dTroomK * hour.loadFraction;
-  if (hundredths(roomByAirC) < plan.startHundredths) return false;
-  if (plan.outdoorShare !== Number.POSITIVE_INFINITY) {
-    const vapourPa = vapourPressurePa(hour.humidityRatio, hour.pressurePa);
-    if (!(vapourPa < plan.outdoorShare * tabledSaturationPa(hour.dryBulbC))) return false;
-  }
-  return hundredths(hour.dryBulbC) - hundredths(hour.wetBulbC) >= plan.cutInHundredths;
-}
-
-/** The first stage that reaches t_sup within the caps runs, with the x that just does; the others are marked as able to. */
-function metByStage({ plan, hour, lines }: RoomJudge, into: HourColumns, at: number): boolean {
-  let alone = 0;
-  for (let nth = 0; nth < lines.length; nth++) {
-    const line = lineAt(lines, nth);
-    if (hundredths(supplyAt(line, 1)) > hour.aimHundredths) continue;
-    const share = plan.onOff ? 1 : shareFor(line, hour.supplyAimC);
-    if (!capsHold(plan, hour, supplyAt(line, share), ratioAt(line, hour, share))) continue;
-    if (alone === 0) {
-      writeMet(into, at, CLASS_OF_STAGE[line.stage] ?? 0);
-      writeStage(into, at, plan, hour, line, share);
+/** `air`, and `frozen` hours that air meets; every other hour is listed, marked as `damp` where outdoor moisture itself breaks a cap. */
+function meetByAir(plan: RoomPlan, hours: HourColumns, room: RoomHours, from: number, to: number): void {
+  const freezeEdge = plan.freezeHundredths + 0.5;
+  let capsOfSetC = Number.NaN;
+  let capsOfAimC = Number.NaN;
+  let roomPa = Number.NaN;
+  let supplyPa = Number.NaN;
+  let aimEdge = Number.NaN;
+  const { unmetByAir } = room;
+  unmetByAir.count = 0;
+  for (let at = from; at < to; at++) {
+    const setC = hours.setC[at] ?? 0;
+    const aimC = hours.supplyAimC[at] ?? 0;
+    if (setC !== capsOfSetC || aimC !== capsOfAimC) {
+      capsOfSetC = setC;
+      capsOfAimC = aimC;
+      roomPa = roomVapourPa(plan, aimC + (setC - aimC));
+      supplyPa = supplyVapourPa(plan, aimC);
+      aimEdge = hundredths(aimC) + 0.5;
     }
-    alone |= 1 << line.stage;
+    const pressurePa = hours.pressurePa[at] ?? 0;
+    const inRoom = ratioOfVapour(roomPa, pressurePa) - plan.dwRoomKgKg;
+    const underCaps = plan.capsSupply ? Math.min(inRoom, ratioOfVapour(supplyPa, pressurePa)) : inRoom;
+    room.ratioUnderCaps[at] = underCaps;
+    room.aimEdge[at] = aimEdge;
+    const ratio = hours.humidityRatio[at] ?? 0;
+    const airC = hours.airSupplyC[at] ?? 0;
+    const frozen = 100 * (hours.dryBulbC[at] ?? 0) < freezeEdge;
+    const dampOutside = !frozen && !(ratio < underCaps);
+    if (100 * airC < aimEdge && !dampOutside && capsHold(plan, hours, room, at, airC, ratio)) {
+      hours.classCode[at] = frozen ? FROZEN : CLASS_OF_AIR;
+      hours.airMeets[at] = 1;
+      hours.aloneMet[at] = plan.allAlone;
+    } else {
+      hours.classCode[at] = UNDECIDED;
+      hours.airMeets[at] = 0;
+      hours.aloneMet[at] = 0;
+      if (dampOutside) hours.damp[at] = OUTSIDE;
+      unmetByAir.places[unmetByAir.count++] = at;
+    }
   }
-  into.aloneMet[at] = alone;
-  return alone !== 0;
+}
+
+/** Freeze lockout, cut-in, start temperature and the ceiling of outdoor humidity (method 4). */
+function findWetHours(plan: RoomPlan, hours: HourColumns, room: RoomHours, wetBulbs: WetBulbs): void {
+  const { places, count } = room.unmetByAir;
+  const { wet } = room;
+  wet.count = 0;
+  for (let index = 0; index < count; index++) {
+    const at = places[index] ?? 0;
+    const tempHundredths = hundredths(hours.dryBulbC[at] ?? 0);
+    const wetC = wetBulbAt(wetBulbs, hours, at);
+    room.wetBulbC[at] = wetC;
+    const mayWet =
+      tempHundredths > plan.freezeHundredths &&
+      tempHundredths - hundredths(wetC) >= plan.cutInHundredths &&
+      warmEnoughToStart(plan, hours, at) &&
+      dryEnoughOutdoors(plan, hours, at);
+    room.mayWet[at] = mayWet ? 1 : 0;
+    if (mayWet && hours.damp[at] !== OUTSIDE) wet.places[wet.count++] = at;
+  }
+}
+
+function warmEnoughToStart(plan: RoomPlan, hours: HourColumns, at: number): boolean {
+  if (plan.startHundredths === Number.NEGATIVE_INFINITY) return true;
+  const roomByAirC = (hours.airSupplyC[at] ?? 0) + plan.dTroomK * (hours.loadFraction[at] ?? 0);
+  return hundredths(roomByAirC) >= plan.startHundredths;
+}
+
+function dryEnoughOutdoors(plan: RoomPlan, hours: HourColumns, at: number): boolean {
+  if (plan.outdoorShare === Number.POSITIVE_INFINITY) return true;
+  const vapourPa = vapourPressurePa(hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
+  return vapourPa < plan.outdoorShare * tabledSaturationPa(hours.dryBulbC[at] ?? 0);
+}
+
+function findUnmet(hours: HourColumns, room: RoomHours): void {
+  const { places, count } = room.unmetByAir;
+  const { unmet } = room;
+  unmet.count = 0;
+  for (let index = 0; index < count; index++) {
+    const at = places[index] ?? 0;
+    if (hours.classCode[at] === UNDECIDED) unmet.places[unmet.count++] = at;
+  }
 }
 
 /** `damp`, `short` or `beyond` (or `frozen`), with the shortfall from T*, the lowest supply within the caps. */
-function writeUnmet({ plan, hour, lines }: RoomJudge, into: HourColumns, at: number): void {
-  let lowestC = capsHold(plan, hour, hour.airC, hour.humidityRatio) ? hour.airC : Number.POSITIVE_INFINITY;
-  let lowestLine: SupplyLine | null = null;
-  let lowestShare = 0;
-  let uncappedC = hour.airC;
-  if (hour.wet) {
-    for (let nth = 0; nth < lines.length; nth++) {
-      const line = lineAt(lines, nth);
-      const fullC = supplyAt(line, 1);
-      uncappedC = Math.min(uncappedC, fullC);
-      // Not even full wetting would be lower.
-      if (fullC >= lowestC) continue;
-      const share = shareWithinCaps(line, plan, hour);
-      if (!(supplyAt(line, share) < lowestC)) continue;
-      lowestC = supplyAt(line, share);
-      lowestLine = line;
-      lowestShare = share;
-    }
+function judgeUnmet(plan: RoomPlan, hours: HourColumns, room: RoomHours): void {
+  const { places, count } = room.unmet;
+  for (let index = 0; index < count; index++) {
+    const at = places[index] ?? 0;
+    const airC = hours.airSupplyC[at] ?? 0;
+    const aimC = hours.supplyAimC[at] ?? 0;
+    const lowestC = room.lowestC[at] ?? 0;
+    const uncappedC = room.uncappedC[at] ?? 0;
+    const frozen = hundredths(hours.dryBulbC[at] ?? 0) <= plan.freezeHundredths;
+    const dampOutside = hours.damp[at] === OUTSIDE;
+    const enough = room.mayWet[at] === 1 && 100 * uncappedC < (room.aimEdge[at] ?? 0);
+    const damp = !frozen && (dampOutside || enough);
+    const short = !frozen && !damp && (room.lowestNth[at] ?? 0) >= 0 && gainsEnough(airC, lowestC);
+    hours.classCode[at] = frozen ? FROZEN : damp ? DAMP : short ? SHORT : BEYOND;
+    hours.met[at] = 0;
+    if (damp && !dampOutside) hours.damp[at] = PLANT;
+    hours.shortfallK[at] = Math.max(0, (lowestC === Number.POSITIVE_INFINITY ? airC : lowestC) - aimC);
+    hours.uncappedShortfallK[at] = Math.max(0, uncappedC - aimC);
+    if (short) runLowest(plan, hours, room, at);
+    const setC = hours.setC[at] ?? 0;
+    hours.carriedShare[at] = damp ? 0 : withinShare((setC - (hours.supplyC[at] ?? 0)) / (setC - aimC));
   }
-  const enough = hundredths(uncappedC) <= hour.aimHundredths;
-  const short = lowestLine !== null && gainsEnough(hour.airC, lowestC);
-  const damp = !hour.frozen && (hour.dampOutside || (enough && hour.wet));
-  writeMet(into, at, hour.frozen ? FROZEN : damp ? DAMP : short ? SHORT : BEYOND);
-  into.met[at] = 0;
-  into.damp[at] = damp ? (hour.dampOutside ? OUTSIDE : PLANT) : 0;
-  into.shortfallK[at] = Math.max(0, (lowestC === Number.POSITIVE_INFINITY ? hour.airC : lowestC) - hour.supplyAimC);
-  into.uncappedShortfallK[at] = Math.max(0, uncappedC - hour.supplyAimC);
-  if (into.classCode[at] === SHORT && lowestLine !== null) {
-    writeStage(into, at, plan, hour, lowestLine, lowestShare);
-  } else writeAir(into, at, hour);
-  const carried = (hour.setC - (into.supplyC[at] ?? 0)) / (hour.setC - hour.supplyAimC);
-  into.carriedShare[at] = damp ? 0 : withinShare(carried);
-}
-
-function writeDemand(into: HourColumns, at: number, hour: RoomHour): void {
-  into.dryBulbC[at] = hour.dryBulbC;
-  into.humidityRatio[at] = hour.humidityRatio;
-  into.pressurePa[at] = hour.pressurePa;
-  into.volumeM3PerKg[at] = hour.volumeM3PerKg;
-  into.setC[at] = hour.setC;
-  into.supplyAimC[at] = hour.supplyAimC;
-  into.loadFraction[at] = hour.loadFraction;
-  into.airSupplyC[at] = hour.airC;
-}
-
-function writeMet(into: HourColumns, at: number, classCode: number): void {
-  into.classCode[at] = classCode;
-  into.met[at] = 1;
-  into.damp[at] = 0;
-  into.shortfallK[at] = 0;
-  into.uncappedShortfallK[at] = 0;
-  into.carriedShare[at] = 1;
-}
-
-function writeAir(into: HourColumns, at: number, hour: RoomHour): void {
-  into.running[at] = AIR;
-  into.supplyC[at] = hour.airC;
-  into.supplyRatio[at] = hour.humidityRatio;
-  into.evaporatedKgPerKg[at] = 0;
-  into.share[at] = 0;
-  into.waterC[at] = Number.NaN;
-}
-
-function writeStage(
-  into: HourColumns,
-  at: number,
-  plan: RoomPlan,
-  hour: RoomHour,
-  line: SupplyLine,
-  share: number,
-): void {
-  into.running[at] = line.stage;
-  into.supplyC[at] = supplyAt(line, share);
-  into.supplyRatio[at] = ratioAt(line, hour, share);
-  into.evaporatedKgPerKg[at] = evaporatedAt(line, plan, hour, share);
-  into.share[at] = share;
-  into.waterC[at] = line.waterC;
-}
-
-/** Water and electricity of the hour, method 6, per kW of design load: `supplyAirPlantHour` on columns. */
-function writePlant({ plan, hour }: RoomJudge, into: HourColumns, at: number): void {
-  const volume = hour.volumeM3PerKg;
-  const evaporatedLitres = plan.litresPerRatio * (into.evaporatedKgPerKg[at] ?? 0);
-  const carried = into.carriedShare[at] ?? 0;
-  const backUpKw = hour.loadFraction * (1 - carried);
-  const running = into.running[at] ?? 0;
-  const pumpKw = running === AIR ? 0 : plan.pumpKwPerKw * hour.loadFraction;
-  const rests = plan.economy && into.airMeets[at] === 1;
-  into.evaporatedLitres[at] = evaporatedLitres;
-  into.makeUpLitres[at] = evaporatedLitres * plan.makeUpPerEvaporated;
-  into.coolingKwh[at] = hour.loadFraction * carried;
-  into.kwh[at] = (plan.fanKwhPerVolume[running] ?? 0) * volume + pumpKw + backUpKw * plan.kwhPerKwh;
-  into.referenceKwh[at] = (plan.fanKwhPerVolume[AIR] ?? 0) * volume + (rests ? 0 : hour.loadFraction * plan.kwhPerKwh);
-  into.backUpKw[at] = backUpKw;
 }

@@ -5,10 +5,18 @@
  */
 import type { Brief, Stage } from '../../brief/brief.ts';
 import { hundredths } from '../../conventions.ts';
+import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { saturationPressurePa } from '../../psychrometrics/moist-air.ts';
 import { DRY_AIR_KJ_PER_KG_K, fanRiseK } from '../../stages/stage-path.ts';
 import { makeUpLitres, SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { runningStages } from '../hour-columns.ts';
+
+/** Class of an hour that a stage meets, by the stage's position in `runningStages`. */
+export const CLASS_OF_STAGE = Uint8Array.from(runningStages, (stage) =>
+  stage === null || stage === 'tower' ? 0 : hourClasses.indexOf(stage),
+);
+/** An hour that nothing has met yet: a class that no demand hour has. */
+export const UNDECIDED = hourClasses.indexOf('closed');
 
 export interface RoomPlan {
   readonly freezeHundredths: number;
@@ -22,6 +30,8 @@ export interface RoomPlan {
   readonly supplyShare: number;
   /** Vapour of the supply must stay under this, Pa; Infinity without a cap. */
   readonly supplyVapourPa: number;
+  /** Whether the supply has a cap of its own. */
+  readonly capsSupply: boolean;
   readonly onOff: boolean;
   /** Positions in `runningStages`, in the brief's order. */
   readonly stages: readonly number[];
@@ -45,8 +55,16 @@ export interface RoomPlan {
   readonly economy: boolean;
 }
 
-/** @throws RangeError for a tower, which cools no air */
+const plans = new WeakMap<Brief, RoomPlan>();
+
+/** The plan of a brief, made once. @throws RangeError for a tower, which cools no air */
 export function roomPlan(brief: Brief): RoomPlan {
+  const plan = plans.get(brief) ?? makePlan(brief);
+  plans.set(brief, plan);
+  return plan;
+}
+
+function makePlan(brief: Brief): RoomPlan {
   const { caps, fanWPerLs: fan } = brief;
   const stages = brief.stages.map(positionOf);
   const fans = Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0);
@@ -62,6 +80,7 @@ export function roomPlan(brief: Brief): RoomPlan {
       caps.supplyDewPointC === undefined
         ? Number.POSITIVE_INFINITY
         : saturationPressurePa(edgeOf(caps.supplyDewPointC)),
+    capsSupply: caps.supplyRhPct !== undefined || caps.supplyDewPointC !== undefined,
     onOff: brief.control === 'on-off',
     stages,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),

@@ -94,6 +94,9 @@ function flagColumn(input: {
   for (let slot = 0; slot < flags.length; slot++) {
     const ours = repaired[slot] ?? 0;
     const theirs = estimated[slot] ?? 0;
+    const known = !Number.isNaN((dryBulbC[slot] ?? 0) + (humidityRatio[slot] ?? 0) + (pressurePa[slot] ?? 0));
+    // As in nearly every hour, all three are measured, whose code is 0.
+    if (known && (ours | theirs | (filledDry[slot] ?? 0) | (filledHumidity[slot] ?? 0)) === 0) continue;
     flags[slot] = hourFlags({
       dryBulb: provenance(
         dryBulbC[slot],
@@ -134,10 +137,10 @@ function restoreHumidity(
 /** 1 where an hour has a humidity but no pressure, which is so in every hour or in none. */
 function waitingForPressure(steps: StepColumns, source: HumiditySource): Uint8Array {
   const waiting = new Uint8Array(steps.slotCount);
+  if (!Number.isNaN(steps.pressurePa[0])) return waiting;
   const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
   for (let step = 0; step < column.length; step++) {
-    const waits = !Number.isNaN(column[step]) && Number.isNaN(steps.pressurePa[step]);
-    if (waits) waiting[Math.floor(step / steps.stepsPerHour)] = 1;
+    if (!Number.isNaN(column[step])) waiting[Math.floor(step / steps.stepsPerHour)] = 1;
   }
   return waiting;
 }

@@ -48,6 +48,8 @@ export function chooseHumidity(
     findings.add({
       code: 'rh-dew-disagree',
       severity: 'doubt',
+      variable: 'humidity',
+      done: 'the dew point is used',
       line: disagreement.firstLine,
       count: Math.round(disagreement.count / steps.stepsPerHour),
       message: () =>
@@ -69,18 +71,13 @@ export interface GivenHumidity {
  * column, which was mostly computed from the same values.
  */
 export function givenHumidity(steps: StepColumns): GivenHumidity {
-  return {
-    hours: countKnown(steps.dryBulbC, steps.dryBulbC),
-    dewHours: countKnown(steps.dewPointC, steps.dryBulbC),
-    rhHours: countKnown(steps.relativeHumidityPct, steps.dryBulbC),
-  };
-}
-
-/** Steps in which both columns hold a value. */
-function countKnown(one: Float64Array, other: Float64Array): number {
-  let known = 0;
-  for (let step = 0; step < one.length; step++) {
-    if (!Number.isNaN((one[step] ?? Number.NaN) + (other[step] ?? Number.NaN))) known++;
+  const { dewPointC, dryBulbC, relativeHumidityPct } = steps;
+  const known = { hours: 0, dewHours: 0, rhHours: 0 };
+  for (let step = 0; step < dryBulbC.length; step++) {
+    if (Number.isNaN(dryBulbC[step])) continue;
+    known.hours++;
+    if (!Number.isNaN(dewPointC[step])) known.dewHours++;
+    if (!Number.isNaN(relativeHumidityPct[step])) known.rhHours++;
   }
   return known;
 }

@@ -16,26 +16,31 @@ const AGREED_SHARE = 0.98;
 /** RH over 100 to 105 % is taken as 100; more, and 0 or less, is left out. */
 export function limitRelativeHumidity(steps: StepColumns, findings: FindingList): void {
   const column = steps.relativeHumidityPct;
-  forEachRun(markAbove(column, 100), (start, end) => {
+  const over = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (value > 100) over[step] = 1;
+    else if (value <= 0) column[step] = Number.NaN;
+  }
+  forEachRun(over, (start, end) => {
     const most = column.subarray(start, end).reduce((a, b) => Math.max(a, b), 0);
     const { first, last } = linesOfRun(steps.lines, start, end);
     const done = most <= ROUNDING_RH_PCT ? 'taken as 100 %' : 'up to 105 % taken as 100 %, more left out';
     findings.add({
       code: 'rh-over-100',
       severity: 'repair',
+      variable: 'relative humidity',
+      done,
       line: first,
       lastLine: last,
       count: end - start,
       message: () => `${linesPhrase(first, last)}: a relative humidity of ${most} %; ${done}.`,
     });
   });
-  for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    if (value > ROUNDING_RH_PCT || value <= 0) column[step] = Number.NaN;
-    else if (value > 100) {
-      column[step] = 100;
-      steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.relativeHumidity;
-    }
+  for (let step = over.indexOf(1); step >= 0; step = over.indexOf(1, step + 1)) {
+    const mended = (column[step] ?? Number.NaN) <= ROUNDING_RH_PCT;
+    column[step] = mended ? 100 : Number.NaN;
+    if (mended) steps.repaired[step] = (steps.repaired[step] ?? 0) | VALUE.relativeHumidity;
   }
 }
 
@@ -45,14 +50,7 @@ export function limitRelativeHumidity(steps: StepColumns, findings: FindingList)
  * @returns whether the dew-point column is too poor to be used, so that the relative humidity must serve
  */
 export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, findings: FindingList): boolean {
-  const excess = dewPointExcess(steps);
-  const far = markAbove(excess, ROUNDING_DEW_HUNDREDTHS);
-  const near = markAbove(excess, 0);
-  let farSteps = 0;
-  for (let step = far.indexOf(1); step >= 0; step = far.indexOf(1, step + 1)) {
-    farSteps++;
-    near[step] = 0;
-  }
+  const { excess, far, farSteps, near } = dewPointExcess(steps);
   tellExcess({ steps, excess, marks: near, large: false }, findings);
   tellExcess({ steps, excess, marks: far, large: true }, findings);
   for (let step = near.indexOf(1); step >= 0; step = near.indexOf(1, step + 1)) {
@@ -66,6 +64,7 @@ export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, fin
   findings.add({
     code: 'dew-above-dry',
     severity: 'refuse',
+    variable: 'dew point',
     count: farSteps,
     message: () =>
       `The dew point lies more than 0.5 K above the dry bulb in ${whole(farSteps / steps.stepsPerHour)} hours, over 1 % of the year: the two columns do not belong together, and nothing in the file can mend that. Bring the file anew from its source.`,
@@ -73,21 +72,32 @@ export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, fin
   return true;
 }
 
-/** How far each dew point lies above its dry bulb, hundredths of a kelvin; 0 where it does not. */
-function dewPointExcess(steps: StepColumns): Int32Array {
+/**
+ * How far each dew point lies above its dry bulb, hundredths of a kelvin, 0 where it does not; marks where that may be rounding and
+ * where it is more.
+ */
+function dewPointExcess(steps: StepColumns): {
+  excess: Int32Array;
+  near: Uint8Array;
+  far: Uint8Array;
+  farSteps: number;
+} {
   const excess = new Int32Array(steps.dewPointC.length);
+  const near = new Uint8Array(excess.length);
+  const far = new Uint8Array(excess.length);
+  let farSteps = 0;
   for (let step = 0; step < excess.length; step++) {
     const dewPointC = steps.dewPointC[step] ?? Number.NaN;
     const dryBulbC = steps.dryBulbC[step] ?? Number.NaN;
-    if (dewPointC > dryBulbC) excess[step] = hundredths(dewPointC) - hundredths(dryBulbC);
+    if (!(dewPointC > dryBulbC)) continue;
+    const over = hundredths(dewPointC) - hundredths(dryBulbC);
+    excess[step] = over;
+    if (over > ROUNDING_DEW_HUNDREDTHS) {
+      far[step] = 1;
+      farSteps++;
+    } else if (over > 0) near[step] = 1;
   }
-  return excess;
-}
-
-function markAbove(column: Float64Array | Int32Array, limit: number): Uint8Array {
-  const marks = new Uint8Array(column.length);
-  for (let step = 0; step < column.length; step++) if ((column[step] ?? limit) > limit) marks[step] = 1;
-  return marks;
+  return { excess, near, far, farSteps };
 }
 
 function tellExcess(
@@ -102,6 +112,8 @@ function tellExcess(
     findings.add({
       code: 'dew-above-dry',
       severity: large ? 'doubt' : 'repair',
+      variable: 'dew point',
+      done,
       line: first,
       lastLine: last,
       count: end - start,
@@ -129,6 +141,8 @@ function dropPoorMonths(steps: StepColumns, far: Uint8Array, findings: FindingLi
     findings.add({
       code: 'dew-above-dry',
       severity: 'doubt',
+      variable: 'dew point',
+      done: 'left out',
       count: hours,
       message: () =>
         `In ${monthNames[month - 1]} the dew point lies above the dry bulb in a fifth of the hours or more; the dew points of the whole month are left out.`,

@@ -2,8 +2,8 @@
  * Rows are matched to a calendar that is built first. The order is that of month, day and hour as they stand in the file:
  * a typical year is made of months of different years, so the year decides nothing here.
  */
-import { SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conventions.ts';
-import { monthNames, slotOf } from '../../reduction/calendar.ts';
+import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conventions.ts';
+import { monthNames, monthStartSlots, slotOf } from '../../reduction/calendar.ts';
 import { type FindingList, linesPhrase, whole } from '../finding-list.ts';
 import type { SourceRows } from './source-rows.ts';
 
@@ -55,15 +55,18 @@ function stepOfEachRow(rows: SourceRows, stepsPerHour: number, slotCount: number
   const { days, hours, minutes, months } = rows;
   const writes60 = minutes.includes(60);
   const stepMinutes = 60 / stepsPerHour;
+  const starts = monthStartSlots(slotCount);
   const steps = new Int32Array(rows.lines.length);
   for (let row = 0; row < steps.length; row++) {
-    const hour = hours[row] ?? 0;
-    const date = { month: months[row] ?? 0, day: days[row] ?? 0, hour: Math.max(hour, 1) };
-    const slot = (slotOf(date, slotCount) ?? 0) - (hour === 0 ? 1 : 0);
+    // Hour 0 is the last of the day before.
+    const slot = (starts[(months[row] ?? 1) - 1] ?? 0) + ((days[row] ?? 1) - 1) * HOURS_PER_DAY + (hours[row] ?? 1) - 1;
+    if (stepsPerHour === 1) {
+      steps[row] = Math.max(0, slot);
+      continue;
+    }
     const minute = minutes[row] ?? 0;
     const within = writes60 ? Math.ceil(minute / stepMinutes) - 1 : Math.floor(minute / stepMinutes);
-    const step = stepsPerHour === 1 ? 0 : Math.min(stepsPerHour - 1, Math.max(0, within));
-    steps[row] = Math.max(0, slot) * stepsPerHour + step;
+    steps[row] = Math.max(0, slot) * stepsPerHour + Math.min(stepsPerHour - 1, Math.max(0, within));
   }
   return steps;
 }
@@ -79,18 +82,20 @@ function placeRows(
   slotCount: number,
 ): Walk {
   const stepCount = slotCount * input.stepsPerHour;
-  const walk: Walk = { rowOfStep: new Int32Array(stepCount).fill(-1), repeats: [], outOfOrder: [], rowsRead: 0 };
+  const rowOfStep = new Int32Array(stepCount).fill(-1);
+  const walk: Walk = { rowOfStep, repeats: [], outOfOrder: [], rowsRead: 0 };
+  const severalPeriods = input.periods.length > 1;
   const lastDay = stepCount - 24 * input.stepsPerHour;
   let previous = -1;
   let highest = -1;
   let wrapped = false;
   for (let row = 0; row < steps.length; row++) {
     const step = steps[row] ?? 0;
-    const firstRow = walk.rowOfStep[step] ?? -1;
+    const firstRow = rowOfStep[step] ?? -1;
     const wraps = step < 24 * input.stepsPerHour && previous >= lastDay;
     // A second time round the calendar is another period, and so is the declared start of the next one.
     if ((wraps || wrapped) && firstRow >= 0) break;
-    if (row > 0 && startsNextPeriod(input, row, firstRow >= 0)) break;
+    if (severalPeriods && row > 0 && startsNextPeriod(input, row, firstRow >= 0)) break;
     if (wraps) {
       wrapped = true;
       highest = -1;
@@ -98,7 +103,7 @@ function placeRows(
     if (firstRow >= 0) walk.repeats.push({ row, firstRow, equal: sameValues(input.rows, row, firstRow) });
     else {
       if (step < highest) walk.outOfOrder.push(row);
-      walk.rowOfStep[step] = row;
+      rowOfStep[step] = row;
     }
     highest = Math.max(highest, step);
     previous = step;

@@ -41,7 +41,7 @@ export function settlePressure(
   }
   const medianPa = medianOf(known);
   if (!inHectopascals && !keepFar) replaceFarValues(steps, medianPa, findings);
-  fillGaps(steps, findings);
+  if (known.length < column.length) fillGaps(steps, findings);
   flagConstant(steps, findings);
   const meanPa = meanOf(column);
   if (elevationM === null) {
@@ -118,6 +118,8 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
   findings.add({
     code: 'pressure-assumed',
     severity: 'note',
+    variable: 'pressure',
+    done: 'filled',
     count: steps.slotCount,
     message: () =>
       `The file gives no usable pressure; the standard atmosphere at ${elevationM} m, ${whole(standardPa)} Pa, is taken in every hour.`,
@@ -139,6 +141,8 @@ function replaceFarValues(steps: StepColumns, medianPa: number, findings: Findin
     findings.add({
       code: 'pressure-range',
       severity: 'repair',
+      variable: 'pressure',
+      done: 'replaced by the median',
       line: first,
       lastLine: last,
       count: end - start,
@@ -171,6 +175,8 @@ function fillGaps(steps: StepColumns, findings: FindingList): void {
   findings.add({
     code: 'pressure-assumed',
     severity: 'note',
+    variable: 'pressure',
+    done: 'filled',
     line: first,
     count: filled,
     message: () =>
@@ -179,37 +185,50 @@ function fillGaps(steps: StepColumns, findings: FindingList): void {
 }
 
 function flagConstant(steps: StepColumns, findings: FindingList): void {
-  const given = (step: number) => ((steps.repaired[step] ?? 0) & VALUE.pressure) === 0;
-  const value = candidateForMost(steps.pressurePa, given);
+  const { candidate: value, most } = candidateForMost(steps);
+  if (most < CONSTANT_HOURS * steps.stepsPerHour) return;
+  const constant = new Uint8Array(steps.pressurePa.length);
   let count = 0;
-  for (let step = 0; step < steps.pressurePa.length; step++) {
-    if (steps.pressurePa[step] === value && given(step)) count++;
+  for (let step = 0; step < constant.length; step++) {
+    if (steps.pressurePa[step] !== value || isRepaired(steps, step)) continue;
+    constant[step] = 1;
+    count++;
   }
   if (count < CONSTANT_HOURS * steps.stepsPerHour) return;
-  for (let step = 0; step < steps.pressurePa.length; step++) {
-    if (given(step) && steps.pressurePa[step] === value)
-      steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
+  for (let step = 0; step < constant.length; step++) {
+    if (constant[step] === 1) steps.estimated[step] = (steps.estimated[step] ?? 0) | VALUE.pressure;
   }
   findings.add({
     code: 'pressure-constant',
     severity: 'note',
+    variable: 'pressure',
+    done: 'marked as assumed',
     count: Math.round(count / steps.stepsPerHour),
     message: () =>
       `The pressure is ${whole(value)} Pa in ${whole(count / steps.stepsPerHour)} hours: the source filled it, and it is marked as assumed.`,
   });
 }
 
-/** The only value that can stand in more than half of the steps (the vote of R. S. Boyer and J. S. Moore). */
-function candidateForMost(column: Float64Array, given: (step: number) => boolean): number {
+function isRepaired(steps: StepColumns, step: number): boolean {
+  return ((steps.repaired[step] ?? 0) & VALUE.pressure) !== 0;
+}
+
+/**
+ * The only value of the file that can stand in more than half of the steps, and in how many it can (the vote of R. S. Boyer and
+ * J. S. Moore).
+ */
+function candidateForMost(steps: StepColumns): { candidate: number; most: number } {
+  let voters = 0;
   let candidate = Number.NaN;
   let lead = 0;
-  for (let step = 0; step < column.length; step++) {
-    if (!given(step)) continue;
-    const value = column[step] ?? Number.NaN;
+  for (let step = 0; step < steps.pressurePa.length; step++) {
+    if (isRepaired(steps, step)) continue;
+    const value = steps.pressurePa[step] ?? Number.NaN;
+    voters++;
     if (lead === 0) candidate = value;
     lead += value === candidate ? 1 : -1;
   }
-  return candidate;
+  return { candidate, most: (voters + lead) / 2 };
 }
 
 function compareWithElevation(meanPa: number, elevationM: number, findings: FindingList): void {
@@ -234,6 +253,8 @@ function compareWithElevation(meanPa: number, elevationM: number, findings: Find
     findings.add({
       code: 'pressure-elevation',
       severity: 'note',
+      variable: 'pressure',
+      done: 'the pressure is used',
       message: () => `${sentence}. The pressure column is used.`,
     });
   }

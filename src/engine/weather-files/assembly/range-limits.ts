@@ -13,16 +13,16 @@ export function leaveOutImpossible(steps: StepColumns, findings: FindingList): v
 }
 
 function leaveOut(
-  input: { steps: StepColumns; column: Float64Array; name: string; limits: { low: number; high: number } },
+  input: {
+    steps: StepColumns;
+    column: Float64Array;
+    name: 'dry bulb' | 'dew point';
+    limits: { low: number; high: number };
+  },
   findings: FindingList,
 ): void {
   const { column, name, limits, steps } = input;
-  const outside = new Uint8Array(column.length);
-  for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    if (value < limits.low || value > limits.high) outside[step] = 1;
-  }
-  forEachRun(outside, (start, end) => {
+  forEachRun(markOutside(column, limits), (start, end) => {
     const values = column.subarray(start, end);
     const worst = values.reduce((far, value) => (Math.abs(value) > Math.abs(far) ? value : far), 0);
     const { first, last } = linesOfRun(steps.lines, start, end);
@@ -32,9 +32,20 @@ function leaveOut(
       line: first,
       lastLine: last,
       count: end - start,
+      variable: name,
+      done: 'left out',
       message: () =>
         `${linesPhrase(first, last)}: a ${name} of ${worst} °C lies outside ${limits.low} to ${limits.high} °C; ${end - start === 1 ? 'the value is' : 'the values are'} left out.`,
     });
     values.fill(Number.NaN);
   });
+}
+
+function markOutside(column: Float64Array, limits: { low: number; high: number }): Uint8Array {
+  const marks = new Uint8Array(column.length);
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (value < limits.low || value > limits.high) marks[step] = 1;
+  }
+  return marks;
 }

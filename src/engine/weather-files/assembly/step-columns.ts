@@ -26,25 +26,36 @@ export function stepColumns(input: {
   stepsPerHour: number;
 }): StepColumns {
   const { rows, rowOfStep } = input;
-  const lines = new Uint32Array(rowOfStep.length);
-  const estimated = new Uint8Array(rowOfStep.length);
-  for (let step = 0; step < rowOfStep.length; step++) {
-    const row = rowOfStep[step] ?? -1;
-    if (row < 0) continue;
-    lines[step] = rows.lines[row] ?? 0;
-    estimated[step] = rows.estimated[row] ?? 0;
-  }
   return {
     slotCount: input.slotCount,
     stepsPerHour: input.stepsPerHour,
-    lines,
+    lines: linesOnSteps(rows.lines, rowOfStep),
     dryBulbC: onSteps(rows.dryBulbC, rowOfStep),
     dewPointC: onSteps(rows.dewPointC, rowOfStep),
     relativeHumidityPct: onSteps(rows.relativeHumidityPct, rowOfStep),
     pressurePa: onSteps(rows.pressurePa, rowOfStep),
-    estimated,
+    estimated: bitsOnSteps(rows.estimated, rowOfStep),
     repaired: new Uint8Array(rowOfStep.length),
   };
+}
+
+// One function for each kind of column, and nothing after the loop, or the machine's compiler sees several kinds in one place.
+function linesOnSteps(lines: Uint32Array, rowOfStep: Int32Array): Uint32Array {
+  const column = new Uint32Array(rowOfStep.length);
+  for (let step = 0; step < rowOfStep.length; step++) {
+    const row = rowOfStep[step] ?? -1;
+    if (row >= 0) column[step] = lines[row] ?? 0;
+  }
+  return column;
+}
+
+function bitsOnSteps(bits: Uint8Array, rowOfStep: Int32Array): Uint8Array {
+  const column = new Uint8Array(rowOfStep.length);
+  for (let step = 0; step < rowOfStep.length; step++) {
+    const row = rowOfStep[step] ?? -1;
+    if (row >= 0) column[step] = bits[row] ?? 0;
+  }
+  return column;
 }
 
 function onSteps(values: Float64Array, rowOfStep: Int32Array): Float64Array {

@@ -34,8 +34,17 @@ const NEXT_FIELD = 11;
 export class PlainRowReader {
   /** What the last row held; its line and its estimated values are the caller's to set. */
   readonly row: SourceRow = {
-    ...{ line: 0, year: 0, month: 0, day: 0, hour: 0, minute: 0, estimated: 0 },
-    ...{ dryBulbC: Number.NaN, dewPointC: Number.NaN, relativeHumidityPct: Number.NaN, pressurePa: Number.NaN },
+    line: 0,
+    year: 0,
+    month: 0,
+    day: 0,
+    hour: 0,
+    minute: 0,
+    dryBulbC: Number.NaN,
+    dewPointC: Number.NaN,
+    relativeHumidityPct: Number.NaN,
+    pressurePa: Number.NaN,
+    estimated: 0,
   };
   fieldCount = 0;
   /** Where the source flags begin, and the byte after them. */
@@ -47,8 +56,10 @@ export class PlainRowReader {
 
   readonly #bytes: Uint8Array;
   readonly #words: DataView;
-  #at = 0;
-  #plain = true;
+  /** Year, month, day, hour and minute. */
+  readonly #times = new Int32Array(5);
+  /** Dry bulb, dew point, relative humidity and pressure as they stand. */
+  readonly #values = new Float64Array(4);
 
   constructor(bytes: Uint8Array) {
     this.#bytes = bytes;
@@ -57,69 +68,95 @@ export class PlainRowReader {
 
   /** Reads the line that begins at a byte; false when it is not plain, and then nothing of it counts. */
   read(start: number): boolean {
+    const flags = this.#readTimes(start);
+    if (flags < 0) return false;
+    this.flagsStart = flags;
+    this.flagsEnd = this.#commaFrom(flags);
+    if (this.flagsEnd < 0) return false;
+    const rest = this.#readValues(this.flagsEnd + 1);
+    return rest >= 0 && this.#countFields(rest);
+  }
+
+  /** Reads whole numbers of digits alone, each with the comma after it. Answers where they end, -1 when they are not so. */
+  #readTimes(start: number): number {
+    const bytes = this.#bytes;
+    const times = this.#times;
+    let at = start;
+    for (let place = 0; place < times.length; place++) {
+      const first = at;
+      let value = 0;
+      let digit = (bytes[at] ?? 0) - ZERO;
+      for (; digit >= 0 && digit <= 9 && at < first + MOST_DIGITS; digit = (bytes[at] ?? 0) - ZERO) {
+        value = value * 10 + digit;
+        at++;
+      }
+      if (at === first || bytes[at] !== COMMA) return -1;
+      times[place] = value;
+      at++;
+    }
+    return this.#takeTimes() ? at : -1;
+  }
+
+  /** Whether the calendar has such an hour, in a leap year at least. */
+  #takeTimes(): boolean {
     const { row } = this;
-    this.#at = start;
-    this.#plain = true;
-    row.year = this.#wholeNumber();
-    row.month = this.#wholeNumber();
-    row.day = this.#wholeNumber();
-    row.hour = this.#wholeNumber();
-    row.minute = this.#wholeNumber();
-    if (!this.#plain || !exists(row)) return false;
-    this.#passFlags();
-    row.dryBulbC = temperatureWithoutCodes(this.#number());
-    row.dewPointC = temperatureWithoutCodes(this.#number());
-    row.relativeHumidityPct = humidityWithoutCodes(this.#number());
-    row.pressurePa = pressureWithoutCodes(this.#number());
-    return this.#plain && this.#countFields();
+    const times = this.#times;
+    const month = times[1] ?? 0;
+    const day = times[2] ?? 0;
+    const hour = times[3] ?? 0;
+    const minute = times[4] ?? 0;
+    row.year = times[0] ?? 0;
+    row.month = month;
+    row.day = day;
+    row.hour = hour;
+    row.minute = minute;
+    return day >= 1 && day <= daysInMonth(month, true) && hour <= 24 && minute <= 60;
   }
 
-  /** A number of digits alone, and the comma after it. */
-  #wholeNumber(): number {
+  /** Reads numbers with their decimals, each with the comma after it, NaN for an empty field; answers as `#readTimes` does. */
+  #readValues(start: number): number {
     const bytes = this.#bytes;
-    const start = this.#at;
+    const values = this.#values;
     let at = start;
-    let value = 0;
-    for (; at < start + MOST_DIGITS; at++) {
-      const digit = (bytes[at] ?? 0) - ZERO;
-      if (digit < 0 || digit > 9) break;
-      value = value * 10 + digit;
+    for (let place = 0; place < values.length; place++) {
+      const negative = bytes[at] === MINUS;
+      if (negative) at++;
+      const first = at;
+      let mantissa = 0;
+      let point = -1;
+      for (; at <= first + MOST_DIGITS; at++) {
+        const byte = bytes[at] ?? 0;
+        const digit = byte - ZERO;
+        if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
+        else if (byte === POINT && point < 0) point = at;
+        else break;
+      }
+      const digits = at - first - (point < 0 ? 0 : 1);
+      const empty = digits === 0 && !negative && point < 0;
+      if (bytes[at] !== COMMA || digits > MOST_DIGITS || (digits === 0 && !empty)) return -1;
+      const value = point < 0 ? mantissa : mantissa / (POWERS_OF_TEN[at - point - 1] ?? 1);
+      values[place] = empty ? Number.NaN : negative ? -value : value;
+      at++;
     }
-    if (at === start || bytes[at] !== COMMA) this.#plain = false;
-    this.#at = at + 1;
-    return value;
+    this.#takeValues();
+    return at;
   }
 
-  /** A number with its decimals, and the comma after it; NaN for an empty field. */
-  #number(): number {
-    const bytes = this.#bytes;
-    const negative = bytes[this.#at] === MINUS;
-    const start = negative ? this.#at + 1 : this.#at;
-    let at = start;
-    let mantissa = 0;
-    let point = -1;
-    for (; at <= start + MOST_DIGITS; at++) {
-      const byte = bytes[at] ?? 0;
-      const digit = byte - ZERO;
-      if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
-      else if (byte === POINT && point < 0) point = at;
-      else break;
-    }
-    this.#at = at + 1;
-    const digits = at - start - (point < 0 ? 0 : 1);
-    const empty = digits === 0 && !negative && point < 0;
-    if (bytes[at] !== COMMA || digits > MOST_DIGITS || (digits === 0 && !empty)) this.#plain = false;
-    if (empty) return Number.NaN;
-    const value = point < 0 ? mantissa : mantissa / (POWERS_OF_TEN[at - point - 1] ?? 1);
-    return negative ? -value : value;
+  #takeValues(): void {
+    const { row } = this;
+    const values = this.#values;
+    row.dryBulbC = temperatureWithoutCodes(values[0] ?? 0);
+    row.dewPointC = temperatureWithoutCodes(values[1] ?? 0);
+    row.relativeHumidityPct = humidityWithoutCodes(values[2] ?? 0);
+    row.pressurePa = pressureWithoutCodes(values[3] ?? 0);
   }
 
-  /** Passes over the source flags and the comma after them. */
-  #passFlags(): void {
+  /** The first comma from a byte on; -1 when a control character comes before it. */
+  #commaFrom(start: number): number {
     const bytes = this.#bytes;
     const words = this.#words;
     const lastWord = bytes.length - WORD;
-    let at = this.#at;
+    let at = start;
     for (; at <= lastWord; at += WORD) {
       const word = words.getInt32(at, true);
       const apart = word ^ COMMAS;
@@ -127,19 +164,16 @@ export class PlainRowReader {
       if ((((apart - ONES) & ~apart) | ((word - SPACES) & ~word)) & HIGHEST_BITS) break;
     }
     while ((bytes[at] ?? 0) >= SPACE && bytes[at] !== COMMA) at++;
-    if (bytes[at] !== COMMA) this.#plain = false;
-    this.flagsStart = this.#at;
-    this.flagsEnd = at;
-    this.#at = at + 1;
+    return bytes[at] === COMMA ? at : -1;
   }
 
   /** Counts the fields up to the line end; false without one. */
-  #countFields(): boolean {
+  #countFields(start: number): boolean {
     const bytes = this.#bytes;
     const words = this.#words;
     const lastBlock = bytes.length - BLOCK;
     let fields = NEXT_FIELD;
-    let at = this.#at;
+    let at = start;
     while (at < bytes.length) {
       for (; at <= lastBlock; at += BLOCK) {
         const a = words.getInt32(at, true);
@@ -178,9 +212,4 @@ function bytesApart(a: number, b: number, c: number, d: number): number {
     ((((c ^ COMMAS) + LOWER_BITS) >>> 7) & ONES) +
     ((((d ^ COMMAS) + LOWER_BITS) >>> 7) & ONES);
   return Math.imul(bits, ONES) >>> 24;
-}
-
-/** Whether the calendar has such an hour, in a leap year at least. */
-function exists({ month, day, hour, minute }: SourceRow): boolean {
-  return day >= 1 && day <= daysInMonth(month, true) && hour <= 24 && minute <= 60;
 }

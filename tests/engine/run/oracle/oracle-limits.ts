@@ -28,9 +28,13 @@ function dayMeans(dryBulbC: Float64Array): readonly number[] {
   return means;
 }
 
-/** Running mean of each day over the 30 days before it; wrapped where the year is no calendar year. */
+/**
+ * Running mean of each day over the 30 days before it; wrapped where the year is no calendar year. A day with none before it
+ * takes the first mean known (ours).
+ */
 function runningMeans(dryBulbC: Float64Array, wrapped: boolean): readonly number[] {
   const means = dayMeans(dryBulbC);
+  const first = means.find((mean) => !Number.isNaN(mean)) ?? Number.NaN;
   return means.map((_mean, day) => {
     let sum = 0;
     let weights = 0;
@@ -42,7 +46,7 @@ function runningMeans(dryBulbC: Float64Array, wrapped: boolean): readonly number
       sum += weight * mean;
       weights += weight;
     }
-    return weights === 0 ? Number.NaN : sum / weights;
+    return weights === 0 ? first : sum / weights;
   });
 }
 

@@ -1,7 +1,7 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
-import type { YearKind } from '#engine/reduction/weather-year.ts';
-import type { Ledger, Verdict } from '#engine/run/run-result.ts';
+import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
+import type { Ledger, RunResult, Verdict } from '#engine/run/run-result.ts';
 
 /** Some stations judged by one draft brief. */
 export interface RescoreTask {
@@ -45,3 +45,25 @@ export interface RescoredStation {
   /** By weather year; empty unless asked for. */
   readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
 }
+
+/** One weather year judged by one draft brief, for whoever edits it. */
+export interface PreviewTask {
+  readonly brief: Brief;
+  readonly year: WeatherYear;
+  readonly zone: string;
+  readonly heightM: number;
+  readonly position: { readonly latitude: number; readonly longitude: number };
+}
+
+/** What the editor shows of a result. */
+export type PreviewedYear = Pick<
+  RunResult,
+  'ledger' | 'verdict' | 'tolerances' | 'gates' | 'score' | 'scoreNote' | 'words' | 'parts' | 'hourClassCodes'
+>;
+
+export type WebTask =
+  | { readonly kind: 'rescore'; readonly task: RescoreTask }
+  | { readonly kind: 'preview'; readonly task: PreviewTask };
+export type WebAnswer =
+  | { readonly kind: 'rescore'; readonly answer: readonly RescoredStation[] }
+  | { readonly kind: 'preview'; readonly answer: PreviewedYear };

@@ -1,0 +1,36 @@
+import { makeThreadPool } from './thread-pool.ts';
+import type { PreviewedYear, PreviewTask, RescoredStation, RescoreTask, WebAnswer, WebTask } from './web-task.ts';
+
+/** Threads that judge for whoever drags a slider; their errors are those of `ThreadPool.run`. */
+export interface WebThreads {
+  readonly threads: number;
+  /** Starts every thread now, so that the first task need not wait for it. */
+  warm(): void;
+  rescore(task: RescoreTask, signal: AbortSignal): Promise<readonly RescoredStation[]>;
+  preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
+  close(): Promise<void>;
+}
+
+/** @param options.entry the module that answers both kinds of task */
+export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebThreads {
+  const pool = makeThreadPool<WebTask, WebAnswer>(options);
+  return {
+    threads: pool.threads,
+    warm: () => pool.warm(),
+    async rescore(task, signal) {
+      const answered = await pool.run({ kind: 'rescore', task }, signal);
+      if (answered.kind !== 'rescore') throw wrongAnswer();
+      return answered.answer;
+    },
+    async preview(task, signal) {
+      const answered = await pool.run({ kind: 'preview', task }, signal);
+      if (answered.kind !== 'preview') throw wrongAnswer();
+      return answered.answer;
+    },
+    close: () => pool.close(),
+  };
+}
+
+function wrongAnswer(): Error {
+  return new Error('the thread answered another kind of task');
+}

@@ -1,0 +1,87 @@
+/** Hours by month (12) x hour of day (24), in the slots' standard time: month by month, what tables and coverage are read from. */
+import type { OpenSchedule } from '../clock/open-schedule.ts';
+import { HOURS_PER_DAY } from '../conventions.ts';
+import { monthOfEachSlot } from '../reduction/calendar.ts';
+import { type HourColumns, inBlocks } from './hour-columns.ts';
+import type { JudgedYear } from './judged-year.ts';
+
+export const MONTH_HOUR_CELLS = 12 * HOURS_PER_DAY;
+
+export interface HourCells {
+  /** Hours in schedule, and of them those whose weather is known. */
+  readonly scheduled: Uint16Array;
+  readonly present: Uint16Array;
+  readonly demand: Uint16Array;
+  readonly met: Uint16Array;
+}
+
+export function countCells({ slots, schedule, missing, hours }: JudgedYear): HourCells {
+  const cellOf = cellOfEachSlot(slots);
+  const scheduled = scheduledByCell(schedule);
+  const present = scheduled.slice();
+  for (const slot of missing) if (schedule.open[slot] === 1) add(present, cellOf[slot] ?? 0, -1);
+  const demand = new Uint16Array(MONTH_HOUR_CELLS);
+  const met = new Uint16Array(MONTH_HOUR_CELLS);
+  inBlocks(hours.count, (from, to) => addHours({ demand, met }, cellOf, hours, from, to));
+  return { scheduled, present, demand, met };
+}
+
+function addHours(
+  { demand, met }: Pick<HourCells, 'demand' | 'met'>,
+  cellOf: Uint16Array,
+  hours: HourColumns,
+  from: number,
+  to: number,
+): void {
+  for (let at = from; at < to; at++) {
+    const cell = cellOf[hours.slot[at] ?? 0] ?? 0;
+    add(demand, cell, 1);
+    add(met, cell, hours.met[at] ?? 0);
+  }
+}
+
+/** Sum of a month's cells, 0 January. */
+export function sumOfMonth(cells: Uint16Array, month: number): number {
+  let sum = 0;
+  for (let hour = 0; hour < HOURS_PER_DAY; hour++) sum += cells[month * HOURS_PER_DAY + hour] ?? 0;
+  return sum;
+}
+
+/** The cells as rows of a month each. */
+export function monthRows(cells: Uint16Array): number[][] {
+  return Array.from({ length: 12 }, (_none, month) =>
+    Array.from(cells.subarray(month * HOURS_PER_DAY, (month + 1) * HOURS_PER_DAY)),
+  );
+}
+
+function add(cells: Uint16Array, cell: number, count: number): void {
+  cells[cell] = (cells[cell] ?? 0) + count;
+}
+
+const schedules = new WeakMap<OpenSchedule, Uint16Array>();
+
+function scheduledByCell(schedule: OpenSchedule): Uint16Array {
+  const counted = schedules.get(schedule);
+  if (counted !== undefined) return counted;
+  const cellOf = cellOfEachSlot(schedule.open.length);
+  const scheduled = new Uint16Array(MONTH_HOUR_CELLS);
+  for (const slot of schedule.slots) add(scheduled, cellOf[slot] ?? 0, 1);
+  schedules.set(schedule, scheduled);
+  return scheduled;
+}
+
+const cellsOfYears = new Map<number, Uint16Array>();
+
+/** The cell of every slot. There are two such columns, each made once: they are read only. */
+function cellOfEachSlot(slots: number): Uint16Array {
+  const made = cellsOfYears.get(slots) ?? makeCells(slots);
+  cellsOfYears.set(slots, made);
+  return made;
+}
+
+function makeCells(slots: number): Uint16Array {
+  return Uint16Array.from(
+    monthOfEachSlot(slots),
+    (month, slot) => (month - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY),
+  );
+}

@@ -1,0 +1,75 @@
+import { mkdtemp, rm, writeFile } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
+import knexPkg, { type Knex } from 'knex';
+import { acceptAs, receiveFromDisk } from '../../server/builders/weather-file-steps.ts';
+import { connect } from '../../server/db/connection.ts';
+import { inTransaction } from '../../server/db/in-transaction.ts';
+import { APP_LOGIN, databaseUrl, OWNER_LOGIN, prepareDatabase } from '../../server/db/prepare-database.ts';
+import { makePerson } from '../../server/features/accounts/make-person.ts';
+import { startBrief } from '../../server/features/briefs/start-brief.ts';
+import { makeTeam } from '../../server/features/teams/make-team.ts';
+import { readStoredFile } from '../../server/features/weather/read-stored-file.ts';
+import { createFolderStore } from '../../server/storage/folder-store.ts';
+import { shippedRelief } from '../../server/tiles/relief.ts';
+import { demoEpw } from '../support/demo-epw.ts';
+import { cloneStationYears } from '../support/station-years.ts';
+import { startThrowawayCluster } from '../support/throwaway-cluster.ts';
+
+const DATABASE = 'bench';
+const CLIMATES = 6;
+
+/** A team's accepted weather years in a database of the product's own schema. */
+export interface StationYearCluster {
+  /** The product's login, one connection. */
+  readonly db: Knex;
+  readonly ownerDb: Knex;
+  readonly teamId: string;
+}
+
+/** Works with so many station-years in a cluster of their own: six invented typical years by the main road, the rest their clones. */
+export async function withStationYears<T>(
+  stations: number,
+  work: (cluster: StationYearCluster) => Promise<T>,
+): Promise<T> {
+  const home = await mkdtemp(path.join(tmpdir(), 'muslin-bench-'));
+  const cluster = await startThrowawayCluster();
+  const { port, ownerPassword, appPassword } = cluster.server;
+  const urlOf = (name: string, password: string) =>
+    databaseUrl({ login: { name, password }, port, database: DATABASE });
+  let db: Knex | null = null;
+  let ownerDb: Knex | null = null;
+  try {
+    await prepareDatabase(cluster.server, DATABASE);
+    db = connect({ databaseUrl: urlOf(APP_LOGIN, appPassword), maxConnections: 1 });
+    ownerDb = knexPkg.knex({ client: 'pg', connection: urlOf(OWNER_LOGIN, ownerPassword) });
+    const teamId = await fill({ db, home });
+    await cloneStationYears(ownerDb, { teamId, stations: stations - CLIMATES });
+    await ownerDb.raw('analyze');
+    return await work({ db, ownerDb, teamId });
+  } finally {
+    await db?.destroy();
+    await ownerDb?.destroy();
+    await cluster.stop();
+    await rm(home, { recursive: true, force: true });
+  }
+}
+
+async function fill({ db, home }: { db: Knex; home: string }): Promise<string> {
+  const storage = createFolderStore(path.join(home, 'originals'));
+  const deps = { db, storage, relief: shippedRelief(), now: () => new Date() };
+  const person = { email: 'bench@example.org', password: 'a long pass phrase for tests', name: 'Bench' };
+  const personId = await makePerson(db, person);
+  const { teamId } = await inTransaction(db, (transaction) =>
+    makeTeam({ transaction, startBrief }, { name: 'Bench', leadId: personId, invented: true, programmeName: 'Bench' }),
+  );
+  for (let nth = 0; nth < CLIMATES; nth++) {
+    const { name, text } = demoEpw(nth);
+    const file = path.join(home, name);
+    await writeFile(file, text);
+    const fileId = await receiveFromDisk(deps, { teamId, personId, file });
+    await readStoredFile(deps, { teamId, fileId });
+    await acceptAs(deps, { teamId, personId, fileId });
+  }
+  return teamId;
+}
