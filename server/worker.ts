@@ -1,7 +1,8 @@
-import { readingKnowledge } from './builders/reading-knowledge.ts';
+import type { Relief } from '#engine/weather-files/relief.ts';
 import { connect } from './db/connection.ts';
 import { judgeStoredYear } from './features/runs/judge-year.ts';
 import { queueMissingRuns } from './features/runs/queue-runs.ts';
+import { standardZoneAt } from './features/stations/standard-zone-at.ts';
 import {
   clearJudgingFailure,
   noteJudgingFailure,
@@ -19,6 +20,7 @@ import type { OriginalStore } from './storage/original-store.ts';
 export interface WorkerOptions {
   readonly databaseUrl: string;
   readonly storage: OriginalStore;
+  readonly relief: Relief;
   readonly log: Log;
 }
 
@@ -26,8 +28,7 @@ const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
-  const { databaseUrl, storage, log } = options;
-  const knowledge = readingKnowledge();
+  const { databaseUrl, storage, relief, log } = options;
   const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
   try {
     await queueMissingRuns(db);
@@ -37,7 +38,7 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       log,
       tasks: {
         'read-weather-file': {
-          run: (file) => readStoredFile({ db, storage, ...knowledge }, file),
+          run: (file) => readStoredFile({ db, storage, relief, zoneAt: standardZoneAt }, file),
           dead: (file) => noteReadingFailure(db, file),
         },
         'open-weather-archive': {

@@ -1,6 +1,7 @@
 import { ConfigError, readConfig } from '../config.ts';
 import { jsonLinesLog } from '../log.ts';
 import { openStore } from '../storage/open-store.ts';
+import { shippedRelief } from '../tiles/relief.ts';
 import { startWorker } from '../worker.ts';
 import type { Command } from './command.ts';
 import { CouldNotRun } from './could-not-run.ts';
@@ -15,7 +16,7 @@ export const run: Command = async ({ rootDir, callerDir, signal }) => {
     () => new Date(),
   );
   const storage = await openStore({ objectStore: objectStore(), originalsDir });
-  const worker = await startWorker({ databaseUrl, storage, log });
+  const worker = await startWorker({ databaseUrl, storage, relief: shippedRelief(), log });
   await untilAborted(signal);
   await worker.close();
   return 0;

@@ -1,4 +1,5 @@
 import { readFileSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
 import { inflateRawSync } from 'node:zlib';
 import type { Relief } from '#engine/weather-files/relief.ts';
 import {
@@ -47,6 +48,11 @@ export function openRelief(path: string): Relief {
     heightM: (latitude, longitude) => valueAt('heightsM', latitude, longitude),
     kmFromLand: (latitude, longitude) => valueAt('kmFromLand', latitude, longitude),
   };
+}
+
+/** The relief that comes with the program. */
+export function shippedRelief(): Relief {
+  return openRelief(fileURLToPath(new URL('../../data/relief/relief.bin', import.meta.url)));
 }
 
 function storedTiles(path: string): Uint8Array[] {

@@ -80,7 +80,10 @@ export const importRules: readonly ImportRule[] = [
   { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', '@aws-sdk/client-s3', 'node:**'] },
   {
     from: 'server/tiles/**',
-    may: ['server/tiles/**', ...serverWords, 'src/engine/weather-files/relief.ts', 'pmtiles', 'express', 'node:*'],
+    may: [
+      ...['server/tiles/**', ...serverWords, 'src/engine/weather-files/relief.ts', 'data/relief/relief.bin'],
+      ...['pmtiles', 'express', 'node:*'],
+    ],
   },
 
   {

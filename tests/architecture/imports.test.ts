@@ -67,7 +67,7 @@ describe('imports flow one way', () => {
       .filter((file) => !file.startsWith('src/') || !file.endsWith('.d.ts'))
       .flatMap((file) => importsOf(file).map((imported) => ({ file, ...imported })))
       .filter(({ specifier }) => /^[.#]/.test(specifier))
-      .filter(({ specifier }) => !/\.(ts|tsx|mjs|css|json|html|pmtiles|woff2)(\?url)?$|\/$/.test(specifier));
+      .filter(({ specifier }) => !/\.(ts|tsx|mjs|css|json|html|bin|pmtiles|woff2)(\?url)?$|\/$/.test(specifier));
     expect(dangling).toEqual([]);
   });
 

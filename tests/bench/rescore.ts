@@ -8,6 +8,7 @@ import { availableParallelism, tmpdir } from 'node:os';
 import path from 'node:path';
 import { monitorEventLoopDelay } from 'node:perf_hooks';
 import knexPkg from 'knex';
+import { readingKnowledge } from '../../server/builders/reading-knowledge.ts';
 import { acceptAs, receiveFromDisk } from '../../server/builders/weather-file-steps.ts';
 import { connect } from '../../server/db/connection.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
@@ -80,10 +81,7 @@ async function fill(): Promise<{ teamId: string; programmeId: string }> {
     await writeFile(file, text);
     const from = { teamId: team.teamId, personId };
     const fileId = await receiveFromDisk(deps, { ...from, file });
-    await readStoredFile(
-      { ...deps, zoneAt: () => null, relief: { heightM: () => 0, kmFromLand: () => 0 } },
-      { teamId: team.teamId, fileId },
-    );
+    await readStoredFile({ ...deps, ...readingKnowledge() }, { teamId: team.teamId, fileId });
     await acceptAs(deps, { ...from, fileId });
   }
   await cloneStationYears(ownerDb, { teamId: team.teamId, stations: stations - CLIMATES });

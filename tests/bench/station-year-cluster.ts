@@ -12,6 +12,7 @@ import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { readStoredFile } from '../../server/features/weather/read-stored-file.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
+import { shippedRelief } from '../../server/tiles/relief.ts';
 import { demoEpw } from '../support/demo-epw.ts';
 import { cloneStationYears } from '../support/station-years.ts';
 import { startThrowawayCluster } from '../support/throwaway-cluster.ts';
@@ -56,7 +57,8 @@ export async function withStationYears<T>(
 }
 
 async function fill({ db, home }: { db: Knex; home: string }): Promise<string> {
-  const deps = { db, storage: createFolderStore(path.join(home, 'originals')), now: () => new Date() };
+  const storage = createFolderStore(path.join(home, 'originals'));
+  const deps = { db, storage, relief: shippedRelief(), now: () => new Date() };
   const person = { email: 'bench@example.org', password: 'a long pass phrase for tests', name: 'Bench' };
   const personId = await makePerson(db, person);
   const { teamId } = await inTransaction(db, (transaction) =>

@@ -15,6 +15,7 @@ import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { openTeamFeed } from '../../server/jobs/team-feed.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
 import type { OriginalStore } from '../../server/storage/original-store.ts';
+import { shippedRelief } from '../../server/tiles/relief.ts';
 import { startWorker } from '../../server/worker.ts';
 import type { Role } from '../../src/contract/accounts.ts';
 import { type KeptLog, keepLog } from './quiet-log.ts';
@@ -107,7 +108,12 @@ export async function openRoad(options: { database?: TestDatabase } = {}): Promi
       return { ...made, lead, join: (role) => newMember(role, made.teamId) };
     },
     async startWorker(options) {
-      const worker = await startWorker({ databaseUrl, storage: options?.storage ?? storage, log });
+      const worker = await startWorker({
+        databaseUrl,
+        storage: options?.storage ?? storage,
+        relief: shippedRelief(),
+        log,
+      });
       const closing = {
         close: async () => {
           if (workers.delete(closing)) await worker.close();

@@ -9,6 +9,7 @@ import { readArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
 import { say } from './print-result.ts';
 import { statedOptions } from './stated-options.ts';
+import { type WeatherMember, weatherMembers } from './weather-members.ts';
 
 /** A file with the preset that its year is to be judged by. */
 export interface JudgeableFile {
@@ -39,7 +40,16 @@ export async function openJudgeableFile({ args, callerDir }: CommandContext): Pr
     say(bytes);
     return 3;
   }
-  const reading = readWeatherFile(bytes, file, await statedOptions(stated, callerDir));
+  const members: WeatherMember[] = [];
+  for await (const each of weatherMembers(file, bytes)) members.push(each);
+  const [member] = members;
+  if (member === undefined || members.length > 1 || typeof member.content === 'string') {
+    say(
+      typeof member?.content === 'string' ? member.content : `${file} holds ${members.length} weather files, not one.`,
+    );
+    return 1;
+  }
+  const reading = readWeatherFile(member.content, member.name, await statedOptions(stated, callerDir));
   if (reading.status === 'refused') {
     const reasons = reading.findings.filter(({ severity }) => severity === 'refuse');
     say([`${file} is refused:`, ...reasons.map(({ message }) => message)].join('\n'));

@@ -2,17 +2,19 @@ import { TableMappingBody } from '#contract/weather-answers.ts';
 import type { ReadOptions } from '#engine/weather-files/read-options.ts';
 import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 import { standardZoneAt } from '../../features/stations/standard-zone-at.ts';
+import { shippedRelief } from '../../tiles/relief.ts';
 import { type CommandArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
 
 /**
- * What the command line says of its files: the place, the mapping of a table, and zones by position.
+ * What the command line says of its files: the place, the mapping of a table, zones by position and the shipped relief.
  * @throws WrongUse on a mapping that is none
  */
 export async function statedOptions(args: CommandArguments, callerDir: string): Promise<ReadOptions> {
   const mapping = args.columns === null ? null : await openMapping(args.columns, callerDir);
   return {
     zoneAt: standardZoneAt,
+    relief: shippedRelief(),
     ...(args.place === null ? {} : { place: args.place }),
     ...(mapping === null ? {} : { mapping }),
   };

@@ -1,4 +1,5 @@
 import { readEpw } from './epw/read-epw.ts';
+import { isEpwCsv, readEpwCsv } from './epw-csv/read-epw-csv.ts';
 import { FindingList } from './finding-list.ts';
 import { readGlobalHourly } from './global-hourly/read-global-hourly.ts';
 import { readIsd } from './isd/read-isd.ts';
@@ -41,7 +42,9 @@ export function readWeatherFileParts(
   }
   const layout = findLayout(text);
   if ('reason' in layout) return [refuseUnknown({ lines, name, layout }, findings)];
-  return readTable(text, { layout, options }, findings);
+  return isEpwCsv(lines[0]?.text ?? '', layout)
+    ? readEpwCsv(text, { layout, options }, findings)
+    : readTable(text, { layout, options }, findings);
 }
 
 function readFormat(

@@ -11,6 +11,7 @@ import type { WeatherFormat } from './weather-file-reading.ts';
 const LOOKED_AT = 40;
 const LONGEST = 2_000;
 const MOST = 0.8;
+const EPW_HEADER_LINES = 12;
 const TMY2_RECORD = /^\s\d{8}.{133}/;
 
 /** The first lines of a text, without blank ones. */
@@ -27,6 +28,8 @@ export function recogniseFormat(lines: readonly { readonly text: string }[]): Ex
   const mostAre = (holds: (text: string) => boolean) =>
     lines.length > 0 && lines.filter(({ text }) => holds(text)).length >= MOST * lines.length;
   if (/^\s*"?LOCATION"?\s*,/i.test(first)) return 'EPW';
+  // Its header records may stand in another order, or lack the first, which the reader tells.
+  if (lines.slice(0, EPW_HEADER_LINES).some(({ text }) => /^\s*"?DATA PERIODS"?\s*,/i.test(text))) return 'EPW';
   if (TMY3_NAMES.test(second)) return 'TMY3';
   if (TMY2_HEADER.test(first) && TMY2_RECORD.test(second)) return 'TMY2';
   if (namesGlobalHourly(first)) return 'Global Hourly';

@@ -2,10 +2,10 @@ import { fileURLToPath } from 'node:url';
 import { describe, expect, test } from 'vitest';
 import { FARTHEST_TOLD_KM } from '#engine/weather-files/relief.ts';
 import { readNetcdf } from '../../../data/relief/read-netcdf.ts';
-import { openRelief } from '../../../server/tiles/relief.ts';
+import { openRelief, shippedRelief } from '../../../server/tiles/relief.ts';
 import { tileBytes, tileOfBytes } from '../../../server/tiles/relief-layout.ts';
 
-const relief = openRelief(fileURLToPath(new URL('../../../data/relief/relief.bin', import.meta.url)));
+const relief = shippedRelief();
 
 describe('the approximate relief', () => {
   // Heights of airports and stations in open country as the headers of public weather files give them; La Paz, Madrid, Nairobi and

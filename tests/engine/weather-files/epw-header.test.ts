@@ -49,17 +49,14 @@ describe('header of an EPW', () => {
     expect(reading.hours.lines[0]).toBe(7);
   });
 
-  test('without LOCATION first is no EPW, and the refusal says what was found', () => {
-    const reading = readRefused(['STATION,1,2', ...epwLines().slice(1)]);
-    expect(reading.format).toBeNull();
-    expect(reading.findings).toEqual([
-      expect.objectContaining({
-        code: 'header',
-        severity: 'refuse',
-        line: 1,
-        message: expect.stringContaining('“STATION,1,2”'),
-      }),
+  test('without LOCATION is refused, and read when it stands lower down', () => {
+    const [location = '', design = '', ...rest] = epwLines();
+    const reading = readRefused(['STATION,1,2', design, ...rest]);
+    expect(reading.format).toBe('EPW');
+    expect(findingsOf(reading, 'header')).toEqual([
+      expect.objectContaining({ severity: 'refuse', line: 1, message: expect.stringContaining('no LOCATION record') }),
     ]);
+    expect(readUsable([design, location, ...rest]).station.latitude).toBe(33.45);
   });
 
   test('without DATA PERIODS is refused at the line where the data begin, and faults of the data are told as well', () => {

@@ -190,3 +190,33 @@ describe('reports at any minute', () => {
     expect(findingsOf(usable(suspect, { ...place, keepSuspect: true }), 'time-gap')).toHaveLength(1);
   });
 });
+
+describe('the spreadsheet form of an EPW', () => {
+  const written = writtenYear(7);
+  const titled = [
+    'Location Title,Latitude {N+/S-},Longitude {E+/W-},TimeZone {+/- GMT},Elevation {m},Standard Pressure At Elevation {Pa}',
+    'USA_CO_MADE-UP_FIELD_WMO#724666,38.5,-105.25,-7,500,95460',
+    'Number of Data Periods,Number of Records per hour',
+    '1,1',
+    'Date,HH:MM,Datasource,Dry Bulb Temperature {C},Dew Point Temperature {C},Relative Humidity {%},Atmospheric Pressure {Pa}',
+  ];
+
+  test.each([
+    ['year first', (hour: WrittenHour) => `${hour.year}/${hour.month}/${hour.day}`],
+    ['day first', (hour: WrittenHour) => `${hour.day}/${hour.month}/${hour.year}`],
+    ['month first', (hour: WrittenHour) => `${hour.month}/${hour.day}/${hour.year}`],
+  ])('is read as the EPW that it is, dates with the %s', (_style, date) => {
+    const rows = written.map((hour) => {
+      const values = [hour.dryBulbC, hour.dewPointC, hour.relativeHumidityPct, hour.pressurePa];
+      return `${date(hour)},${String(hour.hour).padStart(2, '0')}:00,A7A7A7A7,${values.join(',')}`;
+    });
+    const reading = usable([...titled, ...rows], {});
+    expect(reading).toMatchObject({ format: 'EPW', kind: 'typical', status: 'review' });
+    expect(reading.station).toMatchObject({
+      name: 'USA CO MADE-UP FIELD WMO#724666',
+      wmoNumber: '724666',
+      utcOffsetH: -7,
+    });
+    expect(distances(reading, written)).toMatchObject({ missing: 0, dryBulbC: 0, pressurePa: 0 });
+  });
+});

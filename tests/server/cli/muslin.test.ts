@@ -9,10 +9,18 @@ import { ledger } from '../../../server/cli/commands/ledger.ts';
 import { read } from '../../../server/cli/commands/read.ts';
 import { csvRecords } from '../../support/csv-rows.ts';
 import { type CommandOutcome, repositoryDir, runCommand, runProgram, startCommand } from '../../support/run-command.ts';
+import {
+  bytesOfRows,
+  globalHourlyLines,
+  isdLiteLines,
+  tableLines,
+  writtenYear,
+} from '../../support/weather-writers.ts';
+import { zipBytes } from '../../support/zip-bytes.ts';
 
 let folder: string;
 
-beforeAll(() => {
+beforeAll(async () => {
   folder = mkdtempSync(path.join(os.tmpdir(), 'muslin-files-'));
   mkdirSync(path.join(folder, 'deep'));
   const { text } = sampleUpload();
@@ -23,6 +31,20 @@ beforeAll(() => {
   writeFileSync(path.join(folder, 'nothing.epw'), '\n'.repeat(8760));
   writeFileSync(path.join(folder, 'empty.epw'), '');
   writeFileSync(path.join(folder, 'packed.epw.gz'), gzipSync(text));
+  writeFileSync(path.join(folder, 'empty.json'), '{}');
+  const inner = {
+    'deep/station.epw': text,
+    'deep/station.stat': 'x',
+    'inner.epw.gz': gzipSync(text),
+    'notes.txt': 'x',
+  };
+  writeFileSync(path.join(folder, 'folder.zip'), await zipBytes(inner));
+  const written = writtenYear(1, 2014);
+  const otherYear = writtenYear(2, 2013).slice(0, 60 * 24);
+  writeFileSync(path.join(folder, '724666-93067-2015'), bytesOfRows(isdLiteLines(written)));
+  writeFileSync(path.join(folder, 'years'), bytesOfRows(isdLiteLines([...otherYear, ...written.slice(0, 60 * 24)])));
+  writeFileSync(path.join(folder, 'reports.csv'), bytesOfRows(globalHourlyLines(written)));
+  writeFileSync(path.join(folder, 'table.csv'), bytesOfRows(tableLines(written)));
 });
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
@@ -92,11 +114,46 @@ describe('muslin read', () => {
     expect(results(outcome).map(({ file }) => file)).toEqual(['station.epw']);
   });
 
-  it('refuses an empty file, and an archive with the sentence that it is read later', async () => {
-    const outcome = await muslin('read', 'empty.epw', 'packed.epw.gz');
+  it('refuses an empty file, and opens archives: each member that may be weather has a line', async () => {
+    const outcome = await muslin('read', 'empty.epw', 'packed.epw.gz', 'folder.zip');
     expect(outcome.code).toBe(1);
-    expect(results(outcome).map(({ status }) => status)).toEqual(['refused', 'refused']);
-    expect(outcome.stdout.split('\n')[1]).toContain('weather room');
+    expect(results(outcome).map(({ file, status }) => `${file} ${status}`)).toEqual([
+      ...['empty.epw refused', 'packed.epw.gz review', 'folder.zip!/deep/station.epw review'],
+      ...['folder.zip!/inner.epw.gz review', 'folder.zip!/notes.txt refused'],
+    ]);
+  });
+
+  it('asks for the place of a file that does not say it, and takes it from --place', async () => {
+    const asking = await muslin('read', '724666-93067-2015');
+    expect(asking.code).toBe(0);
+    expect(results(asking)).toMatchObject([{ format: 'ISD-Lite', status: 'asks', station: { latitude: null } }]);
+    const placed = await muslin('read', '--place=38.5,-105.25,500,-7', '724666-93067-2015');
+    expect(results(placed)).toMatchObject([
+      { status: 'review', asks: [], station: { latitude: 38.5, longitude: -105.25, elevationM: 500, utcOffsetH: -7 } },
+    ]);
+  });
+
+  it('finds the zone of a file in UTC that says where its station stands', async () => {
+    const [reading] = results(await muslin('read', 'reports.csv'));
+    expect(reading).toMatchObject({ format: 'Global Hourly', status: 'review', station: { utcOffsetH: -7 } });
+  });
+
+  it('shows what a table seems to hold, and reads it under --columns', async () => {
+    const [guessed] = results(await muslin('read', '--place=38.5,-105.25,500,-7', 'table.csv'));
+    expect(guessed).toMatchObject({ format: 'table', status: 'asks', hours: null, asks: [{ what: 'unit-guess' }] });
+    const table = Object(guessed?.table);
+    expect(table.sample).toHaveLength(10);
+    writeFileSync(path.join(folder, 'map.json'), JSON.stringify(table.mapping));
+    const mapped = await muslin('read', '--place=38.5,-105.25,500,-7', '--columns=map.json', 'table.csv');
+    expect(results(mapped)).toMatchObject([{ status: 'review', hours: 8760, missing: 0 }]);
+  });
+
+  it('gives a line for every year of a file of several', async () => {
+    const years = results(await muslin('read', '--place=38.5,-105.25,500,-7', 'years'));
+    expect(years.map(({ file, part }) => [file, part])).toEqual([
+      ['years', '2013'],
+      ['years', '2014'],
+    ]);
   });
 });
 
@@ -183,8 +240,10 @@ describe('wrong use', () => {
   });
 
   it.each([
-    ['an option that is not built yet', read, ['station.epw', '--place', '1,2,3,4']],
-    ['the same with its value joined', read, ['station.epw', '--columns=map.json']],
+    ['a place of three numbers', read, ['station.epw', '--place', '1,2,3']],
+    ['a place beyond the Earth', read, ['station.epw', '--place=91,2,3,4']],
+    ['a mapping that is not there', read, ['station.epw', '--columns=absent.json']],
+    ['a mapping that is none', read, ['station.epw', '--columns=empty.json']],
     ['no file', read, []],
     ['an option of the other command', read, ['station.epw', '--brief', 'office']],
     ['two files where one is read', ledger, ['station.epw', 'nothing.epw', '--brief', 'office']],

@@ -18,7 +18,10 @@ export type StationContents = Omit<FileContents, 'part' | 'periods' | 'yearFrom'
 export const FEWEST_ROWS = 200;
 /** Local time takes so many hours of a year in UTC to its neighbour. */
 const EDGE_HOURS = 14;
-const MOST_PARTS = 400;
+/** More than the hours of any file of 64 MB. */
+const MOST_PARTS = 150;
+/** Stations of one file that are looked at; more of them have too few rows each. */
+export const MOST_STATIONS = 1_000;
 
 /**
  * Assembles every station-year, or the wanted one alone.
@@ -85,6 +88,16 @@ function tellTooFew(rows: number, findings: FindingList): void {
     count: rows,
     message: () =>
       `The file has ${whole(rows)} ${rows === 1 ? 'row' : 'rows'} with a time; ${whole(FEWEST_ROWS)} are the least that a month can be counted from. Bring a file with whole months.`,
+  });
+}
+
+/** Refuses a file of more stations than are looked at. */
+export function tellTooManyStations(findings: FindingList): void {
+  findings.add({
+    code: 'several-stations',
+    severity: 'refuse',
+    count: MOST_STATIONS,
+    message: () => `The file holds more than ${whole(MOST_STATIONS)} stations. Bring it in several files.`,
   });
 }
 

@@ -39,6 +39,7 @@ export function tellGaps(
     findings.add({
       code: 'time-gap',
       severity: 'note',
+      done: filled === 0 ? 'left missing' : filled === end - start ? 'filled' : 'filled in part',
       line: own.first || before || after,
       lastLine: own.last || before || after,
       count: end - start,

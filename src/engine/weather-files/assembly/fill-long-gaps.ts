@@ -6,7 +6,7 @@ const LONGEST_HOURS = 47;
 
 /**
  * Gap rule 2, asked for by a person: 6 to 47 missing hours take the mean of the same hour on the last day before and on the first
- * day after the gap, shifted so that it meets the hours at both ends. Nothing is filled where one of these values is missing or filled
+ * day after the gap (weighted by their nearness where one is two days away), shifted so that it meets the hours at both ends. Nothing is filled where one of these values is missing or filled
  * itself, and, as in rule 1, not across the end of a year nor across the joint of two months in a typical year.
  * @param column hourly values in slot order, NaN where missing; filled in place
  * @returns which slots were filled, as 0 or 1
@@ -32,7 +32,9 @@ function fillOne(column: Float64Array, filled: Uint8Array, gap: { start: number;
   const usual = (slot: number) => {
     const daysBack = Math.max(1, Math.floor((slot - start) / HOURS_PER_DAY) + 1);
     const daysOn = Math.max(1, Math.floor((end - 1 - slot) / HOURS_PER_DAY) + 1);
-    return (donor(slot - daysBack * HOURS_PER_DAY) + donor(slot + daysOn * HOURS_PER_DAY)) / 2;
+    const before = donor(slot - daysBack * HOURS_PER_DAY);
+    const after = donor(slot + daysOn * HOURS_PER_DAY);
+    return (before * daysOn + after * daysBack) / (daysBack + daysOn);
   };
   const shiftBefore = donor(start - 1) - usual(start - 1);
   const shiftAfter = donor(end) - usual(end);

@@ -48,6 +48,8 @@ export function chooseHumidity(
     findings.add({
       code: 'rh-dew-disagree',
       severity: 'doubt',
+      variable: 'humidity',
+      done: 'the dew point is used',
       line: disagreement.firstLine,
       count: Math.round(disagreement.count / steps.stepsPerHour),
       message: () =>

@@ -29,6 +29,8 @@ export function limitRelativeHumidity(steps: StepColumns, findings: FindingList)
     findings.add({
       code: 'rh-over-100',
       severity: 'repair',
+      variable: 'relative humidity',
+      done,
       line: first,
       lastLine: last,
       count: end - start,
@@ -62,6 +64,7 @@ export function limitDewPoint(steps: StepColumns, belowZero: BelowZeroPhase, fin
   findings.add({
     code: 'dew-above-dry',
     severity: 'refuse',
+    variable: 'dew point',
     count: farSteps,
     message: () =>
       `The dew point lies more than 0.5 K above the dry bulb in ${whole(farSteps / steps.stepsPerHour)} hours, over 1 % of the year: the two columns do not belong together, and nothing in the file can mend that. Bring the file anew from its source.`,
@@ -109,6 +112,8 @@ function tellExcess(
     findings.add({
       code: 'dew-above-dry',
       severity: large ? 'doubt' : 'repair',
+      variable: 'dew point',
+      done,
       line: first,
       lastLine: last,
       count: end - start,
@@ -136,6 +141,8 @@ function dropPoorMonths(steps: StepColumns, far: Uint8Array, findings: FindingLi
     findings.add({
       code: 'dew-above-dry',
       severity: 'doubt',
+      variable: 'dew point',
+      done: 'left out',
       count: hours,
       message: () =>
         `In ${monthNames[month - 1]} the dew point lies above the dry bulb in a fifth of the hours or more; the dew points of the whole month are left out.`,

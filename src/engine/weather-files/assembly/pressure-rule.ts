@@ -118,6 +118,8 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
   findings.add({
     code: 'pressure-assumed',
     severity: 'note',
+    variable: 'pressure',
+    done: 'filled',
     count: steps.slotCount,
     message: () =>
       `The file gives no usable pressure; the standard atmosphere at ${elevationM} m, ${whole(standardPa)} Pa, is taken in every hour.`,
@@ -139,6 +141,8 @@ function replaceFarValues(steps: StepColumns, medianPa: number, findings: Findin
     findings.add({
       code: 'pressure-range',
       severity: 'repair',
+      variable: 'pressure',
+      done: 'replaced by the median',
       line: first,
       lastLine: last,
       count: end - start,
@@ -171,6 +175,8 @@ function fillGaps(steps: StepColumns, findings: FindingList): void {
   findings.add({
     code: 'pressure-assumed',
     severity: 'note',
+    variable: 'pressure',
+    done: 'filled',
     line: first,
     count: filled,
     message: () =>
@@ -195,6 +201,8 @@ function flagConstant(steps: StepColumns, findings: FindingList): void {
   findings.add({
     code: 'pressure-constant',
     severity: 'note',
+    variable: 'pressure',
+    done: 'marked as assumed',
     count: Math.round(count / steps.stepsPerHour),
     message: () =>
       `The pressure is ${whole(value)} Pa in ${whole(count / steps.stepsPerHour)} hours: the source filled it, and it is marked as assumed.`,
@@ -245,6 +253,8 @@ function compareWithElevation(meanPa: number, elevationM: number, findings: Find
     findings.add({
       code: 'pressure-elevation',
       severity: 'note',
+      variable: 'pressure',
+      done: 'the pressure is used',
       message: () => `${sentence}. The pressure column is used.`,
     });
   }

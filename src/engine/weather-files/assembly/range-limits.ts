@@ -13,7 +13,12 @@ export function leaveOutImpossible(steps: StepColumns, findings: FindingList): v
 }
 
 function leaveOut(
-  input: { steps: StepColumns; column: Float64Array; name: string; limits: { low: number; high: number } },
+  input: {
+    steps: StepColumns;
+    column: Float64Array;
+    name: 'dry bulb' | 'dew point';
+    limits: { low: number; high: number };
+  },
   findings: FindingList,
 ): void {
   const { column, name, limits, steps } = input;
@@ -27,6 +32,8 @@ function leaveOut(
       line: first,
       lastLine: last,
       count: end - start,
+      variable: name,
+      done: 'left out',
       message: () =>
         `${linesPhrase(first, last)}: a ${name} of ${worst} °C lies outside ${limits.low} to ${limits.high} °C; ${end - start === 1 ? 'the value is' : 'the values are'} left out.`,
     });

@@ -5,6 +5,7 @@
 import type { PublishedDesign } from '../assembly/design-check.ts';
 import type { DeclaredPeriod } from '../assembly/match-calendar.ts';
 import type { FindingList } from '../finding-list.ts';
+import { tellLicence } from '../licence-words.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
 import type { DeclaredStation } from '../weather-file-reading.ts';
 import { readDataPeriods } from './data-periods.ts';
@@ -38,7 +39,6 @@ interface Draft {
 const LONGEST_RECORD = 20_000;
 /** Year, month, day and hour. */
 const DATA_RECORD = /^\s*[+-]?\d+\s*,\s*\d+\s*,\s*\d+\s*,\s*\d+\s*,/;
-const LICENCE = /licen[cs]e|copyright|\(c\)|©|®|all rights|terms of use|redistribut|non-?commercial|permission/i;
 
 /** Reads up to DATA PERIODS, or to the first line that can only be data. */
 export function readEpwHeader(cursor: LineCursor, findings: FindingList): EpwHeader {
@@ -116,14 +116,4 @@ function tellMissingRecords(draft: Draft, lastLine: number, findings: FindingLis
         `The header ends on line ${lastLine} without a DATA PERIODS record, which says where the data begin: the file is cut short, or its header is damaged. Bring the file anew from its source.`,
     });
   }
-}
-
-function tellLicence(comments: string, findings: FindingList): void {
-  if (!LICENCE.test(comments)) return;
-  findings.add({
-    code: 'licence',
-    severity: 'note',
-    message: () =>
-      `The comments of the file speak of its licence: “${comments.replace(/\s+/g, ' ').slice(0, 400)}”. They are kept with it.`,
-  });
 }

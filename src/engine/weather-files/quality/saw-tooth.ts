@@ -13,10 +13,12 @@ export function sawTooth(hours: TestedHours, findings: FindingList): void {
   const { values } = hours.dewPoint;
   hours.months.forEach((month, index) => {
     let jumps = 0;
-    for (let step = month.start + 1; step < month.end; step++) {
-      const change = (values[step] ?? 0) - (values[step - 1] ?? 0);
-      if (change <= JUMP && change >= -JUMP) continue;
-      if (values[step] !== MISSING_INT16 && values[step - 1] !== MISSING_INT16) jumps++;
+    let before = MISSING_INT16;
+    for (let step = month.start; step < month.end; step++) {
+      const value = values[step] ?? MISSING_INT16;
+      const change = value - before;
+      if ((change > JUMP || change < -JUMP) && value !== MISSING_INT16 && before !== MISSING_INT16) jumps++;
+      before = value;
     }
     if (jumps <= MOST_SHARE * (month.end - month.start)) return;
     tell(hours, { month, jumps, name: monthNames[index] ?? '' }, findings);

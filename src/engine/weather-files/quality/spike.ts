@@ -17,13 +17,17 @@ export function spikes(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
     const { values } = column;
     for (const span of hours.unbroken) {
+      let before = values[span.start] ?? MISSING_INT16;
       for (let step = span.start + 1; step < span.end - 1; step++) {
-        const jump = (values[step] ?? 0) - (values[step - 1] ?? 0);
+        const value = values[step] ?? MISSING_INT16;
+        const jump = value - before;
+        before = value;
         if (jump <= LEAST_JUMP && jump >= -LEAST_JUMP) continue;
         const end = endOfSpike(hours, { values, step, span });
         if (end === null) continue;
         leaveOutSpike(hours, { column, start: step, end }, findings);
         step = end;
+        before = values[end] ?? MISSING_INT16;
       }
     }
   }

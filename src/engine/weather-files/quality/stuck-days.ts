@@ -82,7 +82,9 @@ function sameHours(hours: TestedHours, column: TestedColumn, span: StepSpan, fin
   const perDay = hours.stepsPerDay;
   const { values } = column;
   const longest = SAME_HOUR_DAYS[column.resolution.usual];
+  const calendar = { end: span.end, perDay };
   for (let hour = span.start; hour < span.start + perDay; hour++) {
+    if (!mayRepeat(values, calendar, hour)) continue;
     let first = hour;
     for (let step = hour + perDay; ; step += perDay) {
       if (step < span.end && values[step] === values[first]) continue;
@@ -94,6 +96,15 @@ function sameHours(hours: TestedHours, column: TestedColumn, span: StepSpan, fin
       first = step;
     }
   }
+}
+
+/** Whether an hour of the day may stay the same for 15 days: such a run holds a seventh day that is like those beside it. */
+function mayRepeat(values: Int16Array, { end, perDay }: { end: number; perDay: number }, hour: number): boolean {
+  for (let step = hour + 7 * perDay; step < end; step += 7 * perDay) {
+    if (values[step] === values[step - perDay] && (step + perDay >= end || values[step] === values[step + perDay]))
+      return true;
+  }
+  return false;
 }
 
 function leaveOutSameHour(

@@ -13,6 +13,8 @@ const LONGEST_H = {
 const DEW_DOUBT_H = 48;
 /** No limit is shorter. */
 const FEWEST_H = 24;
+/** Steps on either side of a sample that are looked at. */
+const LOOK = 3;
 const TOGETHER_H = { 100: 24, 50: 12, 10: 12 } as const;
 
 /** Dry bulb, dew point and relative humidity together for 12 hours (24 in files of whole degrees): every value is left out. */
@@ -63,8 +65,30 @@ function tellTogether(hours: TestedHours, [start, end]: readonly [number, number
 /** One temperature for as many hours as its resolution allows: left out; a dew point for 48 hours is told at any resolution. */
 export function stuckAlone(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
-    for (const { start, end } of hours.unbroken) runsOf(hours, { column, start, end }, findings);
+    for (const { start, end } of hours.unbroken) {
+      if (mayHoldRun(hours, { column, start, end })) runsOf(hours, { column, start, end }, findings);
+    }
   }
+}
+
+/**
+ * Whether a stretch may hold a run of 24 hours: one would lie over a sample every 12 hours with at least 6 on either side, so that
+ * nearly every month is done after 60 looks.
+ */
+function mayHoldRun(hours: TestedHours, span: StepSpan & { column: TestedColumn }): boolean {
+  const { values } = span.column;
+  const stride = (FEWEST_H / 2) * hours.steps.stepsPerHour;
+  for (let sample = span.start + stride; sample < span.end; sample += stride) {
+    let value = MISSING_INT16;
+    let same = true;
+    for (let step = sample - LOOK; step <= sample + LOOK && same; step++) {
+      const next = values[step] ?? MISSING_INT16;
+      same = next === MISSING_INT16 || value === MISSING_INT16 || next === value;
+      if (next !== MISSING_INT16) value = next;
+    }
+    if (same) return true;
+  }
+  return false;
 }
 
 function runsOf(hours: TestedHours, span: StepSpan & { column: TestedColumn }, findings: FindingList): void {

@@ -13,7 +13,8 @@ export function assembleReports(
   input: { readonly reports: ReportsByStation; readonly options: ReadOptions },
   findings: FindingList,
 ): readonly WeatherFileReading[] {
-  const stations = input.reports.settle(findings).map(({ key, line, reports, station }): StationContents => {
+  const settled = input.reports.settle(findings);
+  const stations = settled.map(({ key, line, reports, station }): StationContents => {
     const placed = settlePlace(station, { options: input.options, inUtc: true }, findings);
     const { elevationM, utcOffsetH } = placed;
     const { fromSeaLevel, rows } = hourlyRows(reports, { offsetMin: Math.round(60 * (utcOffsetH ?? 0)), elevationM });

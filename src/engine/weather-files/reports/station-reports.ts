@@ -1,4 +1,5 @@
 /** The reports of a file by station, with the place that most of a station's reports give. */
+import { MOST_STATIONS, tellTooManyStations } from '../assembly/assemble-station-years.ts';
 import type { FindingList } from '../finding-list.ts';
 import { unknownStation } from '../place/settle-place.ts';
 import type { DeclaredStation } from '../weather-file-reading.ts';
@@ -25,6 +26,7 @@ interface StationReports {
 
 export class ReportsByStation {
   readonly #stations = new Map<string, StationReports>();
+  #beyond = false;
 
   /** @param station.key how the file names the station */
   add(
@@ -33,6 +35,10 @@ export class ReportsByStation {
     report: Report,
   ): void {
     const known = this.#stations.get(station.key);
+    if (known === undefined && this.#stations.size >= MOST_STATIONS) {
+      this.#beyond = true;
+      return;
+    }
     const of = known ?? { ...station, reports: new ReportColumns(), places: new Map() };
     if (known === undefined) this.#stations.set(station.key, of);
     of.reports.add(report);
@@ -49,6 +55,7 @@ export class ReportsByStation {
   settle(
     findings: FindingList,
   ): readonly { key: string; station: DeclaredStation; line: number; reports: ReportColumns }[] {
+    if (this.#beyond) tellTooManyStations(findings);
     return [...this.#stations.values()].map(({ key, name, places, reports, wmoNumber }) => {
       const all = [...places.values()];
       const usual = all.reduce((most, next) => (next.count > most.count ? next : most), all[0] ?? NOWHERE);

@@ -1,4 +1,4 @@
-import { type FindingList, whole } from '../finding-list.ts';
+import { type FindingList, hoursPhrase } from '../finding-list.ts';
 import type { ReportColumns } from './report-columns.ts';
 
 /** Says which pressure served where the file gives that at sea level. */
@@ -16,6 +16,6 @@ export function tellSeaLevelPressure(
     message: () =>
       waiting
         ? 'The file gives the pressure at sea level, which becomes station pressure once the elevation is known.'
-        : `In ${whole(fromSeaLevel)} hours the station pressure follows from the pressure at sea level and the elevation, ${elevationM} m.`,
+        : `In ${hoursPhrase(fromSeaLevel)} the station pressure follows from the pressure at sea level and the elevation, ${elevationM} m.`,
   });
 }

@@ -116,7 +116,9 @@ function changesClocks(minutes: readonly number[], stepMin: number): boolean {
 
 function scaleOfNames(columns: GuessedTime['columns'], layout: TableLayout): TimeScale {
   const words = [...('column' in columns ? [columns.column] : []), ...('time' in columns ? [columns.time] : [])];
-  const said = [...words, ...layout.preamble].some((word) => /\b(utc|gmt|zulu)\b/i.test(word.replaceAll('_', ' ')));
+  // A line about the zone names UTC to count from it.
+  const above = layout.preamble.filter((line) => !/zone|offset/i.test(line));
+  const said = [...words, ...above].some((word) => /\b(utc|gmt|zulu)\b/i.test(word.replaceAll('_', ' ')));
   return said ? 'UTC' : 'standard';
 }
 

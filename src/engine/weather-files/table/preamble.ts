@@ -18,7 +18,7 @@ const KEYS = [
   ['longitude', /^(lon|long|longitude)( |$)/],
   ['elevation', /^(elev(ation)?|altitude|alt|height)( |$)/],
   ['zone', /^(time ?zone|tz|utc offset|gmt offset|local time zone)( |$)/],
-  ['name', /^(station( name)?|site( name)?|location( name)?|name|city)$/],
+  ['name', /^(station( name)?|site( name)?|location( name| title)?|name|city)$/],
 ] as const;
 
 /** The place that a preamble gives; everything is null without one. */

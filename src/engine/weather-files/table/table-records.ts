@@ -1,4 +1,5 @@
 /** The rows of a table as they stand, by station, with every fault told. */
+import { MOST_STATIONS, tellTooManyStations } from '../assembly/assemble-station-years.ts';
 import { type FindingList, linesPhrase, whole } from '../finding-list.ts';
 import type { DecodedText } from '../text/decode-text.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
@@ -51,6 +52,7 @@ export function readRecords(
   const stations = new Map<string, TableRecords>();
   const pending: PendingLine[] = [];
   let rows = 0;
+  let beyond = false;
   scanTable(text, layout, (cursor, fields) => {
     const holds = isRow(cursor, fields, layout);
     const stamp = holds ? readTime(cursor, fields) : null;
@@ -62,11 +64,16 @@ export function readRecords(
     tellDamaged(pending.splice(0), layout, findings);
     rows++;
     const key = stationAt < 0 ? '' : separatedText(cursor, fields, stationAt, LONGEST_STATION).trim();
+    if (stations.size >= MOST_STATIONS && !stations.has(key)) {
+      beyond = true;
+      return;
+    }
     const values = readValues(cursor, fields, (index) => tellNotANumber(cursor, fields, { index, layout }, findings));
     const minutes = civilMinutes(stamp.time) - (stamp.offsetMin ?? 0);
     keep(recordsOf(stations, key), { line: cursor.line, minutes }, values);
   });
   if (rows > MOST_ROWS) tellTooMany(findings);
+  if (beyond) tellTooManyStations(findings);
   tellAfter(pending, findings);
   return { stations, after: pending.map((line) => line.text) };
 }
