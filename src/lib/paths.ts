@@ -26,7 +26,14 @@ export const paths = {
     to: (ids: { teamId: string; programmeId: string; briefId: string }) =>
       `/teams/${ids.teamId}/programmes/${ids.programmeId}/briefs/${ids.briefId}`,
   },
-  weather: { pattern: 'weather', to: (teamId: string) => `/teams/${teamId}/weather` },
+  weather: {
+    pattern: 'weather',
+    /** `asked` narrows the library: to a batch, a station, a status. */
+    to: (teamId: string, asked: { batch?: string; station?: string; status?: string } = {}) => {
+      const search = new URLSearchParams(asked);
+      return `/teams/${teamId}/weather${search.size > 0 ? `?${search}` : ''}`;
+    },
+  },
   weatherFile: {
     pattern: 'weather/:fileId',
     to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}`,

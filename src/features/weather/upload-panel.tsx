@@ -1,24 +1,17 @@
-import { useQueryClient } from '@tanstack/react-query';
-import { type DragEvent, type ReactNode, useRef, useState, useSyncExternalStore } from 'react';
+import { type DragEvent, type ReactNode, useRef, useState } from 'react';
 import { Link } from 'react-router-dom';
-import { listWeatherFiles, MAX_FILE_BYTES, type WeatherFile } from '../../contract/weather.ts';
-import { apiKey } from '../../lib/api-query.ts';
+import { MAX_FILE_BYTES, type WeatherFile } from '../../contract/weather.ts';
+import { MAX_ARCHIVE_BYTES } from '../../contract/weather-batches.ts';
 import { fileSize, percent, plural } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { Button } from '../../ui/button.tsx';
 import { Progress } from '../../ui/progress.tsx';
+import { pageUploads, useUpload, useUploads } from './page-uploads.ts';
 import { ReadingSteps } from './reading-steps.tsx';
-import { type Upload, uploadQueue } from './upload-queue.ts';
-
-/** Puts chosen or dropped files in line for a team. */
-export function useUpload(teamId: string): (files: readonly File[]) => void {
-  const client = useQueryClient();
-  return (files) =>
-    uploadQueue.add(teamId, files, () => client.invalidateQueries({ queryKey: apiKey(listWeatherFiles) }));
-}
+import { isUnderWay, type Upload } from './upload-queue.ts';
 
 /** The button that opens the browser's choice of files. */
-export function UploadButton({ teamId, look = 'primary' }: { teamId: string; look?: 'primary' | 'plain' }) {
+export function UploadButton({ teamId }: { teamId: string }) {
   const input = useRef<HTMLInputElement>(null);
   const upload = useUpload(teamId);
   return (
@@ -34,7 +27,7 @@ export function UploadButton({ teamId, look = 'primary' }: { teamId: string; loo
           event.currentTarget.value = '';
         }}
       />
-      <Button look={look} onClick={() => input.current?.click()}>
+      <Button look="primary" onClick={() => input.current?.click()}>
         Upload files
       </Button>
     </>
@@ -74,18 +67,17 @@ export function DropArea({ teamId, children }: { teamId: string; children: React
 export function DropHint() {
   return (
     <p className="border border-dashed border-[#b9af9b] px-4 py-3 text-center text-fine text-soft max-md:hidden">
-      Drop hourly EPW files anywhere here, one year each, up to {fileSize(MAX_FILE_BYTES)}.
+      Drop hourly files or a zip anywhere here: EPW, TMY2, TMY3, ISD, ISD-Lite, Global Hourly, or any table with a time
+      column. Files up to {fileSize(MAX_FILE_BYTES)}, a zip up to {fileSize(MAX_ARCHIVE_BYTES)}.
     </p>
   );
 }
 
-/** What this page has sent or is sending, with what became of it. */
+/** What this page has sent or is sending outside of batches, with what became of it. */
 export function UploadList({ teamId, items }: { teamId: string; items: readonly WeatherFile[] }) {
-  const uploads = useSyncExternalStore(uploadQueue.subscribe, uploadQueue.snapshot).filter(
-    (upload) => upload.teamId === teamId,
-  );
+  const uploads = useUploads(teamId).filter(({ batchId }) => batchId === null);
   if (uploads.length === 0) return null;
-  const waiting = uploads.filter(({ state }) => state === 'waiting' || state === 'sending').length;
+  const waiting = uploads.filter(isUnderWay).length;
   const sent = uploads.filter(({ state }) => state === 'sent').length;
   return (
     <section aria-label="Uploads" className="border-y border-line bg-paper px-4 py-2.5">
@@ -93,11 +85,11 @@ export function UploadList({ teamId, items }: { teamId: string; items: readonly 
         <h2 className="text-lead">
           <span role="status">
             {waiting > 0
-              ? `Sending ${plural(waiting, 'file')}. You can leave this page.`
+              ? `Sending ${plural(waiting, 'file')}. You can go to other pages meanwhile.`
               : `${plural(sent, 'file')} sent`}
           </span>
         </h2>
-        <Button look="quiet" onClick={() => uploadQueue.clearEnded()}>
+        <Button look="quiet" onClick={() => pageUploads.clearEnded()}>
           Clear the list
         </Button>
       </div>
@@ -116,7 +108,8 @@ function latestOf({ answer }: Upload, items: readonly WeatherFile[]): WeatherFil
   return items.find((item) => item.id === answer.file.id) ?? answer.file;
 }
 
-function UploadRow({ upload, file }: { upload: Upload; file: WeatherFile | null }) {
+/** One file on its way, and what became of it. */
+export function UploadRow({ upload, file }: { upload: Upload; file: WeatherFile | null }) {
   return (
     <li className="grid grid-cols-[minmax(0,16rem)_minmax(0,1fr)] items-center gap-x-4 gap-y-1 border-t border-line py-2 max-md:grid-cols-1">
       <p className="truncate">
@@ -148,8 +141,8 @@ function FailedUpload({ upload }: { upload: Upload }) {
   return (
     <p className="font-medium text-madder" role="alert">
       Not sent. {upload.problem}{' '}
-      {upload.bytes > 0 && upload.bytes <= MAX_FILE_BYTES ? (
-        <Button look="quiet" className="text-fine" onClick={() => uploadQueue.retry(upload.id)}>
+      {pageUploads.isHeld(upload.id) ? (
+        <Button look="quiet" className="text-fine" onClick={() => pageUploads.retry(upload.id)}>
           Send it again
         </Button>
       ) : null}

@@ -24,6 +24,11 @@ export const stepWord: Readonly<Record<ReadingStep, string>> = {
   storing: 'storing',
 };
 
+/** A format as it is printed: the trade's names stand as they are, ours begin a line. */
+export function formatWord(format: string): string {
+  return format === 'table' ? 'Table' : format;
+}
+
 type Stated = Pick<WeatherFile, 'status' | 'step' | 'failure' | 'findingCounts'>;
 
 /** The status as it is printed, with what qualifies it: "In review, 2 doubts". */

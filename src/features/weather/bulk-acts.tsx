@@ -1,0 +1,163 @@
+import { useMutation } from '@tanstack/react-query';
+import { useState } from 'react';
+import { Link } from 'react-router-dom';
+import { actOnWeatherFiles, MAX_FILES_PER_ACT, type WeatherFile } from '../../contract/weather.ts';
+import { call } from '../../lib/api-client.ts';
+import { errorSentence } from '../../lib/api-error.ts';
+import { plural } from '../../lib/format.ts';
+import { paths } from '../../lib/paths.ts';
+import { useTeam } from '../../lib/team-scope.ts';
+import { Button } from '../../ui/button.tsx';
+import { Notice } from '../../ui/notice.tsx';
+import { ReasonDialog } from './reason-dialog.tsx';
+import { SupersedeDialog } from './supersede-dialog.tsx';
+import { useWeatherChanged } from './weather-queries.ts';
+import type { ChosenFiles } from './weather-table.tsx';
+
+/** What is done to every chosen file. */
+export type BulkAct =
+  | { readonly act: 'accept' }
+  | { readonly act: 'refuse' | 'withdraw'; readonly reason: string }
+  | { readonly act: 'supersede'; readonly byFileId: string };
+
+interface BulkActsProps {
+  readonly chosen: ChosenFiles;
+  /** The page in view, where the chosen files may have changed meanwhile. */
+  readonly items: readonly WeatherFile[];
+  readonly onChosen: (chosen: ChosenFiles) => void;
+}
+
+const done: Readonly<Record<BulkAct['act'], string>> = {
+  accept: 'accepted',
+  refuse: 'refused',
+  withdraw: 'withdrawn',
+  supersede: 'superseded',
+};
+
+/** The chosen files and what may be done to all of them; afterwards, what could not be done and why. */
+export function BulkActs({ chosen, items, onChosen }: BulkActsProps) {
+  const { teamId } = useTeam();
+  const changed = useWeatherChanged();
+  const [asking, setAsking] = useState<'refuse' | 'withdraw' | 'supersede' | null>(null);
+  const fileIds = [...chosen.keys()];
+  const act = useMutation({
+    mutationFn: (body: BulkAct) =>
+      call(actOnWeatherFiles, { params: { teamId }, query: {}, body: bodyOf(body, fileIds) }),
+    onSuccess: ({ done: ids }) => onChosen(new Map([...chosen].filter(([id]) => !ids.includes(id)))),
+    onSettled: () => {
+      setAsking(null);
+      changed();
+    },
+  });
+  const files = [...chosen.values()].map((file) => items.find(({ id }) => id === file.id) ?? file);
+  const elsewhere = files.filter(({ id }) => !items.some((item) => item.id === id)).length;
+  const isTooMany = files.length > MAX_FILES_PER_ACT;
+  const none = files.length === 0;
+  return (
+    <div className={none ? '' : 'sticky top-0 z-10 -mx-2 mb-2 border-y border-line bg-paper px-2 py-2'}>
+      {none ? null : (
+        <div className="flex flex-wrap items-center gap-x-3 gap-y-1.5">
+          <p className="mr-auto font-medium">
+            {plural(files.length, 'file')} chosen{elsewhere > 0 ? `, ${elsewhere} not on this page` : ''}
+            {isTooMany ? `. At most ${MAX_FILES_PER_ACT} at once.` : ''}
+          </p>
+          <Button
+            look="primary"
+            busy={act.isPending}
+            disabled={isTooMany}
+            onClick={() => act.mutate({ act: 'accept' })}
+          >
+            Accept
+          </Button>
+          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('refuse')}>
+            Refuse
+          </Button>
+          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('withdraw')}>
+            Withdraw
+          </Button>
+          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('supersede')}>
+            Supersede
+          </Button>
+          <Button look="quiet" onClick={() => onChosen(new Map())}>
+            Choose none
+          </Button>
+        </div>
+      )}
+      <div className={act.isIdle || act.isPending ? '' : 'mt-2 mb-3'}>
+        {act.isError ? (
+          <Notice tone="wrong" live>
+            {errorSentence(act.error)}
+          </Notice>
+        ) : null}
+        {act.data && act.variables ? (
+          <ActOutcome what={act.variables.act} answer={act.data} onClose={() => act.reset()} />
+        ) : null}
+      </div>
+      {asking === 'refuse' || asking === 'withdraw' ? (
+        <ReasonDialog
+          act={asking}
+          files={files}
+          isBusy={act.isPending}
+          onClose={() => setAsking(null)}
+          onReason={(reason) => act.mutate({ act: asking, reason })}
+        />
+      ) : null}
+      {asking === 'supersede' ? (
+        <SupersedeDialog
+          files={files}
+          isBusy={act.isPending}
+          onClose={() => setAsking(null)}
+          onBetter={(byFileId) => act.mutate({ act: 'supersede', byFileId })}
+        />
+      ) : null}
+    </div>
+  );
+}
+
+/** The body in the form that the contract takes, which has one for each act. */
+function bodyOf(act: BulkAct, fileIds: string[]) {
+  switch (act.act) {
+    case 'accept':
+      return { act: act.act, fileIds };
+    case 'supersede':
+      return { act: act.act, fileIds, byFileId: act.byFileId };
+    default:
+      return { act: act.act, fileIds, reason: act.reason };
+  }
+}
+
+interface ActOutcomeProps {
+  readonly what: BulkAct['act'];
+  readonly answer: {
+    readonly done: readonly string[];
+    readonly problems: readonly { fileId: string; name: string; message: string }[];
+  };
+  readonly onClose: () => void;
+}
+
+function ActOutcome({ what, answer, onClose }: ActOutcomeProps) {
+  const { teamId } = useTeam();
+  const { problems } = answer;
+  return (
+    <Notice
+      tone={problems.length > 0 ? 'wrong' : 'note'}
+      live
+      title={`${plural(answer.done.length, 'file')} ${done[what]}${problems.length > 0 ? `, ${problems.length} could not be` : ''}`}
+      actions={
+        <Button look="quiet" onClick={onClose}>
+          Close
+        </Button>
+      }
+    >
+      {problems.length > 0 ? (
+        <ul className="max-h-60 overflow-y-auto">
+          {problems.map(({ fileId, name, message }) => (
+            <li key={fileId}>
+              <Link to={paths.weatherFile.to(teamId, fileId)}>{name}</Link>: {message}
+            </li>
+          ))}
+        </ul>
+      ) : null}
+    </Notice>
+  );
+}
