@@ -11,7 +11,7 @@ import { findWeatherFile, type WeatherFileState } from '../features/weather/weat
 import { buildTeam } from './build-team.ts';
 import { newDemoAccounts, writeDemoAccounts } from './demo-accounts.ts';
 import { DEMO_SEEDED, findStandingDemo, type StandingDemo } from './demo-read-model.ts';
-import { acceptAs, type OwnFile, receiveFromDisk } from './weather-file-steps.ts';
+import { acceptAs, type OwnFile, openLicenceAs, receiveFromDisk } from './weather-file-steps.ts';
 import { writtenDemoFiles } from './written-demo-files.ts';
 
 export const DEMO_TEAM = 'Veldway Schools';
@@ -89,7 +89,10 @@ async function ingest(seed: SeedDemo, { demo, folder }: { demo: StandingDemo; fo
       for (const fileId of [...receiving.waiting]) {
         const file = await findWeatherFile(deps.db, { teamId: demo.teamId, fileId });
         if (!isAcceptable(file)) continue;
-        if (file.status === 'review') await acceptAs(deps, { ...whose, fileId });
+        if (file.status === 'review') {
+          await openLicenceAs(deps, { ...whose, fileId });
+          await acceptAs(deps, { ...whose, fileId });
+        }
         receiving.waiting.delete(fileId);
         accepted += 1;
       }

@@ -7,6 +7,7 @@ import { findOrMakeStation } from '../features/stations/find-or-make-station.ts'
 import { switchRuleOff } from '../features/stations/switch-rule.ts';
 import { acceptWeatherFile } from '../features/weather/accept-weather-file.ts';
 import { receiveWeatherFile } from '../features/weather/receive-weather-file.ts';
+import { setLicence } from '../features/weather/set-licence.ts';
 
 type FileDeps = Pick<Deps, 'db' | 'storage' | 'now'>;
 
@@ -39,4 +40,10 @@ export async function receiveFromDisk(deps: FileDeps, from: OwnFile & { readonly
 export async function acceptAs(deps: FileDeps, file: OwnFile & { readonly fileId: string }): Promise<void> {
   const { db, now } = deps;
   await acceptWeatherFile({ db, findOrMakeStation, switchRuleOff, queueRuns }, { ...file, requestId: null, at: now() });
+}
+
+/** Says of an invented file that anybody may pass it on. */
+export async function openLicenceAs(deps: FileDeps, file: OwnFile & { readonly fileId: string }): Promise<void> {
+  const licence = { licence: 'open', attribution: 'Invented weather of the demo' } as const;
+  await setLicence(deps.db, { ...file, ...licence, requestId: null });
 }

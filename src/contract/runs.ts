@@ -274,7 +274,7 @@ export const exportRunHours = endpoint({
   query: empty,
   body: none,
   response: file({ mediaType: 'text/csv; charset=utf-8', attachment: true }),
-  errors: ['wrong_state'],
+  errors: ['wrong_state', 'not_allowed'],
   allow: 'runs.export',
   limits: { ...ordinary, perMinute: 60, seconds: 120 },
 });

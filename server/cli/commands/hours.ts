@@ -17,6 +17,7 @@ export async function hours(context: CommandContext): Promise<ExitCode> {
       file,
       station: reading.station.name,
       weatherYear: weatherYearText(reading),
+      licence: null,
       brief: preset,
       briefSentence: briefSentence(brief),
       zone: place.zone,

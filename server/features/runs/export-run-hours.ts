@@ -1,5 +1,6 @@
 import { Readable } from 'node:stream';
 import type { Knex } from 'knex';
+import type { Role } from '#contract/accounts.ts';
 import { briefSentence } from '#engine/brief/brief-sentence.ts';
 import { changeWords } from '#engine/climate/change-words.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
@@ -23,10 +24,11 @@ export interface ExportParts {
  */
 export async function exportRunHours(
   { db, yearThread }: ExportParts,
-  asked: { teamId: string; runId: string; signal: AbortSignal },
+  asked: { teamId: string; runId: string; role: Role | null; signal: AbortSignal },
 ): Promise<{ body: Readable; fileName: string }> {
   const run = await findRunToExport(db, asked);
   if (run === null) throw new AppError('not_found', 'There is no such run in this team.');
+  if (!mayTakeAlong(run, asked.role)) throw underLicence(run);
   if (run.methodVersion !== METHOD_VERSION) throw anotherMethod(run);
   const { weatherYearId, brief, heightM, clock, zone } = run;
   const year = await readPackedYear(db, { teamId: asked.teamId, weatherYearId });
@@ -36,6 +38,27 @@ export async function exportRunHours(
   if (!run.hourClassCodes.equals(written.hourClassCodes))
     throw new Error(`the hours of the run ${asked.runId} no longer come to the classes that it holds`);
   return { body: Readable.from(chunksOf(written.bytes)), fileName: fileNameOf(run) };
+}
+
+/**
+ * The table holds the weather of every hour. Where its licence allows nobody to pass it on, or is not known, only those who answer
+ * for the files take it along, for the team's own checks.
+ */
+function mayTakeAlong({ licence }: RunToExport, role: Role | null): boolean {
+  if (licence !== 'no redistribution' && licence !== 'unknown') return true;
+  return role === 'engineer' || role === 'lead';
+}
+
+function underLicence({ fileName, licence }: RunToExport): AppError {
+  const why = licence === 'unknown' ? 'is not known, so it counts as “no redistribution”' : 'allows no redistribution';
+  return new AppError(
+    'not_allowed',
+    `The licence of “${fileName}” ${why}. An engineer of the team can take the hours along, or say on its record what the licence is.`,
+  );
+}
+
+function licenceText({ licence, attribution }: RunToExport): string {
+  return attribution === null ? licence : `${licence}; ${attribution}`;
 }
 
 function anotherMethod({ methodVersion }: RunToExport): AppError {
@@ -51,6 +74,7 @@ function originOf(run: RunToExport) {
     file: fileName,
     station: stationName,
     weatherYear: yearSentence(run),
+    licence: licenceText(run),
     brief: `${briefName}, version ${briefVersion}`,
     briefSentence: briefSentence(brief),
     zone,

@@ -65,9 +65,10 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
     return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 
-  mount(router, deps, exportEndpoint, async ({ params }, { signal }) =>
-    exportRunHours({ db, yearThread }, { ...params, signal }),
-  );
+  mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
+    const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
+    return await exportRunHours({ db, yearThread }, { ...params, role, signal });
+  });
 
   mount(router, deps, getRunHours, async ({ params }) => {
     const body = await readRunHours(db, params);

@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { Licence } from '#contract/weather-reading.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
@@ -10,6 +11,8 @@ export interface RunToExport {
   readonly kind: YearKind;
   readonly year: number | null;
   readonly fileName: string;
+  readonly licence: Licence;
+  readonly attribution: string | null;
   readonly stationName: string;
   readonly zone: string;
   readonly methodVersion: string;
@@ -31,7 +34,9 @@ export interface RunToExport {
 export async function findRunToExport(db: Knex, key: { teamId: string; runId: string }): Promise<RunToExport | null> {
   const { rows } = await db.raw<{ rows: RunToExport[] }>(
     `select runs.weather_year_id as "weatherYearId", weather_years.kind, weather_years.year,
-       weather_files.name as "fileName", stations.name as "stationName", stations.zone,
+       weather_files.name as "fileName",
+       coalesce(parent_files.licence, weather_files.licence) as licence,
+       coalesce(parent_files.attribution, weather_files.attribution) as attribution, stations.name as "stationName", stations.zone,
        runs.method_version as "methodVersion", runs.height_m as "heightM", runs.clock,
        runs.hour_classes as "hourClassCodes", brief_versions.body as brief, briefs.name as "briefName",
        brief_versions.version as "briefVersion",

@@ -25,9 +25,9 @@ export async function insertDerivedFile(
 ): Promise<string | null> {
   const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
     `insert into weather_files (team_id, name, bytes, fingerprint, storage_key, format, status, declared_station, station_id,
-       uploaded_by, uploaded_at, accepted_by, accepted_at)
+       licence, attribution, uploaded_by, uploaded_at, accepted_by, accepted_at)
      select parent.team_id, :name, :bytes, :fingerprint, :storageKey, :format, 'accepted', parent.declared_station,
-       parent.station_id, :personId, :at, :personId, :at
+       parent.station_id, parent.licence, parent.attribution, :personId, :at, :personId, :at
      from weather_files as parent
      where parent.team_id = :teamId and parent.id = :parentFileId
      on conflict (team_id, fingerprint, part_index) where status <> 'withdrawn' do nothing

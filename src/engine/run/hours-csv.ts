@@ -12,6 +12,8 @@ export interface HoursTableOrigin {
   readonly station: string;
   /** What kind of year it is, of a derived one also how it was made: "typical year". */
   readonly weatherYear: string;
+  /** Under which licence the weather may be passed on, and whom to name; null where nobody has said. */
+  readonly licence: string | null;
   readonly brief: string;
   /** The brief in one sentence. */
   readonly briefSentence: string;
@@ -50,6 +52,7 @@ function aboutLines({ clock, limitUnit }: HoursTable, origin: HoursTableOrigin):
     ['file', origin.file],
     ['station', origin.station],
     ['weather year', origin.weatherYear],
+    ...(origin.licence === null ? [] : [['licence of the weather', origin.licence]]),
     ['units', units],
     [
       'times',

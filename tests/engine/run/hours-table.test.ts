@@ -22,6 +22,7 @@ const ORIGIN = {
   file: 'here.epw',
   station: 'Here',
   weatherYear: 'typical year',
+  licence: null,
   brief: 'a brief',
   briefSentence: 'a sentence',
   zone: 'UTC',

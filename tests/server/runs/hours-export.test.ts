@@ -19,6 +19,7 @@ let engineer: Member;
 let desk: TeamDesk;
 let place: Place;
 let runId: string;
+let fileId: string;
 let text: string;
 let headers: Readonly<Record<string, string>>;
 
@@ -35,6 +36,8 @@ beforeAll(async () => {
   await desk.mapWithoutPending();
   place = await desk.place(stationId);
   runId = place.shown?.runId ?? '';
+  fileId = file.id;
+  await setLicence('attribution', 'The mast of Ñandú').expect(200);
   ({ text, headers } = await exported(await team.join('planner')).expect(200));
 });
 afterEach(() => {
@@ -43,6 +46,9 @@ afterEach(() => {
 afterAll(() => road.close());
 
 const exported = (who: Member, id = runId) => who.agent.get(`/api/teams/${team.teamId}/runs/${id}/hours.csv`).buffer();
+
+const setLicence = (licence: string, attribution: string | null) =>
+  engineer.agent.put(`/api/teams/${team.teamId}/weather-files/${fileId}/licence`).send({ licence, attribution });
 
 describe('the hours of a run as a table', () => {
   it('hold the run’s classes, each of which is found again from its row', async () => {
@@ -66,6 +72,7 @@ describe('the hours of a run as a table', () => {
       csvRows(text).flatMap(([name = '', value = '']) => (name.startsWith('# ') ? [[name, value]] : [])),
     );
     expect(about.get('# weather year')).toBe('typical year');
+    expect(about.get('# licence of the weather')).toBe('attribution; The mast of Ñandú');
     expect(about.get('# brief')).toBe(`${place.brief.name}, version 1`);
     expect(about.get('# requirement')).toBe(place.brief.sentence);
     expect(about.get('# method version')).toBe(place.brief.methodVersion);
@@ -77,6 +84,21 @@ describe('the hours of a run as a table', () => {
       .flat()
       .filter((cell) => /^\s*[=+\-@]/.test(cell) && !/^-\d+(\.\d+)?$/.test(cell));
     expect(formulas).toEqual([]);
+  });
+
+  it('go along with nobody but the engineers while the licence of the weather allows no redistribution', async () => {
+    const planner = await team.join('planner');
+    for (const [licence, says] of [
+      ['unknown', 'is not known'],
+      ['no redistribution', 'allows no redistribution'],
+    ] as const) {
+      await setLicence(licence, null).expect(200);
+      const { body } = await planner.agent.get(`/api/teams/${team.teamId}/runs/${runId}/hours.csv`).expect(403);
+      expect(body.message).toContain(says);
+      await exported(engineer).expect(200);
+    }
+    await setLicence('open', null).expect(200);
+    await exported(planner).expect(200);
   });
 
   it('are for those who may export', async () => {
