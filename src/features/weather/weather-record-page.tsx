@@ -8,6 +8,7 @@ import { useTeam } from '../../lib/team-scope.ts';
 import { Button } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { Notice } from '../../ui/notice.tsx';
+import { Answering } from './answering.tsx';
 import { DepressionTable } from './depression-table.tsx';
 import { DerivedChildren, DerivedFrom } from './derived-from.tsx';
 import { DesignTable } from './design-table.tsx';
@@ -47,6 +48,7 @@ function Record({ record }: { record: WeatherFileRecord }) {
         <RecordHeading record={record} />
         <RecordState record={record} />
       </div>
+      <Answering record={record} />
       <DerivedFrom record={record} />
       {file.parent === null ? (
         <Findings findings={record.findings} asks={record.asks} isReading={file.status === 'reading'} />
