@@ -1,4 +1,5 @@
 import type { Bench, BenchFinding } from './bench.ts';
+import { batchBench } from './definitions/batch.ts';
 import { growthReadBench, ingestBench } from './definitions/ingest.ts';
 import { rankBench } from './definitions/rank.ts';
 import { readBench } from './definitions/read.ts';
@@ -13,6 +14,7 @@ export const benches: readonly Bench[] = [
   ingestBench,
   growthReadBench,
   readBench,
+  batchBench,
   rescoreBench,
   rescoreThreadsBench,
   growthBench,

@@ -12,7 +12,6 @@ import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { readStoredFile } from '../../server/features/weather/read-stored-file.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
-import { shippedRelief } from '../../server/tiles/relief.ts';
 import { demoEpw } from '../support/demo-epw.ts';
 import { cloneStationYears } from '../support/station-years.ts';
 import { startThrowawayCluster } from '../support/throwaway-cluster.ts';
@@ -28,11 +27,16 @@ export interface StationYearCluster {
   readonly teamId: string;
 }
 
-/** Works with so many station-years in a cluster of their own: six invented typical years by the main road, the rest their clones. */
-export async function withStationYears<T>(
-  stations: number,
-  work: (cluster: StationYearCluster) => Promise<T>,
-): Promise<T> {
+/** A team without any file, in a database of the product's own schema. */
+export interface EmptyTeam extends StationYearCluster {
+  readonly personId: string;
+  readonly databaseUrl: string;
+  /** A folder that disappears with the cluster. */
+  readonly home: string;
+}
+
+/** Works with a team of its own in a cluster of its own. */
+export async function withEmptyTeam<T>(work: (team: EmptyTeam) => Promise<T>): Promise<T> {
   const home = await mkdtemp(path.join(tmpdir(), 'muslin-bench-'));
   const cluster = await startThrowawayCluster();
   const { port, ownerPassword, appPassword } = cluster.server;
@@ -42,12 +46,11 @@ export async function withStationYears<T>(
   let ownerDb: Knex | null = null;
   try {
     await prepareDatabase(cluster.server, DATABASE);
-    db = connect({ databaseUrl: urlOf(APP_LOGIN, appPassword), maxConnections: 1 });
+    const appUrl = urlOf(APP_LOGIN, appPassword);
+    db = connect({ databaseUrl: appUrl, maxConnections: 1 });
     ownerDb = knexPkg.knex({ client: 'pg', connection: urlOf(OWNER_LOGIN, ownerPassword) });
-    const teamId = await fill({ db, home });
-    await cloneStationYears(ownerDb, { teamId, stations: stations - CLIMATES });
-    await ownerDb.raw('analyze');
-    return await work({ db, ownerDb, teamId });
+    const team = await makeBenchTeam(db);
+    return await work({ db, ownerDb, home, databaseUrl: appUrl, ...team });
   } finally {
     await db?.destroy();
     await ownerDb?.destroy();
@@ -56,14 +59,30 @@ export async function withStationYears<T>(
   }
 }
 
-async function fill({ db, home }: { db: Knex; home: string }): Promise<string> {
-  const storage = createFolderStore(path.join(home, 'originals'));
-  const deps = { db, storage, relief: shippedRelief(), now: () => new Date() };
+/** Works with so many station-years in a cluster of their own: six invented typical years by the main road, the rest their clones. */
+export async function withStationYears<T>(
+  stations: number,
+  work: (cluster: StationYearCluster) => Promise<T>,
+): Promise<T> {
+  return await withEmptyTeam(async (team) => {
+    await fill(team);
+    await cloneStationYears(team.ownerDb, { teamId: team.teamId, stations: stations - CLIMATES });
+    await team.ownerDb.raw('analyze');
+    return await work(team);
+  });
+}
+
+async function makeBenchTeam(db: Knex): Promise<{ teamId: string; personId: string }> {
   const person = { email: 'bench@example.org', password: 'a long pass phrase for tests', name: 'Bench' };
   const personId = await makePerson(db, person);
   const { teamId } = await inTransaction(db, (transaction) =>
     makeTeam({ transaction, startBrief }, { name: 'Bench', leadId: personId, invented: true, programmeName: 'Bench' }),
   );
+  return { teamId, personId };
+}
+
+async function fill({ db, home, teamId, personId }: EmptyTeam): Promise<void> {
+  const deps = { db, storage: createFolderStore(path.join(home, 'originals')), now: () => new Date() };
   for (let nth = 0; nth < CLIMATES; nth++) {
     const { name, text } = demoEpw(nth);
     const file = path.join(home, name);
@@ -72,5 +91,4 @@ async function fill({ db, home }: { db: Knex; home: string }): Promise<string> {
     await readStoredFile({ ...deps, ...readingKnowledge() }, { teamId, fileId });
     await acceptAs(deps, { teamId, personId, fileId });
   }
-  return teamId;
 }

@@ -22,7 +22,7 @@ const PRESSURE = 9;
 const SAME_WITHIN_K = 0.01;
 
 /** Mean wet bulb, °C, as the plain loop finds it. */
-function plainMeanC(bytes: Uint8Array): number {
+export function plainMeanC(bytes: Uint8Array): number {
   const { data } = Papa.parse<readonly string[]>(new TextDecoder('latin1').decode(bytes), { skipEmptyLines: true });
   const rows = data.slice(HEADER_LINES);
   let sum = 0;
