@@ -22,6 +22,7 @@ import {
 import { whyNoWeatherFile } from './no-weather-file.ts';
 import { queueOpening } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
+import { findWeatherFile } from './weather-file-store.ts';
 
 type Deps = { readonly db: Knex; readonly storage: OriginalStore };
 
@@ -67,8 +68,9 @@ async function receiveMembers(
     }
     if (member.kind === 'left out') done.leftOut.push({ path: member.path, why: member.why });
     else {
-      await receiveMember(deps, archive, member);
-      done.opened++;
+      const known = await receiveMember(deps, archive, member);
+      if (known === null) done.opened++;
+      else done.leftOut.push(known);
     }
   }
   done.nextEntry = members;
@@ -94,21 +96,28 @@ async function handOn({ db }: Deps, archive: ArchiveState): Promise<void> {
   await inTransaction(db, (transaction) => queueOpening(transaction, keyOf(archive)));
 }
 
+/** @returns why it is left out, where the team has its bytes already; null once it is a file of the batch */
 async function receiveMember(
   deps: Deps,
   archive: ArchiveState,
   member: { path: string; bytes: number; fingerprint: string; temporaryPath: string },
-): Promise<void> {
-  const { bytes, fingerprint, temporaryPath } = member;
-  await receiveWeatherFile(deps, {
-    teamId: archive.teamId,
-    batchId: archive.batchId,
+): Promise<LeftOut | null> {
+  const { teamId, batchId } = archive;
+  const { path, bytes, fingerprint, temporaryPath } = member;
+  const name = cleanUploadName(path);
+  const { fileId, known } = await receiveWeatherFile(deps, {
+    teamId,
+    batchId,
     personId: archive.madeBy,
     tokenId: null,
     requestId: null,
     at: new Date(),
-    upload: { name: cleanUploadName(member.path), bytes, fingerprint, temporaryPath },
+    upload: { name, bytes, fingerprint, temporaryPath },
   });
+  const file = known ? await findWeatherFile(deps.db, { teamId, fileId }) : null;
+  // Opened again after a crash, an archive meets what it has brought itself.
+  if (file === null || (file.batchId === batchId && file.name === name)) return null;
+  return { path, why: `These are the same bytes as “${file.name}”, which is here already.` };
 }
 
 function keyOf({ teamId, id }: ArchiveState): { teamId: string; archiveId: string } {

@@ -113,12 +113,15 @@ describe('an archive', () => {
     const { body } = await sendArchive(batch.id, bytes).expect(200);
     expect(body.archive).toMatchObject({ name: 'mixed.zip', bytes: bytes.length });
     const done = await ended(batch.id);
-    expect(done.archives).toMatchObject([{ status: 'opened', members: 6, membersOpened: 3, problem: null }]);
+    expect(done.archives).toMatchObject([{ status: 'opened', members: 6, membersOpened: 2, problem: null }]);
     expect(done.archives[0]?.leftOut.map(({ path }) => path).sort()).toEqual([
       '__MACOSX/._new.epw',
+      'north/known.epw',
       'north/new.ddy',
       'readme.txt',
     ]);
+    const known = done.archives[0]?.leftOut.find(({ path }) => path === 'north/known.epw');
+    expect(known?.why).toBe(`These are the same bytes as “${first.name}”, which is here already.`);
     // The file that was there before stays with the batch that brought it.
     const list = await filesOf(batch.id);
     expect(list.items.map(({ name, status }: { name: string; status: string }) => [name, status])).toEqual([
