@@ -43,8 +43,8 @@ function stationFigures({ name, latitude, longitude, elevationM, utcOffsetH }: D
   return { name, latitude, longitude, elevationM, utcOffsetH };
 }
 
-function findingFigures({ code, severity, line, message }: Finding) {
-  return { code, severity, line, message };
+function findingFigures({ code, severity, line, lastLine, count, variable, done, message }: Finding) {
+  return { code, severity, line, lastLine, count, variable, done, message };
 }
 
 /** The result of one station-year: every key is there whatever became of it, in one order. */
