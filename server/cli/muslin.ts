@@ -10,7 +10,8 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
   bench NAMES                    time the product against the plain way of doing the same
 
 Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H for a file that does not say where it was recorded,
-and --columns MAP.json, the confirmed mapping of a table ("table.mapping" in what read prints of it).
+--columns MAP.json, the confirmed mapping of a table ("table.mapping" in what read prints of it), and --answers ANSWERS.json:
+{"place": {…}, "mapping": {…}, "answers": {"pressure-sea-level": "convert", …}}, by the codes that a file asks with.
 
 One JSON line per result on standard output, of hours a table. Exit codes: 0 done, 1 a file was refused (or is in doubt
 under --strict) or a run is not the same, 2 wrong use, 3 could not run.`;

@@ -2,7 +2,7 @@ import * as z from 'zod/mini';
 import type { Answers, StatedPlace } from '#engine/weather-files/read-options.ts';
 import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 
-/** What a person says of a file, as it crosses the wire: the engine's own words for it, checked for their form. */
+/** What a person says of a file, as it crosses the wire: the engine's own words for it (its types), checked for their form. */
 
 const Column = z.string().check(z.minLength(1), z.maxLength(200));
 const Temperature = z.strictObject({ column: Column, unit: z.enum(['C', 'K', 'F']) });
@@ -29,7 +29,7 @@ const TimeColumns = z.discriminatedUnion('form', [
 ]);
 
 /** How a table is read. */
-export const TableMappingBody = z.strictObject({
+export const TableMappingBody: z.ZodMiniType<TableMapping> = z.strictObject({
   time: z.strictObject({
     columns: TimeColumns,
     scale: z.enum(['UTC', 'standard', 'clock', 'in stamps']),
@@ -52,7 +52,7 @@ export const TableMappingBody = z.strictObject({
 });
 
 /** Where a station stands, as far as a person says. */
-export const StatedPlaceBody = z.strictObject({
+const StatedPlaceBody: z.ZodMiniType<StatedPlace> = z.strictObject({
   name: z.exactOptional(z.string().check(z.trim(), z.minLength(1), z.maxLength(200))),
   latitude: z.exactOptional(z.number().check(z.gte(-90), z.lte(90))),
   longitude: z.exactOptional(z.number().check(z.gte(-180), z.lte(180))),
@@ -61,7 +61,7 @@ export const StatedPlaceBody = z.strictObject({
 });
 
 /** Answers to what a file asks, by the code of the question. */
-export const AnswersBody = z.strictObject({
+const AnswersBody: z.ZodMiniType<Answers> = z.strictObject({
   'pressure-sea-level': z.exactOptional(z.enum(['convert', 'keep'])),
   'pressure-elevation': z.exactOptional(z.enum(['pressure', 'elevation'])),
   'dew-is-wet-bulb': z.exactOptional(z.enum(['wet bulb', 'dew point', 'relative humidity'])),
@@ -71,10 +71,9 @@ export const AnswersBody = z.strictObject({
   'place-sign': z.exactOptional(z.literal('as written')),
 });
 
-/** The schemas and the engine's types are the same thing twice; a difference does not compile. */
-export type SaysTheSame = [
-  Same<z.infer<typeof TableMappingBody>, TableMapping>,
-  Same<z.infer<typeof StatedPlaceBody>, StatedPlace>,
-  Same<z.infer<typeof AnswersBody>, Answers>,
-];
-type Same<Wire extends Engine, Engine> = [Wire, Engine];
+/** All that a person says of a file at once. */
+export const StatedBody = z.strictObject({
+  place: z.exactOptional(StatedPlaceBody),
+  mapping: z.exactOptional(TableMappingBody),
+  answers: z.exactOptional(AnswersBody),
+});

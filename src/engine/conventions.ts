@@ -13,7 +13,7 @@
 export const METHOD_VERSION = '2026.2';
 
 /** Raised by any change that can move what is read from the same bytes; part of a run's key. */
-export const READ_VERSION = '2026.2';
+export const READ_VERSION = '2026.3';
 
 export const HOURS_PER_DAY = 24;
 export const SLOTS_PER_YEAR = 8760;

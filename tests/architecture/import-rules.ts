@@ -122,7 +122,7 @@ export const importRules: readonly ImportRule[] = [
       // The wrappers of zip and gzip: verbs say what becomes of what is inside.
       ...['server/storage/original-store.ts', 'server/storage/zip-members.ts', 'server/storage/inflate-gzip.ts'],
       ...['server/jobs/thread-pool.ts', 'server/jobs/web-*.ts', 'server/jobs/year-*.ts'],
-      ...['node:*', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
+      ...['node:**', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
     ],
     mayTypes: ['knex', ...requestTypes],
   },

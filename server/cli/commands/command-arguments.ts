@@ -14,6 +14,8 @@ export interface CommandArguments {
   readonly place: Required<Omit<StatedPlace, 'name'>> | null;
   /** File with the mapping of a table. */
   readonly columns: string | null;
+  /** File with answers to what a file asks. */
+  readonly answers: string | null;
 }
 
 const PLACE_PARTS = [
@@ -35,6 +37,7 @@ export function readArguments(args: readonly string[]): CommandArguments {
     brief: values.brief ?? null,
     place: values.place === undefined ? null : readPlace(values.place),
     columns: values.columns ?? null,
+    answers: values.answers ?? null,
   };
 }
 
@@ -47,6 +50,7 @@ function parsed(args: readonly string[]) {
         brief: { type: 'string' },
         place: { type: 'string' },
         columns: { type: 'string' },
+        answers: { type: 'string' },
       },
       allowPositionals: true,
     });

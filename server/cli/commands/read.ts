@@ -72,8 +72,8 @@ function failsCommand({ status, findings }: WeatherFileReading, strict: boolean)
 }
 
 /**
- * `muslin read FILE... [--place LAT,LON,ELEVATION_M,UTC_OFFSET_H] [--columns MAP.json] [--strict]`: one line per weather file and
- * station-year, in the order given; archives are opened.
+ * `muslin read FILE... [--place LAT,LON,ELEVATION_M,UTC_OFFSET_H] [--columns MAP.json] [--answers ANSWERS.json] [--strict]`: one
+ * line per weather file and station-year, in the order given; archives are opened.
  */
 export async function read({ args, callerDir }: CommandContext): Promise<ExitCode> {
   const stated = readArguments(args);

@@ -1,32 +1,40 @@
-import { TableMappingBody } from '#contract/weather-answers.ts';
+import { StatedBody, TableMappingBody } from '#contract/weather-answers.ts';
 import type { ReadOptions } from '#engine/weather-files/read-options.ts';
-import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 import { standardZoneAt } from '../../features/stations/standard-zone-at.ts';
-import { shippedRelief } from '../../tiles/relief.ts';
 import { type CommandArguments, WrongUse } from './command-arguments.ts';
 import { openFile } from './open-file.ts';
 
+/** What a schema answers, as far as it is looked at here. */
+interface Schema<T> {
+  safeParse(
+    value: unknown,
+  ):
+    | { success: true; data: T }
+    | { success: false; error: { issues: readonly { message: string; path: readonly PropertyKey[] }[] } };
+}
+
 /**
- * What the command line says of its files: the place, the mapping of a table, zones by position and the shipped relief.
- * @throws WrongUse on a mapping that is none
+ * What the command line says of its files: answers, the place, the mapping of a table, and zones by position.
+ * @throws WrongUse on a file that does not hold what it should
  */
 export async function statedOptions(args: CommandArguments, callerDir: string): Promise<ReadOptions> {
-  const mapping = args.columns === null ? null : await openMapping(args.columns, callerDir);
+  const said = args.answers === null ? {} : await openJson(args.answers, StatedBody, callerDir);
+  const mapping = args.columns === null ? null : await openJson(args.columns, TableMappingBody, callerDir);
   return {
     zoneAt: standardZoneAt,
-    relief: shippedRelief(),
-    ...(args.place === null ? {} : { place: args.place }),
+    ...said,
+    ...(args.place === null ? {} : { place: { ...said.place, ...args.place } }),
     ...(mapping === null ? {} : { mapping }),
   };
 }
 
-async function openMapping(file: string, callerDir: string): Promise<TableMapping> {
+async function openJson<T>(file: string, schema: Schema<T>, callerDir: string): Promise<T> {
   const bytes = await openFile(file, callerDir);
   if (typeof bytes === 'string') throw new WrongUse(bytes);
-  const parsed = TableMappingBody.safeParse(jsonOf(bytes, file));
+  const parsed = schema.safeParse(jsonOf(bytes, file));
   if (parsed.success) return parsed.data;
   const faults = parsed.error.issues.map(({ message, path }) => `${path.join('.') || 'the whole'}: ${message}`);
-  throw new WrongUse(`${file} is no mapping of a table. ${faults.join(' ')}`);
+  throw new WrongUse(`${file} does not hold what it should. ${faults.join(' ')}`);
 }
 
 function jsonOf(bytes: Uint8Array, file: string): unknown {

@@ -123,33 +123,24 @@ describe('muslin read', () => {
     ]);
   });
 
-  it('asks for the place of a file that does not say it, and takes it from --place', async () => {
-    const asking = await muslin('read', '724666-93067-2015');
-    expect(asking.code).toBe(0);
-    expect(results(asking)).toMatchObject([{ format: 'ISD-Lite', status: 'asks', station: { latitude: null } }]);
-    const placed = await muslin('read', '--place=38.5,-105.25,500,-7', '724666-93067-2015');
-    expect(results(placed)).toMatchObject([
-      { status: 'review', asks: [], station: { latitude: 38.5, longitude: -105.25, elevationM: 500, utcOffsetH: -7 } },
-    ]);
+  it('asks for the place that a file does not say, finds the zone of one in UTC, and shows what a table seems to hold', async () => {
+    const outcome = await muslin('read', '724666-93067-2015', 'reports.csv', 'table.csv');
+    expect(outcome.code).toBe(0);
+    const [lite, reports, table] = results(outcome);
+    expect(lite).toMatchObject({ format: 'ISD-Lite', status: 'asks', station: { latitude: null } });
+    expect(reports).toMatchObject({ format: 'Global Hourly', status: 'review', station: { utcOffsetH: -7 } });
+    expect(table).toMatchObject({ format: 'table', status: 'asks', hours: null });
+    expect(Object(table?.table).sample).toHaveLength(10);
   });
 
-  it('finds the zone of a file in UTC that says where its station stands', async () => {
-    const [reading] = results(await muslin('read', 'reports.csv'));
-    expect(reading).toMatchObject({ format: 'Global Hourly', status: 'review', station: { utcOffsetH: -7 } });
-  });
-
-  it('shows what a table seems to hold, and reads it under --columns', async () => {
-    const [guessed] = results(await muslin('read', '--place=38.5,-105.25,500,-7', 'table.csv'));
-    expect(guessed).toMatchObject({ format: 'table', status: 'asks', hours: null, asks: [{ what: 'unit-guess' }] });
-    const table = Object(guessed?.table);
-    expect(table.sample).toHaveLength(10);
-    writeFileSync(path.join(folder, 'map.json'), JSON.stringify(table.mapping));
-    const mapped = await muslin('read', '--place=38.5,-105.25,500,-7', '--columns=map.json', 'table.csv');
-    expect(results(mapped)).toMatchObject([{ status: 'review', hours: 8760, missing: 0 }]);
-  });
-
-  it('gives a line for every year of a file of several', async () => {
-    const years = results(await muslin('read', '--place=38.5,-105.25,500,-7', 'years'));
+  it('takes the place from --place, answers from --answers and the mapping of a table from --columns', async () => {
+    const [guessed] = results(await muslin('read', 'table.csv'));
+    writeFileSync(path.join(folder, 'map.json'), JSON.stringify(Object(guessed?.table).mapping));
+    writeFileSync(path.join(folder, 'answers.json'), '{"answers": {"pressure-elevation": "pressure"}}');
+    const said = ['--place=38.5,-105.25,1000,-7', '--columns=map.json', '--answers=answers.json'];
+    const [table, ...years] = results(await muslin('read', ...said, 'table.csv', 'years'));
+    expect(table).toMatchObject({ status: 'review', asks: [], hours: 8760, missing: 0, station: { elevationM: 1000 } });
+    // A line for every year of a file of several.
     expect(years.map(({ file, part }) => [file, part])).toEqual([
       ['years', '2013'],
       ['years', '2014'],
@@ -244,6 +235,7 @@ describe('wrong use', () => {
     ['a place beyond the Earth', read, ['station.epw', '--place=91,2,3,4']],
     ['a mapping that is not there', read, ['station.epw', '--columns=absent.json']],
     ['a mapping that is none', read, ['station.epw', '--columns=empty.json']],
+    ['answers that are no answers', read, ['station.epw', '--answers=station.epw']],
     ['no file', read, []],
     ['an option of the other command', read, ['station.epw', '--brief', 'office']],
     ['two files where one is read', ledger, ['station.epw', 'nothing.epw', '--brief', 'office']],

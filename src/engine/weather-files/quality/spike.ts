@@ -16,6 +16,7 @@ const NEIGHBOURS_WITHIN = 300;
 export function spikes(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
     const { values } = column;
+    const changes = new MonthlyChanges(hours, values);
     for (const span of hours.unbroken) {
       let before = values[span.start] ?? MISSING_INT16;
       for (let step = span.start + 1; step < span.end - 1; step++) {
@@ -23,7 +24,7 @@ export function spikes(hours: TestedHours, findings: FindingList): void {
         const jump = value - before;
         before = value;
         if (jump <= LEAST_JUMP && jump >= -LEAST_JUMP) continue;
-        const end = endOfSpike(hours, { values, step, span });
+        const end = endOfSpike(hours, { values, step, span, changes });
         if (end === null) continue;
         leaveOutSpike(hours, { column, start: step, end }, findings);
         step = end;
@@ -34,8 +35,11 @@ export function spikes(hours: TestedHours, findings: FindingList): void {
 }
 
 /** The step after the spike; null where none begins. */
-function endOfSpike(hours: TestedHours, at: { values: Int16Array; step: number; span: StepSpan }): number | null {
-  const { span, step, values } = at;
+function endOfSpike(
+  hours: TestedHours,
+  at: { values: Int16Array; step: number; span: StepSpan; changes: MonthlyChanges },
+): number | null {
+  const { changes, span, step, values } = at;
   const before = values[step - 1] ?? MISSING_INT16;
   const top = values[step] ?? MISSING_INT16;
   if (before === MISSING_INT16 || top === MISSING_INT16) return null;
@@ -48,24 +52,42 @@ function endOfSpike(hours: TestedHours, at: { values: Int16Array; step: number; 
     const outwards = after - last;
     if (Math.sign(outwards) === Math.sign(inwards) || Math.abs(after - before) > NEIGHBOURS_WITHIN) continue;
     const least = Math.min(Math.abs(inwards), Math.abs(outwards));
-    if (least > LEAST_JUMP && least > RANGES * rangeOfChanges(hours, values, step)) return end;
+    if (least > LEAST_JUMP && least > RANGES * changes.rangeAt(step)) return end;
   }
   return null;
 }
 
-/** Range of the middle half of the changes from step to step in the month that holds a step, 0.01 K. */
-function rangeOfChanges({ months }: TestedHours, values: Int16Array, step: number): number {
-  const month = months.find(({ end }) => step < end);
-  if (month === undefined) return 0;
-  const changes = new Int16Array(month.end - month.start).fill(MISSING_INT16);
-  for (let at = month.start + 1; at < month.end; at++) {
-    const value = values[at] ?? MISSING_INT16;
-    const before = values[at - 1] ?? MISSING_INT16;
-    if (value === MISSING_INT16 || before === MISSING_INT16) continue;
-    changes[at - month.start] = Math.max(-32_767, Math.min(32_767, value - before));
+/** How widely a column changes from step to step in each month; most files need that of no month. */
+class MonthlyChanges {
+  readonly #months: readonly StepSpan[];
+  readonly #values: Int16Array;
+  readonly #ranges = new Map<number, number>();
+
+  constructor({ months }: TestedHours, values: Int16Array) {
+    this.#months = months;
+    this.#values = values;
   }
-  const quartiles = quartilesOf(changes, 0, changes.length);
-  return quartiles === null ? 0 : quartiles.upper - quartiles.lower;
+
+  /** Range of the middle half of the changes in the month that holds a step, 0.01 K. */
+  rangeAt(step: number): number {
+    const month = this.#months.find(({ end }) => step < end);
+    if (month === undefined) return 0;
+    const range = this.#ranges.get(month.start) ?? this.#rangeOf(month);
+    this.#ranges.set(month.start, range);
+    return range;
+  }
+
+  #rangeOf(month: StepSpan): number {
+    const changes = new Int16Array(month.end - month.start).fill(MISSING_INT16);
+    for (let at = month.start + 1; at < month.end; at++) {
+      const value = this.#values[at] ?? MISSING_INT16;
+      const before = this.#values[at - 1] ?? MISSING_INT16;
+      if (value === MISSING_INT16 || before === MISSING_INT16) continue;
+      changes[at - month.start] = Math.max(-32_767, Math.min(32_767, value - before));
+    }
+    const quartiles = quartilesOf(changes, 0, changes.length);
+    return quartiles === null ? 0 : quartiles.upper - quartiles.lower;
+  }
 }
 
 function leaveOutSpike(hours: TestedHours, spike: StepSpan & { column: TestedColumn }, findings: FindingList): void {

@@ -12,6 +12,8 @@ const REACH_H = 6;
 /** Ours: of two values that are too far apart, the one further from the median of the hours around both has failed. */
 const AROUND_H = 12;
 const DEW_ABOVE_DRY = 50;
+/** Values around a step, used again for each: files of one-minute records may have many steps. */
+const around = new Int16Array(2 * AROUND_H + 2);
 
 /**
  * Changes of the dry bulb from one hour to the next, not across the joints of a typical year. From 20 K a value fails, unless the
@@ -70,12 +72,14 @@ function isFar(value: number, good: number): boolean {
 }
 
 function medianAround({ dryBulb, steps }: TestedHours, { step, start, end }: StepSpan & { step: number }): number {
-  const reach = AROUND_H * steps.stepsPerHour;
-  const around = dryBulb.values
-    .slice(Math.max(start, step - reach), Math.min(end, step + reach))
-    .filter((value) => value !== MISSING_INT16)
-    .sort();
-  return around[around.length >> 1] ?? 0;
+  const perHour = steps.stepsPerHour;
+  let count = 0;
+  // One value an hour, the two of the step among them.
+  for (let at = step - 1 - AROUND_H * perHour; at <= step + AROUND_H * perHour; at += at === step - 1 ? 1 : perHour) {
+    const value = at >= start && at < end ? (dryBulb.values[at] ?? MISSING_INT16) : MISSING_INT16;
+    if (value !== MISSING_INT16) around[count++] = value;
+  }
+  return around.subarray(0, count).sort()[count >> 1] ?? 0;
 }
 
 /**

@@ -6,12 +6,14 @@ import type { DeclaredStation } from '../weather-file-reading.ts';
 import { continentalRecord } from './continental-record.ts';
 import { otherClimate } from './other-climate.ts';
 import { isOff, type QualityOptions, type RuleName } from './quality-options.ts';
+import { repeatedDays } from './repeated-days.ts';
+import { sameHours } from './same-hours.ts';
 import { sawTooth } from './saw-tooth.ts';
 import { spikes } from './spike.ts';
 import { stepTest, tellJumps } from './step-test.ts';
 import { straightLines } from './straight-line.ts';
-import { stuckDays } from './stuck-days.ts';
-import { stuckAlone, stuckTogether } from './stuck-values.ts';
+import { stuckAlone } from './stuck-alone.ts';
+import { stuckTogether } from './stuck-together.ts';
 import { type TestedColumn, type TestedHours, testedHours } from './tested-hours.ts';
 import { zeroFill } from './zero-fill.ts';
 
@@ -26,7 +28,8 @@ const TESTS: readonly (readonly [RuleName, Test])[] = [
   ['straight-line', (hours, _station, findings) => straightLines(hours, findings)],
   ['stuck', (hours, _station, findings) => stuckTogether(hours, findings)],
   ['stuck', (hours, _station, findings) => stuckAlone(hours, findings)],
-  ['stuck', (hours, _station, findings) => stuckDays(hours, findings)],
+  ['stuck', (hours, _station, findings) => repeatedDays(hours, findings)],
+  ['stuck', (hours, _station, findings) => sameHours(hours, findings)],
   ['spike', (hours, _station, findings) => spikes(hours, findings)],
   ['saw-tooth', (hours, _station, findings) => sawTooth(hours, findings)],
   ['step', (hours, _station, findings) => tellJumps(hours, findings)],

@@ -168,6 +168,14 @@ describe('stuck values', () => {
     ]);
   });
 
+  test('are counted in hours where a file has several records an hour', () => {
+    const twice = (hours: number) => ({ ...stuck(hours, { dryBulbC: 31.34 }), recordsPerHour: 2 });
+    expect(findingsOf(readUsable(twice(23)), 'stuck')).toEqual([]);
+    expect(findingsOf(readUsable(twice(24)), 'stuck')).toEqual([
+      expect.objectContaining({ variable: 'dry bulb', done: 'left out', count: 24 }),
+    ]);
+  });
+
   test('at the same hour of 15 days in a row are missing', () => {
     const daily = (days: number) =>
       year(({ slot, hour }) => (within(slot, 3960, 24 * days) && hour === 3 ? { dryBulbC: 27.7 } : null));

@@ -1,8 +1,7 @@
-/** Values that stay the same hour after hour: persistence by the resolution of the file. */
 import { MISSING_INT16 } from '../../conventions.ts';
 import { type FindingList, hoursPhrase } from '../finding-list.ts';
 import { tellSpan } from './tell-span.ts';
-import { degrees, leaveOut, leaveOutHour, type StepSpan, type TestedColumn, type TestedHours } from './tested-hours.ts';
+import { degrees, leaveOut, type StepSpan, type TestedColumn, type TestedHours } from './tested-hours.ts';
 
 /** Hours in a row by resolution, 0.01 K (HadISD). Its limits in days are for sparser reports than are read here. */
 const LONGEST_H = {
@@ -15,52 +14,6 @@ const DEW_DOUBT_H = 48;
 const FEWEST_H = 24;
 /** Steps on either side of a sample that are looked at. */
 const LOOK = 3;
-const TOGETHER_H = { 100: 24, 50: 12, 10: 12 } as const;
-
-/** Dry bulb, dew point and relative humidity together for 12 hours (24 in files of whole degrees): every value is left out. */
-export function stuckTogether(hours: TestedHours, findings: FindingList): void {
-  const { dewPoint, dryBulb } = hours;
-  const humidity = hours.steps.relativeHumidityPct;
-  const shortest = TOGETHER_H[dryBulb.resolution.usual] * hours.steps.stepsPerHour;
-  const dry = dryBulb.values;
-  const dew = dewPoint.values;
-  for (const { start, end } of hours.unbroken) {
-    let first = start;
-    for (let step = start + 1; step <= end; step++) {
-      const goesOn =
-        step < end &&
-        dry[step] === dry[first] &&
-        dew[step] === dew[first] &&
-        Object.is(humidity[step], humidity[first]);
-      if (goesOn) continue;
-      if (step - first >= shortest && dry[first] !== MISSING_INT16 && dew[first] !== MISSING_INT16) {
-        tellTogether(hours, [first, step], findings);
-        for (let each = first; each < step; each++) leaveOutHour(hours, each);
-      }
-      first = step;
-    }
-  }
-}
-
-function tellTogether(hours: TestedHours, [start, end]: readonly [number, number], findings: FindingList): void {
-  const dry = degrees(hours.dryBulb.values[start] ?? 0);
-  const dew = degrees(hours.dewPoint.values[start] ?? 0);
-  const length = Math.round((end - start) / hours.steps.stepsPerHour);
-  tellSpan(
-    hours,
-    {
-      start,
-      end,
-      code: 'stuck',
-      severity: 'doubt',
-      variable: 'every value',
-      done: 'left out',
-      sentence: () =>
-        `dry bulb (${dry} °C), dew point (${dew} °C) and relative humidity stay the same together for ${hoursPhrase(length)}; these hours are left out.`,
-    },
-    findings,
-  );
-}
 
 /** One temperature for as many hours as its resolution allows: left out; a dew point for 48 hours is told at any resolution. */
 export function stuckAlone(hours: TestedHours, findings: FindingList): void {
