@@ -34,13 +34,27 @@ export function judgeIndexHour(hour: DemandHour, brief: Brief): HourJudgement {
   const isGood = ({ index, withinCaps }: Candidate): boolean => withinCaps && isReached(index, limit.value);
   if (isGood(air)) return metHour(frozen ? 'frozen' : 'air', air, { air, aloneMet: ['air', ...wetStages(brief)] });
   const paths = frozen ? [] : permittedPaths(hour, brief, air.supply.tempC);
-  const tried = paths.map((path) => sharesOf(brief).map((share) => candidateOf(path, share, { hour, brief })));
-  const meeting = tried.flatMap((states) => states.find(isGood) ?? []);
+  const tried = paths.map((path) => statesUpToGood(path, { hour, brief, isGood }));
+  const meeting = tried.flatMap((states) => states.findLast(isGood) ?? []);
   const first = meeting[0];
   if (first !== undefined) {
     return metHour(first.stage, first, { air, aloneMet: meeting.map(({ stage }) => stage) });
   }
   return unmetHour({ air, states: [air, ...tried.flat()], limit: limit.value, frozen });
+}
+
+/** The states of a stage up to the first good one, which is the one that runs; all of them where none is good. */
+function statesUpToGood(
+  path: StagePath,
+  { hour, brief, isGood }: { hour: DemandHour; brief: Brief; isGood: (state: Candidate) => boolean },
+): Candidate[] {
+  const states: Candidate[] = [];
+  for (const share of sharesOf(brief)) {
+    const state = candidateOf(path, share, { hour, brief });
+    states.push(state);
+    if (isGood(state)) break;
+  }
+  return states;
 }
 
 function wetStages(brief: Brief): SupplyStage[] {

@@ -12,6 +12,9 @@ import type { PlantHour } from '../water-energy/plant-hour.ts';
 import { towerPlantHour } from '../water-energy/tower-plant-hour.ts';
 import { turbinePlantHour } from '../water-energy/turbine-plant-hour.ts';
 import type { HourColumns } from './hour-columns.ts';
+import { judgeHallHours } from './other-uses/judge-hall-hours.ts';
+import { judgeTowerHours } from './other-uses/judge-tower-hours.ts';
+import { judgeTurbineHours } from './other-uses/judge-turbine-hours.ts';
 import { judgeRoomHours } from './room/judge-room-hours.ts';
 import { roomPlan } from './room/room-plan.ts';
 import { wetBulbsOfYear } from './room/wet-bulbs-of-year.ts';
@@ -53,13 +56,13 @@ const roomUnderAnIndex: Use = { ...roomAtATemperature, judgeHour: judgeIndexHour
 const dataHall: Use = {
   ...roomAtATemperature,
   judgeHour: judgeReturnAirHour,
-  judgeHours: null,
+  judgeHours: (brief, _year, hours) => judgeHallHours(brief, hours),
   plantHour: returnAirPlantHour,
 };
 
 const processWater: Use = {
   judgeHour: judgeTowerHour,
-  judgeHours: null,
+  judgeHours: (brief, _year, hours) => judgeTowerHours(brief, hours),
   plantHour: towerPlantHour,
   aloneStages: () => ['direct'],
   idleUpToC: balanceTempC,
@@ -68,7 +71,7 @@ const processWater: Use = {
 
 const turbineInlet: Use = {
   judgeHour: judgeTurbineHour,
-  judgeHours: null,
+  judgeHours: (brief, _year, hours) => judgeTurbineHours(brief, hours),
   plantHour: turbinePlantHour,
   aloneStages: airAndStages,
   idleUpToC: ({ limit }) => (limit.kind === 'turbine' ? limit.floorC : null),

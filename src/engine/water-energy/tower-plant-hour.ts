@@ -12,18 +12,40 @@ import { makeUpLitres, type PlantHour, SECONDS_PER_HOUR } from './plant-hour.ts'
 /** kJ/(kg K) of water (method 3.1). */
 const WATER_KJ_PER_KG_K = 4.186;
 
+/** What a brief says of its tower, for every hour. */
+interface TowerPlant {
+  readonly latentShare: number;
+  readonly latentHeatKJPerKg: number;
+  readonly secondsPerHour: number;
+  /** Heat that a kg/s of circulation carries over the range, kW. */
+  readonly kwPerKgPerS: number;
+  readonly driftShare: number;
+  readonly fanPumpKw: number;
+}
+
+/** @throws RangeError for a brief that is not of a tower */
+export function towerPlant(brief: Brief): TowerPlant {
+  return {
+    latentShare: towerField(brief.towerLatentShare, 'towerLatentShare'),
+    latentHeatKJPerKg: LATENT_HEAT_KJ_PER_KG,
+    secondsPerHour: SECONDS_PER_HOUR,
+    kwPerKgPerS: WATER_KJ_PER_KG_K * towerLimit(brief).rangeK,
+    driftShare: brief.driftPctOfCirculation / 100,
+    fanPumpKw: towerField(brief.towerFanPumpWPerKw, 'towerFanPumpWPerKw') / 1000,
+  };
+}
+
 export function towerPlantHour(hour: DemandHour, judgement: HourJudgement, brief: Brief): PlantHour {
-  const { rangeK } = towerLimit(brief);
+  const plant = towerPlant(brief);
   const { loadFraction } = hour;
   const { cop } = brief.reference;
   const runs = judgement.running === 'tower';
   const rejectedKw = loadFraction * judgement.carriedShare;
-  const evaporatedLitres =
-    ((rejectedKw * towerField(brief.towerLatentShare, 'towerLatentShare')) / LATENT_HEAT_KJ_PER_KG) * SECONDS_PER_HOUR;
+  const evaporatedLitres = ((rejectedKw * plant.latentShare) / LATENT_HEAT_KJ_PER_KG) * SECONDS_PER_HOUR;
   // The whole stream circulates whatever share of its heat it leaves.
-  const circulationKgPerS = loadFraction / (WATER_KJ_PER_KG_K * rangeK);
-  const driftLitres = runs ? (brief.driftPctOfCirculation / 100) * circulationKgPerS * SECONDS_PER_HOUR : 0;
-  const fanPumpKw = runs ? towerField(brief.towerFanPumpWPerKw, 'towerFanPumpWPerKw') / 1000 : 0;
+  const circulationKgPerS = loadFraction / plant.kwPerKgPerS;
+  const driftLitres = runs ? plant.driftShare * circulationKgPerS * SECONDS_PER_HOUR : 0;
+  const fanPumpKw = runs ? plant.fanPumpKw : 0;
   const backUpKw = loadFraction - rejectedKw;
   return {
     evaporatedLitres,

@@ -8,11 +8,16 @@ import { describe, expect, test } from 'vitest';
 import type { Brief } from '#engine/brief/brief.ts';
 import { hourClasses } from '#engine/hour-classes/hour-class.ts';
 import { type JudgedHour, judgeHours } from '#engine/run/judged-year.ts';
-import { presetBrief } from '../../support/presets.ts';
+import { presetBrief, presetNames } from '../../support/presets.ts';
 import { propertySettings } from '../../support/sample-size.ts';
 import { type Climate, climateHeightM, climates, climateYear } from '../../support/synthetic-climates.ts';
 
 const ROOMS = ['school', 'office', 'clinic', 'glasshouse', 'broiler'];
+const OTHER_USES = ['hall-recommended', 'hall-allowable', 'process-water', 'turbine-inlet'];
+/** Judged one by one whatever is asked: nothing to compare. */
+const ONE_BY_ONE = ['dairy', 'warehouse'];
+/** A third of the climates, from frost to steam, for uses with demand at every hour. */
+const SOME_CLIMATES = climates.filter((_climate, place) => [0, 4, 7].includes(place));
 const NUMBERS_APART = 1e-4;
 
 /** Hours whose class or mark differs, and figures further apart than the tables explain. */
@@ -63,6 +68,20 @@ describe('rooms judged in one pass', () => {
     expect(found.flatMap(({ apart }) => apart).slice(0, 5)).toEqual([]);
     expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(9000);
     expect(new Set(found.flatMap(({ classes }) => [...classes])).size).toBeGreaterThan(5);
+  });
+
+  test.each(OTHER_USES)('so are those of other uses, figure by figure, under %s', (preset) => {
+    for (const control of ['modulating', 'on-off'] as const) {
+      const brief = presetBrief(preset, { control, startRoomTempC: preset === 'turbine-inlet' ? 18 : null });
+      const found = SOME_CLIMATES.map((climate) => compare(climate, brief));
+      expect(found.flatMap(({ differing }) => differing).slice(0, 5)).toEqual([]);
+      expect(found.flatMap(({ apart }) => apart).slice(0, 5)).toEqual([]);
+      expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(8000);
+    }
+  });
+
+  test('cover every preset that ships', () => {
+    expect(new Set([...ROOMS, ...OTHER_USES, ...ONE_BY_ONE])).toEqual(new Set(presetNames));
   });
 
   test('are so for plant, caps and control of any kind', () => {

@@ -1,0 +1,112 @@
+/**
+ * Method 5 and 6 for every demand hour of a data hall: `judgeReturnAirHour` and `returnAirPlantHour` in columns, figure by figure; a
+ * test holds them together.
+ */
+import type { Brief } from '../../brief/brief.ts';
+import { hundredths } from '../../conventions.ts';
+import { withinShare } from '../../hour-classes/demand-hour.ts';
+import { hourClasses } from '../../hour-classes/hour-class.ts';
+import { hallRiseK } from '../../hour-classes/judge-return-air-hour.ts';
+import { gainsEnough } from '../../hour-classes/short-from.ts';
+import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
+import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
+import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
+import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
+import { fillWithAir, type HourColumns, inBlocks, runningStages } from '../hour-columns.ts';
+
+const FROZEN = hourClasses.indexOf('frozen');
+const DRY = hourClasses.indexOf('air');
+const WET = hourClasses.indexOf('indirect');
+const SHORT = hourClasses.indexOf('short');
+const BEYOND = hourClasses.indexOf('beyond');
+const INDIRECT = runningStages.indexOf('indirect');
+const DRY_BIT = 1 << runningStages.indexOf('air');
+const WET_BIT = 1 << INDIRECT;
+
+export function judgeHallHours(brief: Brief, hours: HourColumns): void {
+  fillWithAir(hours, 0);
+  hours.supplyRatio.fill(Number.NaN, 0, hours.count);
+  inBlocks(hours.count, (from, to) => {
+    judgeDry(brief, hours, from, to);
+    if (brief.stages.includes('indirect')) judgeWet(brief, hours, from, to);
+    hallPlant(brief, hours, from, to);
+  });
+}
+
+/** What the dry exchanger supplies, t_ret - e_x (t_ret - t), not below t_sup. */
+function judgeDry(brief: Brief, hours: HourColumns, from: number, to: number): void {
+  const riseK = hallRiseK(brief);
+  const freezeHundredths = hundredths(brief.freezeLockoutC);
+  const alone = brief.stages.includes('indirect') ? DRY_BIT | WET_BIT : DRY_BIT;
+  for (let at = from; at < to; at++) {
+    const tempC = hours.dryBulbC[at] ?? 0;
+    const aimC = hours.supplyAimC[at] ?? 0;
+    const returnC = aimC + riseK;
+    const dryC = Math.max(returnC - brief.effExchanger * (returnC - tempC), aimC);
+    const met = hundredths(dryC) <= hundredths(aimC);
+    const frozen = hundredths(tempC) <= freezeHundredths;
+    const shortfallK = met ? 0 : Math.max(0, dryC - aimC);
+    hours.airSupplyC[at] = dryC;
+    hours.supplyC[at] = dryC;
+    hours.classCode[at] = frozen ? FROZEN : met ? DRY : BEYOND;
+    hours.met[at] = met ? 1 : 0;
+    hours.airMeets[at] = met ? 1 : 0;
+    hours.aloneMet[at] = met ? alone : 0;
+    hours.shortfallK[at] = shortfallK;
+    hours.uncappedShortfallK[at] = shortfallK;
+    hours.carriedShare[at] = met ? 1 : withinShare((returnC - dryC) / (returnC - aimC));
+  }
+}
+
+/** Hours that the dry exchanger leaves, under its wetted surface. */
+function judgeWet(brief: Brief, hours: HourColumns, from: number, to: number): void {
+  const riseK = hallRiseK(brief);
+  const { effIndirect, k } = brief;
+  const modulating = brief.control === 'modulating';
+  for (let at = from; at < to; at++) {
+    if (hours.classCode[at] !== BEYOND) continue;
+    const aimC = hours.supplyAimC[at] ?? 0;
+    const dryC = hours.airSupplyC[at] ?? 0;
+    const returnC = aimC + riseK;
+    const wetC = wetBulbC(hours.dryBulbC[at] ?? 0, hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
+    const fullC = Math.max(returnC - effIndirect * (returnC - wetC), aimC);
+    const met = hundredths(fullC) <= hundredths(aimC);
+    const shortfallK = met ? 0 : Math.max(0, Math.min(fullC, dryC) - aimC);
+    hours.shortfallK[at] = shortfallK;
+    hours.uncappedShortfallK[at] = shortfallK;
+    if (!met && !gainsEnough(dryC, fullC)) continue;
+    const share = met && modulating ? withinShare((returnC - aimC) / (effIndirect * (returnC - wetC))) : 1;
+    const suppliedC = Math.max(returnC - share * effIndirect * (returnC - wetC), aimC);
+    hours.classCode[at] = met ? WET : SHORT;
+    hours.met[at] = met ? 1 : 0;
+    hours.aloneMet[at] = met ? WET_BIT : 0;
+    hours.running[at] = INDIRECT;
+    hours.supplyC[at] = suppliedC;
+    hours.share[at] = share;
+    hours.evaporatedKgPerKg[at] = Math.max(0, secondaryWaterKgPerKg(returnC - suppliedC, k));
+    hours.carriedShare[at] = met ? 1 : withinShare((returnC - suppliedC) / (returnC - aimC));
+    hours.waterC[at] = wetC;
+  }
+}
+
+/** The return-air fan figure, wet or dry, in the plant and in the reference. */
+function hallPlant(brief: Brief, hours: HourColumns, from: number, to: number): void {
+  const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * hallRiseK(brief));
+  const { cop, economy } = brief.reference;
+  const fan = brief.fanWPerLs.returnAir;
+  for (let at = from; at < to; at++) {
+    const load = hours.loadFraction[at] ?? 0;
+    const carried = hours.carriedShare[at] ?? 0;
+    const fanKw = fan * (airflowKgPerS * (hours.volumeM3PerKg[at] ?? 0));
+    const evaporated = airflowKgPerS * (hours.evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
+    const pumpKw = hours.running[at] === INDIRECT ? brief.pumpKwPerKw * load : 0;
+    const backUpKw = load * (1 - carried);
+    const rests = economy && hours.airMeets[at] === 1;
+    hours.evaporatedLitres[at] = evaporated;
+    hours.makeUpLitres[at] = evaporated + evaporated / (brief.cycles - 1);
+    hours.coolingKwh[at] = load * carried;
+    hours.kwh[at] = fanKw + pumpKw + backUpKw / cop;
+    hours.referenceKwh[at] = fanKw + (rests ? 0 : load / cop);
+    hours.backUpKw[at] = backUpKw;
+  }
+}
