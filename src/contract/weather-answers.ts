@@ -52,7 +52,7 @@ export const TableMappingBody: z.ZodMiniType<TableMapping> = z.strictObject({
 });
 
 /** Where a station stands, as far as a person says. */
-const StatedPlaceBody: z.ZodMiniType<StatedPlace> = z.strictObject({
+export const StatedPlaceBody: z.ZodMiniType<StatedPlace> = z.strictObject({
   name: z.exactOptional(z.string().check(z.trim(), z.minLength(1), z.maxLength(200))),
   latitude: z.exactOptional(z.number().check(z.gte(-90), z.lte(90))),
   longitude: z.exactOptional(z.number().check(z.gte(-180), z.lte(180))),
@@ -61,7 +61,7 @@ const StatedPlaceBody: z.ZodMiniType<StatedPlace> = z.strictObject({
 });
 
 /** Answers to what a file asks, by the code of the question. */
-const AnswersBody: z.ZodMiniType<Answers> = z.strictObject({
+export const AnswersBody: z.ZodMiniType<Answers> = z.strictObject({
   'pressure-sea-level': z.exactOptional(z.enum(['convert', 'keep'])),
   'pressure-elevation': z.exactOptional(z.enum(['pressure', 'elevation'])),
   'dew-is-wet-bulb': z.exactOptional(z.enum(['wet bulb', 'dew point', 'relative humidity'])),
