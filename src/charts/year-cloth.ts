@@ -57,11 +57,11 @@ export function yearCloth({ codes, widthPx, heightPx, threadPx }: YearClothOptio
 }
 
 /** Days of a year of hours. @throws RangeError when it is not 8760 or 8784 hours. */
-export function daysOf(codes: Uint8Array): number {
-  if (codes.length !== SLOTS_PER_YEAR && codes.length !== SLOTS_PER_LEAP_YEAR) {
-    throw new RangeError(`A year has ${SLOTS_PER_YEAR} or ${SLOTS_PER_LEAP_YEAR} hours; ${codes.length} were given.`);
+export function daysOf({ length }: { readonly length: number }): number {
+  if (length !== SLOTS_PER_YEAR && length !== SLOTS_PER_LEAP_YEAR) {
+    throw new RangeError(`A year has ${SLOTS_PER_YEAR} or ${SLOTS_PER_LEAP_YEAR} hours; ${length} were given.`);
   }
-  return codes.length / HOURS_PER_DAY;
+  return length / HOURS_PER_DAY;
 }
 
 function isPaperEdge(code: number, above: number | undefined): boolean {

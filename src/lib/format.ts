@@ -25,6 +25,8 @@ export const hours = (value: number) => withUnit(value, 'h');
 export const temperatureC = (value: number, decimals = 1) => withUnit(value, '°C', decimals);
 export const differenceK = (value: number, decimals = 1) => withUnit(value, 'K', decimals);
 export const percent = (value: number, decimals = 1) => withUnit(value, '%', decimals);
+/** Given in Pa: 889 hPa. */
+export const pressureHPa = (valuePa: number) => withUnit(valuePa / 100, 'hPa');
 export const metres = (value: number) => withUnit(value, 'm');
 
 /** Three significant digits, at most one decimal: for litres, kilowatt hours and raw values of any size. */

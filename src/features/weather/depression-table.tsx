@@ -1,28 +1,22 @@
 import { monthNames } from '../../charts/calendar.ts';
+import { depressionScaleK } from '../../charts/depression-cloth.ts';
 import { inkOn } from '../../charts/ink-on.ts';
 import { RAMP_GRADIENT, rampColour } from '../../charts/ramp.ts';
 import type { YearFacts } from '../../contract/weather.ts';
-import { hours, number, share } from '../../lib/format.ts';
+import { number, share } from '../../lib/format.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
 
-const THRESHOLDS_K = [3, 6, 9, 12, 15] as const;
 const HOURS = Array.from({ length: 24 }, (_, hour) => hour + 1);
-/** The scale of the tint ends on a whole even kelvin, and never under this, so that a humid year does not look dry. */
-const LEAST_SCALE_K = 12;
 
-/** Mean depression by month and hour of day, as figures with a tint, and the hours over thresholds. */
+/** Mean depression by month and hour of day, as figures with a tint. */
 export function DepressionTable({ facts }: { facts: YearFacts }) {
   const known = facts.meanDepressionK.flat().filter((value) => value !== null);
-  const scaleK = Math.max(LEAST_SCALE_K, 2 * Math.ceil(Math.max(0, ...known) / 2));
+  const scaleK = depressionScaleK(Math.max(0, ...known));
   return (
     <section aria-labelledby="depression">
-      <div className="mb-3 flex flex-wrap items-end justify-between gap-x-8 gap-y-3">
-        <h2 id="depression" className="text-name">
-          Wet-bulb depression
-        </h2>
-        <Thresholds facts={facts} />
-      </div>
-      <h3 className="mb-1">Mean depression by month and hour of day, K</h3>
+      <h2 id="depression" className="mb-2 text-name">
+        Depression by month and hour of day
+      </h2>
       <ScrollInside label="Mean depression, scrolls sideways">
         <table className="w-full min-w-[58rem] table-fixed border-collapse text-center text-fine">
           <caption className="sr-only">
@@ -66,7 +60,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
           className="h-2.5 w-40 border border-ink/40"
           style={{ backgroundImage: RAMP_GRADIENT }}
         />
-        <span>{number(scaleK)}&nbsp;K. Hours end at the figure above them, local standard time.</span>
+        <span>{number(scaleK)}&nbsp;K, mean. Hours end at the figure above them, local standard time.</span>
       </div>
     </section>
   );
@@ -79,22 +73,5 @@ function Figure({ valueK, scaleK }: { valueK: number | null; scaleK: number }) {
     <td className="h-6 border border-paper" style={{ backgroundColor: colour, color: inkOn(colour) }}>
       {number(valueK, 1)}
     </td>
-  );
-}
-
-function Thresholds({ facts }: { facts: YearFacts }) {
-  const counts = new Map(facts.depressionHours.map(({ atLeastK, hours: count }) => [atLeastK, count]));
-  return (
-    <div>
-      <h3 className="mb-0.5">Hours with a depression of at least</h3>
-      <dl className="flex flex-wrap gap-x-6 gap-y-1">
-        {THRESHOLDS_K.map((atLeastK) => (
-          <div key={atLeastK} className="flex items-baseline gap-1.5">
-            <dt className="text-soft">{atLeastK}&nbsp;K</dt>
-            <dd className="font-semibold">{hours(counts.get(atLeastK) ?? 0)}</dd>
-          </div>
-        ))}
-      </dl>
-    </div>
   );
 }

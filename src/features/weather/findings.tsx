@@ -1,8 +1,14 @@
+import { useId, useState } from 'react';
 import type { Ask, Finding, Severity } from '../../contract/weather.ts';
+import { number } from '../../lib/format.ts';
+import { Button } from '../../ui/button.tsx';
+import { FindingRows } from './finding-rows.tsx';
 import { SeverityMark } from './status-mark.tsx';
 import { severityOrder, severityTitle } from './weather-words.ts';
 
 interface FindingsProps {
+  /** The file whose original the reader may look at; without it rows cannot be shown. */
+  readonly originalOf?: string | null;
   readonly findings: readonly Finding[];
   readonly asks: readonly Ask[];
   readonly isReading: boolean;
@@ -13,10 +19,12 @@ interface Row {
   readonly where: string;
   readonly message: string;
   readonly proposal: string | null;
+  /** null of a question that stands on no line. */
+  readonly finding: Finding | null;
 }
 
 /** What was found in the file, gravest first, each with the line it stands on. */
-export function Findings({ findings, asks, isReading }: FindingsProps) {
+export function Findings({ originalOf = null, findings, asks, isReading }: FindingsProps) {
   const groups = severityOrder
     .map((severity) => ({ severity, rows: rowsOf(severity, findings, asks) }))
     .filter(({ rows }) => rows.length > 0);
@@ -43,13 +51,7 @@ export function Findings({ findings, asks, isReading }: FindingsProps) {
             </thead>
             <tbody>
               {rows.map((row) => (
-                <tr key={row.key}>
-                  <td className="w-36 whitespace-nowrap text-soft max-sm:w-24 max-sm:whitespace-normal">{row.where}</td>
-                  <td>
-                    <p className="max-w-[80ch]">{row.message}</p>
-                    {row.proposal ? <p className="max-w-[80ch] text-soft">The file suggests: {row.proposal}</p> : null}
-                  </td>
-                </tr>
+                <FindingRow key={row.key} row={row} originalOf={originalOf} />
               ))}
             </tbody>
           </table>
@@ -59,23 +61,84 @@ export function Findings({ findings, asks, isReading }: FindingsProps) {
   );
 }
 
+interface FindingRowProps {
+  readonly row: Row;
+  readonly originalOf: string | null;
+}
+
+function FindingRow({ row, originalOf }: FindingRowProps) {
+  const [isOpen, setIsOpen] = useState(false);
+  const id = useId();
+  const { finding } = row;
+  const line = finding?.line ?? null;
+  return (
+    <tr>
+      <td className="w-36 text-soft max-sm:w-24">
+        <span className="sm:whitespace-nowrap">{row.where}</span>
+      </td>
+      <td className="max-w-0">
+        <p className="max-w-[80ch]">{row.message}</p>
+        {finding ? <Facts finding={finding} /> : null}
+        {row.proposal ? <p className="max-w-[80ch] text-soft">The file suggests: {row.proposal}</p> : null}
+        {originalOf !== null && finding !== null && line !== null ? (
+          <>
+            <Button
+              look="quiet"
+              className="no-print text-fine"
+              aria-expanded={isOpen}
+              aria-controls={id}
+              aria-label={`${isOpen ? 'Hide' : 'Show'} the rows, ${row.where}`}
+              onClick={() => setIsOpen(!isOpen)}
+            >
+              {isOpen ? 'Hide the rows' : 'Show the rows'}
+            </Button>
+            <div id={id}>{isOpen ? <FindingRows fileId={originalOf} finding={{ ...finding, line }} /> : null}</div>
+          </>
+        ) : null}
+      </td>
+    </tr>
+  );
+}
+
+/** Variable, how much, what was done: as far as the finding says them apart. */
+function Facts({ finding }: { finding: Finding }) {
+  const { variable, count, done } = finding;
+  const words = [
+    variable === null ? null : sentenceCase(variable),
+    count > 1 ? `${number(count)} rows` : null,
+    done,
+  ].filter((word) => word !== null);
+  return words.length === 0 ? null : <p className="text-fine text-soft">{sentenceCase(words.join(', '))}</p>;
+}
+
+function sentenceCase(text: string): string {
+  return `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
+}
+
 /** A question is one row: the finding says where, the ask what answer is likely. */
 function rowsOf(severity: Severity, findings: readonly Finding[], asks: readonly Ask[]): Row[] {
   const found = findings.filter((finding) => finding.severity === severity);
   const rows = found.map((finding, index): Row => {
     const ask = severity === 'ask' ? asks.find(({ what }) => what === finding.code) : undefined;
     const key = `${finding.code}-${finding.line}-${index}`;
-    return { key, where: whereOf(finding), message: finding.message, proposal: ask?.proposal ?? null };
+    return { key, where: whereOf(finding), message: finding.message, proposal: ask?.proposal ?? null, finding };
   });
   if (severity !== 'ask') return rows;
   const alone = asks.filter(({ what }) => !found.some(({ code }) => code === what));
   return [
     ...rows,
-    ...alone.map(({ what, message, proposal }) => ({ key: what, where: 'Whole file', message, proposal })),
+    ...alone.map(({ what, message, proposal }) => ({
+      key: what,
+      where: 'Whole file',
+      message,
+      proposal,
+      finding: null,
+    })),
   ];
 }
 
-function whereOf({ line, column }: Finding): string {
+function whereOf({ line, lastLine, column }: Finding): string {
   if (line === null) return 'Whole file';
+  if (lastLine !== null && lastLine > line) return `Lines ${line} to ${lastLine}`;
   return column === null ? `Line ${line}` : `Line ${line}, column ${column}`;
 }

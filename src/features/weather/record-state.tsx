@@ -17,6 +17,7 @@ import { useTeam } from '../../lib/team-scope.ts';
 import { Button, buttonLook } from '../../ui/button.tsx';
 import { Notice, type NoticeTone } from '../../ui/notice.tsx';
 import { ReadingSteps } from './reading-steps.tsx';
+import { RecordDecision } from './record-decision.tsx';
 import { StatusMark } from './status-mark.tsx';
 import { mayChangeWeather, statusWords } from './weather-words.ts';
 import { WithdrawDialog } from './withdraw-dialog.tsx';
@@ -65,6 +66,7 @@ export function RecordState({ record }: { record: WeatherFileRecord }) {
         {statusWords(file)}
       </p>
       <div className="mt-1">{stateSentence(record, mayChange)}</div>
+      <RecordDecision record={record} />
     </Notice>
   );
 }

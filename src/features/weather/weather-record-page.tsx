@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { lazy, Suspense, useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import type { WeatherFileRecord } from '../../contract/weather.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
@@ -15,10 +16,18 @@ import { DesignTable } from './design-table.tsx';
 import { Findings } from './findings.tsx';
 import { HoursAccount } from './hours-account.tsx';
 import { LibraryMargin } from './library-margin.tsx';
+import { PsychrometricFold } from './psychrometric-fold.tsx';
 import { RecordHeading } from './record-heading.tsx';
+import { RecordOriginal } from './record-original.tsx';
 import { RecordState } from './record-state.tsx';
 import { recordQuery } from './weather-queries.ts';
-import { recordTitle } from './weather-words.ts';
+import { mayChangeWeather, recordTitle } from './weather-words.ts';
+
+/** The hours come with the engine, which the state of a file does not wait for. */
+const DepressionPictures = lazy(async () => ({
+  default: (await import('./depression-pictures.tsx')).DepressionPictures,
+}));
+const GapCalendarSection = lazy(async () => ({ default: (await import('./gap-calendar.tsx')).GapCalendarSection }));
 
 export function WeatherRecordPage() {
   const { teamId } = useTeam();
@@ -40,29 +49,49 @@ export function WeatherRecordPage() {
 }
 
 function Record({ record }: { record: WeatherFileRecord }) {
+  const { role } = useTeam();
   const { file, facts } = record;
+  const isDerived = file.parent !== null;
+  // The hour that cloth and chart both show.
+  const [slot, setSlot] = useState<number | null>(null);
+  const inView = { record, slot, onChoose: setSlot };
   return (
     <div className="grid max-w-[68rem] grid-cols-[minmax(0,1fr)] gap-8">
       <PageTitle>{recordTitle(file)}</PageTitle>
-      <div className="grid gap-5">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
         <RecordHeading record={record} />
         <RecordState record={record} />
+        <Answering record={record} />
       </div>
-      <Answering record={record} />
-      <DerivedFrom record={record} />
-      {file.parent === null ? (
-        <Findings findings={record.findings} asks={record.asks} isReading={file.status === 'reading'} />
+      {facts ? (
+        <Suspense fallback={<Loading what="the hours of the year" />}>
+          <DepressionPictures facts={facts} {...inView} />
+        </Suspense>
       ) : null}
+      <DerivedFrom record={record} />
+      {isDerived ? null : (
+        <Findings
+          originalOf={mayChangeWeather(role) ? file.id : null}
+          findings={record.findings}
+          asks={record.asks}
+          isReading={file.status === 'reading'}
+        />
+      )}
       <DerivedChildren items={record.children} />
       {facts ? (
         <>
           <DepressionTable facts={facts} />
+          <PsychrometricFold facts={facts} {...inView} />
           <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,20rem)_minmax(0,1fr)]">
-            <HoursAccount facts={facts} isDerived={file.parent !== null} />
+            <HoursAccount facts={facts} isDerived={isDerived} />
             <DesignTable design={facts.design} isTypical={(file.parent?.kind ?? file.kind) === 'typical'} />
           </div>
+          <Suspense fallback={null}>
+            <GapCalendarSection record={record} facts={facts} />
+          </Suspense>
         </>
       ) : null}
+      <RecordOriginal record={record} />
     </div>
   );
 }
