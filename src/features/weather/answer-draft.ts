@@ -22,7 +22,7 @@ export type AnswerReading =
 /** The form's first values: what the file declares, what was answered before, what is guessed. */
 export function draftOfRecord(record: WeatherFileRecord): AnswerDraft {
   const { answers, table } = record;
-  const said: Partial<Record<string, string | number>> = answers.answers ?? {};
+  const said: Partial<Record<string, string | number>> = { ...answers.answers };
   return {
     place: declaredPlace(record.file.station),
     choices: Object.fromEntries(questionsOf(record).map(({ code }) => [code, String(said[code] ?? '')])),

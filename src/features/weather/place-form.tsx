@@ -5,7 +5,7 @@ import { AnswerText } from './answer-fields.tsx';
 export function PlaceForm({ asks }: { asks: readonly Ask[] }) {
   return (
     <fieldset className="min-w-0">
-      <legend className="serif mb-1 text-name">Where the station is</legend>
+      <legend className="mb-1 text-lead font-semibold">Where the station is</legend>
       {asks.map(({ what, message, proposal }) => (
         <p key={`${what} ${message}`} className="mb-1 max-w-[80ch]">
           {message}

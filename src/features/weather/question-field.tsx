@@ -12,7 +12,7 @@ export function QuestionField({ question }: { question: Question }) {
   const describedBy = `${id}-question${problem ? ` ${id}-problem` : ''}`;
   return (
     <fieldset aria-describedby={describedBy} className="min-w-0">
-      <legend className="serif mb-1 text-name">{title}</legend>
+      <legend className="mb-1 text-lead font-semibold">{title}</legend>
       <div id={`${id}-question`} className="mb-1 grid max-w-[80ch] gap-1">
         {messages.map((message) => (
           <p key={message}>{message}</p>

@@ -6,17 +6,17 @@ import { number } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
 import type { AnswerDraft } from './answer-draft.ts';
-import { mappingOfDraft, mappingProblems } from './mapping-draft.ts';
+import { type MappingField, mappingOfDraft, mappingProblems } from './mapping-draft.ts';
 import { type SampleRow, sampleUnder } from './table-sample.ts';
 import { firstLinesQuery } from './weather-queries.ts';
 
-const columns = [
-  { key: 'dryBulbC', head: 'Dry bulb, °C', decimals: 1 },
-  { key: 'dewPointC', head: 'Dew point, °C', decimals: 1 },
-  { key: 'relativeHumidityPct', head: 'Relative humidity, %', decimals: 0 },
-  { key: 'wetBulbC', head: 'Wet bulb, °C', decimals: 1 },
-  { key: 'pressurePa', head: 'Pressure, Pa', decimals: 0 },
-] as const satisfies readonly { key: keyof SampleRow; head: string; decimals: number }[];
+const quantities = [
+  { key: 'dryBulbC', field: 'dryBulb', head: 'Dry bulb, °C', decimals: 1 },
+  { key: 'dewPointC', field: 'dewPoint', head: 'Dew point, °C', decimals: 1 },
+  { key: 'relativeHumidityPct', field: 'relativeHumidity', head: 'Relative humidity, %', decimals: 0 },
+  { key: 'wetBulbC', field: 'wetBulb', head: 'Wet bulb, °C', decimals: 1 },
+  { key: 'pressurePa', field: 'pressure', head: 'Pressure, Pa', decimals: 0 },
+] as const satisfies readonly { key: keyof SampleRow; field: MappingField; head: string; decimals: number }[];
 
 /** The first ten rows, read as the form now says. */
 export function SampleTable({ record }: { record: WeatherFileRecord }) {
@@ -33,6 +33,7 @@ export function SampleTable({ record }: { record: WeatherFileRecord }) {
     // Until the lines are there, the rows under the guess serve as long as the guess stands.
     return live ?? (JSON.stringify(mapping) === JSON.stringify(table.mapping) ? table.sample : null);
   }, [draft, lines.data, table]);
+  const columns = quantities.filter(({ field }) => draft[field] !== '');
   return (
     <section aria-labelledby="sample">
       <h3 id="sample" className="mb-1 text-body text-ink">
@@ -43,7 +44,7 @@ export function SampleTable({ record }: { record: WeatherFileRecord }) {
       ) : (
         <>
           <ScrollInside label="The first rows, scrolls sideways">
-            <table className="ruled min-w-[40rem]">
+            <table className="ruled min-w-[32rem]">
               <caption className="sr-only">The first rows of the table, read as the form says</caption>
               <thead>
                 <tr>

@@ -12,7 +12,7 @@ export function TableMapping({ table }: { table: TableGuess }) {
   const asked = (about: string) => table.questions.find((question) => question.about === about)?.message;
   return (
     <fieldset className="min-w-0">
-      <legend className="serif mb-1 text-name">What the columns hold</legend>
+      <legend className="mb-1 text-lead font-semibold">What the columns hold</legend>
       <p className="max-w-[80ch]">
         {asked('columns')} {asked('units')}
       </p>

@@ -156,7 +156,7 @@ function SortLink({ view, sort, children }: { view: LibraryView | undefined; sor
   return (
     <Link
       to={librarySearch(sortedBy(view, sort))}
-      className={`inline-block min-h-6 text-soft ${isNow ? 'font-semibold text-ink' : ''}`}
+      className={`py-1 text-soft ${isNow ? 'font-semibold text-ink' : ''}`}
     >
       {children}
       {isNow ? <span aria-hidden="true"> {view.order === 'asc' ? '↑' : '↓'}</span> : null}
