@@ -27,7 +27,7 @@ export function BatchCard({ batch }: { batch: WeatherBatch }) {
   const sending = uploads.filter(isUnderWay).length;
   const isOpen = !batch.ended || sending > 0;
   return (
-    <li className="border-t border-line py-2.5">
+    <li className="border-t border-line py-2.5 first:border-t-0">
       <div className="flex flex-wrap items-baseline justify-between gap-x-6 gap-y-1">
         <h3 className="min-w-0 text-body break-words text-ink">
           <Link to={paths.weather.to(teamId, { batch: batch.id })}>{batch.name}</Link>{' '}
@@ -39,11 +39,12 @@ export function BatchCard({ batch }: { batch: WeatherBatch }) {
       </div>
       <p role="status" className={isOpen ? 'font-medium' : 'text-soft'}>
         {sending > 0 ? `Sending ${plural(sending, 'file')}; you can go to other pages meanwhile. ` : ''}
-        {batchWords(batch)}.{batch.stopped > 0 ? ` ${plural(batch.stopped, 'file')} stopped for a fault of ours.` : ''}
+        {batchWords(batch, sending)}.
+        {batch.stopped > 0 ? ` ${plural(batch.stopped, 'file')} stopped for a fault of ours.` : ''}
       </p>
       {isOpen ? (
         <div className="my-1.5">
-          <Progress label={`Progress of ${batch.name}`} share={batchShare(batch)} />
+          <Progress label={`Progress of ${batch.name}`} share={batchShare(batch, sending)} />
         </div>
       ) : null}
       <StatusLinks batch={batch} />

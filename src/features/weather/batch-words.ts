@@ -8,14 +8,14 @@ export function filesOf({ files }: Pick<WeatherBatch, 'files'>): { total: number
   return { total, read: total - files.reading };
 }
 
-/** How far a batch is, 0 to 1: files read of those that are known of; null while an archive has not said what it holds. */
-export function batchShare(batch: WeatherBatch): number | null {
-  if (batch.ended) return 1;
+/** How far a batch is, 0 to 1: files read of those that are known of; null while an archive has not said what it holds, or is on its way. */
+export function batchShare(batch: WeatherBatch, sending: number): number | null {
+  if (batch.ended && sending === 0) return 1;
   const opening = batch.archives.filter(isBeingOpened);
   if (opening.some(({ members }) => members === null)) return null;
   const unopened = opening.reduce((sum, archive) => sum + membersLeft(archive), 0);
   const { total, read } = filesOf(batch);
-  return total + unopened === 0 ? null : read / (total + unopened);
+  return total + unopened === 0 ? null : read / (total + unopened + sending);
 }
 
 export function isBeingOpened({ status, failure }: WeatherArchive): boolean {
@@ -26,12 +26,12 @@ function membersLeft({ members, membersOpened, leftOut }: WeatherArchive): numbe
   return Math.max(0, (members ?? 0) - membersOpened - leftOut.length);
 }
 
-/** Where a batch stands: "Reading, 12 of 40 files read". */
-export function batchWords(batch: WeatherBatch): string {
+/** Where a batch stands, with so many files on their way to it: "Reading, 12 of 40 files read". */
+export function batchWords(batch: WeatherBatch, sending: number): string {
   const { total, read } = filesOf(batch);
   const figures = `${number(read)} of ${plural(total, 'file')} read`;
   if (batch.state === 'cancelled') return 'Cancelled: what had not been read was withdrawn';
-  if (batch.ended) return total === 0 ? 'Nothing to read' : `${plural(total, 'file')}, all read`;
+  if (batch.ended && sending === 0) return total === 0 ? 'Nothing to read' : `${plural(total, 'file')}, all read`;
   return batch.state === 'paused' ? `Paused, ${figures}` : `Reading, ${figures}`;
 }
 
