@@ -18,6 +18,7 @@ import { Button, buttonLook } from '../../ui/button.tsx';
 import { Notice, type NoticeTone } from '../../ui/notice.tsx';
 import { ReadingSteps } from './reading-steps.tsx';
 import { RecordDecision } from './record-decision.tsx';
+import { RetryButton } from './retry-button.tsx';
 import { StatusMark } from './status-mark.tsx';
 import { mayChangeWeather, statusWords } from './weather-words.ts';
 import { WithdrawDialog } from './withdraw-dialog.tsx';
@@ -43,6 +44,7 @@ export function RecordState({ record }: { record: WeatherFileRecord }) {
       tone={file.failure === null ? tones[file.status] : 'wrong'}
       actions={
         <>
+          {mayChange && file.failure !== null ? <RetryButton what="file" id={file.id} name={file.name} /> : null}
           {mayChange && file.status === 'review' ? <AcceptButton file={file} /> : null}
           {file.status === 'accepted' && file.stationId && programme ? (
             <Link
@@ -89,7 +91,9 @@ function stateSentence({ file, findings }: WeatherFileRecord, mayChange: boolean
         : 'Waits for an engineer of the team to accept it.';
     }
     case 'asks':
-      return 'It cannot be accepted as it stands. Put right in the file what it asks below, then upload it again.';
+      return mayChange
+        ? 'It cannot be accepted as it stands. Answer below what it asks; it is then read again.'
+        : 'Waits for an engineer of the team to answer what it asks.';
     case 'accepted':
       if (file.parent !== null)
         return 'Tested against the briefs of the team, beside its parent. It is in no score of the station.';
