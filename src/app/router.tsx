@@ -59,6 +59,22 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('../features/weather/climate-page.tsx')).ClimatePage }),
               },
               {
+                path: paths.stations.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/stations/stations-page.tsx')).StationsPage,
+                }),
+              },
+              {
+                path: paths.station.pattern,
+                lazy: async () => ({ Component: (await import('../features/stations/station-page.tsx')).StationPage }),
+              },
+              {
+                path: paths.tokens.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/teams/tokens/tokens-page.tsx')).TokensPage,
+                }),
+              },
+              {
                 path: paths.method.pattern,
                 lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },

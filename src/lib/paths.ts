@@ -42,6 +42,12 @@ export const paths = {
     pattern: 'weather/:fileId/climate',
     to: (teamId: string, fileId: string) => `/teams/${teamId}/weather/${fileId}/climate`,
   },
+  stations: { pattern: 'stations', to: (teamId: string) => `/teams/${teamId}/stations` },
+  station: {
+    pattern: 'stations/:stationId',
+    to: (teamId: string, stationId: string) => `/teams/${teamId}/stations/${stationId}`,
+  },
+  tokens: { pattern: 'team/tokens', to: (teamId: string) => `/teams/${teamId}/team/tokens` },
   method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;

@@ -1,9 +1,13 @@
+import { Link } from 'react-router-dom';
 import type { DeclaredStation, WeatherFileRecord } from '../../contract/weather.ts';
 import { fileSize, metres, moment, position, share, shortFingerprint, utcOffset } from '../../lib/format.ts';
+import { paths } from '../../lib/paths.ts';
+import { useTeam } from '../../lib/team-scope.ts';
 import { recordTitle } from './weather-words.ts';
 
 /** Name, place and provenance of a weather file. */
 export function RecordHeading({ record }: { record: WeatherFileRecord }) {
+  const { teamId } = useTeam();
   const { file, acceptedBy } = record;
   const { station } = file;
   return (
@@ -12,7 +16,12 @@ export function RecordHeading({ record }: { record: WeatherFileRecord }) {
       {station ? (
         <p className="mt-1.5">
           {placeWords(station)}
-          {file.completePct === null ? '' : ` Complete ${share(file.completePct)}.`}
+          {file.completePct === null ? '' : ` Complete ${share(file.completePct)}.`}{' '}
+          {file.stationId ? (
+            <Link to={paths.station.to(teamId, file.stationId)} className="no-print">
+              Its station and other years
+            </Link>
+          ) : null}
         </p>
       ) : null}
       <p className="mt-1 text-fine text-soft">

@@ -1,21 +1,8 @@
-import type { Role } from '../../contract/accounts.ts';
-import type { FileStatus, ReadingStep, Severity, WeatherFile } from '../../contract/weather.ts';
+import type { ReadingStep, Severity, WeatherFile } from '../../contract/weather.ts';
+import { mayChangeWeather, statusWord, yearWords } from '../../lib/file-words.ts';
 import { plural } from '../../lib/format.ts';
 
-/** Weather files are the engineers' to change; everyone else reads what they say. */
-export function mayChangeWeather(role: Role): boolean {
-  return role === 'engineer' || role === 'lead';
-}
-
-export const statusWord: Readonly<Record<FileStatus, string>> = {
-  reading: 'Reading',
-  asks: 'Asks',
-  review: 'In review',
-  accepted: 'Accepted',
-  refused: 'Refused',
-  withdrawn: 'Withdrawn',
-  superseded: 'Superseded',
-};
+export { mayChangeWeather, statusWord, yearWords };
 
 export const stepWord: Readonly<Record<ReadingStep, string>> = {
   received: 'received',
@@ -26,7 +13,7 @@ export const stepWord: Readonly<Record<ReadingStep, string>> = {
 
 /** A format as it is printed: the trade's names stand as they are, ours begin a line. */
 export function formatWord(format: string): string {
-  return format === 'table' ? 'Table' : format;
+  return format.charAt(0).toUpperCase() + format.slice(1);
 }
 
 type Stated = Pick<WeatherFile, 'status' | 'step' | 'failure' | 'findingCounts'>;
@@ -38,12 +25,6 @@ export function statusWords({ status, step, failure, findingCounts }: Stated): s
   if (status === 'asks') return `Asks ${plural(Math.max(1, findingCounts.ask), 'question')}`;
   if (status === 'review' && findingCounts.doubt > 0) return `In review, ${plural(findingCounts.doubt, 'doubt')}`;
   return statusWord[status];
-}
-
-export function yearWords({ kind, year }: Pick<WeatherFile, 'kind' | 'year'>): string {
-  if (kind === 'typical') return 'Typical year';
-  if (kind === 'derived') return 'Derived year';
-  return kind === 'actual' && year !== null ? String(year) : '–';
 }
 
 /** What a derived year came from: "from the typical year", "from the year 2019"; null of a measured one. */
