@@ -114,7 +114,7 @@ export const changeWeatherBatch = endpoint({
 });
 
 /** How many plain files one request may bring. */
-export const MAX_FILES_AT_ONCE = 100;
+export const MAX_FILES_AT_ONCE = 20;
 
 export const uploadWeatherFiles = endpoint({
   method: 'POST',
@@ -126,7 +126,7 @@ export const uploadWeatherFiles = endpoint({
   response: json(z.object({ files: z.array(z.object({ file: WeatherFile, known: z.boolean() })) })),
   errors: ['too_large', 'unreadable_body', 'wrong_state'],
   allow: 'weather.upload',
-  limits: { bodyBytes: MAX_FILE_BYTES, perMinute: 60, seconds: 600 },
+  limits: { bodyBytes: MAX_FILES_AT_ONCE * MAX_FILE_BYTES, perMinute: 60, seconds: 900 },
 });
 
 /** Largest archive that is taken, as it is sent. */

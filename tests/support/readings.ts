@@ -1,17 +1,24 @@
 import { type Finding, type FindingCode, severities } from '#engine/weather-files/finding.ts';
+import type { ReadOptions } from '#engine/weather-files/read-options.ts';
 import { readWeatherFile } from '#engine/weather-files/read-weather-file.ts';
 import type { RefusedReading, UsableReading, WeatherFileReading } from '#engine/weather-files/weather-file-reading.ts';
 import { bytesOfLines, type EpwOptions, epwBytes } from './epw-text.ts';
 
 /** Reads a made-up EPW, given as options of the builder, as lines or as bytes. */
-export function readMadeUp(file: EpwOptions | readonly string[] | Uint8Array): WeatherFileReading {
-  if (file instanceof Uint8Array) return readWeatherFile(file, 'made-up.epw');
-  return readWeatherFile('length' in file ? bytesOfLines(file) : epwBytes(file), 'made-up.epw');
+export function readMadeUp(
+  file: EpwOptions | readonly string[] | Uint8Array,
+  options: ReadOptions = {},
+): WeatherFileReading {
+  if (file instanceof Uint8Array) return readWeatherFile(file, 'made-up.epw', options);
+  return readWeatherFile('length' in file ? bytesOfLines(file) : epwBytes(file), 'made-up.epw', options);
 }
 
 /** The reading of a file that must not be refused. */
-export function readUsable(file: EpwOptions | readonly string[] | Uint8Array): UsableReading {
-  const reading = readMadeUp(file);
+export function readUsable(
+  file: EpwOptions | readonly string[] | Uint8Array,
+  options: ReadOptions = {},
+): UsableReading {
+  const reading = readMadeUp(file, options);
   if (reading.status !== 'refused' && reading.hours !== null) return reading;
   throw new Error(`refused or not mapped: ${reading.findings.map(({ message }) => message).join(' ')}`);
 }

@@ -1,6 +1,6 @@
 /** The part of the package that the tests use: it brings no types. */
 declare module 's3rver' {
-  export default class S3rver {
+  class S3rver {
     constructor(options: {
       address: string;
       port: number;
@@ -11,4 +11,6 @@ declare module 's3rver' {
     run(): Promise<{ address: string; port: number }>;
     close(): Promise<void>;
   }
+
+  export { S3rver as default };
 }
