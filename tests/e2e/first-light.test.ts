@@ -9,6 +9,15 @@ import { type DemoAccount, readDemoAccounts } from '../../server/builders/demo-a
 import type { Role } from '../../src/contract/accounts.ts';
 import { launchBrowser, type Viewport, type WatchedPage, watchedPage } from '../support/browser.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
+import {
+  acceptAll,
+  answerTable,
+  bringPaused,
+  bringSameShape,
+  newStations,
+  resume,
+  seeRefused,
+} from './mixed-archive-road.ts';
 import { mapIsDrawn, scoreShown, signIn, signOut, station, stationList, uploadText, watchSteps } from './steps.ts';
 
 const DESK: Viewport = { width: 1440, height: 900 };
@@ -295,6 +304,25 @@ test('a file with letters for numbers is refused with line and column, and anoth
   await row.getByText(`Line 1009, column ${columnOfDryBulb}`).waitFor();
   expect(await page.getByRole('button', { name: 'Accept' }).count()).toBe(0);
   await expectAccessible('weather record of a refused file');
+});
+
+test('a zip of mixed files is read with live progress, paused, resumed and answered once; accepting what waits puts its stations on the map', async () => {
+  await enterAs('engineer');
+  await openWeather();
+  const look = { page, soon: SOON, expectAccessible };
+  const batch = await bringPaused(look);
+  await page.reload();
+  await batch.getByText(/^Paused, 0 of 0 files read/).waitFor();
+  await resume(batch, look);
+  await expectAccessible('library with a batch');
+  await seeRefused(batch, look);
+  await answerTable(batch, look);
+  await openWeather();
+  await bringSameShape(look);
+  await acceptAll(batch, look);
+  await page.getByRole('link', { name: 'Map', exact: true }).click();
+  for (const name of newStations) await station(page, name).waitFor(SOON);
+  await mapIsDrawn(page);
 });
 
 test('sign-in, weather list, weather record and map have no accessibility fault that a machine can find', async () => {

@@ -86,6 +86,7 @@ function lastWords({ table }: WeatherFileRecord): string {
     : 'How the table is read is remembered: other files of its shape are read too, and do not ask again for their columns.';
 }
 
+type Fault = { readonly type: string; readonly message: string };
 type ErrorTree = { readonly [name: string]: unknown };
 
 /** The form is valid when its answers can be sent; else every fault stands at its field. */
@@ -93,16 +94,15 @@ function resolverOf(record: WeatherFileRecord): Resolver<AnswerDraft, unknown, F
   return (draft) => {
     const reading = readAnswers(draft, record);
     if (reading.ok) return { values: reading.answers, errors: {} };
-    const errors: Record<
-      string,
-      Record<string, { type: string; message: string }> | { type: string; message: string }
-    > = {};
+    const errors: Record<string, Fault | Record<string, Fault>> = {};
+    const groups: Record<string, Record<string, Fault>> = {};
     for (const [path, message] of Object.entries(reading.problems)) {
       const [group = '', name] = path.split('.');
       const fault = { type: 'custom', message };
       if (name === undefined) errors.root = fault;
-      else errors[group] = { ...errors[group], [name]: fault } as Record<string, { type: string; message: string }>;
+      else groups[group] = { ...groups[group], [name]: fault };
     }
+    Object.assign(errors, groups);
     return { values: {}, errors };
   };
 }
@@ -113,16 +113,19 @@ function countFaults(errors: ErrorTree): number {
     .reduce((sum, [, group]) => sum + Object.keys(group ?? {}).length, 0);
 }
 
-const serverFields: Readonly<Record<string, `mapping.${'zone' | 'dryBulb' | 'dewPoint' | 'pressure'}`>> = {
+/** Fields of the form by the path of the request. */
+const serverFields = {
+  'place.name': 'place.name',
+  'place.latitude': 'place.latitude',
+  'place.longitude': 'place.longitude',
+  'place.elevationM': 'place.elevationM',
+  'place.utcOffsetH': 'place.utcOffsetH',
   'mapping.time.zone': 'mapping.zone',
   'mapping.dryBulb.column': 'mapping.dryBulb',
   'mapping.dewPoint.column': 'mapping.dewPoint',
   'mapping.pressure.column': 'mapping.pressure',
-};
+} as const;
 
-/** The field of the form that a path of the request belongs to. */
 function fieldOfPath(path: string) {
-  const place = /^place\.(name|latitude|longitude|elevationM|utcOffsetH)$/.exec(path)?.[1];
-  if (place !== undefined) return `place.${place as keyof AnswerDraft['place']}` as const;
-  return serverFields[path] ?? 'root';
+  return Object.entries(serverFields).find(([each]) => each === path)?.[1] ?? 'root';
 }

@@ -17,8 +17,8 @@ const PARAMS = {
   page: 'page',
 } as const;
 type ViewField = keyof typeof PARAMS;
-const FIELDS = Object.keys(PARAMS) as ViewField[];
 const FILTERS = ['status', 'text', 'format', 'kind', 'batchId', 'stationId'] as const;
+const FIELDS: readonly ViewField[] = [...FILTERS, 'sort', 'order', 'page'];
 
 export const newestFirst: LibraryView = { sort: 'uploaded', order: 'desc', page: 1 };
 

@@ -20,7 +20,7 @@ export function ReadingSteps({ file }: { file: WeatherFile }) {
           <li
             key={step}
             aria-current={isNow ? 'step' : undefined}
-            className={isNow ? 'font-semibold text-ink' : isDone ? 'text-ink' : 'text-soft opacity-80'}
+            className={isNow ? 'font-semibold text-ink' : isDone ? 'text-ink' : 'text-soft'}
           >
             <span aria-hidden="true">{isDone ? '✓ ' : isNow ? '› ' : '· '}</span>
             {step}
@@ -28,7 +28,7 @@ export function ReadingSteps({ file }: { file: WeatherFile }) {
           </li>
         );
       })}
-      <li className={`flex items-center gap-1.5 ${isEnded || file.failure ? 'font-semibold' : 'text-soft opacity-80'}`}>
+      <li className={`flex items-center gap-1.5 ${isEnded || file.failure ? 'font-semibold' : 'text-soft'}`}>
         {isEnded || file.failure ? (
           <>
             <StatusMark status={file.status} failed={file.failure !== null} />

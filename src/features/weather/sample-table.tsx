@@ -45,11 +45,11 @@ export function SampleTable({ record }: { record: WeatherFileRecord }) {
         <>
           <ScrollInside label="The first rows, scrolls sideways">
             <table className="ruled min-w-[32rem]">
-              <caption className="sr-only">The first rows of the table, read as the form says</caption>
+              <caption className="sr-only">The first rows of the table under these answers</caption>
               <thead>
                 <tr>
                   <th scope="col">Line</th>
-                  <th scope="col">Time as it stands</th>
+                  <th scope="col">Time in the row</th>
                   {columns.map(({ key, head }) => (
                     <th key={key} scope="col" className="figure">
                       {head}

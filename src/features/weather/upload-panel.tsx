@@ -1,3 +1,4 @@
+import { useQuery } from '@tanstack/react-query';
 import { type DragEvent, type ReactNode, useRef, useState } from 'react';
 import { Link } from 'react-router-dom';
 import { MAX_FILE_BYTES, type WeatherFile } from '../../contract/weather.ts';
@@ -9,6 +10,7 @@ import { Progress } from '../../ui/progress.tsx';
 import { pageUploads, useUpload, useUploads } from './page-uploads.ts';
 import { ReadingSteps } from './reading-steps.tsx';
 import { isUnderWay, type Upload } from './upload-queue.ts';
+import { recordQuery } from './weather-queries.ts';
 
 /** The button that opens the browser's choice of files. */
 export function UploadButton({ teamId }: { teamId: string }) {
@@ -95,17 +97,22 @@ export function UploadList({ teamId, items }: { teamId: string; items: readonly 
       </div>
       <ul>
         {uploads.map((upload) => (
-          <UploadRow key={upload.id} upload={upload} file={latestOf(upload, items)} />
+          <SingleUpload key={upload.id} upload={upload} items={items} />
         ))}
       </ul>
     </section>
   );
 }
 
-/** The file as the library now has it, else as the upload was answered. */
-function latestOf({ answer }: Upload, items: readonly WeatherFile[]): WeatherFile | null {
-  if (answer === null) return null;
-  return items.find((item) => item.id === answer.file.id) ?? answer.file;
+/** A file as the library now has it; where the table does not show it, as its record has it. */
+function SingleUpload({ upload, items }: { upload: Upload; items: readonly WeatherFile[] }) {
+  const answered = upload.answer?.file ?? null;
+  const listed = items.find(({ id }) => id === answered?.id);
+  const record = useQuery({
+    ...recordQuery(upload.teamId, answered?.id ?? ''),
+    enabled: answered !== null && listed === undefined,
+  });
+  return <UploadRow upload={upload} file={listed ?? record.data?.file ?? answered} />;
 }
 
 /** One file on its way, and what became of it. */
