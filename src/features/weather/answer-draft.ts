@@ -1,7 +1,7 @@
 /** What a person says of a file, as the form holds it, and how it becomes the answers that are sent. Pure. */
 import type { DeclaredStation, WeatherFileRecord } from '../../contract/weather.ts';
 import { answerWeatherFile, type FileAnswers } from '../../contract/weather-reading.ts';
-import { asksPlace, placeAsks, type QuestionCode, questionsOf } from './answer-questions.ts';
+import { placeAsks, type QuestionCode, questionsOf, showsPlace } from './answer-questions.ts';
 import { draftOfMapping, type MappingDraft, mappingOfDraft, mappingProblems } from './mapping-draft.ts';
 
 export const placeFields = ['name', 'latitude', 'longitude', 'elevationM', 'utcOffsetH'] as const;
@@ -48,7 +48,7 @@ export function readAnswers(draft: AnswerDraft, record: WeatherFileRecord): Answ
   if (mapping) {
     for (const [field, message] of Object.entries(mappingProblems(mapping))) problems[`mapping.${field}`] = message;
   }
-  const place = asksPlace(record) ? readPlace(draft, record, problems) : {};
+  const place = showsPlace(record) ? readPlace(draft, record, problems) : {};
   const choices = readChoices(draft, record, problems);
   if (Object.keys(problems).length > 0) return { ok: false, problems };
   const { answers: before } = record;

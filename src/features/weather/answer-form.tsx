@@ -10,7 +10,7 @@ import { useTeam } from '../../lib/team-scope.ts';
 import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { type AnswerDraft, draftOfRecord, readAnswers } from './answer-draft.ts';
-import { asksPlace, placeAsks, questionsOf } from './answer-questions.ts';
+import { placeAsks, questionsOf, showsPlace } from './answer-questions.ts';
 import { PlaceForm } from './place-form.tsx';
 import { QuestionField } from './question-field.tsx';
 import { SampleTable } from './sample-table.tsx';
@@ -61,7 +61,9 @@ export function AnswerForm({ record, onAnswered }: AnswerFormProps) {
         {questions.map((question) => (
           <QuestionField key={question.code} question={question} />
         ))}
-        {asksPlace(record) ? <PlaceForm asks={placeAsks(record.asks).filter(({ what }) => !chosen.has(what))} /> : null}
+        {showsPlace(record) ? (
+          <PlaceForm asks={placeAsks(record.asks).filter(({ what }) => !chosen.has(what))} />
+        ) : null}
         {answer.isError || formFault ? (
           <Notice tone="wrong" live title="Not answered">
             {formFault ?? errorSentence(answer.error)}

@@ -114,7 +114,7 @@ export function placeAsks(asks: readonly Ask[]): readonly Ask[] {
   return asks.filter(({ what }) => PLACE_CODES.includes(what));
 }
 
-/** Whether the form shows the place: a table that nobody has mapped is of a place that it seldom names. */
-export function asksPlace({ asks, table }: Pick<WeatherFileRecord, 'asks' | 'table'>): boolean {
-  return table !== null || placeAsks(asks).length > 0;
+/** Whether the form shows the place: a table seldom names it, and what waits or was refused may have it corrected. */
+export function showsPlace({ asks, table, file }: Pick<WeatherFileRecord, 'asks' | 'table' | 'file'>): boolean {
+  return file.status !== 'asks' || table !== null || placeAsks(asks).length > 0;
 }

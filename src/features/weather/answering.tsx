@@ -4,15 +4,17 @@ import type { FileAnswers } from '../../contract/weather-reading.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Notice } from '../../ui/notice.tsx';
 import { AnswerForm } from './answer-form.tsx';
+import { Correcting } from './correcting.tsx';
 import { mayChangeWeather } from './weather-words.ts';
 
-/** What a file asks, as a form for those who may answer; once answered, what follows from it. */
+/** What a file asks, as a form for those who may answer, and corrections while it waits; afterwards, what follows from the answer. */
 export function Answering({ record }: { record: WeatherFileRecord }) {
   const { role } = useTeam();
   const { file, asks, table } = record;
   const [answered, setAnswered] = useState<{ fileId: string; answers: FileAnswers } | null>(null);
   const own = answered?.fileId === file.id ? answered.answers : null;
   const isAsking = file.status === 'asks' && mayChangeWeather(role);
+  const isCorrectable = (file.status === 'review' || file.status === 'refused') && file.parent === null;
   // Other questions are another form; the same ones keep what has been typed.
   const key = JSON.stringify([file.id, asks, table?.shapeKey]);
   return (
@@ -25,6 +27,9 @@ export function Answering({ record }: { record: WeatherFileRecord }) {
           </h2>
           <AnswerForm key={key} record={record} onAnswered={(answers) => setAnswered({ fileId: file.id, answers })} />
         </section>
+      ) : null}
+      {isCorrectable && mayChangeWeather(role) ? (
+        <Correcting key={file.id} record={record} onAnswered={(answers) => setAnswered({ fileId: file.id, answers })} />
       ) : null}
     </>
   );

@@ -30,7 +30,7 @@ const mapping: Mapping = {
 function recordWith(change: Partial<WeatherFileRecord>): WeatherFileRecord {
   const [file] = fixtureFiles();
   if (!file) throw new Error('the fixtures hold no file');
-  return { ...fixtureRecord(file), answers: {}, asks: [], table: null, ...change };
+  return { ...fixtureRecord({ ...file, status: 'asks' }), answers: {}, asks: [], table: null, ...change };
 }
 
 const ask = (what: string, proposal: string | null = null) => ({ what, message: `About ${what}.`, proposal });
