@@ -143,14 +143,14 @@ export interface ReadingResult {
   readonly table: TableGuess | null;
 }
 
-/** Ends the reading of a file with what was read. */
+/** Ends the reading of a file with what was read. A table keeps the shape that it asked by, so that its answer can be corrected. */
 export async function setReadingResult(transaction: Knex.Transaction, result: ReadingResult): Promise<void> {
   const { table, declaredStation, asks, comments } = result;
   await transaction.raw(
     `update weather_files
      set status = :status, step = null, failure = null, part = :part, format = :format,
        declared_station = cast(:declaredStation as jsonb), asks = cast(:asks as jsonb), comments = :comments,
-       table_guess = cast(:table as jsonb), shape_key = :shapeKey
+       table_guess = cast(:table as jsonb), shape_key = coalesce(:shapeKey, shape_key)
      where team_id = :teamId and id = :fileId`,
     {
       ...result,

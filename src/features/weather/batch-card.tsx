@@ -10,11 +10,11 @@ import { useTeam } from '../../lib/team-scope.ts';
 import { Button } from '../../ui/button.tsx';
 import { Dialog } from '../../ui/dialog.tsx';
 import { Progress } from '../../ui/progress.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { ArchiveRow } from './archive-row.tsx';
 import { batchShare, batchWords, countedStatuses, filesOf } from './batch-words.ts';
 import { pageUploads, useUploads } from './page-uploads.ts';
 import { ReadingSteps } from './reading-steps.tsx';
-import { StatusMark } from './status-mark.tsx';
 import { UploadRow } from './upload-panel.tsx';
 import { isUnderWay } from './upload-queue.ts';
 import { readingNowQuery, useWeatherChanged } from './weather-queries.ts';
@@ -40,8 +40,13 @@ export function BatchCard({ batch }: { batch: WeatherBatch }) {
       <p role="status" className={isOpen ? 'font-medium' : 'text-soft'}>
         {sending > 0 ? `Sending ${plural(sending, 'file')}; you can go to other pages meanwhile. ` : ''}
         {batchWords(batch, sending)}.
-        {batch.stopped > 0 ? ` ${plural(batch.stopped, 'file')} stopped for a fault of ours.` : ''}
       </p>
+      {batch.stopped > 0 ? (
+        <p className="font-medium text-madder">
+          {plural(batch.stopped, 'file or archive', 'files and archives')} stopped for a fault of ours.{' '}
+          <Link to={paths.weather.to(teamId, { batch: batch.id, status: 'stopped' })}>Show the files</Link>
+        </p>
+      ) : null}
       {isOpen ? (
         <div className="my-1.5">
           <Progress label={`Progress of ${batch.name}`} share={batchShare(batch, sending)} />

@@ -84,6 +84,23 @@ describe('a plain table', () => {
     expect((await desk.readToTheEnd(file.id)).file.status).toBe('review');
   });
 
+  it('is read otherwise when its answer is corrected, and so are the next ones of its shape', async () => {
+    const inCelsius: TableMapping = { ...mapping, dryBulb: { column: 'air', unit: 'C' } };
+    const named = (note: string) => plainTable(note).replace('air temp', 'air');
+    const { file } = await desk.upload('mast-f.csv', named('f'));
+    await desk.readToTheEnd(file.id);
+    await answer(file.id, { mapping: { ...inCelsius, dryBulb: { column: 'air', unit: 'F' } }, place }).expect(200);
+    await desk.readToTheEnd(file.id);
+    await answer(file.id, { mapping: inCelsius, place }).expect(200);
+    const corrected = await desk.readToTheEnd(file.id);
+    expect(corrected.file.status).toBe('review');
+
+    const { file: next } = await desk.upload('mast-g.csv', named('g'));
+    const read = await desk.readToTheEnd(next.id);
+    expect(read.asks.map(({ what }) => what)).not.toContain('unit-guess');
+    expect(read.facts?.meanDryBulbC).toBe(corrected.facts?.meanDryBulbC);
+  });
+
   it('that holds several years becomes a file for each, all with the same original', async () => {
     const { file } = await desk.upload('two-years.csv', plainTable('c', [2021, 2022]));
     const record = await desk.readToTheEnd(file.id);
