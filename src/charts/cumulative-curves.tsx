@@ -21,7 +21,7 @@ const RULE = '#d5ccb9';
 const MADDER = '#a8442f';
 /** Curves differ by their strokes, so that grey printers keep them apart. */
 export const CURVE_DASHES = ['', '7 3', '2 3', '9 3 2 3', '12 4', '4 2', '1 4', '9 2 2 2 2 2'] as const;
-const BOX = { width: 560, height: 300, left: 46, right: 14, top: 10, bottom: 40 } as const;
+const BOX = { width: 440, height: 260, left: 42, right: 14, top: 10, bottom: 40 } as const;
 const INNER = { width: BOX.width - BOX.left - BOX.right, height: BOX.height - BOX.top - BOX.bottom } as const;
 
 /** Hours at or above a depression: depression across, hours upward, one line for each year. */

@@ -1,7 +1,7 @@
 import type { HumidityCaps } from '../engine/brief/brief.ts';
 import { saturationHumidityRatio } from '../engine/psychrometrics/moist-air.ts';
 import type { AirPoint, ProcessLine } from './process-lines.ts';
-import { humidityPath, linePath } from './psychrometric-chart.tsx';
+import { endOfHumidity, humidityPath, linePath } from './psychrometric-chart.tsx';
 import type { ChartScale, PsychrometricRange } from './psychrometric-scale.ts';
 
 const INK = '#22302f';
@@ -31,7 +31,7 @@ export function ProcessDrawing({ scale, range, lines, outdoor, room, ...asked }:
       <Caps scale={scale} range={range} pressurePa={asked.pressurePa} caps={asked.caps} />
       <Aim scale={scale} range={range} tempC={asked.supplyAimC} word="supply" row={0} />
       <Aim scale={scale} range={range} tempC={asked.setC} word="room" row={1} />
-      {lines.map(({ stage, points, after, supply }, index) => (
+      {lines.map(({ stage, points, after }, index) => (
         <g key={stage}>
           <path
             d={linePath(points, scale)}
@@ -50,8 +50,10 @@ export function ProcessDrawing({ scale, range, lines, outdoor, room, ...asked }:
               stroke={MADDER}
             />
           ))}
-          <Numbered at={supply} scale={scale} mark={String(index + 1)} />
         </g>
+      ))}
+      {lines.map(({ stage, supply }, index) => (
+        <Numbered key={stage} at={supply} scale={scale} mark={String(index + 1)} />
       ))}
       {room === null ? null : (
         <rect
@@ -102,23 +104,56 @@ function Aim({ scale, range, tempC, word, row }: AimProps) {
   );
 }
 
-function Caps({
-  scale,
-  range,
-  pressurePa,
-  caps,
-}: Omit<ProcessDrawingProps, 'lines' | 'outdoor' | 'room' | 'setC' | 'supplyAimC'>) {
-  const humidities = [caps.roomRhPct, caps.supplyRhPct].filter((percent) => percent !== undefined);
-  const dewPointRatio =
-    caps.supplyDewPointC === undefined ? null : saturationHumidityRatio(caps.supplyDewPointC, pressurePa);
+type CapsProps = Pick<ProcessDrawingProps, 'scale' | 'range' | 'pressurePa' | 'caps'>;
+
+function Caps({ scale, range, pressurePa, caps }: CapsProps) {
+  const words = [
+    { word: 'room cap', percent: caps.roomRhPct },
+    { word: 'supply cap', percent: caps.supplyRhPct },
+  ];
+  const ratio = caps.supplyDewPointC === undefined ? null : saturationHumidityRatio(caps.supplyDewPointC, pressurePa);
   return (
-    <g fill="none" stroke={INK} strokeWidth="1.5" strokeDasharray="8 2 1 2">
-      {[...new Set(humidities)].map((percent) => (
-        <path key={percent} d={humidityPath({ percent, pressurePa, range }, scale)} />
-      ))}
-      {dewPointRatio === null || dewPointRatio > range.maxRatio ? null : (
-        <path d={`M${scale.x(range.minC)} ${scale.y(dewPointRatio)}H${scale.x(range.maxC)}`} />
+    <g stroke={INK} strokeWidth="1.5" strokeDasharray="8 2 1 2">
+      {words.map(({ word, percent }) =>
+        percent === undefined ? null : (
+          <g key={word}>
+            <path d={humidityPath({ percent, pressurePa, range }, scale)} fill="none" />
+            <CapWord at={endOfHumidity({ percent, pressurePa, range })} scale={scale} word={`${word} ${percent} %`} />
+          </g>
+        ),
+      )}
+      {ratio === null || ratio > range.maxRatio || caps.supplyDewPointC === undefined ? null : (
+        <>
+          <path
+            d={linePath(
+              [
+                { tempC: Math.max(range.minC, caps.supplyDewPointC), humidityRatio: ratio },
+                { tempC: range.maxC, humidityRatio: ratio },
+              ],
+              scale,
+            )}
+            fill="none"
+          />
+          <CapWord at={{ tempC: range.maxC, humidityRatio: ratio }} scale={scale} word="supply dew point cap" />
+        </>
       )}
     </g>
+  );
+}
+
+function CapWord({ at, scale, word }: { at: AirPoint; scale: ChartScale; word: string }) {
+  return (
+    <text
+      x={scale.x(at.tempC) - 8}
+      y={scale.y(at.humidityRatio) - 4}
+      textAnchor="end"
+      fill={INK}
+      stroke={PAPER}
+      strokeWidth="3"
+      strokeDasharray="none"
+      paintOrder="stroke"
+    >
+      {word}
+    </text>
   );
 }

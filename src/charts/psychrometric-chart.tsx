@@ -18,14 +18,14 @@ export interface PsychrometricChartProps {
   /** The same as the picture, in a sentence. */
   readonly label: string;
   /** What is drawn over the hours. */
-  readonly children?: (scale: ChartScale) => ReactNode;
+  readonly overlay?: ((scale: ChartScale) => ReactNode) | undefined;
 }
 
 /**
  * The psychrometric chart of a year: dry bulb across, humidity ratio upward; saturation, relative humidity 20 to 80 %, wet bulb
  * every 5 °C; the hours of the year in greys.
  */
-export function PsychrometricChart({ pressurePa, range, fields, label, children }: PsychrometricChartProps) {
+export function PsychrometricChart({ pressurePa, range, fields, label, overlay }: PsychrometricChartProps) {
   const scale = chartScale(range);
   const most = fields.reduce((found, { hours }) => Math.max(found, hours), 1);
   return (
@@ -61,7 +61,7 @@ export function PsychrometricChart({ pressurePa, range, fields, label, children 
         <path d={humidityPath({ percent: 100, pressurePa, range }, scale)} stroke={INK} strokeWidth="1.75" />
       </g>
       <Axes range={range} scale={scale} pressurePa={pressurePa} />
-      {children?.(scale)}
+      {overlay?.(scale)}
     </svg>
   );
 }
@@ -99,9 +99,17 @@ function Axes({ range, scale, pressurePa }: { range: PsychrometricRange; scale: 
         </text>
       ))}
       {[20, 40, 60, 80].map((percent) => {
-        const at = labelOfHumidity({ percent, pressurePa, range });
+        const at = endOfHumidity({ percent, pressurePa, range });
         return (
-          <text key={percent} x={scale.x(at.tempC)} y={scale.y(at.humidityRatio) - 3} textAnchor="end">
+          <text
+            key={percent}
+            x={scale.x(at.tempC)}
+            y={scale.y(at.humidityRatio) - 3}
+            textAnchor="end"
+            stroke="#fbf9f3"
+            strokeWidth="3"
+            paintOrder="stroke"
+          >
             {percent} %
           </text>
         );
@@ -127,7 +135,7 @@ interface CurveInput {
 }
 
 /** Humidity ratio, kg/kg, at a relative humidity (over ice below 0 °C). */
-export function ratioAtHumidity(tempC: number, percent: number, pressurePa: number): number {
+function ratioAtHumidity(tempC: number, percent: number, pressurePa: number): number {
   const vapourPa = (percent / 100) * saturationPressurePa(tempC);
   return (MASS_RATIO * vapourPa) / (pressurePa - vapourPa);
 }
@@ -153,7 +161,8 @@ function wetBulbPath({ wetBulbC, pressurePa, range }: CurveInput & { wetBulbC: n
   return linePath(points, scale);
 }
 
-function labelOfHumidity({ percent, pressurePa, range }: CurveInput & { percent: number }): AirPoint {
+/** Where the curve of a relative humidity leaves the chart, a little before its edge. */
+export function endOfHumidity({ percent, pressurePa, range }: CurveInput & { percent: number }): AirPoint {
   let at: AirPoint = { tempC: range.minC, humidityRatio: 0 };
   for (let tempC = range.minC; tempC <= range.maxC - 0.5; tempC += 0.5) {
     const humidityRatio = ratioAtHumidity(tempC, percent, pressurePa);

@@ -50,7 +50,7 @@ export function MoveDialog({ station, onClose }: { station: Station; onClose: ()
   return (
     <Dialog isOpen onClose={onClose} title="Correct the place of this station">
       <form noValidate onSubmit={submit} className="grid gap-4">
-        <p>Its years are judged anew, at the new height and by the new clock. What was signed before stays as it is.</p>
+        <p>Its years are judged anew, at the new height and by the new clock. What was signed before is kept.</p>
         <div className="grid grid-cols-2 items-start gap-3">
           {fields.map(({ name, label, wide }) => (
             <TextField

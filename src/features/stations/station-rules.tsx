@@ -125,8 +125,8 @@ function SwitchOffDialog({ station, rule, onClose }: { station: Station; rule: R
     <Dialog isOpen onClose={onClose} title={`Switch off: ${ruleWords[rule].title}`}>
       <form noValidate onSubmit={submit} className="grid gap-4">
         <p>
-          Files of {station.name} that are read from now on are not held against {ruleWords[rule].meaning}. Files that
-          were read before stay as they are.
+          Files of {station.name} that are read from now on are not held against {ruleWords[rule].meaning}. What was
+          read before is not changed.
         </p>
         {switchOff.isError && !problem ? (
           <Notice tone="wrong" live>

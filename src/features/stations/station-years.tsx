@@ -1,5 +1,6 @@
 import { Link } from 'react-router-dom';
 import { CURVE_DASHES, CumulativeCurves } from '../../charts/cumulative-curves.tsx';
+import type { CurvePoint } from '../../charts/depression-curve.ts';
 import type { StationRecord } from '../../contract/stations.ts';
 import type { WeatherFile, YearFacts } from '../../contract/weather.ts';
 import { yearWords } from '../../lib/file-words.ts';
@@ -46,12 +47,11 @@ function YearTable({ years }: { years: readonly Year[] }) {
   const { teamId } = useTeam();
   return (
     <ScrollInside label="Years of the station, scrolls sideways">
-      <table className="ruled min-w-[44rem]">
+      <table className="ruled min-w-[38rem]">
         <caption className="sr-only">Accepted years of the station</caption>
         <thead>
           <tr>
             <th scope="col">Year</th>
-            <th scope="col">File</th>
             <th scope="col" className="figure">
               Complete
             </th>
@@ -70,11 +70,10 @@ function YearTable({ years }: { years: readonly Year[] }) {
           {years.map(({ file, facts }) => (
             <tr key={file.id}>
               <th scope="row" className="whitespace-nowrap">
-                {yearWords(file)}
+                <Link to={paths.weatherFile.to(teamId, file.id)} title={file.name}>
+                  {yearWords(file)}
+                </Link>
               </th>
-              <td className="break-all">
-                <Link to={paths.weatherFile.to(teamId, file.id)}>{file.name}</Link>
-              </td>
               <td className="figure">{file.completePct === null ? '–' : share(file.completePct)}</td>
               {COUNTED_K.map((kelvin) => (
                 <td key={kelvin} className="figure">
@@ -95,10 +94,7 @@ function Curves({ years, name }: { years: readonly Year[]; name: string }) {
   const drawn = years.slice(0, MOST_CURVES);
   const curves = drawn.map(({ file, facts }) => ({
     name: file.id,
-    points: [
-      { atLeastK: 0, hours: facts.hours - facts.missing },
-      ...facts.depressionHours.map(({ atLeastK, hours }) => ({ atLeastK, hours })),
-    ],
+    points: curveOf(facts),
   }));
   const hoursOfYear = Math.max(...drawn.map(({ facts }) => facts.hours));
   return (
@@ -135,6 +131,13 @@ function Curves({ years, name }: { years: readonly Year[]; name: string }) {
       ) : null}
     </div>
   );
+}
+
+/** From the hours that are known down to the first depression that no hour reaches. */
+function curveOf({ hours: slots, missing, depressionHours }: YearFacts): CurvePoint[] {
+  const end = depressionHours.findIndex(({ hours }) => hours === 0);
+  const reached = end === -1 ? depressionHours : depressionHours.slice(0, end + 1);
+  return [{ atLeastK: 0, hours: slots - missing }, ...reached];
 }
 
 function hoursAt({ depressionHours }: YearFacts, kelvin: number): number {

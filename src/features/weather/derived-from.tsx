@@ -4,9 +4,9 @@ import { changeWords } from '../../engine/climate/change-words.ts';
 import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Notice } from '../../ui/notice.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { DifferenceTables } from './climate-difference.tsx';
 import { MonthlyChanges } from './monthly-changes.tsx';
-import { StatusMark } from './status-mark.tsx';
 import { statusWord, yearWords } from './weather-words.ts';
 
 /** A derived year beside its parent: what was changed, and what became of it. */

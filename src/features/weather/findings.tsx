@@ -2,8 +2,8 @@ import { useId, useState } from 'react';
 import type { Ask, Finding, Severity } from '../../contract/weather.ts';
 import { number } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
+import { SeverityMark } from '../../ui/status-mark.tsx';
 import { FindingRows } from './finding-rows.tsx';
-import { SeverityMark } from './status-mark.tsx';
 import { severityOrder, severityTitle } from './weather-words.ts';
 
 interface FindingsProps {

@@ -4,8 +4,8 @@ import { Link, useNavigate } from 'react-router-dom';
 import { LibraryStatus } from '../../contract/weather.ts';
 import { moment, number } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { changedView, isFiltered, type LibraryView, librarySearch, withoutFilter } from './library-view.ts';
-import { StatusMark } from './status-mark.tsx';
 import { batchesQuery, stationChoiceQuery } from './weather-queries.ts';
 import { formatWord, statusWord } from './weather-words.ts';
 

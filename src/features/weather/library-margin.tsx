@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import { plural } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
-import { StatusMark } from './status-mark.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { libraryQuery } from './weather-queries.ts';
 import { statusWords, yearWords } from './weather-words.ts';
 

@@ -59,8 +59,7 @@ function ChartOfYear({ file, year, pressurePa, slot, onChoose }: ChartOfYearProp
             range={range}
             fields={fields}
             label={`Psychrometric chart at ${pressureHPa(pressurePa)} with the hours of the year in greys. The table below says what is drawn of the chosen hour.`}
-          >
-            {(scale) =>
+            overlay={(scale) =>
               hour === null || chosen === null ? null : (
                 <ProcessDrawing
                   {...{ scale, range, pressurePa }}
@@ -73,7 +72,7 @@ function ChartOfYear({ file, year, pressurePa, slot, onChoose }: ChartOfYearProp
                 />
               )
             }
-          </PsychrometricChart>
+          />
         </div>
       </ScrollInside>
       <p className="text-fine text-soft">

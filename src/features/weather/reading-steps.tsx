@@ -1,5 +1,5 @@
 import type { WeatherFile } from '../../contract/weather.ts';
-import { StatusMark } from './status-mark.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { statusWords } from './weather-words.ts';
 
 const allSteps = ['received', 'reading', 'reducing', 'storing'] as const;

@@ -6,8 +6,8 @@ import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { buttonLook } from '../../ui/button.tsx';
 import { CopyButton } from '../../ui/copy-button.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { RecordLicence } from './record-licence.tsx';
-import { StatusMark } from './status-mark.tsx';
 import { mayChangeWeather, statusWord } from './weather-words.ts';
 
 /** What was uploaded: the bytes, their fingerprint, their licence, and what else came in the same file. */

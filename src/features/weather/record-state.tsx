@@ -16,10 +16,10 @@ import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Button, buttonLook } from '../../ui/button.tsx';
 import { Notice, type NoticeTone } from '../../ui/notice.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { ReadingSteps } from './reading-steps.tsx';
 import { RecordDecision } from './record-decision.tsx';
 import { RetryButton } from './retry-button.tsx';
-import { StatusMark } from './status-mark.tsx';
 import { mayChangeWeather, statusWords } from './weather-words.ts';
 import { WithdrawDialog } from './withdraw-dialog.tsx';
 

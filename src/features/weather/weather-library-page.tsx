@@ -36,7 +36,14 @@ export function WeatherLibraryPage() {
             {library.data && all ? countWords(view, library.data.total, all) : 'Hourly years, as they were uploaded'}
           </p>
         </div>
-        {mayUpload && all !== 0 ? <UploadButton teamId={teamId} /> : null}
+        <div className="flex flex-wrap items-center gap-3">
+          {all === 0 ? null : (
+            <Link to={paths.stations.to(teamId)} className={buttonLook('plain')}>
+              Stations
+            </Link>
+          )}
+          {mayUpload && all !== 0 ? <UploadButton teamId={teamId} /> : null}
+        </div>
       </header>
       {mayUpload ? <DropHint /> : null}
       <div className="my-4 grid grid-cols-[minmax(0,1fr)] gap-3">

@@ -4,9 +4,9 @@ import type { LibrarySort, WeatherFile } from '../../contract/weather.ts';
 import { moment, share } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
+import { StatusMark } from '../../ui/status-mark.tsx';
 import { type LibraryView, librarySearch, sortedBy } from './library-view.ts';
 import { RetryButton } from './retry-button.tsx';
-import { StatusMark } from './status-mark.tsx';
 import { formatWord, parentWords, statusWords, yearWords } from './weather-words.ts';
 
 export type ChosenFiles = ReadonlyMap<string, WeatherFile>;

@@ -23,8 +23,8 @@ export function TokensPage() {
       <header>
         <h1 className="text-title">API tokens</h1>
         <p className="mt-1 max-w-[70ch] text-soft">
-          With a token a program does for {teamName} what its scopes say, as an upload every night. Only its fingerprint
-          is kept here: the token itself is shown once, when it is made.
+          With a token a program brings in weather for {teamName}, or reads what was found, within its scopes. Only its
+          hash is kept here: the token itself is shown once, when it is made.
         </p>
       </header>
       {role === 'lead' ? (

@@ -1,1 +1,0 @@
-export { SeverityMark, StatusMark } from '../../ui/status-mark.tsx';
