@@ -23,6 +23,8 @@ export interface MatchedCalendar {
   readonly rowOfStep: Int32Array;
   /** Rows that belong to the period that was read; later periods wait for an answer. */
   readonly rowsRead: number;
+  /** Whether the rows are the steps, one for one, as in nearly every file of a year. */
+  readonly inPlace: boolean;
 }
 
 interface Walk {
@@ -42,12 +44,22 @@ export function matchCalendar(
   const { rows, stepsPerHour } = input;
   const slotCount = holdsLeapDay(rows) ? SLOTS_PER_LEAP_YEAR : SLOTS_PER_YEAR;
   const steps = stepOfEachRow(rows, stepsPerHour, slotCount);
-  const walk = placeRows(input, steps, slotCount);
+  const inPlace = input.periods.length <= 1 && steps.length === slotCount * stepsPerHour && isCounted(steps);
+  const walk: Walk = inPlace
+    ? { rowOfStep: steps, repeats: [], outOfOrder: [], rowsRead: steps.length }
+    : placeRows(input, steps, slotCount);
   if (walk.rowsRead < rows.lines.length) askAboutPeriods(input, walk.rowsRead, findings);
   else if (input.periods.length > 1) askAboutPeriods(input, walk.rowsRead, findings);
   tellRepeats(input, walk, slotCount, findings);
   tellOrder(input, walk, findings);
-  return { slotCount, stepsPerHour, rowOfStep: walk.rowOfStep, rowsRead: walk.rowsRead };
+  return { slotCount, stepsPerHour, rowOfStep: walk.rowOfStep, rowsRead: walk.rowsRead, inPlace };
+}
+
+/** Whether the values are 0, 1, 2 and so on. */
+function isCounted(steps: Int32Array): boolean {
+  let row = 0;
+  while (row < steps.length && steps[row] === row) row++;
+  return row === steps.length;
 }
 
 /** The step of each row. Minutes run 60/n .. 60, or 0 .. 60 - 60/n in files that never write 60. */
@@ -72,7 +84,7 @@ function stepOfEachRow(rows: SourceRows, stepsPerHour: number, slotCount: number
 }
 
 function holdsLeapDay({ days, months }: SourceRows): boolean {
-  for (let row = days.indexOf(29); row >= 0; row = days.indexOf(29, row + 1)) if (months[row] === 2) return true;
+  for (let row = 0; row < days.length; row++) if (days[row] === 29 && months[row] === 2) return true;
   return false;
 }
 

@@ -16,10 +16,25 @@ export class RowCollector {
     return this.#count;
   }
 
+  /** Columns with room beyond the rows so far, for a reader that fills them by itself and says afterwards how many it has filled. */
+  get columns(): SourceRows {
+    return this.#columns;
+  }
+
+  /** Sees to it that one more row fits. */
+  makeRoom(): void {
+    if (this.#count === this.#columns.lines.length) this.#columns = grown(this.#columns);
+  }
+
+  /** Counts rows that have been filled in. */
+  take(rows: number): void {
+    this.#count += rows;
+  }
+
   /** Copies a row, so that a reader may fill the same record again. */
   add(row: SourceRow): void {
     const at = this.#count;
-    if (at === this.#columns.lines.length) this.#columns = grown(this.#columns);
+    this.makeRoom();
     const columns = this.#columns;
     columns.lines[at] = row.line;
     columns.years[at] = row.year;

@@ -36,5 +36,22 @@ export interface SourceRow {
   estimated: number;
 }
 
+/** A row that says nothing, to be filled. */
+export function emptyRow(): SourceRow {
+  return {
+    line: 0,
+    year: 0,
+    month: 0,
+    day: 0,
+    hour: 0,
+    minute: 0,
+    dryBulbC: Number.NaN,
+    dewPointC: Number.NaN,
+    relativeHumidityPct: Number.NaN,
+    pressurePa: Number.NaN,
+    estimated: 0,
+  };
+}
+
 /** One bit for each value of a row. */
 export const VALUE = { dryBulb: 1, dewPoint: 2, relativeHumidity: 4, pressure: 8 } as const;

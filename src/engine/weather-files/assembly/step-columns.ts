@@ -18,14 +18,20 @@ export interface StepColumns {
   readonly repaired: Uint8Array;
 }
 
-/** Lays rows on the calendar. @param input.rowOfStep row of each step, -1 where there is none */
+/**
+ * Lays rows on the calendar.
+ * @param input.rowOfStep row of each step, -1 where there is none
+ * @param input.inPlace whether each row is the step of its own number
+ */
 export function stepColumns(input: {
   rows: SourceRows;
   rowOfStep: Int32Array;
   slotCount: number;
   stepsPerHour: number;
+  inPlace: boolean;
 }): StepColumns {
   const { rows, rowOfStep } = input;
+  if (input.inPlace) return copiedColumns(rows, input);
   return {
     slotCount: input.slotCount,
     stepsPerHour: input.stepsPerHour,
@@ -36,6 +42,20 @@ export function stepColumns(input: {
     pressurePa: onSteps(rows.pressurePa, rowOfStep),
     estimated: bitsOnSteps(rows.estimated, rowOfStep),
     repaired: new Uint8Array(rowOfStep.length),
+  };
+}
+
+function copiedColumns(rows: SourceRows, calendar: { slotCount: number; stepsPerHour: number }): StepColumns {
+  return {
+    slotCount: calendar.slotCount,
+    stepsPerHour: calendar.stepsPerHour,
+    lines: rows.lines.slice(),
+    dryBulbC: rows.dryBulbC.slice(),
+    dewPointC: rows.dewPointC.slice(),
+    relativeHumidityPct: rows.relativeHumidityPct.slice(),
+    pressurePa: rows.pressurePa.slice(),
+    estimated: rows.estimated.slice(),
+    repaired: new Uint8Array(rows.lines.length),
   };
 }
 

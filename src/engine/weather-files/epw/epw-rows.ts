@@ -1,10 +1,11 @@
 import { RowCollector } from '../assembly/row-collector.ts';
-import { type SourceRow, type SourceRows, VALUE } from '../assembly/source-rows.ts';
+import { emptyRow, type SourceRow, type SourceRows } from '../assembly/source-rows.ts';
 import { type FindingList, whole } from '../finding-list.ts';
 import { Frequencies } from '../frequencies.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
 import { type FieldBounds, FULL_FIELDS, findFields, flagsOf, NEEDED_FIELDS, readTime, readValues } from './epw-row.ts';
 import { PlainRowReader } from './plain-row.ts';
+import { SourceFlags } from './source-flags.ts';
 
 export interface EpwRows {
   readonly rows: SourceRows;
@@ -21,8 +22,7 @@ interface Progress {
   /** Fields of each row kept, at most `FULL_FIELDS`. */
   readonly fieldCounts: number[];
   readonly bounds: FieldBounds;
-  firstFlags: number | null;
-  flagsVary: boolean;
+  readonly flags: SourceFlags;
   longRows: number;
   firstLongLine: number;
 }
@@ -33,19 +33,15 @@ export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows 
     rows: new RowCollector(),
     fieldCounts: [],
     bounds: { starts: new Int32Array(NEEDED_FIELDS + 2), count: 0 },
-    firstFlags: null,
-    flagsVary: false,
+    flags: new SourceFlags(cursor.text.bytes),
     longRows: 0,
     firstLongLine: 0,
   };
-  const plain = new PlainRowReader(cursor.text.bytes);
+  const { bytes, lines } = cursor.text;
+  const plain = lines === null ? null : new PlainRowReader(bytes, lines);
+  const row = emptyRow();
   for (let records = 1; ; records++) {
-    if (records <= MOST_ROWS && plain.read(cursor.ahead)) {
-      cursor.pass(plain.end, plain.next);
-      noteLength(progress, plain.fieldCount, cursor.line);
-      keepRow(cursor, progress, plain);
-      continue;
-    }
+    if (plain !== null) records += passPlainRows(cursor, progress, { plain, most: MOST_ROWS - records + 1 });
     if (!cursor.next()) break;
     if (records > MOST_ROWS) {
       tellTooMany(cursor, findings);
@@ -53,14 +49,39 @@ export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows 
     }
     findFields(cursor, progress.bounds);
     if (cutShort(cursor, progress)) tellTruncated(cursor, progress, findings);
-    else readRow(cursor, progress, plain.row, findings);
+    else readRow(cursor, progress, row, findings);
   }
   tellLongRows(progress, findings);
   const rows = progress.rows.finish();
   leaveOutDamagedRows(progress.fieldCounts, rows, findings);
   // Flags that say the same of every row tell nothing of any of them.
-  if (!progress.flagsVary) rows.estimated.fill(0);
-  return { rows, flagsInformative: progress.flagsVary };
+  if (!progress.flags.vary) rows.estimated.fill(0);
+  return { rows, flagsInformative: progress.flags.vary };
+}
+
+/** Reads the rows ahead as long as they are plain, at most so many. @returns how many */
+function passPlainRows(
+  cursor: LineCursor,
+  progress: Progress,
+  { plain, most }: { plain: PlainRowReader; most: number },
+): number {
+  const { lines } = cursor.text;
+  const { fieldCounts, flags, rows } = progress;
+  let passed = 0;
+  for (;;) {
+    rows.makeRoom();
+    const before = cursor.linesBefore;
+    const taken = plain.readInto(rows, { start: cursor.ahead, line: before, most: most - passed }, flags);
+    if (taken === 0) return passed;
+    for (let line = before; line < before + taken; line++) {
+      const fieldCount = (lines?.commas[line] ?? 0) + 1;
+      noteLength(progress, fieldCount, line + 1);
+      fieldCounts.push(Math.min(fieldCount, FULL_FIELDS));
+    }
+    rows.take(taken);
+    cursor.pass(taken);
+    passed += taken;
+  }
 }
 
 /** A last line without its end and with fewer fields than the others. */
@@ -100,49 +121,16 @@ function readRow(cursor: LineCursor, progress: Progress, row: SourceRow, finding
   readValues(cursor, bounds, row, findings);
   if (!placed) return;
   const { start, end } = flagsOf(bounds);
-  keepRow(cursor, progress, { row, fieldCount: bounds.count, flagsStart: start, flagsEnd: end });
+  row.line = line;
+  row.estimated = progress.flags.take(start, end);
+  progress.fieldCounts.push(Math.min(bounds.count, FULL_FIELDS));
+  progress.rows.add(row);
 }
 
 function noteLength(progress: Progress, fieldCount: number, line: number): void {
   if (fieldCount <= FULL_FIELDS) return;
   progress.longRows++;
   if (progress.firstLongLine === 0) progress.firstLongLine = line;
-}
-
-type ReadRow = Pick<PlainRowReader, 'row' | 'fieldCount' | 'flagsStart' | 'flagsEnd'>;
-
-function keepRow(cursor: LineCursor, progress: Progress, read: ReadRow): void {
-  const { row } = read;
-  row.line = cursor.line;
-  row.estimated = readFlags(cursor.text.bytes, progress, read);
-  progress.fieldCounts.push(Math.min(read.fieldCount, FULL_FIELDS));
-  progress.rows.add(row);
-}
-
-/** Keeps whether the flags of dry bulb and dew point, letter and digit of each, vary, and answers which values they call estimated. */
-function readFlags(bytes: Uint8Array, progress: Progress, { flagsStart, flagsEnd }: ReadRow): number {
-  const dryLetter = byteBefore(flagsEnd, bytes, flagsStart);
-  const dryDigit = byteBefore(flagsEnd, bytes, flagsStart + 1);
-  const dewLetter = byteBefore(flagsEnd, bytes, flagsStart + 2);
-  const dewDigit = byteBefore(flagsEnd, bytes, flagsStart + 3);
-  const firstFour = ((dryLetter * 256 + dryDigit) * 256 + dewLetter) * 256 + dewDigit;
-  if (progress.firstFlags === null) progress.firstFlags = firstFour;
-  else if (progress.firstFlags !== firstFour) progress.flagsVary = true;
-  let estimated = 0;
-  if (isEstimated(dryLetter)) estimated |= VALUE.dryBulb;
-  if (isEstimated(dewLetter)) estimated |= VALUE.dewPoint;
-  if (isEstimated(byteBefore(flagsEnd, bytes, flagsStart + 4))) estimated |= VALUE.relativeHumidity;
-  return estimated;
-}
-
-/** The byte at a place before the end of a field, else 0. */
-function byteBefore(end: number, bytes: Uint8Array, at: number): number {
-  return at < end ? (bytes[at] ?? 0) : 0;
-}
-
-/** Source letters of values that are interpolated (B, C) or modelled (E). */
-function isEstimated(letter: number): boolean {
-  return letter === 0x42 || letter === 0x43 || letter === 0x45;
 }
 
 function tellTooMany(cursor: LineCursor, findings: FindingList): void {
@@ -171,7 +159,7 @@ function tellLongRows(progress: Progress, findings: FindingList): void {
 /** A row that is shorter than the file's layout may have lost any of its fields, so its values are not trusted. */
 function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, findings: FindingList): void {
   const rowsWith = new Frequencies();
-  for (const count of fieldCounts) rowsWith.add(count);
+  for (let row = 0; row < fieldCounts.length; row++) rowsWith.add(fieldCounts[row] ?? 0);
   const usual = rowsWith.mostFrequent(0);
   if (rowsWith.size === 1) return;
   for (let row = 0; row < fieldCounts.length; row++) {

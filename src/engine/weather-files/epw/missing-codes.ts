@@ -2,6 +2,7 @@
 
 /** A temperature, °C. Codes: 99.9 and above, -99, -99.9, -999, -9999. */
 export function temperatureWithoutCodes(value: number): number {
+  if (value > -99 && value < 99.9) return value;
   const code = value >= 99.9 || value === -99 || value === -99.9 || value === -999 || value === -9999;
   return code ? Number.NaN : value;
 }

@@ -1,215 +1,207 @@
 import { daysInMonth } from '../../reduction/calendar.ts';
-import type { SourceRow } from '../assembly/source-rows.ts';
+import type { RowCollector } from '../assembly/row-collector.ts';
+import type { LineIndex } from '../text/survey-text.ts';
 import { humidityWithoutCodes, pressureWithoutCodes, temperatureWithoutCodes } from './missing-codes.ts';
+import type { SourceFlags } from './source-flags.ts';
 
-const LINE_FEED = 0x0a;
-const RETURN = 0x0d;
-const SPACE = 0x20;
 const COMMA = 0x2c;
 const MINUS = 0x2d;
 const POINT = 0x2e;
 const ZERO = 0x30;
 
 /** Bytes that are looked at together, four in each of four words. */
-const BLOCK = 16;
 const WORD = 4;
-/** The same in every byte of a word: one, a blank, a comma, all bits but the highest, the highest bit. */
+/** The same in every byte of a word: one, a comma, the highest bit. */
 const ONES = 0x01010101;
-const SPACES = 0x20202020;
 const COMMAS = 0x2c2c2c2c;
-const LOWER_BITS = 0x7f7f7f7f;
 const HIGHEST_BITS = 0x80808080;
 
 /** As many digits as a small integer of the machine holds; a power of ten so small is exact, and one division rounds once. */
 const MOST_DIGITS = 9;
 const POWERS_OF_TEN = [1, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9];
-/** The field after the ten that are read. */
-const NEXT_FIELD = 11;
+/** Commas after the ten fields that are read. */
+const FEWEST_COMMAS = 10;
+/** Bytes of a year, a month and a day, their commas among them, that three words can be compared over. */
+const SHORTEST_DATE = 8;
+const LONGEST_DATE = 12;
+/** No field is looked at further than this beyond its beginning without a look at its bytes. */
+const MARGIN = 16;
 
 /**
- * Reads a data record as nearly all are written, in one pass over its bytes: numbers without blanks, exponents or plus signs, a
- * date that exists, more fields than the ten that are needed, a line end. Whatever is not so plain is left to `epw-row.ts`, which
- * gives the same values for a plain row and tells what is wrong with another.
+ * Reads data records as nearly all are written, from the bytes of their first ten fields: numbers without blanks, exponents or plus
+ * signs, a date that exists, more fields than the ten that are needed, a line end. Whatever is not so plain is left to `epw-row.ts`,
+ * which gives the same values for a plain row and tells what is wrong with another.
  */
 export class PlainRowReader {
-  /** What the last row held; its line and its estimated values are the caller's to set. */
-  readonly row: SourceRow = {
-    line: 0,
-    year: 0,
-    month: 0,
-    day: 0,
-    hour: 0,
-    minute: 0,
-    dryBulbC: Number.NaN,
-    dewPointC: Number.NaN,
-    relativeHumidityPct: Number.NaN,
-    pressurePa: Number.NaN,
-    estimated: 0,
-  };
-  fieldCount = 0;
-  /** Where the source flags begin, and the byte after them. */
-  flagsStart = 0;
-  flagsEnd = 0;
-  /** The byte after the last of the line, and the first of the line after it. */
-  end = 0;
-  next = 0;
-
   readonly #bytes: Uint8Array;
   readonly #words: DataView;
-  /** Year, month, day, hour and minute. */
-  readonly #times = new Int32Array(5);
-  /** Dry bulb, dew point, relative humidity and pressure as they stand. */
-  readonly #values = new Float64Array(4);
+  readonly #index: LineIndex;
+  /** Where the reading stands; -1 after what is not plain. */
+  #at = 0;
+  /** The date of the last row, where it begins and how many bytes it has, 0 before the first. */
+  #year = 0;
+  #month = 0;
+  #day = 0;
+  #dateStart = 0;
+  #dateLength = 0;
 
-  constructor(bytes: Uint8Array) {
+  constructor(bytes: Uint8Array, index: LineIndex) {
     this.#bytes = bytes;
     this.#words = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+    this.#index = index;
   }
 
-  /** Reads the line that begins at a byte; false when it is not plain, and then nothing of it counts. */
-  read(start: number): boolean {
-    const flags = this.#readTimes(start);
-    if (flags < 0) return false;
-    this.flagsStart = flags;
-    this.flagsEnd = this.#commaFrom(flags);
-    if (this.flagsEnd < 0) return false;
-    const rest = this.#readValues(this.flagsEnd + 1);
-    return rest >= 0 && this.#countFields(rest);
+  /**
+   * Reads rows up to the first that is not plain, or until the columns are full. One loop over columns at hand, since it takes every
+   * hour of every file.
+   * @param from where the first of them begins, how many lines stand before it, and how many are to be read at most
+   * @returns how many have been read
+   */
+  readInto(rows: RowCollector, from: { start: number; line: number; most: number }, flags: SourceFlags): number {
+    const { commas, ends } = this.#index;
+    const { days, dewPointC, dryBulbC, estimated, hours, lines, minutes, months, pressurePa, relativeHumidityPct, years } =
+      rows.columns;
+    const last = Math.min(lines.length, rows.count + from.most);
+    let { line, start } = from;
+    let row = rows.count;
+    for (; row < last && (commas[line] ?? 0) >= FEWEST_COMMAS; row++) {
+      const end = ends[line] ?? 0;
+      if (start + MARGIN > end || (!this.#passSameDate(start) && !this.#readDate(start))) break;
+      const hour = this.#wholeNumber();
+      const minute = this.#wholeNumber();
+      if (hour < 0 || hour > 24 || minute < 0 || minute > 60) break;
+      const flagsStart = this.#at;
+      const flagsEnd = this.#commaFrom(flagsStart);
+      this.#at = flagsEnd + 1;
+      this.#readDecimal(dryBulbC, row);
+      this.#readDecimal(dewPointC, row);
+      this.#readDecimal(relativeHumidityPct, row);
+      this.#readDecimal(pressurePa, row);
+      if (this.#at < 0) break;
+      line++;
+      start = end + 1;
+      lines[row] = line;
+      years[row] = this.#year;
+      months[row] = this.#month;
+      days[row] = this.#day;
+      hours[row] = hour;
+      minutes[row] = minute;
+      dryBulbC[row] = temperatureWithoutCodes(dryBulbC[row] ?? 0);
+      dewPointC[row] = temperatureWithoutCodes(dewPointC[row] ?? 0);
+      relativeHumidityPct[row] = humidityWithoutCodes(relativeHumidityPct[row] ?? 0);
+      pressurePa[row] = pressureWithoutCodes(pressurePa[row] ?? 0);
+      estimated[row] = flags.take(flagsStart, flagsEnd);
+    }
+    return row - rows.count;
   }
 
-  /** Reads whole numbers of digits alone, each with the comma after it. Answers where they end, -1 when they are not so. */
-  #readTimes(start: number): number {
+  /** Whether the line begins with the date of the last row, as 23 of 24 do; then it is passed. */
+  #passSameDate(start: number): boolean {
+    const words = this.#words;
+    const before = this.#dateStart;
+    const length = this.#dateLength;
+    if (length === 0) return false;
+    const last = length - WORD;
+    const same =
+      words.getInt32(start, true) === words.getInt32(before, true) &&
+      words.getInt32(start + WORD, true) === words.getInt32(before + WORD, true) &&
+      words.getInt32(start + last, true) === words.getInt32(before + last, true);
+    if (same) this.#at = start + length;
+    return same;
+  }
+
+  /** Reads year, month and day; false when no calendar has them, leap years among them. */
+  #readDate(start: number): boolean {
+    this.#at = start;
+    this.#year = this.#wholeNumber();
+    this.#month = this.#wholeNumber();
+    this.#day = this.#wholeNumber();
+    const length = this.#at - start;
+    const exists = this.#year >= 0 && this.#day >= 1 && this.#day <= daysInMonth(this.#month, true);
+    this.#dateStart = start;
+    this.#dateLength = exists && length >= SHORTEST_DATE && length <= LONGEST_DATE ? length : 0;
+    return exists;
+  }
+
+  /** Reads a whole number of digits alone with the comma after it; -1 when it is not so. */
+  #wholeNumber(): number {
     const bytes = this.#bytes;
-    const times = this.#times;
-    let at = start;
-    for (let place = 0; place < times.length; place++) {
-      const first = at;
-      let value = 0;
-      let digit = (bytes[at] ?? 0) - ZERO;
-      for (; digit >= 0 && digit <= 9 && at < first + MOST_DIGITS; digit = (bytes[at] ?? 0) - ZERO) {
-        value = value * 10 + digit;
-        at++;
-      }
-      if (at === first || bytes[at] !== COMMA) return -1;
-      times[place] = value;
+    const first = this.#at;
+    let at = first;
+    let value = 0;
+    let digit = (bytes[at] ?? 0) - ZERO;
+    for (; digit >= 0 && digit <= 9 && at < first + MOST_DIGITS; digit = (bytes[at] ?? 0) - ZERO) {
+      value = value * 10 + digit;
       at++;
     }
-    return this.#takeTimes() ? at : -1;
+    this.#at = at + 1;
+    return at === first || bytes[at] !== COMMA ? -1 : value;
   }
 
-  /** Whether the calendar has such an hour, in a leap year at least. */
-  #takeTimes(): boolean {
-    const { row } = this;
-    const times = this.#times;
-    const month = times[1] ?? 0;
-    const day = times[2] ?? 0;
-    const hour = times[3] ?? 0;
-    const minute = times[4] ?? 0;
-    row.year = times[0] ?? 0;
-    row.month = month;
-    row.day = day;
-    row.hour = hour;
-    row.minute = minute;
-    return day >= 1 && day <= daysInMonth(month, true) && hour <= 24 && minute <= 60;
-  }
-
-  /** Reads numbers with their decimals, each with the comma after it, NaN for an empty field; answers as `#readTimes` does. */
-  #readValues(start: number): number {
-    const bytes = this.#bytes;
-    const values = this.#values;
-    let at = start;
-    for (let place = 0; place < values.length; place++) {
-      const negative = bytes[at] === MINUS;
-      if (negative) at++;
-      const first = at;
-      let mantissa = 0;
-      let point = -1;
-      for (; at <= first + MOST_DIGITS; at++) {
-        const byte = bytes[at] ?? 0;
-        const digit = byte - ZERO;
-        if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
-        else if (byte === POINT && point < 0) point = at;
-        else break;
-      }
-      const digits = at - first - (point < 0 ? 0 : 1);
-      const empty = digits === 0 && !negative && point < 0;
-      if (bytes[at] !== COMMA || digits > MOST_DIGITS || (digits === 0 && !empty)) return -1;
-      const value = point < 0 ? mantissa : mantissa / (POWERS_OF_TEN[at - point - 1] ?? 1);
-      values[place] = empty ? Number.NaN : negative ? -value : value;
-      at++;
+  /**
+   * Reads a number with its decimals and the comma after it into a place of a column, NaN for an empty field: given back, it would be
+   * an object of its own. The two commonest shapes are told from one word: with a digit or two before the point and one after it.
+   */
+  #readDecimal(column: Float64Array, row: number): void {
+    const start = this.#at;
+    if (start < 0 || start > this.#words.byteLength - MARGIN) {
+      this.#at = -1;
+      return;
     }
-    this.#takeValues();
-    return at;
+    const negative = this.#bytes[start] === MINUS;
+    const at = negative ? start + 1 : start;
+    const word = this.#words.getInt32(at, true);
+    // What differs from "00.0" and "0.0,": digits become their values, and adding six to one beyond nine shows in the upper half.
+    const four = word ^ 0x302e3030;
+    const three = word ^ 0x2c302e30;
+    let tenths = 0;
+    if (((four | (four + 0x06000606)) & 0xf0fff0f0) === 0 && this.#bytes[at + 4] === COMMA) {
+      this.#at = at + 5;
+      tenths = (four & 15) * 100 + ((four >> 8) & 15) * 10 + (four >> 24);
+    } else if (((three | (three + 0x00060006)) & 0xfff0fff0) === 0) {
+      this.#at = at + 4;
+      tenths = (three & 15) * 10 + (three >> 16);
+    } else {
+      this.#readOther(at, negative, { column, row });
+      return;
+    }
+    column[row] = (negative ? -tenths : tenths) / 10;
   }
 
-  #takeValues(): void {
-    const { row } = this;
-    const values = this.#values;
-    row.dryBulbC = temperatureWithoutCodes(values[0] ?? 0);
-    row.dewPointC = temperatureWithoutCodes(values[1] ?? 0);
-    row.relativeHumidityPct = humidityWithoutCodes(values[2] ?? 0);
-    row.pressurePa = pressureWithoutCodes(values[3] ?? 0);
+  /** The same for a number of any shape, from its first digit on. */
+  #readOther(first: number, negative: boolean, into: { column: Float64Array; row: number }): void {
+    const bytes = this.#bytes;
+    let at = first;
+    let mantissa = 0;
+    let point = -1;
+    for (; at <= first + MOST_DIGITS; at++) {
+      const byte = bytes[at] ?? 0;
+      const digit = byte - ZERO;
+      if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
+      else if (byte === POINT && point < 0) point = at;
+      else break;
+    }
+    const digits = at - first - (point < 0 ? 0 : 1);
+    const empty = digits === 0 && !negative && point < 0;
+    if (bytes[at] !== COMMA || digits > MOST_DIGITS || (digits === 0 && !empty)) {
+      this.#at = -1;
+      return;
+    }
+    this.#at = at + 1;
+    const value = point < 0 ? mantissa : mantissa / (POWERS_OF_TEN[at - point - 1] ?? 1);
+    into.column[into.row] = empty ? Number.NaN : negative ? -value : value;
   }
 
-  /** The first comma from a byte on; -1 when a control character comes before it. */
+  /** The first comma from a byte on; one stands before the line end. */
   #commaFrom(start: number): number {
-    const bytes = this.#bytes;
     const words = this.#words;
-    const lastWord = bytes.length - WORD;
-    let at = start;
-    for (; at <= lastWord; at += WORD) {
-      const word = words.getInt32(at, true);
-      const apart = word ^ COMMAS;
-      // A byte of zero borrows, and so does one below a blank: the word holds a comma or perhaps a control character.
-      if ((((apart - ONES) & ~apart) | ((word - SPACES) & ~word)) & HIGHEST_BITS) break;
+    const lastWord = words.byteLength - WORD;
+    for (let at = start; at <= lastWord; at += WORD) {
+      const apart = words.getInt32(at, true) ^ COMMAS;
+      // A byte of zero borrows; the lowest that does is the first comma.
+      const found = (apart - ONES) & ~apart & HIGHEST_BITS;
+      if (found !== 0) return at + ((31 - Math.clz32(found & -found)) >> 3);
     }
-    while ((bytes[at] ?? 0) >= SPACE && bytes[at] !== COMMA) at++;
-    return bytes[at] === COMMA ? at : -1;
+    return this.#bytes.indexOf(COMMA, Math.max(start, lastWord));
   }
-
-  /** Counts the fields up to the line end; false without one. */
-  #countFields(start: number): boolean {
-    const bytes = this.#bytes;
-    const words = this.#words;
-    const lastBlock = bytes.length - BLOCK;
-    let fields = NEXT_FIELD;
-    let at = start;
-    while (at < bytes.length) {
-      for (; at <= lastBlock; at += BLOCK) {
-        const a = words.getInt32(at, true);
-        const b = words.getInt32(at + 4, true);
-        const c = words.getInt32(at + 8, true);
-        const d = words.getInt32(at + 12, true);
-        // A line end lies below a blank; what lies beyond ASCII would disturb the count.
-        const strange = a | (a - SPACES) | b | (b - SPACES) | c | (c - SPACES) | d | (d - SPACES);
-        if (strange & HIGHEST_BITS) break;
-        fields += BLOCK - bytesApart(a, b, c, d);
-      }
-      const end = Math.min(at + BLOCK, bytes.length);
-      for (; at < end; at++) {
-        const byte = bytes[at];
-        if (byte === COMMA) fields++;
-        else if (byte === LINE_FEED) return this.#endLine(fields, at);
-        else if (byte === RETURN && bytes[at + 1] !== LINE_FEED) return false;
-      }
-    }
-    return false;
-  }
-
-  #endLine(fields: number, at: number): true {
-    this.fieldCount = fields;
-    this.end = this.#bytes[at - 1] === RETURN ? at - 1 : at;
-    this.next = at + 1;
-    return true;
-  }
-}
-
-/** How many of sixteen bytes of ASCII are no comma: each sets the highest bit of its own byte, and these are added up. */
-function bytesApart(a: number, b: number, c: number, d: number): number {
-  const bits =
-    ((((a ^ COMMAS) + LOWER_BITS) >>> 7) & ONES) +
-    ((((b ^ COMMAS) + LOWER_BITS) >>> 7) & ONES) +
-    ((((c ^ COMMAS) + LOWER_BITS) >>> 7) & ONES) +
-    ((((d ^ COMMAS) + LOWER_BITS) >>> 7) & ONES);
-  return Math.imul(bits, ONES) >>> 24;
 }

@@ -2,7 +2,7 @@
  * Bytes to text. Strict UTF-8 first, else Windows-1252; a byte order mark of UTF-8 or UTF-16 decides by itself. Both
  * encodings agree with ASCII, so readers scan bytes and turn only names and comments into strings.
  */
-import { surveyText, type TextSurvey } from './survey-text.ts';
+import { type LineIndex, surveyText, type TextSurvey } from './survey-text.ts';
 
 export interface DecodedText {
   /** UTF-8 or Windows-1252 bytes without a byte order mark. */
@@ -10,8 +10,8 @@ export interface DecodedText {
   readonly windows1252: boolean;
   /** The file was UTF-16 and has been rewritten as UTF-8. */
   readonly utf16: boolean;
-  /** Some line ends are a carriage return alone. */
-  readonly loneReturns: boolean;
+  /** Where the lines end; null when some line ends are a carriage return alone. */
+  readonly lines: LineIndex | null;
 }
 
 export interface NotText {
@@ -34,7 +34,7 @@ export function decodeText(file: Uint8Array): DecodedText | NotText {
   const refusal = notText(found, bytes);
   if (refusal !== null) return refusal;
   const windows1252 = found.firstBeyondAscii >= 0 && !isUtf8(bytes, found);
-  return { bytes, windows1252, utf16: utf16 !== null, loneReturns: found.loneReturns };
+  return { bytes, windows1252, utf16: utf16 !== null, lines: found.loneReturns ? null : found.lines };
 }
 
 function archiveKind(file: Uint8Array): 'gzip' | 'zip' | null {

@@ -39,18 +39,19 @@ export class LineCursor {
     return this.#again ? this.start : this.#next;
   }
 
-  /**
-   * Moves over the next line for a reader that has found its end itself.
-   * @param end the byte after the last of the line, without its line end
-   * @param next first byte of the line after it
-   */
-  pass(end: number, next: number): void {
-    this.start = this.ahead;
-    if (!this.#again) this.line++;
+  /** How many lines stand before that one. */
+  get linesBefore(): number {
+    return this.#again ? this.line - 1 : this.line;
+  }
+
+  /** Moves over so many lines, for a reader that has read them by itself; the last of them is then the present one. */
+  pass(lines: number): void {
+    if (lines === 0 || this.text.lines === null) return;
+    const { ends } = this.text.lines;
+    this.line = this.linesBefore + lines;
     this.#again = false;
-    this.end = end;
-    this.closed = true;
-    this.#next = next;
+    this.start = (ends[this.line - 2] ?? -1) + 1;
+    this.#endAt(ends[this.line - 1] ?? -1);
   }
 
   /** Makes the next call of `next` return this line once more. */
@@ -64,15 +65,21 @@ export class LineCursor {
   }
 
   #step(): void {
-    const { bytes, loneReturns } = this.text;
+    const { bytes, lines } = this.text;
     this.start = this.#next;
-    const at = loneReturns ? lineEnd(bytes, this.start) : bytes.indexOf(LINE_FEED, this.start);
+    const at = lines === null ? lineEnd(bytes, this.start) : (lines.ends[this.line] ?? -1);
+    this.#endAt(at);
+    this.line++;
+  }
+
+  /** Ends the line at a line feed or a carriage return, or, at -1, with the text. */
+  #endAt(at: number): void {
+    const { bytes } = this.text;
     this.closed = at >= 0;
     this.end = this.closed ? at : bytes.length;
     this.#next = this.end + 1;
     if (bytes[this.end] === RETURN && bytes[this.#next] === LINE_FEED) this.#next++;
     else if (bytes[this.end - 1] === RETURN && this.end > this.start) this.end--;
-    this.line++;
   }
 
   #blank(): boolean {
