@@ -28,7 +28,7 @@ export function LibraryFilter({ view, counts, formats }: LibraryFilterProps) {
     <section aria-label="Filter of the library" className="mb-3 grid grid-cols-[minmax(0,1fr)] gap-2.5">
       <StatusFilter view={view} counts={counts} />
       <div className="grid grid-cols-2 items-end gap-x-3 gap-y-2 sm:flex sm:flex-wrap">
-        <TextFilter key={view.text ?? ''} text={view.text ?? ''} onText={(text) => change({ text })} />
+        <TextFilter text={view.text ?? ''} onText={(text) => change({ text })} />
         <Choice label="Format" value={view.format} onChange={(format) => change({ format })}>
           {formats.map((format) => (
             <option key={format} value={format}>
@@ -112,18 +112,33 @@ function StatusFilter({ view, counts }: Pick<LibraryFilterProps, 'view' | 'count
 const WAIT_MS = 400;
 const input = 'min-h-9 w-full rounded-md border border-[#918a78] bg-paper px-2.5 text-body';
 
-/** Searches a moment after the last letter, or at once on Enter. */
+/** Searches a moment after the last letter, or at once on Enter; what Back brings shows in it, and typing is never overwritten. */
 function TextFilter({ text, onText }: { text: string; onText: (text: string) => void }) {
   const id = useId();
   const [typed, setTyped] = useState(text);
+  const [known, setKnown] = useState(text);
+  const [sent, setSent] = useState(text);
+  if (text !== known) {
+    setKnown(text);
+    if (text !== sent) {
+      setTyped(text);
+      setSent(text);
+    }
+  }
+  const send = () => {
+    const wanted = typed.trim();
+    if (wanted === text) return;
+    setSent(wanted);
+    onText(wanted);
+  };
   useEffect(() => {
     if (typed.trim() === text) return;
-    const timer = setTimeout(() => onText(typed.trim()), WAIT_MS);
+    const timer = setTimeout(send, WAIT_MS);
     return () => clearTimeout(timer);
   });
   const submit = (event: FormEvent) => {
     event.preventDefault();
-    if (typed.trim() !== text) onText(typed.trim());
+    send();
   };
   return (
     <search className="col-span-2 sm:w-60">

@@ -81,6 +81,11 @@ export function UploadList({ teamId, items }: { teamId: string; items: readonly 
   if (uploads.length === 0) return null;
   const waiting = uploads.filter(isUnderWay).length;
   const sent = uploads.filter(({ state }) => state === 'sent').length;
+  const failed = uploads.filter(({ state }) => state === 'failed').length;
+  const ended = [
+    sent > 0 ? `${plural(sent, 'file')} sent` : '',
+    failed > 0 ? `${plural(failed, 'file')} not sent` : '',
+  ];
   return (
     <section aria-label="Uploads" className="border-y border-line bg-paper px-4 py-2.5">
       <div className="flex items-baseline justify-between gap-4">
@@ -88,7 +93,7 @@ export function UploadList({ teamId, items }: { teamId: string; items: readonly 
           <span role="status">
             {waiting > 0
               ? `Sending ${plural(waiting, 'file')}. You can go to other pages meanwhile.`
-              : `${plural(sent, 'file')} sent`}
+              : ended.filter((part) => part !== '').join(', ')}
           </span>
         </h2>
         <Button look="quiet" onClick={() => pageUploads.clearEnded()}>

@@ -77,10 +77,9 @@ export class UploadQueue {
 
   /** Puts files in line. Several, or an archive, become one batch; a single file goes by itself. */
   add(teamId: string, files: readonly File[], onChange: () => void): void {
-    const [first] = files;
-    if (!first) return;
-    const name = files.length === 1 ? first.name : `${first.name} and ${plural(files.length - 1, 'other file')}`;
-    const drop: Drop = { teamId, name, files: files.length, batch: null, onChange };
+    const full = files.filter(({ size }) => size > 0);
+    const name = `${full[0]?.name}${full.length > 1 ? ` and ${plural(full.length - 1, 'other file')}` : ''}`;
+    const drop: Drop = { teamId, name, files: full.length, batch: null, onChange };
     const added = files.map((file): Upload => {
       const id = this.#nextId++;
       const problem = file.size === 0 ? EMPTY : null;

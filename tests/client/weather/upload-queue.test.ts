@@ -133,6 +133,15 @@ describe('the queue of uploads', () => {
     expect(sending[0]?.batchId).toBeNull();
   });
 
+  it('counts an empty file as none: the one beside it goes by itself', async () => {
+    const { queue, sending, begun } = heldQueue();
+    queue.add('team', [named('a'), named('empty', '')], () => {});
+    await settled();
+    expect(begun).toEqual([]);
+    expect(states(queue)).toEqual(['a sending', 'empty failed']);
+    expect(sending[0]?.batchId).toBeNull();
+  });
+
   it('tells a zip by its first bytes, whatever it is called, and makes a batch of it', async () => {
     const { queue, sending, archives } = heldQueue();
     queue.add('team', [named('years.epw', 'PK\u0003\u0004 and the rest')], () => {});
