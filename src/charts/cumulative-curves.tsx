@@ -26,7 +26,7 @@ const INNER = { width: BOX.width - BOX.left - BOX.right, height: BOX.height - BO
 
 /** Hours at or above a depression: depression across, hours upward, one line for each year. */
 export function CumulativeCurves({ curves, hoursOfYear, readAtK, label }: CumulativeCurvesProps) {
-  const highestK = Math.max(4, ...curves.map(({ points }) => lastReachedK(points)));
+  const highestK = Math.max(4, ...curves.map(({ points }) => endOf(points)));
   const endK = 2 * Math.ceil(highestK / 2);
   const x = (kelvin: number) => BOX.left + (INNER.width * kelvin) / endK;
   const y = (hours: number) => BOX.top + INNER.height * (1 - hours / hoursOfYear);
@@ -116,6 +116,7 @@ function pathOf(points: readonly CurvePoint[], x: AxesProps['x'], y: AxesProps['
     .join('');
 }
 
-function lastReachedK(points: readonly CurvePoint[]): number {
-  return points.reduce((last, { atLeastK, hours }) => (hours > 0 ? Math.max(last, atLeastK) : last), 0);
+/** The first depression that no hour reaches, or the last that is counted. */
+function endOf(points: readonly CurvePoint[]): number {
+  return (points.find(({ hours }) => hours === 0) ?? points.at(-1))?.atLeastK ?? 0;
 }

@@ -1,12 +1,14 @@
 import type { HumidityCaps } from '../engine/brief/brief.ts';
 import { saturationHumidityRatio } from '../engine/psychrometrics/moist-air.ts';
 import type { AirPoint, ProcessLine } from './process-lines.ts';
-import { endOfHumidity, humidityPath, linePath } from './psychrometric-chart.tsx';
+import { humidityAtHeight, humidityPath, linePath } from './psychrometric-chart.tsx';
 import type { ChartScale, PsychrometricRange } from './psychrometric-scale.ts';
 
 const INK = '#22302f';
 const MADDER = '#a8442f';
 const PAPER = '#fbf9f3';
+/** Share of the chart's height at which a cap is named, under the names of the curves. */
+const CAP_WORD_HEIGHT = 0.85;
 /** Stages differ by their strokes; the table beside the chart names them by number. */
 const DASHES = ['1 3', '', '7 3', '3 2', '10 3 2 3'] as const;
 
@@ -118,7 +120,11 @@ function Caps({ scale, range, pressurePa, caps }: CapsProps) {
         percent === undefined ? null : (
           <g key={word}>
             <path d={humidityPath({ percent, pressurePa, range }, scale)} fill="none" />
-            <CapWord at={endOfHumidity({ percent, pressurePa, range })} scale={scale} word={`${word} ${percent} %`} />
+            <CapWord
+              at={humidityAtHeight({ percent, pressurePa, range }, CAP_WORD_HEIGHT)}
+              scale={scale}
+              word={`${word} ${percent} %`}
+            />
           </g>
         ),
       )}

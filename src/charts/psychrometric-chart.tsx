@@ -99,7 +99,7 @@ function Axes({ range, scale, pressurePa }: { range: PsychrometricRange; scale: 
         </text>
       ))}
       {[20, 40, 60, 80].map((percent) => {
-        const at = endOfHumidity({ percent, pressurePa, range });
+        const at = humidityAtHeight({ percent, pressurePa, range }, 0.97);
         return (
           <text
             key={percent}
@@ -161,12 +161,15 @@ function wetBulbPath({ wetBulbC, pressurePa, range }: CurveInput & { wetBulbC: n
   return linePath(points, scale);
 }
 
-/** Where the curve of a relative humidity leaves the chart, a little before its edge. */
-export function endOfHumidity({ percent, pressurePa, range }: CurveInput & { percent: number }): AirPoint {
+/** Where the curve of a relative humidity comes to a share of the chart's height, or to its right edge before that. */
+export function humidityAtHeight(
+  { percent, pressurePa, range }: CurveInput & { percent: number },
+  share: number,
+): AirPoint {
   let at: AirPoint = { tempC: range.minC, humidityRatio: 0 };
   for (let tempC = range.minC; tempC <= range.maxC - 0.5; tempC += 0.5) {
     const humidityRatio = ratioAtHumidity(tempC, percent, pressurePa);
-    if (humidityRatio > range.maxRatio * 0.97) break;
+    if (humidityRatio > range.maxRatio * share) break;
     at = { tempC, humidityRatio };
   }
   return at;

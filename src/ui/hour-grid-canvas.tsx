@@ -1,4 +1,4 @@
-import { type KeyboardEvent, type RefObject, useEffect, useMemo, useRef, useState } from 'react';
+import { type KeyboardEvent, type RefObject, useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react';
 import { monthNames, monthStarts } from '../charts/calendar.ts';
 import type { YearCloth } from '../charts/year-cloth.ts';
 
@@ -119,7 +119,8 @@ function Cloth({ draw, widthPx, heightPx, ratio }: ClothProps) {
           }),
     [draw, widthPx, heightPx, ratio],
   );
-  useEffect(() => {
+  // Before the screen is painted: setting its size empties a canvas.
+  useLayoutEffect(() => {
     const context = canvas.current?.getContext('2d');
     if (!context || !picture) return;
     context.putImageData(new ImageData(picture.pixels, picture.widthPx, picture.heightPx), 0, 0);

@@ -110,7 +110,7 @@ function Choices({ station, text, chosen, onChoose }: ChoicesProps) {
           <span>
             {other.name}
             <span className="text-fine text-soft">
-              , {number(km, km < 10 ? 1 : 0)}&nbsp;km away, {metres(other.elevationM - station.elevationM)} in height,{' '}
+              , {number(km, km < 10 ? 1 : 0)}&nbsp;km away, {heightWords(other.elevationM - station.elevationM)},{' '}
               {plural(other.files, 'file')}
             </span>
           </span>
@@ -123,4 +123,8 @@ function Choices({ station, text, chosen, onChoose }: ChoicesProps) {
       ) : null}
     </fieldset>
   );
+}
+
+function heightWords(differenceM: number): string {
+  return `${metres(Math.abs(differenceM))} ${differenceM < 0 ? 'lower' : 'higher'}`;
 }

@@ -66,7 +66,7 @@ function Cloth({ year, slot, onChoose }: ClothProps) {
       </h2>
       <p className="mt-0.5 mb-2 text-soft">
         Each column is a day, each row an hour, midnight at the top: the darker, the more evaporation can do. {sentence}{' '}
-        Press an hour to see it on the psychrometric chart.
+        <span className="no-print">Press an hour to see it on the psychrometric chart.</span>
       </p>
       <HourGridCanvas
         days={depressionK.length / HOURS_PER_DAY}

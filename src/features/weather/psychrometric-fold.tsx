@@ -33,7 +33,7 @@ export function PsychrometricFold(props: PsychrometricFoldProps) {
       ref={fold}
       open={isOpen}
       onToggle={(event) => setIsOpen(event.currentTarget.open)}
-      className="border-y border-line py-3"
+      className="border-y border-line py-3 print:not-open:hidden"
     >
       <summary className="cursor-pointer">
         <h2 className="inline text-name">The year on the psychrometric chart</h2>

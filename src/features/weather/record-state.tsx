@@ -43,7 +43,7 @@ export function RecordState({ record }: { record: WeatherFileRecord }) {
     <Notice
       tone={file.failure === null ? tones[file.status] : 'wrong'}
       actions={
-        <>
+        <div className="no-print flex flex-wrap gap-2">
           {mayChange && file.failure !== null ? <RetryButton what="file" id={file.id} name={file.name} /> : null}
           {mayChange && file.status === 'review' ? <AcceptButton file={file} /> : null}
           {file.status === 'accepted' && file.stationId && programme ? (
@@ -60,7 +60,7 @@ export function RecordState({ record }: { record: WeatherFileRecord }) {
             </Link>
           ) : null}
           {mayChange && isWithdrawable(file) ? <WithdrawButton file={file} /> : null}
-        </>
+        </div>
       }
     >
       <p className="flex items-center gap-2 font-semibold" role="status">

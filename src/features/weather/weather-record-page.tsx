@@ -34,10 +34,12 @@ export function WeatherRecordPage() {
   const { fileId = '' } = useParams();
   const record = useQuery(recordQuery(teamId, fileId));
   return (
-    <div className="grid flex-1 xl:grid-cols-[19rem_minmax(0,1fr)]">
-      <LibraryMargin teamId={teamId} fileId={fileId} />
+    <div className="grid flex-1 xl:grid-cols-[19rem_minmax(0,1fr)] print:block">
+      <div className="no-print">
+        <LibraryMargin teamId={teamId} fileId={fileId} />
+      </div>
       <article className="min-w-0 border-line bg-paper px-8 pt-6 pb-16 max-sm:px-4 xl:border-l">
-        <Link to={paths.weather.to(teamId)} className="mb-3 inline-block text-fine xl:hidden">
+        <Link to={paths.weather.to(teamId)} className="no-print mb-3 inline-block text-fine xl:hidden">
           All weather files
         </Link>
         {record.isPending ? <Loading what="the file's record" /> : null}
