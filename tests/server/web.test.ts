@@ -149,7 +149,14 @@ describe('the server', () => {
 
 describe('the environment', () => {
   test('has sensible values where nothing is set', () => {
-    const expected = { home: null, host: '127.0.0.1', port: 3000, seed: 'demo', trustProxy: 'loopback' };
+    const expected = {
+      home: null,
+      host: '127.0.0.1',
+      port: 3000,
+      seed: 'demo',
+      trustProxy: 'loopback',
+      objectStore: null,
+    };
     expect(readConfig({})).toEqual(expected);
     expect(readConfig({ PORT: '', HOST: ' ', SEED: '' })).toEqual(expected);
   });

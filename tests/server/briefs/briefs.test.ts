@@ -29,7 +29,8 @@ beforeAll(async () => {
     epwText({
       location: 'Dry Reach,-,Nowhere,Invented,-,24.70,46.70,3.0,610.0',
       hour: ({ hour, slot }) => ({
-        dryBulbC: Math.round(10 * (26 + 9 * Math.cos((2 * Math.PI * (hour - 15)) / 24))) / 10,
+        // From day to day it differs, as weather does.
+        dryBulbC: Math.round(10 * (26 + 9 * Math.cos((2 * Math.PI * (hour - 15)) / 24) + 2 * Math.sin(slot / 40))) / 10,
         dewPointC: Math.round(10 * (6 + 4 * Math.sin(slot / 500))) / 10,
         pressurePa: 94_200,
       }),

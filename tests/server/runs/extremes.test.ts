@@ -1,17 +1,21 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import type { Place } from '../../../src/contract/runs.ts';
 import type { WeatherFileRecord } from '../../../src/contract/weather.ts';
+import { ruleNames } from '../../../src/engine/weather-files/quality/quality-options.ts';
 import { type EpwOptions, epwText } from '../../support/epw-text.ts';
-import { openRoad, type Road } from '../../support/open-road.ts';
+import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { deskOf, type TeamDesk } from '../../support/team-desk.ts';
 
 let road: Road;
+let team: RoadTeam;
+let engineer: Member;
 let desk: TeamDesk;
 
 beforeAll(async () => {
   road = await openRoad();
-  const team = await road.makeTeam('Northern offices');
-  desk = deskOf(team, await team.join('engineer'));
+  team = await road.makeTeam('Northern offices');
+  engineer = await team.join('engineer');
+  desk = deskOf(team, engineer);
   await road.startWorker();
 });
 afterEach(() => {
@@ -19,8 +23,14 @@ afterEach(() => {
 });
 afterAll(() => road.close());
 
+/** The same weather every day is no weather: the tests of hours are told so, as an engineer would. */
+const rulesOff = ruleNames.map((rule) => ({ rule, reason: 'Weather made up for a test.' }));
+
 async function placeOf(options: EpwOptions): Promise<{ record: WeatherFileRecord; place: Place }> {
   const { file } = await desk.upload('made up.epw', epwText(options));
+  await desk.readToTheEnd(file.id);
+  const answers = `/api/teams/${team.teamId}/weather-files/${file.id}/answers`;
+  await engineer.agent.put(answers).send({ rulesOff }).expect(200);
   const record = await desk.readToTheEnd(file.id);
   expect(record.file.status, JSON.stringify(record.findings)).toBe('review');
   const accepted = await desk.accept(file.id);
