@@ -27,7 +27,7 @@ export function depressionHistogram(depression: Int32Array): Uint16Array {
   for (let slot = 0; slot < depression.length; slot++) {
     const value = depression[slot] ?? -1;
     if (value < 0) continue;
-    const bin = Math.min(DEPRESSION_BINS - 1, Math.floor(value / HUNDREDTHS_PER_BIN));
+    const bin = Math.min(DEPRESSION_BINS - 1, (value / HUNDREDTHS_PER_BIN) | 0);
     const at = cellOf(months, slot) * DEPRESSION_BINS + bin;
     histogram[at] = (histogram[at] ?? 0) + 1;
   }
@@ -59,9 +59,8 @@ export interface HoursAtLeast {
 
 /** Hours with a depression of at least 1, 2, .. 25 K. */
 export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
-  const scale = cellScale(depression);
   const hours = countAtLeast(depression);
-  const scaled = scale === null ? null : scale.every((weight) => weight === 1) ? hours : addAtLeast(depression, scale);
+  const scaled = depression.includes(-1) ? scaledAtLeast(depression) : hours;
   return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => ({
     atLeastK: index + 1,
     hours: hours[index + 1] ?? 0,
@@ -71,7 +70,7 @@ export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
 
 /** Whole kelvin reached, at most the last that is asked for; -1 where not known. */
 function reachedK(hundredths: number): number {
-  return Math.min(HIGHEST_STEP_K, Math.floor(hundredths / HUNDREDTHS_PER_BIN));
+  return hundredths < 0 ? -1 : Math.min(HIGHEST_STEP_K, (hundredths / HUNDREDTHS_PER_BIN) | 0);
 }
 
 function countAtLeast(depression: Int32Array): Int32Array {
@@ -84,8 +83,10 @@ function countAtLeast(depression: Int32Array): Int32Array {
   return hours;
 }
 
-/** The same with each hour counted as what it stands for. */
-function addAtLeast(depression: Int32Array, scale: Float64Array): Float64Array {
+/** The same with each hour counted as what it stands for; null when nothing can stand for some. */
+function scaledAtLeast(depression: Int32Array): Float64Array | null {
+  const scale = cellScale(depression);
+  if (scale === null) return null;
   const months = monthOfEachSlot(depression.length);
   const scaled = new Float64Array(HIGHEST_STEP_K + 1);
   for (let slot = 0; slot < depression.length; slot++) {

@@ -16,6 +16,8 @@ export function gapCalendar(flags: Uint8Array): GapCalendar {
   const days = Math.ceil(flags.length / HOURS_PER_DAY);
   const counts = { missing: new Uint8Array(days), repaired: new Uint8Array(days), estimated: new Uint8Array(days) };
   for (let slot = 0; slot < flags.length; slot++) {
+    // As in nearly every hour, all three are measured, whose code is 0.
+    if (flags[slot] === 0) continue;
     const kind = kindOf(flags[slot] ?? 0);
     if (kind === null) continue;
     const day = Math.floor(slot / HOURS_PER_DAY);

@@ -24,18 +24,31 @@ export interface HourCounts {
 /** Counts every slot once: missing before repaired before estimated before measured. */
 export function countHours(year: PackedYear): HourCounts {
   const counts = { hours: year.flags.length, measured: 0, estimated: 0, repaired: 0, missing: 0, assumedPressure: 0 };
+  const complete = isComplete(year);
   for (let slot = 0; slot < year.flags.length; slot++) {
-    if (!isKnown(year, slot)) {
+    if (!complete && !isKnown(year, slot)) {
       counts.missing++;
       continue;
     }
     const flags = year.flags[slot] ?? 0;
+    // As in nearly every hour, all three are measured, whose code is 0.
+    if (flags === 0) {
+      counts.measured++;
+      continue;
+    }
     if (pressureProvenance(flags) === 'estimated') counts.assumedPressure++;
     if (hasRepair(flags)) counts.repaired++;
     else if (dryBulbProvenance(flags) === 'estimated' || humidityProvenance(flags) === 'estimated') counts.estimated++;
     else counts.measured++;
   }
   return counts;
+}
+
+/** Whether every hour is known. The search of the language looks at many values together. */
+function isComplete({ dryBulb, humidityRatio, pressure }: PackedYear): boolean {
+  return (
+    !dryBulb.includes(MISSING_INT16) && !humidityRatio.includes(MISSING_UINT16) && !pressure.includes(MISSING_UINT16)
+  );
 }
 
 function isKnown(year: PackedYear, slot: number): boolean {
@@ -48,6 +61,7 @@ function isKnown(year: PackedYear, slot: number): boolean {
 
 /** Share of hours with dry bulb, humidity and pressure, %, January first. */
 export function monthCompleteness(year: PackedYear): readonly number[] {
+  if (isComplete(year)) return new Array<number>(MONTHS).fill(100);
   const starts = monthStartSlots(year.flags.length);
   return Array.from({ length: MONTHS }, (_none, index) => {
     const start = starts[index] ?? 0;

@@ -59,8 +59,19 @@ export class PlainRowReader {
    */
   readInto(rows: RowCollector, from: { start: number; line: number; most: number }, flags: SourceFlags): number {
     const { commas, ends } = this.#index;
-    const { days, dewPointC, dryBulbC, estimated, hours, lines, minutes, months, pressurePa, relativeHumidityPct, years } =
-      rows.columns;
+    const {
+      days,
+      dewPointC,
+      dryBulbC,
+      estimated,
+      hours,
+      lines,
+      minutes,
+      months,
+      pressurePa,
+      relativeHumidityPct,
+      years,
+    } = rows.columns;
     const last = Math.min(lines.length, rows.count + from.most);
     let { line, start } = from;
     let row = rows.count;

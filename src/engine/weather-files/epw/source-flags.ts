@@ -17,7 +17,10 @@ export class SourceFlags {
     const dryLetter = this.#byteBefore(end, start);
     const dewLetter = this.#byteBefore(end, start + 2);
     const firstFour =
-      (dryLetter << 24) | (this.#byteBefore(end, start + 1) << 16) | (dewLetter << 8) | this.#byteBefore(end, start + 3);
+      (dryLetter << 24) |
+      (this.#byteBefore(end, start + 1) << 16) |
+      (dewLetter << 8) |
+      this.#byteBefore(end, start + 3);
     if (!this.#any) {
       this.#any = true;
       this.#first = firstFour;
