@@ -31,7 +31,7 @@ beforeAll(async () => {
       hour: ({ hour, slot }) => ({
         // From day to day it differs, as weather does.
         dryBulbC: Math.round(10 * (26 + 9 * Math.cos((2 * Math.PI * (hour - 15)) / 24) + 2 * Math.sin(slot / 40))) / 10,
-        dewPointC: Math.round(10 * (6 + 4 * Math.sin(slot / 500))) / 10,
+        dewPointC: Math.round(10 * (6 + 4 * Math.sin(slot / 500) + Math.sin(slot / 7))) / 10,
         pressurePa: 94_200,
       }),
     }),
