@@ -56,7 +56,7 @@ export function HourGridCanvas({ days, heightPx, label, draw, read, chosen = nul
   return (
     <div className="min-w-0">
       <div className="overflow-x-auto pb-0.5">
-        <div className="grid min-w-[46rem] grid-cols-[1.5rem_minmax(0,1fr)]">
+        <div className="grid min-w-[46rem] print:min-w-0 grid-cols-[1.5rem_minmax(0,1fr)]">
           <HourAxis />
           <div ref={frame} className="relative">
             <div

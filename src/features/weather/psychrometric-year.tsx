@@ -53,7 +53,7 @@ function ChartOfYear({ file, year, pressurePa, slot, onChoose }: ChartOfYearProp
         <HourChoice slot={slot} slots={year.dryBulbC.length} onChoose={onChoose} />
       </div>
       <ScrollInside label="Psychrometric chart, scrolls sideways">
-        <div className="min-w-[40rem]">
+        <div className="min-w-[40rem] print:min-w-0">
           <PsychrometricChart
             pressurePa={pressurePa}
             range={range}
