@@ -2,6 +2,7 @@ import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
 import { getMap, getStationPlace } from '../contract/runs.ts';
+import { getStation, listStations } from '../contract/stations.ts';
 import { getWeatherFile, listWeatherFiles, type TeamEvent, watchTeam } from '../contract/weather.ts';
 import { getWeatherBatch, listWeatherBatches } from '../contract/weather-batches.ts';
 import { type StreamState, subscribe } from '../lib/api-client.ts';
@@ -11,7 +12,7 @@ import { sessionQuery } from '../lib/session-query.ts';
 const GATHER_MS = 300;
 
 const affected = {
-  'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch],
+  'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch, listStations, getStation],
   'weather-batch': [listWeatherBatches, getWeatherBatch, listWeatherFiles],
   run: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
   brief: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],

@@ -97,13 +97,18 @@ export async function answerTable(batch: Locator, look: Look): Promise<void> {
     .waitFor();
 }
 
-/** A table of the same shape is read without a question. */
+/** A table of the same shape is read without a question; the library is narrowed to both while their name is typed. */
 export async function bringSameShape({ page, soon }: Look): Promise<void> {
   await uploadText(page, { name: 'mast-2024.csv', text: plainTable(2025) });
-  await page
-    .getByRole('region', { name: 'Uploads' })
-    .getByText(/^In review/)
-    .waitFor(soon);
+  const uploads = page.getByRole('region', { name: 'Uploads' });
+  await uploads.getByText(/^In review/).waitFor(soon);
+  const search = page.getByRole('searchbox', { name: 'File, station or WMO number' });
+  await search.pressSequentially('mast-20');
+  await page.getByText(/^2 of \d+ files$/).waitFor();
+  expect(new URL(page.url()).searchParams.get('text')).toBe('mast-20');
+  expect(await search.evaluate((input) => input === document.activeElement)).toBe(true);
+  await search.fill('');
+  await page.getByText(/^\d+ files, newest first$/).waitFor();
 }
 
 /** Accepts at once everything of the batch that waits. */

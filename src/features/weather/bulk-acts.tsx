@@ -27,6 +27,10 @@ interface BulkActsProps {
   readonly onChosen: (chosen: ChosenFiles) => void;
 }
 
+/** Acts that ask something first: why, or which file is the better one. */
+const askedActs = ['refuse', 'withdraw', 'supersede'] as const;
+type AskedAct = (typeof askedActs)[number];
+
 const done: Readonly<Record<BulkAct['act'], string>> = {
   accept: 'accepted',
   refuse: 'refused',
@@ -38,7 +42,7 @@ const done: Readonly<Record<BulkAct['act'], string>> = {
 export function BulkActs({ chosen, items, onChosen }: BulkActsProps) {
   const { teamId } = useTeam();
   const changed = useWeatherChanged();
-  const [asking, setAsking] = useState<'refuse' | 'withdraw' | 'supersede' | null>(null);
+  const [asking, setAsking] = useState<AskedAct | null>(null);
   const fileIds = [...chosen.keys()];
   const act = useMutation({
     mutationFn: (body: BulkAct) =>
@@ -51,37 +55,17 @@ export function BulkActs({ chosen, items, onChosen }: BulkActsProps) {
   });
   const files = [...chosen.values()].map((file) => items.find(({ id }) => id === file.id) ?? file);
   const elsewhere = files.filter(({ id }) => !items.some((item) => item.id === id)).length;
-  const isTooMany = files.length > MAX_FILES_PER_ACT;
-  const none = files.length === 0;
   return (
-    <div className={none ? '' : 'sticky top-0 z-10 -mx-2 mb-2 border-y border-line bg-paper px-2 py-2'}>
-      {none ? null : (
-        <div className="flex flex-wrap items-center gap-x-3 gap-y-1.5">
-          <p className="mr-auto font-medium">
-            {plural(files.length, 'file')} chosen{elsewhere > 0 ? `, ${elsewhere} not on this page` : ''}
-            {isTooMany ? `. At most ${MAX_FILES_PER_ACT} at once.` : ''}
-          </p>
-          <Button
-            look="primary"
-            busy={act.isPending}
-            disabled={isTooMany}
-            onClick={() => act.mutate({ act: 'accept' })}
-          >
-            Accept
-          </Button>
-          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('refuse')}>
-            Refuse
-          </Button>
-          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('withdraw')}>
-            Withdraw
-          </Button>
-          <Button disabled={act.isPending || isTooMany} onClick={() => setAsking('supersede')}>
-            Supersede
-          </Button>
-          <Button look="quiet" onClick={() => onChosen(new Map())}>
-            Choose none
-          </Button>
-        </div>
+    <div className={files.length === 0 ? '' : 'sticky top-0 z-10 -mx-2 mb-2 border-y border-line bg-paper px-2 py-2'}>
+      {files.length === 0 ? null : (
+        <ChosenBar
+          count={files.length}
+          elsewhere={elsewhere}
+          isBusy={act.isPending}
+          onAccept={() => act.mutate({ act: 'accept' })}
+          onAsk={setAsking}
+          onNone={() => onChosen(new Map())}
+        />
       )}
       <div className={act.isIdle || act.isPending ? '' : 'mt-2 mb-3'}>
         {act.isError ? (
@@ -110,6 +94,39 @@ export function BulkActs({ chosen, items, onChosen }: BulkActsProps) {
           onBetter={(byFileId) => act.mutate({ act: 'supersede', byFileId })}
         />
       ) : null}
+    </div>
+  );
+}
+
+interface ChosenBarProps {
+  readonly count: number;
+  /** Chosen files that the page in view does not show. */
+  readonly elsewhere: number;
+  readonly isBusy: boolean;
+  readonly onAccept: () => void;
+  readonly onAsk: (act: AskedAct) => void;
+  readonly onNone: () => void;
+}
+
+function ChosenBar({ count, elsewhere, isBusy, onAccept, onAsk, onNone }: ChosenBarProps) {
+  const isTooMany = count > MAX_FILES_PER_ACT;
+  return (
+    <div className="flex flex-wrap items-center gap-x-3 gap-y-1.5">
+      <p className="mr-auto font-medium">
+        {plural(count, 'file')} chosen{elsewhere > 0 ? `, ${elsewhere} not on this page` : ''}
+        {isTooMany ? `. At most ${MAX_FILES_PER_ACT} at once.` : ''}
+      </p>
+      <Button look="primary" busy={isBusy} disabled={isTooMany} onClick={onAccept}>
+        Accept
+      </Button>
+      {askedActs.map((act) => (
+        <Button key={act} disabled={isBusy || isTooMany} onClick={() => onAsk(act)}>
+          {`${act.charAt(0).toUpperCase()}${act.slice(1)}`}
+        </Button>
+      ))}
+      <Button look="quiet" onClick={onNone}>
+        Choose none
+      </Button>
     </div>
   );
 }

@@ -19,10 +19,7 @@ type Change = Parameters<typeof changedView>[1];
 
 /** What the library is narrowed to. Each choice is a step that Back takes back. */
 export function LibraryFilter({ view, counts, formats }: LibraryFilterProps) {
-  const { teamId } = useTeam();
   const navigate = useNavigate();
-  const batches = useQuery(batchesQuery(teamId)).data?.items ?? [];
-  const stations = useQuery(stationChoiceQuery(teamId)).data?.items ?? [];
   const change = (next: Change) => navigate(librarySearch(changedView(view, next)), { preventScrollReset: true });
   return (
     <section aria-label="Filter of the library" className="mb-3 grid grid-cols-[minmax(0,1fr)] gap-2.5">
@@ -41,28 +38,8 @@ export function LibraryFilter({ view, counts, formats }: LibraryFilterProps) {
           <option value="actual">Actual</option>
           <option value="derived">Derived</option>
         </Choice>
-        {batches.length > 0 || view.batchId ? (
-          <Choice label="Batch" value={view.batchId} onChange={(batchId) => change({ batchId })}>
-            {batches.map(({ id, name, madeAt }) => (
-              <option key={id} value={id}>
-                {name}, {moment(madeAt)}
-              </option>
-            ))}
-            {view.batchId && !batches.some(({ id }) => id === view.batchId) ? (
-              <option value={view.batchId}>An earlier batch</option>
-            ) : null}
-          </Choice>
-        ) : null}
-        <Choice label="Station" value={view.stationId} onChange={(stationId) => change({ stationId })}>
-          {stations.map(({ id, name }) => (
-            <option key={id} value={id}>
-              {name}
-            </option>
-          ))}
-          {view.stationId && !stations.some(({ id }) => id === view.stationId) ? (
-            <option value={view.stationId}>The station that was chosen</option>
-          ) : null}
-        </Choice>
+        <BatchChoice value={view.batchId} onChange={(batchId) => change({ batchId })} />
+        <StationChoice value={view.stationId} onChange={(stationId) => change({ stationId })} />
         {isFiltered(view) ? (
           <Link to={librarySearch(withoutFilter(view))} className="py-2 text-fine">
             Show every file
@@ -183,5 +160,40 @@ function Choice({ label, value, onChange, children }: ChoiceProps) {
         {children}
       </select>
     </div>
+  );
+}
+
+type IdChoiceProps = Pick<ChoiceProps, 'value' | 'onChange'>;
+
+function BatchChoice({ value, onChange }: IdChoiceProps) {
+  const { teamId } = useTeam();
+  const batches = useQuery(batchesQuery(teamId)).data?.items ?? [];
+  if (batches.length === 0 && value === undefined) return null;
+  return (
+    <Choice label="Batch" value={value} onChange={onChange}>
+      {batches.map(({ id, name, madeAt }) => (
+        <option key={id} value={id}>
+          {name}, {moment(madeAt)}
+        </option>
+      ))}
+      {value && !batches.some(({ id }) => id === value) ? <option value={value}>An earlier batch</option> : null}
+    </Choice>
+  );
+}
+
+function StationChoice({ value, onChange }: IdChoiceProps) {
+  const { teamId } = useTeam();
+  const stations = useQuery(stationChoiceQuery(teamId)).data?.items ?? [];
+  return (
+    <Choice label="Station" value={value} onChange={onChange}>
+      {stations.map(({ id, name }) => (
+        <option key={id} value={id}>
+          {name}
+        </option>
+      ))}
+      {value && !stations.some(({ id }) => id === value) ? (
+        <option value={value}>The station that was chosen</option>
+      ) : null}
+    </Choice>
   );
 }
