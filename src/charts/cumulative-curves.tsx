@@ -102,7 +102,7 @@ function Axes({ endK, hoursOfYear, x, y }: AxesProps) {
       <text x={BOX.width - BOX.right} y={BOX.height - 4} textAnchor="end">
         Wet-bulb depression, K
       </text>
-      <text x={BOX.left + 6} y={BOX.top + 12}>
+      <text x={BOX.width - BOX.right} y={BOX.top + 14} textAnchor="end">
         Hours at or above it
       </text>
     </g>

@@ -90,7 +90,7 @@ export function HourGridCanvas({ days, heightPx, label, draw, read, chosen = nul
           </div>
         </div>
       </div>
-      <p aria-hidden="true" className="min-h-5 pl-6 text-fine text-soft">
+      <p aria-hidden="true" className="no-print min-h-5 pl-6 text-fine text-soft">
         {said ?? 'Point at an hour, or use the arrow keys, to read it.'}
       </p>
     </div>

@@ -18,7 +18,7 @@ export function DepressionTable({ facts }: { facts: YearFacts }) {
         Depression by month and hour of day
       </h2>
       <ScrollInside label="Mean depression, scrolls sideways">
-        <table className="w-full min-w-[58rem] table-fixed print:min-w-0 border-collapse text-center text-fine">
+        <table className="w-full min-w-[58rem] table-fixed print:min-w-0 print:text-[0.5625rem] border-collapse text-center text-fine">
           <caption className="sr-only">
             Mean wet-bulb depression in kelvin by month and hour ending in local standard time, with the share of hours
             present in each month

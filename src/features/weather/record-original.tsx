@@ -43,7 +43,9 @@ export function RecordOriginal({ record }: { record: WeatherFileRecord }) {
         <dt>Fingerprint, SHA-256</dt>
         <dd className="flex flex-wrap items-center gap-x-2">
           <span className="font-mono text-fine break-all">{file.fingerprint}</span>
-          <CopyButton text={file.fingerprint} what="the fingerprint" />
+          <span className="no-print">
+            <CopyButton text={file.fingerprint} what="the fingerprint" />
+          </span>
         </dd>
         <dt>{isDerived ? 'Derived' : 'Uploaded'}</dt>
         <dd>
