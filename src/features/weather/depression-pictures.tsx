@@ -111,7 +111,7 @@ function Curve({ year }: { year: RecordYear }) {
         Hours at or above a depression
       </h2>
       <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-4 lg:grid-cols-[minmax(0,1fr)_minmax(0,17rem)]">
-        <div className="max-w-[40rem]">
+        <div className="max-w-[32rem]">
           <CumulativeCurves
             curves={[{ name: 'This year', points: curve }]}
             hoursOfYear={year.depressionK.length}
