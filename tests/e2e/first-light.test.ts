@@ -18,6 +18,7 @@ import {
   resume,
   seeRefused,
 } from './mixed-archive-road.ts';
+import { makeAndRevokeToken, putStationRight, readRecord } from './record-road.ts';
 import { mapIsDrawn, scoreShown, signIn, signOut, station, stationList, uploadText, watchSteps } from './steps.ts';
 
 const DESK: Viewport = { width: 1440, height: 900 };
@@ -149,6 +150,7 @@ test('the whole road: an engineer uploads a file, sees each step, accepts it, de
   expect(total).toBe(8760);
   expect(sources.map(figure).reduce((sum, hours) => sum + hours, 0)).toBe(total);
   expect(figure(sources[3] ?? '')).toBeGreaterThan(5);
+  await readRecord(page);
   await expectAccessible('weather record in review');
 
   await page.getByRole('button', { name: 'Accept' }).click();
@@ -339,6 +341,22 @@ test('sign-in, weather list, weather record and map have no accessibility fault 
   await page.getByRole('link', { name: 'Lantern Bay' }).click();
   await page.getByRole('heading', { name: 'Doubts: used as they stand, or left out' }).waitFor();
   await expectAccessible('weather record');
+});
+
+test('a lead puts a station right with reasons, and makes a token that is shown once and revokes it', async () => {
+  await enterAs('lead');
+  await openWeather();
+  await page.getByRole('link', { name: 'Stations' }).click();
+  await page.getByLabel('Name or WMO number').fill('gannet');
+  await page.getByRole('button', { name: 'Search' }).click();
+  await page.getByText('1 station with "gannet", by name').waitFor();
+  await page.getByRole('link', { name: 'Gannet Point' }).click();
+  await page.getByRole('heading', { name: 'Gannet Point', level: 1 }).waitFor();
+  await putStationRight(page);
+  await expectAccessible('station');
+  await page.getByRole('link', { name: 'Team', exact: true }).click();
+  await makeAndRevokeToken(page);
+  await expectAccessible('API tokens');
 });
 
 test('the map asks nothing of any other origin, and tiles, fonts and code come from this one under the policy of the page', async () => {
