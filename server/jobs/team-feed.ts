@@ -17,7 +17,17 @@ const CHANNEL = 'team_events';
 
 /** Tells the team when, and only if, the caller's transaction commits. */
 export async function notifyTeam(db: Knex, notice: { teamId: string; event: TeamEvent }): Promise<void> {
-  await db.raw('select pg_notify(?, ?)', [CHANNEL, JSON.stringify({ ...notice, teamId: notice.teamId.toLowerCase() })]);
+  await notifyTeamOfAll(db, { teamId: notice.teamId, events: [notice.event] });
+}
+
+/** The same with several events, in their order. */
+export async function notifyTeamOfAll(
+  db: Knex,
+  notice: { teamId: string; events: readonly TeamEvent[] },
+): Promise<void> {
+  const teamId = notice.teamId.toLowerCase();
+  const payloads = notice.events.map((event) => JSON.stringify({ teamId, event }));
+  await db.raw('select pg_notify(?, payload) from unnest(?::text[]) as payload', [CHANNEL, payloads]);
 }
 
 /** The feed of one web process. Answers when it listens, or after the first try failed (it goes on trying). */

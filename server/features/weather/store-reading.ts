@@ -1,13 +1,14 @@
 import type { Knex } from 'knex';
+import type { ReadingStep, TeamEvent } from '#contract/weather.ts';
 import { READ_VERSION } from '#engine/conventions.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
 import type { RefusedReading, UnmappedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
-import { notifyTeam } from '../../jobs/team-feed.ts';
+import { notifyTeamOfAll } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
 import { insertFindings, insertPart, lockWeatherFile, setReadingResult } from './weather-file-store.ts';
-import { insertDepressionHours, insertDesignValues, insertWeatherYear } from './weather-year-store.ts';
+import { insertWeatherYear, insertYearCounts } from './weather-year-store.ts';
 
 export type FileOutcome =
   | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
@@ -20,19 +21,27 @@ export type FileOutcome =
 export async function storeReadings(
   db: Knex,
   file: { teamId: string; id: string },
-  outcomes: readonly FileOutcome[],
+  reading: { readonly outcomes: readonly FileOutcome[]; readonly untoldSteps: readonly ReadingStep[] },
 ): Promise<void> {
   const { teamId, id } = file;
+  const { outcomes, untoldSteps } = reading;
   await inTransaction(db, async (transaction) => {
     const now = await lockWeatherFile(transaction, { teamId, fileId: id });
     if (now === null || now.status !== 'reading') return;
+    const events: TeamEvent[] = untoldSteps.map((step) => ({
+      kind: 'weather-file',
+      fileId: id,
+      status: 'reading',
+      step,
+    }));
     for (const [place, outcome] of outcomes.entries()) {
       const fileId = place === 0 ? id : await insertPart(transaction, { file: now, partIndex: now.partIndex + place });
-      if (fileId !== null) await storeOutcome(transaction, { teamId, fileId }, outcome);
+      if (fileId === null) continue;
+      await storeOutcome(transaction, { teamId, fileId }, outcome);
+      events.push({ kind: 'weather-file', fileId, status: outcome.reading.status, step: null });
     }
-    if (now.batchId !== null) {
-      await notifyTeam(transaction, { teamId, event: { kind: 'weather-batch', batchId: now.batchId } });
-    }
+    if (now.batchId !== null) events.push({ kind: 'weather-batch', batchId: now.batchId });
+    await notifyTeamOfAll(transaction, { teamId, events });
   });
 }
 
@@ -54,10 +63,6 @@ async function storeOutcome(
     comments: reading.status === 'refused' ? null : reading.comments,
     table: 'table' in reading ? reading.table : null,
   });
-  await notifyTeam(transaction, {
-    teamId: key.teamId,
-    event: { kind: 'weather-file', fileId: key.fileId, status: reading.status, step: null },
-  });
 }
 
 async function storeYear(
@@ -74,6 +79,5 @@ async function storeYear(
     readVersion: READ_VERSION,
     contentHash: contentHash(reduced.year),
   });
-  await insertDepressionHours(transaction, { teamId, weatherYearId, bins: reduced.depressionHours });
-  await insertDesignValues(transaction, { teamId, weatherYearId, design: reduced.design });
+  await insertYearCounts(transaction, { teamId, weatherYearId, reduced });
 }

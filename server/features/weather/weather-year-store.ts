@@ -49,34 +49,41 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
   return rows[0].id;
 }
 
-export async function insertDepressionHours(
+/** Depression hours and design values of a year, in one statement. */
+export async function insertYearCounts(
   transaction: Knex.Transaction,
-  year: { teamId: string; weatherYearId: string; bins: ReducedYear['depressionHours'] },
+  year: { teamId: string; weatherYearId: string; reduced: Pick<ReducedYear, 'depressionHours' | 'design'> },
 ): Promise<void> {
-  await transaction.raw(
-    `insert into depression_hours (team_id, weather_year_id, month, bin_k, hours)
-     select :teamId, :weatherYearId, bin.month, bin."binK", bin.hours
-     from jsonb_to_recordset(cast(:bins as jsonb)) as bin (month smallint, "binK" smallint, hours integer)`,
-    { teamId: year.teamId, weatherYearId: year.weatherYearId, bins: JSON.stringify(year.bins) },
-  );
-}
-
-export async function insertDesignValues(
-  transaction: Knex.Transaction,
-  year: { teamId: string; weatherYearId: string; design: ReducedYear['design'] },
-): Promise<void> {
-  const { dryBulb, wetBulb, dewPoint } = year.design;
+  const { teamId, weatherYearId } = year;
+  const { depressionHours: bins, design } = year.reduced;
   const rows = [
-    ...dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
-    ...wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
-    ...dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
+    ...design.dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
+    ...design.wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
+    ...design.dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
   ];
   await transaction.raw(
-    `insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
-     select :teamId, :weatherYearId, design.quantity, design.percent, design."valueC", design."coincidentC"
-     from jsonb_to_recordset(cast(:rows as jsonb)) as design (
-       quantity text, percent double precision, "valueC" double precision, "coincidentC" double precision)`,
-    { teamId: year.teamId, weatherYearId: year.weatherYearId, rows: JSON.stringify(rows) },
+    `with bins as (
+       insert into depression_hours (team_id, weather_year_id, month, bin_k, hours)
+       select ?, ?, bin.month, bin.bin_k, bin.hours
+       from unnest(?::smallint[], ?::smallint[], ?::integer[]) as bin (month, bin_k, hours)
+     )
+     insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
+     select ?, ?, design.quantity, design.percent, design.value_c, design.coincident_c
+     from unnest(?::text[], ?::double precision[], ?::double precision[], ?::double precision[])
+       as design (quantity, percent, value_c, coincident_c)`,
+    [
+      teamId,
+      weatherYearId,
+      bins.map(({ month }) => month),
+      bins.map(({ binK }) => binK),
+      bins.map(({ hours }) => hours),
+      teamId,
+      weatherYearId,
+      rows.map(({ quantity }) => quantity),
+      rows.map(({ percent }) => percent),
+      rows.map(({ valueC }) => valueC),
+      rows.map(({ coincidentC }) => coincidentC),
+    ],
   );
 }
 
