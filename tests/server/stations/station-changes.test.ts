@@ -1,5 +1,6 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { demoEpw } from '../../support/demo-epw.ts';
+import { eventually } from '../../support/eventually.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { deskOf, type TeamDesk } from '../../support/team-desk.ts';
 
@@ -59,8 +60,7 @@ describe('a station', () => {
       elevationM: place.elevationM,
       utcOffsetH: was.station.utcOffsetH,
     });
-    await desk.mapWithoutPending();
-    expect((await desk.place(stationId)).shown?.runId).not.toBe(before);
+    await eventually('the run at the new place', async () => (await desk.place(stationId)).shown?.runId !== before);
     const { rows } = await road.db.raw<{ rows: { reason: string }[] }>(
       `select subject ->> 'reason' as reason from audit_events where act = 'station moved'`,
     );
