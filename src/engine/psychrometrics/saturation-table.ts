@@ -53,19 +53,28 @@ export function tabledSlopePaPerK(tempC: number): number {
   return SLOPE_PER_DIFFERENCE * (saturationTable[2 * (saturationPlace(inside) | 0) + 1] ?? 0);
 }
 
-/** Nodes of the first look for a dew point, per doubling of pressure, and the pressure of the first, Pa. */
-const LOOKS_PER_DOUBLING = 32;
-const FIRST_LOOK_PA = saturationTable[0] ?? 0;
-const LAST_LOOK_PA = saturationTable[2 * NODES - 4] ?? 0;
+/** Pressures of the first look for a dew point: as 32-bit numbers cut after the exponent and 6 binary places, some 64 per doubling. */
+const CUT_BITS = 17;
+const asNumber = new Float32Array(1);
+const asBits = new Int32Array(asNumber.buffer);
+const FIRST_TABLED_PA = saturationTable[0] ?? 0;
+const LAST_TABLED_PA = saturationTable[2 * NODES - 4] ?? 0;
+const FIRST_LOOK = lookOf(FIRST_TABLED_PA);
+
+function lookOf(pressurePa: number): number {
+  asNumber[0] = pressurePa;
+  return (asBits[0] ?? 0) >> CUT_BITS;
+}
 
 /** Node at or before each pressure of the first look. */
-const firstLook = findFirstLooks();
+const firstLooks = findFirstLooks();
 
 function findFirstLooks(): Uint16Array {
-  const looks = new Uint16Array(Math.ceil(LOOKS_PER_DOUBLING * Math.log2(LAST_LOOK_PA / FIRST_LOOK_PA)) + 1);
+  const looks = new Uint16Array(lookOf(LAST_TABLED_PA) - FIRST_LOOK + 1);
   let node = 0;
   for (let look = 0; look < looks.length; look++) {
-    const pressurePa = FIRST_LOOK_PA * 2 ** (look / LOOKS_PER_DOUBLING);
+    asBits[0] = (FIRST_LOOK + look) << CUT_BITS;
+    const pressurePa = asNumber[0] ?? 0;
     while (node < NODES - 2 && (saturationTable[2 * node + 2] ?? 0) <= pressurePa) node++;
     looks[look] = node;
   }
@@ -77,8 +86,8 @@ function findFirstLooks(): Uint16Array {
  * @returns NaN outside the table (below 0.0097 Pa or above 31 kPa)
  */
 export function tabledDewPointC(vapourPa: number): number {
-  if (!(vapourPa >= FIRST_LOOK_PA && vapourPa < LAST_LOOK_PA)) return Number.NaN;
-  let node = firstLook[(LOOKS_PER_DOUBLING * Math.log2(vapourPa / FIRST_LOOK_PA)) | 0] ?? 0;
+  if (!(vapourPa >= FIRST_TABLED_PA && vapourPa < LAST_TABLED_PA)) return Number.NaN;
+  let node = firstLooks[lookOf(vapourPa) - FIRST_LOOK] ?? 0;
   while ((saturationTable[2 * node + 2] ?? 0) <= vapourPa) node++;
   // The first look may round up by a node.
   while ((saturationTable[2 * node] ?? 0) > vapourPa) node--;
