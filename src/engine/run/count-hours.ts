@@ -112,7 +112,7 @@ export function addHours(cellOf: Uint16Array): void {
 
 function addUnmet(): void {
   const { count } = block;
-  let place = unmetHours.count;
+  let { count: place } = unmetHours;
   for (let at = 0; at < count; at++) {
     if (met[at] === 1) continue;
     const reason = damp[at] ?? 0;

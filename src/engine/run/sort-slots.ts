@@ -30,23 +30,25 @@ export function sortSlots(
   schedule: OpenSchedule,
   idleHundredths: number | null,
 ): WithoutDemand & { readonly demand: number } {
-  if (schedule.slots.length < schedule.open.length) slotCodes.fill(0);
+  if (schedule.slots.length < schedule.open.length) codes.fill(0);
   const demand = listDemand(knownDryBulb(year), schedule.slots, idleHundredths ?? NO_SLOT_IDLE);
   const missingSlotsOfYear = missingSlots(year);
   let missing = 0;
   for (let index = 0; index < missingSlotsOfYear.length; index++) {
     const slot = missingSlotsOfYear[index] ?? 0;
     if (schedule.open[slot] !== 1) continue;
-    slotCodes[slot] = MISSING;
+    codes[slot] = MISSING;
     missing++;
   }
   const open = schedule.slots.length;
   return { closed: year.dryBulb.length - open, missing, idle: open - missing - demand, demand };
 }
 
-/** Of the year that was sorted last. */
-export const slotCodes = new Uint8Array(SLOTS_PER_LEAP_YEAR);
-export const demandSlots = new Uint16Array(SLOTS_PER_LEAP_YEAR);
+/** Of the year that was sorted last. Constants of this module, exported under other names: see `hour-block.ts`. */
+const codes = new Uint8Array(SLOTS_PER_LEAP_YEAR);
+const listed = new Uint16Array(SLOTS_PER_LEAP_YEAR);
+export const slotCodes = codes;
+export const demandSlots = listed;
 
 /** Lists the slots over a temperature and marks the others as idle. */
 function listDemand(dryBulb: Int16Array, openSlots: Uint16Array, idleHundredths: number): number {
@@ -69,16 +71,16 @@ function listBlock(
   dryBulb: Int16Array,
   openSlots: Uint16Array,
   idleHundredths: number,
-  listed: number,
+  already: number,
   from: number,
   to: number,
 ): number {
-  let count = listed;
+  let count = already;
   for (let index = from; index < to; index++) {
     const slot = openSlots[index] ?? 0;
     const over = (idleHundredths - (dryBulb[slot] ?? 0)) >>> 31;
-    slotCodes[slot] = IDLE & (over - 1);
-    demandSlots[count] = slot;
+    codes[slot] = IDLE & (over - 1);
+    listed[count] = slot;
     count += over;
   }
   return count;

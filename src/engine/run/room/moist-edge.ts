@@ -3,14 +3,17 @@ import { tabledSaturationPa, tabledSlopePaPerK } from '../../psychrometrics/satu
 import { block } from '../hour-block.ts';
 import { room } from './room-hours.ts';
 import type { RoomPlan } from './room-plan.ts';
-import { AIR_KJ_PER_KG_K, leavingWithRatioC, ratioOnLine, VAPOUR_KJ_PER_KG_K } from './supply-lines.ts';
+import { leavingWithRatioC, ratioOnLine } from './supply-lines.ts';
 
+/** Dry air and vapour, kJ/(kg K): ASHRAE Fundamentals 2017 ch. 1 eq. 30. */
+const AIR_KJ_PER_KG_K = 1.006;
+const VAPOUR_KJ_PER_KG_K = 1.86;
 const MASS_RATIO = 0.621945;
 /** The chord lands within a kelvin; two steps leave some 0.00001 K. */
 const NEWTON_STEPS = 2;
 
 /** Constants of this module: see `hour-block.ts`. */
-const { pressurePa: pressures } = block;
+const { humidityRatio: ratios, pressurePa: pressures, setC, supplyAimC } = block;
 const { top: tops, bottom: bottoms, fanRiseK: fanRises, dryC: dries, fullC: fulls } = room;
 
 /**
@@ -21,17 +24,17 @@ export function moistEdgeC(plan: RoomPlan, at: number): number {
   const { roomShare, supplyShare, supplyVapourPa, dwRoomKgKg } = plan;
   let edgeC = Number.NEGATIVE_INFINITY;
   if (roomShare !== Number.POSITIVE_INFINITY) {
-    const riseK = (block.setC[at] ?? 0) - (block.supplyAimC[at] ?? 0);
+    const riseK = (setC[at] ?? 0) - (supplyAimC[at] ?? 0);
     edgeC = edgeUnderCapC(at, roomShare, dwRoomKgKg, riseK);
   }
   if (supplyShare !== Number.POSITIVE_INFINITY) {
     edgeC = Math.max(edgeC, edgeUnderCapC(at, supplyShare, 0, 0));
   }
   if (supplyVapourPa === Number.POSITIVE_INFINITY) return edgeC;
-  const ratio = (MASS_RATIO * supplyVapourPa) / ((block.pressurePa[at] ?? 0) - supplyVapourPa);
-  if ((block.humidityRatio[at] ?? 0) >= ratio) return Number.POSITIVE_INFINITY;
-  const leavingC = leavingWithRatioC(room.top[at] ?? 0, room.bottom[at] ?? 0, ratio);
-  return Math.max(edgeC, leavingC + (room.fanRiseK[at] ?? 0));
+  const ratio = (MASS_RATIO * supplyVapourPa) / ((pressures[at] ?? 0) - supplyVapourPa);
+  if ((ratios[at] ?? 0) >= ratio) return Number.POSITIVE_INFINITY;
+  const leavingC = leavingWithRatioC(tops[at] ?? 0, bottoms[at] ?? 0, ratio);
+  return Math.max(edgeC, leavingC + (fanRises[at] ?? 0));
 }
 
 /**

@@ -12,6 +12,9 @@ const MASS_RATIO = 0.621945;
 /** A stage run at just the share that it needs ends here or a rounding error above. */
 export const ROUNDING_K = 1e-9;
 
+/** Constants of this module: see `hour-block.ts`. */
+const { humidityRatio: ratios, pressurePa: pressures, setC, supplyAimC } = block;
+
 /** Most vapour that the caps on the room allow in a room at this temperature, Pa. */
 export function roomVapourPa({ roomShare }: RoomPlan, roomC: number): number {
   return roomShare === Number.POSITIVE_INFINITY ? roomShare : roomShare * tabledSaturationPa(roomC);
@@ -33,8 +36,8 @@ export function ratioOfVapour(vapourPa: number, pressurePa: number): number {
  * `room` tells.
  */
 export function capsHoldOnWarmSupply(plan: RoomPlan, at: number, supplyC: number, supplyRatio: number): boolean {
-  const pressurePa = block.pressurePa[at] ?? 0;
-  const riseK = (block.setC[at] ?? 0) - (block.supplyAimC[at] ?? 0);
+  const pressurePa = pressures[at] ?? 0;
+  const riseK = (setC[at] ?? 0) - (supplyAimC[at] ?? 0);
   const roomPa = vapourPressurePa(supplyRatio + plan.dwRoomKgKg, pressurePa);
   if (!(roomPa < roomVapourPa(plan, supplyC + riseK))) return false;
   return !plan.capsSupply || supplyCapsHold(plan, at, supplyC, supplyRatio);
@@ -42,7 +45,7 @@ export function capsHoldOnWarmSupply(plan: RoomPlan, at: number, supplyC: number
 
 /** The same of the caps on the supply alone. */
 export function supplyCapsHold(plan: RoomPlan, at: number, supplyC: number, supplyRatio: number): boolean {
-  return vapourPressurePa(supplyRatio, block.pressurePa[at] ?? 0) < supplyVapourPa(plan, supplyC);
+  return vapourPressurePa(supplyRatio, pressures[at] ?? 0) < supplyVapourPa(plan, supplyC);
 }
 
 /** So much vapour over a cap is no rounding error, Pa. */
@@ -51,8 +54,8 @@ const CLEARLY_PA = 0.01;
 /** Whether a supply that is no colder than it need be breaks the cap on the room by more than rounding explains. */
 export function clearlyOverRoomCap(plan: RoomPlan, at: number, supplyC: number, supplyRatio: number): boolean {
   if (plan.roomShare === Number.POSITIVE_INFINITY) return false;
-  const riseK = (block.setC[at] ?? 0) - (block.supplyAimC[at] ?? 0);
-  const vapourPa = vapourPressurePa(supplyRatio + plan.dwRoomKgKg, block.pressurePa[at] ?? 0);
+  const riseK = (setC[at] ?? 0) - (supplyAimC[at] ?? 0);
+  const vapourPa = vapourPressurePa(supplyRatio + plan.dwRoomKgKg, pressures[at] ?? 0);
   return vapourPa - plan.roomShare * tabledSaturationPa(supplyC + riseK) > CLEARLY_PA;
 }
 
@@ -61,8 +64,8 @@ export function clearlyOverRoomCap(plan: RoomPlan, at: number, supplyC: number, 
  * is higher; Infinity where none is warm enough.
  */
 export function dryEdgeOfSupplyC(plan: RoomPlan, at: number, edgeC: number): number {
-  const ratio = block.humidityRatio[at] ?? 0;
-  const pressurePa = block.pressurePa[at] ?? 0;
+  const ratio = ratios[at] ?? 0;
+  const pressurePa = pressures[at] ?? 0;
   let higherC = edgeC;
   if (plan.supplyShare !== Number.POSITIVE_INFINITY) {
     higherC = Math.max(edgeC, tabledDewPointC(vapourPressurePa(ratio, pressurePa) / plan.supplyShare));

@@ -13,8 +13,8 @@
 import { dewPointC } from '../../psychrometrics/moist-air.ts';
 import { ICE, WATER } from '../../psychrometrics/wet-surface.ts';
 
-export const AIR_KJ_PER_KG_K = 1.006;
-export const VAPOUR_KJ_PER_KG_K = 1.86;
+const AIR_KJ_PER_KG_K = 1.006;
+const VAPOUR_KJ_PER_KG_K = 1.86;
 const LATENT_KJ_PER_KG = 2501;
 const water = WATER;
 const ice = ICE;
