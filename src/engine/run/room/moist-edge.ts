@@ -21,15 +21,10 @@ const { top: tops, bottom: bottoms, fanRiseK: fanRises, dryC: dries, fullC: full
  * -Infinity when full wetting keeps them all, Infinity when no share does.
  */
 export function moistEdgeC(plan: RoomPlan, at: number): number {
-  const { roomShare, supplyShare, supplyVapourPa, dwRoomKgKg } = plan;
+  const { roomShare, supplyShare, supplyVapourPa } = plan;
   let edgeC = Number.NEGATIVE_INFINITY;
-  if (roomShare !== Number.POSITIVE_INFINITY) {
-    const riseK = (setC[at] ?? 0) - (supplyAimC[at] ?? 0);
-    edgeC = edgeUnderCapC(at, roomShare, dwRoomKgKg, riseK);
-  }
-  if (supplyShare !== Number.POSITIVE_INFINITY) {
-    edgeC = Math.max(edgeC, edgeUnderCapC(at, supplyShare, 0, 0));
-  }
+  if (roomShare !== Number.POSITIVE_INFINITY) edgeC = edgeUnderCapC(plan, at, true);
+  if (supplyShare !== Number.POSITIVE_INFINITY) edgeC = Math.max(edgeC, edgeUnderCapC(plan, at, false));
   if (supplyVapourPa === Number.POSITIVE_INFINITY) return edgeC;
   const ratio = (MASS_RATIO * supplyVapourPa) / ((pressures[at] ?? 0) - supplyVapourPa);
   if ((ratios[at] ?? 0) >= ratio) return Number.POSITIVE_INFINITY;
@@ -40,11 +35,12 @@ export function moistEdgeC(plan: RoomPlan, at: number): number {
 /**
  * The same of one cap on relative humidity. Vapour less the share of saturation is a concave function that falls with temperature: the
  * chord between full wetting and none lands on its wet side, and steps of Newton's method come back from the dry side, within the cap.
- * @param share of saturation that the cap allows
- * @param addedRatio the moisture that the air that is capped has taken up in the room, kg/kg; 0 of the supply itself
- * @param riseK how much warmer than the supply it is
+ * @param ofRoom whether it is the cap on the room, whose air is warmer and has taken up moisture; else that on the supply itself
  */
-function edgeUnderCapC(at: number, share: number, addedRatio: number, riseK: number): number {
+function edgeUnderCapC(plan: RoomPlan, at: number, ofRoom: boolean): number {
+  const share = ofRoom ? plan.roomShare : plan.supplyShare;
+  const addedRatio = ofRoom ? plan.dwRoomKgKg : 0;
+  const riseK = ofRoom ? (setC[at] ?? 0) - (supplyAimC[at] ?? 0) : 0;
   const pressurePa = pressures[at] ?? 0;
   const top = tops[at] ?? 0;
   const bottom = bottoms[at] ?? 0;
