@@ -46,6 +46,8 @@ test.each(sizes)(
     onTestFailed(() => watched.picture(`method-failed-${name.replaceAll(' ', '-')}`));
     await page.goto('/');
     await signIn(page, ACCOUNT);
+    const menu = page.getByRole('button', { name: 'Menu', exact: true });
+    if (await menu.isVisible()) await menu.click();
     await page.getByRole('link', { name: 'Method', exact: true }).click();
     await page.getByRole('heading', { name: 'Method', level: 1 }).waitFor();
     await page.getByText(/^37 checks: (\d+) of \1 values hold\.$/).waitFor();

@@ -12,15 +12,6 @@ export interface SpellSlots {
 /** Open hours other than unmet ones that a run bridges, uncounted. */
 const BRIDGE_H = 6;
 
-interface Run {
-  hours: number;
-  startSlot: number;
-  endSlot: number;
-  severityKh: number;
-  worstK: number;
-  cutAtJoint: boolean;
-}
-
 /**
  * The longest run of unmet demand hours (method 5), the first of equals; null when every demand hour is met. `cutAtJoint`
  * says that the run would go on, or began earlier, across a month joint.
@@ -30,31 +21,34 @@ export function worstSpell(
   hours: Pick<HourColumns, 'count' | 'slot' | 'met' | 'shortfallK'>,
   { openBefore, periodOf }: SpellSlots,
 ): WorstSpell | null {
-  let longest: Run | null = null;
-  let run: Run | null = null;
+  let longest: WorstSpell | null = null;
+  // The run so far, as numbers: an object would be written to at every hour.
+  let runHours = 0;
+  let startSlot = 0;
+  let endSlot = 0;
+  let severityKh = 0;
+  let worstK = 0;
+  let cutAtJoint = false;
   for (let at = 0; at < hours.count; at++) {
     if (hours.met[at] === 1) continue;
     const slot = hours.slot[at] ?? 0;
-    if (run === null || !goesOn(run, slot, openBefore) || isJoint(run, slot, periodOf)) {
-      const cut: boolean = run !== null && goesOn(run, slot, openBefore);
-      if (run !== null && cut) run.cutAtJoint = true;
-      if (run !== null && (longest === null || run.hours > longest.hours)) longest = run;
-      run = { hours: 0, startSlot: slot, endSlot: slot, severityKh: 0, worstK: 0, cutAtJoint: cut };
+    const near = runHours > 0 && (openBefore[slot] ?? 0) - (openBefore[endSlot] ?? 0) - 1 <= BRIDGE_H;
+    if (!near || (periodOf !== null && periodOf[slot] !== periodOf[endSlot])) {
+      if (runHours > (longest?.hours ?? 0)) {
+        longest = { hours: runHours, startSlot, endSlot, severityKh, worstK, cutAtJoint: cutAtJoint || near };
+      }
+      runHours = 0;
+      startSlot = slot;
+      severityKh = 0;
+      worstK = 0;
+      cutAtJoint = near;
     }
     const shortfallK = hours.shortfallK[at] ?? 0;
-    run.hours += 1;
-    run.endSlot = slot;
-    run.severityKh += shortfallK;
-    run.worstK = Math.max(run.worstK, shortfallK);
+    runHours += 1;
+    endSlot = slot;
+    severityKh += shortfallK;
+    worstK = Math.max(worstK, shortfallK);
   }
-  return run !== null && (longest === null || run.hours > longest.hours) ? run : longest;
-}
-
-/** Whether an unmet hour is near enough to the run's last one to belong to it. */
-function goesOn({ endSlot }: Run, slot: number, openBefore: Uint16Array): boolean {
-  return (openBefore[slot] ?? 0) - (openBefore[endSlot] ?? 0) - 1 <= BRIDGE_H;
-}
-
-function isJoint({ endSlot }: Run, slot: number, periodOf: Uint8Array | null): boolean {
-  return periodOf !== null && periodOf[slot] !== periodOf[endSlot];
+  if (runHours <= (longest?.hours ?? 0)) return longest;
+  return { hours: runHours, startSlot, endSlot, severityKh, worstK, cutAtJoint };
 }

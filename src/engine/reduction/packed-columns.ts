@@ -77,19 +77,15 @@ export function unpackYear(year: PackedYear, into?: YearColumns): YearColumns {
   };
 }
 
-/**
- * The numbers of some slots, of which everything is known, side by side.
- * @param slots the slots, of which the first `count` are asked for
- * @param into columns of at least `count` values
- */
-export function unpackSlots(year: PackedYear, slots: Uint16Array, count: number, into: YearColumns): void {
-  const { dryBulb, humidityRatio, pressure } = year;
-  for (let at = 0; at < count; at++) {
-    const slot = slots[at] ?? 0;
-    into.dryBulbC[at] = (dryBulb[slot] ?? 0) / 100;
-    into.humidityRatio[at] = (humidityRatio[slot] ?? 0) * HUMIDITY_RATIO_STEP;
-    into.pressurePa[at] = (pressure[slot] ?? 0) * PRESSURE_STEP_PA;
-  }
+/** What one packed value stands for that is not missing: °C, kg/kg, Pa. */
+export function unpackedDryBulbC(packed: number): number {
+  return packed / 100;
+}
+export function unpackedRatio(packed: number): number {
+  return packed * HUMIDITY_RATIO_STEP;
+}
+export function unpackedPa(packed: number): number {
+  return packed * PRESSURE_STEP_PA;
 }
 
 /** Dry bulb of every slot, °C, NaN where missing. */

@@ -1,52 +1,70 @@
 /**
  * What every demand hour is before it is judged: outdoor air, what the room is held at, load and what the supply must reach.
- * Written into the columns for all hours at once, so that a use can run through them without an object or a call per hour.
+ * Written into the columns of `block` for all its hours at once, so that a use can run through them without an object or a call per hour.
  */
 import type { Brief } from '../brief/brief.ts';
-import { designDryBulbC, loadFractionAt, loadLine } from '../hour-classes/load-fraction.ts';
+import { designDryBulbC, type LoadLine, loadFractionAt, loadLine } from '../hour-classes/load-fraction.ts';
 import { setPoints, steadySetC } from '../hour-classes/set-points.ts';
 import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
-import { unpackDryBulb, unpackSlots } from '../reduction/packed-columns.ts';
-import type { WeatherYear } from '../reduction/weather-year.ts';
-import type { HourColumns } from './hour-columns.ts';
+import { unpackDryBulb, unpackedDryBulbC, unpackedPa, unpackedRatio } from '../reduction/packed-columns.ts';
+import type { PackedYear, WeatherYear } from '../reduction/weather-year.ts';
+import { block } from './hour-block.ts';
 
-/**
- * @param into columns whose `slot` and `count` say which hours have demand
- * @returns 1 for every slot whose adaptive limit was clamped to its range; null for other limits
- */
-export function meetDemandHours(
-  { year, brief, heightM }: { year: WeatherYear; brief: Brief; heightM: number },
-  into: HourColumns,
-): Uint8Array | null {
-  const { packed } = year;
-  unpackSlots(packed, into.slot, into.count, into);
-  fillVolumes(into);
-  const outsideRange = fillSetPoints({ year, brief, heightM }, into);
-  const line = loadLine(brief, () => designDryBulbC(packed));
-  if (line === null) into.loadFraction.fill(1, 0, into.count);
-  else for (let at = 0; at < into.count; at++) into.loadFraction[at] = loadFractionAt(line, into.dryBulbC[at] ?? 0);
-  for (let at = 0; at < into.count; at++) {
-    into.supplyAimC[at] = (into.setC[at] ?? 0) - brief.dTroomK * (into.loadFraction[at] ?? 0);
-  }
-  return outsideRange;
+/** What is asked in a year, found once for all its hours. */
+export interface YearDemand {
+  readonly packed: PackedYear;
+  /** t_set of every slot where it moves, and the one that holds all year, NaN where it moves or there is none; °C. */
+  readonly movingSetC: Float64Array | null;
+  readonly steadySetC: number;
+  /** 1 for every slot whose adaptive limit was clamped to its range; null for other limits. */
+  readonly outsideRange: Uint8Array | null;
+  /** null: the load is whole at every hour. */
+  readonly load: LoadLine | null;
+  readonly dTroomK: number;
 }
 
-function fillVolumes({ count, dryBulbC, humidityRatio, pressurePa, volumeM3PerKg: volumes }: HourColumns): void {
+export function yearDemand({ year, brief, heightM }: { year: WeatherYear; brief: Brief; heightM: number }): YearDemand {
+  const { packed, kind } = year;
+  const moving =
+    brief.limit.kind === 'adaptive'
+      ? setPoints({ brief, dryBulbC: unpackDryBulb(packed), wrapped: kind !== 'actual', heightM })
+      : null;
+  return {
+    packed,
+    movingSetC: moving?.setC ?? null,
+    steadySetC: steadySetC(brief, heightM),
+    outsideRange: moving?.outsideRange ?? null,
+    load: loadLine(brief, () => designDryBulbC(packed)),
+    dTroomK: brief.dTroomK,
+  };
+}
+
+/** Constants of this module: see `hour-block.ts`. */
+const { slot, dryBulbC, humidityRatio, pressurePa, volumeM3PerKg: volumes, setC, loadFraction, supplyAimC } = block;
+
+/** Fills in the hours of `block`, whose `slot` and `count` say which they are. */
+export function meetDemandHours(demand: YearDemand): void {
+  const { movingSetC, steadySetC: steadyC, load, dTroomK } = demand;
+  const { count } = block;
+  fillOutdoors(demand.packed);
+  if (movingSetC === null) setC.fill(steadyC, 0, count);
+  else for (let at = 0; at < count; at++) setC[at] = movingSetC[slot[at] ?? 0] ?? Number.NaN;
+  if (load === null) loadFraction.fill(1, 0, count);
+  else for (let at = 0; at < count; at++) loadFraction[at] = loadFractionAt(load, dryBulbC[at] ?? 0);
+  if (movingSetC === null && load === null) supplyAimC.fill(steadyC - dTroomK, 0, count);
+  else for (let at = 0; at < count; at++) supplyAimC[at] = (setC[at] ?? 0) - dTroomK * (loadFraction[at] ?? 0);
+}
+
+function fillOutdoors({ dryBulb, humidityRatio: ratios, pressure }: PackedYear): void {
+  const { count } = block;
   for (let at = 0; at < count; at++) {
-    volumes[at] = volumeM3PerKg(dryBulbC[at] ?? 0, humidityRatio[at] ?? 0, pressurePa[at] ?? 0);
+    const from = slot[at] ?? 0;
+    const tempC = unpackedDryBulbC(dryBulb[from] ?? 0);
+    const ratio = unpackedRatio(ratios[from] ?? 0);
+    const pascal = unpackedPa(pressure[from] ?? 0);
+    dryBulbC[at] = tempC;
+    humidityRatio[at] = ratio;
+    pressurePa[at] = pascal;
+    volumes[at] = volumeM3PerKg(tempC, ratio, pascal);
   }
-}
-
-function fillSetPoints(
-  { year, brief, heightM }: { year: WeatherYear; brief: Brief; heightM: number },
-  { count, slot, setC }: HourColumns,
-): Uint8Array | null {
-  if (brief.limit.kind !== 'adaptive') {
-    setC.fill(steadySetC(brief, heightM), 0, count);
-    return null;
-  }
-  const wrapped = year.kind !== 'actual';
-  const moving = setPoints({ brief, dryBulbC: unpackDryBulb(year.packed), wrapped, heightM });
-  for (let at = 0; at < count; at++) setC[at] = moving.setC[slot[at] ?? 0] ?? Number.NaN;
-  return moving.outsideRange;
 }

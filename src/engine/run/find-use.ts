@@ -22,8 +22,8 @@ import { wetBulbsOfYear } from './room/wet-bulbs-of-year.ts';
 /** A use: a way of judging one hour, and the water and electricity of the plant that serves it. */
 export interface Use {
   readonly judgeHour: (hour: DemandHour, brief: Brief) => HourJudgement;
-  /** The same of every demand hour of a year at once, in the columns that `meetDemandHours` leaves; null: one by one, as objects. */
-  readonly judgeHours: ((brief: Brief, year: PackedYear, hours: HourColumns) => void) | null;
+  /** The same of the hours in `block`, which are handed over, as `meetDemandHours` leaves them; null: one by one, as objects. */
+  readonly judgeHours: ((brief: Brief, year: PackedYear) => (hours: HourColumns) => void) | null;
   readonly plantHour: (hour: DemandHour, judgement: HourJudgement, brief: Brief) => PlantHour;
   /** Outdoor air and the permitted stages that could meet an hour alone, by the class that it would have. */
   readonly aloneStages: (brief: Brief) => readonly SupplyStage[];
@@ -41,7 +41,11 @@ const balanceTempC = (brief: Brief): number | null => brief.balanceTempC;
 
 const roomAtATemperature: Use = {
   judgeHour: judgeSupplyAirHour,
-  judgeHours: (brief, year, hours) => judgeRoomHours(roomPlan(brief), hours, wetBulbsOfYear(year, brief.effIndirect)),
+  judgeHours: (brief, year) => {
+    const plan = roomPlan(brief);
+    const wetBulbs = wetBulbsOfYear(year, brief.effIndirect);
+    return () => judgeRoomHours(plan, wetBulbs);
+  },
   plantHour: supplyAirPlantHour,
   aloneStages: airAndStages,
   idleUpToC: balanceTempC,
@@ -56,13 +60,13 @@ const roomUnderAnIndex: Use = { ...roomAtATemperature, judgeHour: judgeIndexHour
 const dataHall: Use = {
   ...roomAtATemperature,
   judgeHour: judgeReturnAirHour,
-  judgeHours: (brief, _year, hours) => judgeHallHours(brief, hours),
+  judgeHours: (brief) => (hours) => judgeHallHours(brief, hours),
   plantHour: returnAirPlantHour,
 };
 
 const processWater: Use = {
   judgeHour: judgeTowerHour,
-  judgeHours: (brief, _year, hours) => judgeTowerHours(brief, hours),
+  judgeHours: (brief) => (hours) => judgeTowerHours(brief, hours),
   plantHour: towerPlantHour,
   aloneStages: () => ['direct'],
   idleUpToC: balanceTempC,
@@ -71,7 +75,7 @@ const processWater: Use = {
 
 const turbineInlet: Use = {
   judgeHour: judgeTurbineHour,
-  judgeHours: (brief, _year, hours) => judgeTurbineHours(brief, hours),
+  judgeHours: (brief) => (hours) => judgeTurbineHours(brief, hours),
   plantHour: turbinePlantHour,
   aloneStages: airAndStages,
   idleUpToC: ({ limit }) => (limit.kind === 'turbine' ? limit.floorC : null),

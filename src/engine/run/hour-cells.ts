@@ -2,7 +2,7 @@
 import type { OpenSchedule } from '../clock/open-schedule.ts';
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { monthOfEachSlot } from '../reduction/calendar.ts';
-import { type HourColumns, inBlocks } from './hour-columns.ts';
+import type { HourCounts } from './count-hours.ts';
 import type { JudgedYear } from './judged-year.ts';
 
 export const MONTH_HOUR_CELLS = 12 * HOURS_PER_DAY;
@@ -15,29 +15,16 @@ export interface HourCells {
   readonly met: Uint16Array;
 }
 
-export function countCells({ slots, schedule, missing, hours }: JudgedYear): HourCells {
+/** @param counts of the demand hours of the same year */
+export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, met }: HourCounts): HourCells {
   const cellOf = cellOfEachSlot(slots);
   const scheduled = scheduledByCell(schedule);
   const present = scheduled.slice();
-  for (const slot of missing) if (schedule.open[slot] === 1) add(present, cellOf[slot] ?? 0, -1);
-  const demand = new Uint16Array(MONTH_HOUR_CELLS);
-  const met = new Uint16Array(MONTH_HOUR_CELLS);
-  inBlocks(hours.count, (from, to) => addHours({ demand, met }, cellOf, hours, from, to));
-  return { scheduled, present, demand, met };
-}
-
-function addHours(
-  { demand, met }: Pick<HourCells, 'demand' | 'met'>,
-  cellOf: Uint16Array,
-  hours: HourColumns,
-  from: number,
-  to: number,
-): void {
-  for (let at = from; at < to; at++) {
-    const cell = cellOf[hours.slot[at] ?? 0] ?? 0;
-    add(demand, cell, 1);
-    add(met, cell, hours.met[at] ?? 0);
+  for (let index = 0; index < missing.length; index++) {
+    const slot = missing[index] ?? 0;
+    if (schedule.open[slot] === 1) add(present, cellOf[slot] ?? 0, -1);
   }
+  return { scheduled, present, demand, met };
 }
 
 /** Sum of a month's cells, 0 January. */
@@ -49,9 +36,13 @@ export function sumOfMonth(cells: Uint16Array, month: number): number {
 
 /** The cells as rows of a month each. */
 export function monthRows(cells: Uint16Array): number[][] {
-  return Array.from({ length: 12 }, (_none, month) =>
-    Array.from(cells.subarray(month * HOURS_PER_DAY, (month + 1) * HOURS_PER_DAY)),
-  );
+  const rows: number[][] = [];
+  for (let from = 0; from < MONTH_HOUR_CELLS; from += HOURS_PER_DAY) {
+    const row: number[] = [];
+    for (let cell = from; cell < from + HOURS_PER_DAY; cell++) row.push(cells[cell] ?? 0);
+    rows.push(row);
+  }
+  return rows;
 }
 
 function add(cells: Uint16Array, cell: number, count: number): void {
@@ -73,7 +64,7 @@ function scheduledByCell(schedule: OpenSchedule): Uint16Array {
 const cellsOfYears = new Map<number, Uint16Array>();
 
 /** The cell of every slot. There are two such columns, each made once: they are read only. */
-function cellOfEachSlot(slots: number): Uint16Array {
+export function cellOfEachSlot(slots: number): Uint16Array {
   const made = cellsOfYears.get(slots) ?? makeCells(slots);
   cellsOfYears.set(slots, made);
   return made;

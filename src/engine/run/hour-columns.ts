@@ -86,17 +86,20 @@ export function hourColumns(hours: number): HourColumns {
 }
 
 /**
- * Every hour as if outdoor air served it whole: t_s = t + f, no water, nothing lacking. What is found to be otherwise is written over
- * it; the class, what air meets and which stages meet alone are left to the use.
- * @param riseKPerVolume fan rise of the air stage, K per m³ of air and kg of dry air
+ * Every hour as if outdoor air as it is served it whole: t_s = t, no water, nothing lacking. What is found to be otherwise is written
+ * over it; the class, what air meets and which stages meet alone are left to the use.
  */
-export function fillWithAir(hours: HourColumns, riseKPerVolume: number): void {
-  const { count, dryBulbC, volumeM3PerKg, airSupplyC } = hours;
-  for (let at = 0; at < count; at++) {
-    airSupplyC[at] = (dryBulbC[at] ?? 0) + riseKPerVolume * (volumeM3PerKg[at] ?? 0);
-  }
-  hours.supplyC.set(airSupplyC.subarray(0, count));
+export function fillWithAir(hours: HourColumns): void {
+  const { count, dryBulbC } = hours;
+  hours.airSupplyC.set(dryBulbC.subarray(0, count));
+  hours.supplyC.set(dryBulbC.subarray(0, count));
   hours.supplyRatio.set(hours.humidityRatio.subarray(0, count));
+  fillMet(hours);
+}
+
+/** What holds of every hour that air meets, whatever the air. */
+export function fillMet(hours: HourColumns): void {
+  const { count } = hours;
   hours.met.fill(1, 0, count);
   hours.damp.fill(0, 0, count);
   hours.running.fill(runningStages.indexOf('air'), 0, count);
@@ -108,21 +111,20 @@ export function fillWithAir(hours: HourColumns, riseKPerVolume: number): void {
   hours.waterC.fill(Number.NaN, 0, count);
 }
 
-const HOURS_PER_BLOCK = 512;
-
 /**
- * Works through so many hours a block at a time. A loop over a whole year is compiled while it runs, and what stands behind it is then
- * met unprepared at every call, which costs more than the loop; short loops that are called often are compiled whole. Blocks also stay
- * in the nearest memory from one step to the next.
+ * A year is judged so many demand hours at a time, in one set of columns. A loop over a whole year is compiled while it runs, and what
+ * stands behind it is then met unprepared at every call, which costs more than the loop; short loops that are called often are compiled
+ * whole. So few hours also stay in the nearest memory from one step to the next.
  */
-export function inBlocks(count: number, work: (from: number, to: number) => void): void {
-  for (let from = 0; from < count; from += HOURS_PER_BLOCK) work(from, Math.min(from + HOURS_PER_BLOCK, count));
-}
+export const HOURS_PER_BLOCK = 512;
 
-/** Adds up how often each code stands in a part of a column. */
-export function countCodes(counts: Uint16Array, column: Uint8Array, from: number, to: number): void {
-  for (let at = from; at < to; at++) {
-    const code = column[at] ?? 0;
-    counts[code] = (counts[code] ?? 0) + 1;
+/** Puts the hours of a block behind those that the columns hold. */
+export function appendHours(into: HourColumns, block: HourColumns): void {
+  const { count: from } = into;
+  const added = Object.values(block);
+  for (const [place, column] of Object.values(into).entries()) {
+    const more = added[place];
+    if (typeof column === 'object' && typeof more === 'object') column.set(more.subarray(0, block.count), from);
   }
+  into.count = from + block.count;
 }

@@ -2,16 +2,17 @@ import type { Brief } from '../brief/brief.ts';
 import { METHOD_VERSION, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { yearlyMoney } from '../money/yearly-money.ts';
+import { monthOfEachSlot } from '../reduction/calendar.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
 import { rawComponents } from '../score/raw-components.ts';
 import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
-import { tallyPlant } from '../water-energy/tally-plant.ts';
-import { tallyRecirculatedHours } from '../water-energy/tally-recirculated.ts';
+import { addPlant, noPlant, type PlantSums, plantOfYear } from '../water-energy/tally-plant.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import { countCells, type HourCells, monthRows } from './hour-cells.ts';
+import { addHours, type HourCounts, noHours } from './count-hours.ts';
+import { cellOfEachSlot, type HourCells, hourCells, monthRows } from './hour-cells.ts';
 import { type HourColumns, hourColumns } from './hour-columns.ts';
 import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
@@ -22,7 +23,7 @@ import { type SuppliedAir, tallyReported } from './tally-reported.ts';
 
 export type { JudgeYearInput } from './judged-year.ts';
 
-/** Columns that every year is judged in, one after another: nothing of them is left in a result. */
+/** Columns for years of which single hours are looked at, one after another: nothing of them is left in a result. */
 const workspace = hourColumns(SLOTS_PER_LEAP_YEAR);
 
 /**
@@ -30,11 +31,20 @@ const workspace = hourColumns(SLOTS_PER_LEAP_YEAR);
  * @throws RangeError when the zone is not known, the columns are no year, or a schedule of daylight hours has no position
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
-  const { brief, heightM } = input;
-  const judged = judgeHours(input, { into: workspace });
-  const cells = countCells(judged);
-  const counted = countHours(judged, cells, input);
-  const hardLimits = countHardLimits({ brief, heightM, hours: judged.hours });
+  const { brief, heightM, year } = input;
+  const slots = year.packed.dryBulb.length;
+  const cellOf = cellOfEachSlot(slots);
+  const monthOf = monthOfEachSlot(slots);
+  const counts = noHours();
+  const plant = noPlant();
+  const take = (): void => {
+    addHours(cellOf);
+    addPlant(monthOf);
+  };
+  const judged = judgeHours(input, { into: looksAtHours(brief) ? workspace : null, take });
+  const cells = hourCells(judged, counts);
+  const counted = countHours(judged, { counts, plant, cells }, input);
+  const hardLimits = countHardLimits({ brief, heightM, hours: counts.unmet });
   const coverage = coverageOf({ slots: judged.slots, missing: judged.missing, cells });
   const gates = gatesOf({ brief, coverage, hardLimits });
   return {
@@ -51,21 +61,32 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   };
 }
 
-function countHours(judged: JudgedYear, cells: HourCells, { year, brief }: JudgeYearInput) {
+/** Whether more is asked of single hours than what is counted of every brief. */
+function looksAtHours({ limit, reported, lowerLimits }: Brief): boolean {
+  return (
+    limit.kind === 'adaptive' || limit.kind === 'turbine' || reported.length > 0 || Object.keys(lowerLimits).length > 0
+  );
+}
+
+function countHours(
+  judged: JudgedYear,
+  { counts, plant, cells }: { counts: HourCounts; plant: PlantSums; cells: HourCells },
+  { year, brief }: JudgeYearInput,
+) {
   return {
-    ledger: tallyLedger(judged),
-    severityKh: sumOf(judged.hours.shortfallK, judged.hours.count),
-    worstSpell: tallyWorstSpell(judged, year),
-    aloneHours: tallyAloneHours(judged, brief),
-    supplyCurve: tallySupplyCurve(judged),
+    ledger: tallyLedger(judged, counts),
+    severityKh: sumOf(counts.unmet.shortfallK, counts.unmet.count),
+    worstSpell: tallyWorstSpell(counts.unmet, judged, year),
+    aloneHours: tallyAloneHours(counts, judged, brief),
+    supplyCurve: tallySupplyCurve(counts),
     demandByMonthHour: monthRows(cells.demand),
     metByMonthHour: monthRows(cells.met),
     scaled: scaleForMissing(cells),
     clampedLimitHours: countClamped(judged),
     degreeHours: tallyDegreeHours(brief, judged.hours),
-    recirculatedHours: tallyRecirculatedHours(judged.hours),
+    recirculatedHours: { all: counts.recirculated, warm: counts.warm },
     reported: tallyReported(brief, () => suppliedAirs(judged.hours)),
-    ...tallyPlant(judged.slots, judged.hours, judged.use),
+    ...plantOfYear(plant, judged.use),
   };
 }
 

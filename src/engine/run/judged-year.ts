@@ -5,12 +5,13 @@ import { type OpenSchedule, openSchedule } from '../clock/open-schedule.ts';
 import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import { hundredths } from '../conventions.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
-import { meetDemandHours } from './demand-hours.ts';
+import { meetDemandHours, yearDemand } from './demand-hours.ts';
 import { findUse, type Use } from './find-use.ts';
-import { type HourColumns, hourColumns } from './hour-columns.ts';
+import { block } from './hour-block.ts';
+import { appendHours, HOURS_PER_BLOCK, type HourColumns, hourColumns } from './hour-columns.ts';
 import { demandAt, hourAt, type JudgedHour, writeHour } from './judged-hour.ts';
 import { missingSlots } from './missing-slots.ts';
-import { sortSlots } from './sort-slots.ts';
+import { demandSlots, slotCodes, sortSlots, type WithoutDemand } from './sort-slots.ts';
 
 export type { JudgedHour } from './judged-hour.ts';
 
@@ -26,7 +27,10 @@ export interface JudgedYear {
   readonly classCodes: Uint8Array;
   /** 1 where an adaptive limit was clamped to its range; null for other limits. */
   readonly outsideRange: Uint8Array | null;
-  /** The demand hours, in slot order. */
+  /** How many slots have no demand, by class, and how many have. */
+  readonly withoutDemand: WithoutDemand;
+  readonly demandCount: number;
+  /** The demand hours, in slot order; none where none are kept. */
   readonly hours: HourColumns;
   /** The same as objects, made when first asked for. */
   readonly demandHours: readonly JudgedHour[];
@@ -48,8 +52,10 @@ export interface JudgeYearInput {
 
 /** How hours are judged, where the caller has reason to say. */
 export interface JudgingWays {
-  /** Columns to write into, with room for a year: they belong to the next one as soon as that is judged. */
-  readonly into?: HourColumns;
+  /** Columns that take the demand hours, with room for a year: they belong to the next one as soon as that is judged. Null: none are kept. */
+  readonly into?: HourColumns | null;
+  /** Takes the hours of every block, in slot order, whose columns belong to the next block at once. */
+  readonly take?: (block: HourColumns) => void;
   /** Judge hour by hour as objects even where a whole year can be judged in one pass; the classes are the same. */
   readonly oneByOne?: boolean;
 }
@@ -58,20 +64,41 @@ export interface JudgingWays {
 export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): JudgedYear {
   const { year, brief, zone, position = null } = input;
   const { packed } = year;
+  const slots = packed.dryBulb.length;
   const clock = input.clock ?? clockOfBrief({ year, brief, zone, position });
   const schedule = openSchedule(brief, clock);
   const use = findUse(brief);
   const idleUpToC = use.idleUpToC(brief);
-  const hours = ways.into ?? hourColumns(packed.dryBulb.length);
-  const idleHundredths = idleUpToC === null ? Number.NEGATIVE_INFINITY : hundredths(idleUpToC);
-  const classCodes = sortSlots(packed, schedule, idleHundredths, hours);
-  const outsideRange = meetDemandHours(input, hours);
-  if (use.judgeHours === null || ways.oneByOne === true) judgeOneByOne(brief, use, hours);
-  else use.judgeHours(brief, packed, hours);
-  for (let at = 0; at < hours.count; at++) classCodes[hours.slot[at] ?? 0] = hours.classCode[at] ?? 0;
+  const idleHundredths = idleUpToC === null ? null : hundredths(idleUpToC);
+  const { demand: count, ...withoutDemand } = sortSlots(packed, schedule, idleHundredths);
+  const hours = ways.into === undefined ? hourColumns(slots) : (ways.into ?? NONE_KEPT);
+  hours.count = 0;
+  const demand = yearDemand(input);
+  const judge =
+    ways.oneByOne === true ? judgeOneByOne(brief, use) : (use.judgeHours?.(brief, packed) ?? judgeOneByOne(brief, use));
+  for (let from = 0; from < count; from += HOURS_PER_BLOCK) {
+    block.count = Math.min(HOURS_PER_BLOCK, count - from);
+    block.slot.set(demandSlots.subarray(from, from + block.count));
+    meetDemandHours(demand);
+    judge(block);
+    writeCodes();
+    ways.take?.(block);
+    if (ways.into !== null) appendHours(hours, block);
+  }
+  const classCodes = slotCodes.slice(0, slots);
   let asObjects: readonly JudgedHour[] | null = null;
   return {
-    ...{ slots: classCodes.length, clock, schedule, use, classCodes, outsideRange, hours },
+    ...{
+      slots,
+      clock,
+      schedule,
+      use,
+      classCodes,
+      outsideRange: demand.outsideRange,
+      withoutDemand,
+      demandCount: count,
+      hours,
+    },
     missing: missingSlots(packed),
     get demandHours() {
       asObjects ??= Array.from({ length: hours.count }, (_none, at) => hourAt(hours, at));
@@ -80,11 +107,30 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   };
 }
 
+/** Stands for columns where none are kept. */
+const NONE_KEPT = hourColumns(0);
+
 /** Judges every hour as an object, for uses that have no quicker way. */
-function judgeOneByOne(brief: Brief, use: Use, hours: HourColumns): void {
-  for (let at = 0; at < hours.count; at++) {
-    const hour = demandAt(hours, at);
-    const judgement = use.judgeHour(hour, brief);
-    writeHour(hours, at, { slot: hours.slot[at] ?? 0, hour, judgement, plant: use.plantHour(hour, judgement, brief) });
-  }
+function judgeOneByOne(brief: Brief, use: Use): (hours: HourColumns) => void {
+  return (hours) => {
+    for (let at = 0; at < hours.count; at++) {
+      const hour = demandAt(hours, at);
+      const judgement = use.judgeHour(hour, brief);
+      writeHour(hours, at, {
+        slot: hours.slot[at] ?? 0,
+        hour,
+        judgement,
+        plant: use.plantHour(hour, judgement, brief),
+      });
+    }
+  };
+}
+
+/** Constants of this module: see `hour-block.ts`. */
+const { slot: slotOf, classCode } = block;
+const codes = slotCodes;
+
+function writeCodes(): void {
+  const { count } = block;
+  for (let at = 0; at < count; at++) codes[slotOf[at] ?? 0] = classCode[at] ?? 0;
 }

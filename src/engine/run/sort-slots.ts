@@ -1,37 +1,105 @@
 import type { OpenSchedule } from '../clock/open-schedule.ts';
-import { MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
+import { MISSING_INT16, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
 import { hourClasses } from '../hour-classes/hour-class.ts';
 import type { PackedYear } from '../reduction/weather-year.ts';
-import type { HourColumns } from './hour-columns.ts';
+import { HOURS_PER_BLOCK } from './hour-columns.ts';
+import { missingSlots } from './missing-slots.ts';
 
 const MISSING = hourClasses.indexOf('missing');
 const IDLE = hourClasses.indexOf('idle');
 
+/** Slots without demand, by class. */
+export interface WithoutDemand {
+  readonly closed: number;
+  readonly missing: number;
+  readonly idle: number;
+}
+
+/** Under every packed temperature, and over none that is missing. */
+const NO_SLOT_IDLE = MISSING_INT16;
+
 /**
- * `closed`, `missing`, `idle`, in this order; the slots that are left have demand and are listed in the columns. On the packed
- * numbers, which are whole hundredths of °C.
- * @param idleHundredths slots at or under this have no demand
- * @returns one position in `hourClasses` for every slot, `closed` where there is demand
+ * `closed`, `missing`, `idle`, in this order; the slots that are left have demand and are listed. On the packed numbers, which are
+ * whole hundredths of °C.
+ * @param idleHundredths slots at or under this have no demand; null: every known one has
+ * @returns how many there are of each; `slotCodes` holds one position in `hourClasses` for every slot, `closed` where there is demand,
+ * and `demandSlots` the slots with demand, in order
  */
 export function sortSlots(
-  { dryBulb, humidityRatio, pressure }: PackedYear,
+  year: PackedYear,
   schedule: OpenSchedule,
-  idleHundredths: number,
-  into: HourColumns,
-): Uint8Array {
-  const classCodes = new Uint8Array(dryBulb.length);
-  const { slots: openSlots } = schedule;
-  const { slot: demandSlots } = into;
-  let count = 0;
-  for (let index = 0; index < openSlots.length; index++) {
-    const slot = openSlots[index] ?? 0;
-    const tempHundredths = dryBulb[slot] ?? MISSING_INT16;
-    const unknown =
-      tempHundredths === MISSING_INT16 || humidityRatio[slot] === MISSING_UINT16 || pressure[slot] === MISSING_UINT16;
-    if (unknown) classCodes[slot] = MISSING;
-    else if (tempHundredths <= idleHundredths) classCodes[slot] = IDLE;
-    else demandSlots[count++] = slot;
+  idleHundredths: number | null,
+): WithoutDemand & { readonly demand: number } {
+  if (schedule.slots.length < schedule.open.length) codes.fill(0);
+  const demand = listDemand(knownDryBulb(year), schedule.slots, idleHundredths ?? NO_SLOT_IDLE);
+  const missingSlotsOfYear = missingSlots(year);
+  let missing = 0;
+  for (let index = 0; index < missingSlotsOfYear.length; index++) {
+    const slot = missingSlotsOfYear[index] ?? 0;
+    if (schedule.open[slot] !== 1) continue;
+    codes[slot] = MISSING;
+    missing++;
   }
-  into.count = count;
-  return classCodes;
+  const open = schedule.slots.length;
+  return { closed: year.dryBulb.length - open, missing, idle: open - missing - demand, demand };
+}
+
+/** Of the year that was sorted last. Constants of this module, exported under other names: see `hour-block.ts`. */
+const codes = new Uint8Array(SLOTS_PER_LEAP_YEAR);
+const listed = new Uint16Array(SLOTS_PER_LEAP_YEAR);
+export const slotCodes = codes;
+export const demandSlots = listed;
+
+/** Lists the slots over a temperature and marks the others as idle. */
+function listDemand(dryBulb: Int16Array, openSlots: Uint16Array, idleHundredths: number): number {
+  let count = 0;
+  for (let from = 0; from < openSlots.length; from += HOURS_PER_BLOCK) {
+    count = listBlock(
+      dryBulb,
+      openSlots,
+      idleHundredths,
+      count,
+      from,
+      Math.min(from + HOURS_PER_BLOCK, openSlots.length),
+    );
+  }
+  return count;
+}
+
+/** Without a branch, which no processor could foretell. */
+function listBlock(
+  dryBulb: Int16Array,
+  openSlots: Uint16Array,
+  idleHundredths: number,
+  already: number,
+  from: number,
+  to: number,
+): number {
+  let count = already;
+  for (let index = from; index < to; index++) {
+    const slot = openSlots[index] ?? 0;
+    const over = (idleHundredths - (dryBulb[slot] ?? 0)) >>> 31;
+    codes[slot] = IDLE & (over - 1);
+    listed[count] = slot;
+    count += over;
+  }
+  return count;
+}
+
+const known = new WeakMap<PackedYear, Int16Array>();
+
+/** Dry bulbs, of which those are missing too that the rest of the weather is missing with. */
+function knownDryBulb(year: PackedYear): Int16Array {
+  const found = known.get(year) ?? withoutPartlyKnown(year);
+  known.set(year, found);
+  return found;
+}
+
+function withoutPartlyKnown(year: PackedYear): Int16Array {
+  const { dryBulb } = year;
+  const slots = missingSlots(year);
+  if (slots.every((slot) => dryBulb[slot] === MISSING_INT16)) return dryBulb;
+  const copy = dryBulb.slice();
+  for (const slot of slots) copy[slot] = MISSING_INT16;
+  return copy;
 }

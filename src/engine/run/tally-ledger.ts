@@ -1,5 +1,6 @@
 import { type HourClass, hourClasses } from '../hour-classes/hour-class.ts';
-import { countCodes, dampReasons, inBlocks } from './hour-columns.ts';
+import type { HourCounts } from './count-hours.ts';
+import { dampReasons } from './hour-columns.ts';
 import type { JudgedYear } from './judged-year.ts';
 import type { Ledger } from './run-result.ts';
 
@@ -7,40 +8,31 @@ const OUTSIDE = dampReasons.indexOf('outside');
 const PLANT = dampReasons.indexOf('plant');
 
 /**
- * Counts the classes of a judged year.
- * @throws RangeError when the classes do not add up to the hours of the year
+ * The classes of a judged year.
+ * @throws RangeError when they do not add up to the hours of the year
  */
-export function tallyLedger(judged: JudgedYear): Ledger {
-  const { hours, classCodes, slots } = judged;
-  const classes = countClasses(classCodes);
-  const byReason = countsOf(hours.damp, hours.count, dampReasons.length);
+export function tallyLedger(judged: JudgedYear, counts: HourCounts): Ledger {
+  const { slots, demandCount } = judged;
+  const classes = countClasses(judged, counts);
   const ledger = {
     hours: slots,
     classes,
-    dampOutside: byReason[OUTSIDE] ?? 0,
-    dampPlant: byReason[PLANT] ?? 0,
+    dampOutside: counts.byReason[OUTSIDE] ?? 0,
+    dampPlant: counts.byReason[PLANT] ?? 0,
     demand: slots - classes.closed - classes.missing - classes.idle,
-    met: countsOf(hours.met, hours.count, 2)[1] ?? 0,
+    met: demandCount - counts.unmet.count,
   };
-  assertAddsUp(ledger, hours.count);
+  assertAddsUp(ledger, demandCount);
   return ledger;
 }
 
-/** How often each code below `codes` stands among the first so many of a column. */
-function countsOf(column: Uint8Array, count: number, codes: number): Uint16Array {
-  const counts = new Uint16Array(codes);
-  inBlocks(count, (from, to) => countCodes(counts, column, from, to));
-  return counts;
-}
-
 /** Every class with its count, 0 where there is none. */
-function countClasses(classCodes: Uint8Array): Record<HourClass, number> {
-  const counts = countsOf(classCodes, classCodes.length, hourClasses.length);
-  const of = (hourClass: HourClass): number => counts[hourClasses.indexOf(hourClass)] ?? 0;
+function countClasses({ withoutDemand }: JudgedYear, { byClass }: HourCounts): Record<HourClass, number> {
+  const of = (hourClass: HourClass): number => byClass[hourClasses.indexOf(hourClass)] ?? 0;
   return {
-    closed: of('closed'),
-    missing: of('missing'),
-    idle: of('idle'),
+    closed: withoutDemand.closed,
+    missing: withoutDemand.missing,
+    idle: withoutDemand.idle,
     frozen: of('frozen'),
     damp: of('damp'),
     air: of('air'),

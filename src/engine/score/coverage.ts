@@ -47,7 +47,8 @@ export function coverageOf(input: { slots: number; missing: Uint16Array; cells: 
 function countMonths({ slots, missing, cells }: Parameters<typeof coverageOf>[0]): MonthCount[] {
   const monthOf = monthOfEachSlot(slots);
   const unknown = new Uint16Array(12);
-  for (const slot of missing) {
+  for (let index = 0; index < missing.length; index++) {
+    const slot = missing[index] ?? 0;
     const month = (monthOf[slot] ?? 1) - 1;
     unknown[month] = (unknown[month] ?? 0) + 1;
   }

@@ -47,12 +47,21 @@ export function weightedScore(
 function partOf(anchor: ScoreAnchor, input: { raw: number | null; total: number; indexPoints: boolean }): ScorePart {
   const { component, a0, a100 } = anchor;
   const { label, unit } = NAMES[component];
-  const named = { component, label, unit: input.indexPoints ? unit.replace('K h', 'point h') : unit, a0, a100 };
   const { raw, total } = input;
-  if (raw === null || total <= 0) return { ...named, raw, normalised: null, weight: 0, points: null };
-  const normalised = Math.min(Math.max((100 * (raw - a0)) / (a100 - a0), 0), 100);
-  const weight = (100 * anchor.weight) / total;
-  return { ...named, raw, normalised, weight, points: (normalised * weight) / 100 };
+  const applies = raw !== null && total > 0;
+  const normalised = applies ? Math.min(Math.max((100 * (raw - a0)) / (a100 - a0), 0), 100) : null;
+  const weight = applies ? (100 * anchor.weight) / total : 0;
+  return {
+    component,
+    label,
+    unit: input.indexPoints ? unit.replace('K h', 'point h') : unit,
+    a0,
+    a100,
+    raw,
+    normalised,
+    weight,
+    points: normalised === null ? null : (normalised * weight) / 100,
+  };
 }
 
 /** The band of a printed score in a word (method 7.4): "most", "much", "some" or "little" of the demand. */

@@ -1,46 +1,106 @@
-import { HOURS_PER_DAY } from '../conventions.ts';
-import { monthOfEachSlot } from '../reduction/calendar.ts';
-import { type HourColumns, inBlocks } from '../run/hour-columns.ts';
+import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
+import { block } from '../run/hour-block.ts';
 import type { Electricity, RunResult } from '../run/run-result.ts';
 
-/** The plant of each demand hour. */
-export type PlantColumns = Pick<
-  HourColumns,
-  'count' | 'slot' | 'evaporatedLitres' | 'makeUpLitres' | 'coolingKwh' | 'kwh' | 'referenceKwh' | 'backUpKw'
->;
-
-/** Water and electricity of the year per kW of design load (method 6); the first of equals is the peak. */
-export function tallyPlant(
-  slots: number,
-  hours: PlantColumns,
-  { countsElectricity }: { countsElectricity: boolean },
-): Pick<RunResult, 'water' | 'electricity'> {
-  return {
-    water: tallyWater(slots, hours),
-    electricity: countsElectricity ? tallyElectricity(hours) : null,
-  };
-}
-
-interface WaterSums {
+/** Water and electricity of a year so far, per kW of design load; of the greatest hours the first of equals. */
+export interface PlantSums {
   evaporatedLitres: number;
   makeUpLitres: number;
   coolingKwh: number;
   peakHourLitres: number;
-  readonly byMonth: Float64Array;
-  readonly byDay: Float64Array;
+  kwh: number;
+  referenceKwh: number;
+  peakKw: number;
+  referencePeakKw: number;
+  backUpKw: number;
+  readonly litresByMonth: Float64Array;
+  readonly litresByDay: Float64Array;
 }
 
-function tallyWater(slots: number, hours: PlantColumns): RunResult['water'] {
-  const months = monthOfEachSlot(slots);
-  const sums: WaterSums = {
-    ...{ evaporatedLitres: 0, makeUpLitres: 0, coolingKwh: 0, peakHourLitres: 0 },
-    byMonth: new Float64Array(12),
-    byDay: new Float64Array(slots / HOURS_PER_DAY),
-  };
-  inBlocks(hours.count, (from, to) => addWater(sums, hours, months, from, to));
+const now: PlantSums = {
+  ...{ evaporatedLitres: 0, makeUpLitres: 0, coolingKwh: 0, peakHourLitres: 0 },
+  ...{ kwh: 0, referenceKwh: 0, peakKw: 0, referencePeakKw: 0, backUpKw: 0 },
+  litresByMonth: new Float64Array(12),
+  litresByDay: new Float64Array(SLOTS_PER_LEAP_YEAR / HOURS_PER_DAY),
+};
+
+/** Begins a year. @returns its sums, which belong to the next year as soon as that begins */
+export function noPlant(): PlantSums {
+  Object.assign(now, { evaporatedLitres: 0, makeUpLitres: 0, coolingKwh: 0, peakHourLitres: 0 });
+  Object.assign(now, { kwh: 0, referenceKwh: 0, peakKw: 0, referencePeakKw: 0, backUpKw: 0 });
+  now.litresByMonth.fill(0);
+  now.litresByDay.fill(0);
+  return now;
+}
+
+/** Constants of this module: see `hour-block.ts`. */
+const { slot: slots, evaporatedLitres: evaporated, makeUpLitres: madeUp } = block;
+const { coolingKwh: cooled, kwh: drawn, referenceKwh: reference, backUpKw: backUp } = block;
+const { litresByMonth, litresByDay } = now;
+
+/**
+ * Adds the hours of `block`: sums run hour by hour, in slot order, wherever a block ends.
+ * @param monthOf month, 1 to 12, of every slot of the year
+ */
+export function addPlant(monthOf: Uint8Array): void {
+  addElectricity();
+  addWater(monthOf);
+}
+
+function addElectricity(): void {
+  const { count } = block;
+  let { coolingKwh, kwh, referenceKwh, peakKw, referencePeakKw, backUpKw } = now;
+  for (let at = 0; at < count; at++) {
+    const drawnKw = drawn[at] ?? 0;
+    const referenceKw = reference[at] ?? 0;
+    coolingKwh += cooled[at] ?? 0;
+    kwh += drawnKw;
+    referenceKwh += referenceKw;
+    const leftKw = backUp[at] ?? 0;
+    if (drawnKw > peakKw) peakKw = drawnKw;
+    if (referenceKw > referencePeakKw) referencePeakKw = referenceKw;
+    if (leftKw > backUpKw) backUpKw = leftKw;
+  }
+  now.coolingKwh = coolingKwh;
+  now.kwh = kwh;
+  now.referenceKwh = referenceKwh;
+  now.peakKw = peakKw;
+  now.referencePeakKw = referencePeakKw;
+  now.backUpKw = backUpKw;
+}
+
+function addWater(monthOf: Uint8Array): void {
+  const { count } = block;
+  let { evaporatedLitres, makeUpLitres, peakHourLitres } = now;
+  for (let at = 0; at < count; at++) {
+    const litres = madeUp[at] ?? 0;
+    if (litres === 0) continue;
+    const slot = slots[at] ?? 0;
+    evaporatedLitres += evaporated[at] ?? 0;
+    makeUpLitres += litres;
+    if (litres > peakHourLitres) peakHourLitres = litres;
+    const month = (monthOf[slot] ?? 1) - 1;
+    const day = (slot / HOURS_PER_DAY) | 0;
+    litresByMonth[month] = (litresByMonth[month] ?? 0) + litres;
+    litresByDay[day] = (litresByDay[day] ?? 0) + litres;
+  }
+  now.evaporatedLitres = evaporatedLitres;
+  now.makeUpLitres = makeUpLitres;
+  now.peakHourLitres = peakHourLitres;
+}
+
+/** Water and electricity of the year per kW of design load (method 6); the first of equals is the peak. */
+export function plantOfYear(
+  sums: PlantSums,
+  { countsElectricity }: { countsElectricity: boolean },
+): Pick<RunResult, 'water' | 'electricity'> {
+  return { water: waterOf(sums), electricity: countsElectricity ? electricityOf(sums) : null };
+}
+
+function waterOf(sums: PlantSums): RunResult['water'] {
   const { evaporatedLitres, makeUpLitres, coolingKwh, peakHourLitres } = sums;
-  const worstMonth = peakOf(sums.byMonth);
-  const peakDay = peakOf(sums.byDay);
+  const worstMonth = peakOf(sums.litresByMonth);
+  const peakDay = peakOf(sums.litresByDay);
   return {
     makeUpLitres,
     evaporatedLitres,
@@ -54,54 +114,9 @@ function tallyWater(slots: number, hours: PlantColumns): RunResult['water'] {
   };
 }
 
-function addWater(sums: WaterSums, hours: PlantColumns, months: Uint8Array, from: number, to: number): void {
-  let { evaporatedLitres, makeUpLitres, coolingKwh, peakHourLitres } = sums;
-  const { byMonth, byDay } = sums;
-  for (let at = from; at < to; at++) {
-    coolingKwh += hours.coolingKwh[at] ?? 0;
-    const madeUp = hours.makeUpLitres[at] ?? 0;
-    if (madeUp === 0) continue;
-    const slot = hours.slot[at] ?? 0;
-    evaporatedLitres += hours.evaporatedLitres[at] ?? 0;
-    makeUpLitres += madeUp;
-    peakHourLitres = Math.max(peakHourLitres, madeUp);
-    const month = (months[slot] ?? 1) - 1;
-    const day = (slot / HOURS_PER_DAY) | 0;
-    byMonth[month] = (byMonth[month] ?? 0) + madeUp;
-    byDay[day] = (byDay[day] ?? 0) + madeUp;
-  }
-  sums.evaporatedLitres = evaporatedLitres;
-  sums.makeUpLitres = makeUpLitres;
-  sums.coolingKwh = coolingKwh;
-  sums.peakHourLitres = peakHourLitres;
-}
-
-function tallyElectricity(hours: PlantColumns): Electricity {
-  const sums = { kwh: 0, referenceKwh: 0, peakKw: 0, referencePeakKw: 0, backUpKw: 0 };
-  inBlocks(hours.count, (from, to) => addElectricity(sums, hours, from, to));
-  const { kwh, referenceKwh, peakKw, referencePeakKw, backUpKw } = sums;
+function electricityOf({ kwh, referenceKwh, peakKw, referencePeakKw, backUpKw }: PlantSums): Electricity {
   const savedPct = referenceKwh > 0 ? (100 * (referenceKwh - kwh)) / referenceKwh : null;
   return { kwh, referenceKwh, savedPct, peakKw, referencePeakKw, backUpKw };
-}
-
-type ElectricitySums = { -readonly [Sum in keyof Omit<Electricity, 'savedPct'>]: number };
-
-function addElectricity(sums: ElectricitySums, hours: PlantColumns, from: number, to: number): void {
-  let { kwh, referenceKwh, peakKw, referencePeakKw, backUpKw } = sums;
-  for (let at = from; at < to; at++) {
-    const drawn = hours.kwh[at] ?? 0;
-    const reference = hours.referenceKwh[at] ?? 0;
-    kwh += drawn;
-    referenceKwh += reference;
-    peakKw = Math.max(peakKw, drawn);
-    referencePeakKw = Math.max(referencePeakKw, reference);
-    backUpKw = Math.max(backUpKw, hours.backUpKw[at] ?? 0);
-  }
-  sums.kwh = kwh;
-  sums.referenceKwh = referenceKwh;
-  sums.peakKw = peakKw;
-  sums.referencePeakKw = referencePeakKw;
-  sums.backUpKw = backUpKw;
 }
 
 /** The first greatest value over 0 with its place; null when none is over 0. */

@@ -1,8 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import type { Brief } from '#engine/brief/brief.ts';
 import { judgeSupplyAirHour } from '#engine/hour-classes/judge-supply-air-hour.ts';
+import { monthOfEachSlot } from '#engine/reduction/calendar.ts';
+import { block } from '#engine/run/hour-block.ts';
+import { appendHours, type HourColumns } from '#engine/run/hour-columns.ts';
 import { supplyAirPlantHour } from '#engine/water-energy/air-plant-hour.ts';
-import { tallyPlant } from '#engine/water-energy/tally-plant.ts';
+import { addPlant, noPlant, plantOfYear } from '#engine/water-energy/tally-plant.ts';
 import { hoursLike } from '../../support/judged-hours.ts';
 import { presetBrief } from '../../support/presets.ts';
 import { hourUnder } from '../hour-classes/random-hours.ts';
@@ -86,12 +89,20 @@ describe('the plant of one hour, per kW of design load', () => {
 
 const COUNTED = { countsElectricity: true };
 
+/** The plant of demand hours that come in one block. */
+function tallyPlant(hours: HourColumns, counted: { countsElectricity: boolean }) {
+  const sums = noPlant();
+  block.count = 0;
+  appendHours(block, hours);
+  addPlant(monthOfEachSlot(8760));
+  return plantOfYear(sums, counted);
+}
+
 describe('the plant of a year', () => {
   const hour = { evaporatedLitres: 3, makeUpLitres: 4, coolingKwh: 2, kwh: 0.5, referenceKwh: 1, backUpKw: 0.2 };
 
   test('adds up, and names the worst month, the peak day and the peak hour', () => {
     const { water, electricity } = tallyPlant(
-      8760,
       hoursLike([
         { slot: 0, plant: hour },
         { slot: 24 * 40, plant: { ...hour, backUpKw: 0.7 } },
@@ -115,14 +126,14 @@ describe('the plant of a year', () => {
   });
 
   test('without demand has no figure that would need a denominator', () => {
-    const { water, electricity } = tallyPlant(8760, hoursLike([]), COUNTED);
+    const { water, electricity } = tallyPlant(hoursLike([]), COUNTED);
     expect(water).toMatchObject({ makeUpLitres: 0, litresPerKwh: null, worstMonth: null, peakDay: null });
     expect(electricity).toMatchObject({ kwh: 0, savedPct: null });
   });
 
   test('of a turbine inlet has water and no electricity', () => {
     const inlet = { ...hour, kwh: null, referenceKwh: null, backUpKw: 0 };
-    const { water, electricity } = tallyPlant(8760, hoursLike([{ slot: 3, plant: inlet }]), {
+    const { water, electricity } = tallyPlant(hoursLike([{ slot: 3, plant: inlet }]), {
       countsElectricity: false,
     });
     expect(electricity).toBeNull();

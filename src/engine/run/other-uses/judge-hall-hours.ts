@@ -1,5 +1,5 @@
 /**
- * Method 5 and 6 for every demand hour of a data hall: `judgeReturnAirHour` and `returnAirPlantHour` in columns, figure by figure; a
+ * Method 5 and 6 for many demand hours of a data hall: `judgeReturnAirHour` and `returnAirPlantHour` in columns, figure by figure; a
  * test holds them together.
  */
 import type { Brief } from '../../brief/brief.ts';
@@ -12,7 +12,7 @@ import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
 import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
 import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
-import { fillWithAir, type HourColumns, inBlocks, runningStages } from '../hour-columns.ts';
+import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const DRY = hourClasses.indexOf('air');
@@ -24,21 +24,19 @@ const DRY_BIT = 1 << runningStages.indexOf('air');
 const WET_BIT = 1 << INDIRECT;
 
 export function judgeHallHours(brief: Brief, hours: HourColumns): void {
-  fillWithAir(hours, 0);
+  fillWithAir(hours);
   hours.supplyRatio.fill(Number.NaN, 0, hours.count);
-  inBlocks(hours.count, (from, to) => {
-    judgeDry(brief, hours, from, to);
-    if (brief.stages.includes('indirect')) judgeWet(brief, hours, from, to);
-    hallPlant(brief, hours, from, to);
-  });
+  judgeDry(brief, hours);
+  if (brief.stages.includes('indirect')) judgeWet(brief, hours);
+  hallPlant(brief, hours);
 }
 
 /** What the dry exchanger supplies, t_ret - e_x (t_ret - t), not below t_sup. */
-function judgeDry(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function judgeDry(brief: Brief, hours: HourColumns): void {
   const riseK = hallRiseK(brief);
   const freezeHundredths = hundredths(brief.freezeLockoutC);
   const alone = brief.stages.includes('indirect') ? DRY_BIT | WET_BIT : DRY_BIT;
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const tempC = hours.dryBulbC[at] ?? 0;
     const aimC = hours.supplyAimC[at] ?? 0;
     const returnC = aimC + riseK;
@@ -59,11 +57,11 @@ function judgeDry(brief: Brief, hours: HourColumns, from: number, to: number): v
 }
 
 /** Hours that the dry exchanger leaves, under its wetted surface. */
-function judgeWet(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function judgeWet(brief: Brief, hours: HourColumns): void {
   const riseK = hallRiseK(brief);
   const { effIndirect, k } = brief;
   const modulating = brief.control === 'modulating';
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     if (hours.classCode[at] !== BEYOND) continue;
     const aimC = hours.supplyAimC[at] ?? 0;
     const dryC = hours.airSupplyC[at] ?? 0;
@@ -90,11 +88,11 @@ function judgeWet(brief: Brief, hours: HourColumns, from: number, to: number): v
 }
 
 /** The return-air fan figure, wet or dry, in the plant and in the reference. */
-function hallPlant(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function hallPlant(brief: Brief, hours: HourColumns): void {
   const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * hallRiseK(brief));
   const { cop, economy } = brief.reference;
   const fan = brief.fanWPerLs.returnAir;
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const load = hours.loadFraction[at] ?? 0;
     const carried = hours.carriedShare[at] ?? 0;
     const fanKw = fan * (airflowKgPerS * (hours.volumeM3PerKg[at] ?? 0));

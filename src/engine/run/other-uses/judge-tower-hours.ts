@@ -1,5 +1,5 @@
 /**
- * Method 5 and 6 for every demand hour of process water from a cooling tower: `judgeTowerHour` and `towerPlantHour` in columns, figure
+ * Method 5 and 6 for many demand hours of process water from a cooling tower: `judgeTowerHour` and `towerPlantHour` in columns, figure
  * by figure; a test holds them together.
  */
 import type { Brief } from '../../brief/brief.ts';
@@ -9,7 +9,7 @@ import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { towerLimit } from '../../hour-classes/judge-tower-hour.ts';
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { towerPlant } from '../../water-energy/tower-plant-hour.ts';
-import { fillWithAir, type HourColumns, inBlocks, runningStages } from '../hour-columns.ts';
+import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const MET = hourClasses.indexOf('direct');
@@ -19,22 +19,20 @@ const TOWER = runningStages.indexOf('tower');
 const DIRECT_BIT = 1 << runningStages.indexOf('direct');
 
 export function judgeTowerHours(brief: Brief, hours: HourColumns): void {
-  fillWithAir(hours, 0);
+  fillWithAir(hours);
   hours.supplyRatio.fill(Number.NaN, 0, hours.count);
   const { coldC, rangeK } = towerLimit(brief);
   hours.airSupplyC.fill(coldC + rangeK, 0, hours.count);
   hours.airMeets.fill(0, 0, hours.count);
-  inBlocks(hours.count, (from, to) => {
-    judgeBlock(brief, hours, from, to);
-    fillPlant(brief, hours, from, to);
-  });
+  judgeTower(brief, hours);
+  fillPlant(brief, hours);
 }
 
-function judgeBlock(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function judgeTower(brief: Brief, hours: HourColumns): void {
   const { coldC, rangeK, approachK, exchangerK } = towerLimit(brief);
   const freezeHundredths = hundredths(brief.freezeLockoutC);
   const modulating = brief.control === 'modulating';
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const tempC = hours.dryBulbC[at] ?? 0;
     const frozen = hundredths(tempC) <= freezeHundredths;
     // A drained tower sends the water back as warm as it came.
@@ -58,10 +56,10 @@ function judgeBlock(brief: Brief, hours: HourColumns, from: number, to: number):
   }
 }
 
-function fillPlant(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function fillPlant(brief: Brief, hours: HourColumns): void {
   const plan = towerPlant(brief);
   const { cop } = brief.reference;
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const load = hours.loadFraction[at] ?? 0;
     const runs = hours.running[at] === TOWER;
     const rejectedKw = load * (hours.carriedShare[at] ?? 0);

@@ -1,5 +1,5 @@
 /**
- * Method 5 and 6 for every demand hour of a turbine inlet: `judgeTurbineHour` and `turbinePlantHour` in columns, figure by figure; a
+ * Method 5 and 6 for many demand hours of a turbine inlet: `judgeTurbineHour` and `turbinePlantHour` in columns, figure by figure; a
  * test holds them together.
  */
 import type { Brief } from '../../brief/brief.ts';
@@ -13,7 +13,7 @@ import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { humidityRatioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
 import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
 import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
-import { fillWithAir, type HourColumns, inBlocks, runningStages } from '../hour-columns.ts';
+import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const BY_AIR = hourClasses.indexOf('air');
@@ -25,22 +25,20 @@ const AIR_BIT = 1 << runningStages.indexOf('air');
 const DIRECT_BIT = 1 << DIRECT;
 
 export function judgeTurbineHours(brief: Brief, hours: HourColumns): void {
-  fillWithAir(hours, 0);
+  fillWithAir(hours);
   hours.kwh.fill(Number.NaN, 0, hours.count);
   hours.referenceKwh.fill(Number.NaN, 0, hours.count);
   hours.backUpKw.fill(0, 0, hours.count);
-  inBlocks(hours.count, (from, to) => {
-    judgeOutdoorAir(brief, hours, from, to);
-    if (brief.stages.includes('direct')) judgeWetted(brief, hours, from, to);
-    fillPlant(brief, hours, from, to);
-  });
+  judgeOutdoorAir(brief, hours);
+  if (brief.stages.includes('direct')) judgeWetted(brief, hours);
+  fillPlant(brief, hours);
 }
 
 /** The inlet as it is without water. */
-function judgeOutdoorAir(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function judgeOutdoorAir(brief: Brief, hours: HourColumns): void {
   const { targetC } = turbineLimit(brief);
   const freezeHundredths = hundredths(brief.freezeLockoutC);
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const tempC = hours.dryBulbC[at] ?? 0;
     const reached = hundredths(tempC) <= hundredths(targetC);
     const shortfallK = reached ? 0 : Math.max(0, tempC - targetC);
@@ -55,9 +53,9 @@ function judgeOutdoorAir(brief: Brief, hours: HourColumns, from: number, to: num
 }
 
 /** At full effect down to the floor, wherever the brief lets the stage run. */
-function judgeWetted(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function judgeWetted(brief: Brief, hours: HourColumns): void {
   const { targetC, floorC } = turbineLimit(brief);
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     if (hours.classCode[at] === FROZEN) continue;
     const tempC = hours.dryBulbC[at] ?? 0;
     const ratio = hours.humidityRatio[at] ?? 0;
@@ -98,9 +96,9 @@ function mayStart(brief: Brief, hours: HourColumns, at: number): boolean {
   return hundredths(outdoorPct) <= hundredths(maxOutdoorRhPct);
 }
 
-function fillPlant(brief: Brief, hours: HourColumns, from: number, to: number): void {
+function fillPlant(brief: Brief, hours: HourColumns): void {
   const airflowKgPerS = 1 / DRY_AIR_KJ_PER_KG_K;
-  for (let at = from; at < to; at++) {
+  for (let at = 0; at < hours.count; at++) {
     const evaporated = airflowKgPerS * (hours.evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
     hours.evaporatedLitres[at] = evaporated;
     hours.makeUpLitres[at] = evaporated + evaporated / (brief.cycles - 1);

@@ -11,12 +11,13 @@ import { DRY_AIR_KJ_PER_KG_K, fanRiseK } from '../../stages/stage-path.ts';
 import { makeUpLitres, SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { runningStages } from '../hour-columns.ts';
 
+const DIRECT = runningStages.indexOf('direct');
+const TWO_STAGE = runningStages.indexOf('twostage');
+
 /** Class of an hour that a stage meets, by the stage's position in `runningStages`. */
 export const CLASS_OF_STAGE = Uint8Array.from(runningStages, (stage) =>
   stage === null || stage === 'tower' ? 0 : hourClasses.indexOf(stage),
 );
-/** An hour that nothing has met yet: a class that no demand hour has. */
-export const UNDECIDED = hourClasses.indexOf('closed');
 
 export interface RoomPlan {
   readonly freezeHundredths: number;
@@ -35,6 +36,10 @@ export interface RoomPlan {
   readonly onOff: boolean;
   /** Positions in `runningStages`, in the brief's order. */
   readonly stages: readonly number[];
+  /** Places in `stages` in the order in which the lowest supply is looked for: those that add no moisture, two-stage, direct. */
+  readonly dryFirst: readonly number[];
+  /** How many add no moisture. */
+  readonly dryStages: number;
   /** All of them and air, as bits. */
   readonly allAlone: number;
   /** Fan rise, K per m³ of air and kg of dry air, and fan electricity, kWh per m³/kg of the hour: by position in `runningStages`. */
@@ -67,6 +72,9 @@ export function roomPlan(brief: Brief): RoomPlan {
 function makePlan(brief: Brief): RoomPlan {
   const { caps, fanWPerLs: fan } = brief;
   const stages = brief.stages.map(positionOf);
+  const placesOf = (isAsked: (stage: number) => boolean) =>
+    stages.flatMap((stage, nth) => (isAsked(stage) ? [nth] : []));
+  const dry = placesOf((stage) => stage !== DIRECT && stage !== TWO_STAGE);
   const fans = Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0);
   const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * brief.dTroomK);
   return {
@@ -83,6 +91,8 @@ function makePlan(brief: Brief): RoomPlan {
     capsSupply: caps.supplyRhPct !== undefined || caps.supplyDewPointC !== undefined,
     onOff: brief.control === 'on-off',
     stages,
+    dryFirst: [...dry, ...placesOf((stage) => stage === TWO_STAGE), ...placesOf((stage) => stage === DIRECT)],
+    dryStages: dry.length,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),
     riseKPerVolume: fans.map((wattPerLs) => fanRiseK(wattPerLs, 1)),
     fanKwhPerVolume: fans.map((wattPerLs) => wattPerLs * airflowKgPerS),

@@ -10,15 +10,28 @@
  *
  * Small functions of numbers: what calls them in a loop is compiled with them in it, and no number leaves the processor.
  */
+import { dewPointC } from '../../psychrometrics/moist-air.ts';
 import { ICE, WATER } from '../../psychrometrics/wet-surface.ts';
 
-export const AIR_KJ_PER_KG_K = 1.006;
-export const VAPOUR_KJ_PER_KG_K = 1.86;
+const AIR_KJ_PER_KG_K = 1.006;
+const VAPOUR_KJ_PER_KG_K = 1.86;
 const LATENT_KJ_PER_KG = 2501;
+const water = WATER;
+const ice = ICE;
 
 /** How far an indirect stage cools at full effect, K: warmer secondary air cools nothing. */
 export function indirectFallK(effIndirect: number, dryBulbC: number, wetBulbC: number): number {
   return Math.max(0, effIndirect * (dryBulbC - wetBulbC));
+}
+
+/** The same of a dew-point stage, K. */
+export function dewPointFallK(
+  effDewPoint: number,
+  dryBulbC: number,
+  humidityRatio: number,
+  pressurePa: number,
+): number {
+  return effDewPoint * (dryBulbC - dewPointC(dryBulbC, humidityRatio, pressurePa));
 }
 
 /** The least share at which the supply is at most a temperature; 1 when it never is. */
@@ -30,15 +43,17 @@ export function shareFor(dryC: number, fallK: number, supplyC: number): number {
 
 /** Of a moist line, kJ/kg: what is shared out between heat and vapour. */
 export function lineTop(humidityRatio: number, entersC: number, wetC: number): number {
-  const surface = wetC >= 0 ? WATER : ICE;
   const enthalpy = AIR_KJ_PER_KG_K * entersC + humidityRatio * (LATENT_KJ_PER_KG + VAPOUR_KJ_PER_KG_K * entersC);
-  return enthalpy + humidityRatio * (surface.fusionKJPerKg - surface.surfaceKJPerKgK * wetC);
+  return wetC >= 0
+    ? enthalpy + humidityRatio * (water.fusionKJPerKg - water.surfaceKJPerKgK * wetC)
+    : enthalpy + humidityRatio * (ice.fusionKJPerKg - ice.surfaceKJPerKgK * wetC);
 }
 
 /** What a kilogram of vapour takes of it at 0 °C. */
 export function lineBottom(wetC: number): number {
-  const surface = wetC >= 0 ? WATER : ICE;
-  return surface.latentKJPerKg - surface.surfaceKJPerKgK * wetC;
+  return wetC >= 0
+    ? water.latentKJPerKg - water.surfaceKJPerKgK * wetC
+    : ice.latentKJPerKg - ice.surfaceKJPerKgK * wetC;
 }
 
 /** Humidity ratio on the line, kg/kg, of air that leaves the medium at a temperature. */

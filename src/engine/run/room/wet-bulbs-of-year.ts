@@ -1,6 +1,5 @@
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import type { PackedYear } from '../../reduction/weather-year.ts';
-import type { HourColumns } from '../hour-columns.ts';
 
 /**
  * Wet bulbs of a weather year by slot, °C: each computed when it is first asked for, NaN before. Derived, never stored; kept beside
@@ -30,20 +29,26 @@ function noneYet(slots: number): WetBulbs {
   return { wetBulbC: none(), secondWetBulbC: none(), effIndirect: Number.NaN };
 }
 
-/** Wet bulb of the hour at a place in the columns, °C. */
-export function wetBulbAt({ wetBulbC: found }: WetBulbs, hours: HourColumns, at: number): number {
-  const slot = hours.slot[at] ?? 0;
-  const known = found[slot] ?? Number.NaN;
-  if (!Number.isNaN(known)) return known;
-  found[slot] = wetBulbC(hours.dryBulbC[at] ?? 0, hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
-  return found[slot] ?? Number.NaN;
+/** Computes the wet bulb of a slot, °C, and keeps it. */
+export function findWetBulb(
+  { wetBulbC: kept }: WetBulbs,
+  slot: number,
+  tempC: number,
+  ratio: number,
+  pressurePa: number,
+) {
+  kept[slot] = wetBulbC(tempC, ratio, pressurePa);
+  return kept[slot] ?? Number.NaN;
 }
 
-/** The same of outdoor air cooled to `betweenC` by an indirect stage at full effect, its moisture kept. */
-export function secondWetBulbAt({ secondWetBulbC: found }: WetBulbs, hours: HourColumns, at: number, betweenC: number) {
-  const slot = hours.slot[at] ?? 0;
-  const known = found[slot] ?? Number.NaN;
-  if (!Number.isNaN(known)) return known;
-  found[slot] = wetBulbC(betweenC, hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
-  return found[slot] ?? Number.NaN;
+/** The same of its air cooled to `betweenC` by an indirect stage at full effect, its moisture kept. */
+export function findSecondWetBulb(
+  { secondWetBulbC: kept }: WetBulbs,
+  slot: number,
+  betweenC: number,
+  ratio: number,
+  pressurePa: number,
+): number {
+  kept[slot] = wetBulbC(betweenC, ratio, pressurePa);
+  return kept[slot] ?? Number.NaN;
 }
