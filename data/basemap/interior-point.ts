@@ -39,11 +39,38 @@ export function interiorPoint(polygon: PolygonRings): Position {
 
 /** Whether a position lies inside a polygon and outside its holes (even-odd rule). */
 export function contains(polygon: PolygonRings, [x, y]: Position): boolean {
+  const { west, east, south, north } = boxOf(polygon);
+  if (x < west || x > east || y < south || y > north) return false;
   let inside = false;
   for (const [a, b] of segments(polygon)) {
     if (a[1] > y !== b[1] > y && x < ((b[0] - a[0]) * (y - a[1])) / (b[1] - a[1]) + a[0]) inside = !inside;
   }
   return inside;
+}
+
+interface Box {
+  readonly west: number;
+  readonly east: number;
+  readonly south: number;
+  readonly north: number;
+}
+
+/** Of thousands of polygons nearly all are ruled out by their box, which is found once. */
+const boxes = new WeakMap<PolygonRings, Box>();
+
+function boxOf(polygon: PolygonRings): Box {
+  const known = boxes.get(polygon);
+  if (known !== undefined) return known;
+  let [west, east, south, north] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const [x, y] of polygon[0] ?? []) {
+    west = Math.min(west, x);
+    east = Math.max(east, x);
+    south = Math.min(south, y);
+    north = Math.max(north, y);
+  }
+  const box = { west, east, south, north };
+  boxes.set(polygon, box);
+  return box;
 }
 
 /** Degrees of longitude from the first outline west of a position to the first one east of it. */

@@ -67,9 +67,8 @@ test('while the database is away every request says so and when to come back; af
 });
 
 test('connections that the database itself cuts are replaced without anybody noticing for long', async () => {
-  // Three at once, so that the pool has three connections, however slow the machine is.
-  const open = await Promise.all([1, 2, 3].map(() => db.transaction()));
-  await Promise.all(open.map((transaction) => transaction.rollback()));
+  // Three at once and long enough to overlap, so that the pool has three connections.
+  await Promise.all([1, 2, 3].map(() => db.raw('select pg_sleep(1)')));
   const cut = await web.deps.db.raw<{ rows: unknown[] }>(
     'select pg_terminate_backend(pid) from pg_stat_activity where application_name = ?',
     [APPLICATION],

@@ -12,9 +12,9 @@ import { startCommand } from '../../support/run-command.ts';
 import { samples } from '../../support/sample-size.ts';
 import { zipBytes } from '../../support/zip-bytes.ts';
 
-const FILES = samples(6, 200);
+const FILES = samples(3, 200);
 const KILLS = samples(3, 50);
-const LONGEST_LIFE_MS = 2500;
+const LONGEST_LIFE_MS = 1500;
 const FOR_ALL_MS = 60_000 + KILLS * 20_000 + FILES * 1000;
 
 let road: Road;
