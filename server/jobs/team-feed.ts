@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import { TeamEvent } from '#contract/weather.ts';
+import { TeamEvent } from '#contract/team-events.ts';
 import { createEventQueue, type EventQueue } from './event-queue.ts';
 import { keepListening, type ListenerLog } from './listener.ts';
 

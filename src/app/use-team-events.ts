@@ -1,10 +1,13 @@
 import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
-import { getMap, getStationPlace } from '../contract/runs.ts';
+import { getMap } from '../contract/programme-map.ts';
+import { getStationPlace } from '../contract/runs.ts';
 import { getStation, listStations } from '../contract/stations.ts';
-import { getWeatherFile, listWeatherFiles, type TeamEvent, watchTeam } from '../contract/weather.ts';
+import { type TeamEvent, watchTeam } from '../contract/team-events.ts';
+import { getWeatherFile } from '../contract/weather.ts';
 import { getWeatherBatch, listWeatherBatches } from '../contract/weather-batches.ts';
+import { listWeatherFiles } from '../contract/weather-library.ts';
 import { type StreamState, subscribe } from '../lib/api-client.ts';
 import { sessionQuery } from '../lib/session-query.ts';
 

@@ -4,12 +4,17 @@ import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
+import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
+import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
 import * as stations from './stations.ts';
+import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
+import * as acts from './weather-acts.ts';
 import * as batches from './weather-batches.ts';
+import * as library from './weather-library.ts';
 import * as reading from './weather-reading.ts';
 
 export const endpoints = {
@@ -17,14 +22,14 @@ export const endpoints = {
   signIn: accounts.signIn,
   signOut: accounts.signOut,
   setUp: accounts.setUp,
-  listWeatherFiles: weather.listWeatherFiles,
+  listWeatherFiles: library.listWeatherFiles,
   uploadWeatherFile: weather.uploadWeatherFile,
   getWeatherFile: weather.getWeatherFile,
   getOriginal: weather.getOriginal,
-  acceptWeatherFile: weather.acceptWeatherFile,
-  withdrawWeatherFile: weather.withdrawWeatherFile,
-  actOnWeatherFiles: weather.actOnWeatherFiles,
-  retryWeatherFile: weather.retryWeatherFile,
+  acceptWeatherFile: acts.acceptWeatherFile,
+  withdrawWeatherFile: acts.withdrawWeatherFile,
+  actOnWeatherFiles: acts.actOnWeatherFiles,
+  retryWeatherFile: acts.retryWeatherFile,
   answerWeatherFile: reading.answerWeatherFile,
   getWeatherFileLines: reading.getWeatherFileLines,
   getWeatherYearColumns: reading.getWeatherYearColumns,
@@ -44,11 +49,11 @@ export const endpoints = {
   retryWeatherArchive: batches.retryWeatherArchive,
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
-  watchTeam: weather.watchTeam,
-  getMap: runs.getMap,
+  watchTeam: events.watchTeam,
+  getMap: map.getMap,
   getStationPlace: runs.getStationPlace,
-  getRunHours: runs.getRunHours,
-  exportRunHours: runs.exportRunHours,
+  getRunHours: hours.getRunHours,
+  exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,
   listBriefs: briefs.listBriefs,

@@ -1,12 +1,12 @@
 import * as z from 'zod/mini';
-import { empty, endpoint, file, json, none, ordinary } from './endpoint.ts';
+import { endpoint, json, none, ordinary } from './endpoint.ts';
 import { FileStatus } from './weather.ts';
 
 export const ProgrammeParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid() });
 const PlaceParams = z.strictObject({ teamId: z.uuid(), programmeId: z.uuid(), stationId: z.uuid() });
 
 /** Which of the programme's briefs; without one, the brief that was saved last. */
-const OfBrief = z.strictObject({ brief: z.optional(z.uuid()) });
+export const OfBrief = z.strictObject({ brief: z.optional(z.uuid()) });
 
 export const HourClass = z.enum([
   'closed',
@@ -41,43 +41,6 @@ export const BriefBasis = z.object({
   methodVersion: z.string(),
 });
 export type BriefBasis = z.infer<typeof BriefBasis>;
-
-export const MapStation = z.object({
-  id: z.uuid(),
-  name: z.string(),
-  latitude: z.number(),
-  longitude: z.number(),
-  elevationM: z.number(),
-  /** null: not judged yet, excluded, or no demand; `scoreNote` says which. */
-  score: z.nullable(z.int()),
-  scoreNote: z.nullable(z.string()),
-  grade: Grade,
-  verdict: z.nullable(Verdict),
-});
-export type MapStation = z.infer<typeof MapStation>;
-
-export const ProgrammeMap = z.object({
-  programme: z.object({ id: z.uuid(), name: z.string() }),
-  invented: z.boolean(),
-  brief: BriefBasis,
-  stations: z.array(MapStation),
-  /** Runs that are still being computed. */
-  pending: z.int(),
-});
-export type ProgrammeMap = z.infer<typeof ProgrammeMap>;
-
-export const getMap = endpoint({
-  method: 'GET',
-  path: '/api/teams/:teamId/programmes/:programmeId/map',
-  summary: 'Every station of the team with its score under the programme’s brief.',
-  params: ProgrammeParams,
-  query: OfBrief,
-  body: none,
-  response: json(ProgrammeMap),
-  errors: [],
-  allow: 'runs.view',
-  limits: ordinary,
-});
 
 /** One component of the score with its arithmetic: s = clamp(100 (raw - a0) / (a100 - a0)), points = s x weight / 100. */
 export const ScorePart = z.object({
@@ -261,32 +224,6 @@ export const getStationPlace = endpoint({
   query: OfBrief,
   body: none,
   response: json(Place),
-  errors: [],
-  allow: 'runs.view',
-  limits: ordinary,
-});
-
-export const exportRunHours = endpoint({
-  method: 'GET',
-  path: '/api/teams/:teamId/runs/:runId/hours.csv',
-  summary: 'Every hour of a run as a table: its weather, what was asked, what the plant gave, its class and why.',
-  params: z.strictObject({ teamId: z.uuid(), runId: z.uuid() }),
-  query: empty,
-  body: none,
-  response: file({ mediaType: 'text/csv; charset=utf-8', attachment: true }),
-  errors: ['wrong_state', 'not_allowed'],
-  allow: 'runs.export',
-  limits: { ...ordinary, perMinute: 60, seconds: 120 },
-});
-
-export const getRunHours = endpoint({
-  method: 'GET',
-  path: '/api/teams/:teamId/runs/:runId/hours',
-  summary: 'The hour class of every slot of a run: one byte a slot, the position of the class in the list of classes.',
-  params: z.strictObject({ teamId: z.uuid(), runId: z.uuid() }),
-  query: empty,
-  body: none,
-  response: file({ mediaType: 'application/octet-stream', attachment: false }),
   errors: [],
   allow: 'runs.view',
   limits: ordinary,

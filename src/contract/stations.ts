@@ -1,11 +1,11 @@
 import * as z from 'zod/mini';
 import { empty, endpoint, json, none, ordinary } from './endpoint.ts';
+import { Reason } from './reason.ts';
 import { WeatherFile, YearFacts } from './weather.ts';
 import { RuleName } from './weather-reading.ts';
 
 const TeamParams = z.strictObject({ teamId: z.uuid() });
 const StationParams = z.strictObject({ teamId: z.uuid(), stationId: z.uuid() });
-const Reason = z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.'));
 
 export const Station = z.object({
   id: z.uuid(),

@@ -1,13 +1,13 @@
 import * as z from 'zod/mini';
 import { ruleNames } from '../engine/weather-files/quality/quality-options.ts';
 import { empty, endpoint, file, json, none, ordinary } from './endpoint.ts';
+import { Reason } from './reason.ts';
 import { WeatherFile } from './weather.ts';
 import { AnswersBody, StatedPlaceBody, TableMappingBody } from './weather-answers.ts';
 
 const FileParams = z.strictObject({ teamId: z.uuid(), fileId: z.uuid() });
 
 export const RuleName = z.enum(ruleNames);
-const Reason = z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.'));
 
 /** Everything that people have said of a file; each reading anew goes by it. */
 export const FileAnswers = z.strictObject({

@@ -1,5 +1,5 @@
 import * as z from 'zod/mini';
-import { empty, endpoint, events, file, json, none, ordinary, upload } from './endpoint.ts';
+import { empty, endpoint, file, json, none, ordinary, upload } from './endpoint.ts';
 import { AnswersBody, StatedPlaceBody, TableMappingBody } from './weather-answers.ts';
 import { ClimateDifference, HumidityRule, MonthlyChange } from './weather-change.ts';
 
@@ -187,52 +187,6 @@ export const WeatherFileRecord = z.object({
 });
 export type WeatherFileRecord = z.infer<typeof WeatherFileRecord>;
 
-/** What the library can be narrowed to: a status, or files that stopped for a fault of ours. */
-export const LibraryStatus = z.enum([...FileStatus.options, 'stopped']);
-export type LibraryStatus = z.infer<typeof LibraryStatus>;
-
-export const LibrarySort = z.enum(['uploaded', 'name', 'station', 'complete']);
-export type LibrarySort = z.infer<typeof LibrarySort>;
-
-export const LibraryQuery = z.strictObject({
-  status: z.optional(LibraryStatus),
-  /** Part of the file's or the station's name, or of its WMO number. */
-  text: z.optional(z.string().check(z.trim(), z.maxLength(100))),
-  format: z.optional(z.string().check(z.maxLength(40))),
-  kind: z.optional(z.enum(['typical', 'actual', 'derived'])),
-  batchId: z.optional(z.uuid()),
-  stationId: z.optional(z.uuid()),
-  sort: z._default(LibrarySort, 'uploaded'),
-  order: z._default(z.enum(['asc', 'desc']), 'desc'),
-  page: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(100_000)), 1),
-  limit: z._default(z.coerce.number().check(z.int(), z.gte(1), z.lte(200)), 100),
-});
-
-export const listWeatherFiles = endpoint({
-  method: 'GET',
-  path: '/api/teams/:teamId/weather-files',
-  summary: "The team's weather files, filtered, sorted, a page at a time; by default newest first.",
-  params: TeamParams,
-  query: LibraryQuery,
-  body: none,
-  response: json(
-    z.object({
-      items: z.array(WeatherFile),
-      /** Files that the filter leaves. */
-      total: z.int(),
-      page: z.int(),
-      pages: z.int(),
-      /** Files of the whole team by status, and how many stopped. */
-      counts: z.record(LibraryStatus, z.int()),
-      /** Formats that occur in the team. */
-      formats: z.array(z.string()),
-    }),
-  ),
-  errors: [],
-  allow: 'weather.view',
-  limits: ordinary,
-});
-
 /** Largest plain file that is taken. */
 export const MAX_FILE_BYTES = 64 * 1024 * 1024;
 
@@ -274,96 +228,4 @@ export const getOriginal = endpoint({
   errors: [],
   allow: 'weather.original',
   limits: { ...ordinary, perMinute: 60, seconds: 120 },
-});
-
-const Reason = z.string().check(z.trim(), z.minLength(1, 'Say why.'), z.maxLength(500, 'Use 500 characters or fewer.'));
-
-export const acceptWeatherFile = endpoint({
-  method: 'POST',
-  path: '/api/teams/:teamId/weather-files/:fileId/acceptance',
-  summary: 'Accept a file that waits for review: its station appears on the map and its year is judged.',
-  params: FileParams,
-  query: empty,
-  body: none,
-  response: json(WeatherFile),
-  errors: ['wrong_state'],
-  allow: 'weather.accept',
-  limits: ordinary,
-});
-
-export const withdrawWeatherFile = endpoint({
-  method: 'POST',
-  path: '/api/teams/:teamId/weather-files/:fileId/withdrawal',
-  summary: 'Withdraw a file with a reason; it no longer counts, and its record stays.',
-  params: FileParams,
-  query: empty,
-  body: json(z.strictObject({ reason: Reason })),
-  response: json(WeatherFile),
-  errors: ['wrong_state'],
-  allow: 'weather.withdraw',
-  limits: ordinary,
-});
-
-/** How many files one act may concern. */
-export const MAX_FILES_PER_ACT = 500;
-const fileIds = z.array(z.uuid()).check(z.minLength(1, 'Choose a file.'), z.maxLength(MAX_FILES_PER_ACT));
-
-export const actOnWeatherFiles = endpoint({
-  method: 'POST',
-  path: '/api/teams/:teamId/weather-files/acts',
-  summary: 'Accept, refuse, withdraw or supersede many files; each by itself, and each that could not be says why.',
-  params: TeamParams,
-  query: empty,
-  body: json(
-    z.discriminatedUnion('act', [
-      z.strictObject({ act: z.literal('accept'), fileIds }),
-      z.strictObject({ act: z.literal('refuse'), fileIds, reason: Reason }),
-      z.strictObject({ act: z.literal('withdraw'), fileIds, reason: Reason }),
-      z.strictObject({ act: z.literal('supersede'), fileIds, byFileId: z.uuid() }),
-    ]),
-  ),
-  response: json(
-    z.object({
-      done: z.array(z.uuid()),
-      problems: z.array(z.object({ fileId: z.uuid(), name: z.string(), message: z.string() })),
-    }),
-  ),
-  errors: [],
-  allow: 'weather.accept',
-  limits: { ...ordinary, seconds: 120 },
-});
-
-export const retryWeatherFile = endpoint({
-  method: 'POST',
-  path: '/api/teams/:teamId/weather-files/:fileId/retry',
-  summary: 'Read a file again, or judge its year again, that stopped for a fault of ours.',
-  params: FileParams,
-  query: empty,
-  body: none,
-  response: json(WeatherFile),
-  errors: ['wrong_state'],
-  allow: 'weather.upload',
-  limits: ordinary,
-});
-
-/** Something about a file, or about the scores that depend on it, has changed. */
-export const TeamEvent = z.discriminatedUnion('kind', [
-  z.object({ kind: z.literal('weather-file'), fileId: z.uuid(), status: FileStatus, step: z.nullable(ReadingStep) }),
-  z.object({ kind: z.literal('weather-batch'), batchId: z.uuid() }),
-  z.object({ kind: z.literal('run'), runId: z.uuid(), stationId: z.uuid() }),
-  z.object({ kind: z.literal('brief'), briefId: z.uuid(), version: z.int() }),
-]);
-export type TeamEvent = z.infer<typeof TeamEvent>;
-
-export const watchTeam = endpoint({
-  method: 'GET',
-  path: '/api/teams/:teamId/events',
-  summary: 'Progress of weather files, briefs and runs, as it happens.',
-  params: TeamParams,
-  query: empty,
-  body: none,
-  response: events(TeamEvent),
-  errors: [],
-  allow: 'weather.view',
-  limits: { ...ordinary, perMinute: 120 },
 });

@@ -1,4 +1,4 @@
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 
 /** Class limits of the score, in points; a class holds its lower limit, the last one both. */
 export const SCORE_LIMITS = [0, 20, 40, 60, 80, 100] as const;

@@ -1,5 +1,5 @@
 import { RAMP_GRADIENT, rampColour } from '../charts/ramp.ts';
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 import { SCORE_LIMITS, scoreCounts } from './score-counts.ts';
 
 type LegendProps = {

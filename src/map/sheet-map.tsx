@@ -3,7 +3,7 @@ import * as maplibregl from 'maplibre-gl';
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?url';
 import { type ReactNode, type RefObject, useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { type MapLayerMouseEvent, type MapRef, Map as MapView } from 'react-map-gl/maplibre';
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 import { boxAround } from './fit-stations.ts';
 import { GraticuleLayer } from './graticule-layer.tsx';
 import { ITALIC, mapFonts, ROMAN } from './map-fonts.ts';

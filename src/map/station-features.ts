@@ -1,5 +1,5 @@
 import type { FeatureCollection, Point } from 'geojson';
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 import { markName } from './station-mark.ts';
 
 export type StationProperties = {

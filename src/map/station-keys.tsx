@@ -1,5 +1,5 @@
 import { type KeyboardEvent, useId, useMemo, useState } from 'react';
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 import { stationSentence } from './station-features.ts';
 
 /** Neighbours of the cursor that are put into the page on either side; thousands of hidden lines would slow it. */

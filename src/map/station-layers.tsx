@@ -1,7 +1,7 @@
 import type { ExpressionSpecification, FilterSpecification, SymbolLayerSpecification } from 'maplibre-gl';
 import { useMemo } from 'react';
 import { Layer, Source } from 'react-map-gl/maplibre';
-import type { MapStation } from '../contract/runs.ts';
+import type { MapStation } from '../contract/programme-map.ts';
 import { MEDIUM, ROMAN } from './map-fonts.ts';
 import { stationFeatures } from './station-features.ts';
 

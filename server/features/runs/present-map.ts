@@ -1,4 +1,4 @@
-import type { MapStation } from '#contract/runs.ts';
+import type { MapStation } from '#contract/programme-map.ts';
 import type { JudgedStation } from './judge-station.ts';
 
 export function presentMapStation({ station, figures, grade, scoreNote }: JudgedStation): MapStation {

@@ -1,6 +1,8 @@
 import type { Router } from 'express';
+import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
-import { exportRunHours as exportEndpoint, getMap, getRunHours, getStationPlace } from '#contract/runs.ts';
+import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
+import { getStationPlace } from '#contract/runs.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';

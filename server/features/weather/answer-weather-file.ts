@@ -4,8 +4,9 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
 import { findFilesOfShape, keepMapping } from './mapping-store.ts';
+import { clearReading, setAnswers } from './reading-store.ts';
 import { queueReading } from './receive-weather-file.ts';
-import { clearReading, lockWeatherFile, setAnswers, type WeatherFileState } from './weather-file-store.ts';
+import { lockWeatherFile, type WeatherFileState } from './weather-file-store.ts';
 
 export interface Answering {
   readonly teamId: string;

@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { LibrarySort, LibraryStatus } from '#contract/weather.ts';
+import type { LibrarySort, LibraryStatus } from '#contract/weather-library.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
 import { VIEW_COLUMNS, VIEW_ROWS, type WeatherFileView } from './weather-file-read-model.ts';
 

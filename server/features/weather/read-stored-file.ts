@@ -12,8 +12,9 @@ import { findBatchState } from './batch-store.ts';
 import { findMapping } from './mapping-store.ts';
 import { contentOf } from './original-content.ts';
 import { type ReadingKnowledge, readOptions } from './read-options.ts';
+import { setReadingStep } from './reading-store.ts';
 import { type FileOutcome, storeReadings } from './store-reading.ts';
-import { findWeatherFile, setReadingStep, type WeatherFileState } from './weather-file-store.ts';
+import { findWeatherFile, type WeatherFileState } from './weather-file-store.ts';
 
 export type ReadingDeps = { readonly db: Knex; readonly storage: OriginalStore } & ReadingKnowledge;
 

@@ -7,7 +7,8 @@ import { addJob } from '../../jobs/queue.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { type OriginalStore, originalKey } from '../../storage/original-store.ts';
 import { type BatchKey, shareBatch } from './batch-store.ts';
-import { findStandingFile, insertWeatherFile, restartReading } from './weather-file-store.ts';
+import { restartReading } from './reading-store.ts';
+import { findStandingFile, insertWeatherFile } from './weather-file-store.ts';
 
 export interface ReceivedFile {
   readonly fileId: string;

@@ -3,8 +3,9 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
 import { findYearOfFile, unsetJudgingFailure } from './failure-store.ts';
+import { restartReading } from './reading-store.ts';
 import { queueReading } from './receive-weather-file.ts';
-import { lockWeatherFile, restartReading, type WeatherFileState } from './weather-file-store.ts';
+import { lockWeatherFile, type WeatherFileState } from './weather-file-store.ts';
 
 export interface RetryParts {
   queueRuns(transaction: Knex.Transaction, year: { teamId: string; weatherYearId: string }): Promise<void>;

@@ -1,16 +1,13 @@
 import type { Router } from 'express';
 import { deriveWeatherYear as deriveEndpoint, previewDerivedYear as previewEndpoint } from '#contract/climate.ts';
+import { watchTeam } from '#contract/team-events.ts';
+import { getOriginal, getWeatherFile, uploadWeatherFile } from '#contract/weather.ts';
 import {
   acceptWeatherFile as acceptEndpoint,
   actOnWeatherFiles as actEndpoint,
-  getOriginal,
-  getWeatherFile,
-  listWeatherFiles,
   retryWeatherFile as retryWeatherFileEndpoint,
-  uploadWeatherFile,
-  watchTeam,
   withdrawWeatherFile as withdrawEndpoint,
-} from '#contract/weather.ts';
+} from '#contract/weather-acts.ts';
 import {
   changeWeatherBatch,
   getWeatherBatch,
@@ -20,6 +17,7 @@ import {
   uploadWeatherArchive,
   uploadWeatherFiles,
 } from '#contract/weather-batches.ts';
+import { listWeatherFiles } from '#contract/weather-library.ts';
 import {
   answerWeatherFile as answerEndpoint,
   getWeatherFileLines,

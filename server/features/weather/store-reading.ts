@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
-import type { ReadingStep, TeamEvent } from '#contract/weather.ts';
+import type { TeamEvent } from '#contract/team-events.ts';
+import type { ReadingStep } from '#contract/weather.ts';
 import { READ_VERSION } from '#engine/conventions.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
 import type { RefusedReading, UnmappedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
@@ -7,7 +8,8 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeamOfAll } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
-import { insertFindings, insertPart, lockWeatherFile, setReadingResult } from './weather-file-store.ts';
+import { insertFindings, insertPart, setReadingResult } from './reading-store.ts';
+import { lockWeatherFile } from './weather-file-store.ts';
 import { insertWeatherYear, insertYearCounts } from './weather-year-store.ts';
 
 export type FileOutcome =

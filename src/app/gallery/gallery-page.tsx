@@ -1,6 +1,6 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { type ReactNode, useState } from 'react';
-import { getRunHours } from '../../contract/runs.ts';
+import { getRunHours } from '../../contract/run-hours.ts';
 import { LedgerPanel } from '../../features/runs/ledger-panel.tsx';
 import { PlaceHeading, ScoreBlock } from '../../features/runs/place-heading.tsx';
 import {

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import type { ProgrammeMap } from '../../contract/runs.ts';
+import type { ProgrammeMap } from '../../contract/programme-map.ts';
 import { plural, sentence } from '../../lib/format.ts';
 
 /** The programme and the brief that every number of the sheet rests on; `choice` is where another one is taken. */

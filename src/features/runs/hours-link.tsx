@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import { exportRunHours } from '../../contract/runs.ts';
+import { exportRunHours } from '../../contract/run-hours.ts';
 import { urlOf } from '../../lib/api-client.ts';
 
 /** Takes every hour of a run along as a table; the server names the file. */

@@ -1,4 +1,4 @@
-import type { MapStation } from '../../contract/runs.ts';
+import type { MapStation } from '../../contract/programme-map.ts';
 
 export interface RankedStation {
   readonly station: MapStation;

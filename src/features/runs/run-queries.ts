@@ -1,5 +1,7 @@
 import { queryOptions } from '@tanstack/react-query';
-import { getMap, getRunHours, getStationPlace } from '../../contract/runs.ts';
+import { getMap } from '../../contract/programme-map.ts';
+import { getRunHours } from '../../contract/run-hours.ts';
+import { getStationPlace } from '../../contract/runs.ts';
 import { callForBytes } from '../../lib/api-client.ts';
 import { apiKey, apiQuery } from '../../lib/api-query.ts';
 

@@ -1,5 +1,6 @@
 import type { Role } from '../../contract/accounts.ts';
-import type { Ledger, MapStation, Place, ToleranceAnswer } from '../../contract/runs.ts';
+import type { MapStation } from '../../contract/programme-map.ts';
+import type { Ledger, Place, ToleranceAnswer } from '../../contract/runs.ts';
 import { list, number, sensible, share as shareOf } from '../../lib/format.ts';
 
 type Shown = NonNullable<Place['shown']>;

@@ -1,7 +1,7 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
 import { Input, ListBox, ListBoxItem, SearchField } from 'react-aria-components';
 import { rampColour } from '../../charts/ramp.ts';
-import type { MapStation } from '../../contract/runs.ts';
+import type { MapStation } from '../../contract/programme-map.ts';
 import { plural } from '../../lib/format.ts';
 import { filterByName, type RankedStation, rankedStations } from './ranked-stations.ts';
 import { noScoreWords } from './run-words.ts';

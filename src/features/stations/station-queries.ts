@@ -1,7 +1,9 @@
 import { useQueryClient } from '@tanstack/react-query';
-import { getMap, getStationPlace } from '../../contract/runs.ts';
+import { getMap } from '../../contract/programme-map.ts';
+import { getStationPlace } from '../../contract/runs.ts';
 import { getStation, listStations } from '../../contract/stations.ts';
-import { getWeatherFile, listWeatherFiles } from '../../contract/weather.ts';
+import { getWeatherFile } from '../../contract/weather.ts';
+import { listWeatherFiles } from '../../contract/weather-library.ts';
 import { apiKey, apiQuery } from '../../lib/api-query.ts';
 
 const PAGE_SIZE = 50;

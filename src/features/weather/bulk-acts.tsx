@@ -1,7 +1,8 @@
 import { useMutation } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link } from 'react-router-dom';
-import { actOnWeatherFiles, MAX_FILES_PER_ACT, type WeatherFile } from '../../contract/weather.ts';
+import type { WeatherFile } from '../../contract/weather.ts';
+import { actOnWeatherFiles, MAX_FILES_PER_ACT } from '../../contract/weather-acts.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { plural } from '../../lib/format.ts';

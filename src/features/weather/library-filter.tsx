@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { type FormEvent, type ReactNode, useEffect, useId, useState } from 'react';
 import { Link, useNavigate } from 'react-router-dom';
-import { LibraryStatus } from '../../contract/weather.ts';
+import { LibraryStatus } from '../../contract/weather-library.ts';
 import { moment, number } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { StatusMark } from '../../ui/status-mark.tsx';

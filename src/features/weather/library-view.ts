@@ -1,5 +1,5 @@
 /** What of the library is in view, as it stands in the query of the page's address: it survives a reload and Back. */
-import { LibraryQuery, type LibrarySort } from '../../contract/weather.ts';
+import { LibraryQuery, type LibrarySort } from '../../contract/weather-library.ts';
 
 /** Filter, order and page (counted from 1). */
 export type LibraryView = Omit<ReturnType<typeof LibraryQuery.parse>, 'limit'>;

@@ -1,7 +1,8 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useSyncExternalStore } from 'react';
-import { listWeatherFiles, uploadWeatherFile } from '../../contract/weather.ts';
+import { uploadWeatherFile } from '../../contract/weather.ts';
 import { listWeatherBatches, startWeatherBatch, uploadWeatherArchive } from '../../contract/weather-batches.ts';
+import { listWeatherFiles } from '../../contract/weather-library.ts';
 import { call, uploadFiles } from '../../lib/api-client.ts';
 import { apiKey } from '../../lib/api-query.ts';
 import { type Upload, UploadQueue } from './upload-queue.ts';

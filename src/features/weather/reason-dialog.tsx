@@ -1,5 +1,6 @@
 import { type FormEvent, useRef, useState } from 'react';
-import { actOnWeatherFiles, type WeatherFile } from '../../contract/weather.ts';
+import type { WeatherFile } from '../../contract/weather.ts';
+import { actOnWeatherFiles } from '../../contract/weather-acts.ts';
 import { problemsOfIssues } from '../../lib/form-problems.ts';
 import { plural } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';

@@ -1,13 +1,9 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { type ReactNode, useState } from 'react';
 import { Link } from 'react-router-dom';
-import {
-  acceptWeatherFile,
-  getWeatherFile,
-  listWeatherFiles,
-  type WeatherFile,
-  type WeatherFileRecord,
-} from '../../contract/weather.ts';
+import { getWeatherFile, type WeatherFile, type WeatherFileRecord } from '../../contract/weather.ts';
+import { acceptWeatherFile } from '../../contract/weather-acts.ts';
+import { listWeatherFiles } from '../../contract/weather-library.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { apiKey } from '../../lib/api-query.ts';

@@ -1,5 +1,5 @@
 import { useMutation } from '@tanstack/react-query';
-import { retryWeatherFile } from '../../contract/weather.ts';
+import { retryWeatherFile } from '../../contract/weather-acts.ts';
 import { retryWeatherArchive } from '../../contract/weather-batches.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';

@@ -1,9 +1,10 @@
 import { queryOptions, useQueryClient } from '@tanstack/react-query';
 import { type DerivedPreview, previewDerivedYear } from '../../contract/climate.ts';
 import { listStations } from '../../contract/stations.ts';
-import { getWeatherFile, listWeatherFiles } from '../../contract/weather.ts';
+import { getWeatherFile } from '../../contract/weather.ts';
 import { listWeatherBatches } from '../../contract/weather-batches.ts';
 import type { MonthlyChange } from '../../contract/weather-change.ts';
+import { listWeatherFiles } from '../../contract/weather-library.ts';
 import { getWeatherFileLines, MOST_LINES } from '../../contract/weather-reading.ts';
 import type { HumidityRule } from '../../engine/climate/monthly-change.ts';
 import { call } from '../../lib/api-client.ts';

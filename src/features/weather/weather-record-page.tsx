@@ -66,9 +66,12 @@ function Record({ record }: { record: WeatherFileRecord }) {
         <Answering record={record} />
       </div>
       {facts ? (
-        <Suspense fallback={<Loading what="the hours of the year" />}>
-          <DepressionPictures facts={facts} {...inView} />
-        </Suspense>
+        // As high as the pictures, so that nothing below moves when they have come.
+        <div className="min-h-[44rem] print:min-h-0">
+          <Suspense fallback={<Loading what="the hours of the year" />}>
+            <DepressionPictures facts={facts} {...inView} />
+          </Suspense>
+        </div>
       ) : null}
       <DerivedFrom record={record} />
       {isDerived ? null : (

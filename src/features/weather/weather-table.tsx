@@ -1,6 +1,7 @@
 import { useEffect, useRef } from 'react';
 import { Link } from 'react-router-dom';
-import type { LibrarySort, WeatherFile } from '../../contract/weather.ts';
+import type { WeatherFile } from '../../contract/weather.ts';
+import type { LibrarySort } from '../../contract/weather-library.ts';
 import { moment, share } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';

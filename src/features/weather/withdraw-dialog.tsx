@@ -1,6 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import { type FormEvent, useRef, useState } from 'react';
-import { type WeatherFile, withdrawWeatherFile } from '../../contract/weather.ts';
+import type { WeatherFile } from '../../contract/weather.ts';
+import { withdrawWeatherFile } from '../../contract/weather-acts.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { problemsOfError, problemsOfIssues } from '../../lib/form-problems.ts';

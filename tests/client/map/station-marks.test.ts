@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { rampColour } from '../../../src/charts/ramp.ts';
-import type { MapStation } from '../../../src/contract/runs.ts';
+import type { MapStation } from '../../../src/contract/programme-map.ts';
 import { stationFeatures, stationSentence } from '../../../src/map/station-features.ts';
 import { drawMark, MARK_SIZE_PX, markName, markNamed } from '../../../src/map/station-mark.ts';
 import { lightnessOf } from '../../support/lightness.ts';

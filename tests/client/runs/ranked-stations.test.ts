@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { MapStation } from '../../../src/contract/runs.ts';
+import type { MapStation } from '../../../src/contract/programme-map.ts';
 import { filterByName, rankedStations } from '../../../src/features/runs/ranked-stations.ts';
 
 function station(name: string, score: number | null, grade: MapStation['grade'] = 'C'): MapStation {

@@ -3,7 +3,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { inTransaction } from '../../../server/db/in-transaction.ts';
 import { notifyTeam, openTeamFeed, type TeamFeed } from '../../../server/jobs/team-feed.ts';
-import type { TeamEvent } from '../../../src/contract/weather.ts';
+import type { TeamEvent } from '../../../src/contract/team-events.ts';
 import { eventually } from '../../support/eventually.ts';
 import { type KeptLog, keepLog } from '../../support/quiet-log.ts';
 import { makeTestDatabase, type TestDatabase } from '../../support/test-database.ts';

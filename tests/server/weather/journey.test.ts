@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { openTeamFeed } from '../../../server/jobs/team-feed.ts';
-import type { TeamEvent } from '../../../src/contract/weather.ts';
+import type { TeamEvent } from '../../../src/contract/team-events.ts';
 import { demoEpw } from '../../support/demo-epw.ts';
 import { eventually } from '../../support/eventually.ts';
 import { openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';

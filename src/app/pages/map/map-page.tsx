@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { type ReactNode, useMemo } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
-import type { ProgrammeMap } from '../../../contract/runs.ts';
+import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import { rankedStations } from '../../../features/runs/ranked-stations.ts';
 import { mapQuery, type ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';

@@ -1,6 +1,6 @@
 /**
  * Rows are matched to a calendar that is built first. The order is that of month, day and hour as they stand in the file:
- * a typical year is made of months of different years, so the year decides nothing here.
+ * a typical year is made of months of different years, so the year decides nothing here. Every fault of order is told by the one walk over the rows: one file, and long for it.
  */
 import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../../conventions.ts';
 import { monthNames, monthStartSlots, slotOf } from '../../reduction/calendar.ts';

@@ -1,7 +1,7 @@
 /**
  * Station pressure: the file's own; without any, the standard atmosphere at the elevation. Spikes and ramps are replaced,
  * gaps are filled, and the mean is held against the elevation, since sea-level pressure or a wrong elevation costs up to a
- * kelvin of wet bulb.
+ * kelvin of wet bulb. The cases exclude one another, so they stand together, though the file is long for it.
  */
 import { medianOf } from '../../order-statistic.ts';
 import { standardPressurePa } from '../../psychrometrics/pressure.ts';
