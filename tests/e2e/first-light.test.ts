@@ -6,6 +6,7 @@ import { sampleStation, sampleUpload } from '../../data/demo/sample-upload.ts';
 import { demoStations } from '../../data/demo/stations.ts';
 import { type DemoAccount, readDemoAccounts } from '../../server/builders/demo-accounts.ts';
 import type { Role } from '../../src/contract/accounts.ts';
+import { paths } from '../../src/lib/paths.ts';
 import { launchBrowser, type Viewport, type WatchedPage, watchedPage } from '../support/browser.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
 import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
@@ -33,6 +34,7 @@ vi.setConfig({ testTimeout: 300_000 });
 
 let product: RunningProduct;
 let browser: Browser;
+let teamId: string;
 let accounts: readonly Omit<DemoAccount, 'name'>[];
 let watched: WatchedPage;
 let page: Page;
@@ -40,6 +42,7 @@ let page: Page;
 beforeAll(async () => {
   product = await startProduct('demo');
   accounts = await readDemoAccounts(product.demoAccountsPath);
+  teamId = (await product.deps.db('teams').first<{ id: string }>('id')).id;
   browser = await launchBrowser();
 }, 300_000);
 
@@ -72,9 +75,16 @@ function account(role: Role): { email: string; password: string } {
   return found;
 }
 
-async function enterAs(role: Role): Promise<void> {
-  await page.goto('/');
+/** To the map, or to the page that `from` leads to. */
+async function enterAs(role: Role, from?: string): Promise<void> {
+  await page.goto(paths.signIn.to(from));
   await signIn(page, account(role));
+}
+
+/** Without the map, whose drawing takes a while. */
+async function enterAtWeather(role: Role): Promise<void> {
+  await enterAs(role, paths.weather.to(teamId));
+  await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
 }
 
 /** By the top bar, where the pages of a narrow screen stand behind a menu. */
@@ -164,8 +174,7 @@ async function deriveExample(name: string): Promise<void> {
 }
 
 test('a file that is there already is recognised and not stored again', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const total = page.getByText(/^\d+ files, newest first$/);
   const before = await total.textContent();
   const [korrelPan] = demoStations;
@@ -257,8 +266,7 @@ test('the map tells the dry interior from the humid coast, and the keyboard goes
 });
 
 test('a viewer reads everything of a file and is offered neither upload nor acceptance', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const { name, text } = sampleUpload();
   // Another year of the same place waits for review: one dew point more is given.
   const other = { name: `other-${name}`, text: text.replace(',99.9,99.9,999,999999,', ',20.0,5.0,37,90400,') };
@@ -282,8 +290,7 @@ test('a viewer reads everything of a file and is offered neither upload nor acce
 });
 
 test('a file with letters for numbers is refused with line and column, and another upload goes on as before', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const lines = sampleUpload().text.split('\r\n');
   // Line 1009 is the first after 1000 hours: its dry bulb becomes letters.
   const fields = (lines[1008] ?? '').split(',');
@@ -301,8 +308,7 @@ test('a file with letters for numbers is refused with line and column, and anoth
 });
 
 test('a zip of mixed files is read with live progress, paused, resumed and answered once; accepting what waits puts its stations on the map', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const look = { page, soon: SOON };
   const batch = await bringPaused(look);
   await page.reload();
@@ -320,8 +326,7 @@ test('a zip of mixed files is read with live progress, paused, resumed and answe
 });
 
 test('a lead puts a station right with reasons, and makes a token that is shown once and revokes it', async () => {
-  await enterAs('lead');
-  await openWeather();
+  await enterAtWeather('lead');
   await page.getByRole('link', { name: 'Stations' }).click();
   await page.getByLabel('Name or WMO number').fill('gannet');
   await page.getByRole('button', { name: 'Search' }).click();
@@ -388,8 +393,7 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
 });
 
 test('signing out ends the session: the address of a page leads to sign-in and back to the page', async () => {
-  await enterAs('viewer');
-  await openWeather();
+  await enterAtWeather('viewer');
   const address = page.url();
   await signOut(page);
   await page.goto(address);
