@@ -1,5 +1,6 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
+import { hundredths } from '../../../src/engine/conventions.ts';
 import { monthOfEachSlot } from '../../../src/engine/reduction/calendar.ts';
 import { wetBulbColumn } from '../../../src/engine/reduction/derived-columns.ts';
 import { unpackYear } from '../../../src/engine/reduction/packed-columns.ts';
@@ -42,7 +43,7 @@ async function counted(atLeastK: number, months: readonly number[]) {
   let hours = 0;
   let knownHours = 0;
   for (const [slot, dryBulb] of dryBulbC.entries()) {
-    const depression = Math.round(dryBulb * 100) - Math.round((wetBulbC[slot] ?? Number.NaN) * 100);
+    const depression = hundredths(dryBulb - (wetBulbC[slot] ?? Number.NaN));
     if (!months.includes(monthOf[slot] ?? 0) || Number.isNaN(depression)) continue;
     knownHours += 1;
     if (depression >= atLeastK * 100) hours += 1;
