@@ -1,7 +1,7 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
-import type { Ledger, RunResult, Verdict } from '#engine/run/run-result.ts';
+import type { RunResult, Verdict } from '#engine/run/run-result.ts';
 
 /** Some stations judged by one draft brief. */
 export interface RescoreTask {
@@ -28,6 +28,8 @@ export interface StationToRescore {
   }[];
 }
 
+export type ShownResult = Pick<RunResult, 'ledger' | 'severityKh' | 'worstSpell' | 'water' | 'electricity'>;
+
 /** The figures of a station as a place, and of each of its years. */
 export interface RescoredStation {
   readonly stationId: string;
@@ -38,10 +40,12 @@ export interface RescoredStation {
   readonly yearsMeeting: number;
   readonly range: { readonly low: number; readonly high: number } | null;
   /** Of the year that stands for the station; null without a usable year. */
-  readonly ledger: Ledger | null;
+  readonly shown: ShownResult | null;
   readonly shownWeatherYearId: string | null;
   /** The years that the figures rest on. */
   readonly restsOn: readonly string[];
+  /** Measured years with enough hours for the brief. */
+  readonly usable: readonly string[];
   /** By weather year; empty unless asked for. */
   readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
 }

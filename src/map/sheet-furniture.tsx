@@ -15,7 +15,7 @@ type ZoomButtonsProps = {
 
 export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
   return (
-    <fieldset className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line">
+    <fieldset data-furniture="" className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line">
       <legend className="sr-only">Zoom</legend>
       <SheetButton label="Zoom in" onPress={onIn}>
         <path d="M2 8h12M8 2v12" />
@@ -24,7 +24,7 @@ export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
         <path d="M2 8h12" />
       </SheetButton>
       {onAll !== null && (
-        <SheetButton label="Show all stations" onPress={onAll}>
+        <SheetButton label="Show all" onPress={onAll}>
           <path d="M2 5.5V2h3.5M10.5 2H14v3.5M14 10.5V14h-3.5M5.5 14H2v-3.5" />
         </SheetButton>
       )}

@@ -84,6 +84,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
   getMap: readersToo,
+  getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
@@ -200,6 +201,7 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
+  if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
 

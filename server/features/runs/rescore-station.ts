@@ -2,7 +2,7 @@ import type { Brief } from '#engine/brief/brief.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { placeFigures } from '#engine/score/place-figures.ts';
-import type { RescoredStation, RescoreTask, StationToRescore } from '../../jobs/web-task.ts';
+import type { RescoredStation, RescoreTask, ShownResult, StationToRescore } from '../../jobs/web-task.ts';
 import { keptYear } from './kept-years.ts';
 import { runResultHash } from './run-key.ts';
 
@@ -29,11 +29,19 @@ function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashe
     verdict,
     yearsMeeting,
     range,
-    ledger: shown?.result.ledger ?? null,
+    shown: shown === null ? null : shownResultOf(shown.result),
     shownWeatherYearId: shown?.weatherYearId ?? null,
     restsOn: figures.runs.map(({ weatherYearId }) => weatherYearId),
+    usable: runs.flatMap(({ weatherYearId, kind, result }) =>
+      kind !== 'derived' && result.usable ? [weatherYearId] : [],
+    ),
     resultHashes: runs.flatMap(({ weatherYearId, resultHash }) =>
       resultHash === null ? [] : [{ weatherYearId, resultHash }],
     ),
   };
+}
+
+/** Of a result what the map tells, so that no more is copied between threads. */
+function shownResultOf({ ledger, severityKh, worstSpell, water, electricity }: ShownResult): ShownResult {
+  return { ledger, severityKh, worstSpell, water, electricity };
 }

@@ -5,6 +5,8 @@ import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { RescoredStation, StationToRescore } from '../../jobs/web-task.ts';
 import type { WebThreads } from '../../jobs/web-threads.ts';
 import type { ColumnCache } from './column-cache.ts';
+import { AT_THE_STATION, gradeOfYears } from './grade-of-years.ts';
+import { presentFigures, shownYearOf } from './present-figures.ts';
 import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
 
@@ -46,11 +48,24 @@ export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise
   }
   return {
     methodVersion: METHOD_VERSION,
-    stations: stations.map(({ resultHashes, ...station }) => ({ ...station, restsOn: [...station.restsOn] })),
+    stations: stations.map((station) => presentStation(station, years)),
+    sites: [],
     judged: judgedYears(years, stations),
     loadMs,
     totalMs: performance.now() - begun,
   };
+}
+
+function presentStation(station: RescoredStation, years: readonly YearToRescore[]): RescoreAnswer['stations'][number] {
+  const { stationId, shown, shownWeatherYearId, restsOn } = station;
+  const usable = new Set(station.usable);
+  const own = years.filter((year) => year.stationId === stationId);
+  const grade = gradeOfYears(
+    own.map((year) => ({ ...year, hours: year.slots, usable: usable.has(year.weatherYearId) })),
+    AT_THE_STATION,
+  );
+  const figures = { ...station, yearsCounted: restsOn.length, shown: shown === null ? null : shownYearOf(shown) };
+  return { stationId, shownWeatherYearId, restsOn: [...restsOn], ...presentFigures(figures, grade.grade) };
 }
 
 /** Every thread takes portions until none is left; the first fault ends it for all. */

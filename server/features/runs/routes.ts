@@ -1,4 +1,5 @@
 import type { Router } from 'express';
+import { getDepressionMap } from '#contract/depression-map.ts';
 import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
@@ -10,6 +11,7 @@ import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
+import { depressionMap } from './depression-map.ts';
 import { type ExportParts, exportRunHours } from './export-run-hours.ts';
 import { byStation, judgeStation } from './judge-station.ts';
 import { presentMapStation } from './present-map.ts';
@@ -47,8 +49,13 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
       invented: brief.invented,
       brief: presentBriefBasis(brief),
       stations: stations.map(presentMapStation),
+      sites: [],
       pending: stations.reduce((sum, { pending }) => sum + pending, 0),
     };
+  });
+
+  mount(router, deps, getDepressionMap, async ({ params: { teamId }, query }) => {
+    return depressionMap(db, { teamId, ...query });
   });
 
   mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId }, query }) => {

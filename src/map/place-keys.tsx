@@ -1,28 +1,31 @@
 import { type KeyboardEvent, useId, useMemo, useState } from 'react';
-import type { MapStation } from '../contract/programme-map.ts';
-import { stationSentence } from './station-features.ts';
+import type { SheetPlace } from './sheet-place.ts';
 
 /** Neighbours of the cursor that are put into the page on either side; thousands of hidden lines would slow it. */
 const WINDOW = 25;
 
-type StationKeysProps = {
-  readonly stations: readonly MapStation[];
+type PlaceKeysProps = {
+  /** "Stations on the map". */
+  readonly label: string;
+  readonly places: readonly SheetPlace[];
+  /** What a reader who does not see the map is told of a place. */
+  readonly sentence: (place: SheetPlace) => string;
   readonly chosenId: string | null;
   readonly onChoose: (id: string) => void;
-  /** The keyboard's cursor came to a station, or left the list (null). */
-  readonly onPoint: (station: MapStation | null) => void;
+  /** The keyboard's cursor came to a place, or left the list (null). */
+  readonly onPoint: (place: SheetPlace | null) => void;
 };
 
 /**
- * The stations as a list for the keyboard and for readers who do not see the map: arrow keys, Home, End and the first
+ * The places of one kind as a list for the keyboard and for readers who do not see the map: arrow keys, Home, End and the first
  * letter of a name move a cursor that the map shows; Enter or the space bar chooses.
  */
-export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKeysProps) {
+export function PlaceKeys({ label, places, sentence, chosenId, onChoose, onPoint }: PlaceKeysProps) {
   const [cursor, setCursor] = useState(0);
   const listId = useId();
   const sorted = useMemo(
-    () => [...stations].sort((a, b) => a.name.localeCompare(b.name, 'en') || (a.id < b.id ? -1 : 1)),
-    [stations],
+    () => [...places].sort((a, b) => a.name.localeCompare(b.name, 'en') || (a.id < b.id ? -1 : 1)),
+    [places],
   );
   const at = Math.min(cursor, sorted.length - 1);
   const from = Math.max(0, at - WINDOW);
@@ -34,10 +37,10 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
   };
   const press = (event: KeyboardEvent) => {
     if (event.ctrlKey || event.metaKey || event.altKey) return;
-    const station = sorted[at];
+    const place = sorted[at];
     const target = targetOf(event.key, { at, sorted });
     if (target !== null) move(target);
-    else if ((event.key === 'Enter' || event.key === ' ') && station !== undefined) onChoose(station.id);
+    else if ((event.key === 'Enter' || event.key === ' ') && place !== undefined) onChoose(place.id);
     else return;
     event.preventDefault();
   };
@@ -47,7 +50,7 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
       <div
         role="listbox"
         tabIndex={0}
-        aria-label="Stations on the map"
+        aria-label={label}
         aria-activedescendant={`${listId}-${at}`}
         aria-describedby={`${listId}-help`}
         onKeyDown={press}
@@ -55,18 +58,18 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
         onBlur={() => onPoint(null)}
         className="peer absolute inset-0 pointer-events-none focus-visible:-outline-offset-4"
       >
-        {sorted.slice(from, at + WINDOW + 1).map((station, index) => (
+        {sorted.slice(from, at + WINDOW + 1).map((place, index) => (
           <div
-            key={station.id}
+            key={place.id}
             id={`${listId}-${from + index}`}
             role="option"
             tabIndex={-1}
-            aria-selected={station.id === chosenId}
+            aria-selected={place.id === chosenId}
             aria-posinset={from + index + 1}
             aria-setsize={sorted.length}
             className="sr-only"
           >
-            {stationSentence(station)}
+            {sentence(place)}
           </div>
         ))}
       </div>
@@ -74,20 +77,20 @@ export function StationKeys({ stations, chosenId, onChoose, onPoint }: StationKe
         id={`${listId}-help`}
         className="pointer-events-none absolute top-2 left-1/2 -translate-x-1/2 hidden peer-focus-visible:block bg-paper border border-line px-2 py-1 text-fine whitespace-nowrap"
       >
-        Arrow keys go from station to station, Enter chooses
+        {label}: arrow keys go from one to the next, Enter chooses
       </p>
     </>
   );
 }
 
-function targetOf(key: string, { at, sorted }: { at: number; sorted: readonly MapStation[] }): number | null {
+function targetOf(key: string, { at, sorted }: { at: number; sorted: readonly SheetPlace[] }): number | null {
   if (key === 'ArrowDown' || key === 'ArrowRight') return at + 1;
   if (key === 'ArrowUp' || key === 'ArrowLeft') return at - 1;
   if (key === 'Home') return 0;
   if (key === 'End') return sorted.length - 1;
   if (key.length !== 1 || key === ' ') return null;
-  const starts = (station: MapStation) => station.name.toLowerCase().startsWith(key.toLowerCase());
-  const after = sorted.findIndex((station, index) => index > at && starts(station));
+  const starts = (place: SheetPlace) => place.name.toLowerCase().startsWith(key.toLowerCase());
+  const after = sorted.findIndex((place, index) => index > at && starts(place));
   const found = after === -1 ? sorted.findIndex(starts) : after;
   return found === -1 ? null : found;
 }

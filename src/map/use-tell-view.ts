@@ -1,0 +1,48 @@
+import type { Map as MapLibreMap } from 'maplibre-gl';
+import { useEffect, useRef } from 'react';
+
+/** Where the map looks; north up, no tilt. */
+export interface SheetCamera {
+  readonly longitude: number;
+  readonly latitude: number;
+  readonly zoom: number;
+}
+
+/** Degrees; `west` and `east` run on past 180 where the box crosses it. */
+export interface SheetBox {
+  readonly west: number;
+  readonly south: number;
+  readonly east: number;
+  readonly north: number;
+}
+
+/** `byHand`: a person moved the map; what it does by itself is no news for the address. */
+export type ViewTold = (camera: SheetCamera, box: SheetBox, byHand: boolean) => void;
+
+/** Tells where the map looks when it is there, and after each movement. */
+export function useTellView(map: MapLibreMap | null, onView: ViewTold | undefined): void {
+  const told = useRef(onView);
+  useEffect(() => {
+    told.current = onView;
+  });
+  useEffect(() => {
+    if (map === null) return;
+    const tell = (byHand: boolean) => {
+      const { lng, lat } = map.getCenter();
+      const bounds = map.getBounds();
+      const box = {
+        west: bounds.getWest(),
+        south: bounds.getSouth(),
+        east: bounds.getEast(),
+        north: bounds.getNorth(),
+      };
+      told.current?.({ longitude: lng, latitude: lat, zoom: map.getZoom() }, box, byHand);
+    };
+    const moved = () => tell(true);
+    tell(false);
+    map.on('moveend', moved);
+    return () => {
+      map.off('moveend', moved);
+    };
+  }, [map]);
+}
