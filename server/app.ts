@@ -31,6 +31,7 @@ import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { makeWebThreadsOf, type WebThreads } from './jobs/web-threads.ts';
 import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
+import { shippedRelief } from './tiles/relief.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
@@ -89,7 +90,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
-  runsRoutes(router, deps, { threads, yearThread, readDraft });
+  runsRoutes(router, deps, { threads, yearThread, readDraft, relief: shippedRelief() });
   methodRoutes(router, deps);
   teamsRoutes(router, deps);
   return router;

@@ -10,6 +10,7 @@ import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
 import * as stations from './stations.ts';
+import * as surface from './surface.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -52,6 +53,8 @@ export const endpoints = {
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
   getMap: map.getMap,
+  getSurface: surface.getSurface,
+  getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,

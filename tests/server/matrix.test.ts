@@ -84,6 +84,8 @@ const matrix: Record<EndpointName, readonly number[]> = {
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
   getMap: readersToo,
+  getSurface: readersToo,
+  getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getRunHours: readersToo,
@@ -202,6 +204,7 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
   if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
+  if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
 

@@ -9,6 +9,8 @@ import { AT_THE_STATION, gradeOfYears } from './grade-of-years.ts';
 import { presentFigures, shownYearOf } from './present-figures.ts';
 import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
+import { type ScoredStation, surfaceOf } from './surface.ts';
+import type { SurfaceGrounds } from './surface-ground.ts';
 
 export type RescoreThreads = Pick<WebThreads, 'threads' | 'rescore'>;
 
@@ -24,6 +26,8 @@ export interface RescoreAsked {
   /** Null: every station of the team. */
   readonly stationIds: readonly string[] | null;
   readonly withHashes: boolean;
+  /** Asks for the surface too. */
+  readonly surface?: { readonly grounds: SurfaceGrounds; readonly held: string | undefined };
   readonly signal: AbortSignal;
 }
 
@@ -51,9 +55,28 @@ export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise
     stations: stations.map((station) => presentStation(station, years)),
     sites: [],
     judged: judgedYears(years, stations),
+    surface:
+      asked.surface === undefined || wanted !== null
+        ? null
+        : await surfaceOf(asked.surface.grounds, {
+            stations: scoredStations(stations, years),
+            anchors: asked.brief.score,
+            held: asked.surface.held,
+            signal: asked.signal,
+          }),
     loadMs,
     totalMs: performance.now() - begun,
   };
+}
+
+function scoredStations(stations: readonly RescoredStation[], years: readonly YearToRescore[]): ScoredStation[] {
+  const places = new Map(years.map((year) => [year.stationId, year]));
+  return stations.flatMap(({ stationId, score, raw }) => {
+    const place = places.get(stationId);
+    if (score === null || place === undefined) return [];
+    const { latitude, longitude, elevationM } = place;
+    return [{ latitude, longitude, elevationM, raw }];
+  });
 }
 
 function presentStation(station: RescoredStation, years: readonly YearToRescore[]): RescoreAnswer['stations'][number] {

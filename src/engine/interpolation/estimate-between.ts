@@ -4,7 +4,7 @@ import { distanceWeights } from './distance-weights.ts';
 import { greatCircleKm, type Position } from './great-circle-km.ts';
 import { interpolateColumn, type SurfacePoints } from './interpolate-score.ts';
 import { nearestOf } from './nearest-stations.ts';
-import { unitVectors } from './sphere-vectors.ts';
+import { columnsOf, unitVectors } from './sphere-vectors.ts';
 import { stationFigures } from './station-figures.ts';
 import { bestSupport, type SupportClass, supportClass } from './support-class.ts';
 
@@ -46,10 +46,6 @@ export function estimateBetween(input: {
   power: number;
 }): EstimateBetween {
   const { position, elevationM, stations, anchors, indexPoints, each, power } = input;
-  const columnsOf = (places: readonly Position[]) => ({
-    latitudes: places.map(({ latitude }) => latitude),
-    longitudes: places.map(({ longitude }) => longitude),
-  });
   const neighbours = nearestOf({
     point: unitVectors(columnsOf([position])),
     stations: unitVectors(columnsOf(stations)),

@@ -18,20 +18,22 @@ export function reachOf({ count, most, squaredChords }: NearestList): number {
 
 export function offer(list: NearestList, station: number, squaredChord: number): void {
   const { most, stations, squaredChords } = list;
-  const comesBefore = (place: number): boolean => {
-    const held = squaredChords[place] ?? 0;
-    return squaredChord < held || (squaredChord === held && station < (stations[place] ?? 0));
-  };
   let place = list.count;
   if (place === most) {
     place--;
-    if (!comesBefore(place)) return;
+    if (!isBefore(list, place, station, squaredChord)) return;
   } else list.count++;
-  while (place > 0 && comesBefore(place - 1)) {
+  while (place > 0 && isBefore(list, place - 1, station, squaredChord)) {
     squaredChords[place] = squaredChords[place - 1] ?? 0;
     stations[place] = stations[place - 1] ?? 0;
     place--;
   }
   squaredChords[place] = squaredChord;
   stations[place] = station;
+}
+
+/** Beside `offer`, not within: a function made anew for each of millions of calls would cost more than what it does. */
+function isBefore({ stations, squaredChords }: NearestList, place: number, station: number, squared: number): boolean {
+  const held = squaredChords[place] ?? 0;
+  return squared < held || (squared === held && station < (stations[place] ?? 0));
 }

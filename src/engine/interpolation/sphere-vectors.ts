@@ -1,9 +1,16 @@
-import { EARTH_RADIUS_KM, RADIANS_PER_DEGREE } from './great-circle-km.ts';
+import { EARTH_RADIUS_KM, type Position, RADIANS_PER_DEGREE } from './great-circle-km.ts';
 
 /** Places in columns, degrees; as many of the one as of the other. */
 export interface Positions {
   readonly latitudes: ArrayLike<number>;
   readonly longitudes: ArrayLike<number>;
+}
+
+export function columnsOf(places: readonly Position[]): Positions {
+  return {
+    latitudes: places.map(({ latitude }) => latitude),
+    longitudes: places.map(({ longitude }) => longitude),
+  };
 }
 
 /**

@@ -35,10 +35,3 @@ function rawAt(latitude: number, elevationM: number, draw: () => number): RawCom
     'worst-year': Math.max(0, served - 10 * draw()),
   };
 }
-
-export function columnsOf(stations: readonly { latitude: number; longitude: number }[]) {
-  return {
-    latitudes: stations.map(({ latitude }) => latitude),
-    longitudes: stations.map(({ longitude }) => longitude),
-  };
-}

@@ -7,11 +7,11 @@ import { interpolateColumn, interpolateScores, type SurfacePoints } from '#engin
 import { choosePower, leaveOneOutOfScore, POWERS } from '#engine/interpolation/leave-one-out.ts';
 import { type Neighbours, nearestStations } from '#engine/interpolation/nearest-stations.ts';
 import { nearestOthers } from '#engine/interpolation/other-stations.ts';
-import { unitVectors } from '#engine/interpolation/sphere-vectors.ts';
+import { columnsOf, unitVectors } from '#engine/interpolation/sphere-vectors.ts';
 import { stationFigures } from '#engine/interpolation/station-figures.ts';
 import { bestSupport, supportClass } from '#engine/interpolation/support-class.ts';
 import { weightedScore } from '#engine/score/weighted-score.ts';
-import { columnsOf, type RandomStation, randomStations } from './random-stations.ts';
+import { type RandomStation, randomStations } from './random-stations.ts';
 
 const EACH = 8;
 
