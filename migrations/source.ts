@@ -4,12 +4,14 @@ import * as firstLight from './0001-first-light.ts';
 import * as workerPools from './0002-worker-pools.ts';
 import * as derivedYears from './0003-derived-years.ts';
 import * as weatherRoom from './0004-weather-room.ts';
+import * as sites from './0006-sites.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
   '0002-worker-pools': workerPools,
   '0003-derived-years': derivedYears,
   '0004-weather-room': weatherRoom,
+  '0006-sites': sites,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;
