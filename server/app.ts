@@ -13,6 +13,7 @@ import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
+import { sitesRoutes } from './features/sites/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
 import { stationsRoutes } from './features/stations/routes.ts';
 import { switchRuleOff } from './features/stations/switch-rule.ts';
@@ -31,6 +32,7 @@ import { beginRequest, type ServerTerms } from './http/request-state.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { makeWebThreadsOf, type WebThreads } from './jobs/web-threads.ts';
 import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
+import { shippedRelief } from './tiles/relief.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
@@ -88,6 +90,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   });
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
+  sitesRoutes(router, deps, { relief: shippedRelief() });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, { threads, yearThread, readDraft });
   methodRoutes(router, deps);
