@@ -13,6 +13,7 @@ import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
+import { sitesRoutes } from './features/sites/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
 import { stationsRoutes } from './features/stations/routes.ts';
 import { switchRuleOff } from './features/stations/switch-rule.ts';
@@ -89,6 +90,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   });
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
+  sitesRoutes(router, deps, { relief: shippedRelief() });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, { threads, yearThread, readDraft, relief: shippedRelief() });
   methodRoutes(router, deps);

@@ -9,6 +9,7 @@ import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
+import * as sites from './sites.ts';
 import * as stations from './stations.ts';
 import * as surface from './surface.ts';
 import * as events from './team-events.ts';
@@ -68,6 +69,14 @@ export const endpoints = {
   compareBriefVersions: briefs.compareBriefVersions,
   saveBriefVersion: briefs.saveBriefVersion,
   previewBrief: briefs.previewBrief,
+  listSites: sites.listSites,
+  getSite: sites.getSite,
+  makeSite: sites.makeSite,
+  changeSite: sites.changeSite,
+  moveSite: sites.moveSite,
+  removeSites: sites.removeSites,
+  setSiteDuty: sites.setSiteDuty,
+  getGround: sites.getGround,
   listTokens: tokens.listTokens,
   makeToken: tokens.makeToken,
   revokeToken: tokens.revokeToken,

@@ -10,6 +10,8 @@ export const policyNames = [
   'weather.derive',
   'stations.view',
   'stations.change',
+  'sites.view',
+  'sites.change',
   'runs.view',
   'runs.export',
   'briefs.view',

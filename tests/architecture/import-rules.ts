@@ -105,6 +105,12 @@ export const importRules: readonly ImportRule[] = [
     mayTypes: ['knex', 'src/engine/**'],
   },
   {
+    // Which station stands for a site is the method's to say, and every feature reads sites with theirs.
+    from: 'server/features/sites/resolved-sites-read-model.ts',
+    may: [OWN_FEATURE, 'src/engine/interpolation/**', 'src/engine/sites/**'],
+    mayTypes: ['knex'],
+  },
+  {
     from: 'server/features/*/*read-model.ts',
     may: [OWN_FEATURE, 'server/db/**', 'src/contract/**', ...rowLayout],
     mayTypes: ['knex', 'src/engine/**'],

@@ -99,6 +99,15 @@ const matrix: Record<EndpointName, readonly number[]> = {
   compareBriefVersions: everyMember,
   saveBriefVersion: plannersToo,
   previewBrief: everyMember,
+  listSites: readersToo,
+  getSite: readersToo,
+  makeSite: plannersToo,
+  // The planner changes the revision that all of them saw, so that the others come second.
+  changeSite: [403, 200, 409, 409, ...strangers, 403, 403],
+  moveSite: [403, 409, 409, 409, ...strangers, 403, 403],
+  removeSites: plannersToo,
+  setSiteDuty: plannersToo,
+  getGround: readersToo,
   listTokens: leadOnly,
   makeToken: leadOnly,
   revokeToken: leadOnly,
@@ -176,6 +185,11 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
   if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
+  if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
+  if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
+  if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });
+  if (name === 'removeSites') return JSON.stringify({ siteIds: [ids.teamId], reason: 'A test.' });
+  if (name === 'setSiteDuty') return JSON.stringify({ owner: caller, dueOn: '2027-05-01', doneOn: null, note: '' });
   if (name === 'makeToken') return JSON.stringify({ name: 'A program', scopes: ['weather:read'], days: 1 });
   if (name === 'startWeatherBatch') return JSON.stringify({ name: `Batch of ${caller}` });
   if (name === 'changeWeatherBatch') return JSON.stringify({ state: 'running' });
@@ -205,6 +219,7 @@ function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
   if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
   if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
+  if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
 
@@ -289,6 +304,13 @@ beforeAll(async () => {
   const batch: { id: string } = await (
     await fetch(`${team}/weather-batches`, { method: 'POST', headers: json, body: JSON.stringify({ name: 'Ours' }) })
   ).json();
+  const site: { id: string } = await (
+    await fetch(`${team}/programmes/${ours.programmeId}/sites`, {
+      method: 'POST',
+      headers: json,
+      body: JSON.stringify({ name: 'Ours', latitude: 10, longitude: 20 }),
+    })
+  ).json();
   archive = await zipBytes({ 'note.md': 'nothing to read' });
   const form = new FormData();
   form.append('file', new Blob([new Uint8Array(archive)]), 'first.zip');
@@ -308,7 +330,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
-  ids = { ...ids, rule: 'step' };
+  ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise' };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });

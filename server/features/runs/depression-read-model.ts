@@ -11,6 +11,9 @@ export interface YearDepression {
   readonly knownHours: number;
 }
 
+/** `weather_years.depression_hours` is month-major: at place (month - 1) x 64 + bin + 1, as the engine lays it out. */
+const BINS = 64;
+
 /** Of every station of a team; newest file first where years repeat. */
 export async function listYearDepressions(
   db: Knex,
@@ -18,16 +21,18 @@ export async function listYearDepressions(
 ): Promise<readonly YearDepression[]> {
   const { rows } = await db.raw<{ rows: YearDepression[] }>(
     `select weather_years.station_id as "stationId", weather_years.kind, weather_years.year,
-       coalesce(sum(depression_hours.hours) filter (where depression_hours.bin_k >= :atLeastK), 0)::integer as hours,
-       coalesce(sum(depression_hours.hours), 0)::integer as "knownHours"
+       counted.hours, counted."knownHours"
      from weather_years
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
-     left join depression_hours
-       on depression_hours.weather_year_id = weather_years.id and depression_hours.month = any(:months::integer[])
+     cross join lateral (
+       select coalesce(sum(bins.hours) filter (where (bins.place - 1) % :bins >= :atLeastK), 0)::integer as hours,
+         coalesce(sum(bins.hours), 0)::integer as "knownHours"
+       from unnest(weather_years.depression_hours) with ordinality as bins (hours, place)
+       where (bins.place - 1) / :bins + 1 = any(:months::integer[])
+     ) as counted
      where weather_years.team_id = :teamId and weather_years.kind <> 'derived'
-     group by weather_years.id
      order by weather_years.station_id, weather_years.created_at desc, weather_years.id`,
-    { ...asked, months: `{${asked.months.join(',')}}` },
+    { ...asked, bins: BINS, months: `{${asked.months.join(',')}}` },
   );
   return rows;
 }

@@ -11,6 +11,7 @@ export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; inve
   const shown = figures.shown ?? newest[0] ?? null;
   const restsOn = figures.runs.length > 0 ? figures.runs : newest;
   return {
+    site: null,
     station: {
       id: station.stationId,
       name: station.stationName,

@@ -113,6 +113,7 @@ export function fixturePlace(station: MapStation): Place {
   const part = (component: string, label: string, unit: string) => ({ component, label, unit });
   const score = station.score;
   return {
+    site: null,
     station: { ...station, zone: 'Africa/Johannesburg' },
     invented: true,
     brief,

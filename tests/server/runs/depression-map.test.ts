@@ -1,6 +1,5 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
-import { hundredths } from '../../../src/engine/conventions.ts';
 import { monthOfEachSlot } from '../../../src/engine/reduction/calendar.ts';
 import { wetBulbColumn } from '../../../src/engine/reduction/derived-columns.ts';
 import { unpackYear } from '../../../src/engine/reduction/packed-columns.ts';
@@ -43,10 +42,10 @@ async function counted(atLeastK: number, months: readonly number[]) {
   let hours = 0;
   let knownHours = 0;
   for (const [slot, dryBulb] of dryBulbC.entries()) {
-    const depression = hundredths(dryBulb - (wetBulbC[slot] ?? Number.NaN));
-    if (!months.includes(monthOf[slot] ?? 0) || Number.isNaN(depression)) continue;
+    const depressionK = dryBulb - (wetBulbC[slot] ?? Number.NaN);
+    if (!months.includes(monthOf[slot] ?? 0) || Number.isNaN(depressionK)) continue;
     knownHours += 1;
-    if (depression >= atLeastK * 100) hours += 1;
+    if (depressionK >= atLeastK) hours += 1;
   }
   return { stationId: row?.stationId, hours, knownHours, years: 1 };
 }
