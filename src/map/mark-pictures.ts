@@ -2,7 +2,17 @@
  * The pictures of marks as pixels, drawn in code. Each mark is two pictures: a field whose colour the map is told (a distance
  * field, so that a slider recolours it without new geometry), and over it the ink: outline, halo, and hatching in grade D.
  */
-import { blend, type Colour, NOTHING, opaque, over, type Pixels, paintDistance, paintPixels, softEdge } from './paint-pixels.ts';
+import {
+  blend,
+  type Colour,
+  NOTHING,
+  opaque,
+  over,
+  type Pixels,
+  paintDistance,
+  paintPixels,
+  softEdge,
+} from './paint-pixels.ts';
 import type { PlaceKind } from './sheet-place.ts';
 
 /** All lengths in CSS pixels. */
