@@ -6,10 +6,7 @@ export type MarkProperties = { readonly id: string; readonly ink: string; readon
 export type NameProperties = { readonly id: string; readonly name: string; readonly figure: string };
 
 /** Places as points for their marks. Nothing in them changes while a slider moves. */
-export function markFeatures(
-  kind: PlaceKind,
-  places: readonly SheetPlace[],
-): FeatureCollection<Point, MarkProperties> {
+export function markFeatures(kind: PlaceKind, places: readonly SheetPlace[]): FeatureCollection<Point, MarkProperties> {
   return collection(
     places.map((place) =>
       point(place, { id: place.id, ink: inkName(kind, place.grade === 'D'), letters: place.letters ?? '' }),
@@ -18,10 +15,7 @@ export function markFeatures(
 }
 
 /** Places as points for their names, with the figure of the layer under each. */
-export function nameFeatures(
-  places: readonly SheetPlace[],
-  inks: MarkInks,
-): FeatureCollection<Point, NameProperties> {
+export function nameFeatures(places: readonly SheetPlace[], inks: MarkInks): FeatureCollection<Point, NameProperties> {
   return collection(places.map((place) => point(place, nameOf(place, inks))));
 }
 

@@ -1,4 +1,8 @@
-import type { DataDrivenPropertyValueSpecification, ExpressionSpecification, SymbolLayerSpecification } from 'maplibre-gl';
+import type {
+  DataDrivenPropertyValueSpecification,
+  ExpressionSpecification,
+  SymbolLayerSpecification,
+} from 'maplibre-gl';
 import { useMemo } from 'react';
 import { Layer, Source } from 'react-map-gl/maplibre';
 import { MEDIUM, ROMAN } from './map-fonts.ts';
@@ -161,30 +165,30 @@ export function RaisedRings({ raised, inks }: RaisedProps) {
 export function RaisedNames() {
   return (
     <>
-    <Layer
-      id="raised-mark"
-      type="symbol"
-      source="raised"
-      filter={['==', ['get', 'how'], 'held']}
-      layout={{ 'icon-image': ['get', 'ink'], 'icon-allow-overlap': true, 'icon-ignore-placement': true }}
-    />
-    <Layer
-      id="raised-name"
-      type="symbol"
-      source="raised"
-      layout={{
-        'text-field': nameAndFigure,
-        'text-font': [MEDIUM],
-        'text-size': 14,
-        'text-variable-anchor': SIDES,
-        'text-radial-offset': 1.25,
-        'text-justify': 'auto',
-        'text-line-height': 1.1,
-        'text-allow-overlap': true,
-        'text-ignore-placement': false,
-      }}
-      paint={{ 'text-color': INK, 'text-halo-color': PAPER, 'text-halo-width': 2 }}
-    />
+      <Layer
+        id="raised-mark"
+        type="symbol"
+        source="raised"
+        filter={['==', ['get', 'how'], 'held']}
+        layout={{ 'icon-image': ['get', 'ink'], 'icon-allow-overlap': true, 'icon-ignore-placement': true }}
+      />
+      <Layer
+        id="raised-name"
+        type="symbol"
+        source="raised"
+        layout={{
+          'text-field': nameAndFigure,
+          'text-font': [MEDIUM],
+          'text-size': 14,
+          'text-variable-anchor': SIDES,
+          'text-radial-offset': 1.25,
+          'text-justify': 'auto',
+          'text-line-height': 1.1,
+          'text-allow-overlap': true,
+          'text-ignore-placement': false,
+        }}
+        paint={{ 'text-color': INK, 'text-halo-color': PAPER, 'text-halo-width': 2 }}
+      />
     </>
   );
 }

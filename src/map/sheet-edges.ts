@@ -1,5 +1,5 @@
 import type { FeatureCollection, Point } from 'geojson';
-import { type SheetView, latitudeAt, longitudeAt } from './sheet-view.ts';
+import { latitudeAt, longitudeAt, type SheetView } from './sheet-view.ts';
 import type { Furniture } from './use-furniture.ts';
 
 /** The picture of an edge: nothing to see, but names find no room where it lies. */

@@ -15,7 +15,10 @@ type ZoomButtonsProps = {
 
 export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
   return (
-    <fieldset data-furniture="" className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line">
+    <fieldset
+      data-furniture=""
+      className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line"
+    >
       <legend className="sr-only">Zoom</legend>
       <SheetButton label="Zoom in" onPress={onIn}>
         <path d="M2 8h12M8 2v12" />

@@ -23,7 +23,8 @@ export function useMarkInks(
       for (const { id } of places) {
         const colour = inks.get(id)?.colour ?? null;
         next.set(id, colour);
-        if (!told.current.has(id) || told.current.get(id) !== colour) map.setFeatureState({ source, id }, stateOf(colour));
+        if (!told.current.has(id) || told.current.get(id) !== colour)
+          map.setFeatureState({ source, id }, stateOf(colour));
       }
       for (const id of told.current.keys()) if (!next.has(id)) map.removeFeatureState({ source, id });
       told.current = next;

@@ -21,9 +21,7 @@ export function usePictures(map: MapLibreMap | null): void {
         return;
       }
       const picture =
-        name === SHEET_EDGE
-          ? paintPixels({ sizePx: 1, pixelRatio }, () => NOTHING)
-          : drawTownDot(name, pixelRatio);
+        name === SHEET_EDGE ? paintPixels({ sizePx: 1, pixelRatio }, () => NOTHING) : drawTownDot(name, pixelRatio);
       if (picture !== null) map.addImage(name, picture, { pixelRatio });
     });
     return () => {
