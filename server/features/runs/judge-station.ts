@@ -3,6 +3,7 @@ import { briefNotes } from '#engine/brief/brief-notes.ts';
 import type { GradeAnswer } from '#engine/score/grade-place.ts';
 import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
 import { AT_THE_STATION, gradeOfYears } from './grade-of-years.ts';
+import { noteWithoutRun } from './judged-places.ts';
 import type { RunOfYear, StationYear } from './station-years-read-model.ts';
 
 /** A station as a place: what its accepted years come to under a brief. */
@@ -50,14 +51,11 @@ export function judgeStation(
     ),
     notes: briefNotes(brief),
     pending: open.filter(({ failure }) => failure === null).length,
-    scoreNote: judged.length === 0 ? noteWithoutRun(open) : figures.scoreNote,
+    scoreNote:
+      judged.length === 0
+        ? noteWithoutRun(open.map(({ failure }) => ({ failed: failure !== null })))
+        : figures.scoreNote,
   };
-}
-
-function noteWithoutRun(open: readonly StationYear[]): string {
-  return open.every(({ failure }) => failure !== null)
-    ? 'not judged: a fault of ours stopped it, its weather file says so'
-    : 'not judged yet';
 }
 
 /** The rows of a map, one group per station; they come ordered by station. */

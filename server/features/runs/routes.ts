@@ -14,9 +14,10 @@ import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
 import { type ExportParts, exportRunHours } from './export-run-hours.ts';
 import { byStation, judgeStation } from './judge-station.ts';
-import { presentMapStation } from './present-map.ts';
+import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
+import { programmePlaces } from './programme-places.ts';
 import { type RescoreThreads, rescore } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import { listStationYears } from './station-years-read-model.ts';
@@ -41,16 +42,14 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
     const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
-    const { briefVersionId } = brief;
-    const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
-    const stations = byStation(years).map((group) => judgeStation(brief.body, group));
+    const { stations, sites, pending } = await programmePlaces(db, { teamId, programmeId, brief });
     return {
       programme: { id: programmeId, name: brief.programmeName },
       invented: brief.invented,
       brief: presentBriefBasis(brief),
       stations: stations.map(presentMapStation),
-      sites: [],
-      pending: stations.reduce((sum, { pending }) => sum + pending, 0),
+      sites: sites.map(presentMapSite),
+      pending,
     };
   });
 
