@@ -1,5 +1,5 @@
 import { adjustToHeight, heightInSteps } from '#engine/climate/adjust-to-height.ts';
-import type { WeatherYear } from '#engine/reduction/weather-year.ts';
+import type { PackedYear, WeatherYear } from '#engine/reduction/weather-year.ts';
 
 export interface HeightUsed {
   /** What the hours are judged at, m: part of a run's key. */
@@ -24,10 +24,18 @@ export function heightUsed(
 }
 
 /** The weather that a run judged: as it was measured, or moved to its height. */
-export function yearAtHeight(
-  year: WeatherYear,
-  { heightM, adjustedFromM }: { readonly heightM: number; readonly adjustedFromM: number | null },
-): WeatherYear {
-  if (adjustedFromM === null) return year;
-  return adjustToHeight({ year, fromElevationM: adjustedFromM, toElevationM: heightM });
+export function yearAtHeight(year: WeatherYear, height: JudgedHeight): WeatherYear {
+  return { ...year, packed: packedAtHeight(year.packed, height) };
+}
+
+export interface JudgedHeight {
+  readonly heightM: number;
+  /** The height of the station; null: nothing is moved. */
+  readonly adjustedFromM: number | null;
+}
+
+export function packedAtHeight(packed: PackedYear, { heightM, adjustedFromM }: JudgedHeight): PackedYear {
+  return adjustedFromM === null
+    ? packed
+    : adjustToHeight({ year: { packed }, fromElevationM: adjustedFromM, toElevationM: heightM }).packed;
 }
