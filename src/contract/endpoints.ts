@@ -54,6 +54,7 @@ export const endpoints = {
   watchTeam: events.watchTeam,
   getMap: map.getMap,
   getDepressionMap: depression.getDepressionMap,
+  getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
   exportRunHours: hours.exportRunHours,

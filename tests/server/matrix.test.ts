@@ -86,6 +86,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getMap: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
+  getSitePlace: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,
