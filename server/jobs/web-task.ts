@@ -5,7 +5,7 @@ import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
 import type { RunResult, Verdict } from '#engine/run/run-result.ts';
 import type { RawComponents } from '#engine/score/weighted-score.ts';
 
-/** Some stations judged by one draft brief. */
+/** Some stations judged by one draft brief, at their own heights or at those of sites. */
 export interface RescoreTask {
   readonly brief: Brief;
   readonly stations: readonly StationToRescore[];
@@ -16,7 +16,10 @@ export interface RescoreTask {
 export interface StationToRescore {
   readonly stationId: string;
   readonly zone: string;
+  /** What the hours are judged at: its own, or a site's that the weather is moved to. */
   readonly heightM: number;
+  /** The station's own height where the weather is moved; null where it is as measured. */
+  readonly adjustedFromM: number | null;
   readonly position: { readonly latitude: number; readonly longitude: number };
   /** Newest file first. */
   readonly years: readonly {
@@ -35,6 +38,7 @@ export type ShownResult = Pick<RunResult, 'ledger' | 'severityKh' | 'worstSpell'
 /** The figures of a station as a place, and of each of its years. */
 export interface RescoredStation {
   readonly stationId: string;
+  readonly heightM: number;
   readonly score: number | null;
   readonly scoreNote: string | null;
   readonly words: string | null;

@@ -27,7 +27,13 @@ export function flatScale(limits: readonly number[], colours: Sequence): LayerSc
 /** Which class a figure falls in; figures outside are held to the ends. */
 export function classOf({ limits }: LayerScale, value: number): number {
   const last = limits.length - 2;
-  return Math.min(last, Math.max(0, limits.findLastIndex((limit) => limit <= value)));
+  return Math.min(
+    last,
+    Math.max(
+      0,
+      limits.findLastIndex((limit) => limit <= value),
+    ),
+  );
 }
 
 export function colourOf(scale: LayerScale, value: number): string {

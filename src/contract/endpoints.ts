@@ -57,6 +57,7 @@ export const endpoints = {
   getSurface: surface.getSurface,
   getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
+  getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
   exportRunHours: hours.exportRunHours,

@@ -42,6 +42,8 @@ export function inkName(kind: PlaceKind, hatched: boolean): string {
   return `ink:${kind}:${hatched ? 'hatched' : 'plain'}`;
 }
 
+export const POINT_CROSS = 'point:cross';
+
 export interface MarkPicture {
   readonly pixels: Pixels;
   readonly isField: boolean;
@@ -49,6 +51,7 @@ export interface MarkPicture {
 
 /** The picture that `fieldName` or `inkName` named; null for the name of anything else. */
 export function markPicture(name: string, pixelRatio: number): MarkPicture | null {
+  if (name === POINT_CROSS) return { pixels: drawCross(pixelRatio), isField: false };
   const found = /^(field|ink):(station|site)(?::(hatched|plain))?$/.exec(name);
   if (found === null) return null;
   const kind: PlaceKind = found[2] === 'site' ? 'site' : 'station';
@@ -87,6 +90,22 @@ export function drawInk(kind: PlaceKind, { hatched, pixelRatio }: InkOptions): P
 function innerSquare(rule: Colour, { depth, pixelRatio }: { depth: number; pixelRatio: number }): Colour {
   const lined = over(rule, INK, softEdge(depth - RULE_PX, pixelRatio));
   return over(lined, PAPER, softEdge(depth - RULE_PX - INNER_LINE_PX, pixelRatio));
+}
+
+const CROSS_REACH_PX = 8;
+const CROSS_GAP_PX = 2;
+
+/** A clicked position: a cross that leaves its middle free. */
+function drawCross(pixelRatio: number): Pixels {
+  return paintPixels({ sizePx: MARK_SIZE_PX, pixelRatio }, (x, y) => {
+    const along = Math.max(Math.abs(x), Math.abs(y));
+    const across = Math.min(Math.abs(x), Math.abs(y));
+    const inArm = (wider: number) =>
+      softEdge(LINE_PX / 2 + wider - across, pixelRatio) *
+      softEdge(CROSS_REACH_PX + wider - along, pixelRatio) *
+      softEdge(along - CROSS_GAP_PX + wider, pixelRatio);
+    return over(over(NOTHING, PAPER, inArm(HALO_PX) * 0.85), INK, inArm(0));
+  });
 }
 
 /** Signed distance to an upright equilateral triangle: negative inside. */

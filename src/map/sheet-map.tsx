@@ -11,6 +11,7 @@ import { placeAt } from './place-at.ts';
 import type { RaisedPlace } from './place-features.ts';
 import { PlaceKeys } from './place-keys.tsx';
 import { MARK_SOURCES, PlaceMarks, PlaceNames, RaisedNames, RaisedRings } from './place-layers.tsx';
+import { PointLayer } from './point-layer.tsx';
 import type { UnitSystem } from './scale-bar.ts';
 import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
 import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
@@ -22,7 +23,7 @@ import { useIdleMark } from './use-idle-mark.ts';
 import { useMarkInks } from './use-mark-inks.ts';
 import { usePictures } from './use-pictures.ts';
 import { type MoveSite, useSiteDrag } from './use-site-drag.ts';
-import { type SheetCamera, useTellView, type ViewTold } from './use-tell-view.ts';
+import { type SheetCamera, useFollowCamera, useTellView, type ViewTold } from './use-tell-view.ts';
 
 // A built client answers an unknown address with its page; the worker has to be asked for by its real name.
 maplibregl.setWorkerUrl(workerUrl);
@@ -37,6 +38,8 @@ export type SheetMapProps = {
   readonly onChoose: (place: PlaceRef) => void;
   /** A click beside every mark. */
   readonly onPoint?: (position: Position) => void;
+  /** A position that is in view beside the map; marked by a cross. */
+  readonly point?: Position | null;
   /** The chosen site was dragged to another place; without it nothing can be dragged. */
   readonly onMoveSite?: MoveSite;
   /** Where to look first; without it the places are fitted into the frame, or the world where there are none. */
@@ -71,6 +74,7 @@ export function SheetMap(props: SheetMapProps) {
   useMarkInks(map, MARK_SOURCES.site, { places: sites, inks });
   useIdleMark(map, wrapper);
   useTellView(map, props.onView);
+  useFollowCamera(map, props.camera);
   const fitAll = useFit(map, props);
   const { heldAt, onStart } = useSiteDrag({ map, chosen, onMoveSite: props.onMoveSite });
   const places = { stations, sites };
@@ -135,6 +139,7 @@ export function SheetMap(props: SheetMapProps) {
             <PlaceMarks kind="station" places={stations} />
             <PlaceMarks kind="site" places={sites} />
             <RaisedNames />
+            <PointLayer point={props.point ?? null} />
             <SheetEdgeLayer map={map} furniture={furniture} />
           </MapView>
           {keys('site', 'Sites on the map')}

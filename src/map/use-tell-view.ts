@@ -46,3 +46,20 @@ export function useTellView(map: MapLibreMap | null, onView: ViewTold | undefine
     };
   }, [map]);
 }
+
+/** The address rounds where the map looks: nearer than this it looks there already. */
+const SAME_ZOOM = 0.02;
+const SAME_DEGREES = 0.002;
+
+/** Looks where an address says once it says something else, as after Back. */
+export function useFollowCamera(map: MapLibreMap | null, camera: SheetCamera | null): void {
+  useEffect(() => {
+    if (map === null || camera === null || map.isMoving()) return;
+    const { lng, lat } = map.getCenter();
+    const isThere =
+      Math.abs(map.getZoom() - camera.zoom) < SAME_ZOOM &&
+      Math.abs(lng - camera.longitude) < SAME_DEGREES &&
+      Math.abs(lat - camera.latitude) < SAME_DEGREES;
+    if (!isThere) map.jumpTo({ center: [camera.longitude, camera.latitude], zoom: camera.zoom });
+  }, [map, camera]);
+}

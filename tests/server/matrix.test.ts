@@ -88,6 +88,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
+  getSitePlace: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,

@@ -1,4 +1,5 @@
 import type { PlaceEstimate } from '#contract/surface.ts';
+import { isIndexLimit } from '#engine/hour-classes/index-limit.ts';
 import { estimateBetween } from '#engine/interpolation/estimate-between.ts';
 import type { Position } from '#engine/interpolation/great-circle-km.ts';
 import { choosePower } from '#engine/interpolation/leave-one-out.ts';
@@ -46,7 +47,7 @@ export function estimatePlace(
     elevationM,
     stations,
     anchors,
-    indexPoints: brief.body.limit.kind === 'thi' || brief.body.limit.kind === 'shade-heat',
+    indexPoints: isIndexLimit(brief.body.limit),
     each: NEAREST_STATIONS,
     power: chosen.power,
   });

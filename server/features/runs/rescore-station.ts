@@ -14,9 +14,12 @@ export function rescoreStations({ brief, stations, withHashes }: RescoreTask): r
 
 function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashes: boolean }): RescoredStation {
   const { brief } = on;
-  const { stationId, zone, heightM, position } = station;
+  const { stationId, zone, heightM, adjustedFromM, position } = station;
   const runs = station.years.map(({ weatherYearId, contentHash, columns, ...facts }) => {
-    const year: WeatherYear = { ...facts, packed: keptYear({ weatherYearId, contentHash, columns }) };
+    const year: WeatherYear = {
+      ...facts,
+      packed: keptYear({ weatherYearId, contentHash, columns, heightM, adjustedFromM }),
+    };
     const { hourClassCodes, ...result } = judgeYear({ year, brief, zone, heightM, position });
     const resultHash = on.withHashes ? runResultHash(result, hourClassCodes) : null;
     return { weatherYearId, kind: facts.kind, year: facts.year, result, resultHash };
@@ -24,6 +27,7 @@ function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashe
   const { score, scoreNote, words, verdict, yearsMeeting, range, shown, ...figures } = placeFigures({ brief, runs });
   return {
     stationId,
+    heightM,
     score,
     scoreNote,
     words,

@@ -3,8 +3,8 @@ import { METHOD_VERSION } from '#engine/conventions.ts';
 import { rawOfParts } from '#engine/score/raw-of-parts.ts';
 import type { ProgrammeBrief } from '../briefs/brief-read-model.ts';
 import type { NamedStation } from './estimate-place.ts';
-import { byStation, judgeStation } from './judge-station.ts';
-import { listStationYears } from './station-years-read-model.ts';
+import { makeJudgedPlaces } from './judged-places.ts';
+import { listAcceptedYears, listRunsInShort, listStationPlaces } from './places-read-model.ts';
 
 /** The stations of the team that have a score under a brief, in the order of the map, with what it was formed of. */
 export async function scoredStations(
@@ -12,11 +12,14 @@ export async function scoredStations(
   { teamId, brief }: { teamId: string; brief: ProgrammeBrief },
 ): Promise<readonly NamedStation[]> {
   const { briefVersionId, body } = brief;
-  const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
-  return byStation(years).flatMap((group) => {
-    const { station, figures } = judgeStation(body, group);
-    if (figures.score === null) return [];
-    const { stationId, stationName: name, latitude, longitude, elevationM } = station;
-    return [{ stationId, name, latitude, longitude, elevationM, score: figures.score, raw: rawOfParts(figures.parts) }];
+  const [stations, years, runs] = await Promise.all([
+    listStationPlaces(db, teamId),
+    listAcceptedYears(db, teamId),
+    listRunsInShort(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION }),
+  ]);
+  const places = makeJudgedPlaces({ brief: body, stations, years, runs });
+  return stations.flatMap(({ id: stationId, ...station }) => {
+    const { score, parts } = places.at(stationId, station.elevationM).figures;
+    return score === null ? [] : [{ stationId, ...station, score, raw: rawOfParts(parts) }];
   });
 }

@@ -1,4 +1,12 @@
-import { Input, NumberField, Slider, SliderThumb, SliderTrack, ToggleButton, ToggleButtonGroup } from 'react-aria-components';
+import {
+  Input,
+  NumberField,
+  Slider,
+  SliderThumb,
+  SliderTrack,
+  ToggleButton,
+  ToggleButtonGroup,
+} from 'react-aria-components';
 import { monthNames } from '../../charts/calendar.ts';
 import { classWords } from '../../charts/hour-class-words.ts';
 import { hourClasses } from '../../engine/hour-classes/hour-class.ts';

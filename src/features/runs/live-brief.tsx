@@ -143,9 +143,21 @@ function HoursSlider({ parameter, value, onChange }: HoursSliderProps) {
       <div className="flex items-baseline justify-between gap-2">
         <span className="text-fine">{parameter.label}</span>
         <span className="flex items-baseline gap-1 text-fine text-soft">
-          <HourField label="Opening" value={opening} most={closing - 1} isSaved={isSaved} onChange={(next) => tell([next, closing], true)} />
+          <HourField
+            label="Opening"
+            value={opening}
+            most={closing - 1}
+            isSaved={isSaved}
+            onChange={(next) => tell([next, closing], true)}
+          />
           to
-          <HourField label="Closing" value={closing} least={opening + 1} isSaved={isSaved} onChange={(next) => tell([opening, next], true)} />
+          <HourField
+            label="Closing"
+            value={closing}
+            least={opening + 1}
+            isSaved={isSaved}
+            onChange={(next) => tell([opening, next], true)}
+          />
           h
         </span>
       </div>

@@ -1,8 +1,9 @@
 /** Layers of the map: what its marks are coloured by, how they are written in an address, and what a place has of each. */
+
+import { metClasses, unmetClasses } from '../../charts/hour-class-colours.ts';
 import { classWords } from '../../charts/hour-class-words.ts';
 import { flatScale, type LayerScale, rampScale, roundTop } from '../../charts/layer-scale.ts';
 import { BRONZE, GRADES, MADDER, MOSS, PLUM, type Sequence, UMBER } from '../../charts/sequences.ts';
-import { metClasses, unmetClasses } from '../../charts/hour-class-colours.ts';
 import type { PlaceFigures } from '../../contract/place-figures.ts';
 import { type HourClass, hourClasses } from '../../engine/hour-classes/hour-class.ts';
 import { number } from '../../lib/format.ts';
@@ -76,7 +77,7 @@ export type DepressionHours = ReadonlyMap<string, number | null>;
 const GRADE_VALUES = { A: 3, B: 2, C: 1, D: 0 } as const;
 
 /** What the layer has of a place; null where there is nothing to colour. A site has the depression of its station. */
-export function valueOf(
+export function layerValue(
   layer: MapLayer,
   place: PlaceFigures & { readonly stationId: string | null },
   depression: DepressionHours,
@@ -157,7 +158,6 @@ export function layerTitle(layer: MapLayer): string {
   if (layer.kind === 'hours') return classWords[layer.hourClass];
   return layerNames[layer.kind];
 }
-
 
 export function layerUnit(layer: MapLayer): string {
   switch (layer.kind) {

@@ -2,7 +2,7 @@ import { classWords } from '../../charts/hour-class-words.ts';
 import { colourOf, type LayerScale } from '../../charts/layer-scale.ts';
 import type { LegendPlace } from '../../map/layer-legend.tsx';
 import type { MarkInk, MarkInks } from '../../map/sheet-place.ts';
-import { type DepressionHours, figureOf, type MapLayer, scaleOf, valueOf } from './map-layer.ts';
+import { type DepressionHours, figureOf, layerValue, type MapLayer, scaleOf } from './map-layer.ts';
 import type { MapPlace, MapPlaces } from './map-places.ts';
 
 export interface InkedLayer {
@@ -15,7 +15,7 @@ export interface InkedLayer {
 /** How the layer inks every place of the map. */
 export function inkedLayer(layer: MapLayer, { stations, sites }: MapPlaces, depression: DepressionHours): InkedLayer {
   const places = [...sites, ...stations];
-  const values = places.map((place) => valueOf(layer, place, depression));
+  const values = places.map((place) => layerValue(layer, place, depression));
   const most = layer.kind === 'depression' ? values.reduce<number>((top, value) => Math.max(top, value ?? 0), 0) : 0;
   const scale = scaleOf(layer, most);
   const inks = new Map<string, MarkInk>();
@@ -36,7 +36,7 @@ export function placeSentence(place: MapPlace, layer: MapLayer, depression: Depr
         ? ', does not meet the brief'
         : ', meets the brief';
   const isSaid = layer.kind === 'score' || layer.kind === 'grade';
-  const figure = isSaid ? '' : figureOf(layer, valueOf(layer, place, depression));
+  const figure = isSaid ? '' : figureOf(layer, layerValue(layer, place, depression));
   const letters = place.letters === undefined ? '' : `Site ${place.letters}, `;
   return `${letters}${place.name}: ${score}, grade ${place.grade}${verdict}${figure === '' ? '' : `, ${layerPhrase(layer)} ${figure}`}`;
 }

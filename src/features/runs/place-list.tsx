@@ -1,7 +1,7 @@
 import { useEffect, useMemo, useRef } from 'react';
 import { Input, ListBox, ListBoxItem, ListLayout, SearchField, Virtualizer } from 'react-aria-components';
-import type { PlaceKind } from '../../map/sheet-place.ts';
 import { plural } from '../../lib/format.ts';
+import type { PlaceKind } from '../../map/sheet-place.ts';
 import type { MapPlace } from './map-places.ts';
 import { filterByName, type RankedPlace, rankedPlaces } from './ranked-places.ts';
 import { noScoreWords } from './run-words.ts';

@@ -165,7 +165,14 @@ describe('many station-years', () => {
     };
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });
     const parts = { db: road.db, cache, threads: counting };
-    const asked = { teamId: team.teamId, brief: drierBrief, stationIds: null, withHashes: false };
+    const asked = {
+      teamId: team.teamId,
+      programmeId: team.programmeId,
+      siteIds: [],
+      brief: drierBrief,
+      stationIds: null,
+      withHashes: false,
+    };
     await expect(rescore(parts, { ...asked, signal: gone.signal })).rejects.toThrow('the client has gone');
     expect(taken).toBe(3);
     const answer = await rescore({ ...parts, threads }, { ...asked, signal: goesOn });
@@ -181,7 +188,15 @@ describe('many station-years', () => {
   it('are judged in batches when they do not fit into memory together, with the same answer', async () => {
     const years = await listYearsToRescore(road.db, team.teamId);
     const small = years.slice(0, 7).reduce((sum, year) => sum + bytesOfYear(year), 0);
-    const asked = { teamId: team.teamId, brief: drierBrief, stationIds: null, withHashes: true, signal: goesOn };
+    const asked = {
+      teamId: team.teamId,
+      programmeId: team.programmeId,
+      siteIds: [],
+      brief: drierBrief,
+      stationIds: null,
+      withHashes: true,
+      signal: goesOn,
+    };
     const tight = makeColumnCache(road.db, { maxBytes: small });
     const inBatches = await rescore({ db: road.db, threads, cache: tight }, asked);
     expect(tight.heldBytes()).toBeLessThanOrEqual(small);
@@ -199,7 +214,7 @@ describe('the columns in memory', () => {
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });
     const years = (await listYearsToRescore(road.db, team.teamId)).slice(-2);
     const accepted = new Map(years.map(({ weatherYearId, contentHash }) => [weatherYearId, contentHash]));
-    const asked = { teamId: team.teamId, years, accepted, signal: goesOn };
+    const asked = { teamId: team.teamId, programmeId: team.programmeId, siteIds: [], years, accepted, signal: goesOn };
     const first = await cache.take(asked);
     expect(first.size).toBe(2);
     for (const [weatherYearId, columns] of first) {

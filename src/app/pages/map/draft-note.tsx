@@ -42,7 +42,8 @@ export function DraftNote({ ids, live, isBehind, error, onSaved }: DraftNoteProp
   return (
     <section aria-label="Draft" className="border-y border-ink/50 py-1.5">
       <p className="text-fine">
-        <span className="font-semibold">Draft</span>, differs from version {version} in: {draftWords(parameters, draft)}.
+        <span className="font-semibold">Draft</span>, differs from version {version} in: {draftWords(parameters, draft)}
+        .
       </p>
       <div className="mt-1 flex flex-wrap items-center gap-x-3 gap-y-1">
         {mayChangeBriefs(role) ? (

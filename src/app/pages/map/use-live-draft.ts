@@ -61,7 +61,8 @@ export function useLiveDraft({ ids, brief, address, changeAddress }: LiveDraftIn
     if (!isDone) return;
     const printed = printLiveDraft(next);
     // Leaving the saved brief is a step that Back undoes; each further touch of a slider is none.
-    if (printed !== address.draft) changeAddress({ draft: printed }, { replace: address.draft !== null && printed !== null });
+    if (printed !== address.draft)
+      changeAddress({ draft: printed }, { replace: address.draft !== null && printed !== null });
   };
   return { record, parameters, draft, key, ...tried, change };
 }
