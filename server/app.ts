@@ -12,6 +12,7 @@ import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
+import { placesRoutes } from './features/places/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import { queueSiteRuns } from './features/runs/queue-site-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
@@ -97,6 +98,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   sitesRoutes(router, deps, { relief, queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, { threads, yearThread, readDraft, relief });
+  placesRoutes(router, deps);
   methodRoutes(router, deps);
   teamsRoutes(router, deps);
   return router;

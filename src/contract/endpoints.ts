@@ -5,6 +5,7 @@ import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
+import * as places from './places.ts';
 import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
@@ -53,6 +54,7 @@ export const endpoints = {
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
+  findPlaces: places.findPlaces,
   getMap: map.getMap,
   getSurface: surface.getSurface,
   getEstimate: surface.getEstimate,
