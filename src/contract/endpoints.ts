@@ -5,12 +5,14 @@ import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
+import * as places from './places.ts';
 import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
+import * as surface from './surface.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -52,7 +54,10 @@ export const endpoints = {
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
+  findPlaces: places.findPlaces,
   getMap: map.getMap,
+  getSurface: surface.getSurface,
+  getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
   getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,

@@ -115,7 +115,8 @@ export function Sources() {
     <p className="bg-paper/85 px-2 py-0.5 text-right text-[0.6875rem] leading-snug text-soft [&_a]:text-soft [&_a]:underline">
       Made with <Away to="https://www.naturalearthdata.com/">Natural Earth</Away>. Places:{' '}
       <Away to="https://www.geonames.org/">GeoNames</Away>,{' '}
-      <Away to="https://creativecommons.org/licenses/by/4.0/">CC BY 4.0</Away>
+      <Away to="https://creativecommons.org/licenses/by/4.0/">CC BY 4.0</Away>. Relief: ETOPO5,{' '}
+      <Away to="https://www.ncei.noaa.gov/">NOAA</Away>
     </p>
   );
 }

@@ -83,7 +83,10 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherArchive: uploadersOnly,
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
+  findPlaces: readersToo,
   getMap: readersToo,
+  getSurface: readersToo,
+  getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getSitePlace: readersToo,
@@ -217,6 +220,8 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
   if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
+  if (name === 'findPlaces') return '?text=Korrel';
+  if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
   if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }

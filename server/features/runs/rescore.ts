@@ -10,6 +10,8 @@ import { heightUsed } from './height-used.ts';
 import { presentRescoredSite, presentRescoredStation, type SiteToRescore } from './present-rescored.ts';
 import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
+import { type ScoredStation, surfaceOf } from './surface.ts';
+import type { SurfaceGrounds } from './surface-ground.ts';
 
 export type RescoreThreads = Pick<WebThreads, 'threads' | 'rescore'>;
 
@@ -27,6 +29,8 @@ export interface RescoreAsked {
   readonly stationIds: readonly string[] | null;
   readonly siteIds: readonly string[];
   readonly withHashes: boolean;
+  /** Asks for the surface too. */
+  readonly surface?: { readonly grounds: SurfaceGrounds; readonly held: string | undefined };
   readonly signal: AbortSignal;
 }
 
@@ -73,9 +77,28 @@ export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise
       years.filter(({ stationId }) => wanted.has(stationId)),
       own,
     ),
+    surface: await surfaceUnder(asked, own, years),
     loadMs,
     totalMs: performance.now() - begun,
   };
+}
+
+/** Between the stations under the draft; only with all of them. */
+async function surfaceUnder(
+  { surface, stationIds, brief, signal }: RescoreAsked,
+  stations: readonly RescoredStation[],
+  years: readonly YearToRescore[],
+): Promise<RescoreAnswer['surface']> {
+  if (surface === undefined || stationIds !== null) return null;
+  const places = new Map(years.map((year) => [year.stationId, year]));
+  const scored = stations.flatMap(({ stationId, score, raw }): ScoredStation[] => {
+    const place = places.get(stationId);
+    if (score === null || place === undefined) return [];
+    const { latitude, longitude, elevationM } = place;
+    return [{ latitude, longitude, elevationM, raw }];
+  });
+  const { grounds, held } = surface;
+  return surfaceOf(grounds, { stations: scored, anchors: brief.score, held, signal });
 }
 
 function keyOf({ stationId, heightM }: { stationId: string; heightM: number }): string {

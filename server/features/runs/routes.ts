@@ -4,14 +4,17 @@ import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
 import { getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getEstimate, getSurface } from '#contract/surface.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
+import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
+import { estimatePlace } from './estimate-place.ts';
 import { type ExportParts, exportRunHours } from './export-run-hours.ts';
 import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
@@ -21,7 +24,10 @@ import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
 import { type RescoreThreads, rescore } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
+import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
+import { surfaceOf } from './surface.ts';
+import { makeSurfaceGrounds, type SurfaceThreads } from './surface-ground.ts';
 
 /** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
 const CACHED_BYTES = 512 * 1024 * 1024;
@@ -30,15 +36,18 @@ const MOST_PREVIEWS = 16;
 
 /** What runs need of the other parts, handed in where the server is wired. */
 export interface RunsParts {
-  readonly threads: RescoreThreads;
+  readonly threads: RescoreThreads & SurfaceThreads;
+  /** Approximate heights and coasts. */
+  readonly relief: Relief;
   readonly yearThread: ExportParts['yearThread'];
   /** The brief in a request's body, or every fault of it at its path. */
   readonly readDraft: (draft: unknown) => Brief;
 }
 
-export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, readDraft }: RunsParts): void {
+export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearThread, readDraft }: RunsParts): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
+  const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
@@ -52,6 +61,19 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
       sites: sites.map(presentMapSite),
       pending,
     };
+  });
+
+  mount(router, deps, getSurface, async ({ params: { teamId, programmeId }, query }, { signal }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
+    const stations = await scoredStations(db, { teamId, brief });
+    return surfaceOf(grounds, { stations, anchors: brief.body.score, held: query.held, signal });
+  });
+
+  mount(router, deps, getEstimate, async ({ params: { teamId, programmeId }, query }) => {
+    const { brief: briefId, ...position } = query;
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId });
+    const stations = await scoredStations(db, { teamId, brief });
+    return estimatePlace(relief, { brief, stations, position });
   });
 
   mount(router, deps, getDepressionMap, async ({ params: { teamId }, query }) => {
@@ -79,7 +101,8 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
     await briefOfProgramme(db, { teamId, programmeId });
     const { stationIds = null, siteIds = [] } = body;
     const asked = { teamId, programmeId, brief, stationIds, siteIds, withHashes: query.hashes === 'yes', signal };
-    return inTurn(() => rescore({ db, threads, cache }, asked));
+    const surface = body.surface === undefined ? {} : { surface: { grounds, held: body.surface.held } };
+    return inTurn(() => rescore({ db, threads, cache }, { ...asked, ...surface }));
   });
 
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
