@@ -1,6 +1,6 @@
 /**
  * What a planner waits for with 3,000 stations and 10,000 sites: `npx tsx tests/bench/planners-day.ts`. The product's own web application
- * over HTTP with compression, a database of its own; time by the clock, with the share of the machine that others left idle.
+ * over HTTP with compression, a database of its own; time by the clock and of this process's processor, client included, with the share of the machine that others left idle.
  */
 import http from 'node:http';
 import path from 'node:path';
@@ -8,14 +8,14 @@ import { gunzipSync } from 'node:zlib';
 import { createApp, makeWebThreads } from '../../server/app.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
 import { makePerson } from '../../server/features/accounts/make-person.ts';
-import { startBrief } from '../../server/features/briefs/start-brief.ts';
+import { newestBriefVersionIds } from '../../server/features/briefs/brief-read-model.ts';
 import { officeBrief } from '../../server/features/briefs/presets.ts';
+import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { judgeStoredYear } from '../../server/features/runs/judge-year.ts';
-import { findMissingRuns } from '../../server/features/runs/missing-runs-read-model.ts';
+import { listYearsAtStations } from '../../server/features/runs/site-runs-read-model.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { openTeamFeed } from '../../server/jobs/team-feed.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
-import { METHOD_VERSION } from '../../src/engine/conventions.ts';
 import { keepLog } from '../support/quiet-log.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
 import { makeManyPlaces } from './many-places.ts';
@@ -43,9 +43,9 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
     ),
   );
   await fillWithClimates({ db, home, teamId, personId });
-  for (const run of await findMissingRuns(db, METHOD_VERSION)) {
-    if (run.teamId === teamId) await judgeStoredYear(db, run);
-  }
+  const [briefVersionId = ''] = await newestBriefVersionIds(db, teamId);
+  for (const { weatherYearId } of await listYearsAtStations(db, teamId))
+    await judgeStoredYear(db, { teamId, weatherYearId, briefVersionId });
   const { heights } = await makeManyPlaces(ownerDb, { teamId, programmeId, stations: STATIONS - 6, sites: SITES });
   print(`${STATIONS} stations, ${SITES} sites, judged at ${heights} heights beside the stations' own`);
 
@@ -98,16 +98,23 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
 async function measure(what: string, ask: () => Promise<Answered>): Promise<string> {
   const before = countProcessor();
   const times: number[] = [];
+  const processor: number[] = [];
   let last = await ask();
   for (let round = 0; round < ROUNDS; round++) {
+    const used = process.cpuUsage();
     const begun = performance.now();
     last = await ask();
     times.push(performance.now() - begun);
+    const { user, system } = process.cpuUsage(used);
+    processor.push((user + system) / 1000);
   }
-  const middle = times.toSorted((one, other) => one - other)[Math.floor(ROUNDS / 2)] ?? 0;
+  const middle = (values: readonly number[]) =>
+    (values.toSorted((one, other) => one - other)[Math.floor(ROUNDS / 2)] ?? 0).toFixed(0);
   const idle = idleShare(before, countProcessor());
   const kilobytes = (last.bytes / 1000).toFixed(0);
-  print(`${what}: ${middle.toFixed(0)} ms, ${kilobytes} kB compressed, status ${last.status}, idle ${idle.toFixed(2)}`);
+  print(
+    `${what}: ${middle(times)} ms by the clock, ${middle(processor)} ms of processor, ${kilobytes} kB compressed, status ${last.status}, idle ${idle.toFixed(2)}`,
+  );
   return last.text;
 }
 
