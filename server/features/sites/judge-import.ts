@@ -1,11 +1,11 @@
 import { setImmediate as breathe } from 'node:timers/promises';
 import type { Knex } from 'knex';
-import { makeStationFinder } from '#engine/interpolation/station-finder.ts';
 import { type Duplicate, findDuplicates } from '#engine/sites/find-duplicates.ts';
 import { readSiteRow, type SiteOfRow } from '#engine/sites/read-site-row.ts';
 import type { SiteColumn } from '#engine/sites/site-columns.ts';
 import { siteFlags } from '#engine/sites/site-flags.ts';
 import type { Relief } from '#engine/weather-files/relief.ts';
+import { defaultStations } from './default-stations.ts';
 import { hasYears } from './resolved-sites-read-model.ts';
 import { elevationOf, groundAt, type SiteGround } from './site-ground.ts';
 import { listImportRows } from './site-import-read-model.ts';
@@ -111,7 +111,7 @@ type Chosen = { readonly id: string | null } | { readonly column: 'station' | 'r
 /** The station that a row names, under the same rule as one that is chosen by hand. */
 function makeStationLookup(stations: readonly StationOfTeam[]): (site: SiteOfRow) => Chosen {
   const usable = stations.filter(hasYears);
-  const first = makeStationFinder(usable);
+  const first = defaultStations(usable);
   const byName = new Map<string, StationOfTeam[]>();
   for (const station of usable) {
     const name = station.name.toLowerCase();
