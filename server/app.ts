@@ -12,6 +12,7 @@ import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
+import { queueSiteRuns } from './features/runs/queue-site-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { sitesRoutes } from './features/sites/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
@@ -90,7 +91,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   });
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
-  sitesRoutes(router, deps, { relief: shippedRelief() });
+  sitesRoutes(router, deps, { relief: shippedRelief(), queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, { threads, yearThread, readDraft });
   methodRoutes(router, deps);

@@ -1,9 +1,9 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
-import type { Ledger, RunResult, Verdict } from '#engine/run/run-result.ts';
+import type { RunResult, Verdict } from '#engine/run/run-result.ts';
 
-/** Some stations judged by one draft brief. */
+/** Some stations judged by one draft brief, at their own heights or at those of sites. */
 export interface RescoreTask {
   readonly brief: Brief;
   readonly stations: readonly StationToRescore[];
@@ -14,7 +14,10 @@ export interface RescoreTask {
 export interface StationToRescore {
   readonly stationId: string;
   readonly zone: string;
+  /** What the hours are judged at: its own, or a site's that the weather is moved to. */
   readonly heightM: number;
+  /** The station's own height where the weather is moved; null where it is as measured. */
+  readonly adjustedFromM: number | null;
   readonly position: { readonly latitude: number; readonly longitude: number };
   /** Newest file first. */
   readonly years: readonly {
@@ -28,9 +31,12 @@ export interface StationToRescore {
   }[];
 }
 
+export type ShownResult = Pick<RunResult, 'ledger' | 'severityKh' | 'worstSpell' | 'water' | 'electricity'>;
+
 /** The figures of a station as a place, and of each of its years. */
 export interface RescoredStation {
   readonly stationId: string;
+  readonly heightM: number;
   readonly score: number | null;
   readonly scoreNote: string | null;
   readonly words: string | null;
@@ -38,10 +44,12 @@ export interface RescoredStation {
   readonly yearsMeeting: number;
   readonly range: { readonly low: number; readonly high: number } | null;
   /** Of the year that stands for the station; null without a usable year. */
-  readonly ledger: Ledger | null;
+  readonly shown: ShownResult | null;
   readonly shownWeatherYearId: string | null;
   /** The years that the figures rest on. */
   readonly restsOn: readonly string[];
+  /** Measured years with enough hours for the brief. */
+  readonly usable: readonly string[];
   /** By weather year; empty unless asked for. */
   readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
 }

@@ -2,6 +2,7 @@
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
+import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
 import * as map from './programme-map.ts';
@@ -53,6 +54,8 @@ export const endpoints = {
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
   getMap: map.getMap,
+  getDepressionMap: depression.getDepressionMap,
+  getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
   exportRunHours: hours.exportRunHours,

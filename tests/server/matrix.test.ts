@@ -84,7 +84,9 @@ const matrix: Record<EndpointName, readonly number[]> = {
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
   getMap: readersToo,
+  getDepressionMap: readersToo,
   getStationPlace: readersToo,
+  getSitePlace: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,
@@ -226,6 +228,7 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
+  if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
   if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }

@@ -29,8 +29,9 @@ export async function insertStationsWithYears(
        from given
      ), new_years as (
        insert into weather_years (team_id, weather_file_id, station_id, kind, utc_offset_min, slots, layout, dry_bulb,
-         humidity_ratio, pressure, flags, histogram, humidity_from, below_zero, facts, read_version, content_hash)
-       select :teamId, file_id, id, 'typical', 0, 8760, 1, two, two, two, one, '', 'dew point', 'water', '{}', 'none', id::text
+         humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version,
+         content_hash)
+       select :teamId, file_id, id, 'typical', 0, 8760, 1, two, two, two, one, '', array_fill(0::smallint, array[768]), 'dew point', 'water', '{}', 'none', id::text
        from given, (select decode(repeat('0000', 8760), 'hex') as two, decode(repeat('00', 8760), 'hex') as one) as blank
      )
      select id from given order by place`,

@@ -34,7 +34,7 @@ export interface SitePatch {
  * @throws AppError conflict
  */
 export async function changeSite(
-  { db, relief }: SiteDeps,
+  { db, relief, queueSiteRuns }: SiteDeps,
   change: SiteAct & { siteId: string; revision: number; patch: SitePatch; act?: string },
 ): Promise<void> {
   const { teamId, programmeId, siteId, personId, requestId, patch, at } = change;
@@ -54,6 +54,7 @@ export async function changeSite(
       ...{ teamId, personId, requestId, act: change.act ?? 'site changed' },
       subject: { programmeId, siteId, letters: was.letters, name: changed.name, revision, fields },
     });
+    await queueSiteRuns(transaction, { teamId, programmeId });
     await notifyTeam(transaction, { teamId, event: { kind: 'sites', programmeId } });
   });
 }

@@ -78,6 +78,7 @@ export async function finishSiteImport(
       ...{ teamId, personId, requestId, act: 'sites imported' },
       subject: { programmeId, importId, name, sites: sites.length, skipped: judged.ready.length - sites.length },
     });
+    await deps.queueSiteRuns(transaction, { teamId, programmeId });
     await notifyTeam(transaction, { teamId, event: { kind: 'sites', programmeId } });
   });
 }

@@ -8,9 +8,14 @@ import { elevationOf, groundAt } from './site-ground.ts';
 import { siteLetters } from './site-letters.ts';
 import { insertSite, takeSiteNumbers } from './site-store.ts';
 
-export interface SiteDeps {
-  readonly db: Knex;
+export interface SiteParts {
   readonly relief: Relief;
+  /** Queues the judging of years at the heights that the programme's sites have now. */
+  queueSiteRuns(transaction: Knex.Transaction, programme: { teamId: string; programmeId: string }): Promise<void>;
+}
+
+export interface SiteDeps extends SiteParts {
+  readonly db: Knex;
 }
 
 export interface SiteAct {
@@ -32,7 +37,7 @@ export interface NewSite {
 }
 
 /** Makes a site with the next letters of its programme. */
-export async function makeSite({ db, relief }: SiteDeps, making: SiteAct & NewSite): Promise<string> {
+export async function makeSite({ db, relief, queueSiteRuns }: SiteDeps, making: SiteAct & NewSite): Promise<string> {
   const { teamId, programmeId, personId, requestId, name, latitude, longitude } = making;
   const ground = groundAt(relief, making);
   return await inTransaction(db, async (transaction) => {
@@ -50,6 +55,7 @@ export async function makeSite({ db, relief }: SiteDeps, making: SiteAct & NewSi
       ...{ teamId, personId, requestId, act: 'site made' },
       subject: { programmeId, siteId, letters, name, latitude, longitude },
     });
+    await queueSiteRuns(transaction, { teamId, programmeId });
     await notifyTeam(transaction, { teamId, event: { kind: 'sites', programmeId } });
     return siteId;
   });

@@ -22,10 +22,10 @@ export interface ResolvedStation {
   readonly heightDifferenceM: number | null;
 }
 
-/** Every site of a programme with its station, in the order of their letters. 10,000 sites and 3,000 stations take about 0.1 s. */
+/** Every site of a programme, or those of some ids, with its station, in the order of their letters. 10,000 sites and 3,000 stations take about 0.1 s. */
 export async function sitesOfProgramme(
   db: Knex,
-  key: { teamId: string; programmeId: string },
+  key: { teamId: string; programmeId: string; siteIds?: readonly string[] },
 ): Promise<readonly ResolvedSite[]> {
   const [rows, stations] = await Promise.all([listSiteRows(db, key), listStationsOfTeam(db, key.teamId)]);
   const resolve = makeSiteResolver(stations);

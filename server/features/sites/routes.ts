@@ -21,7 +21,6 @@ import {
   setSiteDuty as setDutyEndpoint,
   siteFlags,
 } from '#contract/sites.ts';
-import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
@@ -29,7 +28,7 @@ import type { RequestContext } from '../../http/request-context.ts';
 import { programmeExists } from '../briefs/version-read-model.ts';
 import { changeSite } from './change-site.ts';
 import { addSiteImportRows, checkSiteImport, finishSiteImport, startSiteImport } from './import-sites.ts';
-import { makeSite } from './make-site.ts';
+import { makeSite, type SiteParts } from './make-site.ts';
 import { isOf, pageOfSites } from './page-of-sites.ts';
 import { presentImport, presentImportCheck, presentSite, presentSiteChange, presentWater } from './present-site.ts';
 import { rankCandidates } from './rank-candidates.ts';
@@ -56,8 +55,9 @@ interface SiteKey extends ProgrammeKey {
   readonly siteId: string;
 }
 
-export function sitesRoutes(router: Router, deps: Deps, { relief }: { relief: Relief }): void {
+export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts): void {
   const { db } = deps;
+  const { relief } = parts;
   const act = (request: RequestContext) => ({
     personId: personOf(request),
     requestId: request.requestId,
@@ -86,15 +86,15 @@ export function sitesRoutes(router: Router, deps: Deps, { relief }: { relief: Re
   });
   mount(router, deps, getSite, async ({ params }) => recordOf(params));
   mount(router, deps, makeEndpoint, async ({ params, body }, request) => {
-    const siteId = await makeSite({ db, relief }, { ...params, ...body, ...act(request) });
+    const siteId = await makeSite({ db, ...parts }, { ...params, ...body, ...act(request) });
     return await presented({ ...params, siteId });
   });
   mount(router, deps, changeEndpoint, async ({ params, body: { revision, ...patch } }, request) => {
-    await changeSite({ db, relief }, { ...params, revision, patch, ...act(request) });
+    await changeSite({ db, ...parts }, { ...params, revision, patch, ...act(request) });
     return await presented(params);
   });
   mount(router, deps, moveEndpoint, async ({ params, body: { revision, ...patch } }, request) => {
-    await changeSite({ db, relief }, { ...params, revision, patch, act: 'site moved', ...act(request) });
+    await changeSite({ db, ...parts }, { ...params, revision, patch, act: 'site moved', ...act(request) });
     return await presented(params);
   });
   mount(router, deps, removeEndpoint, async ({ params, body }, request) => {
@@ -123,10 +123,10 @@ export function sitesRoutes(router: Router, deps: Deps, { relief }: { relief: Re
     rows: await addSiteImportRows(db, { ...params, ...body }),
   }));
   mount(router, deps, checkImportEndpoint, async ({ params }) =>
-    presentImportCheck(await checkSiteImport({ db, relief }, params)),
+    presentImportCheck(await checkSiteImport({ db, ...parts }, params)),
   );
   mount(router, deps, finishImportEndpoint, async ({ params, body }, request) => {
-    await finishSiteImport({ db, relief }, { ...params, ...body, ...act(request) });
+    await finishSiteImport({ db, ...parts }, { ...params, ...body, ...act(request) });
     return await importOf(params);
   });
   mount(router, deps, listSiteImports, async ({ params }) => {

@@ -33,11 +33,15 @@ const COLUMNS = `sites.id, sites.letters, sites.name, sites.latitude, sites.long
 const ROWS = `sites left join stations as chosen on chosen.id = sites.station_id`;
 const PRESENT = `sites.team_id = :teamId and sites.programme_id = :programmeId and sites.removed_at is null`;
 
-/** Every site of a programme, in the order of their letters. */
-export async function listSiteRows(db: Knex, key: ProgrammeKey): Promise<readonly SiteRow[]> {
+/** Every site of a programme, or those of some ids, in the order of their letters. */
+export async function listSiteRows(
+  db: Knex,
+  { siteIds, ...key }: ProgrammeKey & { siteIds?: readonly string[] },
+): Promise<readonly SiteRow[]> {
+  const named = siteIds === undefined ? '' : 'and sites.id = any(:siteIds::uuid[])';
   const { rows } = await db.raw<{ rows: SiteRow[] }>(
-    `select ${COLUMNS} from ${ROWS} where ${PRESENT} order by length(sites.letters), sites.letters`,
-    { ...key },
+    `select ${COLUMNS} from ${ROWS} where ${PRESENT} ${named} order by length(sites.letters), sites.letters`,
+    { ...key, ...(siteIds === undefined ? {} : { siteIds: `{${siteIds.join(',')}}` }) },
   );
   return rows;
 }

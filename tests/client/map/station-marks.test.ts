@@ -3,6 +3,7 @@ import { rampColour } from '../../../src/charts/ramp.ts';
 import type { MapStation } from '../../../src/contract/programme-map.ts';
 import { stationFeatures, stationSentence } from '../../../src/map/station-features.ts';
 import { drawMark, MARK_SIZE_PX, markName, markNamed } from '../../../src/map/station-mark.ts';
+import { yearFigures } from '../../support/figures-of-place.ts';
 import { lightnessOf } from '../../support/lightness.ts';
 
 const STATION: MapStation = {
@@ -15,6 +16,7 @@ const STATION: MapStation = {
   scoreNote: null,
   grade: 'B',
   verdict: 'does not',
+  ...yearFigures,
 };
 
 /** The colour in the middle of a mark's lower half, where the field is widest, and how opaque it is. */

@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import type { MapStation } from '../../../src/contract/programme-map.ts';
 import { filterByName, rankedStations } from '../../../src/features/runs/ranked-stations.ts';
+import { yearFigures } from '../../support/figures-of-place.ts';
 
 function station(name: string, score: number | null, grade: MapStation['grade'] = 'C'): MapStation {
-  const place = { latitude: 0, longitude: 0, elevationM: 0, scoreNote: null, verdict: null };
+  const place = { latitude: 0, longitude: 0, elevationM: 0, scoreNote: null, verdict: null, ...yearFigures };
   return { id: name, name, score, grade, ...place };
 }
 
