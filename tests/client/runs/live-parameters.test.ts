@@ -1,6 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import presets from '../../../data/presets/presets.json' with { type: 'json' };
-import { briefFromPreset, readBrief } from '../../../src/engine/brief/brief-from-preset.ts';
+import { readBrief } from '../../../src/engine/brief/brief-from-preset.ts';
 import {
   bodyOfLiveDraft,
   changed,
@@ -10,8 +9,9 @@ import {
   printLiveDraft,
   readLiveDraft,
 } from '../../../src/features/runs/live-parameters.ts';
+import { presetBrief, presetNames } from '../../support/presets.ts';
 
-const bodyOf = (id: string) => briefFromPreset(presets.presets.find((preset) => preset.id === id));
+const bodyOf = (id: string) => presetBrief(id);
 const parametersOf = (id: string) => liveParameters(bodyOf(id));
 const named = (parameters: readonly LiveParameter[], path: string) => {
   const found = parameters.find((parameter) => parameter.path === path);
@@ -36,7 +36,7 @@ describe('the parameters that the map offers', () => {
     expect(paths('glasshouse')).not.toContain('hours');
   });
 
-  it.each(presets.presets.map(({ id }) => id))('of %s have a unit, and a slider that holds the saved value', (id) => {
+  it.each(presetNames)('of %s have a unit, and a slider that holds the saved value', (id) => {
     const parameters = parametersOf(id);
     expect(parameters.length).toBeGreaterThan(0);
     for (const parameter of parameters) {
@@ -48,7 +48,7 @@ describe('the parameters that the map offers', () => {
     }
   });
 
-  it.each(presets.presets.map(({ id }) => id))('of %s go no further than the engine takes a number', (id) => {
+  it.each(presetNames)('of %s go no further than the engine takes a number', (id) => {
     const body = bodyOf(id);
     const faults = liveParameters(body).flatMap((parameter) => {
       const ends = parameter.kind === 'hours' ? ['0-24', '9-10'] : [parameter.min, parameter.max];
