@@ -26,7 +26,7 @@ interface ColumnMappingFormProps {
 export function ColumnMappingForm({ table, mapping, onMapping }: ColumnMappingFormProps) {
   return (
     <fieldset className="grid grid-cols-2 gap-x-4 gap-y-3 md:grid-cols-4">
-      <legend className="mb-2 font-semibold">Columns, as guessed from the heads</legend>
+      <legend className="mb-2 font-semibold">Columns, guessed from their heads</legend>
       {siteColumns.map((column) => (
         <ColumnChoice
           key={column}

@@ -96,7 +96,7 @@ function FileChoice({ problem, onFile }: { problem: string | null; onFile: (file
   return (
     <div className="grid max-w-[40rem] gap-4">
       <p>
-        A CSV file, as spreadsheets save it: the first row names the columns, each other row is a site with its name and
+        A CSV file from any spreadsheet: the first row names the columns, each other row is a site with its name and
         position. Elevation in metres, design load in kW and notes are taken along where they are there. Nothing becomes
         a site before you have seen what was read.
       </p>

@@ -95,7 +95,7 @@ function PreviewTable({ rows }: { rows: readonly RowOfTable[] }) {
   return (
     <ScrollInside label="First rows as read, scrolls sideways">
       <table className="ruled min-w-[40rem]">
-        <caption className="mb-1 text-left font-semibold">The first rows, as they are read</caption>
+        <caption className="mb-1 text-left font-semibold">The first rows, read by these columns</caption>
         <thead>
           <tr>
             <th scope="col" className="w-14">

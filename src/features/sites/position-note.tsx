@@ -37,7 +37,7 @@ export function PositionNote({ programme, written, elevation, onPosition }: Posi
   return (
     <div role="status" className="text-fine text-soft">
       <p>
-        Read as {exactPosition(position)} (latitude, longitude).{' '}
+        Read: latitude, longitude {exactPosition(position)}.{' '}
         {ground === undefined || ground.reliefM === null || elevation.trim() !== ''
           ? ''
           : `The relief has about ${metres(ground.reliefM)} there, approximate: the height counts as grade C at best, and nothing is adjusted to it.`}

@@ -22,7 +22,7 @@ export function WaterCyclesTable({ water }: { water: SiteWater }) {
       <p role="status" className="max-w-[70ch]">
         {cycles === null ? (
           <>
-            <strong>Not to be concentrated:</strong> {limiting} is over its limit in the make-up water as it comes. It
+            <strong>Not to be concentrated:</strong> {limiting} is over its limit in the untreated make-up water. It
             needs treatment, or another source.
           </>
         ) : (
