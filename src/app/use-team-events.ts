@@ -3,6 +3,7 @@ import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
 import { getMap } from '../contract/programme-map.ts';
 import { getSitePlace, getStationPlace } from '../contract/runs.ts';
+import { listSiteImports } from '../contract/site-imports.ts';
 import { getSite, listSites } from '../contract/sites.ts';
 import { getStation, listStations } from '../contract/stations.ts';
 import { type TeamEvent, watchTeam } from '../contract/team-events.ts';
@@ -19,7 +20,7 @@ const affected = {
   'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch, listStations, getStation],
   'weather-batch': [listWeatherBatches, getWeatherBatch, listWeatherFiles],
   run: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
-  sites: [listSites, getSite, getMap, getSitePlace],
+  sites: [listSites, getSite, listSiteImports, getMap, getSitePlace],
   brief: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
 } as const satisfies Record<TeamEvent['kind'], readonly { path: string }[]>;
 

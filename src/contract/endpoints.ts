@@ -10,6 +10,7 @@ import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
+import * as siteImports from './site-imports.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
 import * as surface from './surface.ts';
@@ -81,6 +82,13 @@ export const endpoints = {
   removeSites: sites.removeSites,
   setSiteDuty: sites.setSiteDuty,
   getGround: sites.getGround,
+  startSiteImport: siteImports.startSiteImport,
+  addSiteImportRows: siteImports.addSiteImportRows,
+  checkSiteImport: siteImports.checkSiteImport,
+  finishSiteImport: siteImports.finishSiteImport,
+  listSiteImports: siteImports.listSiteImports,
+  undoSiteImport: siteImports.undoSiteImport,
+  exportSites: siteImports.exportSites,
   listTokens: tokens.listTokens,
   makeToken: tokens.makeToken,
   revokeToken: tokens.revokeToken,

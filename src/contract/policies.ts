@@ -12,6 +12,7 @@ export const policyNames = [
   'stations.change',
   'sites.view',
   'sites.change',
+  'sites.export',
   'runs.view',
   'runs.export',
   'briefs.view',

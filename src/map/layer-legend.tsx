@@ -32,10 +32,10 @@ export function LayerLegend({ title, unit, scale, places, limitWords = plain, cl
     classNames?.[index] ?? spanWords(scale.limits[index] ?? 0, scale.limits[index + 1] ?? 0, { limitWords, unit });
   return (
     <section aria-label="Legend" className="text-ink">
-      <header className="flex items-baseline justify-between gap-3">
-        <h3 className="serif min-w-0 text-lead leading-tight text-ink">{title}</h3>
-        <p className="text-right text-[0.6875rem] leading-tight text-soft">{unit}</p>
-      </header>
+      <h3 className="mt-1 text-right text-[0.6875rem] leading-tight font-normal">
+        <span className="sr-only">{title}, </span>
+        {unit}
+      </h3>
       <Bar scale={scale} />
       {classNames === undefined ? <Limits limits={scale.limits} words={limitWords} /> : null}
       <ul className="flex text-center text-[0.6875rem] text-soft tabular-nums">
@@ -82,11 +82,11 @@ function spanWords(from: number, to: number, { limitWords, unit }: SpanWords): s
 function Bar({ scale }: { readonly scale: LayerScale }) {
   if (scale.isRamp) {
     return (
-      <div aria-hidden="true" className="mt-1.5 h-3 border border-ink/70" style={{ backgroundImage: RAMP_GRADIENT }} />
+      <div aria-hidden="true" className="mt-0.5 h-3 border border-ink/70" style={{ backgroundImage: RAMP_GRADIENT }} />
     );
   }
   return (
-    <div aria-hidden="true" className="mt-1.5 flex h-3 divide-x divide-paper border border-ink/70">
+    <div aria-hidden="true" className="mt-0.5 flex h-3 divide-x divide-paper border border-ink/70">
       {scale.colours.map((colour) => (
         <span key={colour} className="flex-1" style={{ backgroundColor: colour }} />
       ))}

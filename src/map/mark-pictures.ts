@@ -16,7 +16,7 @@ import {
 import type { PlaceKind } from './sheet-place.ts';
 
 /** All lengths in CSS pixels. */
-export const MARK_SIZE_PX = 26;
+export const MARK_SIZE_PX = 22;
 const LINE_PX = 1.3;
 const HALO_PX = 1.5;
 const HATCH_SPACING_PX = 3.4;

@@ -3,7 +3,8 @@ import { inkName } from './mark-pictures.ts';
 import type { MarkInks, PlaceKind, SheetPlace } from './sheet-place.ts';
 
 export type MarkProperties = { readonly id: string; readonly ink: string; readonly letters: string };
-export type NameProperties = { readonly id: string; readonly name: string; readonly figure: string };
+export type NameProperties = { readonly id: string; readonly name: string };
+export type FigureProperties = { readonly figure: string };
 
 /** Places as points for their marks. Nothing in them changes while a slider moves. */
 export function markFeatures(kind: PlaceKind, places: readonly SheetPlace[]): FeatureCollection<Point, MarkProperties> {
@@ -14,20 +15,34 @@ export function markFeatures(kind: PlaceKind, places: readonly SheetPlace[]): Fe
   );
 }
 
-/** Places as points for their names, with the figure of the layer under each. */
-export function nameFeatures(places: readonly SheetPlace[], inks: MarkInks): FeatureCollection<Point, NameProperties> {
-  return collection(places.map((place) => point(place, nameOf(place, inks))));
+/** Places as points for their names, which stay where they are while figures change. */
+export function nameFeatures(places: readonly SheetPlace[]): FeatureCollection<Point, NameProperties> {
+  return collection(places.map((place) => point(place, { id: place.id, name: nameOf(place) })));
+}
+
+/** Places as points for the figures of the layer; those without one have none. */
+export function figureFeatures(
+  places: readonly SheetPlace[],
+  inks: MarkInks,
+): FeatureCollection<Point, FigureProperties> {
+  return collection(
+    places.flatMap((place) => {
+      const figure = inks.get(place.id)?.figure ?? '';
+      return figure === '' ? [] : [point(place, { figure })];
+    }),
+  );
 }
 
 /** `held`: a chosen site under way to another place. */
 type Raising = 'chosen' | 'pointed' | 'held';
 
-export type RaisedProperties = NameProperties & {
-  readonly kind: PlaceKind;
-  readonly how: Raising;
-  readonly ink: string;
-  readonly letters: string;
-};
+export type RaisedProperties = NameProperties &
+  FigureProperties & {
+    readonly kind: PlaceKind;
+    readonly how: Raising;
+    readonly ink: string;
+    readonly letters: string;
+  };
 
 export interface RaisedPlace {
   readonly place: SheetPlace;
@@ -43,7 +58,9 @@ export function raisedFeatures(
   return collection(
     raised.map(({ place, kind, how }) =>
       point(place, {
-        ...nameOf(place, inks),
+        id: place.id,
+        name: nameOf(place),
+        figure: inks.get(place.id)?.figure ?? '',
         kind,
         how,
         ink: inkName(kind, place.grade === 'D'),
@@ -53,8 +70,8 @@ export function raisedFeatures(
   );
 }
 
-function nameOf({ id, name, letters }: SheetPlace, inks: MarkInks): NameProperties {
-  return { id, name: letters === undefined ? name : `${letters}  ${name}`, figure: inks.get(id)?.figure ?? '' };
+function nameOf({ name, letters }: SheetPlace): string {
+  return letters === undefined ? name : `${letters}  ${name}`;
 }
 
 function point<P>({ longitude, latitude }: SheetPlace, properties: P): Feature<Point, P> {

@@ -7,7 +7,7 @@ import { useMemo } from 'react';
 import { Layer, Source } from 'react-map-gl/maplibre';
 import { MEDIUM, ROMAN } from './map-fonts.ts';
 import { fieldName } from './mark-pictures.ts';
-import { markFeatures, nameFeatures, type RaisedPlace, raisedFeatures } from './place-features.ts';
+import { figureFeatures, markFeatures, nameFeatures, type RaisedPlace, raisedFeatures } from './place-features.ts';
 import type { MarkInks, PlaceKind, SheetPlace } from './sheet-place.ts';
 import { HOLLOW } from './use-mark-inks.ts';
 import { useRaisedState } from './use-raised-state.ts';
@@ -80,6 +80,7 @@ function Letters({ minzoom }: { readonly minzoom: number }) {
   return (
     <Layer
       id="site-letters"
+      source={MARK_SOURCES.site}
       type="symbol"
       minzoom={minzoom}
       layout={{
@@ -96,17 +97,16 @@ function Letters({ minzoom }: { readonly minzoom: number }) {
 }
 
 interface NamesProps extends MarksProps {
-  readonly inks: MarkInks;
   /** Drawn larger elsewhere: their own names make room. */
   readonly raised: readonly RaisedPlace[];
 }
 
 /**
- * Names with the figure of the layer under each. MapLibre gives room to the last layer first: names therefore stand before the
- * marks, and keep clear of them.
+ * Names beside their marks. MapLibre gives room to the last layer first: names therefore stand before figures and marks, and keep
+ * clear of them.
  */
-export function PlaceNames({ kind, places, inks, raised }: NamesProps) {
-  const data = useMemo(() => nameFeatures(places, inks), [places, inks]);
+export function PlaceNames({ kind, places, raised }: NamesProps) {
+  const data = useMemo(() => nameFeatures(places), [places]);
   const source = `${kind}-names`;
   useRaisedState(source, raised);
   return (
@@ -116,14 +116,15 @@ export function PlaceNames({ kind, places, inks, raised }: NamesProps) {
         type="symbol"
         minzoom={places.length > MOST_NAMED ? NAMES_FROM_ZOOM : 0}
         layout={{
-          'text-field': nameAndFigure,
+          'text-field': ['get', 'name'],
           'text-font': [ROMAN],
-          'text-size': 12.5,
+          'text-size': ['interpolate', ['linear'], ['zoom'], 3, 11, 5, 12.5],
           'text-variable-anchor': SIDES,
-          'text-radial-offset': 1.15,
+          'text-radial-offset': 1.05,
           'text-justify': 'auto',
           'text-line-height': 1.1,
-          'text-padding': 2,
+          'text-max-width': 8,
+          'text-padding': 1,
         }}
         paint={{
           'text-color': INK,
@@ -131,6 +132,33 @@ export function PlaceNames({ kind, places, inks, raised }: NamesProps) {
           'text-halo-width': 1.5,
           'text-opacity': ['case', ['boolean', ['feature-state', 'raised'], false], 0, 1],
         }}
+      />
+    </Source>
+  );
+}
+
+interface FiguresProps extends MarksProps {
+  readonly inks: MarkInks;
+}
+
+/** The figure of the layer under each mark, as a sheet prints a height: small, so that most of them find room in a crowd. */
+export function PlaceFigures({ kind, places, inks }: FiguresProps) {
+  const data = useMemo(() => figureFeatures(places, inks), [places, inks]);
+  return (
+    <Source id={`${kind}-figures`} type="geojson" data={data}>
+      <Layer
+        id={`${kind}-figure`}
+        type="symbol"
+        minzoom={places.length > MOST_NAMED ? NAMES_FROM_ZOOM : 0}
+        layout={{
+          'text-field': ['get', 'figure'],
+          'text-font': [ROMAN],
+          'text-size': 11,
+          'text-anchor': 'top',
+          'text-offset': [0, 1.05],
+          'text-padding': 0,
+        }}
+        paint={{ 'text-color': INK, 'text-halo-color': PAPER, 'text-halo-width': 1.5 }}
       />
     </Source>
   );

@@ -1,7 +1,7 @@
 import './sheet-map.css';
 import * as maplibregl from 'maplibre-gl';
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?url';
-import { type ReactNode, useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
 import { type MapLayerMouseEvent, type MapRef, Map as MapView } from 'react-map-gl/maplibre';
 import { boxAround } from './fit-stations.ts';
 import { GraticuleLayer } from './graticule-layer.tsx';
@@ -10,7 +10,7 @@ import { MARGIN, Neatline } from './neatline.tsx';
 import { placeAt } from './place-at.ts';
 import type { RaisedPlace } from './place-features.ts';
 import { PlaceKeys } from './place-keys.tsx';
-import { MARK_SOURCES, PlaceMarks, PlaceNames, RaisedNames, RaisedRings } from './place-layers.tsx';
+import { MARK_SOURCES, PlaceFigures, PlaceMarks, PlaceNames, RaisedNames, RaisedRings } from './place-layers.tsx';
 import { PointLayer } from './point-layer.tsx';
 import type { UnitSystem } from './scale-bar.ts';
 import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
@@ -18,8 +18,10 @@ import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
 import { isSame, type MarkInks, type PlaceRef, type Position, type SheetPlace } from './sheet-place.ts';
 import { sheetStyle } from './sheet-style.ts';
 import { useChosenInView } from './use-chosen-in-view.ts';
+import { FIT, toBounds, useFit } from './use-fit.ts';
 import { useFurniture } from './use-furniture.ts';
 import { useIdleMark } from './use-idle-mark.ts';
+import { useIsWide } from './use-is-wide.ts';
 import { useMarkInks } from './use-mark-inks.ts';
 import { usePictures } from './use-pictures.ts';
 import { type MoveSite, useSiteDrag } from './use-site-drag.ts';
@@ -55,8 +57,9 @@ export type SheetMapProps = {
 
 const WORLD = { longitude: 12, latitude: 18, zoom: 1.2 };
 const ZOOM_LIMITS = { minZoom: 0.8, maxZoom: 11 };
-const FIT = { padding: 56, maxZoom: 8 };
 const FADE_MS = 200;
+/** From this width on the legend stands inside the frame. */
+const ROOMY_PX = 576;
 const WORDS = { 'Map.Title': 'Map. Arrow keys move it, plus and minus zoom.' };
 
 /** The map as a printed sheet. Fills its parent, which gives it its height. */
@@ -67,6 +70,7 @@ export function SheetMap(props: SheetMapProps) {
   const wrapper = useRef<HTMLDivElement>(null);
   const frame = useRef<HTMLDivElement>(null);
   const furniture = useFurniture(frame);
+  const isRoomy = useIsWide(wrapper, ROOMY_PX);
   const style = useSheetStyle();
   const hold = useCallback((ref: MapRef | null) => setMap(ref?.getMap() ?? null), []);
   usePictures(map);
@@ -75,7 +79,7 @@ export function SheetMap(props: SheetMapProps) {
   useIdleMark(map, wrapper);
   useTellView(map, props.onView);
   useFollowCamera(map, props.camera);
-  const fitAll = useFit(map, props);
+  const fitAll = useFit(map, { places: useAll(stations, sites), furniture, isPlaced: props.camera !== null });
   const { heldAt, onStart } = useSiteDrag({ map, chosen, onMoveSite: props.onMoveSite });
   const places = { stations, sites };
   const raised = useRaised(places, { chosen, pointed, heldAt });
@@ -105,7 +109,7 @@ export function SheetMap(props: SheetMapProps) {
   );
 
   return (
-    <div ref={wrapper} data-sheet-map="" className="@container flex size-full flex-col">
+    <div ref={wrapper} data-sheet-map="" className="flex size-full flex-col">
       <div className="relative min-h-0 flex-1">
         <Neatline map={map} />
         <div ref={frame} className="absolute isolate overflow-hidden bg-water" style={MARGIN}>
@@ -134,8 +138,10 @@ export function SheetMap(props: SheetMapProps) {
             <GraticuleLayer map={map} />
             {children}
             <RaisedRings raised={raised} inks={inks} />
-            <PlaceNames kind="station" places={stations} inks={inks} raised={raised} />
-            <PlaceNames kind="site" places={sites} inks={inks} raised={raised} />
+            <PlaceNames kind="station" places={stations} raised={raised} />
+            <PlaceNames kind="site" places={sites} raised={raised} />
+            <PlaceFigures kind="station" places={stations} inks={inks} />
+            <PlaceFigures kind="site" places={sites} inks={inks} />
             <PlaceMarks kind="station" places={stations} />
             <PlaceMarks kind="site" places={sites} />
             <RaisedNames />
@@ -149,17 +155,14 @@ export function SheetMap(props: SheetMapProps) {
             <Scale map={map} units={units} />
             <Sources />
           </div>
-          {legend !== undefined && (
-            <div
-              data-furniture=""
-              className="absolute bottom-3 left-3 hidden w-60 border border-ink/60 bg-paper p-3 @xl:block"
-            >
+          {isRoomy ? (
+            <div data-furniture="" className="absolute bottom-3 left-3 w-60 border border-ink/60 bg-paper p-3">
               {legend}
             </div>
-          )}
+          ) : null}
         </div>
       </div>
-      {legend !== undefined && <div className="px-7 pt-2 @xl:hidden">{legend}</div>}
+      {isRoomy ? null : <div className="px-7 pt-2">{legend}</div>}
     </div>
   );
 }
@@ -173,31 +176,14 @@ function useSheetStyle(): maplibregl.StyleSpecification {
 
 type Placed = Pick<SheetMapProps, 'stations' | 'sites'>;
 
+function useAll(stations: readonly SheetPlace[], sites: readonly SheetPlace[]): readonly SheetPlace[] {
+  return useMemo(() => [...stations, ...sites], [stations, sites]);
+}
+
 function firstView({ stations, sites, camera }: SheetMapProps) {
   const box = boxAround([...stations, ...sites]);
   if (camera !== null) return { ...camera };
   return box === null ? WORLD : { bounds: toBounds(box), fitBoundsOptions: FIT };
-}
-
-function toBounds([west, south, east, north]: readonly [number, number, number, number]): [
-  number,
-  number,
-  number,
-  number,
-] {
-  return [west, south, east, north];
-}
-
-/** Fits the places once, when they come after the map; gives the same for the button. */
-function useFit(map: maplibregl.Map | null, { stations, sites, camera }: SheetMapProps): (() => void) | null {
-  const box = useMemo(() => boxAround([...stations, ...sites]), [stations, sites]);
-  const settled = useRef(camera !== null || box !== null);
-  useEffect(() => {
-    if (map === null || box === null || settled.current) return;
-    settled.current = true;
-    map.fitBounds(toBounds(box), { ...FIT, animate: false });
-  }, [map, box]);
-  return box === null ? null : () => map?.fitBounds(toBounds(box), FIT);
 }
 
 interface Attention {

@@ -16,6 +16,9 @@ export interface SheetBox {
   readonly north: number;
 }
 
+/** Goes with a movement that the sheet makes by itself. */
+export const OF_SHEET = { ofSheet: true };
+
 /** `byHand`: a person moved the map; what it does by itself is no news for the address. */
 export type ViewTold = (camera: SheetCamera, box: SheetBox, byHand: boolean) => void;
 
@@ -38,7 +41,7 @@ export function useTellView(map: MapLibreMap | null, onView: ViewTold | undefine
       };
       told.current?.({ longitude: lng, latitude: lat, zoom: map.getZoom() }, box, byHand);
     };
-    const moved = () => tell(true);
+    const moved = (event: object) => tell(!('ofSheet' in event));
     tell(false);
     map.on('moveend', moved);
     return () => {

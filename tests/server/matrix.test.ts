@@ -111,6 +111,14 @@ const matrix: Record<EndpointName, readonly number[]> = {
   removeSites: plannersToo,
   setSiteDuty: plannersToo,
   getGround: readersToo,
+  startSiteImport: plannersToo,
+  addSiteImportRows: plannersToo,
+  checkSiteImport: plannersToo,
+  // The planner finishes it first, and undoes it first.
+  finishSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
+  listSiteImports: readersToo,
+  undoSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
+  exportSites: plannersToo,
   listTokens: leadOnly,
   makeToken: leadOnly,
   revokeToken: leadOnly,
@@ -135,6 +143,7 @@ const emailOf = (caller: Caller): string => `${caller.replace(' ', '-')}@example
 const [station] = demoStations.filter(({ year, faults }) => year === null && faults.length === 0);
 if (station === undefined) throw new Error('the demo has a clean typical year');
 const epw = demoWeatherFile(station);
+const rowOfSite = { name: 'Of a table', latitude: '10', longitude: '20' };
 const epwOf = (note: string): Blob => new Blob([epw.text.replace('COMMENTS 1,', `COMMENTS 1,${note} `)]);
 
 async function signIn(caller: Caller): Promise<string> {
@@ -191,6 +200,9 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
   if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
   if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });
+  if (name === 'startSiteImport') return JSON.stringify({ name: `Table of ${caller}` });
+  if (name === 'addSiteImportRows') return JSON.stringify({ rows: [{ line: 2, cells: rowOfSite }] });
+  if (name === 'finishSiteImport') return JSON.stringify({ duplicates: 'keep' });
   if (name === 'removeSites') return JSON.stringify({ siteIds: [ids.teamId], reason: 'A test.' });
   if (name === 'setSiteDuty') return JSON.stringify({ owner: caller, dueOn: '2027-05-01', doneOn: null, note: '' });
   if (name === 'makeToken') return JSON.stringify({ name: 'A program', scopes: ['weather:read'], days: 1 });
@@ -315,6 +327,13 @@ beforeAll(async () => {
       body: JSON.stringify({ name: 'Ours', latitude: 10, longitude: 20 }),
     })
   ).json();
+  const table: { id: string } = await (
+    await fetch(`${team}/programmes/${ours.programmeId}/site-imports`, {
+      method: 'POST',
+      headers: json,
+      body: JSON.stringify({ name: 'Ours' }),
+    })
+  ).json();
   archive = await zipBytes({ 'note.md': 'nothing to read' });
   const form = new FormData();
   form.append('file', new Blob([new Uint8Array(archive)]), 'first.zip');
@@ -334,7 +353,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
-  ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise' };
+  ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });

@@ -1,7 +1,7 @@
 import type { Knex } from 'knex';
-import { choiceOf, type StationChoice } from '#engine/interpolation/station-choice.ts';
-import { makeStationFinder, type StationFinder } from '#engine/interpolation/station-finder.ts';
+import { choiceOf } from '#engine/interpolation/station-choice.ts';
 import { type SiteFlagName, siteFlags } from '#engine/sites/site-flags.ts';
+import { defaultStations } from './default-stations.ts';
 import { listSiteRows, listStationsOfTeam, type SiteRow, type StationOfTeam } from './site-read-model.ts';
 
 /** A site with the station that stands for it: the chosen one, else the default of method 8. */
@@ -35,38 +35,70 @@ export async function sitesOfProgramme(
 /** @param stations all of the team's; those without a year stand for a site only when a person chose them */
 export function makeSiteResolver(stations: readonly StationOfTeam[]): (row: SiteRow) => ResolvedSite {
   const byId = new Map(stations.map((station) => [station.id, station]));
-  const find: StationFinder = makeStationFinder(stations.filter(hasYears));
-  return ({ stationId, stationReason, ...row }) => {
-    const chosen = stationId === null ? undefined : byId.get(stationId);
+  const find = defaultStations(stations.filter(hasYears));
+  return (row) => {
+    const chosen = row.stationId === null ? undefined : byId.get(row.stationId);
     const choice = chosen === undefined ? find(row) : choiceOf(row, chosen);
-    const station = choice === null ? undefined : byId.get(choice.id);
-    const flags = siteFlags({
-      ...row,
-      station: choice === null || station === undefined ? null : { ...choice, hasYears: hasYears(station) },
-    });
-    return {
-      ...row,
-      station:
-        choice === null || station === undefined
-          ? null
-          : resolvedOf({ choice, name: station.name, chosen: chosen !== undefined, reason: stationReason }),
+    const named = choice === null ? undefined : byId.get(choice.id);
+    const station =
+      choice === null || named === undefined
+        ? null
+        : {
+            id: choice.id,
+            name: named.name,
+            chosen: chosen !== undefined,
+            reason: chosen === undefined ? null : row.stationReason,
+            distanceKm: choice.distanceKm,
+            heightDifferenceM: choice.heightDifferenceM,
+          };
+    const flags = flagsOf(row, station, named);
+    return resolvedOf(row, {
+      station,
       flags,
       toSettle: chosen === undefined && (flags.includes('far') || flags.includes('height')),
-    };
+    });
+  };
+}
+
+function flagsOf(row: SiteRow, station: ResolvedStation | null, named: StationOfTeam | undefined): SiteFlagName[] {
+  return siteFlags({
+    elevationM: row.elevationM,
+    elevationSource: row.elevationSource,
+    reliefM: row.reliefM,
+    kmFromLand: row.kmFromLand,
+    station:
+      station === null || named === undefined
+        ? null
+        : {
+            distanceKm: station.distanceKm,
+            heightDifferenceM: station.heightDifferenceM,
+            hasYears: hasYears(named),
+          },
+  });
+}
+
+/** Written out field by field: spreading ten thousand rows takes longer than finding their stations. */
+function resolvedOf(row: SiteRow, found: Pick<ResolvedSite, 'station' | 'flags' | 'toSettle'>): ResolvedSite {
+  return {
+    id: row.id,
+    letters: row.letters,
+    name: row.name,
+    latitude: row.latitude,
+    longitude: row.longitude,
+    elevationM: row.elevationM,
+    elevationSource: row.elevationSource,
+    reliefM: row.reliefM,
+    kmFromLand: row.kmFromLand,
+    designLoadKw: row.designLoadKw,
+    gates: row.gates,
+    importId: row.importId,
+    revision: row.revision,
+    station: found.station,
+    flags: found.flags,
+    toSettle: found.toSettle,
   };
 }
 
 export function hasYears({ actualYears, typicalYears }: StationOfTeam): boolean {
   return actualYears + typicalYears > 0;
-}
-
-function resolvedOf(of: {
-  choice: StationChoice;
-  name: string;
-  chosen: boolean;
-  reason: string | null;
-}): ResolvedStation {
-  const { choice, name, chosen, reason } = of;
-  const { id, distanceKm, heightDifferenceM } = choice;
-  return { id, name, chosen, reason: chosen ? reason : null, distanceKm, heightDifferenceM };
 }

@@ -1,5 +1,14 @@
 import type { Router } from 'express';
 import {
+  addSiteImportRows as addRowsEndpoint,
+  checkSiteImport as checkImportEndpoint,
+  exportSites,
+  finishSiteImport as finishImportEndpoint,
+  listSiteImports,
+  startSiteImport as startImportEndpoint,
+  undoSiteImport as undoImportEndpoint,
+} from '#contract/site-imports.ts';
+import {
   changeSite as changeEndpoint,
   FilterCounts,
   getGround,
@@ -18,14 +27,16 @@ import { mount } from '../../http/mount.ts';
 import type { RequestContext } from '../../http/request-context.ts';
 import { programmeExists } from '../briefs/version-read-model.ts';
 import { changeSite } from './change-site.ts';
+import { addSiteImportRows, checkSiteImport, finishSiteImport, startSiteImport } from './import-sites.ts';
 import { makeSite, type SiteParts } from './make-site.ts';
 import { isOf, pageOfSites } from './page-of-sites.ts';
-import { presentSite, presentSiteChange, presentWater } from './present-site.ts';
+import { presentImport, presentImportCheck, presentSite, presentSiteChange, presentWater } from './present-site.ts';
 import { rankCandidates } from './rank-candidates.ts';
 import { removeSites } from './remove-sites.ts';
 import { makeSiteResolver, sitesOfProgramme } from './resolved-sites-read-model.ts';
 import { setSiteDuty } from './set-site-duty.ts';
 import { groundAt } from './site-ground.ts';
+import { listSiteImportViews, listSiteNotes } from './site-import-read-model.ts';
 import {
   findSiteRecord,
   listAskedGates,
@@ -33,6 +44,8 @@ import {
   listSiteDuties,
   listStationsOfTeam,
 } from './site-read-model.ts';
+import { siteTable } from './site-table.ts';
+import { undoSiteImport } from './undo-site-import.ts';
 
 interface ProgrammeKey {
   readonly teamId: string;
@@ -98,6 +111,38 @@ export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts): void 
     const elevationM = query.elevationM ?? ground.reliefM;
     const site = { ...query, elevationM, heightFromRelief: query.elevationM === undefined };
     return { ...ground, candidates: rankCandidates(site, await listStationsOfTeam(db, params.teamId)) };
+  });
+
+  const importOf = async (key: ProgrammeKey & { importId: string }) =>
+    presentImport(found((await listSiteImportViews(db, key))[0] ?? null));
+  mount(router, deps, startImportEndpoint, async ({ params, body }, request) => {
+    await mustExist(params);
+    return { id: await startSiteImport(db, { ...params, ...body, ...act(request) }) };
+  });
+  mount(router, deps, addRowsEndpoint, async ({ params, body }) => ({
+    rows: await addSiteImportRows(db, { ...params, ...body }),
+  }));
+  mount(router, deps, checkImportEndpoint, async ({ params }) =>
+    presentImportCheck(await checkSiteImport({ db, ...parts }, params)),
+  );
+  mount(router, deps, finishImportEndpoint, async ({ params, body }, request) => {
+    await finishSiteImport({ db, ...parts }, { ...params, ...body, ...act(request) });
+    return await importOf(params);
+  });
+  mount(router, deps, listSiteImports, async ({ params }) => {
+    await mustExist(params);
+    return { items: (await listSiteImportViews(db, params)).map(presentImport) };
+  });
+  mount(router, deps, undoImportEndpoint, async ({ params }, request) => {
+    await undoSiteImport(db, { ...params, ...act(request) });
+    return await importOf(params);
+  });
+  mount(router, deps, exportSites, async ({ params, query }) => {
+    await mustExist(params);
+    const [sites, notes] = await Promise.all([sitesOfProgramme(db, params), listSiteNotes(db, params)]);
+    const all = { sort: 'letters', order: 'asc', page: 1, limit: Math.max(1, sites.length) } as const;
+    const { items } = pageOfSites(sites, { ...query, ...all });
+    return { body: Buffer.from(siteTable(items, notes)), fileName: 'sites.csv' };
   });
 
   async function recordOf(key: SiteKey) {

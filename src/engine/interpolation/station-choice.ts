@@ -19,7 +19,7 @@ export interface StationChoice {
 }
 
 export const KM_PER_FIGURE = 100;
-const M_PER_FIGURE = 300;
+export const M_PER_FIGURE = 300;
 
 /**
  * Stations by what speaks against them, the default first; of equals, the lesser id, so that the order of a query chooses

@@ -4,6 +4,7 @@ import {
   choiceOf,
   isBefore,
   KM_PER_FIGURE,
+  M_PER_FIGURE,
   type SiteToServe,
   type StationChoice,
   type StationToChoose,
@@ -12,14 +13,15 @@ import {
 /** @returns null when there is no station */
 export type StationFinder = (site: SiteToServe) => StationChoice | null;
 
+const KM_PER_M = KM_PER_FIGURE / M_PER_FIGURE;
 const RADIANS_PER_DEGREE = Math.PI / 180;
 /** A chord is never longer than its arc; what rounding adds to it stays below this, km. */
 const ROUNDING_KM = 1e-6;
 
 /**
  * Lays the stations out once by their height above the plane of the equator, as points in space, km. A site looks outward from its own
- * plane and stops where the planes alone are further away than what it has found; only stations whose chord is short enough have their
- * arc computed. The answer equals the first of `rankStations`, ties included.
+ * plane and stops where the planes alone are further away than what it has found; only stations that the chord and their height
+ * leave have their arc computed. The answer equals the first of `rankStations`, ties included.
  * @param stations those with a usable year
  */
 export function makeStationFinder(stations: readonly StationToChoose[]): StationFinder {
@@ -28,8 +30,10 @@ export function makeStationFinder(stations: readonly StationToChoose[]): Station
   const xs = Float64Array.from(placed, ({ point }) => point.x);
   const ys = Float64Array.from(placed, ({ point }) => point.y);
   const zs = Float64Array.from(placed, ({ point }) => point.z);
+  const heightsM = Float64Array.from(placed, ({ station }) => station.elevationM);
   return (site) => {
     const { x, y, z } = pointOf(site);
+    const heightM = site.elevationM ?? Number.NaN;
     let best: StationChoice | null = null;
     let withinKm = Number.POSITIVE_INFINITY;
     let below = firstNotUnder(zs, z) - 1;
@@ -42,7 +46,11 @@ export function makeStationFinder(stations: readonly StationToChoose[]): Station
       const xKm = (xs[index] ?? 0) - x;
       const yKm = (ys[index] ?? 0) - y;
       const zKm = (zs[index] ?? 0) - z;
-      if (xKm * xKm + yKm * yKm + zKm * zKm > withinKm * withinKm) continue;
+      const chordKm2 = xKm * xKm + yKm * yKm + zKm * zKm;
+      if (chordKm2 > withinKm * withinKm) continue;
+      // A metre of height weighs as some way further off; where the site's height is not known, NaN fails the comparison.
+      const heightKm = Math.abs((heightsM[index] ?? 0) - heightM) * KM_PER_M;
+      if (Math.sqrt(chordKm2) + heightKm > withinKm) continue;
       const station = placed[index]?.station;
       if (station === undefined) continue;
       const choice = choiceOf(site, station);

@@ -126,7 +126,7 @@ function DepressionOptions({ layer, onChoose }: DepressionOptionsProps) {
             key={name}
             id={String(index + 1)}
             aria-label={name}
-            className="min-h-6 border-line text-[0.6875rem] text-soft not-first:border-l data-focus-visible:outline-2 data-focus-visible:-outline-offset-1 data-selected:bg-ink data-selected:text-paper pointer-coarse:min-h-9"
+            className="min-h-6 border-line text-[0.6875rem] text-soft not-first:border-l data-focus-visible:outline-2 data-focus-visible:-outline-offset-1 data-selected:bg-[#d9d1be] data-selected:font-semibold data-selected:text-ink pointer-coarse:min-h-9"
           >
             {name.charAt(0)}
           </ToggleButton>

@@ -31,7 +31,7 @@ interface LiveBriefProps {
 /** The main parameters of the brief: each can be dragged or typed, and the map follows. */
 export function LiveBrief({ parameters, draft, problems, onChange }: LiveBriefProps) {
   return (
-    <div className="grid gap-2.5">
+    <div className="grid gap-1.5">
       {parameters.map((parameter) => {
         const value = draft[parameter.path] ?? parameter.saved;
         const change = (next: number | string, isDone: boolean) => onChange(changed(draft, parameter, next), isDone);
@@ -52,12 +52,12 @@ export function LiveBrief({ parameters, draft, problems, onChange }: LiveBriefPr
   );
 }
 
-const TRACK = 'relative h-5 w-full cursor-pointer';
+const TRACK = 'relative h-4 w-full cursor-pointer pointer-coarse:h-7';
 const LINE = 'absolute top-1/2 h-[3px] -translate-y-1/2 rounded-full';
 const THUMB =
   'top-1/2 size-4 rounded-full border-2 border-ink bg-paper data-dragging:bg-ink data-focus-visible:outline-2 data-focus-visible:outline-offset-2 data-focus-visible:outline-indigo pointer-coarse:size-6';
 const TYPED =
-  'h-7 w-14 rounded-md border border-transparent bg-transparent px-1 text-right font-semibold hover:border-[#b9af9b] focus:border-[#918a78] focus:bg-paper pointer-coarse:h-9 pointer-coarse:border-[#b9af9b]';
+  'h-6 w-12 rounded-md border border-transparent bg-transparent px-1 text-right font-semibold hover:border-[#b9af9b] focus:border-[#918a78] focus:bg-paper pointer-coarse:h-9 pointer-coarse:border-[#b9af9b]';
 
 interface NumberSliderProps {
   readonly parameter: LiveNumber;

@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { boxAround } from '../../../src/map/fit-stations.ts';
 import { scaleBar } from '../../../src/map/scale-bar.ts';
-import { scoreCounts } from '../../../src/map/score-counts.ts';
 import { BELOW_LINES, BELOW_NAMES, sheetStyle } from '../../../src/map/sheet-style.ts';
 import type { SheetView } from '../../../src/map/sheet-view.ts';
 
@@ -48,14 +47,6 @@ describe('the scale bar', () => {
     const bars = widths.map((east) => scaleBar({ ...view, east }, { mostPx: 132, units: 'si' }).widthPx);
     expect(Math.max(...bars)).toBeLessThanOrEqual(132 + 1e-9);
     expect(Math.min(...bars)).toBeGreaterThan(132 / 2.5 - 1e-9);
-  });
-});
-
-describe('counts of the legend', () => {
-  it('put every station in one class, its lower limit included, and those without a score apart', () => {
-    const scores = [0, 19, 20, 59, 60, 80, 99, 100, null];
-    const counts = scoreCounts(scores.map((score, index) => ({ score, grade: index === 1 ? 'D' : 'A' })));
-    expect(counts).toEqual({ classes: [2, 1, 1, 1, 3], noScore: 1, gradeD: 1 });
   });
 });
 

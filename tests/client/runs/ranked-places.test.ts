@@ -1,14 +1,14 @@
 import { describe, expect, it } from 'vitest';
-import type { MapStation } from '../../../src/contract/programme-map.ts';
-import { filterByName, rankedStations } from '../../../src/features/runs/ranked-stations.ts';
+import type { MapPlace } from '../../../src/features/runs/map-places.ts';
+import { filterByName, rankedPlaces } from '../../../src/features/runs/ranked-places.ts';
 import { yearFigures } from '../../support/figures-of-place.ts';
 
-function station(name: string, score: number | null, grade: MapStation['grade'] = 'C'): MapStation {
-  const place = { latitude: 0, longitude: 0, elevationM: 0, scoreNote: null, verdict: null, ...yearFigures };
-  return { id: name, name, score, grade, ...place };
+function station(name: string, score: number | null, grade: MapPlace['grade'] = 'C'): MapPlace {
+  const place = { latitude: 0, longitude: 0, scoreNote: null, verdict: null, ...yearFigures };
+  return { kind: 'station', id: name, stationId: name, name, score, grade, ...place };
 }
 
-const inOrder = (stations: MapStation[]) => rankedStations(stations).map(({ station: { name }, rank }) => [rank, name]);
+const inOrder = (stations: MapPlace[]) => rankedPlaces(stations).map(({ place: { name }, rank }) => [rank, name]);
 
 describe('stations by score', () => {
   it('stand highest first, equal scores sharing a rank in the order of their names', () => {
@@ -40,13 +40,22 @@ describe('stations by score', () => {
 });
 
 describe('finding a station by name', () => {
-  const all = rankedStations([station('Aloe Flat', 50), station('Łódź Lake', 40), station('São Flat', 30)]);
-  const found = (typed: string) => filterByName(all, typed).map(({ station: { name } }) => name);
+  const all = rankedPlaces([station('Aloe Flat', 50), station('Łódź Lake', 40), station('São Flat', 30)]);
+  const found = (typed: string) => filterByName(all, typed).map(({ place: { name } }) => name);
 
   it('finds every word, in any order, whatever its case and accents', () => {
     expect(found('FLAT aloe')).toEqual(['Aloe Flat']);
     expect(found('sao')).toEqual(['São Flat']);
     expect(found('flat')).toEqual(['Aloe Flat', 'São Flat']);
+  });
+
+  it('finds a site by its letters', () => {
+    const sites = rankedPlaces([
+      { ...station('Aloe Flat', 50), letters: 'ab' },
+      { ...station('Babel', 40), letters: 'c' },
+    ]);
+    expect(filterByName(sites, 'ab').map(({ place: { name } }) => name)).toEqual(['Aloe Flat', 'Babel']);
+    expect(filterByName(sites, 'c').map(({ place: { name } }) => name)).toEqual(['Babel']);
   });
 
   it('shows all while nothing is typed, and none when nothing fits', () => {

@@ -14,7 +14,9 @@ export function useMapAddress(): [MapAddress, ChangeAddress] {
   const [search, setSearch] = useSearchParams();
   const address = useMemo(() => readMapAddress(search), [search]);
   const change = useCallback<ChangeAddress>(
-    (changes, { replace = false } = {}) => setSearch((held) => changedSearch(held, changes), { replace }),
+    // The address itself, not its last rendering: two changes in a row are two changes.
+    (changes, { replace = false } = {}) =>
+      setSearch(changedSearch(new URLSearchParams(window.location.search), changes), { replace }),
     [setSearch],
   );
   return [address, change];
