@@ -4,12 +4,20 @@ import * as firstLight from './0001-first-light.ts';
 import * as workerPools from './0002-worker-pools.ts';
 import * as derivedYears from './0003-derived-years.ts';
 import * as weatherRoom from './0004-weather-room.ts';
+import * as depressionArray from './0005-depression-array.ts';
+import * as sites from './0006-sites.ts';
+import * as runFigures from './0007-run-figures.ts';
+import * as gazetteer from './0008-gazetteer.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
   '0002-worker-pools': workerPools,
   '0003-derived-years': derivedYears,
   '0004-weather-room': weatherRoom,
+  '0005-depression-array': depressionArray,
+  '0006-sites': sites,
+  '0007-run-figures': runFigures,
+  '0008-gazetteer': gazetteer,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;

@@ -2,6 +2,7 @@ import type { Relief } from '#engine/weather-files/relief.ts';
 import { connect } from './db/connection.ts';
 import { judgeStoredYear } from './features/runs/judge-year.ts';
 import { queueMissingRuns } from './features/runs/queue-runs.ts';
+import { queueMissingSiteRuns } from './features/runs/queue-site-runs.ts';
 import { standardZoneAt } from './features/stations/standard-zone-at.ts';
 import {
   clearJudgingFailure,
@@ -51,6 +52,11 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
             await clearJudgingFailure(db, year);
           },
           dead: (year) => noteJudgingFailure(db, year),
+        },
+        'queue-site-runs': {
+          run: (programme) => queueMissingSiteRuns(db, programme),
+          // The next change of a site, a station or a brief, and the next start, look again.
+          dead: () => Promise.resolve(),
         },
       },
     });

@@ -3,6 +3,7 @@ import { accountsPolicy } from '../features/accounts/policy.ts';
 import { briefsPolicy } from '../features/briefs/policy.ts';
 import { methodPolicy } from '../features/method/policy.ts';
 import { runsPolicy } from '../features/runs/policy.ts';
+import { sitesPolicy } from '../features/sites/policy.ts';
 import { stationsPolicy } from '../features/stations/policy.ts';
 import { teamsPolicy } from '../features/teams/policy.ts';
 import { weatherPolicy } from '../features/weather/policy.ts';
@@ -18,6 +19,7 @@ export const policies: Readonly<Record<PolicyName, Policy>> = {
   ...methodPolicy,
   ...briefsPolicy,
   ...stationsPolicy,
+  ...sitesPolicy,
   ...teamsPolicy,
 };
 

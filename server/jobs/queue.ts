@@ -4,7 +4,14 @@ import type { Knex } from 'knex';
 export interface JobPayloads {
   'read-weather-file': { readonly teamId: string; readonly fileId: string };
   'open-weather-archive': { readonly teamId: string; readonly archiveId: string };
-  'judge-year': { readonly teamId: string; readonly weatherYearId: string; readonly briefVersionId: string };
+  'judge-year': {
+    readonly teamId: string;
+    readonly weatherYearId: string;
+    readonly briefVersionId: string;
+    /** Heights of sites, m, that the weather is moved to; left out: the station's own. */
+    readonly heightsM?: readonly number[];
+  };
+  'queue-site-runs': { readonly teamId: string; readonly programmeId: string };
 }
 export type JobName = keyof JobPayloads;
 
@@ -44,6 +51,7 @@ const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] 
   'read-weather-file': ['teamId', 'fileId'],
   'open-weather-archive': ['teamId', 'archiveId'],
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
+  'queue-site-runs': ['teamId', 'programmeId'],
 };
 
 /** The payload of a job out of the queue. @throws TypeError when it is not one that `addJob` writes */

@@ -159,6 +159,7 @@ function taskList(tasks: JobTasks): TaskList {
     'read-weather-file': (payload) => tasks['read-weather-file'].run(payloadOf('read-weather-file', payload)),
     'open-weather-archive': (payload) => tasks['open-weather-archive'].run(payloadOf('open-weather-archive', payload)),
     'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
+    'queue-site-runs': (payload) => tasks['queue-site-runs'].run(payloadOf('queue-site-runs', payload)),
   };
   return list;
 }
@@ -176,6 +177,8 @@ async function bury(
         return await tasks['open-weather-archive'].dead(payloadOf('open-weather-archive', job.payload));
       case 'judge-year':
         return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
+      case 'queue-site-runs':
+        return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload));
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

@@ -1,9 +1,11 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
+import type { Neighbours } from '#engine/interpolation/nearest-stations.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
-import type { Ledger, RunResult, Verdict } from '#engine/run/run-result.ts';
+import type { RunResult, Verdict } from '#engine/run/run-result.ts';
+import type { RawComponents } from '#engine/score/weighted-score.ts';
 
-/** Some stations judged by one draft brief. */
+/** Some stations judged by one draft brief, at their own heights or at those of sites. */
 export interface RescoreTask {
   readonly brief: Brief;
   readonly stations: readonly StationToRescore[];
@@ -14,7 +16,10 @@ export interface RescoreTask {
 export interface StationToRescore {
   readonly stationId: string;
   readonly zone: string;
+  /** What the hours are judged at: its own, or a site's that the weather is moved to. */
   readonly heightM: number;
+  /** The station's own height where the weather is moved; null where it is as measured. */
+  readonly adjustedFromM: number | null;
   readonly position: { readonly latitude: number; readonly longitude: number };
   /** Newest file first. */
   readonly years: readonly {
@@ -28,9 +33,12 @@ export interface StationToRescore {
   }[];
 }
 
+export type ShownResult = Pick<RunResult, 'ledger' | 'severityKh' | 'worstSpell' | 'water' | 'electricity'>;
+
 /** The figures of a station as a place, and of each of its years. */
 export interface RescoredStation {
   readonly stationId: string;
+  readonly heightM: number;
   readonly score: number | null;
   readonly scoreNote: string | null;
   readonly words: string | null;
@@ -38,10 +46,14 @@ export interface RescoredStation {
   readonly yearsMeeting: number;
   readonly range: { readonly low: number; readonly high: number } | null;
   /** Of the year that stands for the station; null without a usable year. */
-  readonly ledger: Ledger | null;
+  readonly shown: ShownResult | null;
   readonly shownWeatherYearId: string | null;
   /** The years that the figures rest on. */
   readonly restsOn: readonly string[];
+  /** Measured years with enough hours for the brief. */
+  readonly usable: readonly string[];
+  /** The raw components that the score is formed of. */
+  readonly raw: RawComponents;
   /** By weather year; empty unless asked for. */
   readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
 }
@@ -61,9 +73,40 @@ export type PreviewedYear = Pick<
   'ledger' | 'verdict' | 'tolerances' | 'gates' | 'score' | 'scoreNote' | 'words' | 'parts' | 'hourClassCodes'
 >;
 
+export interface SurfaceStation {
+  readonly latitude: number;
+  readonly longitude: number;
+  readonly elevationM: number;
+}
+
+/** Where a surface may be drawn between these stations, and what each of its cells rests on. */
+export interface SurfaceTask {
+  readonly stations: readonly SurfaceStation[];
+}
+
+export interface SurfaceGrid {
+  /** Between the middles of neighbouring cells, on average. */
+  readonly spacingKm: number;
+  /** Middles of the cells, degrees; longitudes run on past 180 where the stations lie about the date line. */
+  readonly latitudes: Float32Array;
+  readonly longitudes: Float32Array;
+  /** 2 full, 1 pale, 0 none: a rim around the others. */
+  readonly support: Uint8Array;
+  /** Every three cells that touch one another. */
+  readonly triangles: Uint32Array;
+  readonly elevationsM: Float32Array;
+  /** Station that a cell holds and shows, or -1. */
+  readonly held: Int32Array;
+  readonly neighbours: Neighbours;
+  /** The nearest others of every station. */
+  readonly others: Neighbours;
+}
+
 export type WebTask =
+  | { readonly kind: 'surface'; readonly task: SurfaceTask }
   | { readonly kind: 'rescore'; readonly task: RescoreTask }
   | { readonly kind: 'preview'; readonly task: PreviewTask };
 export type WebAnswer =
+  | { readonly kind: 'surface'; readonly answer: SurfaceGrid }
   | { readonly kind: 'rescore'; readonly answer: readonly RescoredStation[] }
   | { readonly kind: 'preview'; readonly answer: PreviewedYear };

@@ -1,5 +1,14 @@
 import { makeThreadPool } from './thread-pool.ts';
-import type { PreviewedYear, PreviewTask, RescoredStation, RescoreTask, WebAnswer, WebTask } from './web-task.ts';
+import type {
+  PreviewedYear,
+  PreviewTask,
+  RescoredStation,
+  RescoreTask,
+  SurfaceGrid,
+  SurfaceTask,
+  WebAnswer,
+  WebTask,
+} from './web-task.ts';
 
 /** Threads that judge for whoever drags a slider; their errors are those of `ThreadPool.run`. */
 export interface WebThreads {
@@ -8,10 +17,11 @@ export interface WebThreads {
   warm(): void;
   rescore(task: RescoreTask, signal: AbortSignal): Promise<readonly RescoredStation[]>;
   preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
+  surface(task: SurfaceTask, signal?: AbortSignal): Promise<SurfaceGrid>;
   close(): Promise<void>;
 }
 
-/** @param options.entry the module that answers both kinds of task */
+/** @param options.entry the module that answers every kind of task */
 export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebThreads {
   const pool = makeThreadPool<WebTask, WebAnswer>(options);
   return {
@@ -25,6 +35,11 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
     async preview(task, signal) {
       const answered = await pool.run({ kind: 'preview', task }, signal);
       if (answered.kind !== 'preview') throw wrongAnswer();
+      return answered.answer;
+    },
+    async surface(task, signal) {
+      const answered = await pool.run({ kind: 'surface', task }, signal);
+      if (answered.kind !== 'surface') throw wrongAnswer();
       return answered.answer;
     },
     close: () => pool.close(),

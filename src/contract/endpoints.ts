@@ -2,13 +2,18 @@
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
+import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as method from './method.ts';
+import * as places from './places.ts';
 import * as map from './programme-map.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
+import * as siteImports from './site-imports.ts';
+import * as sites from './sites.ts';
 import * as stations from './stations.ts';
+import * as surface from './surface.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -50,7 +55,13 @@ export const endpoints = {
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
+  findPlaces: places.findPlaces,
   getMap: map.getMap,
+  getSurface: surface.getSurface,
+  judgeSurface: surface.judgeSurface,
+  getEstimate: surface.getEstimate,
+  getDepressionMap: depression.getDepressionMap,
+  getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
   exportRunHours: hours.exportRunHours,
@@ -63,6 +74,21 @@ export const endpoints = {
   compareBriefVersions: briefs.compareBriefVersions,
   saveBriefVersion: briefs.saveBriefVersion,
   previewBrief: briefs.previewBrief,
+  listSites: sites.listSites,
+  getSite: sites.getSite,
+  makeSite: sites.makeSite,
+  changeSite: sites.changeSite,
+  moveSite: sites.moveSite,
+  removeSites: sites.removeSites,
+  setSiteDuty: sites.setSiteDuty,
+  getGround: sites.getGround,
+  startSiteImport: siteImports.startSiteImport,
+  addSiteImportRows: siteImports.addSiteImportRows,
+  checkSiteImport: siteImports.checkSiteImport,
+  finishSiteImport: siteImports.finishSiteImport,
+  listSiteImports: siteImports.listSiteImports,
+  undoSiteImport: siteImports.undoSiteImport,
+  exportSites: siteImports.exportSites,
   listTokens: tokens.listTokens,
   makeToken: tokens.makeToken,
   revokeToken: tokens.revokeToken,

@@ -23,6 +23,8 @@ export const errorStatus = {
   not_found: 404,
   /** The thing has moved on since it was looked at (already accepted, withdrawn, refused). */
   wrong_state: 409,
+  /** Somebody changed the thing since the revision that was sent; `problems` says what, field by field. */
+  conflict: 409,
   /** The one-time link was used or never existed. */
   link_not_valid: 410,
   /** More bytes than the endpoint takes. */

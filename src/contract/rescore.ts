@@ -1,29 +1,27 @@
 import * as z from 'zod/mini';
 import { endpoint, json } from './endpoint.ts';
-import { Ledger, ProgrammeParams, Verdict } from './runs.ts';
+import { PlaceFigures } from './place-figures.ts';
+import { ProgrammeParams } from './runs.ts';
 
-/** A station under a draft brief; its figures are a place's, its ledger that of the year that stands for it. */
-export const RescoredStation = z.object({
+/** A station under a draft brief; its hours are those of the year that stands for it. */
+export const RescoredStation = z.extend(PlaceFigures, {
   stationId: z.uuid(),
-  score: z.nullable(z.int()),
-  /** Why `score` is null. */
-  scoreNote: z.nullable(z.string()),
-  words: z.nullable(z.string()),
-  verdict: z.nullable(Verdict),
-  yearsMeeting: z.int(),
-  range: z.nullable(z.object({ low: z.int(), high: z.int() })),
-  /** null without a usable year. */
-  ledger: z.nullable(Ledger),
   shownWeatherYearId: z.nullable(z.uuid()),
   /** The weather years that the figures rest on. */
   restsOn: z.array(z.uuid()),
 });
 export type RescoredStation = z.infer<typeof RescoredStation>;
 
+/** A site under a draft brief, with its own height and gates. */
+export const RescoredSite = z.extend(PlaceFigures, { siteId: z.uuid() });
+export type RescoredSite = z.infer<typeof RescoredSite>;
+
 export const RescoreAnswer = z.object({
   methodVersion: z.string(),
   stations: z.array(RescoredStation),
-  /** Every weather year that was judged, in the order of the map. */
+  /** The sites that were asked for, in the order of the map; one that has gone is left out. */
+  sites: z.array(RescoredSite),
+  /** Every weather year of those stations that was judged, in the order of the map. */
   judged: z.array(
     z.object({
       weatherYearId: z.uuid(),
@@ -42,12 +40,12 @@ export const RescoreAnswer = z.object({
 export type RescoreAnswer = z.infer<typeof RescoreAnswer>;
 
 /** As many as a view holds. */
-const MOST_STATIONS_NAMED = 2000;
+const MOST_NAMED = 2000;
 
 export const rescore = endpoint({
   method: 'POST',
   path: '/api/teams/:teamId/programmes/:programmeId/rescore',
-  summary: 'Judge every usable weather year of the team, or of some stations, by a draft brief. Nothing is stored.',
+  summary: 'Judge the stations of the team, or some of them, and some sites by a draft brief. Nothing is stored.',
   params: ProgrammeParams,
   query: z.strictObject({ hashes: z.optional(z.literal('yes')) }),
   body: json(
@@ -55,7 +53,9 @@ export const rescore = endpoint({
       /** The draft; the engine reads it whole and answers every fault at once, each at its path. */
       body: z.record(z.string(), z.unknown()),
       /** Left out: every station. */
-      stationIds: z.optional(z.array(z.uuid()).check(z.minLength(1), z.maxLength(MOST_STATIONS_NAMED))),
+      stationIds: z.optional(z.array(z.uuid()).check(z.maxLength(MOST_NAMED))),
+      /** Sites of the programme, those in view; left out: none. */
+      siteIds: z.optional(z.array(z.uuid()).check(z.maxLength(MOST_NAMED))),
     }),
   ),
   response: json(RescoreAnswer),

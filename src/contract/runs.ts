@@ -148,7 +148,30 @@ export const YearlyCarbon = z.object({
   source: z.string(),
 });
 
+/** A site as a place: the weather is its station's, moved to its height where both heights are known. */
+export const SiteOfPlace = z.object({
+  id: z.uuid(),
+  letters: z.string(),
+  name: z.string(),
+  latitude: z.number(),
+  longitude: z.number(),
+  elevationM: z.nullable(z.number()),
+  elevationSource: z.nullable(z.enum(['person', 'file', 'relief'])),
+  distanceKm: z.number(),
+  /** Station less site, m. */
+  heightDifferenceM: z.nullable(z.number()),
+  /** The weather was moved to `heightUsedM`. */
+  heightAdjusted: z.boolean(),
+  /** The height that the hours were judged at, m: the site's in steps of 10 m, else the station's. */
+  heightUsedM: z.number(),
+  /** Design load, kW: what is given per kW is to be multiplied by it. */
+  loadKw: z.nullable(z.number()),
+});
+export type SiteOfPlace = z.infer<typeof SiteOfPlace>;
+
 export const Place = z.object({
+  /** null: the place is the station itself. */
+  site: z.nullable(SiteOfPlace),
   station: z.object({
     id: z.uuid(),
     name: z.string(),
@@ -215,6 +238,19 @@ export const Place = z.object({
   gradeColumns: z.array(GradeColumn),
 });
 export type Place = z.infer<typeof Place>;
+
+export const getSitePlace = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/programmes/:programmeId/sites/:siteId/place',
+  summary: 'One site as a place: its station’s weather at its own height, with its gates.',
+  params: z.strictObject({ teamId: z.uuid(), programmeId: z.uuid(), siteId: z.uuid() }),
+  query: OfBrief,
+  body: none,
+  response: json(Place),
+  errors: ['wrong_state'],
+  allow: 'runs.view',
+  limits: ordinary,
+});
 
 export const getStationPlace = endpoint({
   method: 'GET',

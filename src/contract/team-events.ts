@@ -7,6 +7,7 @@ export const TeamEvent = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('weather-file'), fileId: z.uuid(), status: FileStatus, step: z.nullable(ReadingStep) }),
   z.object({ kind: z.literal('weather-batch'), batchId: z.uuid() }),
   z.object({ kind: z.literal('run'), runId: z.uuid(), stationId: z.uuid() }),
+  z.object({ kind: z.literal('sites'), programmeId: z.uuid() }),
   z.object({ kind: z.literal('brief'), briefId: z.uuid(), version: z.int() }),
 ]);
 export type TeamEvent = z.infer<typeof TeamEvent>;

@@ -39,7 +39,7 @@ describe('design values and counting against published values', () => {
       expect(facts.measured + facts.estimated + facts.repaired + facts.missing).toBe(expected);
       expect(facts.missing).toBe(50);
       expect(facts.repaired).toBe(3);
-      const binned = depressionHours.reduce((sum, bin) => sum + bin.hours, 0);
+      const binned = depressionHours.reduce((sum, hours) => sum + hours, 0);
       expect(binned + facts.missing).toBe(expected);
       expect(histogram.reduce((sum, hours) => sum + hours, 0)).toBe(binned);
       const { classes } = judgeYear({

@@ -83,8 +83,14 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherArchive: uploadersOnly,
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
+  findPlaces: readersToo,
   getMap: readersToo,
+  getSurface: readersToo,
+  judgeSurface: readersToo,
+  getEstimate: readersToo,
+  getDepressionMap: readersToo,
   getStationPlace: readersToo,
+  getSitePlace: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,
@@ -96,6 +102,23 @@ const matrix: Record<EndpointName, readonly number[]> = {
   compareBriefVersions: everyMember,
   saveBriefVersion: plannersToo,
   previewBrief: everyMember,
+  listSites: readersToo,
+  getSite: readersToo,
+  makeSite: plannersToo,
+  // The planner changes the revision that all of them saw, so that the others come second.
+  changeSite: [403, 200, 409, 409, ...strangers, 403, 403],
+  moveSite: [403, 409, 409, 409, ...strangers, 403, 403],
+  removeSites: plannersToo,
+  setSiteDuty: plannersToo,
+  getGround: readersToo,
+  startSiteImport: plannersToo,
+  addSiteImportRows: plannersToo,
+  checkSiteImport: plannersToo,
+  // The planner finishes it first, and undoes it first.
+  finishSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
+  listSiteImports: readersToo,
+  undoSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
+  exportSites: plannersToo,
   listTokens: leadOnly,
   makeToken: leadOnly,
   revokeToken: leadOnly,
@@ -120,6 +143,7 @@ const emailOf = (caller: Caller): string => `${caller.replace(' ', '-')}@example
 const [station] = demoStations.filter(({ year, faults }) => year === null && faults.length === 0);
 if (station === undefined) throw new Error('the demo has a clean typical year');
 const epw = demoWeatherFile(station);
+const rowOfSite = { name: 'Of a table', latitude: '10', longitude: '20' };
 const epwOf = (note: string): Blob => new Blob([epw.text.replace('COMMENTS 1,', `COMMENTS 1,${note} `)]);
 
 async function signIn(caller: Caller): Promise<string> {
@@ -173,6 +197,14 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
   if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
+  if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
+  if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
+  if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });
+  if (name === 'startSiteImport') return JSON.stringify({ name: `Table of ${caller}` });
+  if (name === 'addSiteImportRows') return JSON.stringify({ rows: [{ line: 2, cells: rowOfSite }] });
+  if (name === 'finishSiteImport') return JSON.stringify({ duplicates: 'keep' });
+  if (name === 'removeSites') return JSON.stringify({ siteIds: [ids.teamId], reason: 'A test.' });
+  if (name === 'setSiteDuty') return JSON.stringify({ owner: caller, dueOn: '2027-05-01', doneOn: null, note: '' });
   if (name === 'makeToken') return JSON.stringify({ name: 'A program', scopes: ['weather:read'], days: 1 });
   if (name === 'startWeatherBatch') return JSON.stringify({ name: `Batch of ${caller}` });
   if (name === 'changeWeatherBatch') return JSON.stringify({ state: 'running' });
@@ -185,7 +217,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
   if (name === 'previewBrief') return JSON.stringify({ stationId: ids.stationId, body: officeBrief() });
-  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
+  if (name === 'rescore' || name === 'judgeSurface') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
@@ -200,6 +232,10 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
+  if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
+  if (name === 'findPlaces') return '?text=Korrel';
+  if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
+  if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
 
@@ -284,6 +320,20 @@ beforeAll(async () => {
   const batch: { id: string } = await (
     await fetch(`${team}/weather-batches`, { method: 'POST', headers: json, body: JSON.stringify({ name: 'Ours' }) })
   ).json();
+  const site: { id: string } = await (
+    await fetch(`${team}/programmes/${ours.programmeId}/sites`, {
+      method: 'POST',
+      headers: json,
+      body: JSON.stringify({ name: 'Ours', latitude: 10, longitude: 20 }),
+    })
+  ).json();
+  const table: { id: string } = await (
+    await fetch(`${team}/programmes/${ours.programmeId}/site-imports`, {
+      method: 'POST',
+      headers: json,
+      body: JSON.stringify({ name: 'Ours' }),
+    })
+  ).json();
   archive = await zipBytes({ 'note.md': 'nothing to read' });
   const form = new FormData();
   form.append('file', new Blob([new Uint8Array(archive)]), 'first.zip');
@@ -303,7 +353,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
-  ids = { ...ids, rule: 'step' };
+  ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));
 });

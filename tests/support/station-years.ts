@@ -35,9 +35,9 @@ export async function cloneStationYears(
        from clones
      )
      insert into weather_years (team_id, weather_file_id, station_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
-       humidity_ratio, pressure, flags, histogram, humidity_from, below_zero, facts, read_version, content_hash)
+       humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version, content_hash)
      select team_id, file_id, new_station_id, kind, year, utc_offset_min, slots, layout, dry_bulb, humidity_ratio, pressure,
-       flags, histogram, humidity_from, below_zero, facts, read_version, content_hash || ' ' || number
+       flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version, content_hash || ' ' || number
      from clones`,
     { teamId, stations },
   );

@@ -68,7 +68,7 @@ async function selectVersions(db: Knex, condition: string, key: BriefsKey & obje
        from weather_years
        join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
        left join runs on runs.weather_year_id = weather_years.id and runs.brief_version_id = versions.id
-         and runs.method_version = :methodVersion
+         and runs.method_version = :methodVersion and runs.adjusted_from_m is null
        where weather_years.team_id = :teamId
      ) as used
      ${condition}
@@ -89,7 +89,7 @@ export async function listStationsOfVersion(
      join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'
      left join runs on runs.weather_year_id = weather_years.id and runs.brief_version_id = :versionId
-       and runs.method_version = :methodVersion
+       and runs.method_version = :methodVersion and runs.adjusted_from_m is null
      where stations.team_id = :teamId
      group by stations.id
      order by stations.name, stations.id`,

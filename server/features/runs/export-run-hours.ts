@@ -8,6 +8,7 @@ import { weatherYearText } from '#engine/run/hours-csv.ts';
 import { AppError } from '../../http/app-error.ts';
 import type { YearThread } from '../../jobs/year-thread.ts';
 import { readPackedYear } from '../weather/packed-year-read-model.ts';
+import { yearAtHeight } from './height-used.ts';
 import { findRunToExport, type RunToExport } from './run-to-export-read-model.ts';
 
 /** So much at a time, so that a slow reader holds nothing up. */
@@ -31,8 +32,9 @@ export async function exportRunHours(
   if (!mayTakeAlong(run, asked.role)) throw underLicence(run);
   if (run.methodVersion !== METHOD_VERSION) throw anotherMethod(run);
   const { weatherYearId, brief, heightM, clock, zone } = run;
-  const year = await readPackedYear(db, { teamId: asked.teamId, weatherYearId });
-  if (year === null) throw new Error(`the weather year of the run ${asked.runId} has gone`);
+  const asMeasured = await readPackedYear(db, { teamId: asked.teamId, weatherYearId });
+  if (asMeasured === null) throw new Error(`the weather year of the run ${asked.runId} has gone`);
+  const year = yearAtHeight(asMeasured, run);
   const origin = originOf(run);
   const written = await yearThread.writeHours({ year, brief, heightM, clock, zone, origin }, asked.signal);
   if (!run.hourClassCodes.equals(written.hourClassCodes))
@@ -73,12 +75,16 @@ function originOf(run: RunToExport) {
   return {
     file: fileName,
     station: stationName,
-    weatherYear: yearSentence(run),
+    weatherYear: `${yearSentence(run)}${heightSentence(run)}`,
     licence: licenceText(run),
     brief: `${briefName}, version ${briefVersion}`,
     briefSentence: briefSentence(brief),
     zone,
   };
+}
+
+function heightSentence({ heightM, adjustedFromM }: RunToExport): string {
+  return adjustedFromM === null ? '' : `; moved from ${adjustedFromM} m to the height of a site, ${heightM} m`;
 }
 
 function yearSentence(run: RunToExport): string {

@@ -1,7 +1,9 @@
 import type { Brief } from '#engine/brief/brief.ts';
 import { briefNotes } from '#engine/brief/brief-notes.ts';
-import { type GradeAnswer, gradePlace } from '#engine/score/grade-place.ts';
+import type { GradeAnswer } from '#engine/score/grade-place.ts';
 import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
+import { AT_THE_STATION, gradeOfYears, type WhereItStands } from './grade-of-years.ts';
+import { noteWithoutRun } from './judged-places.ts';
 import type { RunOfYear, StationYear } from './station-years-read-model.ts';
 
 /** A station as a place: what its accepted years come to under a brief. */
@@ -27,10 +29,14 @@ export interface JudgedYear {
   readonly weather: StationYear;
 }
 
-/** @param years the accepted years of one station, at least one */
+/**
+ * @param years the accepted years of one station, at least one
+ * @param at where the place stands to it
+ */
 export function judgeStation(
   brief: Brief,
   [first, ...others]: readonly [StationYear, ...StationYear[]],
+  at: WhereItStands = AT_THE_STATION,
 ): JudgedStation {
   const years = [first, ...others];
   const judged = years.flatMap((weather) => {
@@ -43,35 +49,17 @@ export function judgeStation(
     station: first,
     figures,
     judged,
-    grade: gradeOf(years),
+    grade: gradeOfYears(
+      years.map(({ run, ...year }) => ({ ...year, usable: run === null || run.figures.usable })),
+      at,
+    ),
     notes: briefNotes(brief),
     pending: open.filter(({ failure }) => failure === null).length,
-    scoreNote: judged.length === 0 ? noteWithoutRun(open) : figures.scoreNote,
+    scoreNote:
+      judged.length === 0
+        ? noteWithoutRun(open.map(({ failure }) => ({ failed: failure !== null })))
+        : figures.scoreNote,
   };
-}
-
-function noteWithoutRun(open: readonly StationYear[]): string {
-  return open.every(({ failure }) => failure !== null)
-    ? 'not judged: a fault of ours stopped it, its weather file says so'
-    : 'not judged yet';
-}
-
-/** A station stands for itself: no distance, no difference in height. */
-function gradeOf(years: readonly StationYear[]): GradeAnswer {
-  const usable = years.filter(({ kind, run }) => kind !== 'derived' && (run === null || run.figures.usable));
-  const slots = usable.reduce((sum, { hours }) => sum + hours, 0);
-  const measured = usable.reduce((sum, year) => sum + year.measuredHours, 0);
-  return gradePlace({
-    distanceKm: 0,
-    heightDifferenceM: 0,
-    years: {
-      actual: usable.filter(({ kind }) => kind === 'actual').length,
-      typical: usable.some(({ kind }) => kind === 'typical'),
-    },
-    measuredSharePct: slots === 0 ? null : (100 * measured) / slots,
-    flagsInformative: usable.every(({ flagsUniform }) => !flagsUniform),
-    kind: years.every(({ kind }) => kind === 'derived') ? 'derived' : 'station',
-  });
 }
 
 /** The rows of a map, one group per station; they come ordered by station. */

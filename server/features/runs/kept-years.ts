@@ -4,6 +4,7 @@
  */
 import { availableParallelism } from 'node:os';
 import type { PackedYear } from '#engine/reduction/weather-year.ts';
+import { packedAtHeight } from './height-used.ts';
 import { packedOver } from './shared-columns.ts';
 
 /** Over all threads; some 130 kB each with what is derived. */
@@ -12,13 +13,20 @@ const MOST_IN_THREAD = Math.floor(MOST_YEARS / availableParallelism());
 
 const kept = new Map<string, PackedYear>();
 
-export function keptYear(year: { weatherYearId: string; contentHash: string; columns: SharedArrayBuffer }): PackedYear {
-  const key = `${year.weatherYearId} ${year.contentHash}`;
+export function keptYear(year: {
+  weatherYearId: string;
+  contentHash: string;
+  columns: SharedArrayBuffer;
+  heightM: number;
+  adjustedFromM: number | null;
+}): PackedYear {
+  const moved = year.adjustedFromM === null ? '' : ` ${year.adjustedFromM} to ${year.heightM}`;
+  const key = `${year.weatherYearId} ${year.contentHash}${moved}`;
   const found = kept.get(key);
   if (found !== undefined) return found;
   const [longestThere] = kept.keys();
   if (kept.size >= MOST_IN_THREAD && longestThere !== undefined) kept.delete(longestThere);
-  const packed = packedOver(year.columns);
+  const packed = packedAtHeight(packedOver(year.columns), year);
   kept.set(key, packed);
   return packed;
 }

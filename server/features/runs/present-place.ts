@@ -1,16 +1,33 @@
 import type { BriefBasis, Place } from '#contract/runs.ts';
+import type { GateAnswer } from '#engine/run/run-result.ts';
+import { withSiteGates } from '#engine/score/site-gates.ts';
+import type { ResolvedSite } from '../sites/resolved-sites-read-model.ts';
 import { cautionsOf } from './cautions.ts';
+import type { HeightUsed } from './height-used.ts';
 import type { JudgedStation, JudgedYear } from './judge-station.ts';
 import { dayText, slotEndText, slotStartText } from './local-time-text.ts';
 import { presentDerivedYears } from './present-derived-years.ts';
 
-export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; invented: boolean }): Place {
+/** What makes a site of a station's weather. */
+export interface SiteOfStation {
+  readonly site: ResolvedSite;
+  readonly height: HeightUsed;
+  /** As the brief asks them and a person answered them. */
+  readonly gates: readonly GateAnswer[];
+}
+
+export function presentPlace(
+  judgedPlace: JudgedStation,
+  on: { brief: BriefBasis; invented: boolean; site: SiteOfStation | null },
+): Place {
+  const place = on.site === null ? judgedPlace : withGatesOf(judgedPlace, on.site.gates);
   const { station, figures, judged, grade } = place;
   // Without a usable year the newest one is still shown, so that one sees why: its hours without weather, no score.
   const newest = judged.filter(({ kind }) => kind !== 'derived').slice(0, 1);
   const shown = figures.shown ?? newest[0] ?? null;
   const restsOn = figures.runs.length > 0 ? figures.runs : newest;
   return {
+    site: on.site === null ? null : presentSiteOfPlace(on.site),
     station: {
       id: station.stationId,
       name: station.stationName,
@@ -23,9 +40,26 @@ export function presentPlace(place: JudgedStation, on: { brief: BriefBasis; inve
     brief: on.brief,
     years: restsOn.map(presentYear),
     derived: presentDerivedYears(judged),
-    shown: shown === null ? null : presentShown(place, shown),
+    shown: shown === null ? null : presentShown(place, shown, on.site?.gates ?? null),
     grade: grade.grade,
     gradeColumns: grade.columns.map((column) => ({ ...column })),
+  };
+}
+
+function withGatesOf(place: JudgedStation, gates: readonly GateAnswer[]): JudgedStation {
+  const { scoreNote, ...figures } = withSiteGates({ ...place.figures, scoreNote: place.scoreNote }, gates);
+  return { ...place, figures: { ...figures, scoreNote }, scoreNote };
+}
+
+function presentSiteOfPlace({ site, height }: SiteOfStation): NonNullable<Place['site']> {
+  const { id, letters, name, latitude, longitude, elevationM, elevationSource, station, designLoadKw } = site;
+  return {
+    ...{ id, letters, name, latitude, longitude, elevationM, elevationSource },
+    distanceKm: station?.distanceKm ?? 0,
+    heightDifferenceM: station?.heightDifferenceM ?? null,
+    heightAdjusted: height.adjusted,
+    heightUsedM: height.heightM,
+    loadKw: designLoadKw,
   };
 }
 
@@ -37,6 +71,7 @@ function presentYear({ run, weather, kind, year, result }: JudgedYear): Place['y
 function presentShown(
   { station, figures, notes, scoreNote }: JudgedStation,
   { run, result, kind }: JudgedYear,
+  siteGates: readonly GateAnswer[] | null,
 ): NonNullable<Place['shown']> {
   const { score } = figures;
   return {
@@ -44,7 +79,7 @@ function presentShown(
     ledger: { ...result.ledger, classes: { ...result.ledger.classes } },
     verdict: figures.verdict ?? result.verdict,
     tolerances: [...result.tolerances],
-    gates: [...result.gates],
+    gates: gatesWith(result.gates, siteGates),
     score,
     scoreNote,
     scoreExact: score === null ? null : figures.scoreExact,
@@ -65,6 +100,13 @@ function presentShown(
     carbon: result.carbon,
     cautions: cautionsOf({ kind, zone: station.zone, notes }),
   };
+}
+
+/** What the weather decides, then what a person answered for the site. */
+function gatesWith(gates: readonly GateAnswer[], ofSite: readonly GateAnswer[] | null): GateAnswer[] {
+  if (ofSite === null) return [...gates];
+  const asked = new Set(ofSite.map(({ gate }) => gate));
+  return [...gates.filter(({ gate }) => !asked.has(gate)), ...ofSite];
 }
 
 function presentSpell(

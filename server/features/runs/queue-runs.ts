@@ -4,8 +4,9 @@ import { addJob, addJobs } from '../../jobs/queue.ts';
 import { newestBriefVersionIds } from '../briefs/brief-read-model.ts';
 import { listAcceptedYearIds } from '../weather/accepted-years-read-model.ts';
 import { findMissingRuns } from './missing-runs-read-model.ts';
+import { queueSiteRunsOf } from './queue-site-runs.ts';
 
-/** Queues the judging of a weather year by the newest version of every brief of its team. */
+/** Queues the judging of a weather year by the newest version of every brief of its team, and of sites that it now stands for. */
 export async function queueRuns(
   transaction: Knex.Transaction,
   year: { teamId: string; weatherYearId: string },
@@ -13,6 +14,7 @@ export async function queueRuns(
   for (const briefVersionId of await newestBriefVersionIds(transaction, year.teamId)) {
     await queueRun(transaction, { ...year, briefVersionId });
   }
+  await queueSiteRunsOf(transaction, year);
 }
 
 /** Queues the judging of every accepted year of the team by a new brief version. */
@@ -23,6 +25,7 @@ export async function queueRunsOfVersion(
   const yearIds = await listAcceptedYearIds(transaction, version.teamId);
   const jobs = yearIds.map((weatherYearId) => jobOf({ ...version, weatherYearId }));
   if (jobs.length > 0) await addJobs(transaction, 'judge-year', jobs);
+  await queueSiteRunsOf(transaction, version);
 }
 
 export async function queueRun(
@@ -50,4 +53,5 @@ function jobOf({
  */
 export async function queueMissingRuns(db: Knex): Promise<void> {
   for (const run of await findMissingRuns(db, METHOD_VERSION)) await queueRun(db, run);
+  await queueSiteRunsOf(db, { teamId: null });
 }

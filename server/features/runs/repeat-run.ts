@@ -4,6 +4,7 @@ import { METHOD_VERSION, READ_VERSION } from '#engine/conventions.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { readPackedYear } from '../weather/packed-year-read-model.ts';
+import { yearAtHeight } from './height-used.ts';
 import { runKey, runResultHash } from './run-key.ts';
 import { findRunToRepeat, type RunToRepeat } from './run-to-repeat-read-model.ts';
 
@@ -41,7 +42,13 @@ export async function repeatRun(db: Knex, hashes: RunHashes, runId: string): Pro
   if (year === null) return { outcome: 'no such run' };
   const { brief, heightM, clock } = run;
   // The stored clock holds all that the zone had to say.
-  const { hourClassCodes, ...figures } = judgeYear({ year, brief, heightM, clock, zone: 'UTC' });
+  const { hourClassCodes, ...figures } = judgeYear({
+    year: yearAtHeight(year, run),
+    brief,
+    heightM,
+    clock,
+    zone: 'UTC',
+  });
   const repeatedHash = runResultHash(figures, hourClassCodes);
   // The hash of a year names the version of the reading, so that an older one cannot be formed anew.
   const weatherHolds = run.readVersion !== READ_VERSION || hashes.contentHash(year) === run.contentHash;
@@ -61,6 +68,6 @@ export async function repeatRun(db: Knex, hashes: RunHashes, runId: string): Pro
   };
 }
 
-function keyOf({ contentHash: weather, heightM, clock, briefHash: brief, methodVersion }: RunToRepeat): string {
-  return runKey({ contentHash: weather, heightM, clock, briefHash: brief, methodVersion });
+function keyOf({ contentHash, heightM, adjustedFromM, clock, briefHash, methodVersion }: RunToRepeat): string {
+  return runKey({ contentHash, heightM, adjustedFromM, clock, briefHash, methodVersion });
 }

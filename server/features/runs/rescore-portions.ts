@@ -58,6 +58,7 @@ export function stationsOf(
       stationId,
       zone,
       heightM: elevationM,
+      adjustedFromM: null,
       position: { latitude, longitude },
       years: group.flatMap(({ weatherYearId, contentHash, kind, year, utcOffsetMin }) => {
         const found = columns.get(weatherYearId);

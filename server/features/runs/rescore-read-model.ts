@@ -16,6 +16,9 @@ export interface YearToRescore {
   readonly utcOffsetMin: number;
   readonly slots: number;
   readonly contentHash: string;
+  /** Hours whose dry bulb and humidity are both as the source measured them. */
+  readonly measuredHours: number;
+  readonly flagsUniform: boolean;
 }
 
 /** Every accepted year of the team's stations, by station name, newest file first: the order of the map. */
@@ -23,7 +26,12 @@ export async function listYearsToRescore(db: Knex, teamId: string): Promise<read
   const { rows } = await db.raw<{ rows: YearToRescore[] }>(
     `select stations.id as "stationId", stations.zone, stations.latitude, stations.longitude,
        stations.elevation_m as "elevationM", weather_years.id as "weatherYearId", weather_years.kind, weather_years.year,
-       weather_years.utc_offset_min as "utcOffsetMin", weather_years.slots, weather_years.content_hash as "contentHash"
+       weather_years.utc_offset_min as "utcOffsetMin", weather_years.slots, weather_years.content_hash as "contentHash",
+       weather_years.measured_hours as "measuredHours",
+       exists (
+         select 1 from findings
+         where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'
+       ) as "flagsUniform"
      from stations
      join weather_years on weather_years.team_id = stations.team_id and weather_years.station_id = stations.id
      join weather_files on weather_files.id = weather_years.weather_file_id and weather_files.status = 'accepted'

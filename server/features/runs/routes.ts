@@ -1,23 +1,33 @@
 import type { Router } from 'express';
+import { getDepressionMap } from '#contract/depression-map.ts';
 import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
-import { getStationPlace } from '#contract/runs.ts';
+import { getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
+import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
+import { depressionMap } from './depression-map.ts';
+import { estimatePlace } from './estimate-place.ts';
 import { type ExportParts, exportRunHours } from './export-run-hours.ts';
+import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
-import { presentMapStation } from './present-map.ts';
+import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
-import { type RescoreThreads, rescore } from './rescore.ts';
+import { programmePlaces } from './programme-places.ts';
+import { type RescoreThreads, rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
+import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
+import { surfaceOf } from './surface.ts';
+import { makeSurfaceGrounds, type SurfaceThreads } from './surface-ground.ts';
 
 /** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
 const CACHED_BYTES = 512 * 1024 * 1024;
@@ -26,29 +36,57 @@ const MOST_PREVIEWS = 16;
 
 /** What runs need of the other parts, handed in where the server is wired. */
 export interface RunsParts {
-  readonly threads: RescoreThreads;
+  readonly threads: RescoreThreads & SurfaceThreads;
+  /** Approximate heights and coasts. */
+  readonly relief: Relief;
   readonly yearThread: ExportParts['yearThread'];
   /** The brief in a request's body, or every fault of it at its path. */
   readonly readDraft: (draft: unknown) => Brief;
 }
 
-export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, readDraft }: RunsParts): void {
+export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearThread, readDraft }: RunsParts): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
+  const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
     const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
-    const { briefVersionId } = brief;
-    const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION });
-    const stations = byStation(years).map((group) => judgeStation(brief.body, group));
+    const { stations, sites, pending } = await programmePlaces(db, { teamId, programmeId, brief });
     return {
       programme: { id: programmeId, name: brief.programmeName },
       invented: brief.invented,
       brief: presentBriefBasis(brief),
       stations: stations.map(presentMapStation),
-      pending: stations.reduce((sum, { pending }) => sum + pending, 0),
+      sites: sites.map(presentMapSite),
+      pending,
     };
+  });
+
+  mount(router, deps, getSurface, async ({ params: { teamId, programmeId }, query }, { signal }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
+    const stations = await scoredStations(db, { teamId, brief });
+    return surfaceOf(grounds, { stations, anchors: brief.body.score, held: query.held, signal });
+  });
+
+  mount(router, deps, judgeSurface, async ({ params: { teamId, programmeId }, body: { body, held } }, { signal }) => {
+    const brief = readDraft(body);
+    await briefOfProgramme(db, { teamId, programmeId });
+    return inTurn(async () => {
+      const stations = await scoredUnder({ db, threads, cache }, { teamId, programmeId, brief, signal });
+      return surfaceOf(grounds, { stations, anchors: brief.score, held, signal });
+    });
+  });
+
+  mount(router, deps, getEstimate, async ({ params: { teamId, programmeId }, query }) => {
+    const { brief: briefId, ...position } = query;
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId });
+    const stations = await scoredStations(db, { teamId, brief });
+    return estimatePlace(relief, { brief, stations, position });
+  });
+
+  mount(router, deps, getDepressionMap, async ({ params: { teamId }, query }) => {
+    return depressionMap(db, { teamId, ...query });
   });
 
   mount(router, deps, getStationPlace, async ({ params: { teamId, programmeId, stationId }, query }) => {
@@ -57,13 +95,21 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
     const years = await listStationYears(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION, stationId });
     const [group] = byStation(years);
     if (group === undefined) throw new AppError('not_found', 'There is no such station on the map of this team.');
-    return presentPlace(judgeStation(brief.body, group), { brief: presentBriefBasis(brief), invented: brief.invented });
+    const { invented } = brief;
+    return presentPlace(judgeStation(brief.body, group), { brief: presentBriefBasis(brief), invented, site: null });
+  });
+
+  mount(router, deps, getSitePlace, async ({ params, query }) => {
+    const brief = await briefOfProgramme(db, { ...params, briefId: query.brief });
+    const { judged, ...site } = await judgeSitePlace(db, { ...params, brief });
+    return presentPlace(judged, { brief: presentBriefBasis(brief), invented: brief.invented, site });
   });
 
   mount(router, deps, rescoreEndpoint, async ({ params: { teamId, programmeId }, query, body }, { signal }) => {
     const brief = readDraft(body.body);
     await briefOfProgramme(db, { teamId, programmeId });
-    const asked = { teamId, brief, stationIds: body.stationIds ?? null, withHashes: query.hashes === 'yes', signal };
+    const { stationIds = null, siteIds = [] } = body;
+    const asked = { teamId, programmeId, brief, stationIds, siteIds, withHashes: query.hashes === 'yes', signal };
     return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 

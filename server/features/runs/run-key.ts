@@ -4,18 +4,21 @@ import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
 import type { RunResult } from '#engine/run/run-result.ts';
 
 /**
- * SHA-256, hexadecimal, of everything that a run depends on. The height is the station's own; a height adjusted to a site
- * counts in steps of 10 m.
+ * SHA-256, hexadecimal, of everything that a run depends on. The height is the station's own, or a site's in steps of 10 m with the
+ * height that the weather was moved from.
  */
 export function runKey(parts: {
   contentHash: string;
   heightM: number;
+  /** null: the weather is as it was measured. */
+  adjustedFromM: number | null;
   clock: ResolvedClock;
   briefHash: string;
   methodVersion: string;
 }): string {
-  const { contentHash, heightM, clock, briefHash, methodVersion } = parts;
-  const written = [contentHash, String(heightM), canonicalJson(clock), briefHash, methodVersion].join('|');
+  const { contentHash, heightM, adjustedFromM, clock, briefHash, methodVersion } = parts;
+  const height = adjustedFromM === null ? String(heightM) : `${adjustedFromM} to ${heightM}`;
+  const written = [contentHash, height, canonicalJson(clock), briefHash, methodVersion].join('|');
   return createHash('sha256').update(written).digest('hex');
 }
 

@@ -8,6 +8,7 @@ export interface NewRun {
   readonly briefVersionId: string;
   readonly methodVersion: string;
   readonly heightM: number;
+  readonly adjustedFromM: number | null;
   readonly clock: ResolvedClock;
   readonly keyHash: string;
   readonly figures: RunFigures;
@@ -30,9 +31,9 @@ export async function hasRun(
 /** @returns the id, or null when the same run is there already: a run is stored once and never changed */
 export async function insertRun(transaction: Knex.Transaction, run: NewRun): Promise<string | null> {
   const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
-    `insert into runs (team_id, weather_year_id, brief_version_id, method_version, height_m, clock, key_hash, result,
-       hour_classes, result_hash)
-     values (:teamId, :weatherYearId, :briefVersionId, :methodVersion, :heightM, cast(:clock as jsonb), :keyHash,
+    `insert into runs (team_id, weather_year_id, brief_version_id, method_version, height_m, adjusted_from_m, clock,
+       key_hash, result, hour_classes, result_hash)
+     values (:teamId, :weatherYearId, :briefVersionId, :methodVersion, :heightM, :adjustedFromM, cast(:clock as jsonb), :keyHash,
        cast(:figures as jsonb), :hourClasses, :resultHash)
      on conflict (weather_year_id, brief_version_id, key_hash) do nothing
      returning id`,
@@ -42,6 +43,7 @@ export async function insertRun(transaction: Knex.Transaction, run: NewRun): Pro
       briefVersionId: run.briefVersionId,
       methodVersion: run.methodVersion,
       heightM: run.heightM,
+      adjustedFromM: run.adjustedFromM,
       clock: JSON.stringify(run.clock),
       keyHash: run.keyHash,
       figures: JSON.stringify(run.figures),

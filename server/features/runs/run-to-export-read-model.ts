@@ -17,6 +17,7 @@ export interface RunToExport {
   readonly zone: string;
   readonly methodVersion: string;
   readonly heightM: number;
+  readonly adjustedFromM: number | null;
   readonly clock: ResolvedClock;
   readonly hourClassCodes: Buffer;
   readonly brief: Brief;
@@ -37,7 +38,7 @@ export async function findRunToExport(db: Knex, key: { teamId: string; runId: st
        weather_files.name as "fileName",
        coalesce(parent_files.licence, weather_files.licence) as licence,
        coalesce(parent_files.attribution, weather_files.attribution) as attribution, stations.name as "stationName", stations.zone,
-       runs.method_version as "methodVersion", runs.height_m as "heightM", runs.clock,
+       runs.method_version as "methodVersion", runs.height_m as "heightM", runs.adjusted_from_m as "adjustedFromM", runs.clock,
        runs.hour_classes as "hourClassCodes", brief_versions.body as brief, briefs.name as "briefName",
        brief_versions.version as "briefVersion",
        case when derived_years.weather_year_id is not null then

@@ -9,6 +9,7 @@ export interface RunToRepeat {
   readonly weatherYearId: string;
   readonly methodVersion: string;
   readonly heightM: number;
+  readonly adjustedFromM: number | null;
   readonly clock: ResolvedClock;
   readonly keyHash: string;
   readonly figures: RunFigures;
@@ -24,7 +25,7 @@ export interface RunToRepeat {
 export async function findRunToRepeat(db: Knex, runId: string): Promise<RunToRepeat | null> {
   const { rows } = await db.raw<{ rows: RunToRepeat[] }>(
     `select runs.team_id as "teamId", runs.weather_year_id as "weatherYearId", runs.method_version as "methodVersion",
-       runs.height_m as "heightM", runs.clock, runs.key_hash as "keyHash", runs.result as figures,
+       runs.height_m as "heightM", runs.adjusted_from_m as "adjustedFromM", runs.clock, runs.key_hash as "keyHash", runs.result as figures,
        runs.hour_classes as "hourClassCodes", runs.result_hash as "resultHash",
        weather_years.content_hash as "contentHash", weather_years.read_version as "readVersion",
        brief_versions.hash as "briefHash", brief_versions.body as brief

@@ -53,14 +53,25 @@ export interface RunOfYear {
  */
 export async function listStationYears(
   db: Knex,
-  asked: { teamId: string; briefVersionId: string; methodVersion: string; stationId?: string },
+  asked: {
+    teamId: string;
+    briefVersionId: string;
+    methodVersion: string;
+    stationId?: string;
+    /** Height of a site that the weather is moved to; left out: the station's own. */
+    heightM?: number;
+  },
 ): Promise<readonly StationYear[]> {
+  const atHeight =
+    asked.heightM === undefined
+      ? 'and runs.height_m = stations.elevation_m and runs.adjusted_from_m is null'
+      : 'and runs.height_m = :heightM and runs.adjusted_from_m = stations.elevation_m';
   const oneStation = asked.stationId === undefined ? '' : 'and stations.id = :stationId';
   const { rows } = await db.raw<{ rows: StationYear[] }>(
     `select stations.id as "stationId", stations.name as "stationName", stations.latitude, stations.longitude,
        stations.elevation_m as "elevationM", stations.zone,
        weather_years.id as "weatherYearId", weather_files.id as "weatherFileId", weather_years.kind, weather_years.year,
-       weather_years.slots as hours, (weather_years.facts ->> 'measuredHours')::integer as "measuredHours",
+       weather_years.slots as hours, weather_years.measured_hours as "measuredHours",
        exists (
          select 1 from findings
          where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'
@@ -82,7 +93,7 @@ export async function listStationYears(
          runs.result - array['demandByMonthHour', 'metByMonthHour', 'supplyCurve', 'aloneHours']) as run
        from runs
        where runs.weather_year_id = weather_years.id and runs.brief_version_id = :briefVersionId
-         and runs.method_version = :methodVersion
+         and runs.method_version = :methodVersion ${atHeight}
        order by runs.made_at desc, runs.id
        limit 1
      ) as newest on true

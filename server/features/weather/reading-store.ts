@@ -108,8 +108,6 @@ export async function clearReading(
   await transaction.raw(
     `with years as (
        select id from weather_years where team_id = :teamId and weather_file_id = :fileId
-     ), depressions as (
-       delete from depression_hours where weather_year_id in (select id from years)
      ), designs as (
        delete from design_values where weather_year_id in (select id from years)
      )

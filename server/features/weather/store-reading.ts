@@ -10,7 +10,7 @@ import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
 import { insertFindings, insertPart, setReadingResult } from './reading-store.ts';
 import { lockWeatherFile } from './weather-file-store.ts';
-import { insertWeatherYear, insertYearCounts } from './weather-year-store.ts';
+import { insertDesignValues, insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
   | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
@@ -81,5 +81,5 @@ async function storeYear(
     readVersion: READ_VERSION,
     contentHash: contentHash(reduced.year),
   });
-  await insertYearCounts(transaction, { teamId, weatherYearId, reduced });
+  await insertDesignValues(transaction, { teamId, weatherYearId, design: reduced.design });
 }

@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { DesignValues } from '#engine/reduction/design-values.ts';
 import { bytesOf16, packedBytes } from '#engine/reduction/packed-columns.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
 import { PACKED_LAYOUT } from '#engine/reduction/weather-year.ts';
@@ -22,9 +23,9 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
   const bytes = packedBytes(packed);
   const { rows } = await transaction.raw<{ rows: [{ id: string }] }>(
     `insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
-       humidity_ratio, pressure, flags, histogram, humidity_from, below_zero, facts, read_version, content_hash)
+       humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version, content_hash)
      values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
-       :flags, :histogram, :humidityFrom, :belowZero, cast(:facts as jsonb), :readVersion, :contentHash)
+       :flags, :histogram, cast(:depressionHours as smallint[]), :humidityFrom, :belowZero, cast(:facts as jsonb), :readVersion, :contentHash)
      returning id`,
     {
       teamId: year.teamId,
@@ -39,6 +40,7 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
       pressure: Buffer.from(bytes.pressure),
       flags: Buffer.from(bytes.flags),
       histogram: Buffer.from(bytesOf16(reduced.histogram)),
+      depressionHours: `{${reduced.depressionHours.join(',')}}`,
       humidityFrom: reading.humidityFrom,
       belowZero: reading.belowZero,
       facts: JSON.stringify({ ...reduced.facts, measuredHours: year.measuredHours }),
@@ -49,34 +51,23 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
   return rows[0].id;
 }
 
-/** Depression hours and design values of a year, in one statement. */
-export async function insertYearCounts(
+/** Design values of a year, in one statement. */
+export async function insertDesignValues(
   transaction: Knex.Transaction,
-  year: { teamId: string; weatherYearId: string; reduced: Pick<ReducedYear, 'depressionHours' | 'design'> },
+  year: { teamId: string; weatherYearId: string; design: DesignValues },
 ): Promise<void> {
-  const { teamId, weatherYearId } = year;
-  const { depressionHours: bins, design } = year.reduced;
+  const { teamId, weatherYearId, design } = year;
   const rows = [
     ...design.dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
     ...design.wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
     ...design.dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
   ];
   await transaction.raw(
-    `with bins as (
-       insert into depression_hours (team_id, weather_year_id, month, bin_k, hours)
-       select ?, ?, bin.month, bin.bin_k, bin.hours
-       from unnest(?::smallint[], ?::smallint[], ?::integer[]) as bin (month, bin_k, hours)
-     )
-     insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
+    `insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
      select ?, ?, design.quantity, design.percent, design.value_c, design.coincident_c
      from unnest(?::text[], ?::double precision[], ?::double precision[], ?::double precision[])
        as design (quantity, percent, value_c, coincident_c)`,
     [
-      teamId,
-      weatherYearId,
-      bins.map(({ month }) => month),
-      bins.map(({ binK }) => binK),
-      bins.map(({ hours }) => hours),
       teamId,
       weatherYearId,
       rows.map(({ quantity }) => quantity),

@@ -60,6 +60,23 @@ const names = [
   ...['Cane Coast', 'Twin Kopjes', 'Gannet Point', 'Ashveld', 'Stillwater Drift', 'Harrow Nek', 'Bokpoort Siding'],
 ];
 
+function yearFigures(index: number) {
+  const judged = index < 13;
+  const met = 2200 - index * 90;
+  const classes = [5600, 0, 500, 0, 160, 900, met - 900, 0, 0, 0, 1500 - met / 2, 1000 - met / 2];
+  return {
+    words: judged ? (index < 2 ? 'most' : 'some') : null,
+    yearsMeeting: index < 3 ? 1 : 0,
+    yearsCounted: judged ? 1 : 0,
+    range: null,
+    ledger: judged ? { classes, demand: 2660, met } : null,
+    litresPerKwh: judged ? 1.2 + index / 10 : null,
+    savedPct: judged ? 62 - index * 3 : null,
+    worstSpellHours: judged ? 14 + index * 6 : null,
+    severityKh: judged ? 120 + index * 80 : null,
+  };
+}
+
 export function fixtureStations(): MapStation[] {
   return names.map((name, index) => ({
     id: fixtureId(100 + index),
@@ -72,6 +89,7 @@ export function fixtureStations(): MapStation[] {
       index === 13 ? 'excluded: weather for 62 % of the hours in schedule' : index === 14 ? 'not judged yet' : null,
     grade: index === 12 ? 'D' : 'C',
     verdict: index > 12 ? null : index < 3 ? 'meets the brief' : 'does not',
+    ...yearFigures(index),
   }));
 }
 
@@ -87,7 +105,7 @@ const brief = {
 
 export function fixtureMap(): ProgrammeMap {
   const [programme = { id: fixtureId(2), name: 'School halls' }] = fixtureTeam.programmes;
-  return { programme, invented: true, brief, stations: fixtureStations(), pending: 1 };
+  return { programme, invented: true, brief, stations: fixtureStations(), sites: [], pending: 1 };
 }
 
 export function fixturePlace(station: MapStation): Place {
@@ -95,6 +113,7 @@ export function fixturePlace(station: MapStation): Place {
   const part = (component: string, label: string, unit: string) => ({ component, label, unit });
   const score = station.score;
   return {
+    site: null,
     station: { ...station, zone: 'Africa/Johannesburg' },
     invented: true,
     brief,

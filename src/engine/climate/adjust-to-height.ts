@@ -20,11 +20,11 @@ export function heightInSteps(elevationM: number): number {
  * @param input.toElevationM both heights given by a file or a person; `heightInSteps` where a run is keyed by it
  * @throws RangeError on a height that is no number
  */
-export function adjustToHeight(input: {
-  year: WeatherYear;
+export function adjustToHeight<Year extends Pick<WeatherYear, 'packed'>>(input: {
+  year: Year;
   fromElevationM: number;
   toElevationM: number;
-}): WeatherYear {
+}): Year {
   const { year, fromElevationM, toElevationM } = input;
   if (!Number.isFinite(fromElevationM + toElevationM)) {
     throw new RangeError(`heights to adjust between are not known: ${fromElevationM} m, ${toElevationM} m`);

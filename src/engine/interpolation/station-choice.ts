@@ -6,6 +6,9 @@ export interface StationToChoose extends Position {
   readonly elevationM: number;
 }
 
+/** A place that looks for its station. */
+export type SiteToServe = Position & { readonly elevationM: number | null };
+
 export interface StationChoice {
   readonly id: string;
   readonly distanceKm: number;
@@ -15,8 +18,8 @@ export interface StationChoice {
   readonly figure: number;
 }
 
-const KM_PER_FIGURE = 100;
-const M_PER_FIGURE = 300;
+export const KM_PER_FIGURE = 100;
+export const M_PER_FIGURE = 300;
 
 /**
  * Stations by what speaks against them, the default first; of equals, the lesser id, so that the order of a query chooses
@@ -24,15 +27,22 @@ const M_PER_FIGURE = 300;
  * @param input.stations those with a usable year
  */
 export function rankStations(input: {
-  site: Position & { readonly elevationM: number | null };
+  site: SiteToServe;
   stations: readonly StationToChoose[];
 }): readonly StationChoice[] {
   const { site, stations } = input;
-  const choices = stations.map((station) => {
-    const distanceKm = greatCircleKm(site, station);
-    const heightDifferenceM = site.elevationM === null ? null : station.elevationM - site.elevationM;
-    const figure = distanceKm / KM_PER_FIGURE + Math.abs(heightDifferenceM ?? 0) / M_PER_FIGURE;
-    return { id: station.id, distanceKm, heightDifferenceM, figure };
-  });
-  return choices.sort((one, other) => one.figure - other.figure || (one.id < other.id ? -1 : 1));
+  return stations.map((station) => choiceOf(site, station)).sort((one, other) => (isBefore(one, other) ? -1 : 1));
+}
+
+/** How one station stands to a site. */
+export function choiceOf(site: SiteToServe, station: StationToChoose): StationChoice {
+  const distanceKm = greatCircleKm(site, station);
+  const heightDifferenceM = site.elevationM === null ? null : station.elevationM - site.elevationM;
+  const figure = distanceKm / KM_PER_FIGURE + Math.abs(heightDifferenceM ?? 0) / M_PER_FIGURE;
+  return { id: station.id, distanceKm, heightDifferenceM, figure };
+}
+
+/** The order of the ranking: the least figure first; of equals, the lesser id. */
+export function isBefore(one: StationChoice, other: StationChoice): boolean {
+  return one.figure < other.figure || (one.figure === other.figure && one.id < other.id);
 }

@@ -9,13 +9,6 @@ export const DEPRESSION_BINS = 64;
 /** Depressions for which "hours of at least so many K" are given, 1 to 25 K. */
 const HIGHEST_STEP_K = 25;
 
-export interface DepressionBin {
-  readonly month: number;
-  /** Lower edge of the bin, K: it holds depressions from binK to under binK + 1. */
-  readonly binK: number;
-  readonly hours: number;
-}
-
 /**
  * Hours by month, hour of day and 1 K bin of depression: value at ((month - 1) x 24 + hour - 1) x 64 + bin, with month 1 to
  * 12 and hour 1 to 24.
@@ -34,19 +27,20 @@ export function depressionHistogram(depression: Int32Array): Uint16Array {
   return histogram;
 }
 
-/** Month x bin rows of a histogram, those with hours only, in order of month and bin. */
-export function depressionBins(histogram: Uint16Array): readonly DepressionBin[] {
-  const rows: DepressionBin[] = [];
-  for (let month = 1; month <= MONTHS; month++) {
-    for (let binK = 0; binK < DEPRESSION_BINS; binK++) {
-      let hours = 0;
-      for (let hour = 0; hour < HOURS_PER_DAY; hour++) {
-        hours += histogram[((month - 1) * HOURS_PER_DAY + hour) * DEPRESSION_BINS + binK] ?? 0;
-      }
-      if (hours > 0) rows.push({ month, binK, hours });
+/**
+ * The hours of a histogram by month and bin alone, 768 counts: value at (month - 1) x 64 + bin. This is what the database keeps of
+ * each year for lists and filters; a change of the layout or of `DEPRESSION_BINS` needs a migration.
+ */
+export function depressionHoursByMonth(histogram: Uint16Array): Uint16Array {
+  const byMonth = new Uint16Array(MONTHS * DEPRESSION_BINS);
+  for (let cell = 0; cell < MONTHS * HOURS_PER_DAY; cell++) {
+    const from = cell * DEPRESSION_BINS;
+    const into = ((cell / HOURS_PER_DAY) | 0) * DEPRESSION_BINS;
+    for (let bin = 0; bin < DEPRESSION_BINS; bin++) {
+      byMonth[into + bin] = (byMonth[into + bin] ?? 0) + (histogram[from + bin] ?? 0);
     }
   }
-  return rows;
+  return byMonth;
 }
 
 export interface HoursAtLeast {

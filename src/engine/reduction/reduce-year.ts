@@ -2,13 +2,7 @@ import { hundredths } from '../conventions.ts';
 import type { BelowZeroPhase } from '../psychrometrics/moist-air.ts';
 import { wetBulbColumn } from '../psychrometrics/wet-bulb.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
-import {
-  type DepressionBin,
-  depressionBins,
-  depressionHistogram,
-  type HoursAtLeast,
-  hoursAtLeast,
-} from './depression-hours.ts';
+import { depressionHistogram, depressionHoursByMonth, type HoursAtLeast, hoursAtLeast } from './depression-hours.ts';
 import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
 import { depressionColumn, dewPointColumn, reachedHundredths } from './derived-columns.ts';
 import { type DesignValues, designValues } from './design-values.ts';
@@ -53,8 +47,8 @@ export interface ReducedYear {
   readonly year: WeatherYear;
   /** Hours by month x hour of day x 1 K bin; the layout is stated at `depressionHistogram`. */
   readonly histogram: Uint16Array;
-  /** Month x bin rows with hours. */
-  readonly depressionHours: readonly DepressionBin[];
+  /** Hours by month x 1 K bin; the layout is stated at `depressionHoursByMonth`. */
+  readonly depressionHours: Uint16Array;
   readonly design: DesignValues;
   readonly facts: YearFacts;
 }
@@ -87,7 +81,7 @@ export function reducePackedYear(year: WeatherYear, belowZero: BelowZeroPhase): 
   return {
     year,
     histogram,
-    depressionHours: depressionBins(histogram),
+    depressionHours: depressionHoursByMonth(histogram),
     design,
     facts: {
       ...countHours(packed),

@@ -5,7 +5,7 @@ import type { HardLimitCount } from './hard-limits.ts';
 import { hardLimitName, hardLimitWords } from './verdict.ts';
 
 /** Gates that a weather year cannot answer; a person does, per site (method 7.1). */
-const ASKED_OF_EVERY_PLACE = ['water available', 'exclusions of use', 'hygiene'];
+export const ASKED_OF_EVERY_PLACE = ['water available', 'exclusions of use', 'hygiene'];
 
 /** Every gate of a run with its answer and a note. */
 export function gatesOf(input: {
@@ -13,12 +13,13 @@ export function gatesOf(input: {
   coverage: Coverage;
   hardLimits: readonly HardLimitCount[];
 }): GateAnswer[] {
-  const asked = [...ASKED_OF_EVERY_PLACE, ...input.brief.gates];
-  return [
-    coverageGate(input.coverage),
-    ...input.hardLimits.map(hardLimitGate),
-    ...asked.map((gate) => ({ gate, answer: 'not known' as const, note: 'to be answered for the site' })),
-  ];
+  return [coverageGate(input.coverage), ...input.hardLimits.map(hardLimitGate), ...askedGates(input.brief)];
+}
+
+/** The gates that a person answers for each place, not answered. */
+export function askedGates(brief: Pick<Brief, 'gates'>): readonly GateAnswer[] {
+  const asked = [...ASKED_OF_EVERY_PLACE, ...brief.gates];
+  return asked.map((gate) => ({ gate, answer: 'not known', note: 'to be answered for the site' }));
 }
 
 /** "excluded: ..." with the note of every gate that fails; null when none does. */

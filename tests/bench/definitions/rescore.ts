@@ -98,6 +98,7 @@ function stationsOf(years: readonly WeatherYear[]): readonly StationToRescore[] 
     stationId: String(index),
     zone: 'UTC',
     heightM: 100,
+    adjustedFromM: null,
     position: { latitude: 0, longitude: 0 },
     years: [{ ...facts, weatherYearId: String(index), contentHash: '', columns: sharedOf(packed) }],
   }));

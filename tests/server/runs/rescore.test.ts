@@ -10,7 +10,9 @@ import type { WebThreads } from '../../../server/jobs/web-threads.ts';
 import type { RescoreAnswer } from '../../../src/contract/rescore.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
 import { METHOD_VERSION } from '../../../src/engine/conventions.ts';
+import { hourClasses } from '../../../src/engine/hour-classes/hour-class.ts';
 import { judgeYear } from '../../../src/engine/run/judge-year.ts';
+import type { Ledger } from '../../../src/engine/run/run-result.ts';
 import { demoEpw } from '../../support/demo-epw.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { cloneStationYears } from '../../support/station-years.ts';
@@ -51,6 +53,13 @@ afterAll(async () => {
   await road.close();
 });
 
+/** A ledger as lists and the map tell it. */
+function classHours(ledger: Ledger | undefined) {
+  if (ledger === undefined) return null;
+  const { classes, demand, met } = ledger;
+  return { classes: hourClasses.map((hourClass) => classes[hourClass]), demand, met };
+}
+
 const pathOf = ({ teamId, programmeId }: { teamId: string; programmeId: string }) =>
   `/api/teams/${teamId}/programmes/${programmeId}/rescore`;
 
@@ -73,11 +82,12 @@ describe('re-scoring by a draft brief', () => {
     const previewed = answer.judged.map(({ weatherYearId, resultHash }) => ({ weatherYearId, resultHash }));
     expect(previewed.toSorted((one, other) => (one.weatherYearId < other.weatherYearId ? -1 : 1))).toEqual(runs.rows);
     const { stations } = await desk.map();
+    const onMap = stations.map(({ id, name, latitude, longitude, elevationM, ...figures }) => ({ id, figures }));
     expect(
-      answer.stations.map(({ stationId, score, scoreNote, verdict }) => ({ stationId, score, scoreNote, verdict })),
-    ).toEqual(stations.map(({ id, score, scoreNote, verdict }) => ({ stationId: id, score, scoreNote, verdict })));
+      answer.stations.map(({ stationId: id, shownWeatherYearId, restsOn, ...figures }) => ({ id, figures })),
+    ).toEqual(onMap);
     for (const { stationId, ledger } of answer.stations) {
-      expect(ledger).toEqual((await desk.place(stationId)).shown?.ledger);
+      expect(ledger).toEqual(classHours((await desk.place(stationId)).shown?.ledger));
     }
     expect(answer.methodVersion).toBe(METHOD_VERSION);
   });
@@ -95,7 +105,7 @@ describe('re-scoring by a draft brief', () => {
       const position = { latitude, longitude };
       const { ledger, score } = judgeYear({ year, brief: drierBrief, zone, heightM: elevationM, position });
       expect(answer.stations.find((each) => each.stationId === stationId)).toMatchObject({
-        ledger,
+        ledger: classHours(ledger),
         score,
         restsOn: [weatherYearId],
       });
@@ -155,7 +165,14 @@ describe('many station-years', () => {
     };
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });
     const parts = { db: road.db, cache, threads: counting };
-    const asked = { teamId: team.teamId, brief: drierBrief, stationIds: null, withHashes: false };
+    const asked = {
+      teamId: team.teamId,
+      programmeId: team.programmeId,
+      siteIds: [],
+      brief: drierBrief,
+      stationIds: null,
+      withHashes: false,
+    };
     await expect(rescore(parts, { ...asked, signal: gone.signal })).rejects.toThrow('the client has gone');
     expect(taken).toBe(3);
     const answer = await rescore({ ...parts, threads }, { ...asked, signal: goesOn });
@@ -171,7 +188,15 @@ describe('many station-years', () => {
   it('are judged in batches when they do not fit into memory together, with the same answer', async () => {
     const years = await listYearsToRescore(road.db, team.teamId);
     const small = years.slice(0, 7).reduce((sum, year) => sum + bytesOfYear(year), 0);
-    const asked = { teamId: team.teamId, brief: drierBrief, stationIds: null, withHashes: true, signal: goesOn };
+    const asked = {
+      teamId: team.teamId,
+      programmeId: team.programmeId,
+      siteIds: [],
+      brief: drierBrief,
+      stationIds: null,
+      withHashes: true,
+      signal: goesOn,
+    };
     const tight = makeColumnCache(road.db, { maxBytes: small });
     const inBatches = await rescore({ db: road.db, threads, cache: tight }, asked);
     expect(tight.heldBytes()).toBeLessThanOrEqual(small);
@@ -189,7 +214,7 @@ describe('the columns in memory', () => {
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });
     const years = (await listYearsToRescore(road.db, team.teamId)).slice(-2);
     const accepted = new Map(years.map(({ weatherYearId, contentHash }) => [weatherYearId, contentHash]));
-    const asked = { teamId: team.teamId, years, accepted, signal: goesOn };
+    const asked = { teamId: team.teamId, programmeId: team.programmeId, siteIds: [], years, accepted, signal: goesOn };
     const first = await cache.take(asked);
     expect(first.size).toBe(2);
     for (const [weatherYearId, columns] of first) {

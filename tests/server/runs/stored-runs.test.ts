@@ -1,4 +1,5 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { migrationSource } from '../../../migrations/source.ts';
 import { officeBrief } from '../../../server/features/briefs/presets.ts';
 import { judgeStoredYear } from '../../../server/features/runs/judge-year.ts';
 import { queueMissingRuns } from '../../../server/features/runs/queue-runs.ts';
@@ -7,6 +8,7 @@ import { contentHash } from '../../../server/features/weather/content-hash.ts';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
 import { canonicalJson } from '../../../src/engine/brief/canonical-json.ts';
 import { METHOD_VERSION } from '../../../src/engine/conventions.ts';
+import { DEPRESSION_BINS } from '../../../src/engine/reduction/depression-hours.ts';
 import { unpackYear } from '../../../src/engine/reduction/packed-columns.ts';
 import { reduceYear } from '../../../src/engine/reduction/reduce-year.ts';
 import { judgeYear } from '../../../src/engine/run/judge-year.ts';
@@ -72,6 +74,13 @@ function readOfFile() {
   return reduceYear(reading);
 }
 
+async function depressionHoursStored(): Promise<readonly number[]> {
+  const { rows } = await road.db.raw<{ rows: [{ hours: readonly number[] }] }>(
+    'select depression_hours as hours from weather_years',
+  );
+  return rows[0].hours;
+}
+
 describe('a weather year in the store', () => {
   it('unpacks to the very columns that were packed, with the same hash', async () => {
     const run = await onlyRun();
@@ -102,14 +111,44 @@ describe('a weather year in the store', () => {
 
   it('has depression hours by month that add up to the hours with a wet bulb', async () => {
     const reduced = readOfFile();
-    const { rows } = await road.db.raw<{ rows: { month: number; binK: number; hours: number }[] }>(
-      'select month, bin_k as "binK", hours from depression_hours order by month, bin_k',
-    );
-    expect(rows).toEqual(reduced.depressionHours);
-    const total = rows.reduce((sum, { hours }) => sum + hours, 0);
+    const stored = await depressionHoursStored();
+    expect(stored).toEqual([...reduced.depressionHours]);
+    const total = stored.reduce((sum, hours) => sum + hours, 0);
     expect(total).toBe(reduced.facts.hours - reduced.facts.missing);
     const design = await road.db.raw<{ rows: { quantity: string }[] }>('select quantity from design_values');
     expect(design.rows).toHaveLength(15);
+  });
+
+  it('has them summed by the database over a threshold and months, as the engine does', async () => {
+    const { rows } = await road.db.raw<{ rows: [{ hours: number }] }>(
+      `select sum(counted.hours)::integer as hours
+       from weather_years
+       cross join unnest(depression_hours) with ordinality as counted (hours, place)
+       where (counted.place - 1) % :bins >= 8 and (counted.place - 1) / :bins + 1 between 6 and 9`,
+      { bins: DEPRESSION_BINS },
+    );
+    const { histogram } = readOfFile();
+    const expected = histogram.reduce((sum, hours, place) => {
+      const month = Math.floor(place / (24 * DEPRESSION_BINS)) + 1;
+      return month >= 6 && month <= 9 && place % DEPRESSION_BINS >= 8 ? sum + hours : sum;
+    }, 0);
+    expect(expected).toBeGreaterThan(0);
+    expect(rows[0].hours).toBe(expected);
+  });
+
+  it('keeps every one of them when their migration is taken back and made again', async () => {
+    const before = await depressionHoursStored();
+    const { ownerDb } = road.database;
+    const migration = { migrationSource, name: '0005-depression-array' };
+    await ownerDb.migrate.down(migration);
+    const { rows } = await ownerDb.raw<{ rows: { month: number; binK: number; hours: number }[] }>(
+      'select month, bin_k as "binK", hours from depression_hours',
+    );
+    await ownerDb.migrate.up(migration);
+    const among = new Array<number>(before.length).fill(0);
+    for (const { month, binK, hours } of rows) among[(month - 1) * DEPRESSION_BINS + binK] = hours;
+    expect(among).toEqual(before);
+    expect(await depressionHoursStored()).toEqual(before);
   });
 });
 
