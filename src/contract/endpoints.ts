@@ -58,6 +58,7 @@ export const endpoints = {
   findPlaces: places.findPlaces,
   getMap: map.getMap,
   getSurface: surface.getSurface,
+  judgeSurface: surface.judgeSurface,
   getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
   getSitePlace: runs.getSitePlace,

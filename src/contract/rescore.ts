@@ -2,7 +2,6 @@ import * as z from 'zod/mini';
 import { endpoint, json } from './endpoint.ts';
 import { PlaceFigures } from './place-figures.ts';
 import { ProgrammeParams } from './runs.ts';
-import { HeldCells, SurfaceAnswer } from './surface.ts';
 
 /** A station under a draft brief; its hours are those of the year that stands for it. */
 export const RescoredStation = z.extend(PlaceFigures, {
@@ -34,8 +33,6 @@ export const RescoreAnswer = z.object({
       resultHash: z.nullable(z.string()),
     }),
   ),
-  /** Between the stations under the draft; null unless asked for, with every station. */
-  surface: z.nullable(SurfaceAnswer),
   /** Of the answer, and of it the fetching of weather that was not in memory, ms. */
   totalMs: z.number(),
   loadMs: z.number(),
@@ -59,8 +56,6 @@ export const rescore = endpoint({
       stationIds: z.optional(z.array(z.uuid()).check(z.maxLength(MOST_NAMED))),
       /** Sites of the programme, those in view; left out: none. */
       siteIds: z.optional(z.array(z.uuid()).check(z.maxLength(MOST_NAMED))),
-      /** Asks for the surface between the stations too; with every station alone. */
-      surface: z.optional(z.strictObject({ held: HeldCells })),
     }),
   ),
   response: json(RescoreAnswer),

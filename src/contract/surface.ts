@@ -1,5 +1,5 @@
 import * as z from 'zod/mini';
-import { endpoint, json, none, ordinary } from './endpoint.ts';
+import { empty, endpoint, json, none, ordinary } from './endpoint.ts';
 import { BriefBasis, Grade, GradeColumn, ProgrammeParams, ScorePart } from './runs.ts';
 
 /** Of the score, points, over all stations, each estimated from the others alone. */
@@ -57,7 +57,7 @@ export const SurfaceAnswer = z.object({ off: z.nullable(z.string()), surface: z.
 export type SurfaceAnswer = z.infer<typeof SurfaceAnswer>;
 
 /** `cellsKey` of the cells that the asker holds. */
-export const HeldCells = z.optional(z.string().check(z.maxLength(40)));
+const HeldCells = z.optional(z.string().check(z.maxLength(40)));
 
 export const getSurface = endpoint({
   method: 'GET',
@@ -70,6 +70,25 @@ export const getSurface = endpoint({
   errors: [],
   allow: 'runs.view',
   limits: ordinary,
+});
+
+export const judgeSurface = endpoint({
+  method: 'POST',
+  path: '/api/teams/:teamId/programmes/:programmeId/surface',
+  summary: 'The score between stations under a draft brief: every station is judged anew. Nothing is stored.',
+  params: ProgrammeParams,
+  query: empty,
+  body: json(
+    z.strictObject({
+      /** The draft; the engine reads it whole and answers every fault at once, each at its path. */
+      body: z.record(z.string(), z.unknown()),
+      held: HeldCells,
+    }),
+  ),
+  response: json(SurfaceAnswer),
+  errors: [],
+  allow: 'runs.view',
+  limits: { bodyBytes: 192 * 1024, perMinute: 600, seconds: 60 },
 });
 
 export const EstimateStation = z.object({

@@ -88,6 +88,8 @@ export const DRAFT_PARAM = 'draft';
 export const FIND_PARAM = 'find';
 export const LIST_PARAM = 'list';
 export const VIEW_PARAM = 'view';
+/** Off: the score between stations is not drawn. */
+export const SURFACE_PARAM = 'surface';
 
 /** Where to go after signing in: only a path of this application, never another host. */
 export function safeReturn(from: string | null): string {

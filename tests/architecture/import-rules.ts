@@ -73,7 +73,7 @@ export const importRules: readonly ImportRule[] = [
   },
   {
     from: 'server/db/**',
-    may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'pg-copy-streams', 'node:*'],
+    may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'pg-copy-streams', 'node:**'],
   },
   {
     from: 'server/jobs/**',

@@ -86,6 +86,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   findPlaces: readersToo,
   getMap: readersToo,
   getSurface: readersToo,
+  judgeSurface: readersToo,
   getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
@@ -216,7 +217,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
   if (name === 'previewBrief') return JSON.stringify({ stationId: ids.stationId, body: officeBrief() });
-  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
+  if (name === 'rescore' || name === 'judgeSurface') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });

@@ -38,7 +38,7 @@ export async function findGazetteerPlaces(db: Knex, text: string): Promise<Found
      from gazetteer
      where ${like} and country ilike :country
      order by (plain = :plain) desc, (plain like :beginning) desc,
-       similarity(plain, :plain) + ln(population + 1) / 30 desc, name, latitude
+       similarity(plain, :plain) + ln(population + 1) / 15 desc, name, latitude
      limit :most`,
     { plain, beginning, part: `%${beginning}`, country: `${likeText(country)}%`, most: MOST_PLACES },
   );

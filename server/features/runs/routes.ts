@@ -4,7 +4,7 @@ import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
 import { getSitePlace, getStationPlace } from '#contract/runs.ts';
-import { getEstimate, getSurface } from '#contract/surface.ts';
+import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Relief } from '#engine/weather-files/relief.ts';
@@ -22,7 +22,7 @@ import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
-import { type RescoreThreads, rescore } from './rescore.ts';
+import { type RescoreThreads, rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
@@ -69,6 +69,15 @@ export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearTh
     return surfaceOf(grounds, { stations, anchors: brief.body.score, held: query.held, signal });
   });
 
+  mount(router, deps, judgeSurface, async ({ params: { teamId, programmeId }, body: { body, held } }, { signal }) => {
+    const brief = readDraft(body);
+    await briefOfProgramme(db, { teamId, programmeId });
+    return inTurn(async () => {
+      const stations = await scoredUnder({ db, threads, cache }, { teamId, programmeId, brief, signal });
+      return surfaceOf(grounds, { stations, anchors: brief.score, held, signal });
+    });
+  });
+
   mount(router, deps, getEstimate, async ({ params: { teamId, programmeId }, query }) => {
     const { brief: briefId, ...position } = query;
     const brief = await briefOfProgramme(db, { teamId, programmeId, briefId });
@@ -101,8 +110,7 @@ export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearTh
     await briefOfProgramme(db, { teamId, programmeId });
     const { stationIds = null, siteIds = [] } = body;
     const asked = { teamId, programmeId, brief, stationIds, siteIds, withHashes: query.hashes === 'yes', signal };
-    const surface = body.surface === undefined ? {} : { surface: { grounds, held: body.surface.held } };
-    return inTurn(() => rescore({ db, threads, cache }, { ...asked, ...surface }));
+    return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {

@@ -19,6 +19,7 @@ describe('the address of the map', () => {
       find: 'red pan',
       list: 'station',
       camera: { zoom: 4.25, latitude: -25.125, longitude: 21.5 },
+      surface: false,
     };
     expect(read(written(state))).toEqual(state);
   });

@@ -55,7 +55,10 @@ describe('the style of the sheet', () => {
 
   it('asks our own origin for everything', () => {
     const addresses = JSON.stringify(style).match(/https?:\/\/[^"]*/g);
-    expect(addresses).toEqual(['https://here.example/tiles/{z}/{x}/{y}.mvt']);
+    expect(addresses).toEqual([
+      'https://here.example/tiles/{z}/{x}/{y}.mvt',
+      'https://here.example/relief/{z}/{x}/{y}.png',
+    ]);
     expect(style).not.toHaveProperty('glyphs');
     expect(style).not.toHaveProperty('sprite');
   });

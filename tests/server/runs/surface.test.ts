@@ -1,6 +1,5 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { officeBrief } from '../../../server/features/briefs/presets.ts';
-import type { RescoreAnswer } from '../../../src/contract/rescore.ts';
 import type { PlaceEstimate, Surface, SurfaceAnswer } from '../../../src/contract/surface.ts';
 import { estimateBetween } from '../../../src/engine/interpolation/estimate-between.ts';
 import { greatCircleKm } from '../../../src/engine/interpolation/great-circle-km.ts';
@@ -132,15 +131,13 @@ describe('the surface between stations', () => {
 
   it('follows a draft, and under the saved brief it is the saved surface', async () => {
     const saved = await surfaceThere();
-    const draft = async (body: object): Promise<RescoreAnswer> =>
-      (await viewer.agent.post(under('rescore')).send(body).expect(200)).body;
-    const held = { held: saved.cellsKey };
-    const same = await draft({ body: officeBrief(), surface: held });
-    expect(same.surface?.surface).toEqual({ ...saved, cells: null });
-    const drier = await draft({ body: { ...officeBrief(), caps: { roomRhPct: 45 } }, surface: held });
-    expect(drier.surface?.surface?.cellsKey).toBe(saved.cellsKey);
-    expect(drier.surface?.surface?.scores).not.toBe(saved.scores);
-    expect((await draft({ body: officeBrief() })).surface).toBeNull();
+    const asked = (body: object) => viewer.agent.post(under('surface')).send({ body, held: saved.cellsKey });
+    const draft = async (body: object): Promise<SurfaceAnswer> => (await asked(body).expect(200)).body;
+    expect((await draft(officeBrief())).surface).toEqual({ ...saved, cells: null });
+    const drier = await draft({ ...officeBrief(), caps: { roomRhPct: 45 } });
+    expect(drier.surface?.cellsKey).toBe(saved.cellsKey);
+    expect(drier.surface?.scores).not.toBe(saved.scores);
+    await asked({}).expect(400);
   });
 });
 

@@ -9,6 +9,7 @@ import {
   PLACE_PARAM,
   POINT_PARAM,
   SITE_PARAM,
+  SURFACE_PARAM,
   VIEW_PARAM,
 } from '../../../lib/paths.ts';
 import type { PlaceKind, PlaceRef, Position } from '../../../map/sheet-place.ts';
@@ -27,6 +28,8 @@ export interface MapAddress {
   /** Which ranking is shown; null: the usual one. */
   readonly list: PlaceKind | null;
   readonly camera: SheetCamera | null;
+  /** Whether the score between stations is drawn. */
+  readonly surface: boolean;
 }
 
 export function readMapAddress(search: URLSearchParams): MapAddress {
@@ -42,6 +45,7 @@ export function readMapAddress(search: URLSearchParams): MapAddress {
     find: search.get(FIND_PARAM) ?? '',
     list: list === 'site' || list === 'station' ? list : null,
     camera: readCamera(search.get(VIEW_PARAM)),
+    surface: search.get(SURFACE_PARAM) !== OFF,
   };
 }
 
@@ -63,9 +67,12 @@ export function changedSearch(search: URLSearchParams, changes: Partial<MapAddre
   if (changes.find !== undefined) put(FIND_PARAM, changes.find);
   if (changes.list !== undefined) put(LIST_PARAM, changes.list);
   if (changes.camera !== undefined) put(VIEW_PARAM, changes.camera && printCamera(changes.camera));
+  if (changes.surface !== undefined) put(SURFACE_PARAM, changes.surface ? null : OFF);
   return next;
 }
 
+/** As it usually is, it is not named. */
+const OFF = 'off';
 const DEGREE_DECIMALS = 3;
 
 function printPoint({ latitude, longitude }: Position): string {

@@ -15,6 +15,7 @@ import { SheetMap } from '../../../map/sheet-map.tsx';
 import type { PlaceRef, SheetPlace } from '../../../map/sheet-place.ts';
 import type { SheetBox } from '../../../map/use-tell-view.ts';
 import { BriefMargin } from './brief-margin.tsx';
+import { FindPlace } from './find-place.tsx';
 import { printCamera } from './map-address.ts';
 import { MoveNote } from './move-note.tsx';
 import { NarrowSheet } from './narrow-sheet.tsx';
@@ -25,6 +26,7 @@ import { Ranking } from './ranking.tsx';
 import { useLiveDraft } from './use-live-draft.ts';
 import { useMapAddress } from './use-map-address.ts';
 import { useMoveSite } from './use-move-site.ts';
+import { useSurfaceOnMap } from './use-surface-on-map.tsx';
 import { useTry } from './use-try.ts';
 import { WideSheet } from './wide-sheet.tsx';
 
@@ -73,6 +75,7 @@ export function MapSheet({ ids, map }: MapSheetProps) {
   const place = findPlace(places, chosen);
   const savedPlace = findPlace(saved, chosen);
 
+  const surface = useSurfaceOnMap({ ids, map, draft: asked, address, changeAddress });
   const toldCamera = useRef<string | null>(null);
   const sheet = (
     <SheetMap
@@ -105,9 +108,12 @@ export function MapSheet({ ids, map }: MapSheetProps) {
             noneWords={layer.kind === 'score' ? 'No score' : 'No figure'}
             {...(layer.kind === 'grade' ? { classNames: inked.scale.limits.slice(0, -1).map(gradeOf) } : {})}
           />
+          {surface.legend}
         </>
       }
-    />
+    >
+      {surface.layer}
+    </SheetMap>
   );
   const props: SheetProps = {
     map: (
@@ -117,17 +123,20 @@ export function MapSheet({ ids, map }: MapSheetProps) {
       </>
     ),
     brief: (
-      <BriefMargin
-        ids={ids}
-        map={map}
-        live={live}
-        scores={scores}
-        onBrief={(briefId) => changeAddress({ briefId, draft: null })}
-        onSaved={(version) => {
-          setBridge({ version, figures: scores.figures });
-          changeAddress({ draft: null });
-        }}
-      />
+      <>
+        <FindPlace ids={ids} onFind={changeAddress} />
+        <BriefMargin
+          ids={ids}
+          map={map}
+          live={live}
+          scores={scores}
+          onBrief={(briefId) => changeAddress({ briefId, draft: null })}
+          onSaved={(version) => {
+            setBridge({ version, figures: scores.figures });
+            changeAddress({ draft: null });
+          }}
+        />
+      </>
     ),
     ranking: (
       <Ranking
@@ -141,7 +150,9 @@ export function MapSheet({ ids, map }: MapSheetProps) {
       />
     ),
     point:
-      address.point === null ? null : <PointNote point={address.point} stations={places.stations} onChoose={choose} />,
+      address.point === null ? null : (
+        <PointNote ids={ids} brief={map.brief} point={address.point} isDraft={asked !== null} onChoose={choose} />
+      ),
     chosen:
       place === undefined || savedPlace === undefined
         ? null
