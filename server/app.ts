@@ -23,6 +23,7 @@ import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
 import { findRoles } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
+import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
@@ -93,7 +94,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   sitesRoutes(router, deps, { relief: shippedRelief(), queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
-  runsRoutes(router, deps, { threads, yearThread, readDraft });
+  runsRoutes(router, deps, { threads, yearThread, readDraft, originalToRead: (key) => originalToRead(deps, key) });
   methodRoutes(router, deps);
   teamsRoutes(router, deps);
   return router;
