@@ -1,11 +1,15 @@
 import { makeThreadPool } from './thread-pool.ts';
 import type {
+  JudgedRange,
   PreviewedYear,
   PreviewTask,
+  RangeTask,
   RescoredStation,
   RescoreTask,
   SurfaceGrid,
   SurfaceTask,
+  TurnedVerdict,
+  TurningTask,
   WebAnswer,
   WebTask,
 } from './web-task.ts';
@@ -18,6 +22,8 @@ export interface WebThreads {
   rescore(task: RescoreTask, signal: AbortSignal): Promise<readonly RescoredStation[]>;
   preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
   surface(task: SurfaceTask, signal?: AbortSignal): Promise<SurfaceGrid>;
+  range(task: RangeTask, signal: AbortSignal): Promise<JudgedRange | null>;
+  turning(task: TurningTask, signal: AbortSignal): Promise<TurnedVerdict>;
   close(): Promise<void>;
 }
 
@@ -40,6 +46,16 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
     async surface(task, signal) {
       const answered = await pool.run({ kind: 'surface', task }, signal);
       if (answered.kind !== 'surface') throw wrongAnswer();
+      return answered.answer;
+    },
+    async range(task, signal) {
+      const answered = await pool.run({ kind: 'range', task }, signal);
+      if (answered.kind !== 'range') throw wrongAnswer();
+      return answered.answer;
+    },
+    async turning(task, signal) {
+      const answered = await pool.run({ kind: 'turning', task }, signal);
+      if (answered.kind !== 'turning') throw wrongAnswer();
       return answered.answer;
     },
     close: () => pool.close(),

@@ -1,5 +1,7 @@
 import type { Router } from 'express';
 import { getDepressionMap } from '#contract/depression-map.ts';
+import { listRunHours as listHoursEndpoint } from '#contract/hour-list.ts';
+import { findWhatWouldPass, judgeRange } from '#contract/place-doubts.ts';
 import { getMap } from '#contract/programme-map.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
@@ -11,18 +13,25 @@ import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
+import type { WebThreads } from '../../jobs/web-threads.ts';
+import type { OriginalToRead } from '../../jobs/year-task.ts';
+import type { YearThread } from '../../jobs/year-thread.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
 import { estimatePlace } from './estimate-place.ts';
-import { type ExportParts, exportRunHours } from './export-run-hours.ts';
+import { exportRunHours } from './export-run-hours.ts';
 import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
+import { makeLinesOfYears } from './lines-of-years.ts';
+import { listRunHours } from './list-run-hours.ts';
+import { judgePlaceRange, whatWouldPass } from './place-doubts.ts';
+import { placeToJudge } from './place-to-judge.ts';
 import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
-import { type RescoreThreads, rescore, scoredUnder } from './rescore.ts';
+import { rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
@@ -36,18 +45,25 @@ const MOST_PREVIEWS = 16;
 
 /** What runs need of the other parts, handed in where the server is wired. */
 export interface RunsParts {
-  readonly threads: RescoreThreads & SurfaceThreads;
+  readonly threads: Pick<WebThreads, 'threads' | 'rescore' | 'range' | 'turning'> & SurfaceThreads;
   /** Approximate heights and coasts. */
   readonly relief: Relief;
-  readonly yearThread: ExportParts['yearThread'];
+  readonly yearThread: Pick<YearThread, 'writeHours' | 'listHours' | 'readLines'>;
+  /** An original with what it was read by; null where no lines hold its hours. */
+  readonly originalToRead: (key: { teamId: string; fileId: string }) => Promise<OriginalToRead | null>;
   /** The brief in a request's body, or every fault of it at its path. */
   readonly readDraft: (draft: unknown) => Brief;
 }
 
-export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearThread, readDraft }: RunsParts): void {
+export function runsRoutes(
+  router: Router,
+  deps: Deps,
+  { threads, relief, yearThread, readDraft, originalToRead }: RunsParts,
+): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const grounds = makeSurfaceGrounds(threads);
+  const lines = makeLinesOfYears({ yearThread, originalToRead });
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
@@ -113,10 +129,34 @@ export function runsRoutes(router: Router, deps: Deps, { threads, relief, yearTh
     return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 
+  const briefAsked = async (
+    key: { teamId: string; programmeId: string },
+    of: { brief?: string | undefined; draft?: unknown },
+  ) => {
+    const saved = await briefOfProgramme(db, { ...key, briefId: of.brief });
+    return of.draft === undefined ? saved.body : readDraft(of.draft);
+  };
+
+  mount(router, deps, judgeRange, async ({ params, query, body }, { signal }) => {
+    const brief = await briefAsked(params, { ...query, draft: body.body });
+    const place = await placeToJudge({ db, cache }, { ...params, signal });
+    return inTurn(() => judgePlaceRange({ threads, brief, place, signal }));
+  });
+
+  mount(router, deps, findWhatWouldPass, async ({ params, query, body }, { signal }) => {
+    const brief = await briefAsked(params, { ...query, draft: body.body });
+    const place = await placeToJudge({ db, cache }, { ...params, signal });
+    return inTurn(() => whatWouldPass({ threads, brief, place, signal }));
+  });
+
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
     const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
     return await exportRunHours({ db, yearThread }, { ...params, role, signal });
   });
+
+  mount(router, deps, listHoursEndpoint, async ({ params, query }, { signal }) =>
+    listRunHours({ db, yearThread, lines }, { ...params, ...query, signal }),
+  );
 
   mount(router, deps, getRunHours, async ({ params }) => {
     const body = await readRunHours(db, params);

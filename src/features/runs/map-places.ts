@@ -13,6 +13,9 @@ export interface MapPlace extends PlaceFigures {
   readonly letters?: string;
   /** The station whose weather the figures rest on: the station itself, or the one that stands for a site. */
   readonly stationId: string | null;
+  /** Of a site: gates that fail, each with its reason, and how many nobody has answered. */
+  readonly gatesFailed?: readonly string[];
+  readonly gatesNotKnown?: number;
 }
 
 export interface MapPlaces {

@@ -32,8 +32,8 @@ function RangeTable({ range: { score, year, years, pairs, largest } }: { range: 
   return (
     <>
       <p className="mb-1 max-w-[70ch] text-fine text-soft">
-        {capital(placeYearWords(year))} judged again with one thing at a time a little lower and a little higher; as it
-        stands it scores {score ?? 'nothing'}. The pairs are not added up.
+        {capital(placeYearWords(year))} judged again with one thing at a time a little lower and a little higher;
+        unchanged it scores {score ?? 'nothing'}. The pairs are not added up.
       </p>
       <table className="ruled max-w-[44rem]">
         <caption className="sr-only">Range of the score by doubt</caption>
@@ -61,7 +61,7 @@ function RangeTable({ range: { score, year, years, pairs, largest } }: { range: 
           {pairs.map(({ doubt, minus, plus }) => (
             <tr key={doubt} className={largest === doubt ? 'font-semibold' : ''}>
               <th scope="row">{doubtWords[doubt]}</th>
-              <td className="text-soft">{minus.label}</td>
+              <td className="text-soft">{minus.label.replace('-', '−')}</td>
               <td className="figure">{minus.score ?? '–'}</td>
               <td className="text-soft">{plus.label}</td>
               <td className="figure">{plus.score ?? '–'}</td>

@@ -54,7 +54,7 @@ export function DraftNote({ ids, live, isBehind, error, onSaved }: DraftNoteProp
             disabled={body === null}
             onClick={() => saveAll.mutate()}
           >
-            Save as version {record.newest + 1}
+            {`Save as version ${record.newest + 1}`}
           </Button>
         ) : null}
         <Button look="quiet" onClick={() => live.change({}, true)}>

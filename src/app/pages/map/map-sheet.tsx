@@ -161,7 +161,7 @@ export function MapSheet({ ids, map }: MapSheetProps) {
             figures: place,
             saved: savedPlace,
             draft: asked,
-            actions: <PlaceActions ids={ids} place={place} />,
+            actions: <PlaceActions ids={ids} place={place} mayMove={moving.move !== null} />,
             onTry,
           },
     onLeave: () => choose(null),

@@ -134,8 +134,7 @@ export function PlaceFoot(chosen: ChosenPlace) {
     <div aria-busy={isPlaceholderData} className={isPlaceholderData ? 'opacity-50' : ''}>
       {draft === null ? null : (
         <p className="border-b border-line bg-paper py-1.5 text-fine text-soft lg:px-5">
-          What follows is of version {place.brief.version}, as saved. What would make it pass and the range of the score
-          are asked under the draft.
+          {`What follows is of version ${place.brief.version}. What would make it pass and the range are asked under the draft.`}
         </p>
       )}
       {place.shown === null ? (
