@@ -204,7 +204,7 @@ test('the score between stations is drawn with its error, and any position has a
   await mapIsDrawn(page);
   const sheet = page.locator('.maplibregl-canvas');
   const withSurface = await sheet.screenshot();
-  await page.getByLabel('Between stations').uncheck();
+  await page.getByLabel('Between stations').click();
   await expect.poll(() => asked('surface')).toBe('off');
   await mapIsDrawn(page);
   expect((await sheet.screenshot()).equals(withSurface)).toBe(false);
