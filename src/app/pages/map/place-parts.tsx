@@ -1,15 +1,12 @@
 import { useQuery } from '@tanstack/react-query';
-import { type ReactNode, useState } from 'react';
+import { lazy, type ReactNode, Suspense, useState } from 'react';
 import type { TurningChange } from '../../../contract/place-doubts.ts';
 import type { Place } from '../../../contract/runs.ts';
 import { hourClasses } from '../../../engine/hour-classes/hour-class.ts';
-import { DerivedYears } from '../../../features/runs/derived-years.tsx';
 import { Fold } from '../../../features/runs/fold.tsx';
 import type { HourChoice } from '../../../features/runs/hour-choice.ts';
-import { HoursDialog } from '../../../features/runs/hours-dialog.tsx';
 import { LedgerPanel, type ShownLedger } from '../../../features/runs/ledger-panel.tsx';
 import type { MapPlace } from '../../../features/runs/map-places.ts';
-import { MonthHourTable } from '../../../features/runs/month-hour-table.tsx';
 import { draftAgainstSaved, PlaceHeading, ScoreBlock } from '../../../features/runs/place-heading.tsx';
 import {
   CautionsNote,
@@ -18,17 +15,30 @@ import {
   VerdictNote,
   WaterElectricityNote,
 } from '../../../features/runs/place-notes.tsx';
-import { RangeNote } from '../../../features/runs/range-note.tsx';
 import { type PlaceAsked, type ProgrammeIds, placeQuery, runHoursQuery } from '../../../features/runs/run-queries.ts';
 import { mayExportRuns, nameOfPlace, rangeWords } from '../../../features/runs/run-words.ts';
 import { ScoreArithmetic } from '../../../features/runs/score-arithmetic.tsx';
-import { TurningNote } from '../../../features/runs/turning-note.tsx';
 import { YearStrip } from '../../../features/runs/year-strip.tsx';
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';
 import { useTeam } from '../../../lib/team-scope.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
+
+// What is folded, or listed on demand, is fetched when it is opened.
+const DerivedYears = lazy(async () => ({
+  default: (await import('../../../features/runs/derived-years.tsx')).DerivedYears,
+}));
+const HoursDialog = lazy(async () => ({
+  default: (await import('../../../features/runs/hours-dialog.tsx')).HoursDialog,
+}));
+const MonthHourTable = lazy(async () => ({
+  default: (await import('../../../features/runs/month-hour-table.tsx')).MonthHourTable,
+}));
+const RangeNote = lazy(async () => ({ default: (await import('../../../features/runs/range-note.tsx')).RangeNote }));
+const TurningNote = lazy(async () => ({
+  default: (await import('../../../features/runs/turning-note.tsx')).TurningNote,
+}));
 
 /** The chosen place as the map has it, and what it is asked under. */
 export interface ChosenPlace {
@@ -110,13 +120,15 @@ interface HourListProps {
 function HourList({ place, ids: { teamId }, choice, onClose }: HourListProps) {
   if (choice === null || place.shown === null) return null;
   return (
-    <HoursDialog
-      run={{ teamId, runId: place.shown.runId }}
-      days={place.shown.ledger.hours / 24}
-      choice={choice}
-      placeName={nameOfPlace(place)}
-      onClose={onClose}
-    />
+    <Suspense>
+      <HoursDialog
+        run={{ teamId, runId: place.shown.runId }}
+        days={place.shown.ledger.hours / 24}
+        choice={choice}
+        placeName={nameOfPlace(place)}
+        onClose={onClose}
+      />
+    </Suspense>
   );
 }
 
@@ -129,7 +141,11 @@ export function PlaceFoot(chosen: ChosenPlace) {
   if (!place || (place.shown === null && place.derived.length === 0)) return null;
   const { teamId } = ids;
   const mayExport = mayExportRuns(role);
-  const derived = <DerivedYears derived={place.derived} teamId={teamId} mayExport={mayExport} />;
+  const derived = (
+    <Suspense fallback={<Loading what="other climates" />}>
+      <DerivedYears derived={place.derived} teamId={teamId} mayExport={mayExport} />
+    </Suspense>
+  );
   return (
     <div aria-busy={isPlaceholderData} className={isPlaceholderData ? 'opacity-50' : ''}>
       {draft === null ? null : (
