@@ -1,5 +1,7 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
+import type { PlaceToRank } from '#engine/ranking/place-to-rank.ts';
+import type { Ranking, RankPlacesInput } from '#engine/ranking/rank-places.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
 import type { RunResult, Verdict } from '#engine/run/run-result.ts';
 import type { ScoreRange } from '#engine/score/score-range.ts';
@@ -87,6 +89,19 @@ export interface JudgedRange {
   readonly pairs: ScoreRange['pairs'];
 }
 
+/** Some places of a ranking with their doubts. */
+export interface DoubtsTask {
+  readonly brief: Brief;
+  readonly places: readonly {
+    readonly id: string;
+    readonly station: StationToRescore;
+    readonly humidityFrom: ReadonlyMap<string, 'dew point' | 'relative humidity'>;
+  }[];
+}
+
+/** The ranking itself: the draws over all places at once. */
+export type RankTask = RankPlacesInput;
+
 /** Whether a lever of a brief turns the verdict of one place; without a lever what the place comes to as it is. */
 export interface TurningTask {
   readonly brief: Brief;
@@ -108,10 +123,14 @@ export type WebTask =
   | { readonly kind: 'rescore'; readonly task: RescoreTask }
   | { readonly kind: 'range'; readonly task: RangeTask }
   | { readonly kind: 'turning'; readonly task: TurningTask }
+  | { readonly kind: 'doubts'; readonly task: DoubtsTask }
+  | { readonly kind: 'rank'; readonly task: RankTask }
   | { readonly kind: 'preview'; readonly task: PreviewTask };
 export type WebAnswer =
   | { readonly kind: 'rescore'; readonly answer: readonly RescoredStation[] }
   /** null without a usable year. */
   | { readonly kind: 'range'; readonly answer: JudgedRange | null }
   | { readonly kind: 'turning'; readonly answer: TurnedVerdict }
+  | { readonly kind: 'doubts'; readonly answer: readonly PlaceToRank[] }
+  | { readonly kind: 'rank'; readonly answer: Ranking }
   | { readonly kind: 'preview'; readonly answer: PreviewedYear };

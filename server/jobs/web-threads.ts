@@ -1,9 +1,13 @@
+import type { PlaceToRank } from '#engine/ranking/place-to-rank.ts';
+import type { Ranking } from '#engine/ranking/rank-places.ts';
 import { makeThreadPool } from './thread-pool.ts';
 import type {
+  DoubtsTask,
   JudgedRange,
   PreviewedYear,
   PreviewTask,
   RangeTask,
+  RankTask,
   RescoredStation,
   RescoreTask,
   TurnedVerdict,
@@ -21,6 +25,8 @@ export interface WebThreads {
   preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
   range(task: RangeTask, signal: AbortSignal): Promise<JudgedRange | null>;
   turning(task: TurningTask, signal: AbortSignal): Promise<TurnedVerdict>;
+  doubts(task: DoubtsTask, signal: AbortSignal): Promise<readonly PlaceToRank[]>;
+  rank(task: RankTask, signal: AbortSignal): Promise<Ranking>;
   close(): Promise<void>;
 }
 
@@ -48,6 +54,16 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
     async turning(task, signal) {
       const answered = await pool.run({ kind: 'turning', task }, signal);
       if (answered.kind !== 'turning') throw wrongAnswer();
+      return answered.answer;
+    },
+    async doubts(task, signal) {
+      const answered = await pool.run({ kind: 'doubts', task }, signal);
+      if (answered.kind !== 'doubts') throw wrongAnswer();
+      return answered.answer;
+    },
+    async rank(task, signal) {
+      const answered = await pool.run({ kind: 'rank', task }, signal);
+      if (answered.kind !== 'rank') throw wrongAnswer();
       return answered.answer;
     },
     close: () => pool.close(),

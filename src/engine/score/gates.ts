@@ -5,7 +5,7 @@ import type { HardLimitCount } from './hard-limits.ts';
 import { hardLimitName, hardLimitWords } from './verdict.ts';
 
 /** Gates that a weather year cannot answer; a person does, per site (method 7.1). */
-const ASKED_OF_EVERY_PLACE = ['water available', 'exclusions of use', 'hygiene'];
+export const ASKED_OF_EVERY_PLACE = ['water available', 'exclusions of use', 'hygiene'];
 
 /** Every gate of a run with its answer and a note. */
 export function gatesOf(input: {
