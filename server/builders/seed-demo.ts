@@ -2,15 +2,20 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import path from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { METHOD_VERSION } from '#engine/conventions.ts';
+
 import { inTransaction } from '../db/in-transaction.ts';
 import { recordAuditEvent } from '../db/record-audit-event.ts';
 import type { Deps } from '../deps.ts';
 import { findProgrammeBrief } from '../features/briefs/brief-read-model.ts';
+import { queueSiteRuns } from '../features/runs/queue-site-runs.ts';
 import { listStationYears } from '../features/runs/station-years-read-model.ts';
+import { makeSite } from '../features/sites/make-site.ts';
 import { findWeatherFile, type WeatherFileState } from '../features/weather/weather-file-store.ts';
+import { shippedRelief } from '../tiles/relief.ts';
 import { buildTeam } from './build-team.ts';
 import { newDemoAccounts, writeDemoAccounts } from './demo-accounts.ts';
-import { DEMO_SEEDED, findStandingDemo, type StandingDemo } from './demo-read-model.ts';
+import { DEMO_SEEDED, findStandingDemo, lookAtDemoSites, type StandingDemo } from './demo-read-model.ts';
+import { demoSites } from './demo-sites.ts';
 import { acceptAs, type OwnFile, openLicenceAs, receiveFromDisk } from './weather-file-steps.ts';
 import { writtenDemoFiles } from './written-demo-files.ts';
 
@@ -32,8 +37,8 @@ export interface SeedDemo {
 }
 
 /**
- * Makes the demo: a team with invented places, one account for each role, a programme with its brief, and 26 invented weather
- * files that go the same road as any upload. A worker must be running. Done once; one that was interrupted goes on where it
+ * Makes the demo: a team with invented places, one account for each role, a programme with its brief, 26 invented weather
+ * files that go the same road as any upload, and a dozen invented sites. A worker must be running. Done once; one that was interrupted goes on where it
  * was, and a later start adds nothing.
  * @throws Error when a file ends otherwise than accepted, or nothing moves for two minutes
  */
@@ -45,6 +50,7 @@ export async function seedDemo(seed: SeedDemo): Promise<void> {
   try {
     seed.log('Demo: inventing the weather of a year at 26 stations');
     await ingest(seed, { demo, folder });
+    await enterSites(seed, demo);
   } finally {
     await rm(folder, { recursive: true, force: true });
   }
@@ -73,7 +79,7 @@ async function makeDemoTeam({ deps, demoAccountsPath }: SeedDemo): Promise<Stand
     }),
   );
   const { teamId, programmeId, personIds } = team;
-  return { teamId, programmeId, engineerId: personIds.engineer, seeded: false };
+  return { teamId, programmeId, engineerId: personIds.engineer, plannerId: personIds.planner, seeded: false };
 }
 
 /** Receives each file as it is written; meanwhile accepts those that have been read; ends when every run is there. */
@@ -103,6 +109,24 @@ async function ingest(seed: SeedDemo, { demo, folder }: { demo: StandingDemo; fo
     }
   } finally {
     await receiving.stop();
+  }
+}
+
+/** Enters the sites that are not there yet, as a planner would, and waits until their weather is judged. */
+async function enterSites({ deps: { db, now }, log, signal }: SeedDemo, demo: StandingDemo): Promise<void> {
+  const { teamId, programmeId, plannerId } = demo;
+  const { names } = await lookAtDemoSites(db, demo);
+  const relief = shippedRelief();
+  for (const site of demoSites.filter(({ name }) => !names.includes(name))) {
+    const act = { teamId, programmeId, personId: plannerId, requestId: null, at: now() };
+    await makeSite({ db, relief, queueSiteRuns }, { ...act, ...site });
+  }
+  log(`Demo: ${demoSites.length} sites entered`);
+  const until = performance.now() + PATIENCE_MS;
+  while ((await lookAtDemoSites(db, demo)).jobs > 0) {
+    signal?.throwIfAborted();
+    if (performance.now() > until) throw new Error('the demo’s sites were not judged within two minutes');
+    await sleep(LOOK_EVERY_MS);
   }
 }
 

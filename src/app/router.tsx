@@ -43,6 +43,22 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('../features/briefs/brief-page.tsx')).BriefPage }),
               },
               {
+                path: paths.sites.pattern,
+                lazy: async () => ({ Component: (await import('../features/sites/sites-page.tsx')).SitesPage }),
+              },
+              {
+                path: paths.newSite.pattern,
+                lazy: async () => ({ Component: (await import('../features/sites/new-site-page.tsx')).NewSitePage }),
+              },
+              {
+                path: paths.siteImport.pattern,
+                lazy: async () => ({ Component: (await import('../features/sites/import-page.tsx')).ImportPage }),
+              },
+              {
+                path: paths.site.pattern,
+                lazy: async () => ({ Component: (await import('../features/sites/site-page.tsx')).SitePage }),
+              },
+              {
                 path: paths.weather.pattern,
                 lazy: async () => ({
                   Component: (await import('../features/weather/weather-library-page.tsx')).WeatherLibraryPage,

@@ -10,16 +10,13 @@ export type ProgrammeLink = PageLink;
 
 /** The pages of a team in the order of the bar; those of a programme are of its first. */
 export function pageLinks({ teamId, role, programmes: [programme] }: Membership): readonly PageLink[] {
-  const ofProgramme =
-    programme === undefined
-      ? []
-      : [
-          { to: paths.map.to({ teamId, programmeId: programme.id }), label: 'Map' },
-          { to: paths.briefs.to({ teamId, programmeId: programme.id }), label: 'Briefs' },
-        ];
+  const of = (page: { to(key: { teamId: string; programmeId: string }): string }, label: string): PageLink[] =>
+    programme === undefined ? [] : [{ to: page.to({ teamId, programmeId: programme.id }), label }];
   return [
-    ...ofProgramme,
+    ...of(paths.map, 'Map'),
     { to: paths.weather.to(teamId), label: 'Weather' },
+    ...of(paths.sites, 'Sites'),
+    ...of(paths.briefs, 'Briefs'),
     ...(role === 'lead' ? [{ to: paths.tokens.to(teamId), label: 'Team' }] : []),
     { to: paths.method.to(teamId), label: 'Method' },
   ];

@@ -26,6 +26,28 @@ export const paths = {
     to: (ids: { teamId: string; programmeId: string; briefId: string }) =>
       `/teams/${ids.teamId}/programmes/${ids.programmeId}/briefs/${ids.briefId}`,
   },
+  sites: {
+    pattern: 'programmes/:programmeId/sites',
+    /** `filter` narrows the table, as to those that wait for a person. */
+    to: (ids: { teamId: string; programmeId: string }, filter?: string) =>
+      `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites${filter ? `?${new URLSearchParams({ filter })}` : ''}`,
+  },
+  newSite: {
+    pattern: 'programmes/:programmeId/sites/new',
+    to: (ids: { teamId: string; programmeId: string }) =>
+      `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites/new`,
+  },
+  siteImport: {
+    pattern: 'programmes/:programmeId/sites/import',
+    to: (ids: { teamId: string; programmeId: string }) =>
+      `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites/import`,
+  },
+  site: {
+    pattern: 'programmes/:programmeId/sites/:siteId',
+    /** `settling`: on the way from one flagged site to the next. */
+    to: (ids: { teamId: string; programmeId: string; siteId: string }, settling = false) =>
+      `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites/${ids.siteId}${settling ? '?settling=1' : ''}`,
+  },
   weather: {
     pattern: 'weather',
     /** `asked` narrows the library: to a batch, a station, a status. */

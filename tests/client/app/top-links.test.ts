@@ -17,8 +17,8 @@ describe('the pages of a team', () => {
     expect(offered).toEqual(['lead']);
   });
 
-  it('stand in one order, and without a programme neither map nor briefs are among them', () => {
-    expect(labels('lead')).toEqual(['Map', 'Briefs', 'Weather', 'Team', 'Method']);
+  it('stand in one order, and without a programme neither map, sites nor briefs are among them', () => {
+    expect(labels('lead')).toEqual(['Map', 'Weather', 'Sites', 'Briefs', 'Team', 'Method']);
     expect(pageLinks({ ...team, programmes: [], role: 'viewer' }).map(({ label }) => label)).toEqual([
       'Weather',
       'Method',

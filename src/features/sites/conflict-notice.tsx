@@ -1,0 +1,40 @@
+import { useMutation } from '@tanstack/react-query';
+import { Button } from '../../ui/button.tsx';
+import { Notice } from '../../ui/notice.tsx';
+import type { SiteDesk } from './use-site-desk.ts';
+
+/** Somebody else was quicker: what they did, and what can be done about what was typed here. */
+export function ConflictNotice({ desk, onSettled }: { desk: SiteDesk; onSettled: () => void }) {
+  const over = useMutation({ mutationFn: desk.saveOver, onSuccess: onSettled });
+  if (desk.conflict === null) return null;
+  const { error } = desk.conflict;
+  return (
+    <Notice
+      tone="attention"
+      live
+      title="Not saved: somebody changed this site meanwhile"
+      actions={
+        <>
+          <Button look="primary" busy={over.isPending} onClick={() => over.mutate()}>
+            Save mine on top
+          </Button>
+          <Button
+            onClick={() => {
+              desk.forgetConflict();
+              onSettled();
+            }}
+          >
+            Keep what is there now
+          </Button>
+        </>
+      }
+    >
+      <p>{error.message}</p>
+      <ul className="mt-1 list-disc pl-5">
+        {error.problems.map(({ message }) => (
+          <li key={message}>{message}</li>
+        ))}
+      </ul>
+    </Notice>
+  );
+}
