@@ -2,8 +2,12 @@
 import { previewYear } from './features/briefs/preview-year.ts';
 import { doubtPlaces, drawRanks, rangeOfPlace, turnVerdict } from './features/runs/doubt-place.ts';
 import { rescoreStations } from './features/runs/rescore-station.ts';
+import { makeSurfaceGrid } from './features/runs/surface-grid.ts';
 import { answerInThread } from './jobs/answer-in-thread.ts';
 import type { WebAnswer, WebTask } from './jobs/web-task.ts';
+import { shippedRelief } from './tiles/relief.ts';
+
+const relief = shippedRelief();
 
 answerInThread<WebTask, WebAnswer>((asked) => {
   switch (asked.kind) {
@@ -19,5 +23,7 @@ answerInThread<WebTask, WebAnswer>((asked) => {
       return { kind: 'rank', answer: drawRanks(asked.task) };
     case 'preview':
       return { kind: 'preview', answer: previewYear(asked.task) };
+    case 'surface':
+      return { kind: 'surface', answer: makeSurfaceGrid(asked.task, relief) };
   }
 });

@@ -1,10 +1,12 @@
 /** What the web's threads are asked and answer. */
 import type { Brief } from '#engine/brief/brief.ts';
+import type { Neighbours } from '#engine/interpolation/nearest-stations.ts';
 import type { PlaceToRank } from '#engine/ranking/place-to-rank.ts';
 import type { Ranking, RankPlacesInput } from '#engine/ranking/rank-places.ts';
 import type { WeatherYear, YearKind } from '#engine/reduction/weather-year.ts';
 import type { RunResult, Verdict } from '#engine/run/run-result.ts';
 import type { ScoreRange } from '#engine/score/score-range.ts';
+import type { RawComponents } from '#engine/score/weighted-score.ts';
 
 /** Some stations judged by one draft brief, at their own heights or at those of sites. */
 export interface RescoreTask {
@@ -53,6 +55,8 @@ export interface RescoredStation {
   readonly restsOn: readonly string[];
   /** Measured years with enough hours for the brief. */
   readonly usable: readonly string[];
+  /** The raw components that the score is formed of. */
+  readonly raw: RawComponents;
   /** By weather year; empty unless asked for. */
   readonly resultHashes: readonly { readonly weatherYearId: string; readonly resultHash: string }[];
 }
@@ -119,7 +123,37 @@ export interface TurnedVerdict {
   readonly turning: { readonly value: number | null } | null;
 }
 
+export interface SurfaceStation {
+  readonly latitude: number;
+  readonly longitude: number;
+  readonly elevationM: number;
+}
+
+/** Where a surface may be drawn between these stations, and what each of its cells rests on. */
+export interface SurfaceTask {
+  readonly stations: readonly SurfaceStation[];
+}
+
+export interface SurfaceGrid {
+  /** Between the middles of neighbouring cells, on average. */
+  readonly spacingKm: number;
+  /** Middles of the cells, degrees; longitudes run on past 180 where the stations lie about the date line. */
+  readonly latitudes: Float32Array;
+  readonly longitudes: Float32Array;
+  /** 2 full, 1 pale, 0 none: a rim around the others. */
+  readonly support: Uint8Array;
+  /** Every three cells that touch one another. */
+  readonly triangles: Uint32Array;
+  readonly elevationsM: Float32Array;
+  /** Station that a cell holds and shows, or -1. */
+  readonly held: Int32Array;
+  readonly neighbours: Neighbours;
+  /** The nearest others of every station. */
+  readonly others: Neighbours;
+}
+
 export type WebTask =
+  | { readonly kind: 'surface'; readonly task: SurfaceTask }
   | { readonly kind: 'rescore'; readonly task: RescoreTask }
   | { readonly kind: 'range'; readonly task: RangeTask }
   | { readonly kind: 'turning'; readonly task: TurningTask }
@@ -127,6 +161,7 @@ export type WebTask =
   | { readonly kind: 'rank'; readonly task: RankTask }
   | { readonly kind: 'preview'; readonly task: PreviewTask };
 export type WebAnswer =
+  | { readonly kind: 'surface'; readonly answer: SurfaceGrid }
   | { readonly kind: 'rescore'; readonly answer: readonly RescoredStation[] }
   /** null without a usable year. */
   | { readonly kind: 'range'; readonly answer: JudgedRange | null }

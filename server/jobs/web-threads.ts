@@ -10,6 +10,8 @@ import type {
   RankTask,
   RescoredStation,
   RescoreTask,
+  SurfaceGrid,
+  SurfaceTask,
   TurnedVerdict,
   TurningTask,
   WebAnswer,
@@ -27,6 +29,7 @@ export interface WebThreads {
   turning(task: TurningTask, signal: AbortSignal): Promise<TurnedVerdict>;
   doubts(task: DoubtsTask, signal: AbortSignal): Promise<readonly PlaceToRank[]>;
   rank(task: RankTask, signal: AbortSignal): Promise<Ranking>;
+  surface(task: SurfaceTask, signal?: AbortSignal): Promise<SurfaceGrid>;
   close(): Promise<void>;
 }
 
@@ -64,6 +67,11 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
     async rank(task, signal) {
       const answered = await pool.run({ kind: 'rank', task }, signal);
       if (answered.kind !== 'rank') throw wrongAnswer();
+      return answered.answer;
+    },
+    async surface(task, signal) {
+      const answered = await pool.run({ kind: 'surface', task }, signal);
+      if (answered.kind !== 'surface') throw wrongAnswer();
       return answered.answer;
     },
     close: () => pool.close(),

@@ -7,6 +7,7 @@ import type { Endpoint } from './endpoint.ts';
 import * as hourList from './hour-list.ts';
 import * as method from './method.ts';
 import * as doubts from './place-doubts.ts';
+import * as places from './places.ts';
 import * as map from './programme-map.ts';
 import * as ranking from './ranking.ts';
 import * as rescoring from './rescore.ts';
@@ -15,6 +16,7 @@ import * as runs from './runs.ts';
 import * as siteImports from './site-imports.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
+import * as surface from './surface.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -56,7 +58,11 @@ export const endpoints = {
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
+  findPlaces: places.findPlaces,
   getMap: map.getMap,
+  getSurface: surface.getSurface,
+  judgeSurface: surface.judgeSurface,
+  getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
   judgeRange: doubts.judgeRange,
   findWhatWouldPass: doubts.findWhatWouldPass,

@@ -74,11 +74,22 @@ export const paths = {
   gallery: { pattern: '/gallery' },
 } as const;
 
-/** The chosen place of the map page, in the query of its address. */
+/** The chosen station of the map page, in the query of its address. */
 export const PLACE_PARAM = 'place';
 
 /** The brief that the map is drawn under, in the query of its address; without it the one saved last. */
 export const BRIEF_PARAM = 'brief';
+
+/** The rest of the map's state in its address: a chosen site, a clicked point, what is drawn and how. */
+export const SITE_PARAM = 'site';
+export const POINT_PARAM = 'at';
+export const LAYER_PARAM = 'layer';
+export const DRAFT_PARAM = 'draft';
+export const FIND_PARAM = 'find';
+export const LIST_PARAM = 'list';
+export const VIEW_PARAM = 'view';
+/** Off: the score between stations is not drawn. */
+export const SURFACE_PARAM = 'surface';
 
 /** Where to go after signing in: only a path of this application, never another host. */
 export function safeReturn(from: string | null): string {

@@ -83,7 +83,11 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherArchive: uploadersOnly,
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
+  findPlaces: readersToo,
   getMap: readersToo,
+  getSurface: readersToo,
+  judgeSurface: readersToo,
+  getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getSitePlace: readersToo,
@@ -218,7 +222,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
   if (name === 'previewBrief') return JSON.stringify({ stationId: ids.stationId, body: officeBrief() });
-  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
+  if (name === 'rescore' || name === 'judgeSurface') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
@@ -234,6 +238,8 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
   if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
+  if (name === 'findPlaces') return '?text=Korrel';
+  if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
   if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }

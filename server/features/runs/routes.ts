@@ -7,6 +7,7 @@ import { rankPlaces as rankEndpoint } from '#contract/ranking.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
 import { getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
@@ -14,6 +15,7 @@ import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
+import { estimatePlace } from './estimate-place.ts';
 import { exportRunHours } from './export-run-hours.ts';
 import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
@@ -26,10 +28,13 @@ import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
 import { rankProgramme } from './rank-programme.ts';
-import { rescore } from './rescore.ts';
+import { rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
 import type { RunsParts } from './runs-parts.ts';
+import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
+import { surfaceOf } from './surface.ts';
+import { makeSurfaceGrounds } from './surface-ground.ts';
 
 /** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
 const CACHED_BYTES = 512 * 1024 * 1024;
@@ -39,11 +44,12 @@ const MOST_PREVIEWS = 16;
 export function runsRoutes(
   router: Router,
   deps: Deps,
-  { threads, yearThread, readDraft, originalToRead }: RunsParts,
+  { threads, relief, yearThread, readDraft, originalToRead }: RunsParts,
 ): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const lines = makeLinesOfYears({ yearThread, originalToRead });
+  const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
@@ -57,6 +63,28 @@ export function runsRoutes(
       sites: sites.map(presentMapSite),
       pending,
     };
+  });
+
+  mount(router, deps, getSurface, async ({ params: { teamId, programmeId }, query }, { signal }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
+    const stations = await scoredStations(db, { teamId, brief });
+    return surfaceOf(grounds, { stations, anchors: brief.body.score, held: query.held, signal });
+  });
+
+  mount(router, deps, judgeSurface, async ({ params: { teamId, programmeId }, body: { body, held } }, { signal }) => {
+    const brief = readDraft(body);
+    await briefOfProgramme(db, { teamId, programmeId });
+    return inTurn(async () => {
+      const stations = await scoredUnder({ db, threads, cache }, { teamId, programmeId, brief, signal });
+      return surfaceOf(grounds, { stations, anchors: brief.score, held, signal });
+    });
+  });
+
+  mount(router, deps, getEstimate, async ({ params: { teamId, programmeId }, query }) => {
+    const { brief: briefId, ...position } = query;
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId });
+    const stations = await scoredStations(db, { teamId, brief });
+    return estimatePlace(relief, { brief, stations, position });
   });
 
   mount(router, deps, getDepressionMap, async ({ params: { teamId }, query }) => {
