@@ -20,7 +20,7 @@ import { printCamera } from './map-address.ts';
 import { MoveNote } from './move-note.tsx';
 import { NarrowSheet } from './narrow-sheet.tsx';
 import { PlaceActions } from './place-actions.tsx';
-import type { ChosenPlace } from './place-parts.tsx';
+import type { ChosenPlace } from './place-margin.tsx';
 import { Ranking } from './ranking.tsx';
 import { useLiveDraft } from './use-live-draft.ts';
 import { useMapAddress } from './use-map-address.ts';
