@@ -99,10 +99,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   sitesRoutes(router, deps, { relief, queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, {
-    threads,
-    yearThread,
-    readDraft,
-    relief,
+    ...{ threads, yearThread, readDraft, relief },
     originalToRead: (key) => originalToRead(deps, key),
   });
   placesRoutes(router, deps);

@@ -9,6 +9,7 @@ import * as method from './method.ts';
 import * as doubts from './place-doubts.ts';
 import * as places from './places.ts';
 import * as map from './programme-map.ts';
+import * as ranking from './ranking.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
@@ -68,6 +69,7 @@ export const endpoints = {
   getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
+  rankPlaces: ranking.rankPlaces,
   listRunHours: hourList.listRunHours,
   exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,

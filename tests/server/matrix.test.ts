@@ -92,6 +92,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getStationPlace: readersToo,
   getSitePlace: readersToo,
   listRunHours: readersToo,
+  rankPlaces: readersToo,
   judgeRange: readersToo,
   findWhatWouldPass: readersToo,
   getRunHours: readersToo,
@@ -200,7 +201,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
   if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
-  if (name === 'judgeRange' || name === 'findWhatWouldPass') return '{}';
+  if (name === 'judgeRange' || name === 'findWhatWouldPass' || name === 'rankPlaces') return '{}';
   if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
   if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
   if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });

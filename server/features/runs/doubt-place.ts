@@ -1,12 +1,22 @@
 /** What is asked of one place beyond its score, judged in a thread of the web process. */
 import type { Brief } from '#engine/brief/brief.ts';
+import { type PlaceToRank, placeToRank } from '#engine/ranking/place-to-rank.ts';
+import { type Ranking, rankPlaces } from '#engine/ranking/rank-places.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import type { RunResult } from '#engine/run/run-result.ts';
 import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
 import { scoreRange } from '#engine/score/score-range.ts';
 import { nearestTurning, turningLevers } from '#engine/score/turning-levers.ts';
-import type { JudgedRange, RangeTask, StationToRescore, TurnedVerdict, TurningTask } from '../../jobs/web-task.ts';
+import type {
+  DoubtsTask,
+  JudgedRange,
+  RangeTask,
+  RankTask,
+  StationToRescore,
+  TurnedVerdict,
+  TurningTask,
+} from '../../jobs/web-task.ts';
 import { keptYear } from './kept-years.ts';
 
 interface JudgedYear {
@@ -38,6 +48,25 @@ export function rangeOfPlace({ brief, station, humidityFrom }: RangeTask): Judge
     range,
     pairs: doubted.pairs,
   };
+}
+
+/** What of each place goes into a ranking; places without a score stay out. */
+export function doubtPlaces({ brief, places }: DoubtsTask): readonly PlaceToRank[] {
+  return places.flatMap(({ id, station, humidityFrom }) => {
+    const figures = figuresOf(station, brief);
+    const { shown, score } = figures;
+    if (shown === null || score === null) return [];
+    const { zone, heightM, position } = station;
+    const range = scoreRange({
+      ...{ year: weatherOf(station, shown.weatherYearId), brief, zone, heightM, position },
+      humidityFrom: humidityFrom.get(shown.weatherYearId) ?? 'dew point',
+    });
+    return [placeToRank({ id, figures, range })];
+  });
+}
+
+export function drawRanks(task: RankTask): Ranking {
+  return rankPlaces(task);
 }
 
 /** Judges the years that the verdict rests on, as often as the lever needs. */

@@ -28,23 +28,17 @@ export async function placeToJudge(
   { db, cache }: { db: Knex; cache: ColumnCache },
   asked: PlaceAsked & { signal: AbortSignal },
 ): Promise<PlaceToJudge> {
-  const { teamId, signal } = asked;
-  const [all, site] = await Promise.all([listYearsToRescore(db, teamId), siteOf(db, asked)]);
-  const stationId = site === null ? asked.placeId : site.station?.id;
-  const years = all.filter((year) => year.stationId === stationId);
-  const accepted = new Map(all.map(({ weatherYearId, contentHash }) => [weatherYearId, contentHash]));
-  const columns = await cache.take({ teamId, years, accepted, signal });
-  const [station] = stationsOf(years, columns);
-  if (station === undefined) throw noWeather(asked.placeKind);
-  return { station: site === null ? station : atHeightOf(site, station), humidityFrom: new Map(years.map(readFrom)) };
+  const { placeKind, placeId } = asked;
+  if (placeKind === 'sites') await mustBeSite(db, asked);
+  const [place] = await placesToJudge({ db, cache }, { ...asked, places: [{ placeKind, id: placeId }] });
+  if (place === undefined) throw noWeather(placeKind);
+  return place;
 }
 
-async function siteOf(db: Knex, { teamId, programmeId, placeKind, placeId }: PlaceAsked) {
-  if (placeKind === 'stations') return null;
+async function mustBeSite(db: Knex, { teamId, programmeId, placeId }: PlaceAsked): Promise<void> {
   const [site] = await sitesOfProgramme(db, { teamId, programmeId, siteIds: [placeId] });
   if (site === undefined)
     throw new AppError('not_found', 'There is no such site in this programme, or it was removed.');
-  return site;
 }
 
 function atHeightOf(site: Parameters<typeof heightUsed>[0], station: StationToRescore): StationToRescore {
@@ -61,4 +55,38 @@ function noWeather(placeKind: PlaceKind): AppError {
 /** A wet bulb is read as its dew point is: to half a kelvin. */
 function readFrom({ weatherYearId, humidityFrom }: YearToRescore): [string, 'dew point' | 'relative humidity'] {
   return [weatherYearId, humidityFrom === 'relative humidity' ? 'relative humidity' : 'dew point'];
+}
+
+/** The same of many places, those that have gone meanwhile left out. */
+export async function placesToJudge(
+  { db, cache }: { db: Knex; cache: ColumnCache },
+  asked: {
+    readonly teamId: string;
+    readonly programmeId: string;
+    readonly places: readonly { readonly placeKind: PlaceKind; readonly id: string }[];
+    readonly signal: AbortSignal;
+  },
+): Promise<readonly (PlaceToJudge & { readonly id: string })[]> {
+  const { teamId, programmeId, signal } = asked;
+  const siteIds = asked.places.flatMap(({ placeKind, id }) => (placeKind === 'sites' ? [id] : []));
+  const [all, sites] = await Promise.all([
+    listYearsToRescore(db, teamId),
+    siteIds.length === 0 ? [] : sitesOfProgramme(db, { teamId, programmeId, siteIds }),
+  ]);
+  const siteById = new Map(sites.map((site) => [site.id, site]));
+  const stationOf = ({ placeKind, id }: (typeof asked.places)[number]) =>
+    placeKind === 'stations' ? id : siteById.get(id)?.station?.id;
+  const wanted = new Set(asked.places.map(stationOf));
+  const years = all.filter(({ stationId }) => wanted.has(stationId));
+  const accepted = new Map(all.map(({ weatherYearId, contentHash }) => [weatherYearId, contentHash]));
+  const stations = new Map(
+    stationsOf(years, await cache.take({ teamId, years, accepted, signal })).map((each) => [each.stationId, each]),
+  );
+  const humidityFrom = new Map(years.map(readFrom));
+  return asked.places.flatMap((place) => {
+    const station = stations.get(stationOf(place) ?? '');
+    if (station === undefined) return [];
+    const site = siteById.get(place.id);
+    return [{ id: place.id, station: site === undefined ? station : atHeightOf(site, station), humidityFrom }];
+  });
 }

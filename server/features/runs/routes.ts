@@ -3,19 +3,15 @@ import { getDepressionMap } from '#contract/depression-map.ts';
 import { listRunHours as listHoursEndpoint } from '#contract/hour-list.ts';
 import { findWhatWouldPass, judgeRange } from '#contract/place-doubts.ts';
 import { getMap } from '#contract/programme-map.ts';
+import { rankPlaces as rankEndpoint } from '#contract/ranking.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
 import { getSitePlace, getStationPlace } from '#contract/runs.ts';
 import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
-import type { Brief } from '#engine/brief/brief.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
-import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
-import type { WebThreads } from '../../jobs/web-threads.ts';
-import type { OriginalToRead } from '../../jobs/year-task.ts';
-import type { YearThread } from '../../jobs/year-thread.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
@@ -31,29 +27,19 @@ import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
+import { rankProgramme } from './rank-programme.ts';
 import { rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
+import type { RunsParts } from './runs-parts.ts';
 import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
 import { surfaceOf } from './surface.ts';
-import { makeSurfaceGrounds, type SurfaceThreads } from './surface-ground.ts';
+import { makeSurfaceGrounds } from './surface-ground.ts';
 
 /** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
 const CACHED_BYTES = 512 * 1024 * 1024;
 /** Previews at once, over all people: each may keep every thread for a while. */
 const MOST_PREVIEWS = 16;
-
-/** What runs need of the other parts, handed in where the server is wired. */
-export interface RunsParts {
-  readonly threads: Pick<WebThreads, 'threads' | 'rescore' | 'range' | 'turning'> & SurfaceThreads;
-  /** Approximate heights and coasts. */
-  readonly relief: Relief;
-  readonly yearThread: Pick<YearThread, 'writeHours' | 'listHours' | 'readLines'>;
-  /** An original with what it was read by; null where no lines hold its hours. */
-  readonly originalToRead: (key: { teamId: string; fileId: string }) => Promise<OriginalToRead | null>;
-  /** The brief in a request's body, or every fault of it at its path. */
-  readonly readDraft: (draft: unknown) => Brief;
-}
 
 export function runsRoutes(
   router: Router,
@@ -62,8 +48,8 @@ export function runsRoutes(
 ): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
-  const grounds = makeSurfaceGrounds(threads);
   const lines = makeLinesOfYears({ yearThread, originalToRead });
+  const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
@@ -147,6 +133,12 @@ export function runsRoutes(
     const brief = await briefAsked(params, { ...query, draft: body.body });
     const place = await placeToJudge({ db, cache }, { ...params, signal });
     return inTurn(() => whatWouldPass({ threads, brief, place, signal }));
+  });
+
+  mount(router, deps, rankEndpoint, async ({ params, query, body }, { signal }) => {
+    const brief = await briefOfProgramme(db, { ...params, briefId: query.brief });
+    const { placeIds = null, ...asked } = body;
+    return inTurn(() => rankProgramme({ db, cache, threads }, { ...params, ...asked, placeIds, brief, signal }));
   });
 
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
