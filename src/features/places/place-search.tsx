@@ -1,5 +1,5 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
-import { useEffect, useRef, useState } from 'react';
+import { useEffect, useState } from 'react';
 import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
 import { findPlaces } from '../../contract/places.ts';
 import { apiQuery } from '../../lib/api-query.ts';
@@ -16,8 +16,8 @@ const PAUSE_MS = 180;
 /** One box for names of places, stations and sites, and for coordinates in any usual form. */
 export function PlaceSearch({ teamId, onFind }: PlaceSearchProps) {
   const [text, setText] = useState('');
-  // Choosing empties the box by itself, which would open the list again: what was typed stays.
-  const hasChosen = useRef(false);
+  // What is chosen closes the list; what was typed stays in the box.
+  const [chosenKey, setChosenKey] = useState<string | null>(null);
   const paused = usePaused(text);
   const typed = readTyped(text);
   const asked = apiQuery(findPlaces, { params: { teamId }, query: { text: paused.trim() } });
@@ -30,21 +30,20 @@ export function PlaceSearch({ teamId, onFind }: PlaceSearchProps) {
       items={suggestions}
       inputValue={text}
       onInputChange={(typedText) => {
-        if (!hasChosen.current) setText(typedText);
-        hasChosen.current = false;
+        setText(typedText);
+        setChosenKey(null);
       }}
-      selectedKey={null}
+      selectedKey={chosenKey}
       onSelectionChange={(key) => {
         const chosen = suggestions.find((each) => each.key === key);
-        if (chosen === undefined) return;
-        hasChosen.current = true;
-        onFind(chosen);
+        setChosenKey(chosen?.key ?? null);
+        if (chosen !== undefined) onFind(chosen);
       }}
       allowsEmptyCollection
       allowsCustomValue
       menuTrigger="input"
       isInvalid={typed.problem !== null}
-      className="block"
+      className="block shrink-0"
     >
       <Label className="sr-only">Find a place or a position</Label>
       <Input
