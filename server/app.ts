@@ -25,6 +25,7 @@ import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
 import { findRoles } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
+import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
@@ -97,7 +98,10 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   sitesRoutes(router, deps, { relief, queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
-  runsRoutes(router, deps, { threads, yearThread, readDraft, relief });
+  runsRoutes(router, deps, {
+    ...{ threads, yearThread, readDraft, relief },
+    originalToRead: (key) => originalToRead(deps, key),
+  });
   placesRoutes(router, deps);
   methodRoutes(router, deps);
   teamsRoutes(router, deps);

@@ -4,9 +4,12 @@ import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
+import * as hourList from './hour-list.ts';
 import * as method from './method.ts';
+import * as doubts from './place-doubts.ts';
 import * as places from './places.ts';
 import * as map from './programme-map.ts';
+import * as ranking from './ranking.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
@@ -61,9 +64,13 @@ export const endpoints = {
   judgeSurface: surface.judgeSurface,
   getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
+  judgeRange: doubts.judgeRange,
+  findWhatWouldPass: doubts.findWhatWouldPass,
   getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
+  rankPlaces: ranking.rankPlaces,
+  listRunHours: hourList.listRunHours,
   exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,

@@ -16,7 +16,7 @@ import {
 import type { PlaceKind } from './sheet-place.ts';
 
 /** All lengths in CSS pixels. */
-export const MARK_SIZE_PX = 22;
+export const MARK_SIZE_PX = 24;
 const LINE_PX = 1.3;
 const HALO_PX = 1.5;
 const HATCH_SPACING_PX = 3.4;
@@ -27,8 +27,8 @@ const HALF_SIDE_PX = 7.6;
 const DROP_PX = 1.4;
 
 /** Half the outer edge of a site's square, and how wide the coloured rule is that runs round its letter. */
-const HALF_SQUARE_PX = 8.4;
-const RULE_PX = 3.4;
+const HALF_SQUARE_PX = 9.2;
+const RULE_PX = 2.8;
 const INNER_LINE_PX = 0.9;
 
 const INK = opaque('#22302f');

@@ -86,7 +86,7 @@ function Letters({ minzoom }: { readonly minzoom: number }) {
       layout={{
         'text-field': ['get', 'letters'],
         'text-font': [MEDIUM],
-        'text-size': ['interpolate', ['linear'], ['zoom'], 1, 7.5, 5, 11.5],
+        'text-size': ['interpolate', ['linear'], ['zoom'], 1, 6.5, 4, 10, 5, 11],
         'text-allow-overlap': true,
         'text-ignore-placement': true,
         'text-padding': 0,
@@ -155,7 +155,7 @@ export function PlaceFigures({ kind, places, inks }: FiguresProps) {
           'text-font': [ROMAN],
           'text-size': 11,
           'text-anchor': 'top',
-          'text-offset': [0, 1.05],
+          'text-offset': [0, 1.12],
           'text-padding': 0,
         }}
         paint={{ 'text-color': INK, 'text-halo-color': PAPER, 'text-halo-width': 1.5 }}

@@ -91,6 +91,10 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getSitePlace: readersToo,
+  listRunHours: readersToo,
+  rankPlaces: readersToo,
+  judgeRange: readersToo,
+  findWhatWouldPass: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,
@@ -197,6 +201,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
   if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
+  if (name === 'judgeRange' || name === 'findWhatWouldPass' || name === 'rankPlaces') return '{}';
   if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
   if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
   if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });
@@ -353,6 +358,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
+  ids = { ...ids, placeKind: 'stations', placeId: stationId };
   ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));

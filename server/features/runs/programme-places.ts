@@ -38,14 +38,25 @@ export interface PlacesUnderBrief {
 /** Every station of the team and every site of the programme under a brief version, from stored runs. */
 export async function programmePlaces(
   db: Knex,
-  { teamId, programmeId, brief }: { teamId: string; programmeId: string; brief: ProgrammeBrief },
+  {
+    teamId,
+    programmeId,
+    brief,
+    sites: resolved,
+  }: {
+    teamId: string;
+    programmeId: string;
+    brief: ProgrammeBrief;
+    /** Where the caller has them already. */
+    sites?: readonly ResolvedSite[];
+  },
 ): Promise<PlacesUnderBrief> {
   const { briefVersionId, body } = brief;
   const [stations, years, runs, sites] = await Promise.all([
     listStationPlaces(db, teamId),
     listAcceptedYears(db, teamId),
     listRunsInShort(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION }),
-    sitesOfProgramme(db, { teamId, programmeId }),
+    resolved ?? sitesOfProgramme(db, { teamId, programmeId }),
   ]);
   const places = makeJudgedPlaces({ brief: body, stations, years, runs });
   const elevations = new Map(stations.map(({ id, elevationM }) => [id, elevationM]));

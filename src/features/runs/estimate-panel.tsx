@@ -62,7 +62,7 @@ function Estimate({ found, onStation }: { found: PlaceEstimate; onStation: (stat
         )}
         <div className={`grid gap-0.5 ${score === null ? 'col-span-2' : ''}`}>
           {score === null ? (
-            <p className="serif text-name">No estimate: {scoreNote}.</p>
+            <p className="serif text-name">No estimate: {heldTogether(scoreNote ?? '')}.</p>
           ) : (
             <p>{bandWords(found.words)}</p>
           )}
@@ -79,11 +79,16 @@ function Estimate({ found, onStation }: { found: PlaceEstimate; onStation: (stat
   );
 }
 
+/** A figure and its unit stay on one line. */
+function heldTogether(words: string): string {
+  return words.replace(/(\d) (km|m)\b/g, '$1\u00a0$2');
+}
+
 function supportWords({ support, error }: PlaceEstimate): string {
   const near =
     support === 'full'
       ? 'A station is within 50 km and 150 m of height.'
-      : 'No station within 50 km and 150 m of height.';
+      : 'A station is within 100 km and 300 m of height, none within 50 km and 150 m.';
   if (error === null) return near;
   return `${near} Stations estimated from the others are out by ${number(error.rootMeanSquare, 1)} points (root mean square over ${error.stations}).`;
 }
@@ -108,9 +113,11 @@ function Basis({ found, onStation }: { found: PlaceEstimate; onStation: (station
               <th scope="col" className="figure">
                 m higher
               </th>
-              <th scope="col" className="figure">
-                Share
-              </th>
+              {found.score === null ? null : (
+                <th scope="col" className="figure">
+                  Share
+                </th>
+              )}
               <th scope="col" className="figure">
                 Score
               </th>
@@ -130,7 +137,7 @@ function Basis({ found, onStation }: { found: PlaceEstimate; onStation: (station
                 </th>
                 <td className="figure">{number(station.distanceKm, station.distanceKm < 10 ? 1 : 0)}</td>
                 <td className="figure">{number(station.heightDifferenceM)}</td>
-                <td className="figure">{found.score === null ? '' : percent(station.weightPct, 0)}</td>
+                {found.score === null ? null : <td className="figure">{percent(station.weightPct, 0)}</td>}
                 <td className="figure">{station.score}</td>
               </tr>
             ))}
