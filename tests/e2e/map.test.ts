@@ -67,7 +67,7 @@ const chosen = () => page.getByRole('region', { name: 'Chosen place' });
 const counts = async (): Promise<string> => (await textOf(legend().getByRole('list').first())).replaceAll(/\s+/g, ' ');
 
 test('a first visit fetches at most 160 kB for the shell and 560 kB for the map with its worker, compressed', () => {
-  const { shell, route, file } = firstLoad(product.deps.clientDir);
+  const { shell, route, file } = firstLoad(product.deps.clientDir ?? '');
   expect(shell).toBeLessThanOrEqual(160_000);
   const map = route('src/app/pages/map/map-page.tsx');
   const worker = file('maplibre-gl-worker');

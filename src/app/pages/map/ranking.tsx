@@ -18,7 +18,8 @@ interface RankingProps {
 /** Sites by score, or stations where the programme has no sites yet; either can be asked for. */
 export function Ranking({ places, address, changeAddress, chosen, onChoose, inks, isBehind }: RankingProps) {
   const { stations, sites } = places;
-  const kind: PlaceKind = sites.length === 0 ? 'station' : (address.list ?? 'site');
+  // Unless one of them was asked for, the list is the one that holds the chosen place.
+  const kind: PlaceKind = sites.length === 0 ? 'station' : (address.list ?? chosen?.kind ?? 'site');
   return (
     <div className="flex min-h-0 flex-1 flex-col">
       <div className="mb-1.5 flex items-baseline gap-3">
