@@ -19,9 +19,7 @@ export function PointNote({ ids, brief, point, isDraft, onChoose }: PointNotePro
   return (
     <section aria-label="Clicked point" className="grid content-start gap-3">
       <h2 className="text-title">{position(point)}</h2>
-      {isDraft ? (
-        <p className="text-soft">Under the saved version {brief.version}, not under the draft.</p>
-      ) : null}
+      {isDraft ? <p className="text-soft">Under the saved version {brief.version}, not under the draft.</p> : null}
       <EstimatePanel
         ids={ids}
         point={point}
