@@ -16,7 +16,11 @@ export default defineConfig({
     host: '127.0.0.1',
     watch: { ignored: ['**/.muslin/**'] },
     fs: { deny: ['.muslin', '.env', '.env.*', '*.{crt,pem}', '**/.git/**', '**/.muslin/**'] },
-    proxy: { '/api': 'http://127.0.0.1:3000', '/tiles': 'http://127.0.0.1:3000' },
+    proxy: {
+      '/api': 'http://127.0.0.1:3000',
+      '/tiles': 'http://127.0.0.1:3000',
+      '/relief': 'http://127.0.0.1:3000',
+    },
   },
   test: {
     // Vitest leaves a core for itself; on two cores that would leave one to the tests.

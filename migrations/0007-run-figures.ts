@@ -4,6 +4,9 @@
  */
 import type { Knex } from 'knex';
 
+/** In the order of a stored class. */
+const CLASSES = 'closed missing idle frozen damp air direct indirect dewpoint twostage short beyond'.split(' ');
+
 export async function up(knex: Knex): Promise<void> {
   await knex.raw(`
     alter table runs
@@ -16,7 +19,9 @@ export async function up(knex: Knex): Promise<void> {
       add column gates_failed jsonb generated always as
         (jsonb_path_query_array(result, '$.gates[*] \\? (@.answer == "fail").note')) stored,
       add column raw_components jsonb generated always as (jsonb_path_query_array(result, '$.parts[*].raw')) stored,
-      add column class_hours jsonb generated always as (result #> '{ledger,classes}') stored,
+      add column class_hours smallint[] generated always as (array[${CLASSES.map(
+        (name) => `(result #>> '{ledger,classes,${name}}')::smallint`,
+      ).join(', ')}]) stored,
       add column demand_hours smallint generated always as ((result #>> '{ledger,demand}')::smallint) stored,
       add column met_hours smallint generated always as ((result #>> '{ledger,met}')::smallint) stored,
       add column litres_per_kwh double precision generated always as
@@ -25,6 +30,8 @@ export async function up(knex: Knex): Promise<void> {
         ((result #>> '{electricity,savedPct}')::double precision) stored,
       add column spell_hours smallint generated always as ((result #>> '{worstSpell,hours}')::smallint) stored,
       add column severity_kh double precision generated always as ((result ->> 'severityKh')::double precision) stored;
+    alter table weather_years
+      add column measured_hours smallint generated always as ((facts ->> 'measuredHours')::smallint) stored;
     create index runs_of_version on runs (brief_version_id, weather_year_id, height_m);
   `);
 }
@@ -32,6 +39,7 @@ export async function up(knex: Knex): Promise<void> {
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
     drop index runs_of_version;
+    alter table weather_years drop column measured_hours;
     alter table runs
       drop column adjusted_from_m, drop column usable, drop column months_short, drop column score, drop column score_exact, drop column verdict,
       drop column gates_failed, drop column raw_components, drop column class_hours, drop column demand_hours,

@@ -7,6 +7,7 @@ import * as weatherRoom from './0004-weather-room.ts';
 import * as depressionArray from './0005-depression-array.ts';
 import * as sites from './0006-sites.ts';
 import * as runFigures from './0007-run-figures.ts';
+import * as gazetteer from './0008-gazetteer.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
@@ -16,6 +17,7 @@ const migrations = {
   '0005-depression-array': depressionArray,
   '0006-sites': sites,
   '0007-run-figures': runFigures,
+  '0008-gazetteer': gazetteer,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;

@@ -2,6 +2,7 @@
 import { availableParallelism } from 'node:os';
 import compression from 'compression';
 import express, { type Express, Router } from 'express';
+import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from './deps.ts';
 import { sessionStands } from './features/accounts/account-store.ts';
 import { checkPassword } from './features/accounts/check-password.ts';
@@ -11,6 +12,7 @@ import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
+import { placesRoutes } from './features/places/routes.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import { queueSiteRuns } from './features/runs/queue-site-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
@@ -23,6 +25,7 @@ import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
 import { findRoles } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
+import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
@@ -34,6 +37,7 @@ import { securityHeaders } from './http/security-headers.ts';
 import { makeWebThreadsOf, type WebThreads } from './jobs/web-threads.ts';
 import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
 import { shippedRelief } from './tiles/relief.ts';
+import { reliefRouter } from './tiles/relief-router.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
 
 /** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
@@ -64,26 +68,27 @@ export interface AppThreads {
 export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> = {}): Express {
   const { closing = new AbortController().signal, heartbeatMs = HEARTBEAT_MS } = terms;
   const { threads = makeWebThreads(), yearThread = makeWebYearThread() } = terms;
+  const relief = shippedRelief();
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
   app.set('query parser', 'simple');
   app.use(beginRequest({ closing, heartbeatMs }), securityHeaders(), compression());
 
-  // What stands outside the declarations: health, base map, built client (page, code, fonts). Nothing else does.
+  // What stands outside the declarations: health, base map and relief, built client (page, code, fonts). Nothing else does.
   app.get('/api/health', health(deps.db));
-  app.use(tilesRouter(deps.basemapPath));
+  app.use(tilesRouter(deps.basemapPath), reliefRouter(relief));
   if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
 
   app.use('/api', originGuard, ...authentication(deps, peopleLookup(deps)));
-  app.use(declaredRoutes(deps, { threads, yearThread }));
+  app.use(declaredRoutes(deps, { threads, yearThread, relief }));
   app.use(nothingHere);
   app.use(errorHandler(deps.log));
   return app;
 }
 
 /** Every endpoint of src/contract/endpoints.ts, by feature. */
-function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router {
+function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads & { relief: Relief }): Router {
   const router = Router();
   accountsRoutes(router, deps, {
     makeFirstTeam: (transaction, team) =>
@@ -91,9 +96,13 @@ function declaredRoutes(deps: Deps, { threads, yearThread }: AppThreads): Router
   });
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
-  sitesRoutes(router, deps, { relief: shippedRelief(), queueSiteRuns });
+  sitesRoutes(router, deps, { relief, queueSiteRuns });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
-  runsRoutes(router, deps, { threads, yearThread, readDraft });
+  runsRoutes(router, deps, {
+    ...{ threads, yearThread, readDraft, relief },
+    originalToRead: (key) => originalToRead(deps, key),
+  });
+  placesRoutes(router, deps);
   methodRoutes(router, deps);
   teamsRoutes(router, deps);
   return router;

@@ -4,7 +4,8 @@ import path from 'node:path';
 import { seedDemo } from '../builders/seed-demo.ts';
 import { type Config, ConfigError, isLoopback, readConfig } from '../config.ts';
 import { connect } from '../db/connection.ts';
-import { prepareDatabase } from '../db/prepare-database.ts';
+import { loadGazetteer } from '../db/load-gazetteer.ts';
+import { type PreparedDatabase, prepareDatabase } from '../db/prepare-database.ts';
 import type { Deps } from '../deps.ts';
 import { makeSetUpKey } from '../features/accounts/set-up-key.ts';
 import { openTeamFeed } from '../jobs/team-feed.ts';
@@ -48,7 +49,7 @@ async function takePlace(start: Start): Promise<(address: string) => void> {
   return lock.nameAddress;
 }
 
-async function startDatabase({ home, stops, log }: Start): Promise<string> {
+async function startDatabase({ home, stops, log }: Start): Promise<PreparedDatabase> {
   const { superuserPassword, ownerPassword, appPassword } = home.secrets;
   const options = { homeDir: home.dir, superuserPassword };
   const cluster = await startCluster(options);
@@ -56,21 +57,21 @@ async function startDatabase({ home, stops, log }: Start): Promise<string> {
   const watch = keepClusterRunning(cluster, { ...options, onTrouble: (words) => log.error({}, words) });
   stops.push('The watch over PostgreSQL', watch.stop);
   const superuser = { name: SUPERUSER, password: superuserPassword };
-  const prepared = await prepareDatabase({ port: cluster.port, superuser, ownerPassword, appPassword }, 'muslin');
-  return prepared.appUrl;
+  return prepareDatabase({ port: cluster.port, superuser, ownerPassword, appPassword }, 'muslin');
 }
 
 /** Both at once, and both to their end: what fails must not leave the other one half started. */
-async function startDatabaseAndBuild(start: Start): Promise<{ databaseUrl: string; clientDir: string }> {
+async function startDatabaseAndBuild(start: Start): Promise<{ database: PreparedDatabase; clientDir: string }> {
   const [database, client] = await Promise.allSettled([startDatabase(start), requireClient(start.context)]);
   if (database.status === 'rejected') throw database.reason;
   if (client.status === 'rejected') throw client.reason;
-  return { databaseUrl: database.value, clientDir: client.value };
+  return { database: database.value, clientDir: client.value };
 }
 
-async function makeDeps(start: Start, made: { databaseUrl: string; clientDir: string }): Promise<Deps> {
+async function makeDeps(start: Start, made: { database: PreparedDatabase; clientDir: string }): Promise<Deps> {
   const { home, log, stops } = start;
-  const { databaseUrl, clientDir } = made;
+  const { clientDir } = made;
+  const databaseUrl = made.database.appUrl;
   const db = connect({ databaseUrl, applicationName: 'muslin web' });
   stops.push('The database connections', () => db.destroy());
   const feed = await openTeamFeed({ databaseUrl, log });
@@ -109,9 +110,15 @@ async function serve(start: Start, nameAddress: (address: string) => void): Prom
   const made = await startDatabaseAndBuild(start);
   context.signal.throwIfAborted();
   const deps = await makeDeps(start, made);
-  const settings = { databaseUrl: made.databaseUrl, originalsDir: home.originalsDir };
+  const settings = { databaseUrl: deps.databaseUrl, originalsDir: home.originalsDir };
   const worker = keepWorkerRunning({ rootDir: context.rootDir, settings, log });
   stops.push('The job worker', worker.stop);
+  const gazetteer = path.join(context.rootDir, 'data/gazetteer/gazetteer.tsv.gz');
+  // Names of places can be searched a little later than everything else.
+  const loading = loadGazetteer(made.database.ownerUrl, gazetteer).catch((error: unknown) =>
+    log.error({ error }, 'loading the gazetteer failed; names of places cannot be searched'),
+  );
+  stops.push('The loading of the gazetteer', async () => void (await loading));
   const words = await welcome(start, deps);
   context.signal.throwIfAborted();
   const web = await startWeb({ config, deps });

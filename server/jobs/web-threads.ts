@@ -1,5 +1,22 @@
+import type { PlaceToRank } from '#engine/ranking/place-to-rank.ts';
+import type { Ranking } from '#engine/ranking/rank-places.ts';
 import { makeThreadPool } from './thread-pool.ts';
-import type { PreviewedYear, PreviewTask, RescoredStation, RescoreTask, WebAnswer, WebTask } from './web-task.ts';
+import type {
+  DoubtsTask,
+  JudgedRange,
+  PreviewedYear,
+  PreviewTask,
+  RangeTask,
+  RankTask,
+  RescoredStation,
+  RescoreTask,
+  SurfaceGrid,
+  SurfaceTask,
+  TurnedVerdict,
+  TurningTask,
+  WebAnswer,
+  WebTask,
+} from './web-task.ts';
 
 /** Threads that judge for whoever drags a slider; their errors are those of `ThreadPool.run`. */
 export interface WebThreads {
@@ -8,10 +25,15 @@ export interface WebThreads {
   warm(): void;
   rescore(task: RescoreTask, signal: AbortSignal): Promise<readonly RescoredStation[]>;
   preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
+  range(task: RangeTask, signal: AbortSignal): Promise<JudgedRange | null>;
+  turning(task: TurningTask, signal: AbortSignal): Promise<TurnedVerdict>;
+  doubts(task: DoubtsTask, signal: AbortSignal): Promise<readonly PlaceToRank[]>;
+  rank(task: RankTask, signal: AbortSignal): Promise<Ranking>;
+  surface(task: SurfaceTask, signal?: AbortSignal): Promise<SurfaceGrid>;
   close(): Promise<void>;
 }
 
-/** @param options.entry the module that answers both kinds of task */
+/** @param options.entry the module that answers every kind of task */
 export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebThreads {
   const pool = makeThreadPool<WebTask, WebAnswer>(options);
   return {
@@ -25,6 +47,31 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
     async preview(task, signal) {
       const answered = await pool.run({ kind: 'preview', task }, signal);
       if (answered.kind !== 'preview') throw wrongAnswer();
+      return answered.answer;
+    },
+    async range(task, signal) {
+      const answered = await pool.run({ kind: 'range', task }, signal);
+      if (answered.kind !== 'range') throw wrongAnswer();
+      return answered.answer;
+    },
+    async turning(task, signal) {
+      const answered = await pool.run({ kind: 'turning', task }, signal);
+      if (answered.kind !== 'turning') throw wrongAnswer();
+      return answered.answer;
+    },
+    async doubts(task, signal) {
+      const answered = await pool.run({ kind: 'doubts', task }, signal);
+      if (answered.kind !== 'doubts') throw wrongAnswer();
+      return answered.answer;
+    },
+    async rank(task, signal) {
+      const answered = await pool.run({ kind: 'rank', task }, signal);
+      if (answered.kind !== 'rank') throw wrongAnswer();
+      return answered.answer;
+    },
+    async surface(task, signal) {
+      const answered = await pool.run({ kind: 'surface', task }, signal);
+      if (answered.kind !== 'surface') throw wrongAnswer();
       return answered.answer;
     },
     close: () => pool.close(),

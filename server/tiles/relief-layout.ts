@@ -61,10 +61,12 @@ function likely(values: Int16Array | Uint8Array, node: number): number {
 export function between(values: Int16Array | Uint8Array, row: number, column: number): number {
   const south = Math.min(TILE_STEPS - 1, Math.floor(row));
   const west = Math.min(TILE_STEPS - 1, Math.floor(column));
-  const [north, east] = [row - south, column - west];
-  const at = (r: number, c: number) => values[(south + r) * SIDE + west + c] ?? 0;
-  const along = (r: number) => at(r, 0) * (1 - east) + at(r, 1) * east;
-  return along(0) * (1 - north) + along(1) * north;
+  const north = row - south;
+  const east = column - west;
+  const at = south * SIDE + west;
+  const below = (values[at] ?? 0) * (1 - east) + (values[at + 1] ?? 0) * east;
+  const above = (values[at + SIDE] ?? 0) * (1 - east) + (values[at + SIDE + 1] ?? 0) * east;
+  return below * (1 - north) + above * north;
 }
 
 /** Kilometres as they are stored. */

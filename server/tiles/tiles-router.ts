@@ -3,12 +3,10 @@ import { readFileSync } from 'node:fs';
 import { gunzipSync } from 'node:zlib';
 import { Router } from 'express';
 import { PMTiles, SharedPromiseCache, type Source } from 'pmtiles';
+import { tileNamed } from './tile-name.ts';
 
 /** A day without asking; after it the fingerprint settles whether a newer base map was shipped. */
 const CACHE_CONTROL = 'public, max-age=86400, stale-while-revalidate=604800';
-
-/** What a tile address may look like: no sign, no leading zeros, no room for anything but a number. */
-const WHOLE_NUMBER = /^(?:0|[1-9]\d{0,7})$/;
 
 /**
  * Serves the base map as vector tiles under `/tiles/:z/:x/:y.mvt`.
@@ -23,12 +21,12 @@ export function tilesRouter(pmtilesPath: string): Router {
   const archive = new PMTiles(memorySource(pmtilesPath), new SharedPromiseCache(), async (stored) => stored);
   const router = Router();
   router.get('/tiles/:z/:x/:y.mvt', async (request, response) => {
-    const { z, x, y } = request.params;
-    if (![z, x, y].every((part) => WHOLE_NUMBER.test(part))) {
+    const tile = tileNamed(request.params);
+    if (tile === null) {
       response.status(400).type('text/plain').send('A tile is named by three whole numbers: zoom, column, row.');
       return;
     }
-    const [zoom, column, row] = [Number(z), Number(x), Number(y)];
+    const { zoom, column, row } = tile;
     const { maxZoom } = await archive.getHeader();
     if (zoom > maxZoom || column >= 2 ** zoom || row >= 2 ** zoom) {
       response.status(404).type('text/plain').send(`The base map has zooms 0 to ${maxZoom} and no such tile.`);

@@ -2,7 +2,7 @@ import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
 import { getMap } from '../contract/programme-map.ts';
-import { getStationPlace } from '../contract/runs.ts';
+import { getSitePlace, getStationPlace } from '../contract/runs.ts';
 import { listSiteImports } from '../contract/site-imports.ts';
 import { getSite, listSites } from '../contract/sites.ts';
 import { getStation, listStations } from '../contract/stations.ts';
@@ -19,9 +19,9 @@ const GATHER_MS = 300;
 const affected = {
   'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch, listStations, getStation],
   'weather-batch': [listWeatherBatches, getWeatherBatch, listWeatherFiles],
-  run: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
-  sites: [listSites, getSite, listSiteImports],
-  brief: [getMap, getStationPlace, listBriefs, listBriefVersions, getBriefVersion],
+  run: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
+  sites: [listSites, getSite, listSiteImports, getMap, getSitePlace],
+  brief: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
 } as const satisfies Record<TeamEvent['kind'], readonly { path: string }[]>;
 
 /** Follows what happens in a team and marks the answers that it makes stale. `lost`: what is shown may be behind. */

@@ -4,14 +4,19 @@ import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
+import * as hourList from './hour-list.ts';
 import * as method from './method.ts';
+import * as doubts from './place-doubts.ts';
+import * as places from './places.ts';
 import * as map from './programme-map.ts';
+import * as ranking from './ranking.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
 import * as siteImports from './site-imports.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
+import * as surface from './surface.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -53,11 +58,20 @@ export const endpoints = {
   previewDerivedYear: climate.previewDerivedYear,
   deriveWeatherYear: climate.deriveWeatherYear,
   watchTeam: events.watchTeam,
+  findPlaces: places.findPlaces,
   getMap: map.getMap,
+  getSurface: surface.getSurface,
+  judgeSurface: surface.judgeSurface,
+  getEstimate: surface.getEstimate,
   getDepressionMap: depression.getDepressionMap,
+  judgeRange: doubts.judgeRange,
+  findWhatWouldPass: doubts.findWhatWouldPass,
   getSitePlace: runs.getSitePlace,
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
+  rankPlaces: ranking.rankPlaces,
+  getRun: runs.getRun,
+  listRunHours: hourList.listRunHours,
   exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,

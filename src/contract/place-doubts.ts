@@ -62,7 +62,7 @@ export const judgeRange = endpoint({
   query: OfBrief,
   body: DraftOrSaved,
   response: json(PlaceRange),
-  errors: [],
+  errors: ['wrong_state'],
   allow: 'runs.view',
   limits: severalJudgings,
 });
@@ -107,7 +107,7 @@ export const findWhatWouldPass = endpoint({
   query: OfBrief,
   body: DraftOrSaved,
   response: json(WhatWouldPass),
-  errors: [],
+  errors: ['wrong_state'],
   allow: 'runs.view',
   limits: severalJudgings,
 });

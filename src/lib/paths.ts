@@ -48,6 +48,29 @@ export const paths = {
     to: (ids: { teamId: string; programmeId: string; siteId: string }, settling = false) =>
       `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites/${ids.siteId}${settling ? '?settling=1' : ''}`,
   },
+  compare: {
+    pattern: 'programmes/:programmeId/compare',
+    /** Up to six places, or one place under several briefs; without any it asks for them. */
+    to: (
+      ids: { teamId: string; programmeId: string },
+      asked: {
+        places?: readonly { kind: 'station' | 'site'; id: string }[];
+        briefs?: readonly string[];
+        years?: readonly string[];
+      } = {},
+    ) => {
+      const search = new URLSearchParams();
+      const places = (asked.places ?? []).map(({ kind, id }) => `${kind}:${id}`);
+      for (const [name, values] of [
+        ['places', places],
+        ['briefs', asked.briefs ?? []],
+        ['years', asked.years ?? []],
+      ] as const)
+        if (values.length > 0) search.set(name, values.join(','));
+      const base = `/teams/${ids.teamId}/programmes/${ids.programmeId}/compare`;
+      return search.size > 0 ? `${base}?${search}` : base;
+    },
+  },
   weather: {
     pattern: 'weather',
     /** `asked` narrows the library: to a batch, a station, a status. */
@@ -74,11 +97,22 @@ export const paths = {
   gallery: { pattern: '/gallery' },
 } as const;
 
-/** The chosen place of the map page, in the query of its address. */
+/** The chosen station of the map page, in the query of its address. */
 export const PLACE_PARAM = 'place';
 
 /** The brief that the map is drawn under, in the query of its address; without it the one saved last. */
 export const BRIEF_PARAM = 'brief';
+
+/** The rest of the map's state in its address: a chosen site, a clicked point, what is drawn and how. */
+export const SITE_PARAM = 'site';
+export const POINT_PARAM = 'at';
+export const LAYER_PARAM = 'layer';
+export const DRAFT_PARAM = 'draft';
+export const FIND_PARAM = 'find';
+export const LIST_PARAM = 'list';
+export const VIEW_PARAM = 'view';
+/** Off: the score between stations is not drawn. */
+export const SURFACE_PARAM = 'surface';
 
 /** Where to go after signing in: only a path of this application, never another host. */
 export function safeReturn(from: string | null): string {

@@ -25,6 +25,18 @@ export function paintPixels({ sizePx, pixelRatio }: Sheet, colourAt: (x: number,
   return { width: size, height: size, data };
 }
 
+/** Texels from an edge to where a distance field ends, and the alpha that stands for the edge: what MapLibre expects. */
+const FIELD_REACH = 8;
+const FIELD_EDGE = 0.75;
+
+/** A distance field from a signed distance in CSS pixels, negative inside; the map gives it its colour. */
+export function paintDistance({ sizePx, pixelRatio }: Sheet, distance: (x: number, y: number) => number): Pixels {
+  return paintPixels({ sizePx, pixelRatio }, (x, y) => {
+    const alpha = FIELD_EDGE - (distance(x, y) * pixelRatio) / FIELD_REACH;
+    return { ...NOTHING, alpha: Math.min(1, Math.max(0, alpha)) };
+  });
+}
+
 /** How much of a pixel lies inside an edge that is `insidePx` away: soft over one device pixel. */
 export function softEdge(insidePx: number, pixelRatio: number): number {
   return Math.min(1, Math.max(0, insidePx * pixelRatio + 0.5));

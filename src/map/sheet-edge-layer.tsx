@@ -4,27 +4,34 @@ import { Layer, Source } from 'react-map-gl/maplibre';
 import { SHEET_EDGE, sheetEdges } from './sheet-edges.ts';
 import type { SheetView } from './sheet-view.ts';
 import { useSheetView } from './sheet-view-store.ts';
+import type { Furniture } from './use-furniture.ts';
 
 /** How far from the frame a name stays, px. */
 const CLEAR_PX = 3;
 
-/**
- * Keeps names off the frame: unseen strips along the four edges take the room, so that a name that would be cut goes to another
- * side of its mark or waits. MapLibre gives room to the last layer first; this one has to be the last.
- */
-export function SheetEdgeLayer({ map }: { readonly map: MapLibreMap | null }) {
-  const view = useSheetView(map);
-  return view === null ? null : <EdgesOf view={view} />;
+interface EdgeProps {
+  /** What stands over the map; its names keep clear of it. */
+  readonly furniture: readonly Furniture[];
 }
 
-function EdgesOf({ view }: { readonly view: SheetView }) {
+/**
+ * Keeps names off the frame and out from under the furniture: unseen strips take the room, so that a name that would be cut
+ * goes to another side of its mark or waits. MapLibre gives room to the last layer first; this one has to be the last.
+ */
+export function SheetEdgeLayer({ map, furniture }: EdgeProps & { readonly map: MapLibreMap | null }) {
+  const view = useSheetView(map);
+  return view === null ? null : <EdgesOf view={view} furniture={furniture} />;
+}
+
+function EdgesOf({ view, furniture }: EdgeProps & { readonly view: SheetView }) {
   const { west, east, north, south, widthPx, heightPx } = view;
   const data = useMemo(
-    () => sheetEdges({ west, east, north, south, widthPx, heightPx }),
-    [west, east, north, south, widthPx, heightPx],
+    () => sheetEdges({ west, east, north, south, widthPx, heightPx }, furniture),
+    [west, east, north, south, widthPx, heightPx, furniture],
   );
-  const strip = (along: 'parallel' | 'meridian', padding: [number, number, number, number]) => (
+  const strip = (along: string, padding: [number, number, number, number]) => (
     <Layer
+      key={along}
       id={`sheet-edge-${along}`}
       type="symbol"
       filter={['==', ['get', 'along'], along]}
@@ -40,6 +47,9 @@ function EdgesOf({ view }: { readonly view: SheetView }) {
     <Source id="sheet-edges" type="geojson" data={data}>
       {strip('parallel', [CLEAR_PX, widthPx / 2, CLEAR_PX, widthPx / 2])}
       {strip('meridian', [heightPx / 2, CLEAR_PX, heightPx / 2, CLEAR_PX])}
+      {furniture.map(({ width, height }, index) =>
+        strip(`furniture-${index}`, [height / 2, width / 2, height / 2, width / 2]),
+      )}
     </Source>
   );
 }

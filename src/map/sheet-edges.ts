@@ -1,17 +1,19 @@
 import type { FeatureCollection, Point } from 'geojson';
-import type { SheetView } from './sheet-view.ts';
+import { latitudeAt, longitudeAt, type SheetView } from './sheet-view.ts';
+import type { Furniture } from './use-furniture.ts';
 
 /** The picture of an edge: nothing to see, but names find no room where it lies. */
 export const SHEET_EDGE = 'sheet-edge';
 
-type Edge = { readonly along: 'parallel' | 'meridian' };
+/** Which strip a feature is the middle of: an edge of the frame, or a piece of furniture by its number. */
+type Strip = { readonly along: string };
 
-/** The middles of the four edges of the view: two that run along parallels, two along meridians. */
-export function sheetEdges(view: SheetView): FeatureCollection<Point, Edge> {
+/** The middles of the four edges of the view (two run along parallels, two along meridians), and of the furniture. */
+export function sheetEdges(view: SheetView, furniture: readonly Furniture[] = []): FeatureCollection<Point, Strip> {
   const { west, east, north, south } = view;
   const middle = (west + east) / 2;
-  const half = middleParallel(view);
-  const edge = (along: Edge['along'], coordinates: [number, number]) => ({
+  const half = latitudeAt(view, view.heightPx / 2);
+  const strip = (along: string, coordinates: [number, number]) => ({
     type: 'Feature' as const,
     properties: { along },
     geometry: { type: 'Point' as const, coordinates },
@@ -19,16 +21,13 @@ export function sheetEdges(view: SheetView): FeatureCollection<Point, Edge> {
   return {
     type: 'FeatureCollection',
     features: [
-      edge('parallel', [middle, north]),
-      edge('parallel', [middle, south]),
-      edge('meridian', [west, half]),
-      edge('meridian', [east, half]),
+      strip('parallel', [middle, north]),
+      strip('parallel', [middle, south]),
+      strip('meridian', [west, half]),
+      strip('meridian', [east, half]),
+      ...furniture.map(({ left, top, width, height }, index) =>
+        strip(`furniture-${index}`, [longitudeAt(view, left + width / 2), latitudeAt(view, top + height / 2)]),
+      ),
     ],
   };
-}
-
-/** The parallel half way down the sheet, which on Mercator's is not half way in degrees. */
-function middleParallel({ north, south }: SheetView): number {
-  const height = (degrees: number): number => Math.asinh(Math.tan((degrees * Math.PI) / 180));
-  return (Math.atan(Math.sinh((height(north) + height(south)) / 2)) * 180) / Math.PI;
 }

@@ -15,7 +15,10 @@ type ZoomButtonsProps = {
 
 export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
   return (
-    <fieldset className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line">
+    <fieldset
+      data-furniture=""
+      className="absolute top-3 right-3 flex flex-col border border-ink/60 bg-paper divide-y divide-line"
+    >
       <legend className="sr-only">Zoom</legend>
       <SheetButton label="Zoom in" onPress={onIn}>
         <path d="M2 8h12M8 2v12" />
@@ -24,7 +27,7 @@ export function ZoomButtons({ onIn, onOut, onAll }: ZoomButtonsProps) {
         <path d="M2 8h12" />
       </SheetButton>
       {onAll !== null && (
-        <SheetButton label="Show all stations" onPress={onAll}>
+        <SheetButton label="Show all" onPress={onAll}>
           <path d="M2 5.5V2h3.5M10.5 2H14v3.5M14 10.5V14h-3.5M5.5 14H2v-3.5" />
         </SheetButton>
       )}
@@ -112,7 +115,8 @@ export function Sources() {
     <p className="bg-paper/85 px-2 py-0.5 text-right text-[0.6875rem] leading-snug text-soft [&_a]:text-soft [&_a]:underline">
       Made with <Away to="https://www.naturalearthdata.com/">Natural Earth</Away>. Places:{' '}
       <Away to="https://www.geonames.org/">GeoNames</Away>,{' '}
-      <Away to="https://creativecommons.org/licenses/by/4.0/">CC BY 4.0</Away>
+      <Away to="https://creativecommons.org/licenses/by/4.0/">CC BY 4.0</Away>. Relief: ETOPO5,{' '}
+      <Away to="https://www.ncei.noaa.gov/">NOAA</Away>
     </p>
   );
 }

@@ -1,35 +1,53 @@
 import './sheet-map.css';
 import * as maplibregl from 'maplibre-gl';
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?url';
-import { type ReactNode, type RefObject, useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
 import { type MapLayerMouseEvent, type MapRef, Map as MapView } from 'react-map-gl/maplibre';
-import type { MapStation } from '../contract/programme-map.ts';
 import { boxAround } from './fit-stations.ts';
 import { GraticuleLayer } from './graticule-layer.tsx';
 import { ITALIC, mapFonts, ROMAN } from './map-fonts.ts';
 import { MARGIN, Neatline } from './neatline.tsx';
-import { NOTHING, type Pixels, paintPixels } from './paint-pixels.ts';
+import { placeAt } from './place-at.ts';
+import type { RaisedPlace } from './place-features.ts';
+import { PlaceKeys } from './place-keys.tsx';
+import { MARK_SOURCES, PlaceFigures, PlaceMarks, PlaceNames, RaisedNames, RaisedRings } from './place-layers.tsx';
+import { PointLayer } from './point-layer.tsx';
 import type { UnitSystem } from './scale-bar.ts';
 import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
-import { SHEET_EDGE } from './sheet-edges.ts';
 import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
+import { isSame, type MarkInks, type PlaceRef, type Position, type SheetPlace } from './sheet-place.ts';
 import { sheetStyle } from './sheet-style.ts';
-import { StationKeys } from './station-keys.tsx';
-import { STATION_MARKS, StationLayers } from './station-layers.tsx';
-import { drawMark, markNamed } from './station-mark.ts';
-import { drawTownDot } from './town-dot.ts';
+import { useChosenInView } from './use-chosen-in-view.ts';
+import { FIT, toBounds, useFit } from './use-fit.ts';
+import { useFurniture } from './use-furniture.ts';
+import { useIdleMark } from './use-idle-mark.ts';
+import { useIsWide } from './use-is-wide.ts';
+import { useMarkInks } from './use-mark-inks.ts';
+import { usePictures } from './use-pictures.ts';
+import { type MoveSite, useSiteDrag } from './use-site-drag.ts';
+import { type SheetCamera, useFollowCamera, useTellView, type ViewTold } from './use-tell-view.ts';
 
 // A built client answers an unknown address with its page; the worker has to be asked for by its real name.
 maplibregl.setWorkerUrl(workerUrl);
 
 export type SheetMapProps = {
-  readonly stations: readonly MapStation[];
-  readonly chosenId: string | null;
-  readonly onChoose: (stationId: string) => void;
-  /** A click beside every station. */
-  readonly onBackground?: (position: { latitude: number; longitude: number }) => void;
-  /** Where to look first; without it the stations are fitted into the frame, or the world where there are none. */
-  readonly initialView?: { readonly longitude: number; readonly latitude: number; readonly zoom: number };
+  readonly stations: readonly SheetPlace[];
+  readonly sites: readonly SheetPlace[];
+  readonly inks: MarkInks;
+  /** What a reader who does not see the map is told of a place. */
+  readonly sentence: (place: SheetPlace) => string;
+  readonly chosen: PlaceRef | null;
+  readonly onChoose: (place: PlaceRef) => void;
+  /** A click beside every mark. */
+  readonly onPoint?: (position: Position) => void;
+  /** A position that is in view beside the map; marked by a cross. */
+  readonly point?: Position | null;
+  /** The chosen site was dragged to another place; without it nothing can be dragged. */
+  readonly onMoveSite?: MoveSite;
+  /** Where to look first; without it the places are fitted into the frame, or the world where there are none. */
+  readonly camera: SheetCamera | null;
+  /** After every movement: where the map looks, and which box it shows. */
+  readonly onView?: ViewTold;
   /** Stands inside the frame where there is room, and under it on a narrow sheet. */
   readonly legend?: ReactNode;
   readonly units?: UnitSystem;
@@ -39,42 +57,62 @@ export type SheetMapProps = {
 
 const WORLD = { longitude: 12, latitude: 18, zoom: 1.2 };
 const ZOOM_LIMITS = { minZoom: 0.8, maxZoom: 11 };
-const FIT = { padding: 56, maxZoom: 8 };
-/** A finger or a pointer this near to a mark means it. */
-const REACH_PX = 10;
 const FADE_MS = 200;
+/** From this width on the legend stands inside the frame. */
+const ROOMY_PX = 576;
 const WORDS = { 'Map.Title': 'Map. Arrow keys move it, plus and minus zoom.' };
 
 /** The map as a printed sheet. Fills its parent, which gives it its height. */
 export function SheetMap(props: SheetMapProps) {
-  const { stations, chosenId, onChoose, onBackground, legend, units = 'si', children } = props;
+  const { stations, sites, inks, chosen, onChoose, onPoint, legend, units = 'si', children } = props;
   const [map, setMap] = useState<maplibregl.Map | null>(null);
-  const [pointedId, setPointedId] = useState<string | null>(null);
+  const [pointed, setPointed] = useState<PlaceRef | null>(null);
   const wrapper = useRef<HTMLDivElement>(null);
+  const frame = useRef<HTMLDivElement>(null);
+  const furniture = useFurniture(frame);
+  const isRoomy = useIsWide(wrapper, ROOMY_PX);
   const style = useSheetStyle();
   const hold = useCallback((ref: MapRef | null) => setMap(ref?.getMap() ?? null), []);
   usePictures(map);
+  useMarkInks(map, MARK_SOURCES.station, { places: stations, inks });
+  useMarkInks(map, MARK_SOURCES.site, { places: sites, inks });
   useIdleMark(map, wrapper);
-  const fitAll = useFit(map, props);
-  useChosenInView(map, props);
+  useTellView(map, props.onView);
+  useFollowCamera(map, props.camera);
+  const fitAll = useFit(map, { places: useAll(stations, sites), furniture, isPlaced: props.camera !== null });
+  const { heldAt, onStart } = useSiteDrag({ map, chosen, onMoveSite: props.onMoveSite });
+  const places = { stations, sites };
+  const raised = useRaised(places, { chosen, pointed, heldAt });
+  useChosenInView(map, raised.find(({ how }) => how === 'chosen')?.place);
 
   const click = (event: MapLayerMouseEvent) => {
-    const id = stationAt(event);
-    if (id !== null) onChoose(id);
-    else onBackground?.({ latitude: event.lngLat.lat, longitude: event.lngLat.wrap().lng });
+    const place = placeAt(event);
+    if (place !== null) onChoose(place);
+    else onPoint?.({ latitude: event.lngLat.lat, longitude: event.lngLat.wrap().lng });
   };
-  const pointByKey = (station: MapStation | null) => {
-    setPointedId(station?.id ?? null);
-    if (map === null || station === null) return;
-    const position: [number, number] = [station.longitude, station.latitude];
+  const point = (place: PlaceRef | null) => setPointed((held) => (isSame(held, place) ? held : place));
+  const pointByKey = (kind: PlaceRef['kind']) => (place: SheetPlace | null) => {
+    point(place && { kind, id: place.id });
+    if (map === null || place === null) return;
+    const position: [number, number] = [place.longitude, place.latitude];
     if (!map.getBounds().contains(position)) map.easeTo({ center: position });
   };
+  const keys = (kind: PlaceRef['kind'], label: string) => (
+    <PlaceKeys
+      label={label}
+      places={places[`${kind}s`]}
+      sentence={props.sentence}
+      chosenId={chosen?.kind === kind ? chosen.id : null}
+      onChoose={(id) => onChoose({ kind, id })}
+      onPoint={pointByKey(kind)}
+    />
+  );
 
   return (
-    <div ref={wrapper} data-sheet-map="" className="@container flex size-full flex-col">
+    <div ref={wrapper} data-sheet-map="" className="flex size-full flex-col">
       <div className="relative min-h-0 flex-1">
         <Neatline map={map} />
-        <div className="absolute isolate overflow-hidden bg-water" style={MARGIN}>
+        <div ref={frame} className="absolute isolate overflow-hidden bg-water" style={MARGIN}>
           <MapView
             ref={hold}
             mapLib={maplibregl}
@@ -89,31 +127,42 @@ export function SheetMap(props: SheetMapProps) {
             attributionControl={false}
             fadeDuration={lessMotion() ? 0 : FADE_MS}
             locale={WORDS}
-            cursor={pointedId === null ? 'grab' : 'pointer'}
+            cursor={heldAt !== null ? 'grabbing' : pointed === null ? 'grab' : 'pointer'}
             onLoad={({ target }) => target.touchZoomRotate.disableRotation()}
             onClick={click}
-            onMouseMove={(event) => setPointedId(stationAt(event))}
-            onMouseOut={() => setPointedId(null)}
+            onMouseDown={onStart}
+            onTouchStart={onStart}
+            onMouseMove={(event) => point(placeAt(event))}
+            onMouseOut={() => point(null)}
           >
             <GraticuleLayer map={map} />
             {children}
-            <StationLayers stations={stations} chosenId={chosenId} pointedId={pointedId} />
-            <SheetEdgeLayer map={map} />
+            <RaisedRings raised={raised} inks={inks} />
+            <PlaceNames kind="station" places={stations} raised={raised} />
+            <PlaceNames kind="site" places={sites} raised={raised} />
+            <PlaceFigures kind="station" places={stations} inks={inks} />
+            <PlaceFigures kind="site" places={sites} inks={inks} />
+            <PlaceMarks kind="station" places={stations} />
+            <PlaceMarks kind="site" places={sites} />
+            <RaisedNames />
+            <PointLayer point={props.point ?? null} />
+            <SheetEdgeLayer map={map} furniture={furniture} />
           </MapView>
-          <StationKeys stations={stations} chosenId={chosenId} onChoose={onChoose} onPoint={pointByKey} />
+          {keys('site', 'Sites on the map')}
+          {keys('station', 'Stations on the map')}
           <ZoomButtons onIn={() => map?.zoomIn()} onOut={() => map?.zoomOut()} onAll={fitAll} />
-          <div className="absolute right-0 bottom-0 flex flex-col items-end">
+          <div data-furniture="" className="absolute right-0 bottom-0 flex flex-col items-end">
             <Scale map={map} units={units} />
             <Sources />
           </div>
-          {legend !== undefined && (
-            <div className="absolute bottom-3 left-3 hidden w-56 border border-ink/60 bg-paper p-3 @xl:block">
+          {isRoomy ? (
+            <div data-furniture="" className="absolute bottom-3 left-3 w-60 border border-ink/60 bg-paper p-3">
               {legend}
             </div>
-          )}
+          ) : null}
         </div>
       </div>
-      {legend !== undefined && <div className="px-7 pt-2 @xl:hidden">{legend}</div>}
+      {isRoomy ? null : <div className="px-7 pt-2">{legend}</div>}
     </div>
   );
 }
@@ -125,103 +174,38 @@ function useSheetStyle(): maplibregl.StyleSpecification {
   }, []);
 }
 
-function firstView({ stations, initialView }: SheetMapProps) {
-  const box = boxAround(stations);
-  if (initialView !== undefined) return { ...initialView };
+type Placed = Pick<SheetMapProps, 'stations' | 'sites'>;
+
+function useAll(stations: readonly SheetPlace[], sites: readonly SheetPlace[]): readonly SheetPlace[] {
+  return useMemo(() => [...stations, ...sites], [stations, sites]);
+}
+
+function firstView({ stations, sites, camera }: SheetMapProps) {
+  const box = boxAround([...stations, ...sites]);
+  if (camera !== null) return { ...camera };
   return box === null ? WORLD : { bounds: toBounds(box), fitBoundsOptions: FIT };
 }
 
-function toBounds([west, south, east, north]: readonly [number, number, number, number]): [
-  number,
-  number,
-  number,
-  number,
-] {
-  return [west, south, east, north];
+interface Attention {
+  readonly chosen: PlaceRef | null;
+  readonly pointed: PlaceRef | null;
+  /** Where the chosen site is held. */
+  readonly heldAt: Position | null;
 }
 
-/** Fits the stations once, when they come after the map; gives the same for the button. */
-function useFit(map: maplibregl.Map | null, { stations, initialView }: SheetMapProps): (() => void) | null {
-  const box = useMemo(() => boxAround(stations), [stations]);
-  const settled = useRef(initialView !== undefined || box !== null);
-  useEffect(() => {
-    if (map === null || box === null || settled.current) return;
-    settled.current = true;
-    map.fitBounds(toBounds(box), { ...FIT, animate: false });
-  }, [map, box]);
-  return box === null ? null : () => map?.fitBounds(toBounds(box), FIT);
-}
-
-/** A station chosen elsewhere (in the ranking, by its address) is brought into the frame; one that is in it moves nothing. */
-function useChosenInView(map: maplibregl.Map | null, { stations, chosenId }: SheetMapProps) {
-  const shownId = useRef<string | null>(null);
-  useEffect(() => {
-    const chosen = stations.find(({ id }) => id === chosenId);
-    if (map === null || chosen === undefined || shownId.current === chosen.id) return;
-    shownId.current = chosen.id;
-    const position: [number, number] = [chosen.longitude, chosen.latitude];
-    if (!map.getBounds().contains(position)) map.easeTo({ center: position });
-  }, [map, stations, chosenId]);
+/** The chosen place and the one under the pointer or the keyboard's cursor; one that is both is chosen. */
+function useRaised({ stations, sites }: Placed, { chosen, pointed, heldAt }: Attention): readonly RaisedPlace[] {
+  return useMemo(() => {
+    const raise = (ref: PlaceRef | null, how: RaisedPlace['how']): RaisedPlace[] => {
+      const place = ref && (ref.kind === 'site' ? sites : stations).find(({ id }) => id === ref.id);
+      return ref && place ? [{ place: { ...place, ...heldAt }, kind: ref.kind, how }] : [];
+    };
+    if (heldAt !== null) return raise(chosen, 'held');
+    return [...raise(chosen, 'chosen'), ...(isSame(chosen, pointed) ? [] : raise(pointed, 'pointed'))];
+  }, [stations, sites, chosen, pointed, heldAt]);
 }
 
 /** MapLibre itself turns flights into jumps for readers who want less motion; the fading of names is left to us. */
 function lessMotion(): boolean {
   return window.matchMedia('(prefers-reduced-motion: reduce)').matches;
-}
-
-/** The station under the pointer, the nearest where several are in reach. */
-function stationAt({ target: map, point }: MapLayerMouseEvent): string | null {
-  if (map.getLayer(STATION_MARKS) === undefined) return null;
-  const box: [maplibregl.PointLike, maplibregl.PointLike] = [
-    [point.x - REACH_PX, point.y - REACH_PX],
-    [point.x + REACH_PX, point.y + REACH_PX],
-  ];
-  let nearest: { id: string; distance: number } | null = null;
-  for (const { geometry, properties } of map.queryRenderedFeatures(box, { layers: [STATION_MARKS] })) {
-    if (geometry.type !== 'Point') continue;
-    const [longitude = 0, latitude = 0] = geometry.coordinates;
-    const distance = map.project([longitude, latitude]).dist(point);
-    if (nearest === null || distance < nearest.distance) nearest = { id: String(properties.id), distance };
-  }
-  return nearest?.id ?? null;
-}
-
-/** Draws the picture of a station or a town when the map first needs it. */
-function usePictures(map: maplibregl.Map | null) {
-  useEffect(() => {
-    if (map === null) return;
-    const pixelRatio = Math.max(2, window.devicePixelRatio);
-    map.setMissingStyleImageResolver(async (name) => {
-      const picture = pictureOf(name, pixelRatio);
-      if (picture !== null && !map.hasImage(name)) map.addImage(name, picture, { pixelRatio });
-    });
-    return () => {
-      map.setMissingStyleImageResolver(null);
-    };
-  }, [map]);
-}
-
-function pictureOf(name: string, pixelRatio: number): Pixels | null {
-  if (name === SHEET_EDGE) return paintPixels({ sizePx: 1, pixelRatio }, () => NOTHING);
-  const mark = markNamed(name);
-  return mark === null ? drawTownDot(name, pixelRatio) : drawMark(mark, pixelRatio);
-}
-
-/** `data-idle` stands on the sheet while everything asked for is drawn: what a test waits for. */
-function useIdleMark(map: maplibregl.Map | null, wrapper: RefObject<HTMLDivElement | null>) {
-  // After every change of what is to be drawn: not idle until the map has said so again.
-  useEffect(() => {
-    wrapper.current?.removeAttribute('data-idle');
-    map?.triggerRepaint();
-  });
-  useEffect(() => {
-    const busy = () => wrapper.current?.removeAttribute('data-idle');
-    const idle = () => wrapper.current?.setAttribute('data-idle', '');
-    map?.on('render', busy);
-    map?.on('idle', idle);
-    return () => {
-      map?.off('render', busy);
-      map?.off('idle', idle);
-    };
-  }, [map, wrapper]);
 }

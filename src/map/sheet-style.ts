@@ -12,8 +12,8 @@ export const SHEET = {
   halo: '#f4f0e6',
 } as const;
 
-/** What lies under borders, coast and names (a surface, cells, relief) is put before this layer. */
-export const BELOW_LINES = 'border';
+/** What lies under relief, borders, coast and names (a surface, its cells) is put before this layer. */
+export const BELOW_LINES = 'relief-shading';
 /** What lies under names but over lines is put before this layer. */
 export const BELOW_NAMES = 'water-name';
 
@@ -22,6 +22,9 @@ export const TOWN_DOT = 'town';
 export const CAPITAL_DOT = 'capital';
 
 const SOURCE = 'base';
+const RELIEF = 'relief';
+/** Zooms of the heights that the server tells; beyond the last they are enlarged. */
+const RELIEF_ZOOMS = { minzoom: 3, maxzoom: 6 } as const;
 /** The largest zoom of the shipped tiles; beyond it the client enlarges them. */
 const TILE_ZOOM = 7;
 
@@ -38,8 +41,17 @@ export function sheetStyle({ origin, fonts, faces }: SheetStyleOptions): StyleSp
   return {
     version: 8,
     'font-faces': fonts,
-    sources: { [SOURCE]: { type: 'vector', tiles: [`${origin}/tiles/{z}/{x}/{y}.mvt`], maxzoom: TILE_ZOOM } },
-    layers: [...groundLayers(), ...lineLayers(), waterNames(faces.italic), ...landNames(faces.roman)],
+    sources: {
+      [SOURCE]: { type: 'vector', tiles: [`${origin}/tiles/{z}/{x}/{y}.mvt`], maxzoom: TILE_ZOOM },
+      [RELIEF]: {
+        type: 'raster-dem',
+        tiles: [`${origin}/relief/{z}/{x}/{y}.png`],
+        tileSize: 256,
+        encoding: 'terrarium',
+        ...RELIEF_ZOOMS,
+      },
+    },
+    layers: [...groundLayers(), shading(), ...lineLayers(), waterNames(faces.italic), ...landNames(faces.roman)],
   };
 }
 
@@ -55,6 +67,23 @@ function groundLayers(): LayerSpecification[] {
       paint: { 'fill-color': SHEET.land, 'fill-antialias': false },
     },
   ];
+}
+
+/** Light from the north-west, as on printed sheets; shadows alone, so that the paper keeps its tone. */
+function shading(): LayerSpecification {
+  return {
+    id: BELOW_LINES,
+    type: 'hillshade',
+    source: RELIEF,
+    paint: {
+      'hillshade-illumination-direction': 315,
+      'hillshade-illumination-anchor': 'map',
+      'hillshade-exaggeration': 0.35,
+      'hillshade-shadow-color': 'rgba(72, 64, 44, 0.55)',
+      'hillshade-highlight-color': 'rgba(255, 252, 240, 0.35)',
+      'hillshade-accent-color': 'rgba(72, 64, 44, 0.12)',
+    },
+  };
 }
 
 function lineLayers(): LayerSpecification[] {

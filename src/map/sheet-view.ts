@@ -20,6 +20,17 @@ export function parallelY(view: SheetView, latitude: number): number {
   return ((top - mercatorHeight(latitude)) / (top - mercatorHeight(view.south))) * view.heightPx;
 }
 
+/** The meridian so many pixels from the left edge. */
+export function longitudeAt(view: SheetView, x: number): number {
+  return view.west + (x / view.widthPx) * (view.east - view.west);
+}
+
+/** The parallel so many pixels from the top edge; on Mercator's sheet half way down is not half way in degrees. */
+export function latitudeAt(view: SheetView, y: number): number {
+  const top = mercatorHeight(view.north);
+  return parallelOf(top - (y / view.heightPx) * (top - mercatorHeight(view.south)));
+}
+
 export function degreesPerPixel(view: SheetView): number {
   return (view.east - view.west) / view.widthPx;
 }

@@ -23,6 +23,8 @@ interface HourGridCanvasProps {
   readonly read: (slot: number) => string;
   /** The hour that is in view elsewhere; marked. */
   readonly chosen?: number | null;
+  /** Told which hour is read, so that more of it can be fetched; null: none. */
+  readonly onRead?: (slot: number | null) => void;
   /** Called when an hour is pressed, or Enter is. */
   readonly onChoose?: (slot: number) => void;
 }
@@ -36,10 +38,23 @@ interface Cell {
  * A year of hours on a canvas, with its months. The pointer or the arrow keys read an hour: arrows go by the hour and the
  * day, Page Up and Page Down by four weeks, Home and End to the year's first and last day.
  */
-export function HourGridCanvas({ days, heightPx, label, draw, read, chosen = null, onChoose }: HourGridCanvasProps) {
+export function HourGridCanvas({
+  days,
+  heightPx,
+  label,
+  draw,
+  read,
+  chosen = null,
+  onRead,
+  onChoose,
+}: HourGridCanvasProps) {
   const frame = useRef<HTMLDivElement>(null);
   const { widthPx, ratio } = useWidth(frame);
-  const [cell, setCell] = useState<Cell | null>(null);
+  const [cell, setRead] = useState<Cell | null>(null);
+  const setCell = (next: Cell | null) => {
+    setRead(next);
+    onRead?.(next === null ? null : next.day * HOURS + next.hour);
+  };
   const said = cell ? read(cell.day * HOURS + cell.hour) : null;
   const choose = () => {
     if (cell) onChoose?.(cell.day * HOURS + cell.hour);

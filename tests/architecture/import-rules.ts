@@ -73,7 +73,7 @@ export const importRules: readonly ImportRule[] = [
   },
   {
     from: 'server/db/**',
-    may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'pg-copy-streams', 'node:*'],
+    may: ['server/db/**', ...serverWords, ...pure, 'knex', 'pg', 'pg-copy-streams', 'node:**'],
   },
   {
     from: 'server/jobs/**',
@@ -133,7 +133,14 @@ export const importRules: readonly ImportRule[] = [
       // The wrappers of zip and gzip: verbs say what becomes of what is inside.
       ...['server/storage/original-store.ts', 'server/storage/zip-members.ts', 'server/storage/inflate-gzip.ts'],
       ...['server/jobs/thread-pool.ts', 'server/jobs/web-*.ts', 'server/jobs/year-*.ts'],
-      ...['node:**', '@node-rs/argon2', '@photostructure/tz-lookup', 'data/presets/presets.json', 'data/checks/'],
+      ...[
+        'node:**',
+        '@node-rs/argon2',
+        '@photostructure/tz-lookup',
+        'h3-js',
+        'data/presets/presets.json',
+        'data/checks/',
+      ],
     ],
     mayTypes: ['knex', ...requestTypes],
   },
@@ -153,9 +160,9 @@ export const importRules: readonly ImportRule[] = [
   },
   { from: 'server/log.ts', may: [] },
   { from: 'server/config.ts', may: ['zod/mini', 'node:*'], mayTypes: ['server/storage/s3-store.ts'] },
-  { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'] },
+  { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'], mayTypes: ['src/engine/**'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
-  { from: 'server/*-thread.ts', may: ['server/features/**', 'server/jobs/**'] },
+  { from: 'server/*-thread.ts', may: ['server/features/**', 'server/jobs/**', 'server/tiles/relief.ts'] },
   { from: 'server/worker.ts', may: ['server/**', ...pure, 'node:*'] },
   { from: 'server/builders/**', may: ['server/**', ...pure, 'node:**'], mayTypes: ['knex'] },
   {

@@ -5,6 +5,13 @@ import { rankBench } from './definitions/rank.ts';
 import { readBench } from './definitions/read.ts';
 import { growthBench, rescoreBench, rescoreThreadsBench } from './definitions/rescore.ts';
 import { loadBench, sizeBench } from './definitions/station-years.ts';
+import {
+  leaveOneOutBench,
+  leaveOneOutGrowthBench,
+  surfaceBuildBench,
+  surfaceGrowthBench,
+  surfaceSlideBench,
+} from './definitions/surface.ts';
 import { secondWetBulbBench, wetBulbBench } from './definitions/wet-bulb.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
 
@@ -19,6 +26,11 @@ export const benches: readonly Bench[] = [
   rescoreThreadsBench,
   growthBench,
   rankBench,
+  surfaceBuildBench,
+  surfaceSlideBench,
+  surfaceGrowthBench,
+  leaveOneOutBench,
+  leaveOneOutGrowthBench,
   loadBench,
   sizeBench,
 ];

@@ -65,7 +65,7 @@ export async function withStationYears<T>(
   work: (cluster: StationYearCluster) => Promise<T>,
 ): Promise<T> {
   return await withEmptyTeam(async (team) => {
-    await fill(team);
+    await fillWithClimates(team);
     await cloneStationYears(team.ownerDb, { teamId: team.teamId, stations: stations - CLIMATES });
     await team.ownerDb.raw('analyze');
     return await work(team);
@@ -81,7 +81,13 @@ async function makeBenchTeam(db: Knex): Promise<{ teamId: string; personId: stri
   return { teamId, personId };
 }
 
-async function fill({ db, home, teamId, personId }: EmptyTeam): Promise<void> {
+/** Invented typical years of a few climates, read and accepted by the main road. */
+export async function fillWithClimates({
+  db,
+  home,
+  teamId,
+  personId,
+}: Pick<EmptyTeam, 'db' | 'home' | 'teamId' | 'personId'>): Promise<void> {
   const deps = { db, storage: createFolderStore(path.join(home, 'originals')), now: () => new Date() };
   for (let nth = 0; nth < CLIMATES; nth++) {
     const { name, text } = demoEpw(nth);

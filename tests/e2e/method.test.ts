@@ -41,7 +41,7 @@ test('the method page runs every published check in the browser, every one holds
   await signIn(page, ACCOUNT);
   await page.getByRole('link', { name: 'Method', exact: true }).click();
   await page.getByRole('heading', { name: 'Method', level: 1 }).waitFor();
-  await page.getByText(/^37 checks: (\d+) of \1 values hold\.$/).waitFor();
+  await page.getByText(/^38 checks: (\d+) of \1 values hold\.$/).waitFor();
 
   const checks = page.getByRole('list', { name: 'Checks' }).getByRole('listitem');
   const summaries = await checks.locator('summary').allInnerTexts();

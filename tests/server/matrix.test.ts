@@ -83,10 +83,19 @@ const matrix: Record<EndpointName, readonly number[]> = {
   uploadWeatherArchive: uploadersOnly,
   retryWeatherArchive: uploadersInVain,
   watchTeam: readersToo,
+  findPlaces: readersToo,
   getMap: readersToo,
+  getSurface: readersToo,
+  judgeSurface: readersToo,
+  getEstimate: readersToo,
   getDepressionMap: readersToo,
   getStationPlace: readersToo,
   getSitePlace: readersToo,
+  listRunHours: readersToo,
+  rankPlaces: readersToo,
+  getRun: readersToo,
+  judgeRange: readersToo,
+  findWhatWouldPass: readersToo,
   getRunHours: readersToo,
   exportRunHours: plannersToo,
   rescore: readersToo,
@@ -193,6 +202,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   }
   if (name === 'mergeStations') return JSON.stringify({ otherStationId: ids.stationId, reason: 'A test.' });
   if (name === 'setRuleOff') return JSON.stringify({ reason: 'A test.' });
+  if (name === 'judgeRange' || name === 'findWhatWouldPass' || name === 'rankPlaces') return '{}';
   if (name === 'makeSite') return JSON.stringify({ name: `Site of ${caller}`, latitude: 10, longitude: 20 });
   if (name === 'changeSite') return JSON.stringify({ revision: 1, notes: `Seen by ${caller}.` });
   if (name === 'moveSite') return JSON.stringify({ revision: 1, latitude: 11, longitude: 20 });
@@ -213,7 +223,7 @@ function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
   if (name === 'makeBrief') return JSON.stringify({ name: `Brief of ${caller}`, preset: 'office' });
   if (name === 'saveBriefVersion') return JSON.stringify({ basedOn: 1, body: officeBrief() });
   if (name === 'previewBrief') return JSON.stringify({ stationId: ids.stationId, body: officeBrief() });
-  if (name === 'rescore') return JSON.stringify({ body: officeBrief() });
+  if (name === 'rescore' || name === 'judgeSurface') return JSON.stringify({ body: officeBrief() });
   if (name !== 'setUp') return null;
   const team = { teamName: 'Second', name: 'Second', email: 'second@example.org', password: PASSWORD };
   return JSON.stringify({ key: 'never-made', ...team });
@@ -229,6 +239,8 @@ function changeOf(name: 'previewDerivedYear' | 'deriveWeatherYear'): string {
 function queryOf(name: EndpointName): string {
   if (name === 'compareBriefVersions') return '?from=1&to=1';
   if (name === 'getDepressionMap') return '?atLeastK=5&months=6,7';
+  if (name === 'findPlaces') return '?text=Korrel';
+  if (name === 'getEstimate') return '?latitude=-24.5&longitude=25.5';
   if (name === 'getGround') return '?latitude=10&longitude=20';
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
@@ -347,6 +359,7 @@ beforeAll(async () => {
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
+  ids = { ...ids, placeKind: 'stations', placeId: stationId };
   ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };
   ids = { ...ids, fileId, stationId, runId: place.shown.runId, briefId: briefs.items[0]?.briefId ?? '', version: '1' };
   for (const caller of ['engineer', 'lead'] as const) ownFiles.set(caller, await uploadAndRead(`of ${caller}`));

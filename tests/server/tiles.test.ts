@@ -1,7 +1,10 @@
 import { fileURLToPath } from 'node:url';
 import express from 'express';
+import { PNG } from 'pngjs';
 import request from 'supertest';
 import { describe, expect, it } from 'vitest';
+import { shippedRelief } from '../../server/tiles/relief.ts';
+import { reliefRouter } from '../../server/tiles/relief-router.ts';
 import { tilesRouter } from '../../server/tiles/tiles-router.ts';
 
 const BASEMAP = fileURLToPath(new URL('../../data/basemap/basemap.pmtiles', import.meta.url));
@@ -88,5 +91,61 @@ describe('base map tiles', () => {
 
   it('does not come up without its archive', () => {
     expect(() => tilesRouter('/nowhere/basemap.pmtiles')).toThrow('ENOENT');
+  });
+});
+
+describe('relief tiles', () => {
+  const shaded = express().use(reliefRouter(shippedRelief()));
+  const picture = (path: string) =>
+    request(shaded)
+      .get(path)
+      .buffer(true)
+      .parse((response, done) => {
+        const parts: Buffer[] = [];
+        response.on('data', (part: Buffer) => parts.push(part));
+        response.on('end', () => done(null, Buffer.concat(parts)));
+      });
+
+  /** Heights of a tile as MapLibre defines the terrarium encoding: red x 256 + green + blue / 256 - 32768. */
+  function heights(png: Buffer): (column: number, row: number) => number {
+    const { data, width } = PNG.sync.read(png);
+    return (column, row) => {
+      const at = 4 * (row * width + column);
+      return (data[at] ?? 0) * 256 + (data[at + 1] ?? 0) + (data[at + 2] ?? 0) / 256 - 32_768;
+    };
+  }
+
+  it('tell the heights of the ground at the middles of their pixels, and 0 at sea', async () => {
+    const answer = await picture('/relief/6/37/36.png');
+    expect(answer.status).toBe(200);
+    expect(answer.headers['content-type']).toBe('image/png');
+    const heightAt = heights(answer.body);
+    const relief = shippedRelief();
+    for (const [column, row] of [
+      [0, 0],
+      [100, 37],
+      [120, 200],
+    ] as const) {
+      const longitude = ((37 * 256 + column + 0.5) / (256 * 64)) * 360 - 180;
+      const latitude =
+        (Math.atan(Math.sinh(Math.PI * (1 - (2 * (36 * 256 + row + 0.5)) / (256 * 64)))) * 180) / Math.PI;
+      expect(heightAt(column, row)).toBe(Math.round(relief.heightM(latitude, longitude)));
+      expect(heightAt(column, row)).toBeGreaterThan(300);
+    }
+    expect(heights((await picture('/relief/6/26/36.png')).body)(10, 10)).toBe(0);
+  });
+
+  it('are kept by browsers, and asked for again by their fingerprint', async () => {
+    const first = await picture('/relief/3/4/4.png');
+    expect(first.headers['cache-control']).toContain('max-age=86400');
+    const again = await picture('/relief/3/4/4.png').set('If-None-Match', String(first.headers.etag));
+    expect(again.status).toBe(304);
+  });
+
+  it('have no other zoom, no place outside the world, and no other name', async () => {
+    const statuses = async (names: string[]) =>
+      Promise.all(names.map(async (name) => (await picture(`/relief/${name}.png`)).status));
+    expect(await statuses(['2/0/0', '7/0/0', '3/8/0', '6/0/64'])).toEqual([404, 404, 404, 404]);
+    expect(await statuses(['-3/0/0', '3/a/0', '03/0/0', '3/1.5/0'])).toEqual([400, 400, 400, 400]);
   });
 });

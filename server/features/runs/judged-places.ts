@@ -1,11 +1,10 @@
 /** What stations, and sites at their own heights, come to under a brief version, from the stored runs in short. */
-import type { Brief } from '#engine/brief/brief.ts';
-import { hourClasses } from '#engine/hour-classes/hour-class.ts';
+import type { Brief, ScoreComponent } from '#engine/brief/brief.ts';
 import { isIndexLimit } from '#engine/hour-classes/index-limit.ts';
 import type { ScorePart } from '#engine/run/run-result.ts';
 import { type PlaceFigures, placeFigures } from '#engine/score/place-figures.ts';
-import { type RawComponents, weightedScore } from '#engine/score/weighted-score.ts';
-import { gradeOfYears, type WhereItStands } from './grade-of-years.ts';
+import { weightedScore } from '#engine/score/weighted-score.ts';
+import { type YearsOfGrade, type YearToGrade, yearsOfGrade } from './grade-of-years.ts';
 import type { AcceptedYear, RunInShort, StationPlace } from './places-read-model.ts';
 import type { FiguresOfPlace, ShownYear } from './present-figures.ts';
 
@@ -29,6 +28,8 @@ export interface YearInShort {
 export interface JudgedPlace {
   readonly figures: PlaceFigures<YearInShort>;
   readonly wire: FiguresOfPlace;
+  /** What its years bring to the grade of whoever stands there. */
+  readonly grading: YearsOfGrade;
   /** Years whose run at this height is still to come. */
   readonly pending: number;
 }
@@ -36,7 +37,6 @@ export interface JudgedPlace {
 export interface JudgedPlaces {
   /** The place that a station's weather makes at a height; sites of the same height share it. */
   at(stationId: string, heightM: number): JudgedPlace;
-  gradeAt(stationId: string, at: WhereItStands & { heightM: number }): ReturnType<typeof gradeOfYears>;
 }
 
 export function makeJudgedPlaces(on: {
@@ -69,18 +69,15 @@ export function makeJudgedPlaces(on: {
       judged.set(key, place);
       return place;
     },
-    gradeAt(stationId, { heightM, ...at }) {
-      const own = yearsOf.get(stationId) ?? [];
-      return gradeOfYears(
-        own.map((year) => ({ ...year, usable: runOf(year, heightM)?.usable ?? true })),
-        at,
-      );
-    },
   };
 }
 
 function keyAt(run: { weatherYearId: string; heightM: number; adjustedFromM: number | null }): string {
   return `${run.weatherYearId} ${run.heightM} ${run.adjustedFromM}`;
+}
+
+function toGrade({ kind, hours, measuredHours, flagsUniform }: AcceptedYear, usable: boolean): YearToGrade {
+  return { kind, hours, measuredHours, flagsUniform, usable };
 }
 
 interface YearWithRun {
@@ -92,15 +89,19 @@ function judgePlace(brief: Brief, years: readonly YearWithRun[]): JudgedPlace {
   const judged = years.flatMap(({ weather, run }) => (run === undefined ? [] : [yearInShort(brief, weather, run)]));
   const figures = placeFigures({ brief, runs: judged });
   const open = years.filter(({ run }) => run === undefined);
-  const { score, words, verdict, yearsMeeting, range, shown } = figures;
   return {
     figures,
     pending: open.filter(({ weather }) => !weather.failed).length,
+    grading: yearsOfGrade(years.map(({ weather, run }) => toGrade(weather, run?.usable ?? true))),
     wire: {
-      ...{ score, words, verdict, yearsMeeting, range },
+      score: figures.score,
+      words: figures.words,
+      verdict: figures.verdict,
+      yearsMeeting: figures.yearsMeeting,
+      range: figures.range,
       scoreNote: judged.length === 0 ? noteWithoutRun(open.map(({ weather }) => weather)) : figures.scoreNote,
       yearsCounted: figures.runs.length,
-      shown: shown === null ? null : shownYear(shown.run),
+      shown: figures.shown === null ? null : shownYear(figures.shown.run),
     },
   };
 }
@@ -114,18 +115,28 @@ function yearInShort(brief: Brief, weather: AcceptedYear, run: RunInShort): Year
 
 /** The parts of a run as its result has them, formed from the raw figures alone. */
 function partsOf(brief: Brief, { rawComponents }: RunInShort): readonly ScorePart[] {
-  const raw: RawComponents = {
-    ...{ served: null, severity: null, spell: null, damp: null, water: null, electricity: null, 'worst-year': null },
-    ...Object.fromEntries(brief.score.map(({ component }, at) => [component, rawComponents[at] ?? null])),
+  const raw: Record<ScoreComponent, number | null> = {
+    served: null,
+    severity: null,
+    spell: null,
+    damp: null,
+    water: null,
+    electricity: null,
+    'worst-year': null,
   };
+  for (const [at, { component }] of brief.score.entries()) raw[component] = rawComponents[at] ?? null;
   return weightedScore(brief.score, raw, { indexPoints: isIndexLimit(brief.limit) }).parts;
 }
 
 function shownYear(run: RunInShort): ShownYear {
   const { classes, demand, met, litresPerKwh, savedPct, worstSpellHours, severityKh } = run;
   return {
-    classes: hourClasses.map((hourClass) => classes[hourClass]),
-    ...{ demand, met, litresPerKwh, savedPct, severityKh },
+    classes,
+    demand,
+    met,
+    litresPerKwh,
+    savedPct,
+    severityKh,
     worstSpellHours: worstSpellHours ?? 0,
   };
 }

@@ -1,7 +1,7 @@
 import type { Knex } from 'knex';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
-import type { GradeAnswer } from '#engine/score/grade-place.ts';
+import { type GradeAnswer, gradePlace } from '#engine/score/grade-place.ts';
 import { siteGates, withSiteGates } from '#engine/score/site-gates.ts';
 import type { ProgrammeBrief } from '../briefs/brief-read-model.ts';
 import { type ResolvedSite, sitesOfProgramme } from '../sites/resolved-sites-read-model.ts';
@@ -38,14 +38,25 @@ export interface PlacesUnderBrief {
 /** Every station of the team and every site of the programme under a brief version, from stored runs. */
 export async function programmePlaces(
   db: Knex,
-  { teamId, programmeId, brief }: { teamId: string; programmeId: string; brief: ProgrammeBrief },
+  {
+    teamId,
+    programmeId,
+    brief,
+    sites: resolved,
+  }: {
+    teamId: string;
+    programmeId: string;
+    brief: ProgrammeBrief;
+    /** Where the caller has them already. */
+    sites?: readonly ResolvedSite[];
+  },
 ): Promise<PlacesUnderBrief> {
   const { briefVersionId, body } = brief;
   const [stations, years, runs, sites] = await Promise.all([
     listStationPlaces(db, teamId),
     listAcceptedYears(db, teamId),
     listRunsInShort(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION }),
-    sitesOfProgramme(db, { teamId, programmeId }),
+    resolved ?? sitesOfProgramme(db, { teamId, programmeId }),
   ]);
   const places = makeJudgedPlaces({ brief: body, stations, years, runs });
   const elevations = new Map(stations.map(({ id, elevationM }) => [id, elevationM]));
@@ -53,8 +64,7 @@ export async function programmePlaces(
   const judgedStations = stations.map((station) => {
     const judged = places.at(station.id, station.elevationM);
     seen.add(judged);
-    const grade = places.gradeAt(station.id, { ...AT_THE_STATION, heightM: station.elevationM });
-    return { station, judged, grade };
+    return { station, judged, grade: gradeAt(judged, AT_THE_STATION) };
   });
   const judgedSites = sites.map((site) => {
     const judged = judgeSite(site, { places, elevations, brief });
@@ -65,8 +75,22 @@ export async function programmePlaces(
   return { stations: judgedStations, sites: judgedSites, pending };
 }
 
+/** Every property by name: thousands are graded at once, and spreading two objects into a third takes longer than the grading. */
+function gradeAt({ grading }: JudgedPlace, at: WhereItStands): GradeAnswer {
+  return gradePlace({
+    distanceKm: at.distanceKm,
+    heightDifferenceM: at.heightDifferenceM,
+    heightFromRelief: at.heightFromRelief ?? false,
+    years: grading.years,
+    measuredSharePct: grading.measuredSharePct,
+    flagsInformative: grading.flagsInformative,
+    kind: grading.kind,
+  });
+}
+
 /** Where a site stands to its station, as its grade sees it. */
-export function whereSiteStands({ station, elevationSource }: ResolvedSite): WhereItStands {
+export function whereSiteStands(site: ResolvedSite): WhereItStands {
+  const { station, elevationSource } = site;
   return {
     distanceKm: station?.distanceKm ?? Number.POSITIVE_INFINITY,
     heightDifferenceM: station?.heightDifferenceM ?? 0,
@@ -87,7 +111,7 @@ function judgeSite(
   }
   const height = heightUsed(site, stationElevationM);
   const judged = places.at(site.station.id, height.heightM);
-  const { grade } = places.gradeAt(site.station.id, { ...whereSiteStands(site), heightM: height.heightM });
+  const { grade } = gradeAt(judged, whereSiteStands(site));
   return { site, height, judged, wire: withSiteGates(judged.wire, gates), gates, grade };
 }
 

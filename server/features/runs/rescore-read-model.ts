@@ -19,6 +19,8 @@ export interface YearToRescore {
   /** Hours whose dry bulb and humidity are both as the source measured them. */
   readonly measuredHours: number;
   readonly flagsUniform: boolean;
+  /** Which column of the file its humidity was read from. */
+  readonly humidityFrom: string;
 }
 
 /** Every accepted year of the team's stations, by station name, newest file first: the order of the map. */
@@ -27,7 +29,7 @@ export async function listYearsToRescore(db: Knex, teamId: string): Promise<read
     `select stations.id as "stationId", stations.zone, stations.latitude, stations.longitude,
        stations.elevation_m as "elevationM", weather_years.id as "weatherYearId", weather_years.kind, weather_years.year,
        weather_years.utc_offset_min as "utcOffsetMin", weather_years.slots, weather_years.content_hash as "contentHash",
-       (weather_years.facts ->> 'measuredHours')::integer as "measuredHours",
+       weather_years.measured_hours as "measuredHours", weather_years.humidity_from as "humidityFrom",
        exists (
          select 1 from findings
          where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'

@@ -2,6 +2,7 @@ import type { Brief } from '#engine/brief/brief.ts';
 import type { WeatherYear } from '#engine/reduction/weather-year.ts';
 import { judgeYear } from '#engine/run/judge-year.ts';
 import { placeFigures } from '#engine/score/place-figures.ts';
+import { rawOfParts } from '#engine/score/raw-of-parts.ts';
 import type { RescoredStation, RescoreTask, ShownResult, StationToRescore } from '../../jobs/web-task.ts';
 import { keptYear } from './kept-years.ts';
 import { runResultHash } from './run-key.ts';
@@ -39,6 +40,7 @@ function rescoreStation(station: StationToRescore, on: { brief: Brief; withHashe
     usable: runs.flatMap(({ weatherYearId, kind, result }) =>
       kind !== 'derived' && result.usable ? [weatherYearId] : [],
     ),
+    raw: rawOfParts(figures.parts),
     resultHashes: runs.flatMap(({ weatherYearId, resultHash }) =>
       resultHash === null ? [] : [{ weatherYearId, resultHash }],
     ),

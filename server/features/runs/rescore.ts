@@ -10,6 +10,7 @@ import { heightUsed } from './height-used.ts';
 import { presentRescoredSite, presentRescoredStation, type SiteToRescore } from './present-rescored.ts';
 import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
+import type { ScoredStation } from './surface.ts';
 
 export type RescoreThreads = Pick<WebThreads, 'threads' | 'rescore'>;
 
@@ -37,6 +38,35 @@ export interface RescoreAsked {
  */
 export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise<RescoreAnswer> {
   const begun = performance.now();
+  const { stations, sites, byStation, judged, loadMs } = await judgeUnder(parts, asked);
+  const yearsOf = (stationId: string) => byStation.get(stationId) ?? [];
+  return {
+    methodVersion: METHOD_VERSION,
+    stations: stations.map((station) => presentRescoredStation(station, yearsOf(station.stationId))),
+    sites: sites.map((site) => {
+      const found = site.place === null ? undefined : judged.get(keyOf(site.place));
+      return presentRescoredSite(site, { brief: asked.brief, judged: found, years: yearsOf(found?.stationId ?? '') });
+    }),
+    judged: judgedYears(
+      stations.flatMap(({ stationId }) => yearsOf(stationId)),
+      stations,
+    ),
+    loadMs,
+    totalMs: performance.now() - begun,
+  };
+}
+
+interface JudgedUnder {
+  /** The stations that were asked for, at their own heights, in the order of the map. */
+  readonly stations: readonly RescoredStation[];
+  readonly sites: readonly SiteToRescore[];
+  readonly byStation: ReadonlyMap<string, readonly [YearToRescore, ...YearToRescore[]]>;
+  /** Every station at every height that it was judged at. */
+  readonly judged: ReadonlyMap<string, RescoredStation>;
+  readonly loadMs: number;
+}
+
+async function judgeUnder(parts: RescoreParts, asked: RescoreAsked): Promise<JudgedUnder> {
   const [all, resolved] = await Promise.all([
     listYearsToRescore(parts.db, asked.teamId),
     asked.siteIds.length === 0 ? [] : sitesOfProgramme(parts.db, asked),
@@ -57,25 +87,26 @@ export async function rescore(parts: RescoreParts, asked: RescoreAsked): Promise
     const stations = stationsOf(batch, columns).flatMap((station) => atHeights(station, heights));
     for (const each of await judgeBatch(parts.threads, { ...asked, stations })) judged.set(keyOf(each), each);
   }
-  const own = [...byStation].flatMap(([stationId, [{ elevationM }]]) => {
+  const stations = [...byStation].flatMap(([stationId, [{ elevationM }]]) => {
     const station = wanted.has(stationId) ? judged.get(keyOf({ stationId, heightM: elevationM })) : undefined;
     return station === undefined ? [] : [station];
   });
-  const yearsOf = (stationId: string) => byStation.get(stationId) ?? [];
-  return {
-    methodVersion: METHOD_VERSION,
-    stations: own.map((station) => presentRescoredStation(station, yearsOf(station.stationId))),
-    sites: sites.map((site) => {
-      const found = site.place === null ? undefined : judged.get(keyOf(site.place));
-      return presentRescoredSite(site, { brief: asked.brief, judged: found, years: yearsOf(found?.stationId ?? '') });
-    }),
-    judged: judgedYears(
-      years.filter(({ stationId }) => wanted.has(stationId)),
-      own,
-    ),
-    loadMs,
-    totalMs: performance.now() - begun,
-  };
+  return { stations, sites, byStation, judged, loadMs };
+}
+
+/** The stations of the team that have a score under a draft, with what it was formed of. @throws as `rescore` */
+export async function scoredUnder(
+  parts: RescoreParts,
+  asked: Omit<RescoreAsked, 'stationIds' | 'siteIds' | 'withHashes'>,
+): Promise<readonly ScoredStation[]> {
+  const all = { ...asked, stationIds: null, siteIds: [], withHashes: false };
+  const { stations, byStation } = await judgeUnder(parts, all);
+  return stations.flatMap(({ stationId, score, raw }) => {
+    const place = byStation.get(stationId)?.[0];
+    if (score === null || place === undefined) return [];
+    const { latitude, longitude, elevationM } = place;
+    return [{ latitude, longitude, elevationM, raw }];
+  });
 }
 
 function keyOf({ stationId, heightM }: { stationId: string; heightM: number }): string {

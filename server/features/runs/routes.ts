@@ -1,10 +1,13 @@
 import type { Router } from 'express';
 import { getDepressionMap } from '#contract/depression-map.ts';
+import { listRunHours as listHoursEndpoint } from '#contract/hour-list.ts';
+import { findWhatWouldPass, judgeRange } from '#contract/place-doubts.ts';
 import { getMap } from '#contract/programme-map.ts';
+import { rankPlaces as rankEndpoint } from '#contract/ranking.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
-import { getSitePlace, getStationPlace } from '#contract/runs.ts';
-import type { Brief } from '#engine/brief/brief.ts';
+import { getRun, getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
@@ -12,33 +15,43 @@ import { mount } from '../../http/mount.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
-import { type ExportParts, exportRunHours } from './export-run-hours.ts';
+import { estimatePlace } from './estimate-place.ts';
+import { exportRunHours } from './export-run-hours.ts';
 import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
+import { makeLinesOfYears } from './lines-of-years.ts';
+import { listRunHours } from './list-run-hours.ts';
+import { judgePlaceRange, whatWouldPass } from './place-doubts.ts';
+import { placeToJudge } from './place-to-judge.ts';
 import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
+import { presentRun } from './present-run.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
-import { type RescoreThreads, rescore } from './rescore.ts';
+import { rankProgramme } from './rank-programme.ts';
+import { rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
+import { findRunRecord } from './run-record-read-model.ts';
+import type { RunsParts } from './runs-parts.ts';
+import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
+import { surfaceOf } from './surface.ts';
+import { makeSurfaceGrounds } from './surface-ground.ts';
 
 /** Packed columns kept for re-scoring: some 8,700 weather years, whatever the number of teams. */
 const CACHED_BYTES = 512 * 1024 * 1024;
 /** Previews at once, over all people: each may keep every thread for a while. */
 const MOST_PREVIEWS = 16;
 
-/** What runs need of the other parts, handed in where the server is wired. */
-export interface RunsParts {
-  readonly threads: RescoreThreads;
-  readonly yearThread: ExportParts['yearThread'];
-  /** The brief in a request's body, or every fault of it at its path. */
-  readonly readDraft: (draft: unknown) => Brief;
-}
-
-export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, readDraft }: RunsParts): void {
+export function runsRoutes(
+  router: Router,
+  deps: Deps,
+  { threads, relief, yearThread, readDraft, originalToRead }: RunsParts,
+): void {
   const { db } = deps;
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
+  const lines = makeLinesOfYears({ yearThread, originalToRead });
+  const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
@@ -52,6 +65,28 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
       sites: sites.map(presentMapSite),
       pending,
     };
+  });
+
+  mount(router, deps, getSurface, async ({ params: { teamId, programmeId }, query }, { signal }) => {
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
+    const stations = await scoredStations(db, { teamId, brief });
+    return surfaceOf(grounds, { stations, anchors: brief.body.score, held: query.held, signal });
+  });
+
+  mount(router, deps, judgeSurface, async ({ params: { teamId, programmeId }, body: { body, held } }, { signal }) => {
+    const brief = readDraft(body);
+    await briefOfProgramme(db, { teamId, programmeId });
+    return inTurn(async () => {
+      const stations = await scoredUnder({ db, threads, cache }, { teamId, programmeId, brief, signal });
+      return surfaceOf(grounds, { stations, anchors: brief.score, held, signal });
+    });
+  });
+
+  mount(router, deps, getEstimate, async ({ params: { teamId, programmeId }, query }) => {
+    const { brief: briefId, ...position } = query;
+    const brief = await briefOfProgramme(db, { teamId, programmeId, briefId });
+    const stations = await scoredStations(db, { teamId, brief });
+    return estimatePlace(relief, { brief, stations, position });
   });
 
   mount(router, deps, getDepressionMap, async ({ params: { teamId }, query }) => {
@@ -82,9 +117,45 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
     return inTurn(() => rescore({ db, threads, cache }, asked));
   });
 
+  const briefAsked = async (
+    key: { teamId: string; programmeId: string },
+    of: { brief?: string | undefined; draft?: unknown },
+  ) => {
+    const saved = await briefOfProgramme(db, { ...key, briefId: of.brief });
+    return of.draft === undefined ? saved.body : readDraft(of.draft);
+  };
+
+  mount(router, deps, judgeRange, async ({ params, query, body }, { signal }) => {
+    const brief = await briefAsked(params, { ...query, draft: body.body });
+    const place = await placeToJudge({ db, cache }, { ...params, signal });
+    return inTurn(() => judgePlaceRange({ threads, brief, place, signal }));
+  });
+
+  mount(router, deps, findWhatWouldPass, async ({ params, query, body }, { signal }) => {
+    const brief = await briefAsked(params, { ...query, draft: body.body });
+    const place = await placeToJudge({ db, cache }, { ...params, signal });
+    return inTurn(() => whatWouldPass({ threads, brief, place, signal }));
+  });
+
+  mount(router, deps, rankEndpoint, async ({ params, query, body }, { signal }) => {
+    const brief = await briefOfProgramme(db, { ...params, briefId: query.brief });
+    const { placeIds = null, ...asked } = body;
+    return inTurn(() => rankProgramme({ db, cache, threads }, { ...params, ...asked, placeIds, brief, signal }));
+  });
+
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
     const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
     return await exportRunHours({ db, yearThread }, { ...params, role, signal });
+  });
+
+  mount(router, deps, listHoursEndpoint, async ({ params, query }, { signal }) =>
+    listRunHours({ db, yearThread, lines }, { ...params, ...query, signal }),
+  );
+
+  mount(router, deps, getRun, async ({ params }) => {
+    const run = await findRunRecord(db, params);
+    if (run === null) throw new AppError('not_found', 'There is no such run in this team.');
+    return presentRun(run);
   });
 
   mount(router, deps, getRunHours, async ({ params }) => {

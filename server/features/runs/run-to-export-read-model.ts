@@ -10,6 +10,8 @@ export interface RunToExport {
   readonly weatherYearId: string;
   readonly kind: YearKind;
   readonly year: number | null;
+  readonly weatherFileId: string;
+  readonly contentHash: string;
   readonly fileName: string;
   readonly licence: Licence;
   readonly attribution: string | null;
@@ -35,7 +37,7 @@ export interface RunToExport {
 export async function findRunToExport(db: Knex, key: { teamId: string; runId: string }): Promise<RunToExport | null> {
   const { rows } = await db.raw<{ rows: RunToExport[] }>(
     `select runs.weather_year_id as "weatherYearId", weather_years.kind, weather_years.year,
-       weather_files.name as "fileName",
+       weather_files.id as "weatherFileId", weather_years.content_hash as "contentHash", weather_files.name as "fileName",
        coalesce(parent_files.licence, weather_files.licence) as licence,
        coalesce(parent_files.attribution, weather_files.attribution) as attribution, stations.name as "stationName", stations.zone,
        runs.method_version as "methodVersion", runs.height_m as "heightM", runs.adjusted_from_m as "adjustedFromM", runs.clock,

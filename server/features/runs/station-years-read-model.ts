@@ -71,7 +71,7 @@ export async function listStationYears(
     `select stations.id as "stationId", stations.name as "stationName", stations.latitude, stations.longitude,
        stations.elevation_m as "elevationM", stations.zone,
        weather_years.id as "weatherYearId", weather_files.id as "weatherFileId", weather_years.kind, weather_years.year,
-       weather_years.slots as hours, (weather_years.facts ->> 'measuredHours')::integer as "measuredHours",
+       weather_years.slots as hours, weather_years.measured_hours as "measuredHours",
        exists (
          select 1 from findings
          where findings.weather_file_id = weather_files.id and findings.code = 'source-flags-uniform'

@@ -2,7 +2,9 @@ import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { type ReactNode, useState } from 'react';
 import { getRunHours } from '../../contract/run-hours.ts';
 import { LedgerPanel } from '../../features/runs/ledger-panel.tsx';
+import { placesOfMap } from '../../features/runs/map-places.ts';
 import { PlaceHeading, ScoreBlock } from '../../features/runs/place-heading.tsx';
+import { PlaceList } from '../../features/runs/place-list.tsx';
 import {
   CautionsNote,
   GradeNote,
@@ -11,7 +13,6 @@ import {
   WaterElectricityNote,
 } from '../../features/runs/place-notes.tsx';
 import { ScoreArithmetic } from '../../features/runs/score-arithmetic.tsx';
-import { StationList } from '../../features/runs/station-list.tsx';
 import { YearStrip } from '../../features/runs/year-strip.tsx';
 import { DepressionTable } from '../../features/weather/depression-table.tsx';
 import { DesignTable } from '../../features/weather/design-table.tsx';
@@ -119,25 +120,37 @@ function WeatherParts() {
 function RunParts() {
   const map = fixtureMap();
   const [chosenId, setChosenId] = useState(map.stations[0]?.id ?? null);
+  const [typed, setTyped] = useState('');
+  const { stations } = placesOfMap(map);
   const station = map.stations.find(({ id }) => id === chosenId);
-  if (!station) return null;
+  const figures = stations.find(({ id }) => id === chosenId);
+  if (!station || !figures) return null;
   const place = fixturePlace(station);
   return (
     <Scene name="Runs">
       <div className="mb-8 grid grid-cols-[14rem_18.5rem] gap-8">
-        <StationList stations={map.stations} chosenId={chosenId} onChoose={setChosenId} />
+        <PlaceList
+          kind="station"
+          places={stations}
+          chosenId={chosenId}
+          onChoose={setChosenId}
+          typed={typed}
+          onType={setTyped}
+          colourOf={() => null}
+          isBehind={false}
+        />
         <div className="grid gap-3">
           <PlaceHeading place={place} teamId={fixtureTeam.teamId} />
-          <ScoreBlock place={place} />
+          <ScoreBlock place={place} figures={figures} isDraft={false} />
           {place.shown ? <LedgerPanel ledger={place.shown.ledger} /> : null}
         </div>
       </div>
-      <YearStrip place={place} teamId={fixtureTeam.teamId} mayExport />
+      <YearStrip place={place} teamId={fixtureTeam.teamId} mayExport onListDay={() => undefined} />
       <div className="mt-8 grid gap-8">
         {place.shown ? (
           <>
             <ScoreArithmetic shown={place.shown} />
-            <WaterElectricityNote shown={place.shown} />
+            <WaterElectricityNote shown={place.shown} loadKw={null} />
             <VerdictNote shown={place.shown} />
             <SpellNote shown={place.shown} />
             <CautionsNote shown={place.shown} />

@@ -1,11 +1,10 @@
-/** N01, N02: money; I02: distance; S01, S02: ranking. */
-import { greatCircleKm } from '../interpolation/great-circle-km.ts';
+/** N01, N02: money; S01, S02: ranking. */
 import { simplePayback } from '../money/simple-payback.ts';
 import { rankPlaces } from '../ranking/rank-places.ts';
 import { exactly, inputOf, within } from './check-answer.ts';
 import { type CheckRunner, eachCase } from './check-runner.ts';
 import { carnotCop } from './comparison-formulas.ts';
-import { type CheckAnswer, groupOf, numberOf, numbersOf, type PublishedCase, textOf } from './published-check.ts';
+import { type CheckAnswer, numberOf, numbersOf, type PublishedCase, textOf } from './published-check.ts';
 
 const SEED = 1;
 
@@ -42,23 +41,6 @@ function payback(each: PublishedCase): readonly CheckAnswer[] {
   const given = { extraCapital: numberOf(each, 'extraCapital'), savingPerYear: numberOf(each, 'savingPerYear') };
   const found = String(simplePayback(given));
   return [exactly({ input: inputOf(each), expected: String(each.expected), found, tag: textOf(each, 'tag') })];
-}
-
-function distance(each: PublishedCase): readonly CheckAnswer[] {
-  const placeOf = (name: string) => {
-    const place = groupOf(each, name);
-    return { latitude: numberOf(place, 'latitude'), longitude: numberOf(place, 'longitude') };
-  };
-  const [from, to] = [placeOf('from'), placeOf('to')];
-  const measured = { expected: numberOf(each, 'km'), tag: textOf(each, 'tag'), unit: 'km' };
-  const input = inputOf(each, ['km']);
-  return [
-    within({ ...measured, input, found: greatCircleKm(from, to) }, numberOf(each, 'tolerance')),
-    within(
-      { ...measured, input: `the way back, ${input}`, found: greatCircleKm(to, from) },
-      numberOf(each, 'tolerance'),
-    ),
-  ];
 }
 
 /** The engine's criteria run to 100. */
@@ -131,7 +113,6 @@ function scaledWeights(each: PublishedCase): readonly CheckAnswer[] {
 export const decisionChecks: Readonly<Record<string, CheckRunner>> = {
   N01: cop,
   N02: eachCase(payback),
-  I02: eachCase(distance),
   S01: rankShares,
   S02: eachCase(scaledWeights),
 };

@@ -2,6 +2,7 @@
 import type { CheckRunner } from './check-runner.ts';
 import { coolingChecks } from './cooling-checks.ts';
 import { decisionChecks } from './decision-checks.ts';
+import { interpolationChecks } from './interpolation-checks.ts';
 import { limitChecks } from './limit-checks.ts';
 import { moistAirChecks } from './moist-air-checks.ts';
 import type { CheckAnswer, CheckTables, PublishedCheck } from './published-check.ts';
@@ -13,6 +14,7 @@ const runners: Readonly<Record<string, CheckRunner>> = {
   ...limitChecks,
   ...yearChecks,
   ...decisionChecks,
+  ...interpolationChecks,
 };
 
 /** Checks whose formula is another's: the product computes no such thing, or compares with it. */

@@ -6,7 +6,7 @@ export interface Position {
 
 /** Mean radius of the Earth, km (IUGG: (2 a + b) / 3 of the GRS 80 ellipsoid). */
 export const EARTH_RADIUS_KM = 6371.0088;
-const RADIANS_PER_DEGREE = Math.PI / 180;
+export const RADIANS_PER_DEGREE = Math.PI / 180;
 
 /** Distance along the great circle, km, on a sphere of mean radius, by the haversine formula. */
 export function greatCircleKm(from: Position, to: Position): number {

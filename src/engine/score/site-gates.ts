@@ -14,8 +14,10 @@ export interface GatedScore {
  * this brief does not ask stay out.
  */
 export function siteGates(brief: Pick<Brief, 'gates'>, answers: readonly GateAnswer[]): readonly GateAnswer[] {
+  const asked = askedGates(brief);
+  if (answers.length === 0) return asked;
   const answered = new Map(answers.map((each) => [each.gate, each]));
-  return askedGates(brief).map((asked) => answered.get(asked.gate) ?? asked);
+  return asked.map((each) => answered.get(each.gate) ?? each);
 }
 
 /** Gates that fail, each with its reason: "water available: the borehole is dry". */

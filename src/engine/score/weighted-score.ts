@@ -21,6 +21,11 @@ const NAMES: Readonly<Record<ScoreComponent, { label: string; unit: string }>> =
   'worst-year': { label: 'Demand hours served, worst year', unit: '%' },
 };
 
+/** The name of a component as every screen writes it. */
+export function componentLabel(component: ScoreComponent): string {
+  return NAMES[component].label;
+}
+
 /** A factor of 0 would hide every other in the geometric mean (method 7.4). */
 const LEAST_FACTOR = 1;
 

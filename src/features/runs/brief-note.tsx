@@ -8,10 +8,16 @@ export function BriefNote({ map, choice }: { map: ProgrammeMap; choice: ReactNod
     <header>
       <p className="text-fine text-soft">{map.programme.name}</p>
       <h1 className="text-name">{map.brief.name}</h1>
-      <p className="mt-1">
-        <span className="text-soft">Brief version {map.brief.version}.</span> {sentence(map.brief.sentence)}
-      </p>
-      {choice}
+      <details className="group mt-0.5 text-fine">
+        <summary className="cursor-pointer list-none text-soft [&::-webkit-details-marker]:hidden">
+          <span aria-hidden="true" className="mr-1 inline-block transition-transform group-open:rotate-90">
+            ›
+          </span>
+          Brief version {map.brief.version}
+        </summary>
+        <p className="mt-0.5">{sentence(map.brief.sentence)}</p>
+        {choice}
+      </details>
       <p role="status" className="text-fine text-soft">
         {map.pending > 0
           ? `${plural(map.pending, 'weather year')} ${map.pending === 1 ? 'is' : 'are'} being tested; scores follow by themselves.`

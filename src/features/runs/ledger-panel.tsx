@@ -16,8 +16,14 @@ interface Row {
 /** These stand in the table even without an hour: that a plant was never too weak is an answer. */
 const ALWAYS: readonly HourClass[] = ['air', 'direct', 'short', 'beyond'];
 
+interface LedgerPanelProps {
+  readonly ledger: ShownLedger;
+  /** Lists the hours of a class; without it there is nothing to list, as under a draft. */
+  readonly onList?: (hourClass: HourClass) => void;
+}
+
 /** Hours with demand as a bar, every class as a figure, and the sum that proves that none is lost. */
-export function LedgerPanel({ ledger }: { ledger: Ledger }) {
+export function LedgerPanel({ ledger, onList }: LedgerPanelProps) {
   const id = useId();
   const { classes, demand } = ledger;
   const met = metWords(ledger);
@@ -52,13 +58,13 @@ export function LedgerPanel({ ledger }: { ledger: Ledger }) {
         </thead>
         <tbody>
           {withDemand.map((row, index) => (
-            <LedgerRow key={row.words} row={row} id={`${id}-${index}`} demand={demand} />
+            <LedgerRow key={row.words} row={row} id={`${id}-${index}`} demand={demand} onList={onList} />
           ))}
         </tbody>
         <tbody className="border-t border-line">
           {(['idle', 'closed', 'missing'] as const).map((hourClass) => {
             const row = { hourClass, words: classWords[hourClass], count: classes[hourClass] };
-            return <LedgerRow key={hourClass} row={row} id={`${id}-${hourClass}`} demand={null} />;
+            return <LedgerRow key={hourClass} row={row} id={`${id}-${hourClass}`} demand={null} onList={onList} />;
           })}
         </tbody>
       </table>
@@ -73,13 +79,31 @@ export function LedgerPanel({ ledger }: { ledger: Ledger }) {
   );
 }
 
-function LedgerRow({ row, id, demand }: { row: Row; id: string; demand: number | null }) {
+interface LedgerRowProps {
+  readonly row: Row;
+  readonly id: string;
+  readonly demand: number | null;
+  readonly onList: ((hourClass: HourClass) => void) | undefined;
+}
+
+function LedgerRow({ row, id, demand, onList }: LedgerRowProps) {
   return (
     <tr className={row.count === 0 ? 'text-soft' : ''}>
       <th scope="row" className="py-px text-left font-normal">
         <span className="flex items-center gap-2">
           <ClassSwatch hourClass={row.hourClass} id={id} />
-          {row.words}
+          {onList === undefined || row.count === 0 ? (
+            row.words
+          ) : (
+            <button
+              type="button"
+              title="List these hours"
+              onClick={() => onList(row.hourClass)}
+              className="text-left underline decoration-ink/25 underline-offset-[3px] hover:decoration-ink"
+            >
+              {row.words}
+            </button>
+          )}
         </span>
       </th>
       <td className="pl-2 text-right whitespace-nowrap">{hours(row.count)}</td>
@@ -90,12 +114,22 @@ function LedgerRow({ row, id, demand }: { row: Row; id: string; demand: number |
   );
 }
 
-function demandRows({ classes, dampOutside, dampPlant }: Ledger): Row[] {
+/** Under a draft nobody has told the two reasons of `damp` apart. */
+export type ShownLedger = Omit<Ledger, 'dampOutside' | 'dampPlant'> & {
+  readonly dampOutside: number | null;
+  readonly dampPlant: number | null;
+};
+
+function demandRows({ classes, dampOutside, dampPlant }: ShownLedger): Row[] {
   const row = (hourClass: HourClass): Row => ({ hourClass, words: classWords[hourClass], count: classes[hourClass] });
   const rows: Row[] = [
     ...(['air', 'direct', 'indirect', 'dewpoint', 'twostage', 'frozen', 'short'] as const).map(row),
-    { hourClass: 'damp', words: dampOutsideWords, count: dampOutside },
-    { hourClass: 'damp', words: dampPlantWords, count: dampPlant },
+    ...(dampOutside === null || dampPlant === null
+      ? [row('damp')]
+      : [
+          { hourClass: 'damp' as const, words: dampOutsideWords, count: dampOutside },
+          { hourClass: 'damp' as const, words: dampPlantWords, count: dampPlant },
+        ]),
     row('beyond'),
   ];
   return rows.filter(({ hourClass, words, count }) => {

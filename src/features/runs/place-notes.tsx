@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react';
 import type { GateAnswer, Place } from '../../contract/runs.ts';
-import { differenceK, hours, percent, sensible } from '../../lib/format.ts';
+import { differenceK, hours, percent, sensible, withUnit } from '../../lib/format.ts';
 
 type Shown = NonNullable<Place['shown']>;
 
@@ -68,22 +68,32 @@ export function SpellNote({ shown }: { shown: Shown }) {
   );
 }
 
-/** Water and electricity of the year, for each kilowatt of design load. */
-export function WaterElectricityNote({ shown: { water, electricity, money, moneyNote, carbon } }: { shown: Shown }) {
+interface WaterElectricityProps {
+  readonly shown: Shown;
+  /** Design load of a site, kW; null: figures are for each kilowatt of it. */
+  readonly loadKw: number | null;
+}
+
+/** Water and electricity of the year, for the design load of a site or for each kilowatt of it. */
+export function WaterElectricityNote({ shown, loadKw }: WaterElectricityProps) {
+  const { water, electricity, money, moneyNote, carbon } = shown;
+  const of = scaledBy(loadKw);
   return (
     <Note title="Water and electricity">
-      <p className="text-fine text-soft">Of the year, for each kilowatt of design load.</p>
+      <p className="text-fine text-soft">
+        Of the year, for {loadKw === null ? 'each kilowatt' : withUnit(loadKw, 'kW')} of design load.
+      </p>
       <Facts
         rows={[
-          ['Make-up water, with bleed-off', sensible(water.makeUpLitres, 'L')],
+          ['Make-up water, with bleed-off', of.litres(water.makeUpLitres)],
           [
             'Water for the cooling delivered',
             water.litresPerKwh === null ? 'not applicable' : sensible(water.litresPerKwh, 'L/kWh'),
           ],
-          ['Peak day', water.peakDay === null ? 'none' : `${sensible(water.peakDayLitres, 'L')}, ${water.peakDay}`],
-          ...electricityRows(electricity),
-          ...moneyRows(money),
-          ...carbonRows(carbon),
+          ['Peak day', water.peakDay === null ? 'none' : `${of.litres(water.peakDayLitres)}, ${water.peakDay}`],
+          ...electricityRows(electricity, of),
+          ...moneyRows(money, of),
+          ...carbonRows(carbon, of),
         ]}
       />
       {[...(moneyNote === null ? [] : [moneyNote]), ...(money?.notes ?? [])].map((note) => (
@@ -95,33 +105,50 @@ export function WaterElectricityNote({ shown: { water, electricity, money, money
   );
 }
 
-function electricityRows(electricity: Shown['electricity']): readonly (readonly [label: string, value: string])[] {
+type Scaled = ReturnType<typeof scaledBy>;
+
+/** Figures that are given per kilowatt, times the load; large ones in the next unit. */
+function scaledBy(loadKw: number | null) {
+  const times = loadKw ?? 1;
+  const stepped = (value: number, [small, large]: readonly [string, string]) =>
+    value * times >= 10_000 ? sensible((value * times) / 1000, large) : sensible(value * times, small);
+  return {
+    litres: (value: number) => stepped(value, ['L', 'm³']),
+    kwh: (value: number) => stepped(value, ['kWh', 'MWh']),
+    kg: (value: number) => stepped(value, ['kg', 't']),
+    plain: (value: number, unit: string) => sensible(value * times, unit),
+  };
+}
+
+type Rows = readonly (readonly [label: string, value: string])[];
+
+function electricityRows(electricity: Shown['electricity'], of: Scaled): Rows {
   if (electricity === null) return [['Electricity', 'not applicable']];
   return [
-    ['Electricity', sensible(electricity.kwh, 'kWh')],
-    ['Reference plant', sensible(electricity.referenceKwh, 'kWh')],
+    ['Electricity', of.kwh(electricity.kwh)],
+    ['Reference plant', of.kwh(electricity.referenceKwh)],
     ['Saved', electricity.savedPct === null ? 'not applicable' : percent(electricity.savedPct)],
-    ['Peak, with back-up', sensible(electricity.peakKw, 'kW')],
-    ['Peak of the reference', sensible(electricity.referencePeakKw, 'kW')],
+    ['Peak, with back-up', of.plain(electricity.peakKw, 'kW')],
+    ['Peak of the reference', of.plain(electricity.referencePeakKw, 'kW')],
   ];
 }
 
-function moneyRows(money: Shown['money']): readonly (readonly [label: string, value: string])[] {
+function moneyRows(money: Shown['money'], of: Scaled): Rows {
   if (money === null) return [];
   const { currency, plant, reference, saving, payback } = money;
   return [
-    ['Cost of a year', sensible(plant, currency)],
-    ['Cost of a year, reference plant', sensible(reference, currency)],
-    ['Saved in a year', sensible(saving, currency)],
+    ['Cost of a year', of.plain(plant, currency)],
+    ['Cost of a year, reference plant', of.plain(reference, currency)],
+    ['Saved in a year', of.plain(saving, currency)],
     ...(payback === null
       ? []
       : [['Simple payback', typeof payback === 'number' ? sensible(payback, 'years') : payback] as const]),
   ];
 }
 
-function carbonRows(carbon: Shown['carbon']): readonly (readonly [label: string, value: string])[] {
+function carbonRows(carbon: Shown['carbon'], of: Scaled): Rows {
   if (carbon === null) return [];
-  return [[`Carbon dioxide saved, by ${carbon.source}`, sensible(carbon.savedKg, 'kg')]];
+  return [[`Carbon dioxide saved, by ${carbon.source}`, of.kg(carbon.savedKg)]];
 }
 
 /** Why the weather can be trusted for this place as far as it can. */
@@ -136,15 +163,13 @@ export function GradeNote({ place }: { place: Place }) {
 
 export function CautionsNote({ shown }: { shown: Shown }) {
   return (
-    <Note title="Before anyone builds">
-      <ul className="gap-x-10 lg:columns-3">
-        {shown.cautions.map((caution) => (
-          <li key={caution} className="break-inside-avoid border-t border-line py-[5px]">
-            {caution}
-          </li>
-        ))}
-      </ul>
-    </Note>
+    <ul className="gap-x-10 lg:columns-3">
+      {shown.cautions.map((caution) => (
+        <li key={caution} className="break-inside-avoid border-t border-line py-[5px]">
+          {caution}
+        </li>
+      ))}
+    </ul>
   );
 }
 

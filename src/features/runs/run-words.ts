@@ -37,12 +37,12 @@ export function costWords(costs: Place['gradeColumns'], overall: Place['grade'])
   return list(costs.map(({ column, grade, reason }) => `${column} ${grade}${grade === overall ? ` (${reason})` : ''}`));
 }
 
-export function sumOfClasses(ledger: Ledger): number {
+export function sumOfClasses(ledger: Pick<Ledger, 'classes'>): number {
   return Object.values(ledger.classes).reduce((sum, count) => sum + count, 0);
 }
 
 /** Printed under every ledger; says plainly when the counts do not add up, which must never be hidden. */
-export function identitySentence(ledger: Ledger): string {
+export function identitySentence(ledger: Pick<Ledger, 'classes' | 'hours'>): string {
   const sum = sumOfClasses(ledger);
   if (sum === ledger.hours) return `The classes add up to ${number(sum)} hours.`;
   return `The classes add up to ${number(sum)} hours, the year has ${number(ledger.hours)}: do not use this ledger.`;
@@ -69,7 +69,19 @@ export function notJudgedWords({ years, derived }: Pick<Place, 'years' | 'derive
     : 'Not judged: no accepted weather year is usable for this brief.';
 }
 
-export function placeYearWords({ kind, year }: Place['years'][number]): string {
+/** "72 to 83 over 9 years", "72 in each of 9 years"; null with fewer than two. */
+export function rangeWords({ range, yearsCounted }: Pick<MapStation, 'range' | 'yearsCounted'>): string | null {
+  if (range === null || yearsCounted < 2) return null;
+  if (range.low === range.high) return `${range.low} in each of ${yearsCounted} years`;
+  return `${range.low} to ${range.high} over ${yearsCounted} years`;
+}
+
+/** A site by its own name, a station by its. */
+export function nameOfPlace({ site, station }: Pick<Place, 'site' | 'station'>): string {
+  return (site ?? station).name;
+}
+
+export function placeYearWords({ kind, year }: Pick<Place['years'][number], 'kind' | 'year'>): string {
   if (kind === 'actual' && year !== null) return `the year ${year}`;
   return kind === 'derived' ? 'a derived year' : 'a typical year';
 }

@@ -3,6 +3,7 @@ import { useId } from 'react';
 import { ClassSwatch } from '../../charts/class-swatch.tsx';
 import { classMeaning, classWords, dampWords } from '../../charts/hour-class-words.ts';
 import type { Place } from '../../contract/runs.ts';
+import { HOURS_PER_DAY } from '../../engine/conventions.ts';
 import type { HourClass } from '../../engine/hour-classes/hour-class.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { number } from '../../lib/format.ts';
@@ -10,13 +11,22 @@ import { Button } from '../../ui/button.tsx';
 import { YearClothCanvas } from '../../ui/year-cloth-canvas.tsx';
 import { HoursLink } from './hours-link.tsx';
 import { runHoursQuery } from './run-queries.ts';
-import { metWords } from './run-words.ts';
+import { metWords, nameOfPlace } from './run-words.ts';
+import { useHourInWords } from './use-hour-in-words.ts';
 
 const CLOTH_PX = 144;
 
 /** The year cloth of a place with its legend, across the sheet. */
-export function YearStrip({ place, teamId, mayExport }: { place: Place; teamId: string; mayExport: boolean }) {
-  const { shown, station } = place;
+interface YearStripProps {
+  readonly place: Place;
+  readonly teamId: string;
+  readonly mayExport: boolean;
+  /** Lists the hours of a day, 1 first. */
+  readonly onListDay: (day: number) => void;
+}
+
+export function YearStrip({ place, teamId, mayExport, onListDay }: YearStripProps) {
+  const { shown } = place;
   if (!shown) return null;
   const met = metWords(shown.ledger);
   return (
@@ -26,13 +36,14 @@ export function YearStrip({ place, teamId, mayExport }: { place: Place; teamId: 
     >
       <div>
         <h2 id="year-cloth" className="text-name">
-          The year at {station.name}
+          The year at {nameOfPlace(place)}
         </h2>
         <p className="mt-1 text-soft">
           Each column is a day, each row an hour, midnight at the top.{' '}
           {met === null
             ? 'No hour with demand.'
-            : `${met} of the hours with demand are met by outdoor air or evaporation.`}
+            : `${met} of the hours with demand are met by outdoor air or evaporation.`}{' '}
+          A press lists the hours of a day.
         </p>
         {mayExport ? (
           <p className="mt-1">
@@ -42,14 +53,21 @@ export function YearStrip({ place, teamId, mayExport }: { place: Place; teamId: 
           </p>
         ) : null}
       </div>
-      <Cloth teamId={teamId} runId={shown.runId} place={place} />
+      <Cloth run={{ teamId, runId: shown.runId }} place={place} onListDay={onListDay} />
       <Legend ledger={shown.ledger} />
     </section>
   );
 }
 
-function Cloth({ teamId, runId, place }: { teamId: string; runId: string; place: Place }) {
-  const codes = useQuery(runHoursQuery(teamId, runId));
+interface ClothProps {
+  readonly run: { readonly teamId: string; readonly runId: string };
+  readonly place: Place;
+  readonly onListDay: (day: number) => void;
+}
+
+function Cloth({ run, place, onListDay }: ClothProps) {
+  const codes = useQuery(runHoursQuery(run.teamId, run.runId));
+  const { read, more } = useHourInWords(run);
   if (codes.isError) {
     return (
       <p role="alert">
@@ -63,8 +81,11 @@ function Cloth({ teamId, runId, place }: { teamId: string; runId: string; place:
     <YearClothCanvas
       codes={codes.data}
       heightPx={CLOTH_PX}
-      label={`The year at ${place.station.name} hour by hour${ledger ? `: ${number(ledger.met)} of ${number(ledger.demand)} hours with demand are met` : ''}.`}
+      label={`The year at ${nameOfPlace(place)} hour by hour${ledger ? `: ${number(ledger.met)} of ${number(ledger.demand)} hours with demand are met` : ''}.`}
       words={(hourClass) => (hourClass === 'damp' && ledger ? dampWords(ledger) : classWords[hourClass])}
+      more={more}
+      onRead={read}
+      onChoose={(slot) => onListDay(Math.floor(slot / HOURS_PER_DAY) + 1)}
     />
   );
 }

@@ -23,4 +23,13 @@ describe('the edges of a sheet', () => {
       ['meridian', widthPx, middle.y],
     ]);
   });
+
+  it.each(VIEWS)('keep names out from under what stands over the map ($west to $east°)', (view) => {
+    const furniture = [{ left: 300, top: 12, width: 34, height: 100 }];
+    const strip = sheetEdges(view, furniture).features.at(-1);
+    const [longitude = 0, latitude = 0] = strip?.geometry.coordinates ?? [];
+    expect(strip?.properties.along).toBe('furniture-0');
+    expect(meridianX(view, longitude)).toBeCloseTo(317, 6);
+    expect(parallelY(view, latitude)).toBeCloseTo(62, 6);
+  });
 });

@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { boxAround } from '../../../src/map/fit-stations.ts';
 import { scaleBar } from '../../../src/map/scale-bar.ts';
-import { scoreCounts } from '../../../src/map/score-counts.ts';
 import { BELOW_LINES, BELOW_NAMES, sheetStyle } from '../../../src/map/sheet-style.ts';
 import type { SheetView } from '../../../src/map/sheet-view.ts';
 
@@ -51,20 +50,15 @@ describe('the scale bar', () => {
   });
 });
 
-describe('counts of the legend', () => {
-  it('put every station in one class, its lower limit included, and those without a score apart', () => {
-    const scores = [0, 19, 20, 59, 60, 80, 99, 100, null];
-    const counts = scoreCounts(scores.map((score, index) => ({ score, grade: index === 1 ? 'D' : 'A' })));
-    expect(counts).toEqual({ classes: [2, 1, 1, 1, 3], noScore: 1, gradeD: 1 });
-  });
-});
-
 describe('the style of the sheet', () => {
   const style = sheetStyle({ origin: 'https://here.example', fonts: {}, faces: { roman: 'R', italic: 'I' } });
 
   it('asks our own origin for everything', () => {
     const addresses = JSON.stringify(style).match(/https?:\/\/[^"]*/g);
-    expect(addresses).toEqual(['https://here.example/tiles/{z}/{x}/{y}.mvt']);
+    expect(addresses).toEqual([
+      'https://here.example/tiles/{z}/{x}/{y}.mvt',
+      'https://here.example/relief/{z}/{x}/{y}.png',
+    ]);
     expect(style).not.toHaveProperty('glyphs');
     expect(style).not.toHaveProperty('sprite');
   });

@@ -1,38 +1,24 @@
-import { useQuery } from '@tanstack/react-query';
-import { type ReactNode, useMemo } from 'react';
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
-import { rankedStations } from '../../../features/runs/ranked-stations.ts';
-import { mapQuery, type ProgrammeIds } from '../../../features/runs/run-queries.ts';
+import { mapQuery } from '../../../features/runs/run-queries.ts';
 import { errorSentence, isApiError } from '../../../lib/api-error.ts';
 import { sentence } from '../../../lib/format.ts';
 import { PageTitle } from '../../../lib/page-title.tsx';
-import { BRIEF_PARAM, PLACE_PARAM, paths } from '../../../lib/paths.ts';
+import { BRIEF_PARAM, paths } from '../../../lib/paths.ts';
 import { useTeam } from '../../../lib/team-scope.ts';
-import { useMedia, WIDE } from '../../../lib/use-media.ts';
 import { Button, buttonLook } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
-import { BriefChoice } from './brief-choice.tsx';
-import { NarrowSheet } from './narrow-sheet.tsx';
-import { WideSheet } from './wide-sheet.tsx';
-
-/** What both compositions of the sheet are made from. */
-export interface SheetProps {
-  readonly ids: ProgrammeIds;
-  readonly map: ProgrammeMap;
-  /** Where another brief is taken. */
-  readonly choice: ReactNode;
-  readonly chosenId: string | null;
-  readonly onChoose: (stationId: string | null) => void;
-}
+import { MapSheet } from './map-sheet.tsx';
 
 export function MapPage() {
   const { teamId, role, programmes } = useTeam();
   const { programmeId = '' } = useParams();
   const [search] = useSearchParams();
   const ids = { teamId, programmeId, briefId: search.get(BRIEF_PARAM) };
-  const map = useQuery(mapQuery(ids));
+  // Another brief of the programme draws the same places: the sheet stays while its figures come.
+  const map = useQuery({ ...mapQuery(ids), placeholderData: keepPreviousData });
   const title = programmes.find(({ id }) => id === programmeId)?.name ?? 'Map';
   return (
     <>
@@ -42,34 +28,9 @@ export function MapPage() {
       {map.data && map.data.stations.length === 0 ? (
         <EmptyMap map={map.data} mayUpload={role === 'engineer' || role === 'lead'} />
       ) : null}
-      {map.data && map.data.stations.length > 0 ? <Sheet ids={ids} map={map.data} /> : null}
+      {map.data && map.data.stations.length > 0 ? <MapSheet ids={ids} map={map.data} /> : null}
     </>
   );
-}
-
-/** The chosen place lives in the address, so that Back, a reload and a link all come back to it. */
-function Sheet({ ids, map }: Pick<SheetProps, 'ids' | 'map'>) {
-  const [search, setSearch] = useSearchParams();
-  const isWide = useMedia(WIDE);
-  const named = search.get(PLACE_PARAM);
-  // Where there is room for it, a place is always in view: the first of the ranking until one is chosen.
-  const first = useMemo(() => rankedStations(map.stations)[0]?.station.id ?? null, [map.stations]);
-  const chosenId = named ?? (isWide ? first : null);
-  const onChoose = (stationId: string | null) => {
-    if (stationId === named) return;
-    const next = new URLSearchParams(search);
-    if (stationId === null) next.delete(PLACE_PARAM);
-    else next.set(PLACE_PARAM, stationId);
-    setSearch(next);
-  };
-  const onBrief = (briefId: string) => {
-    const next = new URLSearchParams(search);
-    next.set(BRIEF_PARAM, briefId);
-    setSearch(next);
-  };
-  const choice = <BriefChoice ids={ids} briefId={map.brief.briefId} onChoose={onBrief} />;
-  const props = { ids, map, choice, chosenId, onChoose };
-  return isWide ? <WideSheet {...props} /> : <NarrowSheet {...props} />;
 }
 
 function MapProblem({ error, onRetry }: { error: unknown; onRetry: () => void }) {

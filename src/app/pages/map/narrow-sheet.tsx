@@ -1,46 +1,41 @@
-import { useState } from 'react';
-import { BriefNote } from '../../../features/runs/brief-note.tsx';
-import { StationList } from '../../../features/runs/station-list.tsx';
-import { ScoreLegend } from '../../../map/score-legend.tsx';
-import { SheetMap } from '../../../map/sheet-map.tsx';
+import { useEffect, useRef, useState } from 'react';
 import { BottomSheet, PEEK_PX, type SheetStep } from '../../../ui/bottom-sheet.tsx';
 import { Button } from '../../../ui/button.tsx';
-import type { SheetProps } from './map-page.tsx';
+import type { SheetProps } from './map-sheet.tsx';
 import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
 
 /** The map first, everything of its margins in a sheet at the foot of the screen. */
-export function NarrowSheet({ ids, map, choice, chosenId, onChoose }: SheetProps) {
-  const [step, setStep] = useState<SheetStep>(chosenId === null ? 'peek' : 'half');
-  const choose = (stationId: string) => {
-    onChoose(stationId);
-    setStep((held) => (held === 'peek' ? 'half' : held));
-  };
+export function NarrowSheet({ brief, ranking, map, point, chosen, onLeave }: SheetProps) {
+  const isAtPlace = chosen !== null || point !== null;
+  const [step, setStep] = useState<SheetStep>(isAtPlace ? 'half' : 'peek');
+  const shown = useRef(chosen?.figures.id ?? null);
+  const chosenId = chosen?.figures.id ?? null;
+  // A place that is chosen, on the map or in the list, is worth half the screen.
+  useEffect(() => {
+    if (chosenId === shown.current) return;
+    shown.current = chosenId;
+    if (chosenId !== null) setStep((held) => (held === 'peek' ? 'half' : held));
+  }, [chosenId]);
   return (
     <div className="relative min-h-[30rem] flex-1">
       <div className="absolute inset-x-0 top-0" style={{ bottom: PEEK_PX }}>
-        <SheetMap
-          stations={map.stations}
-          chosenId={chosenId}
-          onChoose={choose}
-          legend={<ScoreLegend stations={map.stations} />}
-        />
+        {map}
       </div>
-      <BottomSheet label={chosenId === null ? 'Stations panel' : 'Place panel'} step={step} onStep={setStep}>
-        {chosenId === null ? (
-          <div className="grid gap-4">
-            <BriefNote map={map} choice={choice} />
-            <StationList stations={map.stations} chosenId={chosenId} onChoose={choose} />
-          </div>
-        ) : (
+      <BottomSheet label={isAtPlace ? 'Place panel' : 'Stations panel'} step={step} onStep={setStep}>
+        {isAtPlace ? (
           <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
             <div>
-              <h1 className="sr-only">{map.brief.name}</h1>
-              <Button look="quiet" className="-mt-1 text-fine" onClick={() => onChoose(null)}>
-                All stations
+              <Button look="quiet" className="-mt-1 text-fine" onClick={onLeave}>
+                All places
               </Button>
-              <PlaceMargin ids={ids} stationId={chosenId} />
+              {point ?? (chosen === null ? null : <PlaceMargin {...chosen} />)}
             </div>
-            <PlaceFoot ids={ids} stationId={chosenId} />
+            {chosen === null ? null : <PlaceFoot {...chosen} />}
+          </div>
+        ) : (
+          <div className="grid gap-4">
+            {brief}
+            {ranking}
           </div>
         )}
       </BottomSheet>

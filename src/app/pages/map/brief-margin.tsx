@@ -1,0 +1,30 @@
+import type { ProgrammeMap } from '../../../contract/programme-map.ts';
+import { BriefNote } from '../../../features/runs/brief-note.tsx';
+import { LiveBrief } from '../../../features/runs/live-brief.tsx';
+import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
+import type { LiveScores } from '../../../features/runs/use-live-scores.ts';
+import { BriefChoice } from './brief-choice.tsx';
+import { DraftNote } from './draft-note.tsx';
+import type { LiveDraftState } from './use-live-draft.ts';
+
+interface BriefMarginProps {
+  readonly ids: ProgrammeIds;
+  readonly map: ProgrammeMap;
+  readonly live: LiveDraftState;
+  readonly scores: LiveScores;
+  readonly onBrief: (briefId: string) => void;
+  readonly onSaved: (version: number) => void;
+}
+
+/** The brief with its main parameters, each to be tried out on the map. */
+export function BriefMargin({ ids, map, live, scores, onBrief, onSaved }: BriefMarginProps) {
+  return (
+    <div className="grid gap-3">
+      <BriefNote map={map} choice={<BriefChoice ids={ids} briefId={map.brief.briefId} onChoose={onBrief} />} />
+      <section aria-label="Parameters of the brief" aria-busy={scores.isBehind}>
+        <LiveBrief parameters={live.parameters} draft={live.draft} problems={live.problems} onChange={live.change} />
+      </section>
+      <DraftNote ids={ids} live={live} isBehind={scores.isBehind} error={scores.error} onSaved={onSaved} />
+    </div>
+  );
+}

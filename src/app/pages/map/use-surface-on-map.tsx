@@ -1,0 +1,42 @@
+import type { ReactNode } from 'react';
+import type { ProgrammeMap } from '../../../contract/programme-map.ts';
+import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
+import { useSurface } from '../../../features/runs/use-surface.ts';
+import { errorSentence } from '../../../lib/api-error.ts';
+import { SurfaceLayer } from '../../../map/surface-layer.tsx';
+import { SurfaceLegend } from '../../../map/surface-legend.tsx';
+import type { MapAddress } from './map-address.ts';
+import type { ChangeAddress } from './use-map-address.ts';
+
+interface SurfaceOnMap {
+  readonly layer: ReactNode;
+  readonly legend: ReactNode;
+}
+
+/** The surface of the score with its line of the legend; other layers have none. */
+export function useSurfaceOnMap(on: {
+  readonly ids: ProgrammeIds;
+  readonly map: ProgrammeMap;
+  readonly draft: Parameters<typeof useSurface>[0]['draft'];
+  readonly address: MapAddress;
+  readonly changeAddress: ChangeAddress;
+}): SurfaceOnMap {
+  const { ids, map, draft, address, changeAddress } = on;
+  const isScore = address.layer.kind === 'score';
+  const isOn = address.surface && isScore;
+  const { briefVersionId } = map.brief;
+  const { shown, off, fault, isPending } = useSurface({ ids, briefVersionId, draft, isOn, pending: map.pending });
+  if (!isScore) return { layer: null, legend: null };
+  return {
+    layer: shown === null ? null : <SurfaceLayer cells={shown.cells} scores={shown.scores} />,
+    legend: (
+      <SurfaceLegend
+        isOn={address.surface}
+        onSwitch={(surface) => changeAddress({ surface }, { replace: true })}
+        note={off ?? (fault === null ? null : errorSentence(fault))}
+        error={shown?.error ?? null}
+        isPending={isPending}
+      />
+    ),
+  };
+}
