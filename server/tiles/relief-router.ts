@@ -7,8 +7,8 @@ import { tileNamed } from './tile-name.ts';
 /** A day without asking; after it the fingerprint settles whether the relief is another. */
 const CACHE_CONTROL = 'public, max-age=86400, stale-while-revalidate=604800';
 const TILE_PX = 256;
-/** On the whole world at once shading says nothing; beyond the last zoom the grid has no more nodes. */
-const ZOOMS = { least: 3, most: 6 } as const;
+/** On the whole world at once shading says nothing; beyond the last zoom pixels would show the facets between the nodes of the grid. */
+const ZOOMS = { least: 3, most: 5 } as const;
 /** Tiles kept, some 40 kB each. */
 const MOST_KEPT = 256;
 /** Terrarium: height + 32768 m in red x 256 + green + blue / 256. */

@@ -24,7 +24,7 @@ export const CAPITAL_DOT = 'capital';
 const SOURCE = 'base';
 const RELIEF = 'relief';
 /** Zooms of the heights that the server tells; beyond the last they are enlarged. */
-const RELIEF_ZOOMS = { minzoom: 3, maxzoom: 6 } as const;
+const RELIEF_ZOOMS = { minzoom: 3, maxzoom: 5 } as const;
 /** The largest zoom of the shipped tiles; beyond it the client enlarges them. */
 const TILE_ZOOM = 7;
 
@@ -78,10 +78,10 @@ function shading(): LayerSpecification {
     paint: {
       'hillshade-illumination-direction': 315,
       'hillshade-illumination-anchor': 'map',
-      'hillshade-exaggeration': 0.35,
-      'hillshade-shadow-color': 'rgba(72, 64, 44, 0.55)',
-      'hillshade-highlight-color': 'rgba(255, 252, 240, 0.35)',
-      'hillshade-accent-color': 'rgba(72, 64, 44, 0.12)',
+      'hillshade-exaggeration': 0.8,
+      'hillshade-shadow-color': 'rgba(72, 64, 44, 0.8)',
+      'hillshade-highlight-color': 'rgba(255, 252, 240, 0.5)',
+      'hillshade-accent-color': 'rgba(72, 64, 44, 0.3)',
     },
   };
 }

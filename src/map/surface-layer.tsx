@@ -55,10 +55,16 @@ export function SurfaceLayer({ cells, scores }: SurfaceLayerProps) {
           paint={{ 'fill-color': rampOf('middle'), 'fill-antialias': false }}
         />
       </Source>
-      <SurfaceCellsLayer mesh={mesh} values={values} />
+      <SurfaceCellsLayer mesh={mesh} values={values} hasWeave={hasWeave} />
       {hasWeave ? (
         <Source id="surface-pale" type="geojson" data={pale} tolerance={0.2}>
-          <Layer id="surface-pale" type="fill" beforeId={BELOW_LINES} paint={{ 'fill-pattern': WEAVE }} />
+          <Layer
+            id="surface-pale"
+            type="fill"
+            beforeId={BELOW_LINES}
+            maxzoom={CELLS_FROM_ZOOM}
+            paint={{ 'fill-pattern': WEAVE }}
+          />
         </Source>
       ) : null}
       <Source id="surface-lines" type="geojson" data={lines} tolerance={0.2}>
@@ -91,8 +97,14 @@ export function SurfaceLayer({ cells, scores }: SurfaceLayerProps) {
   );
 }
 
+interface SurfaceCellsProps {
+  readonly mesh: SurfaceMesh;
+  readonly values: Float32Array;
+  readonly hasWeave: boolean;
+}
+
 /** Only what the view shows becomes polygons: all cells of a continent would be tens of thousands. */
-function SurfaceCellsLayer({ mesh, values }: { readonly mesh: SurfaceMesh; readonly values: Float32Array }) {
+function SurfaceCellsLayer({ mesh, values, hasWeave }: SurfaceCellsProps) {
   const map = useMap().current?.getMap() ?? null;
   const view = useSheetView(map);
   const isNear = (map?.getZoom() ?? 0) >= CELLS_FROM_ZOOM - 0.1;
@@ -115,6 +127,16 @@ function SurfaceCellsLayer({ mesh, values }: { readonly mesh: SurfaceMesh; reado
         minzoom={CELLS_FROM_ZOOM}
         paint={{ 'fill-color': rampOf('score'), 'fill-outline-color': 'rgba(34, 48, 47, 0.25)' }}
       />
+      {hasWeave ? (
+        <Layer
+          id="surface-cell-pale"
+          type="fill"
+          beforeId={BELOW_LINES}
+          minzoom={CELLS_FROM_ZOOM}
+          filter={['get', 'pale']}
+          paint={{ 'fill-pattern': WEAVE }}
+        />
+      ) : null}
     </Source>
   );
 }

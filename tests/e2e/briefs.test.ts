@@ -1,10 +1,10 @@
 /** A planner's way through briefs: from a preset to a version that the map follows. */
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, expect, test, vi } from 'vitest';
 import { readDemoAccounts } from '../../server/builders/demo-accounts.ts';
 import { launchBrowser, type Viewport, type WatchedPage, watchedPage } from '../support/browser.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
+import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
 import { scoreShown, signIn } from './steps.ts';
 
 const DESK: Viewport = { width: 1440, height: 900 };
@@ -48,15 +48,9 @@ async function enterAs(role: 'planner' | 'viewer'): Promise<void> {
   await page.getByRole('heading', { name: 'Briefs', level: 1 }).waitFor();
 }
 
-async function expectAccessible(what: string): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  const said = violations.map(({ id, help, nodes }) => `${id}: ${help}: ${nodes.map(({ html }) => html).join(' | ')}`);
-  expect(said, what).toEqual([]);
-  const widths = await page.evaluate(() => ({
-    content: document.documentElement.scrollWidth,
-    screen: document.documentElement.clientWidth,
-  }));
-  expect(widths.content, what).toBeLessThanOrEqual(widths.screen);
+async function expectInOrder(what: string): Promise<void> {
+  await expectAccessible(page, what);
+  await expectNoSidewaysScroll(page, what);
 }
 
 const effect = () => page.getByRole('region', { name: 'Effect of the draft' });
@@ -83,7 +77,7 @@ test('a planner makes a brief from the clinic preset, sees what a cooler room do
     .click();
   await page.keyboard.type('a quiet fan for the neighbours');
   await page.getByText('1 fault to mend before it can be saved.').waitFor();
-  await expectAccessible('brief editor with a fault');
+  await expectInOrder('brief editor with a fault');
 
   await temperature.fill('23.5');
   await effect()
@@ -114,7 +108,7 @@ test('a planner makes a brief from the clinic preset, sees what a cooler room do
   const changed = difference.getByRole('row', { name: /Room temperature\s*26 °C\s*23\.5 °C/ });
   await changed.waitFor(SOON);
   expect(await page.getByText('kept on this device').count()).toBe(0);
-  await expectAccessible('saved brief');
+  await expectInOrder('saved brief');
 
   const name = (await effect().getByLabel('Effect at').locator('option:checked').textContent()) ?? '';
   await page.getByRole('link', { name, exact: true }).click();

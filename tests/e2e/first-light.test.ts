@@ -1,5 +1,4 @@
 import { readFile } from 'node:fs/promises';
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, expect, test, vi } from 'vitest';
 import { demoWeatherFile } from '../../data/demo/demo-weather-file.ts';
@@ -7,8 +6,10 @@ import { sampleStation, sampleUpload } from '../../data/demo/sample-upload.ts';
 import { demoStations } from '../../data/demo/stations.ts';
 import { type DemoAccount, readDemoAccounts } from '../../server/builders/demo-accounts.ts';
 import type { Role } from '../../src/contract/accounts.ts';
+import { paths } from '../../src/lib/paths.ts';
 import { launchBrowser, type Viewport, type WatchedPage, watchedPage } from '../support/browser.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
+import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
 import {
   acceptAll,
   answerTable,
@@ -33,6 +34,7 @@ vi.setConfig({ testTimeout: 300_000 });
 
 let product: RunningProduct;
 let browser: Browser;
+let teamId: string;
 let accounts: readonly Omit<DemoAccount, 'name'>[];
 let watched: WatchedPage;
 let page: Page;
@@ -40,6 +42,7 @@ let page: Page;
 beforeAll(async () => {
   product = await startProduct('demo');
   accounts = await readDemoAccounts(product.demoAccountsPath);
+  teamId = (await product.deps.db('teams').first<{ id: string }>('id')).id;
   browser = await launchBrowser();
 }, 300_000);
 
@@ -72,9 +75,16 @@ function account(role: Role): { email: string; password: string } {
   return found;
 }
 
-async function enterAs(role: Role): Promise<void> {
-  await page.goto('/');
+/** To the map, or to the page that `from` leads to. */
+async function enterAs(role: Role, from?: string): Promise<void> {
+  await page.goto(paths.signIn.to(from));
   await signIn(page, account(role));
+}
+
+/** Without the map, whose drawing takes a while. */
+async function enterAtWeather(role: Role): Promise<void> {
+  await enterAs(role, paths.weather.to(teamId));
+  await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
 }
 
 /** By the top bar, where the pages of a narrow screen stand behind a menu. */
@@ -83,25 +93,10 @@ async function openWeather(): Promise<void> {
   if (await menu.isVisible()) {
     await menu.focus();
     await page.keyboard.press('Enter');
-    await expectAccessible('menu');
+    await expectAccessible(page, 'menu');
   }
   await page.getByRole('link', { name: 'Weather', exact: true }).click();
   await page.getByRole('heading', { name: 'Weather files', level: 1 }).waitFor();
-}
-
-async function expectAccessible(what: string): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  const said = violations.map(({ id, help, nodes }) => `${id}: ${help}: ${nodes.map(({ html }) => html).join(' | ')}`);
-  expect(said, what).toEqual([]);
-}
-
-/** The page is no wider than the screen. */
-async function expectNoSidewaysScroll(what: string): Promise<void> {
-  const widths = await page.evaluate(() => ({
-    content: document.documentElement.scrollWidth,
-    screen: document.documentElement.clientWidth,
-  }));
-  expect(widths.content, what).toBeLessThanOrEqual(widths.screen);
 }
 
 /** "1,324 h" or "96" as a number. */
@@ -116,6 +111,7 @@ test('a wrong password is refused without saying which of the two was wrong', as
   await page.getByLabel('Password').fill('not the password at all');
   await page.getByRole('button', { name: 'Sign in' }).click();
   await page.getByText('E-mail and password do not belong together.').waitFor();
+  await expectAccessible(page, 'sign-in refused');
   // Chromium itself writes the refused request into the console.
   expect(watched.forgive(/status of 401.*\/api\/session/)).toBe(1);
 });
@@ -151,7 +147,7 @@ test('the whole road: an engineer uploads a file, sees each step, accepts it, de
   expect(sources.map(figure).reduce((sum, hours) => sum + hours, 0)).toBe(total);
   expect(figure(sources[3] ?? '')).toBeGreaterThan(5);
   await readRecord(page);
-  await expectAccessible('weather record in review');
+  await expectAccessible(page, 'weather record in review');
 
   await page.getByRole('button', { name: 'Accept' }).click();
   await deriveExample('Two kelvin warmer');
@@ -169,17 +165,16 @@ async function deriveExample(name: string): Promise<void> {
   await page.getByRole('link', { name: 'Change the climate' }).click();
   await page.getByRole('button', { name: /^Example/ }).click();
   await page.getByText('Dry bulb +2.0 K in every month, days not stretched, humidity ratio kept.').waitFor(SOON);
-  await expectAccessible('change of climate');
+  await expectAccessible(page, 'change of climate');
   await page.getByRole('textbox', { name: 'Name of the derived year' }).fill(name);
   await page.getByRole('button', { name: 'Save as a derived year' }).click();
   await page.getByRole('heading', { name: `${SAMPLE}, derived year`, level: 1 }).waitFor();
   await page.getByRole('heading', { name: 'Derived, beside its parent' }).waitFor();
-  await expectAccessible('derived year');
+  await expectAccessible(page, 'derived year');
 }
 
 test('a file that is there already is recognised and not stored again', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const total = page.getByText(/^\d+ files, newest first$/);
   const before = await total.textContent();
   const [korrelPan] = demoStations;
@@ -266,11 +261,12 @@ test('the map tells the dry interior from the humid coast, and the keyboard goes
   expect(page.url()).toContain('place=');
   await page.goBack();
   await chosen.getByRole('heading', { name: 'Korrel Pan', exact: true }).waitFor();
+  await page.getByRole('region', { name: 'How the score is made' }).waitFor();
+  await expectAccessible(page, 'map');
 });
 
 test('a viewer reads everything of a file and is offered neither upload nor acceptance', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const { name, text } = sampleUpload();
   // Another year of the same place waits for review: one dew point more is given.
   const other = { name: `other-${name}`, text: text.replace(',99.9,99.9,999,999999,', ',20.0,5.0,37,90400,') };
@@ -287,11 +283,14 @@ test('a viewer reads everything of a file and is offered neither upload nor acce
     .click();
   await page.getByText('Waits for an engineer of the team to accept it.').waitFor();
   expect(await page.getByRole('button', { name: /Accept|Withdraw/ }).count()).toBe(0);
+  await page.goBack();
+  await page.getByRole('link', { name: 'Lantern Bay' }).click();
+  await page.getByRole('heading', { name: 'Doubts: used as they stand, or left out' }).waitFor();
+  await expectAccessible(page, 'weather record with doubts');
 });
 
 test('a file with letters for numbers is refused with line and column, and another upload goes on as before', async () => {
-  await enterAs('engineer');
-  await openWeather();
+  await enterAtWeather('engineer');
   const lines = sampleUpload().text.split('\r\n');
   // Line 1009 is the first after 1000 hours: its dry bulb becomes letters.
   const fields = (lines[1008] ?? '').split(',');
@@ -305,18 +304,17 @@ test('a file with letters for numbers is refused with line and column, and anoth
   const row = page.getByRole('row', { name: /warm/ });
   await row.getByText(`Line 1009, column ${columnOfDryBulb}`).waitFor();
   expect(await page.getByRole('button', { name: 'Accept' }).count()).toBe(0);
-  await expectAccessible('weather record of a refused file');
+  await expectAccessible(page, 'weather record of a refused file');
 });
 
 test('a zip of mixed files is read with live progress, paused, resumed and answered once; accepting what waits puts its stations on the map', async () => {
-  await enterAs('engineer');
-  await openWeather();
-  const look = { page, soon: SOON, expectAccessible };
+  await enterAtWeather('engineer');
+  const look = { page, soon: SOON };
   const batch = await bringPaused(look);
   await page.reload();
   await batch.getByText(/^Paused, 0 of 0 files read/).waitFor();
   await resume(batch, look);
-  await expectAccessible('library with a batch');
+  await expectAccessible(page, 'library with a batch');
   await seeRefused(batch, look);
   await answerTable(batch, look);
   await openWeather();
@@ -327,25 +325,8 @@ test('a zip of mixed files is read with live progress, paused, resumed and answe
   await mapIsDrawn(page);
 });
 
-test('sign-in, weather list, weather record and map have no accessibility fault that a machine can find', async () => {
-  await page.goto('/');
-  await page.getByRole('button', { name: 'Sign in' }).waitFor();
-  await expectAccessible('sign-in');
-  await signIn(page, account('lead'));
-  await page.getByRole('region', { name: 'How the score is made' }).waitFor();
-  await mapIsDrawn(page);
-  await expectAccessible('map');
-  await openWeather();
-  await page.getByRole('link', { name: 'Lantern Bay' }).waitFor();
-  await expectAccessible('weather list');
-  await page.getByRole('link', { name: 'Lantern Bay' }).click();
-  await page.getByRole('heading', { name: 'Doubts: used as they stand, or left out' }).waitFor();
-  await expectAccessible('weather record');
-});
-
 test('a lead puts a station right with reasons, and makes a token that is shown once and revokes it', async () => {
-  await enterAs('lead');
-  await openWeather();
+  await enterAtWeather('lead');
   await page.getByRole('link', { name: 'Stations' }).click();
   await page.getByLabel('Name or WMO number').fill('gannet');
   await page.getByRole('button', { name: 'Search' }).click();
@@ -353,10 +334,10 @@ test('a lead puts a station right with reasons, and makes a token that is shown 
   await page.getByRole('link', { name: 'Gannet Point' }).click();
   await page.getByRole('heading', { name: 'Gannet Point', level: 1 }).waitFor();
   await putStationRight(page);
-  await expectAccessible('station');
+  await expectAccessible(page, 'station');
   await page.getByRole('link', { name: 'Team', exact: true }).click();
   await makeAndRevokeToken(page);
-  await expectAccessible('API tokens');
+  await expectAccessible(page, 'API tokens');
 });
 
 test('the map asks nothing of any other origin, and tiles, fonts and code come from this one under the policy of the page', async () => {
@@ -380,10 +361,10 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
   await lookAgain(PHONE);
   await page.goto('/');
   await page.getByRole('button', { name: 'Sign in' }).waitFor();
-  await expectNoSidewaysScroll('sign-in');
+  await expectNoSidewaysScroll(page, 'sign-in');
   await signIn(page, account('viewer'));
   await mapIsDrawn(page);
-  await expectNoSidewaysScroll('map');
+  await expectNoSidewaysScroll(page, 'map');
   expect((await page.getByRole('banner').boundingBox())?.height).toBeLessThanOrEqual(56);
 
   const sheet = page.getByRole('region', { name: 'Stations panel' });
@@ -398,22 +379,21 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
   await place.getByRole('button', { name: /Press to change/ }).focus();
   await page.keyboard.press('ArrowUp');
   await page.getByRole('region', { name: 'How the score is made' }).scrollIntoViewIfNeeded();
-  await expectNoSidewaysScroll('map with a place');
-  await expectAccessible('map on a phone');
+  await expectNoSidewaysScroll(page, 'map with a place');
+  await expectAccessible(page, 'map on a phone');
   await page.keyboard.press('Escape');
   await expect.poll(async () => (await place.boundingBox())?.height ?? 0, SOON).toBeLessThan(160);
 
   await openWeather();
   await page.getByRole('link', { name: 'Lantern Bay' }).waitFor();
-  await expectNoSidewaysScroll('weather list');
+  await expectNoSidewaysScroll(page, 'weather list');
   await page.getByRole('link', { name: 'Lantern Bay' }).click();
   await page.getByRole('heading', { name: 'Design values of this year' }).waitFor();
-  await expectNoSidewaysScroll('weather record');
+  await expectNoSidewaysScroll(page, 'weather record');
 });
 
 test('signing out ends the session: the address of a page leads to sign-in and back to the page', async () => {
-  await enterAs('viewer');
-  await openWeather();
+  await enterAtWeather('viewer');
   const address = page.url();
   await signOut(page);
   await page.goto(address);

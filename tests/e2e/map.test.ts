@@ -5,6 +5,7 @@ import { afterAll, afterEach, beforeAll, expect, test, vi } from 'vitest';
 import { readDemoAccounts } from '../../server/builders/demo-accounts.ts';
 import type { Role } from '../../src/contract/accounts.ts';
 import { launchBrowser, type Viewport, type WatchedPage, watchedPage } from '../support/browser.ts';
+import { firstLoad } from '../support/first-load.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
 import { mapIsDrawn, scoreShown, signIn } from './steps.ts';
 
@@ -64,6 +65,16 @@ const legend = () => page.getByRole('region', { name: 'Legend' });
 const chosen = () => page.getByRole('region', { name: 'Chosen place' });
 /** Places in each class of the legend, as printed. */
 const counts = async (): Promise<string> => (await textOf(legend().getByRole('list').first())).replaceAll(/\s+/g, ' ');
+
+test('a first visit fetches at most 160 kB for the shell and 560 kB for the map with its worker, compressed', () => {
+  const { shell, route, file } = firstLoad(product.deps.clientDir);
+  expect(shell).toBeLessThanOrEqual(160_000);
+  const map = route('src/app/pages/map/map-page.tsx');
+  const worker = file('maplibre-gl-worker');
+  // The map's engine alone is more than half of each: a figure below that would not have counted it.
+  expect(Math.min(map, worker)).toBeGreaterThan(100_000);
+  expect(map + worker).toBeLessThanOrEqual(560_000);
+});
 
 test('a planner drags effectiveness and humidity cap, the map and the ranking follow, and she saves what she found', async () => {
   await enterAs('planner', DESK);

@@ -1,4 +1,3 @@
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, expect, onTestFailed, test, vi } from 'vitest';
 import { inTransaction } from '../../server/db/in-transaction.ts';
@@ -6,9 +5,10 @@ import { makePerson } from '../../server/features/accounts/make-person.ts';
 import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
 import { hourClasses } from '../../src/engine/hour-classes/hour-class.ts';
-import { launchBrowser, type Viewport, watchedPage } from '../support/browser.ts';
+import { launchBrowser, watchedPage } from '../support/browser.ts';
 import { publishedChecks } from '../support/published-values.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
+import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
 import { signIn } from './steps.ts';
 
 const ACCOUNT = { email: 'reader@example.org', password: 'a long pass phrase for tests' };
@@ -33,58 +33,46 @@ afterAll(async () => {
   await product?.close();
 });
 
-const sizes: [string, Viewport][] = [
-  ['a desk', { width: 1440, height: 900 }],
-  ['a phone', { width: 390, height: 844 }],
-];
+test('the method page runs every published check in the browser, every one holds, and it reads as well on a phone', async () => {
+  const watched = await watchedPage(browser, { origin: product.origin, viewport: { width: 1440, height: 900 } });
+  const { page } = watched;
+  onTestFailed(() => watched.picture('method-failed'));
+  await page.goto('/');
+  await signIn(page, ACCOUNT);
+  await page.getByRole('link', { name: 'Method', exact: true }).click();
+  await page.getByRole('heading', { name: 'Method', level: 1 }).waitFor();
+  await page.getByText(/^38 checks: (\d+) of \1 values hold\.$/).waitFor();
 
-test.each(sizes)(
-  'the method page on %s runs every published check in the browser, and every one holds',
-  async (name, viewport) => {
-    const watched = await watchedPage(browser, { origin: product.origin, viewport });
-    const { page } = watched;
-    onTestFailed(() => watched.picture(`method-failed-${name.replaceAll(' ', '-')}`));
-    await page.goto('/');
-    await signIn(page, ACCOUNT);
-    const menu = page.getByRole('button', { name: 'Menu', exact: true });
-    if (await menu.isVisible()) await menu.click();
-    await page.getByRole('link', { name: 'Method', exact: true }).click();
-    await page.getByRole('heading', { name: 'Method', level: 1 }).waitFor();
-    await page.getByText(/^38 checks: (\d+) of \1 values hold\.$/).waitFor();
+  const checks = page.getByRole('list', { name: 'Checks' }).getByRole('listitem');
+  const summaries = await checks.locator('summary').allInnerTexts();
+  expect(summaries).toHaveLength(publishedChecks.length);
+  for (const { id, what } of publishedChecks) {
+    const shown = summaries.filter((text) => text.startsWith(id));
+    expect(shown, id).toHaveLength(1);
+    expect(shown[0]).toContain(what);
+    expect(shown[0]).toMatch(/holds, (\d+) of \1/);
+  }
+  const classes = page.getByRole('region', { name: 'Hour classes' }).locator('tbody tr');
+  expect(await classes.count()).toBe(hourClasses.length);
+  await expectNoSidewaysScroll(page, 'a desk');
 
-    const checks = page.getByRole('list', { name: 'Checks' }).getByRole('listitem');
-    const summaries = await checks.locator('summary').allInnerTexts();
-    expect(summaries).toHaveLength(publishedChecks.length);
-    for (const { id, what } of publishedChecks) {
-      const shown = summaries.filter((text) => text.startsWith(id));
-      expect(shown, id).toHaveLength(1);
-      expect(shown[0]).toContain(what);
-      expect(shown[0]).toMatch(/holds, (\d+) of \1/);
-    }
-    await page.getByRole('button', { name: 'Open all' }).click();
-    const verdicts = await checks.locator('tbody td:last-child').allInnerTexts();
-    expect(verdicts.length).toBeGreaterThan(150);
-    expect(verdicts.filter((word) => word !== 'yes')).toEqual([]);
-    const text = await checks.allInnerTexts();
-    for (const { id, source } of publishedChecks) {
-      expect(
-        text.filter((each) => each.startsWith(id) && each.includes(source)),
-        id,
-      ).toHaveLength(1);
-    }
+  await page.getByRole('button', { name: 'Open all' }).click();
+  const verdicts = await checks.locator('tbody td:last-child').allInnerTexts();
+  expect(verdicts.length).toBeGreaterThan(150);
+  expect(verdicts.filter((word) => word !== 'yes')).toEqual([]);
+  const text = await checks.allInnerTexts();
+  for (const { id, source } of publishedChecks) {
+    expect(
+      text.filter((each) => each.startsWith(id) && each.includes(source)),
+      id,
+    ).toHaveLength(1);
+  }
 
-    const classes = page.getByRole('region', { name: 'Hour classes' }).locator('tbody tr');
-    expect(await classes.count()).toBe(hourClasses.length);
-    const widths = await page.evaluate(() => [
-      document.documentElement.scrollWidth,
-      document.documentElement.clientWidth,
-    ]);
-    expect(widths[0]).toBeLessThanOrEqual(widths[1] ?? 0);
-    const { violations } = await new AxeBuilder({ page }).analyze();
-    expect(violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`)).toEqual([]);
-    await page.getByRole('button', { name: 'Close all' }).click();
-    await watched.picture(`method-${name.replaceAll(' ', '-')}`);
-    // Closing throws when the console, the network or the page complained about anything.
-    await watched.close();
-  },
-);
+  await page.setViewportSize({ width: 390, height: 844 });
+  await expectNoSidewaysScroll(page, 'a phone');
+  await expectAccessible(page, 'all checks open');
+  await page.getByRole('button', { name: 'Close all' }).click();
+  await watched.picture('method-on-a-phone');
+  // Closing throws when the console, the network or the page complained about anything.
+  await watched.close();
+});

@@ -1,5 +1,6 @@
 import type { Locator, Page } from 'playwright-core';
 import { expect } from 'vitest';
+import { expectAccessible } from './accessible.ts';
 import { BROKEN_LINE, mixedArchive, newStations, plainTable } from './mixed-archive.ts';
 import { uploadText } from './steps.ts';
 
@@ -10,7 +11,6 @@ interface Look {
   readonly page: Page;
   /** Long enough for what is read in the background. */
   readonly soon: { readonly timeout: number };
-  readonly expectAccessible: (what: string) => Promise<void>;
 }
 
 /** Drops a zip into the library and pauses its batch while it is still on its way. @returns the batch as it is shown */
@@ -73,7 +73,7 @@ export async function seeRefused(batch: Locator, { page }: Look): Promise<void> 
 
 /** The table asks once for its columns, and shows its first rows under the answer as it changes. */
 export async function answerTable(batch: Locator, look: Look): Promise<void> {
-  const { page, soon, expectAccessible } = look;
+  const { page, soon } = look;
   await batch.getByRole('link', { name: '1 asks' }).click();
   await page
     .getByRole('row', { name: new RegExp(TABLE) })
@@ -83,7 +83,7 @@ export async function answerTable(batch: Locator, look: Look): Promise<void> {
   await form.waitFor();
   const sample = form.getByRole('region', { name: 'The first rows, read so' });
   expect(await sample.locator('tbody tr').count()).toBe(10);
-  await expectAccessible('questions of a table');
+  await expectAccessible(page, 'questions of a table');
   const dewPoint = form.getByLabel('Dew point', { exact: true });
   await dewPoint.selectOption('');
   await form.getByRole('button', { name: 'Answer and read the file again' }).click();
@@ -112,12 +112,12 @@ export async function bringSameShape({ page, soon }: Look): Promise<void> {
 }
 
 /** Accepts at once everything of the batch that waits. */
-export async function acceptAll(batch: Locator, { page, soon, expectAccessible }: Look): Promise<void> {
+export async function acceptAll(batch: Locator, { page, soon }: Look): Promise<void> {
   await batch.getByRole('link', { name: '4 in review' }).click();
   await page.getByText(/^4 of \d+ files$/).waitFor();
   await page.getByRole('checkbox', { name: 'Choose all files on this page' }).check();
   await page.getByText('4 files chosen', { exact: true }).waitFor();
-  await expectAccessible('chosen files');
+  await expectAccessible(page, 'chosen files');
   await page.getByRole('button', { name: 'Accept', exact: true }).click();
   await page.getByText('4 files accepted', { exact: true }).waitFor(soon);
 }

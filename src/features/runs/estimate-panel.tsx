@@ -83,7 +83,7 @@ function supportWords({ support, error }: PlaceEstimate): string {
   const near =
     support === 'full'
       ? 'A station is within 50 km and 150 m of height.'
-      : 'No station within 50 km and 150 m of height.';
+      : 'A station is within 100 km and 300 m of height, none within 50 km and 150 m.';
   if (error === null) return near;
   return `${near} Stations estimated from the others are out by ${number(error.rootMeanSquare, 1)} points (root mean square over ${error.stations}).`;
 }

@@ -1,4 +1,5 @@
-import { type ReactNode, useState } from 'react';
+import { type ReactNode, Suspense, useState } from 'react';
+import { Loading } from '../../ui/loading.tsx';
 
 interface FoldProps {
   readonly title: string;
@@ -25,7 +26,11 @@ export function Fold({ title, gist, isOpenFirst = false, children }: FoldProps) 
         <h2 className="text-name">{title}</h2>
         {gist === undefined ? null : <span className="text-soft">{gist}</span>}
       </summary>
-      {isOpen ? <div className="pb-4 pl-5 max-sm:pl-0">{children()}</div> : null}
+      {isOpen ? (
+        <div className="pb-4 pl-5 max-sm:pl-0">
+          <Suspense fallback={<Loading what={title.toLowerCase()} />}>{children()}</Suspense>
+        </div>
+      ) : null}
     </details>
   );
 }

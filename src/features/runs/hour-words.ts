@@ -1,7 +1,7 @@
 import { dayLabel, hourLabel } from '../../charts/calendar.ts';
 import { classWords } from '../../charts/hour-class-words.ts';
 import type { HourList, ListedHour } from '../../contract/hour-list.ts';
-import { differenceK, number, percent, temperatureC, withUnit } from '../../lib/format.ts';
+import { differenceK, number, percent, sentence, temperatureC, withUnit } from '../../lib/format.ts';
 
 const HOURS = 24;
 const NONE = '–';
@@ -22,12 +22,12 @@ export function hourSentence(hour: ListedHour, list: Pick<HourList, 'limitUnit'>
           ...(hour.relativeHumidityPct === null ? [] : [`${percent(hour.relativeHumidityPct, 0)} RH`]),
         ].join(', ')}.`;
   const short = hour.shortfall === null || hour.shortfall <= 0 ? '' : ` ${shortfallWords(hour, list)} short.`;
-  const why = hour.reason === '' ? '' : ` ${hour.reason.charAt(0).toUpperCase()}${hour.reason.slice(1)}.`;
+  const why = hour.reason === '' ? '' : ` ${sentence(hour.reason.charAt(0).toUpperCase() + hour.reason.slice(1))}`;
   return `${classWords[hour.hourClass]}.${state}${why}${short}`;
 }
 
 export function shortfallWords({ shortfall }: ListedHour, { limitUnit }: Pick<HourList, 'limitUnit'>): string {
-  if (shortfall === null) return NONE;
+  if (shortfall === null || shortfall <= 0) return NONE;
   return limitUnit === '°C' ? differenceK(shortfall) : withUnit(shortfall, 'points', 1);
 }
 

@@ -49,7 +49,10 @@ export function HoursDialog({ run, days, choice, placeName, onClose }: HoursDial
               : ''}
           </p>
           {list.total === 0 ? null : <HourTable list={list} />}
-          {list.pages > 1 ? <Pages list={list} onPage={setPage} isBusy={found.isPlaceholderData} /> : null}
+          <div className="mt-3 flex flex-wrap items-center justify-between gap-3">
+            {list.pages > 1 ? <Pages list={list} onPage={setPage} isBusy={found.isPlaceholderData} /> : <span />}
+            <Button onClick={onClose}>Close</Button>
+          </div>
         </>
       )}
     </Dialog>
@@ -130,7 +133,7 @@ interface PagesProps {
 
 function Pages({ list: { page, pages }, onPage, isBusy }: PagesProps) {
   return (
-    <nav aria-label="Pages of hours" className="mt-3 flex items-center gap-3">
+    <nav aria-label="Pages of hours" className="flex items-center gap-3">
       <Button disabled={page <= 1} busy={isBusy} onClick={() => onPage(page - 1)}>
         Earlier
       </Button>

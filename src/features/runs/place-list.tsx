@@ -1,5 +1,5 @@
-import { useEffect, useMemo, useRef } from 'react';
-import { Input, ListBox, ListBoxItem, ListLayout, SearchField, Virtualizer } from 'react-aria-components';
+import { lazy, Suspense, useEffect, useMemo, useRef } from 'react';
+import { Input, ListBox, ListBoxItem, SearchField } from 'react-aria-components';
 import { plural } from '../../lib/format.ts';
 import type { PlaceKind } from '../../map/sheet-place.ts';
 import type { MapPlace } from './map-places.ts';
@@ -19,6 +19,8 @@ interface PlaceListProps {
   /** Scores are on their way: the order may change yet. */
   readonly isBehind: boolean;
 }
+
+const LongList = lazy(async () => ({ default: (await import('./long-list.tsx')).LongList }));
 
 /** From here on only the rows in view are put into the page. */
 const MOST_WHOLE = 200;
@@ -67,9 +69,9 @@ export function PlaceList(props: PlaceListProps) {
         {typed === '' ? '' : `${plural(found.length, kind)} found`}
       </p>
       {items.length > MOST_WHOLE ? (
-        <Virtualizer layout={ListLayout} layoutOptions={{ rowHeight: ROW_PX }}>
-          {list}
-        </Virtualizer>
+        <Suspense>
+          <LongList rowPx={ROW_PX}>{list}</LongList>
+        </Suspense>
       ) : (
         list
       )}

@@ -61,7 +61,7 @@ function RangeTable({ range: { score, year, years, pairs, largest } }: { range: 
           {pairs.map(({ doubt, minus, plus }) => (
             <tr key={doubt} className={largest === doubt ? 'font-semibold' : ''}>
               <th scope="row">{doubtWords[doubt]}</th>
-              <td className="text-soft">{minus.label}</td>
+              <td className="text-soft">{minus.label.replace('-', '−')}</td>
               <td className="figure">{minus.score ?? '–'}</td>
               <td className="text-soft">{plus.label}</td>
               <td className="figure">{plus.score ?? '–'}</td>

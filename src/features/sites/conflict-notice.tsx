@@ -9,32 +9,35 @@ export function ConflictNotice({ desk, onSettled }: { desk: SiteDesk; onSettled:
   if (desk.conflict === null) return null;
   const { error } = desk.conflict;
   return (
-    <Notice
-      tone="attention"
-      live
-      title="Not saved: somebody changed this site meanwhile"
-      actions={
-        <>
-          <Button look="primary" busy={over.isPending} onClick={() => over.mutate()}>
-            Save mine on top
-          </Button>
-          <Button
-            onClick={() => {
-              desk.forgetConflict();
-              onSettled();
-            }}
-          >
-            Keep what is there now
-          </Button>
-        </>
-      }
-    >
-      <p>{error.message}</p>
-      <ul className="mt-1 list-disc pl-5">
-        {error.problems.map(({ message }) => (
-          <li key={message}>{message}</li>
-        ))}
-      </ul>
-    </Notice>
+    // Whatever panel the person is at, it stands in view.
+    <div className="sticky top-0 z-10 -mx-3 border-b border-line bg-paper px-3 py-3">
+      <Notice
+        tone="attention"
+        live
+        title="Not saved: somebody changed this site meanwhile"
+        actions={
+          <>
+            <Button look="primary" busy={over.isPending} onClick={() => over.mutate()}>
+              Save mine on top
+            </Button>
+            <Button
+              onClick={() => {
+                desk.forgetConflict();
+                onSettled();
+              }}
+            >
+              Keep what is there now
+            </Button>
+          </>
+        }
+      >
+        <p>{error.message}</p>
+        <ul className="mt-1 list-disc pl-5">
+          {error.problems.map(({ message }) => (
+            <li key={message}>{message}</li>
+          ))}
+        </ul>
+      </Notice>
+    </div>
   );
 }

@@ -1,5 +1,4 @@
 import { number, plural } from '../../lib/format.ts';
-import { ScrollInside } from '../../ui/scroll-inside.tsx';
 
 const MOST_SHOWN = 200;
 
@@ -14,33 +13,32 @@ export function FaultTable({ what, count, told }: { what: string; count: number;
   const shown = told.slice(0, MOST_SHOWN);
   return (
     <>
-      <div className="max-h-80 overflow-y-auto">
-        <ScrollInside label={`${what}, scrolls sideways`}>
-          <table className="ruled">
-            <caption className="sr-only">{what} by line and column</caption>
-            <thead>
-              <tr>
-                <th scope="col" className="w-16">
-                  Line
-                </th>
-                <th scope="col" className="w-32">
-                  Column
-                </th>
-                <th scope="col">What is wrong</th>
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls, and the keyboard has to reach what is further down. */}
+      <section tabIndex={0} aria-label={`${what} by line`} className="max-h-80 overflow-auto">
+        <table className="ruled">
+          <caption className="sr-only">{what} by line and column</caption>
+          <thead>
+            <tr>
+              <th scope="col" className="w-16">
+                Line
+              </th>
+              <th scope="col" className="w-32">
+                Column
+              </th>
+              <th scope="col">What is wrong</th>
+            </tr>
+          </thead>
+          <tbody>
+            {shown.map(({ line, column, message }) => (
+              <tr key={`${line} ${column} ${message}`}>
+                <td>{number(line)}</td>
+                <td className="first-letter:uppercase">{column}</td>
+                <td dir="auto">{message}</td>
               </tr>
-            </thead>
-            <tbody>
-              {shown.map(({ line, column, message }) => (
-                <tr key={`${line} ${column} ${message}`}>
-                  <td>{number(line)}</td>
-                  <td className="first-letter:uppercase">{column}</td>
-                  <td dir="auto">{message}</td>
-                </tr>
-              ))}
-            </tbody>
-          </table>
-        </ScrollInside>
-      </div>
+            ))}
+          </tbody>
+        </table>
+      </section>
       {count > shown.length ? (
         <p className="mt-1 text-fine text-soft">And {plural(count - shown.length, 'more', 'more')}.</p>
       ) : null}

@@ -20,8 +20,10 @@ export function ImportCheck({ check, isBusy, onFinish, onBack }: ImportCheckProp
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
       <p role="status">
-        {plural(rows, 'row')} checked: {plural(faults.count, 'fault')}, {plural(doubts.count, 'doubt')},{' '}
-        {plural(duplicates.count, 'duplicate')}.
+        {plural(rows, 'row')} checked:{' '}
+        {faults.count + doubts.count + duplicates.count === 0
+          ? 'no fault, no doubt, no duplicate.'
+          : `${plural(faults.count, 'fault')}, ${plural(doubts.count, 'doubt')}, ${plural(duplicates.count, 'duplicate')}.`}
       </p>
       {seemsSwapped ? (
         <Notice tone="attention" title="Latitude and longitude seem swapped">

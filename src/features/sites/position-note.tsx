@@ -1,4 +1,4 @@
-import { useQuery } from '@tanstack/react-query';
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { metres } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
@@ -19,10 +19,12 @@ interface PositionNoteProps {
 /** How a position was read, the ground and the station there, and what makes it doubtful. */
 export function PositionNote({ programme, written, elevation, onPosition }: PositionNoteProps) {
   const settled = useSettled(written, WAIT_MS);
+  const settledHeight = useSettled(elevation, WAIT_MS);
   const { position, swapped } = positionOfDraft(settled);
   const ground = useQuery({
-    ...groundQuery(programme, position ?? { latitude: 0, longitude: 0 }),
+    ...groundQuery(programme, { ...(position ?? { latitude: 0, longitude: 0 }), ...heightOf(settledHeight) }),
     enabled: position !== null,
+    placeholderData: keepPreviousData,
   }).data;
   if (position === null) {
     return swapped === null ? null : (
@@ -60,6 +62,12 @@ export function PositionNote({ programme, written, elevation, onPosition }: Posi
       ) : null}
     </div>
   );
+}
+
+/** A height that was typed, where it is one; else the server takes that of the relief. */
+function heightOf(written: string): { elevationM?: number } {
+  const value = Number(written.trim().replace(',', '.'));
+  return written.trim() === '' || !(value >= -500 && value <= 9000) ? {} : { elevationM: value };
 }
 
 /** A value once it has not changed for a while. */

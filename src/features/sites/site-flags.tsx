@@ -1,5 +1,4 @@
 import type { Site } from '../../contract/sites.ts';
-import { list } from '../../lib/format.ts';
 import { SeverityMark } from '../../ui/status-mark.tsx';
 import { flagWord } from './site-words.ts';
 
@@ -10,7 +9,7 @@ export function SiteFlags({ flags, toSettle }: Pick<Site, 'flags' | 'toSettle'>)
   return (
     <span className="flex items-center gap-1.5">
       <SeverityMark severity={isOpen ? 'doubt' : 'note'} />
-      {list(flags.map((flag) => flagWord[flag]))}
+      {flags.map((flag, index) => (index === 0 ? flagWord[flag] : flagWord[flag].toLowerCase())).join(', ')}
     </span>
   );
 }

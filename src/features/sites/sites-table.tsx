@@ -26,9 +26,6 @@ interface Column {
 
 /** Every column behind the name; one more is one more entry. */
 const columns: readonly Column[] = [
-  { label: 'Position', sort: null, cell: (site) => <span className="whitespace-nowrap">{position(site)}</span> },
-  { label: 'Elevation', sort: null, isFigure: true, cell: elevationWords },
-  { label: sortLabel.load, sort: 'load', isFigure: true, cell: ({ designLoadKw }) => loadWords(designLoadKw) },
   { label: sortLabel.station, sort: 'station', cell: ({ station }) => <StationCell station={station} /> },
   {
     label: sortLabel.distance,
@@ -43,6 +40,9 @@ const columns: readonly Column[] = [
     cell: ({ station }) => heightDifference(station?.heightDifferenceM ?? null),
   },
   { label: sortLabel.flags, sort: 'flags', cell: (site) => <SiteFlags {...site} /> },
+  { label: sortLabel.load, sort: 'load', isFigure: true, cell: ({ designLoadKw }) => loadWords(designLoadKw) },
+  { label: 'Elevation', sort: null, isFigure: true, cell: elevationWords },
+  { label: 'Position', sort: null, cell: (site) => <span className="whitespace-nowrap">{position(site)}</span> },
 ];
 
 interface SitesTableProps {
@@ -66,7 +66,7 @@ export function SitesTable({ programme, items, view, choice }: SitesTableProps) 
               </th>
             ) : null}
             <th scope="col" aria-sort={sortOf(view, 'letters', 'name')}>
-              <SortLink view={view} sort="letters" /> and <SortLink view={view} sort="name" />
+              <SortLink view={view} sort="letters" /> and <SortLink view={view} sort="name" label="name" />
             </th>
             {columns.map(({ label, sort, isFigure }) => (
               <th
@@ -170,11 +170,11 @@ function without(chosen: ChosenSites, sites: readonly Site[]): ChosenSites {
   return next;
 }
 
-function SortLink({ view, sort }: { view: SitesView; sort: SiteSort }) {
+function SortLink({ view, sort, label }: { view: SitesView; sort: SiteSort; label?: string }) {
   const isNow = view.sort === sort;
   return (
     <Link to={sitesSearch(sortedBy(view, sort))} className={`py-1 text-soft ${isNow ? 'font-semibold text-ink' : ''}`}>
-      {sortLabel[sort]}
+      {label ?? sortLabel[sort]}
       {isNow ? <span aria-hidden="true"> {view.order === 'asc' ? '↑' : '↓'}</span> : null}
     </Link>
   );

@@ -57,8 +57,15 @@ export function StationDrawing({ record: { site }, markedId, shown }: StationDra
               {...(isMarked ? {} : { strokeDasharray: '3 3' })}
             />
             <path d={`M${x} ${y - 5}l5 9h-10z`} fill={isMarked ? INK : '#fbf9f3'} stroke={INK} strokeWidth="1.2" />
-            <text x={x} y={y - 9} textAnchor="middle" fontSize="10.5" fill={isMarked ? INK : SOFT}>
-              {point.name.length > 16 ? `${point.name.slice(0, 15)}…` : point.name}
+            <text
+              x={Math.min(WIDTH - 6, Math.max(6, x))}
+              // Names stand on the side away from the site, so that they keep clear of its mark.
+              y={y <= HEIGHT / 2 ? y - 9 : y + 16}
+              textAnchor={x < WIDTH * 0.3 ? 'start' : x > WIDTH * 0.7 ? 'end' : 'middle'}
+              fontSize="10.5"
+              fill={isMarked ? INK : SOFT}
+            >
+              {point.name.length > 18 ? `${point.name.slice(0, 17)}…` : point.name}
             </text>
           </g>
         );

@@ -11,7 +11,7 @@ import { heightDifference, kilometres } from './site-words.ts';
 import { StationDrawing } from './station-drawing.tsx';
 import type { SiteDesk } from './use-site-desk.ts';
 
-const DRAWN = 6;
+const DRAWN = 4;
 const PANEL = 'station';
 
 interface StationPanelProps {

@@ -1,16 +1,13 @@
 import { useMutation } from '@tanstack/react-query';
-import { type FormEvent, useState } from 'react';
+import { useState } from 'react';
 import { type RuleOff, type Station, setRuleOff, setRuleOn } from '../../contract/stations.ts';
 import { type RuleName, ruleNames } from '../../engine/weather-files/quality/quality-options.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence } from '../../lib/api-error.ts';
-import { problemsOfError, problemsOfIssues } from '../../lib/form-problems.ts';
 import { moment, sentence } from '../../lib/format.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Button } from '../../ui/button.tsx';
-import { Dialog } from '../../ui/dialog.tsx';
-import { Notice } from '../../ui/notice.tsx';
-import { TextField } from '../../ui/text-field.tsx';
+import { ReasonDialog } from '../../ui/reason-dialog.tsx';
 import { ruleWords } from './rule-words.ts';
 import { useStationChanged } from './station-queries.ts';
 
@@ -106,48 +103,25 @@ function Rule({ station, rule, off, mayChange, onSwitchOff }: RuleProps) {
 function SwitchOffDialog({ station, rule, onClose }: { station: Station; rule: RuleName; onClose: () => void }) {
   const { teamId } = useTeam();
   const changed = useStationChanged();
-  const [reason, setReason] = useState('');
-  const [problem, setProblem] = useState<string | undefined>();
   const switchOff = useMutation({
-    mutationFn: (body: { reason: string }) =>
-      call(setRuleOff, { params: { teamId, stationId: station.id, rule }, query: {}, body }),
+    mutationFn: (reason: string) =>
+      call(setRuleOff, { params: { teamId, stationId: station.id, rule }, query: {}, body: { reason } }),
     onSuccess: onClose,
-    onError: (error) => setProblem(problemsOfError(error)?.fields.reason),
     onSettled: changed,
   });
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
-    const parsed = setRuleOff.body.schema.safeParse({ reason });
-    setProblem(parsed.success ? undefined : problemsOfIssues(parsed.error.issues).fields.reason);
-    if (parsed.success) switchOff.mutate(parsed.data);
-  };
   return (
-    <Dialog isOpen onClose={onClose} title={`Switch off: ${ruleWords[rule].title}`}>
-      <form noValidate onSubmit={submit} className="grid gap-4">
-        <p>
-          Files of {station.name} that are read from now on are not held against {ruleWords[rule].meaning}. What was
-          read before is not changed.
-        </p>
-        {switchOff.isError && !problem ? (
-          <Notice tone="wrong" live>
-            {errorSentence(switchOff.error)}
-          </Notice>
-        ) : null}
-        <TextField
-          label="Reason"
-          value={reason}
-          onChange={setReason}
-          problem={problem}
-          hint="Kept with your name."
-          autoFocus
-        />
-        <div className="flex justify-end gap-2">
-          <Button onClick={onClose}>Leave it on</Button>
-          <Button type="submit" look="primary" busy={switchOff.isPending}>
-            Switch the rule off
-          </Button>
-        </div>
-      </form>
-    </Dialog>
+    <ReasonDialog
+      title={`Switch off: ${ruleWords[rule].title}`}
+      hint="Kept with your name."
+      leave="Leave it on"
+      act="Switch the rule off"
+      isBusy={switchOff.isPending}
+      error={switchOff.error}
+      onClose={onClose}
+      onReason={(reason) => switchOff.mutate(reason)}
+    >
+      Files of {station.name} that are read from now on are not held against {ruleWords[rule].meaning}. What was read
+      before is not changed.
+    </ReasonDialog>
   );
 }

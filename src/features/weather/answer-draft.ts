@@ -7,11 +7,23 @@ import { draftOfMapping, type MappingDraft, mappingOfDraft, mappingProblems } fr
 export const placeFields = ['name', 'latitude', 'longitude', 'elevationM', 'utcOffsetH'] as const;
 export type PlaceField = (typeof placeFields)[number];
 
+/** What may be asked of the reading of any file, or of one whose source marks its values. */
+const handlings = ['fillLongGaps', 'keepSuspect'] as const;
+export type Handling = (typeof handlings)[number];
+
+/** Formats whose values carry the quality codes of their source. */
+const CODED_FORMATS: readonly string[] = ['ISD', 'Global Hourly'];
+
+export function handlingsOf({ file: { format } }: WeatherFileRecord): readonly Handling[] {
+  return handlings.filter((each) => each !== 'keepSuspect' || CODED_FORMATS.includes(format ?? ''));
+}
+
 export interface AnswerDraft {
   place: Record<PlaceField, string>;
   /** By question; `''` where nothing is chosen. */
   choices: Partial<Record<QuestionCode, string>>;
   mapping: MappingDraft;
+  handling: Record<Handling, boolean>;
 }
 
 export type AnswerReading =
@@ -27,6 +39,7 @@ export function draftOfRecord(record: WeatherFileRecord): AnswerDraft {
     place: declaredPlace(record.file.station),
     choices: Object.fromEntries(questionsOf(record).map(({ code }) => [code, String(said[code] ?? '')])),
     mapping: draftOfMapping(table?.mapping ?? null),
+    handling: { fillLongGaps: answers.fillLongGaps ?? false, keepSuspect: answers.keepSuspect ?? false },
   };
 }
 
@@ -57,6 +70,7 @@ export function readAnswers(draft: AnswerDraft, record: WeatherFileRecord): Answ
     ...together('place', { ...before.place, ...place }),
     ...(mapping ? { mapping: mappingOfDraft(mapping) } : {}),
     ...together('answers', { ...before.answers, ...choices }),
+    ...readHandling(draft, record),
   };
   const parsed = answerWeatherFile.body.schema.safeParse(said);
   if (parsed.success) return { ok: true, answers: parsed.data };
@@ -136,6 +150,12 @@ function readChoices(
       problems[`choices.${code}`] = orByPlace ? 'Choose, or correct the place below.' : 'Choose one of them.';
   }
   return said;
+}
+
+/** What is asked for, and what was before and is no more; what was never asked is not said. */
+function readHandling({ handling }: AnswerDraft, record: WeatherFileRecord): Partial<Record<Handling, boolean>> {
+  const asked = handlingsOf(record).filter((each) => handling[each] || record.answers[each] !== undefined);
+  return Object.fromEntries(asked.map((each) => [each, handling[each]]));
 }
 
 const NUMBER = /^[+-]?(\d+([.,]\d*)?|[.,]\d+)$/;

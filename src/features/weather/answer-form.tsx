@@ -11,6 +11,7 @@ import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';
 import { type AnswerDraft, draftOfRecord, readAnswers } from './answer-draft.ts';
 import { placeAsks, questionsOf, showsPlace } from './answer-questions.ts';
+import { HandlingField } from './handling-field.tsx';
 import { PlaceForm } from './place-form.tsx';
 import { QuestionField } from './question-field.tsx';
 import { SampleTable } from './sample-table.tsx';
@@ -64,6 +65,7 @@ export function AnswerForm({ record, onAnswered }: AnswerFormProps) {
         {showsPlace(record) ? (
           <PlaceForm asks={placeAsks(record.asks).filter(({ what }) => !chosen.has(what))} />
         ) : null}
+        <HandlingField record={record} />
         {answer.isError || formFault ? (
           <Notice tone="wrong" live title="Not answered">
             {formFault ?? errorSentence(answer.error)}

@@ -10,7 +10,7 @@ import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';
-import { ReasonDialog } from './reason-dialog.tsx';
+import { RefuseOrWithdrawDialog } from './refuse-or-withdraw-dialog.tsx';
 import { SupersedeDialog } from './supersede-dialog.tsx';
 import { useWeatherChanged } from './weather-queries.ts';
 import type { ChosenFiles } from './weather-table.tsx';
@@ -79,9 +79,9 @@ export function BulkActs({ chosen, items, onChosen }: BulkActsProps) {
         ) : null}
       </div>
       {asking === 'refuse' || asking === 'withdraw' ? (
-        <ReasonDialog
+        <RefuseOrWithdrawDialog
           act={asking}
-          files={files}
+          count={files.length}
           isBusy={act.isPending}
           onClose={() => setAsking(null)}
           onReason={(reason) => act.mutate({ act: asking, reason })}

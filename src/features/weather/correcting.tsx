@@ -21,7 +21,7 @@ export function Correcting({ record, onAnswered }: CorrectingProps) {
   return (
     <details className="border-y border-line" onToggle={({ currentTarget }) => setIsOpen(currentTarget.open)}>
       <summary className="cursor-pointer py-2 text-indigo">
-        {mapping ? 'Correct the place, or how the table is read' : 'Correct what the file says of its place'}
+        {mapping ? 'Correct the place, or how the file is read' : 'Correct the place, or how gaps are treated'}
       </summary>
       {isOpen ? (
         <div className="pt-2 pb-4">

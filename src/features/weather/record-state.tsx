@@ -141,7 +141,7 @@ function WithdrawButton({ file }: { file: WeatherFile }) {
   return (
     <>
       <Button onClick={() => setIsOpen(true)}>Withdraw</Button>
-      <WithdrawDialog file={file} isOpen={isOpen} onClose={() => setIsOpen(false)} onChanged={changed} />
+      {isOpen ? <WithdrawDialog file={file} onClose={() => setIsOpen(false)} onChanged={changed} /> : null}
     </>
   );
 }

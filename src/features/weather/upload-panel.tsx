@@ -6,7 +6,9 @@ import { MAX_ARCHIVE_BYTES } from '../../contract/weather-batches.ts';
 import { fileSize, percent, plural } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { Button } from '../../ui/button.tsx';
+import { Notice } from '../../ui/notice.tsx';
 import { Progress } from '../../ui/progress.tsx';
+import { entriesOfDrop, filesOfEntries } from './dropped-files.ts';
 import { pageUploads, useUpload, useUploads } from './page-uploads.ts';
 import { ReadingSteps } from './reading-steps.tsx';
 import { isUnderWay, type Upload } from './upload-queue.ts';
@@ -40,6 +42,17 @@ export function UploadButton({ teamId }: { teamId: string }) {
 export function DropArea({ teamId, children }: { teamId: string; children: ReactNode }) {
   const upload = useUpload(teamId);
   const [isOver, setIsOver] = useState(false);
+  const [problem, setProblem] = useState<string | null>(null);
+  const take = (dropped: DataTransfer) => {
+    filesOfEntries(entriesOfDrop(dropped)).then(
+      (files) => {
+        setProblem(files.length === 0 ? 'There is no file in what was dropped.' : null);
+        if (files.length > 0) upload(files);
+      },
+      () =>
+        setProblem('The browser could not open what was dropped. Nothing was sent; choose the files by the button.'),
+    );
+  };
   const holdsFiles = (event: DragEvent) => event.dataTransfer.types.includes('Files');
   return (
     // biome-ignore lint/a11y/noStaticElementInteractions: dropping is the pointer's short cut; the button does the same
@@ -58,9 +71,16 @@ export function DropArea({ teamId, children }: { teamId: string; children: React
         if (!holdsFiles(event)) return;
         event.preventDefault();
         setIsOver(false);
-        upload([...event.dataTransfer.files]);
+        take(event.dataTransfer);
       }}
     >
+      {problem ? (
+        <div className="px-6 pt-3">
+          <Notice tone="wrong" live actions={<Button onClick={() => setProblem(null)}>Close</Button>}>
+            {problem}
+          </Notice>
+        </div>
+      ) : null}
       {children}
     </div>
   );
@@ -69,8 +89,8 @@ export function DropArea({ teamId, children }: { teamId: string; children: React
 export function DropHint() {
   return (
     <p className="border border-dashed border-[#b9af9b] px-4 py-3 text-center text-fine text-soft max-md:hidden">
-      Drop hourly files or a zip anywhere here: EPW, TMY2, TMY3, ISD, ISD-Lite, Global Hourly, or any table with a time
-      column. Files up to {fileSize(MAX_FILE_BYTES)}, a zip up to {fileSize(MAX_ARCHIVE_BYTES)}.
+      Drop hourly files, folders or a zip anywhere here: EPW, TMY2, TMY3, ISD, ISD-Lite, Global Hourly, or any table
+      with a time column. Files up to {fileSize(MAX_FILE_BYTES)}, a zip up to {fileSize(MAX_ARCHIVE_BYTES)}.
     </p>
   );
 }

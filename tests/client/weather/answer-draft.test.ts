@@ -49,6 +49,17 @@ describe('the answers of a form', () => {
     expect(readAnswers(draftOfRecord(record), record)).toEqual({ ok: true, answers: { mapping } });
   });
 
+  it('ask for long gaps to be filled, take it back, and keep suspect values only where the source has such marks', () => {
+    const record = recordWith({ asks: [] });
+    const filled = { ...draftOfRecord(record), handling: { fillLongGaps: true, keepSuspect: true } };
+    expect(readAnswers(filled, record)).toEqual({ ok: true, answers: { fillLongGaps: true } });
+    const coded = { ...record, file: { ...record.file, format: 'ISD' }, answers: { fillLongGaps: true } };
+    const draft = draftOfRecord(coded);
+    expect(draft.handling).toEqual({ fillLongGaps: true, keepSuspect: false });
+    const changed = { ...draft, handling: { fillLongGaps: false, keepSuspect: true } };
+    expect(readAnswers(changed, coded)).toEqual({ ok: true, answers: { fillLongGaps: false, keepSuspect: true } });
+  });
+
   it('say every fault at once, each at its field', () => {
     const record = recordWith({ table: tableOf(null), asks: [ask('unit-guess'), ask('time-repeat')] });
     const draft = draftOfRecord(record);

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
+import { lazy, type ReactNode, Suspense, useCallback, useMemo, useRef, useState } from 'react';
 import type { PlaceFigures } from '../../../contract/place-figures.ts';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import { LayerChoice } from '../../../features/runs/layer-choice.tsx';
@@ -14,14 +14,13 @@ import { LayerLegend } from '../../../map/layer-legend.tsx';
 import { SheetMap } from '../../../map/sheet-map.tsx';
 import type { PlaceRef, SheetPlace } from '../../../map/sheet-place.ts';
 import type { SheetBox } from '../../../map/use-tell-view.ts';
+import { Loading } from '../../../ui/loading.tsx';
 import { BriefMargin } from './brief-margin.tsx';
-import { FindPlace } from './find-place.tsx';
 import { printCamera } from './map-address.ts';
 import { MoveNote } from './move-note.tsx';
 import { NarrowSheet } from './narrow-sheet.tsx';
 import { PlaceActions } from './place-actions.tsx';
-import type { ChosenPlace } from './place-parts.tsx';
-import { PointNote } from './point-note.tsx';
+import type { ChosenPlace } from './place-margin.tsx';
 import { Ranking } from './ranking.tsx';
 import { useLiveDraft } from './use-live-draft.ts';
 import { useMapAddress } from './use-map-address.ts';
@@ -29,6 +28,10 @@ import { useMoveSite } from './use-move-site.ts';
 import { useSurfaceOnMap } from './use-surface-on-map.tsx';
 import { useTry } from './use-try.ts';
 import { WideSheet } from './wide-sheet.tsx';
+
+// What the first drawing of the map does without comes after it.
+const FindPlace = lazy(async () => ({ default: (await import('./find-place.tsx')).FindPlace }));
+const PointNote = lazy(async () => ({ default: (await import('./point-note.tsx')).PointNote }));
 
 /** What both compositions of the sheet are made from. */
 export interface SheetProps {
@@ -124,7 +127,9 @@ export function MapSheet({ ids, map }: MapSheetProps) {
     ),
     brief: (
       <>
-        <FindPlace ids={ids} onFind={changeAddress} />
+        <Suspense fallback={<div className="min-h-9 flex-none" />}>
+          <FindPlace ids={ids} onFind={changeAddress} />
+        </Suspense>
         <BriefMargin
           ids={ids}
           map={map}
@@ -151,7 +156,9 @@ export function MapSheet({ ids, map }: MapSheetProps) {
     ),
     point:
       address.point === null ? null : (
-        <PointNote ids={ids} brief={map.brief} point={address.point} isDraft={asked !== null} onChoose={choose} />
+        <Suspense fallback={<Loading what="the estimate" />}>
+          <PointNote ids={ids} brief={map.brief} point={address.point} isDraft={asked !== null} onChoose={choose} />
+        </Suspense>
       ),
     chosen:
       place === undefined || savedPlace === undefined

@@ -2,7 +2,8 @@ import { useEffect, useRef, useState } from 'react';
 import { BottomSheet, PEEK_PX, type SheetStep } from '../../../ui/bottom-sheet.tsx';
 import { Button } from '../../../ui/button.tsx';
 import type { SheetProps } from './map-sheet.tsx';
-import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
+import { PlaceMargin } from './place-margin.tsx';
+import { PlaceUnderMap } from './place-under-map.tsx';
 
 /** The map first, everything of its margins in a sheet at the foot of the screen. */
 export function NarrowSheet({ brief, ranking, map, point, chosen, onLeave }: SheetProps) {
@@ -30,7 +31,7 @@ export function NarrowSheet({ brief, ranking, map, point, chosen, onLeave }: She
               </Button>
               {point ?? (chosen === null ? null : <PlaceMargin {...chosen} />)}
             </div>
-            {chosen === null ? null : <PlaceFoot {...chosen} />}
+            {chosen === null ? null : <PlaceUnderMap {...chosen} />}
           </div>
         ) : (
           <div className="grid gap-4">

@@ -1,12 +1,14 @@
-import type { ReactNode } from 'react';
+import { lazy, type ReactNode, Suspense } from 'react';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { useSurface } from '../../../features/runs/use-surface.ts';
 import { errorSentence } from '../../../lib/api-error.ts';
-import { SurfaceLayer } from '../../../map/surface-layer.tsx';
 import { SurfaceLegend } from '../../../map/surface-legend.tsx';
 import type { MapAddress } from './map-address.ts';
 import type { ChangeAddress } from './use-map-address.ts';
+
+/** Bands and cells are made while the marks are drawn already. */
+const SurfaceLayer = lazy(async () => ({ default: (await import('../../../map/surface-layer.tsx')).SurfaceLayer }));
 
 interface SurfaceOnMap {
   readonly layer: ReactNode;
@@ -28,7 +30,12 @@ export function useSurfaceOnMap(on: {
   const { shown, off, fault, isPending } = useSurface({ ids, briefVersionId, draft, isOn, pending: map.pending });
   if (!isScore) return { layer: null, legend: null };
   return {
-    layer: shown === null ? null : <SurfaceLayer cells={shown.cells} scores={shown.scores} />,
+    layer:
+      shown === null ? null : (
+        <Suspense>
+          <SurfaceLayer cells={shown.cells} scores={shown.scores} />
+        </Suspense>
+      ),
     legend: (
       <SurfaceLegend
         isOn={address.surface}

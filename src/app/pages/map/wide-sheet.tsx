@@ -1,5 +1,6 @@
 import type { SheetProps } from './map-sheet.tsx';
-import { PlaceFoot, PlaceMargin } from './place-parts.tsx';
+import { PlaceMargin } from './place-margin.tsx';
+import { PlaceUnderMap } from './place-under-map.tsx';
 
 /** The sheet with its margins beside the map: brief and ranking left, the place right, its year and notes beneath. */
 export function WideSheet({ brief, ranking, map, point, chosen }: SheetProps) {
@@ -17,7 +18,7 @@ export function WideSheet({ brief, ranking, map, point, chosen }: SheetProps) {
           {point ?? (chosen === null ? <Nothing /> : <PlaceMargin {...chosen} />)}
         </div>
       </div>
-      {chosen === null ? null : <PlaceFoot {...chosen} />}
+      {chosen === null ? null : <PlaceUnderMap {...chosen} />}
     </>
   );
 }
