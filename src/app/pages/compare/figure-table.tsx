@@ -11,7 +11,7 @@ export function FigureTable({ columns }: { columns: readonly CompareColumn[] }) 
         Figures
       </h2>
       <ScrollInside label="Figures side by side, scrolls sideways">
-        <table className="ruled" style={{ minWidth: `${13 + 9 * columns.length}rem` }}>
+        <table className="ruled" style={widthOf(columns)}>
           <caption className="sr-only">Figures side by side, with the difference from the first column</caption>
           <ColumnHeads columns={columns} first="Figure" />
           {figureGroups(columns).map(({ title, rows }) => (
@@ -45,15 +45,15 @@ export function ArithmeticTable({ columns }: { columns: readonly CompareColumn[]
         How each score is made
       </h2>
       <ScrollInside label="Score arithmetic side by side, scrolls sideways">
-        <table className="ruled" style={{ minWidth: `${13 + 9 * columns.length}rem` }}>
+        <table className="ruled" style={widthOf(columns)}>
           <caption className="sr-only">Points of each component, with what was found under them</caption>
           <ColumnHeads columns={columns} first="Component, points" />
           <tbody>
             {components.map((component) => {
               const parts = columns.map((column) => partOf(column, component));
-              const label = parts.find((part) => part !== undefined);
+              const [one] = parts.filter((part) => part !== undefined);
               const row = rowOf({
-                ...{ label: label?.label ?? component, unit: '', decimals: 2 },
+                ...{ label: one?.label ?? component, unit: '', decimals: 2 },
                 values: parts.map((part) => part?.points ?? null),
               });
               const found = parts.map((part) => (part?.raw == null ? 'not applicable' : foundWords(part)));
@@ -75,18 +75,29 @@ export function ArithmeticTable({ columns }: { columns: readonly CompareColumn[]
 
 function foundWords({ raw, unit, weight }: { raw: number | null; unit: string; weight: number }): string {
   const value = raw ?? 0;
-  return `${number(value, Math.abs(value) < 10 ? 2 : 1)} ${unit}, weight ${number(weight, 1)}`;
+  const short = unit.replace(' per 1000 demand hours', '/1000 h');
+  return `${number(value, Math.abs(value) < 10 ? 2 : 1)} ${short}; weight ${number(weight, 1)}`;
 }
+
+/** Two columns stand no further apart than six. */
+function widthOf({ length }: readonly CompareColumn[]): { minWidth: string; maxWidth: string } {
+  return { minWidth: `${9 + 8 * length}rem`, maxWidth: `${18 + 12 * length}rem` };
+}
+
+/** The names of the rows stay in view while the columns pass under them. */
+const ROW_NAME = 'pr-3 max-lg:sticky max-lg:left-0 max-lg:z-1 max-lg:bg-cloth max-sm:max-w-[7.5rem]';
 
 function ColumnHeads({ columns, first }: { columns: readonly CompareColumn[]; first: string }) {
   return (
     <thead>
       <tr>
-        <th scope="col">{first}</th>
+        <th scope="col" className={ROW_NAME}>
+          {first}
+        </th>
         {columns.map(({ key, title, note }) => (
-          <th key={key} scope="col" className="figure align-bottom">
+          <th key={key} scope="col" className="figure align-bottom whitespace-normal">
             {title}
-            <span className="block font-normal text-soft">{note}</span>
+            <span className="block font-normal whitespace-normal text-soft">{note}</span>
           </th>
         ))}
       </tr>
@@ -97,7 +108,7 @@ function ColumnHeads({ columns, first }: { columns: readonly CompareColumn[]; fi
 function Row({ row, under }: { row: FigureRow; under?: readonly string[] }) {
   return (
     <tr className={row.differs ? '' : 'text-soft'}>
-      <th scope="row">
+      <th scope="row" className={ROW_NAME}>
         {row.label}
         {row.unit === '' ? null : <span className="text-soft">, {row.unit}</span>}
       </th>
@@ -116,7 +127,7 @@ function Cell({ cell, under }: { cell: FigureCell; under: string | null }) {
       {cell.difference === null ? null : (
         <span className="block text-fine font-normal text-indigo">{cell.difference}</span>
       )}
-      {under === null ? null : <span className="block text-fine font-normal text-soft">{under}</span>}
+      {under === null ? null : <span className="block text-fine font-normal whitespace-normal text-soft">{under}</span>}
     </td>
   );
 }
