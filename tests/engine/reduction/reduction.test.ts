@@ -151,7 +151,7 @@ describe('depression hours', () => {
     expect(histogram[23 * DEPRESSION_BINS + 3]).toBe(1);
     expect(histogram[24 * DEPRESSION_BINS + 4]).toBe(1);
     expect(histogram[(11 * 24 + 23) * DEPRESSION_BINS + 63]).toBe(1);
-    const byMonth = depressionHoursByMonth(histogram);
+    const byMonth = depressionHoursByMonth(depression);
     expect(byMonth).toHaveLength(12 * DEPRESSION_BINS);
     const counted = [...byMonth.entries()].filter(([, hours]) => hours > 0);
     // Months 1, 1, 2 and 12; bins 0, 3, 4 and the last.
