@@ -1,6 +1,7 @@
 /** Workers that are killed at any moment of a batch: what they had begun is done again, and nothing is doubled or half stored. */
 import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, beforeAll, expect, it } from 'vitest';
+import { seededRandom } from '../../../data/demo/seeded-random.ts';
 import { workerEnvironment } from '../../../server/cli/worker-settings.ts';
 import { releaseSilentPools } from '../../../server/jobs/worker-pool-store.ts';
 import type { WeatherBatch } from '../../../src/contract/weather-batches.ts';
@@ -15,6 +16,8 @@ import { zipBytes } from '../../support/zip-bytes.ts';
 const FILES = samples(3, 200);
 const KILLS = samples(3, 50);
 const LONGEST_LIFE_MS = 1500;
+/** A soak's seed gives the workers the same lives again, as far as the machine goes along. */
+const lives = seededRandom(process.env.SOAK_SEED ?? String(Date.now()));
 const FOR_ALL_MS = 60_000 + KILLS * 20_000 + FILES * 1000;
 
 let road: Road;
@@ -43,7 +46,7 @@ async function killOne(): Promise<void> {
   const settings = { databaseUrl: road.database.databaseUrl, originalsDir: road.originalsDir };
   const { child, ended } = startCommand(['worker'], { env: workerEnvironment(settings) });
   await eventually('the worker’s first look', async () => (await poolsNow()) > 0, 30_000);
-  await sleep(Math.random() * LONGEST_LIFE_MS);
+  await sleep(lives.uniform() * LONGEST_LIFE_MS);
   child.kill('SIGKILL');
   await ended;
   await releaseSilentPools(road.db, 0);
