@@ -4,6 +4,6 @@
  */
 export function wholeNumber(value: number): number {
   const whole = (value + 0.5) | 0;
-  // Cutting rounds towards zero, which is one too high below it.
-  return whole - value > 0.5 ? whole - 1 : whole;
+  // Below zero cutting rounds upwards, and just below a half the sum does.
+  return whole - 0.5 > value ? whole - 1 : whole;
 }
