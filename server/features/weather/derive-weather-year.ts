@@ -21,7 +21,7 @@ import { insertDerivation, insertDerivedFile } from './derived-year-store.ts';
 import { measuredHours } from './measured-hours.ts';
 import { findParentFile } from './parent-year-read-model.ts';
 import { findStandingFile, lockWeatherFile } from './weather-file-store.ts';
-import { insertDesignValues, insertWeatherYear, setYearStation } from './weather-year-store.ts';
+import { insertWeatherYear, setYearStation } from './weather-year-store.ts';
 
 export interface Derivation extends AskedDerivation {
   readonly name: string;
@@ -105,7 +105,6 @@ async function storeYear(
     contentHash: contentHash(reduced.year),
   });
   await setYearStation(transaction, { teamId, fileId, stationId: parent.stationId });
-  await insertDesignValues(transaction, { teamId, weatherYearId, design: reduced.design });
   const { humidityRule } = change;
   const parentYearId = parent.weatherYearId;
   const made = { teamId, weatherYearId, parentYearId, humidityRule, monthly, cappedHours, difference };

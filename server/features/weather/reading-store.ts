@@ -42,15 +42,28 @@ export interface ReadingResult {
   readonly declaredStation: DeclaredStation | null;
   readonly asks: readonly Ask[];
   readonly comments: string | null;
+  readonly findings: readonly Finding[];
   /** Of a table whose columns nobody has confirmed. */
   readonly table: TableGuess | null;
 }
 
-/** Ends the reading of a file with what was read. A table keeps the shape that it asked by, so that its answer can be corrected. */
+/**
+ * Ends the reading of a file with what was read and every finding, in the order in which they were found, in one statement. A table
+ * keeps the shape that it asked by, so that its answer can be corrected.
+ */
 export async function setReadingResult(transaction: Knex.Transaction, result: ReadingResult): Promise<void> {
-  const { table, declaredStation, asks, comments } = result;
+  const { table, declaredStation, asks, comments, findings } = result;
   await transaction.raw(
-    `update weather_files
+    `with told as (
+       insert into findings (team_id, weather_file_id, position, code, severity, line, col, last_line, hours, variable,
+         done, message)
+       select :teamId, :fileId, found.position, found.code, found.severity, found.line, found."column", found."lastLine",
+         found.count, found.variable, found.done, found.message
+       from jsonb_to_recordset(cast(:findings as jsonb)) as found (
+         position integer, code text, severity text, line integer, "column" integer, "lastLine" integer, count integer,
+         variable text, done text, message text)
+     )
+     update weather_files
      set status = :status, step = null, failure = null, part = :part, format = :format,
        declared_station = cast(:declaredStation as jsonb), asks = cast(:asks as jsonb), comments = :comments,
        table_guess = cast(:table as jsonb), shape_key = coalesce(:shapeKey, shape_key)
@@ -63,6 +76,7 @@ export async function setReadingResult(transaction: Knex.Transaction, result: Re
       comments: comments === null ? null : storableText(comments),
       table: table === null ? null : storableJson(table),
       shapeKey: table?.shapeKey ?? null,
+      findings: storableJson(findings.map((finding, position) => ({ ...finding, position }))),
     },
   );
 }
@@ -115,24 +129,6 @@ export async function clearReading(
     key,
   );
   await transaction.raw('delete from weather_years where team_id = :teamId and weather_file_id = :fileId', key);
-}
-
-/** All findings of a file in one statement, in the order in which they were found. */
-export async function insertFindings(
-  transaction: Knex.Transaction,
-  file: { teamId: string; fileId: string; findings: readonly Finding[] },
-): Promise<void> {
-  const rows = file.findings.map((finding, position) => ({ ...finding, position }));
-  await transaction.raw(
-    `insert into findings (team_id, weather_file_id, position, code, severity, line, col, last_line, hours, variable,
-       done, message)
-     select :teamId, :fileId, found.position, found.code, found.severity, found.line, found."column", found."lastLine",
-       found.count, found.variable, found.done, found.message
-     from jsonb_to_recordset(cast(:rows as jsonb)) as found (
-       position integer, code text, severity text, line integer, "column" integer, "lastLine" integer, count integer,
-       variable text, done text, message text)`,
-    { teamId: file.teamId, fileId: file.fileId, rows: storableJson(rows) },
-  );
 }
 
 function storableJson(value: unknown): string {

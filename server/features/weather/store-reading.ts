@@ -8,9 +8,9 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeamOfAll } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
-import { insertFindings, insertPart, setReadingResult } from './reading-store.ts';
+import { insertPart, setReadingResult } from './reading-store.ts';
 import { lockWeatherFile } from './weather-file-store.ts';
-import { insertDesignValues, insertWeatherYear } from './weather-year-store.ts';
+import { insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
   | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
@@ -53,7 +53,6 @@ async function storeOutcome(
   outcome: FileOutcome,
 ): Promise<void> {
   const { reading } = outcome;
-  await insertFindings(transaction, { ...key, findings: reading.findings });
   if (outcome.reduced !== null) await storeYear(transaction, key, outcome);
   await setReadingResult(transaction, {
     ...key,
@@ -63,6 +62,7 @@ async function storeOutcome(
     declaredStation: reading.station,
     asks: reading.status === 'refused' ? [] : reading.asks,
     comments: reading.status === 'refused' ? null : reading.comments,
+    findings: reading.findings,
     table: 'table' in reading ? reading.table : null,
   });
 }
@@ -72,8 +72,7 @@ async function storeYear(
   key: { teamId: string; fileId: string },
   { reading, reduced }: Extract<FileOutcome, { reading: UsableReading }>,
 ): Promise<void> {
-  const { teamId } = key;
-  const weatherYearId = await insertWeatherYear(transaction, {
+  await insertWeatherYear(transaction, {
     ...key,
     reading,
     reduced,
@@ -81,5 +80,4 @@ async function storeYear(
     readVersion: READ_VERSION,
     contentHash: contentHash(reduced.year),
   });
-  await insertDesignValues(transaction, { teamId, weatherYearId, design: reduced.design });
 }

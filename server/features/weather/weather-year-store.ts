@@ -16,17 +16,28 @@ export interface NewWeatherYear {
   readonly contentHash: string;
 }
 
-/** The year with its packed columns. @returns its id */
+/** The year with its packed columns and its design values, in one statement. @returns its id */
 export async function insertWeatherYear(transaction: Knex.Transaction, year: NewWeatherYear): Promise<string> {
   const { reading, reduced } = year;
   const { packed } = reduced.year;
   const bytes = packedBytes(packed);
   const { rows } = await transaction.raw<{ rows: [{ id: string }] }>(
-    `insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
-       humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version, content_hash)
-     values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
-       :flags, :histogram, cast(:depressionHours as smallint[]), :humidityFrom, :belowZero, cast(:facts as jsonb), :readVersion, :contentHash)
-     returning id`,
+    `with stored as (
+       insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
+         humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version,
+         content_hash)
+       values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
+         :flags, :histogram, cast(:depressionHours as smallint[]), :humidityFrom, :belowZero, cast(:facts as jsonb),
+         :readVersion, :contentHash)
+       returning id, team_id
+     ), designed as (
+       insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
+       select stored.team_id, stored.id, design.quantity, design.percent, design."valueC", design."coincidentC"
+       from stored
+       cross join jsonb_to_recordset(cast(:design as jsonb)) as design (quantity text, percent double precision,
+         "valueC" double precision, "coincidentC" double precision)
+     )
+     select id from stored`,
     {
       teamId: year.teamId,
       fileId: year.fileId,
@@ -46,36 +57,18 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
       facts: JSON.stringify({ ...reduced.facts, measuredHours: year.measuredHours }),
       readVersion: year.readVersion,
       contentHash: year.contentHash,
+      design: JSON.stringify(designRows(reduced.design)),
     },
   );
   return rows[0].id;
 }
 
-/** Design values of a year, in one statement. */
-export async function insertDesignValues(
-  transaction: Knex.Transaction,
-  year: { teamId: string; weatherYearId: string; design: DesignValues },
-): Promise<void> {
-  const { teamId, weatherYearId, design } = year;
-  const rows = [
-    ...design.dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
-    ...design.wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
-    ...design.dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
+function designRows({ dryBulb, wetBulb, dewPoint }: DesignValues) {
+  return [
+    ...dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
+    ...wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
+    ...dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
   ];
-  await transaction.raw(
-    `insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
-     select ?, ?, design.quantity, design.percent, design.value_c, design.coincident_c
-     from unnest(?::text[], ?::double precision[], ?::double precision[], ?::double precision[])
-       as design (quantity, percent, value_c, coincident_c)`,
-    [
-      teamId,
-      weatherYearId,
-      rows.map(({ quantity }) => quantity),
-      rows.map(({ percent }) => percent),
-      rows.map(({ valueC }) => valueC),
-      rows.map(({ coincidentC }) => coincidentC),
-    ],
-  );
 }
 
 /** Gives the year of a file its station. @returns the year's id */

@@ -20,6 +20,8 @@ const MASS_RATIO = 0.621945;
 const VOLUME_FACTOR = 1.607858;
 /** Gas constant of dry air, J/(kg K) (eq. 1). */
 const DRY_AIR_J_PER_KG_K = 287.042;
+/** Dry bulb and dew point further apart than this have pressures in the same order, whatever the rounding of the formulas. */
+const CLEAR_K = 0.001;
 /** PsychroLib's floor. */
 const DRIEST_HUMIDITY_RATIO = 1e-7;
 
@@ -70,6 +72,39 @@ export function humidityRatioFromDewPoint(input: {
   const vapourPa = saturationPressureInPhasePa(input.dewPointC, input.belowZero);
   const humidityRatio = humidityRatioOfVapour(vapourPa, input.pressurePa);
   return Math.min(humidityRatio, saturationHumidityRatio(input.dryBulbC, input.pressurePa));
+}
+
+/**
+ * Humidity ratios, kg/kg, of columns: `humidityRatioFromDewPoint` of each slot, to the bit, NaN where a value is missing. Where the
+ * dew point lies clearly below the dry bulb the cap of saturation cannot hold, and it is not asked for.
+ */
+export function humidityRatioColumn(columns: {
+  dryBulbC: Float64Array;
+  dewPointC: Float64Array;
+  pressurePa: Float64Array;
+  belowZero: BelowZeroPhase;
+}): Float64Array {
+  const { belowZero, dewPointC: dewPoints, dryBulbC: dryBulbs, pressurePa: pressures } = columns;
+  const ratios = new Float64Array(dryBulbs.length);
+  // Over water below 0 °C the vapour of a dew point may pass saturation over ice.
+  const clearFromC = belowZero === 'ice' ? Number.NEGATIVE_INFINITY : 0;
+  for (let slot = 0; slot < ratios.length; slot++) {
+    const dryBulb = dryBulbs[slot] ?? Number.NaN;
+    const dewPoint = dewPoints[slot] ?? Number.NaN;
+    const pressure = pressures[slot] ?? Number.NaN;
+    if (dewPoint >= clearFromC && dryBulb - dewPoint > CLEAR_K && pressure > 0) {
+      ratios[slot] = humidityRatioOfVapour(saturationPressurePa(dewPoint), pressure);
+    } else if (Number.isNaN(dryBulb + dewPoint + pressure)) ratios[slot] = Number.NaN;
+    else {
+      ratios[slot] = humidityRatioFromDewPoint({
+        dryBulbC: dryBulb,
+        dewPointC: dewPoint,
+        pressurePa: pressure,
+        belowZero,
+      });
+    }
+  }
+  return ratios;
 }
 
 /**

@@ -76,6 +76,17 @@ function makeMonths(slotCount: number): Uint8Array {
   return months;
 }
 
+const cellsOfYears = new Map<number, Uint16Array>();
+
+/** Month and hour of day of every slot as one number, (month - 1) x 24 + hour - 1. Made once, as the months are. */
+export function monthHourOfEachSlot(slotCount: number): Uint16Array {
+  const made =
+    cellsOfYears.get(slotCount) ??
+    Uint16Array.from(monthOfEachSlot(slotCount), (month, slot) => (month - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY));
+  cellsOfYears.set(slotCount, made);
+  return made;
+}
+
 /** The date on which a slot ends; hour 24 belongs to the day that it closes. */
 export function slotDate(slot: number, slotCount: number): SlotDate {
   const starts = monthStartSlots(slotCount);

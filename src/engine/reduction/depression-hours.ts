@@ -1,6 +1,6 @@
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { floatColumn } from '../float-column.ts';
-import { monthOfEachSlot } from './calendar.ts';
+import { monthHourOfEachSlot, monthOfEachSlot } from './calendar.ts';
 
 const MONTHS = 12;
 const HUNDREDTHS_PER_BIN = 100;
@@ -15,32 +15,37 @@ const HIGHEST_STEP_K = 25;
  * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function depressionHistogram(depression: Int32Array): Uint16Array {
-  const months = monthOfEachSlot(depression.length);
+  const cells = monthHourOfEachSlot(depression.length);
   const histogram = new Uint16Array(MONTHS * HOURS_PER_DAY * DEPRESSION_BINS);
   for (let slot = 0; slot < depression.length; slot++) {
     const value = depression[slot] ?? -1;
     if (value < 0) continue;
-    const bin = Math.min(DEPRESSION_BINS - 1, (value / HUNDREDTHS_PER_BIN) | 0);
-    const at = cellOf(months, slot) * DEPRESSION_BINS + bin;
+    const at = (cells[slot] ?? 0) * DEPRESSION_BINS + binOf(value);
     histogram[at] = (histogram[at] ?? 0) + 1;
   }
   return histogram;
 }
 
 /**
- * The hours of a histogram by month and bin alone, 768 counts: value at (month - 1) x 64 + bin. This is what the database keeps of
- * each year for lists and filters; a change of the layout or of `DEPRESSION_BINS` needs a migration.
+ * Hours by month and 1 K bin of depression, 768 counts: value at (month - 1) x 64 + bin. This is what the database keeps of each year
+ * for lists and filters; a change of the layout or of `DEPRESSION_BINS` needs a migration.
+ * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
-export function depressionHoursByMonth(histogram: Uint16Array): Uint16Array {
+export function depressionHoursByMonth(depression: Int32Array): Uint16Array {
+  const months = monthOfEachSlot(depression.length);
   const byMonth = new Uint16Array(MONTHS * DEPRESSION_BINS);
-  for (let cell = 0; cell < MONTHS * HOURS_PER_DAY; cell++) {
-    const from = cell * DEPRESSION_BINS;
-    const into = ((cell / HOURS_PER_DAY) | 0) * DEPRESSION_BINS;
-    for (let bin = 0; bin < DEPRESSION_BINS; bin++) {
-      byMonth[into + bin] = (byMonth[into + bin] ?? 0) + (histogram[from + bin] ?? 0);
-    }
+  for (let slot = 0; slot < depression.length; slot++) {
+    const value = depression[slot] ?? -1;
+    if (value < 0) continue;
+    const at = ((months[slot] ?? 1) - 1) * DEPRESSION_BINS + binOf(value);
+    byMonth[at] = (byMonth[at] ?? 0) + 1;
   }
   return byMonth;
+}
+
+function binOf(depression: number): number {
+  const bin = (depression / HUNDREDTHS_PER_BIN) | 0;
+  return bin < DEPRESSION_BINS ? bin : DEPRESSION_BINS - 1;
 }
 
 export interface HoursAtLeast {
@@ -51,9 +56,16 @@ export interface HoursAtLeast {
   readonly scaledHours: number | null;
 }
 
-/** Hours with a depression of at least 1, 2, .. 25 K. */
-export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
-  const hours = countAtLeast(depression);
+/**
+ * Hours with a depression of at least 1, 2, .. 25 K.
+ * @param depression hundredths of a kelvin reached, slot order, -1 where not known
+ * @param byMonth the same by month and bin, where it is at hand
+ */
+export function hoursAtLeast(
+  depression: Int32Array,
+  byMonth = depressionHoursByMonth(depression),
+): readonly HoursAtLeast[] {
+  const hours = countAtLeast(byMonth);
   const scaled = depression.includes(-1) ? scaledAtLeast(depression) : hours;
   return Array.from({ length: HIGHEST_STEP_K }, (_none, index) => ({
     atLeastK: index + 1,
@@ -62,18 +74,13 @@ export function hoursAtLeast(depression: Int32Array): readonly HoursAtLeast[] {
   }));
 }
 
-/** Whole kelvin reached, at most the last that is asked for; -1 where not known. */
-function reachedK(hundredths: number): number {
-  return hundredths < 0 ? -1 : Math.min(HIGHEST_STEP_K, (hundredths / HUNDREDTHS_PER_BIN) | 0);
-}
-
-function countAtLeast(depression: Int32Array): Int32Array {
-  const hours = new Int32Array(HIGHEST_STEP_K + 1);
-  for (let slot = 0; slot < depression.length; slot++) {
-    const step = reachedK(depression[slot] ?? -1);
-    if (step >= 0) hours[step] = (hours[step] ?? 0) + 1;
+function countAtLeast(byMonth: Uint16Array): Int32Array {
+  const hours = new Int32Array(DEPRESSION_BINS + 1);
+  for (let bin = DEPRESSION_BINS - 1; bin >= 0; bin--) {
+    let count = hours[bin + 1] ?? 0;
+    for (let at = bin; at < byMonth.length; at += DEPRESSION_BINS) count += byMonth[at] ?? 0;
+    hours[bin] = count;
   }
-  for (let step = HIGHEST_STEP_K - 1; step >= 0; step--) hours[step] = (hours[step] ?? 0) + (hours[step + 1] ?? 0);
   return hours;
 }
 
@@ -81,19 +88,15 @@ function countAtLeast(depression: Int32Array): Int32Array {
 function scaledAtLeast(depression: Int32Array): Float64Array | null {
   const scale = cellScale(depression);
   if (scale === null) return null;
-  const months = monthOfEachSlot(depression.length);
+  const cells = monthHourOfEachSlot(depression.length);
   const scaled = new Float64Array(HIGHEST_STEP_K + 1);
   for (let slot = 0; slot < depression.length; slot++) {
-    const weight = scale[cellOf(months, slot)] ?? 0;
-    const most = reachedK(depression[slot] ?? -1);
+    const value = depression[slot] ?? -1;
+    const weight = scale[cells[slot] ?? 0] ?? 0;
+    const most = value < 0 ? -1 : Math.min(HIGHEST_STEP_K, binOf(value));
     for (let step = 1; step <= most; step++) scaled[step] = (scaled[step] ?? 0) + weight;
   }
   return scaled;
-}
-
-/** Place of a slot among the cells of month and hour of day. */
-function cellOf(months: Uint8Array, slot: number): number {
-  return ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
 }
 
 /**
@@ -101,11 +104,11 @@ function cellOf(months: Uint8Array, slot: number): number {
  * only nights must not look hotter or drier. Null when some cell is wholly unknown and nothing can stand for it.
  */
 function cellScale(depression: Int32Array): Float64Array | null {
-  const months = monthOfEachSlot(depression.length);
+  const cells = monthHourOfEachSlot(depression.length);
   const all = new Float64Array(MONTHS * HOURS_PER_DAY);
   const known = new Float64Array(MONTHS * HOURS_PER_DAY);
   for (let slot = 0; slot < depression.length; slot++) {
-    const cell = cellOf(months, slot);
+    const cell = cells[slot] ?? 0;
     all[cell] = (all[cell] ?? 0) + 1;
     if ((depression[slot] ?? -1) >= 0) known[cell] = (known[cell] ?? 0) + 1;
   }

@@ -1,4 +1,4 @@
-import { monthOfEachSlot } from './calendar.ts';
+import { monthStartSlots } from './calendar.ts';
 import type { YearKind } from './weather-year.ts';
 
 /** Under this a wetted stage gains little. */
@@ -18,22 +18,35 @@ export interface DepressionSpell {
  * @param depression hundredths of a kelvin reached, slot order, -1 where not known
  */
 export function longestLowDepression(depression: Int32Array, kind: YearKind): DepressionSpell | null {
-  const months = monthOfEachSlot(depression.length);
-  const jointBefore = (slot: number) => kind !== 'actual' && months[slot] !== months[slot - 1];
-  const isLow = (slot: number) => {
-    const value = depression[slot] ?? -1;
-    return value >= 0 && value < LOW_DEPRESSION_HUNDREDTHS;
-  };
-  let longest: DepressionSpell | null = null;
-  for (let slot = 0; slot < depression.length; slot++) {
-    if (!isLow(slot)) continue;
-    const startSlot = slot;
-    while (slot + 1 < depression.length && isLow(slot + 1) && !jointBefore(slot + 1)) slot++;
-    const hours = slot - startSlot + 1;
-    if (hours <= (longest?.hours ?? 0)) continue;
-    const cutBefore = startSlot > 0 && jointBefore(startSlot) && isLow(startSlot - 1);
-    const cutAfter = slot + 1 < depression.length && jointBefore(slot + 1) && isLow(slot + 1);
-    longest = { hours, startSlot, endSlot: slot, cutAtJoint: cutBefore || cutAfter };
+  const joints = kind === 'actual' ? [0, depression.length] : monthStartSlots(depression.length);
+  let longest = { hours: 0, startSlot: 0 };
+  for (let span = 1; span < joints.length; span++) {
+    const found = longestWithin(depression, joints[span - 1] ?? 0, joints[span] ?? 0);
+    if (found.hours > longest.hours) longest = found;
   }
-  return longest;
+  const { hours, startSlot } = longest;
+  if (hours === 0) return null;
+  const endSlot = startSlot + hours - 1;
+  const isLow = (slot: number) => lowAt(depression, slot);
+  const cutBefore = joints.includes(startSlot) && isLow(startSlot - 1);
+  const cutAfter = joints.includes(endSlot + 1) && isLow(endSlot + 1);
+  return { hours, startSlot, endSlot, cutAtJoint: cutBefore || cutAfter };
+}
+
+function longestWithin(depression: Int32Array, start: number, end: number): { hours: number; startSlot: number } {
+  let hours = 0;
+  let startSlot = start;
+  let run = 0;
+  for (let slot = start; slot < end; slot++) {
+    run = lowAt(depression, slot) ? run + 1 : 0;
+    if (run <= hours) continue;
+    hours = run;
+    startSlot = slot - run + 1;
+  }
+  return { hours, startSlot };
+}
+
+function lowAt(depression: Int32Array, slot: number): boolean {
+  const value = depression[slot] ?? -1;
+  return value >= 0 && value < LOW_DEPRESSION_HUNDREDTHS;
 }

@@ -1,26 +1,12 @@
 /** Columns that follow from the packed ones: derived when they are needed, never a stored fact. */
-import { dewPointC } from '../psychrometrics/moist-air.ts';
 import { wetBulbColumn as wetBulbOfColumns } from '../psychrometrics/wet-bulb.ts';
-import { unpackYear, type YearColumns } from './packed-columns.ts';
+import { unpackYear } from './packed-columns.ts';
 import type { PackedYear } from './weather-year.ts';
 
 /** Wet bulb, °C, of every slot; NaN where dry bulb, humidity or pressure is missing. */
 export function wetBulbColumn(year: PackedYear): Float64Array {
   const { dryBulbC, humidityRatio, pressurePa } = unpackYear(year);
   return wetBulbOfColumns(dryBulbC, humidityRatio, pressurePa);
-}
-
-/** Dew point, °C (frost point below 0 °C), of every slot; NaN where something is missing. */
-export function dewPointColumn(columns: YearColumns): Float64Array {
-  const column = new Float64Array(columns.dryBulbC.length).fill(Number.NaN);
-  for (let slot = 0; slot < column.length; slot++) {
-    const dryBulbC = columns.dryBulbC[slot] ?? Number.NaN;
-    const humidityRatio = columns.humidityRatio[slot] ?? Number.NaN;
-    const pressurePa = columns.pressurePa[slot] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + humidityRatio + pressurePa)) continue;
-    column[slot] = dewPointC(dryBulbC, humidityRatio, pressurePa);
-  }
-  return column;
 }
 
 /** Wet-bulb depression, K, of every slot: dry bulb less wet bulb, both in °C, 0 when saturated; NaN where it is not known. */
@@ -42,10 +28,10 @@ const TIE_HUNDREDTHS = 0.05;
  * @param depressionK depression, K, in slot order, NaN where not known
  */
 export function reachedHundredths(depressionK: Float64Array): Int32Array {
-  const reached = new Int32Array(depressionK.length).fill(-1);
+  const reached = new Int32Array(depressionK.length);
   for (let slot = 0; slot < reached.length; slot++) {
-    const value = depressionK[slot] ?? Number.NaN;
-    if (!Number.isNaN(value)) reached[slot] = Math.max(0, Math.floor(100 * value + TIE_HUNDREDTHS));
+    const value = 100 * (depressionK[slot] ?? Number.NaN) + TIE_HUNDREDTHS;
+    reached[slot] = value >= 0 ? value | 0 : Number.isNaN(value) ? -1 : 0;
   }
   return reached;
 }

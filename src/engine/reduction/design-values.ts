@@ -1,5 +1,5 @@
-import { hundredths } from '../conventions.ts';
-import { countValues, meanCompanion, valuesDownwards } from './value-counts.ts';
+import { wholeNumber } from '../whole-number.ts';
+import { countValues, valuesDownwards } from './value-counts.ts';
 
 /** Shares of the hours of a year, %. */
 export const DESIGN_PERCENTS = [0.4, 1, 2, 5, 10] as const;
@@ -20,8 +20,10 @@ export interface DesignValues {
 }
 
 const COINCIDENT_WITHIN_HUNDREDTHS = 50;
-/** Stands for a value that is not known. */
+/** Stands for a value that is not known, and one for a value below any that matters. */
 const UNKNOWN = -(2 ** 31);
+const LOWEST_C = -330;
+const LOW = 100 * LOWEST_C - 1;
 
 /**
  * The value at place floor(percent x N / 100), counted from 0 downwards, of the N known values: at most so many percent of
@@ -40,7 +42,11 @@ function placeAtPercent(percent: number, hours: number): number {
   return Math.floor((Math.round(percent * 10) * hours) / 1000);
 }
 
-/** Design values of a year; no rows for a quantity that is nowhere known. Columns are in °C, slot order, NaN where missing. */
+/**
+ * Design values of a year; no rows for a quantity that is nowhere known.
+ * @param columns in °C, slot order, NaN where missing
+ * @param columns.dewPointC the dew points that can matter, as `highDewPoints` gives them, or all
+ */
 export function designValues(columns: {
   dryBulbC: Float64Array;
   wetBulbC: Float64Array;
@@ -56,22 +62,43 @@ export function designValues(columns: {
 }
 
 function hundredthsColumn(column: Float64Array): Int32Array {
-  const values = new Int32Array(column.length).fill(UNKNOWN);
+  const values = new Int32Array(column.length);
   for (let slot = 0; slot < values.length; slot++) {
     const value = column[slot] ?? Number.NaN;
-    if (!Number.isNaN(value)) values[slot] = hundredths(value);
+    values[slot] = value >= LOWEST_C ? wholeNumber(100 * value) : Number.isNaN(value) ? UNKNOWN : LOW;
   }
   return values;
 }
 
 function designRows(quantity: Int32Array, coincident: Int32Array): readonly DesignRow[] {
-  const counts = countValues(quantity, UNKNOWN + 1, coincident);
+  const counts = countValues(quantity, LOW, coincident);
   if (counts.known === 0) return [];
   const places = DESIGN_PERCENTS.map((percent) => placeAtPercent(percent, counts.known));
   const values = valuesDownwards(counts, places);
-  return DESIGN_PERCENTS.map((percent, index) => {
-    const value = values[index] ?? Number.NaN;
-    const coincidentMean = meanCompanion(counts, value, COINCIDENT_WITHIN_HUNDREDTHS);
-    return { percent, valueC: value / 100, coincidentC: Math.round(coincidentMean) / 100 };
-  });
+  const means = meansAround(values, quantity, coincident);
+  return DESIGN_PERCENTS.map((percent, index) => ({
+    percent,
+    valueC: (values[index] ?? Number.NaN) / 100,
+    coincidentC: Math.round(means[index] ?? Number.NaN) / 100,
+  }));
+}
+
+/** Mean companion of the values within half a kelvin of each of some values, which are in descending order. */
+function meansAround(around: readonly number[], values: Int32Array, companions: Int32Array): readonly number[] {
+  const floor = (around.at(-1) ?? 0) - COINCIDENT_WITHIN_HUNDREDTHS;
+  const counts = new Int32Array(around.length);
+  const sums = new Int32Array(around.length);
+  for (let slot = 0; slot < values.length; slot++) {
+    const value = values[slot] ?? UNKNOWN;
+    // Nearly nine of ten hours lie below all of them.
+    if (value < floor) continue;
+    const companion = companions[slot] ?? UNKNOWN;
+    if (companion === UNKNOWN) continue;
+    for (let index = 0; index < counts.length; index++) {
+      if (Math.abs(value - (around[index] ?? 0)) > COINCIDENT_WITHIN_HUNDREDTHS) continue;
+      counts[index] = (counts[index] ?? 0) + 1;
+      sums[index] = (sums[index] ?? 0) + companion;
+    }
+  }
+  return around.map((_middle, index) => (sums[index] ?? 0) / (counts[index] ?? 1));
 }

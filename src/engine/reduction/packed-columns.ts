@@ -2,12 +2,14 @@
  * Layout 1 of a weather year: dry bulb int16 0.01 °C, humidity ratio uint16 2e-6 kg/kg, pressure uint16 2 Pa, flags uint8,
  * slot order, each value rounded to the nearest step (halves upwards), missing -32768 or 65535. Serialised little-endian.
  */
-import { hundredths, MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
+import { MISSING_INT16, MISSING_UINT16, SLOTS_PER_LEAP_YEAR, SLOTS_PER_YEAR } from '../conventions.ts';
+import { wholeNumber } from '../whole-number.ts';
 import type { PackedYear } from './weather-year.ts';
 
 const HUMIDITY_RATIO_STEP = 2e-6;
 const PRESSURE_STEP_PA = 2;
 const MOST_INT16 = 32_767;
+const MOST_UINT16 = MISSING_UINT16 - 1;
 /** Whether the machine itself writes the low byte first, as nearly all do. */
 const LITTLE_ENDIAN = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;
 
@@ -21,7 +23,10 @@ export interface YearColumns {
 /** Packs hourly values; those beyond the range of a column (a humidity ratio over 0.131) are set to its end. */
 export function packYear(columns: YearColumns & { readonly flags: Uint8Array }): PackedYear {
   const dryBulb = new Int16Array(columns.dryBulbC.length);
-  for (let slot = 0; slot < dryBulb.length; slot++) dryBulb[slot] = packedDryBulb(columns.dryBulbC[slot] ?? Number.NaN);
+  for (let slot = 0; slot < dryBulb.length; slot++) {
+    const value = 100 * (columns.dryBulbC[slot] ?? Number.NaN);
+    dryBulb[slot] = value >= -MOST_INT16 && value <= MOST_INT16 ? wholeNumber(value) : endOfInt16(value);
+  }
   return {
     dryBulb,
     humidityRatio: packedColumn(columns.humidityRatio, HUMIDITY_RATIO_STEP),
@@ -32,16 +37,19 @@ export function packYear(columns: YearColumns & { readonly flags: Uint8Array }):
 
 function packedColumn(values: Float64Array, step: number): Uint16Array {
   const packed = new Uint16Array(values.length);
-  for (let slot = 0; slot < packed.length; slot++) packed[slot] = packedUint16((values[slot] ?? Number.NaN) / step);
+  for (let slot = 0; slot < packed.length; slot++) {
+    const steps = (values[slot] ?? Number.NaN) / step;
+    packed[slot] = steps >= 0 && steps < MOST_UINT16 ? wholeNumber(steps) : endOfUint16(steps);
+  }
   return packed;
 }
 
-function packedDryBulb(dryBulbC: number): number {
-  return Number.isNaN(dryBulbC) ? MISSING_INT16 : Math.min(MOST_INT16, Math.max(-MOST_INT16, hundredths(dryBulbC)));
+function endOfUint16(steps: number): number {
+  return Number.isNaN(steps) ? MISSING_UINT16 : steps < 0 ? 0 : MOST_UINT16;
 }
 
-function packedUint16(steps: number): number {
-  return Number.isNaN(steps) ? MISSING_UINT16 : Math.min(MISSING_UINT16 - 1, Math.max(0, Math.round(steps)));
+function endOfInt16(value: number): number {
+  return Number.isNaN(value) ? MISSING_INT16 : value < 0 ? -MOST_INT16 : MOST_INT16;
 }
 
 /** Columns for so many slots, not filled in. */

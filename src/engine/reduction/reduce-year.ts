@@ -4,20 +4,13 @@ import { wetBulbColumn } from '../psychrometrics/wet-bulb.ts';
 import type { UsableReading } from '../weather-files/weather-file-reading.ts';
 import { depressionHistogram, depressionHoursByMonth, type HoursAtLeast, hoursAtLeast } from './depression-hours.ts';
 import { type DepressionSpell, longestLowDepression } from './depression-spell.ts';
-import { depressionColumn, dewPointColumn, reachedHundredths } from './derived-columns.ts';
+import { depressionColumn, reachedHundredths } from './derived-columns.ts';
 import { type DesignValues, designValues } from './design-values.ts';
+import { highDewPoints } from './high-dew-points.ts';
 import { packYear, unpackYear } from './packed-columns.ts';
 import type { WeatherYear } from './weather-year.ts';
-import {
-  countHours,
-  depressionCurve,
-  type HourCounts,
-  highestOf,
-  meanOf,
-  meansByMonthAndHour,
-  monthCompleteness,
-  monthlyMeans,
-} from './year-summary.ts';
+import { yearMeans } from './year-means.ts';
+import { countHours, depressionCurve, type HourCounts, highestOf, monthCompleteness } from './year-summary.ts';
 
 /** The figures of a weather year; every one is computed from its packed columns. */
 export interface YearFacts extends HourCounts {
@@ -75,26 +68,27 @@ export function reducePackedYear(year: WeatherYear, belowZero: BelowZeroPhase): 
   const wetBulbC = wetBulbColumn(dryBulbC, columns.humidityRatio, columns.pressurePa);
   const depressionK = depressionColumn(dryBulbC, wetBulbC);
   const depression = reachedHundredths(depressionK);
-  const histogram = depressionHistogram(depression);
-  const design = designValues({ dryBulbC, wetBulbC, dewPointC: dewPointColumn(columns) });
+  const depressionHours = depressionHoursByMonth(depression);
+  const design = designValues({ dryBulbC, wetBulbC, dewPointC: highDewPoints(columns) });
+  const means = yearMeans({ dryBulbC, wetBulbC, depressionK });
   const highestK = highestOf(depressionK);
   return {
     year,
-    histogram,
-    depressionHours: depressionHoursByMonth(histogram),
+    histogram: depressionHistogram(depression),
+    depressionHours,
     design,
     facts: {
       ...countHours(packed),
       belowZero,
-      meanDryBulbC: meanOf(dryBulbC) ?? 0,
-      meanWetBulbC: meanOf(wetBulbC),
+      meanDryBulbC: means.dryBulbC ?? 0,
+      meanWetBulbC: means.wetBulbC,
       maxDepressionK: highestK === null ? null : hundredths(highestK) / 100,
-      depressionHours: hoursAtLeast(depression),
-      meanDepressionK: meansByMonthAndHour(depressionK),
+      depressionHours: hoursAtLeast(depression, depressionHours),
+      meanDepressionK: means.depressionByHourK,
       monthCompletePct: monthCompleteness(packed),
-      monthlyDryBulbC: monthlyMeans(dryBulbC),
-      monthlyWetBulbC: monthlyMeans(wetBulbC),
-      monthlyDepressionK: monthlyMeans(depressionK),
+      monthlyDryBulbC: means.monthlyDryBulbC,
+      monthlyWetBulbC: means.monthlyWetBulbC,
+      monthlyDepressionK: means.monthlyDepressionK,
       depressionCurveK: depressionCurve(depression),
       lowDepressionSpell: longestLowDepression(depression, year.kind),
       design,

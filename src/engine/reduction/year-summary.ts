@@ -1,6 +1,6 @@
 /** Counts and means of a weather year, from its packed columns. */
-import { HOURS_PER_DAY, MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
-import { monthOfEachSlot, monthStartSlots } from './calendar.ts';
+import { MISSING_INT16, MISSING_UINT16 } from '../conventions.ts';
+import { monthStartSlots } from './calendar.ts';
 import { dryBulbProvenance, hasRepair, humidityProvenance, pressureProvenance } from './hour-flags.ts';
 import { countValues, valuesDownwards } from './value-counts.ts';
 import type { PackedYear } from './weather-year.ts';
@@ -93,33 +93,6 @@ export function highestOf(column: Float64Array): number | null {
     if (value > highest) highest = value;
   }
   return highest === Number.NEGATIVE_INFINITY ? null : highest;
-}
-
-/** Mean of the known values of each month, January first; null where none is known. */
-export function monthlyMeans(column: Float64Array): readonly (number | null)[] {
-  const starts = monthStartSlots(column.length);
-  return Array.from({ length: MONTHS }, (_none, index) => meanOf(column.subarray(starts[index], starts[index + 1])));
-}
-
-/** Mean of the known values by month (12) and hour of day (24); null where none is known. */
-export function meansByMonthAndHour(column: Float64Array): readonly (readonly (number | null)[])[] {
-  const months = monthOfEachSlot(column.length);
-  const sums = new Float64Array(MONTHS * HOURS_PER_DAY);
-  const counts = new Uint16Array(MONTHS * HOURS_PER_DAY);
-  for (let slot = 0; slot < column.length; slot++) {
-    const value = column[slot] ?? Number.NaN;
-    if (Number.isNaN(value)) continue;
-    const cell = ((months[slot] ?? 1) - 1) * HOURS_PER_DAY + (slot % HOURS_PER_DAY);
-    sums[cell] = (sums[cell] ?? 0) + value;
-    counts[cell] = (counts[cell] ?? 0) + 1;
-  }
-  return Array.from({ length: MONTHS }, (_month, month) =>
-    Array.from({ length: HOURS_PER_DAY }, (_hour, hour) => {
-      const cell = month * HOURS_PER_DAY + hour;
-      const count = counts[cell] ?? 0;
-      return count === 0 ? null : (sums[cell] ?? 0) / count;
-    }),
-  );
 }
 
 /**

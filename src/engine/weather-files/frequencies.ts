@@ -13,11 +13,6 @@ export class Frequencies {
     this.#lastCount.times++;
   }
 
-  /** How many different values there are. */
-  get size(): number {
-    return this.#counts.size;
-  }
-
   /** How often a value occurs. */
   of(value: number): number {
     return this.#counts.get(value)?.times ?? 0;

@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest';
 import {
+  humidityRatioColumn,
   humidityRatioFromDewPoint,
   humidityRatioFromRelativeHumidity,
   relativeHumidityPct,
@@ -43,6 +44,28 @@ test('humidity ratios and relative humidity are those of PsychroLib to the bit o
   }
   expect(differing).toEqual([]);
 });
+
+test.each(['ice', 'water'] as const)(
+  'a column of humidity ratios over %s is that of each hour to the bit',
+  (belowZero) => {
+    const apartK = [-3, -0.5, 0, 1e-9, 0.0005, 0.001, 0.0011, 0.1, 4.7, 30];
+    const dryBulbsC = temperaturesC.filter((tempC, at) => Math.abs(tempC) <= 60 && at % samples(7, 1) === 0);
+    const pairs = dryBulbsC.flatMap((dryBulb) => apartK.map((apart) => [dryBulb, dryBulb - apart] as const));
+    const column = (value: (pair: readonly [number, number], at: number) => number) => Float64Array.from(pairs, value);
+    const dryBulbC = column(([dryBulb], at) => (at % 101 === 0 ? Number.NaN : dryBulb));
+    const dewPointC = column(([, dewPoint], at) => (at % 103 === 0 ? Number.NaN : dewPoint));
+    const pressurePa = column((_pair, at) => (at % 107 === 0 ? Number.NaN : 60_000 + (at % 48_000)));
+    const ratios = humidityRatioColumn({ dryBulbC, dewPointC, pressurePa, belowZero });
+    const wrong = ratios.findIndex((ratio, at) => {
+      const [dryBulb = 0, dewPoint = 0, pressure = 0] = [dryBulbC[at], dewPointC[at], pressurePa[at]];
+      const known = !Number.isNaN(dryBulb + dewPoint + pressure);
+      const state = { dryBulbC: dryBulb, dewPointC: dewPoint, pressurePa: pressure, belowZero };
+      return !Object.is(ratio, known ? humidityRatioFromDewPoint(state) : Number.NaN);
+    });
+    expect(wrong).toBe(-1);
+    expect(ratios.length).toBeGreaterThan(50_000);
+  },
+);
 
 test('a temperature outside the formulas is an error, and so is one that is not known', () => {
   for (const tempC of [-100.01, 200.01, Number.NaN, 1e12])

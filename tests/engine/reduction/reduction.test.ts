@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { YearFacts } from '#contract/weather.ts';
+import { dewPointC } from '#engine/psychrometrics/moist-air.ts';
 import { standardPressurePa } from '#engine/psychrometrics/pressure.ts';
 import { wetBulbC } from '#engine/psychrometrics/wet-bulb.ts';
 import {
@@ -21,9 +22,17 @@ import {
 import { longestLowDepression } from '#engine/reduction/depression-spell.ts';
 import { reachedHundredths } from '#engine/reduction/derived-columns.ts';
 import { designValues, valueAtPercent } from '#engine/reduction/design-values.ts';
+import { highDewPoints } from '#engine/reduction/high-dew-points.ts';
 import { hourFlags } from '#engine/reduction/hour-flags.ts';
 import { usableFor } from '#engine/reduction/month-completeness.ts';
-import { packedBytes, packedFromBytes, packYear, unpackYear } from '#engine/reduction/packed-columns.ts';
+import {
+  packedBytes,
+  packedFromBytes,
+  packYear,
+  unpackYear,
+  type YearColumns,
+  yearColumns,
+} from '#engine/reduction/packed-columns.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import { countHours, depressionCurve } from '#engine/reduction/year-summary.ts';
 import { ruleNames } from '#engine/weather-files/quality/quality-options.ts';
@@ -151,7 +160,7 @@ describe('depression hours', () => {
     expect(histogram[23 * DEPRESSION_BINS + 3]).toBe(1);
     expect(histogram[24 * DEPRESSION_BINS + 4]).toBe(1);
     expect(histogram[(11 * 24 + 23) * DEPRESSION_BINS + 63]).toBe(1);
-    const byMonth = depressionHoursByMonth(histogram);
+    const byMonth = depressionHoursByMonth(depression);
     expect(byMonth).toHaveLength(12 * DEPRESSION_BINS);
     const counted = [...byMonth.entries()].filter(([, hours]) => hours > 0);
     // Months 1, 1, 2 and 12; bins 0, 3, 4 and the last.
@@ -212,6 +221,37 @@ describe('design values', () => {
     expect(rows.wetBulb.map(({ percent }) => percent)).toEqual([0.4, 1, 2, 5, 10]);
     const nothing = new Float64Array(8760).fill(Number.NaN);
     expect(designValues({ dryBulbC, wetBulbC: nothing, dewPointC: nothing }).dewPoint).toEqual([]);
+  });
+});
+
+describe('high dew points', () => {
+  const dewPoints = (columns: YearColumns) =>
+    columns.dryBulbC.map((dryBulbC, slot) => {
+      const [ratio = Number.NaN, pressurePa = Number.NaN] = [columns.humidityRatio[slot], columns.pressurePa[slot]];
+      return Number.isNaN(dryBulbC + ratio + pressurePa) ? Number.NaN : dewPointC(dryBulbC, ratio, pressurePa);
+    });
+  const climates: readonly (readonly [string, (slot: number) => readonly [number, number, number]])[] = [
+    ['dry and changeable', (slot) => [30 + 10 * Math.sin(slot / 40), 0.006 + 0.004 * Math.sin(slot / 97), 97_000]],
+    ['humid and even, at changing pressure', (slot) => [30, 0.019 + 1e-4 * Math.sin(slot), 101_000 + (slot % 900)]],
+    ['over saturation, so that the dry bulb is the dew point', (slot) => [5 + (slot % 25), 0.03, 90_000]],
+    ['as cold and dry as the tables go', (slot) => [-60 - (slot % 31), 1e-7 * (1 + (slot % 9)), 60_000]],
+    ['the same all year', () => [20, 0.008, 100_000]],
+    ['lacking half of its hours', (slot) => [25, slot % 2 === 0 ? 0.005 + slot * 1e-6 : Number.NaN, 95_000]],
+    ['never known', () => [25, Number.NaN, 95_000]],
+  ];
+
+  test.each(climates)('decide the same design values as all of them: a year that is %s', (_name, at) => {
+    const columns = yearColumns(8760);
+    for (let slot = 0; slot < 8760; slot++) {
+      [columns.dryBulbC[slot], columns.humidityRatio[slot], columns.pressurePa[slot]] = at(slot);
+    }
+    const others = { dryBulbC: columns.dryBulbC, wetBulbC: columns.dryBulbC };
+    const high = highDewPoints(columns);
+    const all = dewPoints(columns);
+    expect(designValues({ ...others, dewPointC: high })).toEqual(designValues({ ...others, dewPointC: all }));
+    for (const [slot, value] of high.entries()) {
+      if (value !== Number.NEGATIVE_INFINITY && !Object.is(value, all[slot])) expect.fail(`slot ${slot}: ${value}`);
+    }
   });
 });
 

@@ -72,7 +72,7 @@ describe('a file of another format that is damaged at random', { timeout: 600_00
         fc.constantFrom('change', 'lose', 'double'),
         (changes, how) => problemsIn(damagedBytes(bytes, changes, how), options).length === 0,
       );
-      fc.assert(property, propertySettings(12));
+      fc.assert(property, propertySettings(40, 4_000));
     },
   );
 
@@ -81,7 +81,7 @@ describe('a file of another format that is damaged at random', { timeout: 600_00
     const property = fc.property(fc.integer({ min: 0, max: bytes.length }), (length) => {
       return problemsIn(bytes.subarray(0, length), options).length === 0;
     });
-    fc.assert(property, propertySettings(4));
+    fc.assert(property, propertySettings(10, 1_000));
   });
 
   test('any bytes at all, after any beginning that a reader looks for, are read, asked about or refused', () => {
@@ -93,7 +93,7 @@ describe('a file of another format that is damaged at random', { timeout: 600_00
       bytes.set(tail, text.length);
       return problemsIn(bytes, placed).length === 0;
     });
-    fc.assert(property, propertySettings(200));
+    fc.assert(property, propertySettings(200, 20_000));
   });
 
   test('of 20,000 faulty rows, of one station a row or of years without end ends within two seconds', () => {

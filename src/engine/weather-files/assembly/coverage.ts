@@ -137,6 +137,7 @@ export function tellSourceFlags(input: { hours: HourColumns; informative: boolea
   let estimated = 0;
   for (let slot = 0; slot < flags.length; slot++) {
     const flag = flags[slot] ?? 0;
+    if (flag === 0) continue;
     if (dryBulbProvenance(flag) === 'estimated' || humidityProvenance(flag) === 'estimated') estimated++;
   }
   if (estimated === 0) return;

@@ -32,6 +32,7 @@ export function hourColumns(input: {
 }): FilledHours {
   const { source, steps } = input;
   const values = hourValues(input);
+  if (isComplete(values)) return completeHours(values, source);
   const { dryBulbC, humidityRatio, pressurePa, lines } = values;
   const waiting = waitingForPressure(steps, source);
   const gap = markGaps(values, waiting);
@@ -52,6 +53,24 @@ export function hourColumns(input: {
     humidityPresent[slot] = Number.isNaN(humidityRatio[slot]) && !waits ? 0 : 1;
   }
   return { hours: { dryBulbC, humidityRatio, pressurePa, flags, lines }, gap, longFilled, humidityPresent };
+}
+
+/** Whether nothing is missing: what is not a number makes every sum so. */
+function isComplete({ dryBulbC, humidityRatio, pressurePa }: HourValues): boolean {
+  let sum = 0;
+  for (let slot = 0; slot < dryBulbC.length; slot++) {
+    sum += (dryBulbC[slot] ?? 0) + (humidityRatio[slot] ?? 0) + (pressurePa[slot] ?? 0);
+  }
+  return !Number.isNaN(sum);
+}
+
+/** A year without a gap, as most are: nothing is filled and nothing waits. */
+function completeHours(values: HourValues, source: HumiditySource): FilledHours {
+  const { dryBulbC, humidityRatio, lines, pressurePa } = values;
+  const none = new Uint8Array(dryBulbC.length);
+  const flags = flagColumn({ values, source, filledDry: none, filledHumidity: none });
+  const humidityPresent = new Uint8Array(flags.length).fill(1);
+  return { hours: { dryBulbC, humidityRatio, pressurePa, flags, lines }, gap: none, longFilled: none, humidityPresent };
 }
 
 /** Fills a column in place, short gaps and, where asked, long ones. @returns 1 where a slot was filled */

@@ -2,7 +2,7 @@
 import {
   type BelowZeroPhase,
   dewPointC as dewPointOfState,
-  humidityRatioFromDewPoint,
+  humidityRatioColumn,
   humidityRatioFromRelativeHumidity,
   relativeHumidityOfDewPointPct,
 } from '../../psychrometrics/moist-air.ts';
@@ -107,18 +107,26 @@ export function humidityRatios(
   input: { steps: StepColumns; dryBulbC: Float64Array; belowZero: BelowZeroPhase },
   source: HumiditySource,
 ): Float64Array {
+  const { belowZero, dryBulbC, steps } = input;
+  return source === 'dew point'
+    ? humidityRatioColumn({ dryBulbC, dewPointC: steps.dewPointC, pressurePa: steps.pressurePa, belowZero })
+    : ratiosFromRelativeHumidity(input);
+}
+
+function ratiosFromRelativeHumidity(input: {
+  steps: StepColumns;
+  dryBulbC: Float64Array;
+  belowZero: BelowZeroPhase;
+}): Float64Array {
   const { belowZero, steps } = input;
-  const ratios = new Float64Array(input.dryBulbC.length).fill(Number.NaN);
-  const column = source === 'dew point' ? steps.dewPointC : steps.relativeHumidityPct;
+  const ratios = new Float64Array(input.dryBulbC.length);
   for (let step = 0; step < ratios.length; step++) {
     const dryBulbC = input.dryBulbC[step] ?? Number.NaN;
     const pressurePa = steps.pressurePa[step] ?? Number.NaN;
-    const value = column[step] ?? Number.NaN;
-    if (Number.isNaN(dryBulbC + pressurePa + value)) continue;
-    ratios[step] =
-      source === 'dew point'
-        ? humidityRatioFromDewPoint({ dryBulbC, dewPointC: value, pressurePa, belowZero })
-        : humidityRatioFromRelativeHumidity({ dryBulbC, relativeHumidityPct: value, pressurePa, belowZero });
+    const relativeHumidityPct = steps.relativeHumidityPct[step] ?? Number.NaN;
+    ratios[step] = Number.isNaN(dryBulbC + pressurePa + relativeHumidityPct)
+      ? Number.NaN
+      : humidityRatioFromRelativeHumidity({ dryBulbC, relativeHumidityPct, pressurePa, belowZero });
   }
   return ratios;
 }

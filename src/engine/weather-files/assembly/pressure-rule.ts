@@ -39,8 +39,7 @@ export function settlePressure(
     assume(steps, elevationM, findings);
     return;
   }
-  const medianPa = medianOf(known);
-  if (!inHectopascals && !keepFar) replaceFarValues(steps, medianPa, findings);
+  if (!inHectopascals && !keepFar && reachesFar(column)) replaceFarValues(steps, medianOf(known), findings);
   if (known.length < column.length) fillGaps(steps, findings);
   flagConstant(steps, findings);
   const meanPa = meanOf(column);
@@ -124,6 +123,18 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
     message: () =>
       `The file gives no usable pressure; the standard atmosphere at ${elevationM} m, ${whole(standardPa)} Pa, is taken in every hour.`,
   });
+}
+
+/** Whether any value can lie more than 6 % from the median: not when all of them lie closer together. */
+function reachesFar(column: Float64Array): boolean {
+  let least = Number.POSITIVE_INFINITY;
+  let most = Number.NEGATIVE_INFINITY;
+  for (let step = 0; step < column.length; step++) {
+    const value = column[step] ?? Number.NaN;
+    if (value < least) least = value;
+    if (value > most) most = value;
+  }
+  return !(most - least < FAR_FROM_MEDIAN * least);
 }
 
 /** Impossible values, and those more than 6 % from the median: the standard atmosphere scaled to the median. */

@@ -66,18 +66,14 @@ function passPlainRows(
   { plain, most }: { plain: PlainRowReader; most: number },
 ): number {
   const { lines } = cursor.text;
-  const { fieldCounts, flags, rows } = progress;
+  const { flags, rows } = progress;
   let passed = 0;
   for (;;) {
     rows.makeRoom();
     const before = cursor.linesBefore;
     const taken = plain.readInto(rows, { start: cursor.ahead, line: before, most: most - passed }, flags);
     if (taken === 0) return passed;
-    for (let line = before; line < before + taken; line++) {
-      const fieldCount = (lines?.commas[line] ?? 0) + 1;
-      noteLength(progress, fieldCount, line + 1);
-      fieldCounts.push(Math.min(fieldCount, FULL_FIELDS));
-    }
+    if (lines !== null) noteLengths(progress, lines.commas.subarray(before, before + taken), before + 1);
     rows.take(taken);
     cursor.pass(taken);
     passed += taken;
@@ -127,6 +123,16 @@ function readRow(cursor: LineCursor, progress: Progress, row: SourceRow, finding
   progress.rows.add(row);
 }
 
+/** @param firstLine line of the first of the rows */
+function noteLengths(progress: Progress, commas: Int32Array, firstLine: number): void {
+  const { fieldCounts } = progress;
+  for (let row = 0; row < commas.length; row++) {
+    const fieldCount = (commas[row] ?? 0) + 1;
+    if (fieldCount > FULL_FIELDS) noteLength(progress, fieldCount, firstLine + row);
+    fieldCounts.push(Math.min(fieldCount, FULL_FIELDS));
+  }
+}
+
 function noteLength(progress: Progress, fieldCount: number, line: number): void {
   if (fieldCount <= FULL_FIELDS) return;
   progress.longRows++;
@@ -158,10 +164,10 @@ function tellLongRows(progress: Progress, findings: FindingList): void {
 
 /** A row that is shorter than the file's layout may have lost any of its fields, so its values are not trusted. */
 function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, findings: FindingList): void {
+  if (isUniform(fieldCounts)) return;
   const rowsWith = new Frequencies();
   for (let row = 0; row < fieldCounts.length; row++) rowsWith.add(fieldCounts[row] ?? 0);
   const usual = rowsWith.mostFrequent(0);
-  if (rowsWith.size === 1) return;
   for (let row = 0; row < fieldCounts.length; row++) {
     const count = fieldCounts[row] ?? 0;
     if (count >= usual || rowsWith.of(count) >= LAYOUT_SHARE * fieldCounts.length) continue;
@@ -177,4 +183,10 @@ function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, f
         `Line ${line} has ${count} fields where the others have ${usual}: which one is lost cannot be told, so its values are left out.`,
     });
   }
+}
+
+function isUniform(fieldCounts: readonly number[]): boolean {
+  let row = 1;
+  while (row < fieldCounts.length && fieldCounts[row] === fieldCounts[0]) row++;
+  return row >= fieldCounts.length;
 }

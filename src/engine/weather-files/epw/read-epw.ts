@@ -73,6 +73,7 @@ function settlePressureCode(pressurePa: Float64Array): void {
 /** Records an hour as the rows have them: the most frequent number of rows that share an hour at different minutes. */
 function settleRecordsPerHour(header: EpwHeader, rows: SourceRows, findings: FindingList): number {
   const { days, hours, lines, minutes, months } = rows;
+  if (header.recordsPerHour === 1 && everyHourIsNew(hours)) return 1;
   const found = new Frequencies();
   let run = 1;
   for (let row = 1; row <= lines.length; row++) {
@@ -96,4 +97,11 @@ function settleRecordsPerHour(header: EpwHeader, rows: SourceRows, findings: Fin
     });
   }
   return usual;
+}
+
+/** Whether no row has the hour of the one before it, as in nearly every file. */
+function everyHourIsNew(hours: Uint8Array): boolean {
+  let row = 1;
+  while (row < hours.length && hours[row] !== hours[row - 1]) row++;
+  return row >= hours.length;
 }

@@ -1,35 +1,41 @@
 import { VALUE } from '../assembly/source-rows.ts';
 
+/** Letter and digit of the dry bulb and of the dew point. */
+const WORD = 4;
+
 /** Reads the source flags of the rows of a file: a letter and a digit for each value. */
 export class SourceFlags {
   /** Whether those of dry bulb and dew point vary through the file. */
   vary = false;
   readonly #bytes: Uint8Array;
+  readonly #words: DataView;
   #first = 0;
   #any = false;
 
   constructor(bytes: Uint8Array) {
     this.#bytes = bytes;
+    this.#words = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   }
 
   /** Takes the flags of a row, from a byte to the one before another, and answers which values they call estimated: bits of `VALUE`. */
   take(start: number, end: number): number {
-    const dryLetter = this.#byteBefore(end, start);
-    const dewLetter = this.#byteBefore(end, start + 2);
-    const firstFour =
-      (dryLetter << 24) |
-      (this.#byteBefore(end, start + 1) << 16) |
-      (dewLetter << 8) |
-      this.#byteBefore(end, start + 3);
+    const firstFour = end >= start + WORD ? this.#words.getInt32(start, true) : this.#shortWord(start, end);
     if (!this.#any) {
       this.#any = true;
       this.#first = firstFour;
     } else if (this.#first !== firstFour) this.vary = true;
     let estimated = 0;
-    if (isEstimated(dryLetter)) estimated |= VALUE.dryBulb;
-    if (isEstimated(dewLetter)) estimated |= VALUE.dewPoint;
-    if (isEstimated(this.#byteBefore(end, start + 4))) estimated |= VALUE.relativeHumidity;
+    if (isEstimated(firstFour & 0xff)) estimated |= VALUE.dryBulb;
+    if (isEstimated((firstFour >> 16) & 0xff)) estimated |= VALUE.dewPoint;
+    if (isEstimated(this.#byteBefore(end, start + WORD))) estimated |= VALUE.relativeHumidity;
     return estimated;
+  }
+
+  /** The first four bytes of a field that has fewer, zeros after them. */
+  #shortWord(start: number, end: number): number {
+    let word = 0;
+    for (let at = start; at < end; at++) word |= (this.#bytes[at] ?? 0) << (8 * (at - start));
+    return word;
   }
 
   /** The byte at a place before the end of a field, else 0. */

@@ -56,7 +56,8 @@ export function continentalRecord(hours: TestedHours, station: DeclaredStation, 
   const { region, ...limits } = recordLimits(station);
   const low = Math.round(100 * limits.low);
   const high = Math.round(100 * limits.high);
-  const { values } = hours.dryBulb;
+  const { bounds, values } = hours.dryBulb;
+  if (bounds.least >= low && bounds.most <= high) return;
   const isBeyond = (value: number) => value > high || (value < low && value !== MISSING_INT16);
   for (let step = 0; step < values.length; step++) {
     const value = values[step] ?? MISSING_INT16;

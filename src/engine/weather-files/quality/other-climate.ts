@@ -17,7 +17,8 @@ const AT_LEAST = { 'dry bulb': 1_500, 'dew point': 3_000 } as const;
  */
 export function otherClimate(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
-    for (const month of hours.months) {
+    for (const [index, month] of hours.months.entries()) {
+      if ((column.bounds.monthRanges[index] ?? 0) < AT_LEAST[column.variable]) continue;
       const extremes = extremesOf(column.values, month.start, month.end);
       if (extremes === null || extremes.most - extremes.least < AT_LEAST[column.variable]) continue;
       const quartiles = quartilesOf(column.values, month.start, month.end);

@@ -10,7 +10,8 @@ const MOST_SHARE = 0.02;
 
 /** A month whose dew point jumps by more than 10 K from one hour to the next in over 2 % of its hours loses its humidity. */
 export function sawTooth(hours: TestedHours, findings: FindingList): void {
-  const { values } = hours.dewPoint;
+  const { bounds, values } = hours.dewPoint;
+  if (bounds.change <= JUMP) return;
   hours.months.forEach((month, index) => {
     let jumps = 0;
     let before = MISSING_INT16;

@@ -15,7 +15,8 @@ const NEIGHBOURS_WITHIN = 300;
  */
 export function spikes(hours: TestedHours, findings: FindingList): void {
   for (const column of [hours.dryBulb, hours.dewPoint]) {
-    const { values } = column;
+    const { bounds, values } = column;
+    if (bounds.change <= LEAST_JUMP) continue;
     const changes = new MonthlyChanges(hours, values);
     for (const span of hours.unbroken) {
       let before = values[span.start] ?? MISSING_INT16;

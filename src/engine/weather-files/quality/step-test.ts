@@ -20,7 +20,8 @@ const around = new Int16Array(2 * AROUND_H + 2);
  * change is weather (see `outflow.ts`); from 12 K the change is kept for `tellJumps`.
  */
 export function stepTest(hours: TestedHours, findings: FindingList): void {
-  const { values } = hours.dryBulb;
+  const { bounds, values } = hours.dryBulb;
+  if (bounds.change < TOLD_FROM) return;
   for (const { start, end } of hours.unbroken) {
     for (let step = start + 1; step < end; step++) {
       const change = (values[step] ?? 0) - (values[step - 1] ?? 0);

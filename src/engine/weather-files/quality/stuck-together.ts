@@ -13,6 +13,7 @@ export function stuckTogether(hours: TestedHours, findings: FindingList): void {
   const dry = dryBulb.values;
   const dew = dewPoint.values;
   for (const { start, end } of hours.unbroken) {
+    if (!mayHoldRun(dry, { start, end, shortest })) continue;
     let first = start;
     for (let step = start + 1; step <= end; step++) {
       const goesOn =
@@ -28,6 +29,18 @@ export function stuckTogether(hours: TestedHours, findings: FindingList): void {
       first = step;
     }
   }
+}
+
+/** Whether a stretch may hold a run: one would lie over a sample every half of its length, with the other half of it after that. */
+function mayHoldRun(
+  values: Int16Array,
+  { start, end, shortest }: { start: number; end: number; shortest: number },
+): boolean {
+  const stride = shortest >> 1;
+  for (let sample = start; sample + 2 < end; sample += stride) {
+    if (values[sample] === values[sample + 1] && values[sample] === values[sample + 2]) return true;
+  }
+  return false;
 }
 
 function tellTogether(hours: TestedHours, [start, end]: readonly [number, number], findings: FindingList): void {

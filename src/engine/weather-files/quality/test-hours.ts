@@ -55,14 +55,8 @@ export function testHours(
 }
 
 /** Whether any value reaches a limit: nearly no file has one, and the range is then not looked at closely. */
-function reaches({ values }: TestedColumn, limits: { low: number; high: number }): boolean {
-  const low = 100 * limits.low;
-  const high = 100 * limits.high;
-  for (let step = 0; step < values.length; step++) {
-    const value = values[step] ?? MISSING_INT16;
-    if ((value <= low || value >= high) && value !== MISSING_INT16) return true;
-  }
-  return false;
+function reaches({ bounds }: TestedColumn, limits: { low: number; high: number }): boolean {
+  return bounds.least <= bounds.most && (bounds.least <= 100 * limits.low || bounds.most >= 100 * limits.high);
 }
 
 /** What the range has left out is missing for the tests as well. */

@@ -1,6 +1,7 @@
 /** The hours of a file as the tests see them: whole hundredths in small integers, so that a test is a cheap pass. */
 import { HOURS_PER_DAY, MISSING_INT16 } from '../../conventions.ts';
 import { monthStartSlots } from '../../reduction/calendar.ts';
+import { wholeNumber } from '../../whole-number.ts';
 import { VALUE } from '../assembly/source-rows.ts';
 import type { StepColumns } from '../assembly/step-columns.ts';
 import { type Resolution, resolutionOf } from './resolution.ts';
@@ -14,6 +15,18 @@ export interface TestedColumn {
   /** As the file gives it, before any test. */
   readonly asRead: Int16Array;
   readonly resolution: Resolution;
+  /** What the values keep within as read, so that a test can tell at once that it would find nothing. */
+  readonly bounds: ColumnBounds;
+}
+
+/** Hundredths of a degree; without any value `least` is above `most`. */
+export interface ColumnBounds {
+  readonly least: number;
+  readonly most: number;
+  /** The largest change from one value to the next, up or down. */
+  readonly change: number;
+  /** Difference of the greatest and the least value of each month. */
+  readonly monthRanges: readonly number[];
 }
 
 /** Steps from `start` to the one before `end`. */
@@ -62,8 +75,8 @@ export function testedHours(steps: StepColumns, typical: boolean): TestedHours {
   return {
     steps,
     stepsPerDay: HOURS_PER_DAY * stepsPerHour,
-    dryBulb: testedColumn('dry bulb', VALUE.dryBulb, steps.dryBulbC),
-    dewPoint: testedColumn('dew point', VALUE.dewPoint, steps.dewPointC),
+    dryBulb: testedColumn('dry bulb', VALUE.dryBulb, { column: steps.dryBulbC, months }),
+    dewPoint: testedColumn('dew point', VALUE.dewPoint, { column: steps.dewPointC, months }),
     pressureGiven: steps.pressurePa.some((pressurePa) => pressurePa > 0),
     failed: new Uint8Array(steps.lines.length),
     failedAlone: [],
@@ -73,24 +86,58 @@ export function testedHours(steps: StepColumns, typical: boolean): TestedHours {
   };
 }
 
-// One pass for both, since every file goes through it.
-function testedColumn(variable: TestedColumn['variable'], bit: number, column: Float64Array): TestedColumn {
+// One pass for everything that is to be known of a column, since every file goes through it.
+function testedColumn(
+  variable: TestedColumn['variable'],
+  bit: number,
+  { column, months }: { column: Float64Array; months: readonly StepSpan[] },
+): TestedColumn {
   const asRead = new Int16Array(column.length);
   const grains = { present: 0, half: 0, whole: 0 };
-  for (let step = 0; step < column.length; step++) {
-    const exact = (column[step] ?? Number.NaN) * 100;
-    // A value beyond the integers of the column is beyond every limit as well; NaN is neither above nor below.
-    const value =
-      exact > FARTHEST ? FARTHEST : exact >= -FARTHEST ? Math.round(exact) : exact < 0 ? -FARTHEST : MISSING_INT16;
-    asRead[step] = value;
-    if (value === MISSING_INT16) continue;
-    grains.present++;
-    const halves = (value / 50) | 0;
-    if (halves * 50 !== value) continue;
-    grains.half++;
-    if ((halves & 1) === 0) grains.whole++;
+  const monthRanges: number[] = [];
+  let least = FARTHEST;
+  let most = -FARTHEST;
+  let change = 0;
+  let before = MISSING_INT16;
+  for (const { start, end } of months) {
+    let low = FARTHEST;
+    let high = -FARTHEST;
+    let half = 0;
+    let whole = 0;
+    let present = 0;
+    for (let step = start; step < end; step++) {
+      const exact = (column[step] ?? Number.NaN) * 100;
+      const value = exact >= -FARTHEST && exact <= FARTHEST ? wholeNumber(exact) : beyond(exact);
+      asRead[step] = value;
+      if (value === MISSING_INT16) {
+        before = value;
+        continue;
+      }
+      present++;
+      if (value < low) low = value;
+      if (value > high) high = value;
+      const moved = value > before ? value - before : before - value;
+      if (moved > change && before !== MISSING_INT16) change = moved;
+      before = value;
+      const halves = (value / 50) | 0;
+      if (halves * 50 !== value) continue;
+      half++;
+      if ((halves & 1) === 0) whole++;
+    }
+    grains.present += present;
+    grains.half += half;
+    grains.whole += whole;
+    monthRanges.push(high - low);
+    least = Math.min(least, low);
+    most = Math.max(most, high);
   }
-  return { variable, bit, asRead, values: asRead.slice(), resolution: resolutionOf(grains) };
+  const bounds = { least, most, change, monthRanges };
+  return { variable, bit, asRead, values: asRead.slice(), resolution: resolutionOf(grains), bounds };
+}
+
+/** A value beyond the integers of the column is beyond every limit as well. */
+function beyond(exact: number): number {
+  return Number.isNaN(exact) ? MISSING_INT16 : exact > 0 ? FARTHEST : -FARTHEST;
 }
 
 /** Leaves out temperatures of one step: bits of `VALUE`, dry bulb and dew point. */
