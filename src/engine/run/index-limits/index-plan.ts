@@ -19,7 +19,7 @@ export interface IndexPlan {
   /** Shares of full wetting that are tried, ascending. */
   readonly shares: readonly number[];
   /** By position in `runningStages`. */
-  readonly fanWPerLs: readonly number[];
+  readonly fanWPerLs: Float64Array;
   readonly effDirect: number;
   readonly effIndirect: number;
   readonly effDewPoint: number;
@@ -43,7 +43,7 @@ export function indexPlan(brief: Brief): IndexPlan {
     stages,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),
     shares: sharesTried(brief),
-    fanWPerLs: [0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0],
+    fanWPerLs: Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0),
     effDirect: brief.effDirect,
     effIndirect: brief.effIndirect,
     effDewPoint: brief.effDewPoint,

@@ -10,7 +10,7 @@ export interface AirStream {
   /** Rise over which it carries the design load, K. */
   readonly riseK: number;
   /** W per L/s by what runs, by position in `runningStages`; and of the reference. */
-  readonly fanWPerLs: readonly number[];
+  readonly fanWPerLs: Float64Array;
   readonly referenceFanWPerLs: number;
 }
 

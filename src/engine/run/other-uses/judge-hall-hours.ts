@@ -29,7 +29,7 @@ export function judgeHallHours(brief: Brief, hours: HourColumns): void {
   if (brief.stages.includes('indirect')) judgeWet(brief, hours);
   // The return-air fan figure, wet or dry, in the plant and in the reference.
   const fan = brief.fanWPerLs.returnAir;
-  const fanWPerLs = runningStages.map(() => fan);
+  const fanWPerLs = new Float64Array(runningStages.length).fill(fan);
   fillAirPlant(brief, { riseK: hallRiseK(brief), fanWPerLs, referenceFanWPerLs: fan }, hours);
 }
 
