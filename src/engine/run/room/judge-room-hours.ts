@@ -10,8 +10,8 @@
  *   3. what is left   `judgeUnmet`    the lowest supply within the caps, then `damp`, `short` or `beyond`
  *   4. the plant      `roomPlant`
  *
- * Each is one loop over numbers: an object, a boxed number or a call for every hour would cost as much as judging it. Hence loops that
- * are longer than functions elsewhere, and the columns of `block` as constants of each module.
+ * Each is a loop over numbers, of the stages one for each: an object, a boxed number or a call for every hour would cost as much as
+ * judging it. Hence loops that are longer than functions elsewhere, and the columns of `block` as constants of each module.
  */
 import { block } from '../hour-block.ts';
 import { fillMet } from '../hour-columns.ts';
