@@ -16,7 +16,7 @@ export interface HourCells {
 }
 
 /** @param counts of the demand hours of the same year */
-export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, met }: HourCounts): HourCells {
+export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, unmetCells }: HourCounts): HourCells {
   const cellOf = cellOfEachSlot(slots);
   const scheduled = scheduledByCell(schedule);
   const present = scheduled.slice();
@@ -24,6 +24,7 @@ export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, me
     const slot = missing[index] ?? 0;
     if (schedule.open[slot] === 1) add(present, cellOf[slot] ?? 0, -1);
   }
+  const met = demand.map((hours, cell) => hours - (unmetCells[cell] ?? 0));
   return { scheduled, present, demand, met };
 }
 

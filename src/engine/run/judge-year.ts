@@ -11,7 +11,7 @@ import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { addPlant, noPlant, type PlantSums, plantOfYear } from '../water-energy/tally-plant.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import { addHours, type HourCounts, noHours } from './count-hours.ts';
+import { addHours, countedHours, type HourCounts, noHours } from './count-hours.ts';
 import { block } from './hour-block.ts';
 import { cellOfEachSlot, type HourCells, hourCells, monthRows } from './hour-cells.ts';
 import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
@@ -33,7 +33,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   const slots = year.packed.dryBulb.length;
   const cellOf = cellOfEachSlot(slots);
   const monthOf = monthOfEachSlot(slots);
-  const counts = noHours();
+  noHours();
   const plant = noPlant();
   const reports = startReports(brief);
   let degreeHours = brief.limit.kind === 'turbine' ? 0 : null;
@@ -44,6 +44,7 @@ export function judgeYear(input: JudgeYearInput): RunResult {
     if (degreeHours !== null) degreeHours = tallyDegreeHours(brief, block, degreeHours);
   };
   const judged = judgeHours(input, { keepsHours: false, take });
+  const counts = countedHours();
   const cells = hourCells(judged, counts);
   const counted = countHours(judged, { counts, plant, cells, reports, degreeHours }, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: counts.unmet });
