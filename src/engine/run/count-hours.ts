@@ -84,6 +84,7 @@ export function noHours(): void {
 export function countedHours(): HourCounts {
   for (let both = 0; both < byMarksAndClass.length; both++) {
     const hours = byMarksAndClass[both] ?? 0;
+    if (hours === 0) continue;
     const code = both & ((1 << CLASS_BITS) - 1);
     byClass[code] = (byClass[code] ?? 0) + hours;
     byMarks[both >> CLASS_BITS] = (byMarks[both >> CLASS_BITS] ?? 0) + hours;
