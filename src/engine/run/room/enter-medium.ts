@@ -28,11 +28,11 @@ export function enterMedium(plan: RoomPlan, stage: number, { places, count }: Ho
       continue;
     }
     const betweenC = tempC - indirectFallK(effIndirect, tempC, wetC);
-    let secondC = secondBulbs[slot[at] ?? 0] ?? Number.NaN;
-    if (Number.isNaN(secondC)) {
-      secondC = findSecondWetBulb(wetBulbs, slot[at] ?? 0, betweenC, humidityRatio[at] ?? 0, pressurePa[at] ?? 0);
+    const from = slot[at] ?? 0;
+    if (Number.isNaN(secondBulbs[from] ?? 0)) {
+      findSecondWetBulb(wetBulbs, from, betweenC, humidityRatio[at] ?? 0, pressurePa[at] ?? 0);
     }
     entersC[at] = betweenC;
-    mediumWetC[at] = secondC;
+    mediumWetC[at] = secondBulbs[from] ?? 0;
   }
 }

@@ -5,7 +5,6 @@ import { gainsEnough } from '../../hour-classes/short-from.ts';
 import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
 import { block } from '../hour-block.ts';
 import { dampReasons, runningStages } from '../hour-columns.ts';
-import { findLowestSupplies } from './lowest-supply.ts';
 import { room } from './room-hours.ts';
 import { isMoist, type RoomPlan } from './room-plan.ts';
 import { dewPointFallK, indirectFallK, lineBottom, lineTop, ratioOnLine } from './supply-lines.ts';
@@ -29,7 +28,6 @@ const { places } = room.unmet;
 
 /** `damp`, `short` or `beyond` (or `frozen`) of every hour that is listed as unmet, with the shortfall from T* of method 3.1. */
 export function judgeUnmet(plan: RoomPlan, wetBulbs: WetBulbs): void {
-  findLowestSupplies(plan, wetBulbs);
   const { count } = room.unmet;
   const freezeEdge = plan.freezeHundredths + 0.5;
   let edgeOfAimC = Number.NaN;
