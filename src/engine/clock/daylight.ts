@@ -2,7 +2,8 @@
  * Daylight of method 3: the centre of the sun above 0° without refraction at a slot's middle. Declination and equation of
  * time by Spencer 1971 (Fourier series representation of the position of the sun).
  */
-import { HOURS_PER_DAY } from '../conventions.ts';
+import { HOURS_PER_DAY, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
+import { floatColumn } from '../float-column.ts';
 
 /** Degrees, north and east positive. */
 export interface Position {
@@ -24,16 +25,30 @@ const DEGREES_PER_HOUR = 15;
  */
 export function solarAltitudeDeg(input: { slot: number; position: Position; utcOffsetMin: number }): number {
   const { slot, position, utcOffsetMin } = input;
-  const dayOfYear = Math.floor(slot / HOURS_PER_DAY) + 1;
-  const hour = (slot % HOURS_PER_DAY) + 0.5;
-  const dayAngle = (2 * Math.PI * (dayOfYear - 1 + (hour - 12) / 24)) / DAYS_PER_YEAR;
-  const declination = declinationRadians(dayAngle);
-  const minutesLate = equationOfTimeMin(dayAngle) + MIN_PER_DEGREE * position.longitude - utcOffsetMin;
-  const hourAngle = DEGREES * DEGREES_PER_HOUR * (hour + minutesLate / 60 - 12);
+  const minutesLate = (sun.equationOfTimeMin[slot] ?? 0) + MIN_PER_DEGREE * position.longitude - utcOffsetMin;
+  const hourAngle = DEGREES * DEGREES_PER_HOUR * (hourOf(slot) + minutesLate / 60 - 12);
   const latitude = DEGREES * position.latitude;
   const sine =
-    Math.sin(latitude) * Math.sin(declination) + Math.cos(latitude) * Math.cos(declination) * Math.cos(hourAngle);
+    Math.sin(latitude) * (sun.sineOfDeclination[slot] ?? 0) +
+    Math.cos(latitude) * (sun.cosineOfDeclination[slot] ?? 0) * Math.cos(hourAngle);
   return Math.asin(Math.min(Math.max(sine, -1), 1)) / DEGREES;
+}
+
+/** Middle of a slot, hours of its day. */
+function hourOf(slot: number): number {
+  return (slot % HOURS_PER_DAY) + 0.5;
+}
+
+/** Where the sun stands in the middle of each slot, whatever the place: many places ask for it. */
+const sun = {
+  sineOfDeclination: floatColumn(SLOTS_PER_LEAP_YEAR, (slot) => Math.sin(declinationRadians(dayAngleOf(slot)))),
+  cosineOfDeclination: floatColumn(SLOTS_PER_LEAP_YEAR, (slot) => Math.cos(declinationRadians(dayAngleOf(slot)))),
+  equationOfTimeMin: floatColumn(SLOTS_PER_LEAP_YEAR, (slot) => equationOfTimeMin(dayAngleOf(slot))),
+};
+
+function dayAngleOf(slot: number): number {
+  const dayOfYear = Math.floor(slot / HOURS_PER_DAY) + 1;
+  return (2 * Math.PI * (dayOfYear - 1 + (hourOf(slot) - 12) / 24)) / DAYS_PER_YEAR;
 }
 
 function declinationRadians(angle: number): number {

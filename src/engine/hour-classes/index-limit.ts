@@ -24,8 +24,9 @@ export function indexLimit({ limit }: Pick<Brief, 'limit'>): IndexLimit {
 
 /** The index that a limit speaks of, in its points. */
 export function indexOf({ kind }: IndexLimit, air: OccupiedAir): number {
-  if (kind === 'shade-heat') return shadeHeatFigure(air);
-  return temperatureHumidityIndex(air.tempC, relativeHumidityPct(air.tempC, air.humidityRatio, air.pressurePa));
+  const { tempC, humidityRatio, pressurePa } = air;
+  if (kind === 'shade-heat') return shadeHeatFigure(tempC, humidityRatio, pressurePa);
+  return temperatureHumidityIndex(tempC, relativeHumidityPct(tempC, humidityRatio, pressurePa));
 }
 
 /**
@@ -38,6 +39,6 @@ export function temperatureHumidityIndex(tempC: number, relativePct: number): nu
 }
 
 /** The shade heat figure, ours: 0.7 t_wb + 0.3 t of the occupied zone (method 3). No measured heat-stress index. */
-function shadeHeatFigure({ tempC, humidityRatio, pressurePa }: OccupiedAir): number {
+export function shadeHeatFigure(tempC: number, humidityRatio: number, pressurePa: number): number {
   return 0.7 * wetBulbC(tempC, humidityRatio, pressurePa) + 0.3 * tempC;
 }

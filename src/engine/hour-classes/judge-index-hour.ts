@@ -49,7 +49,7 @@ function statesUpToGood(
   { hour, brief, isGood }: { hour: DemandHour; brief: Brief; isGood: (state: Candidate) => boolean },
 ): Candidate[] {
   const states: Candidate[] = [];
-  for (const share of sharesOf(brief)) {
+  for (const share of sharesTried(brief)) {
     const state = candidateOf(path, share, { hour, brief });
     states.push(state);
     if (isGood(state)) break;
@@ -61,7 +61,8 @@ function wetStages(brief: Brief): SupplyStage[] {
   return brief.stages.flatMap((stage) => (stage === 'tower' ? [] : [stage]));
 }
 
-function sharesOf({ control }: Brief): readonly number[] {
+/** Shares of full wetting at which a stage is tried, ascending. */
+export function sharesTried({ control }: Pick<Brief, 'control'>): readonly number[] {
   return control === 'on-off' ? [1] : EVERY_SHARE;
 }
 

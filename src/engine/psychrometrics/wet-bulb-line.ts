@@ -8,7 +8,11 @@ import { saturationHumidityRatio } from './moist-air.ts';
  * @param pressurePa station pressure, Pa
  */
 export function humidityRatioOnWetBulbLine(dryBulbC: number, wetBulbC: number, pressurePa: number): number {
-  const saturated = saturationHumidityRatio(wetBulbC, pressurePa);
+  return ratioOnWetBulbLine(saturationHumidityRatio(wetBulbC, pressurePa), dryBulbC, wetBulbC);
+}
+
+/** The same with the humidity ratio of saturation at the wet bulb at hand, kg/kg. */
+export function ratioOnWetBulbLine(saturated: number, dryBulbC: number, wetBulbC: number): number {
   const drop = 1.006 * (dryBulbC - wetBulbC);
   const ratio =
     wetBulbC >= 0

@@ -27,7 +27,7 @@ export interface HourCounts {
   readonly byMarks: Uint16Array;
   /** By month and hour of day: see `hour-cells.ts`. */
   readonly demand: Uint16Array;
-  readonly met: Uint16Array;
+  readonly unmetCells: Uint16Array;
   /** By whole °C of the supply, the coldest bin first; and supplies that no weather gives. */
   readonly supplyBins: Uint16Array;
   readonly strangeSuppliesC: number[];
@@ -58,7 +58,7 @@ const now: HourCounts = {
   byReason: new Uint16Array(dampReasons.length),
   byMarks: new Uint16Array(1 << runningStages.length),
   demand: new Uint16Array(MONTH_HOUR_CELLS),
-  met: new Uint16Array(MONTH_HOUR_CELLS),
+  unmetCells: new Uint16Array(MONTH_HOUR_CELLS),
   supplyBins: new Uint16Array(BINS),
   strangeSuppliesC: [],
   recirculated: 0,
@@ -66,20 +66,35 @@ const now: HourCounts = {
   unmet: unmetHours,
 };
 
-/** Begins a year. @returns its counts, which belong to the next year as soon as that begins */
-export function noHours(): HourCounts {
-  const { byClass, byReason, byMarks, demand, met: metCells, supplyBins } = now;
-  for (const counts of [byClass, byReason, byMarks, demand, metCells, supplyBins]) counts.fill(0);
+/** Marks and class of an hour as one number, so that an hour is counted once for both. */
+const CLASS_BITS = 4;
+const byMarksAndClass = new Uint16Array(1 << (runningStages.length + CLASS_BITS));
+
+/** Begins a year. */
+export function noHours(): void {
+  const { byClass, byReason, byMarks, demand, unmetCells, supplyBins } = now;
+  for (const counts of [byClass, byReason, byMarks, demand, unmetCells, supplyBins, byMarksAndClass]) counts.fill(0);
   now.strangeSuppliesC.length = 0;
   now.recirculated = 0;
   now.warm = 0;
   unmetHours.count = 0;
+}
+
+/** Ends a year. @returns its counts, which belong to the next year as soon as that begins */
+export function countedHours(): HourCounts {
+  for (let both = 0; both < byMarksAndClass.length; both++) {
+    const hours = byMarksAndClass[both] ?? 0;
+    if (hours === 0) continue;
+    const code = both & ((1 << CLASS_BITS) - 1);
+    byClass[code] = (byClass[code] ?? 0) + hours;
+    byMarks[both >> CLASS_BITS] = (byMarks[both >> CLASS_BITS] ?? 0) + hours;
+  }
   return now;
 }
 
 /** Constants of this module: see `hour-block.ts`. */
 const { slot, classCode, met, damp, aloneMet, supplyC, waterC, setC, shortfallK, uncappedShortfallK } = block;
-const { byClass, byReason, byMarks, demand, met: metCells, supplyBins } = now;
+const { byClass, byReason, byMarks, demand, unmetCells, supplyBins } = now;
 
 /**
  * Adds the hours of `block`.
@@ -90,33 +105,33 @@ export function addHours(cellOf: Uint16Array): void {
   let recirculated = 0;
   let warm = 0;
   for (let at = 0; at < count; at++) {
-    const code = classCode[at] ?? 0;
-    byClass[code] = (byClass[code] ?? 0) + 1;
-    const marks = aloneMet[at] ?? 0;
-    byMarks[marks] = (byMarks[marks] ?? 0) + 1;
+    const both = ((aloneMet[at] ?? 0) << CLASS_BITS) | (classCode[at] ?? 0);
+    byMarksAndClass[both] = (byMarksAndClass[both] ?? 0) + 1;
     const cell = cellOf[slot[at] ?? 0] ?? 0;
     demand[cell] = (demand[cell] ?? 0) + 1;
-    metCells[cell] = (metCells[cell] ?? 0) + (met[at] ?? 0);
     const bin = (Math.floor(supplyC[at] ?? 0) - COLDEST_BIN_C) | 0;
     // What is no number, or too large for a whole one, ends in bin 0.
     if (bin > 0 && bin < BINS) supplyBins[bin] = (supplyBins[bin] ?? 0) + 1;
     else now.strangeSuppliesC.push(supplyC[at] ?? 0);
     const water = waterC[at] ?? 0;
-    recirculated += water >= Number.NEGATIVE_INFINITY ? 1 : 0;
-    warm += 100 * water >= WARM_EDGE ? 1 : 0;
+    if (Number.isNaN(water)) continue;
+    recirculated++;
+    if (100 * water >= WARM_EDGE) warm++;
   }
   now.recirculated += recirculated;
   now.warm += warm;
-  addUnmet();
+  addUnmet(cellOf);
 }
 
-function addUnmet(): void {
+function addUnmet(cellOf: Uint16Array): void {
   const { count } = block;
   let { count: place } = unmetHours;
   for (let at = 0; at < count; at++) {
     if (met[at] === 1) continue;
     const reason = damp[at] ?? 0;
     byReason[reason] = (byReason[reason] ?? 0) + 1;
+    const cell = cellOf[slot[at] ?? 0] ?? 0;
+    unmetCells[cell] = (unmetCells[cell] ?? 0) + 1;
     unmetSlot[place] = slot[at] ?? 0;
     unmetSetC[place] = setC[at] ?? 0;
     unmetShortfallK[place] = shortfallK[at] ?? 0;

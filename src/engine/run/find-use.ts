@@ -12,6 +12,8 @@ import type { PlantHour } from '../water-energy/plant-hour.ts';
 import { towerPlantHour } from '../water-energy/tower-plant-hour.ts';
 import { turbinePlantHour } from '../water-energy/turbine-plant-hour.ts';
 import type { HourColumns } from './hour-columns.ts';
+import { indexPlan } from './index-limits/index-plan.ts';
+import { judgeIndexHours } from './index-limits/judge-index-hours.ts';
 import { judgeHallHours } from './other-uses/judge-hall-hours.ts';
 import { judgeTowerHours } from './other-uses/judge-tower-hours.ts';
 import { judgeTurbineHours } from './other-uses/judge-turbine-hours.ts';
@@ -55,7 +57,14 @@ const roomAtATemperature: Use = {
 /** The room's exhaust feeds the indirect stages, so that moisture has to be settled hour by hour. */
 const roomFedByExhaust: Use = { ...roomAtATemperature, judgeHours: null };
 
-const roomUnderAnIndex: Use = { ...roomAtATemperature, judgeHour: judgeIndexHour, judgeHours: null };
+const roomUnderAnIndex: Use = {
+  ...roomAtATemperature,
+  judgeHour: judgeIndexHour,
+  judgeHours: (brief) => {
+    const plan = indexPlan(brief);
+    return () => judgeIndexHours(brief, plan);
+  },
+};
 
 const dataHall: Use = {
   ...roomAtATemperature,
@@ -89,7 +98,8 @@ export function findUse({ limit, secondaryAir }: Pick<Brief, 'limit' | 'secondar
       return secondaryAir === 'outdoor' ? roomAtATemperature : roomFedByExhaust;
     case 'thi':
     case 'shade-heat':
-      return roomUnderAnIndex;
+      // An index sets no temperature, so that a room's exhaust has none either: hour by hour that is refused.
+      return secondaryAir === 'outdoor' ? roomUnderAnIndex : { ...roomUnderAnIndex, judgeHours: null };
     case 'inlet':
       return dataHall;
     case 'tower':

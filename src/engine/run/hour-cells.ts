@@ -15,15 +15,22 @@ export interface HourCells {
   readonly met: Uint16Array;
 }
 
-/** @param counts of the demand hours of the same year */
-export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, met }: HourCounts): HourCells {
+const present = new Uint16Array(MONTH_HOUR_CELLS);
+const met = new Uint16Array(MONTH_HOUR_CELLS);
+
+/**
+ * @param counts of the demand hours of the same year
+ * @returns cells that belong to the next year as soon as that is counted
+ */
+export function hourCells({ slots, schedule, missing }: JudgedYear, { demand, unmetCells }: HourCounts): HourCells {
   const cellOf = cellOfEachSlot(slots);
   const scheduled = scheduledByCell(schedule);
-  const present = scheduled.slice();
+  present.set(scheduled);
   for (let index = 0; index < missing.length; index++) {
     const slot = missing[index] ?? 0;
     if (schedule.open[slot] === 1) add(present, cellOf[slot] ?? 0, -1);
   }
+  for (let cell = 0; cell < MONTH_HOUR_CELLS; cell++) met[cell] = (demand[cell] ?? 0) - (unmetCells[cell] ?? 0);
   return { scheduled, present, demand, met };
 }
 

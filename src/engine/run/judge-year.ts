@@ -1,5 +1,5 @@
 import type { Brief } from '../brief/brief.ts';
-import { METHOD_VERSION, SLOTS_PER_LEAP_YEAR } from '../conventions.ts';
+import { METHOD_VERSION } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { yearlyMoney } from '../money/yearly-money.ts';
 import { monthOfEachSlot } from '../reduction/calendar.ts';
@@ -11,20 +11,18 @@ import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
 import { addPlant, noPlant, type PlantSums, plantOfYear } from '../water-energy/tally-plant.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
-import { addHours, type HourCounts, noHours } from './count-hours.ts';
+import { addHours, countedHours, type HourCounts, noHours } from './count-hours.ts';
+import { block } from './hour-block.ts';
 import { cellOfEachSlot, type HourCells, hourCells, monthRows } from './hour-cells.ts';
-import { type HourColumns, hourColumns } from './hour-columns.ts';
 import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
+import { demandSlots } from './sort-slots.ts';
 import { tallyAloneHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
-import { type SuppliedAir, tallyReported } from './tally-reported.ts';
+import { type ReportCounts, startReports } from './tally-reported.ts';
 
 export type { JudgeYearInput } from './judged-year.ts';
-
-/** Columns for years of which single hours are looked at, one after another: nothing of them is left in a result. */
-const workspace = hourColumns(SLOTS_PER_LEAP_YEAR);
 
 /**
  * One weather year judged by one brief (method 3 to 7), from the packed columns alone. Same inputs, same result.
@@ -35,15 +33,20 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   const slots = year.packed.dryBulb.length;
   const cellOf = cellOfEachSlot(slots);
   const monthOf = monthOfEachSlot(slots);
-  const counts = noHours();
+  noHours();
   const plant = noPlant();
+  const reports = startReports(brief);
+  let degreeHours = brief.limit.kind === 'turbine' ? 0 : null;
   const take = (): void => {
     addHours(cellOf);
     addPlant(monthOf);
+    reports?.add(block);
+    if (degreeHours !== null) degreeHours = tallyDegreeHours(brief, block, degreeHours);
   };
-  const judged = judgeHours(input, { into: looksAtHours(brief) ? workspace : null, take });
+  const judged = judgeHours(input, { keepsHours: false, take });
+  const counts = countedHours();
   const cells = hourCells(judged, counts);
-  const counted = countHours(judged, { counts, plant, cells }, input);
+  const counted = countHours(judged, { counts, plant, cells, reports, degreeHours }, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: counts.unmet });
   const coverage = coverageOf({ slots: judged.slots, missing: judged.missing, cells });
   const gates = gatesOf({ brief, coverage, hardLimits });
@@ -61,18 +64,18 @@ export function judgeYear(input: JudgeYearInput): RunResult {
   };
 }
 
-/** Whether more is asked of single hours than what is counted of every brief. */
-function looksAtHours({ limit, reported, lowerLimits }: Brief): boolean {
-  return (
-    limit.kind === 'adaptive' || limit.kind === 'turbine' || reported.length > 0 || Object.keys(lowerLimits).length > 0
-  );
-}
-
 function countHours(
   judged: JudgedYear,
-  { counts, plant, cells }: { counts: HourCounts; plant: PlantSums; cells: HourCells },
+  found: {
+    counts: HourCounts;
+    plant: PlantSums;
+    cells: HourCells;
+    reports: ReportCounts | null;
+    degreeHours: number | null;
+  },
   { year, brief }: JudgeYearInput,
 ) {
+  const { counts, plant, cells, reports, degreeHours } = found;
   return {
     ledger: tallyLedger(judged, counts),
     severityKh: sumOf(counts.unmet.shortfallK, counts.unmet.count),
@@ -83,35 +86,23 @@ function countHours(
     metByMonthHour: monthRows(cells.met),
     scaled: scaleForMissing(cells),
     clampedLimitHours: countClamped(judged),
-    degreeHours: tallyDegreeHours(brief, judged.hours),
+    degreeHours,
     recirculatedHours: { all: counts.recirculated, warm: counts.warm },
-    reported: tallyReported(brief, () => suppliedAirs(judged.hours)),
+    reported: reports?.ofYear() ?? [],
     ...plantOfYear(plant, judged.use),
   };
 }
 
-function* suppliedAirs(hours: HourColumns): Iterable<SuppliedAir> {
-  for (let at = 0; at < hours.count; at++) {
-    const ratio = hours.supplyRatio[at] ?? Number.NaN;
-    yield {
-      supplyC: hours.supplyC[at] ?? Number.NaN,
-      supplyRatio: Number.isNaN(ratio) ? null : ratio,
-      supplyAimC: hours.supplyAimC[at] ?? Number.NaN,
-      loadFraction: hours.loadFraction[at] ?? Number.NaN,
-      pressurePa: hours.pressurePa[at] ?? Number.NaN,
-    };
-  }
-}
 function sumOf(column: Float64Array, count: number): number {
   let sum = 0;
   for (let at = 0; at < count; at++) sum += column[at] ?? 0;
   return sum;
 }
 
-function countClamped({ outsideRange, hours }: JudgedYear): number | null {
+function countClamped({ outsideRange, demandCount }: JudgedYear): number | null {
   if (outsideRange === null) return null;
   let clamped = 0;
-  for (let at = 0; at < hours.count; at++) clamped += outsideRange[hours.slot[at] ?? 0] ?? 0;
+  for (let nth = 0; nth < demandCount; nth++) clamped += outsideRange[demandSlots[nth] ?? 0] ?? 0;
   return clamped;
 }
 

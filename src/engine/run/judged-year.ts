@@ -52,8 +52,8 @@ export interface JudgeYearInput {
 
 /** How hours are judged, where the caller has reason to say. */
 export interface JudgingWays {
-  /** Columns that take the demand hours, with room for a year: they belong to the next one as soon as that is judged. Null: none are kept. */
-  readonly into?: HourColumns | null;
+  /** Whether the demand hours are kept; true unless said otherwise. */
+  readonly keepsHours?: boolean;
   /** Takes the hours of every block, in slot order, whose columns belong to the next block at once. */
   readonly take?: (block: HourColumns) => void;
   /** Judge hour by hour as objects even where a whole year can be judged in one pass; the classes are the same. */
@@ -71,8 +71,8 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   const idleUpToC = use.idleUpToC(brief);
   const idleHundredths = idleUpToC === null ? null : hundredths(idleUpToC);
   const { demand: count, ...withoutDemand } = sortSlots(packed, schedule, idleHundredths);
-  const hours = ways.into === undefined ? hourColumns(slots) : (ways.into ?? NONE_KEPT);
-  hours.count = 0;
+  const keepsHours = ways.keepsHours ?? true;
+  const hours = keepsHours ? hourColumns(slots) : NONE_KEPT;
   const demand = yearDemand(input);
   const judge =
     ways.oneByOne === true ? judgeOneByOne(brief, use) : (use.judgeHours?.(brief, packed) ?? judgeOneByOne(brief, use));
@@ -83,7 +83,7 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
     judge(block);
     writeCodes();
     ways.take?.(block);
-    if (ways.into !== null) appendHours(hours, block);
+    if (keepsHours) appendHours(hours, block);
   }
   const classCodes = slotCodes.slice(0, slots);
   let asObjects: readonly JudgedHour[] | null = null;

@@ -22,7 +22,7 @@ const NO_SLOT_IDLE = MISSING_INT16;
  * `closed`, `missing`, `idle`, in this order; the slots that are left have demand and are listed. On the packed numbers, which are
  * whole hundredths of °C.
  * @param idleHundredths slots at or under this have no demand; null: every known one has
- * @returns how many there are of each; `slotCodes` holds one position in `hourClasses` for every slot, `closed` where there is demand,
+ * @returns how many there are of each; `slotCodes` holds one position in `hourClasses` for every slot, `idle` where there is demand,
  * and `demandSlots` the slots with demand, in order
  */
 export function sortSlots(
@@ -30,7 +30,7 @@ export function sortSlots(
   schedule: OpenSchedule,
   idleHundredths: number | null,
 ): WithoutDemand & { readonly demand: number } {
-  if (schedule.slots.length < schedule.open.length) codes.fill(0);
+  codes.set(idleWhereOpen(schedule));
   const demand = listDemand(knownDryBulb(year), schedule.slots, idleHundredths ?? NO_SLOT_IDLE);
   const missingSlotsOfYear = missingSlots(year);
   let missing = 0;
@@ -50,7 +50,18 @@ const listed = new Uint16Array(SLOTS_PER_LEAP_YEAR);
 export const slotCodes = codes;
 export const demandSlots = listed;
 
-/** Lists the slots over a temperature and marks the others as idle. */
+const idleColumns = new WeakMap<OpenSchedule, Uint8Array>();
+
+/** `idle` for every open slot, `closed` for the others: what is known before the weather is looked at. */
+function idleWhereOpen(schedule: OpenSchedule): Uint8Array {
+  const made = idleColumns.get(schedule);
+  if (made !== undefined) return made;
+  const column = schedule.open.map((open) => open * IDLE);
+  idleColumns.set(schedule, column);
+  return column;
+}
+
+/** Lists the slots over a temperature. */
 function listDemand(dryBulb: Int16Array, openSlots: Uint16Array, idleHundredths: number): number {
   let count = 0;
   for (let from = 0; from < openSlots.length; from += HOURS_PER_BLOCK) {
@@ -79,7 +90,6 @@ function listBlock(
   for (let index = from; index < to; index++) {
     const slot = openSlots[index] ?? 0;
     const over = (idleHundredths - (dryBulb[slot] ?? 0)) >>> 31;
-    codes[slot] = IDLE & (over - 1);
     listed[count] = slot;
     count += over;
   }

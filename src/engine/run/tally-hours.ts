@@ -14,7 +14,10 @@ export function tallyAloneHours({ byMarks }: HourCounts, { use }: JudgedYear, br
   for (const stage of use.aloneStages(brief)) {
     const position = runningStages.indexOf(stage);
     let met = 0;
-    for (let marks = 0; marks < byMarks.length; marks++) met += ((marks >> position) & 1) * (byMarks[marks] ?? 0);
+    for (let marks = 0; marks < byMarks.length; marks++) {
+      const hours = byMarks[marks] ?? 0;
+      if (hours > 0 && ((marks >> position) & 1) === 1) met += hours;
+    }
     alone[stage] = met;
   }
   return alone;

@@ -28,21 +28,24 @@ export function tallyLedger(judged: JudgedYear, counts: HourCounts): Ledger {
 
 /** Every class with its count, 0 where there is none. */
 function countClasses({ withoutDemand }: JudgedYear, { byClass }: HourCounts): Record<HourClass, number> {
-  const of = (hourClass: HourClass): number => byClass[hourClasses.indexOf(hourClass)] ?? 0;
   return {
     closed: withoutDemand.closed,
     missing: withoutDemand.missing,
     idle: withoutDemand.idle,
-    frozen: of('frozen'),
-    damp: of('damp'),
-    air: of('air'),
-    direct: of('direct'),
-    indirect: of('indirect'),
-    dewpoint: of('dewpoint'),
-    twostage: of('twostage'),
-    short: of('short'),
-    beyond: of('beyond'),
+    frozen: hoursOf(byClass, 'frozen'),
+    damp: hoursOf(byClass, 'damp'),
+    air: hoursOf(byClass, 'air'),
+    direct: hoursOf(byClass, 'direct'),
+    indirect: hoursOf(byClass, 'indirect'),
+    dewpoint: hoursOf(byClass, 'dewpoint'),
+    twostage: hoursOf(byClass, 'twostage'),
+    short: hoursOf(byClass, 'short'),
+    beyond: hoursOf(byClass, 'beyond'),
   };
+}
+
+function hoursOf(byClass: Uint16Array, hourClass: HourClass): number {
+  return byClass[hourClasses.indexOf(hourClass)] ?? 0;
 }
 
 function assertAddsUp(ledger: Ledger, judgedHours: number): void {

@@ -6,121 +6,149 @@
 import type { Brief } from '../brief/brief.ts';
 import { reportedOf } from '../brief/reported.ts';
 import { hundredths } from '../conventions.ts';
-import { isIndexLimit, temperatureHumidityIndex } from '../hour-classes/index-limit.ts';
-import { dewPointC, relativeHumidityPct, saturationPressurePa } from '../psychrometrics/moist-air.ts';
+import { isIndexLimit } from '../hour-classes/index-limit.ts';
+import {
+  type AirColumns,
+  type AirFigure,
+  deficitFigure,
+  dewPointFigure,
+  figureColumn,
+  humidityFigure,
+  indexFigure,
+} from './air-figures.ts';
+import { HOURS_PER_BLOCK, type HourColumns } from './hour-columns.ts';
 import type { ReportedHours } from './run-result.ts';
 
-/** What is supplied in a demand hour. */
-export interface SuppliedAir {
-  readonly supplyC: number;
-  /** kg/kg; null where it is not known (the air of a hall, water). */
-  readonly supplyRatio: number | null;
-  /** t_sup, °C; NaN under an index limit. */
-  readonly supplyAimC: number;
-  readonly loadFraction: number;
-  readonly pressurePa: number;
+/** What is supplied in some demand hours; a humidity ratio is NaN where it is not known (the air of a hall, water). */
+export type SuppliedHours = Pick<
+  HourColumns,
+  'count' | 'supplyC' | 'supplyRatio' | 'supplyAimC' | 'loadFraction' | 'pressurePa'
+>;
+
+/** Counts of a year so far. */
+export interface ReportCounts {
+  /** Adds hours, at most a block of them. */
+  readonly add: (hours: SuppliedHours) => void;
+  readonly ofYear: () => ReportedHours[];
 }
 
-interface AirState {
-  readonly tempC: number;
-  readonly humidityRatio: number;
-  readonly pressurePa: number;
-}
-
-/** One thing to report: whether an hour counts, by the air of the supply and of the room. */
+/** One thing to report: hours in which a figure of the supply or of the room lies under, or over, a limit. */
 interface Report {
   readonly what: string;
   /** null: this program cannot tell. */
-  readonly counts: ((air: { supply: AirState; room: AirState }) => boolean) | null;
+  readonly test: Test | null;
 }
 
-const PA_PER_KPA = 1000;
-/** Above any supply; a dew point is never answered above the dry bulb that is given. */
-const HOTTER_THAN_ANY_SUPPLY_C = 150;
+interface Test {
+  readonly figure: AirFigure;
+  readonly of: 'supply' | 'room';
+  readonly side: 'under' | 'over';
+  readonly limit: number;
+}
 
-/** @param hours asked for only when there is something to report */
-export function tallyReported(brief: Brief, hours: () => Iterable<SuppliedAir>): ReportedHours[] {
+/** Ten times what tabulated saturation pressure can put a figure off, hundredths. */
+const UNDECIDED_HUNDREDTHS = 0.1;
+
+/** Where the air of a block of hours is put together. */
+const airColumns = (): AirColumns => ({
+  count: 0,
+  tempC: new Float64Array(HOURS_PER_BLOCK),
+  humidityRatio: new Float64Array(HOURS_PER_BLOCK),
+  pressurePa: new Float64Array(HOURS_PER_BLOCK),
+});
+const airs = { supply: airColumns(), room: airColumns() };
+
+/** Begins a year. @returns null when the brief has nothing to report */
+export function startReports(brief: Brief): ReportCounts | null {
   const reports = [...lowerLimits(brief), ...brief.reported.flatMap(namedReports)];
-  if (reports.length === 0) return [];
-  const airs = [...hours()].map((each) => airOf(each, brief));
-  return reports.map(({ what, counts }) => ({
-    what,
-    hours: counts === null || airs.includes(null) ? null : airs.filter((air) => air !== null && counts(air)).length,
-  }));
+  if (reports.length === 0) return null;
+  const counts = reports.map(() => 0);
+  let allKnown = true;
+  return {
+    add: (hours) => {
+      if (allKnown) allKnown = fillAirs(brief, hours);
+      if (!allKnown) return;
+      for (const [nth, { test }] of reports.entries())
+        if (test !== null) counts[nth] = (counts[nth] ?? 0) + count(test);
+    },
+    ofYear: () =>
+      reports.map(({ what, test }, nth) => ({ what, hours: test === null || !allKnown ? null : (counts[nth] ?? 0) })),
+  };
 }
 
-function airOf(hour: SuppliedAir, brief: Brief): { supply: AirState; room: AirState } | null {
-  if (hour.supplyRatio === null) return null;
-  const { pressurePa, supplyC, supplyAimC, supplyRatio, loadFraction } = hour;
-  const tempC = isIndexLimit(brief.limit) ? supplyC : Math.max(supplyC, supplyAimC);
-  const supply = { tempC, humidityRatio: supplyRatio, pressurePa };
-  const room = {
-    ...supply,
-    tempC: tempC + brief.dTroomK * loadFraction,
-    humidityRatio: supplyRatio + brief.dwRoomKgKg,
-  };
-  return { supply, room };
+/** @returns whether the moisture of every supply is known */
+function fillAirs(brief: Brief, hours: SuppliedHours): boolean {
+  const { supply, room } = airs;
+  const asItEnters = isIndexLimit(brief.limit);
+  const { dTroomK, dwRoomKgKg } = brief;
+  for (let at = 0; at < hours.count; at++) {
+    const ratio = hours.supplyRatio[at] ?? Number.NaN;
+    if (Number.isNaN(ratio)) return false;
+    const suppliedC = hours.supplyC[at] ?? Number.NaN;
+    const tempC = asItEnters ? suppliedC : Math.max(suppliedC, hours.supplyAimC[at] ?? Number.NaN);
+    const pressurePa = hours.pressurePa[at] ?? Number.NaN;
+    supply.tempC[at] = tempC;
+    supply.humidityRatio[at] = ratio;
+    supply.pressurePa[at] = pressurePa;
+    room.tempC[at] = tempC + dTroomK * (hours.loadFraction[at] ?? Number.NaN);
+    room.humidityRatio[at] = ratio + dwRoomKgKg;
+    room.pressurePa[at] = pressurePa;
+  }
+  supply.count = hours.count;
+  room.count = hours.count;
+  return true;
+}
+
+/** Hours of the block that pass a test: by the figure from the table, by the formula where that leaves it open. */
+function count({ figure, of, side, limit }: Test): number {
+  const air = airs[of];
+  figure.fill(air);
+  const isUnder = side === 'under';
+  const limitHundredths = hundredths(limit);
+  // What rounds to less than the limit, or to more.
+  const edge = isUnder ? limitHundredths - 0.5 : limitHundredths + 0.5;
+  let passed = 0;
+  for (let at = 0; at < air.count; at++) {
+    const above = 100 * (figureColumn[at] ?? 0) - edge;
+    if (Math.abs(above) > UNDECIDED_HUNDREDTHS) passed += above < 0 === isUnder ? 1 : 0;
+    else {
+      const found = hundredths(figure.ofHour(air, at));
+      passed += (isUnder ? found < limitHundredths : found > limitHundredths) ? 1 : 0;
+    }
+  }
+  return passed;
 }
 
 function lowerLimits({ lowerLimits: { roomRhPct, supplyRhPct, supplyDewPointC } }: Brief): Report[] {
-  const under = (found: number, limit: number): boolean => hundredths(found) < hundredths(limit);
+  const under = (limit: number | undefined, what: string, test: Pick<Test, 'figure' | 'of'>): Report[] =>
+    limit === undefined ? [] : [{ what, test: { ...test, side: 'under', limit } }];
   return [
-    ...(roomRhPct === undefined
-      ? []
-      : [
-          {
-            what: `room under ${roomRhPct} % relative humidity`,
-            counts: ({ room }: { room: AirState }) => under(humidityPct(room), roomRhPct),
-          },
-        ]),
-    ...(supplyRhPct === undefined
-      ? []
-      : [
-          {
-            what: `supply under ${supplyRhPct} % relative humidity`,
-            counts: ({ supply }: { supply: AirState }) => under(humidityPct(supply), supplyRhPct),
-          },
-        ]),
-    ...(supplyDewPointC === undefined
-      ? []
-      : [
-          {
-            what: `supply under a dew point of ${supplyDewPointC} °C`,
-            counts: ({ supply }: { supply: AirState }) =>
-              under(dewPointC(HOTTER_THAN_ANY_SUPPLY_C, supply.humidityRatio, supply.pressurePa), supplyDewPointC),
-          },
-        ]),
+    ...under(roomRhPct, `room under ${roomRhPct} % relative humidity`, { figure: humidityFigure, of: 'room' }),
+    ...under(supplyRhPct, `supply under ${supplyRhPct} % relative humidity`, { figure: humidityFigure, of: 'supply' }),
+    ...under(supplyDewPointC, `supply under a dew point of ${supplyDewPointC} °C`, {
+      figure: dewPointFigure,
+      of: 'supply',
+    }),
   ];
 }
 
 /** The texts of the presets; of another this program says that it is not counted. */
 function namedReports(text: string): Report[] {
   const asked = reportedOf(text);
-  if (asked.kind === 'other') return [{ what: text, counts: null }];
+  if (asked.kind === 'other') return [{ what: text, test: null }];
   if (asked.kind === 'thi') {
-    return [{ what: text, counts: ({ room }) => hundredths(thiOf(room)) > hundredths(asked.over) }];
+    return [{ what: text, test: { figure: indexFigure, of: 'room', side: 'over', limit: asked.over } }];
   }
-  const { belowKpa: least, aboveKpa: most } = asked;
+  const { belowKpa, aboveKpa } = asked;
+  const deficit = { figure: deficitFigure, of: 'room' } as const;
   return [
     {
-      what: `vapour pressure deficit below ${least} kPa`,
-      counts: ({ room }) => hundredths(deficitKPa(room)) < hundredths(least),
+      what: `vapour pressure deficit below ${belowKpa} kPa`,
+      test: { ...deficit, side: 'under', limit: belowKpa },
     },
     {
-      what: `vapour pressure deficit above ${most} kPa`,
-      counts: ({ room }) => hundredths(deficitKPa(room)) > hundredths(most),
+      what: `vapour pressure deficit above ${aboveKpa} kPa`,
+      test: { ...deficit, side: 'over', limit: aboveKpa },
     },
   ];
-}
-
-function humidityPct({ tempC, humidityRatio, pressurePa }: AirState): number {
-  return relativeHumidityPct(tempC, humidityRatio, pressurePa);
-}
-
-function thiOf(air: AirState): number {
-  return temperatureHumidityIndex(air.tempC, humidityPct(air));
-}
-
-function deficitKPa(air: AirState): number {
-  return (saturationPressurePa(air.tempC) * Math.max(0, 1 - humidityPct(air) / 100)) / PA_PER_KPA;
 }

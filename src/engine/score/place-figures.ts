@@ -84,18 +84,20 @@ function chooseRuns<Run extends PlaceRun>(usable: readonly Run[], actual: readon
 
 /** Each raw figure is the median over the runs, the worst year's the least. */
 function medianComponents(runs: readonly PlaceRun[]): RawComponents {
-  const raws = (component: ScoreComponent): number[] =>
-    runs.flatMap(({ result }) => result.parts.find((part) => part.component === component)?.raw ?? []);
-  const worst = raws('worst-year');
+  const worst = rawsOf(runs, 'worst-year');
   return {
-    served: median(raws('served')),
-    severity: median(raws('severity')),
-    spell: median(raws('spell')),
-    damp: median(raws('damp')),
-    water: median(raws('water')),
-    electricity: median(raws('electricity')),
+    served: median(rawsOf(runs, 'served')),
+    severity: median(rawsOf(runs, 'severity')),
+    spell: median(rawsOf(runs, 'spell')),
+    damp: median(rawsOf(runs, 'damp')),
+    water: median(rawsOf(runs, 'water')),
+    electricity: median(rawsOf(runs, 'electricity')),
     'worst-year': worst.length === 0 ? null : Math.min(...worst),
   };
+}
+
+function rawsOf(runs: readonly PlaceRun[], component: ScoreComponent): number[] {
+  return runs.flatMap(({ result }) => result.parts.find((part) => part.component === component)?.raw ?? []);
 }
 
 /** The middle value, the mean of the two in the middle of an even number; null of none. */
@@ -126,8 +128,16 @@ function unusableNote(all: readonly PlaceRun[]): string {
 }
 
 function nearestRun<Run extends PlaceRun>(runs: readonly Run[], scoreExact: number | null): Run | null {
-  const distance = ({ result }: PlaceRun): number => Math.abs((result.scoreExact ?? 0) - (scoreExact ?? 0));
-  return runs.reduce<Run | null>((best, run) => (best === null || distance(run) <= distance(best) ? run : best), null);
+  let nearest: Run | null = null;
+  let least = Number.POSITIVE_INFINITY;
+  for (const run of runs) {
+    const distance = Math.abs((run.result.scoreExact ?? 0) - (scoreExact ?? 0));
+    // Of equals the last.
+    if (distance > least) continue;
+    nearest = run;
+    least = distance;
+  }
+  return nearest;
 }
 
 function verdictOver(runs: readonly PlaceRun[]): Verdict | null {

@@ -43,13 +43,9 @@ const { litresByMonth, litresByDay } = now;
  * @param monthOf month, 1 to 12, of every slot of the year
  */
 export function addPlant(monthOf: Uint8Array): void {
-  addElectricity();
-  addWater(monthOf);
-}
-
-function addElectricity(): void {
   const { count } = block;
   let { coolingKwh, kwh, referenceKwh, peakKw, referencePeakKw, backUpKw } = now;
+  let { evaporatedLitres, makeUpLitres, peakHourLitres } = now;
   for (let at = 0; at < count; at++) {
     const drawnKw = drawn[at] ?? 0;
     const referenceKw = reference[at] ?? 0;
@@ -60,19 +56,6 @@ function addElectricity(): void {
     if (drawnKw > peakKw) peakKw = drawnKw;
     if (referenceKw > referencePeakKw) referencePeakKw = referenceKw;
     if (leftKw > backUpKw) backUpKw = leftKw;
-  }
-  now.coolingKwh = coolingKwh;
-  now.kwh = kwh;
-  now.referenceKwh = referenceKwh;
-  now.peakKw = peakKw;
-  now.referencePeakKw = referencePeakKw;
-  now.backUpKw = backUpKw;
-}
-
-function addWater(monthOf: Uint8Array): void {
-  const { count } = block;
-  let { evaporatedLitres, makeUpLitres, peakHourLitres } = now;
-  for (let at = 0; at < count; at++) {
     const litres = madeUp[at] ?? 0;
     if (litres === 0) continue;
     const slot = slots[at] ?? 0;
@@ -84,6 +67,12 @@ function addWater(monthOf: Uint8Array): void {
     litresByMonth[month] = (litresByMonth[month] ?? 0) + litres;
     litresByDay[day] = (litresByDay[day] ?? 0) + litres;
   }
+  now.coolingKwh = coolingKwh;
+  now.kwh = kwh;
+  now.referenceKwh = referenceKwh;
+  now.peakKw = peakKw;
+  now.referencePeakKw = referencePeakKw;
+  now.backUpKw = backUpKw;
   now.evaporatedLitres = evaporatedLitres;
   now.makeUpLitres = makeUpLitres;
   now.peakHourLitres = peakHourLitres;

@@ -10,9 +10,8 @@ import { hallRiseK } from '../../hour-classes/judge-return-air-hour.ts';
 import { gainsEnough } from '../../hour-classes/short-from.ts';
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
-import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
-import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
+import { fillAirPlant } from './fill-air-plant.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const DRY = hourClasses.indexOf('air');
@@ -28,7 +27,10 @@ export function judgeHallHours(brief: Brief, hours: HourColumns): void {
   hours.supplyRatio.fill(Number.NaN, 0, hours.count);
   judgeDry(brief, hours);
   if (brief.stages.includes('indirect')) judgeWet(brief, hours);
-  hallPlant(brief, hours);
+  // The return-air fan figure, wet or dry, in the plant and in the reference.
+  const fan = brief.fanWPerLs.returnAir;
+  const fanWPerLs = new Float64Array(runningStages.length).fill(fan);
+  fillAirPlant(brief, { riseK: hallRiseK(brief), fanWPerLs, referenceFanWPerLs: fan }, hours);
 }
 
 /** What the dry exchanger supplies, t_ret - e_x (t_ret - t), not below t_sup. */
@@ -84,27 +86,5 @@ function judgeWet(brief: Brief, hours: HourColumns): void {
     hours.evaporatedKgPerKg[at] = Math.max(0, secondaryWaterKgPerKg(returnC - suppliedC, k));
     hours.carriedShare[at] = met ? 1 : withinShare((returnC - suppliedC) / (returnC - aimC));
     hours.waterC[at] = wetC;
-  }
-}
-
-/** The return-air fan figure, wet or dry, in the plant and in the reference. */
-function hallPlant(brief: Brief, hours: HourColumns): void {
-  const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * hallRiseK(brief));
-  const { cop, economy } = brief.reference;
-  const fan = brief.fanWPerLs.returnAir;
-  for (let at = 0; at < hours.count; at++) {
-    const load = hours.loadFraction[at] ?? 0;
-    const carried = hours.carriedShare[at] ?? 0;
-    const fanKw = fan * (airflowKgPerS * (hours.volumeM3PerKg[at] ?? 0));
-    const evaporated = airflowKgPerS * (hours.evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
-    const pumpKw = hours.running[at] === INDIRECT ? brief.pumpKwPerKw * load : 0;
-    const backUpKw = load * (1 - carried);
-    const rests = economy && hours.airMeets[at] === 1;
-    hours.evaporatedLitres[at] = evaporated;
-    hours.makeUpLitres[at] = evaporated + evaporated / (brief.cycles - 1);
-    hours.coolingKwh[at] = load * carried;
-    hours.kwh[at] = fanKw + pumpKw + backUpKw / cop;
-    hours.referenceKwh[at] = fanKw + (rests ? 0 : load / cop);
-    hours.backUpKw[at] = backUpKw;
   }
 }

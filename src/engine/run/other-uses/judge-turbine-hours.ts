@@ -8,12 +8,12 @@ import { withinShare } from '../../hour-classes/demand-hour.ts';
 import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { turbineLimit } from '../../hour-classes/judge-turbine-hour.ts';
 import { gainsEnough } from '../../hour-classes/short-from.ts';
-import { relativeHumidityPct } from '../../psychrometrics/moist-air.ts';
 import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { humidityRatioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
 import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
 import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
 import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
+import { mayStart } from './may-start.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const BY_AIR = hourClasses.indexOf('air');
@@ -83,17 +83,6 @@ function judgeWetted(brief: Brief, hours: HourColumns): void {
     hours.share[at] = withinShare((tempC - inletC) / fullFallK);
     hours.waterC[at] = wetC;
   }
-}
-
-/** Start temperature and the ceiling of outdoor humidity (method 4), as `outdoorForWetting`. */
-function mayStart(brief: Brief, hours: HourColumns, at: number): boolean {
-  const tempC = hours.dryBulbC[at] ?? 0;
-  const { startRoomTempC, maxOutdoorRhPct } = brief;
-  const roomByAirC = tempC + brief.dTroomK * (hours.loadFraction[at] ?? 0);
-  if (startRoomTempC !== null && hundredths(roomByAirC) < hundredths(startRoomTempC)) return false;
-  if (maxOutdoorRhPct === null) return true;
-  const outdoorPct = relativeHumidityPct(tempC, hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
-  return hundredths(outdoorPct) <= hundredths(maxOutdoorRhPct);
 }
 
 function fillPlant(brief: Brief, hours: HourColumns): void {

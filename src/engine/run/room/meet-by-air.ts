@@ -70,8 +70,9 @@ export function meetByAir(plan: RoomPlan, wetBulbs: WetBulbs): void {
       aloneMet[at] = allAlone;
       continue;
     }
-    let wetC = bulbs[slot[at] ?? 0] ?? Number.NaN;
-    if (Number.isNaN(wetC)) wetC = findWetBulb(wetBulbs, slot[at] ?? 0, tempC, ratio, pressure);
+    const from = slot[at] ?? 0;
+    if (Number.isNaN(bulbs[from] ?? 0)) findWetBulb(wetBulbs, from, tempC, ratio, pressure);
+    const wetC = bulbs[from] ?? 0;
     const allowed =
       !frozen &&
       // So far over the cut-in that rounding tells nothing.

@@ -19,6 +19,11 @@ export const CLASS_OF_STAGE = Uint8Array.from(runningStages, (stage) =>
   stage === null || stage === 'tower' ? 0 : hourClasses.indexOf(stage),
 );
 
+/** Whether a stage, by its position, wets the supply itself. */
+export function isMoist(stage: number): boolean {
+  return stage === DIRECT || stage === TWO_STAGE;
+}
+
 export interface RoomPlan {
   readonly freezeHundredths: number;
   readonly cutInHundredths: number;
@@ -38,8 +43,6 @@ export interface RoomPlan {
   readonly stages: readonly number[];
   /** Places in `stages` in the order in which the lowest supply is looked for: those that add no moisture, two-stage, direct. */
   readonly dryFirst: readonly number[];
-  /** How many add no moisture. */
-  readonly dryStages: number;
   /** All of them and air, as bits. */
   readonly allAlone: number;
   /** Fan rise, K per m³ of air and kg of dry air, and fan electricity, kWh per m³/kg of the hour: by position in `runningStages`. */
@@ -74,7 +77,7 @@ function makePlan(brief: Brief): RoomPlan {
   const stages = brief.stages.map(positionOf);
   const placesOf = (isAsked: (stage: number) => boolean) =>
     stages.flatMap((stage, nth) => (isAsked(stage) ? [nth] : []));
-  const dry = placesOf((stage) => stage !== DIRECT && stage !== TWO_STAGE);
+  const dry = placesOf((stage) => !isMoist(stage));
   const fans = Float64Array.of(0, fan.air, fan.direct, fan.indirect, fan.dewpoint, fan.twostage, 0);
   const airflowKgPerS = 1 / (DRY_AIR_KJ_PER_KG_K * brief.dTroomK);
   return {
@@ -92,7 +95,6 @@ function makePlan(brief: Brief): RoomPlan {
     onOff: brief.control === 'on-off',
     stages,
     dryFirst: [...dry, ...placesOf((stage) => stage === TWO_STAGE), ...placesOf((stage) => stage === DIRECT)],
-    dryStages: dry.length,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),
     riseKPerVolume: fans.map((wattPerLs) => fanRiseK(wattPerLs, 1)),
     fanKwhPerVolume: fans.map((wattPerLs) => wattPerLs * airflowKgPerS),

@@ -29,16 +29,18 @@ function noneYet(slots: number): WetBulbs {
   return { wetBulbC: none(), secondWetBulbC: none(), effIndirect: Number.NaN };
 }
 
-/** Computes the wet bulb of a slot, °C, and keeps it. */
+/**
+ * Computes the wet bulb of a slot, °C, and keeps it. It answers nothing, so that whoever asks reads it where all others stand: a number
+ * that might come from a call would be put into an object at every hour.
+ */
 export function findWetBulb(
   { wetBulbC: kept }: WetBulbs,
   slot: number,
   tempC: number,
   ratio: number,
   pressurePa: number,
-) {
+): void {
   kept[slot] = wetBulbC(tempC, ratio, pressurePa);
-  return kept[slot] ?? Number.NaN;
 }
 
 /** The same of its air cooled to `betweenC` by an indirect stage at full effect, its moisture kept. */
@@ -48,7 +50,6 @@ export function findSecondWetBulb(
   betweenC: number,
   ratio: number,
   pressurePa: number,
-): number {
+): void {
   kept[slot] = wetBulbC(betweenC, ratio, pressurePa);
-  return kept[slot] ?? Number.NaN;
 }
