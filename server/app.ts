@@ -13,6 +13,7 @@ import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
 import { methodRoutes } from './features/method/routes.ts';
 import { placesRoutes } from './features/places/routes.ts';
+import { figuresOfSites } from './features/runs/figures-of-sites.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
 import { queueSiteRuns } from './features/runs/queue-site-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
@@ -96,7 +97,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   });
   weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
-  sitesRoutes(router, deps, { relief, queueSiteRuns });
+  sitesRoutes(router, deps, { relief, queueSiteRuns, figuresOfSites: (of) => figuresOfSites(deps.db, of) });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });
   runsRoutes(router, deps, {
     ...{ threads, yearThread, readDraft, relief },

@@ -59,6 +59,10 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('../features/sites/site-page.tsx')).SitePage }),
               },
               {
+                path: paths.compare.pattern,
+                lazy: async () => ({ Component: (await import('./pages/compare/compare-page.tsx')).ComparePage }),
+              },
+              {
                 path: paths.weather.pattern,
                 lazy: async () => ({
                   Component: (await import('../features/weather/weather-library-page.tsx')).WeatherLibraryPage,

@@ -70,6 +70,7 @@ export const endpoints = {
   getStationPlace: runs.getStationPlace,
   getRunHours: hours.getRunHours,
   rankPlaces: ranking.rankPlaces,
+  getRun: runs.getRun,
   listRunHours: hourList.listRunHours,
   exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,

@@ -148,6 +148,55 @@ export const YearlyCarbon = z.object({
   source: z.string(),
 });
 
+/** A run as it is shown: its ledger and what follows from it, with the score that stands beside it. */
+export const ShownRun = z.object({
+  runId: z.uuid(),
+  ledger: Ledger,
+  verdict: Verdict,
+  tolerances: z.array(ToleranceAnswer),
+  gates: z.array(GateAnswer),
+  score: z.nullable(z.int()),
+  scoreNote: z.nullable(z.string()),
+  scoreExact: z.nullable(z.number()),
+  geometricMean: z.nullable(z.number()),
+  words: z.nullable(z.string()),
+  parts: z.array(ScorePart),
+  worstSpell: z.nullable(
+    z.object({
+      hours: z.int(),
+      start: z.string(),
+      end: z.string(),
+      severityKh: z.number(),
+      worstK: z.number(),
+      cutAtJoint: z.boolean(),
+    }),
+  ),
+  severityKh: z.number(),
+  /** Per kW of design load. */
+  water: z.object({
+    makeUpLitres: z.number(),
+    litresPerKwh: z.nullable(z.number()),
+    peakDayLitres: z.number(),
+    peakDay: z.nullable(z.string()),
+  }),
+  /** null: not applicable, as for turbine inlets. */
+  electricity: z.nullable(
+    z.object({
+      kwh: z.number(),
+      referenceKwh: z.number(),
+      savedPct: z.nullable(z.number()),
+      peakKw: z.number(),
+      referencePeakKw: z.number(),
+    }),
+  ),
+  /** Of a year, per kW of design load; null with the reason in `moneyNote`. */
+  money: z.nullable(YearlyMoney),
+  moneyNote: z.nullable(z.string()),
+  carbon: z.nullable(YearlyCarbon),
+  cautions: z.array(z.string()),
+});
+export type ShownRun = z.infer<typeof ShownRun>;
+
 /** A site as a place: the weather is its station's, moved to its height where both heights are known. */
 export const SiteOfPlace = z.object({
   id: z.uuid(),
@@ -184,56 +233,11 @@ export const Place = z.object({
   brief: BriefBasis,
   /** The years that the figures rest on, and which of them the ledger and the year cloth show. */
   years: z.array(PlaceYear),
+  /** Every year that was judged, newest file first, whether or not the figures rest on it. */
+  judgedYears: z.array(z.extend(PlaceYear, { name: z.nullable(z.string()), usable: z.boolean() })),
   /** Years of other climates, newest first. */
   derived: z.array(DerivedPlaceYear),
-  shown: z.nullable(
-    z.object({
-      runId: z.uuid(),
-      ledger: Ledger,
-      verdict: Verdict,
-      tolerances: z.array(ToleranceAnswer),
-      gates: z.array(GateAnswer),
-      score: z.nullable(z.int()),
-      scoreNote: z.nullable(z.string()),
-      scoreExact: z.nullable(z.number()),
-      geometricMean: z.nullable(z.number()),
-      words: z.nullable(z.string()),
-      parts: z.array(ScorePart),
-      worstSpell: z.nullable(
-        z.object({
-          hours: z.int(),
-          start: z.string(),
-          end: z.string(),
-          severityKh: z.number(),
-          worstK: z.number(),
-          cutAtJoint: z.boolean(),
-        }),
-      ),
-      severityKh: z.number(),
-      /** Per kW of design load. */
-      water: z.object({
-        makeUpLitres: z.number(),
-        litresPerKwh: z.nullable(z.number()),
-        peakDayLitres: z.number(),
-        peakDay: z.nullable(z.string()),
-      }),
-      /** null: not applicable, as for turbine inlets. */
-      electricity: z.nullable(
-        z.object({
-          kwh: z.number(),
-          referenceKwh: z.number(),
-          savedPct: z.nullable(z.number()),
-          peakKw: z.number(),
-          referencePeakKw: z.number(),
-        }),
-      ),
-      /** Of a year, per kW of design load; null with the reason in `moneyNote`. */
-      money: z.nullable(YearlyMoney),
-      moneyNote: z.nullable(z.string()),
-      carbon: z.nullable(YearlyCarbon),
-      cautions: z.array(z.string()),
-    }),
-  ),
+  shown: z.nullable(ShownRun),
   grade: Grade,
   gradeColumns: z.array(GradeColumn),
 });
@@ -260,6 +264,37 @@ export const getStationPlace = endpoint({
   query: OfBrief,
   body: none,
   response: json(Place),
+  errors: [],
+  allow: 'runs.view',
+  limits: ordinary,
+});
+
+/** One run by itself, for comparing: the score and its parts are those of its own year. */
+export const RunRecord = z.object({
+  runId: z.uuid(),
+  station: z.object({ id: z.uuid(), name: z.string() }),
+  weatherFileId: z.uuid(),
+  fileName: z.string(),
+  kind: z.enum(['typical', 'actual', 'derived']),
+  year: z.nullable(z.int()),
+  heightM: z.number(),
+  heightAdjusted: z.boolean(),
+  brief: z.object({ name: z.string(), version: z.int() }),
+  methodVersion: z.string(),
+  shown: ShownRun,
+  /** Demand hours by supply temperature, ascending bins of 1 K without a gap. */
+  supplyCurve: z.array(z.object({ fromC: z.number(), hours: z.int() })),
+});
+export type RunRecord = z.infer<typeof RunRecord>;
+
+export const getRun = endpoint({
+  method: 'GET',
+  path: '/api/teams/:teamId/runs/:runId',
+  summary: 'One weather year judged by one brief version, with its own score and its supply temperatures.',
+  params: z.strictObject({ teamId: z.uuid(), runId: z.uuid() }),
+  query: z.strictObject({}),
+  body: none,
+  response: json(RunRecord),
   errors: [],
   allow: 'runs.view',
   limits: ordinary,

@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { empty, endpoint, json, none, ordinary } from './endpoint.ts';
+import { PlaceFigures } from './place-figures.ts';
 import { Reason } from './reason.ts';
 import { GateAnswer, ProgrammeParams } from './runs.ts';
 
@@ -102,7 +103,11 @@ const facts = {
 /** A station chosen by a person, or null for the default of the method. */
 const ChosenStation = z.nullable(z.strictObject({ id: z.uuid(), reason: z.nullable(Reason) }));
 
-export const siteSorts = ['letters', 'name', 'load', 'station', 'distance', 'height', 'flags'] as const;
+export const siteSorts = [
+  ...(['letters', 'name', 'load', 'station', 'distance', 'height', 'flags'] as const),
+  // By what the sites come to under a brief: these look at every run of it.
+  ...(['score', 'grade', 'verdict', 'water', 'saved'] as const),
+] as const;
 export const SiteSort = z.enum(siteSorts);
 export type SiteSort = z.infer<typeof SiteSort>;
 /** Narrowings of the table: a flag, or those that still wait for a person. */
@@ -111,8 +116,12 @@ export type SiteFilter = z.infer<typeof SiteFilter>;
 
 export const FilterCounts = z.record(SiteFilter, z.int());
 
+/** A site in the table with its figures under a brief of the programme; null while there is no brief. */
+export const ListedSite = z.extend(Site, { figures: z.nullable(PlaceFigures) });
+export type ListedSite = z.infer<typeof ListedSite>;
+
 export const SitePage = z.object({
-  items: z.array(Site),
+  items: z.array(ListedSite),
   total: z.int(),
   page: z.int(),
   pages: z.int(),
@@ -128,6 +137,8 @@ export const listSites = endpoint({
   params: ProgrammeParams,
   query: z.strictObject({
     text: z.optional(z.string().check(z.trim(), z.maxLength(100))),
+    /** Whose figures are shown and sorted by; left out: the brief that was saved last. */
+    brief: z.optional(z.uuid()),
     filter: z.optional(SiteFilter),
     stationId: z.optional(z.uuid()),
     importId: z.optional(z.uuid()),

@@ -48,6 +48,29 @@ export const paths = {
     to: (ids: { teamId: string; programmeId: string; siteId: string }, settling = false) =>
       `/teams/${ids.teamId}/programmes/${ids.programmeId}/sites/${ids.siteId}${settling ? '?settling=1' : ''}`,
   },
+  compare: {
+    pattern: 'programmes/:programmeId/compare',
+    /** Up to six places, or one place under several briefs; without any it asks for them. */
+    to: (
+      ids: { teamId: string; programmeId: string },
+      asked: {
+        places?: readonly { kind: 'station' | 'site'; id: string }[];
+        briefs?: readonly string[];
+        years?: readonly string[];
+      } = {},
+    ) => {
+      const search = new URLSearchParams();
+      const places = (asked.places ?? []).map(({ kind, id }) => `${kind}:${id}`);
+      for (const [name, values] of [
+        ['places', places],
+        ['briefs', asked.briefs ?? []],
+        ['years', asked.years ?? []],
+      ] as const)
+        if (values.length > 0) search.set(name, values.join(','));
+      const base = `/teams/${ids.teamId}/programmes/${ids.programmeId}/compare`;
+      return search.size > 0 ? `${base}?${search}` : base;
+    },
+  },
   weather: {
     pattern: 'weather',
     /** `asked` narrows the library: to a batch, a station, a status. */

@@ -93,6 +93,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getSitePlace: readersToo,
   listRunHours: readersToo,
   rankPlaces: readersToo,
+  getRun: readersToo,
   judgeRange: readersToo,
   findWhatWouldPass: readersToo,
   getRunHours: readersToo,

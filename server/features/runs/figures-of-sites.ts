@@ -3,7 +3,7 @@ import type { PlaceFigures } from '#contract/place-figures.ts';
 import { findProgrammeBrief } from '../briefs/brief-read-model.ts';
 import type { ResolvedSite } from '../sites/resolved-sites-read-model.ts';
 import { presentFigures } from './present-figures.ts';
-import { programmePlaces } from './programme-places.ts';
+import { sitesUnderBrief } from './programme-places.ts';
 
 /**
  * The figures of sites under a brief of their programme, by site, for tables of other features; without an id, under the brief that was
@@ -15,6 +15,6 @@ export async function figuresOfSites(
 ): Promise<ReadonlyMap<string, PlaceFigures>> {
   const brief = await findProgrammeBrief(db, key);
   if (brief === null) return new Map();
-  const { sites } = await programmePlaces(db, { ...key, brief });
+  const sites = await sitesUnderBrief(db, { ...key, brief });
   return new Map(sites.map(({ site, wire, grade }) => [site.id, presentFigures(wire, grade)]));
 }

@@ -99,8 +99,18 @@ type RunFacts = readonly [
  */
 export async function listRunsInShort(
   db: Knex,
-  asked: { teamId: string; briefVersionId: string; methodVersion: string },
+  {
+    weatherYearIds,
+    ...asked
+  }: {
+    teamId: string;
+    briefVersionId: string;
+    methodVersion: string;
+    /** Those of some years alone. */
+    weatherYearIds?: readonly string[];
+  },
 ): Promise<readonly RunInShort[]> {
+  const ofYears = weatherYearIds === undefined ? '' : 'and runs.weather_year_id = any(:yearIds::uuid[])';
   const { rows } = await db.raw<{ rows: { facts: RunFacts }[] }>(
     `select distinct on (runs.weather_year_id, runs.height_m, runs.adjusted_from_m) json_build_array(
        runs.id, runs.weather_year_id, runs.height_m, runs.adjusted_from_m, runs.usable, runs.months_short, runs.score,
@@ -108,8 +118,9 @@ export async function listRunsInShort(
        runs.met_hours, runs.litres_per_kwh, runs.saved_pct, runs.spell_hours, runs.severity_kh) as facts
      from runs
      where runs.team_id = :teamId and runs.brief_version_id = :briefVersionId and runs.method_version = :methodVersion
+       ${ofYears}
      order by runs.weather_year_id, runs.height_m, runs.adjusted_from_m, runs.made_at desc, runs.id`,
-    { ...asked },
+    { ...asked, ...(weatherYearIds === undefined ? {} : { yearIds: `{${weatherYearIds.join(',')}}` }) },
   );
   return rows.map(({ facts }) => runOf(facts));
 }

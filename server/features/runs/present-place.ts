@@ -1,12 +1,11 @@
-import type { BriefBasis, Place } from '#contract/runs.ts';
+import type { BriefBasis, Place, ShownRun } from '#contract/runs.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
 import { withSiteGates } from '#engine/score/site-gates.ts';
 import type { ResolvedSite } from '../sites/resolved-sites-read-model.ts';
-import { cautionsOf } from './cautions.ts';
 import type { HeightUsed } from './height-used.ts';
 import type { JudgedStation, JudgedYear } from './judge-station.ts';
-import { dayText, slotEndText, slotStartText } from './local-time-text.ts';
 import { presentDerivedYears } from './present-derived-years.ts';
+import { presentResult } from './present-result.ts';
 
 /** What makes a site of a station's weather. */
 export interface SiteOfStation {
@@ -39,6 +38,11 @@ export function presentPlace(
     invented: on.invented,
     brief: on.brief,
     years: restsOn.map(presentYear),
+    judgedYears: judged.map((each) => ({
+      ...presentYear(each),
+      name: each.weather.derivedFrom?.name ?? null,
+      usable: each.result.usable,
+    })),
     derived: presentDerivedYears(judged),
     shown: shown === null ? null : presentShown(place, shown, on.site?.gates ?? null),
     grade: grade.grade,
@@ -72,54 +76,8 @@ function presentShown(
   { station, figures, notes, scoreNote }: JudgedStation,
   { run, result, kind }: JudgedYear,
   siteGates: readonly GateAnswer[] | null,
-): NonNullable<Place['shown']> {
-  const { score } = figures;
-  return {
-    runId: run.id,
-    ledger: { ...result.ledger, classes: { ...result.ledger.classes } },
-    verdict: figures.verdict ?? result.verdict,
-    tolerances: [...result.tolerances],
-    gates: gatesWith(result.gates, siteGates),
-    score,
-    scoreNote,
-    scoreExact: score === null ? null : figures.scoreExact,
-    geometricMean: score === null ? null : figures.geometricMean,
-    words: figures.words,
-    parts: [...figures.parts],
-    worstSpell: presentSpell(run, result.worstSpell),
-    severityKh: result.severityKh,
-    water: {
-      makeUpLitres: result.water.makeUpLitres,
-      litresPerKwh: result.water.litresPerKwh,
-      peakDayLitres: result.water.peakDayLitres,
-      peakDay: result.water.peakDay === null ? null : dayText(run.clock, result.water.peakDay),
-    },
-    electricity: result.electricity === null ? null : { ...result.electricity },
-    money: result.money === null ? null : { ...result.money, notes: [...result.money.notes] },
-    moneyNote: result.moneyNote,
-    carbon: result.carbon,
-    cautions: cautionsOf({ kind, zone: station.zone, notes }),
-  };
-}
-
-/** What the weather decides, then what a person answered for the site. */
-function gatesWith(gates: readonly GateAnswer[], ofSite: readonly GateAnswer[] | null): GateAnswer[] {
-  if (ofSite === null) return [...gates];
-  const asked = new Set(ofSite.map(({ gate }) => gate));
-  return [...gates.filter(({ gate }) => !asked.has(gate)), ...ofSite];
-}
-
-function presentSpell(
-  { clock }: JudgedYear['run'],
-  spell: JudgedYear['result']['worstSpell'],
-): NonNullable<Place['shown']>['worstSpell'] {
-  if (spell === null) return null;
-  return {
-    hours: spell.hours,
-    start: slotStartText(clock, spell.startSlot),
-    end: slotEndText(clock, spell.endSlot),
-    severityKh: spell.severityKh,
-    worstK: spell.worstK,
-    cutAtJoint: spell.cutAtJoint,
-  };
+): ShownRun {
+  const { verdict, ...scored } = figures;
+  const shown = { runId: run.id, clock: run.clock, result, zone: station.zone, kind, notes };
+  return presentResult(shown, { ...scored, scoreNote, verdict: verdict ?? result.verdict, siteGates });
 }

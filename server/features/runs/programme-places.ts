@@ -38,25 +38,14 @@ export interface PlacesUnderBrief {
 /** Every station of the team and every site of the programme under a brief version, from stored runs. */
 export async function programmePlaces(
   db: Knex,
-  {
-    teamId,
-    programmeId,
-    brief,
-    sites: resolved,
-  }: {
-    teamId: string;
-    programmeId: string;
-    brief: ProgrammeBrief;
-    /** Where the caller has them already. */
-    sites?: readonly ResolvedSite[];
-  },
+  { teamId, programmeId, brief }: { teamId: string; programmeId: string; brief: ProgrammeBrief },
 ): Promise<PlacesUnderBrief> {
   const { briefVersionId, body } = brief;
   const [stations, years, runs, sites] = await Promise.all([
     listStationPlaces(db, teamId),
     listAcceptedYears(db, teamId),
     listRunsInShort(db, { teamId, briefVersionId, methodVersion: METHOD_VERSION }),
-    resolved ?? sitesOfProgramme(db, { teamId, programmeId }),
+    sitesOfProgramme(db, { teamId, programmeId }),
   ]);
   const places = makeJudgedPlaces({ brief: body, stations, years, runs });
   const elevations = new Map(stations.map(({ id, elevationM }) => [id, elevationM]));
@@ -73,6 +62,23 @@ export async function programmePlaces(
   });
   const pending = [...seen].reduce((sum, judged) => sum + judged.pending, 0);
   return { stations: judgedStations, sites: judgedSites, pending };
+}
+
+/** Some sites under a brief version, without looking at the runs of other places. */
+export async function sitesUnderBrief(
+  db: Knex,
+  { teamId, brief, sites }: { teamId: string; brief: ProgrammeBrief; sites: readonly ResolvedSite[] },
+): Promise<readonly SiteUnderBrief[]> {
+  if (sites.length === 0) return [];
+  const { briefVersionId, body } = brief;
+  const [stations, all] = await Promise.all([listStationPlaces(db, teamId), listAcceptedYears(db, teamId)]);
+  const wanted = new Set(sites.map(({ station }) => station?.id));
+  const years = all.filter(({ stationId }) => wanted.has(stationId));
+  const weatherYearIds = years.map(({ weatherYearId }) => weatherYearId);
+  const asked = { teamId, briefVersionId, methodVersion: METHOD_VERSION, weatherYearIds };
+  const places = makeJudgedPlaces({ brief: body, stations, years, runs: await listRunsInShort(db, asked) });
+  const elevations = new Map(stations.map(({ id, elevationM }) => [id, elevationM]));
+  return sites.map((site) => judgeSite(site, { places, elevations, brief }));
 }
 
 /** Every property by name: thousands are graded at once, and spreading two objects into a third takes longer than the grading. */

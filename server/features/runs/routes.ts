@@ -6,7 +6,7 @@ import { getMap } from '#contract/programme-map.ts';
 import { rankPlaces as rankEndpoint } from '#contract/ranking.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
-import { getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getRun, getSitePlace, getStationPlace } from '#contract/runs.ts';
 import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
@@ -25,11 +25,13 @@ import { judgePlaceRange, whatWouldPass } from './place-doubts.ts';
 import { placeToJudge } from './place-to-judge.ts';
 import { presentMapSite, presentMapStation } from './present-map.ts';
 import { presentPlace } from './present-place.ts';
+import { presentRun } from './present-run.ts';
 import { makePreviewTurns } from './preview-turns.ts';
 import { programmePlaces } from './programme-places.ts';
 import { rankProgramme } from './rank-programme.ts';
 import { rescore, scoredUnder } from './rescore.ts';
 import { readRunHours } from './run-hours-read-model.ts';
+import { findRunRecord } from './run-record-read-model.ts';
 import type { RunsParts } from './runs-parts.ts';
 import { scoredStations } from './scored-stations.ts';
 import { listStationYears } from './station-years-read-model.ts';
@@ -149,6 +151,12 @@ export function runsRoutes(
   mount(router, deps, listHoursEndpoint, async ({ params, query }, { signal }) =>
     listRunHours({ db, yearThread, lines }, { ...params, ...query, signal }),
   );
+
+  mount(router, deps, getRun, async ({ params }) => {
+    const run = await findRunRecord(db, params);
+    if (run === null) throw new AppError('not_found', 'There is no such run in this team.');
+    return presentRun(run);
+  });
 
   mount(router, deps, getRunHours, async ({ params }) => {
     const body = await readRunHours(db, params);

@@ -1,9 +1,11 @@
 import type { Knex } from 'knex';
+import type { PlaceFigures } from '#contract/place-figures.ts';
 import type { Relief } from '#engine/weather-files/relief.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
+import type { ResolvedSite } from './resolved-sites-read-model.ts';
 import { elevationOf, groundAt } from './site-ground.ts';
 import { siteLetters } from './site-letters.ts';
 import { insertSite, takeSiteNumbers } from './site-store.ts';
@@ -12,6 +14,17 @@ export interface SiteParts {
   readonly relief: Relief;
   /** Queues the judging of years at the heights that the programme's sites have now. */
   queueSiteRuns(transaction: Knex.Transaction, programme: { teamId: string; programmeId: string }): Promise<void>;
+}
+
+/** What the table of sites shows of another feature. */
+export interface SiteTableParts {
+  /** Their figures under a brief of the programme, by site; empty while there is no brief. */
+  figuresOfSites(of: {
+    teamId: string;
+    programmeId: string;
+    briefId: string | undefined;
+    sites: readonly ResolvedSite[];
+  }): Promise<ReadonlyMap<string, PlaceFigures>>;
 }
 
 export interface SiteDeps extends SiteParts {

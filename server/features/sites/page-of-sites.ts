@@ -1,3 +1,4 @@
+import type { PlaceFigures } from '#contract/place-figures.ts';
 import type { SiteFilter, SiteSort } from '#contract/sites.ts';
 import type { ResolvedSite } from './resolved-sites-read-model.ts';
 
@@ -14,7 +15,20 @@ export interface SitePageAsked {
 
 type SortValue = string | number | null;
 
-const VALUE: Readonly<Record<Exclude<SiteSort, 'letters'>, (site: ResolvedSite) => SortValue>> = {
+/** What the sites come to under a brief, by site. */
+export type FiguresBySite = ReadonlyMap<string, PlaceFigures>;
+
+/** Sorts that look at figures. */
+export const FIGURE_SORTS: readonly SiteSort[] = ['score', 'grade', 'verdict', 'water', 'saved'];
+
+const VALUE: Readonly<
+  Record<Exclude<SiteSort, 'letters'>, (site: ResolvedSite, figures: PlaceFigures | undefined) => SortValue>
+> = {
+  score: (_site, figures) => figures?.score ?? null,
+  grade: (_site, figures) => figures?.grade ?? null,
+  verdict: (_site, figures) => figures?.verdict ?? null,
+  water: (_site, figures) => figures?.litresPerKwh ?? null,
+  saved: (_site, figures) => figures?.savedPct ?? null,
   name: ({ name }) => name,
   load: ({ designLoadKw }) => designLoadKw,
   station: ({ station }) => station?.name ?? null,
@@ -27,9 +41,10 @@ const VALUE: Readonly<Record<Exclude<SiteSort, 'letters'>, (site: ResolvedSite) 
 export function pageOfSites(
   sites: readonly ResolvedSite[],
   asked: SitePageAsked,
+  figures: FiguresBySite = new Map(),
 ): { items: readonly ResolvedSite[]; total: number; pages: number } {
   const left = sites.filter((site) => fits(site, asked));
-  const sorted = inOrder(left, asked);
+  const sorted = inOrder(left, asked, figures);
   const from = (asked.page - 1) * asked.limit;
   return {
     items: sorted.slice(from, from + asked.limit),
@@ -38,13 +53,17 @@ export function pageOfSites(
   };
 }
 
-function inOrder(sites: readonly ResolvedSite[], { sort, order }: SitePageAsked): readonly ResolvedSite[] {
+function inOrder(
+  sites: readonly ResolvedSite[],
+  { sort, order }: SitePageAsked,
+  figures: FiguresBySite,
+): readonly ResolvedSite[] {
   if (sort === 'letters') return order === 'asc' ? sites : sites.toReversed();
   const valueFor = VALUE[sort];
   const names = new Intl.Collator('en', { numeric: true });
   const direction = order === 'asc' ? 1 : -1;
   // Taken out once: a comparison of names costs, and each is compared a dozen times.
-  const keyed = sites.map((site) => ({ site, value: valueFor(site) }));
+  const keyed = sites.map((site) => ({ site, value: valueFor(site, figures.get(site.id)) }));
   keyed.sort((one, other) => {
     // What is not known comes last in either order.
     if (one.value === null || other.value === null) return Number(one.value === null) - Number(other.value === null);

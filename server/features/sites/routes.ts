@@ -28,12 +28,12 @@ import type { RequestContext } from '../../http/request-context.ts';
 import { programmeExists } from '../briefs/version-read-model.ts';
 import { changeSite } from './change-site.ts';
 import { addSiteImportRows, checkSiteImport, finishSiteImport, startSiteImport } from './import-sites.ts';
-import { makeSite, type SiteParts } from './make-site.ts';
-import { isOf, pageOfSites } from './page-of-sites.ts';
+import { makeSite, type SiteParts, type SiteTableParts } from './make-site.ts';
+import { FIGURE_SORTS, isOf, pageOfSites } from './page-of-sites.ts';
 import { presentImport, presentImportCheck, presentSite, presentSiteChange, presentWater } from './present-site.ts';
 import { rankCandidates } from './rank-candidates.ts';
 import { removeSites } from './remove-sites.ts';
-import { makeSiteResolver, sitesOfProgramme } from './resolved-sites-read-model.ts';
+import { makeSiteResolver, type ResolvedSite, sitesOfProgramme } from './resolved-sites-read-model.ts';
 import { setSiteDuty } from './set-site-duty.ts';
 import { groundAt } from './site-ground.ts';
 import { listSiteImportViews, listSiteNotes } from './site-import-read-model.ts';
@@ -55,7 +55,7 @@ interface SiteKey extends ProgrammeKey {
   readonly siteId: string;
 }
 
-export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts): void {
+export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts & SiteTableParts): void {
   const { db } = deps;
   const { relief } = parts;
   const act = (request: RequestContext) => ({
@@ -74,11 +74,16 @@ export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts): void 
   mount(router, deps, listSites, async ({ params, query }) => {
     await mustExist(params);
     const sites = await sitesOfProgramme(db, params);
-    const { items, ...page } = pageOfSites(sites, query);
+    const figuresUnder = (some: readonly ResolvedSite[]) =>
+      parts.figuresOfSites({ ...params, briefId: query.brief, sites: some });
+    // Figures of every site only where the order depends on them.
+    const all = FIGURE_SORTS.includes(query.sort) ? await figuresUnder(sites) : undefined;
+    const { items, ...page } = pageOfSites(sites, query, all);
+    const figures = all ?? (await figuresUnder(items));
     const filters = ['to settle', 'chosen', ...siteFlags] as const;
     const counts = Object.fromEntries(filters.map((name) => [name, sites.filter((site) => isOf(site, name)).length]));
     return {
-      items: items.map(presentSite),
+      items: items.map((site) => ({ ...presentSite(site), figures: figures.get(site.id) ?? null })),
       page: query.page,
       ...page,
       counts: { all: sites.length, filters: FilterCounts.parse(counts) },

@@ -127,6 +127,7 @@ export function fixturePlace(station: MapStation): Place {
         score,
       },
     ],
+    judgedYears: [],
     derived: [],
     shown: {
       runId: fixtureId(5),

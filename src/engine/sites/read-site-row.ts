@@ -22,7 +22,14 @@ export interface RowFault {
   readonly message: string;
 }
 
-const MOST_CHARACTERS: Readonly<Partial<Record<SiteColumn, number>>> = { name: 200, reason: 500, notes: 5000 };
+const MOST_CHARACTERS = [
+  ['name', 200],
+  ['reason', 500],
+  ['notes', 5000],
+] as const;
+/** Decimal degrees with a point, in which most tables are written: no need to look for letters and minutes in them. */
+const PLAIN_DEGREES = /^-?\d{1,2}(?:\.\d+)?$/;
+const UNITS = { m: /\s*m\.?$/i, kW: /\s*kW\.?$/i } as const;
 
 /**
  * Reads a row with every fault that it has.
@@ -35,12 +42,10 @@ export function readSiteRow(cells: SiteCells): { site: SiteOfRow | null; faults:
     return null;
   };
   const text = (column: SiteColumn): string => textOf(cells[column] ?? '');
-  for (const [column, most] of [
-    ['name', MOST_CHARACTERS.name ?? 0],
-    ['reason', 500],
-    ['notes', 5000],
-  ] as const)
-    if (text(column).length > most) tell(column, `This has ${text(column).length} characters; use ${most} or fewer.`);
+  for (const [column, most] of MOST_CHARACTERS) {
+    const { length } = text(column);
+    if (length > most) tell(column, `This has ${length} characters; use ${most} or fewer.`);
+  }
   if (text('name') === '') tell('name', 'The site has no name.');
   const position = positionOf(text, tell);
   const isRelief = /^(about|relief|approx)/i.test(text('elevation source'));
@@ -67,21 +72,24 @@ function positionOf(text: (column: SiteColumn) => string, tell: Tell): { latitud
     if (read.kind === 'position') return read.position;
     return tell('position', read.kind === 'fault' ? read.problem : `“${shortened(whole)}” is not a position.`);
   }
-  const mayBeSwapped = isAngle(latitude, 'longitude') && isAngle(longitude, 'latitude');
-  const hint = mayBeSwapped ? ' Are latitude and longitude swapped?' : '';
-  const north = angleOf(latitude, { axis: 'latitude', hint }, tell);
+  const north = angleOf(latitude, { axis: 'latitude', other: longitude }, tell);
   const east = angleOf(longitude, { axis: 'longitude' }, tell);
   return north === null || east === null ? null : { latitude: north, longitude: east };
 }
 
 function angleOf(
   written: string,
-  { axis, hint = '' }: { axis: 'latitude' | 'longitude'; hint?: string },
+  { axis, other = '' }: { axis: 'latitude' | 'longitude'; other?: string },
   tell: Tell,
 ): number | null {
   if (written === '') return tell(axis, `The ${axis} is missing.`);
+  // "-0" is the equator as much as "0".
+  const plain = PLAIN_DEGREES.test(written) ? Number(written) + 0 : Number.NaN;
+  if (Math.abs(plain) <= 90) return plain;
   const read = readAngle(written, axis);
-  return 'fault' in read ? tell(axis, `${read.fault}${hint}`) : read.angle.degrees;
+  if (!('fault' in read)) return read.angle.degrees;
+  const mayBeSwapped = isAngle(written, 'longitude') && isAngle(other, 'latitude');
+  return tell(axis, `${read.fault}${mayBeSwapped ? ' Are latitude and longitude swapped?' : ''}`);
 }
 
 function isAngle(written: string, axis: 'latitude' | 'longitude'): boolean {
@@ -91,14 +99,14 @@ function isAngle(written: string, axis: 'latitude' | 'longitude'): boolean {
 /** A number with at most its unit behind it; null when the cell is empty, or when what it says has been told as a fault. */
 function figureOf(
   written: string,
-  asked: { column: SiteColumn; unit: string; from: number; to: number },
+  asked: { column: SiteColumn; unit: keyof typeof UNITS; from: number; to: number },
   tell: Tell,
 ): number | null {
   if (written === '') return null;
   const { column, unit, from, to } = asked;
   const plain = written
     .replace('−', '-')
-    .replace(new RegExp(`\\s*${unit}\\.?$`, 'i'), '')
+    .replace(UNITS[unit], '')
     .replace(/(\d)\s(?=\d{3}\b)/g, '$1');
   if (/^[+-]?\d{1,3}(,\d{3})+$/.test(plain))
     return tell(
@@ -113,6 +121,7 @@ function figureOf(
 
 /** Without the guard of an exported cell, control characters and spaces at the ends. */
 function textOf(cell: string): string {
+  if (cell === '') return '';
   // biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is taken out; new lines and tabs become spaces below.
   const plain = cell.replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/g, '').trim();
   return withoutGuard(plain);

@@ -1,12 +1,11 @@
 /** What about a site and its station asks a person for a look. */
+import { AT_SEA_FROM_KM } from '../weather-files/relief.ts';
 
 export type SiteFlagName = 'far' | 'height' | 'no station' | 'station without years' | 'sea' | 'relief';
 
 /** Beyond these the grade is D whatever else holds (method 7.7). */
 const FAR_KM = 100;
 const HEIGHT_M = 300;
-/** As for stations: small islands and rounded positions lie nearer to land. */
-const AT_SEA_FROM_KM = 20;
 /** The relief has a point every 9 km. */
 const RELIEF_WITHIN_M = 300;
 

@@ -1,3 +1,6 @@
+/** A place further from land than this stands in the sea; buoys, platforms, small islands and rounded positions lie nearer. */
+export const AT_SEA_FROM_KM = 20;
+
 /** Distances from land, km, are told up to here. */
 export const FARTHEST_TOLD_KM = 40;
 

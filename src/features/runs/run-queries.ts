@@ -4,13 +4,17 @@ import type { AnswerOf } from '../../contract/endpoint.ts';
 import { type HourList, listRunHours } from '../../contract/hour-list.ts';
 import { findWhatWouldPass, judgeRange, type PlaceRange, type WhatWouldPass } from '../../contract/place-doubts.ts';
 import { getMap } from '../../contract/programme-map.ts';
+import { type Ranking, type RankingView, rankPlaces } from '../../contract/ranking.ts';
 import { getRunHours } from '../../contract/run-hours.ts';
-import { getSitePlace, getStationPlace, type Place } from '../../contract/runs.ts';
+import { getRun, getSitePlace, getStationPlace, type Place, type RunRecord } from '../../contract/runs.ts';
 import { call, callForBytes } from '../../lib/api-client.ts';
 import { apiKey, apiQuery } from '../../lib/api-query.ts';
 import type { PlaceRef } from '../../map/sheet-place.ts';
 import type { HourChoice } from './hour-choice.ts';
 import { ALL_MONTHS } from './map-layer.ts';
+
+/** Dozens of judgings: asked again only after a while, or under another draft. */
+const JUDGED_MS = 5 * 60_000;
 
 export interface ProgrammeIds {
   readonly teamId: string;
@@ -62,6 +66,29 @@ export function runHoursQuery(teamId: string, runId: string) {
   });
 }
 
+/** One run by itself; it never changes. */
+export function runQuery(teamId: string, runId: string) {
+  const input = { params: { teamId, runId }, query: {} };
+  return queryOptions<RunRecord>({
+    queryKey: apiKey(getRun, input),
+    queryFn: ({ signal }) => call(getRun, input, { signal }),
+    staleTime: Number.POSITIVE_INFINITY,
+  });
+}
+
+/** The places that are named in their order, and how sure it is; judged anew, so asked again only after a while. */
+export function rankingQuery(
+  { teamId, programmeId, briefId }: ProgrammeIds,
+  body: { view: RankingView; placeIds: string[] },
+) {
+  const input = { params: { teamId, programmeId }, query: ofBrief(briefId), body };
+  return queryOptions<Ranking>({
+    queryKey: [rankPlaces.path, teamId, programmeId, briefId, body.view, ...body.placeIds],
+    queryFn: ({ signal }) => call(rankPlaces, input, { signal }),
+    staleTime: JUDGED_MS,
+  });
+}
+
 /** Hours of a run one by one, with their weather, reason and line; they never change either. */
 export function hourListQuery(run: { teamId: string; runId: string }, { choice, page, limit }: HourPage) {
   const input = { params: run, query: { ...choice, page, limit } };
@@ -77,9 +104,6 @@ export interface HourPage {
   readonly page: number;
   readonly limit: number;
 }
-
-/** Dozens of judgings: asked again only after a while, or under another draft. */
-const JUDGED_MS = 5 * 60_000;
 
 /** What is asked of one place under the saved brief, or under a draft of it. */
 export interface PlaceAsked {

@@ -1,5 +1,6 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
+import { AT_SEA_FROM_KM } from '../../engine/weather-files/relief.ts';
 import { metres } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
 import { positionOfDraft } from './site-draft.ts';
@@ -7,7 +8,6 @@ import { groundQuery, type ProgrammeKey } from './site-queries.ts';
 import { exactPosition, heightDifference, kilometres } from './site-words.ts';
 
 const WAIT_MS = 350;
-const AT_SEA_FROM_KM = 20;
 
 interface PositionNoteProps {
   readonly programme: ProgrammeKey;

@@ -1,13 +1,9 @@
 import { useMutation } from '@tanstack/react-query';
-import { type FormEvent, useState } from 'react';
-import { removeSites, type Site } from '../../contract/sites.ts';
-import { errorSentence } from '../../lib/api-error.ts';
-import { problemsOfIssues } from '../../lib/form-problems.ts';
+import { useState } from 'react';
+import type { Site } from '../../contract/sites.ts';
 import { plural } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
-import { Dialog } from '../../ui/dialog.tsx';
-import { Notice } from '../../ui/notice.tsx';
-import { TextField } from '../../ui/text-field.tsx';
+import { ReasonDialog } from '../../ui/reason-dialog.tsx';
 import { type ProgrammeKey, useSiteActs } from './site-queries.ts';
 
 const MOST_AT_ONCE = 500;
@@ -22,48 +18,25 @@ interface RemoveDialogProps {
 /** Asks why sites are removed, and says what follows. */
 export function RemoveDialog({ programme, sites, onClose, onRemoved }: RemoveDialogProps) {
   const acts = useSiteActs(programme);
-  const [reason, setReason] = useState('');
-  const [problem, setProblem] = useState<string | undefined>();
   const siteIds = sites.map(({ id }) => id);
   const remove = useMutation({
-    mutationFn: () => acts.remove({ siteIds, reason: reason.trim() }),
+    mutationFn: (reason: string) => acts.remove({ siteIds, reason }),
     onSuccess: onRemoved,
   });
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
-    const parsed = removeSites.body.schema.safeParse({ siteIds, reason });
-    setProblem(parsed.success ? undefined : problemsOfIssues(parsed.error.issues).fields.reason);
-    if (parsed.success) remove.mutate();
-  };
   const what = sites.length === 1 ? `“${sites[0]?.name ?? ''}”` : plural(sites.length, 'site');
   return (
-    <Dialog isOpen onClose={onClose} title={`Remove ${what}`}>
-      <form noValidate onSubmit={submit} className="grid gap-4">
-        <p>
-          What is removed leaves the table and the map. Its letters are not given again, and what sheets say of it
-          stands.
-        </p>
-        <TextField
-          label="Reason"
-          value={reason}
-          onChange={setReason}
-          problem={problem}
-          hint="Kept in the audit trail for those who ask later."
-          autoFocus
-        />
-        {remove.isError ? (
-          <Notice tone="wrong" live>
-            {errorSentence(remove.error)}
-          </Notice>
-        ) : null}
-        <div className="flex justify-end gap-2">
-          <Button onClick={onClose}>Leave {sites.length === 1 ? 'it' : 'them'}</Button>
-          <Button type="submit" look="primary" busy={remove.isPending}>
-            Remove {plural(sites.length, 'site')}
-          </Button>
-        </div>
-      </form>
-    </Dialog>
+    <ReasonDialog
+      title={`Remove ${what}`}
+      hint="Kept in the audit trail for those who ask later."
+      leave={`Leave ${sites.length === 1 ? 'it' : 'them'}`}
+      act={`Remove ${plural(sites.length, 'site')}`}
+      isBusy={remove.isPending}
+      error={remove.error}
+      onClose={onClose}
+      onReason={(reason) => remove.mutate(reason)}
+    >
+      What is removed leaves the table and the map. Its letters are not given again, and what sheets say of it stands.
+    </ReasonDialog>
   );
 }
 

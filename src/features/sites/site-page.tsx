@@ -122,7 +122,10 @@ function Heading({
           </p>
         </div>
         <div className="no-print flex flex-wrap gap-2">
-          <Link className={buttonLook('plain')} to={paths.map.to(siteKey, site.id)}>
+          <Link
+            className={buttonLook('plain')}
+            to={`${paths.map.to(siteKey)}?${new URLSearchParams({ site: site.id })}`}
+          >
             Show on the map
           </Link>
           {mayChange ? <Button onClick={() => setRemoving(true)}>Remove</Button> : null}

@@ -118,6 +118,12 @@ function SiteRow({ programme, site, choice }: { programme: ProgrammeKey; site: S
             {site.name}
           </Link>
         </span>
+        {site.flags.length > 0 ? (
+          // On a phone the column of flags is out of sight until the table is scrolled.
+          <span aria-hidden="true" className="mt-1 block text-fine sm:hidden">
+            <SiteFlags {...site} />
+          </span>
+        ) : null}
       </th>
       {columns.map(({ label, isFigure, cell }) => (
         <td key={label} className={isFigure ? 'figure' : 'pl-3'}>

@@ -3,6 +3,9 @@ import { inTransaction } from '../../../server/db/in-transaction.ts';
 import { upsertImportRows } from '../../../server/features/sites/site-import-store.ts';
 import type { SiteImportCheck } from '../../../src/contract/site-imports.ts';
 import type { SitePage } from '../../../src/contract/sites.ts';
+import { guessSiteColumns } from '../../../src/engine/sites/site-columns.ts';
+import { readTableFile } from '../../../src/features/sites/read-table-file.ts';
+import { readTable } from '../../../src/features/sites/table-draft.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { insertStationsWithYears } from '../../support/stations-with-years.ts';
 
@@ -144,6 +147,36 @@ describe('an import of sites', () => {
     expect(text).toContain("'=cmd|calc,40,9,");
     expect(text).toContain('"🏫 École ""№5""",42,9,');
     expect(text).toContain('East,Same valley,East,');
+  });
+
+  test('makes of its own table the same sites again', async () => {
+    await planner.agent
+      .post(`${programme}/sites`)
+      .send({ name: "'=quoted", latitude: -0.1, longitude: 33, notes: '-x' });
+    const text = await exported();
+    const table = await readTableFile(new File([text], 'sites.csv'));
+    const { rows, faults } = readTable(table, guessSiteColumns(table.heads));
+    expect(faults).toEqual([]);
+    const { rows: made } = await road.database.ownerDb.raw<{ rows: { id: string }[] }>(
+      `insert into programmes (team_id, name) values (?, 'Again') returning id`,
+      [team.teamId],
+    );
+    const again = { ...team, programmeId: made[0]?.id ?? '' };
+    const before = programme;
+    programme = `/api/teams/${team.teamId}/programmes/${again.programmeId}`;
+    const path = await send(
+      'Same.csv',
+      rows.map(({ cells }) => cells),
+    );
+    await planner.agent.post(`${path}/finish`).send({ duplicates: 'keep' }).expect(200);
+    const [here, textHere] = [await list(), await exported()];
+    programme = before;
+    const facts = ({ items }: SitePage) =>
+      items.map(({ name, latitude, longitude, elevationM, designLoadKw, station, flags }) => ({
+        ...{ name, latitude, longitude, elevationM, designLoadKw, station, flags },
+      }));
+    expect(facts(here)).toEqual(facts(await list()));
+    expect(textHere).toBe(text);
   });
 
   test('is undone whole, and only once', async () => {

@@ -1,10 +1,8 @@
 import { type FindingList, whole } from '../finding-list.ts';
-import { FARTHEST_TOLD_KM } from '../relief.ts';
+import { AT_SEA_FROM_KM, FARTHEST_TOLD_KM } from '../relief.ts';
 import type { DeclaredStation } from '../weather-file-reading.ts';
 import { isOff, type QualityOptions } from './quality-options.ts';
 
-/** Buoys, platforms and small islands lie nearer to land, and so does what a rounded position puts into the water. */
-const AT_SEA_FROM_KM = 20;
 const HEIGHT_WITHIN_M = 300;
 
 /**
