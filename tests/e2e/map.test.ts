@@ -206,6 +206,46 @@ test('the keyboard walks the page in its written order, chooses on the map, and 
   expect(unmet).toBe(Number(met.replace(',', '')) - Number(demand.replace(',', '')));
 });
 
+test('the score between stations is drawn with its error, and any position has an estimate with its basis', async () => {
+  await enterAs('viewer', DESK);
+  await legend()
+    .locator('..')
+    .getByText(/Leave-one-out error: \d+(\.\d)? points\./)
+    .waitFor(SOON);
+  await mapIsDrawn(page);
+  const sheet = page.locator('.maplibregl-canvas');
+  const withSurface = await sheet.screenshot();
+  await page.getByLabel('Between stations').click();
+  await expect.poll(() => asked('surface')).toBe('off');
+  await mapIsDrawn(page);
+  expect((await sheet.screenshot()).equals(withSurface)).toBe(false);
+
+  const box = page.getByRole('combobox', { name: 'Find a place or a position' });
+  await box.fill('-115.15, 36.08');
+  await page.getByText('Latitude comes first; are the two swapped?').waitFor();
+  await page.getByRole('option', { name: /36\.08° N, 115\.15° W/ }).waitFor();
+  await box.fill("28°06'S 27°06'E");
+  await page.getByRole('option', { name: /28\.10° S, 27\.10° E/ }).waitFor();
+  await page.keyboard.press('ArrowDown');
+  await page.keyboard.press('Enter');
+  const point = page.getByRole('region', { name: 'Clicked point' });
+  await point.getByRole('heading', { name: /28\.10° S, 27\.10° E/ }).waitFor();
+  const basis = point.getByRole('table', { name: /Stations of the estimate/ });
+  await basis.waitFor(SOON);
+  await point.getByText('Grade D').waitFor();
+  const shares = await basis.locator('tbody tr td:nth-child(4)').allInnerTexts();
+  const sum = shares.reduce((total, share) => total + Number.parseInt(share, 10), 0);
+  // Whole per cents of eight stations.
+  expect(Math.abs(sum - 100)).toBeLessThanOrEqual(4);
+  await expectAccessible('an estimate');
+
+  await box.fill('twin kopj');
+  await page.getByRole('option', { name: /^Twin Kopjes.*station$/ }).click();
+  await chosen()
+    .getByRole('heading', { name: /Twin Kopjes/, level: 2 })
+    .waitFor(SOON);
+});
+
 test('on a phone the brief, the ranking and the place stand in the bottom sheet, and the map keeps its names from under its buttons', async () => {
   await enterAs('planner', PHONE);
   await expectAccessible('map on a phone');
