@@ -72,19 +72,6 @@ export function monthCompleteness(year: PackedYear): readonly number[] {
   });
 }
 
-/** Mean of the known values of a column, or null without any. */
-export function meanOf(column: Float64Array): number | null {
-  let known = 0;
-  let sum = 0;
-  for (let slot = 0; slot < column.length; slot++) {
-    const value = column[slot] ?? Number.NaN;
-    if (Number.isNaN(value)) continue;
-    known++;
-    sum += value;
-  }
-  return known === 0 ? null : sum / known;
-}
-
 /** The highest of the known values of a column, or null without any. */
 export function highestOf(column: Float64Array): number | null {
   let highest = Number.NEGATIVE_INFINITY;
