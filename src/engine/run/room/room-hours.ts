@@ -24,6 +24,14 @@ export const room = {
   /** Air that enters the wetted medium of the stage under test, and the wet bulb to which that may cool it, °C. */
   entersC: numbers(),
   mediumWetC: numbers(),
+  /** Hours that the stage under test meets; and that it may meet with a supply that is warmer than it need be. */
+  meeting: list(),
+  warm: list(),
+  /** What the stage under test supplies, °C and kg/kg, at which share, and how far it cools without wetting the supply, K. */
+  triedC: numbers(),
+  triedRatio: numbers(),
+  triedShare: numbers(),
+  triedDryFallK: numbers(),
   /** The lowest supply so far without regard to caps, and within them, Infinity before there is one, °C. */
   uncappedC: numbers(),
   lowestC: numbers(),
