@@ -15,7 +15,7 @@ import { methodRoutes } from './features/method/routes.ts';
 import { placesRoutes } from './features/places/routes.ts';
 import { figuresOfSites } from './features/runs/figures-of-sites.ts';
 import { queueRuns, queueRunsOfVersion } from './features/runs/queue-runs.ts';
-import { queueSiteRuns } from './features/runs/queue-site-runs.ts';
+import { queueSiteRuns, queueSiteRunsOf } from './features/runs/queue-site-runs.ts';
 import { runsRoutes } from './features/runs/routes.ts';
 import { sitesRoutes } from './features/sites/routes.ts';
 import { findOrMakeStation } from './features/stations/find-or-make-station.ts';
@@ -95,7 +95,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
     makeFirstTeam: (transaction, team) =>
       makeTeam({ transaction, startBrief }, { ...team, invented: false, programmeName: FIRST_PROGRAMME }),
   });
-  weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, yearThread });
+  weatherRoutes(router, deps, { findOrMakeStation, switchRuleOff, queueRuns, queueSiteRunsOf, yearThread });
   stationsRoutes(router, deps, { queueRuns, filesOfStation: (key) => filesOfStation(deps.db, key) });
   sitesRoutes(router, deps, { relief, queueSiteRuns, figuresOfSites: (of) => figuresOfSites(deps.db, of) });
   briefsRoutes(router, deps, { queueRunsOfVersion, threads });

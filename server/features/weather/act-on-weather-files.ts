@@ -4,7 +4,7 @@ import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.t
 import { refuseWeatherFile } from './refuse-weather-file.ts';
 import { supersedeWeatherFile } from './supersede-weather-file.ts';
 import { findWeatherFile } from './weather-file-store.ts';
-import { withdrawWeatherFile } from './withdraw-weather-file.ts';
+import { type WithdrawalParts, withdrawWeatherFile } from './withdraw-weather-file.ts';
 
 export type WeatherFileAct =
   | { readonly act: 'accept' }
@@ -19,7 +19,7 @@ export interface ActsAnswer {
 
 /** Does the same to many files, each by itself: one that cannot be does not hold up the others. */
 export async function actOnWeatherFiles(
-  deps: { db: Knex } & AcceptanceParts,
+  deps: { db: Knex } & AcceptanceParts & WithdrawalParts,
   input: {
     teamId: string;
     fileIds: readonly string[];
@@ -34,7 +34,7 @@ export async function actOnWeatherFiles(
     try {
       if (act.act === 'accept') await acceptWeatherFile(deps, key);
       else if (act.act === 'refuse') await refuseWeatherFile(deps.db, { ...key, reason: act.reason });
-      else if (act.act === 'withdraw') await withdrawWeatherFile(deps.db, { ...key, reason: act.reason });
+      else if (act.act === 'withdraw') await withdrawWeatherFile(deps, { ...key, reason: act.reason });
       else await supersedeWeatherFile(deps.db, { ...key, byFileId: act.byFileId });
       answer.done.push(fileId);
     } catch (error) {

@@ -51,12 +51,12 @@ import { setLicence } from './set-licence.ts';
 import { startBatch } from './start-batch.ts';
 import { findWeatherFileRecord, findWeatherFileView } from './weather-file-read-model.ts';
 import { findWeatherFile } from './weather-file-store.ts';
-import { withdrawWeatherFile } from './withdraw-weather-file.ts';
+import { type WithdrawalParts, withdrawWeatherFile } from './withdraw-weather-file.ts';
 
 type FileKey = { readonly teamId: string; readonly fileId: string };
 
 /** What the weather's routes need of the other parts, handed in where the server is wired. */
-export type WeatherParts = AcceptanceParts & Pick<DerivingParts, 'yearThread'>;
+export type WeatherParts = AcceptanceParts & WithdrawalParts & Pick<DerivingParts, 'yearThread'>;
 
 export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): void {
   const { db } = deps;
@@ -106,7 +106,7 @@ export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): 
   });
 
   mount(router, deps, withdrawEndpoint, async ({ params, body }, request) => {
-    await withdrawWeatherFile(db, { ...params, ...act(request), reason: body.reason });
+    await withdrawWeatherFile({ db, ...parts }, { ...params, ...act(request), reason: body.reason });
     return await presented(params);
   });
 

@@ -14,14 +14,23 @@ export interface Withdrawal {
   readonly reason: string;
 }
 
+export interface WithdrawalParts {
+  /** Queues the judging of years that sites of the team need now: a station without weather stands for none by itself. */
+  queueSiteRunsOf(transaction: Knex.Transaction, team: { teamId: string }): Promise<void>;
+}
+
 /** Takes a file out of the count. Its record, its bytes and its runs stay; the same bytes may be uploaded again. */
-export async function withdrawWeatherFile(db: Knex, withdrawal: Withdrawal): Promise<void> {
+export async function withdrawWeatherFile(
+  { db, queueSiteRunsOf }: { db: Knex } & WithdrawalParts,
+  withdrawal: Withdrawal,
+): Promise<void> {
   const { teamId, fileId, personId, requestId, reason } = withdrawal;
   await inTransaction(db, async (transaction) => {
     const file = await lockWeatherFile(transaction, { teamId, fileId });
     if (file === null) throw new AppError('not_found', 'There is no such weather file in this team.');
     checkWithdrawable(file);
     await setWithdrawn(transaction, withdrawal);
+    await queueSiteRunsOf(transaction, { teamId });
     await recordAuditEvent(transaction, {
       teamId,
       personId,

@@ -42,6 +42,11 @@ export const sortLabel: Readonly<Record<SiteSort, string>> = {
   distance: 'Distance',
   height: 'Height diff.',
   flags: 'Flags',
+  score: 'Score',
+  grade: 'Grade',
+  verdict: 'Verdict',
+  water: 'L/kWh',
+  saved: 'Saved',
 };
 
 /** "about 240 m" where the relief gave it. */

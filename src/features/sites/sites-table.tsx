@@ -1,6 +1,6 @@
 import { type ReactNode, useEffect, useRef } from 'react';
 import { Link } from 'react-router-dom';
-import type { Site, SiteSort } from '../../contract/sites.ts';
+import type { ListedSite, Site, SiteSort } from '../../contract/sites.ts';
 import { position } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
@@ -21,11 +21,19 @@ interface Column {
   readonly label: string;
   readonly sort: SiteSort | null;
   readonly isFigure?: boolean;
-  readonly cell: (site: Site) => ReactNode;
+  readonly cell: (site: ListedSite) => ReactNode;
 }
 
 /** Every column behind the name; one more is one more entry. */
 const columns: readonly Column[] = [
+  {
+    label: sortLabel.score,
+    sort: 'score',
+    isFigure: true,
+    cell: ({ figures }) => <span title={figures?.scoreNote ?? ''}>{figures?.score ?? '–'}</span>,
+  },
+  { label: sortLabel.grade, sort: 'grade', cell: ({ figures }) => figures?.grade ?? '–' },
+  { label: sortLabel.verdict, sort: 'verdict', cell: ({ figures }) => figures?.verdict ?? '–' },
   { label: sortLabel.station, sort: 'station', cell: ({ station }) => <StationCell station={station} /> },
   {
     label: sortLabel.distance,
@@ -47,7 +55,7 @@ const columns: readonly Column[] = [
 
 interface SitesTableProps {
   readonly programme: ProgrammeKey;
-  readonly items: readonly Site[];
+  readonly items: readonly ListedSite[];
   readonly view: SitesView;
   /** With it rows can be chosen. */
   readonly choice?: SiteChoice;
@@ -90,7 +98,7 @@ export function SitesTable({ programme, items, view, choice }: SitesTableProps) 
   );
 }
 
-function SiteRow({ programme, site, choice }: { programme: ProgrammeKey; site: Site; choice?: SiteChoice }) {
+function SiteRow({ programme, site, choice }: { programme: ProgrammeKey; site: ListedSite; choice?: SiteChoice }) {
   const isChosen = choice?.chosen.has(site.id) ?? false;
   return (
     <tr className={isChosen ? 'bg-shade' : ''}>

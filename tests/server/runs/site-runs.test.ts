@@ -189,6 +189,23 @@ describe('a site whose height the relief gave', () => {
   });
 });
 
+describe('the table of sites', () => {
+  it('shows the figures of the map and is sorted by them, what has none last', async () => {
+    const { sites } = await desk.mapWithoutPending();
+    const { body } = await planner.agent.get(`${programme()}/sites?sort=score&order=desc&limit=3`).expect(200);
+    const byScore = sites.toSorted((one, other) => (other.score ?? -1) - (one.score ?? -1));
+    expect(body.items.map(({ id }: { id: string }) => id)).toEqual(byScore.slice(0, 3).map(({ id }) => id));
+    const last = await planner.agent.get(`${programme()}/sites?sort=score&order=asc`).expect(200);
+    expect(last.body.items.at(-1)).toMatchObject({ name: 'Dry ground', figures: { score: null } });
+    for (const { id, figures } of body.items) {
+      const onMap = sites.find((site) => site.id === id);
+      expect(onMap && figuresOf(onMap)).toEqual(figures);
+    }
+    const unsorted = await planner.agent.get(`${programme()}/sites`).expect(200);
+    expect(unsorted.body.items.map(({ figures }: { figures: unknown }) => figures)).toEqual(sites.map(figuresOf));
+  });
+});
+
 describe('sites under a draft', () => {
   it('have, to the byte, the figures of the map under the same brief, judged together or one by one', async () => {
     const { sites } = await desk.mapWithoutPending();
@@ -211,5 +228,22 @@ describe('sites under a draft', () => {
       .expect(200);
     expect(body.sites[0].ledger).not.toEqual(sites[0]?.ledger);
     expect(body.stations).toHaveLength(1);
+  });
+});
+
+describe('a file that is withdrawn', () => {
+  it('leaves its sites to another station, whose weather is judged at their heights', async () => {
+    const { name, text } = demoEpw(1);
+    const { file } = await desk.upload(name, text);
+    await desk.readToTheEnd(file.id);
+    await desk.accept(file.id);
+    await desk.mapWithoutPending();
+    const [upper] = (await desk.map()).sites;
+    const files = await planner.agent.get(`/api/teams/${team.teamId}/weather-files`).expect(200);
+    const first = files.body.items.find(({ id }: { id: string }) => id !== file.id);
+    await desk.withdraw(first.id);
+    const after = await siteOnMap(upper?.id ?? '');
+    expect(after.stationId).not.toBe(upper?.stationId);
+    expect(after.score).not.toBeNull();
   });
 });
