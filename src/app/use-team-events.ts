@@ -4,7 +4,8 @@ import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/brie
 import { getMap } from '../contract/programme-map.ts';
 import { getSitePlace, getStationPlace } from '../contract/runs.ts';
 import { listSiteImports } from '../contract/site-imports.ts';
-import { getSite, listSites } from '../contract/sites.ts';
+import { getSite } from '../contract/site-record.ts';
+import { listSites } from '../contract/sites.ts';
 import { getStation, listStations } from '../contract/stations.ts';
 import { type TeamEvent, watchTeam } from '../contract/team-events.ts';
 import { getWeatherFile } from '../contract/weather.ts';

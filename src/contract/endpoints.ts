@@ -14,6 +14,7 @@ import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
 import * as runs from './runs.ts';
 import * as siteImports from './site-imports.ts';
+import * as siteRecord from './site-record.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
 import * as surface from './surface.ts';
@@ -83,13 +84,13 @@ export const endpoints = {
   saveBriefVersion: briefs.saveBriefVersion,
   previewBrief: briefs.previewBrief,
   listSites: sites.listSites,
-  getSite: sites.getSite,
+  getSite: siteRecord.getSite,
   makeSite: sites.makeSite,
   changeSite: sites.changeSite,
   moveSite: sites.moveSite,
   removeSites: sites.removeSites,
-  setSiteDuty: sites.setSiteDuty,
-  getGround: sites.getGround,
+  setSiteDuty: siteRecord.setSiteDuty,
+  getGround: siteRecord.getGround,
   startSiteImport: siteImports.startSiteImport,
   addSiteImportRows: siteImports.addSiteImportRows,
   checkSiteImport: siteImports.checkSiteImport,

@@ -9,6 +9,7 @@ import { MEDIUM, ROMAN } from './map-fonts.ts';
 import { fieldName } from './mark-pictures.ts';
 import { figureFeatures, markFeatures, nameFeatures, type RaisedPlace, raisedFeatures } from './place-features.ts';
 import type { MarkInks, PlaceKind, SheetPlace } from './sheet-place.ts';
+import { useIsNear } from './use-is-near.ts';
 import { HOLLOW } from './use-mark-inks.ts';
 import { useRaisedState } from './use-raised-state.ts';
 
@@ -22,6 +23,7 @@ const PAPER = '#fbf9f3';
 /** With more places than this, names wait until the map is near enough to have room for them. */
 export const MOST_NAMED = 300;
 const NAMES_FROM_ZOOM = 5;
+const NOBODY: readonly SheetPlace[] = [];
 /** Letters are a size that can be read from here on; with few sites they always stand. */
 const LETTERS_FROM_ZOOM = 4;
 
@@ -143,7 +145,9 @@ interface FiguresProps extends MarksProps {
 
 /** The figure of the layer under each mark, as a sheet prints a height: small, so that most of them find room in a crowd. */
 export function PlaceFigures({ kind, places, inks }: FiguresProps) {
-  const data = useMemo(() => figureFeatures(places, inks), [places, inks]);
+  const isNear = useIsNear(NAMES_FROM_ZOOM);
+  const shown = places.length > MOST_NAMED && !isNear ? NOBODY : places;
+  const data = useMemo(() => figureFeatures(shown, inks), [shown, inks]);
   return (
     <Source id={`${kind}-figures`} type="geojson" data={data}>
       <Layer

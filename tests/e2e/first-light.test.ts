@@ -20,7 +20,17 @@ import {
   seeRefused,
 } from './mixed-archive-road.ts';
 import { makeAndRevokeToken, putStationRight, readRecord } from './record-road.ts';
-import { mapIsDrawn, scoreShown, signIn, signOut, station, stationList, uploadText, watchSteps } from './steps.ts';
+import {
+  mapIsDrawn,
+  scoreShown,
+  showStations,
+  signIn,
+  signOut,
+  station,
+  stationList,
+  uploadText,
+  watchSteps,
+} from './steps.ts';
 
 const DESK: Viewport = { width: 1440, height: 900 };
 const PHONE: Viewport = { width: 390, height: 844 };
@@ -119,6 +129,7 @@ test('a wrong password is refused without saying which of the two was wrong', as
 test('the whole road: an engineer uploads a file, sees each step, accepts it, derives a warmer year, and finds the station with a score on the map', async () => {
   await enterAs('engineer');
   await mapIsDrawn(page);
+  await showStations(page);
   expect(await stationList(page).getByRole('option').count()).toBe(demoStations.length);
   await openWeather();
 
@@ -189,6 +200,7 @@ test('a file that is there already is recognised and not stored again', async ()
 
 test('the chosen place shows a ledger that adds up, a verdict, a grade and the arithmetic of its score', async () => {
   await enterAs('planner');
+  await showStations(page);
   await station(page, PLACE).click();
   const place = page.getByRole('region', { name: 'Chosen place' });
   await place.getByRole('heading', { name: PLACE, exact: true }).waitFor();
@@ -216,6 +228,7 @@ test('the chosen place shows a ledger that adds up, a verdict, a grade and the a
 
 test('the year cloth paints 365 days by 24 hours and reads any hour aloud', async () => {
   await enterAs('planner');
+  await showStations(page);
   await station(page, PLACE).click();
   const cloth = page.getByRole('slider', {
     name: new RegExp(`The year at ${PLACE} hour by hour: [\\d,]+ of [\\d,]+ hours`),
@@ -321,6 +334,7 @@ test('a zip of mixed files is read with live progress, paused, resumed and answe
   await bringSameShape(look);
   await acceptAll(batch, look);
   await page.getByRole('link', { name: 'Map', exact: true }).click();
+  await showStations(page);
   for (const name of newStations) await station(page, name).waitFor(SOON);
   await mapIsDrawn(page);
 });
@@ -373,6 +387,7 @@ test('on a phone nothing scrolls sideways and the sheet at the foot of the map o
   await expect
     .poll(async () => (await sheet.boundingBox())?.height ?? 0, SOON)
     .toBeGreaterThan((low?.height ?? 0) + 150);
+  await showStations(page);
   await station(page, 'Cane Coast').click();
   const place = page.getByRole('region', { name: 'Place panel' });
   await place.getByRole('heading', { name: 'Cane Coast', exact: true }).waitFor();

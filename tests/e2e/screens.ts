@@ -7,7 +7,7 @@ import path from 'node:path';
 import type { Page } from 'playwright-core';
 import { readDemoAccounts } from '../../server/builders/demo-accounts.ts';
 import { launchBrowser, watchedPage } from '../support/browser.ts';
-import { mapIsDrawn, signIn, station } from './steps.ts';
+import { mapIsDrawn, showStations, signIn, station } from './steps.ts';
 
 const VIEWPORTS = [
   { width: 1440, height: 900 },
@@ -62,6 +62,7 @@ try {
 async function choosePlace(page: Page, name: string): Promise<void> {
   const sheet = page.getByRole('button', { name: /Press to change/ });
   if (await sheet.isVisible()) await sheet.click();
+  await showStations(page);
   await station(page, name).click();
   await page.getByRole('heading', { name, exact: true }).waitFor();
 }

@@ -19,6 +19,14 @@ export async function mapIsDrawn(page: Page): Promise<void> {
   await page.locator('[data-sheet-map][data-idle]').waitFor({ state: 'attached', timeout: 60_000 });
 }
 
+/** Brings up the ranking of stations where that of sites stands. */
+export async function showStations(page: Page): Promise<void> {
+  const other = page.getByRole('button', { name: /^Stations, \d/ });
+  await page.getByRole('listbox', { name: /by score$/ }).waitFor({ state: 'attached' });
+  if (await other.isVisible()) await other.click();
+  await stationList(page).waitFor({ state: 'attached' });
+}
+
 /** The list of stations beside the map, or in the bottom sheet. */
 export function stationList(page: Page): Locator {
   return page.getByRole('listbox', { name: 'Stations by score' });

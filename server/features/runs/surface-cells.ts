@@ -25,8 +25,8 @@ export const SUPPORT_CODES: Readonly<Record<SupportClass, number>> = { none: 0, 
 /** Finer cells than the relief has nodes would pretend to know more. */
 const FINEST = 6;
 const COARSEST = 3;
-/** About as many cells as are quick to send and to draw. */
-const MOST_CELLS = 150_000;
+/** About as many cells as a page draws anew within the blink of a slider; more would say little more between the same stations. */
+const MOST_CELLS = 40_000;
 /** The smallest cells are so much narrower than the average. */
 const NARROWEST = 0.75;
 /** A middle this part of the spacing off the coast still has land in its cell. */

@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { SiteWater } from '#contract/sites.ts';
+import type { SiteWater } from '#contract/site-water.ts';
 import { rankStations } from '#engine/interpolation/station-choice.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
 import { inTransaction } from '../../db/in-transaction.ts';

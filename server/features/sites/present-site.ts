@@ -1,5 +1,7 @@
 import { MOST_TOLD, type SiteImport, type SiteImportCheck } from '#contract/site-imports.ts';
-import { type Site, type SiteChange, SiteWater } from '#contract/sites.ts';
+import type { SiteChange } from '#contract/site-record.ts';
+import { SiteWater } from '#contract/site-water.ts';
+import type { Site } from '#contract/sites.ts';
 import type { JudgedImport } from './judge-import.ts';
 import type { ResolvedSite } from './resolved-sites-read-model.ts';
 import type { SiteImportView } from './site-import-read-model.ts';

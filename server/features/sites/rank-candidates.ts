@@ -1,4 +1,4 @@
-import type { StationCandidate } from '#contract/sites.ts';
+import type { StationCandidate } from '#contract/site-record.ts';
 import { rankStations, type SiteToServe } from '#engine/interpolation/station-choice.ts';
 import { gradePlace } from '#engine/score/grade-place.ts';
 import { hasYears } from './resolved-sites-read-model.ts';

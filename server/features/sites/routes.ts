@@ -8,17 +8,15 @@ import {
   startSiteImport as startImportEndpoint,
   undoSiteImport as undoImportEndpoint,
 } from '#contract/site-imports.ts';
+import { getGround, getSite, setSiteDuty as setDutyEndpoint } from '#contract/site-record.ts';
 import {
   changeSite as changeEndpoint,
   FilterCounts,
-  getGround,
-  getSite,
   listSites,
   makeSite as makeEndpoint,
   moveSite as moveEndpoint,
   removeSites as removeEndpoint,
   type Site,
-  setSiteDuty as setDutyEndpoint,
   siteFlags,
 } from '#contract/sites.ts';
 import type { Deps } from '../../deps.ts';

@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { SiteDuty } from '#contract/sites.ts';
+import type { SiteDuty } from '#contract/site-record.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';

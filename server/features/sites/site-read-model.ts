@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
-import type { SiteDuty, SiteWater } from '#contract/sites.ts';
+import type { SiteDuty } from '#contract/site-record.ts';
+import type { SiteWater } from '#contract/site-water.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
 
 interface ProgrammeKey {

@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
-import type { DutyName, SiteWater } from '#contract/sites.ts';
+import type { DutyName } from '#contract/site-record.ts';
+import type { SiteWater } from '#contract/site-water.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
 
 interface ProgrammeKey {

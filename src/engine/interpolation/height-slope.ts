@@ -13,18 +13,20 @@ export interface HeightSums {
   readonly products: number;
 }
 
-export function heightSums(stations: readonly (readonly [heightM: number, value: number])[]): HeightSums {
-  return stations.reduce(withStation, { count: 0, heights: 0, values: 0, squares: 0, products: 0 });
-}
-
-function withStation(sums: HeightSums, [heightM, value]: readonly [number, number]): HeightSums {
-  return {
-    count: sums.count + 1,
-    heights: sums.heights + heightM,
-    values: sums.values + value,
-    squares: sums.squares + heightM * heightM,
-    products: sums.products + heightM * value,
-  };
+/** @param values by station; NaN is left out */
+export function heightSums(heightsM: Float64Array, values: Float64Array): HeightSums {
+  let [count, heights, sum, squares, products] = [0, 0, 0, 0, 0];
+  for (let station = 0; station < values.length; station++) {
+    const value = values[station] ?? Number.NaN;
+    if (Number.isNaN(value)) continue;
+    const heightM = heightsM[station] ?? 0;
+    count++;
+    heights += heightM;
+    sum += value;
+    squares += heightM * heightM;
+    products += heightM * value;
+  }
+  return { count, heights, values: sum, squares, products };
 }
 
 export function withoutStation(sums: HeightSums, heightM: number, value: number): HeightSums {
@@ -52,14 +54,23 @@ export interface Extremes {
   readonly nextGreatest: number;
 }
 
-export function extremesOf(values: readonly number[]): Extremes {
-  const sorted = values.toSorted((one, other) => one - other);
-  return {
-    least: sorted[0] ?? Number.NaN,
-    greatest: sorted.at(-1) ?? Number.NaN,
-    nextLeast: sorted[1] ?? Number.NaN,
-    nextGreatest: sorted.at(-2) ?? Number.NaN,
-  };
+/** @param values by station. @param where a value is NaN here, its station is left out */
+export function extremesOf(values: Float64Array, where: Float64Array): Extremes {
+  let [least, nextLeast] = [Number.POSITIVE_INFINITY, Number.POSITIVE_INFINITY];
+  let [greatest, nextGreatest] = [Number.NEGATIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (let station = 0; station < values.length; station++) {
+    if (Number.isNaN(where[station])) continue;
+    const value = values[station] ?? Number.NaN;
+    if (value < least) {
+      nextLeast = least;
+      least = value;
+    } else if (value < nextLeast) nextLeast = value;
+    if (value > greatest) {
+      nextGreatest = greatest;
+      greatest = value;
+    } else if (value > nextGreatest) nextGreatest = value;
+  }
+  return { least, nextLeast, greatest, nextGreatest };
 }
 
 export function extremesWithout(extremes: Extremes, value: number): { least: number; greatest: number } {

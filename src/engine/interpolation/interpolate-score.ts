@@ -19,15 +19,16 @@ export interface SurfacePoints {
 export function interpolateScores(figures: StationFigures, points: SurfacePoints): Float32Array {
   const count = points.neighbours.points;
   const sums = new Float32Array(count);
+  const isPatchy = figures.columns.some(({ everywhere }) => !everywhere);
   const fixedWeight = figures.columns.reduce(
     (sum, { everywhere, anchor }) => sum + (everywhere ? anchor.weight : 0),
     0,
   );
-  const weights = figures.columns.every(({ everywhere }) => everywhere)
-    ? null
-    : new Float32Array(count).fill(fixedWeight);
+  const weights = isPatchy ? new Float32Array(count).fill(fixedWeight) : null;
+  const ground = groundOf(figures, points);
+  const raw = new Float64Array(count);
   for (const column of figures.columns) {
-    const raw = interpolateColumn(column, { figures, points });
+    fillColumn(raw, column, ground);
     addPoints(column, { raw, sums, weights: column.everywhere ? null : weights });
   }
   for (let point = 0; point < count; point++) {
@@ -42,57 +43,76 @@ export function interpolateColumn(
   column: FigureColumn,
   on: { figures: StationFigures; points: SurfacePoints },
 ): Float64Array {
-  const raw = column.everywhere ? weightedMeans(column.values, on.points) : meansOfPresent(column.values, on.points);
-  if (column.slopePerM !== 0) addSlope(raw, { column, ...on });
-  const { least, greatest } = column.extremes;
-  for (let point = 0; point < raw.length; point++) {
-    const held = on.points.held[point] ?? -1;
-    raw[point] =
-      held >= 0 ? (column.values[held] ?? Number.NaN) : Math.min(Math.max(raw[point] ?? Number.NaN, least), greatest);
-  }
+  const raw = new Float64Array(on.points.neighbours.points);
+  fillColumn(raw, column, groundOf(on.figures, on.points));
   return raw;
 }
 
-function weightedMeans(values: Float64Array, { neighbours, weights }: SurfacePoints): Float64Array {
+interface Ground {
+  readonly figures: StationFigures;
+  readonly points: SurfacePoints;
+  /** How much higher each point lies than its neighbours, weighted as their figures are, m; null without any slope. */
+  readonly heightAboveM: Float32Array | null;
+}
+
+function groundOf(figures: StationFigures, points: SurfacePoints): Ground {
+  if (figures.columns.every(({ slopePerM }) => slopePerM === 0)) return { figures, points, heightAboveM: null };
+  const heights = new Float64Array(points.neighbours.points);
+  fillMeans(heights, figures.elevationsM, points);
+  const heightAboveM = points.elevationsM.map((heightM, point) => heightM - (heights[point] ?? 0));
+  return { figures, points, heightAboveM };
+}
+
+function fillColumn(raw: Float64Array, column: FigureColumn, { figures, points, heightAboveM }: Ground): void {
+  const { values, slopePerM } = column;
+  if (column.everywhere) {
+    fillMeans(raw, values, points);
+    if (slopePerM !== 0 && heightAboveM !== null) {
+      for (let point = 0; point < raw.length; point++) {
+        raw[point] = (raw[point] ?? 0) + slopePerM * (heightAboveM[point] ?? 0);
+      }
+    }
+  } else fillMeansOfPresent(raw, column, { figures, points });
+  hold(raw, column, points.held);
+}
+
+/** Within the range of the stations; where a point holds a station, that one's own figure. */
+function hold(raw: Float64Array, { values, extremes: { least, greatest } }: FigureColumn, held: Int32Array): void {
+  for (let point = 0; point < raw.length; point++) {
+    const station = held[point] ?? -1;
+    raw[point] =
+      station >= 0 ? (values[station] ?? Number.NaN) : Math.min(Math.max(raw[point] ?? Number.NaN, least), greatest);
+  }
+}
+
+function fillMeans(means: Float64Array, values: Float64Array, { neighbours, weights }: SurfacePoints): void {
   const { points, each, stations } = neighbours;
-  const means = new Float64Array(points);
   for (let point = 0, at = 0; point < points; point++) {
     let sum = 0;
-    for (let place = 0; place < each; place++, at++) sum += (weights[at] ?? 0) * (values[stations[at] ?? 0] ?? 0);
+    for (const end = at + each; at < end; at++) sum += (weights[at] ?? 0) * (values[stations[at] ?? 0] ?? 0);
     means[point] = sum;
   }
-  return means;
 }
 
 /** The weight of neighbours to which the component does not apply is shared over the others in proportion. */
-function meansOfPresent(values: Float64Array, { neighbours, weights }: SurfacePoints): Float64Array {
-  const { points, each, stations } = neighbours;
-  const means = new Float64Array(points);
-  for (let point = 0, at = 0; point < points; point++) {
-    let [sum, total] = [0, 0];
-    for (let place = 0; place < each; place++, at++) {
-      const value = values[stations[at] ?? 0] ?? Number.NaN;
-      if (Number.isNaN(value)) continue;
-      sum += (weights[at] ?? 0) * value;
-      total += weights[at] ?? 0;
-    }
-    means[point] = total > 0 ? sum / total : Number.NaN;
-  }
-  return means;
-}
-
-/** From the height that the neighbours stand for, weighted as their figures are, to that of the point. */
-function addSlope(
-  raw: Float64Array,
-  { column, figures, points }: { column: FigureColumn; figures: StationFigures; points: SurfacePoints },
+function fillMeansOfPresent(
+  means: Float64Array,
+  { values, slopePerM }: FigureColumn,
+  { figures, points: { neighbours, weights, elevationsM } }: Pick<Ground, 'figures' | 'points'>,
 ): void {
-  const present = column.everywhere
-    ? figures.elevationsM
-    : figures.elevationsM.map((heightM, station) => (Number.isNaN(column.values[station]) ? Number.NaN : heightM));
-  const heights = column.everywhere ? weightedMeans(present, points) : meansOfPresent(present, points);
-  for (let point = 0; point < raw.length; point++) {
-    const difference = (points.elevationsM[point] ?? 0) - (heights[point] ?? 0);
-    raw[point] = (raw[point] ?? Number.NaN) + column.slopePerM * difference;
+  const { points, each, stations } = neighbours;
+  for (let point = 0, at = 0; point < points; point++) {
+    let [sum, heights, total] = [0, 0, 0];
+    for (const end = at + each; at < end; at++) {
+      const station = stations[at] ?? 0;
+      const value = values[station] ?? Number.NaN;
+      if (Number.isNaN(value)) continue;
+      const weight = weights[at] ?? 0;
+      sum += weight * value;
+      heights += weight * (figures.elevationsM[station] ?? 0);
+      total += weight;
+    }
+    means[point] = total > 0 ? sum / total + slopePerM * ((elevationsM[point] ?? 0) - heights / total) : Number.NaN;
   }
 }
 

@@ -1,16 +1,17 @@
-import { nearestList, offer, reachOf } from './nearest-list.ts';
+import { type NearestList, nearestList, offer, reachOf } from './nearest-list.ts';
 import { keep, MOST_STATIONS, type Neighbours } from './nearest-stations.ts';
 
-/** Cells of the hash grid hold about so many stations. */
-const STATIONS_PER_CELL = 2;
+/** Cells of the grid that hold any station hold about so many. */
+const STATIONS_PER_CELL = 3;
 
-interface HashGrid {
+/** The cube around the unit sphere in cells, and the stations in each, in their own order. */
+interface CubeGrid {
   readonly side: number;
   readonly perAxis: number;
-  /** Stations by cell, in their own order; those of a cell stand from its start to the next one's. */
+  /** Stations by cell; those of cell c stand from starts[c] to starts[c + 1]. */
   readonly order: Int32Array;
-  readonly starts: Map<number, readonly [start: number, end: number]>;
-  readonly cells: Int32Array;
+  readonly starts: Int32Array;
+  readonly stations: Float64Array;
 }
 
 /**
@@ -30,7 +31,7 @@ export function nearestOthers(stations: Float64Array, each: number): Neighbours 
     km: new Float32Array(count * most),
   };
   if (most === 0) return found;
-  const grid = hashGrid(stations);
+  const grid = cubeGrid(stations);
   const list = nearestList(most);
   for (let station = 0; station < count; station++) {
     list.count = 0;
@@ -38,81 +39,79 @@ export function nearestOthers(stations: Float64Array, each: number): Neighbours 
       // Everything in this shell and beyond lies at least so far away.
       const least = Math.max(0, shell - 1) * grid.side;
       if (reachOf(list) < least * least) break;
-      offerShell({ grid, stations, station, list, shell });
+      offerShell(grid, station, shell, list);
     }
     keep(found, station, list);
   }
   return found;
 }
 
-function hashGrid(stations: Float64Array): HashGrid {
+function cubeGrid(stations: Float64Array): CubeGrid {
   const count = stations.length / 3;
-  // Stations lie on a surface: the cells that it passes through are about 2 pi (2 / side)^2 / 4 of the cube's.
-  const side = Math.min(2, Math.sqrt((4 * Math.PI * STATIONS_PER_CELL) / count));
+  // A sphere of the unit radius passes through about 6 pi / side^2 cells of its cube (half again its area, as they lie at all angles).
+  const side = Math.min(2, Math.sqrt((6 * Math.PI * STATIONS_PER_CELL) / count));
   const perAxis = Math.floor(2 / side) + 1;
-  const cells = new Int32Array(3 * count);
-  for (let at = 0; at < cells.length; at++) {
-    cells[at] = Math.min(perAxis - 1, Math.floor(((stations[at] ?? 0) + 1) / side));
+  const starts = new Int32Array(perAxis ** 3 + 1);
+  const cells = new Int32Array(count);
+  for (let station = 0; station < count; station++) {
+    const cell =
+      (axisCell(stations[3 * station] ?? 0, side) * perAxis + axisCell(stations[3 * station + 1] ?? 0, side)) *
+        perAxis +
+      axisCell(stations[3 * station + 2] ?? 0, side);
+    cells[station] = cell;
+    starts[cell + 1] = (starts[cell + 1] ?? 0) + 1;
   }
-  const keys = Float64Array.from({ length: count }, (_none, station) => keyOf(perAxis, cellOf(cells, station)));
-  const order = Int32Array.from({ length: count }, (_none, station) => station).sort(
-    (one, other) => (keys[one] ?? 0) - (keys[other] ?? 0) || one - other,
-  );
-  const starts = new Map<number, readonly [number, number]>();
-  for (let start = 0; start < count; ) {
-    const key = keys[order[start] ?? 0] ?? 0;
-    let end = start + 1;
-    while (end < count && keys[order[end] ?? 0] === key) end++;
-    starts.set(key, [start, end]);
-    start = end;
+  for (let cell = 1; cell < starts.length; cell++) starts[cell] = (starts[cell] ?? 0) + (starts[cell - 1] ?? 0);
+  const order = new Int32Array(count);
+  const filled = starts.slice();
+  for (let station = 0; station < count; station++) {
+    const cell = cells[station] ?? 0;
+    const place = filled[cell] ?? 0;
+    order[place] = station;
+    filled[cell] = place + 1;
   }
-  return { side, perAxis, order, starts, cells };
+  return { side, perAxis, order, starts, stations };
 }
 
-type Cell = readonly [x: number, y: number, z: number];
-
-function cellOf(cells: Int32Array, station: number): Cell {
-  return [cells[3 * station] ?? 0, cells[3 * station + 1] ?? 0, cells[3 * station + 2] ?? 0];
+function axisCell(coordinate: number, side: number): number {
+  return Math.floor((coordinate + 1) / side);
 }
 
-function keyOf(perAxis: number, [x, y, z]: Cell): number {
-  return (x * perAxis + y) * perAxis + z;
-}
-
-/** Offers what lies in the cells whose farthest axis is `shell` cells away. */
-function offerShell(on: {
-  grid: HashGrid;
-  stations: Float64Array;
-  station: number;
-  list: ReturnType<typeof nearestList>;
-  shell: number;
-}): void {
-  const { grid, station, shell } = on;
-  const [x, y, z] = cellOf(grid.cells, station);
-  const last = grid.perAxis - 1;
+/** Offers what lies in the cells whose farthest axis is `shell` cells away; rows of cells along z are read as one. */
+function offerShell(grid: CubeGrid, station: number, shell: number, list: NearestList): void {
+  const { side, perAxis, stations } = grid;
+  const x = axisCell(stations[3 * station] ?? 0, side);
+  const y = axisCell(stations[3 * station + 1] ?? 0, side);
+  const z = axisCell(stations[3 * station + 2] ?? 0, side);
+  const last = perAxis - 1;
+  const low = Math.max(0, z - shell);
+  const high = Math.min(last, z + shell);
   for (let cx = Math.max(0, x - shell); cx <= Math.min(last, x + shell); cx++) {
     for (let cy = Math.max(0, y - shell); cy <= Math.min(last, y + shell); cy++) {
-      const onFace = Math.abs(cx - x) === shell || Math.abs(cy - y) === shell;
-      const step = onFace || shell === 0 ? 1 : 2 * shell;
-      for (let cz = z - shell; cz <= z + shell; cz += step) {
-        if (cz < 0 || cz > last) continue;
-        const held = grid.starts.get(keyOf(grid.perAxis, [cx, cy, cz]));
-        if (held !== undefined) offerCell(on, held);
+      const row = (cx * perAxis + cy) * perAxis;
+      if (Math.abs(cx - x) === shell || Math.abs(cy - y) === shell) {
+        offerCells(grid, station, row + low, row + high, list);
+        continue;
       }
+      if (z - shell >= 0) offerCells(grid, station, row + z - shell, row + z - shell, list);
+      if (z + shell <= last) offerCells(grid, station, row + z + shell, row + z + shell, list);
     }
   }
 }
 
-function offerCell(
-  { grid, stations, station, list }: Parameters<typeof offerShell>[0],
-  [start, end]: readonly [number, number],
-): void {
-  for (let index = start; index < end; index++) {
-    const other = grid.order[index] ?? 0;
+function offerCells(grid: CubeGrid, station: number, first: number, last: number, list: NearestList): void {
+  const { order, starts, stations } = grid;
+  const x = stations[3 * station] ?? 0;
+  const y = stations[3 * station + 1] ?? 0;
+  const z = stations[3 * station + 2] ?? 0;
+  const end = starts[last + 1] ?? 0;
+  for (let index = starts[first] ?? 0; index < end; index++) {
+    const other = order[index] ?? 0;
     if (other === station) continue;
-    const dx = (stations[3 * other] ?? 0) - (stations[3 * station] ?? 0);
-    const dy = (stations[3 * other + 1] ?? 0) - (stations[3 * station + 1] ?? 0);
-    const dz = (stations[3 * other + 2] ?? 0) - (stations[3 * station + 2] ?? 0);
-    offer(list, other, dx * dx + dy * dy + dz * dz);
+    const dx = (stations[3 * other] ?? 0) - x;
+    const dy = (stations[3 * other + 1] ?? 0) - y;
+    const dz = (stations[3 * other + 2] ?? 0) - z;
+    const squared = dx * dx + dy * dy + dz * dz;
+    if (squared <= reachOf(list)) offer(list, other, squared);
   }
 }

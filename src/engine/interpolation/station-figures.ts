@@ -32,25 +32,27 @@ export function stationFigures(
   const elevationsM = Float64Array.from(stations, ({ elevationM }) => elevationM);
   const columns = anchors
     .filter(({ weight }) => weight > 0)
-    .map((anchor) => figureColumn(anchor, stations))
+    .map((anchor) => figureColumn(anchor, { stations, elevationsM }))
     .filter(({ sums }) => sums.count > 0);
   return { stations: stations.length, elevationsM, columns };
 }
 
-function figureColumn(anchor: ScoreAnchor, stations: Parameters<typeof stationFigures>[1]): FigureColumn {
-  const { component } = anchor;
-  const values = Float64Array.from(stations, ({ raw }) => raw[component] ?? Number.NaN);
-  const present = stations.flatMap(({ elevationM, raw }) => {
-    const value = raw[component];
-    return value === null ? [] : [[elevationM, value] as const];
-  });
-  const heights = extremesOf(present.map(([heightM]) => heightM));
-  const sums = heightSums(present);
+function figureColumn(
+  anchor: ScoreAnchor,
+  on: { stations: Parameters<typeof stationFigures>[1]; elevationsM: Float64Array },
+): FigureColumn {
+  const { stations, elevationsM } = on;
+  const values = new Float64Array(stations.length);
+  for (let station = 0; station < values.length; station++) {
+    values[station] = stations[station]?.raw[anchor.component] ?? Number.NaN;
+  }
+  const heights = extremesOf(elevationsM, values);
+  const sums = heightSums(elevationsM, values);
   return {
     anchor,
     values,
-    everywhere: present.length === stations.length,
-    extremes: extremesOf(present.map(([, value]) => value)),
+    everywhere: sums.count === stations.length,
+    extremes: extremesOf(values, values),
     sums,
     heights,
     slopePerM: heightSlope(sums, heights.greatest - heights.least),

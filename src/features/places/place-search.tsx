@@ -1,6 +1,6 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
-import { ComboBox, FieldError, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
+import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
 import { findPlaces } from '../../contract/places.ts';
 import { apiQuery } from '../../lib/api-query.ts';
 import { foundSuggestions, isName, readTyped, type Suggestion } from './place-suggestions.ts';
@@ -16,6 +16,8 @@ const PAUSE_MS = 180;
 /** One box for names of places, stations and sites, and for coordinates in any usual form. */
 export function PlaceSearch({ teamId, onFind }: PlaceSearchProps) {
   const [text, setText] = useState('');
+  // What is chosen closes the list; what was typed stays in the box.
+  const [chosenKey, setChosenKey] = useState<string | null>(null);
   const paused = usePaused(text);
   const typed = readTyped(text);
   const asked = apiQuery(findPlaces, { params: { teamId }, query: { text: paused.trim() } });
@@ -27,36 +29,38 @@ export function PlaceSearch({ teamId, onFind }: PlaceSearchProps) {
     <ComboBox
       items={suggestions}
       inputValue={text}
-      onInputChange={setText}
-      selectedKey={null}
+      onInputChange={(typedText) => {
+        setText(typedText);
+        setChosenKey(null);
+      }}
+      selectedKey={chosenKey}
       onSelectionChange={(key) => {
         const chosen = suggestions.find((each) => each.key === key);
-        if (chosen === undefined) return;
-        setText('');
-        onFind(chosen);
+        setChosenKey(chosen?.key ?? null);
+        if (chosen !== undefined) onFind(chosen);
       }}
       allowsEmptyCollection
       allowsCustomValue
       menuTrigger="input"
       isInvalid={typed.problem !== null}
-      className="block"
+      className="block shrink-0"
     >
       <Label className="sr-only">Find a place or a position</Label>
       <Input
         placeholder="Find a place or a position"
         className="h-9 w-full rounded-md border border-[#918a78] bg-paper px-2.5 data-invalid:border-madder"
       />
-      <FieldError className="mt-1 block text-fine font-medium text-madder">{typed.problem}</FieldError>
       <Popover className="w-(--trigger-width) min-w-64 rounded-md border border-line bg-paper py-1 shadow-float">
+        {typed.problem === null ? null : (
+          <p role="alert" className="px-3 py-1.5 text-fine font-medium text-madder">
+            {typed.problem}
+          </p>
+        )}
         <ListBox<Suggestion>
           className="max-h-80 overflow-y-auto outline-none"
           renderEmptyState={() => (
-            <p className="px-3 py-1.5 text-fine text-soft">
-              {text.trim().length < 2
-                ? 'Type two letters, or a position such as -24.65, 25.91.'
-                : isSearching
-                  ? 'Searching.'
-                  : 'No such place in the gazetteer, and no such station or site.'}
+            <p className="px-3 py-1.5 text-fine text-soft empty:hidden">
+              {typed.problem === null ? emptyWords({ text, isSearching }) : null}
             </p>
           )}
         >
@@ -74,6 +78,11 @@ export function PlaceSearch({ teamId, onFind }: PlaceSearchProps) {
       </Popover>
     </ComboBox>
   );
+}
+
+function emptyWords({ text, isSearching }: { text: string; isSearching: boolean }): string {
+  if (text.trim().length < 2) return 'Type two letters, or a position such as -24.65, 25.91.';
+  return isSearching ? 'Searching.' : 'No such place in the gazetteer, and no such station or site.';
 }
 
 function usePaused(text: string): string {

@@ -13,7 +13,7 @@ export function BriefNote({ map, choice }: { map: ProgrammeMap; choice: ReactNod
           <span aria-hidden="true" className="mr-1 inline-block transition-transform group-open:rotate-90">
             ›
           </span>
-          Brief version {map.brief.version}
+          Brief version {map.brief.version}.
         </summary>
         <p className="mt-0.5">{sentence(map.brief.sentence)}</p>
         {choice}

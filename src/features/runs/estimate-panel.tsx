@@ -62,7 +62,7 @@ function Estimate({ found, onStation }: { found: PlaceEstimate; onStation: (stat
         )}
         <div className={`grid gap-0.5 ${score === null ? 'col-span-2' : ''}`}>
           {score === null ? (
-            <p className="serif text-name">No estimate: {scoreNote}.</p>
+            <p className="serif text-name">No estimate: {heldTogether(scoreNote ?? '')}.</p>
           ) : (
             <p>{bandWords(found.words)}</p>
           )}
@@ -77,6 +77,11 @@ function Estimate({ found, onStation }: { found: PlaceEstimate; onStation: (stat
       {score === null || isStation ? null : <Components found={found} />}
     </div>
   );
+}
+
+/** A figure and its unit stay on one line. */
+function heldTogether(words: string): string {
+  return words.replace(/(\d) (km|m)\b/g, '$1\u00a0$2');
 }
 
 function supportWords({ support, error }: PlaceEstimate): string {
@@ -108,9 +113,11 @@ function Basis({ found, onStation }: { found: PlaceEstimate; onStation: (station
               <th scope="col" className="figure">
                 m higher
               </th>
-              <th scope="col" className="figure">
-                Share
-              </th>
+              {found.score === null ? null : (
+                <th scope="col" className="figure">
+                  Share
+                </th>
+              )}
               <th scope="col" className="figure">
                 Score
               </th>
@@ -130,7 +137,7 @@ function Basis({ found, onStation }: { found: PlaceEstimate; onStation: (station
                 </th>
                 <td className="figure">{number(station.distanceKm, station.distanceKm < 10 ? 1 : 0)}</td>
                 <td className="figure">{number(station.heightDifferenceM)}</td>
-                <td className="figure">{found.score === null ? '' : percent(station.weightPct, 0)}</td>
+                {found.score === null ? null : <td className="figure">{percent(station.weightPct, 0)}</td>}
                 <td className="figure">{station.score}</td>
               </tr>
             ))}

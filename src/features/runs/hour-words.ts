@@ -1,15 +1,8 @@
-import { dayLabel, hourLabel } from '../../charts/calendar.ts';
 import { classWords } from '../../charts/hour-class-words.ts';
 import type { HourList, ListedHour } from '../../contract/hour-list.ts';
 import { differenceK, number, percent, sentence, temperatureC, withUnit } from '../../lib/format.ts';
 
-const HOURS = 24;
 const NONE = '–';
-
-/** "14 Jul, 12:00 to 13:00" in the slots' own time. */
-export function slotWords(slot: number, days: number): string {
-  return `${dayLabel(Math.floor(slot / HOURS), days)}, ${hourLabel((slot % HOURS) + 1)}`;
-}
 
 /** One hour in a sentence: its state, its class, why, and what is lacking. */
 export function hourSentence(hour: ListedHour, list: Pick<HourList, 'limitUnit'>): string {

@@ -1,4 +1,4 @@
-import type { SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
 import { moment } from '../../lib/format.ts';
 
 /** Who changed what of a site, newest first. */

@@ -1,6 +1,6 @@
 import { useMutation } from '@tanstack/react-query';
 import { type FormEvent, useState } from 'react';
-import { type DutyName, dutyNames, type SiteDuty, type SiteRecord } from '../../contract/sites.ts';
+import { type DutyName, dutyNames, type SiteDuty, type SiteRecord } from '../../contract/site-record.ts';
 import { errorSentence } from '../../lib/api-error.ts';
 import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';

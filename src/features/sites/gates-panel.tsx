@@ -1,6 +1,6 @@
 import { useMutation } from '@tanstack/react-query';
 import { type FormEvent, useEffect, useState } from 'react';
-import type { SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
 import { ASKED_OF_EVERY_PLACE } from '../../engine/score/gates.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { Button } from '../../ui/button.tsx';

@@ -1,7 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { FormProvider, useForm } from 'react-hook-form';
-import type { SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom';
-import type { SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { position } from '../../lib/format.ts';
 import { PageTitle } from '../../lib/page-title.tsx';

@@ -1,15 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import type { Endpoint, InputOf } from '../../contract/endpoint.ts';
-import {
-  changeSite,
-  getGround,
-  getSite,
-  listSites,
-  makeSite,
-  moveSite,
-  removeSites,
-  setSiteDuty,
-} from '../../contract/sites.ts';
+import { getGround, getSite, setSiteDuty } from '../../contract/site-record.ts';
+import { changeSite, listSites, makeSite, moveSite, removeSites } from '../../contract/sites.ts';
 import { call } from '../../lib/api-client.ts';
 import { apiKey, apiQuery } from '../../lib/api-query.ts';
 

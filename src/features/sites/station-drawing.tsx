@@ -1,4 +1,4 @@
-import type { SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
 
 const WIDTH = 300;
 const HEIGHT = 220;

@@ -1,6 +1,6 @@
 import { useMutation } from '@tanstack/react-query';
 import { type FormEvent, useEffect, useState } from 'react';
-import type { SiteRecord, StationCandidate } from '../../contract/sites.ts';
+import type { SiteRecord, StationCandidate } from '../../contract/site-record.ts';
 import { type ApiError, errorSentence, isApiError } from '../../lib/api-error.ts';
 import { metres, number } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';

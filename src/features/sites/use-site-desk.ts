@@ -1,6 +1,7 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 import type { InputOf } from '../../contract/endpoint.ts';
-import type { changeSite, Site, SiteRecord } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
+import type { changeSite, Site } from '../../contract/sites.ts';
 import { type ApiError, isApiError } from '../../lib/api-error.ts';
 import { type ProgrammeKey, useSiteActs } from './site-queries.ts';
 

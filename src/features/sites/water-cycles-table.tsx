@@ -1,4 +1,4 @@
-import type { SiteWater } from '../../contract/sites.ts';
+import type { SiteWater } from '../../contract/site-water.ts';
 import { MOST_CYCLES, waterCycles } from '../../engine/sites/water-cycles.ts';
 import { list, number, percent, withUnit } from '../../lib/format.ts';
 

@@ -1,6 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import { type FormEvent, useEffect, useId, useState } from 'react';
-import { bleedDestinations, type SiteRecord, SiteWater } from '../../contract/sites.ts';
+import type { SiteRecord } from '../../contract/site-record.ts';
+import { bleedDestinations, SiteWater } from '../../contract/site-water.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { type FormProblems, noProblems, problemsOfIssues } from '../../lib/form-problems.ts';
 import { Button } from '../../ui/button.tsx';

@@ -1,6 +1,7 @@
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import { siteLetters } from '../../../server/features/sites/site-letters.ts';
-import type { Site, SitePage, SiteRecord } from '../../../src/contract/sites.ts';
+import type { SiteRecord } from '../../../src/contract/site-record.ts';
+import type { Site, SitePage } from '../../../src/contract/sites.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { insertStationsWithYears } from '../../support/stations-with-years.ts';
 

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { lazy, type ReactNode, Suspense, useCallback, useMemo, useRef, useState } from 'react';
+import { lazy, type ReactNode, Suspense, useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { PlaceFigures } from '../../../contract/place-figures.ts';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import { LayerChoice } from '../../../features/runs/layer-choice.tsx';
@@ -80,43 +80,67 @@ export function MapSheet({ ids, map }: MapSheetProps) {
 
   const surface = useSurfaceOnMap({ ids, map, draft: asked, address, changeAddress });
   const toldCamera = useRef<string | null>(null);
-  const sheet = (
-    <SheetMap
-      {...sheetPlaces}
-      inks={inked.inks}
-      sentence={(each) => sentenceOf(each, places, (found) => placeSentence(found, layer, depression))}
-      chosen={chosen}
-      onChoose={choose}
-      onPoint={(point) => changeAddress({ point, place: null })}
-      {...(moving.move === null ? {} : { onMoveSite: moving.move })}
-      point={address.point}
-      camera={address.camera}
-      onView={(camera, seen, byHand) => {
-        box.current = seen;
-        const printed = printCamera(camera);
-        if (byHand && printed !== toldCamera.current) changeAddress({ camera }, { replace: true });
-        toldCamera.current = printed;
-      }}
-      legend={
-        <>
-          <LayerChoice
-            layer={layer}
-            onChoose={(next) => changeAddress({ layer: next }, { replace: next.kind === layer.kind })}
-          />
-          <LayerLegend
-            title={layerTitle(layer)}
-            unit={layerUnit(layer)}
-            scale={inked.scale}
-            places={inked.legend}
-            noneWords={layer.kind === 'score' ? 'No score' : 'No figure'}
-            {...(layer.kind === 'grade' ? { classNames: inked.scale.limits.slice(0, -1).map(gradeOf) } : {})}
-          />
-          {surface.legend}
-        </>
-      }
-    >
-      {surface.layer}
-    </SheetMap>
+  const move = useRef(moving.move);
+  useEffect(() => {
+    move.current = moving.move;
+  });
+  const mayMove = moving.move !== null;
+  const { point, camera } = address;
+  // A slider moves many times between two answers: the map is looked at anew only when there is something new to draw.
+  const sheet = useMemo(
+    () => (
+      <SheetMap
+        {...sheetPlaces}
+        inks={inked.inks}
+        sentence={(each) => sentenceOf(each, places, (found) => placeSentence(found, layer, depression))}
+        chosen={chosen}
+        onChoose={choose}
+        onPoint={(at) => changeAddress({ point: at, place: null })}
+        {...(mayMove ? { onMoveSite: (id, to) => move.current?.(id, to) } : {})}
+        point={point}
+        camera={camera}
+        onView={(next, seen, byHand) => {
+          box.current = seen;
+          const printed = printCamera(next);
+          if (byHand && printed !== toldCamera.current) changeAddress({ camera: next }, { replace: true });
+          toldCamera.current = printed;
+        }}
+        legend={
+          <>
+            <LayerChoice
+              layer={layer}
+              onChoose={(next) => changeAddress({ layer: next }, { replace: next.kind === layer.kind })}
+            />
+            <LayerLegend
+              title={layerTitle(layer)}
+              unit={layerUnit(layer)}
+              scale={inked.scale}
+              places={inked.legend}
+              noneWords={layer.kind === 'score' ? 'No score' : 'No figure'}
+              {...(layer.kind === 'grade' ? { classNames: inked.scale.limits.slice(0, -1).map(gradeOf) } : {})}
+            />
+            {surface.legend}
+          </>
+        }
+      >
+        {surface.layer}
+      </SheetMap>
+    ),
+    [
+      sheetPlaces,
+      inked,
+      places,
+      layer,
+      depression,
+      chosen,
+      choose,
+      changeAddress,
+      mayMove,
+      point,
+      camera,
+      surface.layer,
+      surface.legend,
+    ],
   );
   const props: SheetProps = {
     map: (

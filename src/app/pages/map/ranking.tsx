@@ -1,3 +1,4 @@
+import { memo, useCallback } from 'react';
 import type { MapPlaces } from '../../../features/runs/map-places.ts';
 import { PlaceList } from '../../../features/runs/place-list.tsx';
 import { number } from '../../../lib/format.ts';
@@ -16,9 +17,19 @@ interface RankingProps {
 }
 
 /** Sites by score, or stations where the programme has no sites yet; either can be asked for. */
-export function Ranking({ places, address, changeAddress, chosen, onChoose, inks, isBehind }: RankingProps) {
+export const Ranking = memo(function Ranking({
+  places,
+  address,
+  changeAddress,
+  chosen,
+  onChoose,
+  inks,
+  isBehind,
+}: RankingProps) {
   const { stations, sites } = places;
-  const kind: PlaceKind = sites.length === 0 ? 'station' : (address.list ?? 'site');
+  // Unless one of them was asked for, the list is the one that holds the chosen place.
+  const kind: PlaceKind = sites.length === 0 ? 'station' : (address.list ?? chosen?.kind ?? 'site');
+  const colourOf = useCallback((id: string) => inks.get(id)?.colour ?? null, [inks]);
   return (
     <div className="flex min-h-0 flex-1 flex-col">
       <div className="mb-1.5 flex items-baseline gap-3">
@@ -40,12 +51,12 @@ export function Ranking({ places, address, changeAddress, chosen, onChoose, inks
         onChoose={(id) => onChoose({ kind, id })}
         typed={address.find}
         onType={(find) => changeAddress({ find }, { replace: true })}
-        colourOf={(id) => inks.get(id)?.colour ?? null}
+        colourOf={colourOf}
         isBehind={isBehind}
       />
     </div>
   );
-}
+});
 
 interface HeadingProps {
   readonly kind: PlaceKind;

@@ -1,5 +1,6 @@
-import { useCallback, useMemo } from 'react';
+import { useCallback, useEffect, useMemo, useRef } from 'react';
 import { useSearchParams } from 'react-router-dom';
+import { useSame } from '../../../lib/use-same.ts';
 import { changedSearch, type MapAddress, readMapAddress } from './map-address.ts';
 
 interface ChangeOptions {
@@ -12,12 +13,23 @@ export type ChangeAddress = (changes: Partial<MapAddress>, options?: ChangeOptio
 /** The state of the map as its address has it, and the way to change it. */
 export function useMapAddress(): [MapAddress, ChangeAddress] {
   const [search, setSearch] = useSearchParams();
-  const address = useMemo(() => readMapAddress(search), [search]);
-  const change = useCallback<ChangeAddress>(
+  const address = useParts(useMemo(() => readMapAddress(search), [search]));
+  const latest = useRef(setSearch);
+  useEffect(() => {
+    latest.current = setSearch;
+  });
+  const change = useCallback<ChangeAddress>((changes, { replace = false } = {}) => {
     // The address itself, not its last rendering: two changes in a row are two changes.
-    (changes, { replace = false } = {}) =>
-      setSearch(changedSearch(new URLSearchParams(window.location.search), changes), { replace }),
-    [setSearch],
-  );
+    latest.current(changedSearch(new URLSearchParams(window.location.search), changes), { replace });
+  }, []);
   return [address, change];
+}
+
+/** Parts that say the same stay the same: a slider that changes the draft draws no map anew. */
+function useParts(address: MapAddress): MapAddress {
+  const place = useSame(address.place);
+  const point = useSame(address.point);
+  const layer = useSame(address.layer);
+  const camera = useSame(address.camera);
+  return useMemo(() => ({ ...address, place, point, layer, camera }), [address, place, point, layer, camera]);
 }

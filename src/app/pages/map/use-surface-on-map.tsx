@@ -1,4 +1,4 @@
-import { lazy, type ReactNode, Suspense } from 'react';
+import { lazy, type ReactNode, Suspense, useMemo } from 'react';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { useSurface } from '../../../features/runs/use-surface.ts';
@@ -28,22 +28,29 @@ export function useSurfaceOnMap(on: {
   const isOn = address.surface && isScore;
   const { briefVersionId } = map.brief;
   const { shown, off, fault, isPending } = useSurface({ ids, briefVersionId, draft, isOn, pending: map.pending });
-  if (!isScore) return { layer: null, legend: null };
-  return {
-    layer:
-      shown === null ? null : (
+  const isShown = address.surface;
+  const note = off ?? (fault === null ? null : errorSentence(fault));
+  const layer = useMemo(
+    () =>
+      !isScore || shown === null ? null : (
         <Suspense>
           <SurfaceLayer cells={shown.cells} scores={shown.scores} />
         </Suspense>
       ),
-    legend: (
-      <SurfaceLegend
-        isOn={address.surface}
-        onSwitch={(surface) => changeAddress({ surface }, { replace: true })}
-        note={off ?? (fault === null ? null : errorSentence(fault))}
-        error={shown?.error ?? null}
-        isPending={isPending}
-      />
-    ),
-  };
+    [isScore, shown],
+  );
+  const legend = useMemo(
+    () =>
+      isScore ? (
+        <SurfaceLegend
+          isOn={isShown}
+          onSwitch={(surface) => changeAddress({ surface }, { replace: true })}
+          note={note}
+          error={shown?.error ?? null}
+          isPending={isPending}
+        />
+      ) : null,
+    [isScore, isShown, note, shown, isPending, changeAddress],
+  );
+  return { layer, legend };
 }
