@@ -129,3 +129,25 @@ test('a viewer reads a brief and its sources, and cannot change it', async () =>
   expect(await page.getByLabel('Direct effectiveness').isDisabled()).toBe(true);
   expect(await page.getByRole('button', { name: /^Save/ }).count()).toBe(0);
 });
+
+test('a viewer sets two places side by side, and the address brings them back', async () => {
+  await enterAs('viewer');
+  await page.goto(page.url().replace(/\/briefs.*$/, '/compare'));
+  const names = ['Ashveld Technical School', 'Kite Hollow Primary'];
+  for (const [count, name] of names.entries()) {
+    await page.getByLabel('Add a place by its name').fill(name);
+    await page.getByRole('button', { name, exact: true }).click();
+    await expect.poll(() => page.getByRole('button', { name: /^Take .* out$/ }).count(), SOON).toBe(count + 1);
+  }
+  await page.getByRole('table', { name: /^Figures side by side/ }).waitFor(SOON);
+  await page.getByRole('img', { name: /draws at each rank/ }).waitFor(SOON);
+  const title = await page.getByRole('list', { name: 'Side by side' }).textContent();
+  await expectInOrder('comparison');
+  await page.setViewportSize({ width: 390, height: 844 });
+  await page.reload();
+  await expect.poll(() => page.getByRole('list', { name: 'Side by side' }).textContent(), SOON).toBe(title);
+  await page.getByRole('img', { name: /draws at each rank/ }).waitFor(SOON);
+  await expectInOrder('comparison on a phone');
+  await page.goBack();
+  await expect.poll(() => page.getByRole('button', { name: /^Take .* out$/ }).count(), SOON).toBe(1);
+});
