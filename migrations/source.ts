@@ -4,12 +4,14 @@ import * as firstLight from './0001-first-light.ts';
 import * as workerPools from './0002-worker-pools.ts';
 import * as derivedYears from './0003-derived-years.ts';
 import * as weatherRoom from './0004-weather-room.ts';
+import * as accounts from './0009-accounts.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
   '0002-worker-pools': workerPools,
   '0003-derived-years': derivedYears,
   '0004-weather-room': weatherRoom,
+  '0009-accounts': accounts,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;

@@ -15,6 +15,8 @@ import { readStoredFile } from './features/weather/read-stored-file.ts';
 import { repeat } from './jobs/repeat.ts';
 import { runJobs } from './jobs/run-jobs.ts';
 import type { Log } from './log.ts';
+import type { Mailer } from './mail/mailer.ts';
+import { queueWaitingMails, sendMail } from './mail/send-mail.ts';
 import type { OriginalStore } from './storage/original-store.ts';
 
 export interface WorkerOptions {
@@ -22,16 +24,19 @@ export interface WorkerOptions {
   readonly storage: OriginalStore;
   readonly relief: Relief;
   readonly log: Log;
+  /** Null: mails wait to be read in the application. */
+  readonly mailer?: Mailer | null;
 }
 
 const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
-  const { databaseUrl, storage, relief, log } = options;
+  const { databaseUrl, storage, relief, log, mailer = null } = options;
   const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
   try {
     await queueMissingRuns(db);
+    if (mailer !== null) await queueWaitingMails(db);
     const jobs = await runJobs({
       db,
       databaseUrl,
@@ -52,6 +57,11 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
           },
           dead: (year) => noteJudgingFailure(db, year),
         },
+        'send-mail': {
+          run: (mail) => sendMail({ db, mailer }, mail),
+          // The mail itself says what failed last.
+          dead: async () => undefined,
+        },
       },
     });
     const looking = repeat({
@@ -64,6 +74,7 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       async close() {
         await looking.stop();
         await jobs.close();
+        mailer?.close();
         await db.destroy();
       },
     };

@@ -81,6 +81,8 @@ async function makeDeps(start: Start, made: { databaseUrl: string; clientDir: st
     now: () => new Date(),
     storage: await openStore({ objectStore: start.config.objectStore, originalsDir: home.originalsDir }),
     uploadsDir: home.uploadsDir,
+    publicUrl: publicUrlOf(start.config),
+    sendsMail: start.config.smtp !== null,
     sessionSecrets: home.secrets.sessionSecrets,
     trustProxy: start.config.trustProxy,
     clientDir,
@@ -88,6 +90,12 @@ async function makeDeps(start: Start, made: { databaseUrl: string; clientDir: st
     feed,
     log,
   };
+}
+
+/** Links lead to this machine where nobody has said how others reach it. */
+function publicUrlOf({ publicUrl, host, port }: Config): string {
+  const name = isLoopback(host) ? host : 'localhost';
+  return publicUrl ?? `http://${name.includes(':') ? `[${name}]` : name}:${port}`;
 }
 
 /** Fills a home with the demo, or makes the link with which its first team is set up; answers what to say when ready. */

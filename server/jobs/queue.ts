@@ -5,11 +5,15 @@ export interface JobPayloads {
   'read-weather-file': { readonly teamId: string; readonly fileId: string };
   'open-weather-archive': { readonly teamId: string; readonly archiveId: string };
   'judge-year': { readonly teamId: string; readonly weatherYearId: string; readonly briefVersionId: string };
+  'send-mail': { readonly mailId: string };
 }
 export type JobName = keyof JobPayloads;
 
 /** Waits before tries grow as e^n seconds, so the last of five comes about a minute and a half after the first. */
 export const MAX_ATTEMPTS = 5;
+
+/** A mail server that is away for the night is met again: the last of twelve tries comes after most of a day. */
+const MAIL_ATTEMPTS = 12;
 
 /**
  * Queues a job in the caller's transaction: it exists exactly when the transaction commits.
@@ -22,7 +26,7 @@ export async function addJob<N extends JobName>(
   await db.raw(
     `select graphile_worker.add_job(
        identifier => ?::text, payload => ?::json, job_key => ?::text, max_attempts => ?::integer)`,
-    [job.task, JSON.stringify(job.payload), job.jobKey, MAX_ATTEMPTS],
+    [job.task, JSON.stringify(job.payload), job.jobKey, job.task === 'send-mail' ? MAIL_ATTEMPTS : MAX_ATTEMPTS],
   );
 }
 
@@ -44,6 +48,7 @@ const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] 
   'read-weather-file': ['teamId', 'fileId'],
   'open-weather-archive': ['teamId', 'archiveId'],
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
+  'send-mail': ['mailId'],
 };
 
 /** The payload of a job out of the queue. @throws TypeError when it is not one that `addJob` writes */

@@ -159,6 +159,7 @@ function taskList(tasks: JobTasks): TaskList {
     'read-weather-file': (payload) => tasks['read-weather-file'].run(payloadOf('read-weather-file', payload)),
     'open-weather-archive': (payload) => tasks['open-weather-archive'].run(payloadOf('open-weather-archive', payload)),
     'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
+    'send-mail': (payload) => tasks['send-mail'].run(payloadOf('send-mail', payload)),
   };
   return list;
 }
@@ -176,6 +177,8 @@ async function bury(
         return await tasks['open-weather-archive'].dead(payloadOf('open-weather-archive', job.payload));
       case 'judge-year':
         return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
+      case 'send-mail':
+        return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload));
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

@@ -156,6 +156,8 @@ describe('the environment', () => {
       seed: 'demo',
       trustProxy: 'loopback',
       objectStore: null,
+      publicUrl: null,
+      smtp: null,
     };
     expect(readConfig({})).toEqual(expected);
     expect(readConfig({ PORT: '', HOST: ' ', SEED: '' })).toEqual(expected);

@@ -8,6 +8,7 @@ import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
+import type { Actor } from '../../http/request-context.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { type ExportParts, exportRunHours } from './export-run-hours.ts';
@@ -69,12 +70,17 @@ export function runsRoutes(router: Router, deps: Deps, { threads, yearThread, re
 
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
     const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
-    return await exportRunHours({ db, yearThread }, { ...params, role, signal });
+    return await exportRunHours({ db, yearThread }, { ...params, role, closed: closedTo(actor), signal });
   });
 
-  mount(router, deps, getRunHours, async ({ params }) => {
-    const body = await readRunHours(db, params);
+  mount(router, deps, getRunHours, async ({ params }, { actor }) => {
+    const body = await readRunHours(db, { ...params, closed: closedTo(actor) });
     if (body === null) throw new AppError('not_found', 'There is no such run in this team.');
     return { body };
   });
+}
+
+/** A run is named without its programme, so the rule of the path cannot see whose it is. */
+function closedTo(actor: Actor): readonly string[] {
+  return actor.kind === 'person' ? [...actor.closedProgrammes] : [];
 }

@@ -39,6 +39,7 @@ async function startWith(reading: {
     'read-weather-file': { dead: nothing, ...reading },
     'open-weather-archive': { run: nothing, dead: nothing },
     'judge-year': { run: nothing, dead: nothing },
+    'send-mail': { run: nothing, dead: nothing },
   };
   worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
 }
