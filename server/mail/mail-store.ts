@@ -65,3 +65,21 @@ export async function listUnsentMailIds(db: Knex, days: number): Promise<readonl
 export async function deleteKeyMailsBefore(db: Knex, at: Date): Promise<void> {
   await db.raw('delete from mails where opens_account and made_at < ?', [at]);
 }
+
+export interface WaitingMail {
+  readonly at: Date;
+  readonly recipient: string;
+  readonly subject: string;
+  readonly text: string;
+  /** What the mail server said last; null where it was never asked. */
+  readonly failure: string | null;
+}
+
+/** Every mail that has not gone out, oldest first, with the keys that some carry: for the operator alone. */
+export async function listOutbox(db: Knex): Promise<readonly WaitingMail[]> {
+  const { rows } = await db.raw<{ rows: WaitingMail[] }>(
+    `select mails.made_at as at, mails.recipient, mails.subject, mails.text, mails.failure from mails
+     where mails.sent_at is null and mails.text is not null order by mails.made_at, mails.id`,
+  );
+  return rows;
+}
