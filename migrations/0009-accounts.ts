@@ -111,6 +111,8 @@ export async function up(knex: Knex): Promise<void> {
     create index notices_person on notices (person_id, made_at desc, id);
 
     alter table weather_batches add column told_at timestamptz;
+    -- What was brought before anybody was told of anything is no news.
+    update weather_batches set told_at = now();
 
     grant select, insert, update, delete on
       recovery_codes, account_keys, sign_in_failures, invitations, programme_members, mails, notices to muslin_app;

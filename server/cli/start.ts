@@ -117,7 +117,7 @@ async function serve(start: Start, nameAddress: (address: string) => void): Prom
   const made = await startDatabaseAndBuild(start);
   context.signal.throwIfAborted();
   const deps = await makeDeps(start, made);
-  const settings = { databaseUrl: made.databaseUrl, originalsDir: home.originalsDir };
+  const settings = { databaseUrl: made.databaseUrl, originalsDir: home.originalsDir, publicUrl: deps.publicUrl };
   const worker = keepWorkerRunning({ rootDir: context.rootDir, settings, log });
   stops.push('The job worker', worker.stop);
   const words = await welcome(start, deps);

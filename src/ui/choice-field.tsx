@@ -15,7 +15,7 @@ interface ChoiceFieldProps {
 export function ChoiceField({ label, value, onChange, children, isLabelHidden, isDisabled }: ChoiceFieldProps) {
   const id = useId();
   return (
-    <div>
+    <div className="relative">
       <label htmlFor={id} className={isLabelHidden ? 'sr-only' : 'mb-1 block text-fine font-semibold text-soft'}>
         {label}
       </label>

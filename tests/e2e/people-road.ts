@@ -1,7 +1,7 @@
 /** J8 of the product in the browser, as far as people go: a lead invites, somebody joins, the lead changes a role and ends sessions. */
 import { generateSync } from 'otplib';
 import type { Browser, Page } from 'playwright-core';
-import { expect } from 'vitest';
+import { expect, onTestFailed } from 'vitest';
 import { watchedPage } from '../support/browser.ts';
 import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
 
@@ -24,7 +24,9 @@ async function signInTo(page: Page, address: string, account: { email: string; p
 
 export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }: Road): Promise<void> {
   const leads = await watchedPage(browser, { origin, viewport: desk });
+  onTestFailed(() => leads.picture('people-of-a-lead'));
   await signInTo(leads.page, `/teams/${teamId}/team`, lead);
+  await leads.page.getByRole('heading', { name: 'Invitations' }).waitFor();
   await leads.page.getByRole('textbox', { name: 'E-mail' }).fill(INVITED.email);
   await leads.page.getByLabel('Role', { exact: true }).selectOption('viewer');
   await leads.page.getByRole('button', { name: 'Invite' }).click();
@@ -36,6 +38,7 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   const link = /\/invitations\/[\w-]{43}/.exec(mail ?? '')?.[0] ?? '';
 
   const joins = await watchedPage(browser, { origin, viewport: desk });
+  onTestFailed(() => joins.picture('people-who-join'));
   const { page } = joins;
   await page.goto(link);
   await page.getByRole('textbox', { name: 'Your name' }).fill('Newly Joined');

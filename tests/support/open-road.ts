@@ -114,6 +114,7 @@ export async function openRoad(options: { database?: TestDatabase } = {}): Promi
         databaseUrl,
         storage: options?.storage ?? storage,
         relief: shippedRelief(),
+        publicUrl: deps.publicUrl,
         log,
       });
       const closing = {

@@ -43,14 +43,14 @@ function Waiting() {
         </Notice>
       )}
       {items.length === 0 ? <p>No mail waits.</p> : null}
-      <ul aria-label="Mails" className="grid gap-5">
+      <ul aria-label="Mails" className="grid grid-cols-[minmax(0,1fr)] gap-5">
         {items.map(({ id, recipient, subject, text, madeAt }) => (
           <li key={id} className="max-w-[46rem] border-t border-line pt-3">
             <h2 className="font-semibold">{subject}</h2>
             <p className="text-fine text-soft">
               To {recipient}, {moment(madeAt)}
             </p>
-            <p className="my-2 whitespace-pre-wrap break-words">{text}</p>
+            <p className="my-2 whitespace-pre-wrap [overflow-wrap:anywhere]">{text}</p>
             <CopyButton text={text} what={`the mail to ${recipient}`} />
           </li>
         ))}
