@@ -66,6 +66,8 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
 
   await page.reload();
   await page.getByRole('button', { name: 'Sign in' }).waitFor();
+  // The password alone was answered with 401, and the page asked for the code.
+  expect(joins.forgive(/401 .*\/api\/session\)$/)).toBe(1);
   await joins.close();
 }
 
