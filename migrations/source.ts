@@ -8,6 +8,7 @@ import * as depressionArray from './0005-depression-array.ts';
 import * as sites from './0006-sites.ts';
 import * as runFigures from './0007-run-figures.ts';
 import * as gazetteer from './0008-gazetteer.ts';
+import * as accounts from './0009-accounts.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
@@ -18,6 +19,7 @@ const migrations = {
   '0006-sites': sites,
   '0007-run-figures': runFigures,
   '0008-gazetteer': gazetteer,
+  '0009-accounts': accounts,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;

@@ -6,7 +6,9 @@ import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from './deps.ts';
 import { sessionStands } from './features/accounts/account-store.ts';
 import { checkPassword } from './features/accounts/check-password.ts';
+import { makePerson } from './features/accounts/make-person.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
+import { readSession } from './features/accounts/read-session.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
 import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
@@ -24,7 +26,8 @@ import { switchRuleOff } from './features/stations/switch-rule.ts';
 import { findToken } from './features/teams/find-token.ts';
 import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
-import { findRoles } from './features/teams/team-read-model.ts';
+import { FIRST_PROGRAMME } from './features/teams/start-team.ts';
+import { findStanding } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
 import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
@@ -40,9 +43,6 @@ import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
 import { shippedRelief } from './tiles/relief.ts';
 import { reliefRouter } from './tiles/relief-router.ts';
 import { tilesRouter } from './tiles/tiles-router.ts';
-
-/** The name under which the first programme of a team that somebody sets up begins; it can be renamed. */
-const FIRST_PROGRAMME = 'First programme';
 
 /** Often enough for proxies that cut a silent connection after a minute (common practice). */
 const HEARTBEAT_MS = 15_000;
@@ -105,7 +105,11 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   });
   placesRoutes(router, deps);
   methodRoutes(router, deps);
-  teamsRoutes(router, deps);
+  teamsRoutes(router, deps, {
+    startBrief,
+    makePerson,
+    readSession: (personId) => readSession(deps.db, { personId, at: deps.now() }),
+  });
   return router;
 }
 
@@ -116,7 +120,7 @@ function peopleLookup({ db, now }: Deps): PeopleLookup {
       dummyHash ??= makeDummyHash();
       return checkPassword({ db, dummyHash }, given);
     },
-    findRoles: (personId) => findRoles(db, personId),
+    findStanding: (personId) => findStanding(db, { personId, at: now() }),
     findToken: (token) => findToken(db, { token, at: now() }),
     sessionStands: (id) => sessionStands(db, { id, at: now() }),
   };

@@ -11,6 +11,10 @@ export interface Deps {
   readonly storage: OriginalStore;
   /** Where uploads wait while they are read; emptied of each as its request ends. */
   readonly uploadsDir: string;
+  /** Where links in mails lead: scheme and host, without a path. Never taken from a request, which its sender could word. */
+  readonly publicUrl: string;
+  /** Whether a worker hands mails on; else they wait to be read here. */
+  readonly sendsMail: boolean;
   /** The first signs; the others are still believed, so that a secret can be replaced without signing anyone out. */
   readonly sessionSecrets: readonly [string, ...string[]];
   /** Whose X-Forwarded-For counts: an address, a range, or one of Express's names such as `loopback`. */

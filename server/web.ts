@@ -4,8 +4,10 @@ import { createApp, makeWebThreads, makeWebYearThread } from './app.ts';
 import type { Config } from './config.ts';
 import type { Deps } from './deps.ts';
 import { deleteExpiredSessions } from './features/accounts/account-store.ts';
+import { deleteOldFailures } from './features/accounts/failure-store.ts';
 import { deleteRequestCountsBefore } from './http/request-counts-store.ts';
 import { removeStaleUploads } from './http/stale-uploads.ts';
+import { deleteKeyMailsBefore } from './mail/mail-store.ts';
 
 /** Somebody else listens where we should. */
 export class PortTakenError extends Error {
@@ -35,8 +37,16 @@ const FINISH_WITHIN_MS = 10_000;
 const TIDY_EVERY_MS = 10 * 60_000;
 /** Counts of minutes, and uploads of requests, that are long over. */
 const KEPT_MS = 60 * 60_000;
+/** Longer than any key in a mail holds. */
+const KEY_MAILS_KEPT_MS = 15 * 24 * 60 * 60_000;
 
-export async function startWeb({ config, deps }: { config: Omit<Config, 'objectStore'>; deps: Deps }): Promise<Web> {
+export async function startWeb({
+  config,
+  deps,
+}: {
+  config: Omit<Config, 'objectStore' | 'publicUrl' | 'smtp'>;
+  deps: Deps;
+}): Promise<Web> {
   const closing = new AbortController();
   const threads = makeWebThreads();
   const yearThread = makeWebYearThread();
@@ -93,6 +103,8 @@ async function tidy({ db, now, log, uploadsDir }: Deps): Promise<void> {
     await removeStaleUploads(uploadsDir, before);
     await deleteExpiredSessions(db, now());
     await deleteRequestCountsBefore(db, before);
+    await deleteKeyMailsBefore(db, new Date(now().getTime() - KEY_MAILS_KEPT_MS));
+    await deleteOldFailures(db, now());
   } catch (error) {
     log.error({ error }, 'tidying up uploads, sessions and counts failed');
   }

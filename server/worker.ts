@@ -13,9 +13,12 @@ import {
 } from './features/weather/note-failure.ts';
 import { openArchive } from './features/weather/open-archive.ts';
 import { readStoredFile } from './features/weather/read-stored-file.ts';
+import { tellFinishedImports } from './features/weather/tell-finished-imports.ts';
 import { repeat } from './jobs/repeat.ts';
 import { runJobs } from './jobs/run-jobs.ts';
 import type { Log } from './log.ts';
+import type { Mailer } from './mail/mailer.ts';
+import { queueWaitingMails, sendMail } from './mail/send-mail.ts';
 import type { OriginalStore } from './storage/original-store.ts';
 
 export interface WorkerOptions {
@@ -23,16 +26,22 @@ export interface WorkerOptions {
   readonly storage: OriginalStore;
   readonly relief: Relief;
   readonly log: Log;
+  /** Where links in mails lead. */
+  readonly publicUrl: string;
+  /** Null: mails wait to be read in the application. */
+  readonly mailer?: Mailer | null;
 }
 
 const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
+const LOOK_FOR_FINISHED_EVERY_MS = 30_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
-  const { databaseUrl, storage, relief, log } = options;
+  const { databaseUrl, storage, relief, log, publicUrl, mailer = null } = options;
   const db = connect({ databaseUrl, applicationName: 'muslin worker', maxConnections: 4 });
   try {
     await queueMissingRuns(db);
+    if (mailer !== null) await queueWaitingMails(db);
     const jobs = await runJobs({
       db,
       databaseUrl,
@@ -58,6 +67,11 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
           // The next change of a site, a station or a brief, and the next start, look again.
           dead: () => Promise.resolve(),
         },
+        'send-mail': {
+          run: (mail) => sendMail({ db, mailer }, mail),
+          // The mail itself says what failed last.
+          dead: async () => undefined,
+        },
       },
     });
     const looking = repeat({
@@ -66,10 +80,18 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       log,
       work: () => noteStrandedFiles(db),
     });
+    const telling = repeat({
+      everyMs: LOOK_FOR_FINISHED_EVERY_MS,
+      what: 'telling of imports that have been read',
+      log,
+      work: () => tellFinishedImports({ db, publicUrl }, new Date()),
+    });
     return {
       async close() {
         await looking.stop();
+        await telling.stop();
         await jobs.close();
+        mailer?.close();
         await db.destroy();
       },
     };

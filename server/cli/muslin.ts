@@ -7,6 +7,7 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
   ledger FILE --brief PRESET     test every hour of a file against a preset: hour classes, verdict, score
   hours FILE --brief PRESET      the same hour by hour, as CSV: weather, class, stage, supply, room, water, reason, line
   rerun ID                       judge a stored run of MUSLIN_HOME again: the same to the byte or not
+  outbox                         print the mails of MUSLIN_HOME that have not gone out, with the keys in them
   bench NAMES                    time the product against the plain way of doing the same
 
 Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H for a file that does not say where it was recorded,
@@ -22,6 +23,7 @@ const commands: Readonly<Record<string, (context: CommandContext) => Promise<Exi
   ledger: async (context) => (await import('./commands/ledger.ts')).ledger(context),
   hours: async (context) => (await import('./commands/hours.ts')).hours(context),
   rerun: async (context) => (await import('./commands/rerun.ts')).rerun(context),
+  outbox: async (context) => (await import('./commands/outbox.ts')).outbox(context),
   bench: async (context) => (await import('./commands/bench.ts')).bench(context),
 };
 

@@ -82,6 +82,8 @@ async function makeDeps(start: Start, made: { database: PreparedDatabase; client
     now: () => new Date(),
     storage: await openStore({ objectStore: start.config.objectStore, originalsDir: home.originalsDir }),
     uploadsDir: home.uploadsDir,
+    publicUrl: publicUrlOf(start.config),
+    sendsMail: start.config.smtp !== null,
     sessionSecrets: home.secrets.sessionSecrets,
     trustProxy: start.config.trustProxy,
     clientDir,
@@ -89,6 +91,12 @@ async function makeDeps(start: Start, made: { database: PreparedDatabase; client
     feed,
     log,
   };
+}
+
+/** Links lead to this machine where nobody has said how others reach it. */
+function publicUrlOf({ publicUrl, host, port }: Config): string {
+  const name = isLoopback(host) ? host : 'localhost';
+  return publicUrl ?? `http://${name.includes(':') ? `[${name}]` : name}:${port}`;
 }
 
 /** Fills a home with the demo, or makes the link with which its first team is set up; answers what to say when ready. */
@@ -110,7 +118,7 @@ async function serve(start: Start, nameAddress: (address: string) => void): Prom
   const made = await startDatabaseAndBuild(start);
   context.signal.throwIfAborted();
   const deps = await makeDeps(start, made);
-  const settings = { databaseUrl: deps.databaseUrl, originalsDir: home.originalsDir };
+  const settings = { databaseUrl: deps.databaseUrl, originalsDir: home.originalsDir, publicUrl: deps.publicUrl };
   const worker = keepWorkerRunning({ rootDir: context.rootDir, settings, log });
   stops.push('The job worker', worker.stop);
   const gazetteer = path.join(context.rootDir, 'data/gazetteer/gazetteer.tsv.gz');

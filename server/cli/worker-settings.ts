@@ -6,7 +6,12 @@ import { CouldNotRun } from './could-not-run.ts';
 import { homePath, openHome } from './home.ts';
 
 /** What a worker works on; the start program tells its own as JSON in the environment variable MUSLIN_WORKER. */
-const WorkerSettings = z.strictObject({ databaseUrl: z.string(), originalsDir: z.string() });
+const WorkerSettings = z.strictObject({
+  databaseUrl: z.string(),
+  originalsDir: z.string(),
+  /** Where links in mails lead; left out: as the environment says. */
+  publicUrl: z.optional(z.string()),
+});
 export type WorkerSettings = z.infer<typeof WorkerSettings>;
 
 const VARIABLE = 'MUSLIN_WORKER';

@@ -5,13 +5,19 @@
 import type { Request, RequestHandler, Response } from 'express';
 import passportPkg from 'passport';
 import { Strategy as LocalStrategy } from 'passport-local';
-import type { Role } from '#contract/accounts.ts';
 import type { Deps } from '../deps.ts';
 import { AppError } from './app-error.ts';
 import { bearerToken, isBearer } from './bearer.ts';
-import type { Actor, SessionControl, TokenActor } from './request-context.ts';
+import type { Actor, SessionControl, Standing, TokenActor } from './request-context.ts';
 import { stateOf } from './request-state.ts';
 import { SESSION_COOKIE, sessions } from './session.ts';
+
+declare module 'express-session' {
+  interface SessionData {
+    /** What its person is shown of it. */
+    about: { readonly beganAt: string; readonly address: string | null; readonly browser: string | null };
+  }
+}
 
 declare global {
   namespace Express {
@@ -25,13 +31,16 @@ declare global {
 export interface PeopleLookup {
   /** The person to whom both belong, or null; takes as long for an unknown e-mail as for a wrong password. */
   checkPassword(given: { email: string; password: string }): Promise<string | null>;
-  /** The person's teams with the role in each; null when there is no such person (any more). */
-  findRoles(personId: string): Promise<ReadonlyMap<string, Role> | null>;
+  /** What the person is in which teams; null when there is no such person (any more). */
+  findStanding(personId: string): Promise<Standing | null>;
   /** Whom a token stands for; null when it is not known, expired, revoked, or its maker may no longer give it. */
   findToken(token: string): Promise<TokenActor | null>;
   /** Whether the session has neither ended nor expired. */
   sessionStands(sessionId: string): Promise<boolean>;
 }
+
+/** Browsers call themselves at length. */
+const LONGEST_BROWSER = 300;
 
 const signedOut: Actor = { kind: 'signed-out' };
 
@@ -49,8 +58,8 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
   );
 
   const actorOf = async (personId: string | undefined): Promise<Actor> => {
-    const roles = personId === undefined ? null : await people.findRoles(personId);
-    return personId === undefined || roles === null ? signedOut : { kind: 'person', personId, roles };
+    const standing = personId === undefined ? null : await people.findStanding(personId);
+    return personId === undefined || standing === null ? signedOut : { kind: 'person', personId, ...standing };
   };
 
   const identifyToken: RequestHandler = async (request, _response, next) => {
@@ -75,7 +84,7 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     const sessionId = request.sessionID;
     stateOf(request).identity = {
       actor: await actorOf(personId),
-      session: sessionControl({ passport, request, response }),
+      session: sessionControl({ passport, request, response, now: deps.now }),
       lookAgain: async () => ((await people.sessionStands(sessionId)) ? actorOf(personId) : signedOut),
     };
     next();
@@ -87,7 +96,8 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
 
 /** A program is known by its token on every request. */
 const noSession: SessionControl = {
-  signIn: () => Promise.reject(tokenDoesNotSignIn()),
+  id: '',
+  checkPassword: () => Promise.reject(tokenDoesNotSignIn()),
   begin: () => Promise.reject(tokenDoesNotSignIn()),
   end: () => Promise.resolve(),
 };
@@ -117,24 +127,28 @@ function sessionControl(web: {
   passport: passportPkg.Authenticator;
   request: Request;
   response: Response;
+  now: () => Date;
 }): SessionControl {
-  const { passport, request, response } = web;
+  const { passport, request, response, now } = web;
   const begin = (personId: string): Promise<void> =>
     new Promise((resolve, reject) => {
       // Passport makes a new session id here, so that an id planted before the sign-in is worth nothing.
-      request.logIn({ personId }, (error) => (error ? reject(error) : resolve()));
+      request.logIn({ personId }, (error) => {
+        if (error) return reject(error);
+        const browser = request.get('user-agent')?.slice(0, LONGEST_BROWSER) ?? null;
+        request.session.about = { beganAt: now().toISOString(), address: request.ip ?? null, browser };
+        resolve();
+      });
     });
   return {
+    id: request.sessionID,
     begin,
-    async signIn() {
-      const personId = await new Promise<string | null>((resolve, reject) => {
+    checkPassword: () =>
+      new Promise<string | null>((resolve, reject) => {
         const answer: passportPkg.AuthenticateCallback = (error, user) =>
           error ? reject(error) : resolve(user ? user.personId : null);
         passport.authenticate('local', answer)(request, response, reject);
-      });
-      if (personId !== null) await begin(personId);
-      return personId;
-    },
+      }),
     end: () =>
       new Promise((resolve, reject) => {
         request.session.destroy((error) => {

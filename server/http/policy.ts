@@ -23,7 +23,8 @@ export const signedIn: Policy = ({ actor }) => {
 
 /**
  * A member, in one of these roles, of the team that the path names in `:teamId`, or a token of that team with this scope. To
- * everyone else who is known the team does not exist, so that nobody learns which teams there are.
+ * everyone else who is known the team does not exist, so that nobody learns which teams there are; nor does a programme that the
+ * path names in `:programmeId` for those to whom it is closed.
  * @param scope left out, no token may
  */
 export function memberOf(roles: readonly Role[], scope?: TokenScope): Policy {
@@ -35,7 +36,8 @@ export function memberOf(roles: readonly Role[], scope?: TokenScope): Policy {
       return scope !== undefined && actor.scopes.includes(scope) ? 'allowed' : 'not_allowed';
     }
     const role = actor.roles.get(teamId);
-    if (role === undefined) return 'not_found';
+    const programmeId = (params.programmeId ?? '').toLowerCase();
+    if (role === undefined || actor.closedProgrammes.has(programmeId)) return 'not_found';
     return roles.includes(role) ? 'allowed' : 'not_allowed';
   };
 }

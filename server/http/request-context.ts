@@ -5,7 +5,14 @@ import type { TokenScope } from '#contract/tokens.ts';
 export type Actor =
   | { readonly kind: 'signed-out' }
   | TokenActor
-  | { readonly kind: 'person'; readonly personId: string; readonly roles: ReadonlyMap<string, Role> };
+  | ({ readonly kind: 'person'; readonly personId: string } & Standing);
+
+/** What a person is in which teams, as of now. */
+export interface Standing {
+  readonly roles: ReadonlyMap<string, Role>;
+  /** Programmes of these teams that are open to some members, and not to this person. */
+  readonly closedProgrammes: ReadonlySet<string>;
+}
 
 /** A program with an API token: it acts for the person who made the token, within one team and the token's scopes. */
 export interface TokenActor {
@@ -29,9 +36,11 @@ export interface UploadedFile {
 
 /** Begins and ends what a browser is remembered by. */
 export interface SessionControl {
-  /** Checks e-mail and password of the parsed body; answers the person and begins a session under a new id, or null. */
-  signIn(): Promise<string | null>;
-  /** Begins a session, under a new id, for a person who has just been made. */
+  /** Of the request; never told to anybody. */
+  readonly id: string;
+  /** The person to whom e-mail and password of the parsed body belong, or null. */
+  checkPassword(): Promise<string | null>;
+  /** Begins a session, under a new id. */
   begin(personId: string): Promise<void>;
   end(): Promise<void>;
 }

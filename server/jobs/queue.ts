@@ -12,11 +12,15 @@ export interface JobPayloads {
     readonly heightsM?: readonly number[];
   };
   'queue-site-runs': { readonly teamId: string; readonly programmeId: string };
+  'send-mail': { readonly mailId: string };
 }
 export type JobName = keyof JobPayloads;
 
 /** Waits before tries grow as e^n seconds, so the last of five comes about a minute and a half after the first. */
 export const MAX_ATTEMPTS = 5;
+
+/** A mail server that is away for the night is met again: the last of twelve tries comes after most of a day. */
+const MAIL_ATTEMPTS = 12;
 
 /**
  * Queues a job in the caller's transaction: it exists exactly when the transaction commits.
@@ -29,7 +33,7 @@ export async function addJob<N extends JobName>(
   await db.raw(
     `select graphile_worker.add_job(
        identifier => ?::text, payload => ?::json, job_key => ?::text, max_attempts => ?::integer)`,
-    [job.task, JSON.stringify(job.payload), job.jobKey, MAX_ATTEMPTS],
+    [job.task, JSON.stringify(job.payload), job.jobKey, job.task === 'send-mail' ? MAIL_ATTEMPTS : MAX_ATTEMPTS],
   );
 }
 
@@ -52,6 +56,7 @@ const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] 
   'open-weather-archive': ['teamId', 'archiveId'],
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
   'queue-site-runs': ['teamId', 'programmeId'],
+  'send-mail': ['mailId'],
 };
 
 /** The payload of a job out of the queue. @throws TypeError when it is not one that `addJob` writes */

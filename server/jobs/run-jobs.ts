@@ -160,6 +160,7 @@ function taskList(tasks: JobTasks): TaskList {
     'open-weather-archive': (payload) => tasks['open-weather-archive'].run(payloadOf('open-weather-archive', payload)),
     'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
     'queue-site-runs': (payload) => tasks['queue-site-runs'].run(payloadOf('queue-site-runs', payload)),
+    'send-mail': (payload) => tasks['send-mail'].run(payloadOf('send-mail', payload)),
   };
   return list;
 }
@@ -179,6 +180,8 @@ async function bury(
         return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
       case 'queue-site-runs':
         return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload));
+      case 'send-mail':
+        return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload));
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

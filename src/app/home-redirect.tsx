@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { Navigate, useParams } from 'react-router-dom';
+import { Link, Navigate, useParams } from 'react-router-dom';
 import { paths } from '../lib/paths.ts';
 import { sessionQuery } from '../lib/session-query.ts';
 import { lastTeam } from './last-team.ts';
@@ -15,7 +15,10 @@ export function HomeRedirect() {
     return (
       <main className="mx-auto max-w-xl p-6 pt-16">
         <h1 className="mb-3 text-title">You are in no team yet</h1>
-        <p>Ask the lead of your team to add you. Then load this page again.</p>
+        <p>
+          Ask the lead of your team to invite you, or make a team of your own:{' '}
+          <Link to={paths.account}>your account</Link> shows invitations and makes teams.
+        </p>
       </main>
     );
   }

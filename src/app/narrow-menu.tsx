@@ -1,7 +1,8 @@
 import { type ReactNode, type RefObject, useCallback, useEffect, useId, useRef, useState } from 'react';
-import { NavLink, useLocation } from 'react-router-dom';
+import { Link, NavLink, useLocation } from 'react-router-dom';
 import type { Membership, Session } from '../contract/accounts.ts';
 import { errorSentence } from '../lib/api-error.ts';
+import { paths } from '../lib/paths.ts';
 import { Button } from '../ui/button.tsx';
 import { accountWords, type ProgrammeLink, pageLinks } from './top-links.ts';
 import { useSignOut } from './use-sign-out.ts';
@@ -65,7 +66,9 @@ export function NarrowMenu({ person, team, programmes }: NarrowMenuProps) {
         ) : null}
         <Part title={accountWords(person, team)}>
           <div className="flex min-h-11 items-center justify-between gap-4">
-            <span className="min-w-0 truncate">{person.name}</span>
+            <Link to={paths.account} onClick={close} className="flex min-h-11 min-w-0 items-center truncate">
+              {person.name}: account and notices
+            </Link>
             <Button busy={leave.isPending} onClick={() => leave.mutate()}>
               Sign out
             </Button>

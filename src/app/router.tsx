@@ -22,9 +22,29 @@ const routes: RouteObject[] = [
         lazy: async () => ({ Component: (await import('../features/accounts/set-up-page.tsx')).SetUpPage }),
       },
       {
+        path: paths.forgotten,
+        lazy: async () => ({ Component: (await import('../features/accounts/new-password-page.tsx')).ForgottenPage }),
+      },
+      {
+        path: paths.newPassword.pattern,
+        lazy: async () => ({ Component: (await import('../features/accounts/new-password-page.tsx')).NewPasswordPage }),
+      },
+      {
+        path: paths.newAddress.pattern,
+        lazy: async () => ({ Component: (await import('../features/accounts/new-address-page.tsx')).NewAddressPage }),
+      },
+      {
+        path: paths.invitation.pattern,
+        lazy: async () => ({ Component: (await import('../features/accounts/invitation-page.tsx')).InvitationPage }),
+      },
+      {
         Component: SignedIn,
         children: [
           { path: paths.home, Component: HomeRedirect },
+          {
+            path: paths.account,
+            lazy: async () => ({ Component: (await import('../features/accounts/account-page.tsx')).AccountPage }),
+          },
           {
             path: paths.team.pattern,
             Component: TeamPages,
@@ -87,6 +107,22 @@ const routes: RouteObject[] = [
               {
                 path: paths.station.pattern,
                 lazy: async () => ({ Component: (await import('../features/stations/station-page.tsx')).StationPage }),
+              },
+              {
+                path: paths.people.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/teams/people/people-page.tsx')).PeoplePage,
+                }),
+              },
+              {
+                path: paths.programmes.pattern,
+                lazy: async () => ({
+                  Component: (await import('../features/teams/programmes/programmes-page.tsx')).ProgrammesPage,
+                }),
+              },
+              {
+                path: paths.mails.pattern,
+                lazy: async () => ({ Component: (await import('../features/teams/mails/mails-page.tsx')).MailsPage }),
               },
               {
                 path: paths.tokens.pattern,

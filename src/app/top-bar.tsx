@@ -1,7 +1,11 @@
+import { useQuery } from '@tanstack/react-query';
 import { lazy, Suspense } from 'react';
 import { Link, NavLink, useLocation, useNavigate } from 'react-router-dom';
 import type { Membership, Session } from '../contract/accounts.ts';
+import { listNotices } from '../contract/notices.ts';
 import { errorSentence } from '../lib/api-error.ts';
+import { apiQuery } from '../lib/api-query.ts';
+import { plural } from '../lib/format.ts';
 import { paths } from '../lib/paths.ts';
 import { useMedia } from '../lib/use-media.ts';
 import type { MenuGroup } from '../ui/menu.tsx';
@@ -91,6 +95,7 @@ function AccountMenu({ person, team, programmes }: AccountMenuProps) {
   const navigate = useNavigate();
   const location = useLocation();
   const leave = useSignOut();
+  const unread = useQuery(apiQuery(listNotices, { params: {}, query: {} })).data?.unread ?? 0;
   const groups: MenuGroup[] = [
     ...(programmes.length > 1
       ? [
@@ -100,7 +105,13 @@ function AccountMenu({ person, team, programmes }: AccountMenuProps) {
           },
         ]
       : []),
-    { title: accountWords(person, team), entries: [{ id: 'sign-out', label: 'Sign out' }] },
+    {
+      title: accountWords(person, team),
+      entries: [
+        { id: paths.account, label: unread > 0 ? `Account, ${plural(unread, 'new notice')}` : 'Account and notices' },
+        { id: 'sign-out', label: 'Sign out' },
+      ],
+    },
   ];
   const name = <span className="max-w-40 truncate">{person.name}</span>;
   return (

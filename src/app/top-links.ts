@@ -9,7 +9,7 @@ export interface PageLink {
 export type ProgrammeLink = PageLink;
 
 /** The pages of a team in the order of the bar; those of a programme are of its first. */
-export function pageLinks({ teamId, role, programmes: [programme] }: Membership): readonly PageLink[] {
+export function pageLinks({ teamId, programmes: [programme] }: Membership): readonly PageLink[] {
   const of = (page: { to(key: { teamId: string; programmeId: string }): string }, label: string): PageLink[] =>
     programme === undefined ? [] : [{ to: page.to({ teamId, programmeId: programme.id }), label }];
   return [
@@ -17,7 +17,7 @@ export function pageLinks({ teamId, role, programmes: [programme] }: Membership)
     { to: paths.weather.to(teamId), label: 'Weather' },
     ...of(paths.sites, 'Sites'),
     ...of(paths.briefs, 'Briefs'),
-    ...(role === 'lead' ? [{ to: paths.tokens.to(teamId), label: 'Team' }] : []),
+    { to: paths.people.to(teamId), label: 'Team' },
     { to: paths.method.to(teamId), label: 'Method' },
   ];
 }

@@ -2,13 +2,35 @@ import * as z from 'zod/mini';
 import { empty, endpoint, json, none, ordinary } from './endpoint.ts';
 
 /** Lower-cased and trimmed, so that one address is one account. */
-const Email = z.string().check(z.trim(), z.toLowerCase(), z.email('Type an e-mail address, such as name@example.org.'));
-const NewPassword = z
+export const Email = z
+  .string()
+  .check(
+    z.trim(),
+    z.toLowerCase(),
+    z.email('Type an e-mail address, such as name@example.org.'),
+    z.maxLength(254, 'Use 254 characters or fewer.'),
+  );
+export const NewPassword = z
   .string()
   .check(z.minLength(12, 'Use 12 characters or more.'), z.maxLength(200, 'Use 200 characters or fewer.'));
-const Name = z
+/** On one line: names stand in the heads of mails. */
+export const Name = z
   .string()
-  .check(z.trim(), z.minLength(1, 'Type a name.'), z.maxLength(120, 'Use 120 characters or fewer.'));
+  .check(
+    z.trim(),
+    z.minLength(1, 'Type a name.'),
+    z.maxLength(120, 'Use 120 characters or fewer.'),
+    z.regex(/^\P{Cc}*$/u, 'Use no line breaks or other control characters.'),
+  );
+/** A password that is there already: whatever it is, it is only compared. */
+export const TypedPassword = z
+  .string()
+  .check(z.minLength(1, 'Type your password.'), z.maxLength(200, 'Use 200 characters or fewer.'));
+/** A key out of a link that came by mail. */
+export const LinkKey = z.string().check(z.maxLength(200));
+
+/** Typed with or without blanks. */
+export const SignInCode = z.string().check(z.trim(), z.maxLength(40, 'Use 40 characters or fewer.'));
 
 export const Role = z.enum(['viewer', 'planner', 'engineer', 'lead']);
 export type Role = z.infer<typeof Role>;
@@ -46,19 +68,19 @@ export const getSession = endpoint({
 export const signIn = endpoint({
   method: 'POST',
   path: '/api/session',
-  summary: 'Sign in with e-mail and password.',
+  summary: 'Sign in with e-mail and password, and a code where two-factor sign-in is on.',
   params: empty,
   query: empty,
   body: json(
     z.strictObject({
       email: Email,
-      password: z
-        .string()
-        .check(z.minLength(1, 'Type your password.'), z.maxLength(200, 'Use 200 characters or fewer.')),
+      password: TypedPassword,
+      /** Six figures of the authenticator or a recovery code, where two-factor sign-in is on. */
+      code: z.optional(SignInCode),
     }),
   ),
   response: json(Session),
-  errors: ['wrong_sign_in'],
+  errors: ['wrong_sign_in', 'code_needed'],
   allow: 'anyone',
   limits: { ...ordinary, perMinute: 30 },
 });
@@ -84,7 +106,7 @@ export const setUp = endpoint({
   query: empty,
   body: json(
     z.strictObject({
-      key: z.string().check(z.maxLength(200)),
+      key: LinkKey,
       teamName: Name,
       name: Name,
       email: Email,

@@ -1,14 +1,21 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
+import * as links from './account-links.ts';
 import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as hourList from './hour-list.ts';
+import * as invitations from './invitations.ts';
+import * as mails from './mails.ts';
+import * as members from './members.ts';
 import * as method from './method.ts';
+import * as notices from './notices.ts';
+import * as own from './own-account.ts';
 import * as doubts from './place-doubts.ts';
 import * as places from './places.ts';
 import * as map from './programme-map.ts';
+import * as programmes from './programmes.ts';
 import * as ranking from './ranking.ts';
 import * as rescoring from './rescore.ts';
 import * as hours from './run-hours.ts';
@@ -31,6 +38,43 @@ export const endpoints = {
   signIn: accounts.signIn,
   signOut: accounts.signOut,
   setUp: accounts.setUp,
+  getAccount: own.getAccount,
+  renamePerson: own.renamePerson,
+  changePassword: own.changePassword,
+  askEmailChange: own.askEmailChange,
+  listSessions: own.listSessions,
+  endSession: own.endSession,
+  endOtherSessions: own.endOtherSessions,
+  startTwoFactor: own.startTwoFactor,
+  confirmTwoFactor: own.confirmTwoFactor,
+  endTwoFactor: own.endTwoFactor,
+  renewRecoveryCodes: own.renewRecoveryCodes,
+  setNoticesOff: own.setNoticesOff,
+  listNotices: notices.listNotices,
+  readNotices: notices.readNotices,
+  askReset: links.askReset,
+  resetPassword: links.resetPassword,
+  confirmEmail: links.confirmEmail,
+  listInvitations: invitations.listInvitations,
+  invite: invitations.invite,
+  resendInvitation: invitations.resendInvitation,
+  revokeInvitation: invitations.revokeInvitation,
+  openInvitation: invitations.openInvitation,
+  acceptAsNewPerson: invitations.acceptAsNewPerson,
+  listOwnInvitations: invitations.listOwnInvitations,
+  acceptOwnInvitation: invitations.acceptOwnInvitation,
+  listMembers: members.listMembers,
+  changeMember: members.changeMember,
+  endMemberSessions: members.endMemberSessions,
+  removeMember: members.removeMember,
+  leaveTeam: members.leaveTeam,
+  makeTeam: members.makeTeam,
+  renameTeam: members.renameTeam,
+  listProgrammes: programmes.listProgrammes,
+  makeProgramme: programmes.makeProgramme,
+  renameProgramme: programmes.renameProgramme,
+  setProgrammeMembers: programmes.setProgrammeMembers,
+  listMails: mails.listMails,
   listWeatherFiles: library.listWeatherFiles,
   uploadWeatherFile: weather.uploadWeatherFile,
   getWeatherFile: weather.getWeatherFile,

@@ -15,6 +15,8 @@ export const errorStatus = {
   not_signed_in: 401,
   /** E-mail and password do not belong together; never says which is wrong. */
   wrong_sign_in: 401,
+  /** E-mail and password are right; a code of the authenticator (or a recovery code) is wanted, or the one given does not hold. */
+  code_needed: 401,
   /** The person's role in the team does not allow it. */
   not_allowed: 403,
   /** An unsafe request that did not come from this site's own pages. */
@@ -25,7 +27,7 @@ export const errorStatus = {
   wrong_state: 409,
   /** Somebody changed the thing since the revision that was sent; `problems` says what, field by field. */
   conflict: 409,
-  /** The one-time link was used or never existed. */
+  /** The one-time link was used, has expired, was taken back or never existed. */
   link_not_valid: 410,
   /** More bytes than the endpoint takes. */
   too_large: 413,

@@ -2,6 +2,7 @@
 export const policyNames = [
   'anyone',
   'accounts.signOut',
+  'accounts.own',
   'weather.view',
   'weather.upload',
   'weather.accept',
@@ -17,6 +18,9 @@ export const policyNames = [
   'runs.export',
   'briefs.view',
   'briefs.change',
+  'teams.view',
+  'teams.people',
+  'teams.programmes',
   'teams.tokens',
   'method.view',
 ] as const;

@@ -14,7 +14,11 @@ export function ScrollInside({ label, children }: { label: string; children: Rea
     return () => observer.disconnect();
   }, []);
   return (
-    <section ref={box} className="max-w-full overflow-x-auto" {...(isCut ? { tabIndex: 0, 'aria-label': label } : {})}>
+    <section
+      ref={box}
+      className="relative max-w-full overflow-x-auto"
+      {...(isCut ? { tabIndex: 0, 'aria-label': label } : {})}
+    >
       {children}
     </section>
   );

@@ -82,6 +82,11 @@ export const importRules: readonly ImportRule[] = [
       ...['graphile-worker', 'pg', 'knex', 'tsx/esm/api', 'node:**'],
     ],
   },
+  {
+    from: 'server/mail/**',
+    may: ['server/mail/**', 'server/db/**', 'server/jobs/queue.ts', ...serverWords, ...pure, 'nodemailer'],
+    mayTypes: ['knex'],
+  },
   { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', '@aws-sdk/client-s3', 'node:**'] },
   {
     from: 'server/tiles/**',
@@ -92,7 +97,7 @@ export const importRules: readonly ImportRule[] = [
   },
 
   {
-    from: 'server/features/*/routes.ts',
+    from: 'server/features/*/*routes.ts',
     may: [
       OWN_FEATURE,
       'server/features/*/*read-model.ts',
@@ -130,6 +135,7 @@ export const importRules: readonly ImportRule[] = [
     may: [
       ...[OWN_FEATURE, 'server/features/*/*read-model.ts', 'server/db/**', ...serverWords, ...pure],
       ...['server/jobs/queue.ts', 'server/jobs/team-feed.ts', 'server/http/upload-name.ts'],
+      ...['server/mail/write-mail.ts', 'server/mail/notify.ts', 'otplib', 'data/passwords/'],
       // The wrappers of zip and gzip: verbs say what becomes of what is inside.
       ...['server/storage/original-store.ts', 'server/storage/zip-members.ts', 'server/storage/inflate-gzip.ts'],
       ...['server/jobs/thread-pool.ts', 'server/jobs/web-*.ts', 'server/jobs/year-*.ts'],
@@ -159,7 +165,11 @@ export const importRules: readonly ImportRule[] = [
     mayTypes: ['knex', 'server/log.ts', 'server/jobs/team-feed.ts', 'server/storage/original-store.ts'],
   },
   { from: 'server/log.ts', may: [] },
-  { from: 'server/config.ts', may: ['zod/mini', 'node:*'], mayTypes: ['server/storage/s3-store.ts'] },
+  {
+    from: 'server/config.ts',
+    may: ['zod/mini', 'node:*'],
+    mayTypes: ['server/storage/s3-store.ts', 'server/mail/mailer.ts'],
+  },
   { from: 'server/app.ts', may: ['server/**', 'express', 'compression', 'node:os'], mayTypes: ['src/engine/**'] },
   { from: 'server/web.ts', may: ['server/**', 'node:*'] },
   { from: 'server/*-thread.ts', may: ['server/features/**', 'server/jobs/**', 'server/tiles/relief.ts'] },

@@ -58,6 +58,8 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
       now: () => new Date(),
       storage: createFolderStore(path.join(home, 'originals')),
       sessionSecrets: ['a session secret for measuring'],
+      publicUrl: null,
+      sendsMail: false,
       basemapPath: path.resolve(import.meta.dirname, '../../data/basemap/basemap.pmtiles'),
     },
     { threads },

@@ -49,6 +49,8 @@ const deps: Deps = {
   now: () => new Date(),
   storage: createFolderStore(path.join(home, 'originals')),
   uploadsDir: home,
+  publicUrl: 'https://muslin.example',
+  sendsMail: false,
   sessionSecrets: ['a session secret for a bench'],
   trustProxy: 'loopback',
   clientDir: null,

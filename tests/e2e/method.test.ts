@@ -9,6 +9,7 @@ import { launchBrowser, watchedPage } from '../support/browser.ts';
 import { publishedChecks } from '../support/published-values.ts';
 import { type RunningProduct, startProduct } from '../support/start-product.ts';
 import { expectAccessible, expectNoSidewaysScroll } from './accessible.ts';
+import { walkPeopleRoad } from './people-road.ts';
 import { signIn } from './steps.ts';
 
 const ACCOUNT = { email: 'reader@example.org', password: 'a long pass phrase for tests' };
@@ -17,14 +18,15 @@ vi.setConfig({ testTimeout: 240_000 });
 
 let product: RunningProduct;
 let browser: Browser;
+let teamId: string;
 
 beforeAll(async () => {
   product = await startProduct();
   const { db } = product.deps;
   const leadId = await makePerson(db, { ...ACCOUNT, name: 'A reader' });
-  await inTransaction(db, (transaction) =>
+  ({ teamId } = await inTransaction(db, (transaction) =>
     makeTeam({ transaction, startBrief }, { name: 'Readers', leadId, invented: true, programmeName: 'Reading' }),
-  );
+  ));
   browser = await launchBrowser();
 }, 300_000);
 
@@ -75,4 +77,8 @@ test('the method page runs every published check in the browser, every one holds
   await watched.picture('method-on-a-phone');
   // Closing throws when the console, the network or the page complained about anything.
   await watched.close();
+});
+
+test('a lead invites somebody, who joins with two-factor sign-in; the lead changes the role and ends the sessions', async () => {
+  await walkPeopleRoad(browser, { origin: product.origin, teamId, lead: ACCOUNT });
 });

@@ -44,14 +44,60 @@ const uploadersOnly = [403, 403, 200, 200, ...strangers, 200, 403];
 /** The same where nothing has stopped that could be tried again, so that who may is told that. */
 const uploadersInVain = [403, 403, 409, 409, ...strangers, 409, 403];
 const leadOnly = [403, 403, 403, 200, ...strangers, 403, 403];
-const signedInOnly = [200, 200, 200, 200, 200, 401, 401, 401, 403, 403];
+const leadOnlyDone = [403, 403, 403, 204, ...strangers, 403, 403];
+/** What concerns one's own account: no token may. */
+const ownAccount = (status: number) => [status, status, status, status, status, 401, 401, 401, 403, 403];
+const signedInOnly = ownAccount(200);
+/** With a key that was never made. */
+const linkInVain = [410, 410, 410, 410, 410, 410, 401, 410, 410, 410];
 const matrix: Record<EndpointName, readonly number[]> = {
   getSession: [200, 200, 200, 200, 200, 200, 401, 200, 200, 200],
   // A program has its token, and cannot begin a session beside it.
   signIn: [200, 200, 200, 200, 200, 200, 401, 200, 400, 400],
   signOut: [204, 204, 204, 204, 204, 401, 401, 401, 403, 403],
-  // With a key that was never made: nobody sets up a second team.
-  setUp: [410, 410, 410, 410, 410, 410, 401, 410, 410, 410],
+  setUp: linkInVain,
+  getAccount: signedInOnly,
+  renamePerson: signedInOnly,
+  // With a wrong password: who is signed in is told so at its field.
+  changePassword: ownAccount(400),
+  askEmailChange: ownAccount(400),
+  startTwoFactor: ownAccount(400),
+  endTwoFactor: ownAccount(400),
+  renewRecoveryCodes: ownAccount(400),
+  // Nothing has been begun that could be confirmed.
+  confirmTwoFactor: ownAccount(409),
+  setNoticesOff: signedInOnly,
+  listSessions: signedInOnly,
+  // Of nobody.
+  endSession: ownAccount(404),
+  endOtherSessions: ownAccount(204),
+  listNotices: signedInOnly,
+  readNotices: ownAccount(204),
+  askReset: [204, 204, 204, 204, 204, 204, 401, 204, 204, 204],
+  resetPassword: linkInVain,
+  confirmEmail: linkInVain,
+  openInvitation: linkInVain,
+  acceptAsNewPerson: linkInVain,
+  listOwnInvitations: signedInOnly,
+  // To somebody else's address.
+  acceptOwnInvitation: ownAccount(410),
+  listInvitations: leadOnly,
+  invite: leadOnly,
+  resendInvitation: leadOnly,
+  revokeInvitation: leadOnly,
+  listMembers: everyMember,
+  changeMember: leadOnly,
+  endMemberSessions: leadOnlyDone,
+  removeMember: leadOnlyDone,
+  // A team of which the lead is the last, and to which the tokens do not belong.
+  leaveTeam: [204, 204, 204, 409, 404, 401, 401, 401, 404, 404],
+  makeTeam: signedInOnly,
+  renameTeam: leadOnlyDone,
+  listProgrammes: everyMember,
+  makeProgramme: plannersToo,
+  renameProgramme: plannersToo,
+  setProgrammeMembers: leadOnly,
+  listMails: leadOnly,
   listWeatherFiles: readersToo,
   uploadWeatherFile: uploadersOnly,
   getWeatherFile: readersToo,
@@ -178,7 +224,33 @@ async function headersOf(caller: Caller, name?: EndpointName): Promise<Record<st
   return { ...base, Cookie: own ? await signIn(caller) : (cookies.get(caller) ?? '') };
 }
 
+const WRONG = { password: 'not the password of anybody' };
+const bodiesOfPeople: Partial<Record<EndpointName, (caller: Caller) => unknown>> = {
+  renamePerson: (caller) => ({ name: caller }),
+  changePassword: () => ({ ...WRONG, newPassword: 'another long pass phrase' }),
+  askEmailChange: () => ({ ...WRONG, email: 'another@example.org' }),
+  startTwoFactor: () => WRONG,
+  endTwoFactor: () => WRONG,
+  renewRecoveryCodes: () => WRONG,
+  confirmTwoFactor: () => ({ code: '000000' }),
+  setNoticesOff: () => ({ off: ['comment'] }),
+  askReset: () => ({ email: 'nobody@example.org' }),
+  resetPassword: () => ({ key: 'never-made', password: PASSWORD }),
+  confirmEmail: () => ({ key: 'never-made' }),
+  openInvitation: () => ({ key: 'never-made' }),
+  acceptAsNewPerson: () => ({ key: 'never-made', name: 'Nobody', password: PASSWORD }),
+  invite: (caller) => ({ email: `guest-of-${emailOf(caller)}`, role: 'viewer', lastDay: null }),
+  changeMember: () => ({ role: 'viewer' }),
+  makeTeam: (caller) => ({ name: `Team of ${caller}` }),
+  renameTeam: () => ({ name: 'Ours' }),
+  makeProgramme: (caller) => ({ name: `Programme of ${caller}` }),
+  renameProgramme: () => ({ name: 'Ours' }),
+  setProgrammeMembers: () => ({ restricted: false, memberIds: [] }),
+};
+
 function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
+  const ofPeople = bodiesOfPeople[name]?.(caller);
+  if (ofPeople !== undefined) return JSON.stringify(ofPeople);
   if (name === 'uploadWeatherFile') {
     const form = new FormData();
     form.append('file', epwOf(`uploaded by ${caller}`), `${caller}.epw`);
@@ -302,9 +374,15 @@ beforeAll(async () => {
   ];
   for (const [caller, role] of members)
     await addMember(road.db, { teamId: ours.teamId, personId: people.get(caller) ?? '', role });
+  const spare = await makePerson(road.db, { email: 'spare@example.org', name: 'Spare', password: PASSWORD });
+  await addMember(road.db, { teamId: ours.teamId, personId: spare, role: 'viewer' });
+  const leaving = await teamOf('Leaving', people.get('lead') ?? '');
+  for (const [caller, role] of members)
+    await addMember(road.db, { teamId: leaving.teamId, personId: people.get(caller) ?? '', role });
   for (const caller of signedInCallers) cookies.set(caller, await signIn(caller));
 
   ids = { ...ours, foreignTeamId: foreign.teamId, foreignProgrammeId: foreign.programmeId };
+  ids = { ...ids, leavingTeamId: leaving.teamId, personId: spare, sessionId: spare };
   await road.startWorker();
   const fileId = await uploadAndRead('shared');
   const headers = await headersOf('engineer');
@@ -358,6 +436,14 @@ beforeAll(async () => {
   await order('uploading token', ['weather:upload']);
   await order('reading token', ['weather:read', 'results:read']);
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
+  const invited: { id: string } = await (
+    await fetch(`${team}/invitations`, {
+      method: 'POST',
+      headers: { ...(await headersOf('lead')), 'Content-Type': 'application/json' },
+      body: JSON.stringify({ email: 'invited@example.org', role: 'viewer', lastDay: null }),
+    })
+  ).json();
+  ids = { ...ids, invitationId: invited.id };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
   ids = { ...ids, placeKind: 'stations', placeId: stationId };
   ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };
@@ -382,7 +468,9 @@ describe('the matrix of rights', () => {
     const found: Partial<Record<Caller, number>> = {};
     for (const caller of callers) {
       const own = ['acceptWeatherFile', 'withdrawWeatherFile'].includes(name) ? ownFiles.get(caller) : undefined;
-      found[caller] = await statusOf(name, { caller, values: own === undefined ? ids : { ...ids, fileId: own } });
+      const team = name === 'leaveTeam' ? { teamId: ids.leavingTeamId ?? '' } : {};
+      const values = own === undefined ? { ...ids, ...team } : { ...ids, fileId: own };
+      found[caller] = await statusOf(name, { caller, values });
     }
     const expected = Object.fromEntries(callers.map((caller, index) => [caller, matrix[name][index]]));
     expect(found).toEqual(expected);

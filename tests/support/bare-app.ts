@@ -18,12 +18,13 @@ export const leadActor: Actor = {
   kind: 'person',
   personId: '22222222-2222-4222-8222-222222222222',
   roles: new Map([[TEAM_ID, 'lead']]),
+  closedProgrammes: new Set(),
 };
 
 const unused = async (): Promise<never> => {
   throw new Error('not used here');
 };
-const noSession: SessionControl = { signIn: unused, begin: unused, end: unused };
+const noSession: SessionControl = { id: '', checkPassword: unused, begin: unused, end: unused };
 
 export interface Bench {
   readonly deps: Deps;
@@ -49,6 +50,8 @@ export async function openBench({
     now,
     storage: { put: unused, get: unused, read: unused, remove: unused },
     uploadsDir,
+    publicUrl: 'https://muslin.example',
+    sendsMail: false,
     sessionSecrets: ['a session secret for tests'],
     trustProxy: 'loopback',
     clientDir: null,

@@ -71,6 +71,8 @@ export async function openRoad(options: { database?: TestDatabase } = {}): Promi
     now: () => new Date(),
     storage,
     uploadsDir: home,
+    publicUrl: 'https://muslin.example',
+    sendsMail: false,
     sessionSecrets: ['a session secret for tests'],
     trustProxy: 'loopback',
     clientDir: null,
@@ -112,6 +114,7 @@ export async function openRoad(options: { database?: TestDatabase } = {}): Promi
         databaseUrl,
         storage: options?.storage ?? storage,
         relief: shippedRelief(),
+        publicUrl: deps.publicUrl,
         log,
       });
       const closing = {

@@ -49,6 +49,8 @@ export async function openWeb(changes: Partial<Deps> = {}): Promise<WebForTests>
     now: () => new Date(),
     storage: createFolderStore(path.join(home, 'originals')),
     uploadsDir: home,
+    publicUrl: 'https://muslin.example',
+    sendsMail: false,
     sessionSecrets: ['a session secret for tests'],
     trustProxy: 'loopback',
     clientDir: null,

@@ -43,6 +43,8 @@ export async function startProduct(holding: 'nothing' | 'demo' = 'nothing'): Pro
     now: () => new Date(),
     storage: createFolderStore(originalsDir),
     uploadsDir,
+    publicUrl: 'https://muslin.example',
+    sendsMail: false,
     sessionSecrets: ['a session secret for tests in the browser'],
     trustProxy: 'loopback',
     clientDir,

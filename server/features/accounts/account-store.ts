@@ -13,6 +13,45 @@ export async function findPersonByEmail(db: Knex, email: string): Promise<Person
   return rows[0] ?? null;
 }
 
+export interface KnownPerson extends PersonSecret {
+  readonly email: string;
+  readonly name: string;
+}
+
+export async function findPersonSecret(db: Knex, personId: string): Promise<KnownPerson | null> {
+  const { rows } = await db.raw<{ rows: KnownPerson[] }>(
+    `select people.id, people.email, people.name, people.password_hash as "passwordHash"
+     from people where people.id = ?`,
+    [personId],
+  );
+  return rows[0] ?? null;
+}
+
+export async function setName(db: Knex, change: { personId: string; name: string }): Promise<void> {
+  await db.raw('update people set name = :name where id = :personId', change);
+}
+
+export async function setPasswordHash(db: Knex, change: { personId: string; passwordHash: string }): Promise<void> {
+  await db.raw('update people set password_hash = :passwordHash where id = :personId', change);
+}
+
+/** @returns the address that held before */
+export async function setEmail(
+  transaction: Knex.Transaction,
+  change: { personId: string; email: string },
+): Promise<string> {
+  const { rows } = await transaction.raw<{ rows: [{ before: string }] }>(
+    `update people set email = :email from people as held
+     where people.id = :personId and held.id = people.id returning held.email as before`,
+    change,
+  );
+  return rows[0].before;
+}
+
+export async function setNoticesOff(db: Knex, change: { personId: string; off: readonly string[] }): Promise<void> {
+  await db.raw('update people set notices_off = ?::text[] where id = ?', [[...change.off], change.personId]);
+}
+
 export async function insertPerson(
   db: Knex,
   person: { email: string; name: string; passwordHash: string },

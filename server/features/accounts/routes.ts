@@ -1,12 +1,21 @@
 import { createHash } from 'node:crypto';
 import type { Router } from 'express';
+import {
+  askReset as askResetEndpoint,
+  confirmEmail as confirmEndpoint,
+  resetPassword as resetEndpoint,
+} from '#contract/account-links.ts';
 import * as contract from '#contract/accounts.ts';
 import type { Deps } from '../../deps.ts';
 import { addressBucket } from '../../http/client-address.ts';
 import { spendShared } from '../../http/limits.ts';
 import { mount } from '../../http/mount.ts';
 import { forgetRequests } from '../../http/request-counts-store.ts';
+import { askReset } from './ask-reset.ts';
+import { confirmEmail } from './confirm-email.ts';
+import { ownAccountRoutes } from './own-account-routes.ts';
 import { readSession } from './read-session.ts';
+import { resetPassword } from './reset-password.ts';
 import { type SetUpParts, setUp } from './set-up.ts';
 import { signIn } from './sign-in.ts';
 import { signOut } from './sign-out.ts';
@@ -20,9 +29,10 @@ const GUESSES_FROM_ANYWHERE = 20;
 
 export function accountsRoutes(router: Router, deps: Deps, parts: SetUpParts): void {
   const { db } = deps;
+  const sessionOf = (personId: string | null) => readSession(db, { personId, at: deps.now() });
 
   mount(router, deps, contract.getSession, async (_input, { actor }) =>
-    readSession(db, actor.kind === 'person' ? actor.personId : null),
+    sessionOf(actor.kind === 'person' ? actor.personId : null),
   );
 
   mount(router, deps, contract.signIn, async ({ body }, { session, ip, requestId }) => {
@@ -32,9 +42,10 @@ export function accountsRoutes(router: Router, deps: Deps, parts: SetUpParts): v
     await spendShared(deps, { bucket: `sign-in from ${address}`, perMinute: contract.signIn.limits.perMinute });
     await spendShared(deps, { bucket: here, perMinute: GUESSES_FROM_ONE_ADDRESS });
     await spendShared(deps, { bucket: `sign-in ${account}`, perMinute: GUESSES_FROM_ANYWHERE });
-    const personId = await signIn({ db, session }, { email: body.email, address: ip, requestId });
+    const given = { email: body.email, code: body.code, address: ip, requestId, at: deps.now() };
+    const personId = await signIn({ db, session, sessionSecrets: deps.sessionSecrets }, given);
     await forgetRequests(db, here);
-    return readSession(db, personId);
+    return sessionOf(personId);
   });
 
   mount(router, deps, contract.signOut, async (_input, { actor, session, requestId }) => {
@@ -45,6 +56,20 @@ export function accountsRoutes(router: Router, deps: Deps, parts: SetUpParts): v
   mount(router, deps, contract.setUp, async ({ body }, { session, requestId }) => {
     const leadId = await setUp({ db, ...parts }, { ...body, requestId, at: deps.now() });
     await session.begin(leadId);
-    return readSession(db, leadId);
+    return sessionOf(leadId);
   });
+
+  mount(router, deps, askResetEndpoint, async ({ body }, { requestId }) => {
+    await askReset(deps, { ...body, requestId, at: deps.now() });
+    return undefined;
+  });
+  mount(router, deps, resetEndpoint, async ({ body }, { requestId }) => {
+    await resetPassword(deps, { ...body, requestId, at: deps.now() });
+    return undefined;
+  });
+  mount(router, deps, confirmEndpoint, async ({ body }, { requestId }) => {
+    await confirmEmail(db, { ...body, requestId, at: deps.now() });
+    return undefined;
+  });
+  ownAccountRoutes(router, deps);
 }

@@ -25,7 +25,7 @@ export interface ExportParts {
  */
 export async function exportRunHours(
   { db, yearThread }: ExportParts,
-  asked: { teamId: string; runId: string; role: Role | null; signal: AbortSignal },
+  asked: { teamId: string; runId: string; role: Role | null; closed: readonly string[]; signal: AbortSignal },
 ): Promise<{ body: Readable; fileName: string }> {
   const run = await findRunToExport(db, asked);
   if (run === null) throw new AppError('not_found', 'There is no such run in this team.');

@@ -33,7 +33,7 @@ export interface HoursAsked {
  */
 export async function listRunHours(
   { db, yearThread, lines }: HourListParts,
-  asked: HoursAsked & { teamId: string; runId: string; signal: AbortSignal },
+  asked: HoursAsked & { teamId: string; runId: string; closed: readonly string[]; signal: AbortSignal },
 ): Promise<HourList> {
   const { teamId, signal } = asked;
   const run = await findRunToExport(db, asked);

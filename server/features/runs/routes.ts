@@ -12,6 +12,7 @@ import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
+import type { Actor } from '../../http/request-context.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
@@ -145,22 +146,27 @@ export function runsRoutes(
 
   mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
     const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
-    return await exportRunHours({ db, yearThread }, { ...params, role, signal });
+    return await exportRunHours({ db, yearThread }, { ...params, role, closed: closedTo(actor), signal });
   });
 
-  mount(router, deps, listHoursEndpoint, async ({ params, query }, { signal }) =>
-    listRunHours({ db, yearThread, lines }, { ...params, ...query, signal }),
+  mount(router, deps, listHoursEndpoint, async ({ params, query }, { actor, signal }) =>
+    listRunHours({ db, yearThread, lines }, { ...params, ...query, closed: closedTo(actor), signal }),
   );
 
-  mount(router, deps, getRun, async ({ params }) => {
-    const run = await findRunRecord(db, params);
+  mount(router, deps, getRun, async ({ params }, { actor }) => {
+    const run = await findRunRecord(db, { ...params, closed: closedTo(actor) });
     if (run === null) throw new AppError('not_found', 'There is no such run in this team.');
     return presentRun(run);
   });
 
-  mount(router, deps, getRunHours, async ({ params }) => {
-    const body = await readRunHours(db, params);
+  mount(router, deps, getRunHours, async ({ params }, { actor }) => {
+    const body = await readRunHours(db, { ...params, closed: closedTo(actor) });
     if (body === null) throw new AppError('not_found', 'There is no such run in this team.');
     return { body };
   });
+}
+
+/** A run is named without its programme, so the rule of the path cannot see whose it is. */
+function closedTo(actor: Actor): readonly string[] {
+  return actor.kind === 'person' ? [...actor.closedProgrammes] : [];
 }

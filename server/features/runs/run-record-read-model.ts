@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import type { Brief } from '#engine/brief/brief.ts';
 import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
+import { OF_CLOSED } from './closed-programme-read-model.ts';
 import type { RunFigures } from './run-key.ts';
 
 export interface RunRow {
@@ -23,8 +24,11 @@ export interface RunRow {
   readonly result: Omit<RunFigures, 'demandByMonthHour' | 'metByMonthHour' | 'aloneHours'>;
 }
 
-/** `null` when the team has no such run. */
-export async function findRunRecord(db: Knex, key: { teamId: string; runId: string }): Promise<RunRow | null> {
+/** `null` when the team has no such run, or it is of a closed programme. */
+export async function findRunRecord(
+  db: Knex,
+  key: { teamId: string; runId: string; closed: readonly string[] },
+): Promise<RunRow | null> {
   const { rows } = await db.raw<{ rows: RunRow[] }>(
     `select runs.id as "runId", stations.id as "stationId", stations.name as "stationName", stations.zone,
        weather_files.id as "weatherFileId", weather_files.name as "fileName", weather_years.kind, weather_years.year,
@@ -38,8 +42,8 @@ export async function findRunRecord(db: Knex, key: { teamId: string; runId: stri
      join stations on stations.team_id = weather_years.team_id and stations.id = weather_years.station_id
      join brief_versions on brief_versions.team_id = runs.team_id and brief_versions.id = runs.brief_version_id
      join briefs on briefs.id = brief_versions.brief_id
-     where runs.team_id = :teamId and runs.id = :runId`,
-    { ...key },
+     where runs.team_id = ? and runs.id = ? and not ${OF_CLOSED}`,
+    [key.teamId, key.runId, [...key.closed]],
   );
   return rows[0] ?? null;
 }

@@ -4,6 +4,7 @@ import type { Brief } from '#engine/brief/brief.ts';
 import type { HumidityRule, MonthlyChange } from '#engine/climate/monthly-change.ts';
 import type { ResolvedClock } from '#engine/clock/resolved-clock.ts';
 import type { YearKind } from '#engine/reduction/weather-year.ts';
+import { OF_CLOSED } from './closed-programme-read-model.ts';
 
 /** A run of a team with what its hours are written from. */
 export interface RunToExport {
@@ -33,8 +34,11 @@ export interface RunToExport {
   } | null;
 }
 
-/** `null` when the team has no such run. */
-export async function findRunToExport(db: Knex, key: { teamId: string; runId: string }): Promise<RunToExport | null> {
+/** `null` when the team has no such run, or it is of a closed programme. */
+export async function findRunToExport(
+  db: Knex,
+  key: { teamId: string; runId: string; closed: readonly string[] },
+): Promise<RunToExport | null> {
   const { rows } = await db.raw<{ rows: RunToExport[] }>(
     `select runs.weather_year_id as "weatherYearId", weather_years.kind, weather_years.year,
        weather_files.id as "weatherFileId", weather_years.content_hash as "contentHash", weather_files.name as "fileName",
@@ -56,8 +60,8 @@ export async function findRunToExport(db: Knex, key: { teamId: string; runId: st
      left join derived_years on derived_years.weather_year_id = weather_years.id
      left join weather_years as parents on parents.id = derived_years.parent_year_id
      left join weather_files as parent_files on parent_files.id = parents.weather_file_id
-     where runs.team_id = ? and runs.id = ?`,
-    [key.teamId, key.runId],
+     where runs.team_id = ? and runs.id = ? and not ${OF_CLOSED}`,
+    [key.teamId, key.runId, [...key.closed]],
   );
   return rows[0] ?? null;
 }

@@ -1,34 +1,53 @@
 import type { Knex } from 'knex';
 import type { Membership, Role } from '#contract/accounts.ts';
 
-/** The person's teams, each with the person's role and the team's programmes, by name. */
-export async function listMemberships(db: Knex, personId: string): Promise<Membership[]> {
+/** As authorisation takes it. */
+interface Standing {
+  readonly roles: ReadonlyMap<string, Role>;
+  readonly closedProgrammes: ReadonlySet<string>;
+}
+
+/** A programme is closed to members who are not among those that it is open to; never to a lead. */
+const OPEN_PROGRAMME = `(not programmes.restricted or memberships.role = 'lead' or exists (
+  select 1 from programme_members
+  where programme_members.programme_id = programmes.id and programme_members.person_id = memberships.person_id))`;
+
+/** A member of the house, or one from outside whose time is not over. */
+const STANDS = '(memberships.ends_at is null or memberships.ends_at > :at)';
+
+/** The person's teams, each with the person's role and the programmes that are open to the person, by name. */
+export async function listMemberships(db: Knex, key: { personId: string; at: Date }): Promise<Membership[]> {
   const { rows } = await db.raw<{ rows: Membership[] }>(
     `select teams.id as "teamId", teams.name as "teamName", memberships.role, teams.invented,
        coalesce(
          (select json_agg(json_build_object('id', programmes.id, 'name', programmes.name) order by programmes.name, programmes.id)
-          from programmes where programmes.team_id = teams.id),
+          from programmes where programmes.team_id = teams.id and ${OPEN_PROGRAMME}),
          '[]'::json) as programmes
      from memberships
      join teams on teams.id = memberships.team_id
-     where memberships.person_id = ?
+     where memberships.person_id = :personId and ${STANDS}
      order by teams.name, teams.id`,
-    [personId],
+    key,
   );
   return rows;
 }
 
-/** Role by team; `null` when there is no such person. */
-export async function findRoles(db: Knex, personId: string): Promise<ReadonlyMap<string, Role> | null> {
-  const { rows } = await db.raw<{ rows: { teamId: string | null; role: Role | null }[] }>(
-    `select memberships.team_id as "teamId", memberships.role
+/** What a person is in which teams, and what is closed to the person there; `null` when there is no such person. */
+export async function findStanding(db: Knex, key: { personId: string; at: Date }): Promise<Standing | null> {
+  const { rows } = await db.raw<{ rows: { teamId: string | null; role: Role | null; closed: string[] }[] }>(
+    `select memberships.team_id as "teamId", memberships.role,
+       array(select programmes.id from programmes
+             where programmes.team_id = memberships.team_id and not ${OPEN_PROGRAMME}) as closed
      from people
-     left join memberships on memberships.person_id = people.id
-     where people.id = ?`,
-    [personId],
+     left join memberships on memberships.person_id = people.id and ${STANDS}
+     where people.id = :personId`,
+    key,
   );
   if (rows.length === 0) return null;
-  return new Map(rows.flatMap(({ teamId, role }) => (teamId === null || role === null ? [] : [[teamId, role]])));
+  return {
+    roles: new Map(rows.flatMap(({ teamId, role }) => (teamId === null || role === null ? [] : [[teamId, role]]))),
+    closedProgrammes: new Set(rows.flatMap(({ closed }) => closed)),
+  };
 }
 
 export async function anyTeamExists(db: Knex): Promise<boolean> {

@@ -3,7 +3,7 @@ import { Wordmark } from '../../ui/wordmark.tsx';
 
 interface EntryPageProps {
   readonly title: string;
-  readonly intro: string;
+  readonly intro: ReactNode;
   readonly children: ReactNode;
 }
 

@@ -1,13 +1,13 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { type FormEvent, useEffect, useRef, useState } from 'react';
-import { Navigate, useSearchParams } from 'react-router-dom';
+import { Link, Navigate, useSearchParams } from 'react-router-dom';
 import { signIn } from '../../contract/accounts.ts';
 import { call } from '../../lib/api-client.ts';
 import { errorSentence, isApiError } from '../../lib/api-error.ts';
 import { type FormProblems, noProblems, problemsOfError, problemsOfIssues } from '../../lib/form-problems.ts';
 import { waitingTime } from '../../lib/format.ts';
 import { PageTitle } from '../../lib/page-title.tsx';
-import { safeReturn } from '../../lib/paths.ts';
+import { paths, safeReturn } from '../../lib/paths.ts';
 import { sessionQuery } from '../../lib/session-query.ts';
 import { Button } from '../../ui/button.tsx';
 import { Notice } from '../../ui/notice.tsx';
@@ -30,23 +30,27 @@ function SignInForm() {
   const client = useQueryClient();
   const [email, setEmail] = useState('');
   const [password, setPassword] = useState('');
+  const [code, setCode] = useState('');
+  const [asksForCode, setAsksForCode] = useState(false);
   const [found, setFound] = useState<FormProblems>(noProblems);
   const emailInput = useRef<HTMLInputElement>(null);
   const passwordInput = useRef<HTMLInputElement>(null);
   const enter = useMutation({
-    mutationFn: (body: { email: string; password: string }) => call(signIn, { params: {}, query: {}, body }),
+    mutationFn: (body: { email: string; password: string; code?: string | undefined }) =>
+      call(signIn, { params: {}, query: {}, body }),
     // The page sees the person in the session and leads on to where they came from.
     onSuccess: (session) => client.setQueryData(sessionQuery.queryKey, session),
     onError: (error) => {
       const located = problemsOfError(error);
       if (located) setFound(located);
       if (isApiError(error, 'wrong_sign_in')) passwordInput.current?.select();
+      if (isApiError(error, 'code_needed')) setAsksForCode(true);
     },
   });
   useEffect(() => emailInput.current?.focus(), []);
   const submit = (event: FormEvent) => {
     event.preventDefault();
-    const parsed = signIn.body.schema.safeParse({ email, password });
+    const parsed = signIn.body.schema.safeParse({ email, password, ...(asksForCode ? { code } : {}) });
     if (parsed.success) {
       setFound(noProblems);
       return enter.mutate(parsed.data);
@@ -78,9 +82,25 @@ function SignInForm() {
         problem={found.fields.password}
         inputRef={passwordInput}
       />
+      {asksForCode ? (
+        <TextField
+          label="Code"
+          name="code"
+          inputMode="text"
+          autoComplete="one-time-code"
+          autoFocus
+          value={code}
+          onChange={setCode}
+          problem={found.fields.code}
+          hint="Six figures of your authenticator, or a recovery code."
+        />
+      ) : null}
       <Button type="submit" look="primary" busy={enter.isPending} className="mt-1">
         Sign in
       </Button>
+      <p className="text-fine">
+        <Link to={paths.forgotten}>I have forgotten my password</Link>
+      </p>
     </form>
   );
 }
@@ -95,7 +115,7 @@ function SignInProblem({ error }: { error: unknown }) {
     );
   }
   return (
-    <Notice tone="wrong" live>
+    <Notice tone={isApiError(error, 'code_needed') ? 'note' : 'wrong'} live>
       {errorSentence(error)}
     </Notice>
   );

@@ -12,15 +12,16 @@ const team = {
 const labels = (role: Role) => pageLinks({ ...team, role }).map(({ label }) => label);
 
 describe('the pages of a team', () => {
-  it('offer the team itself to its leads alone', () => {
+  it('offer the team itself to everyone in it', () => {
     const offered = Role.options.filter((role) => labels(role).includes('Team'));
-    expect(offered).toEqual(['lead']);
+    expect(offered).toEqual(Role.options);
   });
 
   it('stand in one order, and without a programme neither map, sites nor briefs are among them', () => {
     expect(labels('lead')).toEqual(['Map', 'Weather', 'Sites', 'Briefs', 'Team', 'Method']);
     expect(pageLinks({ ...team, programmes: [], role: 'viewer' }).map(({ label }) => label)).toEqual([
       'Weather',
+      'Team',
       'Method',
     ]);
   });

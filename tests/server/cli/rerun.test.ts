@@ -115,6 +115,18 @@ describe('muslin rerun beside a database that runs', () => {
     expect(outcome.stderr).toContain(`is not the same any more: ${differs.join(', ')}.`);
   });
 
+  it('lets the operator read the mails that wait there, as muslin outbox', async () => {
+    await database.ownerDb.raw(
+      `insert into mails (recipient, subject, text, html, opens_account, made_at)
+       values ('ada@example.org', 'Set a new password', 'the key', '<p>the key</p>', true, now())`,
+    );
+    const outcome = await runCommand(['muslin', 'outbox'], { env: { MUSLIN_HOME: homeDir } });
+    await database.ownerDb.raw('delete from mails');
+    expect(outcome).toMatchObject({ code: 0, stderr: '' });
+    const printed = { to: 'ada@example.org', subject: 'Set a new password', text: 'the key', failure: null };
+    expect(JSON.parse(outcome.stdout)).toMatchObject(printed);
+  });
+
   it('leaves a run of another method to the release of that name', async () => {
     await database.ownerDb.raw(`update runs set method_version = '2020.1'`);
     const outcome = await rerun(run);

@@ -50,6 +50,7 @@ const other: Actor = {
   kind: 'person',
   personId: '44444444-4444-4444-8444-444444444444',
   roles: new Map([[TEAM_ID, 'viewer']]),
+  closedProgrammes: new Set(),
 };
 
 test('a small limit is counted in PostgreSQL over all processes, by person, and ends with the minute', async () => {

@@ -40,6 +40,7 @@ async function startWith(reading: {
     'open-weather-archive': { run: nothing, dead: nothing },
     'judge-year': { run: nothing, dead: nothing },
     'queue-site-runs': { run: nothing, dead: nothing },
+    'send-mail': { run: nothing, dead: nothing },
   };
   worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
 }

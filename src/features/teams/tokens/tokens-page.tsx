@@ -4,12 +4,12 @@ import { type ApiToken, listTokens } from '../../../contract/tokens.ts';
 import { errorSentence } from '../../../lib/api-error.ts';
 import { apiQuery } from '../../../lib/api-query.ts';
 import { moment } from '../../../lib/format.ts';
-import { PageTitle } from '../../../lib/page-title.tsx';
 import { useTeam } from '../../../lib/team-scope.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
 import { ScrollInside } from '../../../ui/scroll-inside.tsx';
+import { TeamHeader } from '../team-header.tsx';
 import { MakeToken } from './make-token.tsx';
 import { RevokeDialog } from './revoke-dialog.tsx';
 import { scopeWords, stateWord } from './token-words.ts';
@@ -19,14 +19,10 @@ export function TokensPage() {
   const { teamId, role, teamName } = useTeam();
   return (
     <div className="mx-auto grid w-full max-w-[76rem] grid-cols-[minmax(0,1fr)] gap-8 px-5 pt-6 pb-16 max-sm:px-4">
-      <PageTitle>API tokens</PageTitle>
-      <header>
-        <h1 className="text-title">API tokens</h1>
-        <p className="mt-1 max-w-[70ch] text-soft">
-          With a token a program brings in weather for {teamName}, or reads what was found, within its scopes. Only its
-          hash is kept here: the token itself is shown once, when it is made.
-        </p>
-      </header>
+      <TeamHeader title="API tokens">
+        With a token a program brings in weather for {teamName}, or reads what was found, within its scopes. Only its
+        hash is kept here: the token itself is shown once, when it is made.
+      </TeamHeader>
       {role === 'lead' ? (
         <>
           <MakeToken teamId={teamId} />
