@@ -212,10 +212,11 @@ test('the keyboard walks the page in its written order, chooses on the map, and 
 
   await page.getByText('Unmet hours by month and hour').click();
   const table = page.getByRole('table', { name: 'Unmet hours by month and hour of day' });
+  await table.getByRole('button').first().waitFor(SOON);
   const unmet = (await table.getByRole('button').allInnerTexts()).reduce((sum, text) => sum + Number(text), 0);
-  const [, demand = '', met = ''] =
+  const [, met = '', demand = ''] =
     /: ([\d,]+) of ([\d,]+) hours/.exec((await cloth.getAttribute('aria-label')) ?? '') ?? [];
-  expect(unmet).toBe(Number(met.replace(',', '')) - Number(demand.replace(',', '')));
+  expect(unmet).toBe(Number(demand.replace(',', '')) - Number(met.replace(',', '')));
 });
 
 test('the score between stations is drawn with its error, and any position has an estimate with its basis', async () => {
