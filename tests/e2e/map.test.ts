@@ -18,7 +18,8 @@ vi.setConfig({ testTimeout: 300_000 });
 
 let product: RunningProduct;
 let browser: Browser;
-let watched: WatchedPage;
+/** null: a test that looks at no page. */
+let watched: WatchedPage | null = null;
 let page: Page;
 
 beforeAll(async () => {
@@ -33,8 +34,9 @@ afterAll(async () => {
 
 /** Closing throws when the console, the network or the page complained about anything. */
 afterEach(async ({ task }) => {
-  if (task.result?.state === 'fail') await watched.picture(task.name.slice(0, 60).replaceAll(/\W+/g, '-'));
-  await watched.close();
+  if (task.result?.state === 'fail') await watched?.picture(task.name.slice(0, 60).replaceAll(/\W+/g, '-'));
+  await watched?.close();
+  watched = null;
 });
 
 async function enterAs(role: Role, viewport: Viewport): Promise<void> {
@@ -139,12 +141,18 @@ test('layer, place, filter and camera come back on reload and Back', async () =>
   await chosen().getByRole('heading', { name, exact: false, level: 2 }).waitFor();
   expect(await page.getByLabel('Hour class').inputValue()).toBe('short');
   expect(asked('view')).toBe(view);
-  await legend().getByText('hours of the year').waitFor();
+  await legend()
+    .getByRole('heading', { name: /hours of the year/ })
+    .waitFor();
 
   await page.getByLabel('Layer of the map').selectOption('grade');
-  await legend().getByText('of the weather').waitFor();
+  await legend()
+    .getByRole('heading', { name: /of the weather/ })
+    .waitFor();
   await page.goBack();
-  await legend().getByText('hours of the year').waitFor();
+  await legend()
+    .getByRole('heading', { name: /hours of the year/ })
+    .waitFor();
   expect(asked('layer')).toBe('hours.short');
   expect(await page.getByRole('button', { name: /^Save as version/ }).count()).toBe(0);
 });
@@ -170,11 +178,13 @@ test('the keyboard walks the page in its written order, chooses on the map, and 
   }
   expect(seen.filter((stop, index) => stop !== 'slider' || index === 0)).toEqual(stops);
 
+  const before = await textOf(chosen().getByRole('heading', { level: 2 }));
   await page.getByRole('listbox', { name: 'Stations on the map' }).focus();
   await page.keyboard.press('Home');
   await page.keyboard.press('ArrowDown');
   await page.keyboard.press('Enter');
   await expect.poll(() => asked('place')).not.toBeNull();
+  await expect.poll(() => textOf(chosen().getByRole('heading', { level: 2 })), SOON).not.toBe(before);
   const place = await textOf(chosen().getByRole('heading', { level: 2 }));
 
   await page.getByRole('region', { name: 'Ledger' }).getByRole('button', { name: 'Outdoor air' }).focus();
@@ -202,10 +212,11 @@ test('the keyboard walks the page in its written order, chooses on the map, and 
 
   await page.getByText('Unmet hours by month and hour').click();
   const table = page.getByRole('table', { name: 'Unmet hours by month and hour of day' });
+  await table.getByRole('button').first().waitFor(SOON);
   const unmet = (await table.getByRole('button').allInnerTexts()).reduce((sum, text) => sum + Number(text), 0);
-  const [, demand = '', met = ''] =
+  const [, met = '', demand = ''] =
     /: ([\d,]+) of ([\d,]+) hours/.exec((await cloth.getAttribute('aria-label')) ?? '') ?? [];
-  expect(unmet).toBe(Number(met.replace(',', '')) - Number(demand.replace(',', '')));
+  expect(unmet).toBe(Number(demand.replace(',', '')) - Number(met.replace(',', '')));
 });
 
 test('the score between stations is drawn with its error, and any position has an estimate with its basis', async () => {

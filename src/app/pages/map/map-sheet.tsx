@@ -35,6 +35,8 @@ const PointNote = lazy(async () => ({ default: (await import('./point-note.tsx')
 
 /** What both compositions of the sheet are made from. */
 export interface SheetProps {
+  /** Name of the brief: what the page is about. */
+  readonly title: string;
   readonly brief: ReactNode;
   readonly ranking: ReactNode;
   readonly map: ReactNode;
@@ -143,6 +145,7 @@ export function MapSheet({ ids, map }: MapSheetProps) {
     ],
   );
   const props: SheetProps = {
+    title: map.brief.name,
     map: (
       <>
         {sheet}

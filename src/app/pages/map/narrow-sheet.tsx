@@ -6,7 +6,7 @@ import { PlaceMargin } from './place-margin.tsx';
 import { PlaceUnderMap } from './place-under-map.tsx';
 
 /** The map first, everything of its margins in a sheet at the foot of the screen. */
-export function NarrowSheet({ brief, ranking, map, point, chosen, onLeave }: SheetProps) {
+export function NarrowSheet({ title, brief, ranking, map, point, chosen, onLeave }: SheetProps) {
   const isAtPlace = chosen !== null || point !== null;
   const [step, setStep] = useState<SheetStep>(isAtPlace ? 'half' : 'peek');
   const shown = useRef(chosen?.figures.id ?? null);
@@ -26,6 +26,7 @@ export function NarrowSheet({ brief, ranking, map, point, chosen, onLeave }: She
         {isAtPlace ? (
           <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
             <div>
+              <h1 className="sr-only">{title}</h1>
               <Button look="quiet" className="-mt-1 text-fine" onClick={onLeave}>
                 All places
               </Button>
