@@ -58,7 +58,7 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
       now: () => new Date(),
       storage: createFolderStore(path.join(home, 'originals')),
       sessionSecrets: ['a session secret for measuring'],
-      publicUrl: null,
+      publicUrl: 'http://127.0.0.1',
       sendsMail: false,
       basemapPath: path.resolve(import.meta.dirname, '../../data/basemap/basemap.pmtiles'),
     },

@@ -7,8 +7,11 @@ const MOST_PLACES = 8;
 /** Trigrams need three letters; fewer are taken for a beginning. */
 const LEAST_LETTERS = 3;
 
-/** The team's own stations and sites whose name holds the text, those that begin with it first. */
-export async function findOwnPlaces(db: Knex, asked: { teamId: string; text: string }): Promise<FoundPlace[]> {
+/** The team's own stations and sites whose name holds the text, those that begin with it first; none of a closed programme. */
+export async function findOwnPlaces(
+  db: Knex,
+  asked: { teamId: string; text: string; closed: readonly string[] },
+): Promise<FoundPlace[]> {
   const part = `%${likeText(asked.text)}%`;
   const { rows } = await db.raw<{ rows: FoundPlace[] }>(
     `select * from (
@@ -16,11 +19,12 @@ export async function findOwnPlaces(db: Knex, asked: { teamId: string; text: str
        from stations where team_id = :teamId and name ilike :part
        union all
        select 'site', id, programme_id, name, null, latitude, longitude
-       from sites where team_id = :teamId and removed_at is null and name ilike :part
+       from sites
+       where team_id = :teamId and removed_at is null and not programme_id = any(:closed::uuid[]) and name ilike :part
      ) as own
      order by name ilike :beginning desc, name, id
      limit :most`,
-    { teamId: asked.teamId, part, beginning: part.slice(1), most: MOST_OWN },
+    { teamId: asked.teamId, closed: [...asked.closed], part, beginning: part.slice(1), most: MOST_OWN },
   );
   return rows;
 }

@@ -11,8 +11,8 @@ import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
+import { closedTo } from '../../http/closed-to.ts';
 import { mount } from '../../http/mount.ts';
-import type { Actor } from '../../http/request-context.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
@@ -164,9 +164,4 @@ export function runsRoutes(
     if (body === null) throw new AppError('not_found', 'There is no such run in this team.');
     return { body };
   });
-}
-
-/** A run is named without its programme, so the rule of the path cannot see whose it is. */
-function closedTo(actor: Actor): readonly string[] {
-  return actor.kind === 'person' ? [...actor.closedProgrammes] : [];
 }

@@ -234,6 +234,12 @@ describe('a programme', () => {
     await lead.get(`${open}/briefs`).expect(200);
     await outside.agent.get(`${open}/briefs`).expect(404);
     await outside.agent.get(`${base}/programmes/${programmeId.toUpperCase()}/briefs`).expect(404);
+    const site = { name: 'Hidden hall', latitude: -25, longitude: 25, elevationM: 1200, designLoadKw: null };
+    await lead.post(`${open}/sites`).send(site).expect(200);
+    const found = async (agent: Agent) =>
+      (await agent.get(`${base}/places?text=hidden`).expect(200)).body.places.map(({ name }: { name: string }) => name);
+    expect(await found(inside.agent)).toContain('Hidden hall');
+    expect(await found(outside.agent)).not.toContain('Hidden hall');
     await outside.agent.patch(open).send({ name: 'Mine' }).expect(404);
     const ids = async (agent: Agent) =>
       (await agent.get(`${base}/programmes`).expect(200)).body.items.map(({ id }: { id: string }) => id);
