@@ -18,6 +18,7 @@ import type { OriginalStore } from '../../server/storage/original-store.ts';
 import { shippedRelief } from '../../server/tiles/relief.ts';
 import { startWorker } from '../../server/worker.ts';
 import type { Role } from '../../src/contract/accounts.ts';
+import { eventually } from './eventually.ts';
 import { type KeptLog, keepLog } from './quiet-log.ts';
 import { makeTestDatabase, type TestDatabase } from './test-database.ts';
 
@@ -125,7 +126,11 @@ export async function openRoad(options: { database?: TestDatabase } = {}): Promi
       workers.add(closing);
       return closing;
     },
-    countRows: () => countRows(database),
+    async countRows() {
+      // A worker takes its job out of the queue a moment after it has done the work.
+      if (workers.size > 0) await eventually('an empty queue', async () => (await waitingJobs(database)) === 0);
+      return countRows(database);
+    },
     waitingUploads: async () => (await readdir(home)).filter((name) => name !== 'originals'),
     async close() {
       for (const worker of workers) await worker.close();
@@ -140,6 +145,14 @@ async function signIn(app: Express, email: string): Promise<Agent> {
   const agent = supertest.agent(app).set('Sec-Fetch-Site', 'same-origin');
   await agent.post('/api/session').send({ email, password: PASSWORD }).expect(200);
   return agent;
+}
+
+/** Jobs that a worker has or will take; those that failed for good stay in the queue. */
+async function waitingJobs({ ownerDb }: TestDatabase): Promise<number> {
+  const { rows } = await ownerDb.raw<{ rows: [{ number: number }] }>(
+    'select count(*)::integer as number from graphile_worker._private_jobs where attempts < max_attempts or locked_at is not null',
+  );
+  return rows[0].number;
 }
 
 async function countRows({ ownerDb }: TestDatabase): Promise<Readonly<Record<string, number>>> {
