@@ -350,6 +350,7 @@ test('a lead puts a station right with reasons, and makes a token that is shown 
   await putStationRight(page);
   await expectAccessible(page, 'station');
   await page.getByRole('link', { name: 'Team', exact: true }).click();
+  await page.getByRole('link', { name: 'API tokens' }).click();
   await makeAndRevokeToken(page);
   await expectAccessible(page, 'API tokens');
 });
