@@ -55,11 +55,10 @@ export default defineConfig({
         test: {
           name: 'e2e',
           include: ['tests/e2e/**/*.test.ts'],
-          globalSetup: ['tests/support/database.ts'],
+          globalSetup: ['tests/support/database.ts', 'tests/support/built-client.ts'],
           env: { TZ: 'UTC' },
           testTimeout: 120_000,
-          hookTimeout: 180_000,
-          fileParallelism: false,
+          hookTimeout: 300_000,
         },
       },
     ],

@@ -52,7 +52,7 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   await page.setViewportSize({ width: 390, height: 844 });
   await expectNoSidewaysScroll(page, 'the account on a phone');
 
-  await leads.page.goto(`/teams/${teamId}/team/people`);
+  await leads.page.goto(`/teams/${teamId}/team`);
   await leads.page.getByLabel('Role of Newly Joined').selectOption('engineer');
   await leads.page.getByRole('button', { name: 'Sign out: Newly Joined' }).click();
   await leads.page.getByRole('button', { name: 'End the sessions' }).click();

@@ -6,11 +6,13 @@ import { inject } from 'vitest';
 import { seedDemo } from '../../server/builders/seed-demo.ts';
 import { keepWorkerRunning } from '../../server/cli/worker-process.ts';
 import { createFolderStore } from '../../server/storage/folder-store.ts';
+import { eventually } from './eventually.ts';
 import { keepLog } from './quiet-log.ts';
 import { repositoryDir } from './run-command.ts';
 import { asSuperuser, makeTestDatabase, type TestDatabase } from './test-database.ts';
 
 const DEMO_DATABASE = 'muslin_demo';
+const LONGEST_SEEDING_MS = 240_000;
 
 export interface DemoHome {
   readonly originalsDir: string;
@@ -44,10 +46,21 @@ async function seedOnce(folder: string): Promise<void> {
   await rename(unfinished, folder);
 }
 
-/** A database that holds the demo, with what stands outside it put into `home`. Files of one suite run one after the other. */
+/** True for the one file of the run that is to seed; the others wait for what it makes. */
+function isFirst(folder: string): boolean {
+  try {
+    mkdirSync(`${folder}.begun`);
+    return true;
+  } catch {
+    return false;
+  }
+}
+
+/** A database that holds the demo, with what stands outside it put into `home`. */
 export async function makeDemoDatabase(home: string): Promise<TestDatabase> {
   const folder = path.join(inject('sharedDir'), 'demo');
-  if (!existsSync(folder)) await seedOnce(folder);
+  if (isFirst(folder)) await seedOnce(folder);
+  else await eventually('the demo', async () => existsSync(folder), LONGEST_SEEDING_MS);
   await cp(folder, home, { recursive: true });
   return makeTestDatabase(DEMO_DATABASE);
 }
