@@ -1,8 +1,8 @@
 import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
+import { getSitePlace, getStationPlace } from '../contract/place.ts';
 import { getMap } from '../contract/programme-map.ts';
-import { getSitePlace, getStationPlace } from '../contract/runs.ts';
 import { listSiteImports } from '../contract/site-imports.ts';
 import { getSite } from '../contract/site-record.ts';
 import { listSites } from '../contract/sites.ts';

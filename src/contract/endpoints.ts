@@ -12,6 +12,7 @@ import * as members from './members.ts';
 import * as method from './method.ts';
 import * as notices from './notices.ts';
 import * as own from './own-account.ts';
+import * as place from './place.ts';
 import * as doubts from './place-doubts.ts';
 import * as places from './places.ts';
 import * as map from './programme-map.ts';
@@ -111,8 +112,8 @@ export const endpoints = {
   getDepressionMap: depression.getDepressionMap,
   judgeRange: doubts.judgeRange,
   findWhatWouldPass: doubts.findWhatWouldPass,
-  getSitePlace: runs.getSitePlace,
-  getStationPlace: runs.getStationPlace,
+  getSitePlace: place.getSitePlace,
+  getStationPlace: place.getStationPlace,
   getRunHours: hours.getRunHours,
   rankPlaces: ranking.rankPlaces,
   getRun: runs.getRun,

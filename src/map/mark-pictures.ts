@@ -20,7 +20,7 @@ export const MARK_SIZE_PX = 24;
 const LINE_PX = 1.3;
 const HALO_PX = 1.5;
 const HATCH_SPACING_PX = 3.4;
-const HATCH_PX = 0.9;
+const HATCH_PX = 1.1;
 
 const HALF_SIDE_PX = 7.6;
 /** A triangle looks centred when its centre of mass is; this lifts the box's middle to it. */

@@ -1,7 +1,7 @@
 /** What a person of a team does on the main road, over HTTP. */
 import type { Response } from 'supertest';
+import type { Place } from '../../src/contract/place.ts';
 import type { ProgrammeMap } from '../../src/contract/programme-map.ts';
-import type { Place } from '../../src/contract/runs.ts';
 import type { WeatherFile, WeatherFileRecord } from '../../src/contract/weather.ts';
 import { eventually } from './eventually.ts';
 import type { Member, RoadTeam } from './open-road.ts';

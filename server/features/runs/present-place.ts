@@ -1,4 +1,5 @@
-import type { BriefBasis, Place, ShownRun } from '#contract/runs.ts';
+import type { Place } from '#contract/place.ts';
+import type { BriefBasis, ShownRun } from '#contract/runs.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
 import { withSiteGates } from '#engine/score/site-gates.ts';
 import type { ResolvedSite } from '../sites/resolved-sites-read-model.ts';

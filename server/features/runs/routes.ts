@@ -1,12 +1,13 @@
 import type { Router } from 'express';
 import { getDepressionMap } from '#contract/depression-map.ts';
 import { listRunHours as listHoursEndpoint } from '#contract/hour-list.ts';
+import { getSitePlace, getStationPlace } from '#contract/place.ts';
 import { findWhatWouldPass, judgeRange } from '#contract/place-doubts.ts';
 import { getMap } from '#contract/programme-map.ts';
 import { rankPlaces as rankEndpoint } from '#contract/ranking.ts';
 import { rescore as rescoreEndpoint } from '#contract/rescore.ts';
 import { exportRunHours as exportEndpoint, getRunHours } from '#contract/run-hours.ts';
-import { getRun, getSitePlace, getStationPlace } from '#contract/runs.ts';
+import { getRun } from '#contract/runs.ts';
 import { getEstimate, getSurface, judgeSurface } from '#contract/surface.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';

@@ -1,7 +1,8 @@
 /** Invented data for the gallery: each state that a component has to show, in shapes of the contract. One list, and long for it. */
 import type { Membership } from '../../contract/accounts.ts';
+import type { Place } from '../../contract/place.ts';
 import type { MapStation, ProgrammeMap } from '../../contract/programme-map.ts';
-import type { Ledger, Place } from '../../contract/runs.ts';
+import type { Ledger } from '../../contract/runs.ts';
 import type { FileStatus, WeatherFile, WeatherFileRecord } from '../../contract/weather.ts';
 import { SLOTS_PER_YEAR } from '../../engine/conventions.ts';
 import { type HourClass, hourClasses } from '../../engine/hour-classes/hour-class.ts';

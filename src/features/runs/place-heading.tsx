@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom';
+import type { Place } from '../../contract/place.ts';
 import type { PlaceFigures } from '../../contract/place-figures.ts';
-import type { Place } from '../../contract/runs.ts';
 import { metres, number, position, withUnit } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import {

@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
-import type { GateAnswer, Place } from '../../contract/runs.ts';
+import type { Place } from '../../contract/place.ts';
+import type { GateAnswer } from '../../contract/runs.ts';
 import { differenceK, hours, percent, sensible, withUnit } from '../../lib/format.ts';
 
 type Shown = NonNullable<Place['shown']>;

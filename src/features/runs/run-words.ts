@@ -1,6 +1,7 @@
 import type { Role } from '../../contract/accounts.ts';
+import type { Place } from '../../contract/place.ts';
 import type { MapStation } from '../../contract/programme-map.ts';
-import type { Ledger, Place, ToleranceAnswer } from '../../contract/runs.ts';
+import type { Ledger, ToleranceAnswer } from '../../contract/runs.ts';
 import { list, number, sensible, share as shareOf } from '../../lib/format.ts';
 
 type Shown = NonNullable<Place['shown']>;

@@ -1,4 +1,5 @@
-import type { Place, ScorePart } from '../../contract/runs.ts';
+import type { Place } from '../../contract/place.ts';
+import type { ScorePart } from '../../contract/runs.ts';
 import { number, sensible } from '../../lib/format.ts';
 import { ScrollInside } from '../../ui/scroll-inside.tsx';
 

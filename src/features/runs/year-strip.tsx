@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useId } from 'react';
 import { ClassSwatch } from '../../charts/class-swatch.tsx';
 import { classMeaning, classWords, dampWords } from '../../charts/hour-class-words.ts';
-import type { Place } from '../../contract/runs.ts';
+import type { Place } from '../../contract/place.ts';
 import { HOURS_PER_DAY } from '../../engine/conventions.ts';
 import type { HourClass } from '../../engine/hour-classes/hour-class.ts';
 import { errorSentence } from '../../lib/api-error.ts';

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { getSitePlace } from '../../contract/runs.ts';
+import { getSitePlace } from '../../contract/place.ts';
 import type { Site } from '../../contract/sites.ts';
 import { apiQuery } from '../../lib/api-query.ts';
 import { number, percent, withUnit } from '../../lib/format.ts';

@@ -1,6 +1,6 @@
 import { useQueryClient } from '@tanstack/react-query';
+import { getStationPlace } from '../../contract/place.ts';
 import { getMap } from '../../contract/programme-map.ts';
-import { getStationPlace } from '../../contract/runs.ts';
 import { getStation, listStations } from '../../contract/stations.ts';
 import { getWeatherFile } from '../../contract/weather.ts';
 import { listWeatherFiles } from '../../contract/weather-library.ts';

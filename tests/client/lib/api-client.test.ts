@@ -1,8 +1,8 @@
 import { createServer, type RequestListener, type Server } from 'node:http';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { getSession, signIn, signOut } from '../../../src/contract/accounts.ts';
+import { getStationPlace } from '../../../src/contract/place.ts';
 import { getRunHours } from '../../../src/contract/run-hours.ts';
-import { getStationPlace } from '../../../src/contract/runs.ts';
 import { listWeatherFiles } from '../../../src/contract/weather-library.ts';
 import { call, callForBytes, urlOf } from '../../../src/lib/api-client.ts';
 import { ApiError, errorSentence } from '../../../src/lib/api-error.ts';

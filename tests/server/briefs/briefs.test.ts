@@ -2,8 +2,8 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import type { BriefPreview, BriefVersionRecord, BriefVersionView } from '../../../src/contract/briefs.ts';
 import type { ErrorBody } from '../../../src/contract/errors.ts';
+import type { Place } from '../../../src/contract/place.ts';
 import type { ProgrammeMap } from '../../../src/contract/programme-map.ts';
-import type { Place } from '../../../src/contract/runs.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
 import { numberRanges, pricedPreset, withValue } from '../../support/brief-ranges.ts';
 import { epwText } from '../../support/epw-text.ts';

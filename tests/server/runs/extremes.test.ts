@@ -1,5 +1,5 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import type { Place } from '../../../src/contract/runs.ts';
+import type { Place } from '../../../src/contract/place.ts';
 import type { WeatherFileRecord } from '../../../src/contract/weather.ts';
 import { ruleNames } from '../../../src/engine/weather-files/quality/quality-options.ts';
 import { type EpwOptions, epwText } from '../../support/epw-text.ts';

@@ -1,7 +1,7 @@
 /** The hours of a run as a table, over HTTP: every class is found again from the rows, by an oracle apart from the engine. */
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { officeBrief } from '../../../server/features/briefs/presets.ts';
-import type { Place } from '../../../src/contract/runs.ts';
+import type { Place } from '../../../src/contract/place.ts';
 import { hourClasses } from '../../../src/engine/hour-classes/hour-class.ts';
 import { checkRow } from '../../engine/run/oracle/check-row.ts';
 import { csvRecords, csvRows } from '../../support/csv-rows.ts';

@@ -42,7 +42,7 @@ function contentOf(nth: number): string {
   return own.replace(`,${station.elevationM.toFixed(1)}\r\n`, `,${elevationM.toFixed(1)}\r\n`);
 }
 
-/** Starts a worker process and kills it after a random while, also while it is just starting. */
+/** Starts a worker process and kills it a random while after its first look for work. */
 async function killOne(): Promise<void> {
   const settings = { databaseUrl: road.database.databaseUrl, originalsDir: road.originalsDir };
   const began = performance.now();

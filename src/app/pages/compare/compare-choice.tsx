@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import type { Place } from '../../../contract/place.ts';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
-import type { Place } from '../../../contract/runs.ts';
 import { briefsQuery } from '../../../features/briefs/brief-queries.ts';
 import type { PlaceRef } from '../../../map/sheet-place.ts';
 import { Button } from '../../../ui/button.tsx';

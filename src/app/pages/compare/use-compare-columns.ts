@@ -1,5 +1,6 @@
 import { useQueries } from '@tanstack/react-query';
-import type { Place, RunRecord, ShownRun } from '../../../contract/runs.ts';
+import type { Place } from '../../../contract/place.ts';
+import type { RunRecord, ShownRun } from '../../../contract/runs.ts';
 import { placeQuery, runQuery } from '../../../features/runs/run-queries.ts';
 import { nameOfPlace, placeYearWords } from '../../../features/runs/run-words.ts';
 import type { PlaceRef } from '../../../map/sheet-place.ts';

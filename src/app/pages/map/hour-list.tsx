@@ -1,5 +1,5 @@
 import { lazy, Suspense } from 'react';
-import type { Place } from '../../../contract/runs.ts';
+import type { Place } from '../../../contract/place.ts';
 import type { HourChoice } from '../../../features/runs/hour-choice.ts';
 import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { nameOfPlace } from '../../../features/runs/run-words.ts';

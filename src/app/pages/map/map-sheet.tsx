@@ -1,13 +1,12 @@
-import { useQuery } from '@tanstack/react-query';
 import { lazy, type ReactNode, Suspense, useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { PlaceFigures } from '../../../contract/place-figures.ts';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import { LayerChoice } from '../../../features/runs/layer-choice.tsx';
-import { type DepressionHours, gradeOf, layerTitle, layerUnit } from '../../../features/runs/map-layer.ts';
+import { gradeOf, layerTitle, layerUnit } from '../../../features/runs/map-layer.ts';
 import { findPlace, type MapPlace, placesOfMap, withFigures } from '../../../features/runs/map-places.ts';
 import { inkedLayer, placeSentence } from '../../../features/runs/place-inks.ts';
 import { rankedPlaces } from '../../../features/runs/ranked-places.ts';
-import { depressionQuery, type ProgrammeIds } from '../../../features/runs/run-queries.ts';
+import type { ProgrammeIds } from '../../../features/runs/run-queries.ts';
 import { useLiveScores } from '../../../features/runs/use-live-scores.ts';
 import { useMedia, WIDE } from '../../../lib/use-media.ts';
 import { LayerLegend } from '../../../map/layer-legend.tsx';
@@ -22,6 +21,7 @@ import { NarrowSheet } from './narrow-sheet.tsx';
 import { PlaceActions } from './place-actions.tsx';
 import type { ChosenPlace } from './place-margin.tsx';
 import { Ranking } from './ranking.tsx';
+import { useDepression } from './use-depression.ts';
 import { useLiveDraft } from './use-live-draft.ts';
 import { useMapAddress } from './use-map-address.ts';
 import { useMoveSite } from './use-move-site.ts';
@@ -215,19 +215,6 @@ function bridgeFigures(bridge: Bridge | null, { brief, pending }: ProgrammeMap):
   const isAhead =
     bridge !== null && (brief.version < bridge.version || (brief.version === bridge.version && pending > 0));
   return isAhead ? bridge.figures : NO_FIGURES;
-}
-
-const NO_DEPRESSION: DepressionHours = new Map();
-
-function useDepression(teamId: string, layer: Parameters<typeof layerTitle>[0]): DepressionHours {
-  const isShown = layer.kind === 'depression';
-  const options = depressionQuery(teamId, isShown ? layer : { atLeastK: 0, months: [] });
-  const { data } = useQuery({ ...options, enabled: isShown });
-  return useMemo(
-    () =>
-      data === undefined ? NO_DEPRESSION : new Map(data.stations.map(({ stationId, hours }) => [stationId, hours])),
-    [data],
-  );
 }
 
 /** What the map draws: it changes with the places themselves, never with their figures. */

@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { lazy, type ReactNode, Suspense, useState } from 'react';
-import type { Place } from '../../../contract/runs.ts';
+import type { Place } from '../../../contract/place.ts';
 import { Fold } from '../../../features/runs/fold.tsx';
 import type { HourChoice } from '../../../features/runs/hour-choice.ts';
 import type { MapPlace } from '../../../features/runs/map-places.ts';
