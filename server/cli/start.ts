@@ -4,7 +4,6 @@ import path from 'node:path';
 import { seedDemo } from '../builders/seed-demo.ts';
 import { type Config, ConfigError, isLoopback, readConfig } from '../config.ts';
 import { connect } from '../db/connection.ts';
-import { loadGazetteer } from '../db/load-gazetteer.ts';
 import { type PreparedDatabase, prepareDatabase } from '../db/prepare-database.ts';
 import type { Deps } from '../deps.ts';
 import { makeSetUpKey } from '../features/accounts/set-up-key.ts';
@@ -19,6 +18,7 @@ import { CouldNotRun } from './could-not-run.ts';
 import { portIsFree } from './free-port.ts';
 import { type Home, homePath, openHome } from './home.ts';
 import { takeHome } from './home-lock.ts';
+import { loadGazetteerBeside } from './load-gazetteer-beside.ts';
 import { requirePackages } from './packages.ts';
 import { makeStopStack, type StopStack } from './stop-stack.ts';
 import { untilAborted } from './until-aborted.ts';
@@ -121,12 +121,9 @@ async function serve(start: Start, nameAddress: (address: string) => void): Prom
   const settings = { databaseUrl: deps.databaseUrl, originalsDir: home.originalsDir, publicUrl: deps.publicUrl };
   const worker = keepWorkerRunning({ rootDir: context.rootDir, settings, log });
   stops.push('The job worker', worker.stop);
-  const gazetteer = path.join(context.rootDir, 'data/gazetteer/gazetteer.tsv.gz');
-  // Names of places can be searched a little later than everything else.
-  const loading = loadGazetteer(made.database.ownerUrl, gazetteer).catch((error: unknown) =>
-    log.error({ error }, 'loading the gazetteer failed; names of places cannot be searched'),
-  );
-  stops.push('The loading of the gazetteer', async () => void (await loading));
+  const file = path.join(context.rootDir, 'data/gazetteer/gazetteer.tsv.gz');
+  const gazetteer = loadGazetteerBeside({ ownerUrl: made.database.ownerUrl, file, log });
+  stops.push('The loading of the gazetteer', gazetteer.stop);
   const words = await welcome(start, deps);
   context.signal.throwIfAborted();
   const web = await startWeb({ config, deps });

@@ -24,6 +24,8 @@ export async function loadGazetteer(ownerUrl: string, path: string): Promise<boo
   const packed = await promises.readFile(path);
   const fingerprint = `${LOADED_AS} ${createHash('sha256').update(packed).digest('hex')}`;
   const client = new pg.Client({ connectionString: ownerUrl });
+  // A lost connection is told by the statement that meets it; told here as well, and heard by nobody, it would end the program.
+  client.on('error', () => undefined);
   await client.connect();
   try {
     await client.query('begin');

@@ -1,4 +1,6 @@
+import { once } from 'node:events';
 import { mkdtemp, rm, writeFile } from 'node:fs/promises';
+import { connect, createServer, type Socket } from 'node:net';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { gzipSync } from 'node:zlib';
@@ -6,6 +8,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { loadGazetteer } from '../../../server/db/load-gazetteer.ts';
 import { plainName } from '../../../server/db/plain-name.ts';
 import type { FoundPlace } from '../../../src/contract/places.ts';
+import { eventually } from '../../support/eventually.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 
 /** Rows as data/gazetteer has them; names, countries and positions of real places, figures rounded. */
@@ -108,6 +111,37 @@ describe('the gazetteer', () => {
     expect(both.toSorted()).toEqual([false, true]);
     expect(await names('Paris')).toEqual(['Paris, France']);
     expect(await names('Gaborone')).toEqual([`Gaborone airfield, null`]);
+  });
+
+  it('fails alone, and does not end the program, when its connection is cut without a word', async () => {
+    const { ownerUrl, ownerDb } = road.database;
+    const { hostname, port } = new URL(ownerUrl);
+    const sockets: Socket[] = [];
+    const between = createServer((client) => {
+      const server = connect(Number(port), hostname);
+      sockets.push(client, server);
+      for (const socket of [client, server]) socket.on('error', () => undefined);
+      client.pipe(server).pipe(client);
+    }).listen(0, '127.0.0.1');
+    await once(between, 'listening');
+    const address = between.address();
+    const cutUrl = new URL(ownerUrl);
+    cutUrl.port = String(typeof address === 'object' ? address?.port : 0);
+    await ownerDb.transaction(async (holder) => {
+      // The lock of whoever loads: the loading below waits for it, and is cut off there.
+      await holder.raw('select pg_advisory_xact_lock(7151964)');
+      const cutOff = expect(loadGazetteer(cutUrl.href, file)).rejects.toThrow(/terminat/i);
+      await eventually('its wait for the lock', async () => {
+        const { rows } = await ownerDb.raw<{ rows: unknown[] }>(
+          `select 1 from pg_locks where locktype = 'advisory' and objid = 7151964 and not granted`,
+        );
+        return rows.length > 0;
+      });
+      for (const socket of sockets) socket.destroy();
+      await cutOff;
+    });
+    between.close();
+    expect(await names('Paris')).not.toEqual([]);
   });
 
   it('stays as it was when a file cannot be read', async () => {
