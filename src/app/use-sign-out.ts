@@ -1,20 +1,18 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useNavigate } from 'react-router-dom';
 import { signOut } from '../contract/accounts.ts';
 import { call } from '../lib/api-client.ts';
 import { paths } from '../lib/paths.ts';
-import { sessionQuery } from '../lib/session-query.ts';
 
-/** Ends the session, forgets what was fetched under it, and leads to the page where one signs in. */
+/**
+ * Ends the session and leads to the page where one signs in, loaded anew: nothing that was fetched under the session stays in
+ * memory, and no part of the page that is left asks the server once more.
+ */
 export function useSignOut() {
-  const navigate = useNavigate();
   const client = useQueryClient();
   return useMutation({
+    // What is still on its way would be refused as soon as the session has ended.
+    onMutate: () => client.cancelQueries(),
     mutationFn: () => call(signOut, { params: {}, query: {} }),
-    onSuccess: () => {
-      client.clear();
-      client.setQueryData(sessionQuery.queryKey, { person: null, memberships: [] });
-      navigate(paths.signIn.to());
-    },
+    onSuccess: () => window.location.assign(paths.signIn.to()),
   });
 }
