@@ -4,6 +4,7 @@ import * as accounts from './accounts.ts';
 import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
+import * as designPoints from './design-points.ts';
 import type { Endpoint } from './endpoint.ts';
 import * as hourList from './hour-list.ts';
 import * as invitations from './invitations.ts';
@@ -118,6 +119,7 @@ export const endpoints = {
   rankPlaces: ranking.rankPlaces,
   getRun: runs.getRun,
   listRunHours: hourList.listRunHours,
+  getDesignPoints: designPoints.getDesignPoints,
   exportRunHours: hours.exportRunHours,
   rescore: rescoring.rescore,
   listPresets: briefs.listPresets,

@@ -90,6 +90,11 @@ export function waitingTime(seconds: number): string {
   return plural(Math.ceil(seconds / 60), 'minute');
 }
 
+/** The words with their first letter in upper case. */
+export function capital(words: string): string {
+  return words.charAt(0).toUpperCase() + words.slice(1);
+}
+
 /** Ends a sentence that was written without its full stop, and keeps its figures with their units. */
 export function sentence(text: string): string {
   const held = text.replace(/(\d) (?=%|°C)/g, `$1${NO_BREAK}`);

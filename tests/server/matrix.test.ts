@@ -138,6 +138,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   getStationPlace: readersToo,
   getSitePlace: readersToo,
   listRunHours: readersToo,
+  getDesignPoints: readersToo,
   rankPlaces: readersToo,
   getRun: readersToo,
   judgeRange: readersToo,

@@ -1,5 +1,6 @@
 import type { Router } from 'express';
 import { getDepressionMap } from '#contract/depression-map.ts';
+import { getDesignPoints } from '#contract/design-points.ts';
 import { listRunHours as listHoursEndpoint } from '#contract/hour-list.ts';
 import { getSitePlace, getStationPlace } from '#contract/place.ts';
 import { findWhatWouldPass, judgeRange } from '#contract/place-doubts.ts';
@@ -19,6 +20,7 @@ import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
 import { estimatePlace } from './estimate-place.ts';
 import { exportRunHours } from './export-run-hours.ts';
+import { findDesignPoints } from './find-design-points.ts';
 import { judgeSitePlace } from './judge-site-place.ts';
 import { byStation, judgeStation } from './judge-station.ts';
 import { makeLinesOfYears } from './lines-of-years.ts';
@@ -152,6 +154,10 @@ export function runsRoutes(
 
   mount(router, deps, listHoursEndpoint, async ({ params, query }, { actor, signal }) =>
     listRunHours({ db, yearThread, lines }, { ...params, ...query, closed: closedTo(actor), signal }),
+  );
+
+  mount(router, deps, getDesignPoints, async ({ params }, { actor }) =>
+    findDesignPoints(db, { ...params, closed: closedTo(actor) }),
   );
 
   mount(router, deps, getRun, async ({ params }, { actor }) => {

@@ -9,8 +9,9 @@ import type { DemandHour, HourJudgement } from '../hour-classes/demand-hour.ts';
 import { setPoints } from '../hour-classes/set-points.ts';
 import { volumeM3PerKg } from '../psychrometrics/moist-air.ts';
 import { humidityRatioOnWetBulbLine } from '../psychrometrics/wet-bulb-line.ts';
-import type { DesignRow, DesignValues } from '../reduction/design-values.ts';
-import { unpackYear } from '../reduction/packed-columns.ts';
+import { wetBulbColumn } from '../reduction/derived-columns.ts';
+import { type DesignRow, type DesignValues, designValues } from '../reduction/design-values.ts';
+import { unpackDryBulb, unpackYear } from '../reduction/packed-columns.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
 import { findUse } from '../run/find-use.ts';
 import { DRY_AIR_KJ_PER_KG_K } from '../stages/stage-path.ts';
@@ -45,6 +46,13 @@ export interface Sizing {
 }
 
 const LITRES_PER_M3 = 1000;
+
+/** Design values of a year as it is judged: a year that was moved to another height has its own. Dew points are left out. */
+export function designOfYear({ packed }: WeatherYear): DesignValues {
+  const dryBulbC = unpackDryBulb(packed);
+  const dewPointC = new Float64Array(dryBulbC.length).fill(Number.NaN);
+  return designValues({ dryBulbC, wetBulbC: wetBulbColumn(packed), dewPointC });
+}
 
 /**
  * @param input.design the design values of the year, as its reduction found them

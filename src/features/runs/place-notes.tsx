@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import type { Place } from '../../contract/place.ts';
 import type { GateAnswer } from '../../contract/runs.ts';
-import { differenceK, hours, percent, sensible, withUnit } from '../../lib/format.ts';
+import { capital, differenceK, hours, percent, sensible, withUnit } from '../../lib/format.ts';
 
 type Shown = NonNullable<Place['shown']>;
 
@@ -172,8 +172,4 @@ export function CautionsNote({ shown }: { shown: Shown }) {
       ))}
     </ul>
   );
-}
-
-function capital(words: string): string {
-  return words.charAt(0).toUpperCase() + words.slice(1);
 }

@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import type { PlaceRange } from '../../contract/place-doubts.ts';
 import { errorSentence } from '../../lib/api-error.ts';
+import { capital } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { type PlaceAsked, type ProgrammeIds, rangeQuery } from './run-queries.ts';
@@ -74,8 +75,4 @@ function RangeTable({ range: { score, year, years, pairs, largest } }: { range: 
       )}
     </>
   );
-}
-
-function capital(words: string): string {
-  return words.charAt(0).toUpperCase() + words.slice(1);
 }

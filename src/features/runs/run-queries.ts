@@ -1,5 +1,6 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
 import { getDepressionMap } from '../../contract/depression-map.ts';
+import { type DesignPoints, getDesignPoints } from '../../contract/design-points.ts';
 import type { AnswerOf } from '../../contract/endpoint.ts';
 import { type HourList, listRunHours } from '../../contract/hour-list.ts';
 import { getSitePlace, getStationPlace, type Place } from '../../contract/place.ts';
@@ -87,6 +88,16 @@ export function rankingQuery(
     queryKey: [rankPlaces.path, teamId, programmeId, briefId, body.view, ...body.placeIds],
     queryFn: ({ signal }) => call(rankPlaces, input, { signal }),
     staleTime: JUDGED_MS,
+  });
+}
+
+/** What the plant of a run does at the design values of its year. */
+export function designPointsQuery(run: { teamId: string; runId: string }) {
+  const input = { params: run, query: {} };
+  return queryOptions<DesignPoints>({
+    queryKey: apiKey(getDesignPoints, input),
+    queryFn: ({ signal }) => call(getDesignPoints, input, { signal }),
+    staleTime: Number.POSITIVE_INFINITY,
   });
 }
 

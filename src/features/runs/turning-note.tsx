@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import type { TurningChange, WhatWouldPass } from '../../contract/place-doubts.ts';
 import { stageWords } from '../../engine/brief/field-words.ts';
 import { errorSentence } from '../../lib/api-error.ts';
-import { list, sensible } from '../../lib/format.ts';
+import { capital, list, sensible } from '../../lib/format.ts';
 import { Button } from '../../ui/button.tsx';
 import { Loading } from '../../ui/loading.tsx';
 import { type PlaceAsked, type ProgrammeIds, whatWouldPassQuery } from './run-queries.ts';
@@ -85,8 +85,4 @@ function TurningRow({ change, act }: { change: TurningChange; act: (() => void) 
       </td>
     </tr>
   );
-}
-
-function capital(words: string): string {
-  return words.charAt(0).toUpperCase() + words.slice(1);
 }

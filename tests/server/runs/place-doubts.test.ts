@@ -1,13 +1,16 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { officeBrief } from '../../../server/features/briefs/presets.ts';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
+import type { DesignPoints } from '../../../src/contract/design-points.ts';
 import type { HourList } from '../../../src/contract/hour-list.ts';
 import type { Place } from '../../../src/contract/place.ts';
 import type { TurningChange, WhatWouldPass } from '../../../src/contract/place-doubts.ts';
 import type { Brief } from '../../../src/engine/brief/brief.ts';
 import { hourClasses } from '../../../src/engine/hour-classes/hour-class.ts';
+import type { DesignValues } from '../../../src/engine/reduction/design-values.ts';
 import { judgeYear } from '../../../src/engine/run/judge-year.ts';
 import { scoreRange } from '../../../src/engine/score/score-range.ts';
+import { designOfYear, sizeAtDesignPoints } from '../../../src/engine/sizing/design-points.ts';
 import { demoEpw } from '../../support/demo-epw.ts';
 import { type Member, openRoad, type Road, type RoadTeam } from '../../support/open-road.ts';
 import { deskOf, type TeamDesk } from '../../support/team-desk.ts';
@@ -156,5 +159,28 @@ describe('the hours behind a bar', () => {
     const ledger = place.shown?.ledger;
     expect((await list('?met=yes&limit=1')).total).toBe(ledger?.met);
     expect((await list('?met=no&limit=1')).total).toBe((ledger?.demand ?? 0) - (ledger?.met ?? 0));
+  });
+});
+
+describe('the design points of a run', () => {
+  it('are those of the record of its file, with the plant that the engine finds there', async () => {
+    const answer = await viewer.agent
+      .get(`/api/teams/${team.teamId}/runs/${place.shown?.runId}/design-points`)
+      .expect(200);
+    const design = answer.body as DesignPoints;
+    const { year, heightM } = await storedYear();
+    const sized = sizeAtDesignPoints({ year, design: designOfYear(year), brief: officeBrief(), heightM });
+    expect(design).toEqual({ follows: 'dry bulb', ...sized });
+    const { rows } = await road.db.raw<{ rows: { design: DesignValues }[] }>(
+      `select facts->'design' as design from weather_years`,
+    );
+    const recorded = rows[0]?.design.dryBulb ?? [];
+    expect(design.points.map(({ percent }) => percent)).toEqual([0.4, 1, 2, 5, 10]);
+    for (const [at, { valueC, coincidentC }] of recorded.entries()) {
+      expect(design.points[at]?.dryBulbC).toBeCloseTo(valueC, 6);
+      // Packing the humidity ratio moves a wet bulb by less than this.
+      expect(Math.abs((design.points[at]?.wetBulbC ?? Number.NaN) - coincidentC)).toBeLessThanOrEqual(0.011);
+    }
+    expect(design.caution).toContain('not for sizing');
   });
 });

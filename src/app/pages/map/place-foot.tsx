@@ -24,6 +24,9 @@ import { type ChosenPlace, usePlace } from './place-margin.tsx';
 const DerivedYears = lazy(async () => ({
   default: (await import('../../../features/runs/derived-years.tsx')).DerivedYears,
 }));
+const DesignPointsNote = lazy(async () => ({
+  default: (await import('../../../features/runs/design-points-note.tsx')).DesignPointsNote,
+}));
 const MonthHourTable = lazy(async () => ({
   default: (await import('../../../features/runs/month-hour-table.tsx')).MonthHourTable,
 }));
@@ -104,6 +107,11 @@ function PlaceNotes({ place, shown, derived, ids, figures, draft, onTry, onList 
         </Fold>
         <Fold title="Unmet hours by month and hour" gist="each figure lists its hours">
           {() => <MonthHours run={{ teamId: ids.teamId, runId: shown.runId }} onList={onList} />}
+        </Fold>
+        <Fold title="At the design points" gist="airflow, capacity and back-up">
+          {() => (
+            <DesignPointsNote run={{ teamId: ids.teamId, runId: shown.runId }} loadKw={place.site?.loadKw ?? null} />
+          )}
         </Fold>
         {place.derived.length > 0 ? (
           <Fold title="Other climates" gist="derived years beside their parents" isOpenFirst>
