@@ -46,14 +46,32 @@ function DesignTable({ design, loadKw }: { design: DesignPoints; loadKw: number 
           <thead>
             <tr>
               <th scope="col">Passed in</th>
-              <th scope="col">Dry bulb</th>
-              <th scope="col">Wet bulb</th>
-              <th scope="col">Hour</th>
-              <th scope="col">{isTower ? 'Cold water' : 'Supply'}</th>
-              {isTower ? null : <th scope="col">Airflow</th>}
-              <th scope="col">Capacity</th>
-              <th scope="col">Back-up</th>
-              <th scope="col">Water</th>
+              <th scope="col" className="text-right">
+                Dry bulb
+              </th>
+              <th scope="col" className="text-right">
+                Wet bulb
+              </th>
+              <th scope="col" className="pl-6">
+                Hour
+              </th>
+              <th scope="col" className="text-right">
+                {isTower ? 'Cold water' : 'Supply'}
+              </th>
+              {isTower ? null : (
+                <th scope="col" className="text-right">
+                  Airflow
+                </th>
+              )}
+              <th scope="col" className="text-right">
+                Capacity
+              </th>
+              <th scope="col" className="text-right">
+                Back-up
+              </th>
+              <th scope="col" className="text-right">
+                Water
+              </th>
             </tr>
           </thead>
           <tbody>
@@ -63,12 +81,12 @@ function DesignTable({ design, loadKw }: { design: DesignPoints; loadKw: number 
                 <td className="figure">{temperatureC(dryBulbC)}</td>
                 <td className="figure">{temperatureC(wetBulbC)}</td>
                 {state === null ? (
-                  <td colSpan={isTower ? 5 : 6} className="text-soft">
+                  <td colSpan={isTower ? 5 : 6} className="pl-6 text-soft">
                     No cooling wanted
                   </td>
                 ) : (
                   <>
-                    <td>{classWords[state.hourClass]}</td>
+                    <td className="pl-6">{classWords[state.hourClass]}</td>
                     <td className="figure">{temperatureC(state.supplyC)}</td>
                     {isTower ? null : <td className="figure">{airflow(state.airflowLPerS, times)}</td>}
                     <td className="figure">{sensible(state.capacityKw * times, 'kW')}</td>

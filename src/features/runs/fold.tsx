@@ -19,12 +19,12 @@ export function Fold({ title, gist, isOpenFirst = false, children }: FoldProps) 
       onToggle={({ currentTarget }) => setOpen(currentTarget.open)}
       className="group border-t border-line"
     >
-      <summary className="flex cursor-pointer list-none items-baseline gap-x-2 py-2 [&::-webkit-details-marker]:hidden">
+      <summary className="flex cursor-pointer list-none items-baseline gap-x-2 py-2 max-sm:flex-wrap [&::-webkit-details-marker]:hidden">
         <span aria-hidden="true" className="inline-block w-3 text-soft transition-transform group-open:rotate-90">
           ›
         </span>
         <h2 className="text-name">{title}</h2>
-        {gist === undefined ? null : <span className="text-soft">{gist}</span>}
+        {gist === undefined ? null : <span className="text-soft max-sm:basis-full max-sm:pl-5">{gist}</span>}
       </summary>
       {isOpen ? (
         <div className="pb-4 pl-5 max-sm:pl-0">
