@@ -42,17 +42,23 @@ export function yearDemand({ year, brief, heightM }: { year: WeatherYear; brief:
 /** Constants of this module: see `hour-block.ts`. */
 const { slot, dryBulbC, humidityRatio, pressurePa, volumeM3PerKg: volumes, setC, loadFraction, supplyAimC } = block;
 
+/** Begins a year in `block`: what is the same at every hour is filled in once. */
+export function beginDemand({ steadySetC: steadyC, dTroomK }: YearDemand): void {
+  setC.fill(steadyC);
+  loadFraction.fill(1);
+  supplyAimC.fill(steadyC - dTroomK);
+}
+
 /** Fills in the hours of `block`, whose `slot` and `count` say which they are. */
-export function meetDemandHours(demand: YearDemand): void {
-  const { movingSetC, steadySetC: steadyC, load, dTroomK } = demand;
+export function meetDemandHours({ packed, movingSetC, load, dTroomK }: YearDemand): void {
   const { count } = block;
-  fillOutdoors(demand.packed);
-  if (movingSetC === null) setC.fill(steadyC, 0, count);
-  else for (let at = 0; at < count; at++) setC[at] = movingSetC[slot[at] ?? 0] ?? Number.NaN;
-  if (load === null) loadFraction.fill(1, 0, count);
-  else for (let at = 0; at < count; at++) loadFraction[at] = loadFractionAt(load, dryBulbC[at] ?? 0);
-  if (movingSetC === null && load === null) supplyAimC.fill(steadyC - dTroomK, 0, count);
-  else for (let at = 0; at < count; at++) supplyAimC[at] = (setC[at] ?? 0) - dTroomK * (loadFraction[at] ?? 0);
+  fillOutdoors(packed);
+  if (movingSetC !== null) {
+    for (let at = 0; at < count; at++) setC[at] = movingSetC[slot[at] ?? 0] ?? Number.NaN;
+  }
+  if (load !== null) for (let at = 0; at < count; at++) loadFraction[at] = loadFractionAt(load, dryBulbC[at] ?? 0);
+  if (movingSetC === null && load === null) return;
+  for (let at = 0; at < count; at++) supplyAimC[at] = (setC[at] ?? 0) - dTroomK * (loadFraction[at] ?? 0);
 }
 
 function fillOutdoors({ dryBulb, humidityRatio: ratios, pressure }: PackedYear): void {
