@@ -12,12 +12,12 @@ import type { PlantHour } from '../water-energy/plant-hour.ts';
 import { addPlant } from '../water-energy/tally-plant.ts';
 import { towerPlantHour } from '../water-energy/tower-plant-hour.ts';
 import { turbinePlantHour } from '../water-energy/turbine-plant-hour.ts';
-import { block } from './hour-block.ts';
 import { indexPlan } from './index-limits/index-plan.ts';
 import { judgeIndexHours } from './index-limits/judge-index-hours.ts';
 import { judgeHallHours } from './other-uses/judge-hall-hours.ts';
 import { judgeTowerHours } from './other-uses/judge-tower-hours.ts';
 import { judgeTurbineHours } from './other-uses/judge-turbine-hours.ts';
+import { fullWettingOfYear, wettingOfYear } from './other-uses/wetting-of-year.ts';
 import { judgeRoomHours } from './room/judge-room-hours.ts';
 import { roomPlan } from './room/room-plan.ts';
 import { roomPlant } from './room/room-plant.ts';
@@ -84,18 +84,24 @@ const roomUnderAnIndex: Use = {
 const dataHall: Use = {
   ...roomAtATemperature,
   judgeHour: judgeReturnAirHour,
-  judgeHours: (brief) => (monthOf) => {
-    judgeHallHours(brief, block);
-    addPlant(monthOf);
+  judgeHours: (brief, year) => {
+    const wetting = wettingOfYear(year);
+    return (monthOf) => {
+      judgeHallHours(brief, wetting);
+      addPlant(monthOf);
+    };
   },
   plantHour: returnAirPlantHour,
 };
 
 const processWater: Use = {
   judgeHour: judgeTowerHour,
-  judgeHours: (brief) => (monthOf) => {
-    judgeTowerHours(brief, block);
-    addPlant(monthOf);
+  judgeHours: (brief, year) => {
+    const wetting = wettingOfYear(year);
+    return (monthOf) => {
+      judgeTowerHours(brief, wetting);
+      addPlant(monthOf);
+    };
   },
   plantHour: towerPlantHour,
   aloneStages: () => ['direct'],
@@ -105,9 +111,12 @@ const processWater: Use = {
 
 const turbineInlet: Use = {
   judgeHour: judgeTurbineHour,
-  judgeHours: (brief) => (monthOf) => {
-    judgeTurbineHours(brief, block);
-    addPlant(monthOf);
+  judgeHours: (brief, year) => {
+    const wetting = fullWettingOfYear(year);
+    return (monthOf) => {
+      judgeTurbineHours(brief, wetting);
+      addPlant(monthOf);
+    };
   },
   plantHour: turbinePlantHour,
   aloneStages: airAndStages,

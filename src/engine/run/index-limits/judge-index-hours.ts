@@ -39,7 +39,7 @@ export function judgeIndexHours(brief: Brief, plan: IndexPlan): void {
   fillMet(block);
   for (let at = 0; at < block.count; at++) if (!meetByAir(plan, at)) judgeWithWater(brief, plan, at);
   const stream = { riseK: brief.dTroomK, fanWPerLs: plan.fanWPerLs, referenceFanWPerLs: brief.fanWPerLs.air };
-  fillAirPlant(brief, stream, block);
+  fillAirPlant(brief, stream);
 }
 
 /** Outdoor air as it is, which becomes the state at place 0. */
@@ -67,7 +67,7 @@ function judgeWithWater(brief: Brief, plan: IndexPlan, at: number): void {
   let first = -1;
   const frozen = hundredths(dryBulbC[at] ?? 0) <= plan.freezeHundredths;
   const wetC =
-    !frozen && mayStart(brief, block, at)
+    !frozen && mayStart(brief, at)
       ? wetBulbC(dryBulbC[at] ?? 0, humidityRatio[at] ?? 0, pressurePa[at] ?? 0)
       : Number.NaN;
   if (hundredths(dryBulbC[at] ?? 0) - hundredths(wetC) >= plan.cutInHundredths) {
