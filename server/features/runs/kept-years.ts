@@ -7,8 +7,8 @@ import type { PackedYear } from '#engine/reduction/weather-year.ts';
 import { packedAtHeight } from './height-used.ts';
 import { packedOver } from './shared-columns.ts';
 
-/** Over all threads; some 130 kB each with what is derived. */
-const MOST_YEARS = 6400;
+/** Over all threads; some 150 kB each with what rooms derive, 290 kB with what every use does. */
+const MOST_YEARS = 4800;
 const MOST_IN_THREAD = Math.floor(MOST_YEARS / availableParallelism());
 
 const kept = new Map<string, PackedYear>();

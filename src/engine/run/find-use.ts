@@ -72,10 +72,11 @@ const roomFedByExhaust: Use = { ...roomAtATemperature, judgeHours: null };
 const roomUnderAnIndex: Use = {
   ...roomAtATemperature,
   judgeHour: judgeIndexHour,
-  judgeHours: (brief) => {
+  judgeHours: (brief, year) => {
     const plan = indexPlan(brief);
+    const wetting = fullWettingOfYear(year);
     return (monthOf) => {
-      judgeIndexHours(brief, plan);
+      judgeIndexHours(brief, plan, wetting);
       addPlant(monthOf);
     };
   },
