@@ -23,9 +23,14 @@ export function keptYear(year: {
   const moved = year.adjustedFromM === null ? '' : ` ${year.adjustedFromM} to ${year.heightM}`;
   const key = `${year.weatherYearId} ${year.contentHash}${moved}`;
   const found = kept.get(key);
-  if (found !== undefined) return found;
-  const [longestThere] = kept.keys();
-  if (kept.size >= MOST_IN_THREAD && longestThere !== undefined) kept.delete(longestThere);
+  if (found !== undefined) {
+    // Maps keep the order in which their keys came.
+    kept.delete(key);
+    kept.set(key, found);
+    return found;
+  }
+  const [longestUnused] = kept.keys();
+  if (kept.size >= MOST_IN_THREAD && longestUnused !== undefined) kept.delete(longestUnused);
   const packed = packedAtHeight(packedOver(year.columns), year);
   kept.set(key, packed);
   return packed;
