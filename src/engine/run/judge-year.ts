@@ -1,5 +1,5 @@
 import type { Brief } from '../brief/brief.ts';
-import { METHOD_VERSION } from '../conventions.ts';
+import { HOURS_PER_DAY, METHOD_VERSION } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { yearlyMoney } from '../money/yearly-money.ts';
 import { monthHourOfEachSlot } from '../reduction/calendar.ts';
@@ -94,10 +94,12 @@ function sumOf(column: Float64Array, count: number): number {
   return sum;
 }
 
-function countClamped({ outsideRange, demandSlots }: JudgedYear): number | null {
-  if (outsideRange === null) return null;
+function countClamped({ outsideRangeOfDay, demandSlots }: JudgedYear): number | null {
+  if (outsideRangeOfDay === null) return null;
   let clamped = 0;
-  for (let nth = 0; nth < demandSlots.length; nth++) clamped += outsideRange[demandSlots[nth] ?? 0] ?? 0;
+  for (let nth = 0; nth < demandSlots.length; nth++) {
+    clamped += outsideRangeOfDay[((demandSlots[nth] ?? 0) / HOURS_PER_DAY) | 0] ?? 0;
+  }
   return clamped;
 }
 

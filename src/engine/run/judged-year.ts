@@ -27,8 +27,8 @@ export interface JudgedYear {
   readonly missing: Uint16Array;
   /** One position in `hourClasses` for every slot. */
   readonly classCodes: Uint8Array;
-  /** 1 where an adaptive limit was clamped to its range; null for other limits. */
-  readonly outsideRange: Uint8Array | null;
+  /** 1 for every day on which an adaptive limit was clamped to its range; null for other limits. */
+  readonly outsideRangeOfDay: Uint8Array | null;
   /** How many slots have no demand, by class, and which have, in order. */
   readonly withoutDemand: WithoutDemand;
   readonly demandSlots: Uint16Array;
@@ -103,7 +103,7 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
       schedule,
       use,
       classCodes,
-      outsideRange: demand.outsideRange,
+      outsideRangeOfDay: demand.outsideRangeOfDay,
       withoutDemand,
       demandSlots,
       hours,
