@@ -7,10 +7,11 @@ export interface ThreadPool<Task, Answer> {
   /** Starts every thread now, so that the first task need not wait for it. */
   warm(): void;
   /**
-   * Answers a task as soon as a thread is free. @throws ThreadTaskError what the thread threw, or that it died; the reason of
+   * Answers a task as soon as a thread is free; with `seat`, 0 first, rather that thread than another that is free too, since it has
+   * at hand what it answered such a task from before. @throws ThreadTaskError what the thread threw, or that it died; the reason of
    * `signal` as soon as it aborts: a waiting task is never begun, one that runs ends unheard
    */
-  run(task: Task, signal?: AbortSignal): Promise<Answer>;
+  run(task: Task, on?: { readonly signal?: AbortSignal | undefined; readonly seat?: number }): Promise<Answer>;
   /** Takes nothing new, refuses what waits, lets what runs end for a while, then ends the threads. */
   close(): Promise<void>;
 }
@@ -21,6 +22,7 @@ export class ThreadTaskError extends Error {
 }
 
 interface Waiting<Task, Answer> extends Posted<Task> {
+  readonly seat: number | undefined;
   readonly resolve: (answer: Answer) => void;
   readonly reject: (reason: unknown) => void;
 }
@@ -72,11 +74,18 @@ export function makeThreadPool<Task, Answer>(options: { entry: URL; threads: num
     giveOut();
   }
 
+  /** What waits for this seat or for any; rather than have it idle, what waits for another one that is at work. */
+  function takeFor(nth: number): Waiting<Task, Answer> | undefined {
+    const own = waiting.findIndex(({ seat }) => seat === undefined || seat === nth);
+    const place = own >= 0 ? own : waiting.findIndex(({ seat }) => seat !== undefined && seats[seat]?.running !== null);
+    return place < 0 ? undefined : waiting.splice(place, 1)[0];
+  }
+
   function giveOut(): void {
-    for (const seat of seats) {
+    for (const [nth, seat] of seats.entries()) {
       if (seat.running !== null) continue;
-      const next = waiting.shift();
-      if (next === undefined) break;
+      const next = takeFor(nth);
+      if (next === undefined) continue;
       const worker = seat.worker ?? startIn(seat);
       seat.running = next;
       worker.ref();
@@ -96,7 +105,7 @@ export function makeThreadPool<Task, Answer>(options: { entry: URL; threads: num
     warm: () => {
       for (const seat of seats) if (seat.worker === null && !closed) startIn(seat);
     },
-    run(task, signal) {
+    run(task, { signal, seat } = {}) {
       if (closed) return Promise.reject(new ThreadTaskError('The threads are closing.'));
       if (signal?.aborted) return Promise.reject(signal.reason);
       return new Promise<Answer>((resolve, reject) => {
@@ -111,6 +120,7 @@ export function makeThreadPool<Task, Answer>(options: { entry: URL; threads: num
         waiting.push({
           id,
           task,
+          seat,
           resolve: (answer) => {
             done();
             resolve(answer);

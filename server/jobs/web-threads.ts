@@ -23,7 +23,8 @@ export interface WebThreads {
   readonly threads: number;
   /** Starts every thread now, so that the first task need not wait for it. */
   warm(): void;
-  rescore(task: RescoreTask, signal: AbortSignal): Promise<readonly RescoredStation[]>;
+  /** @param on.seat the thread, 0 first, that has judged these stations before */
+  rescore(task: RescoreTask, on: { signal: AbortSignal; seat?: number }): Promise<readonly RescoredStation[]>;
   preview(task: PreviewTask, signal: AbortSignal): Promise<PreviewedYear>;
   range(task: RangeTask, signal: AbortSignal): Promise<JudgedRange | null>;
   turning(task: TurningTask, signal: AbortSignal): Promise<TurnedVerdict>;
@@ -39,38 +40,38 @@ export function makeWebThreadsOf(options: { entry: URL; threads: number }): WebT
   return {
     threads: pool.threads,
     warm: () => pool.warm(),
-    async rescore(task, signal) {
-      const answered = await pool.run({ kind: 'rescore', task }, signal);
+    async rescore(task, on) {
+      const answered = await pool.run({ kind: 'rescore', task }, on);
       if (answered.kind !== 'rescore') throw wrongAnswer();
       return answered.answer;
     },
     async preview(task, signal) {
-      const answered = await pool.run({ kind: 'preview', task }, signal);
+      const answered = await pool.run({ kind: 'preview', task }, { signal });
       if (answered.kind !== 'preview') throw wrongAnswer();
       return answered.answer;
     },
     async range(task, signal) {
-      const answered = await pool.run({ kind: 'range', task }, signal);
+      const answered = await pool.run({ kind: 'range', task }, { signal });
       if (answered.kind !== 'range') throw wrongAnswer();
       return answered.answer;
     },
     async turning(task, signal) {
-      const answered = await pool.run({ kind: 'turning', task }, signal);
+      const answered = await pool.run({ kind: 'turning', task }, { signal });
       if (answered.kind !== 'turning') throw wrongAnswer();
       return answered.answer;
     },
     async doubts(task, signal) {
-      const answered = await pool.run({ kind: 'doubts', task }, signal);
+      const answered = await pool.run({ kind: 'doubts', task }, { signal });
       if (answered.kind !== 'doubts') throw wrongAnswer();
       return answered.answer;
     },
     async rank(task, signal) {
-      const answered = await pool.run({ kind: 'rank', task }, signal);
+      const answered = await pool.run({ kind: 'rank', task }, { signal });
       if (answered.kind !== 'rank') throw wrongAnswer();
       return answered.answer;
     },
     async surface(task, signal) {
-      const answered = await pool.run({ kind: 'surface', task }, signal);
+      const answered = await pool.run({ kind: 'surface', task }, { signal });
       if (answered.kind !== 'surface') throw wrongAnswer();
       return answered.answer;
     },

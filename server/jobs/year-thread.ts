@@ -26,22 +26,22 @@ export function makeYearThread(entry: URL): YearThread {
   const pool = makeThreadPool<YearTask, YearAnswer>({ entry, threads: 1 });
   return {
     async derive(task, signal) {
-      const answered = await pool.run({ kind: 'derive', task }, signal);
+      const answered = await pool.run({ kind: 'derive', task }, { signal });
       if (answered.kind !== 'derive') throw wrongAnswer();
       return answered.answer;
     },
     async writeHours(task, signal) {
-      const answered = await pool.run({ kind: 'hours', task }, signal);
+      const answered = await pool.run({ kind: 'hours', task }, { signal });
       if (answered.kind !== 'hours') throw wrongAnswer();
       return answered.answer;
     },
     async listHours(task, signal) {
-      const answered = await pool.run({ kind: 'rows', task }, signal);
+      const answered = await pool.run({ kind: 'rows', task }, { signal });
       if (answered.kind !== 'rows') throw wrongAnswer();
       return answered.answer;
     },
     async readLines(task, signal) {
-      const answered = await pool.run({ kind: 'lines', task }, signal);
+      const answered = await pool.run({ kind: 'lines', task }, { signal });
       if (answered.kind !== 'lines') throw wrongAnswer();
       return answered.answer;
     },

@@ -25,13 +25,25 @@ export function inBatches(years: readonly YearToRescore[], maxBytes: number): re
   return batches;
 }
 
-/** Whole stations in their order, about 32 years a portion, fewer when there are few. */
-export function inChunks(
+/** Portions for each thread, in their order: every station always goes to the same one, which keeps what it derived from its years. */
+export function portionsOfThreads(
   stations: readonly StationToRescore[],
   threads: number,
-): readonly (readonly StationToRescore[])[] {
+): readonly (readonly StationToRescore[])[][] {
   const total = stations.reduce((sum, { years }) => sum + years.length, 0);
   const most = Math.min(MOST_YEARS, Math.ceil(total / (threads * PORTIONS_PER_THREAD)));
+  const shares = Array.from({ length: threads }, (): StationToRescore[] => []);
+  for (const station of stations) shares[threadOf(station, threads)]?.push(station);
+  return shares.map((share) => inPortions(share, most));
+}
+
+/** The last of a random id is as good as any number. */
+function threadOf({ stationId }: StationToRescore, threads: number): number {
+  return Number.parseInt(stationId.slice(-6), 16) % threads;
+}
+
+/** Whole stations in their order, about so many years a portion. */
+function inPortions(stations: readonly StationToRescore[], most: number): (readonly StationToRescore[])[] {
   const chunks: StationToRescore[][] = [];
   let years = 0;
   for (const station of stations) {

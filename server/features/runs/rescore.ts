@@ -8,7 +8,7 @@ import { type ResolvedSite, sitesOfProgramme } from '../sites/resolved-sites-rea
 import type { ColumnCache } from './column-cache.ts';
 import { heightUsed } from './height-used.ts';
 import { presentRescoredSite, presentRescoredStation, type SiteToRescore } from './present-rescored.ts';
-import { inBatches, inChunks, stationsOf } from './rescore-portions.ts';
+import { inBatches, portionsOfThreads, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
 import type { ScoredStation } from './surface.ts';
 
@@ -161,25 +161,24 @@ function atHeights(station: StationToRescore, heights: ReadonlyMap<string, Reado
   }));
 }
 
-/** Every thread takes portions until none is left; the first fault ends it for all. */
+/** Every thread takes its portions, then what is left of the others'; the first fault ends it for all. */
 async function judgeBatch(
   threads: RescoreThreads,
   asked: RescoreAsked & { readonly stations: readonly StationToRescore[] },
 ): Promise<readonly RescoredStation[]> {
   const { brief, withHashes } = asked;
-  const chunks = inChunks(asked.stations, threads.threads);
-  const answers: (readonly RescoredStation[])[] = chunks.map(() => []);
+  const portions = portionsOfThreads(asked.stations, threads.threads);
+  const answers: (readonly RescoredStation[])[] = [];
   const failed = new AbortController();
   const signal = AbortSignal.any([asked.signal, failed.signal]);
-  let next = 0;
-  const takePortions = async (): Promise<void> => {
-    for (let mine = next++; mine < chunks.length; mine = next++) {
-      const stations = chunks[mine] ?? [];
-      answers[mine] = await threads.rescore({ brief, stations, withHashes }, signal);
+  const takePortions = async (seat: number): Promise<void> => {
+    const nextPortion = () => portions[seat]?.shift() ?? portions.find(({ length }) => length > 0)?.pop();
+    for (let stations = nextPortion(); stations !== undefined; stations = nextPortion()) {
+      answers.push(await threads.rescore({ brief, stations, withHashes }, { signal, seat }));
     }
   };
   try {
-    await Promise.all(Array.from({ length: threads.threads }, takePortions));
+    await Promise.all(portions.map((_portions, seat) => takePortions(seat)));
   } catch (error) {
     failed.abort(error);
     throw error;

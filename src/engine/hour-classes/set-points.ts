@@ -1,4 +1,4 @@
-import type { Brief } from '../brief/brief.ts';
+import type { Brief, Limit } from '../brief/brief.ts';
 import { HOURS_PER_DAY } from '../conventions.ts';
 import { adaptiveLimit } from './adaptive-limit.ts';
 import { deratedC } from './derating.ts';
@@ -30,13 +30,28 @@ export function setPoints(input: {
   if (limit.kind !== 'adaptive') {
     return { setC: new Float64Array(slots).fill(steadySetC(input.brief, input.heightM)), outsideRange: null };
   }
-  const setC = new Float64Array(slots);
-  const outsideRange = new Uint8Array(slots);
-  for (const [day, meanC] of runningMeansC(input.dryBulbC, input.wrapped).entries()) {
-    const { upperC, outsideRange: outside } = adaptiveLimit(limit.model, meanC);
-    const [from, to] = [day * HOURS_PER_DAY, (day + 1) * HOURS_PER_DAY];
-    setC.fill(Math.min(upperC, limit.ceilingC ?? upperC), from, to);
-    outsideRange.fill(outside ? 1 : 0, from, to);
+  const days = adaptiveDays(limit, runningMeansC(input.dryBulbC, input.wrapped));
+  const dayOf = (slot: number) => Math.floor(slot / HOURS_PER_DAY);
+  return {
+    setC: Float64Array.from({ length: slots }, (_none, slot) => days.setC[dayOf(slot)] ?? Number.NaN),
+    outsideRange: Uint8Array.from({ length: slots }, (_none, slot) => days.outsideRange[dayOf(slot)] ?? 0),
+  };
+}
+
+/**
+ * What an adaptive limit asks of every day, which is all that it moves by: t_set, °C, and 1 where the running mean was clamped.
+ * @param meansC running mean of every day, °C
+ */
+export function adaptiveDays(
+  limit: Extract<Limit, { kind: 'adaptive' }>,
+  meansC: Float64Array,
+): { readonly setC: Float64Array; readonly outsideRange: Uint8Array } {
+  const setC = new Float64Array(meansC.length);
+  const outsideRange = new Uint8Array(meansC.length);
+  for (let day = 0; day < meansC.length; day++) {
+    const { upperC, outsideRange: outside } = adaptiveLimit(limit.model, meansC[day] ?? Number.NaN);
+    setC[day] = Math.min(upperC, limit.ceilingC ?? upperC);
+    outsideRange[day] = outside ? 1 : 0;
   }
   return { setC, outsideRange };
 }

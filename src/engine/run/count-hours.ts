@@ -25,8 +25,7 @@ export interface HourCounts {
   readonly byClass: Uint16Array;
   readonly byReason: Uint16Array;
   readonly byMarks: Uint16Array;
-  /** By month and hour of day: see `hour-cells.ts`. */
-  readonly demand: Uint16Array;
+  /** Unmet hours by month and hour of day: see `hour-cells.ts`. */
   readonly unmetCells: Uint16Array;
   /** By whole °C of the supply, the coldest bin first; and supplies that no weather gives. */
   readonly supplyBins: Uint16Array;
@@ -57,7 +56,6 @@ const now: HourCounts = {
   byClass: new Uint16Array(hourClasses.length),
   byReason: new Uint16Array(dampReasons.length),
   byMarks: new Uint16Array(1 << runningStages.length),
-  demand: new Uint16Array(MONTH_HOUR_CELLS),
   unmetCells: new Uint16Array(MONTH_HOUR_CELLS),
   supplyBins: new Uint16Array(BINS),
   strangeSuppliesC: [],
@@ -72,8 +70,8 @@ const byMarksAndClass = new Uint16Array(1 << (runningStages.length + CLASS_BITS)
 
 /** Begins a year. */
 export function noHours(): void {
-  const { byClass, byReason, byMarks, demand, unmetCells, supplyBins } = now;
-  for (const counts of [byClass, byReason, byMarks, demand, unmetCells, supplyBins, byMarksAndClass]) counts.fill(0);
+  const { byClass, byReason, byMarks, unmetCells, supplyBins } = now;
+  for (const counts of [byClass, byReason, byMarks, unmetCells, supplyBins, byMarksAndClass]) counts.fill(0);
   now.strangeSuppliesC.length = 0;
   now.recirculated = 0;
   now.warm = 0;
@@ -94,7 +92,7 @@ export function countedHours(): HourCounts {
 
 /** Constants of this module: see `hour-block.ts`. */
 const { slot, classCode, met, damp, aloneMet, supplyC, waterC, setC, shortfallK, uncappedShortfallK } = block;
-const { byClass, byReason, byMarks, demand, unmetCells, supplyBins } = now;
+const { byClass, byReason, byMarks, unmetCells, supplyBins } = now;
 
 /**
  * Adds the hours of `block`.
@@ -107,8 +105,6 @@ export function addHours(cellOf: Uint16Array): void {
   for (let at = 0; at < count; at++) {
     const both = ((aloneMet[at] ?? 0) << CLASS_BITS) | (classCode[at] ?? 0);
     byMarksAndClass[both] = (byMarksAndClass[both] ?? 0) + 1;
-    const cell = cellOf[slot[at] ?? 0] ?? 0;
-    demand[cell] = (demand[cell] ?? 0) + 1;
     const bin = (Math.floor(supplyC[at] ?? 0) - COLDEST_BIN_C) | 0;
     // What is no number, or too large for a whole one, ends in bin 0.
     if (bin > 0 && bin < BINS) supplyBins[bin] = (supplyBins[bin] ?? 0) + 1;

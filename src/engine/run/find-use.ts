@@ -9,23 +9,32 @@ import type { PackedYear } from '../reduction/weather-year.ts';
 import type { SupplyStage } from '../stages/stage-path.ts';
 import { returnAirPlantHour, supplyAirPlantHour } from '../water-energy/air-plant-hour.ts';
 import type { PlantHour } from '../water-energy/plant-hour.ts';
+import { addPlant } from '../water-energy/tally-plant.ts';
 import { towerPlantHour } from '../water-energy/tower-plant-hour.ts';
 import { turbinePlantHour } from '../water-energy/turbine-plant-hour.ts';
-import type { HourColumns } from './hour-columns.ts';
 import { indexPlan } from './index-limits/index-plan.ts';
 import { judgeIndexHours } from './index-limits/judge-index-hours.ts';
 import { judgeHallHours } from './other-uses/judge-hall-hours.ts';
 import { judgeTowerHours } from './other-uses/judge-tower-hours.ts';
 import { judgeTurbineHours } from './other-uses/judge-turbine-hours.ts';
+import { fullWettingOfYear, wettingOfYear } from './other-uses/wetting-of-year.ts';
 import { judgeRoomHours } from './room/judge-room-hours.ts';
 import { roomPlan } from './room/room-plan.ts';
+import { roomPlant } from './room/room-plant.ts';
 import { wetBulbsOfYear } from './room/wet-bulbs-of-year.ts';
+
+/**
+ * Judges the hours of `block`, as `meetDemandHours` leaves them, and adds their water and electricity to the sums of the year.
+ * @param monthOf month, 1 to 12, of every slot of the year
+ * @param keepsHours whether the water and electricity of each hour are written down too
+ */
+export type JudgeBlock = (monthOf: Uint8Array, keepsHours: boolean) => void;
 
 /** A use: a way of judging one hour, and the water and electricity of the plant that serves it. */
 export interface Use {
   readonly judgeHour: (hour: DemandHour, brief: Brief) => HourJudgement;
-  /** The same of the hours in `block`, which are handed over, as `meetDemandHours` leaves them; null: one by one, as objects. */
-  readonly judgeHours: ((brief: Brief, year: PackedYear) => (hours: HourColumns) => void) | null;
+  /** The same of many hours at once; null: one by one, as objects. */
+  readonly judgeHours: ((brief: Brief, year: PackedYear) => JudgeBlock) | null;
   readonly plantHour: (hour: DemandHour, judgement: HourJudgement, brief: Brief) => PlantHour;
   /** Outdoor air and the permitted stages that could meet an hour alone, by the class that it would have. */
   readonly aloneStages: (brief: Brief) => readonly SupplyStage[];
@@ -46,7 +55,10 @@ const roomAtATemperature: Use = {
   judgeHours: (brief, year) => {
     const plan = roomPlan(brief);
     const wetBulbs = wetBulbsOfYear(year, brief.effIndirect);
-    return () => judgeRoomHours(plan, wetBulbs);
+    return (monthOf, keepsHours) => {
+      judgeRoomHours(plan, wetBulbs);
+      roomPlant(plan, monthOf, keepsHours);
+    };
   },
   plantHour: supplyAirPlantHour,
   aloneStages: airAndStages,
@@ -60,22 +72,38 @@ const roomFedByExhaust: Use = { ...roomAtATemperature, judgeHours: null };
 const roomUnderAnIndex: Use = {
   ...roomAtATemperature,
   judgeHour: judgeIndexHour,
-  judgeHours: (brief) => {
+  judgeHours: (brief, year) => {
     const plan = indexPlan(brief);
-    return () => judgeIndexHours(brief, plan);
+    const wetting = fullWettingOfYear(year);
+    return (monthOf) => {
+      judgeIndexHours(brief, plan, wetting);
+      addPlant(monthOf);
+    };
   },
 };
 
 const dataHall: Use = {
   ...roomAtATemperature,
   judgeHour: judgeReturnAirHour,
-  judgeHours: (brief) => (hours) => judgeHallHours(brief, hours),
+  judgeHours: (brief, year) => {
+    const wetting = wettingOfYear(year);
+    return (monthOf) => {
+      judgeHallHours(brief, wetting);
+      addPlant(monthOf);
+    };
+  },
   plantHour: returnAirPlantHour,
 };
 
 const processWater: Use = {
   judgeHour: judgeTowerHour,
-  judgeHours: (brief) => (hours) => judgeTowerHours(brief, hours),
+  judgeHours: (brief, year) => {
+    const wetting = wettingOfYear(year);
+    return (monthOf) => {
+      judgeTowerHours(brief, wetting);
+      addPlant(monthOf);
+    };
+  },
   plantHour: towerPlantHour,
   aloneStages: () => ['direct'],
   idleUpToC: balanceTempC,
@@ -84,7 +112,13 @@ const processWater: Use = {
 
 const turbineInlet: Use = {
   judgeHour: judgeTurbineHour,
-  judgeHours: (brief) => (hours) => judgeTurbineHours(brief, hours),
+  judgeHours: (brief, year) => {
+    const wetting = fullWettingOfYear(year);
+    return (monthOf) => {
+      judgeTurbineHours(brief, wetting);
+      addPlant(monthOf);
+    };
+  },
   plantHour: turbinePlantHour,
   aloneStages: airAndStages,
   idleUpToC: ({ limit }) => (limit.kind === 'turbine' ? limit.floorC : null),

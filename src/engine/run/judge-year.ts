@@ -1,23 +1,22 @@
 import type { Brief } from '../brief/brief.ts';
-import { METHOD_VERSION } from '../conventions.ts';
+import { HOURS_PER_DAY, METHOD_VERSION } from '../conventions.ts';
 import { isIndexLimit } from '../hour-classes/index-limit.ts';
 import { yearlyMoney } from '../money/yearly-money.ts';
-import { monthOfEachSlot } from '../reduction/calendar.ts';
+import { monthHourOfEachSlot } from '../reduction/calendar.ts';
 import { coverageOf } from '../score/coverage.ts';
 import { exclusionOf, gatesOf } from '../score/gates.ts';
 import { countHardLimits } from '../score/hard-limits.ts';
 import { rawComponents } from '../score/raw-components.ts';
 import { verdictOf } from '../score/verdict.ts';
 import { bandWord, weightedScore } from '../score/weighted-score.ts';
-import { addPlant, noPlant, type PlantSums, plantOfYear } from '../water-energy/tally-plant.ts';
+import { type PlantSums, plantOfYear, plantSums } from '../water-energy/tally-plant.ts';
 import { tallyDegreeHours } from '../water-energy/tally-turbine.ts';
 import { addHours, countedHours, type HourCounts, noHours } from './count-hours.ts';
 import { block } from './hour-block.ts';
-import { cellOfEachSlot, type HourCells, hourCells, monthRows } from './hour-cells.ts';
+import { type HourCells, hourCells, monthRows } from './hour-cells.ts';
 import { type JudgedYear, type JudgeYearInput, judgeHours } from './judged-year.ts';
 import type { RunResult } from './run-result.ts';
 import { scaleForMissing } from './scale-for-missing.ts';
-import { demandSlots } from './sort-slots.ts';
 import { tallyAloneHours, tallySupplyCurve, tallyWorstSpell } from './tally-hours.ts';
 import { tallyLedger } from './tally-ledger.ts';
 import { type ReportCounts, startReports } from './tally-reported.ts';
@@ -30,23 +29,19 @@ export type { JudgeYearInput } from './judged-year.ts';
  */
 export function judgeYear(input: JudgeYearInput): RunResult {
   const { brief, heightM, year } = input;
-  const slots = year.packed.dryBulb.length;
-  const cellOf = cellOfEachSlot(slots);
-  const monthOf = monthOfEachSlot(slots);
+  const cellOf = monthHourOfEachSlot(year.packed.dryBulb.length);
   noHours();
-  const plant = noPlant();
   const reports = startReports(brief);
   let degreeHours = brief.limit.kind === 'turbine' ? 0 : null;
   const take = (): void => {
     addHours(cellOf);
-    addPlant(monthOf);
     reports?.add(block);
     if (degreeHours !== null) degreeHours = tallyDegreeHours(brief, block, degreeHours);
   };
   const judged = judgeHours(input, { keepsHours: false, take });
   const counts = countedHours();
   const cells = hourCells(judged, counts);
-  const counted = countHours(judged, { counts, plant, cells, reports, degreeHours }, input);
+  const counted = countHours(judged, { counts, plant: plantSums, cells, reports, degreeHours }, input);
   const hardLimits = countHardLimits({ brief, heightM, hours: counts.unmet });
   const coverage = coverageOf({ slots: judged.slots, missing: judged.missing, cells });
   const gates = gatesOf({ brief, coverage, hardLimits });
@@ -99,10 +94,12 @@ function sumOf(column: Float64Array, count: number): number {
   return sum;
 }
 
-function countClamped({ outsideRange, demandCount }: JudgedYear): number | null {
-  if (outsideRange === null) return null;
+function countClamped({ outsideRangeOfDay, demandSlots }: JudgedYear): number | null {
+  if (outsideRangeOfDay === null) return null;
   let clamped = 0;
-  for (let nth = 0; nth < demandCount; nth++) clamped += outsideRange[demandSlots[nth] ?? 0] ?? 0;
+  for (let nth = 0; nth < demandSlots.length; nth++) {
+    clamped += outsideRangeOfDay[((demandSlots[nth] ?? 0) / HOURS_PER_DAY) | 0] ?? 0;
+  }
   return clamped;
 }
 

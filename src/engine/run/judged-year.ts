@@ -4,14 +4,16 @@ import type { Position } from '../clock/daylight.ts';
 import { type OpenSchedule, openSchedule } from '../clock/open-schedule.ts';
 import type { ResolvedClock } from '../clock/resolved-clock.ts';
 import { hundredths } from '../conventions.ts';
+import { monthOfEachSlot } from '../reduction/calendar.ts';
 import type { WeatherYear } from '../reduction/weather-year.ts';
-import { meetDemandHours, yearDemand } from './demand-hours.ts';
-import { findUse, type Use } from './find-use.ts';
+import { addPlant, noPlant } from '../water-energy/tally-plant.ts';
+import { beginDemand, meetDemandHours, yearDemand } from './demand-hours.ts';
+import { findUse, type JudgeBlock, type Use } from './find-use.ts';
 import { block } from './hour-block.ts';
 import { appendHours, HOURS_PER_BLOCK, type HourColumns, hourColumns } from './hour-columns.ts';
 import { demandAt, hourAt, type JudgedHour, writeHour } from './judged-hour.ts';
 import { missingSlots } from './missing-slots.ts';
-import { demandSlots, slotCodes, sortSlots, type WithoutDemand } from './sort-slots.ts';
+import { slotCodes, sortSlots, type WithoutDemand } from './sort-slots.ts';
 
 export type { JudgedHour } from './judged-hour.ts';
 
@@ -25,11 +27,11 @@ export interface JudgedYear {
   readonly missing: Uint16Array;
   /** One position in `hourClasses` for every slot. */
   readonly classCodes: Uint8Array;
-  /** 1 where an adaptive limit was clamped to its range; null for other limits. */
-  readonly outsideRange: Uint8Array | null;
-  /** How many slots have no demand, by class, and how many have. */
+  /** 1 for every day on which an adaptive limit was clamped to its range; null for other limits. */
+  readonly outsideRangeOfDay: Uint8Array | null;
+  /** How many slots have no demand, by class, and which have, in order. */
   readonly withoutDemand: WithoutDemand;
-  readonly demandCount: number;
+  readonly demandSlots: Uint16Array;
   /** The demand hours, in slot order; none where none are kept. */
   readonly hours: HourColumns;
   /** The same as objects, made when first asked for. */
@@ -60,7 +62,10 @@ export interface JudgingWays {
   readonly oneByOne?: boolean;
 }
 
-/** The class of every slot, first match wins: closed, missing, idle, then what the brief's use says (method 5). */
+/**
+ * The class of every slot, first match wins: closed, missing, idle, then what the brief's use says (method 5). `plantSums` are then those
+ * of the year.
+ */
 export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): JudgedYear {
   const { year, brief, zone, position = null } = input;
   const { packed } = year;
@@ -70,17 +75,21 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   const use = findUse(brief);
   const idleUpToC = use.idleUpToC(brief);
   const idleHundredths = idleUpToC === null ? null : hundredths(idleUpToC);
-  const { demand: count, ...withoutDemand } = sortSlots(packed, schedule, idleHundredths);
+  const { demandSlots, withoutDemand } = sortSlots(packed, schedule, idleHundredths);
+  const count = demandSlots.length;
   const keepsHours = ways.keepsHours ?? true;
   const hours = keepsHours ? hourColumns(slots) : NONE_KEPT;
   const demand = yearDemand(input);
+  beginDemand(demand);
+  const monthOf = monthOfEachSlot(slots);
+  noPlant();
   const judge =
     ways.oneByOne === true ? judgeOneByOne(brief, use) : (use.judgeHours?.(brief, packed) ?? judgeOneByOne(brief, use));
   for (let from = 0; from < count; from += HOURS_PER_BLOCK) {
     block.count = Math.min(HOURS_PER_BLOCK, count - from);
     block.slot.set(demandSlots.subarray(from, from + block.count));
     meetDemandHours(demand);
-    judge(block);
+    judge(monthOf, keepsHours);
     writeCodes();
     ways.take?.(block);
     if (keepsHours) appendHours(hours, block);
@@ -94,9 +103,9 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
       schedule,
       use,
       classCodes,
-      outsideRange: demand.outsideRange,
+      outsideRangeOfDay: demand.outsideRangeOfDay,
       withoutDemand,
-      demandCount: count,
+      demandSlots,
       hours,
     },
     missing: missingSlots(packed),
@@ -107,28 +116,29 @@ export function judgeHours(input: JudgeYearInput, ways: JudgingWays = {}): Judge
   };
 }
 
+/** Constants of this module: see `hour-block.ts`. */
+const { slot: slotOf, classCode } = block;
+const codes = slotCodes;
+
 /** Stands for columns where none are kept. */
 const NONE_KEPT = hourColumns(0);
 
 /** Judges every hour as an object, for uses that have no quicker way. */
-function judgeOneByOne(brief: Brief, use: Use): (hours: HourColumns) => void {
-  return (hours) => {
-    for (let at = 0; at < hours.count; at++) {
-      const hour = demandAt(hours, at);
+function judgeOneByOne(brief: Brief, use: Use): JudgeBlock {
+  return (monthOf) => {
+    for (let at = 0; at < block.count; at++) {
+      const hour = demandAt(block, at);
       const judgement = use.judgeHour(hour, brief);
-      writeHour(hours, at, {
-        slot: hours.slot[at] ?? 0,
+      writeHour(block, at, {
+        slot: slotOf[at] ?? 0,
         hour,
         judgement,
         plant: use.plantHour(hour, judgement, brief),
       });
     }
+    addPlant(monthOf);
   };
 }
-
-/** Constants of this module: see `hour-block.ts`. */
-const { slot: slotOf, classCode } = block;
-const codes = slotCodes;
 
 function writeCodes(): void {
   const { count } = block;

@@ -18,37 +18,58 @@ export interface WithoutDemand {
 /** Under every packed temperature, and over none that is missing. */
 const NO_SLOT_IDLE = MISSING_INT16;
 
+/** The slots of a year under a schedule and a temperature. */
+export interface SortedSlots {
+  readonly withoutDemand: WithoutDemand;
+  /** Those that have demand, in order. */
+  readonly demandSlots: Uint16Array;
+}
+
+interface KeptSlots extends SortedSlots {
+  readonly schedule: OpenSchedule;
+  readonly idleHundredths: number;
+}
+
+/** What a year was last sorted into, kept beside it while it is in memory: few sliders move the schedule or what is idle. */
+const kept = new WeakMap<PackedYear, KeptSlots>();
+
 /**
  * `closed`, `missing`, `idle`, in this order; the slots that are left have demand and are listed. On the packed numbers, which are
  * whole hundredths of °C.
  * @param idleHundredths slots at or under this have no demand; null: every known one has
- * @returns how many there are of each; `slotCodes` holds one position in `hourClasses` for every slot, `idle` where there is demand,
- * and `demandSlots` the slots with demand, in order
+ * @returns what is read only; `slotCodes` holds one position in `hourClasses` for every slot, `idle` where there is demand
  */
-export function sortSlots(
-  year: PackedYear,
-  schedule: OpenSchedule,
-  idleHundredths: number | null,
-): WithoutDemand & { readonly demand: number } {
+export function sortSlots(year: PackedYear, schedule: OpenSchedule, idleHundredths: number | null): SortedSlots {
   codes.set(idleWhereOpen(schedule));
-  const demand = listDemand(knownDryBulb(year), schedule.slots, idleHundredths ?? NO_SLOT_IDLE);
-  const missingSlotsOfYear = missingSlots(year);
+  const missing = markMissing(year, schedule);
+  const idleUpTo = idleHundredths ?? NO_SLOT_IDLE;
+  const found = kept.get(year);
+  if (found?.schedule === schedule && found.idleHundredths === idleUpTo) return found;
+  const demandSlots = listed.slice(0, listDemand(knownDryBulb(year), schedule.slots, idleUpTo));
+  const open = schedule.slots.length;
+  const idle = open - missing - demandSlots.length;
+  const sorted = { withoutDemand: { closed: year.dryBulb.length - open, missing, idle }, demandSlots };
+  kept.set(year, { ...sorted, schedule, idleHundredths: idleUpTo });
+  return sorted;
+}
+
+/** @returns how many open slots are missing */
+function markMissing(year: PackedYear, { open }: OpenSchedule): number {
+  const slots = missingSlots(year);
   let missing = 0;
-  for (let index = 0; index < missingSlotsOfYear.length; index++) {
-    const slot = missingSlotsOfYear[index] ?? 0;
-    if (schedule.open[slot] !== 1) continue;
+  for (let index = 0; index < slots.length; index++) {
+    const slot = slots[index] ?? 0;
+    if (open[slot] !== 1) continue;
     codes[slot] = MISSING;
     missing++;
   }
-  const open = schedule.slots.length;
-  return { closed: year.dryBulb.length - open, missing, idle: open - missing - demand, demand };
+  return missing;
 }
 
-/** Of the year that was sorted last. Constants of this module, exported under other names: see `hour-block.ts`. */
+/** Of the year that is sorted. Constants of this module, exported under another name: see `hour-block.ts`. */
 const codes = new Uint8Array(SLOTS_PER_LEAP_YEAR);
 const listed = new Uint16Array(SLOTS_PER_LEAP_YEAR);
 export const slotCodes = codes;
-export const demandSlots = listed;
 
 const idleColumns = new WeakMap<OpenSchedule, Uint8Array>();
 

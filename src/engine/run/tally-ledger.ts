@@ -12,7 +12,8 @@ const PLANT = dampReasons.indexOf('plant');
  * @throws RangeError when they do not add up to the hours of the year
  */
 export function tallyLedger(judged: JudgedYear, counts: HourCounts): Ledger {
-  const { slots, demandCount } = judged;
+  const { slots } = judged;
+  const demandCount = judged.demandSlots.length;
   const classes = countClasses(judged, counts);
   const ledger = {
     hours: slots,

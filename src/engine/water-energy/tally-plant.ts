@@ -24,7 +24,10 @@ const now: PlantSums = {
   litresByDay: new Float64Array(SLOTS_PER_LEAP_YEAR / HOURS_PER_DAY),
 };
 
-/** Begins a year. @returns its sums, which belong to the next year as soon as that begins */
+/** Of the year that is judged; they belong to the next one as soon as that begins. */
+export const plantSums = now;
+
+/** Begins a year. @returns its sums */
 export function noPlant(): PlantSums {
   Object.assign(now, { evaporatedLitres: 0, makeUpLitres: 0, coolingKwh: 0, peakHourLitres: 0 });
   Object.assign(now, { kwh: 0, referenceKwh: 0, peakKw: 0, referencePeakKw: 0, backUpKw: 0 });

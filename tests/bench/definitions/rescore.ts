@@ -121,7 +121,8 @@ async function clockMs(threads: WebThreads, stations: readonly StationToRescore[
   const portions: Promise<readonly RescoredStation[]>[] = [];
   for (let from = 0; from < stations.length; from += STATIONS_PER_PORTION) {
     const portion = stations.slice(from, from + STATIONS_PER_PORTION);
-    portions.push(threads.rescore({ brief, stations: portion, withHashes: false }, new AbortController().signal));
+    const on = { signal: new AbortController().signal, seat: portions.length % THREADS };
+    portions.push(threads.rescore({ brief, stations: portion, withHashes: false }, on));
   }
   const judged = (await Promise.all(portions)).flat().length;
   if (judged !== stations.length) throw new Error(`${judged} of ${stations.length} stations were judged`);

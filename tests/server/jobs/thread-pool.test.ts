@@ -36,6 +36,18 @@ describe('a pool of threads', () => {
     expect(answers.every(({ threadId }) => threadId > 0)).toBe(true);
   });
 
+  it('keeps a task for the seat that it names, unless another would stand idle', async () => {
+    const pool = poolOf(2);
+    const add = (seat: number) => pool.run({ kind: 'add', one: 1, other: 1 }, { seat });
+    const threadOf = async (seat: number) => (await add(seat)).threadId;
+    const [first, second] = [await threadOf(0), await threadOf(1)];
+    expect(second).not.toBe(first);
+    expect([await threadOf(1), await threadOf(0), await threadOf(1)]).toEqual([second, first, second]);
+    // Two wait for the first seat while it works: the second takes one of them.
+    const both = await Promise.all([add(0), add(0)]);
+    expect(new Set(both.map(({ threadId }) => threadId))).toEqual(new Set([first, second]));
+  });
+
   it('gives what a task threw back as an error, and goes on with the same thread', async () => {
     const pool = poolOf(1);
     const before = await pool.run({ kind: 'add', one: 1, other: 1 });
@@ -61,8 +73,8 @@ describe('a pool of threads', () => {
     const running = marking(300);
     const waiting = marking(0);
     const gone = new AbortController();
-    const first = pool.run(running.task, gone.signal);
-    const second = pool.run(waiting.task, gone.signal);
+    const first = pool.run(running.task, { signal: gone.signal });
+    const second = pool.run(waiting.task, { signal: gone.signal });
     await eventually('the first task to begin', async () => running.begun() === 1);
     gone.abort(new Error('the client has gone'));
     await expect(first).rejects.toThrow('the client has gone');
@@ -70,7 +82,9 @@ describe('a pool of threads', () => {
     // The thread is free again once the first has ended unheard.
     expect((await pool.run({ kind: 'add', one: 1, other: 1 })).sum).toBe(2);
     expect(waiting.begun()).toBe(0);
-    await expect(pool.run({ kind: 'add', one: 1, other: 1 }, gone.signal)).rejects.toThrow('the client has gone');
+    await expect(pool.run({ kind: 'add', one: 1, other: 1 }, { signal: gone.signal })).rejects.toThrow(
+      'the client has gone',
+    );
   });
 
   it('closes: what runs is answered, what waits and what comes later is refused, and every thread ends', async () => {

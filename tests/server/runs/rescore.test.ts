@@ -157,10 +157,10 @@ describe('many station-years', () => {
     let taken = 0;
     const counting: RescoreThreads = {
       ...threads,
-      rescore: (task, signal) => {
+      rescore: (task, on) => {
         taken += 1;
         if (taken === 3) gone.abort(new Error('the client has gone'));
-        return threads.rescore(task, signal);
+        return threads.rescore(task, on);
       },
     };
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });

@@ -12,7 +12,13 @@ export interface IndexPlan {
   readonly limitHundredths: number;
   readonly freezeHundredths: number;
   readonly cutInHundredths: number;
-  readonly caps: Brief['caps'];
+  /** What rounds to at most a cap on relative humidity lies under this, hundredths of a percent; Infinity without a cap. */
+  readonly roomRhEdge: number;
+  readonly supplyRhEdge: number;
+  /** Cap on the dew point of the supply; Infinity without one. */
+  readonly dewPointHundredths: number;
+  /** Whether the supply has a cap of its own. */
+  readonly capsSupply: boolean;
   /** The permitted stages by position in `runningStages`, in the brief's order; all of them and air, as bits. */
   readonly stages: readonly number[];
   readonly allAlone: number;
@@ -39,7 +45,10 @@ export function indexPlan(brief: Brief): IndexPlan {
     limitHundredths: hundredths(limit.value),
     freezeHundredths: hundredths(brief.freezeLockoutC),
     cutInHundredths: hundredths(brief.cutInDepressionK),
-    caps: brief.caps,
+    roomRhEdge: edgeOf(brief.caps.roomRhPct),
+    supplyRhEdge: edgeOf(brief.caps.supplyRhPct),
+    dewPointHundredths: hundredths(brief.caps.supplyDewPointC ?? Number.POSITIVE_INFINITY),
+    capsSupply: brief.caps.supplyRhPct !== undefined || brief.caps.supplyDewPointC !== undefined,
     stages,
     allAlone: stages.reduce((bits, stage) => bits | (1 << stage), 1 << runningStages.indexOf('air')),
     shares: sharesTried(brief),
@@ -51,4 +60,8 @@ export function indexPlan(brief: Brief): IndexPlan {
     dTroomK: brief.dTroomK,
     dwRoomKgKg: brief.dwRoomKgKg,
   };
+}
+
+function edgeOf(capPct: number | undefined): number {
+  return capPct === undefined ? Number.POSITIVE_INFINITY : hundredths(capPct) + 0.5;
 }

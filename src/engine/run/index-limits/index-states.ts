@@ -21,22 +21,18 @@ const MOST_STATES = 1 + 4 * 21;
 
 const numbers = () => new Float64Array(MOST_STATES);
 const made = {
-  /** Position in `runningStages`. */
-  stage: new Uint8Array(MOST_STATES),
-  share: numbers(),
   tempC: numbers(),
   humidityRatio: numbers(),
-  evaporatedKgPerKg: numbers(),
-  /** NaN without water. */
-  waterC: numbers(),
   index: numbers(),
+  /** 1 where the index is the formula's own; else the table's. */
+  exact: new Uint8Array(MOST_STATES),
   /** 1 where the caps hold. */
   withinCaps: new Uint8Array(MOST_STATES),
 };
 export const indexStates = made;
 
 /** Constants of this module: see `hour-block.ts`. */
-const { tempC: temps, humidityRatio: ratios, index, withinCaps } = made;
+const { tempC: temps, humidityRatio: ratios, index, exact, withinCaps } = made;
 const { pressurePa: pressures, loadFraction } = block;
 
 /** Finds the index and the caps of the state at a place, whose temperature and moisture are there, in the hour `at`. */
@@ -47,29 +43,32 @@ export function assess(plan: IndexPlan, at: number, place: number): void {
   const roomC = supplyC + plan.dTroomK * (loadFraction[at] ?? 0);
   const roomRatio = ratio + plan.dwRoomKgKg;
   const roomPct = 100 * (vapourPressurePa(roomRatio, pressurePa) / tabledSaturationPa(roomC));
-  index[place] = plan.isShadeHeat
-    ? shadeHeatFigure(roomC, roomRatio, pressurePa)
-    : temperatureHumidityIndex(roomC, roomPct);
-  const { roomRhPct, supplyRhPct, supplyDewPointC } = plan.caps;
-  withinCaps[place] =
-    (roomRhPct === undefined || keepsCap(roomPct, roomRhPct, roomC, roomRatio, pressurePa)) &&
-    (supplyRhPct === undefined || supplyKeepsCap(supplyRhPct, supplyC, ratio, pressurePa)) &&
-    (supplyDewPointC === undefined ||
-      hundredths(dewPointC(HOTTER_THAN_ANY_SUPPLY_C, ratio, pressurePa)) <= hundredths(supplyDewPointC))
-      ? 1
-      : 0;
+  if (plan.isShadeHeat) index[place] = shadeHeatFigure(roomC, roomRatio, pressurePa);
+  else index[place] = temperatureHumidityIndex(roomC, roomPct);
+  exact[place] = plan.isShadeHeat ? 1 : 0;
+  const over = 100 * roomPct - plan.roomRhEdge;
+  const keeps = Math.abs(over) > UNDECIDED_HUNDREDTHS ? over < 0 : roomKeepsCap(plan, at, place);
+  withinCaps[place] = keeps && (!plan.capsSupply || supplyKeepsCaps(plan, at, place)) ? 1 : 0;
 }
 
-/** @param tabledPct relative humidity of the state from the table */
-function keepsCap(tabledPct: number, capPct: number, tempC: number, ratio: number, pressurePa: number): boolean {
-  const over = 100 * tabledPct - (hundredths(capPct) + 0.5);
-  if (Math.abs(over) > UNDECIDED_HUNDREDTHS) return over < 0;
-  return hundredths(relativeHumidityPct(tempC, ratio, pressurePa)) <= hundredths(capPct);
+/** By the formula itself. */
+function roomKeepsCap(plan: IndexPlan, at: number, place: number): boolean {
+  const roomC = (temps[place] ?? 0) + plan.dTroomK * (loadFraction[at] ?? 0);
+  const pct = relativeHumidityPct(roomC, (ratios[place] ?? 0) + plan.dwRoomKgKg, pressures[at] ?? 0);
+  return hundredths(pct) < plan.roomRhEdge;
 }
 
-function supplyKeepsCap(capPct: number, tempC: number, ratio: number, pressurePa: number): boolean {
-  const tabledPct = 100 * (vapourPressurePa(ratio, pressurePa) / tabledSaturationPa(tempC));
-  return keepsCap(tabledPct, capPct, tempC, ratio, pressurePa);
+function supplyKeepsCaps(plan: IndexPlan, at: number, place: number): boolean {
+  const pressurePa = pressures[at] ?? 0;
+  const tempC = temps[place] ?? 0;
+  const ratio = ratios[place] ?? 0;
+  const over = 100 * (100 * (vapourPressurePa(ratio, pressurePa) / tabledSaturationPa(tempC))) - plan.supplyRhEdge;
+  const keeps =
+    Math.abs(over) > UNDECIDED_HUNDREDTHS
+      ? over < 0
+      : hundredths(relativeHumidityPct(tempC, ratio, pressurePa)) < plan.supplyRhEdge;
+  if (!keeps || plan.dewPointHundredths === Number.POSITIVE_INFINITY) return keeps;
+  return hundredths(dewPointC(HOTTER_THAN_ANY_SUPPLY_C, ratio, pressurePa)) <= plan.dewPointHundredths;
 }
 
 /** Whether the index of the state at a place is at most the limit. */
@@ -82,9 +81,17 @@ export function reachesLimit(plan: IndexPlan, at: number, place: number): boolea
 
 /** Puts the index of the state at a place by the formula itself. */
 export function findIndex(plan: IndexPlan, at: number, place: number): void {
+  if (exact[place] === 1) return;
   const tempC = (temps[place] ?? 0) + plan.dTroomK * (loadFraction[at] ?? 0);
   const humidityRatio = (ratios[place] ?? 0) + plan.dwRoomKgKg;
   index[place] = indexOf(plan.limit, { tempC, humidityRatio, pressurePa: pressures[at] ?? 0 });
+  exact[place] = 1;
+}
+
+/** Whether so many states all keep the caps. */
+export function allKeepCaps(count: number): boolean {
+  for (let place = 0; place < count; place++) if (withinCaps[place] === 0) return false;
+  return true;
 }
 
 /**

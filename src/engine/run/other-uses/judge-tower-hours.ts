@@ -7,9 +7,10 @@ import { hundredths } from '../../conventions.ts';
 import { withinShare } from '../../hour-classes/demand-hour.ts';
 import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { towerLimit } from '../../hour-classes/judge-tower-hour.ts';
-import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
 import { towerPlant } from '../../water-energy/tower-plant-hour.ts';
-import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
+import { block } from '../hour-block.ts';
+import { fillWithAir, runningStages } from '../hour-columns.ts';
+import { findWetBulb, type Wetting } from './wetting-of-year.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const MET = hourClasses.indexOf('direct');
@@ -18,60 +19,78 @@ const BEYOND = hourClasses.indexOf('beyond');
 const TOWER = runningStages.indexOf('tower');
 const DIRECT_BIT = 1 << runningStages.indexOf('direct');
 
-export function judgeTowerHours(brief: Brief, hours: HourColumns): void {
-  fillWithAir(hours);
-  hours.supplyRatio.fill(Number.NaN, 0, hours.count);
+/** Constants of this module: see `hour-block.ts`. */
+const { slot, dryBulbC, humidityRatio, pressurePa, classCode, met, aloneMet, running, share, waterC } = block;
+const { shortfallK, uncappedShortfallK, carriedShare, supplyC, loadFraction } = block;
+const { evaporatedLitres, makeUpLitres, coolingKwh, kwh, referenceKwh, backUpKw } = block;
+
+/** Judges the hours of `block` as `meetDemandHours` leaves them; the rest is filled in. */
+export function judgeTowerHours(brief: Brief, wetting: Wetting): void {
+  const { count } = block;
+  fillWithAir(block);
+  block.supplyRatio.fill(Number.NaN, 0, count);
   const { coldC, rangeK } = towerLimit(brief);
-  hours.airSupplyC.fill(coldC + rangeK, 0, hours.count);
-  hours.airMeets.fill(0, 0, hours.count);
-  judgeTower(brief, hours);
-  fillPlant(brief, hours);
+  block.airSupplyC.fill(coldC + rangeK, 0, count);
+  block.airMeets.fill(0, 0, count);
+  judgeTower(brief, wetting);
+  fillPlant(brief);
 }
 
-function judgeTower(brief: Brief, hours: HourColumns): void {
+function judgeTower(brief: Brief, wetting: Wetting): void {
+  const { count } = block;
   const { coldC, rangeK, approachK, exchangerK } = towerLimit(brief);
-  const freezeHundredths = hundredths(brief.freezeLockoutC);
+  const { basinHeat } = brief;
+  const { wetBulbC: wetBulbs } = wetting;
+  // What rounds to at most a limit lies under it and half a hundredth.
+  const freezeEdge = hundredths(brief.freezeLockoutC) + 0.5;
+  const coldEdge = hundredths(coldC) + 0.5;
+  const returnHundredths = hundredths(coldC + rangeK);
   const modulating = brief.control === 'modulating';
-  for (let at = 0; at < hours.count; at++) {
-    const tempC = hours.dryBulbC[at] ?? 0;
-    const frozen = hundredths(tempC) <= freezeHundredths;
+  for (let at = 0; at < count; at++) {
+    const tempC = dryBulbC[at] ?? 0;
+    const frozen = 100 * tempC < freezeEdge;
+    const from = slot[at] ?? 0;
+    if (!frozen && Number.isNaN(wetBulbs[from] ?? 0)) {
+      findWetBulb(wetting, from, tempC, humidityRatio[at] ?? 0, pressurePa[at] ?? 0);
+    }
     // A drained tower sends the water back as warm as it came.
-    const wetC = frozen ? Number.NaN : wetBulbC(tempC, hours.humidityRatio[at] ?? 0, hours.pressurePa[at] ?? 0);
-    const reachedC = frozen ? coldC + (brief.basinHeat ? 0 : rangeK) : wetC + approachK + exchangerK;
-    const met = frozen ? brief.basinHeat : hundredths(reachedC) <= hundredths(coldC);
-    const short = !met && !frozen && hundredths(reachedC) < hundredths(coldC + rangeK);
-    const runs = met || short;
-    const suppliedC = !runs ? coldC + rangeK : met && (frozen || modulating) ? coldC : reachedC;
-    const shortfallK = met ? 0 : frozen ? rangeK : short ? Math.max(0, suppliedC - coldC) : reachedC - coldC;
-    hours.classCode[at] = frozen ? FROZEN : met ? MET : short ? SHORT : BEYOND;
-    hours.met[at] = met ? 1 : 0;
-    hours.aloneMet[at] = met ? DIRECT_BIT : 0;
-    hours.running[at] = runs ? TOWER : 0;
-    hours.shortfallK[at] = shortfallK;
-    hours.uncappedShortfallK[at] = shortfallK;
-    hours.supplyC[at] = suppliedC;
-    hours.share[at] = runs ? 1 : 0;
-    hours.carriedShare[at] = met ? 1 : short ? withinShare((coldC + rangeK - suppliedC) / rangeK) : 0;
-    hours.waterC[at] = runs ? suppliedC - exchangerK : Number.NaN;
+    const reachedC = frozen ? coldC + (basinHeat ? 0 : rangeK) : (wetBulbs[from] ?? 0) + approachK + exchangerK;
+    const isMet = frozen ? basinHeat : 100 * reachedC < coldEdge;
+    const short = !isMet && !frozen && hundredths(reachedC) < returnHundredths;
+    const runs = isMet || short;
+    const suppliedC = !runs ? coldC + rangeK : isMet && (frozen || modulating) ? coldC : reachedC;
+    const lackingK = isMet ? 0 : frozen ? rangeK : short ? Math.max(0, suppliedC - coldC) : reachedC - coldC;
+    classCode[at] = frozen ? FROZEN : isMet ? MET : short ? SHORT : BEYOND;
+    met[at] = isMet ? 1 : 0;
+    aloneMet[at] = isMet ? DIRECT_BIT : 0;
+    running[at] = runs ? TOWER : 0;
+    shortfallK[at] = lackingK;
+    uncappedShortfallK[at] = lackingK;
+    supplyC[at] = suppliedC;
+    share[at] = runs ? 1 : 0;
+    carriedShare[at] = isMet ? 1 : short ? withinShare((coldC + rangeK - suppliedC) / rangeK) : 0;
+    waterC[at] = runs ? suppliedC - exchangerK : Number.NaN;
   }
 }
 
-function fillPlant(brief: Brief, hours: HourColumns): void {
-  const plan = towerPlant(brief);
+function fillPlant(brief: Brief): void {
+  const { count } = block;
+  const { latentShare, latentHeatKJPerKg, secondsPerHour, kwPerKgPerS, driftShare, fanPumpKw } = towerPlant(brief);
+  const { cycles } = brief;
   const { cop } = brief.reference;
-  for (let at = 0; at < hours.count; at++) {
-    const load = hours.loadFraction[at] ?? 0;
-    const runs = hours.running[at] === TOWER;
-    const rejectedKw = load * (hours.carriedShare[at] ?? 0);
-    const evaporated = ((rejectedKw * plan.latentShare) / plan.latentHeatKJPerKg) * plan.secondsPerHour;
-    const circulationKgPerS = load / plan.kwPerKgPerS;
-    const drift = runs ? plan.driftShare * circulationKgPerS * plan.secondsPerHour : 0;
-    const backUpKw = load - rejectedKw;
-    hours.evaporatedLitres[at] = evaporated;
-    hours.makeUpLitres[at] = evaporated + evaporated / (brief.cycles - 1) + drift;
-    hours.coolingKwh[at] = rejectedKw;
-    hours.kwh[at] = (runs ? plan.fanPumpKw : 0) + backUpKw / cop;
-    hours.referenceKwh[at] = load / cop;
-    hours.backUpKw[at] = backUpKw;
+  for (let at = 0; at < count; at++) {
+    const load = loadFraction[at] ?? 0;
+    const runs = running[at] === TOWER;
+    const rejectedKw = load * (carriedShare[at] ?? 0);
+    const evaporated = ((rejectedKw * latentShare) / latentHeatKJPerKg) * secondsPerHour;
+    const circulationKgPerS = load / kwPerKgPerS;
+    const drift = runs ? driftShare * circulationKgPerS * secondsPerHour : 0;
+    const leftKw = load - rejectedKw;
+    evaporatedLitres[at] = evaporated;
+    makeUpLitres[at] = evaporated + evaporated / (cycles - 1) + drift;
+    coolingKwh[at] = rejectedKw;
+    kwh[at] = (runs ? fanPumpKw : 0) + leftKw / cop;
+    referenceKwh[at] = load / cop;
+    backUpKw[at] = leftKw;
   }
 }

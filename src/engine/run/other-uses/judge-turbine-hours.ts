@@ -8,12 +8,13 @@ import { withinShare } from '../../hour-classes/demand-hour.ts';
 import { hourClasses } from '../../hour-classes/hour-class.ts';
 import { turbineLimit } from '../../hour-classes/judge-turbine-hour.ts';
 import { gainsEnough } from '../../hour-classes/short-from.ts';
-import { wetBulbC } from '../../psychrometrics/wet-bulb.ts';
-import { humidityRatioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
+import { ratioOnWetBulbLine } from '../../psychrometrics/wet-bulb-line.ts';
 import { DRY_AIR_KJ_PER_KG_K } from '../../stages/stage-path.ts';
 import { SECONDS_PER_HOUR } from '../../water-energy/plant-hour.ts';
-import { fillWithAir, type HourColumns, runningStages } from '../hour-columns.ts';
-import { mayStart } from './may-start.ts';
+import { block } from '../hour-block.ts';
+import { fillWithAir, runningStages } from '../hour-columns.ts';
+import { mayAlwaysStart, mayStart } from './may-start.ts';
+import { findSaturated, findWetBulb, type Wetting } from './wetting-of-year.ts';
 
 const FROZEN = hourClasses.indexOf('frozen');
 const BY_AIR = hourClasses.indexOf('air');
@@ -24,73 +25,90 @@ const DIRECT = runningStages.indexOf('direct');
 const AIR_BIT = 1 << runningStages.indexOf('air');
 const DIRECT_BIT = 1 << DIRECT;
 
-export function judgeTurbineHours(brief: Brief, hours: HourColumns): void {
-  fillWithAir(hours);
-  hours.kwh.fill(Number.NaN, 0, hours.count);
-  hours.referenceKwh.fill(Number.NaN, 0, hours.count);
-  hours.backUpKw.fill(0, 0, hours.count);
-  judgeOutdoorAir(brief, hours);
-  if (brief.stages.includes('direct')) judgeWetted(brief, hours);
-  fillPlant(brief, hours);
+/** Constants of this module: see `hour-block.ts`. */
+const { slot, dryBulbC, humidityRatio, pressurePa, classCode, met, airMeets, aloneMet, running, share, waterC } = block;
+const { shortfallK, uncappedShortfallK, carriedShare, supplyC, supplyRatio, evaporatedKgPerKg } = block;
+const { evaporatedLitres, makeUpLitres, coolingKwh } = block;
+
+/** Judges the hours of `block` as `meetDemandHours` leaves them; the rest is filled in. */
+export function judgeTurbineHours(brief: Brief, wetting: Wetting): void {
+  fillWithAir(block);
+  block.kwh.fill(Number.NaN, 0, block.count);
+  block.referenceKwh.fill(Number.NaN, 0, block.count);
+  block.backUpKw.fill(0, 0, block.count);
+  judgeOutdoorAir(brief);
+  if (brief.stages.includes('direct')) judgeWetted(brief, wetting);
+  fillPlant(brief);
 }
 
 /** The inlet as it is without water. */
-function judgeOutdoorAir(brief: Brief, hours: HourColumns): void {
+function judgeOutdoorAir(brief: Brief): void {
+  const { count } = block;
   const { targetC } = turbineLimit(brief);
-  const freezeHundredths = hundredths(brief.freezeLockoutC);
-  for (let at = 0; at < hours.count; at++) {
-    const tempC = hours.dryBulbC[at] ?? 0;
-    const reached = hundredths(tempC) <= hundredths(targetC);
-    const shortfallK = reached ? 0 : Math.max(0, tempC - targetC);
-    hours.classCode[at] = hundredths(tempC) <= freezeHundredths ? FROZEN : reached ? BY_AIR : BEYOND;
-    hours.met[at] = reached ? 1 : 0;
-    hours.airMeets[at] = reached ? 1 : 0;
-    hours.aloneMet[at] = reached ? AIR_BIT : 0;
-    hours.shortfallK[at] = shortfallK;
-    hours.uncappedShortfallK[at] = shortfallK;
-    hours.carriedShare[at] = reached ? 1 : 0;
+  // What rounds to at most a limit lies under it and half a hundredth.
+  const targetEdge = hundredths(targetC) + 0.5;
+  const freezeEdge = hundredths(brief.freezeLockoutC) + 0.5;
+  for (let at = 0; at < count; at++) {
+    const tempC = dryBulbC[at] ?? 0;
+    const reached = 100 * tempC < targetEdge;
+    const lackingK = reached ? 0 : Math.max(0, tempC - targetC);
+    classCode[at] = 100 * tempC < freezeEdge ? FROZEN : reached ? BY_AIR : BEYOND;
+    met[at] = reached ? 1 : 0;
+    airMeets[at] = reached ? 1 : 0;
+    aloneMet[at] = reached ? AIR_BIT : 0;
+    shortfallK[at] = lackingK;
+    uncappedShortfallK[at] = lackingK;
+    carriedShare[at] = reached ? 1 : 0;
   }
 }
 
 /** At full effect down to the floor, wherever the brief lets the stage run. */
-function judgeWetted(brief: Brief, hours: HourColumns): void {
+function judgeWetted(brief: Brief, wetting: Wetting): void {
+  const { count } = block;
   const { targetC, floorC } = turbineLimit(brief);
-  for (let at = 0; at < hours.count; at++) {
-    if (hours.classCode[at] === FROZEN) continue;
-    const tempC = hours.dryBulbC[at] ?? 0;
-    const ratio = hours.humidityRatio[at] ?? 0;
-    const pressurePa = hours.pressurePa[at] ?? 0;
-    if (!mayStart(brief, hours, at)) continue;
-    const wetC = wetBulbC(tempC, ratio, pressurePa);
-    if (hundredths(tempC) - hundredths(wetC) < hundredths(brief.cutInDepressionK)) continue;
-    const fullFallK = brief.effDirect * (tempC - wetC);
+  const { effDirect } = brief;
+  const { wetBulbC: wetBulbs, saturatedRatio } = wetting;
+  const targetEdge = hundredths(targetC) + 0.5;
+  const cutInHundredths = hundredths(brief.cutInDepressionK);
+  const alwaysStarts = mayAlwaysStart(brief);
+  for (let at = 0; at < count; at++) {
+    if (classCode[at] === FROZEN || !(alwaysStarts || mayStart(brief, at))) continue;
+    const from = slot[at] ?? 0;
+    const tempC = dryBulbC[at] ?? 0;
+    const ratio = humidityRatio[at] ?? 0;
+    if (Number.isNaN(wetBulbs[from] ?? 0)) findWetBulb(wetting, from, tempC, ratio, pressurePa[at] ?? 0);
+    const wetC = wetBulbs[from] ?? 0;
+    if (hundredths(tempC) - hundredths(wetC) < cutInHundredths) continue;
+    const fullFallK = effDirect * (tempC - wetC);
     const inletC = Math.max(tempC - fullFallK, floorC);
-    const reached = hundredths(inletC) <= hundredths(targetC);
+    const reached = 100 * inletC < targetEdge;
     const gains = gainsEnough(tempC, inletC);
-    const shortfallK = reached ? 0 : Math.max(0, inletC - targetC);
-    hours.classCode[at] = reached ? WETTED : gains ? SHORT : BEYOND;
-    hours.met[at] = reached ? 1 : 0;
-    hours.aloneMet[at] = reached ? (hours.aloneMet[at] ?? 0) | DIRECT_BIT : 0;
-    hours.shortfallK[at] = shortfallK;
-    hours.uncappedShortfallK[at] = shortfallK;
-    hours.carriedShare[at] = reached ? 1 : 0;
+    const lackingK = reached ? 0 : Math.max(0, inletC - targetC);
+    classCode[at] = reached ? WETTED : gains ? SHORT : BEYOND;
+    met[at] = reached ? 1 : 0;
+    aloneMet[at] = reached ? (aloneMet[at] ?? 0) | DIRECT_BIT : 0;
+    shortfallK[at] = lackingK;
+    uncappedShortfallK[at] = lackingK;
+    carriedShare[at] = reached ? 1 : 0;
     if (!reached && !gains) continue;
-    const leavingRatio = Math.max(ratio, humidityRatioOnWetBulbLine(inletC, wetC, pressurePa));
-    hours.running[at] = DIRECT;
-    hours.supplyC[at] = inletC;
-    hours.supplyRatio[at] = leavingRatio;
-    hours.evaporatedKgPerKg[at] = leavingRatio - ratio;
-    hours.share[at] = withinShare((tempC - inletC) / fullFallK);
-    hours.waterC[at] = wetC;
+    if (Number.isNaN(saturatedRatio[from] ?? 0)) findSaturated(wetting, from, pressurePa[at] ?? 0);
+    const leavingRatio = Math.max(ratio, ratioOnWetBulbLine(saturatedRatio[from] ?? 0, inletC, wetC));
+    running[at] = DIRECT;
+    supplyC[at] = inletC;
+    supplyRatio[at] = leavingRatio;
+    evaporatedKgPerKg[at] = leavingRatio - ratio;
+    share[at] = withinShare((tempC - inletC) / fullFallK);
+    waterC[at] = wetC;
   }
 }
 
-function fillPlant(brief: Brief, hours: HourColumns): void {
+function fillPlant({ cycles }: Brief): void {
+  const { count } = block;
   const airflowKgPerS = 1 / DRY_AIR_KJ_PER_KG_K;
-  for (let at = 0; at < hours.count; at++) {
-    const evaporated = airflowKgPerS * (hours.evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
-    hours.evaporatedLitres[at] = evaporated;
-    hours.makeUpLitres[at] = evaporated + evaporated / (brief.cycles - 1);
-    hours.coolingKwh[at] = (hours.dryBulbC[at] ?? 0) - (hours.supplyC[at] ?? 0);
+  for (let at = 0; at < count; at++) {
+    const evaporated = airflowKgPerS * (evaporatedKgPerKg[at] ?? 0) * SECONDS_PER_HOUR;
+    evaporatedLitres[at] = evaporated;
+    makeUpLitres[at] = evaporated + evaporated / (cycles - 1);
+    coolingKwh[at] = (dryBulbC[at] ?? 0) - (supplyC[at] ?? 0);
   }
 }

@@ -8,7 +8,8 @@
  *   1. outdoor air    `meetByAir`     most hours end here; lists the others by whether water may run
  *   2. the stages     `meetByStages`  in the brief's order; lists what none of them meets
  *   3. what is left   `judgeUnmet`    the lowest supply within the caps, then `damp`, `short` or `beyond`
- *   4. the plant      `roomPlant`
+ *
+ * Water and electricity are worked out behind it, by `roomPlant`.
  *
  * Each is a loop over numbers, of the stages one for each: an object, a boxed number or a call for every hour would cost as much as
  * judging it. Hence loops that are longer than functions elsewhere, and the columns of `block` as constants of each module.
@@ -20,13 +21,12 @@ import { findLowestSupplies } from './lowest-supply.ts';
 import { meetByAir } from './meet-by-air.ts';
 import { meetByStages } from './meet-by-stages.ts';
 import type { RoomPlan } from './room-plan.ts';
-import { roomPlant } from './room-plant.ts';
 import type { WetBulbs } from './wet-bulbs-of-year.ts';
 
 type Step = (plan: RoomPlan, wetBulbs: WetBulbs) => void;
 
 /** Called from one place, so that the compiler makes each step a program of its own: put into one, their loops run a few percent slower. */
-const steps: readonly Step[] = [beginAsMet, meetByAir, meetByStages, findLowestSupplies, judgeUnmet, roomPlant];
+const steps: readonly Step[] = [beginAsMet, meetByAir, meetByStages, findLowestSupplies, judgeUnmet];
 
 /**
  * Judges the hours of `block` as `meetDemandHours` leaves them; the rest is filled in.

@@ -14,8 +14,9 @@ const NEWTON_STEPS = 2;
 
 /** Constants of this module: see `hour-block.ts`. */
 const { humidityRatio: ratios, pressurePa: pressures, setC, supplyAimC } = block;
-const { top: tops, bottom: bottoms, fanRiseK: fanRises, dryC: dries, fullC: fulls, edgeC: edges } = room;
+const { top: tops, bottom: bottoms, fanRiseK: fanRises, dryC: dries, fullC: fulls, edgeC: edges, triedC: tried } = room;
 const { places } = room.lines;
+const { places: crossing } = room.crossing;
 
 /**
  * The supply temperature, °C, at which the first cap is just reached on each moist line that `room` lists, into its `edgeC`;
@@ -46,12 +47,26 @@ function raiseToDewPointCap(supplyVapourPa: number): void {
 /**
  * The same of a cap on relative humidity. Vapour less the share of saturation is a concave function that falls with temperature: the
  * chord between full wetting and none lands on its wet side, and steps of Newton's method come back from the dry side, within the cap.
+ *
+ * The chord and each step are loops of their own over all lines. Within a line every division waits for the one before it; of several
+ * lines a processor works out several at once, but only where what it does for each is short.
  * @param ofRoom whether it is the cap on the room, whose air is warmer and has taken up moisture; else that on the supply itself
  */
 function raiseToRhCap(plan: RoomPlan, ofRoom: boolean): void {
-  const { count } = room.lines;
   const share = ofRoom ? plan.roomShare : plan.supplyShare;
   const addedRatio = ofRoom ? plan.dwRoomKgKg : 0;
+  beginOnChords(share, addedRatio, ofRoom);
+  for (let step = 0; step < NEWTON_STEPS; step++) stepToCap(share, addedRatio, ofRoom);
+  for (let index = 0; index < room.crossing.count; index++) {
+    const at = crossing[index] ?? 0;
+    edges[at] = Math.max(edges[at] ?? 0, tried[at] ?? 0);
+  }
+}
+
+/** Lists the lines that cross the cap, each with a first guess into `triedC`; a line that lies over it altogether has no edge. */
+function beginOnChords(share: number, addedRatio: number, ofRoom: boolean): void {
+  const { count } = room.lines;
+  let crossingCount = 0;
   for (let index = 0; index < count; index++) {
     const at = places[index] ?? 0;
     const riseK = ofRoom ? (setC[at] ?? 0) - (supplyAimC[at] ?? 0) : 0;
@@ -70,18 +85,27 @@ function raiseToRhCap(plan: RoomPlan, ofRoom: boolean): void {
       edges[at] = Number.POSITIVE_INFINITY;
       continue;
     }
-    let edgeC = fullC + ((dryC - fullC) * fullExcess) / (fullExcess - dryExcess);
-    for (let step = 0; step < NEWTON_STEPS; step++) {
-      const leavingC = edgeC - fanRiseK;
-      const perBottom = 1 / (bottom + VAPOUR_KJ_PER_KG_K * leavingC);
-      const ratio = (top - AIR_KJ_PER_KG_K * leavingC) * perBottom;
-      const ratioSlope = -(AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) * perBottom;
-      const perTotal = 1 / (MASS_RATIO + ratio + addedRatio);
-      const cappedC = edgeC + riseK;
-      const excess = pressurePa * (ratio + addedRatio) * perTotal - share * tabledSaturationPa(cappedC);
-      const vapourSlope = pressurePa * MASS_RATIO * ratioSlope * perTotal * perTotal;
-      edgeC -= excess / (vapourSlope - share * tabledSlopePaPerK(cappedC));
-    }
-    edges[at] = Math.max(edges[at] ?? 0, edgeC);
+    tried[at] = fullC + ((dryC - fullC) * fullExcess) / (fullExcess - dryExcess);
+    crossing[crossingCount++] = at;
+  }
+  room.crossing.count = crossingCount;
+}
+
+/** One step of Newton's method on every line that crosses the cap. */
+function stepToCap(share: number, addedRatio: number, ofRoom: boolean): void {
+  const { count } = room.crossing;
+  for (let index = 0; index < count; index++) {
+    const at = crossing[index] ?? 0;
+    const edgeC = tried[at] ?? 0;
+    const pressurePa = pressures[at] ?? 0;
+    const leavingC = edgeC - (fanRises[at] ?? 0);
+    const perBottom = 1 / ((bottoms[at] ?? 0) + VAPOUR_KJ_PER_KG_K * leavingC);
+    const ratio = ((tops[at] ?? 0) - AIR_KJ_PER_KG_K * leavingC) * perBottom;
+    const ratioSlope = -(AIR_KJ_PER_KG_K + VAPOUR_KJ_PER_KG_K * ratio) * perBottom;
+    const perTotal = 1 / (MASS_RATIO + ratio + addedRatio);
+    const cappedC = edgeC + (ofRoom ? (setC[at] ?? 0) - (supplyAimC[at] ?? 0) : 0);
+    const excess = pressurePa * (ratio + addedRatio) * perTotal - share * tabledSaturationPa(cappedC);
+    const vapourSlope = pressurePa * MASS_RATIO * ratioSlope * perTotal * perTotal;
+    tried[at] = edgeC - excess / (vapourSlope - share * tabledSlopePaPerK(cappedC));
   }
 }

@@ -42,6 +42,8 @@ export const room = {
   dryEdgeC: numbers(),
   /** Moist lines under test, see `supply-lines.ts`: with the supply without wetting and with all of it, and the edge of the caps, °C. */
   lines: list(),
+  /** Of them those whose edge lies between no wetting and all of it. */
+  crossing: list(),
   top: numbers(),
   bottom: numbers(),
   fanRiseK: numbers(),
