@@ -52,7 +52,7 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
           dead: (file, why) => noteReadingFailure(db, file, why),
         },
         'open-weather-archive': {
-          run: (archive) => openArchive({ db, storage }, archive),
+          run: (archive, progressed) => openArchive({ db, storage, progressed }, archive),
           dead: (archive, why) => noteOpeningFailure(db, archive, why),
         },
         'judge-year': {

@@ -7,12 +7,15 @@ import { Gate } from './gate.ts';
 import type { ListenerLog } from './listener.ts';
 import { type JobName, type JobPayloads, payloadOf } from './queue.ts';
 import { type Repeated, repeat } from './repeat.ts';
-import { deathsOf, MOST_DEATHS_ALONE, markAlone } from './worker-deaths.ts';
+import { clearBlame, deathsOf, MOST_DEATHS_ALONE, markAlone } from './worker-deaths.ts';
 import { beat, forgetPool, releaseSilentPools } from './worker-pool-store.ts';
 
 export interface JobTask<P> {
-  /** The work; throwing means that it is tried again later. It may run twice, so doing it again must change nothing. */
-  run(payload: P): Promise<void>;
+  /**
+   * The work; throwing means that it is tried again later. It may run twice, so doing it again must change nothing.
+   * @param progressed to be called when a part is done that will not be done again: no worker has died of the job so far
+   */
+  run(payload: P, progressed: () => Promise<void>): Promise<void>;
   /** After the last try has failed, or so many workers have died of the job that it is not tried again. */
   dead(payload: P, why: WhyDead): Promise<void>;
 }
@@ -190,9 +193,15 @@ async function work<N extends JobName>(
     log.error({ task: name, deathsAlone }, 'a job that workers die of was given up');
     return await task.dead(payload, 'deaths');
   }
-  await gate.pass(deaths > 0, async () => {
-    if (deaths > 0) await markAlone(db, { jobId, poolId: poolId() });
-    await task.run(payload);
+  let blamed = deaths > 0;
+  const progressed = async () => {
+    if (!blamed) return;
+    blamed = false;
+    await clearBlame(db, jobId);
+  };
+  await gate.pass(blamed, async () => {
+    if (blamed) await markAlone(db, { jobId, poolId: poolId() });
+    await task.run(payload, progressed);
   });
 }
 

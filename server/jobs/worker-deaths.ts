@@ -4,8 +4,8 @@
  */
 import type { Knex } from 'knex';
 
-/** So many workers may die of a job that they did alone; then it is given up. */
-export const MOST_DEATHS_ALONE = 3;
+/** So many workers may die of a job that they did alone; then it is given up. Fewer could be chance where something else kills them. */
+export const MOST_DEATHS_ALONE = 5;
 
 export interface WorkerDeaths {
   /** Workers that died with the job in hand. */
@@ -30,6 +30,16 @@ export async function markAlone(db: Knex, job: { jobId: string; poolId: string }
      set payload = cast(cast(payload as jsonb) || jsonb_build_object('aloneIn', cast(:poolId as text)) as json)
      where id = cast(:jobId as bigint) and locked_by = :poolId`,
     job,
+  );
+}
+
+/** A job that has come further than before is not what its workers died of. */
+export async function clearBlame(db: Knex, jobId: string): Promise<void> {
+  await db.raw(
+    `update graphile_worker._private_jobs
+     set payload = cast(cast(payload as jsonb) - 'deathsAlone' - 'aloneIn' as json)
+     where id = cast(:jobId as bigint)`,
+    { jobId },
   );
 }
 

@@ -16,18 +16,18 @@ type WhyStopped = 'tries' | 'deaths';
 const READING_STOPPED = {
   tries: 'Reading stopped for a fault of ours, not of the file. Nothing of it was stored. Let it be read once more.',
   deaths:
-    'Reading stopped: the process that read this file died three times, with nothing else in hand. Nothing of it was stored. Let it be read once more; if it stops again, whoever runs the server should see its log.',
+    'Reading stopped: the process that read this file died again and again, with nothing else in hand. Nothing of it was stored. Let it be read once more; if it stops again, whoever runs the server should see its log.',
 } as const;
 const OPENING_STOPPED = {
   tries:
     'Opening the archive stopped for a fault of ours, not of the archive. What was taken out of it stays. Let it be opened once more.',
   deaths:
-    'Opening the archive stopped: the process that opened it died three times, with nothing else in hand. What was taken out of it stays. Let it be opened once more; if it stops again, whoever runs the server should see its log.',
+    'Opening the archive stopped: the process that opened it died again and again, with nothing else in hand. What was taken out of it stays. Let it be opened once more; if it stops again, whoever runs the server should see its log.',
 } as const;
 const JUDGING_STOPPED = {
   tries: 'The year was read, but judging it by a brief stopped for a fault of ours. Let it be judged once more.',
   deaths:
-    'The year was read, but the process that judged it by a brief died three times, with nothing else in hand. Let it be judged once more; if it stops again, whoever runs the server should see its log.',
+    'The year was read, but the process that judged it by a brief died again and again, with nothing else in hand. Let it be judged once more; if it stops again, whoever runs the server should see its log.',
 } as const;
 
 /** Writes on a file that its reading was given up, so that an engineer sees it. */

@@ -32,7 +32,7 @@ afterAll(async () => {
 });
 
 async function startWith(reading: {
-  run: (payload: Reading) => Promise<void>;
+  run: (payload: Reading, progressed: () => Promise<void>) => Promise<void>;
   dead?: (payload: Reading, why: WhyDead) => Promise<void>;
 }) {
   const nothing = async (): Promise<void> => undefined;
@@ -179,6 +179,25 @@ describe('the job worker', () => {
     expect(buried).toEqual([[killer.fileId, 'deaths']]);
     expect(await eventually('an empty queue', async () => (await jobOf(killer)) === null)).toBe(true);
     expect(log.errors.map(({ message }) => message).join()).toContain('workers die of');
+  });
+
+  it('does not blame a job that has come further than before', async () => {
+    const payload = newReading();
+    await addReading(payload);
+    for (let kill = 1; kill < MOST_DEATHS_ALONE; kill++) await killHolder(payload, '{"aloneIn":"killed"}');
+    let tries = 0;
+    await startWith({
+      run: async (_reading, progressed) => {
+        tries += 1;
+        if (tries > 1) return;
+        await progressed();
+        throw new Error('ended after some progress');
+      },
+    });
+    await eventually('the broken-off try', async () => tries === 1 && (await jobOf(payload))?.lockedBy === null);
+    await killHolder(payload, '{"aloneIn":"killed"}');
+    await jobsDueNow(database);
+    await eventually('the next', async () => tries === 2 && (await jobOf(payload)) === null);
   });
 
   it('says in whose hand a job is alone, so that its death can be told from another’s', async () => {

@@ -16,10 +16,10 @@ import { zipBytes } from '../../support/zip-bytes.ts';
 const FILES = samples(6, 200);
 const KILLS = samples(3, 50);
 /**
- * A worker lives this long at most, or a quarter of the time that it took to start: on a busy machine less would not do for one job.
- * It dies sooner when it has read its share of the files, so that the batch is not over long before the last kill.
+ * A worker lives this long at most, or as long as it took to start: on a busy machine less would not do for one job. It dies sooner
+ * when it has read its share of the files, so that the batch is not over long before the last kill.
  */
-const LONGEST_LIFE_MS = 300;
+const LONGEST_LIFE_MS = 1500;
 const LOOK_EVERY_MS = 10;
 /** A soak's seed gives the workers the same lives again, as far as the machine goes along. */
 const lives = seededRandom(process.env.SOAK_SEED ?? String(Date.now()));
@@ -52,7 +52,7 @@ async function killOne(killsLeft: number): Promise<number> {
   const began = performance.now();
   const { child, ended } = startCommand(['worker'], { env: workerEnvironment(settings) });
   await eventually('the worker’s first look', async () => (await poolsNow()) > 0, 30_000);
-  const until = performance.now() + lives.uniform() * Math.max(LONGEST_LIFE_MS, (performance.now() - began) / 4);
+  const until = performance.now() + lives.uniform() * Math.max(LONGEST_LIFE_MS, performance.now() - began);
   const unread = await filesUnread();
   const share = Math.ceil(unread / killsLeft);
   while (performance.now() < until && (await filesUnread()) > unread - share) {
