@@ -49,18 +49,18 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       tasks: {
         'read-weather-file': {
           run: (file) => readStoredFile({ db, storage, relief, zoneAt: standardZoneAt }, file),
-          dead: (file) => noteReadingFailure(db, file),
+          dead: (file, why) => noteReadingFailure(db, file, why),
         },
         'open-weather-archive': {
-          run: (archive) => openArchive({ db, storage }, archive),
-          dead: (archive) => noteOpeningFailure(db, archive),
+          run: (archive, progressed) => openArchive({ db, storage, progressed }, archive),
+          dead: (archive, why) => noteOpeningFailure(db, archive, why),
         },
         'judge-year': {
           run: async (year) => {
             await judgeStoredYear(db, year);
             await clearJudgingFailure(db, year);
           },
-          dead: (year) => noteJudgingFailure(db, year),
+          dead: (year, why) => noteJudgingFailure(db, year, why),
         },
         'queue-site-runs': {
           run: (programme) => queueMissingSiteRuns(db, programme),

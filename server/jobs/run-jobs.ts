@@ -3,17 +3,23 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { Logger, type Runner, run, type Task, type TaskList, type WorkerEvents } from 'graphile-worker';
 import type { Knex } from 'knex';
 import pg from 'pg';
+import { Gate } from './gate.ts';
 import type { ListenerLog } from './listener.ts';
 import { type JobName, type JobPayloads, payloadOf } from './queue.ts';
 import { type Repeated, repeat } from './repeat.ts';
+import { clearBlame, deathsOf, MOST_DEATHS_ALONE, markAlone } from './worker-deaths.ts';
 import { beat, forgetPool, releaseSilentPools } from './worker-pool-store.ts';
 
 export interface JobTask<P> {
-  /** The work; throwing means that it is tried again later. It may run twice, so doing it again must change nothing. */
-  run(payload: P): Promise<void>;
-  /** After the last try has failed. */
-  dead(payload: P): Promise<void>;
+  /**
+   * The work; throwing means that it is tried again later. It may run twice, so doing it again must change nothing.
+   * @param progressed to be called when a part is done that will not be done again: no worker has died of the job so far
+   */
+  run(payload: P, progressed: () => Promise<void>): Promise<void>;
+  /** After the last try has failed, or so many workers have died of the job that it is not tried again. */
+  dead(payload: P, why: WhyDead): Promise<void>;
 }
+export type WhyDead = 'tries' | 'deaths';
 export type JobTasks = { readonly [N in JobName]: JobTask<JobPayloads[N]> };
 
 const CONCURRENCY = 2;
@@ -81,7 +87,7 @@ async function startRun({ db, databaseUrl, tasks, log }: JobsOptions): Promise<R
   try {
     runner = await run({
       pgPool: pool,
-      taskList: taskList(tasks),
+      taskList: taskList({ db, tasks, log, poolId }),
       concurrency: CONCURRENCY,
       noHandleSignals: true,
       events,
@@ -154,15 +160,49 @@ function startHeart({ db, poolId, log }: { db: Knex; poolId: string; log: Listen
   });
 }
 
-function taskList(tasks: JobTasks): TaskList {
+interface TaskListOptions extends Pick<JobsOptions, 'db' | 'tasks' | 'log'> {
+  poolId(): string;
+}
+
+function taskList(options: TaskListOptions): TaskList {
+  const { tasks } = options;
+  const gate = new Gate();
+  const worked = <N extends JobName>(name: N, task: JobTask<JobPayloads[N]>): Task => {
+    return (payload, { job }) => work(options, gate, { jobId: job.id, name, task, payload });
+  };
   const list: Record<JobName, Task> = {
-    'read-weather-file': (payload) => tasks['read-weather-file'].run(payloadOf('read-weather-file', payload)),
-    'open-weather-archive': (payload) => tasks['open-weather-archive'].run(payloadOf('open-weather-archive', payload)),
-    'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
-    'queue-site-runs': (payload) => tasks['queue-site-runs'].run(payloadOf('queue-site-runs', payload)),
-    'send-mail': (payload) => tasks['send-mail'].run(payloadOf('send-mail', payload)),
+    'read-weather-file': worked('read-weather-file', tasks['read-weather-file']),
+    'open-weather-archive': worked('open-weather-archive', tasks['open-weather-archive']),
+    'judge-year': worked('judge-year', tasks['judge-year']),
+    'queue-site-runs': worked('queue-site-runs', tasks['queue-site-runs']),
+    'send-mail': worked('send-mail', tasks['send-mail']),
   };
   return list;
+}
+
+/** Does a job: alone where a worker has died with it in hand, and not at all where too many have died of it. */
+async function work<N extends JobName>(
+  { db, log, poolId }: TaskListOptions,
+  gate: Gate,
+  job: { jobId: string; name: N; task: JobTask<JobPayloads[N]>; payload: unknown },
+): Promise<void> {
+  const { jobId, name, task } = job;
+  const payload = payloadOf(name, job.payload);
+  const { deaths, deathsAlone } = deathsOf(job.payload);
+  if (deathsAlone >= MOST_DEATHS_ALONE) {
+    log.error({ task: name, deathsAlone }, 'a job that workers die of was given up');
+    return await task.dead(payload, 'deaths');
+  }
+  let blamed = deaths > 0;
+  const progressed = async () => {
+    if (!blamed) return;
+    blamed = false;
+    await clearBlame(db, jobId);
+  };
+  await gate.pass(blamed, async () => {
+    if (blamed) await markAlone(db, { jobId, poolId: poolId() });
+    await task.run(payload, progressed);
+  });
 }
 
 async function bury(
@@ -173,15 +213,15 @@ async function bury(
   try {
     switch (job.task_identifier) {
       case 'read-weather-file':
-        return await tasks['read-weather-file'].dead(payloadOf('read-weather-file', job.payload));
+        return await tasks['read-weather-file'].dead(payloadOf('read-weather-file', job.payload), 'tries');
       case 'open-weather-archive':
-        return await tasks['open-weather-archive'].dead(payloadOf('open-weather-archive', job.payload));
+        return await tasks['open-weather-archive'].dead(payloadOf('open-weather-archive', job.payload), 'tries');
       case 'judge-year':
-        return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload));
+        return await tasks['judge-year'].dead(payloadOf('judge-year', job.payload), 'tries');
       case 'queue-site-runs':
-        return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload));
+        return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload), 'tries');
       case 'send-mail':
-        return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload));
+        return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload), 'tries');
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

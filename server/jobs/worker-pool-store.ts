@@ -1,4 +1,6 @@
 import type { Knex } from 'knex';
+import { inTransaction } from '../db/in-transaction.ts';
+import { giveBackJobs } from './worker-deaths.ts';
 
 /** Says that a pool of workers lives. */
 export async function beat(db: Knex, poolId: string): Promise<void> {
@@ -19,20 +21,26 @@ export async function forgetPool(db: Knex, poolId: string): Promise<void> {
  * @returns the pools that were given up
  */
 export async function releaseSilentPools(db: Knex, silentMs: number): Promise<readonly string[]> {
-  const { rows } = await db.raw<{ rows: { pools: string[] | null }[] }>(
+  return await inTransaction(db, async (transaction) => {
+    const pools = await takeSilentPools(transaction, silentMs);
+    if (pools.length > 0) await giveBackJobs(transaction, pools);
+    return pools;
+  });
+}
+
+async function takeSilentPools(transaction: Knex.Transaction, silentMs: number): Promise<readonly string[]> {
+  const { rows } = await transaction.raw<{ rows: { id: string }[] }>(
     `with silent as (
        delete from worker_pools where worker_pools.seen_at < now() - ?::integer * interval '1 millisecond'
        returning worker_pools.id
-     ), unknown as (
-       select distinct jobs.locked_by as id
-       from graphile_worker.jobs
-       where jobs.locked_at < now() - ?::integer * interval '1 millisecond'
-         and not exists (select 1 from worker_pools where worker_pools.id = jobs.locked_by)
-     ), dead as (
-       select array_agg(gone.id) as pools from (select id from silent union select id from unknown) as gone
      )
-     select dead.pools, graphile_worker.force_unlock_workers(dead.pools) from dead where dead.pools is not null`,
+     select silent.id from silent
+     union
+     select jobs.locked_by
+     from graphile_worker.jobs
+     where jobs.locked_at < now() - ?::integer * interval '1 millisecond'
+       and not exists (select 1 from worker_pools where worker_pools.id = jobs.locked_by)`,
     [silentMs, silentMs],
   );
-  return rows[0]?.pools ?? [];
+  return rows.map(({ id }) => id);
 }

@@ -1,4 +1,3 @@
-import { StatedBody, TableMappingBody } from '#contract/weather-answers.ts';
 import type { ReadOptions } from '#engine/weather-files/read-options.ts';
 import { standardZoneAt } from '../../features/stations/standard-zone-at.ts';
 import { type CommandArguments, WrongUse } from './command-arguments.ts';
@@ -18,13 +17,22 @@ interface Schema<T> {
  * @throws WrongUse on a file that does not hold what it should
  */
 export async function statedOptions(args: CommandArguments, callerDir: string): Promise<ReadOptions> {
-  const said = args.answers === null ? {} : await openJson(args.answers, StatedBody, callerDir);
-  const mapping = args.columns === null ? null : await openJson(args.columns, TableMappingBody, callerDir);
+  const { answers, mapping } = await statedInFiles(args, callerDir);
   return {
     zoneAt: standardZoneAt,
-    ...said,
-    ...(args.place === null ? {} : { place: { ...said.place, ...args.place } }),
+    ...answers,
+    ...(args.place === null ? {} : { place: { ...answers.place, ...args.place } }),
     ...(mapping === null ? {} : { mapping }),
+  };
+}
+
+/** The schemas are a third of all modules of the command, and nearly every call goes without. */
+async function statedInFiles(args: CommandArguments, callerDir: string) {
+  if (args.answers === null && args.columns === null) return { answers: {}, mapping: null };
+  const { StatedBody, TableMappingBody } = await import('#contract/weather-answers.ts');
+  return {
+    answers: args.answers === null ? {} : await openJson(args.answers, StatedBody, callerDir),
+    mapping: args.columns === null ? null : await openJson(args.columns, TableMappingBody, callerDir),
   };
 }
 

@@ -3,7 +3,6 @@ import os from 'node:os';
 import path from 'node:path';
 import { whyNoWeatherFile } from '../../features/weather/no-weather-file.ts';
 import { GzipProblem, inflateGzip, isGzip } from '../../storage/inflate-gzip.ts';
-import { isZip, ZipProblem, zipMembers } from '../../storage/zip-members.ts';
 
 /** A weather file to read: a file as it is, what a gzip file holds, or a member of a zip, `archive.zip!/member.epw`. */
 export interface WeatherMember {
@@ -29,6 +28,7 @@ async function inflated(bytes: Uint8Array): Promise<Uint8Array | string> {
 }
 
 async function* membersOfZip(name: string, bytes: Uint8Array): AsyncGenerator<WeatherMember> {
+  const { isZip, ZipProblem, zipMembers } = await import('../../storage/zip-members.ts');
   const folder = await mkdtemp(path.join(os.tmpdir(), 'muslin-read-'));
   const file = path.join(folder, 'archive');
   try {

@@ -24,7 +24,12 @@ import { queueOpening } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 import { findWeatherFile } from './weather-file-store.ts';
 
-type Deps = { readonly db: Knex; readonly storage: OriginalStore };
+type Deps = {
+  readonly db: Knex;
+  readonly storage: OriginalStore;
+  /** Told of each entry that is done for good. */
+  readonly progressed: () => Promise<void>;
+};
 
 /**
  * The work of the job `open-weather-archive`: every file that may be weather is received as if it had been uploaded by itself. Done
@@ -81,11 +86,12 @@ async function receiveMembers(
 
 /** Writes down how far the opening is. @returns false when somebody has paused or cancelled it meanwhile */
 async function goesOn(
-  { db }: Deps,
+  { db, progressed }: Deps,
   archive: ArchiveState,
   done: { nextEntry: number; opened: number; leftOut: readonly LeftOut[] },
 ): Promise<boolean> {
   const stands = await setArchiveProgress(db, { ...keyOf(archive), ...done });
+  await progressed();
   await tell(db, archive);
   const state = await findBatchState(db, archive);
   if (state === 'paused') await endArchive(db, { ...keyOf(archive), status: 'waiting', problem: null });

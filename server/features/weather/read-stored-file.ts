@@ -8,13 +8,12 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { GzipProblem } from '../../storage/inflate-gzip.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
-import { findBatchState } from './batch-store.ts';
 import { findMapping } from './mapping-store.ts';
 import { contentOf } from './original-content.ts';
 import { type ReadingKnowledge, readOptions } from './read-options.ts';
 import { setReadingStep } from './reading-store.ts';
 import { type FileOutcome, storeReadings } from './store-reading.ts';
-import { findWeatherFile, type WeatherFileState } from './weather-file-store.ts';
+import { type FileToRead, findFileToRead, type WeatherFileState } from './weather-file-store.ts';
 
 export type ReadingDeps = { readonly db: Knex; readonly storage: OriginalStore } & ReadingKnowledge;
 
@@ -27,20 +26,23 @@ const QUICK_BYTES = 2_000_000;
  * file that is no longer being read is left alone.
  */
 export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; fileId: string }): Promise<void> {
-  const file = await findWeatherFile(deps.db, key);
-  if (file === null || file.status !== 'reading') return;
-  if (file.batchId !== null && (await findBatchState(deps.db, { ...key, batchId: file.batchId })) === 'paused') return;
+  const found = await findFileToRead(deps.db, key);
+  if (found === null || found.file.status !== 'reading' || found.paused) return;
+  const { file } = found;
 
   const steps = new ReadingSteps(deps.db, file);
   await steps.enter('reading');
-  const readings = await readParts(deps, file);
+  const readings = await readParts(deps, found);
   await steps.enter('reducing');
   const outcomes = readings.map(reduced);
   await steps.enter('storing');
   await storeReadings(deps.db, file, { outcomes, untoldSteps: steps.untold });
 }
 
-async function readParts(deps: ReadingDeps, file: WeatherFileState): Promise<readonly WeatherFileReading[]> {
+async function readParts(
+  deps: ReadingDeps,
+  { file, teamHasRulesOff }: FileToRead,
+): Promise<readonly WeatherFileReading[]> {
   const content = await contentOf(await originalOf(deps.storage, file));
   if (content instanceof GzipProblem) return [unreadable(content)];
   const name = file.name.replace(/\.gz$/i, '');
@@ -54,7 +56,7 @@ async function readParts(deps: ReadingDeps, file: WeatherFileState): Promise<rea
     const answered = { ...file, answers: { ...file.answers, mapping } };
     return readWeatherFileParts(content, name, await readOptions(deps, { file: answered, station: null }));
   }
-  if (reading.station === null) return first;
+  if (reading.station === null || !teamHasRulesOff) return first;
   // Its station may have rules that do not hold there; which station it is shows only now.
   const options = await readOptions(deps, { file, station: reading.station });
   return options.rulesOff.length > (file.answers.rulesOff?.length ?? 0)

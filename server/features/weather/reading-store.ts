@@ -120,15 +120,10 @@ export async function clearReading(
   key: { teamId: string; fileId: string },
 ): Promise<void> {
   await transaction.raw(
-    `with years as (
-       select id from weather_years where team_id = :teamId and weather_file_id = :fileId
-     ), designs as (
-       delete from design_values where weather_year_id in (select id from years)
-     )
-     delete from findings where team_id = :teamId and weather_file_id = :fileId`,
+    `with gone as (delete from findings where team_id = :teamId and weather_file_id = :fileId)
+     delete from weather_years where team_id = :teamId and weather_file_id = :fileId`,
     key,
   );
-  await transaction.raw('delete from weather_years where team_id = :teamId and weather_file_id = :fileId', key);
 }
 
 function storableJson(value: unknown): string {

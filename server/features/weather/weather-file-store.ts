@@ -51,7 +51,32 @@ export async function findWeatherFile(
   return rows[0] ?? null;
 }
 
-/** The same, held until the transaction ends, so that nobody else moves the file on meanwhile. */
+/** A file to be read, with what decides whether and how. */
+export interface FileToRead {
+  readonly file: WeatherFileState;
+  /** Its batch waits. */
+  readonly paused: boolean;
+  /** Some station of the team has a rule that does not hold there. */
+  readonly teamHasRulesOff: boolean;
+}
+
+/** All that is asked before a file is read, in one statement; null when the team has no such file. */
+export async function findFileToRead(db: Knex, key: { teamId: string; fileId: string }): Promise<FileToRead | null> {
+  const { rows } = await db.raw<{ rows: (WeatherFileState & Omit<FileToRead, 'file'>)[] }>(
+    `select ${STATE_COLUMNS},
+       exists (select 1 from weather_batches
+         where weather_batches.id = weather_files.batch_id and weather_batches.state = 'paused') as paused,
+       exists (select 1 from rules_off where rules_off.team_id = weather_files.team_id) as "teamHasRulesOff"
+     from weather_files where weather_files.team_id = ? and weather_files.id = ?`,
+    [key.teamId, key.fileId],
+  );
+  const [row] = rows;
+  if (row === undefined) return null;
+  const { paused, teamHasRulesOff, ...file } = row;
+  return { file, paused, teamHasRulesOff };
+}
+
+/** A file as it stands, held until the transaction ends, so that nobody else moves the file on meanwhile. */
 export async function lockWeatherFile(
   transaction: Knex.Transaction,
   key: { teamId: string; fileId: string },

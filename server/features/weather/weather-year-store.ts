@@ -1,5 +1,4 @@
 import type { Knex } from 'knex';
-import type { DesignValues } from '#engine/reduction/design-values.ts';
 import { bytesOf16, packedBytes } from '#engine/reduction/packed-columns.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
 import { PACKED_LAYOUT } from '#engine/reduction/weather-year.ts';
@@ -16,28 +15,19 @@ export interface NewWeatherYear {
   readonly contentHash: string;
 }
 
-/** The year with its packed columns and its design values, in one statement. @returns its id */
+/** The year with its packed columns and facts. @returns its id */
 export async function insertWeatherYear(transaction: Knex.Transaction, year: NewWeatherYear): Promise<string> {
   const { reading, reduced } = year;
   const { packed } = reduced.year;
   const bytes = packedBytes(packed);
   const { rows } = await transaction.raw<{ rows: [{ id: string }] }>(
-    `with stored as (
-       insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
-         humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version,
-         content_hash)
-       values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
-         :flags, :histogram, cast(:depressionHours as smallint[]), :humidityFrom, :belowZero, cast(:facts as jsonb),
-         :readVersion, :contentHash)
-       returning id, team_id
-     ), designed as (
-       insert into design_values (team_id, weather_year_id, quantity, percent, value_c, coincident_c)
-       select stored.team_id, stored.id, design.quantity, design.percent, design."valueC", design."coincidentC"
-       from stored
-       cross join jsonb_to_recordset(cast(:design as jsonb)) as design (quantity text, percent double precision,
-         "valueC" double precision, "coincidentC" double precision)
-     )
-     select id from stored`,
+    `insert into weather_years (team_id, weather_file_id, kind, year, utc_offset_min, slots, layout, dry_bulb,
+       humidity_ratio, pressure, flags, histogram, depression_hours, humidity_from, below_zero, facts, read_version,
+       content_hash)
+     values (:teamId, :fileId, :kind, :calendarYear, :utcOffsetMin, :slots, :layout, :dryBulb, :humidityRatio, :pressure,
+       :flags, :histogram, cast(:depressionHours as smallint[]), :humidityFrom, :belowZero, cast(:facts as jsonb),
+       :readVersion, :contentHash)
+     returning id`,
     {
       teamId: year.teamId,
       fileId: year.fileId,
@@ -46,29 +36,25 @@ export async function insertWeatherYear(transaction: Knex.Transaction, year: New
       utcOffsetMin: reduced.year.utcOffsetMin,
       slots: packed.flags.length,
       layout: PACKED_LAYOUT,
-      dryBulb: Buffer.from(bytes.dryBulb),
-      humidityRatio: Buffer.from(bytes.humidityRatio),
-      pressure: Buffer.from(bytes.pressure),
-      flags: Buffer.from(bytes.flags),
-      histogram: Buffer.from(bytesOf16(reduced.histogram)),
+      dryBulb: asBuffer(bytes.dryBulb),
+      humidityRatio: asBuffer(bytes.humidityRatio),
+      pressure: asBuffer(bytes.pressure),
+      flags: asBuffer(bytes.flags),
+      histogram: asBuffer(bytesOf16(reduced.histogram)),
       depressionHours: `{${reduced.depressionHours.join(',')}}`,
       humidityFrom: reading.humidityFrom,
       belowZero: reading.belowZero,
       facts: JSON.stringify({ ...reduced.facts, measuredHours: year.measuredHours }),
       readVersion: year.readVersion,
       contentHash: year.contentHash,
-      design: JSON.stringify(designRows(reduced.design)),
     },
   );
   return rows[0].id;
 }
 
-function designRows({ dryBulb, wetBulb, dewPoint }: DesignValues) {
-  return [
-    ...dryBulb.map((row) => ({ quantity: 'dry-bulb', ...row })),
-    ...wetBulb.map((row) => ({ quantity: 'wet-bulb', ...row })),
-    ...dewPoint.map((row) => ({ quantity: 'dew-point', ...row })),
-  ];
+/** The same bytes, not a copy. */
+function asBuffer(bytes: Uint8Array): Buffer {
+  return Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
 }
 
 /** Gives the year of a file its station. @returns the year's id */

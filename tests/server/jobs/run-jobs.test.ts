@@ -2,7 +2,8 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { inTransaction } from '../../../server/db/in-transaction.ts';
 import { addJob, type JobPayloads, MAX_ATTEMPTS } from '../../../server/jobs/queue.ts';
-import { type JobTasks, runJobs } from '../../../server/jobs/run-jobs.ts';
+import { type JobTasks, runJobs, type WhyDead } from '../../../server/jobs/run-jobs.ts';
+import { MOST_DEATHS_ALONE } from '../../../server/jobs/worker-deaths.ts';
 import { beat, releaseSilentPools } from '../../../server/jobs/worker-pool-store.ts';
 import { eventually } from '../../support/eventually.ts';
 import { jobsDueNow } from '../../support/jobs-due-now.ts';
@@ -31,8 +32,8 @@ afterAll(async () => {
 });
 
 async function startWith(reading: {
-  run: (payload: Reading) => Promise<void>;
-  dead?: (payload: Reading) => Promise<void>;
+  run: (payload: Reading, progressed: () => Promise<void>) => Promise<void>;
+  dead?: (payload: Reading, why: WhyDead) => Promise<void>;
 }) {
   const nothing = async (): Promise<void> => undefined;
   const tasks: JobTasks = {
@@ -114,6 +115,107 @@ describe('the job worker', () => {
     expect(buried).toEqual([payload]);
     await addReading(payload);
     await eventually('the fresh try', async () => tries === MAX_ATTEMPTS + 1);
+  });
+
+  /** The pool that has the job in hand is killed and found out. */
+  async function killHolder(payload: Reading, changes: string) {
+    await database.ownerDb.raw(
+      `update graphile_worker._private_jobs
+       set locked_by = 'killed', locked_at = now() - interval '2 minutes', attempts = attempts + 1,
+         payload = cast(cast(payload as jsonb) || cast(? as jsonb) as json)
+       where key = ?`,
+      [changes, payload.fileId],
+    );
+    expect(await releaseSilentPools(database.db, 60_000)).toEqual(['killed']);
+  }
+
+  it('counts a worker that was killed as no try of the job in its hand, however often', async () => {
+    const payload = newReading();
+    await addReading(payload);
+    for (let kill = 0; kill <= MAX_ATTEMPTS; kill++) await killHolder(payload, '{}');
+    expect(await jobOf(payload)).toEqual({ attempts: 0, lockedBy: null });
+    const done: Reading[] = [];
+    await startWith({ run: async (read) => void done.push(read) });
+    await eventually('the job', async () => done.length > 0);
+    expect(done).toEqual([expect.objectContaining(payload)]);
+    expect(log.errors).toEqual([]);
+  });
+
+  it('does a job that a worker died with alone, others side by side', async () => {
+    const suspect = newReading();
+    await addReading(suspect);
+    await killHolder(suspect, '{}');
+    for (let other = 0; other < 4; other++) await addReading(newReading());
+    const besides = new Map<string, number>();
+    let inHand = 0;
+    await startWith({
+      run: async ({ fileId }) => {
+        inHand += 1;
+        await new Promise((resolve) => setTimeout(resolve, 50));
+        besides.set(fileId, inHand);
+        inHand -= 1;
+      },
+    });
+    await eventually('all five', async () => besides.size === 5);
+    expect(besides.get(suspect.fileId)).toBe(1);
+    expect(Math.max(...besides.values())).toBe(2);
+  });
+
+  it('gives up a job of which too many workers died that did nothing else, without trying it again', async () => {
+    const [killer, neighbour] = [newReading(), newReading()];
+    for (const payload of [killer, neighbour]) await addReading(payload);
+    for (let kill = 0; kill < MOST_DEATHS_ALONE; kill++) {
+      await killHolder(killer, '{"aloneIn":"killed"}');
+      await killHolder(neighbour, '{"aloneIn":"another pool"}');
+    }
+    const done: string[] = [];
+    const buried: [string, WhyDead][] = [];
+    await startWith({
+      run: async ({ fileId }) => void done.push(fileId),
+      dead: async ({ fileId }, why) => void buried.push([fileId, why]),
+    });
+    await eventually('both', async () => done.length > 0 && buried.length > 0);
+    expect(done).toEqual([neighbour.fileId]);
+    expect(buried).toEqual([[killer.fileId, 'deaths']]);
+    expect(await eventually('an empty queue', async () => (await jobOf(killer)) === null)).toBe(true);
+    expect(log.errors.map(({ message }) => message).join()).toContain('workers die of');
+  });
+
+  it('does not blame a job that has come further than before', async () => {
+    const payload = newReading();
+    await addReading(payload);
+    for (let kill = 1; kill < MOST_DEATHS_ALONE; kill++) await killHolder(payload, '{"aloneIn":"killed"}');
+    let tries = 0;
+    await startWith({
+      run: async (_reading, progressed) => {
+        tries += 1;
+        if (tries > 1) return;
+        await progressed();
+        throw new Error('ended after some progress');
+      },
+    });
+    await eventually('the broken-off try', async () => tries === 1 && (await jobOf(payload))?.lockedBy === null);
+    await killHolder(payload, '{"aloneIn":"killed"}');
+    await jobsDueNow(database);
+    await eventually('the next', async () => tries === 2 && (await jobOf(payload)) === null);
+  });
+
+  it('says in whose hand a job is alone, so that its death can be told from another’s', async () => {
+    const payload = newReading();
+    await addReading(payload);
+    await killHolder(payload, '{}');
+    let aloneIn: unknown = null;
+    await startWith({
+      run: async () => {
+        const { rows } = await database.ownerDb.raw<{ rows: { holder: string; aloneIn: string }[] }>(
+          `select locked_by as holder, payload ->> 'aloneIn' as "aloneIn" from graphile_worker._private_jobs where key = ?`,
+          [payload.fileId],
+        );
+        aloneIn = rows[0]?.holder === rows[0]?.aloneIn ? rows[0]?.aloneIn : null;
+      },
+    });
+    await eventually('the job', async () => aloneIn !== null);
+    expect(String(aloneIn)).not.toBe('');
   });
 
   it('waits for the job at hand when it is closed', async () => {

@@ -13,10 +13,14 @@ import { startCommand } from '../../support/run-command.ts';
 import { samples } from '../../support/sample-size.ts';
 import { zipBytes } from '../../support/zip-bytes.ts';
 
-const FILES = samples(3, 200);
+const FILES = samples(6, 200);
 const KILLS = samples(3, 50);
-/** A worker lives this long at most, or as long as it took to start: on a busy machine less would not do for one job. */
+/**
+ * A worker lives this long at most, or as long as it took to start: on a busy machine less would not do for one job. It dies sooner
+ * when it has read its share of the files, so that the batch is not over long before the last kill.
+ */
 const LONGEST_LIFE_MS = 1500;
+const LOOK_EVERY_MS = 10;
 /** A soak's seed gives the workers the same lives again, as far as the machine goes along. */
 const lives = seededRandom(process.env.SOAK_SEED ?? String(Date.now()));
 const FOR_ALL_MS = 60_000 + KILLS * 20_000 + FILES * 1000;
@@ -42,16 +46,30 @@ function contentOf(nth: number): string {
   return own.replace(`,${station.elevationM.toFixed(1)}\r\n`, `,${elevationM.toFixed(1)}\r\n`);
 }
 
-/** Starts a worker process and kills it a random while after its first look for work. */
-async function killOne(): Promise<void> {
+/** Starts a worker process and kills it a random while after its first look for work. @returns files that were not read by then */
+async function killOne(killsLeft: number): Promise<number> {
   const settings = { databaseUrl: road.database.databaseUrl, originalsDir: road.originalsDir };
   const began = performance.now();
   const { child, ended } = startCommand(['worker'], { env: workerEnvironment(settings) });
   await eventually('the worker’s first look', async () => (await poolsNow()) > 0, 30_000);
-  await sleep(lives.uniform() * Math.max(LONGEST_LIFE_MS, performance.now() - began));
+  const until = performance.now() + lives.uniform() * Math.max(LONGEST_LIFE_MS, performance.now() - began);
+  const unread = await filesUnread();
+  const share = Math.ceil(unread / killsLeft);
+  while (performance.now() < until && (await filesUnread()) > unread - share) {
+    await sleep(Math.min(LOOK_EVERY_MS, Math.max(0, until - performance.now())));
+  }
   child.kill('SIGKILL');
   await ended;
   await releaseSilentPools(road.db, 0);
+  return await filesUnread();
+}
+
+/** Those of the batch that no worker has ended, in the archive or out of it. */
+async function filesUnread(): Promise<number> {
+  const { rows } = await road.db.raw<{ rows: [{ number: number }] }>(
+    `select count(*)::integer as number from weather_files where status <> 'reading'`,
+  );
+  return FILES - rows[0].number;
 }
 
 async function poolsNow(): Promise<number> {
@@ -70,10 +88,13 @@ it(
     const zip = await zipBytes(Object.fromEntries(names.map((name, nth) => [name, contentOf(nth)])));
     await engineer.agent.post(`${base}/${batch.id}/archives`).attach('file', zip, 'many.zip').expect(200);
 
+    let killsAtWork = 0;
     for (let kill = 0; kill < KILLS; kill++) {
-      await killOne();
+      if ((await killOne(KILLS - kill)) > 0) killsAtWork++;
       await jobsDueNow(road.database);
     }
+    // Most of them had something to break off.
+    expect(killsAtWork).toBeGreaterThan(KILLS / 2);
     await road.startWorker();
     const done = await eventually(
       'the end of the batch',

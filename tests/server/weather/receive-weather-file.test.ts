@@ -72,7 +72,7 @@ describe('an accepted year whose judging was given up', () => {
       'select id from weather_years where weather_file_id = ?',
       [file.id],
     );
-    await noteJudgingFailure(road.db, { teamId: team.teamId, weatherYearId: rows[0].id });
+    await noteJudgingFailure(road.db, { teamId: team.teamId, weatherYearId: rows[0].id }, 'tries');
     expect((await desk.record(file.id)).file.failure).toContain('fault of ours');
     const map = await desk.map();
     expect(map).toMatchObject({

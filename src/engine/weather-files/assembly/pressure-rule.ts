@@ -32,15 +32,14 @@ export function settlePressure(
 ): void {
   const { elevationM, keepFar, steps } = input;
   const column = steps.pressurePa;
-  const inHectopascals = looksLikeHectopascals(column);
+  const { inHectopascals, possible, reachesFar } = surveyPressure(column);
   if (inHectopascals) askAboutUnit(steps, findings);
-  const known = possibleValues(column);
-  if (known.length === 0) {
+  if (possible === 0) {
     assume(steps, elevationM, findings);
     return;
   }
-  if (!inHectopascals && !keepFar && reachesFar(column)) replaceFarValues(steps, medianOf(known), findings);
-  if (known.length < column.length) fillGaps(steps, findings);
+  if (!inHectopascals && !keepFar && reachesFar) replaceFarValues(steps, medianOf(possibleValues(column)), findings);
+  if (possible < column.length) fillGaps(steps, findings);
   flagConstant(steps, findings);
   const meanPa = meanOf(column);
   if (elevationM === null) {
@@ -75,15 +74,31 @@ function meanOf(values: Float64Array): number {
   return sum / values.length;
 }
 
-function looksLikeHectopascals(column: Float64Array): boolean {
+/** What decides which rules a column has to go through, in one pass, since every file has one. */
+function surveyPressure(column: Float64Array): {
+  /** Most values are hectopascals. */
+  inHectopascals: boolean;
+  /** Values that a pressure can have. */
+  possible: number;
+  /** Whether any value can lie more than 6 % from the median: not when all of them lie closer together. */
+  reachesFar: boolean;
+} {
   let present = 0;
-  let inHectopascals = 0;
+  let hectopascals = 0;
+  let possible = 0;
+  let least = Number.POSITIVE_INFINITY;
+  let most = Number.NEGATIVE_INFINITY;
   for (let step = 0; step < column.length; step++) {
     const value = column[step] ?? Number.NaN;
-    if (!Number.isNaN(value)) present++;
-    if (value >= HECTOPASCAL_LIMITS.low && value <= HECTOPASCAL_LIMITS.high) inHectopascals++;
+    if (Number.isNaN(value)) continue;
+    present++;
+    if (isPossible(value)) possible++;
+    else if (value >= HECTOPASCAL_LIMITS.low && value <= HECTOPASCAL_LIMITS.high) hectopascals++;
+    if (value < least) least = value;
+    if (value > most) most = value;
   }
-  return present > 0 && inHectopascals > present / 2;
+  const inHectopascals = present > 0 && hectopascals > present / 2;
+  return { inHectopascals, possible, reachesFar: !(most - least < FAR_FROM_MEDIAN * least) };
 }
 
 function askAboutUnit(steps: StepColumns, findings: FindingList): void {
@@ -123,18 +138,6 @@ function assume(steps: StepColumns, elevationM: number | null, findings: Finding
     message: () =>
       `The file gives no usable pressure; the standard atmosphere at ${elevationM} m, ${whole(standardPa)} Pa, is taken in every hour.`,
   });
-}
-
-/** Whether any value can lie more than 6 % from the median: not when all of them lie closer together. */
-function reachesFar(column: Float64Array): boolean {
-  let least = Number.POSITIVE_INFINITY;
-  let most = Number.NEGATIVE_INFINITY;
-  for (let step = 0; step < column.length; step++) {
-    const value = column[step] ?? Number.NaN;
-    if (value < least) least = value;
-    if (value > most) most = value;
-  }
-  return !(most - least < FAR_FROM_MEDIAN * least);
 }
 
 /** Impossible values, and those more than 6 % from the median: the standard atmosphere scaled to the median. */

@@ -19,7 +19,7 @@ export interface StepColumns {
 }
 
 /**
- * Lays rows on the calendar.
+ * Lays rows on the calendar. Rows that are the steps already become them, so nobody may look at their values as rows afterwards.
  * @param input.rowOfStep row of each step, -1 where there is none
  * @param input.inPlace whether each row is the step of its own number
  */
@@ -31,7 +31,7 @@ export function stepColumns(input: {
   inPlace: boolean;
 }): StepColumns {
   const { rows, rowOfStep } = input;
-  if (input.inPlace) return copiedColumns(rows, input);
+  if (input.inPlace) return columnsInPlace(rows, input);
   return {
     slotCount: input.slotCount,
     stepsPerHour: input.stepsPerHour,
@@ -45,16 +45,16 @@ export function stepColumns(input: {
   };
 }
 
-function copiedColumns(rows: SourceRows, calendar: { slotCount: number; stepsPerHour: number }): StepColumns {
+function columnsInPlace(rows: SourceRows, calendar: { slotCount: number; stepsPerHour: number }): StepColumns {
   return {
     slotCount: calendar.slotCount,
     stepsPerHour: calendar.stepsPerHour,
-    lines: rows.lines.slice(),
-    dryBulbC: rows.dryBulbC.slice(),
-    dewPointC: rows.dewPointC.slice(),
-    relativeHumidityPct: rows.relativeHumidityPct.slice(),
-    pressurePa: rows.pressurePa.slice(),
-    estimated: rows.estimated.slice(),
+    lines: rows.lines,
+    dryBulbC: rows.dryBulbC,
+    dewPointC: rows.dewPointC,
+    relativeHumidityPct: rows.relativeHumidityPct,
+    pressurePa: rows.pressurePa,
+    estimated: rows.estimated,
     repaired: new Uint8Array(rows.lines.length),
   };
 }

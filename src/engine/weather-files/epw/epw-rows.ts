@@ -4,6 +4,7 @@ import { type FindingList, whole } from '../finding-list.ts';
 import { Frequencies } from '../frequencies.ts';
 import type { LineCursor } from '../text/line-cursor.ts';
 import { type FieldBounds, FULL_FIELDS, findFields, flagsOf, NEEDED_FIELDS, readTime, readValues } from './epw-row.ts';
+import { FieldCounts } from './field-counts.ts';
 import { PlainRowReader } from './plain-row.ts';
 import { SourceFlags } from './source-flags.ts';
 
@@ -20,7 +21,7 @@ const LAYOUT_SHARE = 0.01;
 interface Progress {
   readonly rows: RowCollector;
   /** Fields of each row kept, at most `FULL_FIELDS`. */
-  readonly fieldCounts: number[];
+  readonly fieldCounts: FieldCounts;
   readonly bounds: FieldBounds;
   readonly flags: SourceFlags;
   longRows: number;
@@ -31,7 +32,7 @@ interface Progress {
 export function readEpwRows(cursor: LineCursor, findings: FindingList): EpwRows {
   const progress: Progress = {
     rows: new RowCollector(),
-    fieldCounts: [],
+    fieldCounts: new FieldCounts(),
     bounds: { starts: new Int32Array(NEEDED_FIELDS + 2), count: 0 },
     flags: new SourceFlags(cursor.text.bytes),
     longRows: 0,
@@ -82,7 +83,7 @@ function passPlainRows(
 
 /** A last line without its end and with fewer fields than the others. */
 function cutShort(cursor: LineCursor, progress: Progress): boolean {
-  const usual = progress.fieldCounts.at(-1) ?? NEEDED_FIELDS;
+  const usual = progress.fieldCounts.last ?? NEEDED_FIELDS;
   return !cursor.closed && progress.bounds.count < usual;
 }
 
@@ -119,7 +120,7 @@ function readRow(cursor: LineCursor, progress: Progress, row: SourceRow, finding
   const { start, end } = flagsOf(bounds);
   row.line = line;
   row.estimated = progress.flags.take(start, end);
-  progress.fieldCounts.push(Math.min(bounds.count, FULL_FIELDS));
+  progress.fieldCounts.add(Math.min(bounds.count, FULL_FIELDS));
   progress.rows.add(row);
 }
 
@@ -129,7 +130,7 @@ function noteLengths(progress: Progress, commas: Int32Array, firstLine: number):
   for (let row = 0; row < commas.length; row++) {
     const fieldCount = (commas[row] ?? 0) + 1;
     if (fieldCount > FULL_FIELDS) noteLength(progress, fieldCount, firstLine + row);
-    fieldCounts.push(Math.min(fieldCount, FULL_FIELDS));
+    fieldCounts.add(Math.min(fieldCount, FULL_FIELDS));
   }
 }
 
@@ -163,14 +164,14 @@ function tellLongRows(progress: Progress, findings: FindingList): void {
 }
 
 /** A row that is shorter than the file's layout may have lost any of its fields, so its values are not trusted. */
-function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, findings: FindingList): void {
-  if (isUniform(fieldCounts)) return;
+function leaveOutDamagedRows({ counts, uniform }: FieldCounts, rows: SourceRows, findings: FindingList): void {
+  if (uniform) return;
   const rowsWith = new Frequencies();
-  for (let row = 0; row < fieldCounts.length; row++) rowsWith.add(fieldCounts[row] ?? 0);
+  for (let row = 0; row < counts.length; row++) rowsWith.add(counts[row] ?? 0);
   const usual = rowsWith.mostFrequent(0);
-  for (let row = 0; row < fieldCounts.length; row++) {
-    const count = fieldCounts[row] ?? 0;
-    if (count >= usual || rowsWith.of(count) >= LAYOUT_SHARE * fieldCounts.length) continue;
+  for (let row = 0; row < counts.length; row++) {
+    const count = counts[row] ?? 0;
+    if (count >= usual || rowsWith.of(count) >= LAYOUT_SHARE * counts.length) continue;
     for (const column of [rows.dryBulbC, rows.dewPointC, rows.relativeHumidityPct, rows.pressurePa]) {
       column[row] = Number.NaN;
     }
@@ -183,10 +184,4 @@ function leaveOutDamagedRows(fieldCounts: readonly number[], rows: SourceRows, f
         `Line ${line} has ${count} fields where the others have ${usual}: which one is lost cannot be told, so its values are left out.`,
     });
   }
-}
-
-function isUniform(fieldCounts: readonly number[]): boolean {
-  let row = 1;
-  while (row < fieldCounts.length && fieldCounts[row] === fieldCounts[0]) row++;
-  return row >= fieldCounts.length;
 }

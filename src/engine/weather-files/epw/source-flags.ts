@@ -11,6 +11,10 @@ export class SourceFlags {
   readonly #words: DataView;
   #first = 0;
   #any = false;
+  /** Of the row before: the flags that are looked at, and what they say. */
+  #lastFour = 0;
+  #lastThird = -1;
+  #lastEstimated = 0;
 
   constructor(bytes: Uint8Array) {
     this.#bytes = bytes;
@@ -24,10 +28,16 @@ export class SourceFlags {
       this.#any = true;
       this.#first = firstFour;
     } else if (this.#first !== firstFour) this.vary = true;
+    const third = this.#byteBefore(end, start + WORD);
+    // Most rows have the flags of the one before.
+    if (firstFour === this.#lastFour && third === this.#lastThird) return this.#lastEstimated;
     let estimated = 0;
     if (isEstimated(firstFour & 0xff)) estimated |= VALUE.dryBulb;
     if (isEstimated((firstFour >> 16) & 0xff)) estimated |= VALUE.dewPoint;
-    if (isEstimated(this.#byteBefore(end, start + WORD))) estimated |= VALUE.relativeHumidity;
+    if (isEstimated(third)) estimated |= VALUE.relativeHumidity;
+    this.#lastFour = firstFour;
+    this.#lastThird = third;
+    this.#lastEstimated = estimated;
     return estimated;
   }
 
