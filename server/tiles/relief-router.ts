@@ -8,7 +8,7 @@ import { tileNamed } from './tile-name.ts';
 const CACHE_CONTROL = 'public, max-age=86400, stale-while-revalidate=604800';
 const TILE_PX = 256;
 /** On the whole world at once shading says nothing; beyond the last zoom pixels would show the facets between the nodes of the grid. */
-const ZOOMS = { least: 3, most: 5 } as const;
+const ZOOMS = { least: 2, most: 5 } as const;
 /** Tiles kept, some 40 kB each. */
 const MOST_KEPT = 256;
 /** Terrarium: height + 32768 m in red x 256 + green + blue / 256. */

@@ -12,6 +12,7 @@ import type { RaisedPlace } from './place-features.ts';
 import { PlaceKeys } from './place-keys.tsx';
 import { MARK_SOURCES, PlaceFigures, PlaceMarks, PlaceNames, RaisedNames, RaisedRings } from './place-layers.tsx';
 import { PointLayer } from './point-layer.tsx';
+import { loadShadedRelief, RELIEF_PROTOCOL } from './relief-tiles.ts';
 import type { UnitSystem } from './scale-bar.ts';
 import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
 import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
@@ -29,6 +30,7 @@ import { type SheetCamera, useFollowCamera, useTellView, type ViewTold } from '.
 
 // A built client answers an unknown address with its page; the worker has to be asked for by its real name.
 maplibregl.setWorkerUrl(workerUrl);
+maplibregl.addProtocol(RELIEF_PROTOCOL, loadShadedRelief);
 
 export type SheetMapProps = {
   readonly stations: readonly SheetPlace[];

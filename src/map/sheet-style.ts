@@ -1,4 +1,5 @@
 import type { FontFacesSpecification, LayerSpecification, StyleSpecification } from 'maplibre-gl';
+import { reliefTiles } from './relief-tiles.ts';
 
 /** Colours of the printed sheet; MapLibre reads no CSS variables, so the ones it needs stand here. */
 export const SHEET = {
@@ -24,7 +25,8 @@ export const CAPITAL_DOT = 'capital';
 const SOURCE = 'base';
 const RELIEF = 'relief';
 /** Zooms of the heights that the server tells; beyond the last they are enlarged. */
-const RELIEF_ZOOMS = { minzoom: 3, maxzoom: 5 } as const;
+const RELIEF_ZOOMS = { minzoom: 2, maxzoom: 5 } as const;
+const RELIEF_END = 9;
 /** The largest zoom of the shipped tiles; beyond it the client enlarges them. */
 const TILE_ZOOM = 7;
 
@@ -44,10 +46,10 @@ export function sheetStyle({ origin, fonts, faces }: SheetStyleOptions): StyleSp
     sources: {
       [SOURCE]: { type: 'vector', tiles: [`${origin}/tiles/{z}/{x}/{y}.mvt`], maxzoom: TILE_ZOOM },
       [RELIEF]: {
-        type: 'raster-dem',
-        tiles: [`${origin}/relief/{z}/{x}/{y}.png`],
-        tileSize: 256,
-        encoding: 'terrarium',
+        type: 'raster',
+        tiles: [reliefTiles(origin)],
+        // A pixel for about each node of the grid of heights; four times as many would show no more.
+        tileSize: 512,
         ...RELIEF_ZOOMS,
       },
     },
@@ -69,19 +71,16 @@ function groundLayers(): LayerSpecification[] {
   ];
 }
 
-/** Light from the north-west, as on printed sheets; shadows alone, so that the paper keeps its tone. */
+/** The shaded ground; far in it ends, as there is no height between the nodes of a grid of five minutes of arc. */
 function shading(): LayerSpecification {
   return {
     id: BELOW_LINES,
-    type: 'hillshade',
+    type: 'raster',
     source: RELIEF,
+    maxzoom: RELIEF_END,
     paint: {
-      'hillshade-illumination-direction': 315,
-      'hillshade-illumination-anchor': 'map',
-      'hillshade-exaggeration': 0.8,
-      'hillshade-shadow-color': 'rgba(72, 64, 44, 0.8)',
-      'hillshade-highlight-color': 'rgba(255, 252, 240, 0.5)',
-      'hillshade-accent-color': 'rgba(72, 64, 44, 0.3)',
+      'raster-fade-duration': 0,
+      'raster-opacity': ['interpolate', ['linear'], ['zoom'], RELIEF_ZOOMS.maxzoom + 1, 1, RELIEF_END, 0],
     },
   };
 }

@@ -6,9 +6,10 @@ import type { SurfaceCells } from '../contract/surface.ts';
 import { ROMAN } from './map-fonts.ts';
 import { BELOW_LINES, BELOW_NAMES } from './sheet-style.ts';
 import { useSheetView } from './sheet-view-store.ts';
-import { paleArea, surfaceBands } from './surface-bands.ts';
 import { cellCorners, surfaceHexagons } from './surface-hexagons.ts';
+import { surfaceLines } from './surface-lines.ts';
 import { type SurfaceMesh, surfaceMesh, surfaceScores } from './surface-mesh.ts';
+import { surfacePainter } from './surface-painter.ts';
 import { drawWeave, WEAVE } from './surface-weave.ts';
 
 interface SurfaceLayerProps {
@@ -23,13 +24,15 @@ const CELLS_FROM_ZOOM = 8.5;
 /** The box of the cells grows by so many degrees at a time, so that it stays the same while the map moves a little. */
 const STEP = 0.5;
 const MARGIN = 0.1;
+const BAND = 'surface-band';
+const LINE = 'surface-line';
 const INK = '#22302f';
 const HALO = '#f4f0e6';
 
-const rampOf = (figure: string): ExpressionSpecification => [
+const RAMP_OF_SCORE: ExpressionSpecification = [
   'interpolate',
   ['linear'],
-  ['get', figure],
+  ['get', 'score'],
   ...RAMP_STOPS.flatMap(({ share, colour }) => [100 * share, colour]),
 ];
 
@@ -40,36 +43,14 @@ const rampOf = (figure: string): ExpressionSpecification => [
 export function SurfaceLayer({ cells, scores }: SurfaceLayerProps) {
   const mesh = useMemo(() => surfaceMesh(cells), [cells]);
   const values = useMemo(() => surfaceScores(scores), [scores]);
-  const { bands, lines } = useMemo(() => surfaceBands(mesh, values), [mesh, values]);
-  const pale = useMemo(() => paleArea(mesh), [mesh]);
-  const hasWeave = useWeave();
+  const lines = useMemo(() => surfaceLines(mesh, values), [mesh, values]);
+  usePaintedBands(mesh, values);
   return (
     <>
-      <Source id="surface-bands" type="geojson" data={bands} tolerance={0.2}>
-        <Layer
-          id="surface-band"
-          type="fill"
-          beforeId={BELOW_LINES}
-          maxzoom={CELLS_FROM_ZOOM}
-          layout={{ 'fill-sort-key': ['get', 'from'] }}
-          paint={{ 'fill-color': rampOf('middle'), 'fill-antialias': false }}
-        />
-      </Source>
-      <SurfaceCellsLayer mesh={mesh} values={values} hasWeave={hasWeave} />
-      {hasWeave ? (
-        <Source id="surface-pale" type="geojson" data={pale} tolerance={0.2}>
-          <Layer
-            id="surface-pale"
-            type="fill"
-            beforeId={BELOW_LINES}
-            maxzoom={CELLS_FROM_ZOOM}
-            paint={{ 'fill-pattern': WEAVE }}
-          />
-        </Source>
-      ) : null}
+      <SurfaceCellsLayer mesh={mesh} values={values} />
       <Source id="surface-lines" type="geojson" data={lines} tolerance={0.2}>
         <Layer
-          id="surface-line"
+          id={LINE}
           type="line"
           beforeId={BELOW_LINES}
           maxzoom={CELLS_FROM_ZOOM}
@@ -97,14 +78,37 @@ export function SurfaceLayer({ cells, scores }: SurfaceLayerProps) {
   );
 }
 
+/**
+ * The bands themselves, under the lines. Given to the map when everything stands: what is given while React draws may be drawn
+ * twice, and the map would keep the painter that nobody tells of scores.
+ */
+function usePaintedBands(mesh: SurfaceMesh, values: Float32Array): void {
+  const map = useMap().current?.getMap();
+  const painter = useMemo(() => surfacePainter(BAND, CELLS_FROM_ZOOM), []);
+  useEffect(() => painter.show(mesh, values), [painter, mesh, values]);
+  useEffect(() => {
+    if (map === undefined) return;
+    const put = () => {
+      const above = [LINE, BELOW_LINES].find((id) => map.getLayer(id) !== undefined);
+      if (above !== undefined && map.getLayer(BAND) === undefined) map.addLayer(painter.layer, above);
+    };
+    put();
+    map.on('styledata', put);
+    return () => {
+      map.off('styledata', put);
+      if (map.style !== undefined && map.getLayer(BAND) !== undefined) map.removeLayer(BAND);
+    };
+  }, [map, painter]);
+}
+
 interface SurfaceCellsProps {
   readonly mesh: SurfaceMesh;
   readonly values: Float32Array;
-  readonly hasWeave: boolean;
 }
 
 /** Only what the view shows becomes polygons: all cells of a continent would be tens of thousands. */
-function SurfaceCellsLayer({ mesh, values, hasWeave }: SurfaceCellsProps) {
+function SurfaceCellsLayer({ mesh, values }: SurfaceCellsProps) {
+  const hasWeave = useWeave();
   const map = useMap().current?.getMap() ?? null;
   const view = useSheetView(map);
   const isNear = (map?.getZoom() ?? 0) >= CELLS_FROM_ZOOM - 0.1;
@@ -125,7 +129,7 @@ function SurfaceCellsLayer({ mesh, values, hasWeave }: SurfaceCellsProps) {
         type="fill"
         beforeId={BELOW_LINES}
         minzoom={CELLS_FROM_ZOOM}
-        paint={{ 'fill-color': rampOf('score'), 'fill-outline-color': 'rgba(34, 48, 47, 0.25)' }}
+        paint={{ 'fill-color': RAMP_OF_SCORE, 'fill-outline-color': 'rgba(34, 48, 47, 0.25)' }}
       />
       {hasWeave ? (
         <Layer

@@ -7,13 +7,16 @@ import { base64Bytes } from '../lib/base64-bytes.ts';
 
 export interface SurfaceMesh {
   readonly cells: number;
+  /** Degrees; the outermost cells. */
+  readonly west: number;
+  readonly east: number;
   /** Degrees; longitudes run on past 180 where the surface crosses it. */
   readonly longitudes: Float64Array;
   readonly latitudes: Float64Array;
   /** 2 full, 1 pale, 0 none: the rim. */
   readonly support: Uint8Array;
   /** Three corners each, counter-clockwise with north up. */
-  readonly triangles: Uint32Array;
+  readonly triangles: Uint32Array<ArrayBuffer>;
   /** Number of the edge from each corner of `triangles` to the next one; two triangles share it. */
   readonly edges: Uint32Array;
   readonly edgeCount: number;
@@ -30,6 +33,8 @@ export function surfaceMesh(packed: SurfaceCells): SurfaceMesh {
   const { edges, edgeCount } = numberEdges(triangles, packed.cells);
   return {
     cells: packed.cells,
+    west,
+    east,
     longitudes,
     latitudes,
     support: base64Bytes(packed.support),

@@ -1,9 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import type { SurfaceCells } from '../../../src/contract/surface.ts';
-import { polygonsOf } from '../../../src/map/ring-polygons.ts';
-import { paleArea, surfaceBands } from '../../../src/map/surface-bands.ts';
 import { contourAt } from '../../../src/map/surface-contours.ts';
+import { cornerFigures, cornerPositions, FIGURES_EACH } from '../../../src/map/surface-corners.ts';
 import { cellCorners, surfaceHexagons } from '../../../src/map/surface-hexagons.ts';
+import { surfaceLines } from '../../../src/map/surface-lines.ts';
 import { surfaceMesh, surfaceScores } from '../../../src/map/surface-mesh.ts';
 
 const COLUMNS = 24;
@@ -78,48 +78,69 @@ describe('isopleths across the cells', () => {
     expect(areaOf([rings])).toBeGreaterThan(0);
   });
 
-  test('round a hill close upon themselves; a hollow is a hole of its band, an island in it a polygon of its own', () => {
+  test('round a hill close upon themselves: what lies within is a shore, a hollow in it a hole', () => {
     const away = field((x, y) => Math.hypot(x - 12, y - 10));
-    const ring = contourAt(mesh, away, 4);
-    const [polygon, ...others] = polygonsOf(ring.rings);
-    expect(others).toEqual([]);
-    expect(polygon).toHaveLength(2);
-    expect(ring.lines).toHaveLength(1);
-    const [hole = []] = ring.lines;
+    const { rings, lines } = contourAt(mesh, away, 4);
+    expect(rings.map((ring) => Math.sign(areaOf([[ring]]))).sort()).toEqual([-1, 1]);
+    expect(lines).toHaveLength(1);
+    const [hole = []] = lines;
     expect(hole[0]).toEqual(hole.at(-1));
     for (const [x = 0, y = 0] of hole) expect(Math.abs(Math.hypot(x - 12, y - 10) - 4)).toBeLessThan(0.15);
     const island = field((x, y) => Math.abs(Math.hypot(x - 12, y - 10) - 3));
-    const pieces = polygonsOf(contourAt(mesh, island, 1.5).rings);
-    expect(pieces.map((rings) => rings.length).sort()).toEqual([1, 2]);
+    expect(
+      contourAt(mesh, island, 1.5)
+        .rings.map((ring) => Math.sign(areaOf([[ring]])))
+        .sort(),
+    ).toEqual([-1, 1, 1]);
   });
 
-  test('a band holds the next one: their areas fall, and the lowest is the whole surface', () => {
-    const scores = field((x, y) => 3 * x + y);
-    const { bands, lines } = surfaceBands(mesh, scores);
-    const areas = bands.features.map(({ geometry }) => areaOf(geometry.coordinates));
-    expect(bands.features.map(({ properties }) => properties.from)).toEqual([0, 10, 20, 30, 40, 50, 60, 70, 80]);
-    expect(areas).toEqual(areas.toSorted((one, other) => other - one));
-    // A square unit for each cell that is not of the rim, less the corners that the outline cuts.
-    expect(areas[0]).toBeLessThan((COLUMNS - 2) * (ROWS - 2) + 1);
-    expect(areas[0]).toBeGreaterThan(0.95 * (COLUMNS - 2) * (ROWS - 2));
-    expect(new Set(lines.features.map(({ properties }) => properties.value))).toEqual(
+  test('stand ten points apart, and nothing is drawn of a surface without scores', () => {
+    const { features } = surfaceLines(
+      mesh,
+      field((x, y) => 3 * x + y),
+    );
+    expect(new Set(features.map(({ properties }) => properties.value))).toEqual(
       new Set([10, 20, 30, 40, 50, 60, 70, 80]),
     );
-  });
-
-  test('the weave covers what is pale, and stops half way to what is not', () => {
-    const { coordinates } = paleArea(mesh).geometry;
-    expect(coordinates).toHaveLength(1);
-    const xs = coordinates.flat(2).map(([x = 0]) => x);
-    expect(Math.min(...xs)).toBeGreaterThanOrEqual(9.4);
-    const full = surfaceMesh(patch(() => 2));
-    expect(paleArea(full).geometry.coordinates).toEqual([]);
-  });
-
-  test('nothing is drawn of a surface without scores', () => {
-    const nothing = base64(new Int16Array(mesh.cells).fill(-32_768));
-    expect(surfaceBands(mesh, surfaceScores(nothing)).bands.features).toEqual([]);
+    const nothing = surfaceScores(base64(new Int16Array(mesh.cells).fill(-32_768)));
+    expect(surfaceLines(mesh, nothing).features).toEqual([]);
+    expect(cornerFigures(mesh, nothing).every((figure) => figure === 0)).toBe(true);
     expect([...surfaceScores(base64(Int16Array.of(1234, -32_768)))]).toEqual([expect.closeTo(12.34), Number.NaN]);
+  });
+});
+
+describe('the corners that are painted', () => {
+  const figuresOf = (cell: number, figures: Float32Array) => [
+    ...figures.subarray(FIGURES_EACH * cell, FIGURES_EACH * (cell + 1)),
+  ];
+
+  test('bring their own score and doubt; on the rim those of their neighbours, and that they hold nothing themselves', () => {
+    const scores = field((x) => 3 * x);
+    const figures = cornerFigures(mesh, scores);
+    let rims = 0;
+    for (let cell = 0; cell < mesh.cells; cell++) {
+      const [score = 0, held, pale = 0] = figuresOf(cell, figures);
+      if (mesh.support[cell] !== 0) {
+        expect([score, held, pale]).toEqual([scores[cell], 1, mesh.support[cell] === 1 ? 1 : 0]);
+        continue;
+      }
+      rims += 1;
+      expect(held).toBe(0);
+      // The middles of two neighbours in a row are a step apart, and so are those of the next row but one.
+      if (score !== 0) expect(Math.abs(score - 3 * (mesh.longitudes[cell] ?? 0))).toBeLessThanOrEqual(3.01);
+      expect(pale).toBeLessThanOrEqual(1);
+    }
+    expect(rims).toBe(2 * (COLUMNS + ROWS) - 4);
+  });
+
+  test('stand on Mercator’s sheet: 0° N at its middle, 85.0511° N at its upper edge', () => {
+    const at = (longitude: number, latitude: number) => {
+      const one = { ...mesh, cells: 1, longitudes: Float64Array.of(longitude), latitudes: Float64Array.of(latitude) };
+      return [...cornerPositions(one)];
+    };
+    expect(at(0, 0)).toEqual([0.5, 0.5]);
+    expect(at(190, 85.051_129)[0]).toBeCloseTo(370 / 360, 6);
+    expect(at(190, 85.051_129)[1]).toBeCloseTo(0, 6);
   });
 });
 

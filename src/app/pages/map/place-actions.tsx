@@ -27,8 +27,15 @@ export function PlaceActions({ ids, place, mayMove }: PlaceActionsProps) {
         ) : (
           <Link to={paths.station.to(ids.teamId, place.id)}>Open this station</Link>
         )}
+        <span className="text-soft">, </span>
+        <Link to={compareWith(ids, place)}>compare it with others</Link>
         {mayMove ? <span className="text-soft">. Drag its mark on the map to move it.</span> : null}
       </p>
     </div>
   );
+}
+
+/** Under the brief of the map, where that is not the programme’s usual one. */
+function compareWith(ids: ProgrammeIds, { kind, id }: MapPlace): string {
+  return paths.compare.to(ids, { places: [{ kind, id }], briefs: ids.briefId === null ? [] : [ids.briefId] });
 }
