@@ -87,7 +87,10 @@ export const importRules: readonly ImportRule[] = [
     may: ['server/mail/**', 'server/db/**', 'server/jobs/queue.ts', ...serverWords, ...pure, 'nodemailer'],
     mayTypes: ['knex'],
   },
-  { from: 'server/storage/**', may: ['server/storage/**', ...serverWords, 'yauzl', '@aws-sdk/client-s3', 'node:**'] },
+  {
+    from: 'server/storage/**',
+    may: ['server/storage/**', ...serverWords, 'yauzl', 'yazl', '@aws-sdk/client-s3', 'node:**'],
+  },
   {
     from: 'server/tiles/**',
     may: [
