@@ -161,6 +161,8 @@ function taskList(tasks: JobTasks): TaskList {
     'judge-year': (payload) => tasks['judge-year'].run(payloadOf('judge-year', payload)),
     'queue-site-runs': (payload) => tasks['queue-site-runs'].run(payloadOf('queue-site-runs', payload)),
     'send-mail': (payload) => tasks['send-mail'].run(payloadOf('send-mail', payload)),
+    'export-team': (payload) => tasks['export-team'].run(payloadOf('export-team', payload)),
+    'end-team': (payload) => tasks['end-team'].run(payloadOf('end-team', payload)),
   };
   return list;
 }
@@ -182,6 +184,10 @@ async function bury(
         return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload));
       case 'send-mail':
         return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload));
+      case 'export-team':
+        return await tasks['export-team'].dead(payloadOf('export-team', job.payload));
+      case 'end-team':
+        return await tasks['end-team'].dead(payloadOf('end-team', job.payload));
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

@@ -1,6 +1,6 @@
 /** A zip archive written as it is made: nothing of it is held in memory, and no file of its name is there before it is whole. */
 import { createHash, randomUUID } from 'node:crypto';
-import { createWriteStream } from 'node:fs';
+import { createReadStream, createWriteStream } from 'node:fs';
 import { open, rename, rm } from 'node:fs/promises';
 import path from 'node:path';
 import { Readable, Transform } from 'node:stream';
@@ -65,6 +65,13 @@ async function writeEntries(
     await written.catch(() => undefined);
     throw error;
   }
+}
+
+/** SHA-256 of a file's content, hexadecimal. */
+export async function fingerprintOfFile(file: string): Promise<string> {
+  const hash = createHash('sha256');
+  await pipeline(createReadStream(file), hash);
+  return hash.digest('hex');
 }
 
 async function addEntry(
