@@ -9,6 +9,7 @@ import { checkPassword } from './features/accounts/check-password.ts';
 import { makePerson } from './features/accounts/make-person.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { readSession } from './features/accounts/read-session.ts';
+import { requirePassword } from './features/accounts/require-password.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
 import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
@@ -108,6 +109,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   teamsRoutes(router, deps, {
     startBrief,
     makePerson,
+    requirePassword: (given) => requirePassword(deps.db, given),
     readSession: (personId) => readSession(deps.db, { personId, at: deps.now() }),
   });
   return router;

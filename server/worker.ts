@@ -4,6 +4,10 @@ import { judgeStoredYear } from './features/runs/judge-year.ts';
 import { queueMissingRuns } from './features/runs/queue-runs.ts';
 import { queueMissingSiteRuns } from './features/runs/queue-site-runs.ts';
 import { standardZoneAt } from './features/stations/standard-zone-at.ts';
+import { endTeam, queueDueDeletions } from './features/teams/end-team.ts';
+import { setExportFailed } from './features/teams/export-store.ts';
+import { makeExport } from './features/teams/make-export.ts';
+import { removeExpiredExports } from './features/teams/remove-expired-exports.ts';
 import {
   clearJudgingFailure,
   noteJudgingFailure,
@@ -34,6 +38,7 @@ export interface WorkerOptions {
 
 const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 const LOOK_FOR_FINISHED_EVERY_MS = 30_000;
+const LOOK_FOR_ENDED_EVERY_MS = 300_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
@@ -72,6 +77,15 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
           // The mail itself says what failed last.
           dead: async () => undefined,
         },
+        'export-team': {
+          run: (key) => makeExport({ db, storage, publicUrl }, key, new Date()),
+          dead: (key) => setExportFailed(db, key),
+        },
+        'end-team': {
+          run: (key) => endTeam({ db, storage, publicUrl }, key, new Date()),
+          // It is due still, and queued again.
+          dead: async () => undefined,
+        },
       },
     });
     const looking = repeat({
@@ -86,9 +100,19 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
       log,
       work: () => tellFinishedImports({ db, publicUrl }, new Date()),
     });
+    const ending = repeat({
+      everyMs: LOOK_FOR_ENDED_EVERY_MS,
+      what: 'looking for exports and teams whose time is over',
+      log,
+      work: async () => {
+        await removeExpiredExports({ db, storage }, new Date());
+        await queueDueDeletions(db);
+      },
+    });
     return {
       async close() {
         await looking.stop();
+        await ending.stop();
         await telling.stop();
         await jobs.close();
         mailer?.close();

@@ -9,16 +9,23 @@ import { CouldNotRun } from './could-not-run.ts';
 import { type Home, homePath, openHome } from './home.ts';
 import { takeHome } from './home-lock.ts';
 
-const DATABASE = 'muslin';
+/** The name of the one database of a home. */
+export const DATABASE = 'muslin';
+
+/** The database of MUSLIN_HOME while it runs. */
+export interface OpenHome {
+  readonly home: Home;
+  readonly port: number;
+}
 
 /**
- * Works on the database of MUSLIN_HOME as the application. One that runs, under `npm start`, is left running; one that is
- * down is started for the work and stopped after it, and nobody else can start on that home meanwhile.
+ * Works on the cluster of MUSLIN_HOME. One that runs, under `npm start`, is left running; one that is down is started for the work and
+ * stopped after it, and nobody else can start on that home meanwhile.
  * @throws CouldNotRun where there is no home with a database, or it does not answer
  */
-export async function withHomeDatabase<T>(
+export async function withHomeCluster<T>(
   { rootDir, callerDir }: Pick<CommandContext, 'rootDir' | 'callerDir'>,
-  work: (db: Knex) => Promise<T>,
+  work: (open: OpenHome) => Promise<T>,
 ): Promise<T> {
   const dir = homePath({ rootDir, callerDir, named: process.env.MUSLIN_HOME ?? '' });
   // A command that looks something up makes no home where there is none.
@@ -27,15 +34,27 @@ export async function withHomeDatabase<T>(
   }
   const home = openHome(dir);
   const status = clusterStatus(home.dir);
-  if (status.state === 'running') return await withConnection(home, { port: status.port, work });
+  return status.state === 'running' ? await work({ home, port: status.port }) : await withStartedCluster(home, work);
+}
+
+/** Starts the cluster of a home for the work, making it at first, and stops it after it. @throws CouldNotRun while somebody is there */
+export async function withStartedCluster<T>(home: Home, work: (open: OpenHome) => Promise<T>): Promise<T> {
   const lock = takeHome({ dir: home.dir, lockFile: home.lockFile, address: 'a muslin command works on its database' });
   try {
     const { port } = await startCluster({ homeDir: home.dir, superuserPassword: home.secrets.superuserPassword });
-    return await withConnection(home, { port, work });
+    return await work({ home, port });
   } finally {
     await stopCluster(home.dir);
     lock.giveBack();
   }
+}
+
+/** Works on the database of MUSLIN_HOME as the application: see `withHomeCluster`. */
+export async function withHomeDatabase<T>(
+  context: Pick<CommandContext, 'rootDir' | 'callerDir'>,
+  work: (db: Knex) => Promise<T>,
+): Promise<T> {
+  return await withHomeCluster(context, ({ home, port }) => withConnection(home, { port, work }));
 }
 
 async function withConnection<T>(

@@ -13,6 +13,8 @@ export interface JobPayloads {
   };
   'queue-site-runs': { readonly teamId: string; readonly programmeId: string };
   'send-mail': { readonly mailId: string };
+  'export-team': { readonly teamId: string; readonly exportId: string };
+  'end-team': { readonly teamId: string };
 }
 export type JobName = keyof JobPayloads;
 
@@ -57,6 +59,8 @@ const payloadKeys: { readonly [N in JobName]: readonly (keyof JobPayloads[N])[] 
   'judge-year': ['teamId', 'weatherYearId', 'briefVersionId'],
   'queue-site-runs': ['teamId', 'programmeId'],
   'send-mail': ['mailId'],
+  'export-team': ['teamId', 'exportId'],
+  'end-team': ['teamId'],
 };
 
 /** The payload of a job out of the queue. @throws TypeError when it is not one that `addJob` writes */

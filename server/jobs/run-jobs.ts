@@ -176,6 +176,8 @@ function taskList(options: TaskListOptions): TaskList {
     'judge-year': worked('judge-year', tasks['judge-year']),
     'queue-site-runs': worked('queue-site-runs', tasks['queue-site-runs']),
     'send-mail': worked('send-mail', tasks['send-mail']),
+    'export-team': worked('export-team', tasks['export-team']),
+    'end-team': worked('end-team', tasks['end-team']),
   };
   return list;
 }
@@ -222,6 +224,10 @@ async function bury(
         return await tasks['queue-site-runs'].dead(payloadOf('queue-site-runs', job.payload), 'tries');
       case 'send-mail':
         return await tasks['send-mail'].dead(payloadOf('send-mail', job.payload), 'tries');
+      case 'export-team':
+        return await tasks['export-team'].dead(payloadOf('export-team', job.payload), 'tries');
+      case 'end-team':
+        return await tasks['end-team'].dead(payloadOf('end-team', job.payload), 'tries');
     }
   } catch (error) {
     log.error({ error, task: job.task_identifier }, 'a job that failed for good could not be written down');

@@ -125,6 +125,10 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('../features/teams/mails/mails-page.tsx')).MailsPage }),
               },
               {
+                path: paths.teamData.pattern,
+                lazy: async () => ({ Component: (await import('../features/teams/data/data-page.tsx')).DataPage }),
+              },
+              {
                 path: paths.tokens.pattern,
                 lazy: async () => ({
                   Component: (await import('../features/teams/tokens/tokens-page.tsx')).TokensPage,

@@ -1,5 +1,9 @@
 import { type ReactNode, useEffect, useState } from 'react';
+import { Link } from 'react-router-dom';
+import type { Membership } from '../contract/accounts.ts';
 import type { StreamState } from '../lib/api-client.ts';
+import { moment } from '../lib/format.ts';
+import { paths } from '../lib/paths.ts';
 import { TopBar, type TopBarProps } from './top-bar.tsx';
 
 interface ShellProps extends TopBarProps {
@@ -22,10 +26,26 @@ export function Shell({ person, team, memberships, stream, children }: ShellProp
         <p className="hidden text-fine print:block">{team.teamName}, invented places and weather</p>
       ) : null}
       <StreamNote stream={stream} />
+      <DeletionNote team={team} />
       <main id="page" tabIndex={-1} className="flex min-h-0 flex-1 flex-col outline-none">
         {children}
       </main>
     </div>
+  );
+}
+
+/** On every page while the team waits for its end, so that nobody is taken by surprise. */
+function DeletionNote({ team: { teamId, teamName, role, deletedAt } }: { team: Membership }) {
+  if (deletedAt === undefined) return null;
+  return (
+    <p className="no-print border-b border-line border-l-3 border-l-weld bg-paper px-5 py-1.5 text-fine max-sm:px-4">
+      {teamName} will be deleted on {moment(deletedAt)}.{' '}
+      {role === 'lead' ? (
+        <Link to={paths.teamData.to(teamId)}>Keep it, or make an export</Link>
+      ) : (
+        'Its leads can stop this.'
+      )}
+    </p>
   );
 }
 

@@ -42,6 +42,8 @@ export const Membership = z.object({
   /** Demo teams: every screen says "invented places and weather". */
   invented: z.boolean(),
   programmes: z.array(z.object({ id: z.uuid(), name: z.string() })),
+  /** When the team and all that it has will be deleted, while that waits. */
+  deletedAt: z.optional(z.iso.datetime()),
 });
 export type Membership = z.infer<typeof Membership>;
 

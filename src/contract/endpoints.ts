@@ -27,6 +27,7 @@ import * as siteRecord from './site-record.ts';
 import * as sites from './sites.ts';
 import * as stations from './stations.ts';
 import * as surface from './surface.ts';
+import * as data from './team-data.ts';
 import * as events from './team-events.ts';
 import * as tokens from './tokens.ts';
 import * as weather from './weather.ts';
@@ -77,6 +78,12 @@ export const endpoints = {
   renameProgramme: programmes.renameProgramme,
   setProgrammeMembers: programmes.setProgrammeMembers,
   listMails: mails.listMails,
+  listExports: data.listExports,
+  askExport: data.askExport,
+  getExport: data.getExport,
+  getDeletion: data.getDeletion,
+  askDeletion: data.askDeletion,
+  stopDeletion: data.stopDeletion,
   listWeatherFiles: library.listWeatherFiles,
   uploadWeatherFile: weather.uploadWeatherFile,
   getWeatherFile: weather.getWeatherFile,

@@ -2,7 +2,16 @@ import * as z from 'zod/mini';
 import { empty, endpoint, json, none, ordinary } from './endpoint.ts';
 
 /** What a person is told of, in the application and by mail; each kind on or off per person. */
-export const noticeKinds = ['invitation', 'reset', 'review asked', 'signed off', 'comment', 'import finished'] as const;
+export const noticeKinds = [
+  'invitation',
+  'reset',
+  'review asked',
+  'signed off',
+  'comment',
+  'import finished',
+  'export ready',
+  'team deletion',
+] as const;
 export const NoticeKind = z.enum(noticeKinds);
 export type NoticeKind = z.infer<typeof NoticeKind>;
 

@@ -22,6 +22,7 @@ export const policyNames = [
   'teams.people',
   'teams.programmes',
   'teams.tokens',
+  'teams.data',
   'method.view',
 ] as const;
 

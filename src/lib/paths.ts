@@ -101,6 +101,7 @@ export const paths = {
   programmes: { pattern: 'team/programmes', to: (teamId: string) => `/teams/${teamId}/team/programmes` },
   mails: { pattern: 'team/mails', to: (teamId: string) => `/teams/${teamId}/team/mails` },
   tokens: { pattern: 'team/tokens', to: (teamId: string) => `/teams/${teamId}/team/tokens` },
+  teamData: { pattern: 'team/data', to: (teamId: string) => `/teams/${teamId}/team/data` },
   method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;

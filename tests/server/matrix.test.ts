@@ -98,6 +98,14 @@ const matrix: Record<EndpointName, readonly number[]> = {
   renameProgramme: plannersToo,
   setProgrammeMembers: leadOnly,
   listMails: leadOnly,
+  listExports: leadOnly,
+  askExport: leadOnly,
+  // Its time is over.
+  getExport: [403, 403, 403, 410, ...strangers, 403, 403],
+  getDeletion: leadOnly,
+  // With a name that is not the team's, and so nothing to stop.
+  askDeletion: [403, 403, 403, 400, ...strangers, 403, 403],
+  stopDeletion: [403, 403, 403, 409, ...strangers, 403, 403],
   listWeatherFiles: readersToo,
   uploadWeatherFile: uploadersOnly,
   getWeatherFile: readersToo,
@@ -247,6 +255,7 @@ const bodiesOfPeople: Partial<Record<EndpointName, (caller: Caller) => unknown>>
   makeProgramme: (caller) => ({ name: `Programme of ${caller}` }),
   renameProgramme: () => ({ name: 'Ours' }),
   setProgrammeMembers: () => ({ restricted: false, memberIds: [] }),
+  askDeletion: () => ({ name: 'Not ours', password: PASSWORD }),
 };
 
 function bodyOf(name: EndpointName, caller: Caller): FormData | string | null {
@@ -445,6 +454,11 @@ beforeAll(async () => {
     })
   ).json();
   ids = { ...ids, invitationId: invited.id };
+  const over = await road.db.raw<{ rows: { id: string }[] }>(
+    `insert into team_exports (team_id, state, asked_by, asked_at) values (?, 'over', ?, now()) returning id`,
+    [ours.teamId, spare],
+  );
+  ids = { ...ids, exportId: over.rows[0]?.id ?? '' };
   ids = { ...ids, batchId: batch.id, archiveId: sent.archive.id };
   ids = { ...ids, placeKind: 'stations', placeId: stationId };
   ids = { ...ids, rule: 'step', siteId: site.id, duty: 'noise', importId: table.id };

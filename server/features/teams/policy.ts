@@ -1,9 +1,10 @@
 import { everyRole, memberOf, type Policy } from '../../http/policy.ts';
 
-/** The lead runs the team: people, and the tokens that let programs in. Whoever shapes briefs makes programmes for them. */
+/** The lead runs the team: people, the tokens that let programs in, and what becomes of all that the team has. Whoever shapes briefs makes programmes for them. */
 export const teamsPolicy = {
   'teams.view': memberOf(everyRole),
   'teams.people': memberOf(['lead']),
   'teams.programmes': memberOf(['planner', 'engineer', 'lead']),
   'teams.tokens': memberOf(['lead']),
+  'teams.data': memberOf(['lead']),
 } satisfies Record<string, Policy>;

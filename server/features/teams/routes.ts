@@ -8,6 +8,7 @@ import { mount } from '../../http/mount.ts';
 import { personOf } from '../../http/person-of.ts';
 import type { RequestContext } from '../../http/request-context.ts';
 import type { AcceptParts } from './accept-invitation.ts';
+import { type DataParts, dataRoutes } from './data-routes.ts';
 import { invitationRoutes } from './invitation-routes.ts';
 import { listWaitingMails } from './mail-read-model.ts';
 import type { TeamParts } from './make-team.ts';
@@ -19,7 +20,7 @@ import { revokeToken } from './revoke-token.ts';
 import { findTokenView, listTokenViews } from './token-read-model.ts';
 
 /** What teams need of other features, handed in where the server is wired. */
-export interface TeamsParts extends TeamParts, AcceptParts {
+export interface TeamsParts extends TeamParts, AcceptParts, DataParts {
   readSession(personId: string): Promise<Session>;
 }
 
@@ -54,4 +55,5 @@ export function teamsRoutes(router: Router, deps: Deps, parts: TeamsParts): void
   memberRoutes(router, deps, parts);
   invitationRoutes(router, deps, parts);
   programmeRoutes(router, deps, parts);
+  dataRoutes(router, deps, parts);
 }

@@ -17,8 +17,10 @@ const STANDS = '(memberships.ends_at is null or memberships.ends_at > :at)';
 
 /** The person's teams, each with the person's role and the programmes that are open to the person, by name. */
 export async function listMemberships(db: Knex, key: { personId: string; at: Date }): Promise<Membership[]> {
-  const { rows } = await db.raw<{ rows: Membership[] }>(
+  const { rows } = await db.raw<{ rows: (Omit<Membership, 'deletedAt'> & { deletedAt: Date | null })[] }>(
     `select teams.id as "teamId", teams.name as "teamName", memberships.role, teams.invented,
+       (select team_deletions.ends_at from team_deletions where team_deletions.team_id = teams.id
+          and team_deletions.stopped_at is null and team_deletions.ended_at is null) as "deletedAt",
        coalesce(
          (select json_agg(json_build_object('id', programmes.id, 'name', programmes.name) order by programmes.name, programmes.id)
           from programmes where programmes.team_id = teams.id and ${OPEN_PROGRAMME}),
@@ -29,7 +31,10 @@ export async function listMemberships(db: Knex, key: { personId: string; at: Dat
      order by teams.name, teams.id`,
     key,
   );
-  return rows;
+  return rows.map(({ deletedAt, ...membership }) => ({
+    ...membership,
+    ...(deletedAt === null ? {} : { deletedAt: deletedAt.toISOString() }),
+  }));
 }
 
 /** What a person is in which teams, and what is closed to the person there; `null` when there is no such person. */

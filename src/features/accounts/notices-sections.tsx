@@ -54,6 +54,8 @@ const kindWords: Readonly<Record<NoticeKind, string>> = {
   'signed off': 'A sheet of yours was signed off',
   comment: 'Somebody comments on your sheet',
   'import finished': 'An import of yours has finished',
+  'export ready': 'An export of a team that you asked for is ready',
+  'team deletion': 'A team that you lead is to be deleted, or is kept after all',
 };
 
 /** Which of them the person wants. */

@@ -42,6 +42,8 @@ async function startWith(reading: {
     'judge-year': { run: nothing, dead: nothing },
     'queue-site-runs': { run: nothing, dead: nothing },
     'send-mail': { run: nothing, dead: nothing },
+    'export-team': { run: nothing, dead: nothing },
+    'end-team': { run: nothing, dead: nothing },
   };
   worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
 }

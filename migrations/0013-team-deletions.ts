@@ -1,0 +1,83 @@
+/**
+ * Deletion of a team after a time in which any of its leads can stop it. The application may delete neither runs nor versions of briefs;
+ * a function of the owner does, and only for a team whose time is over. The row of the team and its audit events stay, so that the
+ * trail still says what happened.
+ */
+import type { Knex } from 'knex';
+
+export async function up(knex: Knex): Promise<void> {
+  await knex.raw(`
+    create table team_deletions (
+      id uuid primary key default gen_random_uuid(),
+      team_id uuid not null references teams (id),
+      team_name text not null,
+      asked_by uuid not null references people (id),
+      asked_at timestamptz not null,
+      ends_at timestamptz not null check (ends_at > asked_at),
+      stopped_by uuid references people (id),
+      stopped_at timestamptz,
+      ended_at timestamptz,
+      -- Keys of the store that nobody else's rows named when the team ended; null when all of them have been seen to.
+      originals jsonb,
+      check ((stopped_by is null) = (stopped_at is null)),
+      check (stopped_at is null or ended_at is null)
+    );
+    create unique index team_deletions_open on team_deletions (team_id) where stopped_at is null;
+    create index team_deletions_due on team_deletions (ends_at) where stopped_at is null and ended_at is null;
+    grant select, insert, update on team_deletions to muslin_app;
+
+    alter table teams add column ended_at timestamptz;
+
+    -- Tables are found by their team_id, and emptied before those that they point to: one that is added later is not forgotten.
+    create function end_team(ending uuid) returns void
+    language plpgsql security definer set search_path = pg_catalog, public, pg_temp as $body$
+    declare
+      left_over text[];
+      emptied text;
+    begin
+      perform 1 from public.team_deletions
+      where team_id = ending and stopped_at is null and ended_at is null and ends_at <= now() for update;
+      if not found then
+        raise exception 'the time of team % is not over', ending using errcode = 'insufficient_privilege';
+      end if;
+      update public.team_deletions set ended_at = now(), originals = (
+        select coalesce(jsonb_agg(distinct held.key), '[]') from (
+          select storage_key as key from public.weather_files where team_id = ending
+          union select storage_key from public.weather_archives where team_id = ending
+          union select storage_key from public.team_exports where team_id = ending and storage_key is not null
+        ) as held)
+      where team_id = ending and stopped_at is null and ended_at is null;
+
+      select array_agg(columns.table_name::text) into left_over
+      from information_schema.columns
+      join information_schema.tables using (table_schema, table_name)
+      where columns.table_schema = 'public' and columns.column_name = 'team_id' and tables.table_type = 'BASE TABLE'
+        and columns.table_name not in ('audit_events', 'team_deletions');
+      while cardinality(left_over) > 0 loop
+        select each into emptied from unnest(left_over) as each
+        where not exists (
+          select 1 from pg_constraint
+          where contype = 'f' and confrelid = format('public.%I', each)::regclass and conrelid <> confrelid
+            and conrelid::regclass in (select format('public.%I', other)::regclass from unnest(left_over) as other))
+        limit 1;
+        if emptied is null then
+          raise exception 'tables point at one another: %', left_over;
+        end if;
+        execute format('delete from public.%I where team_id = $1', emptied) using ending;
+        left_over := array_remove(left_over, emptied);
+      end loop;
+      update public.teams set ended_at = now() where id = ending;
+    end
+    $body$;
+    revoke execute on function end_team(uuid) from public;
+    grant execute on function end_team(uuid) to muslin_app;
+  `);
+}
+
+export async function down(knex: Knex): Promise<void> {
+  await knex.raw(`
+    drop function end_team(uuid);
+    alter table teams drop column ended_at;
+    drop table team_deletions;
+  `);
+}
