@@ -9,6 +9,7 @@ import * as sites from './0006-sites.ts';
 import * as runFigures from './0007-run-figures.ts';
 import * as gazetteer from './0008-gazetteer.ts';
 import * as accounts from './0009-accounts.ts';
+import * as auditChain from './0010-audit-chain.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
@@ -20,6 +21,7 @@ const migrations = {
   '0007-run-figures': runFigures,
   '0008-gazetteer': gazetteer,
   '0009-accounts': accounts,
+  '0010-audit-chain': auditChain,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;

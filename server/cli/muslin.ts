@@ -8,6 +8,7 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
   hours FILE --brief PRESET      the same hour by hour, as CSV: weather, class, stage, supply, room, water, reason, line
   rerun ID                       judge a stored run of MUSLIN_HOME again: the same to the byte or not
   outbox                         print the mails of MUSLIN_HOME that have not gone out, with the keys in them
+  audit verify [KEPT]            every hash of the audit trail anew; the first row that is not as it was written
   bench NAMES                    time the product against the plain way of doing the same
 
 Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H for a file that does not say where it was recorded,
@@ -15,7 +16,7 @@ Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H f
 {"place": {…}, "mapping": {…}, "answers": {"pressure-sea-level": "convert", …}}, by the codes that a file asks with.
 
 One JSON line per result on standard output, of hours a table. Exit codes: 0 done, 1 a file was refused (or is in doubt
-under --strict) or a run is not the same, 2 wrong use, 3 could not run.`;
+under --strict), a run is not the same or the audit trail is not whole, 2 wrong use, 3 could not run.`;
 
 /** Each command's module is loaded when it is asked for, so that none waits for what another needs. */
 const commands: Readonly<Record<string, (context: CommandContext) => Promise<ExitCode>>> = {
@@ -24,6 +25,7 @@ const commands: Readonly<Record<string, (context: CommandContext) => Promise<Exi
   hours: async (context) => (await import('./commands/hours.ts')).hours(context),
   rerun: async (context) => (await import('./commands/rerun.ts')).rerun(context),
   outbox: async (context) => (await import('./commands/outbox.ts')).outbox(context),
+  audit: async (context) => (await import('./commands/audit.ts')).audit(context),
   bench: async (context) => (await import('./commands/bench.ts')).bench(context),
 };
 

@@ -22,6 +22,7 @@ export const policyNames = [
   'teams.people',
   'teams.programmes',
   'teams.tokens',
+  'audit.view',
   'method.view',
 ] as const;
 
