@@ -10,6 +10,7 @@ import { makePerson } from './features/accounts/make-person.ts';
 import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { readSession } from './features/accounts/read-session.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
+import { auditRoutes } from './features/audit/routes.ts';
 import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
@@ -105,6 +106,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   });
   placesRoutes(router, deps);
   methodRoutes(router, deps);
+  auditRoutes(router, deps);
   teamsRoutes(router, deps, {
     startBrief,
     makePerson,

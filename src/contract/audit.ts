@@ -100,7 +100,7 @@ const downloading = { ...ordinary, perMinute: 20, seconds: 300 };
 
 export const exportAuditCsv = endpoint({
   method: 'GET',
-  path: '/api/teams/:teamId/audit-events/csv',
+  path: '/api/teams/:teamId/audit-events.csv',
   summary: "The team's audit trail as CSV, filtered, oldest first.",
   params: TeamParams,
   query: AuditFilter,
@@ -113,7 +113,7 @@ export const exportAuditCsv = endpoint({
 
 export const exportAuditJson = endpoint({
   method: 'GET',
-  path: '/api/teams/:teamId/audit-events/json',
+  path: '/api/teams/:teamId/audit-events.json',
   summary: "The team's audit trail as JSON with every hash, filtered, oldest first.",
   params: TeamParams,
   query: AuditFilter,

@@ -31,7 +31,8 @@ export async function audit(context: CommandContext): Promise<ExitCode> {
     }
     return count;
   });
-  if (brokenChains === 0) say('Every chain of the audit trail is whole. Keep these lines elsewhere to hold it to them.');
+  if (brokenChains === 0)
+    say('Every chain of the audit trail is whole. Keep these lines elsewhere to hold it to them.');
   else say(`${brokenChains} of the chains of the audit trail ${brokenChains === 1 ? 'is' : 'are'} broken.`);
   return brokenChains === 0 ? 0 : 1;
 }
