@@ -21,6 +21,7 @@ export const policyNames = [
   'teams.view',
   'teams.people',
   'teams.programmes',
+  'teams.programmes.view',
   'teams.tokens',
   'audit.view',
   'method.view',
