@@ -131,6 +131,10 @@ const routes: RouteObject[] = [
                 }),
               },
               {
+                path: paths.audit.pattern,
+                lazy: async () => ({ Component: (await import('./pages/audit/audit-page.tsx')).AuditPage }),
+              },
+              {
                 path: paths.method.pattern,
                 lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },

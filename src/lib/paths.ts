@@ -101,6 +101,7 @@ export const paths = {
   programmes: { pattern: 'team/programmes', to: (teamId: string) => `/teams/${teamId}/team/programmes` },
   mails: { pattern: 'team/mails', to: (teamId: string) => `/teams/${teamId}/team/mails` },
   tokens: { pattern: 'team/tokens', to: (teamId: string) => `/teams/${teamId}/team/tokens` },
+  audit: { pattern: 'team/audit', to: (teamId: string) => `/teams/${teamId}/team/audit` },
   method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;

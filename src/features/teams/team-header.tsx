@@ -4,7 +4,7 @@ import { PageTitle } from '../../lib/page-title.tsx';
 import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 
-/** The head of every page about the team itself, with the way to the others; leads have two more. */
+/** The head of every page about the team itself, with the way to the others; leads have three more. */
 export function TeamHeader({ title, children }: { title: string; children?: ReactNode }) {
   const { teamId, role } = useTeam();
   const links = [
@@ -14,6 +14,7 @@ export function TeamHeader({ title, children }: { title: string; children?: Reac
       ? [
           { to: paths.tokens.to(teamId), label: 'API tokens' },
           { to: paths.mails.to(teamId), label: 'Mails' },
+          { to: paths.audit.to(teamId), label: 'Audit trail' },
         ]
       : []),
   ];
