@@ -32,6 +32,7 @@ import { findStanding } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
 import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
+import { apiRoute } from './http/api-route.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
 import { errorHandler, nothingHere } from './http/errors.ts';
@@ -107,6 +108,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   placesRoutes(router, deps);
   methodRoutes(router, deps);
   auditRoutes(router, deps);
+  apiRoute(router, deps);
   teamsRoutes(router, deps, {
     startBrief,
     makePerson,

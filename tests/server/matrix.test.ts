@@ -204,6 +204,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   revokeToken: leadOnly,
   // About no team: every person who is signed in.
   getMethodChecks: signedInOnly,
+  getApiDescription: anyone(200),
   listAuditEvents: leadOnly,
   exportAuditCsv: leadOnly,
   exportAuditJson: leadOnly,

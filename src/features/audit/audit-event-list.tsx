@@ -4,7 +4,7 @@ import { moment, number } from '../../lib/format.ts';
 import { aboutWords, actWords, subjectLines } from './audit-words.ts';
 
 const columns =
-  'grid grid-cols-[minmax(0,1fr)] gap-x-5 sm:grid-cols-[10.5rem_minmax(0,10rem)_minmax(0,14rem)_minmax(0,1fr)]';
+  'grid grid-cols-[minmax(0,1fr)] gap-x-5 sm:grid-cols-[10rem_minmax(0,8.5rem)_minmax(0,13rem)_minmax(0,1fr)]';
 
 /** Who did what to what, newest first; everything that was written down of an act unfolds under it. */
 export function AuditEventList({ items, teamId }: { items: readonly AuditEvent[]; teamId: string }) {
@@ -51,7 +51,7 @@ function Details({ event }: { event: AuditEvent }) {
   return (
     <details className="text-fine">
       <summary className="w-fit cursor-pointer text-soft">
-        Everything written down<span className="sr-only"> of event {number(event.position)}</span>
+        Details<span className="sr-only"> of event {number(event.position)}</span>
       </summary>
       <dl className="my-1 grid grid-cols-[minmax(0,1fr)] gap-x-4 sm:grid-cols-[minmax(6rem,max-content)_minmax(0,1fr)]">
         {lines.map(({ label, text }) => (

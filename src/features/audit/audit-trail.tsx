@@ -59,10 +59,14 @@ function ChainState(props: { chain: { events: number; hash: string } | null; tea
           'Nothing has been written down yet.'
         ) : (
           <>
-            {plural(chain.events, 'event')}, each bound to the one before it. The last is{' '}
-            <span className="font-mono text-fine">{shortFingerprint(chain.hash)}</span>{' '}
-            <CopyButton text={chain.hash} what="the hash of the last event" />. Whoever runs this server verifies the
-            chain with “muslin audit verify”.
+            {plural(chain.events, 'event')}, each bound to the one before it. Whoever runs this server verifies that
+            with “muslin audit verify”.
+            <span className="block">
+              Hash of the last event: <span className="font-mono text-fine">{shortFingerprint(chain.hash)}</span>{' '}
+              <span className="no-print">
+                <CopyButton text={chain.hash} what="the hash of the last event" />
+              </span>
+            </span>
           </>
         )}
       </p>
