@@ -135,6 +135,10 @@ const routes: RouteObject[] = [
                 lazy: async () => ({ Component: (await import('./pages/audit/audit-page.tsx')).AuditPage }),
               },
               {
+                path: paths.api.pattern,
+                lazy: async () => ({ Component: (await import('./pages/api/api-page.tsx')).ApiPage }),
+              },
+              {
                 path: paths.method.pattern,
                 lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },

@@ -51,7 +51,6 @@ export function AuditTrail({ teamId }: { teamId: string }) {
 function ChainState(props: { chain: { events: number; hash: string } | null; teamId: string; view: AuditView }) {
   const { chain, teamId, view } = props;
   const asked = { params: { teamId }, query: view.filter };
-  const what = isNarrowed(view) ? 'these events' : 'the trail';
   return (
     <div className="flex flex-wrap items-end justify-between gap-4">
       <p className="max-w-[62ch]">
@@ -72,10 +71,10 @@ function ChainState(props: { chain: { events: number; hash: string } | null; tea
       </p>
       <div className="no-print flex flex-wrap gap-3">
         <a href={urlOf(exportAuditCsv, asked)} download className={buttonLook('plain')}>
-          Take {what} along as CSV
+          Download as CSV
         </a>
         <a href={urlOf(exportAuditJson, asked)} download className={buttonLook('plain')}>
-          As JSON, with every hash
+          Download as JSON, with every hash
         </a>
       </div>
     </div>

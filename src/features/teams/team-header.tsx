@@ -17,6 +17,7 @@ export function TeamHeader({ title, children }: { title: string; children?: Reac
           { to: paths.audit.to(teamId), label: 'Audit trail' },
         ]
       : []),
+    { to: paths.api.to(teamId), label: 'API' },
   ];
   return (
     <header>
