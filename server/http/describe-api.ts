@@ -155,7 +155,7 @@ function faultsOf(endpoint: Endpoint, access: Access): ApiOperation['responses']
   const responses: ApiOperation['responses'] = {};
   for (const status of statuses) {
     const some = codes.filter((code) => errorStatus[code] === status);
-    const description = some.map((code) => `${code}: ${errorWords[code]}`).join(' ');
+    const description = some.map((code) => `${code}: ${errorWords[code]}`).join('\n');
     const schema = {
       allOf: [{ $ref: '#/components/schemas/Error' }],
       properties: { code: { enum: some } },

@@ -367,10 +367,22 @@ async function answerTo(
     signal: ending.signal,
   });
   const { status } = response;
+  expectSafe(endpoint, response);
   // A download that is cut off may be cut off before it is written down.
   if (endpoint.response.kind === 'file' && status === 200) await response.arrayBuffer();
   ending.abort();
   return { status, requestId: response.headers.get('x-request-id') ?? '' };
+}
+
+/** Nobody keeps an answer, guesses at its type or shows a download as a page, whoever is answered and whatever. */
+function expectSafe(endpoint: Endpoint, { status, headers }: Response): void {
+  expect(headers.get('cache-control')).toMatch(/^no-store\b/);
+  expect(headers.get('x-content-type-options')).toBe('nosniff');
+  expect(headers.get('content-security-policy')).toContain("default-src 'none'");
+  expect(headers.get('x-request-id')).toMatch(/^[0-9a-f-]{36}$/);
+  if (endpoint.response.kind !== 'file' || status !== 200) return;
+  expect(headers.get('content-type')).toBe(endpoint.response.mediaType);
+  if (endpoint.response.attachment) expect(headers.get('content-disposition')).toMatch(/^attachment; filename/);
 }
 
 /** Of these requests, those that have left something in the audit trail. */

@@ -111,7 +111,7 @@ function Operation(described: DescribedOperation) {
   const [isOpen, setOpen] = useState(false);
   return (
     <details onToggle={({ currentTarget }) => setOpen(currentTarget.open)}>
-      <summary className="grid cursor-pointer list-none grid-cols-[4rem_minmax(0,1fr)] gap-x-3 py-2 hover:bg-shade">
+      <summary className="grid cursor-pointer list-none grid-cols-[3.5rem_minmax(0,1fr)] gap-x-3 py-2 hover:bg-shade">
         <span className="font-mono text-fine leading-[inherit] font-semibold">{method.toUpperCase()}</span>
         <span>
           <span className="font-mono text-fine leading-[inherit] [overflow-wrap:anywhere]">{shortPath(path)}</span>

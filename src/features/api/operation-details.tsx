@@ -25,7 +25,7 @@ export function OperationDetails({ path, method, operation }: DescribedOperation
   const isForPrograms = operation['x-muslin-access'].scopes.length > 0;
   const line = curlLine({ origin: window.location.origin, method, path, operation, own: { teamId } });
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] gap-4 pt-2 pb-5 sm:pl-[4.75rem]">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4 pt-2 pb-5 sm:pl-[4.25rem]">
       <p className="max-w-[70ch]">
         {accessWords(operation)} {limitSentence(operation)}
       </p>
@@ -112,7 +112,7 @@ function Faults({ responses }: Pick<ApiOperation, 'responses'>) {
         {faults.map(([status, { description }]) => (
           <li key={status} className="grid grid-cols-[2.75rem_minmax(0,1fr)]">
             <span className="font-mono text-fine leading-[inherit]">{status}</span>
-            <span className="text-soft">{description}</span>
+            <span className="whitespace-pre-line text-soft">{description}</span>
           </li>
         ))}
       </ul>

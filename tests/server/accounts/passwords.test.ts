@@ -55,6 +55,30 @@ describe('a new password', () => {
     expect(await actsOf(id)).toEqual(expect.arrayContaining(['password reset asked', 'password reset']));
   });
 
+  test('is set once by a link that several use at the same moment', async () => {
+    const { email } = await person();
+    await web.browser().post('/api/password-reset/request').send({ email }).expect(204);
+    const key = await lastKeyTo(web.database, email);
+    const answers = await Promise.all(
+      ['one', 'two', 'three'].map((which) =>
+        web
+          .browser()
+          .post('/api/password-reset')
+          .send({ key, password: `four words of kind ${which}` }),
+      ),
+    );
+    expect(answers.map(({ status }) => status).sort()).toEqual([204, 410, 410]);
+  });
+
+  test('comes by a link to where the server is, whatever the request says of that', async () => {
+    const { email } = await person();
+    const lying = { Host: 'evil.example', 'X-Forwarded-Host': 'evil.example', Origin: 'http://evil.example' };
+    await web.browser().post('/api/password-reset/request').set(lying).send({ email }).expect(204);
+    const [mail] = await mailsTo(web.database, email);
+    expect(mail?.text).toContain('https://muslin.example/');
+    expect(JSON.stringify(mail)).not.toContain('evil.example');
+  });
+
   test('is offered in the same words to an address without an account, which gets no mail', async () => {
     const unknown = await web.browser().post('/api/password-reset/request').send({ email: 'nobody@example.org' });
     const known = await web
