@@ -36,8 +36,9 @@ export async function up(knex: Knex): Promise<void> {
       ) as text), 'UTF8')), 'hex')
     $$;
 
-    -- Chains what the running transaction has written; whatever else may stand there without a hash was not written this way.
-    create function chain_audit_events() returns void language plpgsql security definer set search_path = public, pg_temp as $$
+    -- Chains what the running transaction has written, from its first event on, so that no commit looks through those before it;
+    -- whatever else may stand there without a hash was not written this way.
+    create function chain_audit_events(first_id bigint) returns void language plpgsql security definer set search_path = public, pg_temp as $$
     declare
       the_chain uuid;
       head audit_chains;
@@ -45,7 +46,7 @@ export async function up(knex: Knex): Promise<void> {
     begin
       for the_chain in
         select distinct coalesce(team_id, '00000000-0000-0000-0000-000000000000') as chain from audit_events
-        where hash is null and transaction_id = pg_current_xact_id() order by chain
+        where id >= first_id and hash is null and transaction_id = pg_current_xact_id() order by chain
       loop
         insert into audit_chains (chain, team_id, events, hash)
         values (the_chain, nullif(the_chain, '00000000-0000-0000-0000-000000000000'), 0, repeat('0', 64))
@@ -53,7 +54,7 @@ export async function up(knex: Knex): Promise<void> {
         select * into head from audit_chains where chain = the_chain for update;
         for event in
           select * from audit_events
-          where hash is null and transaction_id = pg_current_xact_id()
+          where id >= first_id and hash is null and transaction_id = pg_current_xact_id()
             and coalesce(team_id, '00000000-0000-0000-0000-000000000000') = the_chain
           order by id
         loop
@@ -74,16 +75,16 @@ export async function up(knex: Knex): Promise<void> {
       set search_path = public, pg_temp as $$
     begin
       if exists (select 1 from audit_events where id = new.id and hash is null) then
-        perform chain_audit_events();
+        perform chain_audit_events(new.id);
       end if;
       return null;
     end
     $$;
 
-    revoke all on function audit_event_hash(audit_events), chain_audit_events(), chain_new_audit_event() from public;
+    revoke all on function audit_event_hash(audit_events), chain_audit_events(bigint), chain_new_audit_event() from public;
 
     -- What stands there already was given the number of this transaction above.
-    select chain_audit_events();
+    select chain_audit_events(0);
 
     create constraint trigger audit_events_chain after insert on audit_events
       deferrable initially deferred for each row execute function chain_new_audit_event();
@@ -97,7 +98,7 @@ export async function up(knex: Knex): Promise<void> {
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
     drop trigger audit_events_chain on audit_events;
-    drop function chain_new_audit_event(), chain_audit_events(), audit_event_hash(audit_events);
+    drop function chain_new_audit_event(), chain_audit_events(bigint), audit_event_hash(audit_events);
     drop table audit_chains;
     drop index audit_events_person;
     alter table audit_events drop column hash, drop column previous_hash, drop column position, drop column transaction_id;

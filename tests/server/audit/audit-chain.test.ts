@@ -103,7 +103,7 @@ describe('the chain of the audit trail', () => {
         [column]: Reflect.get(values, column),
       });
       await expect(insert).rejects.toMatchObject({ code: '42501' }); // insufficient_privilege
-      await expect(database.db.raw('select chain_audit_events()')).rejects.toMatchObject({ code: '42501' });
+      await expect(database.db.raw('select chain_audit_events(0)')).rejects.toMatchObject({ code: '42501' });
       await expect(database.db.raw('update audit_chains set events = 0')).rejects.toMatchObject({ code: '42501' });
     },
   );
