@@ -52,7 +52,7 @@ export async function up(knex: Knex): Promise<void> {
       from information_schema.columns
       join information_schema.tables using (table_schema, table_name)
       where columns.table_schema = 'public' and columns.column_name = 'team_id' and tables.table_type = 'BASE TABLE'
-        and columns.table_name not in ('audit_events', 'team_deletions');
+        and columns.table_name not in ('audit_events', 'audit_chains', 'team_deletions');
       while cardinality(left_over) > 0 loop
         select each into emptied from unnest(left_over) as each
         where not exists (

@@ -9,6 +9,7 @@ import * as sites from './0006-sites.ts';
 import * as runFigures from './0007-run-figures.ts';
 import * as gazetteer from './0008-gazetteer.ts';
 import * as accounts from './0009-accounts.ts';
+import * as auditChain from './0010-audit-chain.ts';
 import * as teamExports from './0012-team-exports.ts';
 import * as teamDeletions from './0013-team-deletions.ts';
 import * as designValues from './0014-design-values.ts';
@@ -23,6 +24,7 @@ const migrations = {
   '0007-run-figures': runFigures,
   '0008-gazetteer': gazetteer,
   '0009-accounts': accounts,
+  '0010-audit-chain': auditChain,
   '0012-team-exports': teamExports,
   '0013-team-deletions': teamDeletions,
   '0014-design-values': designValues,

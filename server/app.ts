@@ -11,6 +11,7 @@ import { makeDummyHash } from './features/accounts/password-hash.ts';
 import { readSession } from './features/accounts/read-session.ts';
 import { requirePassword } from './features/accounts/require-password.ts';
 import { accountsRoutes } from './features/accounts/routes.ts';
+import { auditRoutes } from './features/audit/routes.ts';
 import { readDraft } from './features/briefs/read-draft.ts';
 import { briefsRoutes } from './features/briefs/routes.ts';
 import { startBrief } from './features/briefs/start-brief.ts';
@@ -32,6 +33,7 @@ import { findStanding } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
 import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
+import { apiRoute } from './http/api-route.ts';
 import { authentication, type PeopleLookup } from './http/authenticate.ts';
 import { builtClient } from './http/built-client.ts';
 import { errorHandler, nothingHere } from './http/errors.ts';
@@ -106,6 +108,8 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
   });
   placesRoutes(router, deps);
   methodRoutes(router, deps);
+  auditRoutes(router, deps);
+  apiRoute(router, deps);
   teamsRoutes(router, deps, {
     startBrief,
     makePerson,

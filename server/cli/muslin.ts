@@ -10,6 +10,7 @@ const USAGE = `Use: npm run -s muslin -- COMMAND
   outbox                         print the mails of MUSLIN_HOME that have not gone out, with the keys in them
   backup FILE                    database and original files of MUSLIN_HOME as one archive, while the product runs
   restore FILE [--over]          put a backup into an empty MUSLIN_HOME; with --over in the place of what is there
+  audit verify [KEPT]            every hash of the audit trail anew; the first row that is not as it was written
   bench NAMES                    time the product against the plain way of doing the same
 
 Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H for a file that does not say where it was recorded,
@@ -17,7 +18,7 @@ Every command that reads a file takes --place LAT,LON,ELEVATION_M,UTC_OFFSET_H f
 {"place": {…}, "mapping": {…}, "answers": {"pressure-sea-level": "convert", …}}, by the codes that a file asks with.
 
 One JSON line per result on standard output, of hours a table. Exit codes: 0 done, 1 a file was refused (or is in doubt
-under --strict) a run is not the same or an archive is damaged, 2 wrong use, 3 could not run.`;
+under --strict), a run is not the same, the audit trail is not whole or an archive is damaged, 2 wrong use, 3 could not run.`;
 
 /** Each command's module is loaded when it is asked for, so that none waits for what another needs. */
 const commands: Readonly<Record<string, (context: CommandContext) => Promise<ExitCode>>> = {
@@ -28,6 +29,7 @@ const commands: Readonly<Record<string, (context: CommandContext) => Promise<Exi
   outbox: async (context) => (await import('./commands/outbox.ts')).outbox(context),
   backup: async (context) => (await import('./commands/backup.ts')).backup(context),
   restore: async (context) => (await import('./commands/restore.ts')).restore(context),
+  audit: async (context) => (await import('./commands/audit.ts')).audit(context),
   bench: async (context) => (await import('./commands/bench.ts')).bench(context),
 };
 

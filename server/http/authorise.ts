@@ -1,5 +1,6 @@
 import type { PolicyName } from '#contract/policies.ts';
 import { accountsPolicy } from '../features/accounts/policy.ts';
+import { auditPolicy } from '../features/audit/policy.ts';
 import { briefsPolicy } from '../features/briefs/policy.ts';
 import { methodPolicy } from '../features/method/policy.ts';
 import { runsPolicy } from '../features/runs/policy.ts';
@@ -21,6 +22,7 @@ export const policies: Readonly<Record<PolicyName, Policy>> = {
   ...stationsPolicy,
   ...sitesPolicy,
   ...teamsPolicy,
+  ...auditPolicy,
 };
 
 const refusals = {

@@ -135,6 +135,14 @@ const routes: RouteObject[] = [
                 }),
               },
               {
+                path: paths.audit.pattern,
+                lazy: async () => ({ Component: (await import('./pages/audit/audit-page.tsx')).AuditPage }),
+              },
+              {
+                path: paths.api.pattern,
+                lazy: async () => ({ Component: (await import('./pages/api/api-page.tsx')).ApiPage }),
+              },
+              {
                 path: paths.method.pattern,
                 lazy: async () => ({ Component: (await import('../features/method/method-page.tsx')).MethodPage }),
               },

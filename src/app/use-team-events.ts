@@ -1,6 +1,9 @@
 import { type QueryClient, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
+import { getSession } from '../contract/accounts.ts';
 import { getBriefVersion, listBriefs, listBriefVersions } from '../contract/briefs.ts';
+import { listInvitations } from '../contract/invitations.ts';
+import { listMembers } from '../contract/members.ts';
 import { getSitePlace, getStationPlace } from '../contract/place.ts';
 import { getMap } from '../contract/programme-map.ts';
 import { listSiteImports } from '../contract/site-imports.ts';
@@ -21,6 +24,7 @@ const affected = {
   'weather-file': [listWeatherFiles, getWeatherFile, listWeatherBatches, getWeatherBatch, listStations, getStation],
   'weather-batch': [listWeatherBatches, getWeatherBatch, listWeatherFiles],
   run: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
+  people: [listMembers, listInvitations, getSession],
   sites: [listSites, getSite, listSiteImports, getMap, getSitePlace],
   brief: [getMap, getStationPlace, getSitePlace, listBriefs, listBriefVersions, getBriefVersion],
 } as const satisfies Record<TeamEvent['kind'], readonly { path: string }[]>;
@@ -64,6 +68,7 @@ export function useTeamEvents(teamId: string | undefined): StreamState {
             wasLost = false;
             gather('weather-file');
             gather('run');
+            gather('people');
           }
         },
       },

@@ -1,6 +1,8 @@
 /** Every endpoint of the product: what mount, the permission matrix and the API description go through. */
 import * as links from './account-links.ts';
 import * as accounts from './accounts.ts';
+import * as api from './api.ts';
+import * as audit from './audit.ts';
 import * as briefs from './briefs.ts';
 import * as climate from './climate.ts';
 import * as depression from './depression-map.ts';
@@ -155,7 +157,11 @@ export const endpoints = {
   listTokens: tokens.listTokens,
   makeToken: tokens.makeToken,
   revokeToken: tokens.revokeToken,
+  listAuditEvents: audit.listAuditEvents,
+  exportAuditCsv: audit.exportAuditCsv,
+  exportAuditJson: audit.exportAuditJson,
   getMethodChecks: method.getMethodChecks,
+  getApiDescription: api.getApiDescription,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -21,8 +21,10 @@ export const policyNames = [
   'teams.view',
   'teams.people',
   'teams.programmes',
+  'teams.programmes.view',
   'teams.tokens',
   'teams.data',
+  'audit.view',
   'method.view',
 ] as const;
 

@@ -25,7 +25,7 @@ export const listProgrammes = endpoint({
   body: none,
   response: json(z.object({ items: z.array(Programme) })),
   errors: [],
-  allow: 'teams.view',
+  allow: 'teams.programmes.view',
   limits: ordinary,
 });
 

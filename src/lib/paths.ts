@@ -102,6 +102,8 @@ export const paths = {
   mails: { pattern: 'team/mails', to: (teamId: string) => `/teams/${teamId}/team/mails` },
   tokens: { pattern: 'team/tokens', to: (teamId: string) => `/teams/${teamId}/team/tokens` },
   teamData: { pattern: 'team/data', to: (teamId: string) => `/teams/${teamId}/team/data` },
+  audit: { pattern: 'team/audit', to: (teamId: string) => `/teams/${teamId}/team/audit` },
+  api: { pattern: 'team/api', to: (teamId: string) => `/teams/${teamId}/team/api` },
   method: { pattern: 'method', to: (teamId: string) => `/teams/${teamId}/method` },
   gallery: { pattern: '/gallery' },
 } as const;

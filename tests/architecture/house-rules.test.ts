@@ -47,6 +47,15 @@ test('nothing is cast but where a row, a request or JSON is given its type', () 
   expect(casts.filter(({ file, text }) => !places.includes(file) && !inImports.test(text))).toEqual([]);
 });
 
+test('no HTML and no code is made out of text in the browser', () => {
+  expect(
+    occurrences(
+      product,
+      /dangerouslySetInnerHTML|\b(inner|outer)HTML\b|insertAdjacentHTML|document\.write|\beval\(|new Function\(/,
+    ),
+  ).toEqual([]);
+});
+
 test('exports have names', () => {
   // Vitest asks for a default of its global set-up; PsychroLib is a default, and its types say so.
   const asked = ['tests/support/database.ts', 'src/engine/psychrolib.d.ts'];

@@ -158,7 +158,7 @@ export const importRules: readonly ImportRule[] = [
     from: 'server/http/**',
     may: [
       ...['server/http/**', 'server/features/*/policy.ts', 'server/features/*/*read-model.ts', 'server/db/**'],
-      ...['server/deps.ts', 'server/log.ts', 'src/contract/**', 'node:**', 'zod/mini'],
+      ...['server/deps.ts', 'server/log.ts', 'src/contract/**', 'node:**', 'zod/mini', 'package.json'],
       ...['express', 'helmet', 'multer', 'express-session', 'connect-pg-simple', 'passport', 'passport-local'],
     ],
     mayTypes: ['knex'],

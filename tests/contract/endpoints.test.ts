@@ -70,7 +70,7 @@ describe('the list of declarations', () => {
   );
 
   test.each(declared)('%s carries a team in its path unless it is about an account or the method', (name, { path }) => {
-    const ofNoTeam = ['getSession', 'signIn', 'signOut', 'setUp', 'getMethodChecks'];
+    const ofNoTeam = ['getSession', 'signIn', 'signOut', 'setUp', 'getMethodChecks', 'getApiDescription'];
     // Links out of mails, whose key says whose they are, and the team that is being made.
     const byKey = ['askReset', 'resetPassword', 'confirmEmail', 'openInvitation', 'acceptAsNewPerson', 'makeTeam'];
     const ofTeam = /^\/api\/teams\/:teamId(\/|$)/.test(path);

@@ -12,6 +12,8 @@ import { makeTeam } from '../../server/features/teams/make-team.ts';
 import type { Role } from '../../src/contract/accounts.ts';
 import type { Endpoint } from '../../src/contract/endpoint.ts';
 import { type EndpointName, endpoints } from '../../src/contract/endpoints.ts';
+import { type TokenScope, tokenScopes } from '../../src/contract/tokens.ts';
+import { doneElsewhere, writesNoEvent } from '../support/audited-endpoints.ts';
 import { eventually } from '../support/eventually.ts';
 import { openRoad, type Road } from '../support/open-road.ts';
 import { zipBytes } from '../support/zip-bytes.ts';
@@ -26,35 +28,62 @@ const callers = [
   'unknown token',
   'signed out',
   'uploading token',
-  'reading token',
+  'weather token',
+  'results token',
+  'expired token',
+  'revoked token',
+  'foreign token',
 ] as const;
 type Caller = (typeof callers)[number];
 const signedInCallers: readonly Caller[] = callers.slice(0, 5);
+/** Tokens of the team, one for each scope, and one of another team with all of them. */
+const scopesOf: Partial<Record<Caller, readonly TokenScope[]>> = {
+  'uploading token': ['weather:upload'],
+  'weather token': ['weather:read'],
+  'results token': ['results:read'],
+  'expired token': tokenScopes,
+  'revoked token': tokenScopes,
+  'foreign token': tokenScopes,
+};
 
 /**
- * Statuses in the order of `callers`. A guest has no share link to open yet, so is a stranger everywhere. The tokens are of
- * the team: one with the scope `weather:upload`, one with the scopes `weather:read` and `results:read`.
+ * Statuses in the order of `callers`: those of the four roles, of strangers, of the token for each scope, of tokens that hold no
+ * more or elsewhere. A guest has no share link to open yet, so is a stranger everywhere.
  */
-const strangers = [404, 401, 401, 401];
-const everyMember = [200, 200, 200, 200, ...strangers, 403, 403];
-const readersToo = [200, 200, 200, 200, ...strangers, 403, 200];
-const plannersToo = [403, 200, 200, 200, ...strangers, 403, 403];
-const changersOnly = [403, 403, 200, 200, ...strangers, 403, 403];
-const uploadersOnly = [403, 403, 200, 200, ...strangers, 200, 403];
+const ofTeam = (roles: readonly number[], [upload, weather, results] = [403, 403, 403]): readonly number[] => [
+  ...[...roles, 404, 401, 401, 401],
+  ...[upload ?? 403, weather ?? 403, results ?? 403, 401, 401, 404],
+];
+const everyone = [200, 200, 200, 200];
+const everyMember = ofTeam(everyone);
+const weatherReaders = ofTeam(everyone, [403, 200, 403]);
+const resultsReaders = ofTeam(everyone, [403, 403, 200]);
+const plannersToo = ofTeam([403, 200, 200, 200]);
+const plannersAndResults = ofTeam([403, 200, 200, 200], [403, 403, 200]);
+const changersOnly = ofTeam([403, 403, 200, 200]);
+const uploadersOnly = ofTeam([403, 403, 200, 200], [200, 403, 403]);
 /** The same where nothing has stopped that could be tried again, so that who may is told that. */
-const uploadersInVain = [403, 403, 409, 409, ...strangers, 409, 403];
-const leadOnly = [403, 403, 403, 200, ...strangers, 403, 403];
-const leadOnlyDone = [403, 403, 403, 204, ...strangers, 403, 403];
+const uploadersInVain = ofTeam([403, 403, 409, 409], [409, 403, 403]);
+const leadOnly = ofTeam([403, 403, 403, 200]);
+const leadOnlyDone = ofTeam([403, 403, 403, 204]);
 /** What concerns one's own account: no token may. */
-const ownAccount = (status: number) => [status, status, status, status, status, 401, 401, 401, 403, 403];
+const ownAccount = (status: number) => [
+  ...[status, status, status, status, status, 401, 401, 401],
+  ...[403, 403, 403, 401, 401, 403],
+];
 const signedInOnly = ownAccount(200);
+/** Of no team: whoever comes, but nobody whose token does not hold. */
+const anyone = (status: number, withToken = status) => [
+  ...[status, status, status, status, status, status, 401, status],
+  ...[withToken, withToken, withToken, 401, 401, withToken],
+];
 /** With a key that was never made. */
-const linkInVain = [410, 410, 410, 410, 410, 410, 401, 410, 410, 410];
+const linkInVain = anyone(410);
 const matrix: Record<EndpointName, readonly number[]> = {
-  getSession: [200, 200, 200, 200, 200, 200, 401, 200, 200, 200],
+  getSession: anyone(200),
   // A program has its token, and cannot begin a session beside it.
-  signIn: [200, 200, 200, 200, 200, 200, 401, 200, 400, 400],
-  signOut: [204, 204, 204, 204, 204, 401, 401, 401, 403, 403],
+  signIn: anyone(200, 400),
+  signOut: ownAccount(204),
   setUp: linkInVain,
   getAccount: signedInOnly,
   renamePerson: signedInOnly,
@@ -73,7 +102,7 @@ const matrix: Record<EndpointName, readonly number[]> = {
   endOtherSessions: ownAccount(204),
   listNotices: signedInOnly,
   readNotices: ownAccount(204),
-  askReset: [204, 204, 204, 204, 204, 204, 401, 204, 204, 204],
+  askReset: anyone(204),
   resetPassword: linkInVain,
   confirmEmail: linkInVain,
   openInvitation: linkInVain,
@@ -90,10 +119,10 @@ const matrix: Record<EndpointName, readonly number[]> = {
   endMemberSessions: leadOnlyDone,
   removeMember: leadOnlyDone,
   // A team of which the lead is the last, and to which the tokens do not belong.
-  leaveTeam: [204, 204, 204, 409, 404, 401, 401, 401, 404, 404],
+  leaveTeam: [204, 204, 204, 409, 404, 401, 401, 401, 404, 404, 404, 401, 401, 404],
   makeTeam: signedInOnly,
   renameTeam: leadOnlyDone,
-  listProgrammes: everyMember,
+  listProgrammes: resultsReaders,
   makeProgramme: plannersToo,
   renameProgramme: plannersToo,
   setProgrammeMembers: leadOnly,
@@ -101,89 +130,93 @@ const matrix: Record<EndpointName, readonly number[]> = {
   listExports: leadOnly,
   askExport: leadOnly,
   // Its time is over.
-  getExport: [403, 403, 403, 410, ...strangers, 403, 403],
+  getExport: ofTeam([403, 403, 403, 410]),
   getDeletion: leadOnly,
   // With a name that is not the team's, and so nothing to stop.
-  askDeletion: [403, 403, 403, 400, ...strangers, 403, 403],
-  stopDeletion: [403, 403, 403, 409, ...strangers, 403, 403],
-  listWeatherFiles: readersToo,
+  askDeletion: ofTeam([403, 403, 403, 400]),
+  stopDeletion: ofTeam([403, 403, 403, 409]),
+  listWeatherFiles: weatherReaders,
   uploadWeatherFile: uploadersOnly,
-  getWeatherFile: readersToo,
+  getWeatherFile: weatherReaders,
   getOriginal: changersOnly,
   previewDerivedYear: changersOnly,
   // The engineer saves the change first: to the lead the same change of the same year stands already.
-  deriveWeatherYear: [403, 403, 200, 409, ...strangers, 403, 403],
+  deriveWeatherYear: ofTeam([403, 403, 200, 409]),
   acceptWeatherFile: changersOnly,
   withdrawWeatherFile: changersOnly,
   actOnWeatherFiles: changersOnly,
   retryWeatherFile: uploadersInVain,
   // The file is accepted, and stands as it was read.
-  answerWeatherFile: [403, 403, 409, 409, ...strangers, 403, 403],
+  answerWeatherFile: ofTeam([403, 403, 409, 409]),
   getWeatherFileLines: changersOnly,
-  getWeatherYearColumns: readersToo,
+  getWeatherYearColumns: weatherReaders,
   setLicence: changersOnly,
-  listStations: readersToo,
-  getStation: readersToo,
+  listStations: weatherReaders,
+  getStation: weatherReaders,
   moveStation: changersOnly,
   // Merging a station into itself is refused.
-  mergeStations: [403, 403, 409, 409, ...strangers, 403, 403],
+  mergeStations: ofTeam([403, 403, 409, 409]),
   setRuleOff: changersOnly,
   setRuleOn: changersOnly,
-  listWeatherBatches: readersToo,
-  getWeatherBatch: readersToo,
+  listWeatherBatches: weatherReaders,
+  getWeatherBatch: weatherReaders,
   startWeatherBatch: uploadersOnly,
   changeWeatherBatch: uploadersOnly,
   uploadWeatherFiles: uploadersOnly,
   uploadWeatherArchive: uploadersOnly,
   retryWeatherArchive: uploadersInVain,
-  watchTeam: readersToo,
-  findPlaces: readersToo,
-  getMap: readersToo,
-  getSurface: readersToo,
-  judgeSurface: readersToo,
-  getEstimate: readersToo,
-  getDepressionMap: readersToo,
-  getStationPlace: readersToo,
-  getSitePlace: readersToo,
-  listRunHours: readersToo,
-  getDesignPoints: readersToo,
-  rankPlaces: readersToo,
-  getRun: readersToo,
-  judgeRange: readersToo,
-  findWhatWouldPass: readersToo,
-  getRunHours: readersToo,
-  exportRunHours: plannersToo,
-  rescore: readersToo,
-  listPresets: everyMember,
-  listBriefs: everyMember,
+  watchTeam: weatherReaders,
+  findPlaces: resultsReaders,
+  getMap: resultsReaders,
+  getSurface: resultsReaders,
+  judgeSurface: resultsReaders,
+  getEstimate: resultsReaders,
+  getDepressionMap: resultsReaders,
+  getStationPlace: resultsReaders,
+  getSitePlace: resultsReaders,
+  listRunHours: resultsReaders,
+  getDesignPoints: resultsReaders,
+  rankPlaces: resultsReaders,
+  getRun: resultsReaders,
+  judgeRange: resultsReaders,
+  findWhatWouldPass: resultsReaders,
+  getRunHours: resultsReaders,
+  exportRunHours: plannersAndResults,
+  rescore: resultsReaders,
+  listPresets: resultsReaders,
+  listBriefs: resultsReaders,
   makeBrief: plannersToo,
-  listBriefVersions: everyMember,
-  getBriefVersion: everyMember,
-  compareBriefVersions: everyMember,
+  listBriefVersions: resultsReaders,
+  getBriefVersion: resultsReaders,
+  compareBriefVersions: resultsReaders,
   saveBriefVersion: plannersToo,
-  previewBrief: everyMember,
-  listSites: readersToo,
-  getSite: readersToo,
+  previewBrief: resultsReaders,
+  listSites: resultsReaders,
+  getSite: resultsReaders,
   makeSite: plannersToo,
   // The planner changes the revision that all of them saw, so that the others come second.
-  changeSite: [403, 200, 409, 409, ...strangers, 403, 403],
-  moveSite: [403, 409, 409, 409, ...strangers, 403, 403],
+  changeSite: ofTeam([403, 200, 409, 409]),
+  moveSite: ofTeam([403, 409, 409, 409]),
   removeSites: plannersToo,
   setSiteDuty: plannersToo,
-  getGround: readersToo,
+  getGround: resultsReaders,
   startSiteImport: plannersToo,
   addSiteImportRows: plannersToo,
   checkSiteImport: plannersToo,
   // The planner finishes it first, and undoes it first.
-  finishSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
-  listSiteImports: readersToo,
-  undoSiteImport: [403, 200, 409, 409, ...strangers, 403, 403],
-  exportSites: plannersToo,
+  finishSiteImport: ofTeam([403, 200, 409, 409]),
+  listSiteImports: resultsReaders,
+  undoSiteImport: ofTeam([403, 200, 409, 409]),
+  exportSites: plannersAndResults,
   listTokens: leadOnly,
   makeToken: leadOnly,
   revokeToken: leadOnly,
   // About no team: every person who is signed in.
   getMethodChecks: signedInOnly,
+  getApiDescription: anyone(200),
+  listAuditEvents: leadOnly,
+  exportAuditCsv: leadOnly,
+  exportAuditJson: leadOnly,
 };
 
 const PASSWORD = 'a long pass phrase for tests';
@@ -222,9 +255,7 @@ async function signIn(caller: Caller): Promise<string> {
 
 async function headersOf(caller: Caller, name?: EndpointName): Promise<Record<string, string>> {
   const base = { 'Sec-Fetch-Site': 'same-origin' };
-  if (caller === 'uploading token' || caller === 'reading token') {
-    return { Authorization: `Bearer ${tokens.get(caller) ?? ''}` };
-  }
+  if (caller in scopesOf) return { Authorization: `Bearer ${tokens.get(caller) ?? ''}` };
   if (caller === 'unknown token') return { ...base, Authorization: 'Bearer muslin_0123456789' };
   if (caller === 'guest') return { ...base, Cookie: 'muslin_share=unknown' };
   if (caller === 'signed out') return base;
@@ -327,11 +358,11 @@ function queryOf(name: EndpointName): string {
   return name === 'getWeatherFileLines' ? '?from=1' : '';
 }
 
-/** Sends the request and looks at its status alone; an event stream is let go of at once. */
-async function statusOf(
+/** Sends the request and looks at its status and id alone; an event stream is let go of at once. */
+async function answerTo(
   name: EndpointName,
   { caller, values }: { caller: Caller; values: typeof ids },
-): Promise<number> {
+): Promise<{ status: number; requestId: string }> {
   const endpoint: Endpoint = endpoints[name];
   const path = endpoint.path.replace(/:(\w+)/g, (_all, parameter: string) => values[parameter] ?? 'missing');
   expect(path).not.toContain('missing');
@@ -345,8 +376,32 @@ async function statusOf(
     body,
     signal: ending.signal,
   });
+  const { status } = response;
+  expectSafe(endpoint, response);
+  // A download that is cut off may be cut off before it is written down.
+  if (endpoint.response.kind === 'file' && status === 200) await response.arrayBuffer();
   ending.abort();
-  return response.status;
+  return { status, requestId: response.headers.get('x-request-id') ?? '' };
+}
+
+/** Nobody keeps an answer, guesses at its type or shows a download as a page, whoever is answered and whatever. */
+function expectSafe(endpoint: Endpoint, { status, headers }: Response): void {
+  expect(headers.get('cache-control')).toMatch(/^no-store\b/);
+  expect(headers.get('x-content-type-options')).toBe('nosniff');
+  expect(headers.get('content-security-policy')).toContain("default-src 'none'");
+  expect(headers.get('x-request-id')).toMatch(/^[0-9a-f-]{36}$/);
+  if (endpoint.response.kind !== 'file' || status !== 200) return;
+  expect(headers.get('content-type')).toBe(endpoint.response.mediaType);
+  if (endpoint.response.attachment) expect(headers.get('content-disposition')).toMatch(/^attachment; filename/);
+}
+
+/** Of these requests, those that have left something in the audit trail. */
+async function audited(requestIds: readonly string[]): Promise<ReadonlySet<string>> {
+  const { rows } = await road.db.raw<{ rows: { id: string }[] }>(
+    'select distinct request_id as id from audit_events where request_id = any(?)',
+    [[...requestIds]],
+  );
+  return new Set(rows.map(({ id }) => id));
 }
 
 async function uploadAndRead(note: string): Promise<string> {
@@ -435,16 +490,28 @@ beforeAll(async () => {
     await fetch(`${team}/weather-batches/${batch.id}/archives`, { method: 'POST', headers, body: form })
   ).json();
   const order = async (name: Caller, scopes: readonly string[]): Promise<string> => {
-    const lead = { ...(await headersOf('lead')), 'Content-Type': 'application/json' };
+    const isForeign = name === 'foreign token';
+    const lead = { ...(await headersOf(isForeign ? 'foreign lead' : 'lead')), 'Content-Type': 'application/json' };
     const body = JSON.stringify({ name, scopes, days: 1 });
+    const teamUrl = isForeign ? `${origin}/api/teams/${foreign.teamId}` : team;
     const made: { token: string; made: { id: string } } = await (
-      await fetch(`${team}/tokens`, { method: 'POST', headers: lead, body })
+      await fetch(`${teamUrl}/tokens`, { method: 'POST', headers: lead, body })
     ).json();
     tokens.set(name, made.token);
     return made.made.id;
   };
-  await order('uploading token', ['weather:upload']);
-  await order('reading token', ['weather:read', 'results:read']);
+  const tokenIds = new Map<string, string>();
+  for (const caller of callers) {
+    const scopes = scopesOf[caller];
+    if (scopes !== undefined) tokenIds.set(caller, await order(caller, scopes));
+  }
+  await road.db.raw(`update api_tokens set made_at = now() - interval '2 days', expires_at = now() where id = ?`, [
+    tokenIds.get('expired token') ?? '',
+  ]);
+  await fetch(`${team}/tokens/${tokenIds.get('revoked token')}`, {
+    method: 'DELETE',
+    headers: await headersOf('lead'),
+  });
   ids = { ...ids, tokenId: await order('unknown token', ['weather:read']) };
   const invited: { id: string } = await (
     await fetch(`${team}/invitations`, {
@@ -471,6 +538,13 @@ afterAll(async () => {
   await road.close();
 });
 
+/** An act, or a download: whatever changes something or lets something out. */
+function leavesSomething(name: EndpointName): boolean {
+  const { method, response }: Endpoint = endpoints[name];
+  const takesAlong = response.kind === 'file' && response.attachment;
+  return (method !== 'GET' || takesAlong) && !(name in writesNoEvent);
+}
+
 const names = Object.keys(endpoints).filter((name): name is EndpointName => name in endpoints);
 
 describe('the matrix of rights', () => {
@@ -481,14 +555,29 @@ describe('the matrix of rights', () => {
 
   test.each(names)('%s answers every kind of caller as the table says', async (name) => {
     const found: Partial<Record<Caller, number>> = {};
+    const done: string[] = [];
     for (const caller of callers) {
       const own = ['acceptWeatherFile', 'withdrawWeatherFile'].includes(name) ? ownFiles.get(caller) : undefined;
       const team = name === 'leaveTeam' ? { teamId: ids.leavingTeamId ?? '' } : {};
       const values = own === undefined ? { ...ids, ...team } : { ...ids, fileId: own };
-      found[caller] = await statusOf(name, { caller, values });
+      const { status, requestId } = await answerTo(name, { caller, values });
+      found[caller] = status;
+      if (status < 300) done.push(requestId);
     }
     const expected = Object.fromEntries(callers.map((caller, index) => [caller, matrix[name][index]]));
     expect(found).toEqual(expected);
+    if (!leavesSomething(name)) expect(await audited(done)).toEqual(new Set());
+    else if (!doneElsewhere.includes(name)) {
+      expect(done.length).toBeGreaterThan(0);
+      expect(await audited(done)).toEqual(new Set(done));
+    }
+  });
+
+  test('every reason for which an act leaves nothing in the audit trail is that of an act', () => {
+    for (const [name, reason] of Object.entries(writesNoEvent)) {
+      expect(names.filter((each) => each === name && endpoints[each].method !== 'GET')).toHaveLength(1);
+      expect(reason).toMatch(/^[A-Z].+\.$/);
+    }
   });
 
   const withInnerIds = names.filter((name) => /:teamId\/.*:\w+/.test(endpoints[name].path));
@@ -499,7 +588,7 @@ describe('the matrix of rights', () => {
 
   test.each(withInnerIds)('%s knows nothing of another team’s ids under one’s own team', async (name) => {
     const values = { ...ids, teamId: ids.foreignTeamId ?? '' };
-    expect(await statusOf(name, { caller: 'foreign lead', values })).toBe(404);
+    expect((await answerTo(name, { caller: 'foreign lead', values })).status).toBe(404);
   });
 
   test('nothing was logged as a fault of ours', () => {

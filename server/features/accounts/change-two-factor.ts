@@ -1,5 +1,6 @@
 /** Two-factor sign-in from beginning to end: a secret is made, confirmed by a code, and given up again. */
 import type { Knex } from 'knex';
+import type { AuditAct } from '#contract/audit.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
@@ -90,7 +91,7 @@ export async function renewRecoveryCodes(db: Knex, given: Reentry): Promise<read
 
 async function giveCodes(
   transaction: Knex.Transaction,
-  { personId, act, requestId }: { personId: string; act: string; requestId: string },
+  { personId, act, requestId }: { personId: string; act: AuditAct; requestId: string },
 ): Promise<readonly string[]> {
   const codes = newRecoveryCodes();
   await replaceRecoveryCodes(transaction, { personId, hashes: codes.map(hashOfRecoveryCode) });

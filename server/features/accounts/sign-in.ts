@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { AuditAct } from '#contract/audit.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
@@ -48,7 +49,7 @@ export async function signIn(deps: SignInDeps, given: SigningIn): Promise<string
   return personId;
 }
 
-function record(db: Knex, event: SigningIn & { personId: string | null; act: string }): Promise<void> {
+function record(db: Knex, event: SigningIn & { personId: string | null; act: AuditAct }): Promise<void> {
   const { personId, act, email, address, requestId } = event;
   return inTransaction(db, (transaction) =>
     recordAuditEvent(transaction, { teamId: null, personId, act, subject: { email, address }, requestId }),

@@ -5,6 +5,7 @@ import { briefSentence } from '#engine/brief/brief-sentence.ts';
 import { changeWords } from '#engine/climate/change-words.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
 import { weatherYearText } from '#engine/run/hours-csv.ts';
+import { recordDownload, type Taker } from '../../db/record-download.ts';
 import { AppError } from '../../http/app-error.ts';
 import type { YearThread } from '../../jobs/year-thread.ts';
 import { readPackedYear } from '../weather/packed-year-read-model.ts';
@@ -25,7 +26,14 @@ export interface ExportParts {
  */
 export async function exportRunHours(
   { db, yearThread }: ExportParts,
-  asked: { teamId: string; runId: string; role: Role | null; closed: readonly string[]; signal: AbortSignal },
+  asked: {
+    teamId: string;
+    runId: string;
+    role: Role | null;
+    closed: readonly string[];
+    taker: Taker;
+    signal: AbortSignal;
+  },
 ): Promise<{ body: Readable; fileName: string }> {
   const run = await findRunToExport(db, asked);
   if (run === null) throw new AppError('not_found', 'There is no such run in this team.');
@@ -39,7 +47,11 @@ export async function exportRunHours(
   const written = await yearThread.writeHours({ year, brief, heightM, clock, zone, origin }, asked.signal);
   if (!run.hourClassCodes.equals(written.hourClassCodes))
     throw new Error(`the hours of the run ${asked.runId} no longer come to the classes that it holds`);
-  return { body: Readable.from(chunksOf(written.bytes)), fileName: fileNameOf(run) };
+  const fileName = fileNameOf(run);
+  const { teamId, runId, taker } = asked;
+  const subject = { runId, name: fileName, fileId: run.weatherFileId };
+  await recordDownload(db, { teamId, act: 'hours of a run downloaded', subject, taker });
+  return { body: Readable.from(chunksOf(written.bytes)), fileName };
 }
 
 /**

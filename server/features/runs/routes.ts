@@ -15,6 +15,7 @@ import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { closedTo } from '../../http/closed-to.ts';
 import { mount } from '../../http/mount.ts';
+import { takerOf } from '../../http/taker-of.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
 import { depressionMap } from './depression-map.ts';
@@ -147,9 +148,11 @@ export function runsRoutes(
     return inTurn(() => rankProgramme({ db, cache, threads }, { ...params, ...asked, placeIds, brief, signal }));
   });
 
-  mount(router, deps, exportEndpoint, async ({ params }, { actor, signal }) => {
+  mount(router, deps, exportEndpoint, async ({ params }, request) => {
+    const { actor, signal } = request;
     const role = actor.kind === 'person' ? (actor.roles.get(params.teamId.toLowerCase()) ?? null) : null;
-    return await exportRunHours({ db, yearThread }, { ...params, role, closed: closedTo(actor), signal });
+    const asked = { ...params, role, closed: closedTo(actor), taker: takerOf(request), signal };
+    return await exportRunHours({ db, yearThread }, asked);
   });
 
   mount(router, deps, listHoursEndpoint, async ({ params, query }, { actor, signal }) =>

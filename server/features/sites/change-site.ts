@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { AuditAct } from '#contract/audit.ts';
 import type { SiteWater } from '#contract/site-water.ts';
 import { rankStations } from '#engine/interpolation/station-choice.ts';
 import type { GateAnswer } from '#engine/run/run-result.ts';
@@ -35,7 +36,7 @@ export interface SitePatch {
  */
 export async function changeSite(
   { db, relief, queueSiteRuns }: SiteDeps,
-  change: SiteAct & { siteId: string; revision: number; patch: SitePatch; act?: string },
+  change: SiteAct & { siteId: string; revision: number; patch: SitePatch; act?: AuditAct },
 ): Promise<void> {
   const { teamId, programmeId, siteId, personId, requestId, patch, at } = change;
   await inTransaction(db, async (transaction) => {

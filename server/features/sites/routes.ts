@@ -2,7 +2,7 @@ import type { Router } from 'express';
 import {
   addSiteImportRows as addRowsEndpoint,
   checkSiteImport as checkImportEndpoint,
-  exportSites,
+  exportSites as exportEndpoint,
   finishSiteImport as finishImportEndpoint,
   listSiteImports,
   startSiteImport as startImportEndpoint,
@@ -23,8 +23,10 @@ import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import type { RequestContext } from '../../http/request-context.ts';
+import { takerOf } from '../../http/taker-of.ts';
 import { programmeExists } from '../briefs/version-read-model.ts';
 import { changeSite } from './change-site.ts';
+import { exportSites } from './export-sites.ts';
 import { addSiteImportRows, checkSiteImport, finishSiteImport, startSiteImport } from './import-sites.ts';
 import { makeSite, type SiteParts, type SiteTableParts } from './make-site.ts';
 import { FIGURE_SORTS, isOf, pageOfSites } from './page-of-sites.ts';
@@ -34,7 +36,7 @@ import { removeSites } from './remove-sites.ts';
 import { makeSiteResolver, type ResolvedSite, sitesOfProgramme } from './resolved-sites-read-model.ts';
 import { setSiteDuty } from './set-site-duty.ts';
 import { groundAt } from './site-ground.ts';
-import { listSiteImportViews, listSiteNotes } from './site-import-read-model.ts';
+import { listSiteImportViews } from './site-import-read-model.ts';
 import {
   findSiteRecord,
   listAskedGates,
@@ -42,7 +44,6 @@ import {
   listSiteDuties,
   listStationsOfTeam,
 } from './site-read-model.ts';
-import { siteTable } from './site-table.ts';
 import { undoSiteImport } from './undo-site-import.ts';
 
 interface ProgrammeKey {
@@ -140,12 +141,9 @@ export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts & SiteT
     await undoSiteImport(db, { ...params, ...act(request) });
     return await importOf(params);
   });
-  mount(router, deps, exportSites, async ({ params, query }) => {
+  mount(router, deps, exportEndpoint, async ({ params, query }, request) => {
     await mustExist(params);
-    const [sites, notes] = await Promise.all([sitesOfProgramme(db, params), listSiteNotes(db, params)]);
-    const all = { sort: 'letters', order: 'asc', page: 1, limit: Math.max(1, sites.length) } as const;
-    const { items } = pageOfSites(sites, { ...query, ...all });
-    return { body: Buffer.from(siteTable(items, notes)), fileName: 'sites.csv' };
+    return await exportSites(db, { ...params, ...query, taker: takerOf(request) });
   });
 
   async function recordOf(key: SiteKey) {

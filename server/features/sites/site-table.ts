@@ -1,5 +1,5 @@
+import { textCell as text } from '#engine/csv-cell.ts';
 import { siteHeads } from '#engine/sites/site-columns.ts';
-import { guarded } from '#engine/sites/spreadsheet-guard.ts';
 import type { ResolvedSite } from './resolved-sites-read-model.ts';
 
 /** A byte order mark, by which spreadsheets know UTF-8. */
@@ -38,11 +38,6 @@ export function siteTable(sites: readonly ResolvedSite[], notes: ReadonlyMap<str
     ].join(',');
   });
   return `${MARK}${[HEADS.map(text).join(','), ...lines].join('\r\n')}\r\n`;
-}
-
-function text(value: string): string {
-  const safe = guarded(value);
-  return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
 }
 
 function figure(value: number | null, decimals?: number): string {

@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { AuditAct } from '#contract/audit.ts';
 import type { RuleName } from '#engine/weather-files/quality/quality-options.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
@@ -43,7 +44,7 @@ export async function setRuleOn(db: Knex, on: RuleKey & { personId: string; requ
 async function changeRule(
   db: Knex,
   key: RuleKey & { personId: string; requestId: string | null },
-  what: { act: string; reason: string | null; change: (transaction: Knex.Transaction) => Promise<void> },
+  what: { act: AuditAct; reason: string | null; change: (transaction: Knex.Transaction) => Promise<void> },
 ): Promise<void> {
   const { teamId, stationId, rule, personId, requestId } = key;
   await inTransaction(db, async (transaction) => {

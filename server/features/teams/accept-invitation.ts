@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
+import { notifyTeam } from '../../jobs/team-feed.ts';
 import { hashOfInvitationKey } from './invitation-key.ts';
 import {
   holdInvitationOfKey,
@@ -75,4 +76,5 @@ async function join(
   await setInvitationAccepted(transaction, { invitationId, personId, at });
   const subject = { invitationId, role };
   await recordAuditEvent(transaction, { teamId, personId, act: 'invitation accepted', subject, requestId });
+  await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
 }

@@ -3,6 +3,7 @@ import type { Role } from '#contract/accounts.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
+import { notifyTeam } from '../../jobs/team-feed.ts';
 import { endOfDay, lastDayOf } from './last-day.ts';
 import { countOtherLeads, findMember, lockTeam, updateMember } from './member-store.ts';
 
@@ -36,6 +37,7 @@ export async function changeMember(
       after: { role, lastDay: lastDayOf(endsAt) },
     };
     await recordAuditEvent(transaction, { teamId, personId: by, act: 'member changed', subject, requestId });
+    await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
   });
 }
 

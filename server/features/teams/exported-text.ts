@@ -1,4 +1,4 @@
-import { guarded } from '#engine/sites/spreadsheet-guard.ts';
+import { textCell } from '#engine/csv-cell.ts';
 import type { ExportedRow, ExportedTable } from './exported-tables-read-model.ts';
 
 /** A byte order mark, by which spreadsheets know UTF-8. */
@@ -6,7 +6,7 @@ const MARK = '\uFEFF';
 
 /** What stands before the rows: the heads of a table of comma-separated values, nothing of lines of JSON. */
 export function headOf({ entry, columns }: ExportedTable): string {
-  return isLines(entry) ? '' : `${MARK}${Object.keys(columns).map(quoted).join(',')}\r\n`;
+  return isLines(entry) ? '' : `${MARK}${Object.keys(columns).map(textCell).join(',')}\r\n`;
 }
 
 /** Rows as text: RFC 4180 with text guarded against spreadsheets that compute, or a JSON object a line. */
@@ -24,10 +24,5 @@ function cell(value: unknown): string {
   if (value === null || value === undefined) return '';
   if (typeof value === 'number' || typeof value === 'boolean') return String(value);
   if (value instanceof Date) return value.toISOString();
-  return quoted(typeof value === 'string' ? value : JSON.stringify(value));
-}
-
-function quoted(text: string): string {
-  const safe = guarded(text);
-  return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
+  return textCell(typeof value === 'string' ? value : JSON.stringify(value));
 }

@@ -4,6 +4,7 @@ import { brokenConstraint } from '../../db/database-errors.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
 import { AppError } from '../../http/app-error.ts';
+import { notifyTeam } from '../../jobs/team-feed.ts';
 import { refuseLeadFromOutside } from './change-member.ts';
 import { newInvitationKey } from './invitation-key.ts';
 import { mailInvitation } from './invitation-mail.ts';
@@ -56,6 +57,7 @@ export async function invite(
     await mailInvitation(transaction, { teamId, email, role, key, by, publicUrl, at });
     const subject = { invitationId, email, role, lastDay };
     await recordAuditEvent(transaction, { teamId, personId: by, act: 'person invited', subject, requestId });
+    await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
     return invitationId;
   });
 }
@@ -73,6 +75,7 @@ export async function resendInvitation(
     await mailInvitation(transaction, { teamId, email, role, key, by, publicUrl, at });
     const subject = { invitationId, email, role, lastDay: lastDayOf(membershipEndsAt) };
     await recordAuditEvent(transaction, { teamId, personId: by, act: 'invitation sent again', subject, requestId });
+    await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
   });
 }
 
@@ -83,6 +86,7 @@ export async function revokeInvitation(db: Knex, order: Act & { invitationId: st
     await setInvitationRevoked(transaction, { invitationId, by, at });
     const subject = { invitationId, email };
     await recordAuditEvent(transaction, { teamId, personId: by, act: 'invitation revoked', subject, requestId });
+    await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
   });
 }
 

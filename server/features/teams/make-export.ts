@@ -139,7 +139,7 @@ async function finish(
     const told = { personId: asked.askedBy, teamId: key.teamId, words, path, publicUrl, at };
     await notify(transaction, { ...told, kind: 'export ready' });
     const { teamId, exportId } = key;
-    const event = { teamId, personId: null, act: 'team export made', subject: { exportId, bytes }, requestId: null };
-    await recordAuditEvent(transaction, event);
+    const subject = { exportId, bytes };
+    await recordAuditEvent(transaction, { teamId, personId: null, act: 'team export made', subject, requestId: null });
   });
 }

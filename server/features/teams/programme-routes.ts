@@ -1,6 +1,7 @@
 import type { Router } from 'express';
 import * as contract from '#contract/programmes.ts';
 import type { Deps } from '../../deps.ts';
+import { closedTo } from '../../http/closed-to.ts';
 import { mount } from '../../http/mount.ts';
 import { personOf } from '../../http/person-of.ts';
 import type { RequestContext } from '../../http/request-context.ts';
@@ -19,7 +20,7 @@ export function programmeRoutes(router: Router, deps: Deps, { startBrief }: Team
 
   mount(router, deps, contract.listProgrammes, async ({ params: { teamId } }, { actor }) => {
     const programmes = await listProgrammeViews(db, teamId);
-    return { items: programmes.filter(({ id }) => actor.kind === 'person' && !actor.closedProgrammes.has(id)) };
+    return { items: programmes.filter(({ id }) => !closedTo(actor).includes(id)) };
   });
   mount(router, deps, contract.makeProgramme, async ({ params: { teamId }, body }, request) => {
     const programmeId = await makeProgramme({ db, startBrief }, { teamId, ...body, ...act(request) });

@@ -1,6 +1,7 @@
 import type { Knex } from 'knex';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { recordAuditEvent } from '../../db/record-audit-event.ts';
+import { notifyTeam } from '../../jobs/team-feed.ts';
 import { type MemberAct, noSuchMember, refuseLastLead } from './change-member.ts';
 import { deleteMember, findMember, lockTeam } from './member-store.ts';
 
@@ -15,5 +16,6 @@ export async function removeMember(db: Knex, { teamId, personId, by, requestId }
     const act = by === personId ? 'team left' : 'member removed';
     const subject = { personId, role: before.role };
     await recordAuditEvent(transaction, { teamId, personId: by, act, subject, requestId });
+    await notifyTeam(transaction, { teamId, event: { kind: 'people' } });
   });
 }

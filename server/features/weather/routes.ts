@@ -28,6 +28,7 @@ import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { mount } from '../../http/mount.ts';
 import type { RequestContext, UploadedFile } from '../../http/request-context.ts';
+import { takerOf } from '../../http/taker-of.ts';
 import { isZip } from '../../storage/zip-members.ts';
 import { type AcceptanceParts, acceptWeatherFile } from './accept-weather-file.ts';
 import { actOnWeatherFiles } from './act-on-weather-files.ts';
@@ -36,7 +37,7 @@ import { findArchiveView, findBatchView, listBatchViews } from './batch-read-mod
 import { changeBatch } from './change-batch.ts';
 import type { DerivingParts } from './derive-from-parent.ts';
 import { deriveWeatherYear } from './derive-weather-year.ts';
-import { DERIVED_FORMAT } from './derived-year-store.ts';
+import { downloadOriginal } from './download-original.ts';
 import { findFileColumns } from './file-columns-read-model.ts';
 import { countLibrary, listWeatherFileViews } from './library-read-model.ts';
 import { originalLines } from './original-lines.ts';
@@ -94,11 +95,9 @@ export function weatherRoutes(router: Router, deps: Deps, parts: WeatherParts): 
     presentRecord(found(await findWeatherFileRecord(db, params))),
   );
 
-  mount(router, deps, getOriginal, async ({ params }) => {
-    const file = found(await findWeatherFile(db, params));
-    const fileName = file.format === DERIVED_FORMAT ? `${file.name}.json` : file.name;
-    return { body: await deps.storage.get(file.storageKey), fileName };
-  });
+  mount(router, deps, getOriginal, async ({ params }, request) =>
+    downloadOriginal(deps, { ...params, taker: takerOf(request) }),
+  );
 
   mount(router, deps, acceptEndpoint, async ({ params }, request) => {
     await acceptWeatherFile({ db, ...parts }, { ...params, ...act(request) });

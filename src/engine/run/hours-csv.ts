@@ -3,6 +3,7 @@
  * column names with their units, then one row per slot. A blank cell is not known or has no meaning for such an hour.
  */
 import { METHOD_VERSION } from '../conventions.ts';
+import { textCell } from '../csv-cell.ts';
 import type { YearKind } from '../reduction/weather-year.ts';
 import type { HourRow, HoursTable } from './hours-table.ts';
 
@@ -118,13 +119,4 @@ function numberCell(value: number | null, decimals: number): string {
   const written = value.toFixed(decimals);
   // A small negative number rounds to "-0.00".
   return Number(written) === 0 ? written.replace('-', '') : written;
-}
-
-/**
- * A text as a cell. One that a spreadsheet would take for a formula gets an apostrophe in front, since names come from
- * files that anybody may have written.
- */
-export function textCell(text: string): string {
-  const guarded = /^[\s]*[=+\-@]|^[\t\r\n]/.test(text) ? `'${text}` : text;
-  return /[",\r\n]/.test(guarded) ? `"${guarded.replaceAll('"', '""')}"` : guarded;
 }

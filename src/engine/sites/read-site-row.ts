@@ -1,8 +1,9 @@
 /** One row of a table of sites: the same reading in the browser, for the preview, and on the server, before anything is stored. */
+
+import { withoutGuard } from '../csv-cell.ts';
 import { readAngle } from '../interpolation/read-angle.ts';
 import { readPosition } from '../interpolation/read-position.ts';
 import type { SiteCells, SiteColumn } from './site-columns.ts';
-import { withoutGuard } from './spreadsheet-guard.ts';
 
 export interface SiteOfRow {
   readonly name: string;

@@ -14,9 +14,11 @@ export function TeamHeader({ title, children }: { title: string; children?: Reac
       ? [
           { to: paths.tokens.to(teamId), label: 'API tokens' },
           { to: paths.mails.to(teamId), label: 'Mails' },
+          { to: paths.audit.to(teamId), label: 'Audit trail' },
           { to: paths.teamData.to(teamId), label: 'Export and deletion' },
         ]
       : []),
+    { to: paths.api.to(teamId), label: 'API' },
   ];
   return (
     <header>

@@ -5,8 +5,9 @@
 import { describe, expect, test } from 'vitest';
 import { briefSentence } from '#engine/brief/brief-sentence.ts';
 import { METHOD_VERSION } from '#engine/conventions.ts';
+import { textCell } from '#engine/csv-cell.ts';
 import { hourClasses } from '#engine/hour-classes/hour-class.ts';
-import { hoursCsv, textCell } from '#engine/run/hours-csv.ts';
+import { hoursCsv } from '#engine/run/hours-csv.ts';
 import { hoursTable } from '#engine/run/hours-table.ts';
 import { judgeHours } from '#engine/run/judged-year.ts';
 import { csvRecords, csvRows } from '../../support/csv-rows.ts';

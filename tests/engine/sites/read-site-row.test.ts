@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
+import { guarded, withoutGuard } from '#engine/csv-cell.ts';
 import { readSiteRow } from '#engine/sites/read-site-row.ts';
 import { guessSiteColumns, siteHeads } from '#engine/sites/site-columns.ts';
-import { guarded, withoutGuard } from '#engine/sites/spreadsheet-guard.ts';
 
 describe('a row of a table of sites', () => {
   test('is read with angles, metres and kilowatts in the forms in which people write them', () => {

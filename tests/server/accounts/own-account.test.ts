@@ -2,22 +2,18 @@ import { generateSync } from 'otplib';
 import supertest from 'supertest';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
 import { lastKeyTo, mailsTo } from '../../support/mail-box.ts';
+import { MINUTE_MS, makeMovingClock } from '../../support/moving-clock.ts';
 import { type Agent, openWeb, PASSWORD, type WebForTests } from '../../support/open-web.ts';
 
-const START = new Date('2026-03-01T10:00:00Z').getTime();
-let offsetMs = 0;
-const now = () => new Date(START + offsetMs);
-
+const clock = makeMovingClock();
 let web: WebForTests;
 let people = 0;
 
 beforeAll(async () => {
-  web = await openWeb({ now });
+  web = await openWeb({ now: clock.now });
 });
 // Every test has a minute of its own, so that no test spends the limits of another.
-beforeEach(() => {
-  offsetMs += 60_000;
-});
+beforeEach(() => clock.moveMs(MINUTE_MS));
 afterAll(() => web.close());
 
 async function person(): Promise<{ email: string; id: string; agent: Agent }> {
@@ -31,93 +27,6 @@ const entry = (email: string, more: Record<string, unknown> = {}) =>
     .browser()
     .post('/api/session')
     .send({ email, password: PASSWORD, ...more });
-const actsOf = async (personId: string) => {
-  const { rows } = await web.database.ownerDb.raw<{ rows: { act: string }[] }>(
-    'select act from audit_events where person_id = ? order by id',
-    [personId],
-  );
-  return rows.map(({ act }) => act);
-};
-
-describe('a new password', () => {
-  test('comes by a link that works once, ends every session and opens the account', async () => {
-    const { email, id, agent } = await person();
-    await web.browser().post('/api/password-reset/request').send({ email }).expect(204);
-    const key = await lastKeyTo(web.database, email);
-    const { rows } = await web.database.ownerDb.raw('select key_hash from account_keys');
-    expect(JSON.stringify(rows)).not.toContain(key);
-    const password = 'four words of a new kind';
-    await web.browser().post('/api/password-reset').send({ key, password }).expect(204);
-    expect((await agent.get('/api/session')).body.person).toBeNull();
-    await entry(email).expect(401);
-    await entry(email, { password }).expect(200);
-    // Replayed.
-    const again = await web.browser().post('/api/password-reset').send({ key, password: PASSWORD }).expect(410);
-    expect(again.body.code).toBe('link_not_valid');
-    expect((await mailsTo(web.database, email)).at(-1)).toMatchObject({
-      subject: expect.stringMatching(/^Your password was set anew/),
-    });
-    expect(await actsOf(id)).toEqual(expect.arrayContaining(['password reset asked', 'password reset']));
-  });
-
-  test('is offered in the same words to an address without an account, which gets no mail', async () => {
-    const unknown = await web.browser().post('/api/password-reset/request').send({ email: 'nobody@example.org' });
-    const known = await web
-      .browser()
-      .post('/api/password-reset/request')
-      .send({ email: (await person()).email });
-    expect([unknown.status, unknown.text]).toEqual([known.status, known.text]);
-    expect(await mailsTo(web.database, 'nobody@example.org')).toEqual([]);
-  });
-
-  test('is not mailed twice within two minutes, and a newer link replaces the older one', async () => {
-    const { email } = await person();
-    const ask = () => web.browser().post('/api/password-reset/request').send({ email }).expect(204);
-    await ask();
-    const first = await lastKeyTo(web.database, email);
-    await ask();
-    expect(await mailsTo(web.database, email)).toHaveLength(1);
-    offsetMs += 3 * 60_000;
-    await ask();
-    const password = 'four words of a new kind';
-    await web.browser().post('/api/password-reset').send({ key: first, password }).expect(410);
-    const second = await lastKeyTo(web.database, email);
-    // Tampered with, of another purpose, and expired.
-    await web
-      .browser()
-      .post('/api/password-reset')
-      .send({ key: `${second}x`, password })
-      .expect(410);
-    await web.browser().post('/api/email-confirmation').send({ key: second }).expect(410);
-    offsetMs += 61 * 60_000;
-    await web.browser().post('/api/password-reset').send({ key: second, password }).expect(410);
-  });
-
-  test('that many people use, that repeats a piece or is the address is refused, and the link still works', async () => {
-    const { email } = await person();
-    await web.browser().post('/api/password-reset/request').send({ email }).expect(204);
-    const key = await lastKeyTo(web.database, email);
-    for (const password of ['password2024!', 'qwertyuiopasdfghjkl', 'abcabcabcabcab', email]) {
-      const { body } = await web.browser().post('/api/password-reset').send({ key, password }).expect(400);
-      expect(body.problems).toMatchObject([{ path: 'body.password' }]);
-    }
-    await web.browser().post('/api/password-reset').send({ key, password: 'a rather plain sentence' }).expect(204);
-  });
-
-  test('needs the old one of whoever is signed in, ends the other sessions and kills links that wait', async () => {
-    const { email, agent } = await person();
-    const other = await web.signIn(email);
-    await web.browser().post('/api/password-reset/request').send({ email }).expect(204);
-    const newPassword = 'four words of a new kind';
-    const wrong = await agent.put('/api/account/password').send({ password: 'not this one', newPassword }).expect(400);
-    expect(wrong.body.problems).toEqual([{ path: 'body.password', message: 'This is not your password.' }]);
-    await agent.put('/api/account/password').send({ password: PASSWORD, newPassword }).expect(204);
-    expect((await other.get('/api/session')).body.person).toBeNull();
-    expect((await agent.get('/api/session')).body.person.email).toBe(email);
-    const key = await lastKeyTo(web.database, email);
-    await web.browser().post('/api/password-reset').send({ key, password: PASSWORD }).expect(410);
-  });
-});
 
 describe('another e-mail address', () => {
   test('holds once its link is followed; the old address is told', async () => {
@@ -157,7 +66,7 @@ describe('sessions of an account', () => {
     const { rows } = await web.database.ownerDb.raw<{ rows: { sid: string }[] }>('select sid from sessions');
     for (const { sid } of rows) expect(JSON.stringify(items)).not.toContain(sid);
     const ofPhone = items.find(({ browser }: { browser: string | null }) => browser === 'A phone');
-    expect(ofPhone).toMatchObject({ current: false, beganAt: now().toISOString() });
+    expect(ofPhone).toMatchObject({ current: false, beganAt: clock.now().toISOString() });
     const stranger = await person();
     await stranger.agent.delete(`/api/account/sessions/${ofPhone.id}`).expect(404);
     await agent.delete(`/api/account/sessions/${ofPhone.id}`).expect(204);
@@ -183,7 +92,7 @@ describe('sessions of an account', () => {
 });
 
 describe('two-factor sign-in', () => {
-  const codeAt = (secret: string) => generateSync({ secret, epoch: Math.floor(now().getTime() / 1000) });
+  const codeAt = (secret: string) => generateSync({ secret, epoch: Math.floor(clock.now().getTime() / 1000) });
 
   test('begins with a confirmed code, asks for one at every sign-in, and takes none twice', async () => {
     const { email, agent } = await person();
@@ -201,7 +110,7 @@ describe('two-factor sign-in', () => {
     expect(confirmed.body.recoveryCodes).toHaveLength(10);
     expect(new Set(confirmed.body.recoveryCodes).size).toBe(10);
 
-    offsetMs += 60_000;
+    clock.moveMs(MINUTE_MS);
     const asked = await entry(email).expect(401);
     expect(asked.body.code).toBe('code_needed');
     expect(asked.headers['set-cookie']).toBeUndefined();
@@ -214,7 +123,7 @@ describe('two-factor sign-in', () => {
     expect((await entry(email, { code }).expect(401)).body.code).toBe('code_needed');
 
     const [recovery = ''] = confirmed.body.recoveryCodes;
-    offsetMs += 60_000;
+    clock.moveMs(MINUTE_MS);
     await entry(email, { code: recovery.toUpperCase() }).expect(200);
     await entry(email, { code: recovery }).expect(401);
     expect((await agent.get('/api/account').expect(200)).body.twoFactor).toEqual({ on: true, recoveryCodesLeft: 9 });
@@ -222,7 +131,7 @@ describe('two-factor sign-in', () => {
     expect(renewed.body.recoveryCodes).not.toContain(confirmed.body.recoveryCodes[1]);
     await agent.post('/api/account/two-factor').send({ password: PASSWORD }).expect(409);
     await agent.post('/api/account/two-factor/removal').send({ password: PASSWORD }).expect(204);
-    offsetMs += 60_000;
+    clock.moveMs(MINUTE_MS);
     await entry(email).expect(200);
   });
 
@@ -236,32 +145,6 @@ describe('two-factor sign-in', () => {
       [2_000_000_000, '279037'],
     ] as const;
     expect(printed.map(([epoch]) => generateSync({ secret, epoch }))).toEqual(printed.map(([, code]) => code));
-  });
-});
-
-describe('failing again and again', () => {
-  test('lets an account rest for an hour, known or not, until a new password by mail', async () => {
-    const { email } = await person();
-    const crypto = await import('node:crypto');
-    const fail = async (address: string) => {
-      await entry(address, { password: 'not this one' }).expect(401);
-      const hash = crypto.createHash('sha256').update(address).digest('hex');
-      // Stands for the many failures between.
-      await web.database.ownerDb.raw('update sign_in_failures set failures = 49 where account_hash = ?', [hash]);
-      await entry(address, { password: 'not this one' }).expect(401);
-      offsetMs += 60_000;
-    };
-    await fail(email);
-    await fail('unknown@example.org');
-    for (const address of [email, 'unknown@example.org']) {
-      const resting = await entry(address).expect(429);
-      expect(Number(resting.headers['retry-after'])).toBeGreaterThan(3000);
-    }
-    await web.browser().post('/api/password-reset/request').send({ email }).expect(204);
-    const key = await lastKeyTo(web.database, email);
-    const password = 'four words of a new kind';
-    await web.browser().post('/api/password-reset').send({ key, password }).expect(204);
-    await entry(email, { password }).expect(200);
   });
 });
 

@@ -1,4 +1,4 @@
-import { existsSync, mkdtempSync, readdirSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import knexPkg from 'knex';
@@ -125,6 +125,33 @@ describe('muslin rerun beside a database that runs', () => {
     expect(outcome).toMatchObject({ code: 0, stderr: '' });
     const printed = { to: 'ada@example.org', subject: 'Set a new password', text: 'the key', failure: null };
     expect(JSON.parse(outcome.stdout)).toMatchObject(printed);
+  });
+
+  it('verifies the audit trail as muslin audit verify, and holds it to what was kept of it', async () => {
+    const verify = (...args: string[]) =>
+      runCommand(['muslin', 'audit', 'verify', ...args], { env: { MUSLIN_HOME: homeDir } });
+    const whole = await verify();
+    expect(whole).toMatchObject({ code: 0 });
+    const lines = whole.stdout
+      .trim()
+      .split('\n')
+      .map((line) => JSON.parse(line));
+    expect(lines).toMatchObject([
+      { chain: 'outside of teams', state: 'whole', firstBroken: null },
+      { chain: 'Northern offices', state: 'whole', firstBroken: null },
+    ]);
+    const kept = path.join(homeDir, 'kept.jsonl');
+    writeFileSync(kept, whole.stdout);
+    await database.ownerDb.raw(`update audit_events set act = 'site made' where team_id is not null and position = 1`);
+    const outcome = await verify(kept);
+    expect(outcome).toMatchObject({ code: 1 });
+    const [, broken = ''] = outcome.stdout.trim().split('\n');
+    expect(JSON.parse(broken)).toMatchObject({
+      state: 'broken',
+      firstBroken: { position: 1, why: 'What it says is not what was written.' },
+    });
+    writeFileSync(kept, '{"events": 3}');
+    expect(await verify(kept)).toMatchObject({ code: 2, stderr: expect.stringContaining('line 1') });
   });
 
   it('leaves a run of another method to the release of that name', async () => {

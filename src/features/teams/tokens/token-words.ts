@@ -3,7 +3,10 @@ import type { ApiToken, TokenScope } from '../../../contract/tokens.ts';
 export const scopeWords: Readonly<Record<TokenScope, { title: string; meaning: string }>> = {
   'weather:upload': { title: 'Upload weather', meaning: 'files, several at once, and zip archives' },
   'weather:read': { title: 'Read weather', meaning: 'status and findings of files, years and stations' },
-  'results:read': { title: 'Read results', meaning: 'scores and ledgers of places' },
+  'results:read': {
+    title: 'Read results',
+    meaning: 'programmes, briefs, sites, scores, ledgers and runs, with their tables',
+  },
 };
 
 export const stateWord: Readonly<Record<ApiToken['state'], string>> = {
