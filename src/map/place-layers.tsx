@@ -108,7 +108,9 @@ interface NamesProps extends MarksProps {
  * clear of them.
  */
 export function PlaceNames({ kind, places, raised }: NamesProps) {
-  const data = useMemo(() => nameFeatures(places), [places]);
+  const isNear = useIsNear(NAMES_FROM_ZOOM);
+  const shown = places.length > MOST_NAMED && !isNear ? NOBODY : places;
+  const data = useMemo(() => nameFeatures(shown), [shown]);
   const source = `${kind}-names`;
   useRaisedState(source, raised);
   return (

@@ -3,6 +3,7 @@ import * as maplibregl from 'maplibre-gl';
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?url';
 import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
 import { type MapLayerMouseEvent, type MapRef, Map as MapView } from 'react-map-gl/maplibre';
+import { isDrawnInSoftware } from './drawn-in-software.ts';
 import { boxAround } from './fit-stations.ts';
 import { GraticuleLayer } from './graticule-layer.tsx';
 import { ITALIC, mapFonts, ROMAN } from './map-fonts.ts';
@@ -78,7 +79,7 @@ export function SheetMap(props: SheetMapProps) {
   usePictures(map);
   useMarkInks(map, MARK_SOURCES.station, { places: stations, inks });
   useMarkInks(map, MARK_SOURCES.site, { places: sites, inks });
-  useIdleMark(map, wrapper);
+  useIdleMark(map, { wrapper, source: MARK_SOURCES.station });
   useTellView(map, props.onView);
   useFollowCamera(map, props.camera);
   const fitAll = useFit(map, { places: useAll(stations, sites), furniture, isPlaced: props.camera !== null });
@@ -127,7 +128,8 @@ export function SheetMap(props: SheetMapProps) {
             touchPitch={false}
             pitchWithRotate={false}
             attributionControl={false}
-            fadeDuration={lessMotion() ? 0 : FADE_MS}
+            fadeDuration={lessMotion() || isDrawnInSoftware() ? 0 : FADE_MS}
+            {...(isDrawnInSoftware() ? { pixelRatio: 1 } : {})}
             locale={WORDS}
             cursor={heldAt !== null ? 'grabbing' : pointed === null ? 'grab' : 'pointer'}
             onLoad={({ target }) => target.touchZoomRotate.disableRotation()}

@@ -1,11 +1,13 @@
 /**
  * What a planner waits for with 3,000 stations and 10,000 sites: `npx tsx tests/bench/planners-day.ts`. The product's own web application
- * over HTTP with compression, a database of its own; time by the clock and of this process's processor, client included, with the share of the machine that others left idle.
+ * over HTTP with compression, a database of its own; time by the clock and of this process's processor, client included, with the share of the machine that others left idle;
+ * then the same in a browser that draws in software.
  */
 import http from 'node:http';
 import path from 'node:path';
 import { gunzipSync } from 'node:zlib';
 import { createApp, makeWebThreads } from '../../server/app.ts';
+import { buildClient } from '../../server/cli/build-client.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
 import { makePerson } from '../../server/features/accounts/make-person.ts';
 import { newestBriefVersionIds } from '../../server/features/briefs/brief-read-model.ts';
@@ -19,6 +21,7 @@ import { createFolderStore } from '../../server/storage/folder-store.ts';
 import { keepLog } from '../support/quiet-log.ts';
 import { countProcessor, idleShare } from './machine-idle.ts';
 import { makeManyPlaces } from './many-places.ts';
+import { measureScreen } from './planners-screen.ts';
 import { fillWithClimates, withEmptyTeam } from './station-year-cluster.ts';
 
 const STATIONS = 3000;
@@ -52,9 +55,10 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
   const log = keepLog();
   const feed = await openTeamFeed({ databaseUrl, log });
   const threads = makeWebThreads();
+  const { dir: clientDir } = await buildClient(path.resolve(import.meta.dirname, '../..'));
   const app = createApp(
     {
-      ...{ db, databaseUrl, feed, log, uploadsDir: home, clientDir: null, trustProxy: 'loopback' },
+      ...{ db, databaseUrl, feed, log, uploadsDir: home, clientDir, trustProxy: 'loopback' },
       now: () => new Date(),
       storage: createFolderStore(path.join(home, 'originals')),
       sessionSecrets: ['a session secret for measuring'],
@@ -91,6 +95,9 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
   await measure('the table of sites by score', () =>
     ask({ method: 'GET', path: `${programme}/sites?sort=score&order=desc` }),
   );
+  await measureScreen({ origin: `http://127.0.0.1:${port}`, email, password, print });
+  if (process.env.MUSLIN_BENCH_STAYS === 'yes')
+    await new Promise(() => print(`stays at http://127.0.0.1:${port}, ${email}, ${password}`));
   for (const error of log.errors) print(JSON.stringify(error));
   await new Promise((resolve) => server.close(resolve));
   await threads.close();

@@ -12,8 +12,8 @@ interface Chunk {
 export interface FirstLoad {
   /** Scripts and styles of the shell, gzip, bytes. */
   readonly shell: number;
-  /** What a route adds to the shell. */
-  route(module: string): number;
+  /** What a route of these modules adds to the shell. */
+  route(...modules: readonly string[]): number;
   /** One file that the browser starts by itself, such as a worker. */
   file(part: string): number;
 }
@@ -40,7 +40,10 @@ export function firstLoad(clientDir: string): FirstLoad {
   const shell = filesOf('index.html');
   return {
     shell: sum(shell),
-    route: (module) => sum([...filesOf(module)].filter((file) => !shell.has(file))),
+    route: (...modules) => {
+      const files = new Set(modules.flatMap((module) => [...filesOf(module)]));
+      return sum([...files].filter((file) => !shell.has(file)));
+    },
     file: (part) => sizeOf(chunkOf(Object.keys(manifest).find((key) => key.includes(part)) ?? part).file),
   };
 }

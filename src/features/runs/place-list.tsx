@@ -1,9 +1,9 @@
-import { lazy, Suspense, useEffect, useMemo, useRef } from 'react';
+import { type UIEvent, useEffect, useMemo, useRef, useState } from 'react';
 import { Input, ListBox, ListBoxItem, SearchField } from 'react-aria-components';
-import { plural } from '../../lib/format.ts';
+import { number, plural } from '../../lib/format.ts';
 import type { PlaceKind } from '../../map/sheet-place.ts';
 import type { MapPlace } from './map-places.ts';
-import { filterByName, type RankedPlace, rankedPlaces } from './ranked-places.ts';
+import { filterByName, firstOfRanked, type RankedPlace, rankedPlaces } from './ranked-places.ts';
 import { noScoreWords } from './run-words.ts';
 
 interface PlaceListProps {
@@ -20,11 +20,10 @@ interface PlaceListProps {
   readonly isBehind: boolean;
 }
 
-const LongList = lazy(async () => ({ default: (await import('./long-list.tsx')).LongList }));
-
-/** From here on only the rows in view are put into the page. */
-const MOST_WHOLE = 200;
-const ROW_PX = 33;
+/** Rows that stand in the list at first, and how many come when its end is near. */
+const FIRST_ROWS = 60;
+const MORE_ROWS = 200;
+const NEAR_END_PX = 240;
 
 /** Places by score: arrow keys go along the list, Enter chooses, the field above it looks for a name. */
 export function PlaceList(props: PlaceListProps) {
@@ -33,9 +32,20 @@ export function PlaceList(props: PlaceListProps) {
   const box = useRef<HTMLDivElement>(null);
   useEffect(() => bringIntoView(box.current, chosenId), [chosenId]);
   const found = useMemo(() => filterByName(ranked, typed), [ranked, typed]);
-  const items = useMemo(() => found.map((entry) => ({ ...entry, id: entry.place.id })), [found]);
+  // What is looked for anew begins at its first rows.
+  const [read, setRead] = useState({ typed, count: FIRST_ROWS });
+  const count = read.typed === typed ? read.count : FIRST_ROWS;
+  const items = useMemo(
+    () => firstOfRanked(found, { count, chosenId }).map((entry) => ({ ...entry, id: entry.place.id })),
+    [found, count, chosenId],
+  );
+  const readOn = ({ currentTarget: { scrollHeight, scrollTop, clientHeight } }: UIEvent<HTMLElement>) => {
+    if (count < found.length && scrollHeight - scrollTop - clientHeight < NEAR_END_PX)
+      setRead({ typed, count: count + MORE_ROWS });
+  };
   const list = (
     <ListBox
+      onScroll={readOn}
       ref={box}
       aria-label={kind === 'site' ? 'Sites by score' : 'Stations by score'}
       items={items}
@@ -68,13 +78,12 @@ export function PlaceList(props: PlaceListProps) {
       <p role="status" className="sr-only">
         {typed === '' ? '' : `${plural(found.length, kind)} found`}
       </p>
-      {items.length > MOST_WHOLE ? (
-        <Suspense>
-          <LongList rowPx={ROW_PX}>{list}</LongList>
-        </Suspense>
-      ) : (
-        list
-      )}
+      {list}
+      {count < found.length ? (
+        <p className="pt-1 text-fine text-soft">
+          {`The first ${number(count)} of ${number(found.length)}; more come as you scroll.`}
+        </p>
+      ) : null}
     </section>
   );
 }

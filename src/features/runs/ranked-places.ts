@@ -55,6 +55,15 @@ export function filterByName(places: readonly RankedPlace[], typed: string): rea
   });
 }
 
+/** The first so many, and after them the chosen one where it stands further down: a list of thousands costs what is read of it. */
+export function firstOfRanked(
+  places: readonly RankedPlace[],
+  { count, chosenId }: { readonly count: number; readonly chosenId: string | null },
+): readonly RankedPlace[] {
+  const chosen = places.findIndex(({ place }) => place.id === chosenId);
+  return [...places.slice(0, count), ...(chosen >= count ? places.slice(chosen, chosen + 1) : [])];
+}
+
 function plain(text: string): string {
   return text.normalize('NFD').replace(/\p{M}/gu, '').toLowerCase();
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { MapPlace } from '../../../src/features/runs/map-places.ts';
-import { filterByName, rankedPlaces } from '../../../src/features/runs/ranked-places.ts';
+import { filterByName, firstOfRanked, rankedPlaces } from '../../../src/features/runs/ranked-places.ts';
 import { yearFigures } from '../../support/figures-of-place.ts';
 
 function station(name: string, score: number | null, grade: MapPlace['grade'] = 'C'): MapPlace {
@@ -36,6 +36,19 @@ describe('stations by score', () => {
       [1, 'Wet'],
       [null, 'None'],
     ]);
+  });
+});
+
+describe('the part of a long ranking that is listed', () => {
+  const all = rankedPlaces(Array.from({ length: 500 }, (_none, at) => station(`Place ${at}`, 500 - at)));
+  const names = (asked: Parameters<typeof firstOfRanked>[1]) =>
+    firstOfRanked(all, asked).map(({ place, rank }) => `${rank} ${place.name}`);
+
+  it('are its first places, and the chosen one once, wherever it stands', () => {
+    expect(names({ count: 3, chosenId: null })).toEqual(['1 Place 0', '2 Place 1', '3 Place 2']);
+    expect(names({ count: 3, chosenId: 'Place 1' })).toHaveLength(3);
+    expect(names({ count: 2, chosenId: 'Place 499' })).toEqual(['1 Place 0', '2 Place 1', '500 Place 499']);
+    expect(names({ count: 900, chosenId: 'Place 499' })).toHaveLength(500);
   });
 });
 

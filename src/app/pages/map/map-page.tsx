@@ -1,4 +1,5 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
+import { lazy, Suspense } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import type { ProgrammeMap } from '../../../contract/programme-map.ts';
 import { mapQuery } from '../../../features/runs/run-queries.ts';
@@ -10,7 +11,11 @@ import { useTeam } from '../../../lib/team-scope.ts';
 import { Button, buttonLook } from '../../../ui/button.tsx';
 import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
-import { MapSheet } from './map-sheet.tsx';
+
+// The engine of the map is the largest part of the page: it comes while the places are asked for.
+const sheet = import('./map-sheet.tsx');
+sheet.catch(() => undefined);
+const MapSheet = lazy(async () => ({ default: (await sheet).MapSheet }));
 
 export function MapPage() {
   const { teamId, role, programmes } = useTeam();
@@ -28,7 +33,11 @@ export function MapPage() {
       {map.data && map.data.stations.length === 0 ? (
         <EmptyMap map={map.data} mayUpload={role === 'engineer' || role === 'lead'} />
       ) : null}
-      {map.data && map.data.stations.length > 0 ? <MapSheet ids={ids} map={map.data} /> : null}
+      {map.data && map.data.stations.length > 0 ? (
+        <Suspense fallback={<Loading what="the map" />}>
+          <MapSheet ids={ids} map={map.data} />
+        </Suspense>
+      ) : null}
     </>
   );
 }
