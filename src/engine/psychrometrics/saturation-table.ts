@@ -57,8 +57,11 @@ export function tabledSlopePaPerK(tempC: number): number {
   return NODES_PER_K * (table[2 * (saturationPlace(inside) | 0) + 1] ?? 0);
 }
 
-/** Pressures of the first look for a dew point: as 32-bit numbers cut after the exponent and 6 binary places, some 64 per doubling. */
-const CUT_BITS = 17;
+/**
+ * Pressures of the first look for a dew point: as 32-bit numbers cut after the exponent and 10 binary places, 1024 per doubling. That is
+ * some six to a node, so that hardly any look has to go on to the next node, which no processor could foretell.
+ */
+const CUT_BITS = 13;
 const asNumber = new Float32Array(1);
 const asBits = new Int32Array(asNumber.buffer);
 const FIRST_TABLED_PA = table[0] ?? 0;

@@ -8,9 +8,10 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import type { Brief, Stage } from '#engine/brief/brief.ts';
 import { hourClasses } from '#engine/hour-classes/hour-class.ts';
-import { type JudgedHour, judgeHours } from '#engine/run/judged-year.ts';
+import type { HourColumns } from '#engine/run/hour-columns.ts';
+import { judgeHours } from '#engine/run/judged-year.ts';
 import { presetBrief, presetNames } from '../../support/presets.ts';
-import { propertySettings } from '../../support/sample-size.ts';
+import { propertySettings, samples } from '../../support/sample-size.ts';
 import { type Climate, climateHeightM, climates, climateYear } from '../../support/synthetic-climates.ts';
 
 const ROOMS = ['school', 'office', 'clinic', 'glasshouse', 'broiler'];
@@ -18,48 +19,59 @@ const OTHER_USES = ['hall-recommended', 'hall-allowable', 'process-water', 'turb
 const INDEX_LIMITS = ['dairy', 'warehouse'];
 /** A third of the climates, from frost to steam, for uses with demand at every hour. */
 const SOME_CLIMATES = climates.filter((_climate, place) => [0, 4, 7].includes(place));
+/** One by one takes its time: a month of each season, in the soak the whole year. */
+const MONTHS: Brief['months'] = samples(4, 12) === 12 ? 'all' : [1, 4, 7, 10];
 const NUMBERS_APART = 1e-4;
 
 /** Hours whose class or mark differs, and figures further apart than the tables explain. */
 function compare(climate: Climate, brief: Brief, numbersApart = NUMBERS_APART) {
   const position = { latitude: 35, longitude: 10 };
   const input = { year: climateYear(climate), brief, zone: climate.zone, heightM: climateHeightM(climate), position };
-  const inOnePass = judgeHours(input);
-  const oneByOne = judgeHours(input, { oneByOne: true });
+  const { hours: fast, classCodes } = judgeHours(input);
+  const slow = judgeHours(input, { oneByOne: true }).hours;
   const differing: string[] = [];
   const apart: string[] = [];
-  for (const [index, slow] of oneByOne.demandHours.entries()) {
-    const fast = inOnePass.demandHours[index];
-    if (fast === undefined || marksOf(fast) !== marksOf(slow)) {
-      differing.push(`${climate.name}: ${fast && marksOf(fast)}, one by one ${marksOf(slow)}`);
-    } else if (farthest(figuresOf(fast), figuresOf(slow)) > numbersApart) {
-      apart.push(`${climate.name}: ${figuresOf(fast)}, one by one ${figuresOf(slow)}`);
+  if (fast.count !== slow.count) differing.push(`${climate.name}: ${fast.count} hours, one by one ${slow.count}`);
+  for (let at = 0; at < slow.count; at++) {
+    if (MARKS.some((name) => fast[name][at] !== slow[name][at])) {
+      differing.push(`${climate.name}: ${marksAt(fast, at)}, one by one ${marksAt(slow, at)}`);
+      continue;
+    }
+    const name = FIGURES.find(
+      (figure) => !agrees(fast[figure][at], slow[figure][at], SCALES[figure] ?? 1, numbersApart),
+    );
+    if (name !== undefined) {
+      apart.push(`${climate.name}, slot ${slow.slot[at]}: ${name} ${fast[name][at]}, one by one ${slow[name][at]}`);
     }
   }
-  const classes = new Set([...inOnePass.classCodes].map((code) => hourClasses[code] ?? ''));
-  return { hours: oneByOne.demandHours.length, differing, apart, classes };
+  const classes = new Set([...new Set(classCodes)].map((code) => hourClasses[code] ?? ''));
+  return { hours: slow.count, differing, apart, classes };
 }
 
-function marksOf({ slot, judgement }: JudgedHour): string {
-  const { hourClass, met, dampBy, airMeets, running, aloneMet } = judgement;
-  return [slot, hourClass, met, dampBy, airMeets, running, ...aloneMet.toSorted()].join(' ');
+const MARKS = ['slot', 'classCode', 'met', 'damp', 'airMeets', 'running', 'aloneMet'] as const;
+const FIGURES = [
+  ...(['setC', 'supplyAimC', 'loadFraction', 'volumeM3PerKg'] as const),
+  ...(['shortfallK', 'uncappedShortfallK', 'airSupplyC', 'carriedShare', 'waterC'] as const),
+  ...(['supplyC', 'supplyRatio', 'evaporatedKgPerKg', 'share'] as const),
+  ...(['evaporatedLitres', 'makeUpLitres', 'coolingKwh', 'kwh', 'referenceKwh', 'backUpKw'] as const),
+];
+/** Humidity ratios are small: a hundred times as much is held to the same. */
+const SCALES: Readonly<Partial<Record<(typeof FIGURES)[number], number>>> = {
+  supplyRatio: 100,
+  evaporatedKgPerKg: 100,
+};
+
+function marksAt(hours: HourColumns, at: number): string {
+  return MARKS.map((name) => (name === 'classCode' ? hourClasses[hours.classCode[at] ?? 0] : hours[name][at])).join(
+    ' ',
+  );
 }
 
-function figuresOf({ hour, judgement, plant }: JudgedHour): readonly number[] {
-  const { shortfallK, uncappedShortfallK, airSupplyC, supply, carriedShare, waterC } = judgement;
-  return [
-    ...[hour.setC, hour.supplyAimC, hour.loadFraction, hour.outdoor.volumeM3PerKg],
-    ...[shortfallK, uncappedShortfallK, airSupplyC, carriedShare, waterC ?? -99],
-    ...[supply.tempC, 100 * (supply.humidityRatio ?? -1), 100 * supply.evaporatedKgPerKg, supply.share],
-    ...[plant.makeUpLitres, plant.coolingKwh, plant.kwh ?? -1, plant.referenceKwh ?? -1, plant.backUpKw],
-    // Of what does not apply, such as the set-point under an index, that it does not in both.
-  ].map((figure) => (Number.isNaN(figure) ? -99 : figure));
-}
-
-function farthest(one: readonly number[], other: readonly number[]): number {
-  const apart = (value: number, index: number) =>
-    Math.abs(value - (other[index] ?? Number.POSITIVE_INFINITY)) / Math.max(1, Math.abs(value));
-  return Math.max(...one.map(apart));
+/** NaN stands for what does not apply, such as the set-point under an index, and then must in both. */
+function agrees(one: number | undefined, other: number | undefined, scale: number, numbersApart: number): boolean {
+  if (one === undefined || other === undefined) return false;
+  if (Number.isNaN(one) || Number.isNaN(other)) return Number.isNaN(one) && Number.isNaN(other);
+  return Math.abs(scale * (one - other)) <= numbersApart * Math.max(1, Math.abs(scale * one));
 }
 
 const anyPlant = {
@@ -82,22 +94,30 @@ const anyPlant = {
   ),
 };
 
+/** The preset in some months of those in which it is open. */
+function seasons(preset: string): Brief {
+  const { months } = presetBrief(preset);
+  if (MONTHS === 'all') return presetBrief(preset);
+  return presetBrief(preset, { months: months === 'all' ? MONTHS : months.slice(0, MONTHS.length) });
+}
+
 describe('years judged in one pass', () => {
   test.each(ROOMS)('are, of rooms, class by class those judged one by one, on ten climates under %s', (preset) => {
-    const found = climates.map((climate) => compare(climate, presetBrief(preset)));
+    const found = climates.map((climate) => compare(climate, seasons(preset)));
     expect(found.flatMap(({ differing }) => differing).slice(0, 5)).toEqual([]);
     expect(found.flatMap(({ apart }) => apart).slice(0, 5)).toEqual([]);
-    expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(9000);
+    expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(samples(3000, 9000));
     expect(new Set(found.flatMap(({ classes }) => [...classes])).size).toBeGreaterThan(5);
   });
 
   test.each(OTHER_USES)('so are those of other uses, figure by figure, under %s', (preset) => {
     for (const control of ['modulating', 'on-off'] as const) {
-      const brief = presetBrief(preset, { control, startRoomTempC: preset === 'turbine-inlet' ? 18 : null });
+      const startRoomTempC = preset === 'turbine-inlet' ? 18 : null;
+      const brief = presetBrief(preset, { control, startRoomTempC, months: MONTHS });
       const found = SOME_CLIMATES.map((climate) => compare(climate, brief));
       expect(found.flatMap(({ differing }) => differing).slice(0, 5)).toEqual([]);
       expect(found.flatMap(({ apart }) => apart).slice(0, 5)).toEqual([]);
-      expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(8000);
+      expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(samples(2700, 8000));
     }
   });
 
@@ -127,7 +147,7 @@ describe('years judged in one pass', () => {
         expect(found.apart.slice(0, 3)).toEqual([]);
       },
     );
-    fc.assert(property, propertySettings(15, 1000));
+    fc.assert(property, propertySettings(10, 1000));
   });
 
   test('are so for plant, caps and control of any kind', () => {
@@ -144,7 +164,7 @@ describe('years judged in one pass', () => {
       differing.push(...found.differing);
       expect(found.apart.slice(0, 3)).toEqual([]);
     });
-    fc.assert(property, propertySettings(60, 1000));
+    fc.assert(property, propertySettings(36, 1000));
     expect(hours).toBeGreaterThan(5000);
     // Tables are 2 millionths off a pressure: once in some 200,000 hours that turns a figure's rounding to hundredths.
     expect(differing.length, differing.slice(0, 5).join('; ')).toBeLessThanOrEqual(Math.ceil(hours / 50_000));

@@ -12,10 +12,17 @@ const { slot, dryBulbC, humidityRatio, pressurePa } = block;
 const { wetBulbC, entersC, mediumWetC } = room;
 
 /**
- * What a stage that wets the supply begins with in the hours of a list: outdoor air, or that air cooled by an indirect stage at full
- * effect, and the wet bulb of either.
+ * What a stage that wets the supply begins with in the hours that outdoor air does not meet, or in those that nothing meets: outdoor air,
+ * or that air cooled by an indirect stage at full effect, and the wet bulb of either.
  */
-export function enterMedium(plan: RoomPlan, stage: number, { places, count }: HourList, wetBulbs: WetBulbs): void {
+export function enterMediumWhenWet(plan: RoomPlan, wetBulbs: WetBulbs, _nth: number, stage: number): void {
+  enterMedium(plan, stage, room.wet, wetBulbs);
+}
+export function enterMediumWhenUnmet(plan: RoomPlan, wetBulbs: WetBulbs, _nth: number, stage: number): void {
+  enterMedium(plan, stage, room.wettable, wetBulbs);
+}
+
+function enterMedium(plan: RoomPlan, stage: number, { places, count }: HourList, wetBulbs: WetBulbs): void {
   const { effIndirect } = plan;
   const secondBulbs = wetBulbs.secondWetBulbC;
   for (let index = 0; index < count; index++) {

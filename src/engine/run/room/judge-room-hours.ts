@@ -21,19 +21,17 @@ import { findLowestSupplies } from './lowest-supply.ts';
 import { meetByAir } from './meet-by-air.ts';
 import { meetByStages } from './meet-by-stages.ts';
 import type { RoomPlan } from './room-plan.ts';
+import { type RoomLoop, runLoop } from './run-loop.ts';
 import type { WetBulbs } from './wet-bulbs-of-year.ts';
 
-type Step = (plan: RoomPlan, wetBulbs: WetBulbs) => void;
-
-/** Called from one place, so that the compiler makes each step a program of its own: put into one, their loops run a few percent slower. */
-const steps: readonly Step[] = [beginAsMet, meetByAir, meetByStages, findLowestSupplies, judgeUnmet];
+const steps: readonly RoomLoop[] = [beginAsMet, meetByAir, meetByStages, findLowestSupplies, judgeUnmet];
 
 /**
  * Judges the hours of `block` as `meetDemandHours` leaves them; the rest is filled in.
  * @param wetBulbs of the same year
  */
 export function judgeRoomHours(plan: RoomPlan, wetBulbs: WetBulbs): void {
-  for (const step of steps) step(plan, wetBulbs);
+  for (const step of steps) runLoop(step, plan, wetBulbs, 0);
 }
 
 function beginAsMet(): void {

@@ -12,7 +12,7 @@ import { vapourPressurePa } from '../../psychrometrics/moist-air.ts';
 import { tabledDewPointC } from '../../psychrometrics/saturation-table.ts';
 import { block } from '../hour-block.ts';
 import { runningStages } from '../hour-columns.ts';
-import { enterMedium } from './enter-medium.ts';
+import { enterMediumWhenUnmet } from './enter-medium.ts';
 import { findMoistEdges } from './moist-edge.ts';
 import {
   capsHoldOnWarmSupply,
@@ -24,6 +24,7 @@ import {
 } from './room-caps.ts';
 import { room } from './room-hours.ts';
 import { isMoist, type RoomPlan } from './room-plan.ts';
+import { runLoop } from './run-loop.ts';
 import { dewPointFallK, indirectFallK, lineBottom, lineTop, ratioOnLine, shareFor } from './supply-lines.ts';
 import type { WetBulbs } from './wet-bulbs-of-year.ts';
 
@@ -41,15 +42,16 @@ const { places: wettable } = room.wettable;
 const { places: lines } = room.lines;
 
 export function findLowestSupplies(plan: RoomPlan, wetBulbs: WetBulbs): void {
-  beginWithAir(plan);
-  if (!plan.onOff) findDryEdges(plan);
+  runLoop(beginWithAir, plan, wetBulbs, 0);
+  if (!plan.onOff) runLoop(findDryEdges, plan, wetBulbs, 0);
   for (let turn = 0; turn < plan.dryFirst.length; turn++) {
     const nth = plan.dryFirst[turn] ?? 0;
-    const stage = plan.stages[nth] ?? 0;
-    if (!isMoist(stage)) tryDry(plan, nth, stage);
+    if (!isMoist(plan.stages[nth] ?? 0)) runLoop(tryDry, plan, wetBulbs, nth);
     else {
-      enterMedium(plan, stage, room.wettable, wetBulbs);
-      tryMoist(plan, nth, stage);
+      runLoop(enterMediumWhenUnmet, plan, wetBulbs, nth);
+      runLoop(listLines, plan, wetBulbs, nth);
+      if (!plan.onOff) findMoistEdges(plan);
+      runLoop(tryMoist, plan, wetBulbs, nth);
     }
   }
 }
@@ -97,7 +99,7 @@ function findDryEdges(plan: RoomPlan): void {
 }
 
 /** A stage that adds no moisture, the nth of the brief. */
-function tryDry(plan: RoomPlan, nth: number, stage: number): void {
+function tryDry(plan: RoomPlan, _wetBulbs: WetBulbs, nth: number, stage: number): void {
   const { count } = room.wettable;
   const { onOff, effIndirect, effDewPoint } = plan;
   const risePerVolume = plan.riseKPerVolume[stage] ?? 0;
@@ -125,10 +127,8 @@ function tryDry(plan: RoomPlan, nth: number, stage: number): void {
   }
 }
 
-/** A stage that wets the supply, the nth of the brief: `entersC` and `mediumWetC` of `room` are its own. */
-function tryMoist(plan: RoomPlan, nth: number, stage: number): void {
-  listLines(plan, nth, stage);
-  if (!plan.onOff) findMoistEdges(plan);
+/** A stage that wets the supply, on the lines that are listed: `entersC` and `mediumWetC` of `room` are its own. */
+function tryMoist(plan: RoomPlan, _wetBulbs: WetBulbs, nth: number): void {
   const { count } = room.lines;
   const { onOff, effDirect } = plan;
   for (let index = 0; index < count; index++) {
@@ -147,7 +147,7 @@ function tryMoist(plan: RoomPlan, nth: number, stage: number): void {
 }
 
 /** Lists the hours in which such a stage may give a lower supply than the stages before it; on-off: in which it does. */
-function listLines(plan: RoomPlan, nth: number, stage: number): void {
+function listLines(plan: RoomPlan, _wetBulbs: WetBulbs, nth: number, stage: number): void {
   const { count } = room.wettable;
   const { onOff, effDirect } = plan;
   const risePerVolume = plan.riseKPerVolume[stage] ?? 0;

@@ -2,10 +2,11 @@ import { hundredths } from '../../conventions.ts';
 import { secondaryWaterKgPerKg } from '../../stages/indirect.ts';
 import { block } from '../hour-block.ts';
 import { runningStages } from '../hour-columns.ts';
-import { enterMedium } from './enter-medium.ts';
+import { enterMediumWhenWet } from './enter-medium.ts';
 import { capsHoldOnWarmSupply, ROUNDING_K } from './room-caps.ts';
 import { room } from './room-hours.ts';
 import { CLASS_OF_STAGE, isMoist, type RoomPlan } from './room-plan.ts';
+import { type RoomLoop, runLoop } from './run-loop.ts';
 import { dewPointFallK, indirectFallK, lineBottom, lineTop, ratioOnLine, shareFor } from './supply-lines.ts';
 import type { WetBulbs } from './wet-bulbs-of-year.ts';
 
@@ -30,19 +31,17 @@ const { places: unmetPlaces } = room.unmet;
  */
 export function meetByStages(plan: RoomPlan, wetBulbs: WetBulbs): void {
   for (let nth = 0; nth < plan.stages.length; nth++) {
-    const stage = plan.stages[nth] ?? 0;
-    if (isMoist(stage)) {
-      enterMedium(plan, stage, room.wet, wetBulbs);
-      tryMoist(plan, stage);
-    } else tryDry(plan, stage);
-    addWarm(plan);
-    meet(plan, stage);
+    const loops = isMoist(plan.stages[nth] ?? 0) ? loopsOfMoist : loopsOfDry;
+    for (let at = 0; at < loops.length; at++) runLoop(loops[at] ?? addWarm, plan, wetBulbs, nth);
   }
   listUnmet();
 }
 
+const loopsOfDry: readonly RoomLoop[] = [tryDry, addWarm, meet];
+const loopsOfMoist: readonly RoomLoop[] = [enterMediumWhenWet, tryMoist, addWarm, meet];
+
 /** A stage that adds no moisture. */
-function tryDry(plan: RoomPlan, stage: number): void {
+function tryDry(plan: RoomPlan, _wetBulbs: WetBulbs, _nth: number, stage: number): void {
   const { count } = room.wet;
   const { onOff, effIndirect, effDewPoint } = plan;
   const risePerVolume = plan.riseKPerVolume[stage] ?? 0;
@@ -79,7 +78,7 @@ function tryDry(plan: RoomPlan, stage: number): void {
 }
 
 /** A stage that wets the supply: `entersC` and `mediumWetC` of `room` are its own. */
-function tryMoist(plan: RoomPlan, stage: number): void {
+function tryMoist(plan: RoomPlan, _wetBulbs: WetBulbs, _nth: number, stage: number): void {
   const { count } = room.wet;
   const { onOff, effDirect, effIndirect } = plan;
   const risePerVolume = plan.riseKPerVolume[stage] ?? 0;
@@ -128,7 +127,7 @@ function addWarm(plan: RoomPlan): void {
 }
 
 /** The stage could meet these hours; it does where no other before it has. */
-function meet({ k }: RoomPlan, stage: number): void {
+function meet({ k }: RoomPlan, _wetBulbs: WetBulbs, _nth: number, stage: number): void {
   const { count } = room.meeting;
   const classOfStage = CLASS_OF_STAGE[stage] ?? 0;
   for (let index = 0; index < count; index++) {

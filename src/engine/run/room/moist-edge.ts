@@ -9,8 +9,6 @@ import { leavingWithRatioC, ratioOnLine } from './supply-lines.ts';
 const AIR_KJ_PER_KG_K = 1.006;
 const VAPOUR_KJ_PER_KG_K = 1.86;
 const MASS_RATIO = 0.621945;
-/** The chord lands within a kelvin; two steps leave some 0.00001 K. */
-const NEWTON_STEPS = 2;
 
 /** Constants of this module: see `hour-block.ts`. */
 const { humidityRatio: ratios, pressurePa: pressures, setC, supplyAimC } = block;
@@ -26,8 +24,10 @@ export function findMoistEdges(plan: RoomPlan): void {
   const { roomShare, supplyShare, supplyVapourPa } = plan;
   const { count } = room.lines;
   for (let index = 0; index < count; index++) edges[places[index] ?? 0] = Number.NEGATIVE_INFINITY;
-  if (roomShare !== Number.POSITIVE_INFINITY) raiseToRhCap(plan, true);
-  if (supplyShare !== Number.POSITIVE_INFINITY) raiseToRhCap(plan, false);
+  if (roomShare !== Number.POSITIVE_INFINITY) {
+    raiseToRhCap({ share: roomShare, addedRatio: plan.dwRoomKgKg, ofRoom: true });
+  }
+  if (supplyShare !== Number.POSITIVE_INFINITY) raiseToRhCap({ share: supplyShare, addedRatio: 0, ofRoom: false });
   if (supplyVapourPa !== Number.POSITIVE_INFINITY) raiseToDewPointCap(supplyVapourPa);
 }
 
@@ -50,21 +50,25 @@ function raiseToDewPointCap(supplyVapourPa: number): void {
  *
  * The chord and each step are loops of their own over all lines. Within a line every division waits for the one before it; of several
  * lines a processor works out several at once, but only where what it does for each is short.
- * @param ofRoom whether it is the cap on the room, whose air is warmer and has taken up moisture; else that on the supply itself
  */
-function raiseToRhCap(plan: RoomPlan, ofRoom: boolean): void {
-  const share = ofRoom ? plan.roomShare : plan.supplyShare;
-  const addedRatio = ofRoom ? plan.dwRoomKgKg : 0;
-  beginOnChords(share, addedRatio, ofRoom);
-  for (let step = 0; step < NEWTON_STEPS; step++) stepToCap(share, addedRatio, ofRoom);
-  for (let index = 0; index < room.crossing.count; index++) {
-    const at = crossing[index] ?? 0;
-    edges[at] = Math.max(edges[at] ?? 0, tried[at] ?? 0);
-  }
+function raiseToRhCap(cap: RhCap): void {
+  for (const loop of loopsToCap) loop(cap);
 }
 
+interface RhCap {
+  /** Vapour must stay under this share of saturation. */
+  readonly share: number;
+  /** Moisture that the air has taken up, kg/kg. */
+  readonly addedRatio: number;
+  /** Whether the cap is on the room, whose air is warmer; else on the supply itself. */
+  readonly ofRoom: boolean;
+}
+
+/** Called from one place, as in `run-loop.ts`; two steps from where the chord lands, within a kelvin, leave some 0.00001 K. */
+const loopsToCap: readonly ((cap: RhCap) => void)[] = [beginOnChords, stepToCap, stepToCap, raiseEdges];
+
 /** Lists the lines that cross the cap, each with a first guess into `triedC`; a line that lies over it altogether has no edge. */
-function beginOnChords(share: number, addedRatio: number, ofRoom: boolean): void {
+function beginOnChords({ share, addedRatio, ofRoom }: RhCap): void {
   const { count } = room.lines;
   let crossingCount = 0;
   for (let index = 0; index < count; index++) {
@@ -92,7 +96,7 @@ function beginOnChords(share: number, addedRatio: number, ofRoom: boolean): void
 }
 
 /** One step of Newton's method on every line that crosses the cap. */
-function stepToCap(share: number, addedRatio: number, ofRoom: boolean): void {
+function stepToCap({ share, addedRatio, ofRoom }: RhCap): void {
   const { count } = room.crossing;
   for (let index = 0; index < count; index++) {
     const at = crossing[index] ?? 0;
@@ -107,5 +111,12 @@ function stepToCap(share: number, addedRatio: number, ofRoom: boolean): void {
     const excess = pressurePa * (ratio + addedRatio) * perTotal - share * tabledSaturationPa(cappedC);
     const vapourSlope = pressurePa * MASS_RATIO * ratioSlope * perTotal * perTotal;
     tried[at] = edgeC - excess / (vapourSlope - share * tabledSlopePaPerK(cappedC));
+  }
+}
+
+function raiseEdges(): void {
+  for (let index = 0; index < room.crossing.count; index++) {
+    const at = crossing[index] ?? 0;
+    edges[at] = Math.max(edges[at] ?? 0, tried[at] ?? 0);
   }
 }
