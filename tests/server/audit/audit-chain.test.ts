@@ -82,6 +82,15 @@ describe('the chain of the audit trail', () => {
     expect(chains.get(otherTeamId)?.broken).toBeNull();
   });
 
+  it('is whole to whoever verifies it while more is written', async () => {
+    const writing = Promise.all(Array.from({ length: 60 }, () => write({ teamId })));
+    const found: unknown[] = [];
+    for (let i = 0; i < 5; i += 1) found.push((await verified()).get(teamId)?.broken ?? null);
+    await writing;
+    expect(found).toEqual([null, null, null, null, null]);
+    expect((await verified()).get(teamId)).toMatchObject({ events: 60, broken: null });
+  });
+
   it('takes nothing of an act that was taken back', async () => {
     await write({ teamId });
     const failing = inTransaction(database.db, async (transaction) => {
