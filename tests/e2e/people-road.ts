@@ -1,4 +1,4 @@
-/** J8 of the product in the browser, as far as people go: a lead invites, somebody joins, the lead changes a role and ends sessions. */
+/** J8 of the product in the browser, as far as people go: a lead invites, somebody joins, the lead changes a role, ends sessions and reads of it all. */
 import { generateSync } from 'otplib';
 import type { Browser, Page } from 'playwright-core';
 import { expect, onTestFailed } from 'vitest';
@@ -62,6 +62,16 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   await leads.page.goto(`/teams/${teamId}/team/programmes`);
   await leads.page.getByRole('list', { name: 'Programmes' }).getByRole('listitem').first().waitFor();
   await expectAccessible(leads.page, 'programmes');
+  await leads.page.getByRole('link', { name: 'Audit trail' }).click();
+  const ended = leads.page.getByRole('list', { name: 'Events' }).getByRole('listitem').first();
+  await ended.getByText('Sessions of a member ended').waitFor();
+  await expectAccessible(leads.page, 'the audit trail');
+  await expectNoSidewaysScroll(leads.page, 'the audit trail on a phone');
+  await leads.page.getByRole('link', { name: 'API', exact: true }).click();
+  await leads.page.locator('summary', { hasText: 'weather-batches' }).first().click();
+  await leads.page.getByRole('region', { name: 'What can go wrong' }).waitFor();
+  await expectAccessible(leads.page, 'the description of the API');
+  await expectNoSidewaysScroll(leads.page, 'the description of the API on a phone');
   await leads.close();
 
   await page.reload();

@@ -1,4 +1,7 @@
-/** Who may what: every endpoint against every kind of caller, with rows that are there, so that a refusal is one of rights. */
+/**
+ * Who may what: every endpoint against every kind of caller, with rows that are there, so that a refusal is one of rights. One long
+ * file, since every row of the table is tried on the same road, and a new endpoint is one row and perhaps one body.
+ */
 import http from 'node:http';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { demoWeatherFile } from '../../data/demo/demo-weather-file.ts';

@@ -158,7 +158,7 @@ async function waitingJobs({ ownerDb }: TestDatabase): Promise<number> {
 async function countRows({ ownerDb }: TestDatabase): Promise<Readonly<Record<string, number>>> {
   const tables = await ownerDb.raw<{ rows: { name: string }[] }>(
     `select quote_ident(schemaname) || '.' || quote_ident(tablename) as name from pg_tables
-     where (schemaname = 'public' and tablename not in ('sessions', 'request_counts', 'worker_pools'))
+     where (schemaname = 'public' and tablename not in ('sessions', 'request_counts', 'worker_pools', 'audit_chains'))
        or (schemaname = 'graphile_worker' and tablename = '_private_jobs')
      order by name`,
   );

@@ -58,7 +58,8 @@ export async function listEventsAfter(
 ): Promise<readonly StoredEvent[]> {
   const { rows } = await db.raw<{ rows: StoredEvent[] }>(
     `${EVENT}
-     where ${ofChain(after.teamId)} and (audit_events.position, audit_events.id) > (:position, cast(:id as bigint))
+     where ${ofChain(after.teamId)} and audit_events.position is not null and audit_events.position >= :position
+       and (audit_events.position, audit_events.id) > (:position, cast(:id as bigint))
      order by audit_events.position, audit_events.id limit :limit`,
     after,
   );

@@ -82,6 +82,18 @@ describe('the chain of the audit trail', () => {
     expect(chains.get(otherTeamId)?.broken).toBeNull();
   });
 
+  it('is whole to whoever verifies it while more is written', async () => {
+    await write({ teamId }, { teamId: otherTeamId });
+    const broken = new Map<string | null, unknown>();
+    for await (const { head, broken: found } of verifyTrail(database.db)) {
+      broken.set(head.teamId, found);
+      // The heads are known by now; the other team's chain, which comes later, grows past the head that was seen.
+      if (head.teamId === teamId) await write({ teamId: otherTeamId });
+    }
+    expect([broken.get(teamId), broken.get(otherTeamId)]).toEqual([null, null]);
+    expect((await verified()).get(otherTeamId)).toMatchObject({ events: 2, broken: null });
+  });
+
   it('takes nothing of an act that was taken back', async () => {
     await write({ teamId });
     const failing = inTransaction(database.db, async (transaction) => {

@@ -200,7 +200,7 @@ describe('a derived year', () => {
     expect(JSON.parse(text.toString('utf8'))).toMatchObject({ humidityRule: 'ratio-kept', parent: { fingerprint } });
     const { rows } = await road.db.raw(
       `select audit_events.act, audit_events.person_id as "personId", audit_events.subject
-       from audit_events where audit_events.subject ->> 'fileId' = ?`,
+       from audit_events where audit_events.subject ->> 'fileId' = ? order by audit_events.id`,
       [file.id],
     );
     expect(rows).toEqual([
@@ -214,6 +214,11 @@ describe('a derived year', () => {
           parentFileId: parentId,
           change: 'dry bulb +2.0 K in every month, days not stretched, humidity ratio kept',
         },
+      },
+      {
+        act: 'original downloaded',
+        personId: engineer.personId,
+        subject: { fileId: file.id, name: 'Two kelvin warmer', fingerprint: file.fingerprint },
       },
     ]);
     expect(await road.waitingUploads()).toEqual([]);
