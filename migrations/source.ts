@@ -9,8 +9,8 @@ import * as sites from './0006-sites.ts';
 import * as runFigures from './0007-run-figures.ts';
 import * as gazetteer from './0008-gazetteer.ts';
 import * as accounts from './0009-accounts.ts';
-import * as teamExports from './0012-team-exports.ts';
-import * as teamDeletions from './0013-team-deletions.ts';
+import * as teamData from './0012-team-data.ts';
+import * as teamRevisions from './0013-team-revisions.ts';
 
 const migrations = {
   '0001-first-light': firstLight,
@@ -22,8 +22,8 @@ const migrations = {
   '0007-run-figures': runFigures,
   '0008-gazetteer': gazetteer,
   '0009-accounts': accounts,
-  '0012-team-exports': teamExports,
-  '0013-team-deletions': teamDeletions,
+  '0012-team-data': teamData,
+  '0013-team-revisions': teamRevisions,
 } satisfies Record<string, Knex.Migration>;
 
 type MigrationName = keyof typeof migrations;
