@@ -62,6 +62,10 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   await leads.page.goto(`/teams/${teamId}/team/programmes`);
   await leads.page.getByRole('list', { name: 'Programmes' }).getByRole('listitem').first().waitFor();
   await expectAccessible(leads.page, 'programmes');
+  await leads.page.goto(`/teams/${teamId}/team/data`);
+  await leads.page.getByRole('button', { name: 'Delete the team' }).waitFor();
+  await expectAccessible(leads.page, 'export and deletion');
+  await expectNoSidewaysScroll(leads.page, 'export and deletion on a phone');
   await leads.close();
 
   await page.reload();
