@@ -10,8 +10,8 @@ import * as runFigures from './0007-run-figures.ts';
 import * as gazetteer from './0008-gazetteer.ts';
 import * as accounts from './0009-accounts.ts';
 import * as auditChain from './0010-audit-chain.ts';
-import * as teamExports from './0012-team-exports.ts';
-import * as teamDeletions from './0013-team-deletions.ts';
+import * as teamData from './0012-team-data.ts';
+import * as teamRevisions from './0013-team-revisions.ts';
 import * as designValues from './0014-design-values.ts';
 
 const migrations = {
@@ -25,8 +25,8 @@ const migrations = {
   '0008-gazetteer': gazetteer,
   '0009-accounts': accounts,
   '0010-audit-chain': auditChain,
-  '0012-team-exports': teamExports,
-  '0013-team-deletions': teamDeletions,
+  '0012-team-data': teamData,
+  '0013-team-revisions': teamRevisions,
   '0014-design-values': designValues,
 } satisfies Record<string, Knex.Migration>;
 

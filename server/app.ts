@@ -1,7 +1,7 @@
 /** The web side, wired: here alone the parts of the server meet. */
 import { availableParallelism } from 'node:os';
 import compression from 'compression';
-import express, { type Express, Router } from 'express';
+import express, { type Express, type RequestHandler, Router } from 'express';
 import type { Relief } from '#engine/weather-files/relief.ts';
 import type { Deps } from './deps.ts';
 import { sessionStands } from './features/accounts/account-store.ts';
@@ -29,7 +29,7 @@ import { findToken } from './features/teams/find-token.ts';
 import { makeTeam } from './features/teams/make-team.ts';
 import { teamsRoutes } from './features/teams/routes.ts';
 import { FIRST_PROGRAMME } from './features/teams/start-team.ts';
-import { findStanding } from './features/teams/team-read-model.ts';
+import { findSessionStanding, findStanding } from './features/teams/team-read-model.ts';
 import { filesOfStation } from './features/weather/files-of-station.ts';
 import { originalToRead } from './features/weather/original-to-read.ts';
 import { weatherRoutes } from './features/weather/routes.ts';
@@ -40,6 +40,7 @@ import { errorHandler, nothingHere } from './http/errors.ts';
 import { health } from './http/health.ts';
 import { originGuard } from './http/origin-guard.ts';
 import { beginRequest, type ServerTerms } from './http/request-state.ts';
+import { routesByShape } from './http/routes-by-shape.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { makeWebThreadsOf, type WebThreads } from './jobs/web-threads.ts';
 import { makeYearThread, type YearThread } from './jobs/year-thread.ts';
@@ -92,7 +93,7 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> =
 }
 
 /** Every endpoint of src/contract/endpoints.ts, by feature. */
-function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads & { relief: Relief }): Router {
+function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads & { relief: Relief }): RequestHandler {
   const router = Router();
   accountsRoutes(router, deps, {
     makeFirstTeam: (transaction, team) =>
@@ -116,7 +117,7 @@ function declaredRoutes(deps: Deps, { threads, yearThread, relief }: AppThreads 
     requirePassword: (given) => requirePassword(deps.db, given),
     readSession: (personId) => readSession(deps.db, { personId, at: deps.now() }),
   });
-  return router;
+  return routesByShape(router);
 }
 
 function peopleLookup({ db, now }: Deps): PeopleLookup {
@@ -127,6 +128,7 @@ function peopleLookup({ db, now }: Deps): PeopleLookup {
       return checkPassword({ db, dummyHash }, given);
     },
     findStanding: (personId) => findStanding(db, { personId, at: now() }),
+    findSession: (sessionId) => findSessionStanding(db, { sessionId, at: now() }),
     findToken: (token) => findToken(db, { token, at: now() }),
     sessionStands: (id) => sessionStands(db, { id, at: now() }),
   };

@@ -10,7 +10,8 @@ import { AppError } from './app-error.ts';
 import { bearerToken, isBearer } from './bearer.ts';
 import type { Actor, SessionControl, Standing, TokenActor } from './request-context.ts';
 import { stateOf } from './request-state.ts';
-import { SESSION_COOKIE, sessions } from './session.ts';
+import { sessions } from './session.ts';
+import { SESSION_COOKIE, sessionIdOf } from './session-cookie.ts';
 
 declare module 'express-session' {
   interface SessionData {
@@ -33,6 +34,8 @@ export interface PeopleLookup {
   checkPassword(given: { email: string; password: string }): Promise<string | null>;
   /** What the person is in which teams; null when there is no such person (any more). */
   findStanding(personId: string): Promise<Standing | null>;
+  /** Whose session it is, and what that person is in which teams; null when it has ended or expired. */
+  findSession(sessionId: string): Promise<({ readonly personId: string } & Standing) | null>;
   /** Whom a token stands for; null when it is not known, expired, revoked, or its maker may no longer give it. */
   findToken(token: string): Promise<TokenActor | null>;
   /** Whether the session has neither ended nor expired. */
@@ -78,8 +81,25 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     next();
   };
 
+  const actorOfSession = async (sessionId: string | null): Promise<Actor> => {
+    const found = sessionId === null ? null : await people.findSession(sessionId);
+    return found === null ? signedOut : { kind: 'person', ...found };
+  };
+
+  /** Nobody signs in or out with a request that changes nothing: one query tells who asks. */
+  const identifyReader: RequestHandler = async (request, _response, next) => {
+    if (isBearer(request) || !SAFE_METHODS.has(request.method)) return next();
+    const sessionId = sessionIdOf(request.headers.cookie, deps.sessionSecrets);
+    stateOf(request).identity = {
+      actor: await actorOfSession(sessionId),
+      session: { ...noSession, id: sessionId ?? '' },
+      lookAgain: () => actorOfSession(sessionId),
+    };
+    next();
+  };
+
   const identify: RequestHandler = async (request, response, next) => {
-    if (isBearer(request)) return next();
+    if (isKnown(request)) return next();
     const personId = request.user?.personId;
     const sessionId = request.sessionID;
     stateOf(request).identity = {
@@ -90,11 +110,13 @@ export function authentication(deps: Deps, people: PeopleLookup): RequestHandler
     next();
   };
 
-  const ofBrowsers = [sessions(deps), passport.session()].map(unlessBearer);
-  return [identifyToken, ...ofBrowsers, identify];
+  const ofBrowsers = [sessions(deps), passport.session()].map(unlessKnown);
+  return [identifyToken, identifyReader, ...ofBrowsers, identify];
 }
 
-/** A program is known by its token on every request. */
+const SAFE_METHODS = new Set(['GET', 'HEAD', 'OPTIONS']);
+
+/** Of a program, known by its token on every request, and of whoever only reads. */
 const noSession: SessionControl = {
   id: '',
   checkPassword: () => Promise.reject(tokenDoesNotSignIn()),
@@ -109,8 +131,12 @@ function tokenDoesNotSignIn(): AppError {
   );
 }
 
-function unlessBearer(handler: RequestHandler): RequestHandler {
-  return (request, response, next) => (isBearer(request) ? next() : handler(request, response, next));
+function unlessKnown(handler: RequestHandler): RequestHandler {
+  return (request, response, next) => (isKnown(request) ? next() : handler(request, response, next));
+}
+
+function isKnown(request: Request): boolean {
+  return stateOf(request).identity !== null;
 }
 
 function refuseTwoIdentities(request: Request): void {

@@ -8,6 +8,7 @@ import { answerFile, type FileAnswer } from './answer-file.ts';
 import { AppError } from './app-error.ts';
 import { authorise, policies } from './authorise.ts';
 import { addressBucket } from './client-address.ts';
+import { type KeptAnswers, sendKept } from './kept-answers.ts';
 import { COUNTED_IN_DATABASE_UP_TO, makeLocalCounter, spendShared } from './limits.ts';
 import { parseInput } from './parse-input.ts';
 import type { Actor, RequestContext, UploadedFile } from './request-context.ts';
@@ -39,13 +40,22 @@ interface Passage {
   /** Aborted when the client has gone, the server closes (events only) or the time is over. */
   readonly signal: AbortSignal;
   readonly handle: (input: unknown, context: RequestContext) => Promise<unknown>;
+  readonly readJson: express.RequestHandler;
+  readonly kept: KeptAnswers | null;
 }
 
 /**
  * Serves one declared endpoint: limits, authorise, parse, handle, answer. The handler sees only what is allowed and well
  * formed; the client sees only what is declared. Refuses a declaration that no rule guards, at start.
+ * @param kept where the answer hangs on the team's rows and the input alone, so that it is made once for a revision of the team
  */
-export function mount<E extends Endpoint>(router: Router, deps: Deps, endpoint: E, handler: Handler<E>): void {
+export function mount<E extends Endpoint>(
+  router: Router,
+  deps: Deps,
+  endpoint: E,
+  handler: Handler<E>,
+  kept: KeptAnswers | null = null,
+): void {
   if (!Object.hasOwn(policies, endpoint.allow))
     throw new Error(`${endpoint.method} ${endpoint.path}: nothing says who may ("${endpoint.allow}" has no rule).`);
   const spend = requestLimit(deps, endpoint);
@@ -60,17 +70,26 @@ export function mount<E extends Endpoint>(router: Router, deps: Deps, endpoint: 
     const over = abortWhenGone(response);
     const streams = endpoint.response.kind === 'events';
     const signal = streams ? AbortSignal.any([over.signal, server.closing]) : over.signal;
-    const passage: Passage = { endpoint, deps, request, response, identity, requestId, server, signal, handle };
-
-    await spend(bucketOf(endpoint, { actor: identity.actor, ip: request.ip ?? '' }));
-    authorise(endpoint.allow, { actor: identity.actor, params: textParams(request) });
-    const work = async () => {
-      if (endpoint.body.kind === 'json') await readBody(readJson, { request, response });
-      return pass(passage);
+    const passage: Passage = {
+      endpoint,
+      deps,
+      request,
+      response,
+      identity,
+      requestId,
+      server,
+      signal,
+      handle,
+      readJson,
+      kept,
     };
+
+    const { actor } = identity;
+    await spend(bucketOf(endpoint, { actor, ip: actor.kind === 'signed-out' ? (request.ip ?? '') : '' }));
+    authorise(endpoint.allow, { actor, params: textParams(request) });
     try {
-      if (streams) await work();
-      else await withinTime(work, { seconds: endpoint.limits.seconds, over, response });
+      if (streams) await pass(passage);
+      else await withinTime(() => pass(passage), { seconds: endpoint.limits.seconds, over, response });
     } finally {
       // Events that nobody reads any more are let go of, whyever their reading ended.
       if (streams) over.abort();
@@ -81,11 +100,17 @@ export function mount<E extends Endpoint>(router: Router, deps: Deps, endpoint: 
 async function pass(passage: Passage): Promise<void> {
   const { endpoint, request, response, signal, deps } = passage;
   const { body } = endpoint;
-  if (body.kind !== 'upload') return answer(passage, await passage.handle(parse(passage), contextOf(passage, [])));
+  if (body.kind === 'json') await readBody(passage.readJson, { request, response });
   const input = parse(passage);
+  if (passage.kept !== null && (await sendKept(passage, { input, text: () => textOfAnswer(passage, input) }))) return;
+  if (body.kind !== 'upload') return answer(passage, await passage.handle(input, contextOf(passage, [])));
   const receiving = { request, response, limits: body, folder: deps.uploadsDir, signal };
   const answered = await withUploads(receiving, (files) => passage.handle(input, contextOf(passage, files)));
   return answer(passage, answered);
+}
+
+async function textOfAnswer(passage: Passage, input: unknown): Promise<string> {
+  return JSON.stringify(parsedAnswer(passage, await passage.handle(input, contextOf(passage, []))));
 }
 
 function parse({ endpoint, request }: Passage): unknown {
@@ -113,12 +138,7 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
   response.setHeader('Cache-Control', 'no-store');
   switch (declared.kind) {
     case 'json': {
-      const parsed = declared.schema.safeParse(answered);
-      if (!parsed.success)
-        throw new Error(`The answer of ${endpoint.method} ${endpoint.path} is not what is declared.`, {
-          cause: parsed.error,
-        });
-      response.json(parsed.data);
+      response.json(parsedAnswer(passage, answered));
       return;
     }
     case 'none':
@@ -140,6 +160,15 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
         mayStillWatch: () => mayStill(passage),
       });
   }
+}
+
+/** The JSON of an answer, which holds nothing that is not declared. */
+function parsedAnswer({ endpoint }: Passage, answered: unknown): unknown {
+  if (endpoint.response.kind !== 'json') throw new Error(`${endpoint.path} does not answer JSON.`);
+  const parsed = endpoint.response.schema.safeParse(answered);
+  if (parsed.success) return parsed.data;
+  const message = `The answer of ${endpoint.method} ${endpoint.path} is not what is declared.`;
+  throw new Error(message, { cause: parsed.error });
 }
 
 /** Closes a stream that nobody will read. */

@@ -12,6 +12,8 @@ export interface Standing {
   readonly roles: ReadonlyMap<string, Role>;
   /** Programmes of these teams that are open to some members, and not to this person. */
   readonly closedProgrammes: ReadonlySet<string>;
+  /** Of each team a number that grows with every change of what its map and sites show; read before anything of the team is. */
+  readonly revisions: ReadonlyMap<string, string>;
 }
 
 /** A program with an API token: it acts for the person who made the token, within one team and the token's scopes. */

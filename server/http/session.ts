@@ -3,8 +3,7 @@ import type { RequestHandler } from 'express';
 import session from 'express-session';
 import type { Knex } from 'knex';
 import type { Deps } from '../deps.ts';
-
-export const SESSION_COOKIE = 'muslin_session';
+import { SESSION_COOKIE } from './session-cookie.ts';
 
 /** A session ends a week after it began, used or not. */
 export const SESSION_DAYS = 7;

@@ -6,7 +6,13 @@ import { readingKnowledge } from '../../server/builders/reading-knowledge.ts';
 import { acceptAs, receiveFromDisk } from '../../server/builders/weather-file-steps.ts';
 import { connect } from '../../server/db/connection.ts';
 import { inTransaction } from '../../server/db/in-transaction.ts';
-import { APP_LOGIN, databaseUrl, OWNER_LOGIN, prepareDatabase } from '../../server/db/prepare-database.ts';
+import {
+  APP_LOGIN,
+  type DatabaseServer,
+  databaseUrl,
+  OWNER_LOGIN,
+  prepareDatabase,
+} from '../../server/db/prepare-database.ts';
 import { makePerson } from '../../server/features/accounts/make-person.ts';
 import { startBrief } from '../../server/features/briefs/start-brief.ts';
 import { makeTeam } from '../../server/features/teams/make-team.ts';
@@ -39,13 +45,27 @@ export interface EmptyTeam extends StationYearCluster {
 export async function withEmptyTeam<T>(work: (team: EmptyTeam) => Promise<T>): Promise<T> {
   const home = await mkdtemp(path.join(tmpdir(), 'muslin-bench-'));
   const cluster = await startThrowawayCluster();
-  const { port, ownerPassword, appPassword } = cluster.server;
+  try {
+    return await withTeamIn(cluster.server, home, work);
+  } finally {
+    await cluster.stop();
+    await rm(home, { recursive: true, force: true });
+  }
+}
+
+/** Works with a team of its own in a cluster that runs. */
+export async function withTeamIn<T>(
+  server: DatabaseServer,
+  home: string,
+  work: (team: EmptyTeam) => Promise<T>,
+): Promise<T> {
+  const { port, ownerPassword, appPassword } = server;
   const urlOf = (name: string, password: string) =>
     databaseUrl({ login: { name, password }, port, database: DATABASE });
   let db: Knex | null = null;
   let ownerDb: Knex | null = null;
   try {
-    await prepareDatabase(cluster.server, DATABASE);
+    await prepareDatabase(server, DATABASE);
     const appUrl = urlOf(APP_LOGIN, appPassword);
     db = connect({ databaseUrl: appUrl, maxConnections: 1 });
     ownerDb = knexPkg.knex({ client: 'pg', connection: urlOf(OWNER_LOGIN, ownerPassword) });
@@ -54,8 +74,6 @@ export async function withEmptyTeam<T>(work: (team: EmptyTeam) => Promise<T>): P
   } finally {
     await db?.destroy();
     await ownerDb?.destroy();
-    await cluster.stop();
-    await rm(home, { recursive: true, force: true });
   }
 }
 

@@ -72,6 +72,10 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   await leads.page.getByRole('region', { name: 'What can go wrong' }).waitFor();
   await expectAccessible(leads.page, 'the description of the API');
   await expectNoSidewaysScroll(leads.page, 'the description of the API on a phone');
+  await leads.page.goto(`/teams/${teamId}/team/data`);
+  await leads.page.getByRole('button', { name: 'Delete the team' }).waitFor();
+  await expectAccessible(leads.page, 'export and deletion');
+  await expectNoSidewaysScroll(leads.page, 'export and deletion on a phone');
   await leads.close();
 
   await page.reload();

@@ -19,6 +19,7 @@ export const leadActor: Actor = {
   personId: '22222222-2222-4222-8222-222222222222',
   roles: new Map([[TEAM_ID, 'lead']]),
   closedProgrammes: new Set(),
+  revisions: new Map(),
 };
 
 const unused = async (): Promise<never> => {

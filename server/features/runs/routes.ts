@@ -14,7 +14,8 @@ import { METHOD_VERSION } from '#engine/conventions.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
 import { closedTo } from '../../http/closed-to.ts';
-import { mount } from '../../http/mount.ts';
+import { makeKeptAnswers } from '../../http/kept-answers.ts';
+import { type Handler, mount } from '../../http/mount.ts';
 import { takerOf } from '../../http/taker-of.ts';
 import { briefOfProgramme, presentBriefBasis } from './brief-basis.ts';
 import { makeColumnCache } from './column-cache.ts';
@@ -59,7 +60,7 @@ export function runsRoutes(
   const grounds = makeSurfaceGrounds(threads);
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
-  mount(router, deps, getMap, async ({ params: { teamId, programmeId }, query }) => {
+  const map: Handler<typeof getMap> = async ({ params: { teamId, programmeId }, query }) => {
     const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });
     const { stations, sites, pending } = await programmePlaces(db, { teamId, programmeId, brief });
     return {
@@ -70,7 +71,8 @@ export function runsRoutes(
       sites: sites.map(presentMapSite),
       pending,
     };
-  });
+  };
+  mount(router, deps, getMap, map, makeKeptAnswers());
 
   mount(router, deps, getSurface, async ({ params: { teamId, programmeId }, query }, { signal }) => {
     const brief = await briefOfProgramme(db, { teamId, programmeId, briefId: query.brief });

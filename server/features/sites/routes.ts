@@ -21,7 +21,8 @@ import {
 } from '#contract/sites.ts';
 import type { Deps } from '../../deps.ts';
 import { AppError } from '../../http/app-error.ts';
-import { mount } from '../../http/mount.ts';
+import { makeKeptAnswers } from '../../http/kept-answers.ts';
+import { type Handler, mount } from '../../http/mount.ts';
 import type { RequestContext } from '../../http/request-context.ts';
 import { takerOf } from '../../http/taker-of.ts';
 import { programmeExists } from '../briefs/version-read-model.ts';
@@ -70,7 +71,7 @@ export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts & SiteT
     if (!(await programmeExists(db, key))) throw new AppError('not_found', 'There is no such programme in this team.');
   };
 
-  mount(router, deps, listSites, async ({ params, query }) => {
+  const table: Handler<typeof listSites> = async ({ params, query }) => {
     await mustExist(params);
     const sites = await sitesOfProgramme(db, params);
     const figuresUnder = (some: readonly ResolvedSite[]) =>
@@ -87,7 +88,8 @@ export function sitesRoutes(router: Router, deps: Deps, parts: SiteParts & SiteT
       ...page,
       counts: { all: sites.length, filters: FilterCounts.parse(counts) },
     };
-  });
+  };
+  mount(router, deps, listSites, table, makeKeptAnswers());
   mount(router, deps, getSite, async ({ params }) => recordOf(params));
   mount(router, deps, makeEndpoint, async ({ params, body }, request) => {
     const siteId = await makeSite({ db, ...parts }, { ...params, ...body, ...act(request) });

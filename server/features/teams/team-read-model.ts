@@ -1,10 +1,13 @@
 import type { Knex } from 'knex';
 import type { Membership, Role } from '#contract/accounts.ts';
+import { preparedQuery } from '../../db/prepared-query.ts';
 
 /** As authorisation takes it. */
 interface Standing {
   readonly roles: ReadonlyMap<string, Role>;
   readonly closedProgrammes: ReadonlySet<string>;
+  /** Of each team a number that grows with every change of what its map and sites show. */
+  readonly revisions: ReadonlyMap<string, string>;
 }
 
 /** A programme is closed to members who are not among those that it is open to; never to a lead. */
@@ -37,21 +40,51 @@ export async function listMemberships(db: Knex, key: { personId: string; at: Dat
   }));
 }
 
+/** Asked with every request of a person: see `preparedQuery`. `$1` is the moment. */
+const STANDING = `select people.id as "personId", memberships.team_id as "teamId", memberships.role,
+    team_revisions.revision::text as revision,
+    array(select programmes.id from programmes
+          where programmes.team_id = memberships.team_id and not ${OPEN_PROGRAMME}) as closed
+  from people
+  left join memberships on memberships.person_id = people.id and ${STANDS.replace(':at', '$1')}
+  left join team_revisions on team_revisions.team_id = memberships.team_id`;
+
+interface StandingRow {
+  readonly personId: string;
+  readonly teamId: string | null;
+  readonly role: Role | null;
+  readonly revision: string | null;
+  readonly closed: readonly string[];
+}
+
 /** What a person is in which teams, and what is closed to the person there; `null` when there is no such person. */
 export async function findStanding(db: Knex, key: { personId: string; at: Date }): Promise<Standing | null> {
-  const { rows } = await db.raw<{ rows: { teamId: string | null; role: Role | null; closed: string[] }[] }>(
-    `select memberships.team_id as "teamId", memberships.role,
-       array(select programmes.id from programmes
-             where programmes.team_id = memberships.team_id and not ${OPEN_PROGRAMME}) as closed
-     from people
-     left join memberships on memberships.person_id = people.id and ${STANDS}
-     where people.id = :personId`,
-    key,
-  );
-  if (rows.length === 0) return null;
+  const text = `${STANDING} where people.id = $2`;
+  const rows = await preparedQuery<StandingRow>(db, { name: 'standing', text, values: [key.at, key.personId] });
+  return rows.length === 0 ? null : standingOf(rows);
+}
+
+/** The same of the person whose session it is; `null` when the session has ended or expired. */
+export async function findSessionStanding(
+  db: Knex,
+  key: { sessionId: string; at: Date },
+): Promise<({ personId: string } & Standing) | null> {
+  const text = `${STANDING}
+    join sessions on sessions.person_id = people.id and sessions.sid = $2 and sessions.expire >= $1 and sessions.expire >= now()`;
+  const rows = await preparedQuery<StandingRow>(db, {
+    name: 'session standing',
+    text,
+    values: [key.at, key.sessionId],
+  });
+  const [first] = rows;
+  return first === undefined ? null : { personId: first.personId, ...standingOf(rows) };
+}
+
+function standingOf(rows: readonly StandingRow[]): Standing {
   return {
     roles: new Map(rows.flatMap(({ teamId, role }) => (teamId === null || role === null ? [] : [[teamId, role]]))),
     closedProgrammes: new Set(rows.flatMap(({ closed }) => closed)),
+    revisions: new Map(rows.flatMap(({ teamId, revision }) => (teamId === null ? [] : [[teamId, revision ?? '0']]))),
   };
 }
 

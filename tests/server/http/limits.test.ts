@@ -50,6 +50,7 @@ const other: Actor = {
   kind: 'person',
   personId: '44444444-4444-4444-8444-444444444444',
   roles: new Map([[TEAM_ID, 'viewer']]),
+  revisions: new Map(),
   closedProgrammes: new Set(),
 };
 

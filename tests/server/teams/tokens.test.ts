@@ -42,7 +42,7 @@ describe('an API token', () => {
     for (const { kept } of rows) expect(kept).not.toContain(token.slice(7));
   });
 
-  it('lets a program upload nightly, read what was found, and read scores as JSON', async () => {
+  it('lets a program upload nightly, read what was found, and read scores as JSON (J7)', async () => {
     await road.startWorker();
     const { token } = await order(['weather:upload', 'weather:read', 'results:read']);
     const script = program(token);
