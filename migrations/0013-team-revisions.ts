@@ -5,6 +5,8 @@
  *
  * What the transaction wrote into the audit trail is chained first, whichever of the two a commit comes to first: so everybody locks the
  * head of a chain before the number, and no two commits can wait for one another.
+ *
+ * A later migration that changes rows of these tables and then the tables themselves says "set constraints all immediate" in between.
  */
 import type { Knex } from 'knex';
 
