@@ -1,7 +1,8 @@
 /**
  * A number for each team that grows with every change of what its map and its tables of sites show, so that an answer that was made
- * once can be told from one that is stale by a look at one row. It grows as a transaction commits, once, so that nobody waits for it
- * while others work; whoever reads the number before the rows can never take old rows for new.
+ * once can be told from one that is stale by a look at a row or two. It is a sum: each transaction adds one as it commits, in a slot that
+ * nobody else holds just now or in a new one, so that it never waits for anybody and can stand in no deadlock. Whoever reads the number
+ * before the rows can never take old rows for new.
  */
 import type { Knex } from 'knex';
 
@@ -17,14 +18,18 @@ export async function up(knex: Knex): Promise<void> {
   );
   await knex.raw(`
     create table team_revisions (
-      team_id uuid primary key references teams (id),
-      revision bigint not null
+      -- No reference, which would wait for whoever has locked the team.
+      team_id uuid not null,
+      slot uuid not null default gen_random_uuid(),
+      revision bigint not null,
+      primary key (team_id, slot)
     );
     grant select, insert, update on team_revisions to muslin_app;
 
     create function note_team_change() returns trigger language plpgsql as $body$
     declare
       changed uuid;
+      free uuid;
     begin
       if tg_table_name = 'teams' then
         changed := case tg_op when 'DELETE' then old.id else new.id end;
@@ -36,9 +41,15 @@ export async function up(knex: Knex): Promise<void> {
         return null;
       end if;
       perform set_config('muslin.change_noted', changed::text, true);
-      insert into public.team_revisions (team_id, revision)
-      select teams.id, 1 from public.teams where teams.id = changed and teams.ended_at is null
-      on conflict (team_id) do update set revision = team_revisions.revision + 1;
+      if not exists (select 1 from public.teams where teams.id = changed and teams.ended_at is null) then
+        return null;
+      end if;
+      select slot into free from public.team_revisions where team_id = changed limit 1 for update skip locked;
+      if found then
+        update public.team_revisions set revision = revision + 1 where team_id = changed and slot = free;
+      else
+        insert into public.team_revisions (team_id, revision) values (changed, 1);
+      end if;
       return null;
     end
     $body$;

@@ -93,7 +93,7 @@ describe('the map and the table of sites', () => {
     expect(rows.map(({ name }) => name).sort()).toEqual([...shown, 'weather_files', 'weather_years']);
     const revision = async () => {
       const found = await ownerDb.raw<{ rows: { revision: string }[] }>(
-        'select revision from team_revisions where team_id = ?',
+        'select sum(revision) as revision from team_revisions where team_id = ?',
         [teamId],
       );
       return Number(found.rows[0]?.revision);
@@ -105,8 +105,14 @@ describe('the map and the table of sites', () => {
       await transaction.raw(`update briefs set name = name`);
     });
     expect(await revision()).toBe(before + 1);
+    // While somebody else commits, in a slot of its own: nobody waits.
+    await ownerDb.transaction(async (holding) => {
+      await holding.raw('select 1 from team_revisions where team_id = ? for update', [teamId]);
+      await web.database.db.raw(`update sites set notes = 'two'`);
+    });
+    expect(await revision()).toBe(before + 2);
     await ownerDb.raw(`update people set name = 'Another'`);
-    expect(await revision()).toBe(before + 1);
+    expect(await revision()).toBe(before + 2);
   });
 });
 
