@@ -1,10 +1,8 @@
 /**
  * A number for each team that grows with every change of what its map and its tables of sites show, so that an answer that was made
- * once can be told from one that is stale by a look at one row. It grows as a transaction commits, once, so that nobody waits for it
- * while others work; whoever reads the number before the rows can never take old rows for new.
- *
- * What the transaction wrote into the audit trail is chained first, whichever of the two a commit comes to first: so everybody locks the
- * head of a chain before the number, and no two commits can wait for one another.
+ * once can be told from one that is stale by a look at a row or two. It is a sum: each transaction adds one as it commits, in a slot that
+ * nobody else holds just now or in a new one, so that it never waits for anybody and can stand in no deadlock. Whoever reads the number
+ * before the rows can never take old rows for new.
  *
  * A later migration that changes rows of these tables and then the tables themselves says "set constraints all immediate" in between.
  */
@@ -22,27 +20,18 @@ export async function up(knex: Knex): Promise<void> {
   );
   await knex.raw(`
     create table team_revisions (
-      team_id uuid primary key references teams (id),
-      revision bigint not null
+      -- No reference, which would wait for whoever has locked the team.
+      team_id uuid not null,
+      slot uuid not null default gen_random_uuid(),
+      revision bigint not null,
+      primary key (team_id, slot)
     );
-    grant select on team_revisions to muslin_app;
+    grant select, insert, update on team_revisions to muslin_app;
 
-    -- Where the events of the running transaction begin.
-    create function note_first_event() returns trigger language plpgsql as $body$
-    begin
-      if coalesce(current_setting('muslin.first_event', true), '') = '' then
-        perform set_config('muslin.first_event', new.id::text, true);
-      end if;
-      return new;
-    end
-    $body$;
-    create trigger audit_events_first before insert on audit_events for each row execute function note_first_event();
-
-    create function note_team_change() returns trigger language plpgsql security definer
-      set search_path = public, pg_temp as $body$
+    create function note_team_change() returns trigger language plpgsql as $body$
     declare
       changed uuid;
-      first_event text := current_setting('muslin.first_event', true);
+      free uuid;
     begin
       if tg_table_name = 'teams' then
         changed := case tg_op when 'DELETE' then old.id else new.id end;
@@ -54,16 +43,19 @@ export async function up(knex: Knex): Promise<void> {
         return null;
       end if;
       perform set_config('muslin.change_noted', changed::text, true);
-      if coalesce(first_event, '') <> '' then
-        perform chain_audit_events(first_event::bigint);
+      if not exists (select 1 from public.teams where teams.id = changed and teams.ended_at is null) then
+        return null;
       end if;
-      insert into public.team_revisions (team_id, revision)
-      select teams.id, 1 from public.teams where teams.id = changed and teams.ended_at is null
-      on conflict (team_id) do update set revision = team_revisions.revision + 1;
+      select slot into free from public.team_revisions where team_id = changed limit 1 for update skip locked;
+      if found then
+        update public.team_revisions set revision = revision + 1 where team_id = changed and slot = free;
+      else
+        insert into public.team_revisions (team_id, revision) values (changed, 1);
+      end if;
       return null;
     end
     $body$;
-    revoke all on function note_first_event(), note_team_change() from public;
+    grant execute on function note_team_change() to muslin_app;
     ${triggers.join('\n')}
   `);
 }
@@ -72,8 +64,7 @@ export async function down(knex: Knex): Promise<void> {
   const triggers = [...SHOWN, 'teams'].map((table) => `drop trigger ${table}_revision on ${table};`);
   await knex.raw(`
     ${triggers.join('\n')}
-    drop trigger audit_events_first on audit_events;
-    drop function note_team_change(), note_first_event();
+    drop function note_team_change();
     drop table team_revisions;
   `);
 }

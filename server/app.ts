@@ -78,10 +78,13 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> =
   app.disable('x-powered-by');
   app.set('trust proxy', deps.trustProxy === 'none' ? false : deps.trustProxy);
   app.set('query parser', 'simple');
-  app.use(beginRequest({ closing, heartbeatMs }), securityHeaders(), compression());
+  app.use(beginRequest({ closing, heartbeatMs }), securityHeaders());
 
   // What stands outside the declarations: health, base map and relief, built client (page, code, fonts). Nothing else does.
   app.get('/api/health', health(deps.db));
+  // Each endpoint packs its own answer.
+  const pack = compression();
+  app.use((request, response, next) => (request.path.startsWith('/api/') ? next() : pack(request, response, next)));
   app.use(tilesRouter(deps.basemapPath), reliefRouter(relief));
   if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
 

@@ -102,7 +102,7 @@ function publicUrlOf({ publicUrl, host, port }: Config): string {
 /** Fills a home with the demo, or makes the link with which its first team is set up; answers what to say when ready. */
 async function welcome({ home, config, context }: Start, deps: Deps): Promise<(url: string) => string[]> {
   const setUpPath = config.seed === 'none' ? await makeSetUpKey(deps.db) : null;
-  if (setUpPath !== null) return (url) => [`Set up the first team here, once: ${url}${setUpPath}`];
+  if (setUpPath !== null) return (url) => [`Set up the first team here, once: ${config.publicUrl ?? url}${setUpPath}`];
   const accountsWereThere = existsSync(home.demoAccountsFile);
   if (config.seed === 'demo') {
     await seedDemo({ deps, demoAccountsPath: home.demoAccountsFile, log: say, signal: context.signal });

@@ -6,7 +6,6 @@
 import { promisify } from 'node:util';
 import { gzip } from 'node:zlib';
 import type { Request, Response } from 'express';
-import type { Endpoint } from '#contract/endpoint.ts';
 import type { Identity } from './request-state.ts';
 
 const pack = promisify(gzip);
@@ -22,6 +21,8 @@ interface Kept {
 }
 
 export interface KeptAnswers {
+  /** Null where there is none of this revision. */
+  find(key: string, revision: string): Promise<Buffer> | null;
   get(key: string, revision: string, make: () => Promise<string>): Promise<Buffer>;
 }
 
@@ -34,22 +35,26 @@ export function makeKeptAnswers(most = KEPT_BYTES): KeptAnswers {
     kept.delete(key);
     held -= one.bytes;
   };
+  const find = (key: string, revision: string) => {
+    const found = kept.get(key);
+    if (found?.revision !== revision) return null;
+    kept.delete(key);
+    kept.set(key, found);
+    return found.packed;
+  };
   return {
+    find,
     get(key, revision, make) {
-      const found = kept.get(key);
-      if (found?.revision === revision) {
-        kept.delete(key);
-        kept.set(key, found);
-        return found.packed;
-      }
-      drop(key, found);
+      const found = find(key, revision);
+      if (found !== null) return found;
+      drop(key, kept.get(key));
       const one: Kept = { revision, bytes: 0, packed: make().then((text) => pack(text)) };
       kept.set(key, one);
       one.packed.then(
         ({ length }) => {
           if (kept.get(key) !== one) return;
-          one.bytes = length;
-          held += length;
+          one.bytes = length + key.length;
+          held += one.bytes;
           for (const [oldest, other] of kept) if (held > most) drop(oldest, other);
         },
         () => drop(key, one),
@@ -71,28 +76,31 @@ function takesGzip({ headers }: Request): boolean {
   return /(^|[,\s])gzip\s*(,|$)/.test(String(headers['accept-encoding'] ?? ''));
 }
 
-/** Sends the answer that is kept, or makes it. @returns false where it is to be made and sent as any other */
-export async function sendKept(
-  passage: {
-    readonly kept: KeptAnswers | null;
-    readonly endpoint: Endpoint;
-    readonly request: Request;
-    readonly response: Response;
-    readonly identity: Identity;
-    readonly signal: AbortSignal;
-  },
-  { input, text }: { input: unknown; text: () => Promise<string> },
-): Promise<boolean> {
-  const { kept, endpoint, request, response, identity, signal } = passage;
-  const { actor } = identity;
-  if (kept === null || actor.kind !== 'person' || !takesGzip(request)) return false;
-  const teamId = String(request.params.teamId).toLowerCase();
-  const revision = actor.revisions.get(teamId);
-  if (revision === undefined) return false;
-  const packed = await kept.get(`${endpoint.path} ${JSON.stringify(input)}`, revision, text);
-  if (response.headersSent || signal.aborted) return true;
+interface Asked {
+  readonly request: Request;
+  readonly identity: Identity;
+}
+
+/** The answer to a request that is kept, or being made; null where it is to be made. */
+export function keptFor(kept: KeptAnswers, asked: Asked): Promise<Buffer> | null {
+  const revision = revisionFor(asked);
+  return revision === null ? null : kept.find(asked.request.originalUrl, revision);
+}
+
+/** Makes an answer that is kept from then on; null where this one is made and sent as any other. */
+export function keep(kept: KeptAnswers, asked: Asked, make: () => Promise<string>): Promise<Buffer> | null {
+  const revision = revisionFor(asked);
+  return revision === null ? null : kept.get(asked.request.originalUrl, revision, make);
+}
+
+/** Of the team that the path names; null for a program and for a client that does not take it packed. */
+function revisionFor({ request, identity: { actor } }: Asked): string | null {
+  if (actor.kind !== 'person' || !takesGzip(request)) return null;
+  return actor.revisions.get(String(request.params.teamId).toLowerCase()) ?? null;
+}
+
+export function sendPacked(response: Response, packed: Buffer): void {
   for (const [name, value] of HEADERS) response.setHeader(name, value);
   response.setHeader('Content-Length', packed.length);
   response.end(packed);
-  return true;
 }

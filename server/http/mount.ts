@@ -8,7 +8,8 @@ import { answerFile, type FileAnswer } from './answer-file.ts';
 import { AppError } from './app-error.ts';
 import { authorise, policies } from './authorise.ts';
 import { addressBucket } from './client-address.ts';
-import { type KeptAnswers, sendKept } from './kept-answers.ts';
+import { compress } from './compress.ts';
+import { type KeptAnswers, keep, keptFor, sendPacked } from './kept-answers.ts';
 import { COUNTED_IN_DATABASE_UP_TO, makeLocalCounter, spendShared } from './limits.ts';
 import { parseInput } from './parse-input.ts';
 import type { Actor, RequestContext, UploadedFile } from './request-context.ts';
@@ -67,26 +68,19 @@ export function mount<E extends Endpoint>(
   router[verb](endpoint.path, async (request, response) => {
     const { identity, requestId, server } = stateOf(request);
     if (identity === null) throw new Error('The request has not passed authentication.');
+    const { actor } = identity;
+    await spend(bucketOf(endpoint, { actor, ip: actor.kind === 'signed-out' ? (request.ip ?? '') : '' }));
+    authorise(endpoint.allow, { actor, params: textParams(request) });
+    const ready = kept === null ? null : keptFor(kept, { request, identity });
+    if (ready !== null) return sendPacked(response, await ready);
+
     const over = abortWhenGone(response);
     const streams = endpoint.response.kind === 'events';
     const signal = streams ? AbortSignal.any([over.signal, server.closing]) : over.signal;
     const passage: Passage = {
-      endpoint,
-      deps,
-      request,
-      response,
-      identity,
-      requestId,
-      server,
-      signal,
-      handle,
-      readJson,
-      kept,
+      ...{ endpoint, deps, request, response, identity, requestId, server, signal },
+      ...{ handle, readJson, kept },
     };
-
-    const { actor } = identity;
-    await spend(bucketOf(endpoint, { actor, ip: actor.kind === 'signed-out' ? (request.ip ?? '') : '' }));
-    authorise(endpoint.allow, { actor, params: textParams(request) });
     try {
       if (streams) await pass(passage);
       else await withinTime(() => pass(passage), { seconds: endpoint.limits.seconds, over, response });
@@ -102,7 +96,12 @@ async function pass(passage: Passage): Promise<void> {
   const { body } = endpoint;
   if (body.kind === 'json') await readBody(passage.readJson, { request, response });
   const input = parse(passage);
-  if (passage.kept !== null && (await sendKept(passage, { input, text: () => textOfAnswer(passage, input) }))) return;
+  const made = passage.kept === null ? null : keep(passage.kept, passage, () => textOfAnswer(passage, input));
+  if (made !== null) {
+    const packed = await made;
+    if (!response.headersSent && !signal.aborted) sendPacked(response, packed);
+    return;
+  }
   if (body.kind !== 'upload') return answer(passage, await passage.handle(input, contextOf(passage, [])));
   const receiving = { request, response, limits: body, folder: deps.uploadsDir, signal };
   const answered = await withUploads(receiving, (files) => passage.handle(input, contextOf(passage, files)));
@@ -138,6 +137,7 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
   response.setHeader('Cache-Control', 'no-store');
   switch (declared.kind) {
     case 'json': {
+      await compress(passage);
       response.json(parsedAnswer(passage, answered));
       return;
     }
@@ -145,6 +145,7 @@ async function answer(passage: Passage, answered: unknown): Promise<void> {
       response.status(204).end();
       return;
     case 'file':
+      await compress(passage);
       return answerFile({ request, response }, { declared, answer: answered as FileAnswer });
     case 'events':
       if (request.method === 'HEAD') {

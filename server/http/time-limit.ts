@@ -4,6 +4,7 @@ import { AppError } from './app-error.ts';
 /** Aborts when the client leaves before its answer is whole. */
 export function abortWhenGone(response: Response): AbortController {
   const over = new AbortController();
+  if (response.closed && !response.writableFinished) over.abort();
   response.once('close', () => {
     if (!response.writableFinished) over.abort();
   });

@@ -159,7 +159,8 @@ export const importRules: readonly ImportRule[] = [
     may: [
       ...['server/http/**', 'server/features/*/policy.ts', 'server/features/*/*read-model.ts', 'server/db/**'],
       ...['server/deps.ts', 'server/log.ts', 'src/contract/**', 'node:**', 'zod/mini', 'package.json'],
-      ...['express', 'helmet', 'multer', 'express-session', 'connect-pg-simple', 'passport', 'passport-local'],
+      ...['express', 'compression', 'helmet', 'multer'],
+      ...['express-session', 'connect-pg-simple', 'passport', 'passport-local'],
     ],
     mayTypes: ['knex'],
   },

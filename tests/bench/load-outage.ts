@@ -72,7 +72,7 @@ try {
 }
 
 async function crashUnder(child: ChildProcess, team: Awaited<ReturnType<typeof makeTeamUnderLoad>>): Promise<void> {
-  const [ports]: { product: number }[] = await once(child, 'message');
+  const [ports]: { product: number }[] = await once(child, 'message', { signal: gone(child) });
   const product = `http://127.0.0.1:${ports?.product ?? 0}`;
   const cookies = await signInAll(product, team.emails);
   const programme = `${product}/api/teams/${team.teamId}/programmes/${team.programmeId}`;
@@ -131,6 +131,13 @@ function report(found: ReadonlySet<string>): void {
   const well = only(counts.away, '503 with Retry-After') && only(counts.after, '200') && lost.length === 0;
   if (!well) process.exitCode = 1;
   print(well ? 'as it should be' : 'NOT as it should be');
+}
+
+/** Aborts when the server has died, which would never say anything. */
+function gone(child: ChildProcess): AbortSignal {
+  const stop = new AbortController();
+  child.once('exit', () => stop.abort());
+  return stop.signal;
 }
 
 function print(line: string): void {

@@ -34,7 +34,7 @@ await withEmptyTeam(async (team) => {
     execArgv: ['--import', 'tsx'],
   });
   try {
-    const [ports]: { product: number; plain: number }[] = await once(child, 'message');
+    const [ports]: { product: number; plain: number }[] = await once(child, 'message', { signal: gone(child) });
     if (ports === undefined) throw new Error('the server said no ports');
     const product = `http://127.0.0.1:${ports.product}`;
     const cookies = await signInAll(product, emails);
@@ -115,6 +115,13 @@ async function processorMs(child: ChildProcess): Promise<number> {
   const [told]: { processorMs: number; errors: unknown[] }[] = await once(child, 'message');
   for (const error of told?.errors ?? []) print(JSON.stringify(error));
   return told?.processorMs ?? 0;
+}
+
+/** Aborts when the server has died, which would never say anything. */
+function gone(child: ChildProcess): AbortSignal {
+  const stop = new AbortController();
+  child.once('exit', () => stop.abort());
+  return stop.signal;
 }
 
 function print(line: string): void {

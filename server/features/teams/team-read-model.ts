@@ -42,12 +42,12 @@ export async function listMemberships(db: Knex, key: { personId: string; at: Dat
 
 /** Asked with every request of a person: see `preparedQuery`. `$1` is the moment. */
 const STANDING = `select people.id as "personId", memberships.team_id as "teamId", memberships.role,
-    team_revisions.revision::text as revision,
+    (select sum(team_revisions.revision)::text from team_revisions
+     where team_revisions.team_id = memberships.team_id) as revision,
     array(select programmes.id from programmes
           where programmes.team_id = memberships.team_id and not ${OPEN_PROGRAMME}) as closed
   from people
-  left join memberships on memberships.person_id = people.id and ${STANDS.replace(':at', '$1')}
-  left join team_revisions on team_revisions.team_id = memberships.team_id`;
+  left join memberships on memberships.person_id = people.id and ${STANDS.replace(':at', '$1')}`;
 
 interface StandingRow {
   readonly personId: string;
