@@ -19,6 +19,7 @@ import { SheetEdgeLayer } from './sheet-edge-layer.tsx';
 import { Scale, Sources, ZoomButtons } from './sheet-furniture.tsx';
 import { isSame, type MarkInks, type PlaceRef, type Position, type SheetPlace } from './sheet-place.ts';
 import { sheetStyle } from './sheet-style.ts';
+import { spareFrames } from './spare-frames.ts';
 import { useChosenInView } from './use-chosen-in-view.ts';
 import { FIT, toBounds, useFit } from './use-fit.ts';
 import { useFurniture } from './use-furniture.ts';
@@ -75,7 +76,11 @@ export function SheetMap(props: SheetMapProps) {
   const furniture = useFurniture(frame);
   const isRoomy = useIsWide(wrapper, ROOMY_PX);
   const style = useSheetStyle();
-  const hold = useCallback((ref: MapRef | null) => setMap(ref?.getMap() ?? null), []);
+  const hold = useCallback((ref: MapRef | null) => {
+    const held = ref?.getMap() ?? null;
+    if (held !== null && isDrawnInSoftware()) spareFrames(held);
+    setMap(held);
+  }, []);
   usePictures(map);
   useMarkInks(map, MARK_SOURCES.station, { places: stations, inks });
   useMarkInks(map, MARK_SOURCES.site, { places: sites, inks });

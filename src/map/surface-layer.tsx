@@ -11,6 +11,7 @@ import { surfaceLines } from './surface-lines.ts';
 import { type SurfaceMesh, surfaceMesh, surfaceScores } from './surface-mesh.ts';
 import { surfacePainter } from './surface-painter.ts';
 import { drawWeave, WEAVE } from './surface-weave.ts';
+import { useRested } from './use-rested.ts';
 
 interface SurfaceLayerProps {
   /** Kept by its asker: the same object draws the same cells. */
@@ -21,6 +22,8 @@ interface SurfaceLayerProps {
 
 /** From here on the cells themselves are drawn. */
 const CELLS_FROM_ZOOM = 8.5;
+/** Lines are cut and laid out anew when a slider rests for so long; the bands follow it at once. */
+const REST_MS = 200;
 /** The box of the cells grows by so many degrees at a time, so that it stays the same while the map moves a little. */
 const STEP = 0.5;
 const MARGIN = 0.1;
@@ -43,7 +46,11 @@ const RAMP_OF_SCORE: ExpressionSpecification = [
 export function SurfaceLayer({ cells, scores }: SurfaceLayerProps) {
   const mesh = useMemo(() => surfaceMesh(cells), [cells]);
   const values = useMemo(() => surfaceScores(scores), [scores]);
-  const lines = useMemo(() => surfaceLines(mesh, values), [mesh, values]);
+  const drawn = useRested(
+    useMemo(() => ({ mesh, values }), [mesh, values]),
+    REST_MS,
+  );
+  const lines = useMemo(() => surfaceLines(drawn.mesh, drawn.values), [drawn]);
   usePaintedBands(mesh, values);
   return (
     <>

@@ -159,7 +159,24 @@ test('layer, place, filter and camera come back on reload and Back', async () =>
 
 test('the keyboard walks the page in its written order, chooses on the map, and lists the hours of a class, a cell and a day', async () => {
   await enterAs('viewer', DESK);
-  const stops = ['slider', 'map', 'places', 'zoom', 'ledger', 'cloth'];
+  await page.getByRole('button', { name: 'By keyboard' }).click();
+  const help = page.getByRole('dialog', { name: 'The map by keyboard' });
+  await help.getByRole('rowheader').first().waitFor();
+  const told = await help.getByRole('rowheader').allInnerTexts();
+  await page.keyboard.press('Escape');
+  await help.waitFor({ state: 'detached' });
+  // What the page tells is what the Tab key does.
+  const parts = {
+    slider: 'Sliders',
+    map: 'Map',
+    places: 'Sites on the map, stations on the map',
+    zoom: 'Zoom buttons',
+  };
+  const walked = { ...parts, ledger: 'Ledger', cloth: 'Year cloth' };
+  const stops = Object.entries(walked)
+    .sort(([, one], [, other]) => told.indexOf(one) - told.indexOf(other))
+    .map(([stop]) => stop);
+  expect(told).toEqual(expect.arrayContaining(Object.values(walked)));
   const seen: string[] = [];
   await page.getByRole('slider', { name: 'Direct effectiveness' }).focus();
   for (let step = 0; step < 60 && seen.length < stops.length; step += 1) {
@@ -180,6 +197,10 @@ test('the keyboard walks the page in its written order, chooses on the map, and 
 
   const before = await textOf(chosen().getByRole('heading', { level: 2 }));
   await page.getByRole('listbox', { name: 'Stations on the map' }).focus();
+  await page.keyboard.press('?');
+  await help.waitFor();
+  await page.keyboard.press('Escape');
+  await help.waitFor({ state: 'detached' });
   await page.keyboard.press('Home');
   await page.keyboard.press('ArrowDown');
   await page.keyboard.press('Enter');

@@ -93,22 +93,66 @@ type RunFacts = readonly [
   ...[worstSpellHours: number | null, severityKh: number],
 ];
 
-/**
- * The newest run of each weather year at each height under a brief version; each comes as one array, since thousands of rows of many
- * columns take longer to be taken apart than to be read.
- */
+interface RunsAsked {
+  readonly teamId: string;
+  readonly briefVersionId: string;
+  readonly methodVersion: string;
+}
+
+/** Runs are only ever added, or removed whole with their year: as many as before, and none made later, are the same ones. */
+const kept = new Map<string, { readonly stamp: string; readonly runs: readonly RunInShort[] }>();
+/** Over all brief versions, some 1 kB each. */
+const MOST_KEPT = 60_000;
+/** So few years are read for themselves, unless all are at hand. */
+const FEW_YEARS = 100;
+
+/** The newest run of each weather year at each height under a brief version; read again only when there are others. */
 export async function listRunsInShort(
   db: Knex,
   {
     weatherYearIds,
     ...asked
-  }: {
-    teamId: string;
-    briefVersionId: string;
-    methodVersion: string;
+  }: RunsAsked & {
     /** Those of some years alone. */
-    weatherYearIds?: readonly string[];
+    readonly weatherYearIds?: readonly string[];
   },
+): Promise<readonly RunInShort[]> {
+  const key = [asked.teamId, asked.briefVersionId, asked.methodVersion].join(' ');
+  const held = kept.get(key);
+  if (held === undefined && weatherYearIds !== undefined && weatherYearIds.length <= FEW_YEARS)
+    return await readRuns(db, { ...asked, weatherYearIds });
+  const stamp = await stampOfRuns(db, asked);
+  const runs = held?.stamp === stamp ? held.runs : await readRuns(db, asked);
+  kept.delete(key);
+  kept.set(key, { stamp, runs });
+  letOldestGo();
+  if (weatherYearIds === undefined) return runs;
+  const wanted = new Set(weatherYearIds);
+  return runs.filter(({ weatherYearId }) => wanted.has(weatherYearId));
+}
+
+function letOldestGo(): void {
+  let count = [...kept.values()].reduce((sum, { runs }) => sum + runs.length, 0);
+  for (const [key, { runs }] of kept) {
+    if (count <= MOST_KEPT || kept.size === 1) return;
+    kept.delete(key);
+    count -= runs.length;
+  }
+}
+
+async function stampOfRuns(db: Knex, asked: RunsAsked): Promise<string> {
+  const { rows } = await db.raw<{ rows: { stamp: string }[] }>(
+    `select concat_ws(' ', count(*), max(made_at)) as stamp from runs
+     where team_id = :teamId and brief_version_id = :briefVersionId and method_version = :methodVersion`,
+    { ...asked },
+  );
+  return rows[0]?.stamp ?? '';
+}
+
+/** Each comes as one array, since thousands of rows of many columns take longer to be taken apart than to be read. */
+async function readRuns(
+  db: Knex,
+  { weatherYearIds, ...asked }: RunsAsked & { readonly weatherYearIds?: readonly string[] },
 ): Promise<readonly RunInShort[]> {
   const ofYears = weatherYearIds === undefined ? '' : 'and runs.weather_year_id = any(:yearIds::uuid[])';
   const { rows } = await db.raw<{ rows: { facts: RunFacts }[] }>(

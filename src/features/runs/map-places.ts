@@ -35,12 +35,20 @@ function sitePlace(site: MapSite): MapPlace {
   return { ...site, kind: 'site' };
 }
 
+/** A place with the figures that it was last drafted with: an answer tells of a part of the places, the others stay who they are. */
+const lastDrafted = new WeakMap<PlaceFigures, { readonly of: MapPlace; readonly place: MapPlace }>();
+
 /** The same places with the figures of a draft where there are any. */
 export function withFigures(places: MapPlaces, figures: ReadonlyMap<string, PlaceFigures>): MapPlaces {
   if (figures.size === 0) return places;
   const drafted = (place: MapPlace): MapPlace => {
     const found = figures.get(place.id);
-    return found === undefined ? place : { ...place, ...found };
+    if (found === undefined) return place;
+    const last = lastDrafted.get(found);
+    if (last?.of === place) return last.place;
+    const made = { ...place, ...found };
+    lastDrafted.set(found, { of: place, place: made });
+    return made;
   };
   return { stations: places.stations.map(drafted), sites: places.sites.map(drafted) };
 }

@@ -19,9 +19,16 @@ export function inkedLayer(layer: MapLayer, { stations, sites }: MapPlaces, depr
   const most = layer.kind === 'depression' ? values.reduce<number>((top, value) => Math.max(top, value ?? 0), 0) : 0;
   const scale = scaleOf(layer, most);
   const inks = new Map<string, MarkInk>();
+  // Thousands of places have a hundred scores.
+  const inkOf = new Map<number | null, MarkInk>();
   places.forEach(({ id }, index) => {
     const value = values[index] ?? null;
-    inks.set(id, { colour: value === null ? null : colourOf(scale, value), figure: figureOf(layer, value) });
+    const ink = inkOf.get(value) ?? {
+      colour: value === null ? null : colourOf(scale, value),
+      figure: figureOf(layer, value),
+    };
+    inkOf.set(value, ink);
+    inks.set(id, ink);
   });
   return { scale, inks, legend: places.map(({ grade }, index) => ({ grade, value: values[index] ?? null })) };
 }

@@ -1,3 +1,4 @@
+import { KeyboardHelp } from './keyboard-help.tsx';
 import type { SheetProps } from './map-sheet.tsx';
 import { PlaceMargin } from './place-margin.tsx';
 import { PlaceUnderMap } from './place-under-map.tsx';
@@ -14,6 +15,7 @@ export function WideSheet({ brief, ranking, map, point, chosen }: SheetProps) {
           <div className="absolute inset-0 flex flex-col gap-3 overflow-y-auto px-5 py-4 max-xl:px-4">
             {brief}
             <div className="flex min-h-56 flex-1 flex-col">{ranking}</div>
+            <KeyboardHelp />
           </div>
         </div>
         <div className="relative py-3">{map}</div>
