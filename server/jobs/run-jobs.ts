@@ -116,7 +116,15 @@ async function startRun({ db, databaseUrl, tasks, log }: JobsOptions): Promise<R
 }
 
 function makePool(databaseUrl: string): pg.Pool {
-  const pool = new pg.Pool({ connectionString: databaseUrl, max: MOST_CONNECTIONS, keepAlive: true });
+  const pool = new pg.Pool({
+    connectionString: databaseUrl,
+    max: MOST_CONNECTIONS,
+    keepAlive: true,
+    // Taking and ending a job does not wait for the disk: a server that crashes forgets the last of it, and the job is done twice.
+    onConnect: async (client) => {
+      await client.query('set synchronous_commit to off');
+    },
+  });
   // A lost connection shows in the query that meets it; without a listener it would end the process.
   pool.on('error', () => undefined);
   pool.on('connect', (client) => void client.on('error', () => undefined));

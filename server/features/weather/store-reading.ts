@@ -9,7 +9,7 @@ import { notifyTeamOfAll } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
 import { insertPart, setReadingResult } from './reading-store.ts';
-import { lockWeatherFile } from './weather-file-store.ts';
+import { lockFileBeingRead } from './weather-file-store.ts';
 import { insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
@@ -28,8 +28,8 @@ export async function storeReadings(
   const { teamId, id } = file;
   const { outcomes, untoldSteps } = reading;
   await inTransaction(db, async (transaction) => {
-    const now = await lockWeatherFile(transaction, { teamId, fileId: id });
-    if (now === null || now.status !== 'reading') return;
+    const now = await lockFileBeingRead(transaction, { teamId, fileId: id });
+    if (now === null) return;
     const events: TeamEvent[] = untoldSteps.map((step) => ({
       kind: 'weather-file',
       fileId: id,

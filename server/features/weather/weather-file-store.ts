@@ -89,6 +89,25 @@ export async function lockWeatherFile(
   return rows[0] ?? null;
 }
 
+/**
+ * The same for what is about to be stored of its reading. This transaction then does not wait for the disk: a server that crashes
+ * forgets whole transactions, last ones first, and the end of the job with this one, so that the file is read once more.
+ */
+export async function lockFileBeingRead(
+  transaction: Knex.Transaction,
+  key: { teamId: string; fileId: string },
+): Promise<WeatherFileState | null> {
+  const { rows } = await transaction.raw<{ rows: (WeatherFileState & { commit: string })[] }>(
+    `select ${STATE_COLUMNS}, set_config('synchronous_commit', 'off', true) as commit from weather_files
+     where weather_files.team_id = ? and weather_files.id = ? and weather_files.status = 'reading' for no key update`,
+    [key.teamId, key.fileId],
+  );
+  const [row] = rows;
+  if (row === undefined) return null;
+  const { commit: _commit, ...file } = row;
+  return file;
+}
+
 /** The team's file with these bytes that still stands (withdrawn ones do not count). */
 export async function findStandingFile(
   db: Knex,

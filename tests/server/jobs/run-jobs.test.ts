@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { connect } from '../../../server/db/connection.ts';
 import { inTransaction } from '../../../server/db/in-transaction.ts';
 import { addJob, type JobPayloads, MAX_ATTEMPTS } from '../../../server/jobs/queue.ts';
 import { type JobTasks, runJobs, type WhyDead } from '../../../server/jobs/run-jobs.ts';
@@ -45,7 +46,16 @@ async function startWith(reading: {
     'export-team': { run: nothing, dead: nothing },
     'end-team': { run: nothing, dead: nothing },
   };
-  worker = await runJobs({ db: database.db, databaseUrl: database.databaseUrl, tasks, log });
+  const { databaseUrl } = database;
+  // Connections as the product's own worker has them, which may be cut without a word.
+  const db = connect({ databaseUrl, maxConnections: 4 });
+  const jobs = await runJobs({ db, databaseUrl, tasks, log });
+  worker = {
+    async close() {
+      await jobs.close();
+      await db.destroy();
+    },
+  };
 }
 
 const newReading = (): Reading => ({ teamId: randomUUID(), fileId: randomUUID() });

@@ -93,8 +93,8 @@ it(
       if ((await killOne(KILLS - kill)) > 0) killsAtWork++;
       await jobsDueNow(road.database);
     }
-    // Most of them had something to break off.
-    expect(killsAtWork).toBeGreaterThan(KILLS / 2);
+    // Half of them at least had something to break off.
+    expect(killsAtWork).toBeGreaterThanOrEqual(Math.floor(KILLS / 2));
     await road.startWorker();
     const done = await eventually(
       'the end of the batch',
