@@ -79,7 +79,7 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> =
   app.use(beginRequest({ closing, heartbeatMs }), securityHeaders(), compression());
 
   // What stands outside the declarations: health, base map and relief, built client (page, code, fonts). Nothing else does.
-  app.get('/api/health', health(deps.db));
+  app.get('/api/health', health(deps.db, closing));
   app.use(tilesRouter(deps.basemapPath), reliefRouter(relief));
   if (deps.clientDir !== null) app.use(builtClient(deps.clientDir));
 
