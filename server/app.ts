@@ -81,7 +81,7 @@ export function createApp(deps: Deps, terms: Partial<ServerTerms & AppThreads> =
   app.use(beginRequest({ closing, heartbeatMs }), securityHeaders());
 
   // What stands outside the declarations: health, base map and relief, built client (page, code, fonts). Nothing else does.
-  app.get('/api/health', health(deps.db));
+  app.get('/api/health', health(deps.db, closing));
   // Each endpoint packs its own answer.
   const pack = compression();
   app.use((request, response, next) => (request.path.startsWith('/api/') ? next() : pack(request, response, next)));

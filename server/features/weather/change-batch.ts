@@ -23,7 +23,13 @@ const CANCELLED = 'The batch was cancelled before this file was read.';
  */
 export async function changeBatch(
   db: Knex,
-  change: BatchKey & { state: BatchState; personId: string; requestId: string | null; at: Date },
+  change: BatchKey & {
+    state: BatchState;
+    personId: string;
+    tokenId: string | null;
+    requestId: string | null;
+    at: Date;
+  },
 ): Promise<void> {
   const { teamId, batchId, state, personId } = change;
   await inTransaction(db, async (transaction) => {
@@ -40,7 +46,7 @@ export async function changeBatch(
       teamId,
       personId,
       act: `weather batch ${state === 'running' ? 'resumed' : state}`,
-      subject: { batchId },
+      subject: { batchId, tokenId: change.tokenId },
       requestId: change.requestId,
     });
     await notifyTeam(transaction, { teamId, event: { kind: 'weather-batch', batchId } });

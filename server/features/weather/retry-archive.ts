@@ -8,7 +8,7 @@ import { queueOpening } from './receive-archive.ts';
 /** Opens an archive again whose opening stopped for a fault of ours. */
 export async function retryArchive(
   db: Knex,
-  retry: { teamId: string; archiveId: string; personId: string; requestId: string | null },
+  retry: { teamId: string; archiveId: string; personId: string; tokenId: string | null; requestId: string | null },
 ): Promise<void> {
   const { teamId, archiveId } = retry;
   await inTransaction(db, async (transaction) => {
@@ -21,7 +21,7 @@ export async function retryArchive(
       teamId,
       personId: retry.personId,
       act: 'weather archive tried again',
-      subject: { archiveId, name: archive.name },
+      subject: { archiveId, name: archive.name, tokenId: retry.tokenId },
       requestId: retry.requestId,
     });
   });

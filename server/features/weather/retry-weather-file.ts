@@ -14,7 +14,7 @@ export interface RetryParts {
 /** Begins again what stopped for a fault of ours: the reading of a file, or the judging of its year. */
 export async function retryWeatherFile(
   deps: { db: Knex } & RetryParts,
-  retry: { teamId: string; fileId: string; personId: string; requestId: string | null },
+  retry: { teamId: string; fileId: string; personId: string; tokenId: string | null; requestId: string | null },
 ): Promise<void> {
   const { teamId, fileId, personId, requestId } = retry;
   await inTransaction(deps.db, async (transaction) => {
@@ -26,7 +26,7 @@ export async function retryWeatherFile(
       teamId,
       personId,
       act: 'weather file tried again',
-      subject: { fileId, name: file.name },
+      subject: { fileId, name: file.name, tokenId: retry.tokenId },
       requestId,
     });
   });

@@ -6,7 +6,7 @@ import { insertBatch } from './batch-store.ts';
 /** Begins a batch, empty as yet. @returns its id */
 export async function startBatch(
   db: Knex,
-  start: { teamId: string; name: string; personId: string; requestId: string | null; at: Date },
+  start: { teamId: string; name: string; personId: string; tokenId: string | null; requestId: string | null; at: Date },
 ): Promise<string> {
   return await inTransaction(db, async (transaction) => {
     const batchId = await insertBatch(transaction, start);
@@ -14,7 +14,7 @@ export async function startBatch(
       teamId: start.teamId,
       personId: start.personId,
       act: 'weather batch begun',
-      subject: { batchId, name: start.name },
+      subject: { batchId, name: start.name, tokenId: start.tokenId },
       requestId: start.requestId,
     });
     return batchId;

@@ -1,7 +1,7 @@
 import { Link } from 'react-router-dom';
 import type { AuditEvent } from '../../contract/audit.ts';
 import { moment, number } from '../../lib/format.ts';
-import { aboutWords, actWords, subjectLines } from './audit-words.ts';
+import { aboutWords, actWords, subjectLines, whoWords } from './audit-words.ts';
 
 const columns =
   'grid grid-cols-[minmax(0,1fr)] gap-x-5 sm:grid-cols-[10rem_minmax(0,8.5rem)_minmax(0,13rem)_minmax(0,1fr)]';
@@ -22,7 +22,7 @@ export function AuditEventList({ items, teamId }: { items: readonly AuditEvent[]
             <time dateTime={event.at} className="max-sm:text-fine max-sm:text-soft">
               {moment(event.at)}
             </time>
-            <span className="[overflow-wrap:anywhere] max-sm:order-3">{event.person?.name ?? 'The server'}</span>
+            <span className="[overflow-wrap:anywhere] max-sm:order-3">{whoWords(event)}</span>
             <span className="max-sm:order-2 max-sm:font-semibold">{actWords(event.act)}</span>
             <div className="[overflow-wrap:anywhere] max-sm:order-4">
               <About event={event} teamId={teamId} />

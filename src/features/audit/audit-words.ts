@@ -1,4 +1,4 @@
-import type { AuditEvent, teamAuditKinds } from '../../contract/audit.ts';
+import { type AuditEvent, auditActs, type teamAuditKinds } from '../../contract/audit.ts';
 import { paths } from '../../lib/paths.ts';
 
 export const kindWords: Readonly<Record<(typeof teamAuditKinds)[number], string>> = {
@@ -24,6 +24,15 @@ const textOf = (subject: Subject, key: string): string | null => {
   const value = subject[key];
   return typeof value === 'string' && value !== '' ? value : null;
 };
+
+/** A token that is made or revoked is what such an act is about. */
+const ofTokens: readonly string[] = auditActs.tokens;
+
+/** Who did it; of a program, whose token it brought. */
+export function whoWords({ person, act, subject }: Pick<AuditEvent, 'person' | 'act' | 'subject'>): string {
+  const name = person?.name ?? 'The server';
+  return textOf(subject, 'tokenId') === null || ofTokens.includes(act) ? name : `A program, with a token of ${name}`;
+}
 
 /** What the act was about: its name where it has one, and its page where there is one. */
 export function aboutWords({ subject }: AuditEvent, teamId: string): { name: string | null; to: string | null } {

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { auditActs, teamAuditKinds } from '../../../src/contract/audit.ts';
 import { auditSearch, changedAuditView, readAuditView } from '../../../src/features/audit/audit-view.ts';
-import { aboutWords, actWords, kindWords, subjectLines } from '../../../src/features/audit/audit-words.ts';
+import { aboutWords, actWords, kindWords, subjectLines, whoWords } from '../../../src/features/audit/audit-words.ts';
 
 const event = (subject: Record<string, unknown>) => ({
   ...{ position: 1, at: '2027-03-31T12:00:00.000000Z', person: null, act: 'site made', requestId: null, hash: 'a' },
@@ -32,6 +32,15 @@ describe('what is said of an event', () => {
       'sites, 1, name: x',
       'last day: none',
     ]);
+  });
+
+  test('tells a program from the person whose token it brought', () => {
+    const person = { id: 'p', name: 'Ada' };
+    const act = 'weather batch begun';
+    expect(whoWords({ person, act, subject: { tokenId: null } })).toBe('Ada');
+    expect(whoWords({ person, act: 'token made', subject: { tokenId: 't' } })).toBe('Ada');
+    expect(whoWords({ person, act, subject: { tokenId: 't' } })).toBe('A program, with a token of Ada');
+    expect(whoWords({ person: null, act, subject: {} })).toBe('The server');
   });
 
   test('has words for every kind that a team may have', () => {

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it, test } from 'vitest';
+import * as migration from '../../../migrations/0010-audit-chain.ts';
 import { inTransaction } from '../../../server/db/in-transaction.ts';
 import { recordAuditEvent } from '../../../server/db/record-audit-event.ts';
 import type { KeptHead } from '../../../server/features/audit/verify-chain.ts';
@@ -119,6 +120,34 @@ describe('the chain of the audit trail', () => {
       await expect(database.db.raw('update audit_chains set events = 0')).rejects.toMatchObject({ code: '42501' });
     },
   );
+});
+
+test('what stood in the trail before it was chained is chained by the migration, in the order in which it was written', async () => {
+  const older = await makeTestDatabase();
+  try {
+    const { ownerDb } = older;
+    await migration.down(ownerDb);
+    const [team] = await ownerDb('teams').insert({ name: 'Older' }, ['id']);
+    const events = Array.from({ length: 25 }, (_, index) => ({
+      team_id: index % 5 === 0 ? null : team.id,
+      act: 'site made',
+      subject: JSON.stringify({ name: `Site ${index}` }),
+      at: new Date(Date.UTC(2026, 0, 1, 0, 0, index)),
+    }));
+    await ownerDb('audit_events').insert(events);
+    await migration.up(ownerDb);
+    const found: unknown[] = [];
+    for await (const { head, broken } of verifyTrail(older.db)) found.push([head.teamName, head.events, broken]);
+    expect(found).toEqual([
+      [null, 5, null],
+      ['Older', 20, null],
+    ]);
+    await older.db('audit_events').insert({ team_id: team.id, act: 'site made' });
+    const places = await older.db('audit_events').where({ team_id: team.id }).orderBy('id').pluck('position');
+    expect(places.map(Number)).toEqual(Array.from({ length: 21 }, (_, index) => index + 1));
+  } finally {
+    await older.drop();
+  }
 });
 
 describe('whoever changes the trail past the product is found out', () => {

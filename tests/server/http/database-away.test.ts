@@ -66,6 +66,13 @@ test('while the database is away every request says so and when to come back; af
   await signIn().expect(200);
 });
 
+test('a server that closes is ready no longer, and still answers what is at hand', async () => {
+  const closing = createApp(web.deps, { closing: AbortSignal.abort() });
+  const answer = await supertest(closing).get('/api/health').expect(503);
+  expect(answer.headers['retry-after']).toBe('5');
+  await supertest(closing).get('/api/session').expect(200);
+});
+
 test('connections that the database itself cuts are replaced without anybody noticing for long', async () => {
   // Three at once and long enough to overlap, so that the pool has three connections.
   await Promise.all([1, 2, 3].map(() => db.raw('select pg_sleep(1)')));
