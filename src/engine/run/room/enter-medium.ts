@@ -23,18 +23,18 @@ export function enterMediumWhenUnmet(plan: RoomPlan, wetBulbs: WetBulbs, _nth: n
 }
 
 function enterMedium(plan: RoomPlan, stage: number, { places, count }: HourList, wetBulbs: WetBulbs): void {
+  if (stage === DIRECT) {
+    // All hours at once take less time than those of the list one by one.
+    entersC.set(dryBulbC);
+    mediumWetC.set(wetBulbC);
+    return;
+  }
   const { effIndirect } = plan;
   const secondBulbs = wetBulbs.secondWetBulbC;
   for (let index = 0; index < count; index++) {
     const at = places[index] ?? 0;
     const tempC = dryBulbC[at] ?? 0;
-    const wetC = wetBulbC[at] ?? 0;
-    if (stage === DIRECT) {
-      entersC[at] = tempC;
-      mediumWetC[at] = wetC;
-      continue;
-    }
-    const betweenC = tempC - indirectFallK(effIndirect, tempC, wetC);
+    const betweenC = tempC - indirectFallK(effIndirect, tempC, wetBulbC[at] ?? 0);
     const from = slot[at] ?? 0;
     if (Number.isNaN(secondBulbs[from] ?? 0)) {
       findSecondWetBulb(wetBulbs, from, betweenC, humidityRatio[at] ?? 0, pressurePa[at] ?? 0);

@@ -36,5 +36,5 @@ export function judgeRoomHours(plan: RoomPlan, wetBulbs: WetBulbs): void {
 
 function beginAsMet(): void {
   fillMet(block);
-  block.supplyRatio.set(block.humidityRatio.subarray(0, block.count));
+  block.supplyRatio.set(block.humidityRatio);
 }

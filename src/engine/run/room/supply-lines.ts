@@ -38,7 +38,7 @@ export function dewPointFallK(
 export function shareFor(dryC: number, fallK: number, supplyC: number): number {
   const wantedK = dryC - supplyC;
   if (wantedK <= 0) return 0;
-  return fallK > 0 ? Math.min(wantedK / fallK, 1) : 1;
+  return wantedK < fallK ? wantedK / fallK : 1;
 }
 
 /** Of a moist line, kJ/kg: what is shared out between heat and vapour. */
