@@ -28,6 +28,12 @@ export function depressionCurve(depressionK: Float64Array): readonly CurvePoint[
   return points.reverse();
 }
 
+/** The curve of a year that is told in whole kelvin alone: from the hours that are known to the first depression that none reaches. */
+export function countedCurve(knownHours: number, counts: readonly CurvePoint[]): readonly CurvePoint[] {
+  const end = counts.findIndex(({ hours }) => hours === 0);
+  return [{ atLeastK: 0, hours: knownHours }, ...(end === -1 ? counts : counts.slice(0, end + 1))];
+}
+
 /** Hours at or above a depression, K, off a curve of whole tenths; 0 beyond its end. */
 export function hoursAtOrAbove(curve: readonly CurvePoint[], atLeastK: number): number {
   return curve[Math.max(0, Math.ceil(Math.round(atLeastK * 100) / 10))]?.hours ?? 0;

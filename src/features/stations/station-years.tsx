@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom';
 import { CURVE_DASHES, CumulativeCurves } from '../../charts/cumulative-curves.tsx';
-import type { CurvePoint } from '../../charts/depression-curve.ts';
+import { countedCurve } from '../../charts/depression-curve.ts';
 import type { StationRecord } from '../../contract/stations.ts';
 import type { WeatherFile, YearFacts } from '../../contract/weather.ts';
 import { yearWords } from '../../lib/file-words.ts';
@@ -94,7 +94,7 @@ function Curves({ years, name }: { years: readonly Year[]; name: string }) {
   const drawn = years.slice(0, MOST_CURVES);
   const curves = drawn.map(({ file, facts }) => ({
     name: file.id,
-    points: curveOf(facts),
+    points: countedCurve(facts.hours - facts.missing, facts.depressionHours),
   }));
   const hoursOfYear = Math.max(...drawn.map(({ facts }) => facts.hours));
   return (
@@ -131,13 +131,6 @@ function Curves({ years, name }: { years: readonly Year[]; name: string }) {
       ) : null}
     </div>
   );
-}
-
-/** From the hours that are known down to the first depression that no hour reaches. */
-function curveOf({ hours: slots, missing, depressionHours }: YearFacts): CurvePoint[] {
-  const end = depressionHours.findIndex(({ hours }) => hours === 0);
-  const reached = end === -1 ? depressionHours : depressionHours.slice(0, end + 1);
-  return [{ atLeastK: 0, hours: slots - missing }, ...reached];
 }
 
 function hoursAt({ depressionHours }: YearFacts, kelvin: number): number {

@@ -2,6 +2,7 @@ import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { kindOfCompare, readCompare } from '../../../src/app/pages/compare/compare-address.ts';
 import { rowOf } from '../../../src/app/pages/compare/figure-rows.ts';
+import { countedCurve } from '../../../src/charts/depression-curve.ts';
 import { RankShares } from '../../../src/charts/rank-shares.tsx';
 import { hoursOver, SupplyCurves } from '../../../src/charts/supply-curves.tsx';
 import { paths } from '../../../src/lib/paths.ts';
@@ -36,6 +37,19 @@ describe('what is compared', () => {
     expect(kindOfCompare(read(`places=station:${id(1)}&briefs=${id(2)}`))).toBe('places');
     expect(kindOfCompare(read(`places=station:${id(1)}&briefs=${id(2)},${id(3)}`))).toBe('briefs');
     expect(kindOfCompare(read(`places=station:${id(1)}&briefs=${id(2)}&years=${id(3)}`))).toBe('years');
+  });
+});
+
+describe('the curve of depression', () => {
+  it('begins at the hours that are known and ends at the first depression that none reaches', () => {
+    const counts = [6000, 2000, 0, 0].map((hours, at) => ({ atLeastK: at + 1, hours }));
+    expect(countedCurve(8700, counts)).toEqual([
+      { atLeastK: 0, hours: 8700 },
+      { atLeastK: 1, hours: 6000 },
+      { atLeastK: 2, hours: 2000 },
+      { atLeastK: 3, hours: 0 },
+    ]);
+    expect(countedCurve(8700, counts.slice(0, 2)).at(-1)).toEqual({ atLeastK: 2, hours: 2000 });
   });
 });
 

@@ -11,6 +11,7 @@ import { Loading } from '../../../ui/loading.tsx';
 import { Notice } from '../../../ui/notice.tsx';
 import { type CompareAddress, kindOfCompare, readCompare } from './compare-address.ts';
 import { CompareChoice } from './compare-choice.tsx';
+import { CompareDepressions } from './compare-depressions.tsx';
 import { CompareCloths, CompareCurves } from './compare-pictures.tsx';
 import { CompareRanking } from './compare-ranking.tsx';
 import { ArithmeticTable, FigureTable } from './figure-table.tsx';
@@ -71,6 +72,7 @@ export function ComparePage() {
           <ArithmeticTable columns={columns} />
           <CompareCloths columns={columns} teamId={teamId} />
           <CompareCurves columns={columns} />
+          {kind === 'briefs' ? null : <CompareDepressions columns={columns} teamId={teamId} />}
         </div>
       ) : null}
     </div>

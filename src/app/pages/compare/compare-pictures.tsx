@@ -1,6 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
 import { useId } from 'react';
-import { CURVE_DASHES } from '../../../charts/cumulative-curves.tsx';
 import { classWords, dampWords } from '../../../charts/hour-class-words.ts';
 import { LedgerBar } from '../../../charts/ledger-bar.tsx';
 import { hoursOver, SupplyCurves } from '../../../charts/supply-curves.tsx';
@@ -8,8 +7,8 @@ import { runHoursQuery } from '../../../features/runs/run-queries.ts';
 import { errorSentence } from '../../../lib/api-error.ts';
 import { number } from '../../../lib/format.ts';
 import { Button } from '../../../ui/button.tsx';
-import { ScrollInside } from '../../../ui/scroll-inside.tsx';
 import { YearClothCanvas } from '../../../ui/year-cloth-canvas.tsx';
+import { CurveKey, CurveTable } from './curve-parts.tsx';
 import { metSentence } from './figure-rows.ts';
 import type { CompareColumn } from './use-compare-columns.ts';
 
@@ -90,52 +89,17 @@ export function CompareCurves({ columns }: { columns: readonly CompareColumn[] }
           curves={curves}
           label={`Hours with demand at or over each supply temperature, for ${curves.map(({ name }) => name).join(', ')}; the table below says the same.`}
         />
-        <ul className="mb-2 flex flex-wrap gap-x-5 gap-y-1 text-fine">
-          {curves.map(({ key, name }, index) => (
-            <li key={key} className="flex items-center gap-2">
-              <svg width="34" height="8" aria-hidden="true">
-                <line
-                  x1="0"
-                  x2="34"
-                  y1="4"
-                  y2="4"
-                  stroke="#22302f"
-                  strokeWidth="1.75"
-                  strokeDasharray={CURVE_DASHES[index % CURVE_DASHES.length]}
-                />
-              </svg>
-              {name}
-            </li>
-          ))}
-        </ul>
+        <CurveKey curves={curves} />
       </div>
-      <ScrollInside label="Hours over supply temperatures, scrolls sideways">
-        <table className="ruled" style={{ minWidth: `${10 + 4 * temperatures.length}rem` }}>
-          <caption className="sr-only">Hours with demand at or over a supply temperature</caption>
-          <thead>
-            <tr>
-              <th scope="col">At or over</th>
-              {temperatures.map((tempC) => (
-                <th key={tempC} scope="col" className="figure">
-                  {tempC} °C
-                </th>
-              ))}
-            </tr>
-          </thead>
-          <tbody>
-            {curves.map(({ key, name, bins }) => (
-              <tr key={key}>
-                <th scope="row">{name}</th>
-                {temperatures.map((tempC) => (
-                  <td key={tempC} className="figure">
-                    {number(hoursOver(bins, tempC))}
-                  </td>
-                ))}
-              </tr>
-            ))}
-          </tbody>
-        </table>
-      </ScrollInside>
+      <CurveTable
+        caption="Hours with demand at or over a supply temperature"
+        heads={temperatures.map((tempC) => `${tempC} °C`)}
+        rows={curves.map(({ key, name, bins }) => ({
+          key,
+          name,
+          hours: temperatures.map((tempC) => hoursOver(bins, tempC)),
+        }))}
+      />
     </section>
   );
 }

@@ -17,6 +17,8 @@ export interface CompareColumn {
   readonly shown: ShownRun | null;
   readonly run: RunRecord | null;
   readonly yearWords: string;
+  /** The weather file of the year that is shown; null: there is none. */
+  readonly fileId: string | null;
   /** To take it out of the comparison. */
   readonly remove: CompareAddress;
 }
@@ -100,6 +102,7 @@ function columnOf(asked: Asked, on: { place: Place; run: RunRecord | null; addre
     place,
     shown: asked.fileId === null ? place.shown : (run?.shown ?? null),
     run,
+    fileId: asked.fileId ?? place.judgedYears.find(({ runId }) => runId === place.shown?.runId)?.weatherFileId ?? null,
     yearWords: asked.fileId === null && place.years.length > 1 ? `${place.years.length} years` : yearWords,
     remove: without(address, asked),
   };
