@@ -96,8 +96,6 @@ await withEmptyTeam(async ({ db, ownerDb, databaseUrl, home }) => {
     ask({ method: 'GET', path: `${programme}/sites?sort=score&order=desc` }),
   );
   await measureScreen({ origin: `http://127.0.0.1:${port}`, email, password, print });
-  if (process.env.MUSLIN_BENCH_STAYS === 'yes')
-    await new Promise(() => print(`stays at http://127.0.0.1:${port}, ${email}, ${password}`));
   for (const error of log.errors) print(JSON.stringify(error));
   await new Promise((resolve) => server.close(resolve));
   await threads.close();

@@ -10,6 +10,7 @@ import { heightUsed } from './height-used.ts';
 import { presentRescoredSite, presentRescoredStation, type SiteToRescore } from './present-rescored.ts';
 import { inBatches, portionsOfThreads, stationsOf } from './rescore-portions.ts';
 import { listYearsToRescore, type YearToRescore } from './rescore-read-model.ts';
+import type { SharedJudging } from './shared-judging.ts';
 import type { ScoredStation } from './surface.ts';
 
 export type RescoreThreads = Pick<WebThreads, 'threads' | 'rescore'>;
@@ -18,6 +19,8 @@ export interface RescoreParts {
   readonly db: Knex;
   readonly threads: RescoreThreads;
   readonly cache: ColumnCache;
+  /** null: everything is judged for this asker alone. */
+  readonly shared: SharedJudging | null;
 }
 
 export interface RescoreAsked {
@@ -85,7 +88,10 @@ async function judgeUnder(parts: RescoreParts, asked: RescoreAsked): Promise<Jud
     const columns = await parts.cache.take({ teamId, years: batch, accepted, signal });
     loadMs += performance.now() - loading;
     const stations = stationsOf(batch, columns).flatMap((station) => atHeights(station, heights));
-    for (const each of await judgeBatch(parts.threads, { ...asked, stations })) judged.set(keyOf(each), each);
+    const judge = (some: readonly StationToRescore[]) => judgeBatch(parts.threads, { ...asked, stations: some });
+    const shared = asked.withHashes ? null : parts.shared;
+    const found = shared === null ? judge(stations) : shared.take({ brief: asked.brief, stations }, judge);
+    for (const each of await found) judged.set(keyOf(each), each);
   }
   const stations = [...byStation].flatMap(([stationId, [{ elevationM }]]) => {
     const station = wanted.has(stationId) ? judged.get(keyOf({ stationId, heightM: elevationM })) : undefined;

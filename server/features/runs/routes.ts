@@ -40,6 +40,7 @@ import { readRunHours } from './run-hours-read-model.ts';
 import { findRunRecord } from './run-record-read-model.ts';
 import type { RunsParts } from './runs-parts.ts';
 import { scoredStations } from './scored-stations.ts';
+import { makeSharedJudging } from './shared-judging.ts';
 import { listStationYears } from './station-years-read-model.ts';
 import { surfaceOf } from './surface.ts';
 import { makeSurfaceGrounds } from './surface-ground.ts';
@@ -58,6 +59,7 @@ export function runsRoutes(
   const cache = makeColumnCache(db, { maxBytes: CACHED_BYTES });
   const lines = makeLinesOfYears({ yearThread, originalToRead });
   const grounds = makeSurfaceGrounds(threads);
+  const shared = makeSharedJudging();
   const inTurn = makePreviewTurns(MOST_PREVIEWS);
 
   const map: Handler<typeof getMap> = async ({ params: { teamId, programmeId }, query }) => {
@@ -84,7 +86,7 @@ export function runsRoutes(
     const brief = readDraft(body);
     await briefOfProgramme(db, { teamId, programmeId });
     return inTurn(async () => {
-      const stations = await scoredUnder({ db, threads, cache }, { teamId, programmeId, brief, signal });
+      const stations = await scoredUnder({ db, threads, cache, shared }, { teamId, programmeId, brief, signal });
       return surfaceOf(grounds, { stations, anchors: brief.score, held, signal });
     });
   });
@@ -121,7 +123,7 @@ export function runsRoutes(
     await briefOfProgramme(db, { teamId, programmeId });
     const { stationIds = null, siteIds = [] } = body;
     const asked = { teamId, programmeId, brief, stationIds, siteIds, withHashes: query.hashes === 'yes', signal };
-    return inTurn(() => rescore({ db, threads, cache }, asked));
+    return inTurn(() => rescore({ db, threads, cache, shared }, asked));
   });
 
   const briefAsked = async (

@@ -5,6 +5,7 @@ import { makeColumnCache } from '../../../server/features/runs/column-cache.ts';
 import { type RescoreThreads, rescore } from '../../../server/features/runs/rescore.ts';
 import { bytesOfYear, listYearsToRescore } from '../../../server/features/runs/rescore-read-model.ts';
 import { packedOver } from '../../../server/features/runs/shared-columns.ts';
+import { makeSharedJudging } from '../../../server/features/runs/shared-judging.ts';
 import { readPackedYear } from '../../../server/features/weather/packed-year-read-model.ts';
 import type { WebThreads } from '../../../server/jobs/web-threads.ts';
 import type { RescoreAnswer } from '../../../src/contract/rescore.ts';
@@ -164,7 +165,7 @@ describe('many station-years', () => {
       },
     };
     const cache = makeColumnCache(road.db, { maxBytes: 100_000_000 });
-    const parts = { db: road.db, cache, threads: counting };
+    const parts = { db: road.db, cache, threads: counting, shared: makeSharedJudging() };
     const asked = {
       teamId: team.teamId,
       programmeId: team.programmeId,
@@ -198,10 +199,10 @@ describe('many station-years', () => {
       signal: goesOn,
     };
     const tight = makeColumnCache(road.db, { maxBytes: small });
-    const inBatches = await rescore({ db: road.db, threads, cache: tight }, asked);
+    const inBatches = await rescore({ db: road.db, threads, cache: tight, shared: null }, asked);
     expect(tight.heldBytes()).toBeLessThanOrEqual(small);
     const atOnce = await rescore(
-      { db: road.db, threads, cache: makeColumnCache(road.db, { maxBytes: 100_000_000 }) },
+      { db: road.db, threads, cache: makeColumnCache(road.db, { maxBytes: 100_000_000 }), shared: null },
       asked,
     );
     expect(inBatches.stations).toEqual(atOnce.stations);

@@ -21,7 +21,7 @@ export function CompareDepressions({ columns, teamId }: { columns: readonly Comp
       <h2 id="depressions" className="mb-1 text-name">
         Hours at or above a depression
       </h2>
-      <p className="mb-2 text-fine text-soft">Of the weather as it was recorded at the stations.</p>
+      <p className="mb-2 text-fine text-soft">The weather of the stations, at their own heights.</p>
       <div className="max-w-[32rem]">
         <CumulativeCurves
           curves={curves.map(({ key, points }) => ({ name: key, points }))}

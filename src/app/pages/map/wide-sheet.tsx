@@ -10,7 +10,7 @@ import { PlaceUnderMap } from './place-under-map.tsx';
 export function WideSheet({ brief, ranking, map, point, chosen }: SheetProps) {
   return (
     <>
-      <div className="grid h-[max(48rem,calc(100dvh-11rem))] grid-cols-[17rem_minmax(0,1fr)_20rem] border-b border-line max-xl:grid-cols-[15rem_minmax(0,1fr)_17.5rem]">
+      <div className="grid h-[max(50rem,calc(100dvh-11rem))] grid-cols-[17rem_minmax(0,1fr)_20rem] border-b border-line max-xl:grid-cols-[15rem_minmax(0,1fr)_17.5rem]">
         <div className="relative">
           <div className="absolute inset-0 flex flex-col gap-3 overflow-y-auto px-5 py-4 max-xl:px-4">
             {brief}
