@@ -1,7 +1,7 @@
 /**
  * A number for each team that grows with every change of what its map and its tables of sites show, so that an answer that was made
- * once can be told from one that is stale by a look at a row or two. It is a sum: each transaction adds one as it commits, in a slot that
- * nobody else holds just now or in a new one, so that it never waits for anybody and can stand in no deadlock. Whoever reads the number
+ * once can be told from one that is stale by a look at a row or two. It is a sum: each transaction adds one, in a slot that nobody else
+ * holds just now or in a new one, so that it never waits for anybody and can stand in no deadlock. Whoever reads the number
  * before the rows can never take old rows for new.
  *
  * A later migration that changes rows of these tables and then the tables themselves says "set constraints all immediate" in between.
@@ -15,8 +15,8 @@ const SHOWN = [
 
 export async function up(knex: Knex): Promise<void> {
   const triggers = [...SHOWN, 'teams'].map(
-    (table) => `create constraint trigger ${table}_revision after insert or update or delete on ${table}
-      deferrable initially deferred for each row execute function note_team_change();`,
+    (table) =>
+      `create trigger ${table}_revision after insert or update or delete on ${table} for each row execute function note_team_change();`,
   );
   await knex.raw(`
     create table team_revisions (

@@ -66,7 +66,7 @@ export const getExport = endpoint({
   response: file({ mediaType: 'application/zip', attachment: true }),
   errors: ['wrong_state', 'link_not_valid'],
   allow: 'teams.data',
-  limits: { ...ordinary, perMinute: 20, seconds: 3600 },
+  limits: { ...ordinary, perMinute: 20, seconds: 300 },
 });
 
 export const getDeletion = endpoint({

@@ -32,7 +32,7 @@ export function DeletionSection() {
       </h2>
       <p className="mt-1 max-w-[70ch] text-soft">
         {DELETION_DAYS} days after a lead has asked for it, the team is deleted with all its sites, briefs, weather and
-        results. Until then everybody works on as before, every lead is told, and any lead can stop it: nothing is lost
+        results. Until then nothing changes for anybody, every lead is told, and any lead can stop it: nothing is lost
         then. What stays for ever is the note in the trail that it happened. The accounts of its people stay theirs.
       </p>
       <div className="mt-3 grid max-w-[46rem] gap-4">
