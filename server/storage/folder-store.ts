@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { copyFile, mkdir, open, readFile, rename, rm, stat, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import { isOriginalKey, type OriginalStore } from './original-store.ts';
+import type { ReusableBytes } from './reusable-bytes.ts';
 
 const FILE_MODE = 0o600;
 const FOLDER_MODE = 0o700;
@@ -34,13 +35,30 @@ export function createFolderStore(root: string): OriginalStore {
       const handle = await open(place(key), 'r');
       return handle.createReadStream();
     },
-    async read(key) {
-      return await readFile(place(key));
+    async read(key, into) {
+      return into === undefined ? await readFile(place(key)) : await readInto(place(key), into);
     },
     async remove(key) {
       await rm(place(key), { force: true });
     },
   };
+}
+
+async function readInto(file: string, into: ReusableBytes): Promise<Uint8Array> {
+  const handle = await open(file, 'r');
+  try {
+    const { size } = await handle.stat();
+    const bytes = into.take(size);
+    let read = 0;
+    while (read < size) {
+      const { bytesRead } = await handle.read(bytes, read, size - read, read);
+      if (bytesRead === 0) throw new Error(`the original ${path.basename(file)} ends after ${read} of ${size} bytes`);
+      read += bytesRead;
+    }
+    return bytes;
+  } finally {
+    await handle.close();
+  }
 }
 
 async function exists(file: string): Promise<boolean> {

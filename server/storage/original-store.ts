@@ -1,4 +1,5 @@
 import type { Readable } from 'node:stream';
+import type { ReusableBytes } from './reusable-bytes.ts';
 
 /**
  * Where the original bytes of uploads are kept. Keys are made by `originalKey`, never from a name that a person gave.
@@ -9,8 +10,11 @@ export interface OriginalStore {
   put(key: string, from: string | Uint8Array): Promise<void>;
   /** @throws when there is no such original */
   get(key: string): Promise<Readable>;
-  /** @throws when there is no such original */
-  read(key: string): Promise<Uint8Array>;
+  /**
+   * @param into memory that a folder's original is read into, where it is given: the bytes hold until that is used again
+   * @throws when there is no such original
+   */
+  read(key: string, into?: ReusableBytes): Promise<Uint8Array>;
   /** Removing what is not there is no fault. */
   remove(key: string): Promise<void>;
 }

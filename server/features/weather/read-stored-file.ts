@@ -8,6 +8,7 @@ import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { GzipProblem } from '../../storage/inflate-gzip.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
+import { ReusableBytes } from '../../storage/reusable-bytes.ts';
 import { findMapping } from './mapping-store.ts';
 import { contentOf } from './original-content.ts';
 import { type ReadingKnowledge, readOptions } from './read-options.ts';
@@ -32,18 +33,23 @@ export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; f
 
   const steps = new ReadingSteps(deps.db, file);
   await steps.enter('reading');
-  const readings = await readParts(deps, found);
+  const memory = idleMemory.pop() ?? new ReusableBytes();
+  const readings = await readParts(deps, found, memory).finally(() => idleMemory.push(memory));
   await steps.enter('reducing');
   const outcomes = readings.map(reduced);
   await steps.enter('storing');
   await storeReadings(deps.db, file, { outcomes, untoldSteps: steps.untold });
 }
 
+/** For originals, as many as are read side by side; a reading keeps nothing of the bytes that it came from. */
+const idleMemory: ReusableBytes[] = [];
+
 async function readParts(
   deps: ReadingDeps,
   { file, teamHasRulesOff }: FileToRead,
+  memory: ReusableBytes,
 ): Promise<readonly WeatherFileReading[]> {
-  const content = await contentOf(await originalOf(deps.storage, file));
+  const content = await contentOf(await originalOf(deps.storage, file, memory));
   if (content instanceof GzipProblem) return [unreadable(content)];
   const name = file.name.replace(/\.gz$/i, '');
   const first = readWeatherFileParts(content, name, await readOptions(deps, { file, station: null }));
@@ -104,8 +110,8 @@ function unreadable({ message }: GzipProblem): RefusedReading {
 }
 
 /** @throws Error when the stored bytes are not those that were uploaded */
-async function originalOf(storage: OriginalStore, file: WeatherFileState): Promise<Uint8Array> {
-  const bytes = await storage.read(file.storageKey);
+async function originalOf(storage: OriginalStore, file: WeatherFileState, memory: ReusableBytes): Promise<Uint8Array> {
+  const bytes = await storage.read(file.storageKey, memory);
   const fingerprint = createHash('sha256').update(bytes).digest('hex');
   if (fingerprint !== file.fingerprint)
     throw new Error(`the original of ${file.id} has the fingerprint ${fingerprint}`);

@@ -6,6 +6,7 @@ import { buffer } from 'node:stream/consumers';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { createFolderStore } from '../../../server/storage/folder-store.ts';
 import { originalKey } from '../../../server/storage/original-store.ts';
+import { ReusableBytes } from '../../../server/storage/reusable-bytes.ts';
 
 let folder: string;
 const bytes = randomBytes(100_000);
@@ -30,6 +31,23 @@ describe('the store of originals', () => {
     await store.put(key, await upload('a.epw', bytes));
     expect(Buffer.compare(await buffer(await store.get(key)), bytes)).toBe(0);
     expect(Buffer.compare(await store.read(key), bytes)).toBe(0);
+  });
+
+  it('reads one after another into the same memory, a shorter one after a longer', async () => {
+    const store = createFolderStore(path.join(folder, 'memory'));
+    const memory = new ReusableBytes();
+    const read: Uint8Array[] = [];
+    for (const content of [bytes, Buffer.from('short'), Buffer.alloc(0)]) {
+      const its = originalKey(createHash('sha256').update(content).digest('hex'));
+      await store.put(its, content);
+      const found = await store.read(its, memory);
+      expect(Buffer.compare(found, content)).toBe(0);
+      read.push(found);
+    }
+    expect(new Set(read.map(({ buffer }) => buffer)).size).toBe(1);
+    const large = memory.take(9 * 2 ** 20);
+    expect(large).toHaveLength(9 * 2 ** 20);
+    expect(large.buffer).not.toBe(memory.take(1).buffer);
   });
 
   it('takes bytes as it takes a file', async () => {
