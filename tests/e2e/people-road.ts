@@ -36,6 +36,7 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   const mail = await leads.page.getByRole('list', { name: 'Mails' }).getByRole('listitem').first().textContent();
   await expectAccessible(leads.page, 'mails');
   const link = /\/invitations\/[\w-]{43}/.exec(mail ?? '')?.[0] ?? '';
+  await leads.page.getByRole('link', { name: 'People', exact: true }).click();
 
   const joins = await watchedPage(browser, { origin, viewport: desk });
   onTestFailed(() => joins.picture('people-who-join'));
@@ -52,7 +53,7 @@ export async function walkPeopleRoad(browser: Browser, { origin, teamId, lead }:
   await page.setViewportSize({ width: 390, height: 844 });
   await expectNoSidewaysScroll(page, 'the account on a phone');
 
-  await leads.page.goto(`/teams/${teamId}/team`);
+  // Whoever joins shows to the lead, who has not loaded the page again.
   await leads.page.getByLabel('Role of Newly Joined').selectOption('engineer');
   await leads.page.getByRole('button', { name: 'Sign out: Newly Joined' }).click();
   await leads.page.getByRole('button', { name: 'End the sessions' }).click();
