@@ -126,7 +126,9 @@ describe('years judged in one pass', () => {
   });
 
   test.each(INDEX_LIMITS)('so are those under an index limit, to the last bit, under %s', (preset) => {
-    const found = climates.map((climate) => compare(climate, presetBrief(preset, { months: [1, 7] }), 0));
+    // Every other climate, all of them in the soak: twenty-one states an hour, each by the formulas.
+    const tried = climates.filter((_climate, place) => place % samples(2, 1) === 0);
+    const found = tried.map((climate) => compare(climate, presetBrief(preset, { months: [1, 7] }), 0));
     expect(found.flatMap(({ differing }) => differing).slice(0, 5)).toEqual([]);
     expect(found.flatMap(({ apart }) => apart).slice(0, 5)).toEqual([]);
     expect(found.reduce((sum, { hours }) => sum + hours, 0)).toBeGreaterThan(1000);
