@@ -14,7 +14,12 @@ export function accessOf(name: PolicyName): Access {
   const rule: Policy = policies[name];
   const may = (actor: Actor): boolean => rule({ actor, params: { teamId: TEAM_ID } }) === 'allowed';
   if (may({ kind: 'signed-out' })) return { anyone: true, roles: [], scopes: [] };
-  const person = { kind: 'person', personId: PERSON_ID, closedProgrammes: new Set<string>() } as const;
+  const person = {
+    kind: 'person',
+    personId: PERSON_ID,
+    closedProgrammes: new Set<string>(),
+    revisions: new Map<string, string>(),
+  } as const;
   const token = { kind: 'token', tokenId: PERSON_ID, teamId: TEAM_ID, personId: PERSON_ID } as const;
   const roles = Role.options.filter((role) => may({ ...person, roles: new Map([[TEAM_ID, role]]) }));
   const isOfTeam = !may({ ...person, roles: new Map() });

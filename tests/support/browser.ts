@@ -85,26 +85,6 @@ export async function watchedPage(
       await page.screenshot({ path: path.join(PICTURES, `${name}.png`) });
     },
     async close() {
-      {
-        const session = await browser.newBrowserCDPSession();
-        const { processInfo } = await session.send('SystemInfo.getProcessInfo');
-        const sums: Record<string, number> = {};
-        for (const each of processInfo)
-          sums[each.type.split('.')[0] ?? ''] = (sums[each.type.split('.')[0] ?? ''] ?? 0) + each.cpuTime;
-        console.log(
-          'CPU',
-          JSON.stringify(
-            Object.fromEntries(
-              Object.entries(sums).map(([k, v]) => [
-                k,
-                +(v - (k === 'renderer' ? 0 : ((globalThis as any).__cpu?.[k] ?? 0))).toFixed(2),
-              ]),
-            ),
-          ),
-        );
-        (globalThis as any).__cpu = sums;
-        await session.detach();
-      }
       await context.close();
       if (faults.length > 0) throw new Error(`the browser complained:\n${faults.join('\n')}`);
     },
