@@ -21,10 +21,10 @@ export interface RescoreTurnsInput {
     wish: Pick<RescoreWish, 'body'> & RescoreIds,
     signal: AbortSignal,
   ) => Promise<Pick<RescoreAnswer, 'stations' | 'sites'>>;
-  /** `isWhole`: every place has been judged by the draft of this key. */
+  /** `isView`: the first of what is looked at; `isWhole`: every place has been judged by the draft of this key. */
   readonly onAnswer: (
     answer: Pick<RescoreAnswer, 'stations' | 'sites'>,
-    of: { readonly key: string; readonly isWhole: boolean },
+    of: { readonly key: string; readonly isView: boolean; readonly isWhole: boolean },
   ) => void;
   readonly onFault: (error: unknown) => void;
 }
@@ -69,7 +69,10 @@ export function rescoreTurns({ ask, onAnswer, onFault }: RescoreTurnsInput) {
     portions = portions.slice(1);
     try {
       const answer = await ask({ body, ...portion }, mine.stop.signal);
-      if (flight === mine) onAnswer(answer, { key, isWhole: key === wish?.key && portions.length === 0 });
+      if (flight === mine) {
+        const isWhole = key === wish?.key && portions.length === 0;
+        onAnswer(answer, { key, isView: mine.isView, isWhole });
+      }
     } catch (error) {
       if (flight === mine) {
         portions = [];

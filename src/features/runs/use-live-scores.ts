@@ -1,6 +1,6 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { PlaceFigures } from '../../contract/place-figures.ts';
-import { rescore } from '../../contract/rescore.ts';
+import { type RescoreAnswer, rescore } from '../../contract/rescore.ts';
 import { call } from '../../lib/api-client.ts';
 import { isApiError } from '../../lib/api-error.ts';
 import type { SheetBox } from '../../map/use-tell-view.ts';
@@ -26,31 +26,43 @@ interface LiveScoresInput {
   readonly box: { readonly current: SheetBox | null };
 }
 
+type LiveAnswer = Pick<RescoreAnswer, 'stations' | 'sites'>;
+
+/** Portions of what is not looked at are shown together: each showing goes over every place of the map. */
+const TOGETHER_MS = 1500;
+
 const NOTHING: LiveScores = { figures: new Map(), isBehind: false, error: null };
 
 /** What every place comes to under a draft while it is being made. Nothing is stored. */
 export function useLiveScores({ ids: { teamId, programmeId }, places, draft, box }: LiveScoresInput): LiveScores {
   const [scores, setScores] = useState(NOTHING);
-  const turns = useMemo(
-    () =>
-      rescoreTurns({
-        ask: ({ body, stationIds, siteIds }, signal) => {
-          const asked = { body: { ...body }, stationIds: [...stationIds], siteIds: [...siteIds] };
-          return call(rescore, { params: { teamId, programmeId }, query: {}, body: asked }, { signal });
-        },
-        onAnswer: ({ stations, sites }, { isWhole }) =>
-          setScores((held) => {
-            const figures = new Map(held.figures);
-            for (const { stationId, ...found } of stations) figures.set(stationId, found);
-            for (const { siteId, ...found } of sites) figures.set(siteId, found);
-            return { figures, isBehind: !isWhole, error: null };
-          }),
-        onFault: (error) => {
-          if (!isAbort(error)) setScores((held) => ({ ...held, isBehind: true, error }));
-        },
-      }),
-    [teamId, programmeId],
-  );
+  const turns = useMemo(() => {
+    let waiting: LiveAnswer[] = [];
+    let shownAt = Number.NEGATIVE_INFINITY;
+    let waitingKey: string | null = null;
+    return rescoreTurns({
+      ask: ({ body, stationIds, siteIds }, signal) => {
+        const asked = { body: { ...body }, stationIds: [...stationIds], siteIds: [...siteIds] };
+        return call(rescore, { params: { teamId, programmeId }, query: {}, body: asked }, { signal });
+      },
+      onAnswer: (answer, { key, isView, isWhole }) => {
+        waiting = key === waitingKey ? [...waiting, answer] : [answer];
+        waitingKey = key;
+        const now = performance.now();
+        if (!isView && !isWhole && now - shownAt < TOGETHER_MS) return;
+        const answers = waiting;
+        waiting = [];
+        shownAt = now;
+        setScores((held) => ({ figures: withAnswers(held.figures, answers), isBehind: !isWhole, error: null }));
+      },
+      onFault: (error) => {
+        const answers = waiting;
+        waiting = [];
+        if (!isAbort(error))
+          setScores((held) => ({ figures: withAnswers(held.figures, answers), isBehind: true, error }));
+      },
+    });
+  }, [teamId, programmeId]);
   useEffect(() => () => turns.leave(), [turns]);
   const latest = useRef(places);
   useEffect(() => {
@@ -68,6 +80,15 @@ export function useLiveScores({ ids: { teamId, programmeId }, places, draft, box
     }
   }, [turns, key, body, box]);
   return key === null ? NOTHING : scores;
+}
+
+function withAnswers(figures: LiveScores['figures'], answers: readonly LiveAnswer[]): LiveScores['figures'] {
+  const next = new Map(figures);
+  for (const { stations, sites } of answers) {
+    for (const { stationId, ...found } of stations) next.set(stationId, found);
+    for (const { siteId, ...found } of sites) next.set(siteId, found);
+  }
+  return next;
 }
 
 function isAbort(error: unknown): boolean {
