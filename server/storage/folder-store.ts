@@ -1,8 +1,8 @@
 import { randomUUID } from 'node:crypto';
 import { copyFile, mkdir, open, readFile, rename, rm, stat, writeFile } from 'node:fs/promises';
 import path from 'node:path';
-import { isOriginalKey, type OriginalStore } from './original-store.ts';
-import type { ReusableBytes } from './reusable-bytes.ts';
+import { isOriginalKey, type OriginalMemory, type OriginalStore } from './original-store.ts';
+import { ReusableBytes } from './reusable-bytes.ts';
 
 const FILE_MODE = 0o600;
 const FOLDER_MODE = 0o700;
@@ -38,13 +38,14 @@ export function createFolderStore(root: string): OriginalStore {
     async read(key, into) {
       return into === undefined ? await readFile(place(key)) : await readInto(place(key), into);
     },
+    newMemory: () => new ReusableBytes(),
     async remove(key) {
       await rm(place(key), { force: true });
     },
   };
 }
 
-async function readInto(file: string, into: ReusableBytes): Promise<Uint8Array> {
+async function readInto(file: string, into: OriginalMemory): Promise<Uint8Array> {
   const handle = await open(file, 'r');
   try {
     const { size } = await handle.stat();

@@ -1,5 +1,10 @@
 import type { Readable } from 'node:stream';
-import type { ReusableBytes } from './reusable-bytes.ts';
+
+/** Memory that one original after another is read into. */
+export interface OriginalMemory {
+  /** So many bytes, holding anything; what was taken before is no longer the taker's. */
+  take(length: number): Uint8Array;
+}
 
 /**
  * Where the original bytes of uploads are kept. Keys are made by `originalKey`, never from a name that a person gave.
@@ -11,10 +16,12 @@ export interface OriginalStore {
   /** @throws when there is no such original */
   get(key: string): Promise<Readable>;
   /**
-   * @param into memory that a folder's original is read into, where it is given: the bytes hold until that is used again
+   * @param into of `newMemory`, to be used for one original after another: the bytes hold until it is used again
    * @throws when there is no such original
    */
-  read(key: string, into?: ReusableBytes): Promise<Uint8Array>;
+  read(key: string, into?: OriginalMemory): Promise<Uint8Array>;
+  /** Memory for `read`, in a store that can read into it. */
+  newMemory?(): OriginalMemory;
   /** Removing what is not there is no fault. */
   remove(key: string): Promise<void>;
 }

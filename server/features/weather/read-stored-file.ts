@@ -7,8 +7,7 @@ import type { RefusedReading, WeatherFileReading } from '#engine/weather-files/w
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
 import { GzipProblem } from '../../storage/inflate-gzip.ts';
-import type { OriginalStore } from '../../storage/original-store.ts';
-import { ReusableBytes } from '../../storage/reusable-bytes.ts';
+import type { OriginalMemory, OriginalStore } from '../../storage/original-store.ts';
 import { findMapping } from './mapping-store.ts';
 import { contentOf } from './original-content.ts';
 import { type ReadingKnowledge, readOptions } from './read-options.ts';
@@ -33,8 +32,10 @@ export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; f
 
   const steps = new ReadingSteps(deps.db, file);
   await steps.enter('reading');
-  const memory = idleMemory.pop() ?? new ReusableBytes();
-  const readings = await readParts(deps, found, memory).finally(() => idleMemory.push(memory));
+  const memory = idleMemory.pop() ?? deps.storage.newMemory?.();
+  const readings = await readParts(deps, found, memory).finally(() => {
+    if (memory !== undefined) idleMemory.push(memory);
+  });
   await steps.enter('reducing');
   const outcomes = readings.map(reduced);
   await steps.enter('storing');
@@ -42,12 +43,12 @@ export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; f
 }
 
 /** For originals, as many as are read side by side; a reading keeps nothing of the bytes that it came from. */
-const idleMemory: ReusableBytes[] = [];
+const idleMemory: OriginalMemory[] = [];
 
 async function readParts(
   deps: ReadingDeps,
   { file, teamHasRulesOff }: FileToRead,
-  memory: ReusableBytes,
+  memory: OriginalMemory | undefined,
 ): Promise<readonly WeatherFileReading[]> {
   const content = await contentOf(await originalOf(deps.storage, file, memory));
   if (content instanceof GzipProblem) return [unreadable(content)];
@@ -110,7 +111,11 @@ function unreadable({ message }: GzipProblem): RefusedReading {
 }
 
 /** @throws Error when the stored bytes are not those that were uploaded */
-async function originalOf(storage: OriginalStore, file: WeatherFileState, memory: ReusableBytes): Promise<Uint8Array> {
+async function originalOf(
+  storage: OriginalStore,
+  file: WeatherFileState,
+  memory: OriginalMemory | undefined,
+): Promise<Uint8Array> {
   const bytes = await storage.read(file.storageKey, memory);
   const fingerprint = createHash('sha256').update(bytes).digest('hex');
   if (fingerprint !== file.fingerprint)
