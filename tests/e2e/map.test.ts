@@ -118,7 +118,7 @@ test('a planner drags effectiveness and humidity cap, the map and the ranking fo
   await chosen()
     .getByText(/Brief version 2, method/)
     .waitFor(SOON);
-  expect(await textOf(chosen().getByRole('heading', { level: 2 }))).toBe(drafted.name);
+  await expect.poll(() => textOf(chosen().getByRole('heading', { level: 2 })), SOON).toBe(drafted.name);
   await expect.poll(() => scoreShown(page), SOON).toBe(drafted.score);
   expect(await page.getByRole('slider', { name: 'Direct effectiveness' }).inputValue()).toBe('55');
 });
