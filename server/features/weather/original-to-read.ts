@@ -2,7 +2,6 @@ import type { Knex } from 'knex';
 import type { OriginalToRead } from '../../jobs/year-task.ts';
 import type { OriginalStore } from '../../storage/original-store.ts';
 import { DERIVED_FORMAT } from './derived-year-store.ts';
-import { findMapping } from './mapping-store.ts';
 import { contentOf } from './original-content.ts';
 import { findWeatherFile } from './weather-file-store.ts';
 
@@ -15,16 +14,14 @@ export async function originalToRead(
   if (file === null || file.format === DERIVED_FORMAT) return null;
   const content = await contentOf(await storage.read(file.storageKey)).catch(() => null);
   if (content === null || content instanceof Error) return null;
-  const { place, answers, keepSuspect, fillLongGaps, rulesOff = [] } = file.answers;
-  const { shapeKey } = file;
-  const mapping = file.answers.mapping ?? (shapeKey === null ? null : await findMapping(db, { ...key, shapeKey }));
+  const { place, mapping, answers, keepSuspect, fillLongGaps, rulesOff = [] } = file.answers;
   return {
     content,
     name: file.name.replace(/\.gz$/i, ''),
     part: file.part,
     options: {
       ...(place === undefined ? {} : { place }),
-      ...(mapping === null ? {} : { mapping }),
+      ...(mapping === undefined ? {} : { mapping }),
       ...(answers === undefined ? {} : { answers }),
       ...(keepSuspect === undefined ? {} : { keepSuspect }),
       ...(fillLongGaps === undefined ? {} : { fillLongGaps }),

@@ -3,6 +3,7 @@ import type { Knex } from 'knex';
 import type { ReadingStep } from '#contract/weather.ts';
 import { reduceYear } from '#engine/reduction/reduce-year.ts';
 import { readWeatherFileParts } from '#engine/weather-files/read-weather-file-parts.ts';
+import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 import type { RefusedReading, WeatherFileReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeam } from '../../jobs/team-feed.ts';
@@ -33,41 +34,49 @@ export async function readStoredFile(deps: ReadingDeps, key: { teamId: string; f
   const steps = new ReadingSteps(deps.db, file);
   await steps.enter('reading');
   const memory = idleMemory.pop() ?? deps.storage.newMemory?.();
-  const readings = await readParts(deps, found, memory).finally(() => {
+  const { readings, remembered } = await readParts(deps, found, memory).finally(() => {
     if (memory !== undefined) idleMemory.push(memory);
   });
   await steps.enter('reducing');
   const outcomes = readings.map(reduced);
   await steps.enter('storing');
-  await storeReadings(deps.db, file, { outcomes, untoldSteps: steps.untold });
+  await storeReadings(deps.db, file, { outcomes, remembered, untoldSteps: steps.untold });
 }
 
 /** For originals, as many as are read side by side; a reading keeps nothing of the bytes that it came from. */
 const idleMemory: OriginalMemory[] = [];
 
+interface PartsRead {
+  readonly readings: readonly WeatherFileReading[];
+  /** How the table was read, where that had been said of another of its shape. */
+  readonly remembered: TableMapping | null;
+}
+
 async function readParts(
   deps: ReadingDeps,
   { file, teamHasRulesOff }: FileToRead,
   memory: OriginalMemory | undefined,
-): Promise<readonly WeatherFileReading[]> {
+): Promise<PartsRead> {
   const content = await contentOf(await originalOf(deps.storage, file, memory));
-  if (content instanceof GzipProblem) return [unreadable(content)];
+  if (content instanceof GzipProblem) return { readings: [unreadable(content)], remembered: null };
   const name = file.name.replace(/\.gz$/i, '');
-  const first = readWeatherFileParts(content, name, await readOptions(deps, { file, station: null }));
-  const [reading] = first;
+  const readings = readWeatherFileParts(content, name, await readOptions(deps, { file, station: null }));
+  const first = { readings, remembered: null };
+  const [reading] = readings;
   if (reading === undefined) throw new Error(`nothing was read of ${file.id}`);
   if ('table' in reading) {
     // Somebody has said before what tables of this shape hold.
     const mapping = file.answers.mapping ?? (await findMapping(deps.db, { ...file, shapeKey: reading.table.shapeKey }));
     if (mapping === null || file.answers.mapping !== undefined) return first;
     const answered = { ...file, answers: { ...file.answers, mapping } };
-    return readWeatherFileParts(content, name, await readOptions(deps, { file: answered, station: null }));
+    const options = await readOptions(deps, { file: answered, station: null });
+    return { readings: readWeatherFileParts(content, name, options), remembered: mapping };
   }
   if (reading.station === null || !teamHasRulesOff) return first;
   // Its station may have rules that do not hold there; which station it is shows only now.
   const options = await readOptions(deps, { file, station: reading.station });
   return options.rulesOff.length > (file.answers.rulesOff?.length ?? 0)
-    ? readWeatherFileParts(content, name, options)
+    ? { readings: readWeatherFileParts(content, name, options), remembered: null }
     : first;
 }
 

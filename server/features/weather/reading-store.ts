@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import type { ReadingStep } from '#contract/weather.ts';
 import type { Ask, Finding } from '#engine/weather-files/finding.ts';
 import type { TableGuess } from '#engine/weather-files/table/table-guess.ts';
+import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 import type { DeclaredStation } from '#engine/weather-files/weather-file-reading.ts';
 import type { FileAnswers } from './file-answers.ts';
 import { storableText } from './storable-text.ts';
@@ -92,13 +93,26 @@ export async function insertPart(
     `insert into weather_files (team_id, batch_id, name, bytes, fingerprint, storage_key, status, step, uploaded_by,
        uploaded_at, part_index, answers)
      select team_id, batch_id, name, bytes, fingerprint, storage_key, 'reading', 'storing', uploaded_by, uploaded_at,
-       :partIndex, jsonb_strip_nulls(jsonb_build_object('mapping', answers -> 'mapping', 'keepSuspect', answers -> 'keepSuspect'))
+       :partIndex, coalesce((select jsonb_object_agg(answer.key, answer.value) from jsonb_each(answers) as answer
+         where answer.key in ('mapping', 'keepSuspect')), '{}')
      from weather_files where team_id = :teamId and id = :fileId
      on conflict (team_id, fingerprint, part_index) where status <> 'withdrawn' do nothing
      returning id`,
     { teamId: part.file.teamId, fileId: part.file.id, partIndex: part.partIndex },
   );
   return rows[0]?.id ?? null;
+}
+
+/** Notes beside a file how its table was read. */
+export async function keepMappingOfFile(
+  transaction: Knex.Transaction,
+  read: { teamId: string; fileId: string; mapping: TableMapping },
+): Promise<void> {
+  await transaction.raw(
+    `update weather_files set answers = answers || jsonb_build_object('mapping', cast(:mapping as jsonb))
+     where team_id = :teamId and id = :fileId`,
+    { ...read, mapping: storableJson(read.mapping) },
+  );
 }
 
 /** Notes what a person has answered, and puts the file back to be read. */

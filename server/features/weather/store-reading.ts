@@ -3,18 +3,26 @@ import type { TeamEvent } from '#contract/team-events.ts';
 import type { ReadingStep } from '#contract/weather.ts';
 import { READ_VERSION } from '#engine/conventions.ts';
 import type { ReducedYear } from '#engine/reduction/reduce-year.ts';
+import type { TableMapping } from '#engine/weather-files/table/table-mapping.ts';
 import type { RefusedReading, UnmappedReading, UsableReading } from '#engine/weather-files/weather-file-reading.ts';
 import { inTransaction } from '../../db/in-transaction.ts';
 import { notifyTeamOfAll } from '../../jobs/team-feed.ts';
 import { contentHash } from './content-hash.ts';
 import { measuredHours } from './measured-hours.ts';
-import { insertPart, setReadingResult } from './reading-store.ts';
+import { insertPart, keepMappingOfFile, setReadingResult } from './reading-store.ts';
 import { lockFileBeingRead } from './weather-file-store.ts';
 import { insertWeatherYear } from './weather-year-store.ts';
 
 export type FileOutcome =
   | { readonly reading: RefusedReading | UnmappedReading; readonly reduced: null }
   | { readonly reading: UsableReading; readonly reduced: ReducedYear };
+
+export interface ReadingToStore {
+  readonly outcomes: readonly FileOutcome[];
+  /** How a table was read, where that had been said of another of its shape. */
+  readonly remembered: TableMapping | null;
+  readonly untoldSteps: readonly ReadingStep[];
+}
 
 /**
  * Stores everything that was read of a file, and its new status, in one transaction; leaves alone a file that has moved on. A file
@@ -23,13 +31,15 @@ export type FileOutcome =
 export async function storeReadings(
   db: Knex,
   file: { teamId: string; id: string },
-  reading: { readonly outcomes: readonly FileOutcome[]; readonly untoldSteps: readonly ReadingStep[] },
+  reading: ReadingToStore,
 ): Promise<void> {
   const { teamId, id } = file;
-  const { outcomes, untoldSteps } = reading;
+  const { outcomes, remembered, untoldSteps } = reading;
   await inTransaction(db, async (transaction) => {
     const now = await lockFileBeingRead(transaction, { teamId, fileId: id });
     if (now === null) return;
+    // What was said of the shape may be said otherwise later; this file stays read as it was.
+    if (remembered !== null) await keepMappingOfFile(transaction, { teamId, fileId: id, mapping: remembered });
     const events: TeamEvent[] = untoldSteps.map((step) => ({
       kind: 'weather-file',
       fileId: id,

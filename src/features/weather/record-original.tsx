@@ -1,19 +1,20 @@
 import { Link } from 'react-router-dom';
 import { getOriginal, type WeatherFileRecord } from '../../contract/weather.ts';
 import { urlOf } from '../../lib/api-client.ts';
-import { fileSize, moment } from '../../lib/format.ts';
+import { capital, fileSize, moment } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
 import { useTeam } from '../../lib/team-scope.ts';
 import { buttonLook } from '../../ui/button.tsx';
 import { CopyButton } from '../../ui/copy-button.tsx';
 import { StatusMark } from '../../ui/status-mark.tsx';
+import { mappingSentences } from './mapping-words.ts';
 import { RecordLicence } from './record-licence.tsx';
 import { mayChangeWeather, statusWord } from './weather-words.ts';
 
 /** What was uploaded: the bytes, their fingerprint, their licence, and what else came in the same file. */
 export function RecordOriginal({ record }: { record: WeatherFileRecord }) {
   const { teamId, role } = useTeam();
-  const { file, comments, parts } = record;
+  const { file, answers, comments, parts } = record;
   const isDerived = file.parent !== null;
   const mayChange = mayChangeWeather(role);
   const original = urlOf(getOriginal, { params: { teamId, fileId: file.id }, query: {} });
@@ -52,6 +53,16 @@ export function RecordOriginal({ record }: { record: WeatherFileRecord }) {
           {moment(file.uploadedAt)} by {file.uploadedBy}
           {record.acceptedBy ? `, accepted by ${record.acceptedBy}` : ''}
         </dd>
+        {answers.mapping === undefined ? null : (
+          <>
+            <dt>How the table was read</dt>
+            <dd className="max-w-[80ch] break-words">
+              {mappingSentences(answers.mapping).map((words) => (
+                <p key={words}>{capital(words)}</p>
+              ))}
+            </dd>
+          </>
+        )}
         {comments ? (
           <>
             <dt>What the file says of its source</dt>

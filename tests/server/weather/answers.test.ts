@@ -81,7 +81,10 @@ describe('a plain table', () => {
     expect(record.asks.map(({ what }) => what)).toContain('place-missing');
     expect(record.facts?.hours).toBe(8760);
     await answer(file.id, { place }).expect(200);
-    expect((await desk.readToTheEnd(file.id)).file.status).toBe('review');
+    const read = await desk.readToTheEnd(file.id);
+    expect(read.file.status).toBe('review');
+    // Kept beside the file: what is said of the shape later does not touch it.
+    expect(read.answers.mapping).toMatchObject({ dryBulb: mapping.dryBulb, time: { scale: 'standard' } });
   });
 
   it('is read otherwise when its answer is corrected, and so are the next ones of its shape', async () => {
