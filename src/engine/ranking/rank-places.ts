@@ -71,7 +71,7 @@ export function rankPlaces(input: RankPlacesInput): Ranking {
   const shares = weights.map((weight) => weight / total);
   const scores = places.map(({ criteria }) => weightedSum(criteria, shares));
   const order = places.map((_place, at) => at);
-  order.sort((one, other) => hundredths(scores[other] ?? 0) - hundredths(scores[one] ?? 0) || one - other);
+  order.sort((one, other) => grain(scores[other] ?? 0) - grain(scores[one] ?? 0) || one - other);
   const drawn = runDraws({ ...input, draws, shares, order });
   const ranked = order.map((at, place) => {
     const firsts = drawn.firsts[at] ?? 0;
@@ -126,8 +126,16 @@ function weightedSum(criteria: Criteria, weights: readonly number[]): number {
   return sum / applying;
 }
 
+/**
+ * A score in the whole hundredths by which it is compared. Criteria and weights are whole numbers more often than not, so that scores stand
+ * right between two hundredths (14.875); the last bits of a sum, which the scale of the weights decides, must not tell equal ones apart.
+ */
+function grain(score: number): number {
+  return hundredths(score + 1e-8);
+}
+
 function rankOf(order: readonly number[], scores: readonly number[], place: number): { rank: number; tied: boolean } {
-  const scoreAt = (index: number): number => hundredths(scores[order[index] ?? -1] ?? Number.NaN);
+  const scoreAt = (index: number): number => grain(scores[order[index] ?? -1] ?? Number.NaN);
   let first = place;
   while (first > 0 && scoreAt(first - 1) === scoreAt(place)) first--;
   return { rank: first + 1, tied: first < place || scoreAt(place + 1) === scoreAt(place) };

@@ -61,6 +61,19 @@ describe('a ranking', () => {
     );
   });
 
+  test('lets equal scores right between two hundredths share a rank, whatever the scale of the weights', () => {
+    // Both come to 1190 / 80 = 14.875.
+    const places = [plain('one', 2, 65, 0, 1, 31), plain('other', 3, 95, 6, 3, 3)];
+    for (const factor of [1, 22099.608652149447, 0.0123]) {
+      const weights = WEIGHTS.map((weight) => weight * factor);
+      const ranked = rankPlaces({ places, weights, view: 'near the brief', seed: 3, draws: DRAWS }).places;
+      expect(ranked.map(({ id, rank, tied }) => ({ id, rank, tied }))).toEqual([
+        { id: 'one', rank: 1, tied: true },
+        { id: 'other', rank: 1, tied: true },
+      ]);
+    }
+  });
+
   test('keeps the order and the odds of the others when a place joins that every one of them dominates', () => {
     fc.assert(
       fc.property(portfolio, views, (places, view) => {
