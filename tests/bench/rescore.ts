@@ -139,7 +139,10 @@ async function measure(): Promise<void> {
   };
   tell('office, first', await ask(presetBrief('office')));
   for (const preset of PRESETS) {
-    for (let round = 1; round <= WARM_ROUNDS; round++) tell(`${preset}, ${round}`, await ask(presetBrief(preset)));
+    const brief = presetBrief(preset);
+    // Each a draft of its own, as a slider makes them: what was asked a moment ago is not judged again.
+    for (let round = 1; round <= WARM_ROUNDS; round++)
+      tell(`${preset}, ${round}`, await ask({ ...brief, effDirect: brief.effDirect - round / 100 }));
   }
   process.stdout.write(`${JSON.stringify({ stations, threads: availableParallelism(), rounds })}\n`);
 }
