@@ -26,10 +26,13 @@ export function interpolateScores(figures: StationFigures, points: SurfacePoints
   );
   const weights = isPatchy ? new Float32Array(count).fill(fixedWeight) : null;
   const ground = groundOf(figures, points);
-  const raw = new Float64Array(count);
+  const raw = new Float64Array(weights === null ? 0 : count);
   for (const column of figures.columns) {
-    fillColumn(raw, column, ground);
-    addPoints(column, { raw, sums, weights: column.everywhere ? null : weights });
+    if (weights === null || column.everywhere) addPointsEverywhere(sums, column, ground);
+    else {
+      fillColumn(raw, column, ground);
+      addPoints(column, { raw, sums, weights });
+    }
   }
   for (let point = 0; point < count; point++) {
     const total = weights === null ? fixedWeight : (weights[point] ?? 0);
@@ -116,10 +119,32 @@ function fillMeansOfPresent(
   }
 }
 
+/**
+ * Adds the points of a component that applies at every station. One pass, which comes to the same as `fillColumn` and `addPoints`: a
+ * slider waits for this over every cell and component.
+ */
+function addPointsEverywhere(sums: Float32Array, column: FigureColumn, { points, heightAboveM }: Ground): void {
+  const { anchor, extremes, slopePerM, values } = column;
+  const { held, neighbours, weights } = points;
+  const { each, stations } = neighbours;
+  const { least, greatest } = extremes;
+  const { a0, weight } = anchor;
+  const gain = 100 / (anchor.a100 - a0);
+  const above = slopePerM === 0 ? null : heightAboveM;
+  for (let point = 0, at = 0; point < sums.length; point++) {
+    let raw = 0;
+    for (const end = at + each; at < end; at++) raw += (weights[at] ?? 0) * (values[stations[at] ?? 0] ?? 0);
+    if (above !== null) raw += slopePerM * (above[point] ?? 0);
+    const station = held[point] ?? -1;
+    raw = station >= 0 ? (values[station] ?? Number.NaN) : Math.min(Math.max(raw, least), greatest);
+    sums[point] = (sums[point] ?? 0) + Math.min(Math.max((raw - a0) * gain, 0), 100) * weight;
+  }
+}
+
 /** Adds the points of one component, s = clamp(100 (x - a0) / (a100 - a0)) x weight, and its weight where it applies. */
 function addPoints(
   { anchor }: FigureColumn,
-  to: { raw: Float64Array; sums: Float32Array; weights: Float32Array | null },
+  to: { raw: Float64Array; sums: Float32Array; weights: Float32Array },
 ): void {
   const { raw, sums, weights } = to;
   const { a0, weight } = anchor;
@@ -128,6 +153,6 @@ function addPoints(
     const normalised = ((raw[point] ?? Number.NaN) - a0) * gain;
     if (Number.isNaN(normalised)) continue;
     sums[point] = (sums[point] ?? 0) + Math.min(Math.max(normalised, 0), 100) * weight;
-    if (weights !== null) weights[point] = (weights[point] ?? 0) + weight;
+    weights[point] = (weights[point] ?? 0) + weight;
   }
 }

@@ -137,6 +137,18 @@ describe('the surface between stations', () => {
     }
   });
 
+  test('the score of a cell is that of its components, each interpolated by itself, to the last bit', () => {
+    const points = pointsOf(places, stations, 2);
+    const sums = new Float32Array(places.length);
+    for (const column of figures.columns) {
+      const { a0, a100, weight } = column.anchor;
+      for (const [point, raw] of interpolateColumn(column, { figures, points }).entries())
+        sums[point] = (sums[point] ?? 0) + Math.min(Math.max((raw - a0) * (100 / (a100 - a0)), 0), 100) * weight;
+    }
+    const total = figures.columns.reduce((sum, { anchor }) => sum + anchor.weight, 0);
+    expect(interpolateScores(figures, points)).toEqual(sums.map((sum) => sum / total));
+  });
+
   test('the surface and a single query come to the same', () => {
     const scores = interpolateScores(figures, pointsOf(places, stations, 2.5));
     const asked = { stations, anchors: defaultScore, indexPoints: false, each: EACH, power: 2.5 };
