@@ -5,9 +5,10 @@ import type { Config } from './config.ts';
 import type { Deps } from './deps.ts';
 import { deleteExpiredSessions } from './features/accounts/account-store.ts';
 import { deleteOldFailures } from './features/accounts/failure-store.ts';
+import { UPLOAD_PREFIX } from './http/hashing-storage.ts';
 import { deleteRequestCountsBefore } from './http/request-counts-store.ts';
-import { removeStaleUploads } from './http/stale-uploads.ts';
 import { deleteKeyMailsBefore } from './mail/mail-store.ts';
+import { removeStale } from './storage/remove-stale.ts';
 
 /** Somebody else listens where we should. */
 export class PortTakenError extends Error {
@@ -100,7 +101,7 @@ async function closeServer(server: Server): Promise<void> {
 async function tidy({ db, now, log, uploadsDir }: Deps): Promise<void> {
   const before = new Date(now().getTime() - KEPT_MS);
   try {
-    await removeStaleUploads(uploadsDir, before);
+    await removeStale(uploadsDir, [UPLOAD_PREFIX], before);
     await deleteExpiredSessions(db, now());
     await deleteRequestCountsBefore(db, before);
     await deleteKeyMailsBefore(db, new Date(now().getTime() - KEY_MAILS_KEPT_MS));

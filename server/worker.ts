@@ -1,3 +1,4 @@
+import { tmpdir } from 'node:os';
 import type { Relief } from '#engine/weather-files/relief.ts';
 import { connect } from './db/connection.ts';
 import { judgeStoredYear } from './features/runs/judge-year.ts';
@@ -6,7 +7,7 @@ import { queueMissingSiteRuns } from './features/runs/queue-site-runs.ts';
 import { standardZoneAt } from './features/stations/standard-zone-at.ts';
 import { endTeam, queueDueDeletions } from './features/teams/end-team.ts';
 import { setExportFailed } from './features/teams/export-store.ts';
-import { makeExport } from './features/teams/make-export.ts';
+import { EXPORT_PREFIX, makeExport } from './features/teams/make-export.ts';
 import { removeExpiredExports } from './features/teams/remove-expired-exports.ts';
 import {
   clearJudgingFailure,
@@ -15,7 +16,7 @@ import {
   noteReadingFailure,
   noteStrandedFiles,
 } from './features/weather/note-failure.ts';
-import { openArchive } from './features/weather/open-archive.ts';
+import { OPENED_PREFIX, openArchive } from './features/weather/open-archive.ts';
 import { readStoredFile } from './features/weather/read-stored-file.ts';
 import { tellFinishedImports } from './features/weather/tell-finished-imports.ts';
 import { repeat } from './jobs/repeat.ts';
@@ -24,6 +25,7 @@ import type { Log } from './log.ts';
 import type { Mailer } from './mail/mailer.ts';
 import { queueWaitingMails, sendMail } from './mail/send-mail.ts';
 import type { OriginalStore } from './storage/original-store.ts';
+import { removeStale } from './storage/remove-stale.ts';
 
 export interface WorkerOptions {
   readonly databaseUrl: string;
@@ -39,6 +41,8 @@ export interface WorkerOptions {
 const LOOK_FOR_STRANDED_EVERY_MS = 60_000;
 const LOOK_FOR_FINISHED_EVERY_MS = 30_000;
 const LOOK_FOR_ENDED_EVERY_MS = 300_000;
+/** No job takes so long: what it opened is of a worker that was killed. */
+const LEFT_BEHIND_MS = 24 * 60 * 60_000;
 
 /** Starts what works in the background: reading weather files and judging years. The caller closes it, whatever the signal. */
 export async function startWorker(options: WorkerOptions): Promise<{ close(): Promise<void> }> {
@@ -102,11 +106,12 @@ export async function startWorker(options: WorkerOptions): Promise<{ close(): Pr
     });
     const ending = repeat({
       everyMs: LOOK_FOR_ENDED_EVERY_MS,
-      what: 'looking for exports and teams whose time is over',
+      what: 'looking for exports, teams and temporary folders whose time is over',
       log,
       work: async () => {
         await removeExpiredExports({ db, storage }, new Date());
         await queueDueDeletions(db);
+        await removeStale(tmpdir(), [OPENED_PREFIX, EXPORT_PREFIX], new Date(Date.now() - LEFT_BEHIND_MS));
       },
     });
     return {

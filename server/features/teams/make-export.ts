@@ -19,6 +19,8 @@ import {
 } from './exported-tables-read-model.ts';
 import { headOf, textOfRows } from './exported-text.ts';
 
+/** How the names of folders begin in which exports are put together. */
+export const EXPORT_PREFIX = 'muslin-export-';
 const DAY_MS = 24 * 3_600_000;
 /** Licences under which a file may be passed on; one that nobody has named counts as none. */
 const PASSED_ON = new Set(['open', 'attribution', 'non-commercial']);
@@ -37,7 +39,7 @@ interface ExportKey {
 export async function makeExport(deps: Deps, key: ExportKey, at: Date): Promise<void> {
   const asked = await findExportToMake(deps.db, key);
   if (asked === null) return;
-  const folder = await mkdtemp(path.join(tmpdir(), 'muslin-export-'));
+  const folder = await mkdtemp(path.join(tmpdir(), EXPORT_PREFIX));
   try {
     const file = path.join(folder, 'export.zip');
     const signal = new AbortController().signal;

@@ -24,6 +24,9 @@ import { queueOpening } from './receive-archive.ts';
 import { receiveWeatherFile } from './receive-weather-file.ts';
 import { findWeatherFile } from './weather-file-store.ts';
 
+/** How the names of folders begin into which archives are opened. */
+export const OPENED_PREFIX = 'muslin-archive-';
+
 type Deps = {
   readonly db: Knex;
   readonly storage: OriginalStore;
@@ -39,7 +42,7 @@ export async function openArchive(deps: Deps, key: { teamId: string; archiveId: 
   const archive = await findArchive(deps.db, key);
   if (archive === null || archive.batchState !== 'running') return;
   if (archive.status !== 'waiting' && archive.status !== 'opening') return;
-  const folder = await mkdtemp(path.join(tmpdir(), 'muslin-archive-'));
+  const folder = await mkdtemp(path.join(tmpdir(), OPENED_PREFIX));
   try {
     const file = path.join(folder, `archive-${randomUUID()}`);
     await pipeline(await deps.storage.get(archive.storageKey), createWriteStream(file, { flags: 'wx', mode: 0o600 }));
